@@ -1,0 +1,46 @@
+import { paraglideVitePlugin } from '@inlang/paraglide-js';
+import { sveltekit } from '@sveltejs/kit/vite';
+import tailwindcss from '@tailwindcss/vite';
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+	plugins: [
+		tailwindcss(),
+		paraglideVitePlugin({
+			project: './src/lib/i18n/project.inlang',
+			outdir: './src/lib/i18n/paraglide',
+			strategy: ['baseLocale']
+		}),
+		sveltekit()
+	],
+	build: {
+		rolldownOptions: {
+			// A wrong path to the message plugin builds without words and without an error. Make it one.
+			onwarn(warning, warn) {
+				if (warning.code === 'IMPORT_IS_UNDEFINED' || warning.code === 'MISSING_EXPORT') {
+					throw new Error(warning.message);
+				}
+				warn(warning);
+			}
+		}
+	},
+	test: {
+		expect: { requireAssertions: true },
+		projects: [
+			{
+				extends: true,
+				test: { name: 'unit', environment: 'node', include: ['src/**/*.test.ts', 'tests/unit/**/*.test.ts'] }
+			},
+			{
+				extends: true,
+				test: {
+					name: 'integration',
+					environment: 'node',
+					include: ['tests/integration/**/*.test.ts'],
+					testTimeout: 30_000,
+					hookTimeout: 60_000
+				}
+			}
+		]
+	}
+});
