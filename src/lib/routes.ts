@@ -1,0 +1,37 @@
+/** Every internal address of the product as a function, so that a renamed page breaks its links at compile time. */
+export const routes = {
+	front: () => '/',
+	signIn: (next?: string) => (next ? `/sign-in?next=${encodeURIComponent(next)}` : '/sign-in'),
+	signOut: () => '/sign-out',
+	invitation: (token: string) => `/invite/${token}`,
+	looseEnds: () => '/loose-ends',
+	ward: (unitId?: string) => (unitId ? `/ward?unit=${unitId}` : '/ward'),
+	patient: (episodeId: string) => `/patients/${episodeId}`,
+	thread: (episodeId: string, threadId: string) => `/patients/${episodeId}/threads/${threadId}`,
+	clearances: (episodeId: string) => `/patients/${episodeId}/clearances`,
+	sessions: (episodeId: string) => `/patients/${episodeId}/sessions`,
+	newSession: (episodeId: string) => `/bedside/${episodeId}`,
+	escalate: (episodeId: string, query = '') => `/patients/${episodeId}/escalate${query}`,
+	refer: (episodeId: string) => `/patients/${episodeId}/refer`,
+	escalation: (id: string) => `/escalations/${id}`,
+	phoneLink: (token: string) => `/t/${token}`,
+	visits: () => '/visits',
+	patientVisits: (episodeId: string) => `/patients/${episodeId}/visits`,
+	cover: () => '/cover',
+	rules: () => '/rules',
+	account: () => '/account',
+	adminAccounts: () => '/admin/accounts',
+	phones: () => '/phones',
+	demoSignIns: () => '/demo'
+} as const;
+
+/**
+ * The address to go to after signing in. Only a path of our own is accepted: `//host`, `\host` and schemes
+ * would send a person who just typed a password to somebody else's page.
+ */
+export function safeNext(next: string | null | undefined, fallback: string = routes.looseEnds()): string {
+	if (!next || !/^\/(?![/\\])[\w\-./?=&%~]*$/.test(next) || /%0[ad]|%2f|%5c/i.test(next)) {
+		return fallback;
+	}
+	return next;
+}
