@@ -1,0 +1,82 @@
+import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import { RHYTHMS } from '../../../domain/core/codes';
+import { users } from './accounts';
+import { id, instant, json, yesNo } from './columns';
+import { episodes, operations } from './episodes';
+
+/** One bedside treatment. Context, symptoms and activities keep the shape in which they were sent. */
+export const bedsideSessions = sqliteTable(
+	'bedside_sessions',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		operationId: text('operation_id').references(() => operations.id),
+		startedAt: instant('started_at').notNull(),
+		endedAt: instant('ended_at').notNull(),
+		level: integer('level').notNull(),
+		context: json<Record<string, unknown>>('context').notNull(),
+		symptoms: json<unknown[]>('symptoms').notNull(),
+		activities: json<unknown[]>('activities').notNull(),
+		outcome: text('outcome', { enum: ['stop', 'incomplete', 'caution', 'clear'] }).notNull(),
+		notJudged: json<string[]>('not_judged').notNull(),
+		/** Which limits judged it: the findings can be explained years later. */
+		limitSet: text('limit_set').notNull(),
+		limitVersion: text('limit_version').notNull(),
+		deviation: json<Record<string, unknown>>('deviation'),
+		recordedBy: text('recorded_by')
+			.notNull()
+			.references(() => users.id),
+		recordedAt: instant('recorded_at').notNull()
+	},
+	(t) => [index('bedside_sessions_episode').on(t.episodeId, t.startedAt)]
+);
+
+/** Units: beats/min, mmHg, %, breaths/min, Borg 6-20, 0-10, L/min. */
+export const readings = sqliteTable(
+	'readings',
+	{
+		id: id(),
+		sessionId: text('session_id')
+			.notNull()
+			.references(() => bedsideSessions.id),
+		phase: text('phase', { enum: ['before', 'during', 'after'] }).notNull(),
+		ordinal: integer('ordinal').notNull(),
+		at: instant('at'),
+		posture: text('posture', { enum: ['lying', 'sitting', 'standing'] }),
+		settled: yesNo('settled'),
+		work: real('work'),
+		bpSource: text('bp_source', { enum: ['cuff', 'arterial'] }),
+		rhythm: text('rhythm', { enum: RHYTHMS }),
+		hr: real('hr'),
+		sbp: real('sbp'),
+		dbp: real('dbp'),
+		spo2: real('spo2'),
+		rr: real('rr'),
+		rpe: real('rpe'),
+		pain: real('pain'),
+		oxygenLpm: real('oxygen_lpm')
+	},
+	(t) => [index('readings_session').on(t.sessionId, t.phase, t.ordinal)]
+);
+
+export const findings = sqliteTable(
+	'findings',
+	{
+		id: id(),
+		sessionId: text('session_id')
+			.notNull()
+			.references(() => bedsideSessions.id),
+		ordinal: integer('ordinal').notNull(),
+		rule: text('rule').notNull(),
+		grade: text('grade', { enum: ['stop', 'caution', 'note'] }).notNull(),
+		reading: text('reading', { enum: ['before', 'during', 'after'] }).notNull(),
+		measured: json<number | string | null>('measured'),
+		limit: json<number | string | null>('limit'),
+		unit: text('unit'),
+		reason: text('reason').notNull(),
+		source: text('source').notNull()
+	},
+	(t) => [index('findings_session').on(t.sessionId, t.ordinal)]
+);

@@ -1,0 +1,92 @@
+import { sql } from 'drizzle-orm';
+import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import { APPROACHES, RHYTHMS, SEXES } from '../../../domain/core/codes';
+import { units, users } from './accounts';
+import { id, instant, yesNo } from './columns';
+
+export const patients = sqliteTable(
+	'patients',
+	{
+		id: id(),
+		name: text('name').notNull(),
+		/** Hospital number: the second identifier beside the birth date. */
+		mrn: text('mrn').notNull().unique(),
+		birthDate: text('birth_date').notNull(),
+		sex: text('sex', { enum: SEXES }).notNull(),
+		phone: text('phone'),
+		language: text('language').notNull().default('en'),
+		zone: text('zone').notNull(),
+		smsConsent: yesNo('sms_consent').notNull().default(false),
+		smsOptedOutAt: instant('sms_opted_out_at'),
+		createdAt: instant('created_at').notNull()
+	},
+	(t) => [index('patients_phone').on(t.phone)]
+);
+
+/** One stay for one operation; a return to theatre is another row of `operations` of the same episode. */
+export const episodes = sqliteTable(
+	'episodes',
+	{
+		id: id(),
+		patientId: text('patient_id')
+			.notNull()
+			.references(() => patients.id),
+		unitId: text('unit_id')
+			.notNull()
+			.references(() => units.id),
+		/** Null in the outpatient programme. */
+		bed: text('bed'),
+		phase: text('phase', { enum: ['inpatient', 'outpatient'] })
+			.notNull()
+			.default('inpatient'),
+		level: integer('level').notNull().default(1),
+		/** Any rate-slowing drug; null where nobody has said. */
+		betaBlocked: yesNo('beta_blocked'),
+		rhythm: text('rhythm', { enum: RHYTHMS }),
+		surgeonId: text('surgeon_id').references(() => users.id),
+		createdAt: instant('created_at').notNull(),
+		closedAt: instant('closed_at')
+	},
+	(t) => [
+		index('episodes_unit').on(t.unitId, t.closedAt),
+		index('episodes_patient').on(t.patientId),
+		uniqueIndex('episodes_bed_in_use')
+			.on(t.unitId, t.bed)
+			.where(sql`closed_at is null and bed is not null`)
+	]
+);
+
+/** Day, precautions and clearances count from the latest. */
+export const operations = sqliteTable(
+	'operations',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		procedure: text('procedure').notNull(),
+		approach: text('approach', { enum: APPROACHES }).notNull(),
+		operatedAt: instant('operated_at').notNull(),
+		surgeonId: text('surgeon_id').references(() => users.id),
+		createdAt: instant('created_at').notNull()
+	},
+	(t) => [index('operations_episode').on(t.episodeId, t.operatedAt)]
+);
+
+/** Where the patient lay, from when until when. */
+export const placements = sqliteTable(
+	'placements',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		unitId: text('unit_id')
+			.notNull()
+			.references(() => units.id),
+		bed: text('bed'),
+		fromAt: instant('from_at').notNull(),
+		untilAt: instant('until_at')
+	},
+	(t) => [index('placements_episode').on(t.episodeId, t.fromAt)]
+);

@@ -1,0 +1,115 @@
+import { sql } from 'drizzle-orm';
+import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import { ESCALATION_STATES, GRADES, POSTS } from '../../../domain/core/codes';
+import { units, users } from './accounts';
+import { bedsideSessions } from './bedside';
+import { id, instant, json } from './columns';
+import { episodes } from './episodes';
+import { threads } from './referrals';
+
+export const escalations = sqliteTable(
+	'escalations',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		unitId: text('unit_id')
+			.notNull()
+			.references(() => units.id),
+		grade: text('grade', { enum: GRADES }).notNull(),
+		state: text('state', { enum: ESCALATION_STATES }).notNull(),
+		situation: text('situation').notNull(),
+		background: text('background').notNull(),
+		assessment: text('assessment').notNull(),
+		request: text('request').notNull(),
+		neededBy: instant('needed_by'),
+		toldInPerson: text('told_in_person').references(() => users.id),
+		sessionId: text('session_id').references(() => bedsideSessions.id),
+		threadId: text('thread_id').references(() => threads.id),
+		raisedBy: text('raised_by')
+			.notNull()
+			.references(() => users.id),
+		raisedAt: instant('raised_at').notNull(),
+		/** The one holder, from taking until it is settled or passed on. */
+		takenBy: text('taken_by').references(() => users.id),
+		takenAt: instant('taken_at'),
+		etaMinutes: integer('eta_minutes'),
+		arrivedAt: instant('arrived_at'),
+		passTo: text('pass_to').references(() => users.id),
+		passReason: text('pass_reason'),
+		endedBy: text('ended_by').references(() => users.id),
+		endedAt: instant('ended_at'),
+		outcome: text('outcome'),
+		note: text('note'),
+		informed: text('informed'),
+		recheckDueAt: instant('recheck_due_at'),
+		recheckDoneAt: instant('recheck_done_at'),
+		/** The chain: which step comes next and when; null once taken, settled or withdrawn. */
+		nextStep: integer('next_step'),
+		nextStepAt: instant('next_step_at')
+	},
+	(t) => [
+		index('escalations_episode').on(t.episodeId, t.raisedAt),
+		index('escalations_timer').on(t.nextStepAt),
+		index('escalations_state').on(t.state, t.unitId),
+		// One patient, one untaken escalation: later facts are added to it.
+		uniqueIndex('escalations_one_untaken')
+			.on(t.episodeId)
+			.where(sql`state = 'raised'`)
+	]
+);
+
+/** Who was told, by which step of the chain and when; one row for each person, append-only. */
+export const escalationSteps = sqliteTable(
+	'escalation_steps',
+	{
+		id: id(),
+		escalationId: text('escalation_id')
+			.notNull()
+			.references(() => escalations.id),
+		step: integer('step').notNull(),
+		post: text('post', { enum: POSTS }).notNull(),
+		/** When the step was due; how late it ran is `at` minus this. */
+		dueAt: instant('due_at').notNull(),
+		at: instant('at').notNull(),
+		/** Null when nobody was on cover for the post: the gap is on record. */
+		userId: text('user_id').references(() => users.id),
+		channel: text('channel', { enum: ['sms'] }),
+		messageId: text('message_id')
+	},
+	(t) => [index('escalation_steps_escalation').on(t.escalationId, t.step)]
+);
+
+/** What happened to an escalation, in order, append-only. */
+export const escalationMoves = sqliteTable(
+	'escalation_moves',
+	{
+		id: id(),
+		escalationId: text('escalation_id')
+			.notNull()
+			.references(() => escalations.id),
+		at: instant('at').notNull(),
+		byId: text('by_id').references(() => users.id),
+		kind: text('kind', {
+			enum: ['raised', 'added', 'taken', 'arrived', 'passed', 'confirmed', 'settled', 'withdrawn']
+		}).notNull(),
+		detail: json<Record<string, unknown>>('detail')
+	},
+	(t) => [index('escalation_moves_escalation').on(t.escalationId, t.at)]
+);
+
+/** The secret in an SMS link: bound to one person, single use, expiring; only its SHA-256 is stored. */
+export const escalationLinks = sqliteTable('escalation_links', {
+	id: id(),
+	escalationId: text('escalation_id')
+		.notNull()
+		.references(() => escalations.id),
+	userId: text('user_id')
+		.notNull()
+		.references(() => users.id),
+	tokenHash: text('token_hash').notNull().unique(),
+	createdAt: instant('created_at').notNull(),
+	expiresAt: instant('expires_at').notNull(),
+	usedAt: instant('used_at')
+});

@@ -1,0 +1,106 @@
+import { mkdirSync } from 'node:fs';
+import path from 'node:path';
+import { z } from 'zod';
+
+/**
+ * The checked environment. Everything that comes from outside the process is read here, once; a start with a
+ * bad value stops with a list of what is wrong. The variables are explained in `.env.example`.
+ */
+const port = (fallback: number) => z.coerce.number().int().min(1).max(65535).default(fallback);
+const flag = z.preprocess((value) => value === '1' || value === 'true', z.boolean());
+const text = z.string().trim().min(1).optional();
+
+const schema = z.object({
+	PORT: port(3000),
+	PUBLIC_URL: z.url().optional(),
+	DATA_DIR: z.string().default('./data'),
+	DATABASE_URL: z.string().startsWith('file:', 'must be a file: address').optional(),
+	DEMO: flag,
+	TEST_CLOCK: flag,
+	RATE_LIMIT_SCALE: z.coerce.number().positive().default(1),
+	HOSPITAL_NAME: z.string().default('Saltmarsh General'),
+	HOSPITAL_ZONE: z.string().default('Europe/Dublin'),
+	HOSPITAL_PHONE: z.string().default('+353 1 555 0100'),
+	FAKE_SMS_PORT: port(3001),
+	FAKE_MAIL_PORT: port(3002),
+	FAKE_SMTP_PORT: port(3003),
+	SMS_ACCOUNT_SID: text,
+	SMS_AUTH_TOKEN: text,
+	SMS_FROM: text,
+	SMTP_URL: text,
+	MAIL_FROM: z.string().default('Ropewalk <ropewalk@saltmarsh.example>'),
+	LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info')
+});
+
+export type Env = ReturnType<typeof readEnv>;
+
+/**
+ * Read and check an environment.
+ * @throws Error with one line for each variable that is wrong.
+ */
+export function readEnv(source: Record<string, string | undefined>) {
+	const parsed = schema.safeParse(source);
+	if (!parsed.success) {
+		const lines = parsed.error.issues.map((issue) => `  ${issue.path.join('.')}: ${issue.message}`);
+		throw new Error(`The environment is not usable:\n${lines.join('\n')}`);
+	}
+	const e = parsed.data;
+	const dataDir = path.resolve(e.DATA_DIR);
+	const publicUrl = (e.PUBLIC_URL ?? `http://127.0.0.1:${e.PORT}`).replace(/\/+$/, '');
+	return {
+		port: e.PORT,
+		publicUrl,
+		secure: publicUrl.startsWith('https:'),
+		dataDir,
+		databaseUrl: e.DATABASE_URL ?? `file:${path.join(dataDir, 'ropewalk.db')}`,
+		demo: e.DEMO,
+		testClock: e.DEMO && e.TEST_CLOCK,
+		// Only the demonstration may loosen its request limits; production keeps them.
+		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
+		hospital: { name: e.HOSPITAL_NAME, zone: e.HOSPITAL_ZONE, phone: e.HOSPITAL_PHONE },
+		fakes: { sms: e.FAKE_SMS_PORT, mail: e.FAKE_MAIL_PORT, smtp: e.FAKE_SMTP_PORT },
+		sms: smsGateway(e),
+		mail: mailGateway(e),
+		logLevel: e.LOG_LEVEL
+	};
+}
+
+type Raw = z.infer<typeof schema>;
+
+/** The gateway to send through, or null: then messages are held and shown as held. */
+function smsGateway(e: Raw) {
+	if (e.DEMO) {
+		return {
+			accountSid: e.SMS_ACCOUNT_SID ?? 'AC00000000000000000000000000000000',
+			authToken: e.SMS_AUTH_TOKEN ?? 'ropewalk-demo-token',
+			from: e.SMS_FROM ?? '+353860000000',
+			baseUrl: `http://127.0.0.1:${e.FAKE_SMS_PORT}`
+		};
+	}
+	if (!e.SMS_ACCOUNT_SID || !e.SMS_AUTH_TOKEN || !e.SMS_FROM) {
+		return null;
+	}
+	return { accountSid: e.SMS_ACCOUNT_SID, authToken: e.SMS_AUTH_TOKEN, from: e.SMS_FROM, baseUrl: null };
+}
+
+function mailGateway(e: Raw) {
+	if (e.DEMO) {
+		return {
+			url: e.SMTP_URL ?? `smtp://127.0.0.1:${e.FAKE_SMTP_PORT}`,
+			from: e.MAIL_FROM,
+			requireTls: false
+		};
+	}
+	return e.SMTP_URL ? { url: e.SMTP_URL, from: e.MAIL_FROM, requireTls: true } : null;
+}
+
+let current: Env | null = null;
+
+/** The environment of this process, read at the first call; the data folder exists afterwards. */
+export function env(): Env {
+	if (!current) {
+		current = readEnv(process.env);
+		mkdirSync(current.dataDir, { recursive: true, mode: 0o700 });
+	}
+	return current;
+}
