@@ -1,3 +1,57 @@
 import type { Config } from 'tailwindcss';
+import plugin from 'tailwindcss/plugin';
+import {
+	COLOUR_NAMES,
+	FORCED,
+	MOTION,
+	RADIUS,
+	SPACE,
+	THEMES,
+	TYPE,
+	WEIGHT,
+	type ColourName,
+	type Palette
+} from './src/lib/components/tokens';
 
-export default { content: ['./src/**/*.{html,svelte,ts}'], theme: { extend: {} } } satisfies Config;
+/** One CSS variable per colour: `--woad: #2c5a88`. */
+function variables(palette: Partial<Palette>): Record<string, string> {
+	return Object.fromEntries(Object.entries(palette).map(([name, value]) => [`--${name}`, value]));
+}
+
+const day = { 'color-scheme': 'light', ...variables(THEMES.day) };
+const night = { 'color-scheme': 'dark', ...variables(THEMES.night) };
+
+/**
+ * The device decides between day and night until a person chooses; the choice is `data-theme` on `<html>`, or
+ * on any part of a page. Paper is printed by day.
+ */
+const themes = plugin(({ addBase }) => {
+	addBase({
+		":root, [data-theme='day']": day,
+		'@media (prefers-color-scheme: dark)': { ':root:not([data-theme])': night },
+		"[data-theme='night']": night,
+		'@media print': { ":root, [data-theme='night']": day },
+		'@media (forced-colors: active)': { ':root, [data-theme]': variables(FORCED) }
+	});
+});
+
+const colours = Object.fromEntries(COLOUR_NAMES.map((name) => [name, `var(--${name})`])) as Record<
+	ColourName,
+	string
+>;
+
+export default {
+	content: ['./src/**/*.{html,svelte,ts}'],
+	theme: {
+		colors: { ...colours, current: 'currentColor', inherit: 'inherit', transparent: 'transparent' },
+		fontFamily: { sans: ['Lato', 'Lato fallback', 'system-ui', 'sans-serif'] },
+		fontSize: TYPE,
+		fontWeight: WEIGHT,
+		borderRadius: RADIUS,
+		boxShadow: {},
+		transitionDuration: MOTION.duration,
+		transitionTimingFunction: MOTION.ease,
+		extend: { spacing: SPACE }
+	},
+	plugins: [themes]
+} satisfies Config;
