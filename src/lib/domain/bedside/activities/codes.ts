@@ -1,0 +1,32 @@
+/** The codes of the activities catalogue, in the order of recovery. Stored with each session, so never renamed. */
+export const ACTIVITY_CODES = [
+	'passive-legs',
+	'passive-arms',
+	'ankle-pumps',
+	'leg-slides',
+	'active-legs',
+	'active-arms',
+	'deep-breathing',
+	'diaphragmatic-breathing',
+	'splinted-cough',
+	'incentive-spirometer',
+	'bed-mobility',
+	'edge-of-bed',
+	'self-feeding',
+	'chair-sitting',
+	'sit-to-stand',
+	'seated-exercise',
+	'seated-wash',
+	'shaving',
+	'bedside-walk',
+	'room-walk',
+	'standing-warm-up',
+	'hall-walk',
+	'standing-exercise',
+	'hall-walk-long',
+	'arm-exercise',
+	'stairs',
+	'treadmill-walk',
+	'leg-cycle'
+] as const;
+export type ActivityCode = (typeof ACTIVITY_CODES)[number];
