@@ -35,6 +35,7 @@ const ROOMS = [
 	{ files: ['src/fakes/**/*.ts'], ban: ['server', 'client', 'components', 'domain'], kit: true, node: false }
 ];
 
+/** @type {import('eslint').Linter.Config[]} */
 const roomRules = ROOMS.map(({ files, ban, kit, node }) => ({
 	files,
 	rules: {

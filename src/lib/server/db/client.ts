@@ -109,9 +109,9 @@ class HeldTransaction implements Transaction {
 	execute(statement: InStatement): Promise<ResultSet>;
 	execute(sql: string, args?: InArgs): Promise<ResultSet>;
 	execute(statement: InStatement | string, args?: InArgs): Promise<ResultSet> {
-		return typeof statement === 'string'
-			? this.inner.execute(statement, args)
-			: this.inner.execute(statement);
+		return this.inner.execute(
+			typeof statement === 'string' ? { sql: statement, args: args ?? [] } : statement
+		);
 	}
 
 	batch(statements: Array<InStatement | [string, InArgs?]>): Promise<ResultSet[]> {

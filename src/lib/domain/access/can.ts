@@ -1,0 +1,124 @@
+import { CLINICAL_ROLES, type ClearanceKind, type Role, type Service } from '../core/codes';
+import type { Person } from './actor';
+
+/**
+ * Every permission by name. `can()` is the only place that decides, and what it does not know it refuses.
+ */
+export const PERMISSIONS = [
+	'episode.read',
+	'episode.admit',
+	'contact.read',
+	'referral.create',
+	'referral.answer',
+	'referral.close',
+	'referral.withdraw',
+	'thread.read',
+	'entry.write',
+	'clearance.ask',
+	'clearance.decide',
+	'clearance.withdraw',
+	'session.read',
+	'session.record',
+	'escalation.read',
+	'escalation.raise',
+	'escalation.take',
+	'escalation.withdraw',
+	'visit.read',
+	'visit.plan',
+	'visit.attend',
+	'account.manage',
+	'audit.read',
+	'own-account.change'
+] as const;
+export type Permission = (typeof PERMISSIONS)[number];
+
+/** What a permission can depend on beside the role. Left out, the answer is whether the role ever may. */
+export interface Subject {
+	unitId?: string;
+	service?: Service;
+	clearanceKind?: ClearanceKind;
+}
+
+/** May this person do that to this subject? Units are part of the question: outside them the answer is no. */
+export function can(person: Person, permission: Permission, subject: Subject = {}): boolean {
+	if (subject.unitId !== undefined && !person.unitIds.includes(subject.unitId)) {
+		return false;
+	}
+	return roleMay(person.role, permission, subject);
+}
+
+function roleMay(role: Role, permission: Permission, subject: Subject): boolean {
+	const clinical = isClinical(role);
+	switch (permission) {
+		case 'episode.read':
+		case 'visit.read':
+		case 'thread.read':
+			return clinical || role === 'coordinator';
+		case 'episode.admit':
+			return among(role, 'coordinator', 'nurse', 'physician', 'surgeon');
+		case 'contact.read':
+			return clinical || role === 'coordinator';
+		case 'referral.create':
+		case 'referral.withdraw':
+			return among(role, 'surgeon', 'physician');
+		case 'referral.answer':
+			return subject.service === undefined ? servesAny(role) : serves(role, subject.service);
+		case 'referral.close':
+			return among(role, 'surgeon', 'physician') || servesAny(role);
+		case 'entry.write':
+		case 'session.read':
+		case 'escalation.read':
+		case 'escalation.raise':
+		case 'escalation.withdraw':
+			return clinical;
+		case 'clearance.ask':
+			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
+		case 'clearance.decide':
+		case 'clearance.withdraw':
+			return subject.clearanceKind === undefined
+				? among(role, 'surgeon', 'physician', 'speech-therapist')
+				: decides(role, subject.clearanceKind);
+		case 'session.record':
+			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
+		case 'escalation.take':
+			return among(role, 'nurse', 'physician', 'surgeon');
+		case 'visit.plan':
+			return among(role, 'coordinator', 'therapist');
+		case 'visit.attend':
+			return among(role, 'coordinator', 'therapist', 'nurse');
+		case 'account.manage':
+		case 'audit.read':
+			return role === 'admin';
+		case 'own-account.change':
+			return true;
+		default:
+			return false;
+	}
+}
+
+/** The surgeon decides every kind; local policy delegates a few. */
+function decides(role: Role, kind: ClearanceKind): boolean {
+	if (role === 'surgeon') {
+		return true;
+	}
+	if (role === 'physician') {
+		return kind === 'corridor' || kind === 'stairs' || kind === 'treadmill';
+	}
+	return role === 'speech-therapist' && kind === 'oral-intake';
+}
+
+function serves(role: Role, service: Service): boolean {
+	return service === 'speech-therapy' ? role === 'speech-therapist' : role === 'therapist';
+}
+
+function servesAny(role: Role): boolean {
+	return role === 'therapist' || role === 'speech-therapist';
+}
+
+function isClinical(role: Role): boolean {
+	return (CLINICAL_ROLES as readonly Role[]).includes(role);
+}
+
+function among(role: Role, ...roles: Role[]): boolean {
+	return roles.includes(role);
+}

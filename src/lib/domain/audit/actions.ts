@@ -1,0 +1,56 @@
+/** Everything that is on record, as a closed list: a write names one of these or does not compile. */
+export const AUDIT_ACTIONS = [
+	'account.created',
+	'account.disabled',
+	'account.enabled',
+	'account.password-set',
+	'account.signed-in',
+	'account.sign-in-failed',
+	'account.signed-out',
+	'account.token-made',
+	'account.token-revoked',
+	'clearance.asked',
+	'clearance.given',
+	'clearance.held',
+	'clearance.withdrawn',
+	'clearance.withheld',
+	'demonstration.loaded',
+	'entry.posted',
+	'episode.admitted',
+	'episode.read',
+	'escalation.added-to',
+	'escalation.arrived',
+	'escalation.chain-step',
+	'escalation.passed',
+	'escalation.pass-confirmed',
+	'escalation.raised',
+	'escalation.settled',
+	'escalation.taken',
+	'escalation.withdrawn',
+	'message.received',
+	'message.settled',
+	'referral.accepted',
+	'referral.asked',
+	'referral.closed',
+	'referral.declined',
+	'referral.withdrawn',
+	'session.recorded',
+	'system.started',
+	'unit.created',
+	'visit.attended',
+	'visit.booked',
+	'visit.cancelled',
+	'visit.confirmed',
+	'visit.missed'
+] as const;
+export type AuditAction = (typeof AUDIT_ACTIONS)[number];
+
+/** What an audit row says beside who and when. Identifiers, codes and numbers only: never clinical text. */
+export interface AuditEvent {
+	action: AuditAction;
+	objectKind: string;
+	objectId: string;
+	episodeId?: string | null;
+	outcome?: 'done' | 'refused';
+	detail?: Record<string, string | number | boolean | null>;
+}

@@ -1,0 +1,58 @@
+/** What a live event can be about. Events are hints with identifiers: the client fetches what it may read. */
+export const TOPICS = [
+	'episode',
+	'referral',
+	'thread',
+	'clearance',
+	'session',
+	'escalation',
+	'visit',
+	'message',
+	'account'
+] as const;
+export type Topic = (typeof TOPICS)[number];
+
+export interface LiveEvent {
+	topic: Topic;
+	/** What happened, such as 'accepted'. */
+	kind: string;
+	id: string;
+	episodeId: string | null;
+	/** Set for what concerns one person alone; others do not hear it. */
+	userId?: string | null;
+}
+
+/** An event as it stands in the stream: `id` is its place in the log. */
+export type StreamEvent = Pick<LiveEvent, 'topic' | 'kind' | 'id' | 'episodeId'>;
+
+/** The first words of the query keys that pages use; an event names those that it makes stale. */
+export type QueryKey = readonly [string, ...string[]];
+
+/**
+ * Which cached answers an event makes stale. Loose ends are derived from nearly everything, so nearly
+ * everything touches them; the rest is exact.
+ */
+export function staleKeys(event: StreamEvent): QueryKey[] {
+	const episode: QueryKey[] = event.episodeId ? [['episode', event.episodeId]] : [];
+	const around: QueryKey[] = [['loose-ends'], ['episodes'], ...episode];
+	switch (event.topic) {
+		case 'thread':
+			return [['thread', event.id], ...episode];
+		case 'referral':
+			return [...around, ['thread']];
+		case 'clearance':
+			return [...around, ['clearance', event.id], ['thread']];
+		case 'session':
+			return [...around, ...(event.episodeId ? [['sessions', event.episodeId] as const] : [])];
+		case 'escalation':
+			return [...around, ['escalation', event.id]];
+		case 'visit':
+			return [...around, ['visits'], ['visit', event.id]];
+		case 'episode':
+			return around;
+		case 'message':
+			return [['loose-ends'], ['messages'], ['visits'], ['escalation']];
+		case 'account':
+			return [['me'], ['accounts']];
+	}
+}
