@@ -1,0 +1,37 @@
+import { describe, expect, it } from 'vitest';
+import { ROLES } from '$lib/domain/core/codes';
+import { coverPlace, isIn, mainPlaces, morePlaces } from './places';
+
+const keys = (places: { key: string }[]) => places.map(({ key }) => key);
+
+describe('the places', () => {
+	it('leaves room for More among the four of a phone', () => {
+		expect(mainPlaces()).toHaveLength(3);
+	});
+
+	it.each(ROLES)('shows accounts to an administrator alone (%s)', (role) => {
+		expect(keys(morePlaces(role, false)).includes('accounts')).toBe(role === 'admin');
+	});
+
+	it.each([true, false])('shows the phones of the demonstration only in one (%s)', (demo) => {
+		expect(keys(morePlaces('nurse', demo)).includes('phones')).toBe(demo);
+	});
+});
+
+describe('isIn', () => {
+	it.each([
+		['/loose-ends', 'loose-ends'],
+		['/escalations/018f', 'loose-ends'],
+		['/ward', 'ward'],
+		['/patients/018f/threads/0190', 'ward'],
+		['/visits', 'visits'],
+		['/cover', 'cover']
+	])('puts %s in %s and nowhere else', (path, key) => {
+		const places = [...mainPlaces(), coverPlace()];
+		expect(keys(places.filter((place) => isIn(place, path)))).toEqual([key]);
+	});
+
+	it.each(['/wardrobe', '/', '/bedside/018f'])('puts %s nowhere', (path) => {
+		expect(mainPlaces().some((place) => isIn(place, path))).toBe(false);
+	});
+});

@@ -1,0 +1,41 @@
+import type { Role } from '$lib/domain/core/codes';
+import { m } from '$lib/i18n/paraglide/messages';
+import { routes } from '$lib/routes';
+
+/** A place of the navigation. `under` says which paths count as being in it. */
+export type Place = { key: PlaceKey; href: string; label: string; under: readonly string[] };
+export type PlaceKey =
+	'loose-ends' | 'ward' | 'visits' | 'cover' | 'rules' | 'account' | 'accounts' | 'phones';
+
+/** The places of everyday work; a phone shows these three and 'More'. */
+export function mainPlaces(): Place[] {
+	return [
+		place('loose-ends', routes.looseEnds(), m.common_place_loose_ends(), ['/escalations']),
+		place('ward', routes.ward(), m.common_place_ward(), ['/patients']),
+		place('visits', routes.visits(), m.common_place_visits())
+	];
+}
+
+/** The places behind 'More': what everybody has, what an administrator has, what a demonstration has. */
+export function morePlaces(role: Role, demo: boolean): Place[] {
+	return [
+		place('rules', routes.rules(), m.common_place_rules()),
+		place('account', routes.account(), m.common_place_account()),
+		...(role === 'admin' ? [place('accounts', routes.adminAccounts(), m.common_place_accounts())] : []),
+		...(demo ? [place('phones', routes.phones(), m.common_place_phones())] : [])
+	];
+}
+
+/** The roster; at a desk it stands beside the main places, on a phone behind 'More'. */
+export function coverPlace(): Place {
+	return place('cover', routes.cover(), m.common_place_cover());
+}
+
+/** Whether somebody who is at `path` is in the place. */
+export function isIn(place: Place, path: string): boolean {
+	return place.under.some((root) => path === root || path.startsWith(`${root}/`));
+}
+
+function place(key: PlaceKey, href: string, label: string, also: readonly string[] = []): Place {
+	return { key, href, label, under: [href, ...also] };
+}

@@ -1,0 +1,14 @@
+/** What a person typed where a number belongs. An unreadable text is never a missing number. */
+export type TypedNumber = { kind: 'empty' } | { kind: 'number'; value: number } | { kind: 'unreadable' };
+
+/** Read a number as people write it: spaces around it, a comma or a point before the decimals. */
+export function readNumber(text: string): TypedNumber {
+	const trimmed = text.trim();
+	if (trimmed === '') {
+		return { kind: 'empty' };
+	}
+	if (!/^[-+]?(\d+([.,]\d*)?|[.,]\d+)$/.test(trimmed)) {
+		return { kind: 'unreadable' };
+	}
+	return { kind: 'number', value: Number(trimmed.replace(',', '.')) };
+}
