@@ -10,6 +10,7 @@ export const PROBLEMS = {
 	'wrong-signature': { status: 403, title: 'The signature does not fit' },
 	'not-allowed': { status: 403, title: 'This role may not do that' },
 	'not-found': { status: 404, title: 'Not there, or not yours to see' },
+	'no-such-method': { status: 405, title: 'The method is not known here' },
 	'wrong-state': { status: 409, title: 'The state does not allow it' },
 	'already-asked': { status: 409, title: 'It is already asked' },
 	'already-given': { status: 409, title: 'It is already given' },

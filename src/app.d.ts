@@ -1,0 +1,22 @@
+import type { Context } from '$lib/server/context';
+
+declare global {
+	namespace App {
+		interface Locals {
+			/** Who asks, when and from where. */
+			context: Context;
+			/** The sign-in behind the cookie; null for programs and for nobody. */
+			signInId: string | null;
+			requestId: string;
+		}
+		interface Error {
+			message: string;
+			/** The stable code of a problem, where it is one. */
+			code?: string;
+			/** To quote when something went wrong on our side. */
+			id?: string;
+		}
+	}
+}
+
+export {};

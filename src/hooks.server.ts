@@ -1,0 +1,85 @@
+import { error, redirect, type Handle, type HandleServerError, type ServerInit } from '@sveltejs/kit';
+import { sequence } from '@sveltejs/kit/hooks';
+import { Problem } from '$lib/domain/core/errors';
+import { routes } from '$lib/routes';
+import { personOfToken } from '$lib/server/auth/people';
+import { personOfCookie } from '$lib/server/auth/sign-ins';
+import { now } from '$lib/server/clock';
+import { newId } from '$lib/server/ids';
+import { log } from '$lib/server/log';
+import { secureHeaders } from '$lib/server/http/headers';
+import { countRequest } from '$lib/server/http/limits';
+import { refuseForeignOrigin } from '$lib/server/http/origin';
+import { problemResponse } from '$lib/server/http/problem';
+import { startServer } from '$lib/server/start';
+
+/** Runs once, before the first request is answered. */
+export const init: ServerInit = () => startServer();
+
+/** Addresses that are asked often and tell nothing: health checks and files of the build. */
+const UNCOUNTED = /^\/(healthz|readyz|metrics|_app\/)/;
+
+const identify: Handle = async ({ event, resolve }) => {
+	const { cookies, request } = event;
+	const bearer = /^Bearer (\S+)$/.exec(request.headers.get('authorization') ?? '')?.[1];
+	const cookie = bearer ? null : await personOfCookie(cookies);
+	const person = bearer ? await personOfToken(bearer) : (cookie?.person ?? null);
+	const address = event.getClientAddress();
+	event.locals.requestId = newId();
+	event.locals.signInId = cookie?.signInId ?? null;
+	event.locals.context = { actor: person, now: now(), address, key: null };
+	if (!UNCOUNTED.test(event.url.pathname)) {
+		countRequest(person?.id ?? address, now());
+	}
+	refuseForeignOrigin(event, bearer !== undefined);
+	return resolve(event);
+};
+
+/** Pages behind the sign-in send others to it; the API answers 401 by itself. */
+const guard: Handle = ({ event, resolve }) => {
+	const inside = event.route.id?.startsWith('/(app)') ?? false;
+	if (inside && event.locals.context.actor?.kind !== 'person') {
+		redirect(303, routes.signIn(event.url.pathname + event.url.search));
+	}
+	return resolve(event);
+};
+
+/** What the API does not know is a problem too, not a page. */
+const problems: Handle = async ({ event, resolve }) => {
+	const api = event.url.pathname.startsWith('/api/');
+	try {
+		const response = await resolve(event);
+		if (api && response.status === 405) {
+			return problemResponse(new Problem('no-such-method', `${event.request.method} is not known here.`));
+		}
+		if (api && event.route.id === null) {
+			return problemResponse(new Problem('not-found', `There is no ${event.url.pathname}.`));
+		}
+		return response;
+	} catch (thrown) {
+		if (!(thrown instanceof Problem)) {
+			throw thrown;
+		}
+		if (api || event.request.method !== 'GET') {
+			return problemResponse(thrown);
+		}
+		error(thrown.status, { message: thrown.detail, code: thrown.code });
+	}
+};
+
+const harden: Handle = async ({ event, resolve }) => secureHeaders(await resolve(event), event.url.pathname);
+
+export const handle = sequence(harden, problems, identify, guard);
+
+/** Expected errors keep their text; anything else is logged under an id and answered without detail. */
+export const handleError: HandleServerError = ({ error: thrown, event, status, message }) => {
+	if (thrown instanceof Problem) {
+		return { message: thrown.detail, code: thrown.code };
+	}
+	if (status === 404) {
+		return { message };
+	}
+	const id = event.locals.requestId ?? newId();
+	log().error({ id, route: event.route.id, err: thrown }, 'request failed');
+	return { message: 'Something went wrong on our side. Nothing was changed.', id };
+};

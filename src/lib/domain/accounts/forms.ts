@@ -1,0 +1,58 @@
+import { z } from 'zod';
+import { ROLES } from '../core/codes';
+import { text } from '../core/fields';
+
+export const PASSWORD_MIN = 15;
+export const PASSWORD_MAX = 128;
+
+const email = z
+	.string('email is a text.')
+	.trim()
+	.toLowerCase()
+	.max(254, 'email has at most 254 characters.')
+	.pipe(z.email('email is not an address like name@hospital.example.'));
+
+export const signInBody = z.strictObject({
+	email: z
+		.string('email is a text.')
+		.trim()
+		.toLowerCase()
+		.min(1, 'email is empty.')
+		.max(254, 'email has at most 254 characters.'),
+	password: z
+		.string('password is a text.')
+		.min(1, 'password is empty.')
+		.max(1024, 'password has at most 1024 characters.'),
+	code: z.string().max(20, 'code has at most 20 characters.').optional()
+});
+
+/** A new password. Length is what counts; there are no rules on its composition and no expiry. */
+export const newPassword = z
+	.string('password is a text.')
+	.transform((value) => value.normalize('NFKC'))
+	.pipe(
+		z
+			.string()
+			.min(PASSWORD_MIN, `password has at least ${PASSWORD_MIN} characters.`)
+			.max(PASSWORD_MAX, `password has at most ${PASSWORD_MAX} characters.`)
+			.refine((value) => new Set(value).size >= 5, 'password repeats the same few characters.')
+	);
+
+/** Taking up an invitation: the first administrator also gives name and address. */
+export const firstAdminBody = z.strictObject({ name: text('name', 100), email, password: newPassword });
+export const invitedBody = z.strictObject({ password: newPassword });
+
+export const createAccountBody = z.strictObject({
+	name: text('name', 100),
+	email,
+	role: z.enum(ROLES),
+	phone: z.string().trim().max(30, 'phone has at most 30 characters.').optional(),
+	units: z.array(z.string()).max(50, 'units has at most 50 members.').default([])
+});
+
+export const createUnitBody = z.strictObject({
+	name: text('name', 40),
+	kind: z.enum(['intensive-care', 'ward', 'gym'])
+});
+
+export const createTokenBody = z.strictObject({ name: text('name', 60) });

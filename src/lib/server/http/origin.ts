@@ -1,0 +1,36 @@
+import type { RequestEvent } from '@sveltejs/kit';
+import { Problem } from '$lib/domain/core/errors';
+import { env } from '../env';
+
+const READS = new Set(['GET', 'HEAD', 'OPTIONS']);
+
+/** Signed by the gateway, which sends no Origin; their handlers check the signature. */
+const SIGNED = new Set(['/api/hooks/sms', '/api/hooks/sms-status']);
+
+/** Moves the demonstration's clock, for test tools without a browser; see its handler. */
+const OPEN = new Set(['/api/demo/clock']);
+
+/**
+ * Every write must come from a page of our own, whatever its content type. Kit's own check looks at form content
+ * types only and refuses the gateway's posts. Programs with a personal token carry no cookie and need no Origin.
+ * @throws Problem `foreign-origin`
+ */
+export function refuseForeignOrigin(event: RequestEvent, usesBearer: boolean): void {
+	const { request, url } = event;
+	if (READS.has(request.method) || SIGNED.has(url.pathname) || OPEN.has(url.pathname) || usesBearer) {
+		return;
+	}
+	const origin = request.headers.get('origin');
+	if (origin !== null && ownOrigins().has(origin)) {
+		return;
+	}
+	throw new Problem('foreign-origin', `The origin ${origin ?? '(none)'} is not ${env().publicUrl}.`);
+}
+
+function ownOrigins(): Set<string> {
+	const own = new URL(env().publicUrl).origin;
+	// A demonstration is opened by either name of this machine.
+	return env().demo
+		? new Set([own, `http://localhost:${env().port}`, `http://127.0.0.1:${env().port}`])
+		: new Set([own]);
+}

@@ -1,0 +1,160 @@
+import type { Person } from '$lib/domain/access/actor';
+import { can } from '$lib/domain/access/can';
+import { Problem } from '$lib/domain/core/errors';
+import { loadPerson } from '../auth/people';
+import { signInStillGood } from '../auth/sign-ins';
+import { now } from '../clock';
+import { db } from '../db';
+import { log } from '../log';
+import { guardedStream, type Sink } from './guarded';
+import { listen, type LoggedEvent } from './hub';
+import { canResume, currentCursor, eventsAfter } from './log';
+
+const open = new Set<Sink>();
+let closing = false;
+
+/** May this person hear that event? Decided anew for each event, with their role and units of now. */
+export function mayHear(person: Person, event: LoggedEvent): boolean {
+	if (event.userId) {
+		return event.userId === person.id;
+	}
+	if (event.unitId === null) {
+		return false;
+	}
+	// What one may not read, one does not hear of either: a coordinator hears no session and no escalation.
+	switch (event.topic) {
+		case 'escalation':
+			return can(person, 'escalation.read', { unitId: event.unitId });
+		case 'session':
+			return can(person, 'session.read', { unitId: event.unitId });
+		case 'episode':
+		case 'referral':
+		case 'thread':
+		case 'clearance':
+		case 'visit':
+		case 'message':
+		case 'account':
+			return can(person, 'episode.read', { unitId: event.unitId });
+	}
+}
+
+/**
+ * Open the live stream of one person.
+ * @param after the cursor to resume from; null starts with what happens next
+ * @param signInId the browser's sign-in, checked again at each heartbeat; null for programs with a token
+ */
+export function openStream(person: Person, signInId: string | null, after: number | null): Response {
+	if (closing) {
+		throw new Problem('not-ready', 'The server is stopping; try again in a few seconds.');
+	}
+	let current = person;
+	const stillEntitled = async () => {
+		const fresh = await loadPerson(db(), person.id);
+		if (!fresh || (signInId !== null && !(await signInStillGood(signInId, now())))) {
+			return false;
+		}
+		current = fresh;
+		return true;
+	};
+	const start = (sink: Sink) => {
+		open.add(sink);
+		const feed = new Feed(sink, () => current, stillEntitled, person.id);
+		const stopListening = listen((event) => feed.offer(event));
+		feed.replay(after).catch((error: unknown) => {
+			log().error({ err: error }, 'live replay failed');
+			sink.end();
+		});
+		return () => {
+			stopListening();
+			open.delete(sink);
+		};
+	};
+	return guardedStream(start, stillEntitled);
+}
+
+/** One client's events in order: first the replay, then what was heard meanwhile, then live. */
+class Feed {
+	#waiting: LoggedEvent[] = [];
+	#busy = true;
+	#last = 0;
+
+	constructor(
+		private readonly sink: Sink,
+		private readonly person: () => Person,
+		private readonly stillEntitled: () => Promise<boolean>,
+		private readonly ownId: string
+	) {}
+
+	offer(event: LoggedEvent): void {
+		this.#waiting.push(event);
+		if (!this.#busy) {
+			void this.#drain();
+		}
+	}
+
+	async replay(after: number | null): Promise<void> {
+		const newest = await currentCursor(db());
+		if (after !== null && !(await canResume(db(), after))) {
+			this.sink.send({ kind: 'reset', cursor: newest });
+			this.#last = newest;
+		} else {
+			this.#last = after ?? newest;
+			this.sink.send({ kind: 'cursor', cursor: this.#last });
+			await this.#catchUp();
+		}
+		await this.#drain();
+	}
+
+	async #catchUp(): Promise<void> {
+		for (;;) {
+			const events = await eventsAfter(db(), this.#last);
+			if (events.length === 0) {
+				return;
+			}
+			for (const event of events) {
+				await this.#pass(event);
+			}
+		}
+	}
+
+	async #drain(): Promise<void> {
+		this.#busy = true;
+		try {
+			for (let event = this.#waiting.shift(); event; event = this.#waiting.shift()) {
+				if (event.cursor > this.#last) {
+					await this.#pass(event);
+				}
+			}
+		} catch (error) {
+			log().error({ err: error }, 'live feed failed');
+			this.sink.end();
+		} finally {
+			this.#busy = false;
+		}
+	}
+
+	async #pass(event: LoggedEvent): Promise<void> {
+		this.#last = event.cursor;
+		// The person's own account changed: new role, new units, disabled, signed out.
+		if (event.topic === 'account' && event.userId === this.ownId && !(await this.stillEntitled())) {
+			this.sink.end();
+			return;
+		}
+		if (mayHear(this.person(), event)) {
+			const { topic, kind, id, episodeId } = event;
+			this.sink.send({ kind: 'change', cursor: event.cursor, event: { topic, kind, id, episodeId } });
+		}
+	}
+}
+
+export function openStreams(): number {
+	return open.size;
+}
+
+/** End every stream and open no more: a stopping server would otherwise wait for them for half a minute. */
+export function endAllStreams(): void {
+	closing = true;
+	for (const sink of open) {
+		sink.end();
+	}
+}
