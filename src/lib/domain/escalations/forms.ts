@@ -1,0 +1,38 @@
+import { z } from 'zod';
+import { GRADES } from '../core/codes';
+import { reason, text } from '../core/fields';
+
+const minutes = (field: string, max: number) =>
+	z
+		.number(`${field} is a number of minutes.`)
+		.int(`${field} is a whole number of minutes.`)
+		.min(1, `${field} is at least 1 minute.`)
+		.max(max, `${field} is at most ${max} minutes.`);
+
+export const raiseBody = z.strictObject({
+	grade: z.enum(GRADES, `grade is one of ${GRADES.join(', ')}.`),
+	situation: text('situation', 2000),
+	background: text('background', 2000),
+	assessment: text('assessment', 2000),
+	request: text('request', 2000),
+	neededBy: z.iso
+		.datetime({ offset: true, error: 'neededBy is an instant like 2026-12-01T14:05:00Z.' })
+		.optional(),
+	toldInPerson: z.string().min(1).max(64).optional(),
+	sessionId: z.string().min(1).max(64).optional(),
+	threadId: z.string().min(1).max(64).optional()
+});
+export type RaiseInput = z.infer<typeof raiseBody>;
+
+export const takeBody = z.strictObject({ etaMinutes: minutes('etaMinutes', 240).optional() });
+
+export const passBody = z.strictObject({ to: z.string().min(1).max(64), reason: reason('reason') });
+
+export const settleBody = z.strictObject({
+	outcome: text('outcome', 200),
+	note: text('note', 4000),
+	informed: text('informed', 200).optional(),
+	recheckMinutes: minutes('recheckMinutes', 24 * 60).optional()
+});
+
+export const emptyBody = z.strictObject({});

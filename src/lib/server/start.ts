@@ -1,0 +1,54 @@
+import { building } from '$app/environment';
+import { migrateDatabase } from './db/migrate';
+import { closeDatabase, db, openDatabase } from './db';
+import { lockDataFolder } from './db/lock';
+import { env } from './env';
+import { startWork, stopWork } from './jobs/work';
+import { endAllStreams } from './live/stream';
+import { log } from './log';
+import { prepareHospital } from './setup';
+
+// In development this module is evaluated anew after a change, while the process and its database live on.
+const state = globalThis as typeof globalThis & { __ropewalkStarted?: Promise<void> };
+
+/**
+ * Start the server: own the data folder, open and migrate the database, prepare the hospital, resume the timers.
+ * A start that fails stops the process: a half-started hub would look alive and hear nothing.
+ */
+export function startServer(): Promise<void> {
+	if (building) {
+		return Promise.resolve();
+	}
+	state.__ropewalkStarted ??= start();
+	return state.__ropewalkStarted;
+}
+
+async function start(): Promise<void> {
+	const lock = lockDataFolder(env().dataDir);
+	await openDatabase(env().databaseUrl);
+	await migrateDatabase(db());
+	await prepareHospital();
+	startWork();
+	stopOnSignal(lock);
+	log().info({ demo: env().demo, url: env().publicUrl }, 'ready');
+}
+
+/**
+ * End the streams first: they never become idle, and the server would wait half a minute for them. Then the
+ * requests in progress finish, and the database closes when everything else is done.
+ */
+function stopOnSignal(lock: { release(): void }): void {
+	for (const signal of ['SIGTERM', 'SIGINT'] as const) {
+		process.once(signal, () => {
+			log().info({ signal }, 'stopping');
+			endAllStreams();
+			void stopWork();
+		});
+	}
+	process.once('sveltekit:shutdown', () => {
+		void stopWork().then(() => {
+			closeDatabase();
+			lock.release();
+		});
+	});
+}
