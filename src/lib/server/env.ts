@@ -24,6 +24,7 @@ const schema = z.object({
 	FAKE_SMS_PORT: port(3001),
 	FAKE_MAIL_PORT: port(3002),
 	FAKE_SMTP_PORT: port(3003),
+	LINK_SECRET: z.string().min(32, 'must have at least 32 characters').optional(),
 	SMS_ACCOUNT_SID: text,
 	SMS_AUTH_TOKEN: text,
 	SMS_FROM: text,
@@ -59,6 +60,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
 		hospital: { name: e.HOSPITAL_NAME, zone: e.HOSPITAL_ZONE, phone: e.HOSPITAL_PHONE },
 		fakes: { sms: e.FAKE_SMS_PORT, mail: e.FAKE_MAIL_PORT, smtp: e.FAKE_SMTP_PORT },
+		/** The key of the links in messages; null where the one in the data folder is used. */
+		linkSecret: e.LINK_SECRET ?? null,
 		sms: smsGateway(e),
 		mail: mailGateway(e),
 		logLevel: e.LOG_LEVEL
