@@ -8,78 +8,14 @@
  * This module is the only one of the area that loads zod. Pages that only judge import from `index.ts`.
  */
 import { z } from 'zod';
-import { CLEARANCE_KINDS, CLEARANCE_STATES, LEVELS, RHYTHMS } from '../core/codes';
+import { CLEARANCE_KINDS, CLEARANCE_STATES, RHYTHMS } from '../core/codes';
 import { ACTIVITY_CODES } from './activities/codes';
-import { BOUNDS, type BoundedField } from './bounds';
 import { AIRWAYS, ASSISTANCE, LIMIT_KEYS, PHASES, POSTURES, PRESSURE_SOURCES, SETS, SYMPTOMS } from './codes';
+import { bounded, instant, levelSchema, oneOf, shown, text, wordOrObject, yesNo } from './form-fields';
 
 const TEXT_MAX = 2000;
 const NAME_MAX = 200;
 const LIST_MAX = 200;
-
-/** What was sent, as far as it may be repeated in a message: short, and never a whole object. */
-function shown(value: unknown): string {
-	if (value === undefined) {
-		return 'missing';
-	}
-	return typeof value === 'object' && value !== null
-		? 'not a plain value'
-		: JSON.stringify(value).slice(0, 60);
-}
-
-/** A number within the hard bounds of its field. `field` is the name the caller used. */
-function bounded(field: BoundedField, called: string = field) {
-	const { low, high, unit } = BOUNDS[field];
-	const error = ({ input }: { input?: unknown }) =>
-		`${called} is ${shown(input)}: it must be a number from ${low} to ${high}${unit && ` ${unit}`}.`;
-	return z.number({ error }).min(low, { error }).max(high, { error });
-}
-
-/** One of a closed list. */
-function oneOf<const T extends readonly [string, ...string[]]>(called: string, list: T) {
-	return z.enum(list, {
-		error: ({ input }) => `${called} is ${shown(input)}: it must be one of ${list.join(', ')}.`
-	});
-}
-
-/** Yes or no, and nothing that merely looks like it. */
-function yesNo(called: string) {
-	return z.boolean({ error: ({ input }) => `${called} is ${shown(input)}: it must be true or false.` });
-}
-
-function text(called: string, max: number) {
-	return z
-		.string({ error: ({ input }) => `${called} is ${shown(input)}: it must be text.` })
-		.trim()
-		.min(1, { error: `${called} is empty: it must hold 1 to ${max} characters.` })
-		.max(max, { error: `${called} is too long: it may hold at most ${max} characters.` });
-}
-
-/**
- * The message of a value that may be a bare word or an object. An object is answered with what is wrong inside
- * it, which zod keeps with the branch (the last one here), rather than with 'neither of the two'.
- */
-function wordOrObject(called: string, list: readonly string[], shape: string) {
-	return (issue: { input?: unknown; errors?: readonly (readonly { message: string }[])[] }): string => {
-		const inside = issue.errors?.at(-1)?.[0]?.message;
-		if (typeof issue.input === 'object' && issue.input !== null && inside !== undefined) {
-			return inside;
-		}
-		return `${called} is ${shown(issue.input)}: it must be one of ${list.join(', ')}, or ${shape}.`;
-	};
-}
-
-/** An instant as RFC 3339, with `Z` or an offset. */
-function instant(called: string) {
-	return z.iso.datetime({
-		offset: true,
-		error: ({ input }) => `${called} is ${shown(input)}: it must be an instant such as 2026-03-04T09:30:00Z.`
-	});
-}
-
-const levelSchema = z.literal([...LEVELS], {
-	error: ({ input }) => `level is ${shown(input)}: it must be a whole number from 1 to 6.`
-});
 
 /**
  * One set of readings. `work` is any number that grows with effort (watts, stage, metres per minute) and orders
@@ -155,7 +91,7 @@ export const limitsOverrideSchema = z.partialRecord(
 	z.number({ error: limitError }).min(0, { error: limitError }).max(LIMIT_MAX, { error: limitError }),
 	{
 		error: (issue) =>
-			issue.code === 'unrecognized_keys'
+			'keys' in issue && Array.isArray(issue.keys)
 				? `limits names ${issue.keys.join(', ')}, which is no limit of the response rules.`
 				: undefined
 	}
