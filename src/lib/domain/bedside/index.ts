@@ -5,6 +5,7 @@
  */
 export * from './codes';
 export * from './bounds';
+export { assess } from './assess';
 export type { Finding, Verdict } from './finding';
 export type {
 	ActivityDone,
@@ -18,4 +19,18 @@ export type {
 	SessionBody,
 	Symptom
 } from './forms';
+export {
+	limitsFor,
+	overrideLimits,
+	setFor,
+	type Limit,
+	type LimitSet,
+	type LocalLimit,
+	type LocalLimits
+} from './limits/limits';
+export { cite, SOURCES, type Source, type SourceId, type SourceStatus } from './limits/sources';
+export { ACTIVITIES, activitiesUpTo, activityByCode } from './activities/activities';
+export type { Activity, Dose } from './activities/activity';
 export { ACTIVITY_CODES, type ActivityCode } from './activities/codes';
+export { granted, lackingClearance, CLEARANCE_WORDS, type Granted } from './rules/clearances';
+export * from './levels';
