@@ -2,4 +2,4 @@
 export const CONTROL =
 	'block min-h-touch w-full rounded border border-soft bg-raised px-3 py-2 text-body text-ink placeholder:text-soft ' +
 	'hover:border-ink aria-invalid:border-2 aria-invalid:border-ink ' +
-	'read-only:border-dashed read-only:bg-transparent disabled:border-rule disabled:bg-sunk disabled:text-soft';
+	'[&[readonly]]:border-dashed [&[readonly]]:bg-transparent disabled:border-rule disabled:bg-sunk disabled:text-soft';
