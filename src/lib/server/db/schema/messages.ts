@@ -2,6 +2,7 @@ import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqli
 import { users } from './accounts';
 import { id, instant } from './columns';
 import { patients } from './episodes';
+import { visits } from './visits';
 
 export const MESSAGE_KINDS = ['escalation', 'reminder', 'answer', 'mail'] as const;
 export const MESSAGE_STATES = [
@@ -44,7 +45,10 @@ export const outbox = sqliteTable(
 		leaseOwner: text('lease_owner'),
 		leaseUntil: instant('lease_until'),
 		sentAt: instant('sent_at'),
-		providerId: text('provider_id')
+		providerId: text('provider_id'),
+		/** Of one that did not arrive: when a person saw to it in another way. */
+		handledAt: instant('handled_at'),
+		handledBy: text('handled_by').references(() => users.id)
 	},
 	(t) => [
 		index('outbox_due').on(t.state, t.nextAt),
@@ -94,6 +98,8 @@ export const inboundMessages = sqliteTable('inbound_messages', {
 	patientId: text('patient_id').references(() => patients.id),
 	userId: text('user_id').references(() => users.id),
 	understoodAs: text('understood_as').notNull(),
+	/** The visit that the text was an answer to, where it was one. */
+	visitId: text('visit_id').references(() => visits.id),
 	/** Null while a person still has to look at it. */
 	handledAt: instant('handled_at'),
 	handledBy: text('handled_by').references(() => users.id)

@@ -28,7 +28,11 @@ export const visits = sqliteTable(
 			.notNull()
 			.references(() => users.id),
 		bookedAt: instant('booked_at').notNull(),
-		decidedAt: instant('decided_at')
+		decidedAt: instant('decided_at'),
+		/** When the patient cancelled it themselves; open until somebody has followed it up. */
+		patientCancelledAt: instant('patient_cancelled_at'),
+		followedUpAt: instant('followed_up_at'),
+		followedUpBy: text('followed_up_by').references(() => users.id)
 	},
 	(t) => [index('visits_start').on(t.startsAt), index('visits_episode').on(t.episodeId, t.startsAt)]
 );
