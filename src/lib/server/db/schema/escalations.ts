@@ -47,7 +47,9 @@ export const escalations = sqliteTable(
 		recheckDoneAt: instant('recheck_done_at'),
 		/** The chain: which step comes next and when; null once taken, settled or withdrawn. */
 		nextStep: integer('next_step'),
-		nextStepAt: instant('next_step_at')
+		nextStepAt: instant('next_step_at'),
+		/** From when the steps count: the raising, or the moment a worse grade started the chain again. */
+		chainStartedAt: instant('chain_started_at').notNull()
 	},
 	(t) => [
 		index('escalations_episode').on(t.episodeId, t.raisedAt),

@@ -1,0 +1,111 @@
+import type {
+	Approach,
+	ClearanceKind,
+	ClearanceState,
+	ReferralState,
+	Rhythm,
+	Service,
+	Sex,
+	VisitState
+} from '../core/codes';
+import type { ClearanceLimits } from '../clearances/forms';
+import type { MayDoNow } from './may-do-now';
+import type { Precautions } from './precautions';
+
+/** Shapes that queries answer and pages show. Instants are RFC 3339, days `YYYY-MM-DD`. */
+export interface PatientLine {
+	id: string;
+	name: string;
+	mrn: string;
+	birthDate: string;
+	sex: Sex;
+}
+
+/** One row of the ward. */
+export interface EpisodeListItem {
+	id: string;
+	patient: PatientLine;
+	/** The unit's name. */
+	unit: string;
+	unitId: string;
+	bed: string | null;
+	procedure: string | null;
+	operatedAt: string | null;
+	postOpDay: number | null;
+	level: number;
+	betaBlocked: boolean | null;
+	/** How many things are open about this patient. */
+	looseEnds: number;
+	mayDoNow: MayDoNow;
+	precautions: Precautions;
+	/** The most urgent escalation that is not settled. */
+	escalation: {
+		id: string;
+		grade: 'high' | 'medium' | 'low';
+		state: 'raised' | 'taken';
+		takenBy: string | null;
+	} | null;
+}
+
+export interface ClearanceLine {
+	id: string;
+	kind: ClearanceKind;
+	state: ClearanceState;
+	question: string;
+	askedBy: string;
+	askedAt: string;
+	decidedBy: string | null;
+	decidedAt: string | null;
+	limits: ClearanceLimits | null;
+	reviewOn: string | null;
+	note: string | null;
+	reason: string | null;
+}
+
+export interface VisitLine {
+	id: string;
+	startsAt: string;
+	minutes: number;
+	place: string;
+	state: VisitState;
+}
+
+/** Everything on the nameboard of one patient. */
+export interface Nameboard {
+	id: string;
+	patient: PatientLine & { phone?: string | null; language?: string; smsConsent?: boolean };
+	unit: string;
+	unitId: string;
+	bed: string | null;
+	phase: 'inpatient' | 'outpatient';
+	procedure: string | null;
+	approach: Approach | null;
+	operatedAt: string | null;
+	postOpDay: number | null;
+	surgeon: { id: string; name: string } | null;
+	level: number;
+	betaBlocked: boolean | null;
+	rhythm: Rhythm | null;
+	mayDoNow: MayDoNow;
+	precautions: Precautions;
+	referrals: {
+		id: string;
+		service: Service;
+		state: ReferralState;
+		threadId: string;
+		question: string;
+		askedBy: string;
+		askedAt: string;
+	}[];
+	threads: { id: string; service: Service; state: ReferralState }[];
+	clearances: ClearanceLine[];
+	visits: VisitLine[];
+	escalations: {
+		id: string;
+		grade: 'high' | 'medium' | 'low';
+		state: string;
+		situation: string;
+		raisedAt: string;
+		takenBy: string | null;
+	}[];
+}

@@ -1,0 +1,84 @@
+import { desc, inArray } from 'drizzle-orm';
+import type { Level } from '$lib/domain/core/codes';
+import { localDateOf } from '$lib/domain/core/time';
+import { isInForce } from '$lib/domain/clearances/states';
+import { mayDoNow, type MayDoNow } from '$lib/domain/episodes/may-do-now';
+import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
+import { precautionsOf, type Precautions } from '$lib/domain/episodes/precautions';
+import type { Reader } from '../db';
+import { clearances, operations } from '../db/schema';
+import { env } from '../env';
+
+export type Operation = typeof operations.$inferSelect;
+export type Clearance = typeof clearances.$inferSelect;
+
+/** What is derived about an episode from its operations and clearances. */
+export interface EpisodeFacts {
+	/** The latest operation: day, precautions and clearances count from it. */
+	operation: Operation | null;
+	postOpDay: number | null;
+	/** The newest clearance of each kind that counts from the latest operation. */
+	newest: Clearance[];
+	inForce: Clearance[];
+	mayDoNow: MayDoNow;
+	precautions: Precautions;
+}
+
+/** Derive the facts of several episodes with two queries. */
+export async function factsOf(
+	db: Reader,
+	episodes: readonly { id: string; level: number }[],
+	now: number
+): Promise<Map<string, EpisodeFacts>> {
+	const ids = episodes.map((episode) => episode.id);
+	const [allOperations, allClearances] = await Promise.all([
+		db
+			.select()
+			.from(operations)
+			.where(inArray(operations.episodeId, ids))
+			.orderBy(desc(operations.operatedAt)),
+		db.select().from(clearances).where(inArray(clearances.episodeId, ids)).orderBy(desc(clearances.askedAt))
+	]);
+	return new Map(
+		episodes.map((episode) => [
+			episode.id,
+			derive(
+				episode,
+				allOperations.filter((row) => row.episodeId === episode.id),
+				allClearances.filter((row) => row.episodeId === episode.id),
+				now
+			)
+		])
+	);
+}
+
+function derive(
+	episode: { level: number },
+	newestFirst: Operation[],
+	asked: Clearance[],
+	now: number
+): EpisodeFacts {
+	const { zone } = env().hospital;
+	const operation = newestFirst.find((row) => row.operatedAt <= now) ?? newestFirst.at(-1) ?? null;
+	const counting = asked.filter((row) => row.operationId === null || row.operationId === operation?.id);
+	const newest = counting.filter((row, index) => counting.findIndex((c) => c.kind === row.kind) === index);
+	const today = localDateOf(now, zone);
+	const inForce = newest.filter((row) => isInForce(row, today));
+	const armStage = inForce.find((row) => row.kind === 'arm-stage');
+	return {
+		operation,
+		postOpDay: postOperativeDay(
+			newestFirst.map((row) => row.operatedAt),
+			now,
+			zone
+		),
+		newest,
+		inForce,
+		mayDoNow: mayDoNow(episode.level as Level, newest),
+		precautions: precautionsOf(
+			operation && { approach: operation.approach, day: localDateOf(operation.operatedAt, zone) },
+			armStage ? { maxElevationDeg: armStage.limits?.maxElevationDeg ?? null } : null,
+			inForce.some((row) => row.kind === 'precautions-end')
+		)
+	};
+}

@@ -1,0 +1,113 @@
+import { asc, desc, eq } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
+import { can } from '$lib/domain/access/can';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import type { Nameboard } from '$lib/domain/episodes/views';
+import { accessEpisode, type EpisodeRow } from '../access/access';
+import { listClearances } from '../clearances/queries';
+import type { Reader } from '../db';
+import { escalations, patients, referrals, threads, units, users } from '../db/schema';
+import { visitsOfEpisode } from '../visits/queries';
+import { factsOf } from './facts';
+import { patientLine } from './list';
+
+/** Everything on the nameboard of one patient, as far as this person may see it. */
+export async function getNameboard(
+	db: Reader,
+	person: Person,
+	episodeId: string,
+	now: number
+): Promise<Nameboard> {
+	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
+	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
+	const [who, facts, asks, cleared, visits, calls] = await Promise.all([
+		whoAndWhere(db, episode),
+		factsOf(db, [episode], now),
+		referralsOf(db, episodeId),
+		listClearances(db, episodeId),
+		visitsOfEpisode(db, episodeId),
+		clinical ? escalationsOf(db, episodeId) : []
+	]);
+	const derived = facts.get(episodeId);
+	if (!derived || !who) {
+		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
+	}
+	const contact = can(person, 'contact.read', { unitId: episode.unitId })
+		? { phone: who.patient.phone, language: who.patient.language, smsConsent: who.patient.smsConsent }
+		: {};
+	return {
+		id: episodeId,
+		patient: { ...patientLine(who.patient), ...contact },
+		unit: who.unit,
+		unitId: episode.unitId,
+		bed: episode.bed,
+		phase: episode.phase,
+		procedure: derived.operation?.procedure ?? null,
+		approach: derived.operation?.approach ?? null,
+		operatedAt: derived.operation ? toRfc3339(derived.operation.operatedAt) : null,
+		postOpDay: derived.postOpDay,
+		surgeon: who.surgeon,
+		level: episode.level,
+		betaBlocked: episode.betaBlocked,
+		rhythm: episode.rhythm,
+		mayDoNow: derived.mayDoNow,
+		precautions: derived.precautions,
+		referrals: asks,
+		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),
+		clearances: cleared,
+		visits,
+		escalations: calls
+	};
+}
+
+async function whoAndWhere(db: Reader, episode: EpisodeRow) {
+	const [row] = await db
+		.select({ patient: patients, unit: units.name })
+		.from(patients)
+		.innerJoin(units, eq(units.id, episode.unitId))
+		.where(eq(patients.id, episode.patientId));
+	if (!row) {
+		return null;
+	}
+	const [surgeon] = episode.surgeonId
+		? await db.select({ id: users.id, name: users.name }).from(users).where(eq(users.id, episode.surgeonId))
+		: [];
+	return { ...row, surgeon: surgeon ?? null };
+}
+
+async function referralsOf(db: Reader, episodeId: string): Promise<Nameboard['referrals']> {
+	const rows = await db
+		.select({
+			id: referrals.id,
+			service: referrals.service,
+			state: referrals.state,
+			threadId: threads.id,
+			question: referrals.question,
+			askedBy: users.name,
+			askedAt: referrals.askedAt
+		})
+		.from(referrals)
+		.innerJoin(threads, eq(threads.referralId, referrals.id))
+		.innerJoin(users, eq(users.id, referrals.askedBy))
+		.where(eq(referrals.episodeId, episodeId))
+		.orderBy(asc(referrals.askedAt));
+	return rows.map((row) => ({ ...row, askedAt: toRfc3339(row.askedAt) }));
+}
+
+async function escalationsOf(db: Reader, episodeId: string): Promise<Nameboard['escalations']> {
+	const rows = await db
+		.select({
+			id: escalations.id,
+			grade: escalations.grade,
+			state: escalations.state,
+			situation: escalations.situation,
+			raisedAt: escalations.raisedAt,
+			takenBy: users.name
+		})
+		.from(escalations)
+		.leftJoin(users, eq(users.id, escalations.takenBy))
+		.where(eq(escalations.episodeId, episodeId))
+		.orderBy(desc(escalations.raisedAt))
+		.limit(20);
+	return rows.map((row) => ({ ...row, raisedAt: toRfc3339(row.raisedAt) }));
+}

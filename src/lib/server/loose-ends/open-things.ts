@@ -1,0 +1,108 @@
+import { sql, type SQL } from 'drizzle-orm';
+
+/**
+ * Loose ends are derived, never stored, so they cannot go stale: one query over the tables, a branch for each
+ * kind of thing that can be open, all answering the same columns. Whose it is decides a pure function afterwards.
+ * A new kind is one more branch here and one more case in `domain/loose-ends`.
+ */
+export function openThingsSql(unitIds: readonly string[], now: number): SQL {
+	const units = sql.join(
+		unitIds.map((id) => sql`${id}`),
+		sql`, `
+	);
+	const branches = [
+		escalationsUntaken,
+		escalationsHeld,
+		rechecksDue,
+		clearancesAsked,
+		referralsAsked,
+		visitsCancelled(now),
+		messagesFailed,
+		textsUnread
+	];
+	return sql`
+		with place as (
+			select e.id, e.unit_id, u.name as unit, e.bed, p.name as patient, e.patient_id
+			from episodes e
+			join units u on u.id = e.unit_id
+			join patients p on p.id = e.patient_id
+			where e.unit_id in (${units})
+		)
+		${sql.join(branches, sql` union all `)}`;
+}
+
+const PLACE = sql`place.id as "episodeId", place.unit_id as "unitId", place.unit as "unit", place.bed as "bed", place.patient as "patientName"`;
+
+const escalationsUntaken = sql`
+	select 'escalation' as "kind", x.id as "id", ${PLACE}, x.thread_id as "threadId", x.grade as "grade",
+		null as "code", x.situation as "text", x.raised_by as "askedById", asker.name as "askedBy",
+		null as "heldById", null as "heldBy", x.raised_at as "since", x.needed_by as "due"
+	from escalations x
+	join place on place.id = x.episode_id
+	join users asker on asker.id = x.raised_by
+	where x.state = 'raised'`;
+
+const escalationsHeld = sql`
+	select 'escalation-taken', x.id, ${PLACE}, x.thread_id, x.grade, null, x.situation, x.raised_by, asker.name,
+		x.taken_by, holder.name, x.taken_at, x.needed_by
+	from escalations x
+	join place on place.id = x.episode_id
+	join users asker on asker.id = x.raised_by
+	join users holder on holder.id = x.taken_by
+	where x.state = 'taken'`;
+
+const rechecksDue = sql`
+	select 'recheck', x.id, ${PLACE}, x.thread_id, null, null, null, x.raised_by, asker.name,
+		x.ended_by, holder.name, x.ended_at, x.recheck_due_at
+	from escalations x
+	join place on place.id = x.episode_id
+	join users asker on asker.id = x.raised_by
+	join users holder on holder.id = x.ended_by
+	where x.state = 'settled' and x.recheck_due_at is not null and x.recheck_done_at is null`;
+
+const clearancesAsked = sql`
+	select 'clearance', c.id, ${PLACE}, c.thread_id, null, c.kind, c.question, c.asked_by, asker.name,
+		null, null, c.asked_at, null
+	from clearances c
+	join place on place.id = c.episode_id
+	join users asker on asker.id = c.asked_by
+	where c.state = 'asked'`;
+
+const referralsAsked = sql`
+	select 'referral', r.id, ${PLACE}, t.id, null, r.service, r.priority, r.asked_by, asker.name,
+		null, null, r.asked_at, null
+	from referrals r
+	join threads t on t.referral_id = r.id
+	join place on place.id = r.episode_id
+	join users asker on asker.id = r.asked_by
+	where r.state = 'asked'`;
+
+/** A visit that the patient cancelled wants another date; once its own time has passed nobody is asked any more. */
+function visitsCancelled(now: number): SQL {
+	return sql`
+		select 'visit-cancelled', v.id, ${PLACE}, null, null, null, v.reason, null, null,
+			null, null, v.decided_at, v.starts_at
+		from visits v
+		join place on place.id = v.episode_id
+		where v.state = 'cancelled' and v.reason = 'patient' and v.starts_at > ${now}`;
+}
+
+const messagesFailed = sql`
+	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
+		null, null, m.created_at, null
+	from outbox m
+	left join visits v on m.ref_kind = 'visit' and v.id = m.ref_id
+	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
+	left join referrals r on m.ref_kind = 'referral' and r.id = m.ref_id
+	join place on place.id = coalesce(v.episode_id, x.episode_id, r.episode_id)
+	where m.state in ('failed', 'undelivered')`;
+
+/** Texts that no rule understood. From an unknown number there is no place, and every coordinator sees it. */
+const textsUnread = sql`
+	select 'inbound', i.id, ${PLACE}, null, null, i.understood_as, null, null, null,
+		null, null, i.at, null
+	from inbound_messages i
+	left join place on place.id = (
+		select e.id from episodes e where e.patient_id = i.patient_id order by e.created_at desc limit 1
+	)
+	where i.handled_at is null and (i.patient_id is null or place.id is not null)`;

@@ -1,0 +1,60 @@
+import { sql } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import {
+	byUrgency,
+	whose,
+	type LooseEnd,
+	type LooseEnds,
+	type OpenThing
+} from '$lib/domain/loose-ends/loose-ends';
+import type { Reader } from '../db';
+import { openThingsSql } from './open-things';
+import { titleOf } from './titles';
+
+/** Everything open in the given units at `now`, in no particular order. */
+export async function openThings(db: Reader, unitIds: readonly string[], now: number): Promise<OpenThing[]> {
+	return unitIds.length === 0 ? [] : db.all<OpenThing>(openThingsSql(unitIds, now));
+}
+
+/** What waits on a person and what they wait for, each sorted as it is shown. */
+export async function looseEndsOf(db: Reader, person: Person, now: number): Promise<LooseEnds> {
+	const things = (await openThings(db, person.unitIds, now)).toSorted(byUrgency);
+	const pick = (side: 'mine' | 'theirs') =>
+		things.filter((thing) => whose(thing, person) === side).map(toLooseEnd);
+	return { mine: pick('mine'), theirs: pick('theirs') };
+}
+
+/** How many things are open about each episode, by episode id. */
+export async function countOpenThings(
+	db: Reader,
+	unitIds: readonly string[],
+	now: number
+): Promise<Map<string, number>> {
+	const counts = new Map<string, number>();
+	for (const { episodeId } of await openThings(db, unitIds, now)) {
+		if (episodeId) {
+			counts.set(episodeId, (counts.get(episodeId) ?? 0) + 1);
+		}
+	}
+	return counts;
+}
+
+function toLooseEnd(thing: OpenThing): LooseEnd {
+	return {
+		kind: thing.kind,
+		id: thing.id,
+		episodeId: thing.episodeId,
+		threadId: thing.threadId,
+		unit: thing.unit,
+		bed: thing.bed,
+		patientName: thing.patientName,
+		grade: thing.grade,
+		code: thing.code,
+		title: titleOf(thing),
+		askedBy: thing.askedBy,
+		heldBy: thing.heldBy,
+		since: toRfc3339(thing.since),
+		due: thing.due === null ? null : toRfc3339(thing.due)
+	};
+}

@@ -1,0 +1,29 @@
+import type { ClearanceKind, Service } from '$lib/domain/core/codes';
+import { assertNever } from '$lib/domain/core/assert-never';
+import type { OpenThing } from '$lib/domain/loose-ends/loose-ends';
+import { CLEARANCE_WORDS, SERVICE_WORDS } from '$lib/i18n/labels';
+import { m } from '$lib/i18n/paraglide/messages';
+
+/** The one line that names an open thing. It is shown behind the sign-in only. */
+export function titleOf(thing: OpenThing): string {
+	const text = thing.text ?? '';
+	switch (thing.kind) {
+		case 'escalation':
+		case 'escalation-taken':
+			return m.home_title_escalation({ text });
+		case 'recheck':
+			return m.home_title_recheck();
+		case 'clearance':
+			return m.home_title_clearance({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
+		case 'referral':
+			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service]() });
+		case 'visit-cancelled':
+			return m.home_title_visit_cancelled();
+		case 'message-failed':
+			return m.home_title_message_failed();
+		case 'inbound':
+			return m.home_title_inbound();
+		default:
+			return assertNever(thing.kind);
+	}
+}
