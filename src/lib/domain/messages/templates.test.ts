@@ -1,0 +1,203 @@
+import { describe, expect, it } from 'vitest';
+import { isGsm7 } from './gsm7';
+import { measureSms } from './sms-length';
+import { PATIENT_SMS, SMS, mailText, smsText } from './templates';
+import type { SmsTemplate } from './templates';
+import { dayAndTime, messageLanguage, safeName, shortened } from './templates/wording';
+
+const LINK = 'http://127.0.0.1:3000/t/q7Zr2LxV0aYd8KcM3nTfPw';
+const BEDSIDE = { unit: 'Heron Unit', bed: '4', grade: 'high', link: LINK } as const;
+const VISIT = {
+	sender: 'Saltmarsh General',
+	phone: '+353 1 555 0100',
+	startsAt: Date.parse('2025-03-28T10:00:00Z'),
+	zone: 'Europe/Dublin',
+	place: 'East Gym',
+	emergency: '112'
+};
+
+/** Each template word for word: a change of wording is a decision, and shows here. */
+const TEXTS: [SmsTemplate, string, string][] = [
+	[
+		'escalation',
+		smsText('escalation', { ...BEDSIDE, code: '4821' }),
+		`Ropewalk HIGH: Heron Unit, bed 4. To take it open ${LINK} or reply TAKE 4821`
+	],
+	[
+		'escalation-taken',
+		smsText('escalation-taken', BEDSIDE),
+		`Ropewalk HIGH: Heron Unit, bed 4: somebody has taken it. Nothing is asked of you now. ${LINK}`
+	],
+	['took-it', smsText('took-it', BEDSIDE), `Ropewalk HIGH: Heron Unit, bed 4: it is yours. ${LINK}`],
+	[
+		'passed-it',
+		smsText('passed-it', BEDSIDE),
+		`Ropewalk HIGH: Heron Unit, bed 4: the next person is told now. ${LINK}`
+	],
+	[
+		'staff-unclear',
+		smsText('staff-unclear', {}),
+		'Ropewalk: NOT taken. No open call fits your text. Open the link of the call, or reply TAKE and its code.'
+	],
+	[
+		'visit-reminder',
+		smsText('visit-reminder', { ...VISIT, confirmed: false }),
+		'Saltmarsh General: your visit is Fri 28 Mar 10:00, East Gym. Reply YES or NO. Questions: +353 1 555 0100. STOP ends texts.'
+	],
+	[
+		'visit-confirmed',
+		smsText('visit-confirmed', VISIT),
+		'Saltmarsh General: thank you, see you Fri 28 Mar 10:00, East Gym. To change it call +353 1 555 0100.'
+	],
+	[
+		'visit-declined',
+		smsText('visit-declined', VISIT),
+		'Saltmarsh General: thank you, Fri 28 Mar 10:00 is cancelled. We will call about another time, or call +353 1 555 0100.'
+	],
+	[
+		'visit-cancelled',
+		smsText('visit-cancelled', VISIT),
+		'Saltmarsh General: your visit Fri 28 Mar 10:00 is cancelled. Please do not come. Questions: +353 1 555 0100.'
+	],
+	[
+		'no-visit-open',
+		smsText('no-visit-open', VISIT),
+		'Saltmarsh General: no visit is waiting for your answer. Questions: +353 1 555 0100.'
+	],
+	[
+		'person-reads',
+		smsText('person-reads', VISIT),
+		'Saltmarsh General: thank you. A person will read it, but not at once. Sooner: +353 1 555 0100. In an emergency call 112.'
+	],
+	[
+		'texts-stopped',
+		smsText('texts-stopped', VISIT),
+		'Saltmarsh General: no more texts will come. START brings them back. Questions: +353 1 555 0100.'
+	],
+	[
+		'texts-started',
+		smsText('texts-started', VISIT),
+		'Saltmarsh General: texts about your visits will come again. STOP ends them. Questions: +353 1 555 0100.'
+	],
+	[
+		'texts-help',
+		smsText('texts-help', VISIT),
+		'Saltmarsh General: Reply YES, NO, or STOP to end texts. Questions: +353 1 555 0100. In an emergency call 112.'
+	]
+];
+
+describe('texts', () => {
+	it.each(TEXTS)('%s', (_, text, expected) => {
+		expect(text).toBe(expected);
+		expect(measureSms(text)).toMatchObject({ encoding: 'gsm7', segments: 1 });
+	});
+
+	it('the table has every template', () => {
+		expect(TEXTS.map(([template]) => template)).toEqual(Object.keys(SMS));
+	});
+
+	it('without bed or code', () => {
+		expect(smsText('escalation', { ...BEDSIDE, bed: null, grade: 'low', code: null })).toBe(
+			`Ropewalk LOW: Heron Unit. To take it open ${LINK}`
+		);
+	});
+
+	it('a confirmed visit is not asked again', () => {
+		expect(smsText('visit-reminder', { ...VISIT, confirmed: true })).toBe(
+			'Saltmarsh General: your visit is Fri 28 Mar 10:00, East Gym. Reply NO if you cannot come. Questions: +353 1 555 0100. STOP ends texts.'
+		);
+	});
+});
+
+describe('names that a hospital chooses', () => {
+	it.each([
+		['a disease in the sender', { sender: 'The Heart Centre' }, 'Your hospital: your visit', 'East Gym'],
+		['a specialty in the place', { place: 'Cardiac Rehab Gym' }, 'Saltmarsh General: ', 'the usual place'],
+		['an accent that costs room', { place: 'Dún Áras' }, 'Saltmarsh General: ', ', Dun Aras.'],
+		['letters the alphabet lacks', { place: 'Зал 2' }, 'Saltmarsh General: ', 'the usual place'],
+		['a line break', { place: 'East\nGym' }, 'Saltmarsh General: ', ', East Gym.'],
+		['nothing', { place: ' ' }, 'Saltmarsh General: ', 'the usual place']
+	])('%s', (_, change, start, part) => {
+		const text = smsText('visit-reminder', { ...VISIT, ...change, confirmed: false });
+		expect(text.startsWith(start)).toBe(true);
+		expect(text).toContain(part);
+		expect(measureSms(text).segments).toBe(1);
+	});
+
+	it.each(Object.keys(PATIENT_SMS) as (keyof typeof PATIENT_SMS)[])(
+		'%s fits one part with the longest names and number',
+		(template) => {
+			const fields = {
+				...VISIT,
+				sender: 'The Old Harbour and Saltmarsh General Hospital of the Western Islands',
+				place: '[East Gym behind the second lift, ground floor, through the yellow doors at the end]',
+				phone: '+353 (0)1 555 0100 0123',
+				startsAt: Date.parse('2025-09-24T21:50:00Z'),
+				confirmed: true
+			};
+			const text = smsText(template, fields);
+			expect(measureSms(text).segments).toBe(1);
+			expect(isGsm7(text)).toBe(true);
+			expect(text).toContain('The Old Harbour');
+			expect(text).toContain('+353015550100');
+		}
+	);
+});
+
+describe('mails', () => {
+	const link = 'https://ropewalk.saltmarsh.example/patients/1';
+
+	it('tell nothing but where to sign in', () => {
+		expect(mailText('referrer', { link })).toEqual({
+			subject: 'Ropewalk: something to read',
+			text: `There is news about a referral of yours. Sign in to read it:\n\n${link}\n\n-- \nRopewalk sends links only. Nobody reads answers to this address.\n`
+		});
+		expect(mailText('invitation', { link })).toEqual({
+			subject: 'Ropewalk: your account',
+			text: `An account was made for you. Choose a password here; the link works once:\n\n${link}\n\n-- \nRopewalk sends links only. Nobody reads answers to this address.\n`
+		});
+	});
+});
+
+describe('the small parts', () => {
+	it.each([
+		['2025-03-28T10:00:00Z', 'Europe/Dublin', 'Fri 28 Mar 10:00'],
+		['2025-03-31T09:00:00Z', 'Europe/Dublin', 'Mon 31 Mar 10:00'],
+		['2025-09-05T23:05:00Z', 'Europe/Dublin', 'Sat 6 Sep 00:05'],
+		['2025-12-31T12:00:00Z', 'America/New_York', 'Wed 31 Dec 07:00']
+	])('%s in %s is %s', (at, zone, expected) => {
+		expect(dayAndTime(Date.parse(at), zone, 'en')).toBe(expected);
+	});
+
+	it.each([
+		['en', 'en'],
+		['en-IE', 'en'],
+		['EN_gb', 'en'],
+		['pl', 'en'],
+		['', 'en'],
+		[null, 'en']
+	])('language %j is written to in %s', (language, expected) => {
+		expect(messageLanguage(language)).toBe(expected);
+	});
+
+	it.each([
+		['East Gym', 8, 'East Gym'],
+		['East Gym', 7, 'East G.'],
+		['East Gym', 6, 'East.'],
+		['[[[[', 6, '[[.'],
+		['East Gym', 1, '.'],
+		['', 5, '']
+	])('%j in %i units is %j', (text, units, expected) => {
+		expect(shortened(text, units)).toBe(expected);
+		expect(measureSms(shortened(text, units)).units).toBeLessThanOrEqual(units);
+	});
+
+	it.each([
+		['East Gym', 'East Gym'],
+		['St Brigid’s', "St Brigid's"],
+		['Valve Clinic', 'there'],
+		['', 'there']
+	])('name %j is sent as %j', (name, expected) => {
+		expect(safeName(name, 'there')).toBe(expected);
+	});
+});

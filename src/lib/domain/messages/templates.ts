@@ -1,0 +1,64 @@
+/**
+ * Every text that leaves the product, by name. A template takes typed fields and gives text; it has no way to a
+ * patient's record, so that it cannot tell what it does not know.
+ */
+import * as escalations from './templates/escalation';
+import * as mails from './templates/mail';
+import * as visits from './templates/visit';
+import { messageLanguage } from './templates/wording';
+import type { MailText } from './templates/mail';
+import type { Wording } from './templates/wording';
+
+/** Texts to staff may name unit and bed; texts to patients may not. */
+export const STAFF_SMS = {
+	escalation: escalations.escalation,
+	'escalation-taken': escalations.escalationTaken,
+	'took-it': escalations.tookIt,
+	'passed-it': escalations.passedIt,
+	'staff-unclear': escalations.staffUnclear
+};
+
+export const PATIENT_SMS = {
+	'visit-reminder': visits.visitReminder,
+	'visit-confirmed': visits.visitConfirmed,
+	'visit-declined': visits.visitDeclined,
+	'visit-cancelled': visits.visitCancelled,
+	'no-visit-open': visits.noVisitOpen,
+	'person-reads': visits.personReads,
+	'texts-stopped': visits.textsStopped,
+	'texts-started': visits.textsStarted,
+	'texts-help': visits.textsHelp
+};
+
+export const MAILS = {
+	referrer: mails.referrerMail,
+	invitation: mails.invitationMail
+};
+
+export const SMS = { ...STAFF_SMS, ...PATIENT_SMS };
+export type SmsTemplate = keyof typeof SMS;
+export type MailTemplate = keyof typeof MAILS;
+
+type FieldsOf<T> = T extends Wording<infer Fields, string | MailText> ? Fields : never;
+/** What a template has to be given. */
+export type SmsFields<T extends SmsTemplate> = FieldsOf<(typeof SMS)[T]>;
+export type MailFields<T extends MailTemplate> = FieldsOf<(typeof MAILS)[T]>;
+
+/** The text of a message, in the receiver's language where it is known, else in English. */
+export function smsText<T extends SmsTemplate>(
+	template: T,
+	fields: SmsFields<T>,
+	language: string | null = null
+): string {
+	const wording = SMS[template] as Wording<SmsFields<T>>;
+	return wording[messageLanguage(language)](fields);
+}
+
+/** Subject and text of a mail, in the receiver's language where it is known, else in English. */
+export function mailText<T extends MailTemplate>(
+	template: T,
+	fields: MailFields<T>,
+	language: string | null = null
+): MailText {
+	return (MAILS[template] as Wording<MailFields<T>, MailText>)[messageLanguage(language)](fields);
+}
