@@ -1,0 +1,185 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { readPatientReply, readStaffReply, replyCode } from './reply';
+
+describe('readPatientReply', () => {
+	it.each([
+		'YES',
+		'yes',
+		' Yes. ',
+		'Yés!',
+		'y',
+		'ＹＥＳ',
+		'ok',
+		'Okay, thanks',
+		'Yes please',
+		'Hello, yes. Thank you!',
+		"I'll be there",
+		'I’ll be there',
+		'I will come',
+		'confirmed',
+		'👍',
+		'👍🏽',
+		'yes\n'
+	])('%j is yes', (text) => {
+		expect(readPatientReply(text)).toBe('yes');
+	});
+
+	it.each([
+		'NO',
+		'no.',
+		'n',
+		'Nope',
+		'No thanks',
+		'Sorry, no',
+		"can't come",
+		'Cannot make it',
+		'not coming',
+		'👎'
+	])('%j is no', (text) => {
+		expect(readPatientReply(text)).toBe('no');
+	});
+
+	it.each([
+		' Stop. ',
+		'STOP',
+		'STOP PLEASE',
+		'stop!!!',
+		'Stóp',
+		'STOPALL',
+		'stop all',
+		'unsubscribe',
+		'END',
+		'quit',
+		'revoke',
+		'OPTOUT',
+		'opt out',
+		'Opt-out',
+		'cancel',
+		'stop texting me',
+		'Please stop sending me these messages',
+		'stop these texts now',
+		'stop your reminders',
+		'no more texts please',
+		'unsubscribe me from this list',
+		'remove me from your list',
+		"don't text me",
+		'remove me',
+		'take me off your list',
+		'No texts please',
+		'Do not send me any messages'
+	])('%j is stop', (text) => {
+		expect(readPatientReply(text)).toBe('stop');
+	});
+
+	it.each(['START', 'start', 'unstop', 'Opt in', 'start please'])('%j is start', (text) => {
+		expect(readPatientReply(text)).toBe('start');
+	});
+
+	it.each(['HELP', 'help', ' Help? ', 'info'])('%j is help', (text) => {
+		expect(readPatientReply(text)).toBe('help');
+	});
+
+	it.each([
+		'',
+		'   ',
+		'?',
+		"don't stop my meds",
+		'stop my tablets',
+		'should I stop taking it',
+		'can I stop',
+		'stop it',
+		'the pain will not stop',
+		'cancel my appointment',
+		'cancel Friday',
+		'help me',
+		'help I feel dizzy',
+		'yes but not at ten',
+		'yes no',
+		'yes 👎',
+		'YES or NO',
+		'no problem',
+		'no, I am ill',
+		'not sure',
+		'maybe',
+		'when do I start',
+		'I do not understand',
+		"don't",
+		'no more',
+		'remove it',
+		'your message was no help',
+		'I got no text',
+		'in the end',
+		'Is it at 10 or 11?',
+		'who is this',
+		'да'
+	])('%j goes to a person', (text) => {
+		expect(readPatientReply(text)).toBe('other');
+	});
+
+	it('property: never throws, and case and punctuation do not matter', () => {
+		fc.assert(
+			fc.property(fc.string({ unit: 'binary' }), (text) => {
+				expect(readPatientReply(`${text}.`)).toBe(readPatientReply(` ${text}`));
+			})
+		);
+		const known = fc.constantFrom('yes', 'no', 'stop', 'start', 'help', 'stop all', 'opt out');
+		const noise = fc.constantFrom('', ' ', '.', '!', '\n', ' please', '...');
+		fc.assert(
+			fc.property(known, noise, noise, fc.boolean(), (word, before, after, loud) => {
+				const text = `${before} ${loud ? word.toUpperCase() : word} ${after}`;
+				expect(readPatientReply(text)).toBe(readPatientReply(word));
+				expect(readPatientReply(text)).not.toBe('other');
+			})
+		);
+	});
+});
+
+describe('readStaffReply', () => {
+	it.each([
+		['TAKE 4821', 'take', '4821'],
+		['take 4821', 'take', '4821'],
+		[' Take: 4821. ', 'take', '4821'],
+		['take4821', 'take', '4821'],
+		['TAKE 004821', 'take', '004821'],
+		['TAKE 4821, there in 5', 'take', '4821'],
+		['TAKE 4821 4821', 'take', '4821'],
+		['PASS 4821', 'pass', '4821'],
+		['pass #4821', 'pass', '4821']
+	])('%j: %s %s', (text, kind, code) => {
+		expect(readStaffReply(text)).toEqual({ kind, code });
+	});
+
+	it.each([
+		'TAKE',
+		'PASS',
+		'TAKE 482',
+		'TAKE 4821234',
+		'TAKE 4821 or 4822',
+		'take or pass 4821',
+		'TAKE 4821? No, I cannot',
+		"take 4821 - I can't",
+		'TAKE it over please'
+	])('%j is asked back', (text) => {
+		expect(readStaffReply(text)).toEqual({ kind: 'unclear' });
+	});
+
+	it.each(['', '4821', 'will take 4821', 'not take 4821', 'taken 4821', 'on my way', 'passage 4821'])(
+		'%j takes nothing',
+		(text) => {
+			expect(readStaffReply(text)).toEqual({ kind: 'other' });
+		}
+	);
+});
+
+describe('replyCode', () => {
+	it.each([
+		[0, '0000'],
+		[0.00071, '0007'],
+		[0.4821, '4821'],
+		[1 - Number.EPSILON, '9999']
+	])('%s gives %s', (random, code) => {
+		expect(replyCode(random)).toBe(code);
+		expect(readStaffReply(`take ${code}`)).toEqual({ kind: 'take', code });
+	});
+});

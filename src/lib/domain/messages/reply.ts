@@ -1,0 +1,138 @@
+/**
+ * What a text that somebody sent us means. A patient's answer is understood only when the whole of it is one of
+ * the known ways to say it: 'don't stop my tablets' and 'yes but not at ten' go to a person.
+ *
+ * The words that end texts are those of the United States' rule of 2024 (stop, quit, end, revoke, opt out,
+ * cancel, unsubscribe; any reasonable wording counts) and those that gateways obey by themselves.
+ */
+export const PATIENT_REPLIES = ['yes', 'no', 'stop', 'start', 'help', 'other'] as const;
+export type PatientReply = (typeof PATIENT_REPLIES)[number];
+
+const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
+	stop: [
+		'stop',
+		'stop all',
+		'stopall',
+		'end',
+		'quit',
+		'revoke',
+		'cancel',
+		'unsubscribe',
+		'opt out',
+		'optout',
+		'remove me'
+	],
+	start: ['start', 'unstop', 'resume', 'subscribe', 'opt in', 'optin'],
+	help: ['help', 'info'],
+	yes: [
+		'yes',
+		'y',
+		'yep',
+		'yeah',
+		'yup',
+		'ok',
+		'okay',
+		'confirm',
+		'confirmed',
+		'i confirm',
+		'i will come',
+		'i will be there',
+		'ill be there',
+		'i am coming',
+		'im coming',
+		'will come',
+		'will be there',
+		'see you then',
+		'see you there'
+	],
+	no: [
+		'no',
+		'n',
+		'nope',
+		'not coming',
+		'i am not coming',
+		'im not coming',
+		'cannot come',
+		'can not come',
+		'cant come',
+		'cannot make it',
+		'can not make it',
+		'cant make it',
+		'unable to come',
+		'unable to make it',
+		'will not come',
+		'wont come',
+		'wont be there',
+		'will not be there'
+	]
+};
+
+/** Ways to say stop that count only when the rest names the texts. */
+const ENDINGS = [...PHRASES.stop, 'no more', 'no', 'remove', 'take off', 'do not', 'dont'];
+
+/** Said to be polite, or before the answer: it changes nothing. */
+const POLITE = /\b(please|pls|plz|thanks|thank you|thx|ta|cheers|sorry|hello|hi|dear|sir|madam)\b/g;
+/** What somebody wants to end: 'stop sending me these messages' is 'stop'. */
+const ABOUT_TEXTS =
+	/\b(to|sending|send|getting|texting|messaging|texts?|messages?|sms|reminders?|me|my|us|the|these|this|those|of|from|your|list|now|any|it)\b/g;
+
+/** Understand a patient's text. Case, accents and punctuation do not matter. */
+export function readPatientReply(text: string): PatientReply {
+	const plain = collapsed(words(text).replace(POLITE, ' '));
+	const exact = (['yes', 'no', 'help', 'start'] as const).find((kind) => says(kind, plain));
+	if (exact) {
+		return exact;
+	}
+	return says('stop', plain) || endsTexts(plain) ? 'stop' : 'other';
+}
+
+export type StaffReply =
+	| { readonly kind: 'take' | 'pass'; readonly code: string }
+	/** TAKE or PASS with no code, or with two: it has to be asked back. */
+	| { readonly kind: 'unclear' }
+	| { readonly kind: 'other' };
+
+/** A code is four to six digits: quick to type in the dark, and nothing to mix up. */
+const CODE = /\b\d{4,6}\b/g;
+const REFUSAL = /\b(not|no|cannot|cant|wont|unable|dont)\b/;
+
+/** Understand a text of staff: `TAKE 4821` or `PASS 4821`, and nothing that says both, or not. */
+export function readStaffReply(text: string): StaffReply {
+	const plain = words(text);
+	const said = /^(take|pass) ?(?=\d|$| )/.exec(plain)?.[1];
+	if (said !== 'take' && said !== 'pass') {
+		return { kind: 'other' };
+	}
+	const rest = plain.slice(said.length);
+	const [code, ...more] = new Set(` ${rest}`.match(CODE) ?? []);
+	const doubtful = more.length > 0 || REFUSAL.test(rest) || /\b(take|pass)/.test(rest);
+	return code === undefined || doubtful ? { kind: 'unclear' } : { kind: said, code };
+}
+
+/** Four digits from a random number from 0, included, to 1, excluded. The sender's number must fit besides. */
+export function replyCode(random: number): string {
+	return String(Math.floor(random * 10_000)).padStart(4, '0');
+}
+
+function says(kind: Exclude<PatientReply, 'other'>, plain: string): boolean {
+	return PHRASES[kind].includes(plain);
+}
+
+/** 'end it' may be about anything; only a sentence about texts ends them. */
+function endsTexts(plain: string): boolean {
+	const aboutTexts = /\b(text|messag|sms|reminder|list)/.test(plain);
+	return aboutTexts && ENDINGS.includes(collapsed(plain.replace(ABOUT_TEXTS, ' ')));
+}
+
+/** Lower case, without accents, apostrophes closed up, everything else that is no letter or digit a space. */
+function words(text: string): string {
+	const lower = text.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase();
+	const spoken = lower
+		.replace(/👍\p{Emoji_Modifier}?|✅|👌/gu, ' yes ')
+		.replace(/👎\p{Emoji_Modifier}?/gu, ' no ');
+	return collapsed(spoken.replace(/['’`´]/g, '').replace(/[^\p{L}\p{N}]+/gu, ' '));
+}
+
+function collapsed(text: string): string {
+	return text.replace(/\s+/g, ' ').trim();
+}
