@@ -1,0 +1,30 @@
+/** The bodies and fields of the message calls. A refusal names field, value and limit. */
+import { z } from 'zod';
+import { DEFAULT_COUNTRY, PhoneError, normalisePhone } from './phone';
+
+export const SMS_TEXT_MAX = 10_000;
+
+/** Body of `POST /api/calculate/sms`. The text is counted as it is: nothing is trimmed. */
+export const calculateSmsBody = z.strictObject({
+	text: z
+		.string({ error: 'text is missing or no text.' })
+		.max(SMS_TEXT_MAX, { error: `text has at most ${SMS_TEXT_MAX} characters.` })
+});
+
+/** A telephone number as people write it; the parsed value is its E.164 form. */
+export function phoneField(field = 'phone', country: string = DEFAULT_COUNTRY) {
+	return z
+		.string({ error: `${field} is missing or no text.` })
+		.max(40, { error: `${field} has at most 40 characters.` })
+		.transform((value, context) => {
+			try {
+				return normalisePhone(value, country);
+			} catch (error) {
+				if (!(error instanceof PhoneError)) {
+					throw error;
+				}
+				context.issues.push({ code: 'custom', message: `${field}: ${error.message}`, input: value });
+				return z.NEVER;
+			}
+		});
+}
