@@ -1,0 +1,33 @@
+/**
+ * What became of a form that was sent and got no answer of its own: the sign-in had run out, the network was
+ * gone, or the server failed. None of them may cost what was typed.
+ */
+export type Outcome =
+	{ kind: 'sign-in'; href: string } | { kind: 'unreached' } | { kind: 'refused'; message: string };
+
+/** The part of an action's result that decides. */
+export type ActionAnswer =
+	| { type: 'redirect'; location: string }
+	| { type: 'error'; status?: number; error: { message?: string } }
+	| { type: 'success' | 'failure' };
+
+/**
+ * The outcome to tell of, or `null` when the answer speaks for itself: a success, errors beside fields, or a
+ * redirect to where the person is meant to go. An expired sign-in shows as 401 or as a redirect to `signIn`.
+ */
+export function outcomeOf(answer: ActionAnswer, signIn: string): Outcome | null {
+	if (answer.type === 'redirect') {
+		const expired = answer.location.split('?')[0] === signIn;
+		return expired ? { kind: 'sign-in', href: answer.location } : null;
+	}
+	if (answer.type !== 'error') {
+		return null;
+	}
+	if (answer.status === 401) {
+		return { kind: 'sign-in', href: signIn };
+	}
+	// Without a status there was no answer at all: nobody knows whether it arrived, and the key makes it safe to ask again.
+	return answer.status === undefined || answer.status >= 500
+		? { kind: 'unreached' }
+		: { kind: 'refused', message: answer.error.message ?? '' };
+}
