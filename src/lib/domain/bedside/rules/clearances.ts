@@ -39,7 +39,7 @@ export function lackingClearance(
 }
 
 export const CLEARANCE_WORDS: Record<ClearanceKind, string> = {
-	'arm-stage': 'arm exercise',
+	'arm-stage': 'the arm stage',
 	'out-of-bed': 'leaving the bed',
 	corridor: 'walking in the corridor',
 	stairs: 'the stairs',

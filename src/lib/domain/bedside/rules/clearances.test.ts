@@ -1,0 +1,71 @@
+import { describe, expect, it } from 'vitest';
+import { ACTIVITIES } from '../activities/activities';
+import { grades, judge, only } from '../testing/sample';
+import { granted, lackingClearance } from './clearances';
+
+const NEEDING = ACTIVITIES.filter(({ clearance }) => clearance !== null);
+
+describe('clearance-missing', () => {
+	it.each(NEEDING.map(({ code, clearance }) => [code, clearance ?? 'discharge'] as const))(
+		'%s stops without %s and not with it',
+		(code, clearance) => {
+			const activities = [{ code, helper: true, elevationDeg: 40 }];
+			expect(grades(judge({ activities }), 'clearance-missing')).toEqual(['stop during']);
+			expect(grades(judge({ context: { clearances: null }, activities }), 'clearance-missing')).toEqual([
+				'stop during'
+			]);
+			expect(judge({ context: { clearances: [clearance] }, activities }).findings).toEqual([]);
+		}
+	);
+
+	it.each(ACTIVITIES.filter(({ clearance }) => clearance === null).map(({ code }) => code))(
+		'%s needs none',
+		(code) => {
+			expect(grades(judge({ activities: [{ code }] }), 'clearance-missing')).toEqual([]);
+		}
+	);
+
+	it('asks for the arm stage after a sternotomy only', () => {
+		const verdict = judge({ context: { sternotomy: false }, activities: [{ code: 'arm-exercise' }] });
+		expect(grades(verdict, 'clearance-missing')).toEqual([]);
+	});
+
+	it('is silent about what was planned and not done', () => {
+		expect(judge({ activities: [{ code: 'stairs', notDone: true }] }).findings).toEqual([]);
+	});
+
+	it('names the activity and the clearance', () => {
+		expect(
+			only(judge({ activities: [{ code: 'arm-exercise', elevationDeg: 40 }] }), 'clearance-missing')
+		).toMatchObject({
+			measured: 'arm-exercise',
+			reason: 'Arm exercise needs the clearance for the arm stage, and none is in force.'
+		});
+	});
+});
+
+describe('granted', () => {
+	it.each([
+		[undefined, null],
+		[[], null],
+		[['stairs' as const], null],
+		[['arm-stage' as const], { maxElevationDeg: null, maxLoadKg: null }],
+		[[{ kind: 'arm-stage' as const, maxLoadKg: 2 }], { maxElevationDeg: null, maxLoadKg: 2 }],
+		[
+			[{ kind: 'arm-stage' as const, maxElevationDeg: 80, limits: { maxElevationDeg: 70, maxLoadKg: 1 } }],
+			{ maxElevationDeg: 70, maxLoadKg: 1 }
+		],
+		[[{ kind: 'arm-stage' as const, state: 'withheld' as const }], null],
+		[[{ kind: 'arm-stage' as const, state: 'withdrawn' as const }], null],
+		[[{ kind: 'arm-stage' as const, state: 'lapsed' as const }], null],
+		[[{ kind: 'arm-stage' as const, state: 'given' as const }], { maxElevationDeg: null, maxLoadKg: null }]
+	])('%j', (clearances, expected) => {
+		expect(granted({ clearances }, 'arm-stage')).toEqual(expected);
+	});
+});
+
+it('tells which clearance an activity lacks, before anything is recorded', () => {
+	const context = { clearances: ['corridor' as const], sternotomy: true };
+	const lacking = ACTIVITIES.filter((activity) => lackingClearance(context, activity) === 'arm-stage');
+	expect(lacking.map(({ code }) => code)).toEqual(['arm-exercise']);
+});

@@ -1,0 +1,60 @@
+import { describe, expect, it } from 'vitest';
+import { SYMPTOMS, type SymptomCode } from '../codes';
+import { grades, judge, only } from '../testing/sample';
+
+const STOPS: SymptomCode[] = [
+	'angina',
+	'dizziness',
+	'light-headedness',
+	'fainting',
+	'confusion',
+	'sternal-click',
+	'pallor',
+	'distress',
+	'new-bleeding',
+	'line-dislodged'
+];
+const CAUTIONS = SYMPTOMS.filter((code) => !STOPS.includes(code));
+
+describe('symptom', () => {
+	it.each(STOPS)('%s stops, as a word and with any grade', (code) => {
+		for (const symptom of [code, { code, grade: 1 }, { code, grade: 4 }]) {
+			const verdict = judge({ symptoms: [symptom] });
+			expect(grades(verdict, 'symptom')).toEqual(['stop during']);
+			expect(verdict.outcome).toBe('stop');
+		}
+	});
+
+	it.each(CAUTIONS)('%s cautions as a word and when slight', (code) => {
+		for (const symptom of [code, { code, grade: 1 }, { code, grade: 2 }]) {
+			const verdict = judge({ symptoms: [symptom] });
+			expect(grades(verdict, 'symptom')).toEqual(['caution during']);
+			expect(verdict.outcome).toBe('caution');
+		}
+	});
+
+	it.each([
+		[1, 'caution'],
+		[2, 'caution'],
+		[2.9, 'caution'],
+		[3, 'stop'],
+		[4, 'stop']
+	])('breathlessness of grade %d: %s', (grade, expected) => {
+		expect(grades(judge({ symptoms: [{ code: 'breathlessness', grade }] }), 'symptom')).toEqual([
+			`${expected} during`
+		]);
+	});
+
+	it('named twice counts once, with the graver grade', () => {
+		const verdict = judge({
+			symptoms: ['breathlessness', { code: 'breathlessness', grade: 4 }, { code: 'breathlessness', grade: 1 }]
+		});
+		expect(only(verdict, 'symptom')).toMatchObject({ grade: 'stop', measured: 'breathlessness', limit: 3 });
+	});
+
+	it('before anything was done reads as a reason not to start', () => {
+		const nothing = { hr: null, sbp: null, dbp: null, spo2: null, rr: null, pain: null };
+		const verdict = judge({ symptoms: ['angina'], during: [], after: nothing });
+		expect(grades(verdict, 'symptom')).toEqual(['stop before']);
+	});
+});
