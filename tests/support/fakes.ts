@@ -6,7 +6,7 @@ import { waitUntilReady } from '../../src/cli/lib/ready.mjs';
 import { settingsOf } from '../../src/cli/lib/settings.mjs';
 import { TOKEN } from './hook-receiver';
 
-export const ACCOUNT = `AC${'0'.repeat(31)}1`;
+export const ACCOUNT = `AC${'0'.repeat(32)}`;
 export const FROM = '+353860000000';
 
 /** Both fakes as processes on free ports, without the application. */

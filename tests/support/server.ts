@@ -67,7 +67,7 @@ export async function startProduct(options: ProductOptions = {}): Promise<Produc
 	};
 	const stop = async () => {
 		await (server ? end(server) : null);
-		await Promise.all(fakes.map((fake) => end(fake)));
+		await Promise.all([end(sms), end(mail)]);
 		if (!options.dataDir) {
 			rmSync(dataDir, { recursive: true, force: true });
 		}
@@ -75,22 +75,23 @@ export async function startProduct(options: ProductOptions = {}): Promise<Produc
 	const restart = async () => {
 		await kill();
 		server = listenTo(spawnServer(settings.env, 'pipe'), logs);
-		const why = await waitUntilReady(`${url}/readyz`, server, limitMs);
-		if (why !== null) {
-			throw new Error(`The server did not get ready: ${why}\n${logs.slice(-40).join('\n')}`);
-		}
+		await ready(`${url}/readyz`, server, limitMs, logs);
 	};
 
 	try {
-		await restart();
+		await Promise.all([
+			ready(`${smsUrl}/healthz`, sms, limitMs, logs),
+			ready(`${mailUrl}/healthz`, mail, limitMs, logs),
+			restart()
+		]);
 	} catch (error) {
 		await stop();
 		throw error;
 	}
 	return {
 		url,
-		smsUrl: `http://127.0.0.1:${settings.smsPort}`,
-		mailUrl: `http://127.0.0.1:${settings.mailPort}`,
+		smsUrl,
+		mailUrl,
 		dataDir,
 		logs,
 		kill,
@@ -114,6 +115,13 @@ async function settingsFor(dataDir: string, env: Record<string, string>): Promis
 		...env
 	};
 	return settingsOf(given, { demo: true });
+}
+
+async function ready(url: string, child: ChildProcess, limitMs: number, logs: string[]): Promise<void> {
+	const why = await waitUntilReady(url, child, limitMs);
+	if (why !== null) {
+		throw new Error(`${url} is not ready: ${why}\n${logs.slice(-40).join('\n')}`);
+	}
 }
 
 function listenTo(child: ChildProcess, logs: string[]): ChildProcess {

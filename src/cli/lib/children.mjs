@@ -27,28 +27,23 @@ export function spawnFake(name, env, output = 'inherit') {
 }
 
 /**
+ * Starts a server that ends in its orderly way when we are gone.
+ * @param {string[]} args the file, and what it is given
+ * @param {NodeJS.ProcessEnv} env
+ * @param {'inherit' | 'pipe'} [output]
+ */
+export function spawnFollower(args, env, output = 'inherit') {
+	const follow = new URL('./follow.mjs', import.meta.url).href;
+	return spawnNode(['--import', follow, ...args], env, output);
+}
+
+/**
  * Starts the built application.
  * @param {NodeJS.ProcessEnv} env
  * @param {'inherit' | 'pipe'} [output]
  */
 export function spawnServer(env, output = 'inherit') {
-	const follow = new URL('./follow.mjs', import.meta.url).href;
-	const production = { ...env, NODE_ENV: 'production' };
-	return spawnNode(['--import', follow, at('build', 'index.js')], production, output);
-}
-
-/**
- * Starts the development server.
- * @param {NodeJS.ProcessEnv} env
- * @param {string[]} args
- */
-export function spawnVite(env, args) {
-	const follow = new URL('./follow.mjs', import.meta.url).href;
-	return spawnNode(
-		['--import', follow, at('node_modules', 'vite', 'bin', 'vite.js'), ...args],
-		env,
-		'inherit'
-	);
+	return spawnFollower([at('build', 'index.js')], { ...env, NODE_ENV: 'production' }, output);
 }
 
 /** @param {ChildProcess} child */

@@ -38,12 +38,12 @@ export async function launch({ settings, demo, reuse, spawn, onReady }) {
 	const fakes = names.map((name) => spawnFake(name, settings.env));
 	const server = spawn(settings.env);
 	const family = createFamily(server, fakes);
-	const why = await Promise.race([
-		waitUntilReady(`http://127.0.0.1:${settings.port}/readyz`, server, READY_LIMIT_MS),
-		...fakes.map((fake) => ended(fake).then(() => 'what stands in for SMS or mail has ended'))
+	const why = await firstReason([
+		whyNotReady('The server', settings.port, '/readyz', server),
+		...names.map((name, index) => whyNotReady(...fakeOf(settings, name), fakes[index] ?? server))
 	]);
 	if (why !== null) {
-		return family.stop(1, `The server did not get ready: ${why}.`);
+		return family.stop(1, why);
 	}
 	onReady(settings);
 	await ended(server);
@@ -53,6 +53,43 @@ export async function launch({ settings, demo, reuse, spawn, onReady }) {
 	if (!family.isStopping()) {
 		tellServerEnded(server, settings);
 	}
+}
+
+/**
+ * Waits for one process, and rejects with a sentence when it does not get ready.
+ * @param {string} what
+ * @param {number} port
+ * @param {string} path
+ * @param {ChildProcess} child
+ */
+async function whyNotReady(what, port, path, child) {
+	const why = await waitUntilReady(`http://127.0.0.1:${port}${path}`, child, READY_LIMIT_MS);
+	if (why !== null) {
+		throw new Error(`${what} did not get ready: ${why}.`);
+	}
+}
+
+/**
+ * The first reason for not being ready, as soon as there is one; null when all are ready.
+ * @param {Promise<void>[]} all
+ * @returns {Promise<string | null>}
+ */
+function firstReason(all) {
+	return Promise.all(all).then(
+		() => null,
+		(/** @type {Error} */ error) => error.message
+	);
+}
+
+/**
+ * @param {Settings} settings
+ * @param {'sms' | 'mail'} name
+ * @returns {[what: string, port: number, path: string]}
+ */
+function fakeOf({ smsPort, mailPort }, name) {
+	return name === 'sms'
+		? ['The stand-in for the SMS gateway', smsPort, '/healthz']
+		: ['The stand-in for the mail server', mailPort, '/healthz'];
 }
 
 /**

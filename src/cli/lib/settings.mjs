@@ -56,7 +56,7 @@ export function settingsOf(given, { demo }) {
 
 /** @param {NodeJS.ProcessEnv} env */
 export function isDemo(env) {
-	return env.DEMO === '1';
+	return env.DEMO === '1' || env.DEMO === 'true';
 }
 
 /**

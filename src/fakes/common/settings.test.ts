@@ -4,7 +4,7 @@ import { readSettings } from './settings';
 describe('readSettings', () => {
 	it('has a default for everything', () => {
 		expect(readSettings({})).toEqual({
-			accountSid: 'AC00000000000000000000000000000001',
+			accountSid: 'AC00000000000000000000000000000000',
 			authToken: 'ropewalk-demo-token',
 			from: '+353860000000',
 			publicUrl: 'http://127.0.0.1:3000',

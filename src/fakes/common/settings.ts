@@ -14,7 +14,7 @@ export interface FakeSettings {
 	slowMs: number;
 }
 
-const DEMO_ACCOUNT = `AC${'0'.repeat(31)}1`;
+const DEMO_ACCOUNT = `AC${'0'.repeat(32)}`;
 
 /**
  * Reads the settings from the environment.
