@@ -1,4 +1,4 @@
-import { and, eq, inArray } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { AuditAction } from '$lib/domain/audit/actions';
 import type {
@@ -8,22 +8,16 @@ import type {
 	giveClearanceBody
 } from '$lib/domain/clearances/forms';
 import { nextClearanceState, type ClearanceMove } from '$lib/domain/clearances/states';
-import type { ClearanceKind, ClearanceState } from '$lib/domain/core/codes';
+import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
-import { localDateOf } from '$lib/domain/core/time';
-import { CLEARANCE_WORDS } from '$lib/i18n/labels';
 import { accessClearance, accessEpisode, threadForDeed } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { clearanceMoves, clearances } from '../db/schema';
-import { env } from '../env';
-import { factsOf } from '../episodes/facts';
-import { newId } from '../ids';
+import { clearances } from '../db/schema';
+import { factsOfOne } from '../episodes/facts';
 import { write, type Written } from '../write';
+import { insertAsk, openOrInForce, recordClearanceMove, reviewIsPast } from './ask';
 import { answerText } from './texts';
-import { gatherEvidence } from './evidence';
-
-const OPEN_OR_IN_FORCE = ['asked', 'given', 'given-with-limits', 'on-hold'] as const;
 
 /**
  * Ask for permission to start a kind of activity.
@@ -36,42 +30,21 @@ export function askClearance(
 ): Promise<Written<{ id: string; state: 'asked'; evidence: ClearanceEvidence }>> {
 	return write(context, 'clearance.ask', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'clearance.ask');
-		const facts = (await factsOf(tx, [episode], context.now)).get(episodeId);
-		if (!facts) {
-			throw new Error(`No facts of episode ${episodeId}.`);
+		const facts = await factsOfOne(tx, episode, context.now);
+		const open = await openOrInForce(tx, context, episodeId, input.kind, facts.operation?.id ?? null);
+		if (open) {
+			throw second(open);
 		}
-		const operationId = facts.operation?.id ?? null;
-		await refuseSecond(tx, context, episodeId, input.kind, operationId);
 		const threadId = await threadForDeed(tx, episodeId, input.threadId);
-		const evidence = await gatherEvidence(tx, episode, facts, context.now);
-		const id = newId();
-		await tx.insert(clearances).values({
-			id,
-			episodeId,
-			operationId,
-			threadId,
-			kind: input.kind,
-			state: 'asked',
-			question: input.question,
-			askedBy: context.actor.id,
-			askedAt: context.now,
-			evidence
-		});
-		await recordMove(tx, context, { clearanceId: id, fromState: null, toState: 'asked' });
-		const body = `${CLEARANCE_WORDS[input.kind]()}: ${input.question}`;
-		return {
-			result: { id, state: 'asked', evidence },
-			audit: {
-				action: 'clearance.asked',
-				objectKind: 'clearance',
-				objectId: id,
-				episodeId,
-				detail: { kind: input.kind }
-			},
-			entries: threadId ? [{ threadId, kind: 'ask', body, ref: { kind: 'clearance', id } }] : [],
-			events: [{ topic: 'clearance', kind: 'asked', id, episodeId }]
-		};
+		return insertAsk(tx, context, { episode, facts, threadId }, input);
 	});
+}
+
+function second(open: { id: string; state: ClearanceState }): Problem {
+	const facts = { id: open.id, state: open.state };
+	return open.state === 'asked'
+		? new Problem('already-asked', 'This clearance is asked and not decided yet.', facts)
+		: new Problem('already-given', `This clearance is ${open.state}; it need not be asked again.`, facts);
 }
 
 /** Give a clearance, with limits or without. */
@@ -126,7 +99,7 @@ function decide(
 			.update(clearances)
 			.set({ ...decision, limits, state, decidedBy: context.actor.id, decidedAt: context.now })
 			.where(eq(clearances.id, id));
-		await recordMove(tx, context, {
+		await recordClearanceMove(tx, context, {
 			clearanceId: id,
 			fromState: clearance.state,
 			toState: state,
@@ -159,54 +132,8 @@ async function accessForMove(tx: Tx, context: PersonContext, id: string, move: C
 	return own ? seen : accessClearance(tx, context.actor, id, 'clearance.withdraw');
 }
 
-/** One of a kind open or in force; one that counts from an earlier operation is withdrawn by the return to theatre. */
-async function refuseSecond(
-	tx: Tx,
-	context: PersonContext,
-	episodeId: string,
-	kind: ClearanceKind,
-	operationId: string | null
-): Promise<void> {
-	const [open] = await tx
-		.select()
-		.from(clearances)
-		.where(
-			and(
-				eq(clearances.episodeId, episodeId),
-				eq(clearances.kind, kind),
-				inArray(clearances.state, [...OPEN_OR_IN_FORCE])
-			)
-		);
-	if (!open) {
-		return;
-	}
-	if (open.operationId !== operationId || reviewIsPast(open.reviewOn, context.now)) {
-		await tx.update(clearances).set({ state: 'lapsed' }).where(eq(clearances.id, open.id));
-		await recordMove(tx, context, { clearanceId: open.id, fromState: open.state, toState: 'lapsed' });
-		return;
-	}
-	throw open.state === 'asked'
-		? new Problem('already-asked', 'This clearance is asked and not decided yet.', {
-				id: open.id,
-				state: open.state
-			})
-		: new Problem('already-given', `This clearance is ${open.state}.`, { id: open.id, state: open.state });
-}
-
-function reviewIsPast(reviewOn: string | null, now: number): boolean {
-	return reviewOn !== null && reviewOn < localDateOf(now, env().hospital.zone);
-}
-
 function refusePastReview(reviewOn: string | null | undefined, now: number): void {
 	if (reviewOn && reviewIsPast(reviewOn, now)) {
 		throw invalidField('/reviewOn', `reviewOn ${reviewOn} is past; it is today or later.`);
 	}
-}
-
-async function recordMove(
-	tx: Tx,
-	context: PersonContext,
-	move: Omit<typeof clearanceMoves.$inferInsert, 'id' | 'at' | 'byId'>
-): Promise<void> {
-	await tx.insert(clearanceMoves).values({ ...move, id: newId(), at: context.now, byId: context.actor.id });
 }

@@ -52,6 +52,19 @@ export async function factsOf(
 	);
 }
 
+/** The facts of one episode. */
+export async function factsOfOne(
+	db: Reader,
+	episode: { id: string; level: number },
+	now: number
+): Promise<EpisodeFacts> {
+	const facts = (await factsOf(db, [episode], now)).get(episode.id);
+	if (!facts) {
+		throw new Error(`No facts were derived of episode ${episode.id}.`);
+	}
+	return facts;
+}
+
 function derive(
 	episode: { level: number },
 	newestFirst: Operation[],

@@ -1,4 +1,3 @@
-import { sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import {

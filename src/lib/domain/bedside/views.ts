@@ -1,0 +1,26 @@
+import type { Finding } from './finding';
+import type { Reading } from './forms';
+import type { Outcome } from './codes';
+
+/** A recorded session as pages and `GET /api/episodes/:id/sessions` show it. */
+export interface SessionLine {
+	id: string;
+	startedAt: string;
+	endedAt: string;
+	level: number;
+	outcome: Outcome;
+	limitSet: string;
+	limitVersion: string;
+	recordedBy: string;
+	recordedAt: string;
+	activities: { code: string; name: string }[];
+	symptoms: string[];
+	before: Reading;
+	during: Reading[];
+	after: Reading;
+	findings: Pick<
+		Finding,
+		'rule' | 'grade' | 'reading' | 'measured' | 'limit' | 'unit' | 'reason' | 'source'
+	>[];
+	deviation: { reason: string } | null;
+}

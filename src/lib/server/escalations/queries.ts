@@ -1,0 +1,159 @@
+import { asc, eq } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/sqlite-core';
+import type { Person } from '$lib/domain/access/actor';
+import { notFound } from '$lib/domain/core/errors';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import { chainOf, chainStep, isChainSpent } from '$lib/domain/escalations/chain';
+import type { EscalationView, PhoneEscalation } from '$lib/domain/escalations/views';
+import { accessEscalation } from '../access/access';
+import type { Reader } from '../db';
+import {
+	episodes,
+	escalationMoves,
+	escalations,
+	escalationSteps,
+	outbox,
+	patients,
+	units,
+	users
+} from '../db/schema';
+import { findLink } from './take';
+import type { EscalationRow } from './tell';
+
+const holder = alias(users, 'holder');
+const receiver = alias(users, 'receiver');
+const ender = alias(users, 'ender');
+
+/** The whole of an escalation: who was told by which channel and when, who is next, who has it. */
+export async function getEscalation(db: Reader, person: Person, id: string): Promise<EscalationView> {
+	await accessEscalation(db, person, id, 'escalation.read');
+	const [[row], steps, moves] = await Promise.all([select(db, id), stepsOf(db, id), movesOf(db, id)]);
+	if (!row) {
+		throw notFound('escalation');
+	}
+	const { escalation: e } = row;
+	const opt = (at: number | null) => (at === null ? null : toRfc3339(at));
+	return {
+		id,
+		episodeId: e.episodeId,
+		unit: row.unit,
+		bed: row.bed,
+		patientName: row.patientName,
+		grade: e.grade,
+		state: e.state,
+		situation: e.situation,
+		background: e.background,
+		assessment: e.assessment,
+		request: e.request,
+		neededBy: opt(e.neededBy),
+		sessionId: e.sessionId,
+		threadId: e.threadId,
+		raisedBy: row.raisedBy,
+		raisedAt: toRfc3339(e.raisedAt),
+		holder: row.holder,
+		takenAt: opt(e.takenAt),
+		etaMinutes: e.etaMinutes,
+		arrivedAt: opt(e.arrivedAt),
+		passTo: row.receiver,
+		endedBy: row.ender,
+		endedAt: opt(e.endedAt),
+		outcome: e.outcome,
+		note: e.note,
+		informed: e.informed,
+		recheckDueAt: opt(e.recheckDueAt),
+		steps,
+		next: nextOf(e),
+		chainSpent: e.nextStep !== null && isChainSpent(e.grade, e.nextStep),
+		moves
+	};
+}
+
+/**
+ * What the secret link shows to whoever holds it, without changing anything.
+ * @throws Problem `not-found` for an unknown or expired link
+ */
+export async function getByLink(db: Reader, token: string, now: number): Promise<PhoneEscalation> {
+	const link = await findLink(db, token);
+	const [row] = link ? await select(db, link.escalationId) : [];
+	if (!link || !row || link.expiresAt <= now) {
+		throw notFound('link');
+	}
+	const { escalation: e } = row;
+	const step = e.nextStep ?? 0;
+	return {
+		id: e.id,
+		unit: row.unit,
+		bed: row.bed,
+		grade: e.grade,
+		state: e.state,
+		raisedAt: toRfc3339(e.raisedAt),
+		raisedByRole: row.raisedBy.role,
+		holder: row.holder?.name ?? null,
+		mine: e.takenBy === link.userId,
+		usable: e.state === 'raised' && link.usedAt === null,
+		steps: groupSteps(e, step)
+	};
+}
+
+function groupSteps(e: EscalationRow, nextStep: number): PhoneEscalation['steps'] {
+	const steps = new Set(chainOf(e.grade).map((s) => s.step));
+	return [...steps].map((step) => ({ ...chainStep(e.grade, step), told: step < nextStep }));
+}
+
+function nextOf(e: EscalationRow): EscalationView['next'] {
+	if (e.state !== 'raised' || e.nextStep === null || e.nextStepAt === null) {
+		return null;
+	}
+	return { step: e.nextStep, posts: chainStep(e.grade, e.nextStep).posts, at: toRfc3339(e.nextStepAt) };
+}
+
+function select(db: Reader, id: string) {
+	return db
+		.select({
+			escalation: escalations,
+			unit: units.name,
+			bed: episodes.bed,
+			patientName: patients.name,
+			raisedBy: { id: users.id, name: users.name, role: users.role },
+			holder: { id: holder.id, name: holder.name },
+			receiver: { id: receiver.id, name: receiver.name },
+			ender: { id: ender.id, name: ender.name }
+		})
+		.from(escalations)
+		.innerJoin(episodes, eq(episodes.id, escalations.episodeId))
+		.innerJoin(units, eq(units.id, episodes.unitId))
+		.innerJoin(patients, eq(patients.id, episodes.patientId))
+		.innerJoin(users, eq(users.id, escalations.raisedBy))
+		.leftJoin(holder, eq(holder.id, escalations.takenBy))
+		.leftJoin(receiver, eq(receiver.id, escalations.passTo))
+		.leftJoin(ender, eq(ender.id, escalations.endedBy))
+		.where(eq(escalations.id, id));
+}
+
+async function stepsOf(db: Reader, id: string): Promise<EscalationView['steps']> {
+	const rows = await db
+		.select({
+			step: escalationSteps.step,
+			post: escalationSteps.post,
+			name: users.name,
+			channel: escalationSteps.channel,
+			at: escalationSteps.at,
+			message: outbox.state
+		})
+		.from(escalationSteps)
+		.leftJoin(users, eq(users.id, escalationSteps.userId))
+		.leftJoin(outbox, eq(outbox.id, escalationSteps.messageId))
+		.where(eq(escalationSteps.escalationId, id))
+		.orderBy(asc(escalationSteps.at), asc(escalationSteps.id));
+	return rows.map((row) => ({ ...row, at: toRfc3339(row.at) }));
+}
+
+async function movesOf(db: Reader, id: string): Promise<EscalationView['moves']> {
+	const rows = await db
+		.select({ at: escalationMoves.at, by: users.name, kind: escalationMoves.kind })
+		.from(escalationMoves)
+		.leftJoin(users, eq(users.id, escalationMoves.byId))
+		.where(eq(escalationMoves.escalationId, id))
+		.orderBy(asc(escalationMoves.at), asc(escalationMoves.id));
+	return rows.map((row) => ({ ...row, at: toRfc3339(row.at) }));
+}

@@ -1,0 +1,25 @@
+import { db } from './db';
+import { listSessions } from './bedside/queries';
+import { getClearance } from './clearances/queries';
+import type { PersonContext } from './context';
+import { getNameboard } from './episodes/nameboard';
+import { listEpisodes } from './episodes/list';
+import { getEscalation } from './escalations/queries';
+import type { PageRequest } from './http/paging';
+import { looseEndsOf } from './loose-ends/queries';
+import { getThread } from './threads/queries';
+
+/**
+ * What pages and the JSON API read, with the person and the database filled in. A page's `load` and the API
+ * route of the same thing call the same function here, so that a refetch answers what the page was made of.
+ */
+export const read = {
+	looseEnds: ({ actor, now }: PersonContext) => looseEndsOf(db(), actor, now),
+	episodes: ({ actor, now }: PersonContext, unit: string | null, request: PageRequest) =>
+		listEpisodes(db(), actor, now, unit, request),
+	nameboard: ({ actor, now }: PersonContext, episodeId: string) => getNameboard(db(), actor, episodeId, now),
+	thread: ({ actor }: PersonContext, id: string, request: PageRequest) => getThread(db(), actor, id, request),
+	clearance: ({ actor }: PersonContext, id: string) => getClearance(db(), actor, id),
+	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
+	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id)
+};
