@@ -53,10 +53,11 @@ export async function startProduct(options: ProductOptions = {}): Promise<Produc
 	const settings = await settingsFor(dataDir, options.env ?? {});
 	const limitMs = options.readyLimitMs ?? READY_LIMIT_MS;
 	const logs: string[] = [];
-	const fakes = (['sms', 'mail'] as const).map((name) =>
-		listenTo(spawnFake(name, settings.env, 'pipe'), logs)
-	);
+	const sms = listenTo(spawnFake('sms', settings.env, 'pipe'), logs);
+	const mail = listenTo(spawnFake('mail', settings.env, 'pipe'), logs);
 	const url = settings.publicUrl;
+	const smsUrl = `http://127.0.0.1:${settings.smsPort}`;
+	const mailUrl = `http://127.0.0.1:${settings.mailPort}`;
 	let server: ChildProcess | null = null;
 
 	const kill = async (signal: NodeJS.Signals = 'SIGKILL') => {
