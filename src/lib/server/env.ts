@@ -21,6 +21,7 @@ const schema = z.object({
 	HOSPITAL_NAME: z.string().default('Saltmarsh General'),
 	HOSPITAL_ZONE: z.string().default('Europe/Dublin'),
 	HOSPITAL_PHONE: z.string().default('+353 1 555 0100'),
+	EMERGENCY_NUMBER: z.string().default('112'),
 	FAKE_SMS_PORT: port(3001),
 	FAKE_MAIL_PORT: port(3002),
 	FAKE_SMTP_PORT: port(3003),
@@ -58,7 +59,12 @@ export function readEnv(source: Record<string, string | undefined>) {
 		testClock: e.DEMO && e.TEST_CLOCK,
 		// Only the demonstration may loosen its request limits; production keeps them.
 		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
-		hospital: { name: e.HOSPITAL_NAME, zone: e.HOSPITAL_ZONE, phone: e.HOSPITAL_PHONE },
+		hospital: {
+			name: e.HOSPITAL_NAME,
+			zone: e.HOSPITAL_ZONE,
+			phone: e.HOSPITAL_PHONE,
+			emergency: e.EMERGENCY_NUMBER
+		},
 		fakes: { sms: e.FAKE_SMS_PORT, mail: e.FAKE_MAIL_PORT, smtp: e.FAKE_SMTP_PORT },
 		/** The key of the links in messages; null where the one in the data folder is used. */
 		linkSecret: e.LINK_SECRET ?? null,
@@ -74,7 +80,7 @@ type Raw = z.infer<typeof schema>;
 function smsGateway(e: Raw) {
 	if (e.DEMO) {
 		return {
-			accountSid: e.SMS_ACCOUNT_SID ?? 'AC00000000000000000000000000000000',
+			accountSid: e.SMS_ACCOUNT_SID ?? `AC${'0'.repeat(31)}1`,
 			authToken: e.SMS_AUTH_TOKEN ?? 'ropewalk-demo-token',
 			from: e.SMS_FROM ?? '+353860000000',
 			baseUrl: `http://127.0.0.1:${e.FAKE_SMS_PORT}`

@@ -27,6 +27,7 @@ export const AUDIT_ACTIONS = [
 	'escalation.settled',
 	'escalation.taken',
 	'escalation.withdrawn',
+	'message.failed',
 	'message.received',
 	'message.settled',
 	'referral.accepted',
@@ -41,6 +42,7 @@ export const AUDIT_ACTIONS = [
 	'visit.booked',
 	'visit.cancelled',
 	'visit.confirmed',
+	'visit.followed-up',
 	'visit.missed'
 ] as const;
 export type AuditAction = (typeof AUDIT_ACTIONS)[number];

@@ -1,0 +1,106 @@
+import { db } from '../db';
+import { env } from '../env';
+import { linkToken } from '../links';
+import { routes } from '$lib/routes';
+import type { Channel, Outgoing, Sent } from './channels/channel';
+import type { OutboxRow } from './change';
+import { LEASE_MS, type Claimed } from './claim';
+import { recheck, type Receiver } from './recheck';
+import { attemptsOf, knownProviderIds, recordAttempt, recordInterrupted, releaseRow } from './record';
+
+/** An attempt that is not over by then counts as unknown; well within the lease. */
+const ATTEMPT_LIMIT_MS = 20_000;
+const NOT_LOOKED_UP = 'not-looked-up';
+const NEVER_ENDED: Sent = { outcome: { kind: 'unknown', reason: 'no-answer' }, code: 'time-limit' };
+
+/** What an attempt needs from its worker. */
+export interface Sending {
+	owner: string;
+	channel: Channel;
+	now: () => number;
+	random: () => number;
+}
+
+/**
+ * See one claimed message through: check again whether it is wanted, ask the gateway first where an earlier
+ * attempt may have gone through, send, and put on record what came of it. Nothing is awaited inside a transaction.
+ * @returns how the attempt ended; null when none was made
+ */
+export async function attempt({ row, interrupted }: Claimed, sending: Sending): Promise<Sent | null> {
+	const { owner, now } = sending;
+	if (interrupted) {
+		await recordInterrupted(row, LEASE_MS, now());
+	}
+	const verdict = await recheck(db(), row, now());
+	switch (verdict.kind) {
+		case 'wait':
+			await releaseRow(row, owner, now(), { state: 'ready', reason: null, nextAt: verdict.until });
+			return null;
+		case 'skip':
+			await releaseRow(row, owner, now(), { state: 'skipped', reason: verdict.reason });
+			return null;
+		case 'fail':
+			await releaseRow(row, owner, now(), { state: 'failed', reason: verdict.reason });
+			return null;
+		case 'send':
+			return sendAndRecord(row, verdict.receiver, sending);
+	}
+}
+
+async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sending): Promise<Sent> {
+	const startedAt = sending.now();
+	const message = outgoing(row, receiver);
+	const sent =
+		(await lookedUp(row, message, sending.channel)) ??
+		(await within(ATTEMPT_LIMIT_MS, sending.channel.send(message), NEVER_ENDED));
+	await recordAttempt(
+		row,
+		sending.owner,
+		{ startedAt, endedAt: sending.now(), outcome: sent.outcome, code: sent.code },
+		sending.random()
+	);
+	return sent;
+}
+
+/** Fill in what is not stored: the secret link. */
+function outgoing(row: OutboxRow, { to, name }: Receiver): Outgoing {
+	const { id, subject, linkId } = row;
+	const link = linkId === null ? null : env().publicUrl + routes.phoneLink(linkToken(linkId));
+	const body = link === null ? row.body : row.body.replaceAll('{link}', () => link);
+	return { id, to, name, subject, body };
+}
+
+/**
+ * What became of an earlier attempt of unknown outcome, as far as the gateway can tell. Null means: send now,
+ * because there was no such attempt, it did not go through, or sending twice is better than not at all.
+ */
+async function lookedUp(row: OutboxRow, message: Outgoing, channel: Channel): Promise<Sent | null> {
+	const attempts = await attemptsOf(row.id);
+	if (attempts.at(-1)?.outcome !== 'unknown' || channel.lookUp === null) {
+		return null;
+	}
+	const found = await within(ATTEMPT_LIMIT_MS, channel.lookUp(message), null);
+	if (found !== null) {
+		const known = await knownProviderIds(found);
+		const id = found.find((candidate) => !known.has(candidate));
+		return id === undefined ? null : { outcome: { kind: 'accepted', id }, code: 'looked-up' };
+	}
+	const sentBlind = attempts.filter(({ outcome, code }) => outcome === 'unknown' && code !== NOT_LOOKED_UP);
+	// Silence is the harm, a second copy a nuisance: a call for help goes out again, all else once.
+	return row.kind === 'escalation' || sentBlind.length < 2
+		? null
+		: { outcome: { kind: 'unknown', reason: 'no-answer' }, code: NOT_LOOKED_UP };
+}
+
+/** What the work answers, or the fallback when it takes too long. */
+async function within<T>(limitMs: number, work: Promise<T>, fallback: T): Promise<T> {
+	let timer: NodeJS.Timeout | undefined;
+	const late = new Promise<T>((resolve) => {
+		timer = setTimeout(() => resolve(fallback), limitMs);
+	});
+	try {
+		return await Promise.race([work, late]);
+	} finally {
+		clearTimeout(timer);
+	}
+}

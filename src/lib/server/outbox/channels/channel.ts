@@ -1,0 +1,35 @@
+import type { Outcome } from '$lib/domain/messages/outcome';
+
+/** A message as it goes out: the address as it is now, the link filled in. */
+export interface Outgoing {
+	/** The outbox row's; the same for every attempt. */
+	id: string;
+	/** A telephone number in E.164 form, or an e-mail address. */
+	to: string;
+	name: string | null;
+	subject: string | null;
+	body: string;
+}
+
+/** How one attempt ended. `code` is the gateway's status or error code, or that of the connection; never prose. */
+export interface Sent {
+	outcome: Outcome;
+	code: string | null;
+}
+
+/** One way out of the product. Neither function throws for what a gateway does. */
+export interface Channel {
+	send(message: Outgoing): Promise<Sent>;
+	/**
+	 * The gateway's identifiers of messages with this receiver and this text, newest first, to find out whether an
+	 * attempt of unknown outcome went through; null when the gateway gave no usable answer. The channel as a whole
+	 * has null here when it cannot be asked.
+	 */
+	lookUp: ((message: Outgoing) => Promise<string[] | null>) | null;
+}
+
+export const CHANNELS = ['sms', 'mail'] as const;
+export type ChannelName = (typeof CHANNELS)[number];
+
+/** The channels of this process; null for one without a gateway, whose messages are held. */
+export type Channels = Record<ChannelName, Channel | null>;

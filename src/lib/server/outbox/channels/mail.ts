@@ -1,0 +1,78 @@
+import nodemailer, { type Transporter } from 'nodemailer';
+import { mailOutcome } from '$lib/domain/messages/outcome';
+import type { Env } from '../../env';
+import type { Channel, Outgoing, Sent } from './channel';
+import { mailAddress, readSender, type MailAddress } from './mail-address';
+import { htmlOf } from './mail-html';
+
+/** To connect, and to be greeted. */
+const CONNECT_LIMIT_MS = 5_000;
+/** Silence of the server in the middle of the exchange. */
+const SILENCE_LIMIT_MS = 8_000;
+
+/**
+ * Mails over SMTP, encrypted where the configuration demands it.
+ * @param publicUrl its host stands in the identifiers of mails
+ * @throws Error when the configured sender is no address
+ */
+export function mailChannel(gateway: NonNullable<Env['mail']>, publicUrl: string): Channel {
+	const from = readSender(gateway.from);
+	const host = new URL(publicUrl).hostname;
+	const transport = nodemailer.createTransport({
+		url: gateway.url,
+		requireTLS: gateway.requireTls,
+		connectionTimeout: CONNECT_LIMIT_MS,
+		dnsTimeout: CONNECT_LIMIT_MS,
+		greetingTimeout: CONNECT_LIMIT_MS,
+		socketTimeout: SILENCE_LIMIT_MS,
+		disableFileAccess: true,
+		disableUrlAccess: true
+	});
+	// A mail server cannot be asked what became of a mail; the receiving side knows a second copy by its identifier.
+	return { send: (message) => send(transport, from, host, message), lookUp: null };
+}
+
+async function send(
+	transport: Transporter,
+	from: MailAddress,
+	host: string,
+	{ id, to, name, subject, body }: Outgoing
+): Promise<Sent> {
+	const receiver = mailAddress(to, name);
+	if (!receiver) {
+		return { outcome: { kind: 'permanent', reason: 'bad-address' }, code: 'not-an-address' };
+	}
+	const messageId = `<${id}@${host}>`;
+	try {
+		await transport.sendMail({
+			messageId,
+			from,
+			to: receiver,
+			subject: subject ?? '',
+			text: body,
+			html: htmlOf(body),
+			headers: { 'Auto-Submitted': 'auto-generated' }
+		});
+		return { outcome: mailOutcome({ kind: 'answered', id: messageId }), code: null };
+	} catch (error) {
+		return judgedError(error);
+	}
+}
+
+function judgedError(error: unknown): Sent {
+	const { code, responseCode, command, syscall } = (error ?? {}) as Record<string, unknown>;
+	const reply = typeof responseCode === 'number' ? responseCode : null;
+	const known = textOf(code);
+	const outcome = mailOutcome({
+		kind: 'failed',
+		code: known,
+		reply,
+		command: textOf(command),
+		syscall: textOf(syscall)
+	});
+	return { outcome, code: reply === null ? known : String(reply) };
+}
+
+function textOf(value: unknown): string | null {
+	return typeof value === 'string' ? value : null;
+}

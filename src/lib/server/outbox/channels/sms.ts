@@ -1,0 +1,60 @@
+import twilio from 'twilio';
+import { smsOutcome } from '$lib/domain/messages/outcome';
+import { readRetryAfter } from '$lib/domain/messages/retry';
+import { now } from '../../clock';
+import type { Env } from '../../env';
+import type { Channel, Outgoing, Sent } from './channel';
+import { GatewayClient, GatewayRefusal } from './gateway-client';
+
+/** How many of the newest messages to one number are looked through for one of unknown outcome. */
+const LOOK_UP_LIMIT = 50;
+
+/**
+ * Text messages through the gateway's SDK.
+ * @param statusUrl where the gateway posts what becomes of a message
+ * @throws Error when the account identifier is none
+ */
+export function smsChannel(gateway: NonNullable<Env['sms']>, statusUrl: string): Channel {
+	const httpClient = new GatewayClient(gateway.baseUrl);
+	const { messages } = twilio(gateway.accountSid, gateway.authToken, { httpClient, autoRetry: false });
+	return {
+		send: ({ to, body }) =>
+			judged(() => messages.create({ to, from: gateway.from, body, statusCallback: statusUrl })),
+		lookUp: (message) => lookUp(messages, message)
+	};
+}
+
+async function judged(create: () => Promise<{ sid: string }>): Promise<Sent> {
+	try {
+		const { sid } = await create();
+		const id = typeof sid === 'string' ? sid : null;
+		const outcome = smsOutcome({ kind: 'answered', status: 201, id, code: null, retryAfter: null });
+		return { outcome, code: null };
+	} catch (error) {
+		return judgedError(error);
+	}
+}
+
+function judgedError(error: unknown): Sent {
+	if (error instanceof GatewayRefusal) {
+		const { status, code } = error;
+		const retryAfter = readRetryAfter(error.retryAfter, now());
+		const outcome = smsOutcome({ kind: 'answered', status, id: null, code, retryAfter });
+		return { outcome, code: String(code ?? status) };
+	}
+	const code = (error as { code?: unknown } | null)?.code;
+	const known = typeof code === 'string' ? code : null;
+	return { outcome: smsOutcome({ kind: 'failed', code: known }), code: known };
+}
+
+type Messages = ReturnType<typeof twilio>['messages'];
+
+/** The clocks of gateway and hospital may differ, so nothing is filtered by time: receiver and text decide. */
+async function lookUp(messages: Messages, { to, body }: Outgoing): Promise<string[] | null> {
+	try {
+		const found = await messages.list({ to, limit: LOOK_UP_LIMIT, pageSize: LOOK_UP_LIMIT });
+		return found.filter((message) => message.body === body).map(({ sid }) => sid);
+	} catch {
+		return null;
+	}
+}

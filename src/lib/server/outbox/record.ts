@@ -1,0 +1,174 @@
+import { and, asc, eq, inArray, isNull } from 'drizzle-orm';
+import type { LiveEvent } from '$lib/domain/live/events';
+import type { Outcome } from '$lib/domain/messages/outcome';
+import { appendAudit } from '../audit/append';
+import { db, type Tx } from '../db';
+import { outbox, outboxAttempts, patients } from '../db/schema';
+import { newId } from '../ids';
+import { stateByStatus } from '../messages/delivery';
+import { changing, episodeOfMessage, messageEvent, type OutboxRow } from './change';
+import { nextState } from './next-state';
+
+export interface Attempt {
+	startedAt: number;
+	endedAt: number;
+	outcome: Outcome;
+	/** See the channel's `Sent`; `looked-up`, `not-looked-up` and `interrupted` are ours. */
+	code: string | null;
+}
+
+/** How the attempts of a message ended so far, oldest first. */
+export async function attemptsOf(messageId: string) {
+	return db()
+		.select()
+		.from(outboxAttempts)
+		.where(eq(outboxAttempts.messageId, messageId))
+		.orderBy(asc(outboxAttempts.number));
+}
+
+/**
+ * Put an attempt on record and give the message its next state. Should the lease have ended meanwhile and another
+ * worker have the message, the attempt is recorded all the same and the state is theirs to decide.
+ */
+export async function recordAttempt(
+	row: OutboxRow,
+	owner: string,
+	attempt: Attempt,
+	random: number
+): Promise<void> {
+	await changing(attempt.endedAt, async (tx, events) => {
+		const number = await addAttempt(tx, row, attempt);
+		const [first] = await tx
+			.select({ at: outboxAttempts.startedAt })
+			.from(outboxAttempts)
+			.where(eq(outboxAttempts.messageId, row.id))
+			.orderBy(asc(outboxAttempts.number))
+			.limit(1);
+		const next = nextState(row, attempt.outcome, {
+			attempts: number,
+			firstAt: first?.at ?? attempt.startedAt,
+			now: attempt.endedAt,
+			random
+		});
+		const told = next.providerId === undefined ? null : await stateByStatus(tx, next.providerId);
+		await settleRow(tx, events, row, owner, attempt.endedAt, {
+			attempts: number,
+			state: told?.state ?? next.state,
+			stateReason: told?.reason ?? next.reason,
+			nextAt: next.nextAt ?? row.nextAt,
+			sentAt: next.state === 'accepted' ? attempt.endedAt : null,
+			providerId: next.providerId ?? null
+		});
+		await noteOptOut(tx, row, attempt);
+	});
+}
+
+/** The attempt of a worker that was killed: nobody knows whether it went through. */
+export async function recordInterrupted(row: OutboxRow, leaseMs: number, now: number): Promise<void> {
+	const leaseUntil = row.leaseUntil ?? now;
+	await changing(now, async (tx) => {
+		const attempts = await addAttempt(tx, row, {
+			startedAt: Math.min(now, leaseUntil - leaseMs),
+			endedAt: now,
+			outcome: { kind: 'unknown', reason: 'no-answer' },
+			code: 'interrupted'
+		});
+		await tx.update(outbox).set({ attempts }).where(eq(outbox.id, row.id));
+	});
+}
+
+/** Give a claimed message back or end it, without an attempt: it waits, is not wanted any more, or came too late. */
+export async function releaseRow(
+	row: OutboxRow,
+	owner: string,
+	now: number,
+	change: { state: 'ready' | 'skipped' | 'failed'; reason: string | null; nextAt?: number }
+): Promise<void> {
+	await changing(now, async (tx, events) => {
+		const { state, reason, nextAt = row.nextAt } = change;
+		await settleRow(tx, events, row, owner, now, { state, stateReason: reason, nextAt });
+	});
+}
+
+async function addAttempt(tx: Tx, row: OutboxRow, attempt: Attempt): Promise<number> {
+	const number = (await tx.$count(outboxAttempts, eq(outboxAttempts.messageId, row.id))) + 1;
+	const { startedAt, endedAt, outcome, code } = attempt;
+	await tx.insert(outboxAttempts).values({
+		id: newId(),
+		messageId: row.id,
+		number,
+		startedAt,
+		endedAt,
+		outcome: outcome.kind,
+		code,
+		providerId: outcome.kind === 'accepted' ? outcome.id : null
+	});
+	return number;
+}
+
+type Change = Partial<OutboxRow> & Pick<OutboxRow, 'state'>;
+
+/** The one place where a claimed message leaves its worker. What did not arrive is on record in the audit too. */
+async function settleRow(
+	tx: Tx,
+	events: LiveEvent[],
+	row: OutboxRow,
+	owner: string,
+	now: number,
+	change: Change
+): Promise<void> {
+	const mine = and(eq(outbox.id, row.id), eq(outbox.leaseOwner, owner), eq(outbox.state, 'sending'));
+	const [settled] = await tx
+		.update(outbox)
+		.set({ ...change, leaseOwner: null, leaseUntil: null })
+		.where(mine)
+		.returning({ id: outbox.id });
+	if (!settled) {
+		return;
+	}
+	events.push(await messageEvent(tx, row, change.state));
+	if (change.state === 'failed' || change.state === 'undelivered') {
+		await auditFailure(tx, row, now, change.stateReason ?? null);
+	}
+}
+
+/** That a message did not arrive, by whom it was sent and why; its text and its address are not on record here. */
+export async function auditFailure(
+	tx: Tx,
+	row: Pick<OutboxRow, 'id' | 'kind' | 'channel' | 'refKind' | 'refId' | 'patientId'>,
+	now: number,
+	reason: string | null
+): Promise<void> {
+	const actor = { kind: 'system', id: row.kind === 'escalation' ? 'chain' : 'reminders' } as const;
+	await appendAudit(tx, { actor, address: null, now }, [
+		{
+			action: 'message.failed',
+			objectKind: 'message',
+			objectId: row.id,
+			episodeId: await episodeOfMessage(tx, row),
+			detail: { kind: row.kind, channel: row.channel, reason }
+		}
+	]);
+}
+
+/** The gateway knows of a STOP that we have not heard of: from now on we keep to it ourselves. */
+async function noteOptOut(tx: Tx, row: OutboxRow, { outcome, endedAt }: Attempt): Promise<void> {
+	if (row.patientId !== null && outcome.kind === 'permanent' && outcome.reason === 'opted-out') {
+		await tx
+			.update(patients)
+			.set({ smsOptedOutAt: endedAt })
+			.where(and(eq(patients.id, row.patientId), isNull(patients.smsOptedOutAt)));
+	}
+}
+
+/** Which of these identifiers of the gateway belong to messages that we know of. */
+export async function knownProviderIds(ids: string[]): Promise<Set<string>> {
+	if (ids.length === 0) {
+		return new Set();
+	}
+	const rows = await db()
+		.select({ id: outboxAttempts.providerId })
+		.from(outboxAttempts)
+		.where(inArray(outboxAttempts.providerId, ids));
+	return new Set(rows.flatMap(({ id }) => (id === null ? [] : [id])));
+}

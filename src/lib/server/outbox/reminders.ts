@@ -1,0 +1,33 @@
+import { and, eq, inArray } from 'drizzle-orm';
+import type { LiveEvent } from '$lib/domain/live/events';
+import type { Tx } from '../db';
+import { outbox } from '../db/schema';
+import { messageEvent } from './change';
+
+/** Reminders of the visit that nobody has begun to send. */
+function waitingOf(visitId: string) {
+	return and(
+		eq(outbox.refKind, 'visit'),
+		eq(outbox.refId, visitId),
+		eq(outbox.kind, 'reminder'),
+		inArray(outbox.state, ['ready', 'held'])
+	);
+}
+
+/**
+ * Drop the reminders of a visit that is not expected any more, in the transaction that makes it so. One that is
+ * being sent in this moment is checked again before a second attempt.
+ */
+export async function dropReminders(tx: Tx, visitId: string, reason: string): Promise<LiveEvent[]> {
+	const dropped = await tx
+		.update(outbox)
+		.set({ state: 'cancelled', stateReason: reason })
+		.where(waitingOf(visitId))
+		.returning();
+	return Promise.all(dropped.map((row) => messageEvent(tx, row, 'cancelled')));
+}
+
+/** Give the waiting reminders of a visit another text: who has said yes is not asked again. */
+export async function rewordReminders(tx: Tx, visitId: string, body: string): Promise<void> {
+	await tx.update(outbox).set({ body }).where(waitingOf(visitId));
+}
