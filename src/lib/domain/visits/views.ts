@@ -1,0 +1,31 @@
+import type { VisitState } from '../core/codes';
+import type { PatientLine } from '../episodes/views';
+
+/** What became of one reminder; `state` and `reason` are those of its message. */
+export interface ReminderFate {
+	/** When it was meant to go, RFC 3339. */
+	dueAt: string;
+	/** `ready` waits, `accepted` left the house, `delivered` arrived; the others did not go, and `reason` says why. */
+	state: string;
+	reason: string | null;
+	sentAt: string | null;
+}
+
+/** One visit of the week, for those who plan and receive it. Instants are RFC 3339. */
+export interface VisitItem {
+	id: string;
+	episodeId: string;
+	patient: PatientLine;
+	startsAt: string;
+	minutes: number;
+	/** The unit where it takes place. */
+	place: string;
+	unitId: string;
+	state: VisitState;
+	reason: string | null;
+	/** Cancelled by the patient, and nobody has followed it up yet. */
+	wantsFollowUp: boolean;
+	/** The same for all visits that were booked together. */
+	seriesId: string | null;
+	reminders: ReminderFate[];
+}

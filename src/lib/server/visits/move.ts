@@ -1,0 +1,74 @@
+import { eq } from 'drizzle-orm';
+import type { AuditAction } from '$lib/domain/audit/actions';
+import type { VisitState } from '$lib/domain/core/codes';
+import { Problem } from '$lib/domain/core/errors';
+import { isExpected, visitAfter, whyNot, type VisitMove } from '$lib/domain/visits/states';
+import { threadForDeed } from '../access/access';
+import type { Tx } from '../db';
+import { visits } from '../db/schema';
+import { dropReminders, rewordReminders } from '../outbox/reminders';
+import type { Change } from '../write';
+import { patientOfEpisode, reminderText } from './remind';
+import { movedText } from './words';
+
+export type VisitRow = typeof visits.$inferSelect;
+
+/** The reason on record when patients cancel themselves; theirs is not asked for. */
+export const CANCELLED_BY_PATIENT = 'patient';
+
+const ACTIONS: Record<VisitMove, AuditAction> = {
+	confirm: 'visit.confirmed',
+	cancel: 'visit.cancelled',
+	attend: 'visit.attended',
+	miss: 'visit.missed'
+};
+
+export interface MovedVisit {
+	id: string;
+	state: VisitState;
+}
+
+/**
+ * Move a visit on, with what follows from it in the same transaction: reminders of a visit that is not expected
+ * any more are dropped, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
+ * until somebody has followed it up. Whether the caller may do it is decided before.
+ * @throws Problem `wrong-state`
+ */
+export async function moveVisit(
+	tx: Tx,
+	visit: VisitRow,
+	move: VisitMove,
+	by: 'staff' | 'patient',
+	now: number,
+	reason: string | null = null
+): Promise<Change<MovedVisit>> {
+	const state = visitAfter(visit.state, move);
+	if (state === null) {
+		throw new Problem('wrong-state', whyNot(visit.state, move), { state: visit.state });
+	}
+	const { id, episodeId } = visit;
+	const cancelledByPatient = by === 'patient' && state === 'cancelled';
+	await tx
+		.update(visits)
+		.set({
+			state,
+			decidedAt: now,
+			reason: cancelledByPatient ? CANCELLED_BY_PATIENT : reason,
+			patientCancelledAt: cancelledByPatient ? now : null
+		})
+		.where(eq(visits.id, id));
+	const dropped = isExpected(state) ? [] : await dropReminders(tx, id, `visit ${state}`);
+	if (state === 'confirmed') {
+		const patient = await patientOfEpisode(tx, episodeId);
+		await rewordReminders(tx, id, reminderText(visit, patient, true));
+	}
+	const threadId = await threadForDeed(tx, episodeId, undefined);
+	const body = movedText(visit, move, by, reason, now);
+	const strand = by === 'patient' ? ({ strand: 'patient' } as const) : {};
+	return {
+		result: { id, state },
+		audit: { action: ACTIONS[move], objectKind: 'visit', objectId: id, episodeId, detail: { by } },
+		entries: threadId ? [{ threadId, kind: 'event', body, ref: { kind: 'visit', id }, ...strand }] : [],
+		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped]
+	};
+}

@@ -1,0 +1,128 @@
+import { and, asc, eq, gte, inArray, lt, sql } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
+import { can } from '$lib/domain/access/can';
+import { invalidField } from '$lib/domain/core/errors';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import type { VisitLine } from '$lib/domain/episodes/views';
+import { RangeProblem, visitRange, type VisitRange } from '$lib/domain/visits/range';
+import type { ReminderFate, VisitItem } from '$lib/domain/visits/views';
+import { db, type Reader } from '../db';
+import { episodes, outbox, patients, reminders, visits } from '../db/schema';
+import { env } from '../env';
+import { MAX_LIMIT, page, type Page, type PageRequest } from '../http/paging';
+
+type VisitRow = typeof visits.$inferSelect;
+
+/** The visits of one episode, oldest first, for the nameboard. The caller has checked the access. */
+export async function visitsOfEpisode(reader: Reader, episodeId: string): Promise<VisitLine[]> {
+	const rows = await reader
+		.select()
+		.from(visits)
+		.where(eq(visits.episodeId, episodeId))
+		.orderBy(asc(visits.startsAt), asc(visits.id));
+	return rows.map(visitLine);
+}
+
+export function visitLine({ id, startsAt, minutes, place, state }: VisitRow): VisitLine {
+	return { id, startsAt: toRfc3339(startsAt), minutes, place, state };
+}
+
+/**
+ * `?from=&to=` of the list of visits, each a day or an instant; this week where left out.
+ * @throws Problem `invalid` naming the bound
+ */
+export function visitRangeOf(url: URL, now: number): VisitRange {
+	const { searchParams } = url;
+	try {
+		return visitRange(searchParams.get('from'), searchParams.get('to'), env().hospital.zone, now);
+	} catch (error) {
+		if (error instanceof RangeProblem) {
+			throw invalidField(`/${error.field}`, error.message);
+		}
+		throw error;
+	}
+}
+
+const ALL: PageRequest = { limit: MAX_LIMIT, after: null };
+
+/**
+ * The visits of patients in the person's units that begin within the range, oldest first, with the patient and
+ * what became of the reminders.
+ */
+export async function listVisits(
+	person: Person,
+	range: VisitRange,
+	request: PageRequest = ALL
+): Promise<Page<VisitItem>> {
+	const unitIds = person.unitIds.filter((unitId) => can(person, 'visit.read', { unitId }));
+	const after = request.after === null ? undefined : await afterVisit(request.after);
+	const rows = await db()
+		.select({ visit: visits, patient: patients })
+		.from(visits)
+		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
+		.innerJoin(patients, eq(patients.id, episodes.patientId))
+		.where(
+			and(
+				inArray(episodes.unitId, unitIds),
+				gte(visits.startsAt, range.from),
+				lt(visits.startsAt, range.to),
+				after
+			)
+		)
+		.orderBy(asc(visits.startsAt), asc(visits.id))
+		.limit(request.limit + 1);
+	const { items, next } = page(rows, request, ({ visit }) => visit.id);
+	const fates = await fatesOf(items.map(({ visit }) => visit.id));
+	return {
+		items: items.map(({ visit, patient }) => toItem(visit, patient, fates.get(visit.id) ?? [])),
+		next
+	};
+}
+
+async function afterVisit(id: string) {
+	const [row] = await db().select({ startsAt: visits.startsAt }).from(visits).where(eq(visits.id, id));
+	if (!row) {
+		throw invalidField('/after', `after is '${id.slice(0, 40)}': it must be the next of an earlier answer.`);
+	}
+	return sql`(${visits.startsAt}, ${visits.id}) > (${row.startsAt}, ${id})`;
+}
+
+async function fatesOf(visitIds: string[]): Promise<Map<string, ReminderFate[]>> {
+	const rows = await db()
+		.select({
+			visitId: reminders.visitId,
+			dueAt: reminders.dueAt,
+			state: outbox.state,
+			reason: outbox.stateReason,
+			sentAt: outbox.sentAt
+		})
+		.from(reminders)
+		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
+		.where(inArray(reminders.visitId, visitIds))
+		.orderBy(asc(reminders.dueAt));
+	const fates = new Map<string, ReminderFate[]>();
+	for (const { visitId, dueAt, state, reason, sentAt } of rows) {
+		const fate = {
+			dueAt: toRfc3339(dueAt),
+			state,
+			reason,
+			sentAt: sentAt === null ? null : toRfc3339(sentAt)
+		};
+		fates.set(visitId, [...(fates.get(visitId) ?? []), fate]);
+	}
+	return fates;
+}
+
+function toItem(visit: VisitRow, patient: typeof patients.$inferSelect, fates: ReminderFate[]): VisitItem {
+	const { id, name, mrn, birthDate, sex } = patient;
+	return {
+		...visitLine(visit),
+		episodeId: visit.episodeId,
+		patient: { id, name, mrn, birthDate, sex },
+		unitId: visit.unitId,
+		reason: visit.reason,
+		wantsFollowUp: visit.patientCancelledAt !== null && visit.followedUpAt === null,
+		seriesId: visit.seriesId,
+		reminders: fates
+	};
+}

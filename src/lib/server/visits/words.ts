@@ -1,0 +1,53 @@
+import { dayAndClock } from '$lib/format';
+import { m } from '$lib/i18n/paraglide/messages';
+import type { VisitMove } from '$lib/domain/visits/states';
+import type { visits } from '../db/schema';
+
+type VisitRow = typeof visits.$inferSelect;
+
+/** What the thread says when visits were booked. */
+export function bookedText(booked: readonly VisitRow[], now: number): string {
+	const [first] = booked;
+	const last = booked.at(-1);
+	if (!first || !last) {
+		return '';
+	}
+	const when = whenOf(first, now);
+	return booked.length === 1
+		? m.visits_entry_booked({ when, place: first.place })
+		: m.visits_entry_booked_series({
+				count: booked.length,
+				first: when,
+				last: whenOf(last, now),
+				place: first.place
+			});
+}
+
+/** What the thread says when a visit moved on, and who moved it. */
+export function movedText(
+	visit: VisitRow,
+	move: VisitMove,
+	by: 'staff' | 'patient',
+	reason: string | null,
+	now: number
+): string {
+	const when = whenOf(visit, now);
+	if (by === 'patient') {
+		return move === 'confirm'
+			? m.visits_entry_patient_confirmed({ when })
+			: m.visits_entry_patient_cancelled({ when });
+	}
+	const words = MOVED[move]({ when });
+	return reason === null ? words : m.visits_entry_with_reason({ words, reason });
+}
+
+const MOVED: Record<VisitMove, (inputs: { when: string }) => string> = {
+	confirm: m.visits_entry_confirmed,
+	cancel: m.visits_entry_cancelled,
+	attend: m.visits_entry_attended,
+	miss: m.visits_entry_missed
+};
+
+function whenOf({ startsAt, zone }: VisitRow, now: number): string {
+	return dayAndClock(startsAt, { zone, now });
+}
