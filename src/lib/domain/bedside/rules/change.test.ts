@@ -229,6 +229,20 @@ describe('the base', () => {
 		expect(verdict.notJudged.includes('systolic-fall')).toBe(found.length === 0);
 	});
 
+	it('is not made by settling in the same posture, so a change of source stays unjudged', () => {
+		const during: Reading[] = [
+			{ ...REST, sbp: 128, bpSource: 'arterial', settled: true },
+			{ ...REST, sbp: 110, bpSource: 'arterial' }
+		];
+		const verdict = judge({
+			before: { sbp: 130, bpSource: 'cuff' },
+			during,
+			after: { sbp: 128, bpSource: 'cuff' }
+		});
+		expect(grades(verdict, 'systolic-fall')).toEqual([]);
+		expect(verdict.notJudged).toContain('systolic-fall');
+	});
+
 	it('lets heart rate and saturation be compared across sources of pressure', () => {
 		const verdict = judge({
 			before: { hr: 70, spo2: 98, bpSource: 'arterial' },

@@ -45,11 +45,27 @@ describe('symptom', () => {
 		]);
 	});
 
-	it('named twice counts once, with the graver grade', () => {
-		const verdict = judge({
-			symptoms: ['breathlessness', { code: 'breathlessness', grade: 4 }, { code: 'breathlessness', grade: 1 }]
+	it.each([
+		[['breathlessness' as const, { code: 'breathlessness' as const, grade: 4 }]],
+		[[{ code: 'breathlessness' as const, grade: 4 }, 'breathlessness' as const]],
+		[
+			[
+				{ code: 'breathlessness' as const, grade: 2 },
+				{ code: 'breathlessness' as const, grade: 4 }
+			]
+		],
+		[
+			[
+				{ code: 'breathlessness' as const, grade: 4 },
+				{ code: 'breathlessness' as const, grade: 2 }
+			]
+		]
+	])('named twice counts once, with the graver grade: %j', (symptoms) => {
+		expect(only(judge({ symptoms }), 'symptom')).toMatchObject({
+			grade: 'stop',
+			measured: 'breathlessness',
+			limit: 3
 		});
-		expect(only(verdict, 'symptom')).toMatchObject({ grade: 'stop', measured: 'breathlessness', limit: 3 });
 	});
 
 	it('before anything was done reads as a reason not to start', () => {
