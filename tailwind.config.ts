@@ -31,7 +31,7 @@ const themes = plugin(({ addBase }) => {
 		'@media (prefers-color-scheme: dark)': { ':root:not([data-theme])': night },
 		"[data-theme='night']": night,
 		'@media print': { ":root, [data-theme='night']": day },
-		'@media (forced-colors: active)': { ':root, [data-theme]': variables(FORCED) }
+		'@media (forced-colors: active)': { ':root, :root:not([data-theme]), [data-theme]': variables(FORCED) }
 	});
 });
 
