@@ -8,6 +8,8 @@ declare global {
 			/** The sign-in behind the cookie; null for programs and for nobody. */
 			signInId: string | null;
 			requestId: string;
+			/** The live log's cursor from before the page was read. */
+			liveCursor: number;
 		}
 		interface Error {
 			message: string;

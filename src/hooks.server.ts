@@ -6,6 +6,7 @@ import { personOfToken } from '$lib/server/auth/people';
 import { personOfCookie } from '$lib/server/auth/sign-ins';
 import { now } from '$lib/server/clock';
 import { newId } from '$lib/server/ids';
+import { liveCursor } from '$lib/server/live/log';
 import { log } from '$lib/server/log';
 import { secureHeaders } from '$lib/server/http/headers';
 import { countRequest } from '$lib/server/http/limits';
@@ -36,11 +37,13 @@ const identify: Handle = async ({ event, resolve }) => {
 };
 
 /** Pages behind the sign-in send others to it; the API answers 401 by itself. */
-const guard: Handle = ({ event, resolve }) => {
+const guard: Handle = async ({ event, resolve }) => {
 	const inside = event.route.id?.startsWith('/(app)') ?? false;
 	if (inside && event.locals.context.actor?.kind !== 'person') {
 		redirect(303, routes.signIn(event.url.pathname + event.url.search));
 	}
+	// Taken before the page reads anything: what happens from here on comes by the stream.
+	event.locals.liveCursor = inside ? await liveCursor() : 0;
 	return resolve(event);
 };
 

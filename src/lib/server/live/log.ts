@@ -1,6 +1,6 @@
 import { and, asc, eq, gt, lt, sql } from 'drizzle-orm';
 import type { LiveEvent } from '$lib/domain/live/events';
-import type { Db, Reader, Tx } from '../db';
+import { db as database, type Db, type Reader, type Tx } from '../db';
 import { episodes, liveEvents } from '../db/schema';
 import type { LoggedEvent } from './hub';
 
@@ -41,6 +41,11 @@ async function unitOf(tx: Tx, episodeId: string | null): Promise<string | null> 
 export async function currentCursor(db: Reader): Promise<number> {
 	const row = await db.get<{ seq: number }>(sql`select seq from sqlite_sequence where name = 'live_events'`);
 	return row?.seq ?? 0;
+}
+
+/** {@link currentCursor} of this process's database. */
+export function liveCursor(): Promise<number> {
+	return currentCursor(database());
 }
 
 /** True when every event after `cursor` is still in the log. */

@@ -1,0 +1,33 @@
+import { browser } from '$app/environment';
+import type { SessionLine } from '$lib/domain/bedside/views';
+import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
+import type { EscalationView } from '$lib/domain/escalations/views';
+import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
+import type { ThreadView } from '$lib/domain/referrals/views';
+import { getJson } from './api';
+
+/**
+ * One place for what pages ask: the key that a live event makes stale, where to fetch it again, and what the
+ * server rendered the page with. Use as `createQuery(() => queries.thread(id, data.thread))`.
+ */
+function query<T>(queryKey: readonly string[], path: string, initialData: T) {
+	return { queryKey, queryFn: () => getJson<T>(path), initialData, enabled: browser, staleTime: Infinity };
+}
+
+type List<T> = { items: T[]; next: string | null };
+
+export const queries = {
+	looseEnds: (initial: LooseEnds) => query(['loose-ends'], '/api/loose-ends', initial),
+	episodes: (unitId: string | null, initial: List<EpisodeListItem>) =>
+		query(
+			['episodes', unitId ?? ''],
+			`/api/episodes?limit=200${unitId ? `&unit=${encodeURIComponent(unitId)}` : ''}`,
+			initial
+		),
+	episode: (id: string, initial: Nameboard) => query(['episode', id], `/api/episodes/${id}`, initial),
+	thread: (id: string, initial: ThreadView) => query(['thread', id], `/api/threads/${id}?limit=200`, initial),
+	sessions: (episodeId: string, initial: List<SessionLine>) =>
+		query(['sessions', episodeId], `/api/episodes/${episodeId}/sessions`, initial),
+	escalation: (id: string, initial: EscalationView) =>
+		query(['escalation', id], `/api/escalations/${id}`, initial)
+};

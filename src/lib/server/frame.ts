@@ -1,0 +1,31 @@
+import { can } from '$lib/domain/access/can';
+import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
+import { unitsOf } from './auth/people';
+import type { PersonContext } from './context';
+import { coverNow } from './cover/queries';
+import { db } from './db';
+import { env } from './env';
+import { looseEndsOf } from './loose-ends/queries';
+
+const NOTHING_OPEN: LooseEnds = { mine: [], theirs: [] };
+
+/** What the frame around every signed-in page shows: who, which units, who is on cover, what is open, the time. */
+export async function frameOf({ actor, now }: PersonContext, cursor: number) {
+	const [units, cover, looseEnds] = await Promise.all([
+		unitsOf(db(), actor.id),
+		coverNow(db(), actor.unitIds, now),
+		can(actor, 'episode.read') ? looseEndsOf(db(), actor, now) : NOTHING_OPEN
+	]);
+	return {
+		user: { id: actor.id, name: actor.name, role: actor.role },
+		units,
+		cover,
+		looseEnds,
+		seesPatients: can(actor, 'episode.read'),
+		cursor,
+		now,
+		zone: env().hospital.zone,
+		hospital: env().hospital.name,
+		demo: env().demo
+	};
+}
