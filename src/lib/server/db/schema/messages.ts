@@ -83,6 +83,8 @@ export const smsStatuses = sqliteTable(
 		id: id(),
 		providerId: text('provider_id').notNull(),
 		status: text('status').notNull(),
+		/** The gateway's number of the error, where it did not arrive. */
+		errorCode: text('error_code'),
 		at: instant('at').notNull()
 	},
 	(t) => [uniqueIndex('sms_statuses_once').on(t.providerId, t.status)]
