@@ -33,7 +33,7 @@ export async function ensureBuilt() {
 		return true;
 	}
 	console.log('Building ...');
-	const { code } = await run(bin('vite'), ['build', '--logLevel', 'warn']);
+	const { code } = await run(bin('vite'), ['build'], { output: 'hold' });
 	if (code !== 0) {
 		console.error(`The build failed with code ${code}.`);
 		return false;

@@ -92,7 +92,7 @@ async function runCrash() {
 	const { code, output } = await run(process.execPath, args, {
 		env: testEnv(),
 		limitMs: LIMIT_MS,
-		capture: true
+		output: 'keep'
 	});
 	return countsOf(code, () => countLine(output));
 }
