@@ -15,18 +15,20 @@ export interface Delivery {
  */
 export async function stateByStatus(reader: Reader, providerId: string): Promise<Delivery | null> {
 	const rows = await reader
-		.select({ status: smsStatuses.status })
+		.select({ status: smsStatuses.status, errorCode: smsStatuses.errorCode })
 		.from(smsStatuses)
 		.where(eq(smsStatuses.providerId, providerId))
 		.orderBy(asc(smsStatuses.at), asc(smsStatuses.id));
 	const known = rows.flatMap(({ status }) => readStatus(status) ?? []);
 	const last = known.reduce<SmsStatus | null>(laterStatus, null);
-	return last && deliveryOf(last);
+	const code = rows.find(({ status }) => last !== null && readStatus(status) === last)?.errorCode ?? null;
+	return last && deliveryOf(last, code);
 }
 
-function deliveryOf(status: SmsStatus): Delivery {
+function deliveryOf(status: SmsStatus, errorCode: string | null): Delivery {
 	if (status === 'delivered') {
 		return { state: 'delivered', reason: null };
 	}
-	return hasFailed(status) ? { state: 'undelivered', reason: status } : { state: 'accepted', reason: null };
+	const reason = errorCode === null ? status : `${status}, gateway code ${errorCode}`;
+	return hasFailed(status) ? { state: 'undelivered', reason } : { state: 'accepted', reason: null };
 }

@@ -1,0 +1,132 @@
+import { and, asc, eq, gt, inArray, isNotNull, or, sql } from 'drizzle-orm';
+import { readPatientReply } from '$lib/domain/messages/reply';
+import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
+import type { VisitState } from '$lib/domain/core/codes';
+import type { Reader, Tx } from '../db';
+import { episodes, outbox, patients, reminders, visits } from '../db/schema';
+import { moveVisit, type VisitRow } from '../visits/move';
+import type { PatientRow } from './sender';
+import { answerTo, senderFields, type ReceivedText, type Understood } from './understood';
+
+/** One automatic 'a person reads this' in so many hours: a telephone that answers by itself must not talk with us. */
+const PERSON_READS_EVERY_MS = 12 * 60 * 60 * 1000;
+
+/** Do what a patient's text asks for, or leave it to a person. */
+export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
+	const understoodAs = readPatientReply(text.body);
+	const answer = <T extends SmsTemplate>(template: T, fields: SmsFields<T>, causeKey?: string) => ({
+		messages: [
+			answerTo(text, { patientId: patient.id }, template, fields, { language: patient.language, causeKey })
+		]
+	});
+	switch (understoodAs) {
+		case 'yes':
+			return onYes(tx, patient, text);
+		case 'no':
+			return onNo(tx, patient, text);
+		case 'stop':
+			// The gateway sends the last text itself and would refuse one of ours.
+			await optOut(tx, [patient.id], text.now);
+			return { understoodAs, handled: true };
+		case 'start':
+			// Asking for texts is consent in the patient's own words.
+			await tx
+				.update(patients)
+				.set({ smsOptedOutAt: null, smsConsent: true })
+				.where(eq(patients.id, patient.id));
+			return { understoodAs, handled: true, change: answer('texts-started', senderFields()) };
+		case 'help':
+			return { understoodAs, handled: true, change: answer('texts-help', senderFields()) };
+		case 'other': {
+			const once = `person-reads:${patient.id}:${Math.floor(text.now / PERSON_READS_EVERY_MS)}`;
+			return { understoodAs, handled: false, change: answer('person-reads', senderFields(), once) };
+		}
+	}
+}
+
+/** YES confirms the next visit that was reminded of and not confirmed; a second YES is thanked again. */
+async function onYes(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
+	const [open] = await remindedVisits(tx, patient.id, ['planned'], text.now);
+	if (open) {
+		return moved(tx, patient, text, open, 'confirm');
+	}
+	const [confirmed] = await remindedVisits(tx, patient.id, ['confirmed'], text.now);
+	const messages = [
+		confirmed
+			? aboutVisit(patient, text, 'visit-confirmed', confirmed)
+			: answerTo(text, { patientId: patient.id }, 'no-visit-open', senderFields(), patient)
+	];
+	return { understoodAs: 'yes', handled: true, visitId: confirmed?.id, change: { messages } };
+}
+
+/** NO cancels the next visit that was reminded of. Without one somebody has to ask what was meant. */
+async function onNo(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
+	const [visit] = await remindedVisits(tx, patient.id, ['planned', 'confirmed'], text.now);
+	if (visit) {
+		return moved(tx, patient, text, visit, 'cancel');
+	}
+	const answer = answerTo(text, { patientId: patient.id }, 'no-visit-open', senderFields(), patient);
+	return { understoodAs: 'no', handled: false, change: { messages: [answer] } };
+}
+
+async function moved(
+	tx: Tx,
+	patient: PatientRow,
+	text: ReceivedText,
+	visit: VisitRow,
+	move: 'confirm' | 'cancel'
+): Promise<Understood> {
+	const { audit, entries, events } = await moveVisit(tx, visit, move, 'patient', text.now);
+	const template = move === 'confirm' ? 'visit-confirmed' : 'visit-declined';
+	return {
+		understoodAs: move === 'confirm' ? 'yes' : 'no',
+		handled: true,
+		visitId: visit.id,
+		change: { audit, entries, events, messages: [aboutVisit(patient, text, template, visit)] }
+	};
+}
+
+function aboutVisit(
+	patient: PatientRow,
+	text: ReceivedText,
+	template: 'visit-confirmed' | 'visit-declined',
+	{ startsAt, zone, place }: VisitRow
+) {
+	const fields = { ...senderFields(), startsAt, zone, place };
+	return answerTo(text, { patientId: patient.id }, template, fields, patient);
+}
+
+/** Visits ahead that a reminder has gone out for, or may have, the next one first. */
+async function remindedVisits(
+	reader: Reader,
+	patientId: string,
+	states: VisitState[],
+	now: number
+): Promise<VisitRow[]> {
+	const mayHaveArrived = or(isNotNull(outbox.sentAt), gt(outbox.attempts, 0), eq(outbox.state, 'sending'));
+	const rows = await reader
+		.selectDistinct({ visit: visits })
+		.from(visits)
+		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
+		.innerJoin(reminders, eq(reminders.visitId, visits.id))
+		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
+		.where(
+			and(
+				eq(episodes.patientId, patientId),
+				inArray(visits.state, states),
+				gt(visits.startsAt, now),
+				mayHaveArrived
+			)
+		)
+		.orderBy(asc(visits.startsAt), asc(visits.id))
+		.limit(1);
+	return rows.map(({ visit }) => visit);
+}
+
+/** From now on these patients get no texts. A second STOP does not move the date of the first. */
+export async function optOut(tx: Tx, patientIds: string[], now: number): Promise<void> {
+	await tx
+		.update(patients)
+		.set({ smsOptedOutAt: sql`coalesce(${patients.smsOptedOutAt}, ${now})` })
+		.where(inArray(patients.id, patientIds));
+}
