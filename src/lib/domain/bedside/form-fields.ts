@@ -13,12 +13,19 @@ export function shown(value: unknown): string {
 		: JSON.stringify(value).slice(0, 60);
 }
 
-/** A number within the hard bounds of its field. `field` is the name the caller used. */
-export function bounded(field: BoundedField, called: string = field) {
-	const { low, high, unit } = BOUNDS[field];
+/** A number from `low` to `high`, called by the name the sender used. */
+export function numberWithin(
+	called: string,
+	{ low, high, unit }: { low: number; high: number; unit: string }
+) {
 	const error = ({ input }: { input?: unknown }) =>
 		`${called} is ${shown(input)}: it must be a number from ${low} to ${high}${unit && ` ${unit}`}.`;
 	return z.number({ error }).min(low, { error }).max(high, { error });
+}
+
+/** A number within the hard bounds of its field. */
+export function bounded(field: BoundedField, called: string = field) {
+	return numberWithin(called, BOUNDS[field]);
 }
 
 /** One of a closed list. */

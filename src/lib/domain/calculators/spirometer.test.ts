@@ -1,0 +1,29 @@
+import { expect, it } from 'vitest';
+import { breathesTooOften, breathEstimateMl, capacityTooSmall } from './spirometer';
+
+/** Flows: published instructions (600 and 1200 mL/s) and a leaflet (900); volume is flow times seconds. */
+it.each([
+	[1, 3, 1800],
+	[2, 3, 2700],
+	[3, 3, 3600],
+	[3, 2, 2400],
+	[0, 3, null],
+	[4, 3, null]
+])('%d balls for %d s is about %s mL', (balls, seconds, expected) => {
+	expect(breathEstimateMl(balls, seconds)).toBe(expected);
+});
+
+it.each([
+	[20, false],
+	[21, true]
+])('%d breaths in an hour are too many: %s', (breaths, expected) => {
+	expect(breathesTooOften(breaths)).toBe(expected);
+});
+
+it.each([
+	[780, true],
+	[799.9, true],
+	[800, false]
+])('a vital capacity of %d mL at 80 kg is too small: %s', (capacity, expected) => {
+	expect(capacityTooSmall(capacity, 80)).toBe(expected);
+});
