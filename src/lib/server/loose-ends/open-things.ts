@@ -84,7 +84,7 @@ function visitsCancelled(now: number): SQL {
 			null, null, v.decided_at, v.starts_at
 		from visits v
 		join place on place.id = v.episode_id
-		where v.state = 'cancelled' and v.reason = 'patient' and v.starts_at > ${now}`;
+		where v.patient_cancelled_at is not null and v.followed_up_at is null and v.starts_at > ${now}`;
 }
 
 const messagesFailed = sql`
@@ -95,7 +95,7 @@ const messagesFailed = sql`
 	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
 	left join referrals r on m.ref_kind = 'referral' and r.id = m.ref_id
 	join place on place.id = coalesce(v.episode_id, x.episode_id, r.episode_id)
-	where m.state in ('failed', 'undelivered')`;
+	where m.state in ('failed', 'undelivered') and m.handled_at is null`;
 
 /** Texts that no rule understood. From an unknown number there is no place, and every coordinator sees it. */
 const textsUnread = sql`
