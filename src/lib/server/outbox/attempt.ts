@@ -4,7 +4,7 @@ import { linkToken } from '../links';
 import { routes } from '$lib/routes';
 import type { Channel, Outgoing, Sent } from './channels/channel';
 import type { OutboxRow } from './change';
-import { LEASE_MS, type Claimed } from './claim';
+import type { Claimed } from './claim';
 import { recheck, type Receiver } from './recheck';
 import { attemptsOf, knownProviderIds, recordAttempt, recordInterrupted, releaseRow } from './record';
 
@@ -26,10 +26,10 @@ export interface Sending {
  * attempt may have gone through, send, and put on record what came of it. Nothing is awaited inside a transaction.
  * @returns how the attempt ended; null when none was made
  */
-export async function attempt({ row, interrupted }: Claimed, sending: Sending): Promise<Sent | null> {
+export async function attempt({ row, interruptedAt }: Claimed, sending: Sending): Promise<Sent | null> {
 	const { owner, now } = sending;
-	if (interrupted) {
-		await recordInterrupted(row, LEASE_MS, now());
+	if (interruptedAt !== null) {
+		await recordInterrupted(row, interruptedAt, now());
 	}
 	const verdict = await recheck(db(), row, now());
 	switch (verdict.kind) {

@@ -10,8 +10,8 @@ export const LEASE_MS = 60_000;
 /** A message that is this worker's to send until its lease ends. */
 export interface Claimed {
 	row: OutboxRow;
-	/** True when an earlier worker began and never told how it ended: its attempt may have gone through. */
-	interrupted: boolean;
+	/** When an earlier worker began that never told how it ended: its attempt may have gone through. Null for none. */
+	interruptedAt: number | null;
 }
 
 export interface Claiming {
@@ -64,12 +64,16 @@ export async function claimDue(claiming: Claiming): Promise<Claimed[]> {
 				.where(and(eq(outbox.id, before.id), isDue(now, open, inHand)))
 				.returning();
 			if (row) {
-				claimed.push({ row, interrupted: before.state === 'sending' });
+				claimed.push({ row, interruptedAt: interruptedAt(before, now) });
 				events.push(await messageEvent(tx, row, 'sending'));
 			}
 		}
 		return claimed;
 	});
+}
+
+function interruptedAt({ state, leaseUntil }: OutboxRow, now: number): number | null {
+	return state === 'sending' ? (leaseUntil ?? now) - LEASE_MS : null;
 }
 
 async function anyDue(reader: Reader, { now, open, inHand }: Claiming): Promise<boolean> {

@@ -64,11 +64,10 @@ export async function recordAttempt(
 }
 
 /** The attempt of a worker that was killed: nobody knows whether it went through. */
-export async function recordInterrupted(row: OutboxRow, leaseMs: number, now: number): Promise<void> {
-	const leaseUntil = row.leaseUntil ?? now;
+export async function recordInterrupted(row: OutboxRow, startedAt: number, now: number): Promise<void> {
 	await changing(now, async (tx) => {
 		const attempts = await addAttempt(tx, row, {
-			startedAt: Math.min(now, leaseUntil - leaseMs),
+			startedAt,
 			endedAt: now,
 			outcome: { kind: 'unknown', reason: 'no-answer' },
 			code: 'interrupted'
