@@ -80,7 +80,7 @@ type Raw = z.infer<typeof schema>;
 function smsGateway(e: Raw) {
 	if (e.DEMO) {
 		return {
-			accountSid: e.SMS_ACCOUNT_SID ?? `AC${'0'.repeat(31)}1`,
+			accountSid: e.SMS_ACCOUNT_SID ?? `AC${'0'.repeat(32)}`,
 			authToken: e.SMS_AUTH_TOKEN ?? 'ropewalk-demo-token',
 			from: e.SMS_FROM ?? '+353860000000',
 			baseUrl: `http://127.0.0.1:${e.FAKE_SMS_PORT}`
