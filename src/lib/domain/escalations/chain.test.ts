@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { chainOf, chainStep, dueSteps, isChainSpent } from './chain';
+import { chainOf, chainPosts, chainStep, dueSteps, isChainSpent } from './chain';
 
 // Times of the default chains: common practice, no published source.
 describe('the chain of a high escalation', () => {
@@ -55,5 +55,16 @@ describe('dueSteps', () => {
 		['low', 2, 14400]
 	] as const)('%s step %i is due after %i s', (grade, step, seconds) => {
 		expect(chainStep(grade, step).afterSeconds).toBe(seconds);
+	});
+});
+
+describe('the planned steps', () => {
+	it.each([
+		[-1, [false, false, false, false]],
+		[1, [true, true, false, false]],
+		[3, [true, true, true, true]],
+		[9, [true, true, true, true]]
+	])('after step %i', (lastTold, told) => {
+		expect(chainPosts('high', lastTold).map((step) => step.told)).toEqual(told);
 	});
 });

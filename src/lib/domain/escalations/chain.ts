@@ -1,4 +1,5 @@
 import type { Grade, Post } from '../core/codes';
+import type { ChainPost } from './views';
 
 /**
  * Who is told next, and after how long, until somebody takes the escalation.
@@ -66,6 +67,15 @@ export function chainStep(grade: Grade, step: number): { afterSeconds: number; p
 	}
 	const last = steps.at(-1)?.[0] ?? 0;
 	return { afterSeconds: last + (step - steps.length + 1) * repeatSeconds, posts: EVERYBODY };
+}
+
+/** The planned steps, each with whether it was told. `lastTold` is the number of the last told step, -1 for none. */
+export function chainPosts(grade: Grade, lastTold: number): ChainPost[] {
+	return POLICIES[grade].steps.map(([afterSeconds, posts], step) => ({
+		afterSeconds,
+		posts,
+		told: step <= lastTold
+	}));
 }
 
 /** True once everybody was told and nobody took it: every screen of the unit says so. */

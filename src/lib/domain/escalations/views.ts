@@ -1,11 +1,16 @@
-import type { EscalationState, Grade, Post } from '../core/codes';
+import type { EscalationState, Grade, Post, Role } from '../core/codes';
 
 export interface EscalationView {
 	id: string;
 	episodeId: string;
+	/** The unit where the patient lies now. */
 	unit: string;
+	unitId: string;
 	bed: string | null;
 	patientName: string;
+	/** The second identifiers. */
+	birthDate: string;
+	mrn: string;
 	grade: Grade;
 	state: EscalationState;
 	situation: string;
@@ -22,12 +27,15 @@ export interface EscalationView {
 	etaMinutes: number | null;
 	arrivedAt: string | null;
 	passTo: { id: string; name: string } | null;
+	passReason: string | null;
 	endedBy: { id: string; name: string } | null;
 	endedAt: string | null;
 	outcome: string | null;
 	note: string | null;
 	informed: string | null;
 	recheckDueAt: string | null;
+	/** From when the steps of the chain count: the raising, or the moment a worse grade started it again. */
+	chainStartedAt: string;
 	/** Who was told, by which channel and when; `name` is null where nobody was on cover for the post. */
 	steps: {
 		step: number;
@@ -44,7 +52,16 @@ export interface EscalationView {
 	moves: { at: string; by: string | null; kind: string }[];
 }
 
-/** What an SMS link shows to whoever holds it: unit, bed, grade, state. Never a name, never a reading. */
+/** Somebody an escalation can be passed on to. */
+export interface Receiver {
+	id: string;
+	name: string;
+	role: Role;
+	/** The post they cover on the unit now, or null. */
+	post: Post | null;
+}
+
+/** What an SMS link shows to whoever holds it: unit, bed, grade, state. Never a patient's name, never a reading. */
 export interface PhoneEscalation {
 	id: string;
 	unit: string;
@@ -52,11 +69,24 @@ export interface PhoneEscalation {
 	grade: Grade;
 	state: EscalationState;
 	raisedAt: string;
-	raisedByRole: string;
+	raisedByRole: Role;
 	/** The holder's name, so that a second reader knows that somebody goes. */
 	holder: string | null;
+	takenAt: string | null;
 	/** True when the holder is the person of this link. */
 	mine: boolean;
+	/** True when the holder waits for the person of this link to confirm that they have it. */
+	passedToMe: boolean;
 	usable: boolean;
-	steps: { afterSeconds: number; posts: readonly Post[]; told: boolean }[];
+	chainStartedAt: string;
+	steps: ChainPost[];
+	/** When the next step of the chain is due; null once somebody has it. */
+	nextAt: string | null;
+}
+
+/** One step of the chain: after how long from its start, who, and whether they have been told. */
+export interface ChainPost {
+	afterSeconds: number;
+	posts: readonly Post[];
+	told: boolean;
 }

@@ -1,9 +1,9 @@
-import { asc, eq } from 'drizzle-orm';
+import { and, asc, eq, gte, max } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import { notFound } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
-import { chainOf, chainStep, isChainSpent } from '$lib/domain/escalations/chain';
+import { chainPosts, chainStep, isChainSpent } from '$lib/domain/escalations/chain';
 import type { EscalationView, PhoneEscalation } from '$lib/domain/escalations/views';
 import { accessEscalation } from '../access/access';
 import type { Reader } from '../db';
@@ -37,8 +37,11 @@ export async function getEscalation(db: Reader, person: Person, id: string): Pro
 		id,
 		episodeId: e.episodeId,
 		unit: row.unit,
+		unitId: row.unitId,
 		bed: row.bed,
 		patientName: row.patientName,
+		birthDate: row.birthDate,
+		mrn: row.mrn,
 		grade: e.grade,
 		state: e.state,
 		situation: e.situation,
@@ -55,12 +58,14 @@ export async function getEscalation(db: Reader, person: Person, id: string): Pro
 		etaMinutes: e.etaMinutes,
 		arrivedAt: opt(e.arrivedAt),
 		passTo: row.receiver,
+		passReason: e.passReason,
 		endedBy: row.ender,
 		endedAt: opt(e.endedAt),
 		outcome: e.outcome,
 		note: e.note,
 		informed: e.informed,
 		recheckDueAt: opt(e.recheckDueAt),
+		chainStartedAt: toRfc3339(e.chainStartedAt),
 		steps,
 		next: nextOf(e),
 		chainSpent: e.nextStep !== null && isChainSpent(e.grade, e.nextStep),
@@ -79,7 +84,6 @@ export async function getByLink(db: Reader, token: string, now: number): Promise
 		throw notFound('link');
 	}
 	const { escalation: e } = row;
-	const step = e.nextStep ?? 0;
 	return {
 		id: e.id,
 		unit: row.unit,
@@ -89,15 +93,23 @@ export async function getByLink(db: Reader, token: string, now: number): Promise
 		raisedAt: toRfc3339(e.raisedAt),
 		raisedByRole: row.raisedBy.role,
 		holder: row.holder?.name ?? null,
+		takenAt: e.takenAt === null ? null : toRfc3339(e.takenAt),
 		mine: e.takenBy === link.userId,
+		passedToMe: e.state === 'taken' && e.passTo === link.userId,
 		usable: e.state === 'raised' && link.usedAt === null,
-		steps: groupSteps(e, step)
+		chainStartedAt: toRfc3339(e.chainStartedAt),
+		steps: chainPosts(e.grade, await lastToldStep(db, e)),
+		nextAt: nextOf(e)?.at ?? null
 	};
 }
 
-function groupSteps(e: EscalationRow, nextStep: number): PhoneEscalation['steps'] {
-	const steps = new Set(chainOf(e.grade).map((s) => s.step));
-	return [...steps].map((step) => ({ ...chainStep(e.grade, step), told: step < nextStep }));
+/** The last step that was told since the chain started; -1 when none was. */
+async function lastToldStep(db: Reader, e: EscalationRow): Promise<number> {
+	const [row] = await db
+		.select({ step: max(escalationSteps.step) })
+		.from(escalationSteps)
+		.where(and(eq(escalationSteps.escalationId, e.id), gte(escalationSteps.at, e.chainStartedAt)));
+	return row?.step ?? -1;
 }
 
 function nextOf(e: EscalationRow): EscalationView['next'] {
@@ -112,8 +124,11 @@ function select(db: Reader, id: string) {
 		.select({
 			escalation: escalations,
 			unit: units.name,
+			unitId: units.id,
 			bed: episodes.bed,
 			patientName: patients.name,
+			birthDate: patients.birthDate,
+			mrn: patients.mrn,
 			raisedBy: { id: users.id, name: users.name, role: users.role },
 			holder: { id: holder.id, name: holder.name },
 			receiver: { id: receiver.id, name: receiver.name },

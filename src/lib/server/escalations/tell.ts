@@ -4,7 +4,7 @@ import type { Post } from '$lib/domain/core/codes';
 import { smsText } from '$lib/domain/messages/templates';
 import { onCover } from '../cover/queries';
 import type { Tx } from '../db';
-import type { escalations} from '../db/schema';
+import type { escalations } from '../db/schema';
 import { episodes, escalationLinks, escalationSteps, outbox, units } from '../db/schema';
 import { newId } from '../ids';
 import { linkDigest, linkToken } from '../links';
