@@ -1,5 +1,6 @@
 import type { Cookies } from '@sveltejs/kit';
 import { eq } from 'drizzle-orm';
+import type { Role } from '$lib/domain/core/codes';
 import { Problem } from '$lib/domain/core/errors';
 import { appendAudit } from '../audit/append';
 import { countFailure, forgetFailures, refuseWhileBlocked } from '../auth/failures';
@@ -9,7 +10,8 @@ import { endSignIn, startSignIn } from '../auth/sign-ins';
 import type { Context } from '../context';
 import { db, transact } from '../db';
 import { users } from '../db/schema';
-import type { Role } from '$lib/domain/core/codes';
+import { write } from '../write';
+import { accountEvent } from './event';
 
 export interface SignedIn {
 	id: string;
@@ -44,12 +46,17 @@ export async function signIn(
 	return { id: usable.id, name: usable.name, role: usable.role, units: await unitsOf(db(), usable.id) };
 }
 
+/** End this browser's sign-in. Its other tabs hear of it and look whether they may go on listening. */
 export async function signOut(context: Context, cookies: Cookies): Promise<void> {
 	await endSignIn(cookies);
 	const { actor } = context;
 	if (actor?.kind === 'person') {
-		await transact((tx) =>
-			appendAudit(tx, context, [{ action: 'account.signed-out', objectKind: 'account', objectId: actor.id }])
+		await write({ ...context, key: null }, 'anyone', () =>
+			Promise.resolve({
+				result: null,
+				audit: { action: 'account.signed-out', objectKind: 'account', objectId: actor.id },
+				events: [accountEvent('signed-out', actor.id)]
+			})
 		);
 	}
 }
