@@ -8,6 +8,11 @@ import { end } from './children.mjs';
  * @property {(code: number, message?: string) => Promise<void>} stop ends all of it, and this process with the code
  */
 
+const LOOK_EVERY_MS = 300;
+
+/** Who started us, noted before installing and building, during which it may be gone already. */
+const PARENT = process.ppid;
+
 const SIGNALS = /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP']);
 
 /**
@@ -32,5 +37,17 @@ export function createFamily(server, fakes) {
 		process.exit(code);
 	};
 	SIGNALS.forEach((signal) => process.on(signal, () => void stop(0)));
+	watchNpm(() => void stop(0));
 	return { isStopping: () => stopping, stop };
+}
+
+/**
+ * npm started us, and when it is killed nobody tells us: we only get another parent. Started without npm there is
+ * nothing to watch; who starts us in the background may go.
+ * @param {() => void} gone
+ */
+function watchNpm(gone) {
+	if (process.env.npm_lifecycle_event) {
+		setInterval(() => (process.ppid === PARENT ? undefined : gone()), LOOK_EVERY_MS).unref();
+	}
 }
