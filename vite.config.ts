@@ -40,6 +40,18 @@ export default defineConfig({
 					testTimeout: 30_000,
 					hookTimeout: 60_000
 				}
+			},
+			{
+				// Over HTTP against the production build; `npm test` builds first.
+				extends: true,
+				test: {
+					name: 'product',
+					environment: 'node',
+					include: ['tests/product/**/*.test.ts'],
+					testTimeout: 60_000,
+					hookTimeout: 180_000,
+					fileParallelism: false
+				}
 			}
 		]
 	}

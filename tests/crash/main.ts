@@ -1,0 +1,114 @@
+/**
+ * Kill the server with SIGKILL at random moments while four writers post, start it again, and look: nothing that
+ * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds.
+ * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run.
+ */
+import { setTimeout as pause } from 'node:timers/promises';
+import { admit, signInAs, type Client } from '../support/api';
+import { startProduct, type Product } from '../support/server';
+import { checkEntries, checkFile } from './checks';
+import { postUntil, send, type Write } from './writers';
+
+const READY_MS = 3_000;
+const SHORT_ROUNDS = 5;
+const LONG_ROUNDS = 60;
+const WRITERS = ['surgeon', 'nurse', 'therapist', 'physician'] as const;
+
+const argument = (name: string) => {
+	const index = process.argv.indexOf(name);
+	return index < 0 ? null : (process.argv[index + 1] ?? null);
+};
+const rounds = process.argv.includes('--short') ? SHORT_ROUNDS : LONG_ROUNDS;
+const seed = Number(argument('--seed') ?? Date.now() % 1_000_000);
+const random = mulberry32(seed);
+
+let passed = 0;
+let failed = 0;
+
+function check(name: string, wrong: string[]): void {
+	passed += wrong.length === 0 ? 1 : 0;
+	failed += wrong.length === 0 ? 0 : 1;
+	console.log(`${wrong.length === 0 ? 'ok  ' : 'FAIL'} ${name}`);
+	wrong.slice(0, 5).forEach((line) => console.log(`     ${line}`));
+}
+
+/** A small seeded generator, so that a failing run can be repeated. */
+function mulberry32(start: number): () => number {
+	let state = start;
+	return () => {
+		state = (state + 0x6d2b79f5) | 0;
+		let t = Math.imul(state ^ (state >>> 15), 1 | state);
+		t = (t + Math.imul(t ^ (t >>> 7), 61 | t)) ^ t;
+		return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
+	};
+}
+
+async function makeThread(client: Client): Promise<string> {
+	const episodeId = await admit(client);
+	const { body } = await client.post(`/api/episodes/${episodeId}/referrals`, {
+		service: 'physiotherapy',
+		priority: 'soon',
+		question: 'Crash?'
+	});
+	return String(body.threadId);
+}
+
+/** One kill: writers post, the server dies, it starts again, and what had no answer is sent again with its key. */
+async function crash(
+	product: Product,
+	clients: Client[],
+	threads: string[],
+	writes: Write[],
+	n: number
+): Promise<number> {
+	let stop = false;
+	const mine: Write[][] = clients.map(() => []);
+	const writing = clients.map((client, index) => {
+		const threadId = threads[index % threads.length] ?? '';
+		return postUntil(client, threadId, `writer ${index} of round ${n}`, () => stop, mine[index] ?? []);
+	});
+	await pause(100 + random() * 300);
+	await product.kill('SIGKILL');
+	stop = true;
+	await Promise.all(writing);
+	const started = performance.now();
+	await product.restart();
+	const ready = performance.now() - started;
+	for (const [index, client] of clients.entries()) {
+		// An answered one is sent again too: it must get its first answer.
+		const again = mine[index]?.slice(-2) ?? [];
+		for (const write of again) {
+			await send(client, write);
+		}
+		writes.push(...(mine[index] ?? []));
+	}
+	return ready;
+}
+
+async function main(): Promise<void> {
+	console.log(`crash test: ${rounds} rounds, seed ${seed}`);
+	const product = await startProduct({ env: { RATE_LIMIT_SCALE: '1000' } });
+	try {
+		const clients = await Promise.all(WRITERS.map((role) => signInAs(product.url, role)));
+		const threads = [await makeThread(clients[0] as Client), await makeThread(clients[0] as Client)];
+		const writes: Write[] = [];
+		const readyTimes: number[] = [];
+		for (let n = 0; n < rounds; n += 1) {
+			readyTimes.push(await crash(product, clients, threads, writes, n));
+		}
+		check(
+			`${writes.length} entries in ${rounds} kills: none lost, none doubled`,
+			await checkEntries(clients[1] as Client, writes)
+		);
+		const slow = readyTimes.filter((ms) => ms > READY_MS).map((ms) => `ready after ${Math.round(ms)} ms`);
+		check(`ready again within ${READY_MS} ms, at most ${Math.round(Math.max(...readyTimes))} ms`, slow);
+		await product.kill('SIGTERM');
+		check('file, foreign keys and audit chain are whole', await checkFile(product.dataDir));
+	} finally {
+		await product.stop();
+	}
+	console.log(`${passed} passed, ${failed} failed`);
+	process.exitCode = failed === 0 ? 0 : 1;
+}
+
+await main();

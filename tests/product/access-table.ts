@@ -1,0 +1,69 @@
+import type { Role } from '$lib/domain/core/codes';
+
+/** Who may call what. A route that is missing here fails the test, and so does one that is gone. */
+export interface Row {
+	/** Roles that are let in; others get 403 (API) or are turned away (pages). */
+	roles: readonly Role[] | 'everyone' | 'signed-in';
+	/** Answer to a role that is let in and sends nothing useful: 404 for an unknown id, 422 for an empty body. */
+	answers: readonly number[];
+}
+
+const CLINICAL: Role[] = ['surgeon', 'physician', 'nurse', 'therapist', 'speech-therapist'];
+const SEEING: Role[] = [...CLINICAL, 'coordinator'];
+const DECIDERS: Role[] = ['surgeon', 'physician', 'speech-therapist'];
+const TAKERS: Role[] = ['nurse', 'physician', 'surgeon'];
+
+export const API: Record<string, Row> = {
+	'POST /api/session': { roles: 'everyone', answers: [422] },
+	'DELETE /api/session': { roles: 'signed-in', answers: [204] },
+	'GET /api/me': { roles: 'signed-in', answers: [200] },
+	'GET /api/live': { roles: 'signed-in', answers: [200] },
+	'GET /api/activities': { roles: 'signed-in', answers: [200] },
+	'POST /api/assess': { roles: 'signed-in', answers: [422] },
+	'POST /api/calculate/sms': { roles: 'signed-in', answers: [422] },
+	'PUT /api/demo/clock': { roles: 'everyone', answers: [422] },
+	'POST /api/hooks/sms': { roles: 'everyone', answers: [403] },
+	'POST /api/hooks/sms-status': { roles: 'everyone', answers: [403] },
+	'GET /api/loose-ends': { roles: SEEING, answers: [200] },
+	'GET /api/episodes': { roles: SEEING, answers: [200] },
+	'POST /api/episodes': { roles: ['coordinator', 'nurse', 'physician', 'surgeon'], answers: [422] },
+	'GET /api/episodes/[id]': { roles: SEEING, answers: [404] },
+	'POST /api/episodes/[id]/referrals': { roles: ['surgeon', 'physician'], answers: [422] },
+	'POST /api/episodes/[id]/clearances': {
+		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
+		answers: [422]
+	},
+	'GET /api/episodes/[id]/sessions': { roles: CLINICAL, answers: [404] },
+	'POST /api/episodes/[id]/sessions': {
+		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
+		answers: [422]
+	},
+	'POST /api/episodes/[id]/escalations': { roles: CLINICAL, answers: [422] },
+	'POST /api/episodes/[id]/visits': { roles: ['coordinator', 'therapist'], answers: [422] },
+	'POST /api/referrals/[id]/accept': { roles: ['therapist', 'speech-therapist'], answers: [404] },
+	'POST /api/referrals/[id]/decline': { roles: ['therapist', 'speech-therapist'], answers: [422] },
+	'POST /api/referrals/[id]/close': {
+		roles: ['surgeon', 'physician', 'therapist', 'speech-therapist'],
+		answers: [404]
+	},
+	'POST /api/referrals/[id]/withdraw': { roles: ['surgeon', 'physician'], answers: [422] },
+	'GET /api/threads/[id]': { roles: SEEING, answers: [404] },
+	'POST /api/threads/[id]/entries': { roles: CLINICAL, answers: [422] },
+	'GET /api/clearances/[id]': { roles: SEEING, answers: [404] },
+	'POST /api/clearances/[id]/give': { roles: DECIDERS, answers: [404] },
+	'POST /api/clearances/[id]/withhold': { roles: DECIDERS, answers: [422] },
+	'POST /api/clearances/[id]/hold': { roles: DECIDERS, answers: [422] },
+	'POST /api/clearances/[id]/withdraw': { roles: SEEING, answers: [422] },
+	'GET /api/escalations/[id]': { roles: CLINICAL, answers: [404] },
+	'POST /api/escalations/[id]/take': { roles: TAKERS, answers: [404] },
+	'POST /api/escalations/[id]/arrive': { roles: TAKERS, answers: [404] },
+	'POST /api/escalations/[id]/pass': { roles: TAKERS, answers: [422] },
+	'POST /api/escalations/[id]/confirm': { roles: TAKERS, answers: [404] },
+	'POST /api/escalations/[id]/settle': { roles: TAKERS, answers: [422] },
+	'POST /api/escalations/[id]/withdraw': { roles: CLINICAL, answers: [422] },
+	'GET /api/visits': { roles: SEEING, answers: [200, 422] },
+	'POST /api/visits/[id]/confirm': { roles: ['coordinator', 'therapist'], answers: [404] },
+	'POST /api/visits/[id]/cancel': { roles: ['coordinator', 'therapist'], answers: [404] },
+	'POST /api/visits/[id]/attend': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] },
+	'POST /api/visits/[id]/miss': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] }
+};
