@@ -19,7 +19,7 @@ export const read = {
 		listEpisodes(db(), actor, now, unit, request),
 	nameboard: ({ actor, now }: PersonContext, episodeId: string) => getNameboard(db(), actor, episodeId, now),
 	thread: ({ actor }: PersonContext, id: string, request: PageRequest) => getThread(db(), actor, id, request),
-	clearance: ({ actor }: PersonContext, id: string) => getClearance(db(), actor, id),
+	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id)
 };

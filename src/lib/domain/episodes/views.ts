@@ -60,6 +60,8 @@ export interface ClearanceLine {
 	reviewOn: string | null;
 	note: string | null;
 	reason: string | null;
+	/** Whether it counts from the latest operation; what an earlier one left behind permits nothing. */
+	current: boolean;
 }
 
 export interface VisitLine {

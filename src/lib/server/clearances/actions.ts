@@ -10,10 +10,11 @@ import type {
 import { nextClearanceState, type ClearanceMove } from '$lib/domain/clearances/states';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
+import { toRfc3339 } from '$lib/domain/core/instant';
 import { accessClearance, accessEpisode, threadForDeed } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { clearances } from '../db/schema';
+import { clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
 import { write, type Written } from '../write';
 import { insertAsk, openOrInForce, recordClearanceMove, reviewIsPast } from './ask';
@@ -47,27 +48,39 @@ function second(open: { id: string; state: ClearanceState }): Problem {
 		: new Problem('already-given', `This clearance is ${open.state}; it need not be asked again.`, facts);
 }
 
+/**
+ * The decision that somebody had in view when they decided: its instant in RFC 3339, null for none. When another
+ * decision has come between, theirs is refused and names who was faster; left out, the state alone decides.
+ */
+export type SeenDecision = string | null | undefined;
+
 /** Give a clearance, with limits or without. */
-export function giveClearance(context: PersonContext, id: string, input: z.infer<typeof giveClearanceBody>) {
-	return decide(context, id, 'give', {
+export function giveClearance(
+	context: PersonContext,
+	id: string,
+	input: z.infer<typeof giveClearanceBody>,
+	seen?: SeenDecision
+) {
+	const decision = {
 		limits: input.limits && Object.keys(input.limits).length > 0 ? input.limits : null,
 		reviewOn: input.reviewOn ?? null,
 		note: input.note ?? null,
 		reason: null
-	});
+	};
+	return decide(context, id, 'give', decision, seen);
 }
 
-export function withholdClearance(context: PersonContext, id: string, reason: string) {
-	return decide(context, id, 'withhold', { limits: null, reviewOn: null, note: null, reason });
+export function withholdClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+	return decide(context, id, 'withhold', { limits: null, reviewOn: null, note: null, reason }, seen);
 }
 
-export function holdClearance(context: PersonContext, id: string, reason: string) {
-	return decide(context, id, 'hold', { reason });
+export function holdClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+	return decide(context, id, 'hold', { reason }, seen);
 }
 
 /** Who asked may take the ask back; a decider may take back what was given. */
-export function withdrawClearance(context: PersonContext, id: string, reason: string) {
-	return decide(context, id, 'withdraw', { reason });
+export function withdrawClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+	return decide(context, id, 'withdraw', { reason }, seen);
 }
 
 const ACTIONS: Record<ClearanceMove, AuditAction> = {
@@ -76,6 +89,8 @@ const ACTIONS: Record<ClearanceMove, AuditAction> = {
 	hold: 'clearance.held',
 	withdraw: 'clearance.withdrawn'
 };
+
+type ClearanceRow = typeof clearances.$inferSelect;
 
 interface Decision {
 	limits?: ClearanceLimits | null;
@@ -88,10 +103,12 @@ function decide(
 	context: PersonContext,
 	id: string,
 	move: ClearanceMove,
-	decision: Decision
+	decision: Decision,
+	seen: SeenDecision
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
 		const { clearance } = await accessForMove(tx, context, id, move);
+		await refuseSlower(tx, clearance, seen);
 		const state = nextClearanceState(clearance.state, move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
@@ -120,6 +137,23 @@ function decide(
 			entries: threadId ? [{ threadId, kind: 'answer', body, ref: { kind: 'clearance', id } }] : [],
 			events: [{ topic: 'clearance', kind: state, id, episodeId }]
 		};
+	});
+}
+
+async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: SeenDecision): Promise<void> {
+	const decidedAt = clearance.decidedAt === null ? null : toRfc3339(clearance.decidedAt);
+	if (seen === undefined || seen === decidedAt) {
+		return;
+	}
+	const [decider] = await tx
+		.select({ name: users.name })
+		.from(users)
+		.where(eq(users.id, clearance.decidedBy ?? ''));
+	const { state } = clearance;
+	throw new Problem('wrong-state', `${decider?.name ?? 'Somebody'} was faster: the clearance is ${state}.`, {
+		state,
+		decidedBy: decider?.name ?? null,
+		decidedAt
 	});
 }
 

@@ -1,12 +1,13 @@
 import { desc, eq } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
-import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
+import type { ClearanceView } from '$lib/domain/clearances/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { accessClearance } from '../access/access';
 import type { Reader } from '../db';
 import { clearances, users } from '../db/schema';
+import { factsOfOne } from '../episodes/facts';
 
 const decider = alias(users, 'decider');
 
@@ -20,34 +21,45 @@ function select(db: Reader) {
 
 type Row = Awaited<ReturnType<typeof select>>[number];
 
-/** Every clearance of an episode, the newest ask first. */
-export async function listClearances(db: Reader, episodeId: string): Promise<ClearanceLine[]> {
+/**
+ * Every clearance of an episode, the newest ask first.
+ * @param operationId the latest operation, from which clearances count; null without one
+ */
+export async function listClearances(
+	db: Reader,
+	episodeId: string,
+	operationId: string | null
+): Promise<ClearanceLine[]> {
 	const rows = await select(db)
 		.where(eq(clearances.episodeId, episodeId))
 		.orderBy(desc(clearances.askedAt), desc(clearances.id));
-	return rows.map(toLine);
+	return rows.map((row) => toLine(row, operationId));
 }
 
 /** One clearance with what the decider was shown. */
 export async function getClearance(
 	db: Reader,
 	person: Person,
-	id: string
-): Promise<ClearanceLine & { episodeId: string; threadId: string | null; evidence: ClearanceEvidence }> {
-	const { clearance } = await accessClearance(db, person, id, 'thread.read');
-	const [row] = await select(db).where(eq(clearances.id, id));
+	id: string,
+	now: number
+): Promise<ClearanceView> {
+	const { clearance, episode } = await accessClearance(db, person, id, 'thread.read');
+	const [[row], facts] = await Promise.all([
+		select(db).where(eq(clearances.id, id)),
+		factsOfOne(db, episode, now)
+	]);
 	if (!row) {
 		throw new Error(`Clearance ${id} lost the person who asked.`);
 	}
 	return {
-		...toLine(row),
+		...toLine(row, facts.operation?.id ?? null),
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		evidence: clearance.evidence
 	};
 }
 
-function toLine({ clearance, askedBy, decidedBy }: Row): ClearanceLine {
+function toLine({ clearance, askedBy, decidedBy }: Row, operationId: string | null): ClearanceLine {
 	return {
 		id: clearance.id,
 		kind: clearance.kind,
@@ -60,6 +72,7 @@ function toLine({ clearance, askedBy, decidedBy }: Row): ClearanceLine {
 		limits: clearance.limits,
 		reviewOn: clearance.reviewOn,
 		note: clearance.note,
-		reason: clearance.reason
+		reason: clearance.reason,
+		current: clearance.operationId === null || clearance.operationId === operationId
 	};
 }

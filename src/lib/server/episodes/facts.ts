@@ -65,6 +65,14 @@ export async function factsOfOne(
 	return facts;
 }
 
+/** What was given and is past its review date permits nothing any more, whenever its row is brought up to date. */
+function lapsedUnless(inForce: Clearance[]) {
+	return (row: Clearance): Pick<Clearance, 'kind' | 'state'> => {
+		const past = row.state.startsWith('given') && !inForce.includes(row);
+		return { kind: row.kind, state: past ? 'lapsed' : row.state };
+	};
+}
+
 function derive(
 	episode: { level: number },
 	newestFirst: Operation[],
@@ -87,7 +95,7 @@ function derive(
 		),
 		newest,
 		inForce,
-		mayDoNow: mayDoNow(episode.level as Level, newest),
+		mayDoNow: mayDoNow(episode.level as Level, newest.map(lapsedUnless(inForce))),
 		precautions: precautionsOf(
 			operation && { approach: operation.approach, day: localDateOf(operation.operatedAt, zone) },
 			armStage ? { maxElevationDeg: armStage.limits?.maxElevationDeg ?? null } : null,

@@ -8,7 +8,7 @@ import { listClearances } from '../clearances/queries';
 import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
 import { visitsOfEpisode } from '../visits/queries';
-import { factsOf } from './facts';
+import { factsOfOne } from './facts';
 import { patientLine } from './list';
 
 /** Everything on the nameboard of one patient, as far as this person may see it. */
@@ -20,16 +20,15 @@ export async function getNameboard(
 ): Promise<Nameboard> {
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
-	const [who, facts, asks, cleared, visits, calls] = await Promise.all([
+	const derived = await factsOfOne(db, episode, now);
+	const [who, asks, cleared, visits, calls] = await Promise.all([
 		whoAndWhere(db, episode),
-		factsOf(db, [episode], now),
 		referralsOf(db, episodeId),
-		listClearances(db, episodeId),
+		listClearances(db, episodeId, derived.operation?.id ?? null),
 		visitsOfEpisode(db, episodeId),
 		clinical ? escalationsOf(db, episodeId) : []
 	]);
-	const derived = facts.get(episodeId);
-	if (!derived || !who) {
+	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
 	}
 	const contact = can(person, 'contact.read', { unitId: episode.unitId })

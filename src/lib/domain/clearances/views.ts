@@ -1,0 +1,10 @@
+import type { ClearanceLine } from '../episodes/views';
+import type { ClearanceEvidence } from './forms';
+
+/** One clearance as the decider sees it and as `GET /api/clearances/:id` answers it. */
+export interface ClearanceView extends ClearanceLine {
+	episodeId: string;
+	threadId: string | null;
+	/** As it was when the ask was made. */
+	evidence: ClearanceEvidence;
+}

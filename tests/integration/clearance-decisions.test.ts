@@ -1,0 +1,113 @@
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import {
+	askClearance,
+	giveClearance,
+	holdClearance,
+	withdrawClearance,
+	withholdClearance
+} from '$lib/server/clearances/actions';
+import { getClearance } from '$lib/server/clearances/queries';
+import type { PersonContext } from '$lib/server/context';
+import { db } from '$lib/server/db';
+import { operations } from '$lib/server/db/schema';
+import { getNameboard } from '$lib/server/episodes/nameboard';
+import { newId } from '$lib/server/ids';
+import { freshDatabase } from '../support/database';
+import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+
+let close: () => void;
+let hospital: Hospital;
+let episodeId: string;
+
+beforeAll(async () => {
+	({ close } = await freshDatabase());
+	hospital = await makeHospital();
+});
+beforeEach(async () => {
+	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
+});
+afterAll(() => close());
+
+const DAY = 24 * 3600;
+const as = (role: keyof Hospital['people'], seconds = 0) =>
+	contextOf(hospital.people[role], hospital.now + seconds * 1000);
+const shown = (id: string, seconds = 0) =>
+	getClearance(db(), hospital.people.nurse, id, hospital.now + seconds * 1000);
+
+async function asked(kind: 'stairs' | 'arm-stage' | 'out-of-bed' = 'stairs'): Promise<string> {
+	const { result } = await askClearance(as('therapist'), episodeId, { kind, question: 'May it start?' });
+	return result.id;
+}
+
+describe('a decision by somebody who saw an earlier state', () => {
+	const give = (context: PersonContext, id: string, seen: string | null) =>
+		giveClearance(context, id, { limits: { helpers: 'one' } }, seen);
+	const withhold = (context: PersonContext, id: string, seen: string | null) =>
+		withholdClearance(context, id, 'Not today.', seen);
+	const hold = (context: PersonContext, id: string, seen: string | null) =>
+		holdClearance(context, id, 'Fell yesterday.', seen);
+	const withdraw = (context: PersonContext, id: string, seen: string | null) =>
+		withdrawClearance(context, id, 'Click felt.', seen);
+
+	it.each([
+		['give', give],
+		['withhold', withhold],
+		['hold', hold],
+		['withdraw', withdraw]
+	])('by "%s" is refused and names who was faster', async (_, move) => {
+		const id = await asked();
+		await giveClearance(as('physician', 60), id, {}, null);
+		await expect(move(as('surgeon', 61), id, null)).rejects.toMatchObject({
+			code: 'wrong-state',
+			status: 409,
+			extra: {
+				state: 'given',
+				decidedBy: hospital.people.physician.name,
+				decidedAt: '2026-03-03T09:01:00.000Z'
+			}
+		});
+		expect(await shown(id)).toMatchObject({
+			state: 'given',
+			decidedBy: hospital.people.physician.name
+		});
+	});
+
+	it('stands when nothing has come between', async () => {
+		const id = await asked();
+		await give(as('physician', 60), id, null);
+		const { decidedAt } = await shown(id);
+		expect((await hold(as('surgeon', 90), id, decidedAt)).result.state).toBe('on-hold');
+	});
+});
+
+describe('what a clearance permits now', () => {
+	const today = async (seconds = 0) =>
+		getNameboard(db(), hospital.people.nurse, episodeId, hospital.now + seconds * 1000);
+
+	it('ends after its review date, not on it', async () => {
+		const id = await asked('out-of-bed');
+		await giveClearance(as('surgeon'), id, { reviewOn: '2026-03-04' });
+		const [onTheDay, after] = [await today(DAY), await today(2 * DAY)];
+		expect(onTheDay.mayDoNow.chair).toBe('one');
+		expect(after.mayDoNow.chair).toBe('not');
+	});
+
+	it('is nothing once a later operation has begun', async () => {
+		const id = await asked('arm-stage');
+		await giveClearance(as('surgeon'), id, {});
+		expect(await shown(id)).toMatchObject({ state: 'given', current: true });
+		await db()
+			.insert(operations)
+			.values({
+				id: newId(),
+				episodeId,
+				procedure: 'Re-opening for bleeding',
+				approach: 'sternotomy',
+				operatedAt: hospital.now + 1000,
+				createdAt: hospital.now
+			});
+		expect(await shown(id, 0)).toMatchObject({ current: true });
+		expect(await shown(id, 1)).toMatchObject({ state: 'given', current: false });
+		expect((await today(1)).clearances).toMatchObject([{ id, current: false }]);
+	});
+});
