@@ -53,7 +53,8 @@ export function recordSession(
 function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
 	const clearances = facts.newest.map((row) => ({
 		kind: row.kind,
-		state: facts.inForce.includes(row) ? row.state : ('lapsed' as const),
+		// Given, but its review date is past: it no longer counts, and nobody has to run for that.
+		state: row.state.startsWith('given') && !facts.inForce.includes(row) ? ('lapsed' as const) : row.state,
 		maxElevationDeg: row.limits?.maxElevationDeg ?? null,
 		maxLoadKg: row.limits?.maxLoadKg ?? null
 	}));
