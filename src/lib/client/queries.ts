@@ -1,5 +1,6 @@
 import { browser } from '$app/environment';
 import type { SessionLine } from '$lib/domain/bedside/views';
+import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
@@ -25,9 +26,25 @@ export const queries = {
 			initial
 		),
 	episode: (id: string, initial: Nameboard) => query(['episode', id], `/api/episodes/${id}`, initial),
-	thread: (id: string, initial: ThreadView) => query(['thread', id], `/api/threads/${id}?limit=200`, initial),
+	thread: (id: string, initial: ThreadView) => ({
+		...query(['thread', id], `/api/threads/${id}`, initial),
+		queryFn: () => wholeThread(id)
+	}),
+	clearance: (id: string, initial: ClearanceView) =>
+		query(['clearance', id], `/api/clearances/${id}`, initial),
 	sessions: (episodeId: string, initial: List<SessionLine>) =>
 		query(['sessions', episodeId], `/api/episodes/${episodeId}/sessions`, initial),
 	escalation: (id: string, initial: EscalationView) =>
 		query(['escalation', id], `/api/escalations/${id}`, initial)
 };
+
+/** A thread with all its entries: a conversation is read to its end, however many pages that takes. */
+async function wholeThread(id: string): Promise<ThreadView> {
+	const path = `/api/threads/${id}?limit=200`;
+	let view = await getJson<ThreadView>(path);
+	while (view.next !== null) {
+		const more = await getJson<ThreadView>(`${path}&after=${view.next}`);
+		view = { ...more, items: [...view.items, ...more.items] };
+	}
+	return view;
+}
