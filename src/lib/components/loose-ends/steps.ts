@@ -1,0 +1,75 @@
+import { can } from '$lib/domain/access/can';
+import type { Role } from '$lib/domain/core/codes';
+import type { LooseEnd } from '$lib/domain/loose-ends/loose-ends';
+import { m } from '$lib/i18n/paraglide/messages';
+import { routes } from '$lib/routes';
+
+/** The one thing to do about a loose end. */
+export interface Step {
+	label: string;
+	/** Where it is done; for a deed, where it can be done without script. */
+	href: string;
+	/** The write that does it right here, where one press is enough. */
+	deed: string | null;
+}
+
+/** What the person is to do about something that waits on them. */
+export function nextStep(end: LooseEnd, role: Role): Step {
+	const { id, episodeId } = end;
+	switch (end.kind) {
+		case 'escalation':
+			return {
+				label: m.home_step_take(),
+				href: routes.escalation(id),
+				deed: `/api/escalations/${id}/take`
+			};
+		case 'escalation-taken':
+			return open(m.home_step_settle(), routes.escalation(id));
+		case 'recheck':
+			return mayRecord(role) && episodeId
+				? open(m.home_step_record(), routes.newSession(episodeId))
+				: open(m.home_step_look(), routes.escalation(id));
+		case 'clearance':
+			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
+		case 'referral':
+			return {
+				label: m.home_step_accept(),
+				href: placeOf(end) ?? routes.looseEnds(),
+				deed: `/api/referrals/${id}/accept`
+			};
+		case 'visit-cancelled':
+			return open(m.home_step_rebook(), episodeId ? routes.patientVisits(episodeId) : routes.visits());
+		case 'message-failed':
+			return open(m.home_step_call(), routes.failedMessage(id));
+		case 'inbound':
+			return open(m.home_step_read(), routes.inboundText(id));
+	}
+}
+
+/** Where more is to be read about a loose end; null where the step leads there already. */
+export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | null {
+	switch (kind) {
+		case 'escalation':
+		case 'escalation-taken':
+		case 'recheck':
+			return routes.escalation(id);
+		case 'clearance':
+		case 'referral':
+			if (episodeId === null) {
+				return null;
+			}
+			return threadId === null ? routes.patient(episodeId) : routes.thread(episodeId, threadId);
+		case 'visit-cancelled':
+		case 'message-failed':
+		case 'inbound':
+			return null;
+	}
+}
+
+function open(label: string, href: string): Step {
+	return { label, href, deed: null };
+}
+
+function mayRecord(role: Role): boolean {
+	return can({ kind: 'person', id: '', name: '', role, unitIds: [] }, 'session.record');
+}

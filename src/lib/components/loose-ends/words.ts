@@ -1,0 +1,79 @@
+import type { LooseEnd } from '$lib/domain/loose-ends/loose-ends';
+import { rolesAsked } from '$lib/domain/loose-ends/owed-by';
+import { MINUTE } from '$lib/domain/core/time';
+import { ago, DEFAULT_LOCALE, due, duration, when, type Reader } from '$lib/format';
+import { m } from '$lib/i18n/paraglide/messages';
+import { ROLE_WORDS } from '../shell/role-words';
+
+/** How long something is open, or when it is due. */
+export function waitWords(end: LooseEnd, reader: Reader): string {
+	const open = reader.now - Date.parse(end.since);
+	switch (end.kind) {
+		case 'escalation':
+			return m.home_wait_untaken({ time: duration(open) });
+		case 'escalation-taken':
+			return m.home_wait_taken({ time: duration(open) });
+		case 'recheck':
+			return end.due === null ? elapsed(end, reader) : due(Date.parse(end.due), reader);
+		default:
+			return elapsed(end, reader);
+	}
+}
+
+/** Whether something that has a time of its own is past it. */
+export function isOverdue(end: LooseEnd, now: number): boolean {
+	return end.kind === 'recheck' && end.due !== null && now - Date.parse(end.due) >= MINUTE;
+}
+
+/** Who asks, or what it is about: the part of the second line that stands after patient and unit. */
+export function askerWords(end: LooseEnd, reader: Reader): string {
+	const name = end.askedBy ?? '';
+	switch (end.kind) {
+		case 'escalation':
+		case 'escalation-taken':
+			return m.home_asker_raised({ name });
+		case 'recheck':
+			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
+		case 'clearance':
+		case 'referral':
+			return m.home_asker_asks({ name });
+		case 'visit-cancelled':
+			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
+		case 'message-failed':
+			return MESSAGES[end.code ?? '']?.() ?? '';
+		case 'inbound':
+			return '';
+	}
+}
+
+/** Who owes it, for the person who waits. */
+export function owerWords(end: LooseEnd): string {
+	const name = end.heldBy ?? '';
+	switch (end.kind) {
+		case 'escalation':
+			return m.home_ower_nobody();
+		case 'escalation-taken':
+			return m.home_ower_has({ name });
+		case 'recheck':
+			return m.home_ower_measures({ name });
+		default:
+			return m.home_ower_roles({ roles: anyOf(rolesAsked(end).map((role) => ROLE_WORDS[role]())) });
+	}
+}
+
+const MESSAGES: Record<string, () => string> = {
+	reminder: m.home_message_reminder,
+	escalation: m.home_message_escalation,
+	answer: m.home_message_answer,
+	mail: m.home_message_mail
+};
+
+function elapsed({ since }: LooseEnd, reader: Reader): string {
+	const at = Date.parse(since);
+	const minutes = Math.floor((reader.now - at) / MINUTE);
+	return minutes < 1 ? ago(at, reader) : duration(minutes * MINUTE);
+}
+
+function anyOf(words: string[]): string {
+	return new Intl.ListFormat(DEFAULT_LOCALE, { type: 'disjunction' }).format(words);
+}

@@ -1,0 +1,54 @@
+import { describe, expect, it } from 'vitest';
+import { CLEARANCE_KINDS, SERVICES, STRANDS } from '../core/codes';
+import { LOOSE_END_KINDS } from './loose-ends';
+import { owedBy, rolesAsked } from './owed-by';
+
+describe('owedBy', () => {
+	it.each([
+		['escalation', null, null, 'nursing'],
+		['escalation', null, 'physician', 'nursing'],
+		['escalation-taken', null, null, 'nursing'],
+		['escalation-taken', null, 'nurse', 'nursing'],
+		['escalation-taken', null, 'physician', 'medical'],
+		['escalation-taken', null, 'surgeon', 'medical'],
+		['recheck', null, null, 'nursing'],
+		['recheck', null, 'physician', 'medical'],
+		['clearance', 'arm-stage', null, 'medical'],
+		['clearance', 'stairs', null, 'medical'],
+		['clearance', 'oral-intake', null, 'therapy'],
+		['referral', 'physiotherapy', null, 'therapy'],
+		['referral', 'speech-therapy', null, 'therapy'],
+		['visit-cancelled', null, null, 'patient'],
+		['message-failed', 'reminder', null, 'patient'],
+		['inbound', 'other', null, 'patient']
+	] as const)('%s of %s, held by %s: %s', (kind, code, holder, strand) => {
+		expect(owedBy({ kind, code }, holder)).toBe(strand);
+	});
+
+	it.each(LOOSE_END_KINDS)('%s has a strand', (kind) => {
+		expect(STRANDS).toContain(owedBy({ kind, code: null }));
+	});
+});
+
+describe('rolesAsked', () => {
+	it.each([
+		['escalation', null, ['surgeon', 'physician', 'nurse']],
+		['escalation-taken', null, []],
+		['recheck', null, []],
+		['clearance', 'arm-stage', ['surgeon']],
+		['clearance', 'corridor', ['surgeon', 'physician']],
+		['clearance', 'oral-intake', ['surgeon', 'speech-therapist']],
+		['referral', 'physiotherapy', ['therapist']],
+		['referral', 'speech-therapy', ['speech-therapist']],
+		['inbound', 'other', ['coordinator']]
+	] as const)('%s of %s waits on %j', (kind, code, roles) => {
+		expect(rolesAsked({ kind, code })).toEqual(roles);
+	});
+
+	it.each([
+		...CLEARANCE_KINDS.map((code) => ({ kind: 'clearance', code }) as const),
+		...SERVICES.map((code) => ({ kind: 'referral', code }) as const)
+	])('somebody can answer $kind of $code', (end) => {
+		expect(rolesAsked(end).length).toBeGreaterThan(0);
+	});
+});

@@ -1,0 +1,64 @@
+/** Who owes the answer to a loose end: the discipline whose colour its frayed end has, and the roles it waits on. */
+import type { Person } from '../access/actor';
+import { can } from '../access/can';
+import {
+	ROLES,
+	STRAND_OF_ROLE,
+	type ClearanceKind,
+	type ClinicalRole,
+	type Role,
+	type Service,
+	type Strand
+} from '../core/codes';
+import type { LooseEnd } from './loose-ends';
+
+type Owed = Pick<LooseEnd, 'kind' | 'code'>;
+
+/**
+ * The discipline that owes the answer. An escalation is owed by nursing until somebody has it, and by the
+ * holder's discipline from then on.
+ * @param holder the role of whoever has it, where that is known
+ */
+export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null): Strand {
+	switch (kind) {
+		case 'escalation':
+			return 'nursing';
+		case 'escalation-taken':
+		case 'recheck':
+			return holder === null ? 'nursing' : STRAND_OF_ROLE[holder];
+		case 'clearance':
+			return code === 'oral-intake' ? 'therapy' : 'medical';
+		case 'referral':
+			return 'therapy';
+		case 'visit-cancelled':
+		case 'message-failed':
+		case 'inbound':
+			return 'patient';
+	}
+}
+
+/** The roles that may give the answer, in the order of `ROLES`; what somebody holds already is theirs alone. */
+export function rolesAsked({ kind, code }: Owed): Role[] {
+	switch (kind) {
+		case 'escalation':
+			return ROLES.filter((role) => can(anyone(role), 'escalation.take'));
+		case 'clearance':
+			return ROLES.filter((role) =>
+				can(anyone(role), 'clearance.decide', { clearanceKind: code as ClearanceKind })
+			);
+		case 'referral':
+			return ROLES.filter((role) => can(anyone(role), 'referral.answer', { service: code as Service }));
+		case 'visit-cancelled':
+		case 'message-failed':
+		case 'inbound':
+			return ['coordinator'];
+		case 'escalation-taken':
+		case 'recheck':
+			return [];
+	}
+}
+
+/** Somebody of a role, to ask what the role may do. */
+function anyone(role: Role): Person {
+	return { kind: 'person', id: '', name: '', role, unitIds: [] };
+}

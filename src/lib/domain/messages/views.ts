@@ -1,0 +1,39 @@
+import type { PatientLine } from '../episodes/views';
+
+/** Somebody who is to be called, because a text did not do it. */
+export interface Reachable {
+	name: string;
+	/** In E.164 form; null where no number is known. */
+	phone: string | null;
+}
+
+/** A message that did not arrive, for the person who sees to it. */
+export interface FailedMessageView {
+	id: string;
+	/** What it was to say. A secret link in it is left out. */
+	body: string;
+	channel: 'sms' | 'mail';
+	/** Whom it was for; null where the number belongs to nobody we know. */
+	to: Reachable | null;
+	/** Whom it was about. */
+	patient: PatientLine | null;
+	episodeId: string | null;
+	/** When it was written, RFC 3339. */
+	createdAt: string;
+	/** Why it did not arrive, as the message log has it. */
+	reason: string | null;
+	/** True once somebody has seen to it. */
+	settled: boolean;
+}
+
+/** A text that no rule understood, for the person who answers it. */
+export interface InboundTextView {
+	id: string;
+	body: string;
+	from: Reachable;
+	patient: PatientLine | null;
+	episodeId: string | null;
+	/** When it came, RFC 3339. */
+	at: string;
+	settled: boolean;
+}
