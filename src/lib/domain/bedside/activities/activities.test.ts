@@ -36,15 +36,30 @@ describe('the activities catalogue', () => {
 	it.each([
 		['ankle-pumps', 1, null, { repetitions: [15, 20] }],
 		['leg-slides', 1, null, { repetitions: [5, 5] }],
-		['chair-sitting', 2, 'out-of-bed', { minutes: [15, 30], timesADay: [2, 4] }],
-		['hall-walk', 4, 'corridor', { minutes: [5, 7], timesADay: [3, 4] }],
-		['hall-walk-long', 5, 'corridor', { minutes: [8, 10], timesADay: [3, 4] }],
+		['chair-sitting', 2, null, { minutes: [15, 30], timesADay: [2, 4] }],
+		['hall-walk', 4, null, { minutes: [5, 7], timesADay: [3, 4] }],
+		['hall-walk-long', 5, null, { minutes: [8, 10], timesADay: [3, 4] }],
 		['arm-exercise', 5, 'arm-stage', { repetitions: [5, 10] }],
 		['stairs', 6, 'stairs', { repetitions: [1, 1] }],
 		['self-feeding', 1, 'oral-intake', { timesADay: [3, 3] }],
 		['treadmill-walk', 6, 'treadmill', { minutes: [20, 45] }]
 	] as const)('%s: level %d, clearance %s', (code, level, clearance, dose) => {
 		expect(activityByCode(code)).toMatchObject({ level, clearance, dose });
+	});
+
+	it('lets the ward walk without asking, unless somebody holds it', () => {
+		const held = (kind: string) => ACTIVITIES.filter(({ heldBy }) => heldBy === kind).map(({ code }) => code);
+		expect(held('corridor')).toEqual(['hall-walk', 'hall-walk-long']);
+		expect(held('out-of-bed')).toEqual([
+			'chair-sitting',
+			'sit-to-stand',
+			'seated-exercise',
+			'bedside-walk',
+			'room-walk',
+			'seated-wash',
+			'standing-warm-up',
+			'standing-exercise'
+		]);
 	});
 
 	it('knows what moves the arms, what walks and what is done to the patient', () => {

@@ -33,6 +33,8 @@ export interface Activity {
 	readonly stairs: boolean;
 	/** The clearance that must be in force; the arm stage after a sternotomy only. */
 	readonly clearance: ClearanceKind | null;
+	/** The clearance that need not be asked for, but bars the activity while it is refused, held or withdrawn. */
+	readonly heldBy: ClearanceKind | null;
 	/** What must hold beside the clearance, in words. */
 	readonly needs: readonly string[];
 	readonly dose: Dose;
@@ -54,6 +56,7 @@ const DEFAULTS = {
 	walking: false,
 	stairs: false,
 	clearance: null,
+	heldBy: null,
 	needs: [],
 	source: 'common-practice'
 } as const;

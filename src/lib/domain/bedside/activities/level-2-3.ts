@@ -10,7 +10,7 @@ export const chairActivities = atLevel(
 		{
 			code: 'chair-sitting',
 			name: 'Sitting in the chair',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { minutes: [15, 30], timesADay: [2, 4], words: '15 to 30 minutes, 2 to 4 times a day' },
 			howTo: ['A firm chair with a pillow at the back, feet flat.', 'Not leaning far back.'],
 			watch: ['Pressure and colour after five minutes.', 'Drains above their bottle.'],
@@ -19,7 +19,7 @@ export const chairActivities = atLevel(
 		{
 			code: 'sit-to-stand',
 			name: 'Standing up from sitting',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { repetitions: [3, 5], timesADay: [2, 4], words: '3 to 5 times, 2 to 4 times a day' },
 			howTo: [
 				'Shuffle to the edge, feet down and back.',
@@ -32,7 +32,7 @@ export const chairActivities = atLevel(
 		{
 			code: 'seated-exercise',
 			name: 'Exercise in the chair',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { repetitions: [5, 10], timesADay: [2, 3], words: '5 to 10 times each, 2 to 3 times a day' },
 			howTo: ['Straighten the knees in turn, march on the spot, feet flat between.', 'Count aloud.'],
 			watch: ['Breath enough to count.'],
@@ -53,7 +53,7 @@ export const chairActivities = atLevel(
 			code: 'bedside-walk',
 			name: 'A few steps round the bed',
 			walking: true,
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: {
 				minutes: [1, 3],
 				timesADay: [2, 3],
@@ -75,7 +75,7 @@ export const roomActivities = atLevel(
 			code: 'room-walk',
 			name: 'Walking in the room',
 			walking: true,
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { minutes: [3, 5], timesADay: [2, 4], words: '3 to 5 minutes, 2 to 4 times a day' },
 			howTo: ['To the window and the bathroom, path clear.', 'One breath in to a step, out over two.'],
 			watch: ['Pulse and breathing at each turn.', 'Lines and drains on the move.'],
@@ -84,7 +84,7 @@ export const roomActivities = atLevel(
 		{
 			code: 'seated-wash',
 			name: 'Washing at the basin, seated',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { minutes: [5, 15], timesADay: [1, 2], words: 'once or twice a day, on a stool' },
 			howTo: ['Everything within reach of a bent elbow.', 'Help for back and feet.'],
 			watch: ['Tiredness: warm water drops the pressure.'],
@@ -93,7 +93,7 @@ export const roomActivities = atLevel(
 		{
 			code: 'standing-warm-up',
 			name: 'Warming up on the feet',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { minutes: [2, 3], timesADay: [2, 3], words: '2 to 3 minutes before each walk' },
 			howTo: ['Weight from foot to foot, heels up, small knee bends.', 'A chair in front, for touch only.'],
 			watch: ['Dizziness in the first minute.'],

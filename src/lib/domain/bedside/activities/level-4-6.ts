@@ -11,7 +11,7 @@ export const corridorActivities = atLevel(
 			code: 'hall-walk',
 			name: 'Walking in the corridor',
 			walking: true,
-			clearance: 'corridor',
+			heldBy: 'corridor',
 			dose: {
 				minutes: [5, 7],
 				timesADay: [3, 4],
@@ -24,7 +24,7 @@ export const corridorActivities = atLevel(
 		{
 			code: 'standing-exercise',
 			name: 'Exercise on the feet',
-			clearance: 'out-of-bed',
+			heldBy: 'out-of-bed',
 			dose: { repetitions: [5, 10], timesADay: [2, 3], words: '5 to 10 times each, 2 to 3 times a day' },
 			howTo: ['Heels up, knees up in turn, leg to the side.', 'A rail at hand for balance.'],
 			watch: ['Breath enough to talk.'],
@@ -42,7 +42,7 @@ export const longerActivities = atLevel(
 			code: 'hall-walk-long',
 			name: 'Longer walks in the corridor',
 			walking: true,
-			clearance: 'corridor',
+			heldBy: 'corridor',
 			dose: { minutes: [8, 10], timesADay: [3, 4], words: '8 to 10 minutes, 3 to 4 times a day' },
 			howTo: ['The same pace, longer; rest before it is needed.', 'Count the lengths.'],
 			watch: ['Pressure before and right after.', 'The effort the patient feels.'],

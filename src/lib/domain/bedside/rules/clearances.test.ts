@@ -1,8 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { ACTIVITIES } from '../activities/activities';
+import type { Context } from '../forms';
 import { grades, judge, only } from '../testing/sample';
 import { granted, lackingClearance } from './clearances';
 
+const HELD = ACTIVITIES.flatMap(({ code, heldBy }) => (heldBy === null ? [] : [[code, heldBy] as const]));
 const NEEDING = ACTIVITIES.filter(({ clearance }) => clearance !== null);
 
 describe('clearance-missing', () => {
@@ -17,6 +19,18 @@ describe('clearance-missing', () => {
 			expect(judge({ context: { clearances: [clearance] }, activities }).findings).toEqual([]);
 		}
 	);
+
+	it.each(HELD)('%s stops while %s is refused, and not before anybody was asked', (code, kind) => {
+		const found = (clearances: Context['clearances']) =>
+			grades(judge({ context: { clearances }, activities: [{ code }] }), 'clearance-missing');
+		for (const state of ['withheld', 'on-hold', 'withdrawn', 'lapsed'] as const) {
+			expect(found([{ kind, state }])).toEqual(['stop during']);
+			expect(found([{ kind, state }, kind])).toEqual([]);
+		}
+		for (const clearances of [undefined, [], [kind], [{ kind, state: 'asked' as const }]]) {
+			expect(found(clearances)).toEqual([]);
+		}
+	});
 
 	it.each(ACTIVITIES.filter(({ clearance }) => clearance === null).map(({ code }) => code))(
 		'%s needs none',
@@ -65,7 +79,17 @@ describe('granted', () => {
 });
 
 it('tells which clearance an activity lacks, before anything is recorded', () => {
-	const context = { clearances: ['corridor' as const], sternotomy: true };
-	const lacking = ACTIVITIES.filter((activity) => lackingClearance(context, activity) === 'arm-stage');
-	expect(lacking.map(({ code }) => code)).toEqual(['arm-exercise']);
+	const context = {
+		clearances: [{ kind: 'corridor' as const, state: 'on-hold' as const }],
+		sternotomy: true
+	};
+	const lacking = ACTIVITIES.map((activity) => [activity.code, lackingClearance(context, activity)]);
+	expect(lacking.filter(([, kind]) => kind !== null)).toEqual([
+		['self-feeding', 'oral-intake'],
+		['hall-walk', 'corridor'],
+		['hall-walk-long', 'corridor'],
+		['arm-exercise', 'arm-stage'],
+		['stairs', 'stairs'],
+		['treadmill-walk', 'treadmill']
+	]);
 });

@@ -1,9 +1,11 @@
 /**
- * Clearances. Some activities may start only when a named person has said yes: arm exercise after a sternotomy,
- * leaving the bed, the corridor, the stairs, eating and drinking, the treadmill. Something of the kind done
- * without its clearance stops. The arm stage is asked for after a sternotomy only.
+ * Clearances. Some activities start only when a named person has said yes: arm exercise after a sternotomy, the
+ * stairs, eating and drinking, the treadmill. Done without the clearance in force, they stop. Leaving the bed and
+ * walking in the corridor follow the level, as a ward allows them without asking for each patient; they stop
+ * only while somebody has refused, held or withdrawn that clearance for this patient, or let it lapse. The arm
+ * stage is asked for after a sternotomy only.
  */
-import type { ClearanceKind } from '../../core/codes';
+import type { ClearanceKind, ClearanceState } from '../../core/codes';
 import type { Activity } from '../activities/activity';
 import type { ClearanceInForce, Context } from '../forms';
 import { cite } from '../limits/sources';
@@ -27,15 +29,15 @@ export function granted({ clearances }: Pick<Context, 'clearances'>, kind: Clear
 	};
 }
 
-/** The clearance this activity still lacks for this patient, or null when it may be done. */
+/** The clearance that bars this activity for this patient now, or null when it may be done. */
 export function lackingClearance(
 	context: Pick<Context, 'clearances' | 'sternotomy'>,
-	{ clearance }: Pick<Activity, 'clearance'>
+	{ clearance, heldBy }: Pick<Activity, 'clearance' | 'heldBy'>
 ): ClearanceKind | null {
-	if (clearance === null || (clearance === 'arm-stage' && !context.sternotomy)) {
-		return null;
+	if (clearance !== null && needed(context, clearance) && granted(context, clearance) === null) {
+		return clearance;
 	}
-	return granted(context, clearance) === null ? clearance : null;
+	return heldBy !== null && isHeld(context, heldBy) ? heldBy : null;
 }
 
 export const CLEARANCE_WORDS: Record<ClearanceKind, string> = {
@@ -51,7 +53,8 @@ export const CLEARANCE_WORDS: Record<ClearanceKind, string> = {
 
 export const clearanceMissing: Rule = {
 	id: 'clearance-missing',
-	words: 'An activity that needs a clearance must not be done before the clearance is in force.',
+	words:
+		'An activity that needs a clearance is not done before it is in force, and none is done while its clearance is refused, held, withdrawn or lapsed.',
 	sources: ['common-practice'],
 	judge: ({ context, activities, stage }) =>
 		activities.flatMap(({ activity }) => {
@@ -66,6 +69,23 @@ export const clearanceMissing: Rule = {
 		}),
 	lacks: () => false
 };
+
+function needed({ sternotomy }: Pick<Context, 'sternotomy'>, kind: ClearanceKind): boolean {
+	return kind !== 'arm-stage' || sternotomy;
+}
+
+const HOLDS: readonly ClearanceState[] = ['withheld', 'on-hold', 'withdrawn', 'lapsed'];
+
+/** True while somebody has said no and nobody has said yes. */
+function isHeld(context: Pick<Context, 'clearances'>, kind: ClearanceKind): boolean {
+	const saidNo = (context.clearances ?? []).some(
+		(clearance) =>
+			typeof clearance !== 'string' &&
+			clearance.kind === kind &&
+			HOLDS.some((state) => state === clearance.state)
+	);
+	return saidNo && granted(context, kind) === null;
+}
 
 function inForce(clearance: ClearanceInForce, kind: ClearanceKind): boolean {
 	if (typeof clearance === 'string') {

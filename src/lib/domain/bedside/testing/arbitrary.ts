@@ -1,6 +1,6 @@
 /** Random sessions for property tests: whatever the schema accepts, with values that like to sit at a limit. */
 import fc from 'fast-check';
-import { CLEARANCE_KINDS, LEVELS, RHYTHMS } from '../../core/codes';
+import { CLEARANCE_KINDS, CLEARANCE_STATES, LEVELS, RHYTHMS } from '../../core/codes';
 import { ACTIVITY_CODES } from '../activities/codes';
 import { AIRWAYS, ASSISTANCE, POSTURES, PRESSURE_SOURCES, SETS, SYMPTOMS } from '../codes';
 import type { ActivityDone, Assessment, Context, Reading, Symptom } from '../forms';
@@ -57,9 +57,13 @@ const anyContext: fc.Arbitrary<Context> = fc.record({
 		fc.array(
 			fc.oneof(
 				fc.constantFrom(...CLEARANCE_KINDS),
-				fc.record({ kind: fc.constantFrom(...CLEARANCE_KINDS), maxElevationDeg: maybe(about(30, 120)) })
+				fc.record({
+					kind: fc.constantFrom(...CLEARANCE_KINDS),
+					state: maybe(fc.constantFrom(...CLEARANCE_STATES)),
+					maxElevationDeg: maybe(about(30, 120))
+				})
 			),
-			{ maxLength: 4 }
+			{ maxLength: 6 }
 		)
 	),
 	prescribed: maybe(fc.record({ hrMax: maybe(about(90, 150)), rpeMax: maybe(about(10, 16)) }))

@@ -26,14 +26,17 @@ const PASSIVE = new Set(['passive-legs', 'passive-arms']);
 const OUT_OF_BED =
 	'chair-sitting sit-to-stand seated-exercise bedside-walk room-walk seated-wash standing-warm-up standing-exercise';
 const CLEARANCE_OF: Record<string, string> = {
-	...Object.fromEntries(OUT_OF_BED.split(' ').map((code) => [code, 'out-of-bed'])),
 	'self-feeding': 'oral-intake',
-	'hall-walk': 'corridor',
-	'hall-walk-long': 'corridor',
 	'arm-exercise': 'arm-stage',
 	stairs: 'stairs',
 	'treadmill-walk': 'treadmill'
 };
+const HELD_BY: Record<string, string> = {
+	...Object.fromEntries(OUT_OF_BED.split(' ').map((code) => [code, 'out-of-bed'])),
+	'hall-walk': 'corridor',
+	'hall-walk-long': 'corridor'
+};
+const NOT_NOW = 'withheld on-hold withdrawn lapsed'.split(' ');
 const STOP_SYMPTOMS =
 	'angina dizziness light-headedness fainting confusion sternal-click pallor distress new-bleeding line-dislodged'.split(
 		' '
@@ -276,9 +279,11 @@ function theRest(
 			found.add(`reading-missing ${walked ? 'caution' : 'note'} ${when}`);
 		}
 	}
-	const granted = (context.clearances ?? []).map((clearance) =>
-		typeof clearance === 'string' ? { kind: clearance } : clearance
+	const all = (context.clearances ?? []).map((clearance) =>
+		typeof clearance === 'string' ? { kind: clearance, state: 'given' } : { state: 'given', ...clearance }
 	);
+	const granted = all.filter(({ state }) => state == null || state.startsWith('given'));
+	const refused = all.filter(({ state }) => state != null && NOT_NOW.includes(state));
 	const arms = granted
 		.filter(({ kind }) => kind === 'arm-stage')
 		.map((given) => ('maxElevationDeg' in given ? given.maxElevationDeg : null));
@@ -288,7 +293,9 @@ function theRest(
 	for (const { code, elevationDeg, assistance, helper } of done) {
 		const needs = CLEARANCE_OF[code];
 		const has = needs === undefined || granted.some(({ kind }) => kind === needs);
-		if (!has && (context.sternotomy || !ARM_FREE.has(code))) {
+		const may = HELD_BY[code];
+		const held = refused.some(({ kind }) => kind === may) && !granted.some(({ kind }) => kind === may);
+		if (held || (!has && (context.sternotomy || !ARM_FREE.has(code)))) {
 			found.add(`clearance-missing stop ${now}`);
 		}
 		if (context.sternotomy && elevationDeg != null && over(elevationDeg, height)) {
