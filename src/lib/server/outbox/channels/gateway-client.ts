@@ -22,10 +22,13 @@ export class GatewayRefusal extends Error {
  * and every refusal as a {@link GatewayRefusal}. The SDK's own retry is off; the outbox has its own schedule.
  */
 export class GatewayClient extends RequestClient {
-	constructor(private readonly baseUrl: string | null) {
+	constructor(
+		private readonly baseUrl: string | null,
+		limitMs: number
+	) {
 		// A kept connection may be closed by the other end just when the next message is written to it, and that
 		// looks exactly like a message of unknown outcome. A new one for each message costs little.
-		super({ timeout: GATEWAY_LIMIT_MS, autoRetry: false, keepAlive: false });
+		super({ timeout: limitMs, autoRetry: false, keepAlive: false });
 	}
 
 	override async request<T>(options: RequestClient.RequestOptions<T>): Promise<Response<T>> {

@@ -4,7 +4,7 @@ import { readRetryAfter } from '$lib/domain/messages/retry';
 import { now } from '../../clock';
 import type { Env } from '../../env';
 import type { Channel, Outgoing, Sent } from './channel';
-import { GatewayClient, GatewayRefusal } from './gateway-client';
+import { GATEWAY_LIMIT_MS, GatewayClient, GatewayRefusal } from './gateway-client';
 
 /** How many of the newest messages to one number are looked through for one of unknown outcome. */
 const LOOK_UP_LIMIT = 50;
@@ -12,10 +12,15 @@ const LOOK_UP_LIMIT = 50;
 /**
  * Text messages through the gateway's SDK.
  * @param statusUrl where the gateway posts what becomes of a message
+ * @param limitMs how long one attempt may take
  * @throws Error when the account identifier is none
  */
-export function smsChannel(gateway: NonNullable<Env['sms']>, statusUrl: string): Channel {
-	const httpClient = new GatewayClient(gateway.baseUrl);
+export function smsChannel(
+	gateway: NonNullable<Env['sms']>,
+	statusUrl: string,
+	limitMs = GATEWAY_LIMIT_MS
+): Channel {
+	const httpClient = new GatewayClient(gateway.baseUrl, limitMs);
 	const { messages } = twilio(gateway.accountSid, gateway.authToken, { httpClient, autoRetry: false });
 	return {
 		send: ({ to, body }) =>
