@@ -34,3 +34,16 @@ export type { Activity, Dose } from './activities/activity';
 export { ACTIVITY_CODES, type ActivityCode } from './activities/codes';
 export { granted, lackingClearance, CLEARANCE_WORDS, type Granted } from './rules/clearances';
 export * from './levels';
+export { doseNotes, seniorSignsDose, type DoseNote } from './doses';
+export {
+	adviseLevel,
+	afterDecision,
+	PROGRESS_SYSTOLIC_RISE,
+	seniorSignsLevel,
+	type Advice,
+	type Levels,
+	type ProgressReason,
+	type Suggestion
+} from './progress';
+export { CALM_HOURS_BEFORE_WALKING, readyToWalk, type Readiness, type WalkingChecks } from './readiness';
+export { rulebook, type Rulebook, type RulebookLimit, type RulebookRow } from './rulebook';

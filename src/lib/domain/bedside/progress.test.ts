@@ -1,0 +1,92 @@
+import { describe, expect, it } from 'vitest';
+import { assess } from './assess';
+import { adviseLevel, afterDecision, seniorSignsLevel, type Suggestion } from './progress';
+import { REST, session, type Changes } from './testing/sample';
+import type { Level } from '../core/codes';
+
+const NOTHING = { hr: null, sbp: null, dbp: null, spo2: null, rr: null, pain: null };
+
+function advice(level: Level, changes: Changes = {}) {
+	const input = session(changes);
+	return adviseLevel(level, input, assess(input));
+}
+
+describe('adviseLevel', () => {
+	it.each<[string, Changes, Suggestion, Level]>([
+		['a session with nothing to say', {}, 'progress', 4],
+		['a caution', { after: { spo2: 89 } }, 'stay', 3],
+		['a needed reading missing', { after: { hr: null } }, 'stay', 3],
+		['a stop before the start', { before: { sbp: 84, dbp: 50 }, during: [], after: NOTHING }, 'stay', 3],
+		['a stop in effort', { during: [{ ...REST, sbp: 210 }] }, 'step-back', 2],
+		['a symptom that stops', { symptoms: ['dizziness'] }, 'step-back', 2],
+		['a note', { context: { betaBlocked: null }, during: [] }, 'progress', 4]
+	])('%s', (_what, changes, suggestion, to) => {
+		expect(advice(3, changes)).toMatchObject({ suggestion, to });
+	});
+
+	it('does not climb over level 6 or fall under level 1', () => {
+		expect(advice(6)).toMatchObject({ suggestion: 'progress', to: 6, needs: [] });
+		expect(advice(1, { symptoms: ['angina'] })).toMatchObject({ suggestion: 'step-back', to: 1 });
+	});
+
+	// 10 to 40 mmHg above rest: AACVPR line, from memory.
+	it.each([
+		[9, 'consider'],
+		[10, 'for'],
+		[40, 'for'],
+		[40.1, 'against']
+	])('a systolic rise of %d weighs %s', (rise, weight) => {
+		const during = [{ ...REST, sbp: 120 + rise, rpe: 11 }];
+		const { reasons } = advice(3, { context: { set: 'guideline' }, during, after: { sbp: 120 } });
+		expect(reasons.find(({ words }) => words.startsWith('The systolic pressure rose'))?.weight).toBe(weight);
+	});
+
+	it('says nothing about a pressure that was not measured', () => {
+		const { reasons } = advice(3, { before: { sbp: null } });
+		expect(reasons.filter(({ words }) => words.startsWith('The systolic pressure rose'))).toEqual([]);
+	});
+
+	it.each<[Level, Changes, string[]]>([
+		[3, {}, []],
+		[3, { context: { clearances: [{ kind: 'corridor', state: 'on-hold' }] } }, ['corridor']],
+		[4, {}, ['arm-stage']],
+		[4, { context: { clearances: ['arm-stage'] } }, []],
+		[4, { context: { sternotomy: false } }, []],
+		[5, {}, ['stairs']]
+	])('from level %d names what the next level lacks', (level, changes, needs) => {
+		expect(advice(level, changes).needs).toEqual(needs);
+	});
+
+	it('repeats the sentences of the findings, and lists what was not judged', () => {
+		const { reasons } = advice(3, { context: { temperature: undefined }, after: { spo2: 89 } });
+		expect(reasons.map(({ weight, words }) => `${weight}: ${words}`)).toEqual(
+			expect.arrayContaining([
+				'against: The oxygen saturation after effort is 89 %, under the limit of 90.',
+				'consider: Not judged for want of readings: temperature-ceiling.'
+			])
+		);
+	});
+});
+
+describe('afterDecision', () => {
+	it.each<[Level, Level, Level, Level]>([
+		[3, 3, 4, 4],
+		[4, 3, 2, 4],
+		[4, 2, 3, 4],
+		[4, 2, 6, 6]
+	])('reached %d, today %d, decided %d: reached is %d', (reached, today, to, then) => {
+		expect(afterDecision({ reached, today }, to)).toEqual({ reached: then, today: to });
+	});
+});
+
+describe('seniorSignsLevel', () => {
+	it.each<[Level, Level, Changes, boolean]>([
+		[3, 4, {}, false],
+		[3, 5, {}, true],
+		[3, 4, { after: { spo2: 89 } }, true],
+		[3, 3, { symptoms: ['angina'] }, false],
+		[3, 2, {}, false]
+	])('from %d to %d: %s', (from, to, changes, expected) => {
+		expect(seniorSignsLevel(from, to, advice(from, changes))).toBe(expected);
+	});
+});

@@ -1,0 +1,122 @@
+/**
+ * What speaks for going on to the next level and what holds a patient back, from one judged session. The therapist
+ * decides; this gives the reasons. A session that stopped in effort speaks for going back a level, one that could
+ * not start or could not be judged for staying. A session without a caution in which the heart answered as it
+ * should speaks for progress. A systolic pressure that rises 10 to 40 mmHg above rest is what progress is usually
+ * made on; at the low levels there is too little work to show it, so that a smaller rise is said and holds nobody.
+ *
+ * Criteria: step programmes in the AACVPR line, from memory, not yet verified.
+ */
+import { LEVELS, type ClearanceKind, type Level } from '../core/codes';
+import { ACTIVITIES } from './activities/activities';
+import type { Verdict } from './finding';
+import type { Assessment } from './forms';
+import { exact, plain } from './numbers';
+import { lackingClearance } from './rules/clearances';
+
+/** The rise of the systolic pressure above rest that progress is made on, mmHg, both ends included. */
+export const PROGRESS_SYSTOLIC_RISE = { from: 10, to: 40 } as const;
+
+export const SUGGESTIONS = ['progress', 'stay', 'step-back'] as const;
+export type Suggestion = (typeof SUGGESTIONS)[number];
+
+export interface ProgressReason {
+	/** `consider` is said and weighs nothing by itself. */
+	readonly weight: 'for' | 'against' | 'consider';
+	readonly words: string;
+}
+
+export interface Advice {
+	readonly suggestion: Suggestion;
+	/** The level the suggestion leads to; the same where it is to stay. */
+	readonly to: Level;
+	readonly reasons: readonly ProgressReason[];
+	/** Clearances that activities of the next level need and this patient lacks. */
+	readonly needs: readonly ClearanceKind[];
+}
+
+/** Advise on the level of a patient after a session at `level`. */
+export function adviseLevel(level: Level, session: Assessment, verdict: Verdict): Advice {
+	const reasons = [...findingReasons(verdict), ...pressureReasons(session)];
+	const suggestion = suggest(verdict, reasons);
+	const up = shifted(level, 1);
+	const to = suggestion === 'progress' ? up : suggestion === 'step-back' ? shifted(level, -1) : level;
+	return { suggestion, to, reasons, needs: up === level ? [] : clearancesLacking(session, up) };
+}
+
+/** The levels of a patient: what was reached stays on record, for today's level can fall. */
+export interface Levels {
+	readonly reached: Level;
+	readonly today: Level;
+}
+
+/** The levels after somebody decided on `to`. */
+export function afterDecision({ reached }: Levels, to: Level): Levels {
+	return { reached: reached >= to ? reached : to, today: to };
+}
+
+/** True when the decision needs a senior: more than one level at once, or up against the advice. */
+export function seniorSignsLevel(from: Level, to: Level, advice: Advice): boolean {
+	return to > from + 1 || (to > from && advice.suggestion !== 'progress');
+}
+
+function suggest({ outcome, findings }: Verdict, reasons: readonly ProgressReason[]): Suggestion {
+	if (findings.some(({ grade, reading }) => grade === 'stop' && reading !== 'before')) {
+		return 'step-back';
+	}
+	const held = outcome !== 'clear' || reasons.some(({ weight }) => weight === 'against');
+	return held ? 'stay' : 'progress';
+}
+
+function findingReasons({ findings, notJudged }: Verdict): ProgressReason[] {
+	const against = findings
+		.filter(({ grade, rule }) => grade !== 'note' || rule === 'reading-missing')
+		.map(({ reason }): ProgressReason => ({ weight: 'against', words: reason }));
+	const caveats = findings
+		.filter(({ grade, rule }) => grade === 'note' && rule !== 'reading-missing')
+		.map(({ reason }): ProgressReason => ({ weight: 'consider', words: reason }));
+	const unjudged: ProgressReason[] =
+		notJudged.length === 0
+			? []
+			: [{ weight: 'consider', words: `Not judged for want of readings: ${notJudged.join(', ')}.` }];
+	const quiet: ProgressReason[] =
+		against.length === 0
+			? [{ weight: 'for', words: 'No rule had a stop or a caution in this session.' }]
+			: [];
+	return [...quiet, ...against, ...caveats, ...unjudged];
+}
+
+function pressureReasons({ before, during, after }: Assessment): ProgressReason[] {
+	const rest = before.sbp;
+	const peaks = [...during, after].map(({ sbp }) => sbp).filter((sbp) => sbp != null);
+	if (rest == null || peaks.length === 0) {
+		return [];
+	}
+	const rise = exact(Math.max(...peaks) - rest);
+	const { from, to } = PROGRESS_SYSTOLIC_RISE;
+	const course = `The systolic pressure rose by ${plain(rise)} mmHg at most`;
+	if (rise > to) {
+		return [{ weight: 'against', words: `${course}; more than ${to} holds the level.` }];
+	}
+	if (rise < from) {
+		return [
+			{
+				weight: 'consider',
+				words: `${course}; ${from} to ${to} is usual when the work is enough to show it.`
+			}
+		];
+	}
+	return [{ weight: 'for', words: `${course}, within the usual ${from} to ${to}.` }];
+}
+
+function clearancesLacking({ context }: Assessment, level: Level): ClearanceKind[] {
+	const ofLevel = ACTIVITIES.filter((activity) => activity.level === level && activity.phase === 'inpatient');
+	const lacking = ofLevel
+		.map((activity) => lackingClearance(context, activity))
+		.filter((kind) => kind !== null);
+	return [...new Set(lacking)];
+}
+
+function shifted(level: Level, by: 1 | -1): Level {
+	return LEVELS.find((candidate) => candidate === level + by) ?? level;
+}
