@@ -344,7 +344,7 @@ describe('every answer', () => {
 		async (path) => {
 			const { headers } = await nurse.get(path);
 			expect(headers.get('x-content-type-options')).toBe('nosniff');
-			expect(headers.get('referrer-policy')).toBe('no-referrer');
+			expect(headers.get('referrer-policy')).toBe('same-origin');
 			expect(headers.get('cache-control')).toContain('no-store');
 			expect(headers.get('content-security-policy')).toMatch(/frame-ancestors 'none'/);
 			expect(headers.get('content-security-policy')).not.toMatch(/script-src[^;]*unsafe-inline/);
