@@ -28,6 +28,7 @@ export {
 	type HeartRateTarget,
 	type MaximumMethod
 } from './heart-rate-target';
+export { CALCULATORS, type CalculatorEntry } from './rulebook';
 export { pressures, type Pressures } from './pressures';
 export {
 	BALL_FLOWS_ML_PER_S,
