@@ -5,26 +5,34 @@ import type { Channel, Outgoing, Sent } from './channel';
 import { mailAddress, readSender, type MailAddress } from './mail-address';
 import { htmlOf } from './mail-html';
 
-/** To connect, and to be greeted. */
-const CONNECT_LIMIT_MS = 5_000;
-/** Silence of the server in the middle of the exchange. */
-const SILENCE_LIMIT_MS = 8_000;
+interface MailLimits {
+	/** To be connected, and to be greeted. */
+	connectMs: number;
+	/** Silence of the server in the middle of the exchange. */
+	silenceMs: number;
+}
+
+const LIMITS: MailLimits = { connectMs: 5_000, silenceMs: 8_000 };
 
 /**
  * Mails over SMTP, encrypted where the configuration demands it.
  * @param publicUrl its host stands in the identifiers of mails
  * @throws Error when the configured sender is no address
  */
-export function mailChannel(gateway: NonNullable<Env['mail']>, publicUrl: string): Channel {
+export function mailChannel(
+	gateway: NonNullable<Env['mail']>,
+	publicUrl: string,
+	{ connectMs, silenceMs }: MailLimits = LIMITS
+): Channel {
 	const from = readSender(gateway.from);
 	const host = new URL(publicUrl).hostname;
 	const transport = nodemailer.createTransport({
 		url: gateway.url,
 		requireTLS: gateway.requireTls,
-		connectionTimeout: CONNECT_LIMIT_MS,
-		dnsTimeout: CONNECT_LIMIT_MS,
-		greetingTimeout: CONNECT_LIMIT_MS,
-		socketTimeout: SILENCE_LIMIT_MS,
+		connectionTimeout: connectMs,
+		dnsTimeout: connectMs,
+		greetingTimeout: connectMs,
+		socketTimeout: silenceMs,
 		disableFileAccess: true,
 		disableUrlAccess: true
 	});
