@@ -41,8 +41,9 @@ export const STEPS = [
 		['tsc', '--noEmit']
 	]),
 	check('migrations', [['drizzle-kit', 'check']]),
-	{ name: 'unit and integration', run: runVitest },
+	{ name: 'unit and integration', run: () => runVitest(['unit', 'integration']) },
 	{ name: 'build', run: async () => oneCheck(await ensureBuilt()) },
+	{ name: 'product', run: () => runVitest(['product']), needs: ['build'] },
 	{ name: 'crash', run: runCrash, needs: ['build'] },
 	{ name: 'journeys', run: runPlaywright, needs: ['build', 'Chromium'] }
 ];
@@ -74,9 +75,10 @@ function testEnv() {
 	return Object.fromEntries(kept);
 }
 
-function runVitest() {
+/** @param {string[]} names of Vitest's projects */
+function runVitest(names) {
 	return withReport(async (file) => {
-		const projects = ['--project', 'unit', '--project', 'integration'];
+		const projects = names.flatMap((name) => ['--project', name]);
 		const reporters = ['--reporter', 'default', '--reporter', 'json', `--outputFile.json=${file}`];
 		const args = ['run', ...projects, ...reporters];
 		const { code } = await run(bin('vitest'), args, { env: testEnv(), limitMs: LIMIT_MS });
