@@ -248,6 +248,13 @@ describe('a bedside session', () => {
 		expect(thread.items.at(-1)?.body).toContain('128/74');
 	});
 
+	it('is judged by the limits on record, whatever the client sends', async () => {
+		const believing = session();
+		believing.context.limits = { 'systolic-fall': 40 };
+		const { result } = await recordSession(as('therapist'), episodeId, believing);
+		expect(result.findings).toContainEqual(expect.objectContaining({ rule: 'systolic-fall', limit: 10 }));
+	});
+
 	it('with arm exercise needs the arm stage on record, whatever the client believes', async () => {
 		const believing = session(arms);
 		believing.context.clearances = ['arm-stage'];

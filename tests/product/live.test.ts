@@ -1,7 +1,7 @@
 import { connect } from 'node:net';
 import { EventSource } from 'eventsource';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { Client} from '../support/api';
+import type { Client } from '../support/api';
 import { admit, signInAs } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 

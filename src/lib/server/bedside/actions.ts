@@ -49,7 +49,7 @@ export function recordSession(
 	});
 }
 
-/** The clearances on record count, not those that the client believes in. */
+/** Clearances and limits on record count, not those that the client believes in. */
 function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
 	const clearances = facts.newest.map((row) => ({
 		kind: row.kind,
@@ -59,7 +59,8 @@ function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
 		maxLoadKg: row.limits?.maxLoadKg ?? null
 	}));
 	const sternotomy = facts.operation ? facts.precautions.sternal : input.context.sternotomy;
-	return { ...input, context: { ...input.context, sternotomy, clearances, level: input.level } };
+	const { limits: _believed, ...context } = input.context;
+	return { ...input, context: { ...context, sternotomy, clearances, level: input.level } };
 }
 
 function missingClearances(judged: Assessment): ClearanceKind[] {

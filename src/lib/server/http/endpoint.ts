@@ -52,6 +52,15 @@ export function writing<B, T>(spec: Writing<B, T>) {
 		});
 }
 
+/** A POST that computes and stores nothing: anybody signed in may ask. */
+export function computing<B>(body: z.ZodType<B>, compute: (input: B) => unknown) {
+	return writing({
+		permission: 'own-account.change',
+		body,
+		run: (_context, input) => Promise.resolve({ result: compute(input), replayed: false })
+	});
+}
+
 /** Run a handler and turn what it throws into problem+json. */
 export async function answering(work: () => Promise<Response>): Promise<Response> {
 	try {
