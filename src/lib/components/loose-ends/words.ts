@@ -46,12 +46,12 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 	}
 }
 
-/** Who owes it, for the person who waits. */
+/** Who owes it, for the person who waits; of an untaken escalation the time says it already. */
 export function owerWords(end: LooseEnd): string {
 	const name = end.heldBy ?? '';
 	switch (end.kind) {
 		case 'escalation':
-			return m.home_ower_nobody();
+			return '';
 		case 'escalation-taken':
 			return m.home_ower_has({ name });
 		case 'recheck':

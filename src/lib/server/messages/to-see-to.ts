@@ -1,11 +1,11 @@
 import { eq } from 'drizzle-orm';
-import { can } from '$lib/domain/access/can';
 import type { Person } from '$lib/domain/access/actor';
-import { notFound, Problem } from '$lib/domain/core/errors';
+import { notFound } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { PatientLine } from '$lib/domain/episodes/views';
 import type { FailedMessageView, InboundTextView } from '$lib/domain/messages/views';
 import { accessEpisode } from '../access/access';
+import { requirePermission } from '../access/require';
 import { db, type Reader } from '../db';
 import { episodes, inboundMessages, outbox, patients, users } from '../db/schema';
 import { patientLine } from '../episodes/list';
@@ -65,9 +65,7 @@ export async function getInboundText(person: Person, id: string): Promise<Inboun
 }
 
 async function requireAccess(person: Person, episodeId: string | null): Promise<void> {
-	if (!can(person, PERMISSION)) {
-		throw new Problem('not-allowed', `The role ${person.role} may not do that (${PERMISSION}).`);
-	}
+	requirePermission(person, PERMISSION);
 	if (episodeId !== null) {
 		await accessEpisode(db(), person, episodeId, PERMISSION);
 	}
