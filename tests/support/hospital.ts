@@ -131,7 +131,7 @@ export async function addPatient(
 	const [id, episodeId, operationId] = [newId(), newId(), newId()];
 	const phone = given.phone === undefined ? newPhone() : given.phone;
 	const operatedAt = given.operatedAt ?? now - 2 * DAY;
-	const name = given.name ?? `Ide Quillfeather ${count}`;
+	const name = given.name ?? 'Ide Quillfeather';
 	await db()
 		.insert(patients)
 		.values({
