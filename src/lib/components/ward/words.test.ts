@@ -1,42 +1,38 @@
 import { describe, expect, it } from 'vitest';
 import { precautionsOf } from '$lib/domain/episodes/precautions';
-import type { EpisodeListItem } from '$lib/domain/episodes/views';
-import { bewareWords, escalationWords, procedureWords } from './words';
+import { escalationWords, procedureWords, wardBeware } from './words';
 
 const READER = { zone: 'Europe/Dublin', now: Date.parse('2026-03-03T09:00:00Z') };
 const STERNOTOMY = { approach: 'sternotomy', day: '2026-03-01' } as const;
-
-const item = (rest: Partial<EpisodeListItem>) => rest as EpisodeListItem;
+const NOTHING = precautionsOf(null, null, false);
 
 describe('procedureWords', () => {
 	it.each([
-		[null, null, 'no operation yet'],
-		['Bypass', null, 'Bypass planned'],
-		['Bypass', 0, 'Bypass, day 0'],
-		['Valve', 12, 'Valve, day 12']
-	])('%s, day %s: %s', (procedure, postOpDay, words) => {
-		expect(procedureWords(item({ procedure, postOpDay }))).toBe(words);
+		[null, null, 'No operation recorded'],
+		['Bypass', '2026-03-04T08:00:00Z', 'Bypass, before the operation'],
+		['Bypass', '2026-03-03T08:00:00Z', 'Bypass, day 0'],
+		['Valve', '2026-02-19T08:00:00Z', 'Valve, day 12']
+	])('%s of %s: %s', (procedure, operatedAt, words) => {
+		expect(procedureWords({ procedure, operatedAt }, READER)).toBe(words);
 	});
 });
 
-describe('bewareWords', () => {
+describe('wardBeware', () => {
 	it.each([
-		[true, 'arms to 45°, precautions: ask about ending them Sun 26 Apr, rate-slowing drug'],
-		[false, 'arms to 45°, precautions: ask about ending them Sun 26 Apr'],
-		[null, 'arms to 45°, precautions: ask about ending them Sun 26 Apr, rate-slowing drug: not known']
-	])('after a sternotomy, drug %s: %s', (betaBlocked, words) => {
+		[true, ['rate-slowing drug']],
+		[false, []],
+		[null, ['rate-slowing drug: not known']]
+	])('without precautions, drug %s: %j', (betaBlocked, words) => {
+		expect(wardBeware({ precautions: NOTHING, betaBlocked }, READER)).toEqual(words);
+	});
+
+	it('names precautions before the drug', () => {
 		const precautions = precautionsOf(STERNOTOMY, null, false);
-		expect(bewareWords(item({ precautions, betaBlocked }), READER).join(', ')).toBe(words);
-	});
-
-	it('say nothing where there is nothing to beware of', () => {
-		const precautions = precautionsOf(null, null, false);
-		expect(bewareWords(item({ precautions, betaBlocked: false }), READER)).toEqual([]);
-	});
-
-	it('give the limit of a cleared arm stage', () => {
-		const precautions = precautionsOf(STERNOTOMY, { maxElevationDeg: 90 }, false);
-		expect(bewareWords(item({ precautions, betaBlocked: false }), READER)[0]).toBe('arms to 90°');
+		expect(wardBeware({ precautions, betaBlocked: true }, READER)).toEqual([
+			'Sternal precautions, end due Sun 26 Apr',
+			'arms to 45°',
+			'rate-slowing drug'
+		]);
 	});
 });
 
@@ -45,6 +41,6 @@ describe('escalationWords', () => {
 		['raised', null, ', nobody has it'],
 		['taken', 'R. Ferris', ', taken by R. Ferris']
 	] as const)('%s by %s: %s', (state, takenBy, words) => {
-		expect(escalationWords({ id: 'x', grade: 'high', state, takenBy })).toBe(words);
+		expect(escalationWords({ state, takenBy })).toBe(words);
 	});
 });

@@ -1,32 +1,33 @@
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
-import { shortDay, type Reader } from '$lib/format';
+import type { Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
+import { bewareWords, dayWords } from '../patient/words';
 
-/** What was operated and how long ago: `Bypass, day 4`; what is known of it, or that nothing is. */
-export function procedureWords({ procedure, postOpDay }: EpisodeListItem): string {
-	if (procedure === null) {
-		return m.home_ward_no_operation();
-	}
-	return postOpDay === null
-		? m.home_ward_before_operation({ procedure })
-		: m.home_ward_day({ procedure, day: postOpDay });
+/** What was operated and how long ago: `Bypass, day 4`. */
+export function procedureWords(
+	item: Pick<EpisodeListItem, 'procedure' | 'operatedAt'>,
+	reader: Reader
+): string {
+	return [item.procedure, dayWords(item, reader)].filter(Boolean).join(', ');
 }
 
-/** What to beware of, most binding first: arms, when to ask about ending it, the drug that slows the heart. */
-export function bewareWords({ precautions, betaBlocked }: EpisodeListItem, reader: Reader): string[] {
-	const { sternal, maxElevationDeg, endDue } = precautions;
+/** Precautions and the drug that slows the heart, where there are any; a drug nobody knows of is judged as given. */
+export function wardBeware(
+	{ precautions, betaBlocked }: Pick<EpisodeListItem, 'precautions' | 'betaBlocked'>,
+	reader: Reader
+): string[] {
+	const drug = { true: m.patient_drug_yes, false: null, null: m.patient_drug_unknown }[`${betaBlocked}`];
 	return [
-		sternal && maxElevationDeg !== null ? m.home_ward_arms({ degrees: maxElevationDeg }) : '',
-		sternal && endDue !== null ? m.home_ward_precautions({ day: shortDay(endDue, reader) }) : '',
-		DRUG[String(betaBlocked)]?.() ?? ''
-	].filter((words) => words !== '');
+		...(precautions.sternal ? bewareWords(precautions, reader) : []),
+		...(drug === null ? [] : [drug()])
+	];
 }
 
-/** Not known is judged as given, so it is said. */
-const DRUG: Record<string, () => string> = { true: m.home_ward_drug, null: m.home_ward_drug_unknown };
-
-/** Whether somebody has the escalation. */
-export function escalationWords({ state, takenBy }: NonNullable<EpisodeListItem['escalation']>): string {
+/** Whether somebody has the escalation; it follows the word of the grade. */
+export function escalationWords({
+	state,
+	takenBy
+}: Pick<NonNullable<EpisodeListItem['escalation']>, 'state' | 'takenBy'>): string {
 	return state === 'raised' || takenBy === null
 		? m.home_ward_escalation_untaken()
 		: m.home_ward_escalation_taken({ name: takenBy });

@@ -1,0 +1,106 @@
+/**
+ * Admission as a page asks for it: flat, in wall time, everything a text. `toAdmission` makes of it the body of
+ * the JSON API, whose checks have the last word.
+ */
+import { z } from 'zod';
+import { APPROACHES, LEVELS, RHYTHMS, SEXES, isOneOf } from '../core/codes';
+import { text } from '../core/fields';
+import { toRfc3339 } from '../core/instant';
+import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
+import type { AdmitInput } from './forms';
+
+/** What is known about a drug that slows the heart: three answers, because not knowing is one. */
+export const DRUG_ANSWERS = ['yes', 'no', 'unknown'] as const;
+export type DrugAnswer = (typeof DRUG_ANSWERS)[number];
+
+const line = (field: string, max: number) =>
+	z.string().trim().max(max, `${field} has at most ${max} characters.`).default('');
+const chosen = <T extends string>(list: readonly T[], message: string) =>
+	z
+		.string()
+		.default('')
+		.refine((value) => isOneOf(list, value), message);
+const known = <T extends string>(list: readonly T[], field: string) =>
+	z
+		.string()
+		.default('')
+		.refine((value) => value === '' || isOneOf(list, value), `${field} is not one of the list.`);
+
+export const admitForm = z
+	.object({
+		name: text('Name', 120).default(''),
+		birthDate: z
+			.string()
+			.default('')
+			.refine(isLocalDate, 'Birth date: write a day that exists, such as 1958-09-05.'),
+		sex: chosen(SEXES, 'Sex: choose one.'),
+		mrn: text('Hospital number', 40).default(''),
+		phone: line('Telephone', 30),
+		smsConsent: z.boolean().default(false),
+		unit: z.string().min(1, 'Unit: choose one.').max(64).default(''),
+		bed: text('Bed', 12).default(''),
+		procedure: line('Procedure', 120),
+		approach: known(APPROACHES, 'Approach'),
+		operatedOn: line('Day of the operation', 10),
+		operatedTime: line('Time of the operation', 5),
+		surgeonId: line('Surgeon', 120),
+		level: chosen(LEVELS.map(String), 'Level: choose 1 to 6.').default('1'),
+		betaBlocked: chosen(DRUG_ANSWERS, 'Rate-slowing drug: choose one.').default('unknown'),
+		rhythm: known(RHYTHMS, 'Rhythm')
+	})
+	.superRefine((form, context) => {
+		for (const [field, message] of operationProblems(form)) {
+			context.addIssue({ code: 'custom', path: [field], message, input: form[field] });
+		}
+	});
+export type AdmitForm = z.infer<typeof admitForm>;
+
+type OperationFields = Pick<AdmitForm, 'procedure' | 'approach' | 'operatedOn' | 'operatedTime'>;
+
+/** An operation is given whole or not at all: day, precautions and clearances count from it. */
+function operationProblems(form: OperationFields): [keyof OperationFields, string][] {
+	const { procedure, approach, operatedOn, operatedTime } = form;
+	if ([procedure, approach, operatedOn, operatedTime].every((value) => value === '')) {
+		return [];
+	}
+	const problems: [keyof OperationFields, boolean, string][] = [
+		['procedure', procedure !== '', 'Procedure: say which operation, or leave all four fields empty.'],
+		['approach', approach !== '', 'Approach: choose one, or leave all four fields empty.'],
+		['operatedOn', isLocalDate(operatedOn), 'Day of the operation: write a day such as 2026-03-01.'],
+		['operatedTime', isLocalTime(operatedTime), 'Time of the operation: write it from 00:00 to 23:59.']
+	];
+	return problems.flatMap(([field, right, message]) => (right ? [] : [[field, message]]));
+}
+
+/** What is sent to the JSON API of a form that is valid; `AdmitInput` once `admitBody` has read it. */
+export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInput, unknown> {
+	return {
+		patient: {
+			name: form.name,
+			birthDate: form.birthDate,
+			sex: form.sex,
+			mrn: form.mrn,
+			phone: form.phone || undefined,
+			smsConsent: form.smsConsent
+		},
+		operation: form.procedure
+			? {
+					procedure: form.procedure,
+					approach: form.approach,
+					operatedAt: toRfc3339(instantOf(form.operatedOn, form.operatedTime, zone))
+				}
+			: undefined,
+		surgeonId: form.surgeonId || undefined,
+		unit: form.unit,
+		bed: form.bed,
+		level: Number(form.level),
+		betaBlocked: { yes: true, no: false }[form.betaBlocked] ?? null,
+		rhythm: form.rhythm || undefined
+	};
+}
+
+/** The field of the form that a pointer into the body of the JSON API means: `/patient/mrn` is `mrn`. */
+export function formFieldOf(pointer: string): string {
+	const field = pointer.split('/').at(-1) ?? '';
+	return field === 'operatedAt' ? 'operatedOn' : field;
+}
