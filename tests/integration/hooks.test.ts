@@ -177,6 +177,14 @@ describe('YES', () => {
 		expect(await answers(sid)).toMatchObject([{ patientId: patient.id, state: 'ready' }]);
 	});
 
+	it('confirms nothing that the patient was not reminded of yet', async () => {
+		const { patient, episodeId } = await addPatient({ unitId: hospital.units.ward });
+		const visitId = await addVisit({ ...hospital, episodeId });
+		await addReminder(visitId, patient.id, { notBefore: HOSPITAL_NOW + HOUR });
+		await say(patient.phone, 'YES');
+		expect(await stateOf(visitId)).toBe('planned');
+	});
+
 	it('rewords the reminders that are still to come', async () => {
 		const { patient, visitId } = await reminded();
 		const next = await addReminder(visitId, patient.id, { notBefore: HOSPITAL_NOW + HOUR });

@@ -219,6 +219,45 @@ describe('F3: a worker that is killed', () => {
 		]);
 	});
 
+	it('that was only slow does not undo what another worker did meanwhile', async () => {
+		const id = await reminder();
+		const slow = sms;
+		slow.hold();
+		slow.script = [transient()];
+		const late = worker({ sms: slow }).settle();
+		while (slow.sent.length === 0) {
+			await new Promise((resolve) => setImmediate(resolve));
+		}
+		now = HOSPITAL_NOW + MINUTE;
+		const quick = new ScriptedChannel();
+		await worker({ sms: quick }).settle();
+		slow.release();
+		await late;
+		expect(await rowOf(id)).toMatchObject({ state: 'accepted', providerId: 'id-1', leaseOwner: null });
+		expect((await attemptsOf(id)).map(({ outcome }) => outcome)).toEqual([
+			'unknown',
+			'accepted',
+			'transient'
+		]);
+		const events = await db().select().from(liveEvents).where(eq(liveEvents.subjectId, id));
+		expect(events.map(({ kind }) => kind)).toEqual(['sending', 'sending', 'accepted']);
+	});
+
+	it('is not suspected by itself when the clock jumps while it sends', async () => {
+		await reminder();
+		sms.hold();
+		const one = worker();
+		const first = one.settle();
+		while (sms.sent.length === 0) {
+			await new Promise((resolve) => setImmediate(resolve));
+		}
+		now += HOUR;
+		const second = one.settle();
+		sms.release();
+		await Promise.all([first, second]);
+		expect(sms.sent).toHaveLength(1);
+	});
+
 	it('does not take the same text of an earlier message for its own', async () => {
 		const first = await reminder({ body: 'The same words.' });
 		await worker().settle();
