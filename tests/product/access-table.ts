@@ -44,6 +44,7 @@ export const API: Record<string, Row> = {
 		answers: [422]
 	},
 	'POST /api/episodes/[id]/escalations': { roles: CLINICAL, answers: [422] },
+	'GET /api/episodes/[id]/visits': { roles: SEEING, answers: [404] },
 	'POST /api/episodes/[id]/visits': { roles: ['coordinator', 'therapist'], answers: [422] },
 	'POST /api/referrals/[id]/accept': { roles: ['therapist', 'speech-therapist'], answers: [404] },
 	'POST /api/referrals/[id]/decline': { roles: ['therapist', 'speech-therapist'], answers: [422] },

@@ -5,6 +5,7 @@ import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { ThreadView } from '$lib/domain/referrals/views';
+import type { VisitItem } from '$lib/domain/visits/views';
 import { getJson } from './api';
 
 /**
@@ -34,6 +35,11 @@ export const queries = {
 		query(['clearance', id], `/api/clearances/${id}`, initial),
 	sessions: (episodeId: string, initial: List<SessionLine>) =>
 		query(['sessions', episodeId], `/api/episodes/${episodeId}/sessions`, initial),
+	/** The visits of a week that begins on `from`, a Monday as `YYYY-MM-DD`. */
+	visits: (from: string, initial: List<VisitItem>) =>
+		query(['visits', from], `/api/visits?limit=200&from=${from}`, initial),
+	patientVisits: (episodeId: string, initial: List<VisitItem>) =>
+		query(['visits', 'of', episodeId], `/api/episodes/${episodeId}/visits`, initial),
 	escalation: (id: string, initial: EscalationView) =>
 		query(['escalation', id], `/api/escalations/${id}`, initial)
 };

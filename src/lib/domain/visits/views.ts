@@ -11,6 +11,12 @@ export interface ReminderFate {
 	sentAt: string | null;
 }
 
+/** What the patient answered to a reminder, and when (RFC 3339). */
+export interface PatientAnswer {
+	at: string;
+	yes: boolean;
+}
+
 /** One visit of the week, for those who plan and receive it. Instants are RFC 3339. */
 export interface VisitItem {
 	id: string;
@@ -28,4 +34,6 @@ export interface VisitItem {
 	/** The same for all visits that were booked together. */
 	seriesId: string | null;
 	reminders: ReminderFate[];
+	/** The last yes or no by text; null while there is none. */
+	answer: PatientAnswer | null;
 }

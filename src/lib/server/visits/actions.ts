@@ -15,7 +15,7 @@ import { write, type Written } from '../write';
 import { moveVisit, type MovedVisit, type VisitRow } from './move';
 import { tellReferrer } from './notify';
 import { findPlace, plannedVisits } from './plan';
-import { visitLine } from './queries';
+import { visitLine } from './items';
 import { patientOfEpisode, remindOf } from './remind';
 import { bookedText } from './words';
 

@@ -2,16 +2,15 @@ import { and, asc, eq, gte, inArray, lt, sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { invalidField } from '$lib/domain/core/errors';
-import { toRfc3339 } from '$lib/domain/core/instant';
 import type { VisitLine } from '$lib/domain/episodes/views';
 import { RangeProblem, visitRange, type VisitRange } from '$lib/domain/visits/range';
-import type { ReminderFate, VisitItem } from '$lib/domain/visits/views';
+import type { VisitItem } from '$lib/domain/visits/views';
+import { accessEpisode } from '../access/access';
 import { db, type Reader } from '../db';
-import { episodes, outbox, patients, reminders, visits } from '../db/schema';
+import { episodes, patients, visits } from '../db/schema';
 import { env } from '../env';
 import { MAX_LIMIT, page, type Page, type PageRequest } from '../http/paging';
-
-type VisitRow = typeof visits.$inferSelect;
+import { visitItems, visitLine } from './items';
 
 /** The visits of one episode, oldest first, for the nameboard. The caller has checked the access. */
 export async function visitsOfEpisode(reader: Reader, episodeId: string): Promise<VisitLine[]> {
@@ -21,10 +20,6 @@ export async function visitsOfEpisode(reader: Reader, episodeId: string): Promis
 		.where(eq(visits.episodeId, episodeId))
 		.orderBy(asc(visits.startsAt), asc(visits.id));
 	return rows.map(visitLine);
-}
-
-export function visitLine({ id, startsAt, minutes, place, state }: VisitRow): VisitLine {
-	return { id, startsAt: toRfc3339(startsAt), minutes, place, state };
 }
 
 /**
@@ -72,11 +67,22 @@ export async function listVisits(
 		.orderBy(asc(visits.startsAt), asc(visits.id))
 		.limit(request.limit + 1);
 	const { items, next } = page(rows, request, ({ visit }) => visit.id);
-	const fates = await fatesOf(items.map(({ visit }) => visit.id));
-	return {
-		items: items.map(({ visit, patient }) => toItem(visit, patient, fates.get(visit.id) ?? [])),
-		next
-	};
+	return { items: await visitItems(items), next };
+}
+
+/**
+ * All visits of one episode, oldest first, as the list has them.
+ * @throws Problem `not-found` outside the person's units
+ */
+export async function visitItemsOf(person: Person, episodeId: string): Promise<Page<VisitItem>> {
+	const episode = await accessEpisode(db(), person, episodeId, 'visit.read');
+	const rows = await db()
+		.select({ visit: visits, patient: patients })
+		.from(visits)
+		.innerJoin(patients, eq(patients.id, episode.patientId))
+		.where(eq(visits.episodeId, episodeId))
+		.orderBy(asc(visits.startsAt), asc(visits.id));
+	return { items: await visitItems(rows), next: null };
 }
 
 async function afterVisit(id: string) {
@@ -85,44 +91,4 @@ async function afterVisit(id: string) {
 		throw invalidField('/after', `after is '${id.slice(0, 40)}': it must be the next of an earlier answer.`);
 	}
 	return sql`(${visits.startsAt}, ${visits.id}) > (${row.startsAt}, ${id})`;
-}
-
-async function fatesOf(visitIds: string[]): Promise<Map<string, ReminderFate[]>> {
-	const rows = await db()
-		.select({
-			visitId: reminders.visitId,
-			dueAt: reminders.dueAt,
-			state: outbox.state,
-			reason: outbox.stateReason,
-			sentAt: outbox.sentAt
-		})
-		.from(reminders)
-		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
-		.where(inArray(reminders.visitId, visitIds))
-		.orderBy(asc(reminders.dueAt));
-	const fates = new Map<string, ReminderFate[]>();
-	for (const { visitId, dueAt, state, reason, sentAt } of rows) {
-		const fate = {
-			dueAt: toRfc3339(dueAt),
-			state,
-			reason,
-			sentAt: sentAt === null ? null : toRfc3339(sentAt)
-		};
-		fates.set(visitId, [...(fates.get(visitId) ?? []), fate]);
-	}
-	return fates;
-}
-
-function toItem(visit: VisitRow, patient: typeof patients.$inferSelect, fates: ReminderFate[]): VisitItem {
-	const { id, name, mrn, birthDate, sex } = patient;
-	return {
-		...visitLine(visit),
-		episodeId: visit.episodeId,
-		patient: { id, name, mrn, birthDate, sex },
-		unitId: visit.unitId,
-		reason: visit.reason,
-		wantsFollowUp: visit.patientCancelledAt !== null && visit.followedUpAt === null,
-		seriesId: visit.seriesId,
-		reminders: fates
-	};
 }
