@@ -18,6 +18,7 @@ export const API: Record<string, Row> = {
 	'DELETE /api/session': { roles: 'signed-in', answers: [204] },
 	'GET /api/me': { roles: 'signed-in', answers: [200] },
 	'GET /api/live': { roles: 'signed-in', answers: [200] },
+	'GET /api/openapi.json': { roles: 'everyone', answers: [200] },
 	'GET /api/activities': { roles: 'signed-in', answers: [200] },
 	'POST /api/assess': { roles: 'signed-in', answers: [422] },
 	'POST /api/calculate/early-warning': { roles: 'signed-in', answers: [422] },

@@ -25,19 +25,32 @@ interface Writing<B, T> {
 	run(context: PersonContext, input: B, event: RequestEvent): Promise<Written<T>>;
 }
 
+/** What the description of the API says about a handler; read by `openapi.ts`. */
+export interface Described {
+	permission: Permission;
+	body: z.ZodType | null;
+	statuses: readonly number[];
+	/** Whether a client's key makes it idempotent. */
+	stores: boolean;
+}
+
+export type Handler = ((event: RequestEvent) => Promise<Response>) & { described: Described };
+
 /** A GET of the JSON API: who, may they, answer. */
-export function reading<T>(spec: Reading<T>) {
-	return (event: RequestEvent): Promise<Response> =>
+export function reading<T>(spec: Reading<T>): Handler {
+	const handler = (event: RequestEvent): Promise<Response> =>
 		answering(async () => {
 			const context = requirePerson(event.locals.context);
 			refuseRole(context, spec.permission);
 			return jsonResponse(200, await spec.run(context, event));
 		});
+	const described = { permission: spec.permission, body: null, statuses: [200], stores: false };
+	return Object.assign(handler, { described });
 }
 
 /** A POST of the JSON API: who, may they, parse, act under the client's key, answer. */
-export function writing<B, T>(spec: Writing<B, T>) {
-	return (event: RequestEvent): Promise<Response> =>
+export function writing<B, T>(spec: Writing<B, T>): Handler {
+	const handler = (event: RequestEvent): Promise<Response> =>
 		answering(async () => {
 			const context = requirePerson(event.locals.context);
 			refuseRole(context, spec.permission);
@@ -50,15 +63,20 @@ export function writing<B, T>(spec: Writing<B, T>) {
 			const status = typeof spec.status === 'function' ? spec.status(result) : (spec.status ?? 200);
 			return jsonResponse(status, result, replayed);
 		});
+	// A status that the answer decides is 201 for something new and 200 for an addition to what is there.
+	const statuses = typeof spec.status === 'function' ? [200, 201] : [spec.status ?? 200];
+	const described = { permission: spec.permission, body: spec.body, statuses, stores: true };
+	return Object.assign(handler, { described });
 }
 
 /** A POST that computes and stores nothing: anybody signed in may ask. */
-export function computing<B>(body: z.ZodType<B>, compute: (input: B) => unknown) {
-	return writing({
+export function computing<B>(body: z.ZodType<B>, compute: (input: B) => unknown): Handler {
+	const handler = writing({
 		permission: 'own-account.change',
 		body,
 		run: (_context, input) => Promise.resolve({ result: compute(input), replayed: false })
 	});
+	return Object.assign(handler, { described: { ...handler.described, stores: false } });
 }
 
 /** Run a handler and turn what it throws into problem+json. */
