@@ -252,10 +252,15 @@ describe('F3: a worker that is killed', () => {
 			await new Promise((resolve) => setImmediate(resolve));
 		}
 		now += HOUR;
+		const later = await reminder();
 		const second = one.settle();
+		while (sms.sent.length === 1) {
+			await new Promise((resolve) => setImmediate(resolve));
+		}
 		sms.release();
 		await Promise.all([first, second]);
-		expect(sms.sent).toHaveLength(1);
+		expect(sms.sent).toHaveLength(2);
+		expect(sms.sent[1]?.id).toBe(later);
 	});
 
 	it('does not take the same text of an earlier message for its own', async () => {
