@@ -16,7 +16,8 @@ export function settleMessage(context: PersonContext, id: string): Promise<Writt
 	return write(context, PERMISSION, async (tx) => {
 		const [row] = await tx.select().from(outbox).where(eq(outbox.id, id));
 		const episodeId = row ? await episodeOfMessage(tx, row) : null;
-		await requireAccess(tx, context, row !== undefined, episodeId);
+		// What goes to accounts is the administrator's.
+		await requireAccess(tx, context, row !== undefined && row.refKind !== 'account', episodeId);
 		const failed = row?.state === 'failed' || row?.state === 'undelivered';
 		if (!row || !failed || row.handledAt !== null) {
 			throw new Problem('wrong-state', 'Nothing waits to be seen to about this message.', {
