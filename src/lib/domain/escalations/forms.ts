@@ -36,3 +36,19 @@ export const settleBody = z.strictObject({
 });
 
 export const emptyBody = z.strictObject({});
+
+/** The form of the escalation page; the same fields as the JSON call. */
+export const takeForm = z.object({ etaMinutes: takeBody.shape.etaMinutes });
+
+/**
+ * The form that raises one. `grade` may come empty, so that a page can ask for it without proposing one; the
+ * action refuses it then.
+ */
+export const raiseForm = z.object({
+	grade: z.enum(['', ...GRADES], `grade is one of ${GRADES.join(', ')}.`).default(''),
+	situation: raiseBody.shape.situation,
+	background: raiseBody.shape.background,
+	assessment: raiseBody.shape.assessment,
+	request: raiseBody.shape.request,
+	sessionId: raiseBody.shape.sessionId
+});
