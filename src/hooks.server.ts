@@ -17,8 +17,8 @@ import { startServer } from '$lib/server/start';
 /** Runs once, before the first request is answered. */
 export const init: ServerInit = () => startServer();
 
-/** Addresses that are asked often and tell nothing: health checks and files of the build. */
-const UNCOUNTED = /^\/(healthz|readyz|metrics|_app\/)/;
+/** Asked often, by machines: health checks, files of the build, and the gateway, which does not send a refused status again. */
+const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
 
 const identify: Handle = async ({ event, resolve }) => {
 	const { cookies, request } = event;
