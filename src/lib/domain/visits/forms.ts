@@ -7,13 +7,9 @@ import { reason, text } from '../core/fields';
 import { isRfc3339, parseRfc3339 } from '../core/instant';
 import { WEEKDAYS, addDays, isLocalDate, isLocalTime, localDateOf } from '../core/time';
 import type { Instant, Zone } from '../core/time';
+import { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN, PLACE_MAX } from './limits';
 
-export const MINUTES_MIN = 10;
-export const MINUTES_MAX = 240;
-export const COUNT_MAX = 60;
-export const PLACE_MAX = 80;
-/** How far ahead a visit may be booked: two years, so that the yearly check fits and a slip in the year shows. */
-export const DAYS_AHEAD_MAX = 731;
+export { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN, PLACE_MAX };
 
 function wholeNumber(field: string, low: number, high: number) {
 	const error = ({ input }: { input?: unknown }) =>

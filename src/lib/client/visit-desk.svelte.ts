@@ -1,0 +1,85 @@
+import type { QueryClient } from '@tanstack/svelte-query';
+import type { VisitLine } from '$lib/domain/episodes/views';
+import type { VisitMove } from '$lib/domain/visits/states';
+import type { VisitItem } from '$lib/domain/visits/views';
+import { m } from '$lib/i18n/paraglide/messages';
+import { ApiProblem } from './api';
+import { Deeds, problemWords, type ProblemWords } from './deeds.svelte';
+
+/** What is done about visits from a page: moved on, booked, followed up; and what became of it. */
+export class VisitDesk {
+	/** Why the last thing was not done; null when it was. */
+	problem = $state<ProblemWords | null>(null);
+	/** What is wrong with the fields of a booking, by their pointer without the leading slash. */
+	fields = $state<Record<string, string>>({});
+	/** What was done last, in words. */
+	done = $state('');
+
+	#deeds = new Deeds();
+
+	constructor(private readonly client: QueryClient) {}
+
+	isMoving(visit: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up'): boolean {
+		return this.#deeds.isPending(pathOf(visit, move));
+	}
+
+	isBooking(episodeId: string): boolean {
+		return this.#deeds.isPending(bookingPath(episodeId));
+	}
+
+	/** Answers whether it was done. */
+	move(visit: VisitItem, move: VisitMove, reason?: string): Promise<boolean> {
+		const body = reason === undefined ? {} : { reason };
+		return this.#attempt(async () => {
+			await this.#deeds.post(pathOf(visit, move), body);
+			return '';
+		});
+	}
+
+	/** Nothing more is to be done about a visit that the patient cancelled. */
+	followUp(visit: VisitItem): Promise<boolean> {
+		return this.#attempt(async () => {
+			await this.#deeds.post(pathOf(visit, 'follow-up'));
+			return m.visits_done_followed_up();
+		});
+	}
+
+	book(episodeId: string, body: Record<string, unknown>): Promise<boolean> {
+		return this.#attempt(async () => {
+			const { items } = await this.#deeds.post<{ items: VisitLine[] }>(bookingPath(episodeId), body);
+			return m.visits_done_booked({ count: items.length });
+		});
+	}
+
+	/** Forget what became of the last thing. */
+	clear(): void {
+		this.problem = null;
+		this.fields = {};
+		this.done = '';
+	}
+
+	/** Whatever came of it, the page is fetched anew: of two who move a visit at once one was faster. */
+	async #attempt(work: () => Promise<string>): Promise<boolean> {
+		this.clear();
+		try {
+			this.done = await work();
+			return true;
+		} catch (error) {
+			this.problem = problemWords(error);
+			this.fields = error instanceof ApiProblem ? error.fields : {};
+			return false;
+		} finally {
+			for (const queryKey of [['visits'], ['episode'], ['loose-ends']]) {
+				void this.client.invalidateQueries({ queryKey });
+			}
+		}
+	}
+}
+
+function pathOf({ id }: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up'): string {
+	return `/api/visits/${id}/${move}`;
+}
+
+function bookingPath(episodeId: string): string {
+	return `/api/episodes/${episodeId}/visits`;
+}

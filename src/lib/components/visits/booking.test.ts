@@ -1,0 +1,107 @@
+import { describe, expect, it } from 'vitest';
+import { bookVisitsBody } from '$lib/domain/visits/forms';
+import { bookingField, emptyDraft, planOf, type BookingDraft } from './booking';
+
+const ZONE = 'Europe/Dublin';
+/** A Tuesday, 09:00 in Dublin. */
+const NOW = Date.parse('2026-03-03T09:00:00Z');
+
+const SINGLE: BookingDraft = { ...emptyDraft('east-gym'), date: '2026-03-06', time: '10:00' };
+const SERIES: BookingDraft = {
+	...SINGLE,
+	kind: 'series',
+	date: '2026-03-04',
+	weekdays: ['mon', 'wed', 'fri'],
+	count: 4
+};
+
+const plan = (change: Partial<BookingDraft>, base = SINGLE) => planOf({ ...base, ...change }, ZONE, NOW);
+
+describe('a single visit', () => {
+	it('is planned on its day and asked for as an instant', () => {
+		const { planned, problems, body } = plan({});
+		expect(planned.map(({ localDate, localTime }) => `${localDate} ${localTime}`)).toEqual([
+			'2026-03-06 10:00'
+		]);
+		expect(problems).toEqual({});
+		expect(body).toEqual({ startsAt: '2026-03-06T10:00:00.000Z', minutes: 60, place: 'east-gym' });
+	});
+
+	it('is an hour earlier in UTC once the clock has changed', () => {
+		expect(plan({ date: '2026-03-30' }).body).toMatchObject({ startsAt: '2026-03-30T09:00:00.000Z' });
+	});
+});
+
+describe('a series', () => {
+	it('names its days before anything is booked', () => {
+		const { planned, body } = plan({}, SERIES);
+		expect(planned.map(({ localDate }) => localDate)).toEqual([
+			'2026-03-04',
+			'2026-03-06',
+			'2026-03-09',
+			'2026-03-11'
+		]);
+		expect(body).toEqual({
+			series: {
+				from: '2026-03-04',
+				weekdays: ['mon', 'wed', 'fri'],
+				time: '10:00',
+				count: 4,
+				minutes: 60,
+				place: 'east-gym'
+			}
+		});
+	});
+
+	it.each([SINGLE, SERIES])('makes a body that the JSON API takes', (draft) => {
+		expect(bookVisitsBody.safeParse(planOf(draft, ZONE, NOW).body).success).toBe(true);
+	});
+});
+
+describe('what is wrong', () => {
+	it.each<[Partial<BookingDraft>, BookingDraft, string[]]>([
+		[{ date: '' }, SINGLE, ['date']],
+		[{ date: '2026-02-29' }, SINGLE, ['date']],
+		[{ time: '24:00' }, SINGLE, ['time']],
+		[{ minutes: null }, SINGLE, ['minutes']],
+		[{ minutes: 9 }, SINGLE, ['minutes']],
+		[{ minutes: 10 }, SINGLE, []],
+		[{ minutes: 240 }, SINGLE, []],
+		[{ minutes: 241 }, SINGLE, ['minutes']],
+		[{ minutes: 45.5 }, SINGLE, ['minutes']],
+		[{ place: '' }, SINGLE, ['place']],
+		[{ weekdays: [], count: 0 }, SINGLE, []],
+		[{ weekdays: [] }, SERIES, ['weekdays']],
+		[{ count: 0 }, SERIES, ['count']],
+		[{ count: 1 }, SERIES, []],
+		[{ count: 60 }, SERIES, []],
+		[{ count: 61 }, SERIES, ['count']],
+		// Today at 08:59 has passed, at 09:00 has not.
+		[{ date: '2026-03-03', time: '08:59' }, SINGLE, ['date']],
+		[{ date: '2026-03-03', time: '09:00' }, SINGLE, []],
+		// Two years and a day ahead, 731 days, is the last day.
+		[{ date: '2028-03-03' }, SINGLE, []],
+		[{ date: '2028-03-04' }, SINGLE, ['date']]
+	])('%j', (change, base, fields) => {
+		const { problems, body } = plan(change, base);
+		expect(Object.keys(problems)).toEqual(fields);
+		expect(body === null).toBe(fields.length > 0);
+	});
+
+	it('still shows the days of a series whose length in minutes is missing', () => {
+		expect(plan({ minutes: null }, SERIES).planned).toHaveLength(4);
+	});
+});
+
+describe('bookingField', () => {
+	it.each([
+		['/startsAt', 'date'],
+		['/series/from', 'date'],
+		['/series/time', 'time'],
+		['/minutes', 'minutes'],
+		['/series/place', 'place'],
+		['/series/weekdays/0', 'date']
+	])('%s is %s', (pointer, field) => {
+		expect(bookingField(pointer)).toBe(field);
+	});
+});

@@ -1,0 +1,110 @@
+/** A booking while it is typed: what it would make, what is wrong with it, and the body that asks for it. */
+import { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN } from '$lib/domain/visits/limits';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import {
+	addDays,
+	isLocalDate,
+	isLocalTime,
+	localDateOf,
+	type Weekday,
+	type Zone
+} from '$lib/domain/core/time';
+import { planSeries, type PlannedVisit } from '$lib/domain/visits/series';
+import { day } from '$lib/format';
+import { m } from '$lib/i18n/paraglide/messages';
+
+/** What the fields hold; `date` is the day of a single visit, or the day from which a series counts. */
+export interface BookingDraft {
+	kind: 'single' | 'series';
+	date: string;
+	time: string;
+	minutes: number | null;
+	/** Identifier of the unit. */
+	place: string;
+	weekdays: Weekday[];
+	count: number | null;
+}
+
+export type BookingProblems = Partial<Record<keyof BookingDraft, string>>;
+
+export interface BookingPlan {
+	/** The visits it would make, in order; empty while they cannot be told. */
+	planned: PlannedVisit[];
+	problems: BookingProblems;
+	/** What to post; null while something is wrong. */
+	body: Record<string, unknown> | null;
+}
+
+export function emptyDraft(place: string): BookingDraft {
+	return { kind: 'single', date: '', time: '', minutes: 60, place, weekdays: [], count: 12 };
+}
+
+/** Work a draft out in the hospital's wall time, as the server will. */
+export function planOf(draft: BookingDraft, zone: Zone, now: number): BookingPlan {
+	const problems = fieldProblems(draft);
+	const datable = !(['date', 'time', 'weekdays', 'count'] as const).some((field) => problems[field]);
+	const planned = datable ? planSeries(seriesOf(draft), zone) : [];
+	const outside = rangeProblem(planned, zone, now);
+	const all = outside ? { ...problems, ...outside } : problems;
+	return { planned, problems: all, body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned) };
+}
+
+/** The field that an error of the server is about. */
+export function bookingField(pointer: string): keyof BookingDraft {
+	const field = pointer.split('/').at(-1) ?? '';
+	const known = ['time', 'minutes', 'place', 'weekdays', 'count'] as const;
+	return known.find((name) => name === field) ?? 'date';
+}
+
+function seriesOf({ kind, date, time, minutes, weekdays, count }: BookingDraft) {
+	const single = { from: date, weekdays: EVERY_DAY, count: 1 };
+	const series = { from: date, weekdays, count: count ?? 0 };
+	return { ...(kind === 'single' ? single : series), time, minutes: minutes ?? 0 };
+}
+
+const EVERY_DAY = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'] as const;
+
+function fieldProblems(draft: BookingDraft): BookingProblems {
+	const series = draft.kind === 'series';
+	const checks: [keyof BookingDraft, boolean, () => string][] = [
+		['date', isLocalDate(draft.date), m.visits_problem_date],
+		['time', isLocalTime(draft.time), m.visits_problem_time],
+		[
+			'minutes',
+			isWhole(draft.minutes, MINUTES_MIN, MINUTES_MAX),
+			() => m.visits_problem_minutes({ min: MINUTES_MIN, max: MINUTES_MAX })
+		],
+		['place', draft.place !== '', m.visits_problem_place],
+		['weekdays', !series || draft.weekdays.length > 0, m.visits_problem_weekdays],
+		['count', !series || isWhole(draft.count, 1, COUNT_MAX), () => m.visits_problem_count({ max: COUNT_MAX })]
+	];
+	return Object.fromEntries(checks.flatMap(([field, right, words]) => (right ? [] : [[field, words()]])));
+}
+
+function isWhole(value: number | null, min: number, max: number): boolean {
+	return value !== null && Number.isInteger(value) && value >= min && value <= max;
+}
+
+function rangeProblem(planned: readonly PlannedVisit[], zone: Zone, now: number): BookingProblems | null {
+	const [first] = planned;
+	const last = planned.at(-1);
+	if (!first || !last) {
+		return null;
+	}
+	if (first.startsAt < now) {
+		return { date: m.visits_problem_past() };
+	}
+	const latest = addDays(localDateOf(now, zone), DAYS_AHEAD_MAX);
+	return last.localDate > latest ? { date: m.visits_problem_far({ day: day(latest) }) } : null;
+}
+
+function bodyOf(draft: BookingDraft, planned: readonly PlannedVisit[]): Record<string, unknown> | null {
+	const [first] = planned;
+	const { kind, date, weekdays, time, count, minutes, place } = draft;
+	if (!first) {
+		return null;
+	}
+	return kind === 'single'
+		? { startsAt: toRfc3339(first.startsAt), minutes, place }
+		: { series: { from: date, weekdays, time, count, minutes, place } };
+}
