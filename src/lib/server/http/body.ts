@@ -2,6 +2,8 @@ import { Problem } from '$lib/domain/core/errors';
 
 /** Larger than any honest body of this API; uploads have a way of their own. */
 export const MAX_BODY_BYTES = 256 * 1024;
+/** A body up to here is read to its end before it is refused: else the client sees a cut connection, not the reason. */
+const READ_TO_END_BYTES = 448 * 1024;
 
 /**
  * The JSON body of a request. A missing body counts as `{}`, because several calls need none.
@@ -25,18 +27,19 @@ export async function readJson(request: Request): Promise<unknown> {
 
 /** Read at most {@link MAX_BODY_BYTES}, without trusting Content-Length, and refuse bytes that are not UTF-8. */
 export async function readLimited(request: Request): Promise<string> {
-	const tooLarge = () => new Problem('too-large', `The body has more than ${MAX_BODY_BYTES} bytes.`);
-	if (Number(request.headers.get('content-length') ?? 0) > MAX_BODY_BYTES) {
-		throw tooLarge();
-	}
 	const chunks: Uint8Array[] = [];
 	let size = 0;
 	for await (const chunk of request.body ?? []) {
 		size += chunk.byteLength;
-		if (size > MAX_BODY_BYTES) {
-			throw tooLarge();
+		if (size > READ_TO_END_BYTES) {
+			break;
 		}
-		chunks.push(chunk);
+		if (size <= MAX_BODY_BYTES) {
+			chunks.push(chunk);
+		}
+	}
+	if (size > MAX_BODY_BYTES) {
+		throw new Problem('too-large', `The body has more than ${MAX_BODY_BYTES} bytes.`);
 	}
 	try {
 		return new TextDecoder('utf-8', { fatal: true }).decode(Buffer.concat(chunks));
