@@ -21,7 +21,8 @@ export const API: Record<string, Row> = {
 	'GET /api/openapi.json': { roles: 'everyone', answers: [200] },
 	'GET /api/activities': { roles: 'signed-in', answers: [200] },
 	'POST /api/assess': { roles: 'signed-in', answers: [422] },
-	'POST /api/calculate/early-warning': { roles: 'signed-in', answers: [422] },
+	// A score with everything missing is an answer of its own: no total, and what is missing.
+	'POST /api/calculate/early-warning': { roles: 'signed-in', answers: [200] },
 	'POST /api/calculate/energy': { roles: 'signed-in', answers: [422] },
 	'POST /api/calculate/heart-rate-target': { roles: 'signed-in', answers: [422] },
 	'POST /api/calculate/pressures': { roles: 'signed-in', answers: [422] },
