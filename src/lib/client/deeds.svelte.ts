@@ -1,4 +1,5 @@
 import { SvelteSet } from 'svelte/reactivity';
+import { when, type Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 import { ApiProblem, newKey, postJson } from './api';
 
@@ -53,8 +54,11 @@ export interface ProblemWords {
 	signIn: boolean;
 }
 
-/** What happened, whether what was typed is safe, and what to do now. Rethrows what is no problem of the API. */
-export function problemWords(error: unknown): ProblemWords {
+/**
+ * What happened, whether what was typed is safe, and what to do now. Rethrows what is no problem of the API.
+ * @param reader for whom times are put into words; without one they stand as the server gave them
+ */
+export function problemWords(error: unknown, reader?: Reader): ProblemWords {
 	if (!(error instanceof ApiProblem)) {
 		throw error;
 	}
@@ -64,5 +68,15 @@ export function problemWords(error: unknown): ProblemWords {
 	if (error.status === 0 || error.status >= 500) {
 		return { title: m.common_unreached_title(), text: m.common_unreached_text(), signIn: false };
 	}
-	return { title: m.common_notice_error(), text: error.detail, signIn: false };
+	const text = (reader && takenWords(error, reader)) ?? error.detail;
+	return { title: m.common_notice_error(), text, signIn: false };
+}
+
+/** Who was faster, and when. */
+function takenWords({ code, body }: ApiProblem, reader: Reader): string | null {
+	const { takenBy, takenAt } = body as { takenBy?: { name?: string } | null; takenAt?: string };
+	if (code !== 'already-taken' || !takenBy?.name || !takenAt) {
+		return null;
+	}
+	return m.home_already_taken({ name: takenBy.name, time: when(Date.parse(takenAt), reader) });
 }

@@ -81,6 +81,14 @@ describe('problemWords', () => {
 		expect(problemWords(new ApiProblem(409, 'wrong-state', 'It is closed.')).text).toBe('It is closed.');
 	});
 
+	it('says who was faster, and when, in the words of the reader', () => {
+		const body = { takenBy: { id: 'u', name: 'R. Ferris' }, takenAt: '2026-07-01T14:05:30Z' };
+		const error = new ApiProblem(409, 'already-taken', 'In UTC.', body);
+		const reader = { zone: 'Europe/Dublin', now: Date.parse('2026-07-01T14:06:00Z') };
+		expect(problemWords(error, reader).text).toBe('R. Ferris has it already, since 15:05.');
+		expect(problemWords(error).text).toBe('In UTC.');
+	});
+
 	it('does not swallow a bug', () => {
 		expect(() => problemWords(new TypeError('bug'))).toThrow('bug');
 	});

@@ -1,7 +1,9 @@
 import type { LooseEnd } from '$lib/domain/loose-ends/loose-ends';
 import { rolesAsked } from '$lib/domain/loose-ends/owed-by';
+import type { Service } from '$lib/domain/core/codes';
 import { MINUTE } from '$lib/domain/core/time';
 import { ago, DEFAULT_LOCALE, due, duration, when, type Reader } from '$lib/format';
+import { SERVICE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 import { ROLE_WORDS } from '../shell/role-words';
 
@@ -59,6 +61,12 @@ export function owerWords(end: LooseEnd): string {
 		default:
 			return m.home_ower_roles({ roles: anyOf(rolesAsked(end).map((role) => ROLE_WORDS[role]())) });
 	}
+}
+
+/** What was accepted, once it was. */
+export function acceptedWords({ code, patientName }: LooseEnd): string {
+	const service = SERVICE_WORDS[code as Service]?.() ?? '';
+	return m.home_accepted({ service, who: patientName ?? '' });
 }
 
 const MESSAGES: Record<string, () => string> = {

@@ -1,0 +1,92 @@
+import { describe, expect, it } from 'vitest';
+import type { LooseEnd, LooseEndKind } from '$lib/domain/loose-ends/loose-ends';
+import { acceptedWords, askerWords, isOverdue, owerWords, waitWords } from './words';
+
+const NOW = Date.parse('2026-03-03T14:00:00Z');
+const READER = { zone: 'Europe/Dublin', now: NOW };
+const MINUTE = 60_000;
+
+function end(kind: LooseEndKind, rest: Partial<LooseEnd> = {}): LooseEnd {
+	return {
+		kind,
+		id: 'x',
+		episodeId: 'e',
+		threadId: null,
+		unit: 'Tern Ward',
+		bed: 'T4',
+		patientName: 'Marta Lisowska',
+		grade: null,
+		code: null,
+		title: 'Something',
+		askedBy: 'I. Aldous',
+		heldBy: 'R. Ferris',
+		since: '2026-03-03T13:20:00Z',
+		due: null,
+		...rest
+	};
+}
+
+const ago = (ms: number) => new Date(NOW - ms).toISOString();
+
+describe('waitWords', () => {
+	it.each<[LooseEnd, string]>([
+		[end('escalation', { since: ago(106_000) }), '1 min 46 s, nobody has it'],
+		[end('escalation-taken', { since: ago(5 * MINUTE) }), 'taken 5 min ago'],
+		[end('clearance'), '40 min'],
+		[end('clearance', { since: ago(59_999) }), 'just now'],
+		[end('clearance', { since: ago(119_000) }), '1 min'],
+		[end('referral', { since: ago(130 * MINUTE) }), '2 h 10'],
+		[end('recheck', { due: ago(-9 * MINUTE) }), 'due in 9 min'],
+		[end('recheck', { due: ago(12 * MINUTE) }), 'overdue by 12 min'],
+		// The time of a cancelled visit is said beside it; what counts is since when nobody has seen to it.
+		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), '40 min']
+	])('%#: %s', (open, words) => {
+		expect(waitWords(open, READER)).toBe(words);
+	});
+});
+
+describe('isOverdue', () => {
+	it.each<[LooseEndKind, number, boolean]>([
+		['recheck', -MINUTE, false],
+		['recheck', 59_999, false],
+		['recheck', MINUTE, true],
+		['visit-cancelled', MINUTE, false]
+	])('%s, due %d ms ago: %s', (kind, ms, overdue) => {
+		expect(isOverdue(end(kind, { due: ago(ms) }), NOW)).toBe(overdue);
+	});
+});
+
+describe('askerWords', () => {
+	it.each<[LooseEnd, string]>([
+		[end('escalation'), 'raised by I. Aldous'],
+		[end('recheck'), 'you settled it 13:20'],
+		[end('clearance'), 'I. Aldous asks'],
+		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
+		[end('message-failed', { code: 'reminder' }), 'a reminder of a visit'],
+		[end('message-failed', { code: 'carrier-pigeon' }), ''],
+		[end('inbound'), '']
+	])('%#: %s', (open, words) => {
+		expect(askerWords(open, READER)).toBe(words);
+	});
+});
+
+describe('owerWords', () => {
+	it.each<[LooseEnd, string]>([
+		[end('escalation'), ''],
+		[end('escalation-taken'), 'R. Ferris has it'],
+		[end('recheck'), 'R. Ferris sees that it is measured again'],
+		[end('clearance', { code: 'arm-stage' }), 'surgeon to answer'],
+		[end('clearance', { code: 'stairs' }), 'surgeon or physician to answer'],
+		[end('referral', { code: 'speech-therapy' }), 'speech therapist to answer']
+	])('%#: %s', (open, words) => {
+		expect(owerWords(open)).toBe(words);
+	});
+});
+
+describe('acceptedWords', () => {
+	it('name the service and the patient', () => {
+		expect(acceptedWords(end('referral', { code: 'physiotherapy' }))).toBe(
+			'Accepted: Physiotherapy, Marta Lisowska.'
+		);
+	});
+});
