@@ -5,6 +5,8 @@ import type { ClearanceEvidence } from './forms';
 export interface ClearanceView extends ClearanceLine {
 	episodeId: string;
 	threadId: string | null;
+	/** Who asked may take the ask back. */
+	askedById: string;
 	/** As it was when the ask was made. */
 	evidence: ClearanceEvidence;
 }

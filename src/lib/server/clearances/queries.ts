@@ -55,6 +55,7 @@ export async function getClearance(
 		...toLine(row, facts.operation?.id ?? null),
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
+		askedById: clearance.askedBy,
 		evidence: clearance.evidence
 	};
 }

@@ -1,0 +1,45 @@
+import { PLACES, type Help, type MayDoNow, type Place } from '$lib/domain/episodes/may-do-now';
+import { m } from '$lib/i18n/paraglide/messages';
+
+export const PLACE_WORDS: Record<Place, () => string> = {
+	bed: m.patient_place_bed,
+	chair: m.patient_place_chair,
+	bathroom: m.patient_place_bathroom,
+	corridor: m.patient_place_corridor,
+	stairs: m.patient_place_stairs
+};
+
+export const HELP_WORDS: Record<Help, () => string> = {
+	alone: m.patient_help_alone,
+	one: m.patient_help_one,
+	two: m.patient_help_two,
+	not: m.patient_help_not
+};
+
+/** Places in a row that take the same help. */
+export interface MayDoGroup {
+	help: Help;
+	places: Place[];
+}
+
+/** What a patient may do now, from the bed to the stairs; neighbours with the same help stand together. */
+export function mayDoGroups(may: MayDoNow): MayDoGroup[] {
+	const groups: MayDoGroup[] = [];
+	for (const place of PLACES) {
+		const last = groups.at(-1);
+		if (last?.help === may[place]) {
+			last.places.push(place);
+		} else {
+			groups.push({ help: may[place], places: [place] });
+		}
+	}
+	return groups;
+}
+
+/** `bed, chair alone`, `stairs not`. */
+export function groupWords({ places, help }: MayDoGroup): string {
+	return m.patient_may_do_group({
+		places: places.map((place) => PLACE_WORDS[place]()).join(', '),
+		help: HELP_WORDS[help]()
+	});
+}

@@ -1,0 +1,65 @@
+import type { FindingGrade, Outcome } from '$lib/domain/bedside/codes';
+import type { Rhythm, VisitState } from '$lib/domain/core/codes';
+import { localDateOf } from '$lib/domain/core/time';
+import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
+import type { Precautions } from '$lib/domain/episodes/precautions';
+import type { Nameboard } from '$lib/domain/episodes/views';
+import { shortDay, type Reader } from '$lib/format';
+import { m } from '$lib/i18n/paraglide/messages';
+
+const RHYTHM_WORDS: Record<Rhythm, () => string> = {
+	sinus: m.patient_rhythm_sinus,
+	'atrial-fibrillation': m.patient_rhythm_atrial_fibrillation,
+	paced: m.patient_rhythm_paced,
+	other: m.patient_rhythm_other
+};
+
+export const VISIT_STATE_WORDS: Record<VisitState, () => string> = {
+	planned: m.patient_visit_planned,
+	confirmed: m.patient_visit_confirmed,
+	attended: m.patient_visit_attended,
+	missed: m.patient_visit_missed,
+	cancelled: m.patient_visit_cancelled
+};
+
+export const OUTCOME_WORDS: Record<Outcome, () => string> = {
+	clear: m.patient_outcome_clear,
+	caution: m.patient_outcome_caution,
+	stop: m.patient_outcome_stop,
+	incomplete: m.patient_outcome_incomplete
+};
+
+export const FINDING_WORDS: Record<FindingGrade, () => string> = {
+	stop: m.patient_finding_stop,
+	caution: m.patient_finding_caution,
+	note: m.patient_finding_note
+};
+
+/** The drug that slows the heart and the rhythm: what a pulse must be read with. Not known is said, never left out. */
+export function heartWords(betaBlocked: boolean | null, rhythm: string | null): string {
+	const drug = { true: m.patient_drug_yes, false: m.patient_drug_no, null: m.patient_drug_unknown };
+	const known = rhythm !== null && rhythm in RHYTHM_WORDS ? RHYTHM_WORDS[rhythm as Rhythm]() : null;
+	return `${drug[`${betaBlocked}`]()} · ${known ?? m.patient_rhythm_unknown()}`;
+}
+
+/** `day 5`, counted to the present instant, so that a page left open over midnight is right. */
+export function dayWords({ operatedAt }: Pick<Nameboard, 'operatedAt'>, { now, zone }: Reader): string {
+	if (operatedAt === null) {
+		return m.patient_no_operation();
+	}
+	const day = postOperativeDay(Date.parse(operatedAt), now, zone);
+	return day === null ? m.patient_before_operation() : m.patient_day({ day });
+}
+
+/** What to beware of: the precautions with the day on which to ask for their end, and how far the arms may go. */
+export function bewareWords({ sternal, endDue, maxElevationDeg }: Precautions, reader: Reader): string[] {
+	if (!sternal) {
+		return [m.patient_no_precautions()];
+	}
+	const overdue = endDue !== null && endDue < localDateOf(reader.now, reader.zone);
+	const word = overdue ? m.patient_sternal_overdue : m.patient_sternal_due;
+	return [
+		...(endDue === null ? [] : [word({ day: shortDay(endDue, reader) })]),
+		...(maxElevationDeg === null ? [] : [m.patient_arms_to({ degrees: maxElevationDeg })])
+	];
+}

@@ -1,0 +1,65 @@
+import { describe, expect, it } from 'vitest';
+import { keepDraft, keyFor, loadDraft, NO_DRAFT, type Store } from './draft';
+
+function memory(): Store & { size(): number } {
+	const kept = new Map<string, string>();
+	return {
+		getItem: (name) => kept.get(name) ?? null,
+		setItem: (name, value) => void kept.set(name, value),
+		removeItem: (name) => void kept.delete(name),
+		size: () => kept.size
+	};
+}
+
+describe('keyFor', () => {
+	const tried = { body: 'Walked twice.', key: 'first' };
+	it.each([
+		['Walked twice.', tried, 'first'],
+		[' Walked twice.\n', tried, 'first'],
+		['Walked thrice.', tried, 'fresh'],
+		['', tried, 'fresh'],
+		['Walked twice.', null, 'fresh']
+	])('%j after %j goes out under the key %s', (body, before, key) => {
+		expect(keyFor(body, before, 'fresh')).toBe(key);
+	});
+});
+
+describe('a draft', () => {
+	it('comes back for its own thread only', () => {
+		const store = memory();
+		const draft = { body: 'Half a sen', tried: { body: 'Half', key: 'k1' } };
+		keepDraft(store, 't1', draft);
+		expect(loadDraft(store, 't1')).toEqual(draft);
+		expect(loadDraft(store, 't2')).toEqual(NO_DRAFT);
+	});
+
+	it('leaves nothing behind once it is empty', () => {
+		const store = memory();
+		keepDraft(store, 't1', { body: 'x', tried: null });
+		keepDraft(store, 't1', NO_DRAFT);
+		expect(store.size()).toBe(0);
+	});
+
+	it.each([
+		'',
+		'null',
+		'{',
+		'7',
+		'{"body":1,"tried":null}',
+		'{"body":"x"}',
+		'{"body":"x","tried":{"body":"x"}}'
+	])('that cannot be read is none: %j', (text) => {
+		const store = memory();
+		store.setItem('ropewalk-draft-t1', text);
+		expect(loadDraft(store, 't1')).toEqual(NO_DRAFT);
+	});
+
+	it('is not kept by a browser that refuses, and nothing fails', () => {
+		const refuse = () => {
+			throw new Error('full');
+		};
+		const store = { getItem: refuse, setItem: refuse, removeItem: refuse };
+		keepDraft(store, 't1', { body: 'x', tried: null });
+		expect(loadDraft(store, 't1')).toEqual(NO_DRAFT);
+	});
+});

@@ -1,0 +1,20 @@
+import type { SuperValidated } from 'sveltekit-superforms';
+import type { ClearanceKind } from '$lib/domain/core/codes';
+
+export type ReasonForm = SuperValidated<{ reason: string }, string>;
+export type MaybeReasonForm = SuperValidated<{ reason?: string }, string>;
+export type AskFields = { kind: ClearanceKind; question: string; threadId?: string };
+export type AskForm = SuperValidated<AskFields, string>;
+
+/** The forms of a thread, as the server's `superValidate` gave them. */
+export interface ThreadForms {
+	post: SuperValidated<{ body: string }, string>;
+	accept: MaybeReasonForm;
+	decline: ReasonForm;
+	close: MaybeReasonForm;
+	withdraw: ReasonForm;
+	ask: AskForm;
+}
+
+/** The key of each form, made by the server with the page. */
+export type ThreadKeys = Record<keyof ThreadForms, string>;

@@ -1,0 +1,34 @@
+import { superValidate } from 'sveltekit-superforms';
+import { zod4 } from 'sveltekit-superforms/adapters';
+import { askable } from '$lib/components/clearances/standing';
+import { askClearanceBody } from '$lib/domain/clearances/forms';
+import { localDateOf } from '$lib/domain/core/time';
+import type { ClearanceLine } from '$lib/domain/episodes/views';
+import { m } from '$lib/i18n/paraglide/messages';
+import { askClearance } from '$lib/server/clearances/actions';
+import { formAction } from '$lib/server/http/form-action';
+import { idParam } from '$lib/server/http/param';
+import { leadOnWithoutScript } from './without-script';
+
+const ID = 'ask-clearance';
+
+/** The empty ask, open at the first kind that can be asked for. */
+export function askForm(
+	lines: readonly ClearanceLine[],
+	at: { now: number; zone: string },
+	threadId?: string
+) {
+	const [kind] = askable(lines, localDateOf(at.now, at.zone));
+	return superValidate({ kind, threadId }, zod4(askClearanceBody), { id: ID, errors: false });
+}
+
+/** The action behind it, on every page that has the form. */
+export const askClearanceAction = formAction({
+	schema: askClearanceBody,
+	id: ID,
+	run: async (context, fields, event) => {
+		await askClearance(context, idParam(event), fields);
+		leadOnWithoutScript(event, event.url.pathname);
+		return m.clearances_asked();
+	}
+});

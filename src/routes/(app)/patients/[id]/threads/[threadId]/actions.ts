@@ -1,0 +1,78 @@
+import type { RequestEvent } from '@sveltejs/kit';
+import type { z } from 'zod';
+import type { Problem } from '$lib/domain/core/errors';
+import { isOneOf, REFERRAL_STATES } from '$lib/domain/core/codes';
+import { acceptBody, declineBody, entryBody } from '$lib/domain/referrals/forms';
+import { REFERRAL_STATE_WORDS } from '$lib/i18n/labels';
+import { m } from '$lib/i18n/paraglide/messages';
+import { routes } from '$lib/routes';
+import type { PersonContext } from '$lib/server/context';
+import { formAction } from '$lib/server/http/form-action';
+import { idParam } from '$lib/server/http/param';
+import { read } from '$lib/server/read';
+import {
+	acceptReferral,
+	closeReferral,
+	declineReferral,
+	withdrawReferral
+} from '$lib/server/referrals/actions';
+import { postEntry } from '$lib/server/threads/actions';
+import { leadOnWithoutScript } from '../../without-script';
+
+/** The form actions of a thread: what is said, and what becomes of its referral. */
+export const postForm = entryBody.pick({ body: true });
+export const reasonForm = declineBody;
+
+export const post = formAction({
+	schema: postForm,
+	id: 'post',
+	words: { 'wrong-state': () => m.referrals_entry_withdrawn_closed() },
+	run: async (context, { body }, event) => {
+		const { result } = await postEntry(context, threadOf(event), { body });
+		leadOnWithoutScript(event, `${event.url.pathname}#entry-${result.seq}`);
+		return m.referrals_entry_sent();
+	}
+});
+
+type Reason = { reason?: string };
+type Move = (context: PersonContext, referralId: string, fields: Reason) => Promise<unknown>;
+
+/** One move of the referral behind the thread; the page knows the thread, the move wants its referral. */
+function moving(id: string, schema: z.ZodType<Reason, Reason>, done: () => string, move: Move) {
+	return formAction({
+		schema,
+		id,
+		words: { 'wrong-state': stateWords },
+		run: async (context, fields, event) => {
+			const { referral } = await read.thread(context, threadOf(event), { limit: 1, after: null });
+			await move(context, referral.id, fields);
+			leadOnWithoutScript(event, routes.thread(idParam(event), threadOf(event)));
+			return done();
+		}
+	});
+}
+
+export const accept = moving('accept', acceptBody, m.referrals_accepted, (context, id) =>
+	acceptReferral(context, id)
+);
+export const decline = moving('decline', declineBody, m.referrals_declined, (context, id, { reason }) =>
+	declineReferral(context, id, reason ?? '')
+);
+export const close = moving('close', acceptBody, m.referrals_closed, (context, id, { reason }) =>
+	closeReferral(context, id, reason ?? null)
+);
+export const withdraw = moving('withdraw', declineBody, m.referrals_withdrawn, (context, id, { reason }) =>
+	withdrawReferral(context, id, reason ?? '')
+);
+
+function threadOf({ params }: RequestEvent): string {
+	return params.threadId ?? '';
+}
+
+/** Somebody was faster: say how it stands now. */
+function stateWords({ extra, detail }: Problem): string {
+	const state = String(extra.state);
+	return isOneOf(REFERRAL_STATES, state)
+		? m.referrals_state_meanwhile({ state: REFERRAL_STATE_WORDS[state]().toLowerCase() })
+		: detail;
+}
