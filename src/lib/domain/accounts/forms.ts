@@ -55,4 +55,21 @@ export const createUnitBody = z.strictObject({
 	kind: z.enum(['intensive-care', 'ward', 'gym'])
 });
 
+/** Changing one's own password; the current one proves that it is its owner who sits at the open screen. */
+export const changePasswordForm = z.strictObject({
+	current: z
+		.string('current is a text.')
+		.min(1, 'The current password is empty.')
+		.max(1024, 'The current password has at most 1024 characters.'),
+	next: newPassword
+});
+
+/** A deed about one row of a list. */
+export const idForm = z.strictObject({ id: z.string('id is a text.').min(1, 'id is empty.').max(64) });
+
+/** The units that somebody belongs to. */
+export const setUnitsForm = z.strictObject({
+	units: z.array(z.string()).max(50, 'units has at most 50 members.').default([])
+});
+
 export const createTokenBody = z.strictObject({ name: text('name', 60) });

@@ -39,11 +39,16 @@ export async function signIn(
 		throw new Problem('sign-in-failed');
 	}
 	await forgetFailures(input.email);
+	await enterAs(context, cookies, usable.id);
+	return { id: usable.id, name: usable.name, role: usable.role, units: await unitsOf(db(), usable.id) };
+}
+
+/** Sign somebody in who has just proved who they are, by password or by their invitation. */
+export async function enterAs(context: Context, cookies: Cookies, userId: string): Promise<void> {
 	// A new token at each sign-in: one that was planted in the browser before is worth nothing.
 	await endSignIn(cookies);
-	await startSignIn(cookies, usable.id, context.now);
-	await recordSignIn(context, usable.id, 'done');
-	return { id: usable.id, name: usable.name, role: usable.role, units: await unitsOf(db(), usable.id) };
+	await startSignIn(cookies, userId, context.now);
+	await recordSignIn(context, userId, 'done');
 }
 
 /** End this browser's sign-in. Its other tabs hear of it and look whether they may go on listening. */

@@ -62,10 +62,11 @@ async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sendin
 	return sent;
 }
 
-/** Fill in what is not stored: the secret link. */
+/** Fill in what is not stored: the secret link, of a call for help or of an invitation. */
 function outgoing(row: OutboxRow, { to, name }: Receiver): Outgoing {
 	const { id, subject, linkId } = row;
-	const link = linkId === null ? null : env().publicUrl + routes.phoneLink(linkToken(linkId));
+	const path = row.refKind === 'account' ? routes.invitation : routes.phoneLink;
+	const link = linkId === null ? null : env().publicUrl + path(linkToken(linkId));
 	const body = link === null ? row.body : row.body.replaceAll('{link}', () => link);
 	return { id, to, name, subject, body };
 }

@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm';
 import { isExpected } from '$lib/domain/visits/states';
 import { judgeReminder, type SkipReason as ReminderSkip } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
-import { escalationLinks, escalations, patients, users, visits } from '../db/schema';
+import { escalationLinks, escalations, invitations, patients, users, visits } from '../db/schema';
 import type { OutboxRow } from './change';
 
 /** Why a message is not sent after all. The words stand in the message log. */
@@ -11,6 +11,7 @@ export type SkipReason =
 	| 'escalation is not waiting for anybody'
 	| 'account disabled'
 	| 'link used, expired or not theirs'
+	| 'invitation used'
 	| 'nobody to send to';
 
 export interface Receiver {
@@ -110,8 +111,18 @@ async function recheckMail(reader: Reader, row: OutboxRow, now: number): Promise
 			return skip('visit is over or cancelled');
 		}
 	}
+	if (row.refKind === 'account' && (await invitationUsed(reader, row))) {
+		return skip('invitation used');
+	}
 	const verdict = await toStaff(reader, row.userId, 'email');
 	return verdict.kind === 'send' && now >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
+}
+
+/** Used, or ended by a newer one or because the account was disabled: a link that opens nothing is only a riddle. */
+async function invitationUsed(reader: Reader, { linkId }: OutboxRow): Promise<boolean> {
+	const [invitation] =
+		linkId === null ? [] : await reader.select().from(invitations).where(eq(invitations.id, linkId));
+	return invitation?.usedAt !== null;
 }
 
 async function toStaff(reader: Reader, userId: string | null, way: 'phone' | 'email'): Promise<Verdict> {
