@@ -25,6 +25,7 @@ export const routes = {
 	rules: () => '/rules',
 	account: () => '/account',
 	adminAccounts: () => '/admin/accounts',
+	adminAccount: (id: string) => `/admin/accounts/${id}`,
 	phones: () => '/phones',
 	demoSignIns: () => '/demo'
 } as const;

@@ -53,7 +53,7 @@ export const COVER: Record<Post, PersonKey> = {
 };
 
 /** Those whom the front page names, in the order of the main job. */
-export const SHOWN: readonly PersonKey[] = [
+export const SHOWN = [
 	'surgeon',
 	'therapist',
 	'nurse',
@@ -62,4 +62,5 @@ export const SHOWN: readonly PersonKey[] = [
 	'speech',
 	'coordinator',
 	'admin'
-];
+] as const satisfies readonly PersonKey[];
+export type ShownKey = (typeof SHOWN)[number];
