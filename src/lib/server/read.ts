@@ -2,6 +2,7 @@ import { db } from './db';
 import { listSessions } from './bedside/queries';
 import { getClearance } from './clearances/queries';
 import type { PersonContext } from './context';
+import { coverNow } from './cover/queries';
 import { getNameboard } from './episodes/nameboard';
 import { listEpisodes } from './episodes/list';
 import { getEscalation } from './escalations/queries';
@@ -21,5 +22,6 @@ export const read = {
 	thread: ({ actor }: PersonContext, id: string, request: PageRequest) => getThread(db(), actor, id, request),
 	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
+	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id)
 };

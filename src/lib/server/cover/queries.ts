@@ -26,10 +26,16 @@ export async function onCover(db: Reader, unitId: string, post: Post, at: number
 		);
 }
 
-/** The whole cover of now, for the shell and the cover page. */
+/** The whole cover of now, for the shell and the cover page; `until` is when the shift ends, ms UTC. */
 export async function coverNow(db: Reader, unitIds: readonly string[], at: number) {
 	const rows = await db
-		.select({ unitId: coverShifts.unitId, unit: units.name, post: coverShifts.post, name: users.name })
+		.select({
+			unitId: coverShifts.unitId,
+			unit: units.name,
+			post: coverShifts.post,
+			name: users.name,
+			until: coverShifts.endsAt
+		})
 		.from(coverShifts)
 		.innerJoin(users, eq(users.id, coverShifts.userId))
 		.innerJoin(units, eq(units.id, coverShifts.unitId))

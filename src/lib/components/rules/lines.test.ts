@@ -1,0 +1,48 @@
+import { describe, expect, it } from 'vitest';
+import { LIMIT_KEYS, SETS } from '$lib/domain/bedside/codes';
+import { rulebook } from '$lib/domain/bedside/rulebook';
+import { limitLines } from './lines';
+
+const { rows } = rulebook();
+const linesOf = (rule: string) => limitLines(rows.find((row) => row.rule === rule)?.limits ?? []);
+
+describe('limitLines', () => {
+	// The limits are those of the table of response rules in the description of the JSON API.
+	it.each([
+		['systolic-ceiling', 0, 'Stop, mmHg', 'over 200 | over 200 | over 250'],
+		['systolic-ceiling', 1, 'Stop before a start, mmHg', 'over 180 | over 180 | over 180'],
+		['diastolic-ceiling', 0, 'Stop, mmHg', 'at 110 | at 110 | over 115'],
+		['heart-rate-floor', 0, 'Stop, beats/min', 'under 40 | under 40 | under 40'],
+		['systolic-rise', 0, 'Stop, mmHg', 'over 30 | off | off'],
+		['heart-rate-rise', 1, 'Stop, with a rate-slowing drug, beats/min', 'over 12 | over 30 | off'],
+		['saturation-fall', 0, 'Caution, %', 'at 4 | at 4 | at 4'],
+		['temperature-ceiling', 0, 'Stop, °C', 'over 38.5 | over 38.5 | over 38.5']
+	])('%s, line %d: %s %s', (rule, index, label, values) => {
+		const line = linesOf(rule)[index];
+		expect(line?.label).toBe(label);
+		expect(SETS.map((set) => line?.values[set]).join(' | ')).toBe(values);
+	});
+
+	it('says which set a source is for only where they differ', () => {
+		const [fall] = linesOf('systolic-fall');
+		expect(fall?.sources.map((source) => source.split(':')[0])).toEqual([
+			'Strict',
+			'Guideline',
+			'Outpatient'
+		]);
+		expect(linesOf('systolic-floor')[0]?.sources).toHaveLength(1);
+		expect(linesOf('systolic-floor')[0]?.sources[0]).not.toMatch(/^Strict/);
+	});
+
+	it('has a word for the meaning of every limit', () => {
+		const lines = rows.flatMap(({ limits }) => limitLines(limits));
+		expect(lines.map(({ key }) => key).sort()).toEqual([...LIMIT_KEYS].sort());
+		for (const { label } of lines) {
+			expect(label).toMatch(/^(Stop|Caution)/);
+		}
+	});
+
+	it('has nothing to say of a rule without numbers', () => {
+		expect(linesOf('new-rhythm')).toEqual([]);
+	});
+});

@@ -1,0 +1,73 @@
+import { SETS, type LimitKey, type SetName } from '$lib/domain/bedside/codes';
+import type { RulebookLimit } from '$lib/domain/bedside/rulebook';
+import { m } from '$lib/i18n/paraglide/messages';
+
+/** One limit of a rule, with its value in each set. */
+export interface LimitLine {
+	key: LimitKey;
+	/** What crossing it means, and in what it is measured. */
+	label: string;
+	/** `over 10`, or that the set has it switched off. */
+	values: Record<SetName, string>;
+	/** Each source once; with the sets it holds for where they differ. */
+	sources: string[];
+}
+
+/** The limits of a rule, a line for each. */
+export function limitLines(limits: readonly RulebookLimit[]): LimitLine[] {
+	const keys = [...new Set(limits.map(({ key }) => key))];
+	return keys.map((key) => {
+		const own = limits.filter((limit) => limit.key === key);
+		const unit = own.find((limit) => limit.unit !== null)?.unit ?? '';
+		const valueOf = (set: SetName) => valueWords(own.find((limit) => limit.set === set));
+		return {
+			key,
+			label: m.home_rules_limit_label({ what: meaningOf(key), unit }),
+			values: Object.fromEntries(SETS.map((set) => [set, valueOf(set)])) as Record<SetName, string>,
+			sources: sourceWords(own)
+		};
+	});
+}
+
+export const SET_WORDS: Record<SetName, () => string> = {
+	strict: m.home_rules_set_strict,
+	guideline: m.home_rules_set_guideline,
+	outpatient: m.home_rules_set_outpatient
+};
+
+const MEANINGS: Record<string, () => string> = {
+	'': m.home_rules_stop,
+	before: m.home_rules_stop_before,
+	caution: m.home_rules_caution,
+	'before-caution': m.home_rules_caution_before,
+	'beta-blocked': m.home_rules_stop_drug,
+	systolic: m.home_rules_caution_systolic,
+	diastolic: m.home_rules_caution_diastolic,
+	cleared: m.home_rules_stop_cleared,
+	breathlessness: m.home_rules_stop_breathless
+};
+
+/** A fall of the saturation never stops by itself; every other bare name of a rule is its stop limit. */
+function meaningOf(key: LimitKey): string {
+	const suffix = key === 'saturation-fall' ? 'caution' : (key.split('.')[1] ?? '');
+	return MEANINGS[suffix]?.() ?? suffix;
+}
+
+function valueWords(limit: RulebookLimit | undefined): string {
+	if (limit?.value == null || limit.when === null) {
+		return m.home_rules_off();
+	}
+	const crossing = { over: m.home_rules_over, at: m.home_rules_at, under: m.home_rules_under }[limit.when];
+	return crossing({ value: limit.value });
+}
+
+function sourceWords(limits: readonly RulebookLimit[]): string[] {
+	const sources = [...new Set(limits.flatMap(({ source }) => source ?? []))];
+	if (sources.length < 2) {
+		return sources;
+	}
+	return sources.map((source) => {
+		const sets = limits.filter((limit) => limit.source === source).map(({ set }) => SET_WORDS[set]());
+		return m.home_rules_source_of({ sets: sets.join(', '), source });
+	});
+}
