@@ -3,7 +3,7 @@
  * the JSON API, whose checks have the last word.
  */
 import { z } from 'zod';
-import { APPROACHES, LEVELS, RHYTHMS, SEXES, isOneOf } from '../core/codes';
+import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
@@ -15,16 +15,18 @@ export type DrugAnswer = (typeof DRUG_ANSWERS)[number];
 
 const line = (field: string, max: number) =>
 	z.string().trim().max(max, `${field} has at most ${max} characters.`).default('');
-const chosen = <T extends string>(list: readonly T[], message: string) =>
+/** Stays a text: a browser may post anything, and what was posted is shown again. */
+const isIn = (list: readonly string[], value: string): boolean => list.includes(value);
+const chosen = (list: readonly string[], message: string) =>
 	z
 		.string()
 		.default('')
-		.refine((value) => isOneOf(list, value), message);
-const known = <T extends string>(list: readonly T[], field: string) =>
+		.refine((value) => isIn(list, value), message);
+const known = (list: readonly string[], field: string) =>
 	z
 		.string()
 		.default('')
-		.refine((value) => value === '' || isOneOf(list, value), `${field} is not one of the list.`);
+		.refine((value) => value === '' || isIn(list, value), `${field} is not one of the list.`);
 
 export const admitForm = z
 	.object({
@@ -94,7 +96,7 @@ export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInpu
 		unit: form.unit,
 		bed: form.bed,
 		level: Number(form.level),
-		betaBlocked: { yes: true, no: false }[form.betaBlocked] ?? null,
+		betaBlocked: form.betaBlocked === 'unknown' ? null : form.betaBlocked === 'yes',
 		rhythm: form.rhythm || undefined
 	};
 }

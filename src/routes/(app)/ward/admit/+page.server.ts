@@ -2,7 +2,7 @@ import { redirect } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { Problem } from '$lib/domain/core/errors';
-import { admitForm, formFieldOf, toAdmission } from '$lib/domain/episodes/admit-form';
+import { admitForm, formFieldOf, toAdmission, type AdmitForm } from '$lib/domain/episodes/admit-form';
 import { admitBody, type AdmitInput } from '$lib/domain/episodes/forms';
 import { routes } from '$lib/routes';
 import { requirePermission } from '$lib/server/access/require';
@@ -20,7 +20,7 @@ export const load: PageServerLoad = (event) =>
 		const asked = event.url.searchParams.get('unit');
 		const unit = actor.unitIds.find((id) => id === asked) ?? '';
 		return {
-			form: await superValidate({ unit }, zod4(admitForm), { errors: false }),
+			form: await superValidate<AdmitForm, string>({ unit }, zod4(admitForm), { errors: false }),
 			key: newFormKey(),
 			surgeons: await surgeonsFor(actor)
 		};
