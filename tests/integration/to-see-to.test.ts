@@ -1,0 +1,164 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { eq } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
+import { db } from '$lib/server/db';
+import { inboundMessages, outbox, visits } from '$lib/server/db/schema';
+import { newId } from '$lib/server/ids';
+import { looseEndsOf } from '$lib/server/loose-ends/queries';
+import { settleInbound, settleMessage } from '$lib/server/messages/settle';
+import { getFailedMessage, getInboundText } from '$lib/server/messages/to-see-to';
+import { bookVisits, followUpVisit } from '$lib/server/visits/actions';
+import { freshDatabase } from '../support/database';
+import { contextOf, HOSPITAL_NOW, makeHospital, newPhone, type Hospital } from '../support/hospital';
+
+const DAY = 24 * 60 * 60 * 1000;
+
+let hospital: Hospital;
+let database: Awaited<ReturnType<typeof freshDatabase>>;
+let visitId: string;
+
+beforeAll(async () => {
+	database = await freshDatabase();
+	hospital = await makeHospital();
+	const input = { kind: 'single', startsAt: HOSPITAL_NOW + 5 * DAY, minutes: 45, place: 'East Gym' } as const;
+	const { result } = await bookVisits(contextOf(hospital.people.coordinator), hospital.episodeId, input);
+	visitId = result.items[0]?.id ?? '';
+});
+afterAll(() => database.close());
+
+type NewMessage = Partial<typeof outbox.$inferInsert>;
+
+async function message(given: NewMessage = {}): Promise<string> {
+	const id = newId();
+	await db()
+		.insert(outbox)
+		.values({
+			id,
+			kind: 'reminder',
+			channel: 'sms',
+			causeKey: id,
+			patientId: hospital.patient.id,
+			body: 'Your visit is on Sunday. {link}',
+			refKind: 'visit',
+			refId: visitId,
+			state: 'undelivered',
+			stateReason: '30003',
+			createdAt: HOSPITAL_NOW,
+			nextAt: HOSPITAL_NOW,
+			expiresAt: HOSPITAL_NOW + DAY,
+			...given
+		});
+	return id;
+}
+
+async function text(patientId: string | null): Promise<string> {
+	const id = newId();
+	await db()
+		.insert(inboundMessages)
+		.values({
+			id,
+			providerId: id,
+			fromNumber: patientId === null ? newPhone() : hospital.patient.phone,
+			body: 'May I bring my sister?',
+			at: HOSPITAL_NOW,
+			patientId,
+			understoodAs: 'other'
+		});
+	return id;
+}
+
+const open = async (person: Person) =>
+	(await looseEndsOf(db(), person, HOSPITAL_NOW)).mine.map(({ kind, id }) => `${kind} ${id}`);
+
+describe('a message that did not arrive', () => {
+	it('shows whom to call and what it was to say, without its link', async () => {
+		const id = await message();
+		expect(await getFailedMessage(hospital.people.coordinator, id)).toMatchObject({
+			body: 'Your visit is on Sunday.',
+			to: { name: hospital.patient.name, phone: hospital.patient.phone },
+			patient: { birthDate: '1958-09-05' },
+			episodeId: hospital.episodeId,
+			reason: '30003',
+			settled: false
+		});
+	});
+
+	it('shows the colleague it was for', async () => {
+		const { nurse, coordinator } = hospital.people;
+		const id = await message({ userId: nurse.id, patientId: null });
+		expect((await getFailedMessage(coordinator, id)).to?.name).toBe(nurse.name);
+	});
+
+	it('is no loose end any more once it is seen to', async () => {
+		const { coordinator } = hospital.people;
+		const id = await message();
+		expect(await open(coordinator)).toContain(`message-failed ${id}`);
+		await settleMessage(contextOf(coordinator), id);
+		expect(await open(coordinator)).not.toContain(`message-failed ${id}`);
+		expect((await getFailedMessage(coordinator, id)).settled).toBe(true);
+	});
+
+	it.each<[string, NewMessage]>([
+		['that arrived', { state: 'delivered' }],
+		['that waits', { state: 'ready' }],
+		['to an account, which may carry an invitation', { refKind: 'account', refId: 'a' }]
+	])('is not there for one %s', async (_, given) => {
+		const id = await message(given);
+		await expect(getFailedMessage(hospital.people.coordinator, id)).rejects.toMatchObject({
+			code: 'not-found'
+		});
+	});
+});
+
+describe('a text that no rule understood', () => {
+	it('shows who wrote, and the words', async () => {
+		const id = await text(hospital.patient.id);
+		expect(await getInboundText(hospital.people.coordinator, id)).toMatchObject({
+			body: 'May I bring my sister?',
+			from: { name: hospital.patient.name, phone: hospital.patient.phone },
+			episodeId: hospital.episodeId
+		});
+	});
+
+	it('from an unknown number belongs to nobody', async () => {
+		const found = await getInboundText(hospital.people.coordinator, await text(null));
+		expect([found.patient, found.episodeId, found.from.name]).toEqual([null, null, '']);
+	});
+
+	it('is no loose end any more once it is seen to', async () => {
+		const { coordinator } = hospital.people;
+		const id = await text(hospital.patient.id);
+		expect(await open(coordinator)).toContain(`inbound ${id}`);
+		await settleInbound(contextOf(coordinator), id);
+		expect(await open(coordinator)).not.toContain(`inbound ${id}`);
+	});
+});
+
+describe('who may read them', () => {
+	it.each(['nurse', 'surgeon', 'physician', 'admin'] as const)('a %s may not', async (role) => {
+		const [failed, inbound] = [await message(), await text(hospital.patient.id)];
+		const refused = { code: 'not-allowed' };
+		await expect(getFailedMessage(hospital.people[role], failed)).rejects.toMatchObject(refused);
+		await expect(getInboundText(hospital.people[role], inbound)).rejects.toMatchObject(refused);
+	});
+
+	it('a coordinator of another unit learns nothing', async () => {
+		const stranger: Person = { ...hospital.people.coordinator, unitIds: hospital.outsider.unitIds };
+		const [failed, inbound] = [await message(), await text(hospital.patient.id)];
+		await expect(getFailedMessage(stranger, failed)).rejects.toMatchObject({ code: 'not-found' });
+		await expect(getInboundText(stranger, inbound)).rejects.toMatchObject({ code: 'not-found' });
+	});
+});
+
+describe('a visit that the patient cancelled', () => {
+	it('is a loose end until it is followed up', async () => {
+		const { coordinator } = hospital.people;
+		await db()
+			.update(visits)
+			.set({ state: 'cancelled', patientCancelledAt: HOSPITAL_NOW, decidedAt: HOSPITAL_NOW })
+			.where(eq(visits.id, visitId));
+		expect(await open(coordinator)).toContain(`visit-cancelled ${visitId}`);
+		await followUpVisit(contextOf(coordinator), visitId);
+		expect(await open(coordinator)).not.toContain(`visit-cancelled ${visitId}`);
+	});
+});
