@@ -1,20 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import type { VisitItem } from '$lib/domain/visits/views';
-import { mondayOf, weekOf } from './week';
+import { weekOf } from './week';
 
 const ZONE = 'Europe/Dublin';
-
-describe('mondayOf', () => {
-	it.each([
-		['2026-03-02', '2026-03-02'],
-		['2026-03-03', '2026-03-02'],
-		['2026-03-08', '2026-03-02'],
-		['2026-03-09', '2026-03-09'],
-		['2026-01-01', '2025-12-29']
-	])('of %s is %s', (date, monday) => {
-		expect(mondayOf(date)).toBe(monday);
-	});
-});
 
 describe('weekOf', () => {
 	const visit = (startsAt: string) => ({ id: startsAt, startsAt }) as VisitItem;

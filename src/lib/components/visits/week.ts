@@ -7,11 +7,6 @@ export interface DayOfVisits {
 	visits: VisitItem[];
 }
 
-/** The Monday of the week that holds a day. */
-export function mondayOf(date: LocalDate): LocalDate {
-	return addDays(date, -WEEKDAYS.indexOf(weekdayOf(date)));
-}
-
 /** The seven days from a Monday, each with its visits, in the hospital's calendar. */
 export function weekOf(monday: LocalDate, visits: readonly VisitItem[], zone: Zone): DayOfVisits[] {
 	return WEEKDAYS.map((_, index) => {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { RangeProblem, visitRange } from './range';
+import { RangeProblem, mondayOf, visitRange } from './range';
 
 const ZONE = 'Europe/Dublin';
 /** Tuesday 3 March 2026. */
@@ -43,5 +43,17 @@ describe('visitRange', () => {
 		expect(call).toThrow(RangeProblem);
 		expect(call).toThrow(message);
 		expect(call).toThrow(expect.objectContaining({ field }));
+	});
+});
+
+describe('mondayOf', () => {
+	it.each([
+		['2026-03-02', '2026-03-02'],
+		['2026-03-03', '2026-03-02'],
+		['2026-03-08', '2026-03-02'],
+		['2026-03-09', '2026-03-09'],
+		['2026-01-01', '2025-12-29']
+	])('of %s is %s', (date, monday) => {
+		expect(mondayOf(date)).toBe(monday);
 	});
 });

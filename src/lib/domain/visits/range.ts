@@ -1,7 +1,7 @@
 /** The stretch of time that a list of visits covers. */
 import { isRfc3339, parseRfc3339 } from '../core/instant';
 import { HOUR, WEEKDAYS, addDays, instantOf, isLocalDate, localDateOf, weekdayOf } from '../core/time';
-import type { Instant, Zone } from '../core/time';
+import type { Instant, LocalDate, Zone } from '../core/time';
 
 /** Two months are more than any page shows at once. */
 export const RANGE_DAYS_MAX = 62;
@@ -28,7 +28,7 @@ export class RangeProblem extends Error {
  * @throws RangeProblem
  */
 export function visitRange(from: string | null, to: string | null, zone: Zone, now: Instant): VisitRange {
-	const start = from === null ? mondayOf(now, zone) : bound('from', from, zone, 0);
+	const start = bound('from', from ?? mondayOf(localDateOf(now, zone)), zone, 0);
 	const lastDay = addDays(localDateOf(start, zone), 7);
 	const end = to === null ? instantOf(lastDay, '00:00', zone) : bound('to', to, zone, 1);
 	if (end <= start) {
@@ -41,9 +41,9 @@ export function visitRange(from: string | null, to: string | null, zone: Zone, n
 	return { from: start, to: end };
 }
 
-function mondayOf(now: Instant, zone: Zone): Instant {
-	const today = localDateOf(now, zone);
-	return instantOf(addDays(today, -WEEKDAYS.indexOf(weekdayOf(today))), '00:00', zone);
+/** The Monday of the week that holds a day. */
+export function mondayOf(date: LocalDate): LocalDate {
+	return addDays(date, -WEEKDAYS.indexOf(weekdayOf(date)));
 }
 
 function bound(field: 'from' | 'to', value: string, zone: Zone, daysAfter: number): Instant {

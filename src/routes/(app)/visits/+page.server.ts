@@ -1,7 +1,6 @@
 import { can } from '$lib/domain/access/can';
 import { isLocalDate, localDateOf } from '$lib/domain/core/time';
-import { mondayOf } from '$lib/components/visits/week';
-import { visitRange } from '$lib/domain/visits/range';
+import { mondayOf, visitRange } from '$lib/domain/visits/range';
 import { requirePermission } from '$lib/server/access/require';
 import type { PersonContext } from '$lib/server/context';
 import { env } from '$lib/server/env';
