@@ -1,4 +1,4 @@
-import { addDays, localDateOf, WEEKDAYS, weekdayOf, type LocalDate, type Zone } from '$lib/domain/core/time';
+import { addDays, localDateOf, WEEKDAYS, type LocalDate, type Zone } from '$lib/domain/core/time';
 import type { VisitItem } from '$lib/domain/visits/views';
 
 /** A day with the visits that begin on it. */
