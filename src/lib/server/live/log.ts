@@ -39,7 +39,10 @@ async function unitOf(tx: Tx, episodeId: string | null): Promise<string | null> 
 
 /** The newest cursor, 0 for an empty log. It never goes back, even when old rows were removed. */
 export async function currentCursor(db: Reader): Promise<number> {
-	const row = await db.get<{ seq: number }>(sql`select seq from sqlite_sequence where name = 'live_events'`);
+	// `get` fails where there is no row, which is so until the first event was written.
+	const [row] = await db.all<{ seq: number }>(
+		sql`select seq from sqlite_sequence where name = 'live_events'`
+	);
 	return row?.seq ?? 0;
 }
 
