@@ -45,14 +45,14 @@ export const invitedBody = z.strictObject({ password: newPassword });
 export const createAccountBody = z.strictObject({
 	name: text('name', 100),
 	email,
-	role: z.enum(ROLES),
+	role: z.enum(ROLES, 'Choose a role.'),
 	phone: z.string().trim().max(30, 'phone has at most 30 characters.').optional(),
 	units: z.array(z.string()).max(50, 'units has at most 50 members.').default([])
 });
 
 export const createUnitBody = z.strictObject({
 	name: text('name', 40),
-	kind: z.enum(['intensive-care', 'ward', 'gym'])
+	kind: z.enum(['intensive-care', 'ward', 'gym'], 'Choose what kind of unit it is.')
 });
 
 /** Changing one's own password; the current one proves that it is its owner who sits at the open screen. */

@@ -154,7 +154,7 @@ describe('mails', () => {
 		});
 		expect(mailText('invitation', { link })).toEqual({
 			subject: 'Ropewalk: your account',
-			text: `An account was made for you. Choose a password here; the link works once:\n\n${link}\n\n-- \nRopewalk sends links only. Nobody reads answers to this address.\n`
+			text: `Choose a password for your account here; the link works once:\n\n${link}\n\n-- \nRopewalk sends links only. Nobody reads answers to this address.\n`
 		});
 	});
 });

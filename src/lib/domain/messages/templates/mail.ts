@@ -26,11 +26,11 @@ export const referrerMail: Wording<LinkFields, MailText> = {
 	})
 };
 
-/** To somebody who gets an account. */
+/** To somebody who gets an account, or who has forgotten the password of one. */
 export const invitationMail: Wording<LinkFields, MailText> = {
 	en: ({ link }) => ({
 		subject: `${PRODUCT}: your account`,
-		text: letter('An account was made for you. Choose a password here; the link works once:', link)
+		text: letter('Choose a password for your account here; the link works once:', link)
 	})
 };
 
