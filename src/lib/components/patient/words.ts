@@ -7,6 +7,9 @@ import type { Nameboard } from '$lib/domain/episodes/views';
 import { shortDay, type Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
+/** Between two facts on one line; it stays with the first when the line breaks. */
+export const DOT = '\u00a0· ';
+
 const RHYTHM_WORDS: Record<Rhythm, () => string> = {
 	sinus: m.patient_rhythm_sinus,
 	'atrial-fibrillation': m.patient_rhythm_atrial_fibrillation,
@@ -39,7 +42,7 @@ export const FINDING_WORDS: Record<FindingGrade, () => string> = {
 export function heartWords(betaBlocked: boolean | null, rhythm: string | null): string {
 	const drug = { true: m.patient_drug_yes, false: m.patient_drug_no, null: m.patient_drug_unknown };
 	const known = rhythm !== null && rhythm in RHYTHM_WORDS ? RHYTHM_WORDS[rhythm as Rhythm]() : null;
-	return `${drug[`${betaBlocked}`]()} · ${known ?? m.patient_rhythm_unknown()}`;
+	return `${drug[`${betaBlocked}`]()}${DOT}${known ?? m.patient_rhythm_unknown()}`;
 }
 
 /** `day 5`, counted to the present instant, so that a page left open over midnight is right. */

@@ -3,6 +3,7 @@ import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { can } from '$lib/domain/access/can';
 import { Problem } from '$lib/domain/core/errors';
+import { text } from '$lib/domain/core/fields';
 import { referBody } from '$lib/domain/referrals/forms';
 import { routes } from '$lib/routes';
 import { formAction } from '$lib/server/http/form-action';
@@ -11,17 +12,19 @@ import { idParam } from '$lib/server/http/param';
 import { refer } from '$lib/server/referrals/actions';
 import type { Actions, PageServerLoad } from './$types';
 
+const referForm = referBody.extend({ question: text('Question', 4000) });
+
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async ({ actor }) => {
 		if (!can(actor, 'referral.create')) {
 			throw new Problem('not-allowed', `The role ${actor.role} does not refer.`);
 		}
-		return { form: await superValidate(zod4(referBody)), key: newFormKey() };
+		return { form: await superValidate(zod4(referForm)), key: newFormKey() };
 	});
 
 export const actions: Actions = {
 	default: formAction({
-		schema: referBody,
+		schema: referForm,
 		run: async (context, fields, event) => {
 			const episodeId = idParam(event);
 			const { result } = await refer(context, episodeId, fields);

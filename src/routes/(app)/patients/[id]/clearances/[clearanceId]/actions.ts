@@ -1,6 +1,7 @@
 import type { RequestEvent } from '@sveltejs/kit';
 import { giveForm, limitsOf, refuseForm, wrongChoice } from '$lib/components/clearances/decision';
 import { invalidField, type Problem } from '$lib/domain/core/errors';
+import { localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
 import {
 	giveClearance,
@@ -10,6 +11,7 @@ import {
 	type SeenDecision
 } from '$lib/server/clearances/actions';
 import type { PersonContext } from '$lib/server/context';
+import { env } from '$lib/server/env';
 import { formAction } from '$lib/server/http/form-action';
 import { read } from '$lib/server/read';
 import { leadOnWithoutScript } from '../../without-script';
@@ -24,11 +26,14 @@ export const give = formAction({
 	run: async (context, fields, event) => {
 		const id = clearanceOf(event);
 		const { kind } = await read.clearance(context, id);
+		const { reviewOn, note, seen } = fields;
 		const wrong = wrongChoice(kind, fields.limit);
 		if (wrong !== null) {
 			throw invalidField('/limit', wrong);
 		}
-		const { reviewOn, note, seen } = fields;
+		if (reviewOn !== undefined && reviewOn < localDateOf(context.now, env().hospital.zone)) {
+			throw invalidField('/reviewOn', m.clearances_review_is_past());
+		}
 		await giveClearance(context, id, { limits: limitsOf(fields), reviewOn, note }, seen || null);
 		leadOnWithoutScript(event, event.url.pathname);
 		return m.clearances_given();

@@ -2,14 +2,13 @@ import type { RequestEvent } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { notFound } from '$lib/domain/core/errors';
-import { acceptBody } from '$lib/domain/referrals/forms';
 import type { ThreadView } from '$lib/domain/referrals/views';
 import type { PersonContext } from '$lib/server/context';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
 import { askClearanceAction, askForm } from '../../ask-clearance';
-import { accept, close, decline, post, postForm, reasonForm, withdraw } from './actions';
+import { accept, close, decline, maybeReasonForm, post, postForm, reasonForm, withdraw } from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 const PAGE = 200;
@@ -26,9 +25,9 @@ export const load: PageServerLoad = (event) =>
 			threadId,
 			forms: {
 				post: await superValidate(zod4(postForm), { id: 'post' }),
-				accept: await superValidate(zod4(acceptBody), { id: 'accept' }),
+				accept: await superValidate(zod4(maybeReasonForm), { id: 'accept' }),
 				decline: await superValidate(zod4(reasonForm), { id: 'decline' }),
-				close: await superValidate(zod4(acceptBody), { id: 'close' }),
+				close: await superValidate(zod4(maybeReasonForm), { id: 'close' }),
 				withdraw: await superValidate(zod4(reasonForm), { id: 'withdraw' }),
 				ask: await askForm(nameboard.clearances, { now, zone }, threadId)
 			},

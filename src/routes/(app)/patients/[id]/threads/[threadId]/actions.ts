@@ -1,8 +1,8 @@
 import type { RequestEvent } from '@sveltejs/kit';
-import type { z } from 'zod';
+import { z } from 'zod';
 import type { Problem } from '$lib/domain/core/errors';
 import { isOneOf, REFERRAL_STATES } from '$lib/domain/core/codes';
-import { acceptBody, declineBody, entryBody } from '$lib/domain/referrals/forms';
+import { reason, text } from '$lib/domain/core/fields';
 import { REFERRAL_STATE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 import { routes } from '$lib/routes';
@@ -19,9 +19,10 @@ import {
 import { postEntry } from '$lib/server/threads/actions';
 import { leadOnWithoutScript } from '../../without-script';
 
-/** The form actions of a thread: what is said, and what becomes of its referral. */
-export const postForm = entryBody.pick({ body: true });
-export const reasonForm = declineBody;
+/** The forms of a thread. They say the fields' own words where the API says their names. */
+export const postForm = z.object({ body: text('Entry', 8000) });
+export const reasonForm = z.object({ reason: reason('Reason') });
+export const maybeReasonForm = reasonForm.partial();
 
 export const post = formAction({
 	schema: postForm,
@@ -52,17 +53,17 @@ function moving(id: string, schema: z.ZodType<Reason, Reason>, done: () => strin
 	});
 }
 
-export const accept = moving('accept', acceptBody, m.referrals_accepted, (context, id) =>
+export const accept = moving('accept', maybeReasonForm, m.referrals_accepted, (context, id) =>
 	acceptReferral(context, id)
 );
-export const decline = moving('decline', declineBody, m.referrals_declined, (context, id, { reason }) =>
-	declineReferral(context, id, reason ?? '')
+export const decline = moving('decline', reasonForm, m.referrals_declined, (context, id, fields) =>
+	declineReferral(context, id, fields.reason ?? '')
 );
-export const close = moving('close', acceptBody, m.referrals_closed, (context, id, { reason }) =>
-	closeReferral(context, id, reason ?? null)
+export const close = moving('close', maybeReasonForm, m.referrals_closed, (context, id, fields) =>
+	closeReferral(context, id, fields.reason ?? null)
 );
-export const withdraw = moving('withdraw', declineBody, m.referrals_withdrawn, (context, id, { reason }) =>
-	withdrawReferral(context, id, reason ?? '')
+export const withdraw = moving('withdraw', reasonForm, m.referrals_withdrawn, (context, id, fields) =>
+	withdrawReferral(context, id, fields.reason ?? '')
 );
 
 function threadOf({ params }: RequestEvent): string {
