@@ -1,0 +1,54 @@
+import type { ClearanceInForce, Phase } from '$lib/domain/bedside';
+import { isInForce } from '$lib/domain/clearances/states';
+import { CLEARANCE_KINDS, LEVELS, type ClearanceKind, type Level, type Rhythm } from '$lib/domain/core/codes';
+import type { LocalDate } from '$lib/domain/core/time';
+import type { ClearanceLine, Nameboard } from '$lib/domain/episodes/views';
+
+/** What the record knows that a session is judged by. */
+export interface BedsideRecord {
+	level: Level;
+	phase: Phase;
+	betaBlocked: boolean | null;
+	rhythm: Rhythm | null;
+	sternotomy: boolean;
+	clearances: ClearanceInForce[];
+}
+
+type Known = Pick<
+	Nameboard,
+	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances'
+>;
+
+/**
+ * The record as the rules want it. Without an operation on record the precautions of one are kept: nobody has
+ * said that the breastbone is whole.
+ * @param today in the zone of the hospital; a clearance whose review date is past no longer counts
+ */
+export function recordOf(board: Known, today: LocalDate): BedsideRecord {
+	return {
+		level: LEVELS.find((level) => level === board.level) ?? 1,
+		phase: board.phase,
+		betaBlocked: board.betaBlocked,
+		rhythm: board.rhythm,
+		sternotomy: board.operatedAt === null || board.precautions.sternal,
+		clearances: CLEARANCE_KINDS.flatMap((kind) => {
+			const newest = newestOf(board.clearances, kind);
+			return newest ? [toRuleClearance(newest, today)] : [];
+		})
+	};
+}
+
+/** The newest clearance of a kind that counts from the latest operation; null when none was asked. */
+export function newestOf(clearances: readonly ClearanceLine[], kind: ClearanceKind): ClearanceLine | null {
+	return clearances.find((line) => line.kind === kind && line.current) ?? null;
+}
+
+function toRuleClearance(line: ClearanceLine, today: LocalDate): ClearanceInForce {
+	const lapsed = line.state.startsWith('given') && !isInForce(line, today);
+	return {
+		kind: line.kind,
+		state: lapsed ? 'lapsed' : line.state,
+		maxElevationDeg: line.limits?.maxElevationDeg ?? null,
+		maxLoadKg: line.limits?.maxLoadKg ?? null
+	};
+}
