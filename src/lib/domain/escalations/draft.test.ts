@@ -53,6 +53,19 @@ describe('draftEscalation', () => {
 		expect(draft.situation).toContain('The patient has dizziness');
 	});
 
+	it('says what was not measured, and repeats no note that the background holds', () => {
+		const { before, after } = CLEAR;
+		const { findings, outcome } = judge({
+			context: { betaBlocked: null },
+			before,
+			during: [],
+			after: { ...after, hr: null }
+		});
+		const { assessment } = draftEscalation(RECORD, { ...CLEAR, findings, outcome }, ZONE);
+		expect(assessment).toContain('The heart rate after effort was not measured.');
+		expect(assessment).not.toContain('judged as if so');
+	});
+
 	it('gives the background from the record', () => {
 		expect(draftEscalation(RECORD, null, ZONE).background).toBe(
 			'Coronary artery bypass by sternotomy, day 4. Level 4. On a rate-slowing drug. Rhythm: sinus. Arms to 45 degrees.'

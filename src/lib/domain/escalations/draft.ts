@@ -3,7 +3,8 @@
  * sentences for the person who raises it to read and change, so it states what was measured and judges nothing
  * beyond the findings. What is not on record is left out, never guessed.
  */
-import type { FindingGrade, RuleId } from '../bedside/codes';
+import type { FindingGrade } from '../bedside/codes';
+import { isAboutTheDeed } from '../bedside/deed-rules';
 import { plain } from '../bedside/numbers';
 import type { Reading } from '../bedside/forms';
 import type { SessionLine } from '../bedside/views';
@@ -65,21 +66,12 @@ export function draftEscalation(
 	};
 }
 
-/** Stops that speak of what was done, not of how the patient answered: nobody has to run for them. */
-const ABOUT_THE_DEED: readonly RuleId[] = [
-	'clearance-missing',
-	'arm-elevation',
-	'not-following',
-	'airway',
-	'helper-missing'
-];
-
 /**
  * High when the patient's own answer stopped the session, medium for whatever else was found or could not be
  * judged, low for a session without a finding. Common practice, no published source.
  */
 function proposedGrade({ outcome, findings }: DraftSession): Grade {
-	if (findings.some(({ grade, rule }) => grade === 'stop' && !ABOUT_THE_DEED.includes(rule))) {
+	if (findings.some(({ grade, rule }) => grade === 'stop' && !isAboutTheDeed(rule))) {
 		return 'high';
 	}
 	return outcome === 'clear' ? 'low' : 'medium';
@@ -87,7 +79,7 @@ function proposedGrade({ outcome, findings }: DraftSession): Grade {
 
 function situationOf(session: DraftSession, zone: Zone): string[] {
 	const [from, to] = [session.startedAt, session.endedAt].map((at) => localTimeOf(parseRfc3339(at), zone));
-	const done = session.activities.map(({ name }) => name).join(', ') || 'No activity';
+	const done = session.activities.map(({ name }) => name).join(', ') || 'Session at the bedside';
 	const span = from === to ? `at ${from}` : `${from} to ${to}`;
 	const head = `${done}, level ${session.level}, ${span}.`;
 	const stops = reasonsOf(session, 'stop');
@@ -129,7 +121,7 @@ function assessmentOf(session: DraftSession): string[] {
 		...during.map((reading, index) => `In effort (${index + 1}): ${readingWords(reading)}.`),
 		`After: ${readingWords(after)}.`,
 		...(stopped ? reasonsOf(session, 'caution') : []),
-		...reasonsOf(session, 'note')
+		...missingOf(session)
 	];
 }
 
@@ -150,6 +142,13 @@ export function readingWords(reading: Reading): string {
 
 function reasonsOf({ findings }: DraftSession, grade: FindingGrade): string[] {
 	return findings.filter((finding) => finding.grade === grade).map(({ reason }) => reason);
+}
+
+/** What was not measured: the reader must not take it as normal. Other notes stand in the background already. */
+function missingOf({ findings }: DraftSession): string[] {
+	return findings
+		.filter(({ rule, grade }) => rule === 'reading-missing' && grade === 'note')
+		.map(({ reason }) => reason);
 }
 
 /** Whole sentences while they fit; what does not is left to the session itself, and a mark says so. */

@@ -20,7 +20,7 @@ export interface EscalationView {
 	neededBy: string | null;
 	sessionId: string | null;
 	threadId: string | null;
-	raisedBy: { id: string; name: string; role: string };
+	raisedBy: { id: string; name: string; role: Role };
 	raisedAt: string;
 	holder: { id: string; name: string } | null;
 	takenAt: string | null;
