@@ -30,7 +30,7 @@ const themes = plugin(({ addBase }) => {
 		":root, [data-theme='day']": day,
 		'@media (prefers-color-scheme: dark)': { ':root:not([data-theme])': night },
 		"[data-theme='night']": night,
-		'@media print': { ":root, [data-theme='night']": day },
+		'@media print': { ":root, :root:not([data-theme]), [data-theme='night']": day },
 		'@media (forced-colors: active)': { ':root, :root:not([data-theme]), [data-theme]': variables(FORCED) }
 	});
 });

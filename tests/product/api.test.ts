@@ -342,7 +342,7 @@ describe('the description of the API', () => {
 	it('is OpenAPI 3.1 and names every handler with its body', async () => {
 		const { status, body } = await nurse.get('/api/openapi.json');
 		expect([status, body.openapi]).toEqual([200, '3.1.0']);
-		const paths = body.paths as Record<string, Record<string, { requestBody?: object }>>;
+		const paths = body.paths as unknown as Record<string, Record<string, { requestBody?: object }>>;
 		const refer = paths['/api/episodes/{id}/referrals']?.post?.requestBody;
 		expect(refer).toMatchObject({
 			content: { 'application/json': { schema: { required: ['service', 'priority', 'question'] } } }

@@ -6,11 +6,14 @@ const keys = (places: { key: string }[]) => places.map(({ key }) => key);
 
 describe('the places', () => {
 	it('leaves room for More among the four of a phone', () => {
-		expect(mainPlaces()).toHaveLength(3);
+		expect(ROLES.map((role) => mainPlaces(role).length)).toEqual(ROLES.map(() => 3));
 	});
 
 	it.each(ROLES)('shows accounts to an administrator alone (%s)', (role) => {
-		expect(keys(morePlaces(role, false)).includes('accounts')).toBe(role === 'admin');
+		const all = [...mainPlaces(role), ...morePlaces(role, false)];
+		expect(keys(all).includes('accounts')).toBe(role === 'admin');
+		expect(keys(all).includes('ward')).toBe(role !== 'admin');
+		expect(new Set(keys(all)).size).toBe(all.length);
 	});
 
 	it.each([true, false])('shows the phones of the demonstration only in one (%s)', (demo) => {
@@ -27,11 +30,11 @@ describe('isIn', () => {
 		['/visits', 'visits'],
 		['/cover', 'cover']
 	])('puts %s in %s and nowhere else', (path, key) => {
-		const places = [...mainPlaces(), coverPlace()];
+		const places = [...mainPlaces('nurse'), coverPlace()];
 		expect(keys(places.filter((place) => isIn(place, path)))).toEqual([key]);
 	});
 
 	it.each(['/wardrobe', '/', '/bedside/018f'])('puts %s nowhere', (path) => {
-		expect(mainPlaces().some((place) => isIn(place, path))).toBe(false);
+		expect(mainPlaces('nurse').some((place) => isIn(place, path))).toBe(false);
 	});
 });

@@ -7,8 +7,18 @@ export type Place = { key: PlaceKey; href: string; label: string; under: readonl
 export type PlaceKey =
 	'loose-ends' | 'ward' | 'visits' | 'cover' | 'rules' | 'account' | 'accounts' | 'phones';
 
-/** The places of everyday work; a phone shows these three and 'More'. */
-export function mainPlaces(): Place[] {
+/**
+ * The places of everyday work; a phone shows these three and 'More'. An administrator sees no patients, and so
+ * has other work.
+ */
+export function mainPlaces(role: Role): Place[] {
+	if (role === 'admin') {
+		return [
+			place('loose-ends', routes.looseEnds(), m.common_place_loose_ends()),
+			place('accounts', routes.adminAccounts(), m.common_place_accounts()),
+			place('account', routes.account(), m.common_place_account())
+		];
+	}
 	return [
 		place('loose-ends', routes.looseEnds(), m.common_place_loose_ends(), ['/escalations']),
 		place('ward', routes.ward(), m.common_place_ward(), ['/patients']),
@@ -20,8 +30,7 @@ export function mainPlaces(): Place[] {
 export function morePlaces(role: Role, demo: boolean): Place[] {
 	return [
 		place('rules', routes.rules(), m.common_place_rules()),
-		place('account', routes.account(), m.common_place_account()),
-		...(role === 'admin' ? [place('accounts', routes.adminAccounts(), m.common_place_accounts())] : []),
+		...(role === 'admin' ? [] : [place('account', routes.account(), m.common_place_account())]),
 		...(demo ? [place('phones', routes.phones(), m.common_place_phones())] : [])
 	];
 }

@@ -1,0 +1,166 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, test, type Browser, type BrowserContextOptions, type Page } from '@playwright/test';
+import { admit, signInAs, type Client, type SIGN_INS } from '../support/api';
+import { startProduct, type Product } from '../support/server';
+import { DESK, expectConnected, PHONE } from './people';
+
+type Who = keyof typeof SIGN_INS;
+
+let product: Product;
+let episodeId: string;
+const api: Partial<Record<Who, Client>> = {};
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { RATE_LIMIT_SCALE: '100' } });
+	episodeId = await admit(await as('coordinator'), { level: 5 });
+});
+test.afterAll(() => product?.stop());
+
+async function as(who: Who): Promise<Client> {
+	return (api[who] ??= await signInAs(product.url, who));
+}
+
+/** A page of this person, signed in by cookie, so that it needs no script. */
+async function pageOf(browser: Browser, who: Who, options: BrowserContextOptions = {}): Promise<Page> {
+	const [name = '', value = ''] = ((await as(who)).cookie ?? '').split('=');
+	const context = await browser.newContext({ baseURL: product.url, viewport: DESK, ...options });
+	await context.addCookies([{ name, value, url: product.url }]);
+	return context.newPage();
+}
+
+async function referred(): Promise<string> {
+	const body = { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' };
+	const answer = await (await as('surgeon')).post(`/api/episodes/${episodeId}/referrals`, body);
+	return `/patients/${episodeId}/threads/${answer.body.threadId}`;
+}
+
+const field = (page: Page) => page.getByLabel('Write into the thread');
+const alerts = (page: Page) => page.getByRole('alert').filter({ hasText: /./ });
+
+test('without script: refer, accept, talk, ask, decide, and see who was faster', async ({ browser }) => {
+	const plain = { javaScriptEnabled: false };
+	const surgeon = await pageOf(browser, 'surgeon', plain);
+	await surgeon.goto(`/patients/${episodeId}/refer`);
+	await surgeon.getByRole('radio', { name: 'Speech therapy' }).check();
+	await surgeon.getByRole('button', { name: 'Refer' }).click();
+	await expect(alerts(surgeon)).toHaveText('Question is empty.');
+	await expect(surgeon.getByRole('radio', { name: 'Speech therapy' })).toBeChecked();
+	await surgeon.getByLabel(/What do you ask/).fill('Voice is weak. Please look.');
+	await surgeon.getByRole('button', { name: 'Refer' }).click();
+	await expect(surgeon).toHaveURL(/threads/);
+
+	const speech = await pageOf(browser, 'speech-therapist', plain);
+	await speech.goto(surgeon.url());
+	await speech.getByRole('button', { name: 'Accept', exact: true }).click();
+	await expect(speech.getByText('Accepted.', { exact: true })).toBeVisible();
+	await field(speech).fill('At three o’clock.');
+	await speech.getByRole('button', { name: 'Send' }).click();
+	await expect(speech.getByText('At three o’clock.')).toBeVisible();
+	await expect(field(speech)).toHaveValue('');
+
+	const therapist = await pageOf(browser, 'therapist', plain);
+	await therapist.goto(`/patients/${episodeId}/clearances`);
+	await therapist.getByLabel(/For what/).selectOption('stairs');
+	await therapist.getByLabel(/What do you ask/).fill('Six steps went well.');
+	await therapist.getByRole('button', { name: 'Ask', exact: true }).click();
+	await therapist.getByRole('link', { name: 'Stairs' }).click();
+
+	const physician = await pageOf(browser, 'physician', plain);
+	await surgeon.goto(therapist.url());
+	await physician.goto(therapist.url());
+	await surgeon.getByRole('radio', { name: 'two helpers' }).check();
+	await surgeon.getByRole('button', { name: 'Clear, with two helpers' }).click();
+	await expect(surgeon.getByText('Cleared with limits')).toBeVisible();
+	await physician.getByRole('button', { name: 'Clear, with one helper' }).click();
+	await expect(alerts(physician)).toContainText('Hilde Castellane was faster');
+	await expect(physician.getByText('with two helpers', { exact: true })).toBeVisible();
+});
+
+test('what is typed into a thread survives a reload, and what went out without an answer is not posted twice', async ({
+	browser
+}) => {
+	const thread = await referred();
+	const page = await pageOf(browser, 'nurse', { viewport: PHONE });
+	await page.goto(thread);
+	await expectConnected(page);
+	await field(page).fill('Half a sentence');
+	await page.reload();
+	await expect(field(page)).toHaveValue('Half a sentence');
+
+	// It arrives, but the answer never comes back.
+	await page.route(`**${thread}?/post`, async (route) => {
+		await route.fetch();
+		await route.abort();
+	});
+	await field(page).press('Control+Enter');
+	await expect(page.getByText('No answer: this may not have arrived')).toBeVisible();
+	await expect(field(page)).toHaveValue('Half a sentence');
+	await page.unroute(`**${thread}?/post`);
+	await page.reload();
+	await expect(field(page)).toHaveValue('Half a sentence');
+	await page.getByRole('button', { name: 'Send' }).click();
+	await expect(field(page)).toHaveValue('');
+	await expect(page.getByText('Half a sentence')).toHaveCount(1);
+});
+
+test('a thread of several pages opens at its end and marks what arrives', async ({ browser }) => {
+	test.setTimeout(120_000);
+	const thread = await referred();
+	const threadId = thread.split('/').at(-1) ?? '';
+	const say = async (body: string) => (await as('nurse')).post(`/api/threads/${threadId}/entries`, { body });
+	for (let n = 1; n <= 205; n += 1) {
+		await say(`Line ${n}`);
+	}
+	const page = await pageOf(browser, 'therapist');
+	await page.goto(thread);
+	await expectConnected(page);
+	await expect(page.getByText('Line 205', { exact: true })).toBeInViewport();
+	await say('The newest of all.');
+	const newest = page.getByRole('listitem').filter({ hasText: 'The newest of all.' });
+	await expect(newest).toBeInViewport();
+	await expect(newest.getByText('new', { exact: true })).toBeVisible();
+	await page.evaluate(() => scrollTo(0, 0));
+	await say('Newer still.');
+	await expect(page.getByRole('link', { name: /New below/ })).toBeVisible();
+});
+
+test('nothing of a patient is shown under another patient’s nameboard', async ({ browser }) => {
+	const other = await admit(await as('coordinator'));
+	const thread = await referred();
+	const page = await pageOf(browser, 'therapist');
+	const wrong = await page.goto(thread.replace(episodeId, other));
+	expect(wrong?.status()).toBe(404);
+});
+
+test('the pages of a patient have no fault that a machine can find, by day and by night', async ({
+	browser
+}) => {
+	test.setTimeout(120_000);
+	const { items } = (await (await as('therapist')).get('/api/episodes?limit=200')).body;
+	const found: string[] = [];
+	for (const [viewport, colorScheme] of [
+		[PHONE, 'dark'],
+		[DESK, 'light']
+	] as const) {
+		const page = await pageOf(browser, 'surgeon', { viewport, colorScheme });
+		for (const { id } of items.filter(({ bed }) => ['T4', 'T8'].includes(bed))) {
+			const board = (await (await as('surgeon')).get(`/api/episodes/${String(id)}`)).body;
+			const within = (part: string) => (each: { id: string }) => `/patients/${String(id)}/${part}/${each.id}`;
+			const paths = [
+				`/patients/${String(id)}`,
+				`/patients/${String(id)}/refer`,
+				`/patients/${String(id)}/clearances`,
+				`/patients/${String(id)}/sessions`,
+				...(board.threads as { id: string }[]).map(within('threads')),
+				...(board.clearances as { id: string }[]).map(within('clearances'))
+			];
+			for (const path of paths) {
+				await page.goto(path);
+				const { violations } = await new AxeBuilder({ page }).analyze();
+				found.push(...violations.map((violation) => `${path} ${violation.id}`));
+			}
+		}
+	}
+	expect(found).toEqual([]);
+});
