@@ -139,27 +139,24 @@ test('the pages of a patient have no fault that a machine can find, by day and b
 	test.setTimeout(120_000);
 	const { items } = (await (await as('therapist')).get('/api/episodes?limit=200')).body;
 	const found: string[] = [];
-	for (const [viewport, colorScheme] of [
-		[PHONE, 'dark'],
-		[DESK, 'light']
+	for (const [inBed, viewport, colorScheme] of [
+		['T4', PHONE, 'dark'],
+		['T8', DESK, 'light']
 	] as const) {
+		const id = String(items.find(({ bed }) => bed === inBed)?.id);
+		const board = (await (await as('surgeon')).get(`/api/episodes/${id}`)).body;
+		const within = (part: string, of: { id: string }[]) =>
+			of.map((each) => `/patients/${id}/${part}/${each.id}`);
+		const paths = [
+			...['', '/refer', '/clearances', '/sessions'].map((part) => `/patients/${id}${part}`),
+			...within('threads', board.threads ?? []),
+			...within('clearances', board.clearances ?? [])
+		];
 		const page = await pageOf(browser, 'surgeon', { viewport, colorScheme });
-		for (const { id } of items.filter(({ bed }) => ['T4', 'T8'].includes(bed))) {
-			const board = (await (await as('surgeon')).get(`/api/episodes/${String(id)}`)).body;
-			const within = (part: string) => (each: { id: string }) => `/patients/${String(id)}/${part}/${each.id}`;
-			const paths = [
-				`/patients/${String(id)}`,
-				`/patients/${String(id)}/refer`,
-				`/patients/${String(id)}/clearances`,
-				`/patients/${String(id)}/sessions`,
-				...(board.threads as { id: string }[]).map(within('threads')),
-				...(board.clearances as { id: string }[]).map(within('clearances'))
-			];
-			for (const path of paths) {
-				await page.goto(path);
-				const { violations } = await new AxeBuilder({ page }).analyze();
-				found.push(...violations.map((violation) => `${path} ${violation.id}`));
-			}
+		for (const path of paths) {
+			await page.goto(path);
+			const { violations } = await new AxeBuilder({ page }).analyze();
+			found.push(...violations.map((violation) => `${path} ${violation.id}`));
 		}
 	}
 	expect(found).toEqual([]);

@@ -1,5 +1,5 @@
 import type { EntryLine } from '$lib/domain/referrals/views';
-import type { TiedAsk } from '../rope/RopeThread.svelte';
+import type { StrandName } from '../rope/strands';
 import type { ThreadAsk } from './asks';
 
 /** One entry as the rope shows it. */
@@ -34,8 +34,15 @@ export function rowsOf(
 	}));
 }
 
+/** A way beside the rope, from row to row; `to` is null while it hangs loose. */
+export interface AskWay {
+	from: string;
+	to: string | null;
+	strand: StrandName;
+}
+
 /** The strands that leave the rope: tied in again at their answer, frayed while they are open. */
-export function waysOf(asks: readonly ThreadAsk[]): TiedAsk[] {
+export function waysOf(asks: readonly ThreadAsk[]): AskWay[] {
 	return asks
 		.filter(({ answer, open }) => answer !== null || open !== null)
 		.map(({ entry, answer }) => ({ from: entry.id, to: answer?.id ?? null, strand: entry.strand }));
