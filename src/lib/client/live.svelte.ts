@@ -9,6 +9,7 @@ type Message =
 	| { kind: 'change'; cursor: number; event: StreamEvent }
 	| { kind: 'reset'; cursor: number }
 	| { kind: 'state'; connected: boolean; since: number | null }
+	| { kind: 'signed-out' }
 	| { kind: 'hello' };
 
 /**
@@ -20,6 +21,8 @@ export class LiveConnection {
 	connected = $state(false);
 	/** When the stream was lost, milliseconds UTC; null when it was never up. */
 	since = $state<number | null>(null);
+	/** The sign-in has ended: nothing comes any more until somebody signs in again. */
+	signedOut = $state(false);
 
 	#cursor: number;
 	#source: EventSource | null = null;
@@ -73,11 +76,24 @@ export class LiveConnection {
 		);
 		source.onerror = () => {
 			this.#setState(false);
-			// A refusal (signed out, server stopping) closes it for good; a cut connection is retried by the browser.
+			// A refusal closes it for good; a cut connection is retried by the browser itself.
 			if (source.readyState === EventSource.CLOSED && !this.#stopped.signal.aborted) {
-				setTimeout(() => source === this.#source && this.#reopen(), RETRY_MS);
+				void this.#refused(source);
 			}
 		};
+	}
+
+	/** Refused: the sign-in ended, or the server is stopping. The first is told, the second waits for it. */
+	async #refused(source: EventSource): Promise<void> {
+		const status = await fetch('/api/me', { cache: 'no-store' }).then(
+			(response) => response.status,
+			() => 0
+		);
+		if (status === 401) {
+			this.#tell({ kind: 'signed-out' });
+			return;
+		}
+		setTimeout(() => source === this.#source && this.#reopen(), RETRY_MS);
 	}
 
 	#reopen(): void {
@@ -118,6 +134,10 @@ export class LiveConnection {
 			case 'state':
 				this.connected = message.connected;
 				this.since = message.since;
+				this.signedOut &&= !message.connected;
+				break;
+			case 'signed-out':
+				this.signedOut = true;
 				break;
 			case 'hello':
 				if (this.#source) {
