@@ -7,6 +7,8 @@ declare global {
 			context: Context;
 			/** The sign-in behind the cookie; null for programs and for nobody. */
 			signInId: string | null;
+			/** Is the sign-in or token of this request good at the moment of asking? For what outlives a request. */
+			credentialStillGood: () => Promise<boolean>;
 			requestId: string;
 			/** The live log's cursor from before the page was read. */
 			liveCursor: number;

@@ -3,7 +3,7 @@ import { sequence } from '@sveltejs/kit/hooks';
 import { Problem } from '$lib/domain/core/errors';
 import { routes } from '$lib/routes';
 import { personOfToken } from '$lib/server/auth/people';
-import { personOfCookie } from '$lib/server/auth/sign-ins';
+import { personOfCookie, signInStillGood } from '$lib/server/auth/sign-ins';
 import { now } from '$lib/server/clock';
 import { newId } from '$lib/server/ids';
 import { liveCursor } from '$lib/server/live/log';
@@ -22,12 +22,17 @@ const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
 
 const identify: Handle = async ({ event, resolve }) => {
 	const { cookies, request } = event;
+	// Read first: a connection that is gone after an await has no address any more.
+	const address = event.getClientAddress();
 	const bearer = /^Bearer (\S+)$/.exec(request.headers.get('authorization') ?? '')?.[1];
 	const cookie = bearer ? null : await personOfCookie(cookies);
 	const person = bearer ? await personOfToken(bearer) : (cookie?.person ?? null);
-	const address = event.getClientAddress();
 	event.locals.requestId = newId();
 	event.locals.signInId = cookie?.signInId ?? null;
+	event.locals.credentialStillGood = async () =>
+		bearer
+			? (await personOfToken(bearer)) !== null
+			: cookie !== null && signInStillGood(cookie.signInId, now());
 	event.locals.context = { actor: person, now: now(), address, key: null };
 	if (!UNCOUNTED.test(event.url.pathname)) {
 		countRequest(person?.id ?? address, now());

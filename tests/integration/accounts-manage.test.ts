@@ -10,9 +10,9 @@ import {
 	inviteAgain,
 	setUnits
 } from '$lib/server/accounts/manage';
-import { makeToken } from '$lib/server/accounts/own';
+import { makeToken, revokeToken, tokensOf } from '$lib/server/accounts/own';
 import { loadPerson, personOfToken } from '$lib/server/auth/people';
-import { personOfCookie, startSignIn } from '$lib/server/auth/sign-ins';
+import { personOfCookie, signInStillGood, startSignIn } from '$lib/server/auth/sign-ins';
 import { digestSecret } from '$lib/server/auth/lucia';
 import type { PersonContext } from '$lib/server/context';
 import { db } from '$lib/server/db';
@@ -166,8 +166,9 @@ describe('disabling an account', () => {
 		const [person, other] = [await nurse(), await nurse()];
 		const jar = Jar.empty();
 		await startSignIn(jar, person.id, HOSPITAL_NOW);
-		const own = openStream(person, digestSecret(jar.get('ropewalk') ?? ''), null).body?.getReader();
-		const others = openStream(other, null, null).body?.getReader();
+		const digest = digestSecret(jar.get('ropewalk') ?? '');
+		const own = openStream(person, () => signInStillGood(digest, HOSPITAL_NOW), null).body?.getReader();
+		const others = openStream(other, () => Promise.resolve(true), null).body?.getReader();
 		if (!own || !others) {
 			throw new Error('A stream has no body.');
 		}
@@ -180,6 +181,21 @@ describe('disabling an account', () => {
 		}
 		expect(openStreams()).toBe(1);
 		await others.cancel();
+	});
+
+	it('ends the stream of a program whose token is revoked', async () => {
+		const person = await nurse();
+		const token = (await makeToken(contextOf(person), { name: 'ward clock' })) ?? '';
+		const good = async () => (await personOfToken(token)) !== null;
+		const stream = openStream(person, good, null).body?.getReader();
+		await stream?.read();
+		await stream?.read();
+		const [row] = await tokensOf(contextOf(person));
+		await revokeToken(contextOf(person), row?.id ?? '');
+		for (let done = false; !done;) {
+			({ done } = (await stream?.read()) ?? { done: true });
+		}
+		expect(openStreams()).toBe(0);
 	});
 
 	it('is refused for oneself, for nobody, and a second time', async () => {

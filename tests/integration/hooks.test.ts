@@ -451,7 +451,7 @@ describe('the status of a message', () => {
 		['failed', ['failed', 'sent'], 'undelivered'],
 		['delivered after all', ['undelivered', 'delivered'], 'delivered'],
 		['a word that nobody knows', ['sent', 'teleported'], 'accepted']
-	])('F16: %s', async (_, statuses, state) => {
+	])('%s', async (_, statuses, state) => {
 		const { id, sid } = await acceptedReminder();
 		for (const status of statuses) {
 			const answer = await told(sid, status);
@@ -461,7 +461,7 @@ describe('the status of a message', () => {
 		expect((await rowOf(id)).state).toBe(state);
 	});
 
-	it('F16: forty callbacks at once, each many times, end in one place', async () => {
+	it('forty callbacks at once, each many times, end in one place', async () => {
 		const { id, sid } = await acceptedReminder();
 		const all = Array.from({ length: 10 }, () => ['delivered', 'queued', 'sent', 'sending']).flat();
 		await Promise.all(all.map((status) => told(sid, status)));

@@ -126,7 +126,7 @@ describe('the log', () => {
 		const from = await currentCursor(db());
 		await happened(1);
 		await happened(2);
-		const response = openStream(hospital.people.nurse, null, from);
+		const response = openStream(hospital.people.nurse, () => Promise.resolve(true), from);
 		publish(await happened(3));
 		publish(await happened(4));
 		const text = await readUntil(response, new RegExp(`id: ${from + 4}\nevent`));

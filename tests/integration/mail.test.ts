@@ -97,12 +97,12 @@ describe('a mail over SMTP', () => {
 		expect(await channel().send(message())).toEqual({ outcome, code });
 	});
 
-	it('F19: cut off after the text, nobody knows', async () => {
+	it('cut off after the text, nobody knows', async () => {
 		await gateway.fault('mail', 'drop', 1);
 		expect((await channel().send(message())).outcome).toEqual({ kind: 'unknown', reason: 'no-answer' });
 	});
 
-	it('F19: nobody listens', async () => {
+	it('nobody listens', async () => {
 		const gone = mailChannel(
 			{ url: 'smtp://127.0.0.1:4398', from: 'a@b.example', requireTls: false },
 			env().publicUrl
@@ -110,7 +110,7 @@ describe('a mail over SMTP', () => {
 		expect((await gone.send(message())).outcome).toMatchObject({ kind: 'transient', reason: 'not-reached' });
 	});
 
-	it('F19: in production nothing is sent to a server that does not encrypt', async () => {
+	it('in production nothing is sent to a server that does not encrypt', async () => {
 		const open = mailChannel(
 			{ url: `smtp://127.0.0.1:${gateway.smtpPort}`, from: 'a@b.example', requireTls: true },
 			env().publicUrl
@@ -157,7 +157,7 @@ describe('headers', () => {
 		]);
 	});
 
-	it('F19: a server that never greets is given up', async () => {
+	it('a server that never greets is given up', async () => {
 		const silent = createSocketServer(() => {});
 		await new Promise<void>((resolve) => silent.listen(0, '127.0.0.1', resolve));
 		const { port } = silent.address() as AddressInfo;

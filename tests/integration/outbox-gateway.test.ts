@@ -88,7 +88,7 @@ describe('the SDK against the stand-in', () => {
 	});
 });
 
-describe('F13: answers that are none', () => {
+describe('answers that are none', () => {
 	let server: Server | null = null;
 
 	afterEach(async () => {
@@ -130,7 +130,7 @@ describe('F13: answers that are none', () => {
 		expect(asked).toHaveLength(1);
 	});
 
-	it('F10: nobody listens', async () => {
+	it('nobody listens', async () => {
 		const account = { accountSid: `AC${'0'.repeat(32)}`, authToken: 'x', from: '+353860000000' };
 		const nobody = smsChannel(
 			{ ...account, baseUrl: 'http://127.0.0.1:4399' },

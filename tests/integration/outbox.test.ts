@@ -183,7 +183,7 @@ describe('sending', () => {
 	});
 });
 
-describe('F3: a worker that is killed', () => {
+describe('a worker that is killed', () => {
 	async function abandoned(): Promise<string> {
 		const id = await reminder();
 		sms.hold();
@@ -206,7 +206,7 @@ describe('F3: a worker that is killed', () => {
 		expect((await rowOf(id)).state).toBe(seen ? 'accepted' : 'sending');
 	});
 
-	it('F2: is not sent again when the gateway has it', async () => {
+	it('is not sent again when the gateway has it', async () => {
 		const id = await abandoned();
 		now = HOSPITAL_NOW + MINUTE;
 		sms.found = [['SM-earlier']];
@@ -319,7 +319,7 @@ describe('what does not go through', () => {
 		expect(row?.smsOptedOutAt).toBe(reason === 'opted-out' ? now : null);
 	});
 
-	it('F12: gives the gateway the time it asks for, from all messages', async () => {
+	it('gives the gateway the time it asks for, from all messages', async () => {
 		const first = await reminder();
 		sms.script = [transient(20 * SECOND)];
 		await worker({}, 0).settle();

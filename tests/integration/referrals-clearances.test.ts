@@ -189,6 +189,22 @@ describe('a clearance', () => {
 		expect((await giveClearance(as('surgeon'), id, {})).result.state).toBe('given');
 	});
 
+	it('taken back before anybody decided holds nothing, taken back afterwards does', async () => {
+		const held = await addPatient({ unitId: hospital.units.ward });
+		const kind = 'out-of-bed' as const;
+		const { id } = (await askClearance(as('therapist'), held.episodeId, { kind, question: 'May she?' }))
+			.result;
+		const chair = async () =>
+			(await getNameboard(db(), hospital.people.nurse, held.episodeId, hospital.now)).mayDoNow.chair;
+		await withdrawClearance(as('therapist'), id, 'Asked too early.');
+		expect(await chair()).toBe('one');
+		const second = (await askClearance(as('therapist'), held.episodeId, { kind, question: 'And now?' }))
+			.result;
+		await giveClearance(as('surgeon'), second.id, {});
+		await withdrawClearance(as('surgeon'), second.id, 'Bleeding.');
+		expect(await chair()).toBe('not');
+	});
+
 	it('counts from the latest operation: a return to theatre makes it void', async () => {
 		const { id } = (await ask()).result;
 		await giveClearance(as('surgeon'), id, { limits: { maxElevationDeg: 90 } });

@@ -13,7 +13,15 @@ import { getJson } from './api';
  * server rendered the page with. Use as `createQuery(() => queries.thread(id, data.thread))`.
  */
 function query<T>(queryKey: readonly string[], path: string, initialData: T) {
-	return { queryKey, queryFn: () => getJson<T>(path), initialData, enabled: browser, staleTime: Infinity };
+	return {
+		queryKey,
+		queryFn: () => getJson<T>(path),
+		initialData,
+		enabled: browser,
+		staleTime: Infinity,
+		// An event between a page's load and its mount finds no query to make stale, so ask once more on mount.
+		refetchOnMount: 'always' as const
+	};
 }
 
 type List<T> = { items: T[]; next: string | null };

@@ -5,7 +5,7 @@ import type { WriteKey } from './context';
 import type { Db, Reader, Tx } from './db';
 import { idempotencyKeys } from './db/schema';
 
-/** API.md promises at least seven days. */
+/** The API promises at least seven days. */
 export const KEPT_MS = 8 * 24 * 60 * 60 * 1000;
 
 const inFlight = new Set<string>();

@@ -19,8 +19,16 @@ export function startServer(): Promise<void> {
 	if (building) {
 		return Promise.resolve();
 	}
-	state.__ropewalkStarted ??= start();
+	state.__ropewalkStarted ??= start().catch(refuseToStart);
 	return state.__ropewalkStarted;
+}
+
+/** The operator reads what to do, not a stack; the cause is in the log for whoever looks further. */
+function refuseToStart(error: unknown): never {
+	const message = error instanceof Error ? error.message : String(error);
+	process.stderr.write(`Ropewalk did not start. ${message}\n`);
+	log().debug({ err: error }, 'start refused');
+	process.exit(1);
 }
 
 async function start(): Promise<void> {

@@ -55,7 +55,7 @@ export async function accessClearance(db: Reader, person: Person, id: string, pe
 	return allowed(person, row, row?.episode.unitId, permission, 'clearance', subject);
 }
 
-/** An escalation belongs to the unit where the patient lies now, and to the one where it was raised. */
+/** An escalation belongs to the unit where the patient lies now. */
 export async function accessEscalation(db: Reader, person: Person, id: string, permission: Permission) {
 	const [row] = await db
 		.select({ escalation: escalations, episode: episodes })

@@ -103,7 +103,9 @@ export async function revokeToken(context: PersonContext, id: string): Promise<v
 		}
 		return {
 			result: { id },
-			audit: { action: 'account.token-revoked', objectKind: 'token', objectId: id }
+			audit: { action: 'account.token-revoked', objectKind: 'token', objectId: id },
+			// Open streams look at their credential again when they hear this.
+			events: [accountEvent('token-revoked', context.actor.id)]
 		};
 	});
 }

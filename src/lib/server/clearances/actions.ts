@@ -112,9 +112,12 @@ function decide(
 		const state = nextClearanceState(clearance.state, move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
+		// An ask taken back was never decided; only a decision can hold what the level allows.
+		const takenBack = move === 'withdraw' && clearance.state === 'asked';
+		const decidedBy = takenBack ? null : context.actor.id;
 		await tx
 			.update(clearances)
-			.set({ ...decision, limits, state, decidedBy: context.actor.id, decidedAt: context.now })
+			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now })
 			.where(eq(clearances.id, id));
 		await recordClearanceMove(tx, context, {
 			clearanceId: id,

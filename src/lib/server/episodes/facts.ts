@@ -81,7 +81,10 @@ function derive(
 ): EpisodeFacts {
 	const { zone } = env().hospital;
 	const operation = newestFirst.find((row) => row.operatedAt <= now) ?? newestFirst.at(-1) ?? null;
-	const counting = asked.filter((row) => row.operationId === null || row.operationId === operation?.id);
+	const takenBack = (row: Clearance) => row.state === 'withdrawn' && row.decidedBy === null;
+	const counting = asked.filter(
+		(row) => (row.operationId === null || row.operationId === operation?.id) && !takenBack(row)
+	);
 	const newest = counting.filter((row, index) => counting.findIndex((c) => c.kind === row.kind) === index);
 	const today = localDateOf(now, zone);
 	const inForce = newest.filter((row) => isInForce(row, today));

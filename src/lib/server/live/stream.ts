@@ -2,8 +2,6 @@ import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { Problem } from '$lib/domain/core/errors';
 import { loadPerson } from '../auth/people';
-import { signInStillGood } from '../auth/sign-ins';
-import { now } from '../clock';
 import { db } from '../db';
 import { log } from '../log';
 import { guardedStream, type Sink } from './guarded';
@@ -41,16 +39,20 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
 /**
  * Open the live stream of one person.
  * @param after the cursor to resume from; null starts with what happens next
- * @param signInId the browser's sign-in, checked again at each heartbeat; null for programs with a token
+ * @param stillGood whether the sign-in or token behind it is still good; asked again at each heartbeat
  */
-export function openStream(person: Person, signInId: string | null, after: number | null): Response {
+export function openStream(
+	person: Person,
+	stillGood: () => Promise<boolean>,
+	after: number | null
+): Response {
 	if (closing) {
 		throw new Problem('not-ready', 'The server is stopping; try again in a few seconds.');
 	}
 	let current = person;
 	const stillEntitled = async () => {
 		const fresh = await loadPerson(db(), person.id);
-		if (!fresh || (signInId !== null && !(await signInStillGood(signInId, now())))) {
+		if (!fresh || !(await stillGood())) {
 			return false;
 		}
 		current = fresh;

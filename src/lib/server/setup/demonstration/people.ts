@@ -23,7 +23,7 @@ interface DemoPerson {
 	phone: string;
 }
 
-/** The invented staff. The first eight are named in API.md and on the front page. */
+/** The invented staff. The first eight are named in the README and on the front page. */
 export const PEOPLE = {
 	surgeon: { signIn: 'surgeon', name: 'Hilde Castellane', role: 'surgeon', phone: '+353861000001' },
 	physician: { signIn: 'physician', name: 'Marta Lisowska', role: 'physician', phone: '+353861000002' },
