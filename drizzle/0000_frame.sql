@@ -300,6 +300,7 @@ CREATE TABLE `escalations` (
 	`recheck_done_at` integer,
 	`next_step` integer,
 	`next_step_at` integer,
+	`chain_started_at` integer NOT NULL,
 	FOREIGN KEY (`episode_id`) REFERENCES `episodes`(`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`unit_id`) REFERENCES `units`(`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`told_in_person`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action,
@@ -324,10 +325,12 @@ CREATE TABLE `inbound_messages` (
 	`patient_id` text,
 	`user_id` text,
 	`understood_as` text NOT NULL,
+	`visit_id` text,
 	`handled_at` integer,
 	`handled_by` text,
 	FOREIGN KEY (`patient_id`) REFERENCES `patients`(`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`visit_id`) REFERENCES `visits`(`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`handled_by`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
@@ -355,8 +358,11 @@ CREATE TABLE `outbox` (
 	`lease_until` integer,
 	`sent_at` integer,
 	`provider_id` text,
+	`handled_at` integer,
+	`handled_by` text,
 	FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action,
-	FOREIGN KEY (`patient_id`) REFERENCES `patients`(`id`) ON UPDATE no action ON DELETE no action
+	FOREIGN KEY (`patient_id`) REFERENCES `patients`(`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`handled_by`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
 CREATE UNIQUE INDEX `outbox_cause_key_unique` ON `outbox` (`cause_key`);--> statement-breakpoint
@@ -380,6 +386,7 @@ CREATE TABLE `sms_statuses` (
 	`id` text PRIMARY KEY NOT NULL,
 	`provider_id` text NOT NULL,
 	`status` text NOT NULL,
+	`error_code` text,
 	`at` integer NOT NULL
 );
 --> statement-breakpoint
@@ -518,9 +525,13 @@ CREATE TABLE `visits` (
 	`booked_by` text NOT NULL,
 	`booked_at` integer NOT NULL,
 	`decided_at` integer,
+	`patient_cancelled_at` integer,
+	`followed_up_at` integer,
+	`followed_up_by` text,
 	FOREIGN KEY (`episode_id`) REFERENCES `episodes`(`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`unit_id`) REFERENCES `units`(`id`) ON UPDATE no action ON DELETE no action,
-	FOREIGN KEY (`booked_by`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action
+	FOREIGN KEY (`booked_by`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`followed_up_by`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
 CREATE INDEX `visits_start` ON `visits` (`starts_at`);--> statement-breakpoint
