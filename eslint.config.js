@@ -123,7 +123,10 @@ export default ts.config(
 			'@typescript-eslint/no-floating-promises': 'error',
 			'@typescript-eslint/await-thenable': 'error',
 			'@typescript-eslint/no-misused-promises': 'error',
-			'@typescript-eslint/switch-exhaustiveness-check': ['error', { considerDefaultExhaustiveForUnions: true }]
+			'@typescript-eslint/switch-exhaustiveness-check': [
+				'error',
+				{ considerDefaultExhaustiveForUnions: true }
+			]
 		}
 	},
 	{ files: ['src/cli/**', 'src/fakes/**', 'tests/**'], rules: { 'no-console': 'off' } },

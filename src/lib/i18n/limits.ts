@@ -17,4 +17,3 @@ export function limitWords(limits: ClearanceLimits | null): string[] {
 		limits.text ?? ''
 	].filter((part) => part !== '');
 }
-
