@@ -51,6 +51,17 @@ describe('signing in', () => {
 		});
 	});
 
+	it('is open to a program that has no cookie and names no origin, and to no foreign page', async () => {
+		const send = (origin: Record<string, string>) =>
+			fetch(`${product.url}/api/session`, {
+				method: 'POST',
+				headers: { 'content-type': 'application/json', ...origin },
+				body: JSON.stringify({ email: SIGN_INS.nurse, password: PASSWORD })
+			});
+		expect((await send({})).status).toBe(200);
+		expect((await send({ origin: 'https://evil.example' })).status).toBe(403);
+	});
+
 	it('ends with signing out: the cookie is dead', async () => {
 		const client = await signInAs(product.url, 'admin');
 		expect((await client.send('DELETE', '/api/session')).status).toBe(204);

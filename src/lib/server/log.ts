@@ -11,6 +11,7 @@ export function log(): pino.Logger {
 	logger ??= pino({
 		level: env().logLevel,
 		base: null,
+		serializers: { err: safeError },
 		redact: {
 			paths: [
 				'name',
@@ -34,4 +35,23 @@ export function log(): pino.Logger {
 		}
 	});
 	return logger;
+}
+
+/**
+ * An error as it may be logged: its kinds, codes and places, never its message. A failed query carries its SQL and
+ * its parameters, names and telephone numbers among them, in message, stack and fields.
+ */
+export function safeError(error: unknown): unknown {
+	const chain = [];
+	for (let e = error; e instanceof Error && chain.length < 5; e = e.cause) {
+		const { code, extendedCode } = e as { code?: unknown; extendedCode?: unknown };
+		const frames = (e.stack ?? '').split('\n').filter((line) => /^\s+at /.test(line));
+		chain.push({
+			type: e.name,
+			...(typeof code === 'string' && { code }),
+			...(typeof extendedCode === 'string' && { extendedCode }),
+			at: frames.slice(0, 8).map((line) => line.trim())
+		});
+	}
+	return chain.length > 0 ? chain : typeof error;
 }

@@ -5,6 +5,7 @@ import { db, type Tx } from '../db';
 import { escalations } from '../db/schema';
 import type { Job } from '../jobs/clockwork';
 import type { NewMessage } from '../outbox/enqueue';
+import { log } from '../log';
 import { write } from '../write';
 import { tellStep } from './tell';
 
@@ -18,7 +19,8 @@ export const chainJob: Job = {
 			.where(and(eq(escalations.state, 'raised'), lte(escalations.nextStepAt, now)))
 			.orderBy(asc(escalations.nextStepAt));
 		for (const { id } of due) {
-			await tellDue(id, now);
+			// One that fails must not keep the others from being told; it is tried again at the next beat.
+			await tellDue(id, now).catch((error: unknown) => log().error({ id, err: error }, 'chain step failed'));
 		}
 		return due.length;
 	}

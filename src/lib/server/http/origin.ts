@@ -1,5 +1,6 @@
 import type { RequestEvent } from '@sveltejs/kit';
 import { Problem } from '$lib/domain/core/errors';
+import { cookieName } from '../auth/sign-ins';
 import { env } from '../env';
 
 const READS = new Set(['GET', 'HEAD', 'OPTIONS']);
@@ -22,6 +23,10 @@ export function refuseForeignOrigin(event: RequestEvent, usesBearer: boolean): v
 	}
 	const origin = request.headers.get('origin');
 	if (origin !== null && ownOrigins().has(origin)) {
+		return;
+	}
+	// Browsers name the origin of every write. Without one, and without our cookie, it is a program that is nobody yet.
+	if (origin === null && event.cookies.get(cookieName()) === undefined) {
 		return;
 	}
 	throw new Problem('foreign-origin', `The origin ${origin ?? '(none)'} is not ${env().publicUrl}.`);
