@@ -103,15 +103,19 @@ export class LiveConnection {
 		}
 	}
 
-	/** A connection can be dead without an error; heartbeats are comments, which pages do not see. So ask. */
+	/**
+	 * A connection can be dead without an error, and heartbeats are comments, which pages do not see. So ask: no
+	 * answer means not connected, and after that only a stream opened anew says connected again.
+	 */
 	async #check(): Promise<void> {
-		try {
-			const alive = await fetch('/healthz', { cache: 'no-store' });
-			if (alive.ok && this.#source?.readyState === EventSource.OPEN) {
-				this.#setState(true);
-			}
-		} catch {
+		const alive = await fetch('/healthz', { cache: 'no-store' }).then(
+			(response) => response.ok,
+			() => false
+		);
+		if (!alive) {
 			this.#setState(false);
+		} else if (!this.connected && !this.signedOut) {
+			this.#reopen();
 		}
 	}
 
