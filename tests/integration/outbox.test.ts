@@ -14,7 +14,7 @@ import {
 import { wakeWorkers } from '$lib/server/effects';
 import { linkToken } from '$lib/server/links';
 import type { Channels } from '$lib/server/outbox/channels/channel';
-import { MAX_IN_FLIGHT, OutboxWorker } from '$lib/server/outbox/worker';
+import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, accepted, permanent, transient, unknown } from '../support/channels';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
@@ -112,39 +112,6 @@ describe('sending', () => {
 		expect((await rowOf(id)).state).toBe(sent ? 'accepted' : 'ready');
 	});
 
-	it('sends calls for help before what was due earlier, and mails last', async () => {
-		const early = { notBefore: HOSPITAL_NOW - HOUR };
-		const mails = await Promise.all(['a', 'b'].map(() => mailTo(hospital.people.surgeon.id, early)));
-		const reminders = await Promise.all(Array.from({ length: 8 }, () => reminder(early)));
-		const { id: call } = await alertTo(hospital.people.nurse.id);
-		const order: string[] = [];
-		const noting = (channel: ScriptedChannel) => ({
-			send: (message: Parameters<ScriptedChannel['send']>[0]) => {
-				order.push(message.id);
-				return channel.send(message);
-			},
-			lookUp: null
-		});
-		await worker({ sms: noting(sms), mail: noting(mail) }).settle();
-		// Five go at once, so only between those five is the order left to chance.
-		expect(order.slice(0, MAX_IN_FLIGHT)).toContain(call);
-		expect(order.slice(-MAX_IN_FLIGHT)).toEqual(expect.arrayContaining(mails));
-		expect(order.toSorted()).toEqual([...mails, ...reminders, call].toSorted());
-	});
-
-	it('has at most five on their way', async () => {
-		const ids = await Promise.all(Array.from({ length: 12 }, () => reminder()));
-		sms.hold();
-		const settled = worker().settle();
-		while (sms.sent.length < MAX_IN_FLIGHT) {
-			await new Promise((resolve) => setImmediate(resolve));
-		}
-		sms.release();
-		await settled;
-		expect(sms.mostInFlight).toBe(5);
-		expect(new Set(sms.sent.map(({ id }) => id))).toEqual(new Set(ids));
-	});
-
 	it('shares the work of several workers, each message once', async () => {
 		const ids = await Promise.all(Array.from({ length: 40 }, () => reminder()));
 		const counts = await Promise.all([worker().settle(), worker().settle(), worker().settle()]);
@@ -180,100 +147,6 @@ describe('sending', () => {
 		sms.release();
 		await stopped;
 		expect((await rowOf(id)).state).toBe('accepted');
-	});
-});
-
-describe('a worker that is killed', () => {
-	async function abandoned(): Promise<string> {
-		const id = await reminder();
-		sms.hold();
-		void worker().settle();
-		while (sms.sent.length === 0) {
-			await new Promise((resolve) => setImmediate(resolve));
-		}
-		// From here on nothing of that worker is heard of again, as after SIGKILL.
-		sms = new ScriptedChannel();
-		return id;
-	}
-
-	it.each([
-		['just under', 60 * SECOND - 1, 0],
-		['at', 60 * SECOND, 1]
-	])('keeps its message until the lease ends: %s', async (_, later, seen) => {
-		const id = await abandoned();
-		now = HOSPITAL_NOW + later;
-		expect(await worker().settle()).toBe(seen);
-		expect((await rowOf(id)).state).toBe(seen ? 'accepted' : 'sending');
-	});
-
-	it('is not sent again when the gateway has it', async () => {
-		const id = await abandoned();
-		now = HOSPITAL_NOW + MINUTE;
-		sms.found = [['SM-earlier']];
-		await worker().settle();
-		expect(sms.sent).toEqual([]);
-		expect(await rowOf(id)).toMatchObject({ state: 'accepted', providerId: 'SM-earlier', attempts: 2 });
-		expect(await attemptsOf(id)).toMatchObject([
-			{ number: 1, outcome: 'unknown', code: 'interrupted', startedAt: HOSPITAL_NOW },
-			{ number: 2, outcome: 'accepted', code: 'looked-up', providerId: 'SM-earlier' }
-		]);
-	});
-
-	it('that was only slow does not undo what another worker did meanwhile', async () => {
-		const id = await reminder();
-		const slow = sms;
-		slow.hold();
-		slow.script = [transient()];
-		const late = worker({ sms: slow }).settle();
-		while (slow.sent.length === 0) {
-			await new Promise((resolve) => setImmediate(resolve));
-		}
-		now = HOSPITAL_NOW + MINUTE;
-		const quick = new ScriptedChannel();
-		await worker({ sms: quick }).settle();
-		slow.release();
-		await late;
-		expect(await rowOf(id)).toMatchObject({ state: 'accepted', providerId: 'id-1', leaseOwner: null });
-		expect((await attemptsOf(id)).map(({ outcome }) => outcome)).toEqual([
-			'unknown',
-			'accepted',
-			'transient'
-		]);
-		const events = await db().select().from(liveEvents).where(eq(liveEvents.subjectId, id));
-		expect(events.map(({ kind }) => kind)).toEqual(['sending', 'sending', 'accepted']);
-	});
-
-	it('is not suspected by itself when the clock jumps while it sends', async () => {
-		await reminder();
-		sms.hold();
-		const one = worker();
-		const first = one.settle();
-		while (sms.sent.length === 0) {
-			await new Promise((resolve) => setImmediate(resolve));
-		}
-		now += HOUR;
-		const later = await reminder();
-		const second = one.settle();
-		while (sms.sent.length === 1) {
-			await new Promise((resolve) => setImmediate(resolve));
-		}
-		sms.release();
-		await Promise.all([first, second]);
-		expect(sms.sent).toHaveLength(2);
-		expect(sms.sent[1]?.id).toBe(later);
-	});
-
-	it('does not take the same text of an earlier message for its own', async () => {
-		const first = await reminder({ body: 'The same words.' });
-		await worker().settle();
-		const known = (await rowOf(first)).providerId ?? '';
-		const id = await reminder({ body: 'The same words.' });
-		sms.script = [unknown()];
-		await worker().settle();
-		now = (await rowOf(id)).nextAt;
-		sms.found = [[known]];
-		await worker().settle();
-		expect(sms.sent.filter((message) => message.id === id)).toHaveLength(2);
 	});
 });
 

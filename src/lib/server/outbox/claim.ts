@@ -1,10 +1,10 @@
-import { and, asc, eq, inArray, lte, notInArray, or, sql } from 'drizzle-orm';
+import { and, asc, eq, inArray, lte, ne, notInArray, or } from 'drizzle-orm';
 import { db, type Reader } from '../db';
 import { outbox } from '../db/schema';
 import { CHANNELS, type ChannelName } from './channels/channel';
 import { changing, messageEvent, type OutboxRow } from './change';
 
-/** How long a claimed message belongs to its worker. Longer than any attempt; after a kill others wait so long. */
+/** How long a claimed message belongs to its worker; longer than any attempt. The next start does not wait for it. */
 export const LEASE_MS = 60_000;
 
 /** A message that is this worker's to send until its lease ends. */
@@ -19,16 +19,19 @@ export interface Claiming {
 	now: number;
 	/** At most so many. */
 	room: number;
-	/** Channels that have a gateway and are not asked to wait. */
-	open: readonly ChannelName[];
+	/** A channel that has a gateway and is not asked to wait. */
+	channel: ChannelName;
+	/** Calls for help alone, or all else alone. */
+	urgent: boolean;
 	/** Messages that this process is sending already, whatever their lease says after a jump of the clock. */
 	inHand: readonly string[];
 }
 
 /** Ready or held and due, or left behind by a worker whose lease has ended. */
-function isDue(now: number, open: readonly ChannelName[], inHand: readonly string[]) {
+function isDue({ now, channel, urgent, inHand }: Claiming) {
 	return and(
-		inArray(outbox.channel, [...open]),
+		eq(outbox.channel, channel),
+		urgent ? eq(outbox.kind, 'escalation') : ne(outbox.kind, 'escalation'),
 		notInArray(outbox.id, [...inHand]),
 		or(
 			and(inArray(outbox.state, ['ready', 'held']), lte(outbox.nextAt, now)),
@@ -37,31 +40,28 @@ function isDue(now: number, open: readonly ChannelName[], inHand: readonly strin
 	);
 }
 
-/** Calls for help go before reminders, and mails last; within each the longest due first. */
-const urgency = sql`case ${outbox.kind} when 'escalation' then 0 when 'mail' then 2 else 1 end`;
-
 /**
- * Claim what is due by a conditional update, so that of several workers only one gets each message. Nothing is
- * written, and no lock is taken, when nothing is due.
+ * Claim what is due, the longest due first, by a conditional update, so that of several workers only one gets each
+ * message. Nothing is written, and no lock is taken, when nothing is due.
  */
 export async function claimDue(claiming: Claiming): Promise<Claimed[]> {
-	const { owner, now, room, open, inHand } = claiming;
-	if (room <= 0 || open.length === 0 || !(await anyDue(db(), claiming))) {
+	const { owner, now, room } = claiming;
+	if (room <= 0 || !(await anyDue(db(), claiming))) {
 		return [];
 	}
 	return changing(now, async (tx, events) => {
 		const due = await tx
 			.select()
 			.from(outbox)
-			.where(isDue(now, open, inHand))
-			.orderBy(urgency, asc(outbox.nextAt), asc(outbox.id))
+			.where(isDue(claiming))
+			.orderBy(asc(outbox.nextAt), asc(outbox.id))
 			.limit(room);
 		const claimed: Claimed[] = [];
 		for (const before of due) {
 			const [row] = await tx
 				.update(outbox)
 				.set({ state: 'sending', leaseOwner: owner, leaseUntil: now + LEASE_MS })
-				.where(and(eq(outbox.id, before.id), isDue(now, open, inHand)))
+				.where(and(eq(outbox.id, before.id), isDue(claiming)))
 				.returning();
 			if (row) {
 				claimed.push({ row, interruptedAt: interruptedAt(before, now) });
@@ -72,16 +72,17 @@ export async function claimDue(claiming: Claiming): Promise<Claimed[]> {
 	});
 }
 
-function interruptedAt({ state, leaseUntil }: OutboxRow, now: number): number | null {
-	return state === 'sending' ? (leaseUntil ?? now) - LEASE_MS : null;
+function interruptedAt(row: OutboxRow, now: number): number | null {
+	return row.state === 'sending' ? claimedAt(row, now) : null;
 }
 
-async function anyDue(reader: Reader, { now, open, inHand }: Claiming): Promise<boolean> {
-	const [row] = await reader
-		.select({ id: outbox.id })
-		.from(outbox)
-		.where(isDue(now, open, inHand))
-		.limit(1);
+/** When a message that is being sent was claimed. */
+export function claimedAt({ leaseUntil }: OutboxRow, now: number): number {
+	return leaseUntil === null ? now : leaseUntil - LEASE_MS;
+}
+
+async function anyDue(reader: Reader, claiming: Claiming): Promise<boolean> {
+	const [row] = await reader.select({ id: outbox.id }).from(outbox).where(isDue(claiming)).limit(1);
 	return row !== undefined;
 }
 

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull } from 'drizzle-orm';
+import { and, asc, eq, inArray, isNull, ne } from 'drizzle-orm';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { Outcome } from '$lib/domain/messages/outcome';
 import { appendAudit } from '../audit/append';
@@ -6,6 +6,7 @@ import { db, type Tx } from '../db';
 import { outbox, outboxAttempts, patients } from '../db/schema';
 import { newId } from '../ids';
 import { stateByStatus } from '../messages/delivery';
+import { claimedAt } from './claim';
 import { changing, episodeOfMessage, messageEvent, type OutboxRow } from './change';
 import { nextState } from './next-state';
 
@@ -63,17 +64,42 @@ export async function recordAttempt(
 	});
 }
 
-/** The attempt of a worker that was killed: nobody knows whether it went through. */
+/** The attempt of a worker that never told how it ended: nobody knows whether it went through. */
 export async function recordInterrupted(row: OutboxRow, startedAt: number, now: number): Promise<void> {
 	await changing(now, async (tx) => {
-		const attempts = await addAttempt(tx, row, {
-			startedAt,
-			endedAt: now,
-			outcome: { kind: 'unknown', reason: 'no-answer' },
-			code: 'interrupted'
-		});
+		const attempts = await addAttempt(tx, row, interrupted(startedAt, now));
 		await tx.update(outbox).set({ attempts }).where(eq(outbox.id, row.id));
 	});
+}
+
+/**
+ * End the leases of all other workers at once. One process owns the database and has one worker, so whoever else
+ * claimed a message was killed with the process before. Each of their attempts is put on record as unknown, which
+ * makes the next one ask the gateway first, and what was being sent is due now and not after its lease.
+ * @param owner the worker that starts
+ * @returns how many messages were taken back
+ */
+export async function takeBackForeign(owner: string, now: number): Promise<number> {
+	const foreign = and(eq(outbox.state, 'sending'), ne(outbox.leaseOwner, owner));
+	if ((await db().$count(outbox, foreign)) === 0) {
+		return 0;
+	}
+	return changing(now, async (tx, events) => {
+		const left = await tx.select().from(outbox).where(foreign);
+		for (const row of left) {
+			const attempts = await addAttempt(tx, row, interrupted(claimedAt(row, now), now));
+			await tx
+				.update(outbox)
+				.set({ attempts, state: 'ready', nextAt: now, leaseOwner: null, leaseUntil: null })
+				.where(eq(outbox.id, row.id));
+			events.push(await messageEvent(tx, row, 'ready'));
+		}
+		return left.length;
+	});
+}
+
+function interrupted(startedAt: number, endedAt: number): Attempt {
+	return { startedAt, endedAt, outcome: { kind: 'unknown', reason: 'no-answer' }, code: 'interrupted' };
 }
 
 /** Give a claimed message back or end it, without an attempt: it waits, is not wanted any more, or came too late. */

@@ -5,9 +5,17 @@ import { log } from '../log';
 import { attempt } from './attempt';
 import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels/channel';
 import { claimDue, holdDue, type Claimed } from './claim';
+import { takeBackForeign } from './record';
 
-/** So many messages are on their way at once: a gateway that hangs must not take the whole server with it. */
-export const MAX_IN_FLIGHT = 5;
+/**
+ * So many messages are on their way at once, counted for each channel: a gateway that hangs takes neither the
+ * server with it nor the other channels. `routine` is how far all but calls for help may fill a channel; the rest
+ * of its places is kept for those.
+ */
+export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }> = {
+	sms: { all: 5, routine: 3 },
+	mail: { all: 3, routine: 3 }
+};
 const BEAT_MS = 1_000;
 /** A server that stops waits no longer for a gateway; the lease then tells the next start that the end is unknown. */
 const STOP_PATIENCE_MS = 9_000;
@@ -31,7 +39,7 @@ export class OutboxWorker {
 	readonly #owner: string;
 	readonly #now: () => number;
 	readonly #random: () => number;
-	readonly #inFlight = new Map<string, Promise<void>>();
+	readonly #inFlight = new Map<string, { channel: ChannelName; ended: Promise<void> }>();
 	readonly #pausedUntil = new Map<ChannelName, number>();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
@@ -51,6 +59,7 @@ export class OutboxWorker {
 		this.#unregister = onCommit(() => this.wake());
 		this.#timer = setInterval(() => this.wake(), BEAT_MS);
 		this.#timer.unref();
+		this.#round = this.#round.then(() => this.#takeBack());
 		this.wake();
 	}
 
@@ -74,7 +83,7 @@ export class OutboxWorker {
 			if (this.#inFlight.size === 0) {
 				return seen;
 			}
-			await Promise.race(this.#inFlight.values());
+			await Promise.race(this.#endings());
 		}
 	}
 
@@ -87,7 +96,7 @@ export class OutboxWorker {
 		}
 		await this.#round;
 		const patience = new Promise((resolve) => setTimeout(resolve, STOP_PATIENCE_MS).unref());
-		await Promise.race([Promise.all(this.#inFlight.values()), patience]);
+		await Promise.race([Promise.all(this.#endings()), patience]);
 	}
 
 	/** Claim as many as there is room for and set them going. Rounds never overlap. */
@@ -105,21 +114,52 @@ export class OutboxWorker {
 		return round;
 	}
 
+	/** What was on its way when the process before was killed is due at once. */
+	async #takeBack(): Promise<void> {
+		try {
+			const count = await takeBackForeign(this.#owner, this.#now());
+			if (count > 0) {
+				log().warn({ count }, 'messages of a killed worker taken back');
+			}
+		} catch (error) {
+			// Their leases end by themselves within a minute.
+			log().error({ err: error }, 'taking messages back failed');
+		}
+	}
+
 	async #claim(): Promise<number> {
 		const at = this.#now();
 		const configured = CHANNELS.filter((name) => this.#channels[name] !== null);
-		const held = await holdDue(at, configured);
+		let seen = await holdDue(at, configured);
+		for (const channel of configured.filter((name) => (this.#pausedUntil.get(name) ?? 0) <= at)) {
+			seen += await this.#claimOn(channel, true, at);
+			seen += await this.#claimOn(channel, false, at);
+		}
+		return seen;
+	}
+
+	async #claimOn(channel: ChannelName, urgent: boolean, at: number): Promise<number> {
+		const { all, routine } = MAX_IN_FLIGHT[channel];
 		const claimed = await claimDue({
 			owner: this.#owner,
 			now: at,
-			room: MAX_IN_FLIGHT - this.#inFlight.size,
-			open: configured.filter((name) => (this.#pausedUntil.get(name) ?? 0) <= at),
+			room: (urgent ? all : routine) - this.#countOn(channel),
+			channel,
+			urgent,
 			inHand: [...this.#inFlight.keys()]
 		});
 		for (const message of claimed) {
-			this.#inFlight.set(message.row.id, this.#send(message));
+			this.#inFlight.set(message.row.id, { channel, ended: this.#send(message) });
 		}
-		return held + claimed.length;
+		return claimed.length;
+	}
+
+	#countOn(channel: ChannelName): number {
+		return [...this.#inFlight.values()].filter((sending) => sending.channel === channel).length;
+	}
+
+	#endings(): Promise<void>[] {
+		return [...this.#inFlight.values()].map(({ ended }) => ended);
 	}
 
 	async #send(message: Claimed): Promise<void> {
