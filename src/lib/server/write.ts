@@ -22,6 +22,18 @@ export interface Change<T> {
 	messages?: NewMessage[];
 }
 
+/** A change with what had to change before it: all of it is on record and announced, the earlier first. */
+export function after<T>(earlier: readonly Change<unknown>[], { audit, ...change }: Change<T>): Change<T> {
+	const [first, ...rest] = [...earlier.flatMap((one) => one.audit), ...[audit].flat()];
+	return {
+		result: change.result,
+		audit: first ? [first, ...rest] : audit,
+		entries: [...earlier.flatMap((one) => one.entries ?? []), ...(change.entries ?? [])],
+		events: [...earlier.flatMap((one) => one.events ?? []), ...(change.events ?? [])],
+		messages: [...earlier.flatMap((one) => one.messages ?? []), ...(change.messages ?? [])]
+	};
+}
+
 /** What a write answers. `replayed` is true when the same key had this answer before. */
 export interface Written<T> {
 	result: T;

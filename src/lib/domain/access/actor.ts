@@ -17,10 +17,10 @@ export interface PatientActor {
 	id: string;
 }
 
-/** The hospital's own clockwork: chain, reminders, demonstration. */
+/** The hospital's own clockwork: chain, lapses, reminders, demonstration. */
 export interface SystemActor {
 	kind: 'system';
-	id: 'chain' | 'reminders' | 'setup' | 'demonstration';
+	id: 'chain' | 'lapses' | 'reminders' | 'setup' | 'demonstration';
 }
 
 /** Somebody who holds the secret link of one escalation: that person, for that one deed, without a sign-in. */

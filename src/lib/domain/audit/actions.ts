@@ -14,6 +14,7 @@ export const AUDIT_ACTIONS = [
 	'clearance.asked',
 	'clearance.given',
 	'clearance.held',
+	'clearance.lapsed',
 	'clearance.withdrawn',
 	'clearance.withheld',
 	'demonstration.loaded',

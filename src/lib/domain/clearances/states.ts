@@ -39,13 +39,28 @@ export function nextClearanceState(
 	}
 }
 
+/** A clearance as far as its end is concerned; `reviewOn` is a day in the hospital's calendar, itself included. */
+export interface Ending {
+	state: ClearanceState;
+	reviewOn: string | null;
+}
+
+/** The states that an end can come to: what is asked has none, and what is over has ended already. */
+export const ENDING_STATES = ['given', 'given-with-limits', 'on-hold'] as const;
+
+/**
+ * The state on a day of the hospital's calendar. What is past its end has lapsed, whether or not the work that
+ * writes it down has run: between the two it must never be read as in force.
+ */
+export function stateOn({ state, reviewOn }: Ending, today: string): ClearanceState {
+	const ends = (ENDING_STATES as readonly ClearanceState[]).includes(state);
+	return ends && reviewOn !== null && reviewOn < today ? 'lapsed' : state;
+}
+
 /** Given, with or without limits, and its review date not yet past. */
-export function isInForce(
-	clearance: { state: ClearanceState; reviewOn: string | null },
-	today: string
-): boolean {
-	const given = clearance.state === 'given' || clearance.state === 'given-with-limits';
-	return given && (clearance.reviewOn === null || today <= clearance.reviewOn);
+export function isInForce(clearance: Ending, today: string): boolean {
+	const state = stateOn(clearance, today);
+	return state === 'given' || state === 'given-with-limits';
 }
 
 /** The only headlines on screens; why stands below. */

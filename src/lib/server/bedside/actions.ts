@@ -53,8 +53,7 @@ export function recordSession(
 function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
 	const clearances = facts.newest.map((row) => ({
 		kind: row.kind,
-		// Given, but its review date is past: it no longer counts, and nobody has to run for that.
-		state: row.state.startsWith('given') && !facts.inForce.includes(row) ? ('lapsed' as const) : row.state,
+		state: row.state,
 		maxElevationDeg: row.limits?.maxElevationDeg ?? null,
 		maxLoadKg: row.limits?.maxLoadKg ?? null
 	}));
@@ -170,7 +169,9 @@ async function askForDeviations(
 	const asks: Change<unknown>[] = [];
 	const threadId = await threadForDeed(tx, episode.id, undefined);
 	for (const kind of missing) {
-		const open = await openOrInForce(tx, context, episode.id, kind, facts.operation?.id ?? null);
+		const operationId = facts.operation?.id ?? null;
+		const { open, lapsed } = await openOrInForce(tx, context, episode.id, kind, operationId);
+		asks.push(...lapsed);
 		if (!open) {
 			const question = m.bedside_deviation_question({ reason: input.deviation?.reason ?? '' });
 			asks.push(await insertAsk(tx, context, { episode, facts, threadId }, { kind, question }));

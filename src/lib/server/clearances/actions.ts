@@ -7,7 +7,7 @@ import type {
 	ClearanceLimits,
 	giveClearanceBody
 } from '$lib/domain/clearances/forms';
-import { nextClearanceState, type ClearanceMove } from '$lib/domain/clearances/states';
+import { nextClearanceState, stateOn, type ClearanceMove } from '$lib/domain/clearances/states';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
@@ -16,8 +16,10 @@ import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
-import { write, type Written } from '../write';
-import { insertAsk, openOrInForce, recordClearanceMove, reviewIsPast } from './ask';
+import { after, write, type Written } from '../write';
+import { insertAsk, openOrInForce } from './ask';
+import { hospitalToday } from './lapse';
+import { recordClearanceMove } from './moves';
 import { answerText } from './texts';
 
 /**
@@ -32,12 +34,13 @@ export function askClearance(
 	return write(context, 'clearance.ask', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'clearance.ask');
 		const facts = await factsOfOne(tx, episode, context.now);
-		const open = await openOrInForce(tx, context, episodeId, input.kind, facts.operation?.id ?? null);
+		const operationId = facts.operation?.id ?? null;
+		const { open, lapsed } = await openOrInForce(tx, context, episodeId, input.kind, operationId);
 		if (open) {
 			throw second(open);
 		}
 		const threadId = await threadForDeed(tx, episodeId, input.threadId);
-		return insertAsk(tx, context, { episode, facts, threadId }, input);
+		return after(lapsed, await insertAsk(tx, context, { episode, facts, threadId }, input));
 	});
 }
 
@@ -109,7 +112,7 @@ function decide(
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
 		const { clearance } = await accessForMove(tx, context, id, move);
 		await refuseSlower(tx, clearance, seen);
-		const state = nextClearanceState(clearance.state, move, decision.limits);
+		const state = nextClearanceState(stateOn(clearance, hospitalToday(context.now)), move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
 		// An ask taken back was never decided; only a decision can hold what the level allows.
@@ -170,7 +173,7 @@ async function accessForMove(tx: Tx, context: PersonContext, id: string, move: C
 }
 
 function refusePastReview(reviewOn: string | null | undefined, now: number): void {
-	if (reviewOn && reviewIsPast(reviewOn, now)) {
+	if (reviewOn && reviewOn < hospitalToday(now)) {
 		throw invalidField('/reviewOn', `reviewOn ${reviewOn} is past; it is today or later.`);
 	}
 }

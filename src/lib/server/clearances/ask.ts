@@ -1,17 +1,18 @@
 import { and, eq, inArray } from 'drizzle-orm';
 import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
+import { stateOn } from '$lib/domain/clearances/states';
 import type { ClearanceKind } from '$lib/domain/core/codes';
-import { localDateOf } from '$lib/domain/core/time';
 import { CLEARANCE_WORDS } from '$lib/i18n/labels';
 import type { EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { clearanceMoves, clearances } from '../db/schema';
-import { env } from '../env';
+import { clearances } from '../db/schema';
 import type { EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
 import type { Change } from '../write';
 import { gatherEvidence } from './evidence';
+import { hospitalToday, lapse } from './lapse';
+import { recordClearanceMove } from './moves';
 
 type ClearanceRow = typeof clearances.$inferSelect;
 
@@ -57,7 +58,7 @@ export async function insertAsk(
 
 /**
  * The clearance of a kind that is open or in force, or null. One that counts from an earlier operation, or whose
- * review date is past, lapses here and no longer stands in the way.
+ * review date is past, lapses here and no longer stands in the way; what follows from that is answered too.
  */
 export async function openOrInForce(
 	tx: Tx,
@@ -65,7 +66,7 @@ export async function openOrInForce(
 	episodeId: string,
 	kind: ClearanceKind,
 	operationId: string | null
-): Promise<ClearanceRow | null> {
+): Promise<{ open: ClearanceRow | null; lapsed: Change<null>[] }> {
 	const [open] = await tx
 		.select()
 		.from(clearances)
@@ -77,25 +78,11 @@ export async function openOrInForce(
 			)
 		);
 	if (!open) {
-		return null;
+		return { open: null, lapsed: [] };
 	}
-	if (open.operationId === operationId && !reviewIsPast(open.reviewOn, context.now)) {
-		return open;
+	const ended = stateOn(open, hospitalToday(context.now)) === 'lapsed';
+	if (open.operationId === operationId && !ended) {
+		return { open, lapsed: [] };
 	}
-	await tx.update(clearances).set({ state: 'lapsed' }).where(eq(clearances.id, open.id));
-	await recordClearanceMove(tx, context, { clearanceId: open.id, fromState: open.state, toState: 'lapsed' });
-	return null;
-}
-
-export function reviewIsPast(reviewOn: string | null, now: number): boolean {
-	return reviewOn !== null && reviewOn < localDateOf(now, env().hospital.zone);
-}
-
-/** Write one line of a clearance's history. */
-export async function recordClearanceMove(
-	tx: Tx,
-	context: PersonContext,
-	move: Omit<typeof clearanceMoves.$inferInsert, 'id' | 'at' | 'byId'>
-): Promise<void> {
-	await tx.insert(clearanceMoves).values({ ...move, id: newId(), at: context.now, byId: context.actor.id });
+	return { open: null, lapsed: [await lapse(tx, context, open, ended ? 'end' : 'earlier-operation')] };
 }

@@ -2,12 +2,14 @@ import { desc, eq } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import type { ClearanceView } from '$lib/domain/clearances/views';
+import { stateOn } from '$lib/domain/clearances/states';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { accessClearance } from '../access/access';
 import type { Reader } from '../db';
 import { clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
+import { hospitalToday } from './lapse';
 
 const decider = alias(users, 'decider');
 
@@ -28,12 +30,13 @@ type Row = Awaited<ReturnType<typeof select>>[number];
 export async function listClearances(
 	db: Reader,
 	episodeId: string,
-	operationId: string | null
+	operationId: string | null,
+	now: number
 ): Promise<ClearanceLine[]> {
 	const rows = await select(db)
 		.where(eq(clearances.episodeId, episodeId))
 		.orderBy(desc(clearances.askedAt), desc(clearances.id));
-	return rows.map((row) => toLine(row, operationId));
+	return rows.map((row) => toLine(row, operationId, now));
 }
 
 /** One clearance with what the decider was shown. */
@@ -52,7 +55,7 @@ export async function getClearance(
 		throw new Error(`Clearance ${id} lost the person who asked.`);
 	}
 	return {
-		...toLine(row, facts.operation?.id ?? null),
+		...toLine(row, facts.operation?.id ?? null, now),
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
@@ -60,11 +63,15 @@ export async function getClearance(
 	};
 }
 
-function toLine({ clearance, askedBy, decidedBy }: Row, operationId: string | null): ClearanceLine {
+function toLine(
+	{ clearance, askedBy, decidedBy }: Row,
+	operationId: string | null,
+	now: number
+): ClearanceLine {
 	return {
 		id: clearance.id,
 		kind: clearance.kind,
-		state: clearance.state,
+		state: stateOn(clearance, hospitalToday(now)),
 		question: clearance.question,
 		askedBy,
 		askedAt: toRfc3339(clearance.askedAt),

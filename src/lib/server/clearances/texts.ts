@@ -26,6 +26,15 @@ export function answerText(
 	return parts.length > 0 ? `${head}. ${parts.join(' · ')}` : `${head}.`;
 }
 
+/**
+ * What the thread says when a clearance lapsed.
+ * @param reviewOn its last day, where it lapsed because that is past
+ */
+export function lapsedText(kind: ClearanceKind, reviewOn: string | null): string {
+	const head = `${CLEARANCE_WORDS[kind]()}: ${stateWord('lapsed')}.`;
+	return reviewOn === null ? head : `${head} ${m.clearances_entry_review_past({ day: reviewOn })}`;
+}
+
 /** The headline, and for what is not cleared the word that says why. */
 function stateWord(state: ClearanceState): string {
 	const head = HEADLINE_WORDS[headline(state)]();
@@ -34,6 +43,8 @@ function stateWord(state: ClearanceState): string {
 			return `${head}, ${m.clearances_state_withheld()}`;
 		case 'on-hold':
 			return `${head}, ${m.clearances_state_on_hold()}`;
+		case 'lapsed':
+			return `${head}, ${m.clearances_why_lapsed()}`;
 		case 'withdrawn':
 			return `${head}, ${m.clearances_state_withdrawn()}`;
 		default:

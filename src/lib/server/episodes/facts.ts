@@ -1,7 +1,7 @@
 import { desc, inArray } from 'drizzle-orm';
 import type { Level } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
-import { isInForce } from '$lib/domain/clearances/states';
+import { isInForce, stateOn } from '$lib/domain/clearances/states';
 import { mayDoNow, type MayDoNow } from '$lib/domain/episodes/may-do-now';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
 import { precautionsOf, type Precautions } from '$lib/domain/episodes/precautions';
@@ -17,7 +17,7 @@ export interface EpisodeFacts {
 	/** The latest operation: day, precautions and clearances count from it. */
 	operation: Operation | null;
 	postOpDay: number | null;
-	/** The newest clearance of each kind that counts from the latest operation. */
+	/** The newest clearance of each kind that counts from the latest operation, each in its state of now. */
 	newest: Clearance[];
 	inForce: Clearance[];
 	mayDoNow: MayDoNow;
@@ -65,14 +65,6 @@ export async function factsOfOne(
 	return facts;
 }
 
-/** What was given and is past its review date permits nothing any more, whenever its row is brought up to date. */
-function lapsedUnless(inForce: Clearance[]) {
-	return (row: Clearance): Pick<Clearance, 'kind' | 'state'> => {
-		const past = row.state.startsWith('given') && !inForce.includes(row);
-		return { kind: row.kind, state: past ? 'lapsed' : row.state };
-	};
-}
-
 function derive(
 	episode: { level: number },
 	newestFirst: Operation[],
@@ -85,8 +77,10 @@ function derive(
 	const counting = asked.filter(
 		(row) => (row.operationId === null || row.operationId === operation?.id) && !takenBack(row)
 	);
-	const newest = counting.filter((row, index) => counting.findIndex((c) => c.kind === row.kind) === index);
 	const today = localDateOf(now, zone);
+	const newest = counting
+		.filter((row, index) => counting.findIndex((c) => c.kind === row.kind) === index)
+		.map((row) => ({ ...row, state: stateOn(row, today) }));
 	const inForce = newest.filter((row) => isInForce(row, today));
 	const armStage = inForce.find((row) => row.kind === 'arm-stage');
 	return {
@@ -98,7 +92,7 @@ function derive(
 		),
 		newest,
 		inForce,
-		mayDoNow: mayDoNow(episode.level as Level, newest.map(lapsedUnless(inForce))),
+		mayDoNow: mayDoNow(episode.level as Level, newest),
 		precautions: precautionsOf(
 			operation && { approach: operation.approach, day: localDateOf(operation.operatedAt, zone) },
 			armStage ? { maxElevationDeg: armStage.limits?.maxElevationDeg ?? null } : null,

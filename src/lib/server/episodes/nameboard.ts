@@ -24,7 +24,7 @@ export async function getNameboard(
 	const [who, asks, cleared, visits, calls] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
-		listClearances(db, episodeId, derived.operation?.id ?? null),
+		listClearances(db, episodeId, derived.operation?.id ?? null, now),
 		visitsOfEpisode(db, episodeId),
 		clinical ? escalationsOf(db, episodeId) : []
 	]);

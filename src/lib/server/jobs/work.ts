@@ -1,3 +1,4 @@
+import { lapseJob } from '../clearances/lapse';
 import { chainJob } from '../escalations/chain-job';
 import { env } from '../env';
 import { openChannels } from '../outbox/channels';
@@ -6,7 +7,7 @@ import { Clockwork, type Job } from './clockwork';
 import { cleaning } from './cleaning';
 
 /** Everything that happens by itself, in the order in which a round does it. */
-const JOBS: Job[] = [chainJob, cleaning];
+const JOBS: Job[] = [chainJob, lapseJob, cleaning];
 
 let clockwork: Clockwork | null = null;
 let outbox: OutboxWorker | null = null;
