@@ -382,44 +382,6 @@ describe('numbers that are nobody’s or two people’s', () => {
 	});
 });
 
-describe('a text of staff', () => {
-	const phoneOfNurse = async () => {
-		const phone = newPhone();
-		const nurse = await addPerson({ role: 'nurse', unitIds: [hospital.units.ward], phone });
-		return { phone, nurse };
-	};
-
-	it.each(['TAKE 4821', 'take', 'PASS 1234'])('%s is answered: not taken', async (body) => {
-		const { phone, nurse } = await phoneOfNurse();
-		const sid = newSid();
-		await say(phone, body, sid);
-		expect(await inbound(sid)).toMatchObject({
-			userId: nurse.id,
-			understoodAs: 'staff',
-			handledAt: HOSPITAL_NOW
-		});
-		const [answer] = await answers(sid);
-		expect(answer).toMatchObject({ userId: nurse.id, patientId: null });
-		expect(answer?.body).toContain('NOT taken');
-	});
-
-	it('anything else waits for a person, without an answer', async () => {
-		const { phone } = await phoneOfNurse();
-		const sid = newSid();
-		await say(phone, 'I am on the bus', sid);
-		expect(await inbound(sid)).toMatchObject({ understoodAs: 'staff', handledAt: null });
-		expect(await answers(sid)).toEqual([]);
-	});
-
-	it('somebody whose account was disabled is nobody we know', async () => {
-		const phone = newPhone();
-		await addPerson({ role: 'nurse', unitIds: [], phone, disabledAt: HOSPITAL_NOW });
-		const sid = newSid();
-		await say(phone, 'TAKE 4821', sid);
-		expect(await inbound(sid)).toMatchObject({ understoodAs: 'unknown-number' });
-	});
-});
-
 describe('the status of a message', () => {
 	beforeEach(async () => {
 		await db().update(outbox).set({ state: 'cancelled' }).where(eq(outbox.state, 'ready'));

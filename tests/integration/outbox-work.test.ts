@@ -49,6 +49,7 @@ it('settling tells the next of the chain, sends what that causes, and leaves not
 		});
 	const id = await addEscalation(hospital, {
 		raisedAt,
+		replyCode: '4829',
 		chainStartedAt: raisedAt,
 		nextStep: 0,
 		nextStepAt: raisedAt
@@ -61,10 +62,13 @@ it('settling tells the next of the chain, sends what that causes, and leaves not
 	const [text, ...more] = await gateway.messagesOf(user?.phone ?? '');
 	expect(more).toEqual([]);
 	expect(text?.body).toMatch(
-		/^Ropewalk HIGH: Tern Ward, bed 4\. To take it open http:\/\/127\.0\.0\.1:4303\/t\/[\w-]{22}$/
+		/^Ropewalk HIGH: Tern Ward, bed 4\. To take it open http:\/\/127\.0\.0\.1:4303\/t\/[\w-]{22} or reply TAKE 4829$/
 	);
 	const [link] = await db().select().from(escalationLinks).where(eq(escalationLinks.escalationId, id));
-	expect(link).toMatchObject({ userId: nurse.id, tokenHash: linkDigest(text?.body.slice(-22) ?? '') });
+	expect(link).toMatchObject({
+		userId: nurse.id,
+		tokenHash: linkDigest(/[\w-]{22}/.exec(text?.body ?? '')?.[0] ?? '')
+	});
 	const [escalation] = await db().select().from(escalations).where(eq(escalations.id, id));
 	expect(escalation).toMatchObject({ nextStep: 1, state: 'raised' });
 	expect(await db().$count(outbox, eq(outbox.state, 'ready'))).toBe(0);

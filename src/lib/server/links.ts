@@ -1,6 +1,7 @@
 import { createHash, createHmac, randomBytes } from 'node:crypto';
 import { readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
+import { routes } from '$lib/routes';
 import { env } from './env';
 
 /**
@@ -17,6 +18,15 @@ let key: Buffer | null = null;
 export function linkToken(linkId: string): string {
 	key ??= linkKey();
 	return createHmac('sha256', key).update(linkId).digest('base64url').slice(0, TOKEN_CHARACTERS);
+}
+
+/**
+ * A text around a secret link, with `{link}` where it is filled in at the moment of sending. It is written with a
+ * stand-in as long as the link, so that it is measured and cut as it will be read.
+ */
+export function aroundLink(write: (link: string) => string): string {
+	const standIn = env().publicUrl + routes.phoneLink('x'.repeat(TOKEN_CHARACTERS));
+	return write(standIn).replace(standIn, '{link}');
 }
 
 /** What is stored of a token and looked up when somebody comes with one: its SHA-256, in hexadecimal. */

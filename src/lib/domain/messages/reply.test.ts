@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { readPatientReply, readStaffReply, replyCode } from './reply';
+import { readPatientReply } from './reply';
 
 describe('readPatientReply', () => {
 	it.each([
@@ -132,54 +132,5 @@ describe('readPatientReply', () => {
 				expect(readPatientReply(text)).not.toBe('other');
 			})
 		);
-	});
-});
-
-describe('readStaffReply', () => {
-	it.each([
-		['TAKE 4821', 'take', '4821'],
-		['take 4821', 'take', '4821'],
-		[' Take: 4821. ', 'take', '4821'],
-		['take4821', 'take', '4821'],
-		['TAKE 004821', 'take', '004821'],
-		['TAKE 4821, there in 5', 'take', '4821'],
-		['TAKE 4821 4821', 'take', '4821'],
-		['PASS 4821', 'pass', '4821'],
-		['pass #4821', 'pass', '4821']
-	])('%j: %s %s', (text, kind, code) => {
-		expect(readStaffReply(text)).toEqual({ kind, code });
-	});
-
-	it.each([
-		'TAKE',
-		'PASS',
-		'TAKE 482',
-		'TAKE 4821234',
-		'TAKE 4821 or 4822',
-		'take or pass 4821',
-		'TAKE 4821? No, I cannot',
-		"take 4821 - I can't",
-		'TAKE it over please'
-	])('%j is asked back', (text) => {
-		expect(readStaffReply(text)).toEqual({ kind: 'unclear' });
-	});
-
-	it.each(['', '4821', 'will take 4821', 'not take 4821', 'taken 4821', 'on my way', 'passage 4821'])(
-		'%j takes nothing',
-		(text) => {
-			expect(readStaffReply(text)).toEqual({ kind: 'other' });
-		}
-	);
-});
-
-describe('replyCode', () => {
-	it.each([
-		[0, '0000'],
-		[0.00071, '0007'],
-		[0.4821, '4821'],
-		[1 - Number.EPSILON, '9999']
-	])('%s gives %s', (random, code) => {
-		expect(replyCode(random)).toBe(code);
-		expect(readStaffReply(`take ${code}`)).toEqual({ kind: 'take', code });
 	});
 });

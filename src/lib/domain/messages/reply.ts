@@ -86,34 +86,6 @@ export function readPatientReply(text: string): PatientReply {
 	return says('stop', plain) || endsTexts(plain) ? 'stop' : 'other';
 }
 
-export type StaffReply =
-	| { readonly kind: 'take' | 'pass'; readonly code: string }
-	/** TAKE or PASS with no code, or with two: it has to be asked back. */
-	| { readonly kind: 'unclear' }
-	| { readonly kind: 'other' };
-
-/** A code is four to six digits: quick to type in the dark, and nothing to mix up. */
-const CODE = /\b\d{4,6}\b/g;
-const REFUSAL = /\b(not|no|cannot|cant|wont|unable|dont)\b/;
-
-/** Understand a text of staff: `TAKE 4821` or `PASS 4821`, and nothing that says both, or not. */
-export function readStaffReply(text: string): StaffReply {
-	const plain = words(text);
-	const said = /^(take|pass) ?(?=\d|$| )/.exec(plain)?.[1];
-	if (said !== 'take' && said !== 'pass') {
-		return { kind: 'other' };
-	}
-	const rest = plain.slice(said.length);
-	const [code, ...more] = new Set(` ${rest}`.match(CODE) ?? []);
-	const doubtful = more.length > 0 || REFUSAL.test(rest) || /\b(take|pass)/.test(rest);
-	return code === undefined || doubtful ? { kind: 'unclear' } : { kind: said, code };
-}
-
-/** Four digits from a random number from 0, included, to 1, excluded. The sender's number must fit besides. */
-export function replyCode(random: number): string {
-	return String(Math.floor(random * 10_000)).padStart(4, '0');
-}
-
 function says(kind: Exclude<PatientReply, 'other'>, plain: string): boolean {
 	return PHRASES[kind].includes(plain);
 }
@@ -124,8 +96,8 @@ function endsTexts(plain: string): boolean {
 	return aboutTexts && ENDINGS.includes(collapsed(plain.replace(ABOUT_TEXTS, ' ')));
 }
 
-/** Lower case, without accents, apostrophes closed up, everything else that is no letter or digit a space. */
-function words(text: string): string {
+/** What was typed, as it is compared: lower case, without accents, apostrophes closed up, everything else that is no letter or digit a space. */
+export function words(text: string): string {
 	const lower = text.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase();
 	const spoken = lower
 		.replace(/👍\p{Emoji_Modifier}?|✅|👌/gu, ' yes ')

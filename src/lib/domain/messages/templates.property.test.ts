@@ -4,7 +4,7 @@
  */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { GRADES } from '../core/codes';
+import { GRADES, ROLES } from '../core/codes';
 import { deniedWords } from './deny-list';
 import { measureSms } from './sms-length';
 import { MAILS, PATIENT_SMS, SMS } from './templates';
@@ -41,7 +41,9 @@ const people = fc.record({
 	unit: pick('Heron Unit', 'Tern Ward', 'Plover House'),
 	bed: fc.option(pick('4', '12B', 'Window')),
 	grade: pick(...GRADES),
-	code: fc.option(pick('4821', '0007')),
+	code: fc.option(pick('4829', '222333')),
+	holder: pick(...ROLES),
+	since: fc.integer({ min: Date.parse('2025-01-01'), max: Date.parse('2027-01-01') }),
 	startsAt: fc.integer({ min: Date.parse('2025-01-01'), max: Date.parse('2027-01-01') }),
 	zone: pick('Europe/Dublin', 'America/New_York', 'Australia/Lord_Howe'),
 	confirmed: fc.boolean(),

@@ -1,12 +1,16 @@
 import { describe, expect, it } from 'vitest';
+import { ROLES } from '../core/codes';
+import { deniedWords } from './deny-list';
 import { isGsm7 } from './gsm7';
 import { measureSms } from './sms-length';
-import { PATIENT_SMS, SMS, mailText, smsText } from './templates';
+import { PATIENT_SMS, SMS, STAFF_SMS, mailText, smsText } from './templates';
 import type { SmsTemplate } from './templates';
 import { dayAndTime, messageLanguage, safeName, shortened } from './templates/wording';
 
 const LINK = 'http://127.0.0.1:3000/t/q7Zr2LxV0aYd8KcM3nTfPw';
 const BEDSIDE = { unit: 'Heron Unit', bed: '4', grade: 'high', link: LINK } as const;
+/** In Dublin 14:05, because summer time has begun. */
+const SINCE = { since: Date.parse('2025-03-31T13:05:00Z'), zone: 'Europe/Dublin' };
 const VISIT = {
 	sender: 'Saltmarsh General',
 	phone: '+353 1 555 0100',
@@ -26,18 +30,53 @@ const TEXTS: [SmsTemplate, string, string][] = [
 	[
 		'escalation-taken',
 		smsText('escalation-taken', BEDSIDE),
-		`Ropewalk HIGH: Heron Unit, bed 4: somebody has taken it. Nothing is asked of you now. ${LINK}`
+		`Ropewalk HIGH: Heron Unit, bed 4: somebody has it. You need do nothing. ${LINK}`
 	],
 	['took-it', smsText('took-it', BEDSIDE), `Ropewalk HIGH: Heron Unit, bed 4: it is yours. ${LINK}`],
 	[
-		'passed-it',
-		smsText('passed-it', BEDSIDE),
-		`Ropewalk HIGH: Heron Unit, bed 4: the next person is told now. ${LINK}`
+		'taken-before',
+		smsText('taken-before', { ...BEDSIDE, ...SINCE, holder: 'nurse' }),
+		'Ropewalk HIGH: Heron Unit, bed 4: NOT yours. A nurse has it since 14:05. Nothing is asked of you now.'
+	],
+	[
+		'over-before',
+		smsText('over-before', { ...BEDSIDE, ...SINCE }),
+		'Ropewalk HIGH: Heron Unit, bed 4: NOT taken, it is over since 14:05. Nothing is asked of you now.'
+	],
+	[
+		'may-not-take',
+		smsText('may-not-take', {}),
+		'Ropewalk: NOT taken. Your account may not take calls. The call goes on to others.'
+	],
+	[
+		'unknown-code',
+		smsText('unknown-code', { code: '4829' }),
+		'Ropewalk: NOT taken. No call that you may take has the code 4829. Look at the code again, or open the link of the call.'
+	],
+	[
+		'which-one',
+		smsText('which-one', {}),
+		'Ropewalk: NOT taken. Several calls were sent to you. Reply TAKE and the code of one, or open its link.'
+	],
+	[
+		'none-open',
+		smsText('none-open', {}),
+		'Ropewalk: NOT taken. No call that was sent to you is waiting. Sign in to see all of them.'
 	],
 	[
 		'staff-unclear',
-		smsText('staff-unclear', {}),
-		'Ropewalk: NOT taken. No open call fits your text. Open the link of the call, or reply TAKE and its code.'
+		smsText('staff-unclear', { code: '4829' }),
+		'Ropewalk: NOT taken, and nobody reads this. To take a call reply TAKE 4829, or open its link.'
+	],
+	[
+		'shared-number',
+		smsText('shared-number', {}),
+		'Ropewalk: NOT taken. This number is on record for several people. Open the link of the call, or sign in.'
+	],
+	[
+		'unknown-number',
+		smsText('unknown-number', {}),
+		'Ropewalk: NOT taken. This number is on record for nobody who takes calls. Sign in to take it.'
 	],
 	[
 		'visit-reminder',
@@ -102,6 +141,16 @@ describe('texts', () => {
 		);
 	});
 
+	it('without a code of its own the general answer asks for one', () => {
+		expect(smsText('staff-unclear', { code: null })).toContain('reply TAKE and its code, or');
+	});
+
+	it.each(ROLES)('a %s who has it is not named more closely', (holder) => {
+		const text = smsText('taken-before', { ...BEDSIDE, ...SINCE, holder });
+		expect(text).toMatch(/NOT yours\. A (nurse|doctor|colleague) has it since/);
+		expect(deniedWords(text)).toEqual([]);
+	});
+
 	it('a confirmed visit is not asked again', () => {
 		expect(smsText('visit-reminder', { ...VISIT, confirmed: true })).toBe(
 			'Saltmarsh General: your visit is Fri 28 Mar 10:00, East Gym. Reply NO if you cannot come. Questions: +353 1 555 0100. STOP ends texts.'
@@ -142,6 +191,34 @@ describe('names that a hospital chooses', () => {
 			expect(text).toContain('+353015550100');
 		}
 	);
+});
+
+describe('staff', () => {
+	const fields = {
+		...BEDSIDE,
+		...SINCE,
+		unit: 'Heron Unit for Observation after Long Nights, West Wing, second floor',
+		bed: 'Window 12',
+		grade: 'medium',
+		link: 'https://ropewalk.hospital.saltmarsh-county.example/t/q7Zr2LxV0aYd8KcM3nTfPw',
+		code: '482923',
+		holder: 'physician'
+	} as const;
+
+	it.each(Object.keys(STAFF_SMS) as (keyof typeof STAFF_SMS)[])(
+		'%s fits one part with the longest names',
+		(template) => {
+			const text = smsText(template, fields);
+			expect(measureSms(text)).toMatchObject({ encoding: 'gsm7', segments: 1 });
+		}
+	);
+
+	it('keeps bed, link and code whole', () => {
+		const text = smsText('escalation', fields);
+		expect(text).toBe(
+			`Ropewalk MEDIUM: Heron Unit., bed Window 12. To take it open ${fields.link} or reply TAKE 482923`
+		);
+	});
 });
 
 describe('mails', () => {

@@ -14,8 +14,15 @@ export const STAFF_SMS = {
 	escalation: escalations.escalation,
 	'escalation-taken': escalations.escalationTaken,
 	'took-it': escalations.tookIt,
-	'passed-it': escalations.passedIt,
-	'staff-unclear': escalations.staffUnclear
+	'taken-before': escalations.takenBefore,
+	'over-before': escalations.overBefore,
+	'may-not-take': escalations.mayNotTake,
+	'unknown-code': escalations.unknownCode,
+	'which-one': escalations.whichOne,
+	'none-open': escalations.noneOpen,
+	'staff-unclear': escalations.staffUnclear,
+	'shared-number': escalations.sharedNumber,
+	'unknown-number': escalations.unknownNumber
 };
 
 export const PATIENT_SMS = {

@@ -60,31 +60,36 @@ export function passEscalation(
 export function confirmPass(context: PersonContext, id: string): Promise<Written<Moved>> {
 	return write(context, 'escalation.take', async (tx) => {
 		const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
-		requireEscalationMove(escalation.state, 'confirm');
-		if (escalation.passTo !== context.actor.id) {
-			throw new Problem('not-allowed', 'This escalation was not passed to you.');
-		}
-		await tx
-			.update(escalations)
-			.set({
-				takenBy: context.actor.id,
-				takenAt: context.now,
-				arrivedAt: null,
-				etaMinutes: null,
-				passTo: null,
-				passReason: null
-			})
-			.where(eq(escalations.id, id));
-		await recordMove(tx, context, id, 'confirmed');
-		await stopAlerts(tx, id, 'confirmed');
-		return moved(
-			escalation,
-			'taken',
-			'escalation.pass-confirmed',
-			'confirmed',
-			m.escalations_entry_confirmed()
-		);
+		return confirm(tx, context, escalation);
 	});
+}
+
+/** The confirming itself, inside a transaction of the caller's, who has fetched the row with permission. */
+export async function confirm(
+	tx: Tx,
+	context: PersonContext,
+	escalation: EscalationRow
+): Promise<Change<Moved>> {
+	const { id } = escalation;
+	requireEscalationMove(escalation.state, 'confirm');
+	if (escalation.passTo !== context.actor.id) {
+		throw new Problem('not-allowed', 'This escalation was not passed to you.');
+	}
+	await tx
+		.update(escalations)
+		.set({
+			takenBy: context.actor.id,
+			takenAt: context.now,
+			arrivedAt: null,
+			etaMinutes: null,
+			passTo: null,
+			passReason: null
+		})
+		.where(eq(escalations.id, id));
+	await recordMove(tx, context, id, 'confirmed');
+	await stopAlerts(tx, id, 'confirmed');
+	const body = m.escalations_entry_confirmed();
+	return moved(escalation, 'taken', 'escalation.pass-confirmed', 'confirmed', body);
 }
 
 /** The holder settles it: what came of it, whom they informed, and whether to measure again. */

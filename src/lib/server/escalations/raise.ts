@@ -12,6 +12,7 @@ import { bedsideSessions, escalations, users } from '../db/schema';
 import { newId } from '../ids';
 import { write, type Change, type Written } from '../write';
 import { recordMove } from './moves';
+import { freeReplyCode } from './reply-code';
 import { tellFrom, type EscalationRow } from './tell';
 
 export interface Raised {
@@ -67,6 +68,7 @@ async function raiseNew(
 		sessionId: input.sessionId ?? null,
 		raisedBy: context.actor.id,
 		raisedAt: context.now,
+		replyCode: await freeReplyCode(tx, context.now),
 		chainStartedAt: context.now
 	};
 	await tx.insert(escalations).values(row);

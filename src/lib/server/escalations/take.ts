@@ -72,13 +72,18 @@ export async function findLink(reader: Reader, token: string) {
 	return link ?? null;
 }
 
-async function take(
+/**
+ * The taking itself, inside a transaction of the caller's, who has fetched the row with permission.
+ * @param via by which way: a page, the secret link, or a text
+ * @throws Problem `already-taken` or `wrong-state`, before anything is changed
+ */
+export async function take(
 	tx: Tx,
 	context: Context,
 	person: Person,
 	escalation: EscalationRow,
 	etaMinutes: number | null,
-	via: 'page' | 'link'
+	via: 'page' | 'link' | 'text'
 ): Promise<Change<Taken>> {
 	if (escalation.state === 'taken') {
 		throw await alreadyTaken(tx, escalation);

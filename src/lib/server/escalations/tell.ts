@@ -7,7 +7,7 @@ import type { Tx } from '../db';
 import type { escalations } from '../db/schema';
 import { episodes, escalationLinks, escalationSteps, outbox, units } from '../db/schema';
 import { newId } from '../ids';
-import { linkDigest, linkToken } from '../links';
+import { aroundLink, linkDigest, linkToken } from '../links';
 import type { NewMessage } from '../outbox/enqueue';
 
 export type EscalationRow = typeof escalations.$inferSelect;
@@ -65,7 +65,7 @@ export async function tellFrom(
 	}
 }
 
-/** The alert to one person: unit, bed, grade and a link that only they can use. */
+/** The alert to one person: unit, bed, grade, a link that only they can use, and the code to reply TAKE with. */
 export async function alert(
 	tx: Tx,
 	escalation: EscalationRow,
@@ -89,13 +89,15 @@ export async function alert(
 		channel: 'sms',
 		causeKey: `escalation:${escalation.id}:${escalation.chainStartedAt}:${occasion}:${userId}`,
 		userId,
-		body: smsText('escalation', {
-			unit: where.unit,
-			bed: where.bed,
-			grade: escalation.grade,
-			link: '{link}',
-			code: null
-		}),
+		body: aroundLink((link) =>
+			smsText('escalation', {
+				unit: where.unit,
+				bed: where.bed,
+				grade: escalation.grade,
+				link,
+				code: escalation.replyCode
+			})
+		),
 		linkId,
 		ref: { kind: 'escalation', id: escalation.id },
 		expiresAt: now + MESSAGE_LIFE_MS

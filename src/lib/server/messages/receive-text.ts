@@ -3,6 +3,7 @@ import type { Actor } from '$lib/domain/access/actor';
 import type { AuditEvent } from '$lib/domain/audit/actions';
 import type { LiveEvent } from '$lib/domain/live/events';
 import { readPatientReply } from '$lib/domain/messages/reply';
+import { readStaffReply } from '$lib/domain/messages/staff-reply';
 import type { Context } from '../context';
 import { db, type Reader, type Tx } from '../db';
 import { inboundMessages, users } from '../db/schema';
@@ -12,7 +13,7 @@ import { write } from '../write';
 import { onPatientText, optOut } from './patient-text';
 import { senderOf, type Sender } from './sender';
 import { requiredField, type GatewayForm } from './signature';
-import { onStaffText } from './staff-text';
+import { onSharedStaffText, onStaffText, onUnknownTake } from './staff-text';
 import type { ReceivedText, Understood } from './understood';
 
 /** Longer than any text that a gateway passes on. */
@@ -38,7 +39,7 @@ export async function receiveText(form: GatewayForm, request: Context): Promise<
 	try {
 		await write(context, 'anyone', async (tx) => {
 			await refuseKnown(tx, text.providerId);
-			return store(tx, from, sender, text);
+			return store(tx, context, from, sender, text);
 		});
 	} catch (error) {
 		if (!(error instanceof AlreadyReceived)) {
@@ -53,8 +54,8 @@ async function refuseKnown(tx: Tx, providerId: string): Promise<void> {
 	}
 }
 
-async function store(tx: Tx, from: string, sender: Sender, text: ReceivedText) {
-	const { understoodAs, handled, visitId, change } = await understand(tx, sender, text);
+async function store(tx: Tx, context: Context, from: string, sender: Sender, text: ReceivedText) {
+	const { understoodAs, handled, visitId, change } = await understand(tx, context, from, sender, text);
 	const patientId = sender.kind === 'patient' ? sender.patient.id : null;
 	await tx.insert(inboundMessages).values({
 		id: text.id,
@@ -86,22 +87,53 @@ async function store(tx: Tx, from: string, sender: Sender, text: ReceivedText) {
 	};
 }
 
-async function understand(tx: Tx, sender: Sender, text: ReceivedText): Promise<Understood> {
+async function understand(
+	tx: Tx,
+	context: Context,
+	from: string,
+	sender: Sender,
+	text: ReceivedText
+): Promise<Understood> {
 	switch (sender.kind) {
 		case 'patient':
 			return onPatientText(tx, sender.patient, text);
 		case 'staff':
-			return onStaffText(tx, sender.person, text);
+			return onStaffText(tx, { ...context, actor: sender.person }, text);
+		case 'shared-staff':
+			return onSharedStaffText(from, text);
 		case 'shared':
-			// Whoever of them it was, no more texts go to this number.
-			if (readPatientReply(text.body) === 'stop') {
-				const ids = sender.patients.map(({ id }) => id);
-				await optOut(tx, ids, text.now);
-			}
-			return { understoodAs: 'shared-number', handled: false };
+			return onSharedText(tx, from, sender, text);
 		case 'unknown':
-			return { understoodAs: 'unknown-number', handled: false };
+			return triesToTake(text)
+				? onUnknownTake(from, text)
+				: { understoodAs: 'unknown-number', handled: false };
 	}
+}
+
+/** A number of several patients, or of a patient and staff: whose words these are cannot be told. */
+async function onSharedText(
+	tx: Tx,
+	from: string,
+	{ patients, withStaff }: Extract<Sender, { kind: 'shared' }>,
+	text: ReceivedText
+): Promise<Understood> {
+	// Whoever of them it was, no more texts go to this number.
+	if (readPatientReply(text.body) === 'stop') {
+		await optOut(
+			tx,
+			patients.map(({ id }) => id),
+			text.now
+		);
+	}
+	// No patient knows a reply code.
+	return withStaff && triesToTake(text)
+		? onSharedStaffText(from, text)
+		: { understoodAs: 'shared-number', handled: false };
+}
+
+function triesToTake({ body }: ReceivedText): boolean {
+	const reply = readStaffReply(body);
+	return reply.kind === 'take' && reply.code !== null;
 }
 
 function actorOf(sender: Sender): Actor | null {
@@ -110,6 +142,7 @@ function actorOf(sender: Sender): Actor | null {
 			return { kind: 'patient', id: sender.patient.id };
 		case 'staff':
 			return sender.person;
+		case 'shared-staff':
 		case 'shared':
 		case 'unknown':
 			return null;

@@ -10,7 +10,10 @@ export type PatientRow = typeof patients.$inferSelect;
 export type Sender =
 	| { kind: 'patient'; patient: PatientRow }
 	| { kind: 'staff'; person: Person }
-	| { kind: 'shared'; patients: PatientRow[] }
+	/** One of colleagues, such as a ward's telephone. */
+	| { kind: 'shared-staff' }
+	/** Of several patients, or of a patient and somebody of staff. */
+	| { kind: 'shared'; patients: PatientRow[]; withStaff: boolean }
 	| { kind: 'unknown' };
 
 /** @param number in E.164 form, as the gateway gives it */
@@ -23,7 +26,9 @@ export async function senderOf(reader: Reader, number: string): Promise<Sender> 
 	const [patient] = found;
 	const [user] = staff;
 	if (found.length + staff.length > 1) {
-		return { kind: 'shared', patients: found };
+		return patient
+			? { kind: 'shared', patients: found, withStaff: staff.length > 0 }
+			: { kind: 'shared-staff' };
 	}
 	if (patient) {
 		return { kind: 'patient', patient };

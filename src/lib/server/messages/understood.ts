@@ -27,20 +27,30 @@ export interface Understood {
 /** An answer later than this would only confuse. */
 const ANSWER_LIFE_MS = 60 * 60 * 1000;
 
-/** A text back to whoever wrote. `to` names one of user and patient. */
+/** A text back to whoever wrote. `to` names one of user, patient and a number that is nobody's alone. */
 export function answerTo<T extends SmsTemplate>(
 	text: ReceivedText,
-	to: { userId: string } | { patientId: string },
+	to: AnswerTo,
 	template: T,
 	fields: SmsFields<T>,
 	options: { language?: string; causeKey?: string } = {}
 ): NewMessage {
+	return { ...answerBase(text, to, options.causeKey), body: smsText(template, fields, options.language) };
+}
+
+export type AnswerTo = { userId: string } | { patientId: string } | { address: string };
+
+/** An answer but for its words. */
+export function answerBase(
+	text: ReceivedText,
+	to: AnswerTo,
+	causeKey = `answer:${text.providerId}`
+): Omit<NewMessage, 'body'> {
 	return {
 		kind: 'answer',
 		channel: 'sms',
-		causeKey: options.causeKey ?? `answer:${text.providerId}`,
+		causeKey,
 		...to,
-		body: smsText(template, fields, options.language),
 		ref: { kind: 'inbound', id: text.id },
 		expiresAt: text.now + ANSWER_LIFE_MS
 	};

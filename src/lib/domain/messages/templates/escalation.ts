@@ -1,15 +1,20 @@
 /** Texts to staff about an escalation: product, unit, bed, grade, link, code. No name, no reason, no reading. */
-import type { Grade } from '../../core/codes';
+import type { Grade, Role } from '../../core/codes';
+import { localParts } from '../../core/time';
+import type { Instant, Zone } from '../../core/time';
 import { toGsm7 } from '../gsm7';
-import { GRADE_WORDS, PRODUCT } from './wording';
+import { GRADE_WORDS, PRODUCT, fitted } from './wording';
 import type { MessageLanguage, Wording } from './wording';
 
 /** Which bed it is about, and how urgent. */
-export interface BedsideFields {
+export interface PlaceFields {
 	readonly unit: string;
 	/** Null for a patient without a bed, in the outpatient programme. */
 	readonly bed: string | null;
 	readonly grade: Grade;
+}
+
+export interface BedsideFields extends PlaceFields {
 	/** The whole address of the page. */
 	readonly link: string;
 }
@@ -19,39 +24,122 @@ export interface EscalationFields extends BedsideFields {
 	readonly code: string | null;
 }
 
+export interface EarlierFields extends PlaceFields {
+	/** When it was taken, or when it ended. */
+	readonly since: Instant;
+	/** The unit's: the time is that of the clock on its wall. */
+	readonly zone: Zone;
+}
+
+export interface HeldFields extends EarlierFields {
+	/** What whoever has it is; nobody is named. */
+	readonly holder: Role;
+}
+
 /** Somebody is needed. */
 export const escalation: Wording<EscalationFields> = {
 	en: (fields) => {
 		const how = fields.code === null ? '' : ` or reply TAKE ${fields.code}`;
-		return `${PRODUCT} ${whereAndGrade(fields, 'en')}. To take it open ${fields.link}${how}`;
+		return withPlace(fields, 'en', (place) => `${place}. To take it open ${fields.link}${how}`);
 	}
 };
 
 /** To those who were told: somebody has it. */
 export const escalationTaken: Wording<BedsideFields> = {
 	en: (fields) =>
-		`${PRODUCT} ${whereAndGrade(fields, 'en')}: somebody has taken it. Nothing is asked of you now. ${fields.link}`
+		withPlace(fields, 'en', (place) => `${place}: somebody has it. You need do nothing. ${fields.link}`)
 };
 
 /** Answer to TAKE: it is yours. */
 export const tookIt: Wording<BedsideFields> = {
-	en: (fields) => `${PRODUCT} ${whereAndGrade(fields, 'en')}: it is yours. ${fields.link}`
+	en: (fields) => withPlace(fields, 'en', (place) => `${place}: it is yours. ${fields.link}`)
 };
 
-/** Answer to PASS: not yours, the chain goes on. */
-export const passedIt: Wording<BedsideFields> = {
-	en: (fields) => `${PRODUCT} ${whereAndGrade(fields, 'en')}: the next person is told now. ${fields.link}`
+/** Answer to TAKE: somebody was first. */
+export const takenBefore: Wording<HeldFields> = {
+	en: (fields) =>
+		withPlace(fields, 'en', (place) => {
+			const who = HOLDER_WORDS.en[fields.holder];
+			return `${place}: NOT yours. ${who} has it since ${clock(fields)}. Nothing is asked of you now.`;
+		})
 };
 
-/** Answer to a text of staff that cannot be carried out. Nothing has been taken, and the text must say so. */
-export const staffUnclear: Wording<Record<never, never>> = {
+/** Answer to TAKE: settled or withdrawn. */
+export const overBefore: Wording<EarlierFields> = {
+	en: (fields) =>
+		withPlace(fields, 'en', (place) => {
+			return `${place}: NOT taken, it is over since ${clock(fields)}. Nothing is asked of you now.`;
+		})
+};
+
+/** Answer to TAKE by a person whose role takes no calls. */
+export const mayNotTake: Wording<Record<never, never>> = {
+	en: () => `${PRODUCT}: NOT taken. Your account may not take calls. The call goes on to others.`
+};
+
+/** Answer to TAKE with a code that no call of theirs has. What they may not see is answered like what is not there. */
+export const unknownCode: Wording<{ readonly code: string }> = {
+	en: ({ code }) =>
+		`${PRODUCT}: NOT taken. No call that you may take has the code ${code}. Look at the code again, or open the link of the call.`
+};
+
+/** Answer to TAKE alone, when several calls wait. */
+export const whichOne: Wording<Record<never, never>> = {
 	en: () =>
-		`${PRODUCT}: NOT taken. No open call fits your text. Open the link of the call, or reply TAKE and its code.`
+		`${PRODUCT}: NOT taken. Several calls were sent to you. Reply TAKE and the code of one, or open its link.`
 };
 
-function whereAndGrade({ unit, bed, grade }: BedsideFields, language: MessageLanguage): string {
-	const place = [toGsm7(unit), ...(bed === null ? [] : [bedWords[language](toGsm7(bed))])].join(', ');
-	return `${GRADE_WORDS[language][grade]}: ${place}`;
+/** Answer to TAKE alone, when none waits. */
+export const noneOpen: Wording<Record<never, never>> = {
+	en: () => `${PRODUCT}: NOT taken. No call that was sent to you is waiting. Sign in to see all of them.`
+};
+
+/** Answer to any other text of staff. Nothing has been taken and nobody reads it, and the text must say so. */
+export const staffUnclear: Wording<{ readonly code: string | null }> = {
+	en: ({ code }) =>
+		`${PRODUCT}: NOT taken, and nobody reads this. To take a call reply TAKE ${code ?? 'and its code'}, or open its link.`
+};
+
+/** Answer to a number that is on record for several people: whose reply it was cannot be told. */
+export const sharedNumber: Wording<Record<never, never>> = {
+	en: () =>
+		`${PRODUCT}: NOT taken. This number is on record for several people. Open the link of the call, or sign in.`
+};
+
+/** Answer to TAKE from a number that nobody of staff has. */
+export const unknownNumber: Wording<Record<never, never>> = {
+	en: () => `${PRODUCT}: NOT taken. This number is on record for nobody who takes calls. Sign in to take it.`
+};
+
+/** 'Surgeon' would tell what kind of ward it is. */
+const HOLDER_WORDS: Record<MessageLanguage, Record<Role, string>> = {
+	en: {
+		surgeon: 'A doctor',
+		physician: 'A doctor',
+		nurse: 'A nurse',
+		therapist: 'A colleague',
+		'speech-therapist': 'A colleague',
+		coordinator: 'A colleague',
+		admin: 'A colleague'
+	}
+};
+
+function clock({ since, zone }: EarlierFields): string {
+	return localParts(since, zone).time;
 }
 
-const bedWords: Record<MessageLanguage, (bed: string) => string> = { en: (bed) => `bed ${bed}` };
+/** Product, grade, unit and bed, then the rest; a long unit name is cut so that it stays one part. */
+function withPlace(
+	{ unit, bed, grade }: PlaceFields,
+	language: MessageLanguage,
+	write: (place: string) => string
+): string {
+	const where = bed === null ? '' : `, ${BED_WORDS[language](toGsm7(bed))}`;
+	return fitted(
+		(_, name) => write(`${PRODUCT} ${GRADE_WORDS[language][grade]}: ${name}${where}`),
+		'',
+		toGsm7(unit)
+	);
+}
+
+const BED_WORDS: Record<MessageLanguage, (bed: string) => string> = { en: (bed) => `bed ${bed}` };

@@ -62,7 +62,7 @@ export function shortened(text: string, units: number): string {
 }
 
 /** How much of sender and place is kept, from all of it to what always fits. */
-const ROOMS = [Infinity, 36, 24];
+const ROOMS = [Infinity, 36, 24, 12];
 
 /** The fullest text that fits one part: names are shortened, nothing is left out. */
 export function fitted(

@@ -31,6 +31,11 @@ export const escalations = sqliteTable(
 			.notNull()
 			.references(() => users.id),
 		raisedAt: instant('raised_at').notNull(),
+		/**
+		 * What everybody who is told may reply TAKE with. One for the call and not for the person: colleagues read it
+		 * to each other, and who takes it is decided by the number that the reply comes from.
+		 */
+		replyCode: text('reply_code'),
 		/** The one holder, from taking until it is settled or passed on. */
 		takenBy: text('taken_by').references(() => users.id),
 		takenAt: instant('taken_at'),
@@ -58,7 +63,11 @@ export const escalations = sqliteTable(
 		// One patient, one untaken escalation: later facts are added to it.
 		uniqueIndex('escalations_one_untaken')
 			.on(t.episodeId)
-			.where(sql`state = 'raised'`)
+			.where(sql`state = 'raised'`),
+		// A reply means one open call. Once it has ended its code may be given again.
+		uniqueIndex('escalations_reply_code')
+			.on(t.replyCode)
+			.where(sql`state in ('raised', 'taken')`)
 	]
 );
 

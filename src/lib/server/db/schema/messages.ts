@@ -104,5 +104,7 @@ export const inboundMessages = sqliteTable('inbound_messages', {
 	visitId: text('visit_id').references(() => visits.id),
 	/** Null while a person still has to look at it. */
 	handledAt: instant('handled_at'),
-	handledBy: text('handled_by').references(() => users.id)
+	handledBy: text('handled_by').references(() => users.id),
+	/** What that person did about it: who was called, what was said. */
+	handledNote: text('handled_note')
 });
