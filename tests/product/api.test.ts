@@ -100,7 +100,7 @@ describe('bodies', () => {
 
 	it('that are invalid name the field by a JSON Pointer', async () => {
 		const answer = await surgeon.post(path(), { ...REFERRAL, question: '' });
-		expect(answer.body.errors).toEqual([{ pointer: '/question', message: 'question is empty.' }]);
+		expect(answer.body.errors).toEqual([{ pointer: '/question', message: 'The question is empty.' }]);
 	});
 
 	it('of unknown addresses and methods are problems too', async () => {

@@ -6,70 +6,72 @@ export const PASSWORD_MIN = 15;
 export const PASSWORD_MAX = 128;
 
 const email = z
-	.string('email is a text.')
+	.string('The e-mail address is a text.')
 	.trim()
 	.toLowerCase()
-	.max(254, 'email has at most 254 characters.')
-	.pipe(z.email('email is not an address like name@hospital.example.'));
+	.max(254, 'The e-mail address has at most 254 characters.')
+	.pipe(z.email('The e-mail address is not one like name@hospital.example.'));
 
 export const signInBody = z.strictObject({
 	email: z
-		.string('email is a text.')
+		.string('The e-mail address is a text.')
 		.trim()
 		.toLowerCase()
-		.min(1, 'email is empty.')
-		.max(254, 'email has at most 254 characters.'),
+		.min(1, 'The e-mail address is empty.')
+		.max(254, 'The e-mail address has at most 254 characters.'),
 	password: z
-		.string('password is a text.')
-		.min(1, 'password is empty.')
-		.max(1024, 'password has at most 1024 characters.'),
-	code: z.string().max(20, 'code has at most 20 characters.').optional()
+		.string('The password is a text.')
+		.min(1, 'The password is empty.')
+		.max(1024, 'The password has at most 1024 characters.'),
+	code: z.string().max(20, 'The code has at most 20 characters.').optional()
 });
 
 /** A new password. Length is what counts; there are no rules on its composition and no expiry. */
 export const newPassword = z
-	.string('password is a text.')
+	.string('The password is a text.')
 	.transform((value) => value.normalize('NFKC'))
 	.pipe(
 		z
 			.string()
-			.min(PASSWORD_MIN, `password has at least ${PASSWORD_MIN} characters.`)
-			.max(PASSWORD_MAX, `password has at most ${PASSWORD_MAX} characters.`)
-			.refine((value) => new Set(value).size >= 5, 'password repeats the same few characters.')
+			.min(PASSWORD_MIN, `The password has at least ${PASSWORD_MIN} characters.`)
+			.max(PASSWORD_MAX, `The password has at most ${PASSWORD_MAX} characters.`)
+			.refine((value) => new Set(value).size >= 5, 'The password repeats the same few characters.')
 	);
 
 /** Taking up an invitation: the first administrator also gives name and address. */
-export const firstAdminBody = z.strictObject({ name: text('name', 100), email, password: newPassword });
+export const firstAdminBody = z.strictObject({ name: text('Your name', 100), email, password: newPassword });
 export const invitedBody = z.strictObject({ password: newPassword });
 
 export const createAccountBody = z.strictObject({
-	name: text('name', 100),
+	name: text('The name', 100),
 	email,
 	role: z.enum(ROLES, 'Choose a role.'),
-	phone: z.string().trim().max(30, 'phone has at most 30 characters.').optional(),
-	units: z.array(z.string()).max(50, 'units has at most 50 members.').default([])
+	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').optional(),
+	units: z.array(z.string()).max(50, 'An account has at most 50 units.').default([])
 });
 
 export const createUnitBody = z.strictObject({
-	name: text('name', 40),
+	name: text('The name of the unit', 40),
 	kind: z.enum(['intensive-care', 'ward', 'gym'], 'Choose what kind of unit it is.')
 });
 
 /** Changing one's own password; the current one proves that it is its owner who sits at the open screen. */
 export const changePasswordForm = z.strictObject({
 	current: z
-		.string('current is a text.')
+		.string('The current password is a text.')
 		.min(1, 'The current password is empty.')
 		.max(1024, 'The current password has at most 1024 characters.'),
 	next: newPassword
 });
 
 /** A deed about one row of a list. */
-export const idForm = z.strictObject({ id: z.string('id is a text.').min(1, 'id is empty.').max(64) });
+export const idForm = z.strictObject({
+	id: z.string('The identifier is a text.').min(1, 'The identifier is empty.').max(64)
+});
 
 /** The units that somebody belongs to. */
 export const setUnitsForm = z.strictObject({
-	units: z.array(z.string()).max(50, 'units has at most 50 members.').default([])
+	units: z.array(z.string()).max(50, 'An account has at most 50 units.').default([])
 });
 
-export const createTokenBody = z.strictObject({ name: text('name', 60) });
+export const createTokenBody = z.strictObject({ name: text('The name of the token', 60) });

@@ -6,38 +6,34 @@ import { reason, text } from '../core/fields';
 export const clearanceLimits = z.strictObject({
 	maxElevationDeg: z
 		.number()
-		.min(0, 'maxElevationDeg is at least 0 degrees.')
-		.max(180, 'maxElevationDeg is at most 180 degrees.')
+		.min(0, 'The arm elevation is at least 0 degrees.')
+		.max(180, 'The arm elevation is at most 180 degrees.')
 		.optional(),
-	maxLoadKg: z
-		.number()
-		.min(0, 'maxLoadKg is at least 0 kg.')
-		.max(50, 'maxLoadKg is at most 50 kg.')
-		.optional(),
+	maxLoadKg: z.number().min(0, 'The load is at least 0 kg.').max(50, 'The load is at most 50 kg.').optional(),
 	maxMinutes: z
 		.number()
-		.int('maxMinutes is a whole number.')
-		.min(1, 'maxMinutes is at least 1.')
-		.max(240, 'maxMinutes is at most 240.')
+		.int('The time is a whole number of minutes.')
+		.min(1, 'The time is at least 1 minute.')
+		.max(240, 'The time is at most 240 minutes.')
 		.optional(),
-	helpers: z.enum(['one', 'two'], 'helpers is one or two.').optional(),
-	text: text('limit', 200).optional()
+	helpers: z.enum(['one', 'two'], 'The number of helpers is one or two.').optional(),
+	text: text('The limit', 200).optional()
 });
 export type ClearanceLimits = z.infer<typeof clearanceLimits>;
 
 export const askClearanceBody = z.strictObject({
 	kind: z.enum(CLEARANCE_KINDS),
-	question: text('question', 2000),
+	question: text('The question', 2000),
 	threadId: z.string().min(1).optional()
 });
 
 export const giveClearanceBody = z.strictObject({
 	limits: clearanceLimits.optional(),
-	reviewOn: z.iso.date('reviewOn is a date like 2026-12-14.').optional(),
-	note: text('note', 1000).optional()
+	reviewOn: z.iso.date('The review day is a date like 2026-12-14.').optional(),
+	note: text('The note', 1000).optional()
 });
 
-export const reasonBody = z.strictObject({ reason: reason('reason') });
+export const reasonBody = z.strictObject({ reason: reason('The reason') });
 
 /** What the decider is shown, stored with the ask. */
 export interface ClearanceEvidence {

@@ -1,9 +1,12 @@
 import { z } from 'zod';
 
-/** Text that a person types: trimmed, not empty, with a limit that the message names. */
+/**
+ * Text that a person types: trimmed, not empty, with a limit that the message names.
+ * @param field the name of the field as a sentence begins with it, such as `The question`: people read it
+ */
 export function text(field: string, max: number) {
 	return z
-		.string(`${field} is a text.`)
+		.string(`${field} is missing or no text.`)
 		.trim()
 		.min(1, `${field} is empty.`)
 		.max(max, `${field} has at most ${max} characters.`)

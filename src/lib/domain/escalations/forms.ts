@@ -10,13 +10,13 @@ const minutes = (field: string, max: number) =>
 		.max(max, `${field} is at most ${max} minutes.`);
 
 export const raiseBody = z.strictObject({
-	grade: z.enum(GRADES, `grade is one of ${GRADES.join(', ')}.`),
-	situation: text('situation', 2000),
-	background: text('background', 2000),
-	assessment: text('assessment', 2000),
-	request: text('request', 2000),
+	grade: z.enum(GRADES, `The grade is one of ${GRADES.join(', ')}.`),
+	situation: text('The situation', 2000),
+	background: text('The background', 2000),
+	assessment: text('The assessment', 2000),
+	request: text('The request', 2000),
 	neededBy: z.iso
-		.datetime({ offset: true, error: 'neededBy is an instant like 2026-12-01T14:05:00Z.' })
+		.datetime({ offset: true, error: 'The time it is needed by is an instant like 2026-12-01T14:05:00Z.' })
 		.optional(),
 	toldInPerson: z.string().min(1).max(64).optional(),
 	sessionId: z.string().min(1).max(64).optional(),
@@ -24,15 +24,17 @@ export const raiseBody = z.strictObject({
 });
 export type RaiseInput = z.infer<typeof raiseBody>;
 
-export const takeBody = z.strictObject({ etaMinutes: minutes('etaMinutes', 240).optional() });
+export const takeBody = z.strictObject({
+	etaMinutes: minutes('The time until you are there', 240).optional()
+});
 
-export const passBody = z.strictObject({ to: z.string().min(1).max(64), reason: reason('reason') });
+export const passBody = z.strictObject({ to: z.string().min(1).max(64), reason: reason('The reason') });
 
 export const settleBody = z.strictObject({
-	outcome: text('outcome', 200),
-	note: text('note', 4000),
-	informed: text('informed', 200).optional(),
-	recheckMinutes: minutes('recheckMinutes', 24 * 60).optional()
+	outcome: text('The outcome', 200),
+	note: text('The note', 4000),
+	informed: text('Who was informed', 200).optional(),
+	recheckMinutes: minutes('The time until the re-check', 24 * 60).optional()
 });
 
 export const emptyBody = z.strictObject({});
@@ -45,7 +47,7 @@ export const takeForm = z.object({ etaMinutes: takeBody.shape.etaMinutes });
  * action refuses it then.
  */
 export const raiseForm = z.object({
-	grade: z.enum(['', ...GRADES], `grade is one of ${GRADES.join(', ')}.`).default(''),
+	grade: z.enum(['', ...GRADES], `The grade is one of ${GRADES.join(', ')}.`).default(''),
 	situation: raiseBody.shape.situation,
 	background: raiseBody.shape.background,
 	assessment: raiseBody.shape.assessment,

@@ -54,9 +54,9 @@ describe('bookVisitsBody', () => {
 		],
 		['startsAt', 5, 'startsAt is 5: it must be an instant such as 2025-03-28T10:00:00Z.'],
 		['place', undefined, 'place is missing.'],
-		['place', '  ', 'place is empty.'],
+		['place', '  ', 'The place is empty.'],
 		['place', 'x'.repeat(80), ''],
-		['place', 'x'.repeat(81), 'place has at most 80 characters.']
+		['place', 'x'.repeat(81), 'The place has at most 80 characters.']
 	])('single, %s %j', (field, value, message) => {
 		expect(refusal(bookVisitsBody, { ...SINGLE, [field]: value })).toBe(message && `/${field}: ${message}`);
 	});
@@ -74,7 +74,7 @@ describe('bookVisitsBody', () => {
 		['weekdays', ['mon', 'mon'], 'weekdays holds the same day twice.'],
 		['weekdays', 'mon', 'weekdays is "mon": it must be a list such as ["mon","wed","fri"].'],
 		['minutes', 241, 'minutes is 241: it must be a whole number from 10 to 240.'],
-		['place', '', 'place is empty.']
+		['place', '', 'The place is empty.']
 	])('series, %s %j', (field, value, message) => {
 		const body = { series: { ...SERIES, [field]: value } };
 		expect(refusal(bookVisitsBody, body)).toBe(message && `/series/${field}: ${message}`);

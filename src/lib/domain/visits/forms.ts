@@ -27,7 +27,7 @@ const localDate = (field: string) => written(field, isLocalDate, 'a day that exi
 const localTime = written('time', isLocalTime, 'a time from 00:00 to 23:59, as HH:MM');
 const minutes = wholeNumber('minutes', MINUTES_MIN, MINUTES_MAX);
 /** A place by id or exact name. */
-const place = text('place', PLACE_MAX);
+const place = text('The place', PLACE_MAX);
 
 const weekdays = z
 	.array(
@@ -96,7 +96,7 @@ export const visitForm = z.strictObject({ date: localDate('date'), time: localTi
 export type VisitForm = z.infer<typeof visitForm>;
 
 /** Body of `POST /api/visits/:id/confirm`, `/cancel`, `/attend`, `/miss`; it may be left out. */
-export const visitMoveBody = z.strictObject({ reason: reason('reason').optional() }).prefault({});
+export const visitMoveBody = z.strictObject({ reason: reason('The reason').optional() }).prefault({});
 export type VisitMoveBody = z.infer<typeof visitMoveBody>;
 
 /** Why a visit cannot be booked for this start, or null: it must lie ahead, by two years at most. */

@@ -1,4 +1,4 @@
-import { Problem, PROBLEMS } from '$lib/domain/core/errors';
+import { Problem, PROBLEMS, type FieldError } from '$lib/domain/core/errors';
 import type { z } from 'zod';
 
 /** An error as `application/problem+json` (RFC 9457). `type` is the stable code. */
@@ -41,7 +41,10 @@ export function invalidBody(error: z.ZodError): Problem {
 		message: issue.message
 	}));
 	const [first] = errors;
-	return new Problem('invalid', first ? `${first.pointer || 'body'}: ${first.message}` : undefined, {
-		errors
-	});
+	return new Problem('invalid', first && detailOf(first), { errors });
+}
+
+/** Our own messages name their field; those that zod makes do not, and get the pointer before them. */
+function detailOf({ pointer, message }: FieldError): string {
+	return /^(Invalid|Unrecognized|Too )/.test(message) ? `${pointer || 'body'}: ${message}` : message;
 }
