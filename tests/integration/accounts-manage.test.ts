@@ -112,12 +112,31 @@ describe('managing accounts', () => {
 	it.each([
 		['an address in use', { email: 'una@saltmarsh.example' }, '/email'],
 		['a unit that is none', { units: ['nowhere'] }, '/units'],
+		['a nurse without a unit', { units: [] }, '/units'],
+		['a coordinator without a unit', { role: 'coordinator', units: [] }, '/units'],
 		['a telephone number that is none', { phone: 'ring the ward' }, '/phone']
 	])('refuses %s and writes nothing', async (_, more, pointer) => {
 		const before = await db().$count(users);
 		const refused = createAccount(admin(), account('refused@saltmarsh.example', more));
 		await expect(refused).rejects.toMatchObject({ code: 'invalid', extra: { errors: [{ pointer }] } });
 		expect(await db().$count(users)).toBe(before);
+	});
+
+	it('asks no unit of an administrator, who sees no patients', async () => {
+		const made = await createAccount(
+			admin(),
+			account('head@saltmarsh.example', { role: 'admin', units: [] })
+		);
+		expect((await loadPerson(db(), made.result.id))?.unitIds).toEqual([]);
+	});
+
+	it('takes the last unit from nobody who sees patients', async () => {
+		const person = await nurse();
+		await expect(setUnits(admin(), person.id, [])).rejects.toMatchObject({
+			code: 'invalid',
+			extra: { errors: [{ pointer: '/units' }] }
+		});
+		expect((await loadPerson(db(), person.id))?.unitIds).toEqual([hospital.units.ward]);
 	});
 
 	it('says from now on which units somebody belongs to', async () => {

@@ -2,6 +2,7 @@ import { and, eq, inArray, isNotNull, isNull } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { createAccountBody, createUnitBody } from '$lib/domain/accounts/forms';
 import type { AuditAction } from '$lib/domain/audit/actions';
+import type { Role } from '$lib/domain/core/codes';
 import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
 import { PhoneError, normalisePhone } from '$lib/domain/messages/phone';
 import type { PersonContext } from '../context';
@@ -17,13 +18,15 @@ type Made = Promise<Written<{ id: string }>>;
 
 /**
  * Make an account and mail its owner a link to choose a password.
- * @throws Problem `invalid` for an address or unit that does not fit, or a telephone number that is none
+ * @throws Problem `invalid` for an address or unit that does not fit, no unit for anybody but an administrator, or
+ * a telephone number that is none
  */
 export function createAccount(context: PersonContext, input: z.infer<typeof createAccountBody>): Made {
 	return write(context, 'account.manage', async (tx) => {
 		const { name, email, role } = input;
 		const phone = phoneOf(input.phone);
 		await refuseKnownAddress(tx, email);
+		refuseNoUnit(role, input.units);
 		await requireUnits(tx, input.units);
 		const id = newId();
 		await tx
@@ -96,7 +99,8 @@ export function enableAccount(context: PersonContext, userId: string): Made {
 /** Say which units somebody belongs to from now on; what they may see follows with their next request. */
 export function setUnits(context: PersonContext, userId: string, unitIds: string[]): Made {
 	return write(context, 'account.manage', async (tx) => {
-		await accountById(tx, userId);
+		const { role } = await accountById(tx, userId);
+		refuseNoUnit(role, unitIds);
 		await requireUnits(tx, unitIds);
 		await tx.delete(userUnits).where(eq(userUnits.userId, userId));
 		await insertMemberships(tx, userId, unitIds);
@@ -145,6 +149,16 @@ function phoneOf(text: string | undefined): string | null {
 async function refuseKnownAddress(tx: Tx, email: string): Promise<void> {
 	if ((await tx.$count(users, eq(users.email, email))) > 0) {
 		throw invalidField('/email', `There is an account with the address ${email} already.`);
+	}
+}
+
+/** Without a unit one sees no patient: an account that is good for nothing is a mistake. Administrators see none anyway. */
+function refuseNoUnit(role: Role, unitIds: string[]): void {
+	if (role !== 'admin' && unitIds.length === 0) {
+		throw invalidField(
+			'/units',
+			'The units are empty: choose at least one, or this account sees no patient.'
+		);
 	}
 }
 
