@@ -35,6 +35,8 @@ export const API: Record<string, Row> = {
 	'GET /api/episodes': { roles: SEEING, answers: [200] },
 	'POST /api/episodes': { roles: ['coordinator', 'nurse', 'physician', 'surgeon'], answers: [422] },
 	'GET /api/episodes/[id]': { roles: SEEING, answers: [404] },
+	'POST /api/episodes/[id]/move': { roles: ['coordinator', 'nurse'], answers: [422] },
+	'POST /api/episodes/[id]/close': { roles: ['coordinator', 'nurse', 'physician'], answers: [422] },
 	'POST /api/episodes/[id]/referrals': { roles: ['surgeon', 'physician'], answers: [422] },
 	'POST /api/episodes/[id]/clearances': {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],

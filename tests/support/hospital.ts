@@ -137,7 +137,7 @@ export async function addPatient(
 		.values({
 			id,
 			name,
-			mrn: `T-${id.slice(-12)}`,
+			mrn: `T-${id.slice(-12)}`.toUpperCase(),
 			birthDate: '1958-09-05',
 			sex: 'female',
 			phone,

@@ -7,6 +7,8 @@ import type { Person } from './actor';
 export const PERMISSIONS = [
 	'episode.read',
 	'episode.admit',
+	'episode.move',
+	'episode.close',
 	'contact.read',
 	'referral.create',
 	'referral.answer',
@@ -56,6 +58,10 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return clinical || role === 'coordinator';
 		case 'episode.admit':
 			return among(role, 'coordinator', 'nurse', 'physician', 'surgeon');
+		case 'episode.move':
+			return among(role, 'coordinator', 'nurse');
+		case 'episode.close':
+			return among(role, 'coordinator', 'nurse', 'physician');
 		case 'contact.read':
 			return clinical || role === 'coordinator';
 		case 'referral.create':

@@ -76,6 +76,16 @@ export type Rhythm = (typeof RHYTHMS)[number];
 export const APPROACHES = ['sternotomy', 'other'] as const;
 export type Approach = (typeof APPROACHES)[number];
 
+/** Why a stay is over. */
+export const CLOSE_REASONS = [
+	'home',
+	'other-hospital',
+	'programme-ended',
+	'died',
+	'entered-in-error'
+] as const;
+export type CloseReason = (typeof CLOSE_REASONS)[number];
+
 export const LEVELS = [1, 2, 3, 4, 5, 6] as const;
 export type Level = (typeof LEVELS)[number];
 

@@ -16,6 +16,7 @@ export const PROBLEMS = {
 	'already-given': { status: 409, title: 'It is already given' },
 	'already-taken': { status: 409, title: 'Somebody has it already' },
 	'clearance-needed': { status: 409, title: 'A clearance is needed first' },
+	'already-admitted': { status: 409, title: 'The patient has an open stay' },
 	'bed-in-use': { status: 409, title: 'The bed is in use' },
 	'in-flight': { status: 409, title: 'The first request with this key is still running' },
 	'too-large': { status: 413, title: 'The request is too large' },

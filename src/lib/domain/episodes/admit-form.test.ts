@@ -9,6 +9,7 @@ const FILLED = {
 	mrn: 'S-1042',
 	phone: '086 555 0142',
 	smsConsent: true,
+	confirmName: false,
 	unit: 'Tern Ward',
 	bed: 'T4',
 	procedure: 'Bypass',
@@ -33,7 +34,8 @@ describe('admitForm', () => {
 		[{ mrn: 'x'.repeat(40) }, []],
 		[{ mrn: 'x'.repeat(41) }, ['mrn']],
 		[{ unit: '' }, ['unit']],
-		[{ bed: '' }, ['bed']],
+		[{ bed: '' }, []],
+		[{ bed: 'x'.repeat(12) }, []],
 		[{ bed: 'x'.repeat(13) }, ['bed']],
 		[{ level: '0' }, ['level']],
 		[{ level: '7' }, ['level']],
@@ -75,6 +77,16 @@ describe('toAdmission', () => {
 		['unknown', null]
 	])('rate-slowing drug %s is %s', (betaBlocked, value) => {
 		expect(toAdmission({ ...FILLED, betaBlocked }, 'Europe/Dublin').betaBlocked).toBe(value);
+	});
+
+	it('does not take a consent away because a box is empty', () => {
+		const body = admitBody.parse(toAdmission({ ...FILLED, smsConsent: false }, 'Europe/Dublin'));
+		expect(body.patient.smsConsent).toBeUndefined();
+	});
+
+	it('asks no bed of a gym and passes on a confirmed name', () => {
+		const body = admitBody.parse(toAdmission({ ...FILLED, bed: '', confirmName: true }, 'Europe/Dublin'));
+		expect([body.bed, body.confirmName]).toEqual([undefined, true]);
 	});
 
 	it('leaves the operation out where there is none yet', () => {

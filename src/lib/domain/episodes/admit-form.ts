@@ -30,25 +30,28 @@ const known = (list: readonly string[], field: string) =>
 
 export const admitForm = z
 	.object({
-		name: text('Name', 120).default(''),
+		name: text("The patient's name", 120).default(''),
 		birthDate: z
 			.string()
 			.default('')
 			.refine(isLocalDate, 'Birth date: write a day that exists, such as 1958-09-05.'),
 		sex: chosen(SEXES, 'Sex: choose one.'),
-		mrn: text('Hospital number', 40).default(''),
-		phone: line('Telephone', 30),
+		mrn: text('The hospital number', 40).default(''),
+		/** Ticked when the record has another name and this is the name now. */
+		confirmName: z.boolean().default(false),
+		phone: line('The telephone number', 30),
 		smsConsent: z.boolean().default(false),
 		unit: z.string().min(1, 'Unit: choose one.').max(64).default(''),
-		bed: text('Bed', 12).default(''),
-		procedure: line('Procedure', 120),
-		approach: known(APPROACHES, 'Approach'),
-		operatedOn: line('Day of the operation', 10),
-		operatedTime: line('Time of the operation', 5),
-		surgeonId: line('Surgeon', 120),
+		/** Empty for a gym; whether the unit has beds knows the server. */
+		bed: line('The bed', 12),
+		procedure: line('The procedure', 120),
+		approach: known(APPROACHES, 'The approach'),
+		operatedOn: line('The day of the operation', 10),
+		operatedTime: line('The time of the operation', 5),
+		surgeonId: line('The surgeon', 120),
 		level: chosen(LEVELS.map(String), 'Level: choose 1 to 6.').default('1'),
 		betaBlocked: chosen(DRUG_ANSWERS, 'Rate-slowing drug: choose one.').default('unknown'),
-		rhythm: known(RHYTHMS, 'Rhythm')
+		rhythm: known(RHYTHMS, 'The rhythm')
 	})
 	.superRefine((form, context) => {
 		for (const [field, message] of operationProblems(form)) {
@@ -83,7 +86,8 @@ export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInpu
 			sex: form.sex,
 			mrn: form.mrn,
 			phone: form.phone || undefined,
-			smsConsent: form.smsConsent
+			// An empty box says nothing: it must not take away a consent that was given before.
+			smsConsent: form.smsConsent || undefined
 		},
 		operation: form.procedure
 			? {
@@ -94,7 +98,8 @@ export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInpu
 			: undefined,
 		surgeonId: form.surgeonId || undefined,
 		unit: form.unit,
-		bed: form.bed,
+		bed: form.bed || undefined,
+		confirmName: form.confirmName || undefined,
 		level: Number(form.level),
 		betaBlocked: form.betaBlocked === 'unknown' ? null : form.betaBlocked === 'yes',
 		rhythm: form.rhythm || undefined

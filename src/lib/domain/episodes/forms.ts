@@ -1,41 +1,66 @@
 import { z } from 'zod';
-import { APPROACHES, RHYTHMS, SEXES } from '../core/codes';
+import { APPROACHES, CLOSE_REASONS, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
+import { normaliseBed, normaliseMrn } from './identifiers';
 
 const level = z
-	.number('level is a number from 1 to 6.')
-	.int('level is a whole number from 1 to 6.')
-	.min(1, 'level is at least 1.')
-	.max(6, 'level is at most 6.');
+	.number('The level is a number from 1 to 6.')
+	.int('The level is a whole number from 1 to 6.')
+	.min(1, 'The level is at least 1.')
+	.max(6, 'The level is at most 6.');
 
-const instant = (field: string) =>
-	z.iso.datetime({ offset: true, error: `${field} is an instant like 2026-12-01T09:30:00Z.` });
+const unit = z.string('The unit is missing or no text.').min(1, 'The unit is empty.').max(64);
+
+/** A bed as people write it; a gym has none. */
+const bed = text('The bed', 12).refine((typed) => normaliseBed(typed) !== '', 'The bed is empty.');
+
+const mrn = text('The hospital number', 40).refine(
+	(typed) => normaliseMrn(typed) !== '',
+	'The hospital number is empty.'
+);
+
+const patient = z.strictObject({
+	name: text("The patient's name", 120),
+	birthDate: z.iso.date('The birth date is a date like 1958-09-05.'),
+	sex: z.enum(SEXES, `The sex is one of ${SEXES.join(', ')}.`),
+	mrn,
+	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').optional(),
+	language: z
+		.string()
+		.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.')
+		.optional(),
+	smsConsent: z.boolean('The consent to text messages is true or false.').optional()
+});
+
+const operation = z.strictObject({
+	procedure: text('The procedure', 120),
+	approach: z.enum(APPROACHES, `The approach is one of ${APPROACHES.join(', ')}.`),
+	operatedAt: z.iso.datetime({
+		offset: true,
+		error: 'The time of the operation is an instant like 2026-12-01T09:30:00Z.'
+	})
+});
 
 export const admitBody = z.strictObject({
-	patient: z.strictObject({
-		name: text('name', 120),
-		birthDate: z.iso.date('birthDate is a date like 1958-09-05.'),
-		sex: z.enum(SEXES, `sex is one of ${SEXES.join(', ')}.`),
-		mrn: text('mrn', 40),
-		phone: z.string().trim().max(30, 'phone has at most 30 characters.').optional(),
-		language: z
-			.string()
-			.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'language is a tag like en or es.')
-			.optional(),
-		smsConsent: z.boolean('smsConsent is true or false.').optional()
-	}),
-	operation: z
-		.strictObject({
-			procedure: text('procedure', 120),
-			approach: z.enum(APPROACHES, `approach is one of ${APPROACHES.join(', ')}.`),
-			operatedAt: instant('operatedAt')
-		})
-		.optional(),
-	surgeonId: z.string().min(1).max(120).optional(),
-	unit: z.string().min(1, 'unit is empty.').max(64),
-	bed: text('bed', 12),
+	patient,
+	operation: operation.optional(),
+	surgeonId: z.string().min(1, 'The surgeon is empty.').max(120).optional(),
+	unit,
+	/** Needed in a unit with beds; a gym has none. */
+	bed: bed.nullish(),
 	level: level.optional(),
-	betaBlocked: z.boolean('betaBlocked is true, false or null.').nullable().optional(),
-	rhythm: z.enum(RHYTHMS, `rhythm is one of ${RHYTHMS.join(', ')}.`).optional()
+	betaBlocked: z.boolean('The rate-slowing drug is true, false or null.').nullable().optional(),
+	rhythm: z.enum(RHYTHMS, `The rhythm is one of ${RHYTHMS.join(', ')}.`).optional(),
+	/** Set once a person has read that the record has another name, and says that this is the name now. */
+	confirmName: z.boolean('The confirmation of the name is true or false.').optional()
 });
 export type AdmitInput = z.infer<typeof admitBody>;
+
+/** Where a patient goes: a bed of a unit, or a gym without one. */
+export const moveBody = z.strictObject({ unit, bed: bed.nullish() });
+export type MoveInput = z.infer<typeof moveBody>;
+
+/** Why a stay is over. */
+export const closeBody = z.strictObject({
+	reason: z.enum(CLOSE_REASONS, `The reason is one of ${CLOSE_REASONS.join(', ')}.`)
+});

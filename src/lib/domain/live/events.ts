@@ -18,6 +18,8 @@ export interface LiveEvent {
 	kind: string;
 	id: string;
 	episodeId: string | null;
+	/** The unit whose people hear it; where the episode is, when left out. A move names the old unit and the new. */
+	unitId?: string | null;
 	/** Set for what concerns one person alone; others do not hear it. */
 	userId?: string | null;
 }

@@ -1,4 +1,4 @@
-import { eq, or } from 'drizzle-orm';
+import { and, eq, or } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { invalidField } from '$lib/domain/core/errors';
 import type { Reader } from '../db';
@@ -9,24 +9,55 @@ import { units, users } from '../db/schema';
  * @throws Problem `invalid` naming the field and the value
  */
 export async function resolveUnit(db: Reader, person: Person, idOrName: string, pointer: string) {
-	const [unit] = await db
-		.select()
-		.from(units)
-		.where(or(eq(units.id, idOrName), eq(units.name, idOrName)));
+	const unit = await findUnit(db, idOrName);
 	if (!unit || !person.unitIds.includes(unit.id)) {
 		throw invalidField(pointer, `There is no unit "${idOrName}" among yours.`);
 	}
 	return unit;
 }
 
-/** A surgeon by id or exact name. */
-export async function resolveSurgeon(db: Reader, idOrName: string, pointer: string) {
-	const [surgeon] = await db
-		.select({ id: users.id, role: users.role })
+/**
+ * A unit by id or exact name, among all of the hospital: somebody may say where their patient went without
+ * belonging there.
+ * @throws Problem `invalid` naming the field and the value
+ */
+export async function resolveAnyUnit(db: Reader, idOrName: string, pointer: string) {
+	const unit = await findUnit(db, idOrName);
+	if (!unit) {
+		throw invalidField(pointer, `There is no unit "${idOrName}".`);
+	}
+	return unit;
+}
+
+async function findUnit(db: Reader, idOrName: string) {
+	const [unit] = await db
+		.select()
+		.from(units)
+		.where(or(eq(units.id, idOrName), eq(units.name, idOrName)));
+	return unit ?? null;
+}
+
+/**
+ * A surgeon by id or exact name. Somebody whose account is disabled operates here no longer, and a name that two
+ * of them bear names neither.
+ * @throws Problem `invalid` naming the field and the value
+ */
+export async function resolveSurgeon(db: Reader, idOrName: string, pointer: string): Promise<string> {
+	const named = await db
+		.select({ id: users.id, disabledAt: users.disabledAt })
 		.from(users)
-		.where(or(eq(users.id, idOrName), eq(users.name, idOrName)));
-	if (surgeon?.role !== 'surgeon') {
-		throw invalidField(pointer, `There is no surgeon "${idOrName}".`);
+		.where(and(eq(users.role, 'surgeon'), or(eq(users.id, idOrName), eq(users.name, idOrName))));
+	const active = named.filter(({ disabledAt }) => disabledAt === null);
+	const [surgeon, another] = active;
+	if (another) {
+		throw invalidField(
+			pointer,
+			`${active.length} surgeons are called "${idOrName}": name one by identifier.`
+		);
+	}
+	if (!surgeon) {
+		const why = named.length > 0 ? 'their account is disabled' : 'nobody of that name or identifier';
+		throw invalidField(pointer, `There is no surgeon "${idOrName}": ${why}.`);
 	}
 	return surgeon.id;
 }

@@ -1,82 +1,73 @@
 import { and, eq, isNull } from 'drizzle-orm';
-import { Problem, invalidField } from '$lib/domain/core/errors';
+import { Problem } from '$lib/domain/core/errors';
+import type { MoveInput } from '$lib/domain/episodes/forms';
 import { accessEpisode, type EpisodeRow } from '../access/access';
-import { resolveUnit } from '../access/units';
+import { resolveAnyUnit } from '../access/units';
 import type { PersonContext } from '../context';
-import type { Tx } from '../db';
-import { episodes, placements, type units } from '../db/schema';
-import { newId } from '../ids';
+import { episodes } from '../db/schema';
+import { followPatient } from '../escalations/follow-patient';
 import { write, type Written } from '../write';
+import { phaseIn, placeIn, recordPlacement } from './place';
 
-/** Where to: a bed of a unit, or a gym, which has none: that is the outpatient programme. */
-export interface NewPlace {
-	/** Identifier or exact name, among the person's own units. */
+/** Where the patient is after a move. */
+export interface Moved {
+	id: string;
 	unit: string;
+	unitId: string;
 	bed: string | null;
 }
 
 /**
- * Move a patient to another bed or unit. The episode goes on; where it was before stays on record.
- * @throws Problem `bed-in-use`; `invalid` for a ward without a bed or a gym with one; `wrong-state` when closed
+ * Move a patient to another bed or unit; to a gym means into the outpatient programme. The episode goes on, where
+ * it was before stays on record, and an open call for help follows. Any unit can be named: a patient who gets
+ * worse goes where those who send them do not belong.
+ * @throws Problem `bed-in-use`; `invalid` for a ward without a bed or a gym with one; `wrong-state` when closed or
+ * there already
  */
 export function movePatient(
 	context: PersonContext,
 	episodeId: string,
-	place: NewPlace
-): Promise<Written<{ id: string }>> {
-	return write(context, 'episode.admit', async (tx) => {
-		const episode = await accessEpisode(tx, context.actor, episodeId, 'episode.admit');
-		if (episode.closedAt !== null) {
-			throw new Problem('wrong-state', 'The episode is closed: its patient lies nowhere.', {
-				state: 'closed'
-			});
+	input: MoveInput
+): Promise<Written<Moved>> {
+	return write(context, 'episode.move', async (tx) => {
+		const episode = await accessEpisode(tx, context.actor, episodeId, 'episode.move');
+		refuseClosed(episode);
+		const place = await placeIn(tx, await resolveAnyUnit(tx, input.unit, '/unit'), input.bed, episodeId);
+		const { unit, bed } = place;
+		if (unit.id === episode.unitId && bed === episode.bed) {
+			throw new Problem('wrong-state', 'The patient is there already.', { unit: unit.name, bed });
 		}
-		const unit = await resolveUnit(tx, context.actor, place.unit, '/unit');
-		await checkBed(tx, episode, unit, place.bed);
-		await replace(tx, episode, unit, place.bed, context.now);
+		await tx
+			.update(episodes)
+			.set({ unitId: unit.id, bed, phase: phaseIn(unit) })
+			.where(and(eq(episodes.id, episodeId), isNull(episodes.closedAt)));
+		await recordPlacement(tx, episodeId, place, context.now);
+		const { messages, events } = await followPatient(
+			tx,
+			episodeId,
+			{ left: episode.unitId, now: unit.id },
+			context.now
+		);
+		const moved = { topic: 'episode', kind: 'moved', id: episodeId, episodeId } as const;
 		return {
-			result: { id: episodeId },
-			audit: { action: 'episode.moved', objectKind: 'episode', objectId: episodeId, episodeId },
-			events: [{ topic: 'episode', kind: 'moved', id: episodeId, episodeId }]
+			result: { id: episodeId, unit: unit.name, unitId: unit.id, bed },
+			audit: {
+				action: 'episode.moved',
+				objectKind: 'episode',
+				objectId: episodeId,
+				episodeId,
+				detail: { fromUnit: episode.unitId, fromBed: episode.bed, toUnit: unit.id, toBed: bed }
+			},
+			// Those whom the patient left must hear it too: else they go on seeing somebody who is gone.
+			events: [...[...new Set([episode.unitId, unit.id])].map((unitId) => ({ ...moved, unitId })), ...events],
+			messages
 		};
 	});
 }
 
-type Unit = typeof units.$inferSelect;
-
-async function checkBed(tx: Tx, episode: EpisodeRow, unit: Unit, bed: string | null): Promise<void> {
-	const isGym = unit.kind === 'gym';
-	if (isGym !== (bed === null)) {
-		throw invalidField('/bed', isGym ? `${unit.name} has no beds.` : `bed is empty: ${unit.name} has beds.`);
+/** @throws Problem `wrong-state` with when it was closed */
+export function refuseClosed(episode: EpisodeRow): void {
+	if (episode.closedAt !== null) {
+		throw new Problem('wrong-state', 'The stay is closed: its patient lies nowhere.', { state: 'closed' });
 	}
-	if (bed === null) {
-		return;
-	}
-	const [used] = await tx
-		.select({ id: episodes.id })
-		.from(episodes)
-		.where(and(eq(episodes.unitId, unit.id), eq(episodes.bed, bed), isNull(episodes.closedAt)));
-	if (used && used.id !== episode.id) {
-		throw new Problem('bed-in-use', `Bed ${bed} of ${unit.name} is in use.`, { episodeId: used.id });
-	}
-}
-
-async function replace(
-	tx: Tx,
-	episode: EpisodeRow,
-	unit: Unit,
-	bed: string | null,
-	now: number
-): Promise<void> {
-	await tx
-		.update(placements)
-		.set({ untilAt: now })
-		.where(and(eq(placements.episodeId, episode.id), isNull(placements.untilAt)));
-	await tx
-		.insert(placements)
-		.values({ id: newId(), episodeId: episode.id, unitId: unit.id, bed, fromAt: now });
-	await tx
-		.update(episodes)
-		.set({ unitId: unit.id, bed, phase: unit.kind === 'gym' ? 'outpatient' : 'inpatient' })
-		.where(eq(episodes.id, episode.id));
 }

@@ -111,7 +111,7 @@ async function addFacts(
 }
 
 /** Tell the first step now and set the timer of the next. */
-async function startChain(tx: Tx, row: EscalationRow, now: number) {
+export async function startChain(tx: Tx, row: EscalationRow, now: number) {
 	const { messages, lastStep } = await tellFrom(tx, row, 0, now);
 	const nextStep = lastStep + 1;
 	const nextStepAt = row.chainStartedAt + chainStep(row.grade, nextStep).afterSeconds * 1000;

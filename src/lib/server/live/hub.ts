@@ -3,7 +3,7 @@ import type { LiveEvent } from '$lib/domain/live/events';
 /** A live event after commit, with its place in the log and the unit that may hear it. */
 export interface LoggedEvent extends LiveEvent {
 	cursor: number;
-	/** The unit where the episode is; null for events without an episode. */
+	/** The unit whose people may hear it: where the episode was then; null for events without an episode. */
 	unitId: string | null;
 }
 

@@ -11,6 +11,7 @@ export const LIVE_HISTORY_MS = 24 * 60 * 60 * 1000;
 export async function appendLive(tx: Tx, at: number, events: LiveEvent[]): Promise<LoggedEvent[]> {
 	const logged: LoggedEvent[] = [];
 	for (const event of events) {
+		const unitId = event.unitId ?? (await unitOf(tx, event.episodeId));
 		const [row] = await tx
 			.insert(liveEvents)
 			.values({
@@ -19,11 +20,12 @@ export async function appendLive(tx: Tx, at: number, events: LiveEvent[]): Promi
 				kind: event.kind,
 				subjectId: event.id,
 				episodeId: event.episodeId,
+				unitId,
 				userId: event.userId ?? null
 			})
 			.returning({ id: liveEvents.id });
 		if (row) {
-			logged.push({ ...event, cursor: row.id, unitId: await unitOf(tx, event.episodeId) });
+			logged.push({ ...event, cursor: row.id, unitId });
 		}
 	}
 	return logged;
@@ -67,7 +69,7 @@ export async function canResume(db: Reader, cursor: number): Promise<boolean> {
 	return row !== undefined;
 }
 
-/** Events after `cursor`, oldest first, with the unit where each episode is now. */
+/** Events after `cursor`, oldest first, each with the unit that it concerned when it happened. */
 export async function eventsAfter(db: Reader, cursor: number, limit = 500): Promise<LoggedEvent[]> {
 	const rows = await db
 		.select({
@@ -77,10 +79,9 @@ export async function eventsAfter(db: Reader, cursor: number, limit = 500): Prom
 			id: liveEvents.subjectId,
 			episodeId: liveEvents.episodeId,
 			userId: liveEvents.userId,
-			unitId: episodes.unitId
+			unitId: liveEvents.unitId
 		})
 		.from(liveEvents)
-		.leftJoin(episodes, eq(episodes.id, liveEvents.episodeId))
 		.where(gt(liveEvents.id, cursor))
 		.orderBy(asc(liveEvents.id))
 		.limit(limit);

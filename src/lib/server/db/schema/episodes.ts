@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
-import { APPROACHES, RHYTHMS, SEXES } from '../../../domain/core/codes';
+import { APPROACHES, CLOSE_REASONS, RHYTHMS, SEXES } from '../../../domain/core/codes';
+import { PATIENT_FIELDS } from '../../../domain/episodes/identity';
 import { units, users } from './accounts';
 import { id, instant, yesNo } from './columns';
 
@@ -21,6 +22,25 @@ export const patients = sqliteTable(
 		createdAt: instant('created_at').notNull()
 	},
 	(t) => [index('patients_phone').on(t.phone)]
+);
+
+/** What a record of a patient said before it was amended, and by whom; append-only by trigger. */
+export const patientAmendments = sqliteTable(
+	'patient_amendments',
+	{
+		id: id(),
+		patientId: text('patient_id')
+			.notNull()
+			.references(() => patients.id),
+		at: instant('at').notNull(),
+		byId: text('by_id')
+			.notNull()
+			.references(() => users.id),
+		field: text('field', { enum: PATIENT_FIELDS }).notNull(),
+		before: text('before'),
+		after: text('after')
+	},
+	(t) => [index('patient_amendments_patient').on(t.patientId, t.at)]
 );
 
 /** One stay for one operation; a return to theatre is another row of `operations` of the same episode. */
@@ -45,7 +65,8 @@ export const episodes = sqliteTable(
 		rhythm: text('rhythm', { enum: RHYTHMS }),
 		surgeonId: text('surgeon_id').references(() => users.id),
 		createdAt: instant('created_at').notNull(),
-		closedAt: instant('closed_at')
+		closedAt: instant('closed_at'),
+		closedFor: text('closed_for', { enum: CLOSE_REASONS })
 	},
 	(t) => [
 		index('episodes_unit').on(t.unitId, t.closedAt),

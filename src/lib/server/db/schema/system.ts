@@ -14,6 +14,8 @@ export const liveEvents = sqliteTable(
 		kind: text('kind').notNull(),
 		subjectId: text('subject_id').notNull(),
 		episodeId: text('episode_id'),
+		/** The unit that it concerns: where the episode was when it happened, or a unit that it left. */
+		unitId: text('unit_id'),
 		/** Set for what concerns one person alone. */
 		userId: text('user_id')
 	},

@@ -3,6 +3,7 @@ import type { BookVisits } from '$lib/domain/visits/forms';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { MINUTE, type Instant } from '$lib/domain/core/time';
+import type { MoveInput } from '$lib/domain/episodes/forms';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { planReminders } from '$lib/domain/visits/reminders';
 import { planSeries } from '$lib/domain/visits/series';
@@ -10,7 +11,7 @@ import { recordSession } from '../../bedside/actions';
 import { askClearance, giveClearance, holdClearance, withholdClearance } from '../../clearances/actions';
 import type { PersonContext } from '../../context';
 import { admitPatient } from '../../episodes/actions';
-import { movePatient, type NewPlace } from '../../episodes/move';
+import { movePatient } from '../../episodes/move';
 import { arriveAtEscalation, settleEscalation } from '../../escalations/hold';
 import { raiseEscalation } from '../../escalations/raise';
 import { takeEscalation } from '../../escalations/take';
@@ -80,7 +81,7 @@ export class Telling {
 		});
 	}
 
-	move(at: Instant, who: PersonKey, place: NewPlace): void {
+	move(at: Instant, who: PersonKey, place: MoveInput): void {
 		this.#do(at, who, (as) => movePatient(as, this.#episode.id, place));
 	}
 

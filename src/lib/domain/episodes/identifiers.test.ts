@@ -1,0 +1,36 @@
+import { describe, expect, it } from 'vitest';
+import { isSameName, normaliseBed, normaliseMrn, normaliseName } from './identifiers';
+
+describe('hospital numbers and beds', () => {
+	it.each([
+		['T9', 'T9'],
+		['t9 ', 'T9'],
+		[' t 9', 'T9'],
+		['t\u00a09', 'T9'],
+		['t\u200b9', 'T9'],
+		['Ｔ９', 'T9'],
+		['s-1042', 'S-1042'],
+		['  ', '']
+	])('%j is %j', (typed, stored) => {
+		expect([normaliseBed(typed), normaliseMrn(typed)]).toEqual([stored, stored]);
+	});
+
+	it('keeps what tells one from another', () => {
+		expect(new Set(['T1', 'T10', 'T-1', 'T01', 'I1'].map(normaliseBed)).size).toBe(5);
+	});
+});
+
+describe('names', () => {
+	it('are stored without doubled spaces', () => {
+		expect(normaliseName('  Ide \t Quillfeather ')).toBe('Ide Quillfeather');
+	});
+
+	it.each([
+		['Ide Quillfeather', 'ide  quillfeather ', true],
+		['Zo\u00eb Marsh', 'Zoe\u0308 Marsh', true],
+		['Ide Quillfeather', 'Ide Quillfeathers', false],
+		['Ide Quillfeather', 'Quillfeather Ide', false]
+	])('%j and %j: one name is %s', (a, b, same) => {
+		expect(isSameName(a, b)).toBe(same);
+	});
+});

@@ -1,0 +1,54 @@
+/**
+ * Is the patient who is admitted the one on record under that hospital number? Nothing is picked silently: what
+ * tells two people apart must agree, and what may change with time is brought up to date.
+ */
+import type { Sex } from '../core/codes';
+import type { FieldError } from '../core/errors';
+import { isSameName, normaliseName } from './identifiers';
+
+/** The parts of a patient's record that an admission can amend. */
+export const PATIENT_FIELDS = ['name', 'sex', 'phone', 'language', 'smsConsent'] as const;
+export type PatientField = (typeof PATIENT_FIELDS)[number];
+
+/** A patient as far as an admission states them. */
+export interface Identity {
+	name: string;
+	birthDate: string;
+	sex: Sex;
+}
+
+/** Where an admission and the record contradict each other. */
+export interface Conflicts {
+	/** One for each field, with a pointer into the body of the JSON API. Empty when it is the same person. */
+	errors: FieldError[];
+	/** True when a person may confirm it: a name can change, a birth date cannot. */
+	confirmable: boolean;
+}
+
+/**
+ * What contradicts the record. A sex that is not known on one side contradicts nothing.
+ * @param mrn the hospital number, for the message
+ */
+export function conflictsWith(mrn: string, known: Identity, given: Identity): Conflicts {
+	const errors: FieldError[] = [];
+	if (!isSameName(known.name, given.name)) {
+		errors.push({
+			pointer: '/patient/name',
+			message: `The patient's name differs: hospital number ${mrn} belongs to ${known.name}, not ${normaliseName(given.name)}.`
+		});
+	}
+	const confirmable = errors.length > 0;
+	if (known.birthDate !== given.birthDate) {
+		errors.push({
+			pointer: '/patient/birthDate',
+			message: `The birth date differs: hospital number ${mrn} is on record with ${known.birthDate}, not ${given.birthDate}.`
+		});
+	}
+	if (known.sex !== given.sex && known.sex !== 'unknown' && given.sex !== 'unknown') {
+		errors.push({
+			pointer: '/patient/sex',
+			message: `The sex differs: hospital number ${mrn} is on record as ${known.sex}, not ${given.sex}.`
+		});
+	}
+	return { errors, confirmable: confirmable && errors.length === 1 };
+}

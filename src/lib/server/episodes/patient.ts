@@ -1,0 +1,169 @@
+import { and, eq, isNull } from 'drizzle-orm';
+import type { AuditEvent } from '$lib/domain/audit/actions';
+import { Problem, invalidField } from '$lib/domain/core/errors';
+import { Refusals } from '$lib/domain/core/refusals';
+import { localDateOf } from '$lib/domain/core/time';
+import type { AdmitInput } from '$lib/domain/episodes/forms';
+import { isSameName, normaliseMrn, normaliseName } from '$lib/domain/episodes/identifiers';
+import { conflictsWith, PATIENT_FIELDS, type PatientField } from '$lib/domain/episodes/identity';
+import { normalisePhone, PhoneError } from '$lib/domain/messages/phone';
+import type { PersonContext } from '../context';
+import type { Tx } from '../db';
+import { episodes, patientAmendments, patients, units } from '../db/schema';
+import { env } from '../env';
+import { newId } from '../ids';
+
+type PatientRow = typeof patients.$inferSelect;
+type Given = AdmitInput['patient'];
+
+/** Who is meant by an admission: the record that is known, if there is one, and what was given. */
+export interface Identified {
+	mrn: string;
+	known: PatientRow | null;
+	given: Given;
+	/** E.164; null where none was given. */
+	phone: string | null;
+}
+
+/**
+ * Find the patient with that hospital number, without changing anything.
+ * @param confirmName whether a person says that the name which differs is the name now
+ * @throws Problem `invalid` naming each field that contradicts the record, with `confirm: 'confirmName'` when it is
+ * the name alone, or a telephone number that is none; `already-admitted` when the patient has an open stay
+ */
+export async function identifyPatient(
+	tx: Tx,
+	context: PersonContext,
+	given: Given,
+	confirmName: boolean
+): Promise<Identified> {
+	const mrn = normaliseMrn(given.mrn);
+	const [known = null] = await tx.select().from(patients).where(eq(patients.mrn, mrn));
+	const refusals = new Refusals();
+	const phone = await refusals.of(() => phoneOf(given.phone));
+	await refusals.of(() =>
+		known ? refuseConflicts(known, given, confirmName) : refuseBirthDate(given.birthDate, context.now)
+	);
+	refusals.throwIfAny();
+	if (known) {
+		await refuseOpenStay(tx, context, known);
+	}
+	return { mrn, known, given, phone };
+}
+
+/** Bring the record up to date, or begin it. */
+export async function settlePatient(
+	tx: Tx,
+	context: PersonContext,
+	who: Identified
+): Promise<{ patientId: string; audit: AuditEvent[] }> {
+	const { known } = who;
+	return known
+		? { patientId: known.id, audit: await amend(tx, context, known, who) }
+		: { patientId: await insertPatient(tx, context, who), audit: [] };
+}
+
+function refuseConflicts(known: PatientRow, given: Given, confirmName: boolean): void {
+	const { errors, confirmable } = conflictsWith(known.mrn, known, given);
+	if (errors.length === 0 || (confirmable && confirmName)) {
+		return;
+	}
+	const detail = errors.map(({ message }) => message).join(' ');
+	throw new Problem('invalid', detail, { errors, ...(confirmable ? { confirm: 'confirmName' } : {}) });
+}
+
+/** Nobody lies in two beds: say where the patient is, so that the other stay is moved or closed. */
+async function refuseOpenStay(tx: Tx, { actor }: PersonContext, { id, name }: PatientRow): Promise<void> {
+	const [open] = await tx
+		.select({ episodeId: episodes.id, unitId: units.id, unit: units.name, bed: episodes.bed })
+		.from(episodes)
+		.innerJoin(units, eq(units.id, episodes.unitId))
+		.where(and(eq(episodes.patientId, id), isNull(episodes.closedAt)));
+	if (!open) {
+		return;
+	}
+	const { episodeId, unitId, unit, bed } = open;
+	const where = bed === null ? unit : `${unit}, bed ${bed}`;
+	throw new Problem('already-admitted', `${name} is here already: ${where}. Move or close that stay.`, {
+		unit,
+		bed,
+		// The way into the record is for those whose unit it is.
+		...(actor.unitIds.includes(unitId) ? { episodeId } : {})
+	});
+}
+
+function refuseBirthDate(birthDate: string, now: number): void {
+	if (birthDate > localDateOf(now, env().hospital.zone) || birthDate < '1900-01-01') {
+		throw invalidField('/patient/birthDate', `The birth date ${birthDate} is not between 1900 and today.`);
+	}
+}
+
+async function insertPatient(tx: Tx, context: PersonContext, who: Identified): Promise<string> {
+	const { mrn, given, phone } = who;
+	const id = newId();
+	await tx.insert(patients).values({
+		id,
+		name: normaliseName(given.name),
+		mrn,
+		birthDate: given.birthDate,
+		sex: given.sex,
+		phone,
+		language: given.language ?? 'en',
+		zone: env().hospital.zone,
+		smsConsent: given.smsConsent ?? false,
+		createdAt: context.now
+	});
+	return id;
+}
+
+/** Store what was given anew and keep what stood there before. What was left out stays as it is. */
+async function amend(
+	tx: Tx,
+	context: PersonContext,
+	known: PatientRow,
+	{ given, phone }: Identified
+): Promise<AuditEvent[]> {
+	const after: Partial<Pick<PatientRow, PatientField>> = {
+		name: isSameName(known.name, given.name) ? known.name : normaliseName(given.name),
+		sex: given.sex === 'unknown' ? known.sex : given.sex,
+		phone: phone ?? known.phone,
+		language: given.language ?? known.language,
+		smsConsent: given.smsConsent ?? known.smsConsent
+	};
+	const changed = PATIENT_FIELDS.filter((field) => after[field] !== known[field]);
+	if (changed.length === 0) {
+		return [];
+	}
+	await tx.update(patients).set(after).where(eq(patients.id, known.id));
+	await tx.insert(patientAmendments).values(
+		changed.map((field) => ({
+			id: newId(),
+			patientId: known.id,
+			at: context.now,
+			byId: context.actor.id,
+			field,
+			before: textOf(known[field]),
+			after: textOf(after[field])
+		}))
+	);
+	const detail = Object.fromEntries(changed.map((field) => [field, true]));
+	return [{ action: 'patient.amended', objectKind: 'patient', objectId: known.id, detail }];
+}
+
+function textOf(value: string | boolean | null | undefined): string | null {
+	return value === null || value === undefined ? null : String(value);
+}
+
+function phoneOf(typed: string | undefined): string | null {
+	if (!typed) {
+		return null;
+	}
+	try {
+		return normalisePhone(typed);
+	} catch (error) {
+		if (error instanceof PhoneError) {
+			throw invalidField('/patient/phone', error.message);
+		}
+		throw error;
+	}
+}

@@ -1,0 +1,78 @@
+import { and, eq, isNull, ne } from 'drizzle-orm';
+import { Problem, invalidField } from '$lib/domain/core/errors';
+import { normaliseBed } from '$lib/domain/episodes/identifiers';
+import type { Tx } from '../db';
+import { episodes, placements, type units } from '../db/schema';
+import { newId } from '../ids';
+
+export type UnitRow = typeof units.$inferSelect;
+
+/** Where a patient is from a moment on: in a bed, or without one in a gym. */
+export interface Place {
+	unit: UnitRow;
+	/** In the form in which it is stored; null in a gym. */
+	bed: string | null;
+}
+
+/**
+ * The place that is meant by a unit and what was typed as its bed.
+ * @param episodeId whose place it is to be: their own bed is not in use by somebody else; null for a new stay
+ * @throws Problem `invalid` for a ward without a bed or a gym with one, `bed-in-use`
+ */
+export async function placeIn(
+	tx: Tx,
+	unit: UnitRow,
+	typed: string | null | undefined,
+	episodeId: string | null
+): Promise<Place> {
+	const bed = normaliseBed(typed ?? '');
+	if (unit.kind === 'gym') {
+		if (bed !== '') {
+			throw invalidField('/bed', `${unit.name} has no beds: leave the bed empty.`);
+		}
+		return { unit, bed: null };
+	}
+	if (bed === '') {
+		throw invalidField('/bed', `The bed is empty: ${unit.name} has beds.`);
+	}
+	await refuseUsedBed(tx, unit, bed, episodeId);
+	return { unit, bed };
+}
+
+async function refuseUsedBed(tx: Tx, unit: UnitRow, bed: string, episodeId: string | null): Promise<void> {
+	const [used] = await tx
+		.select({ id: episodes.id })
+		.from(episodes)
+		.where(
+			and(
+				eq(episodes.unitId, unit.id),
+				eq(episodes.bed, bed),
+				isNull(episodes.closedAt),
+				episodeId === null ? undefined : ne(episodes.id, episodeId)
+			)
+		);
+	if (used) {
+		throw new Problem('bed-in-use', `Bed ${bed} of ${unit.name} is in use.`, { episodeId: used.id });
+	}
+}
+
+/** Put on record from when the patient is where; the placement before ends then. */
+export async function recordPlacement(tx: Tx, episodeId: string, place: Place, now: number): Promise<void> {
+	await endPlacement(tx, episodeId, now);
+	await tx
+		.insert(placements)
+		.values({ id: newId(), episodeId, unitId: place.unit.id, bed: place.bed, fromAt: now });
+}
+
+/** The patient is there no longer. */
+export async function endPlacement(tx: Tx, episodeId: string, now: number): Promise<void> {
+	await tx
+		.update(placements)
+		.set({ untilAt: now })
+		.where(and(eq(placements.episodeId, episodeId), isNull(placements.untilAt)));
+}
+
+/** A gym is where outpatients come to; everybody with a bed is in hospital. */
+export function phaseIn(unit: UnitRow): 'inpatient' | 'outpatient' {
+	return unit.kind === 'gym' ? 'outpatient' : 'inpatient';
+}
