@@ -87,17 +87,24 @@ describe('the database client', () => {
 });
 
 describe('append-only tables', () => {
-	it.each(['audit', 'entries', 'clearance_moves', 'escalation_moves', 'findings', 'readings'])(
-		'%s refuses update and delete',
-		async (table) => {
-			const triggers = await db().all<{ name: string }>(
-				sql`select name from sqlite_master where type = 'trigger' and tbl_name = ${table}`
-			);
-			expect(triggers.map((t) => t.name)).toEqual(
-				expect.arrayContaining([`${table}_no_update`, `${table}_no_delete`])
-			);
-		}
-	);
+	it.each([
+		'audit',
+		'entries',
+		'clearance_moves',
+		'escalation_moves',
+		'findings',
+		'readings',
+		'unit_limit_changes',
+		'unit_activity_changes',
+		'level_decisions'
+	])('%s refuses update and delete', async (table) => {
+		const triggers = await db().all<{ name: string }>(
+			sql`select name from sqlite_master where type = 'trigger' and tbl_name = ${table}`
+		);
+		expect(triggers.map((t) => t.name)).toEqual(
+			expect.arrayContaining([`${table}_no_update`, `${table}_no_delete`])
+		);
+	});
 });
 
 describe('migrations', () => {

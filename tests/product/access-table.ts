@@ -42,6 +42,12 @@ export const API: Record<string, Row> = {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
 		answers: [422]
 	},
+	'GET /api/units/[id]/limits': { roles: 'signed-in', answers: [404] },
+	'POST /api/units/[id]/limits': { roles: ['admin'], answers: [422] },
+	'POST /api/units/[id]/limit-set': { roles: ['admin'], answers: [422] },
+	'GET /api/episodes/[id]/limits': { roles: CLINICAL, answers: [404] },
+	'POST /api/episodes/[id]/limits': { roles: ['physician', 'surgeon'], answers: [422] },
+	'POST /api/limits/[id]/end': { roles: ['physician', 'surgeon'], answers: [404] },
 	'GET /api/episodes/[id]/sessions': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/sessions': {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],

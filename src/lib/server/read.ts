@@ -7,6 +7,7 @@ import { getNameboard } from './episodes/nameboard';
 import { listEpisodes } from './episodes/list';
 import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
+import { patientLimitsOf, unitLimitsOf } from './limits/queries';
 import { looseEndsOf } from './loose-ends/queries';
 import { getThread } from './threads/queries';
 
@@ -22,6 +23,9 @@ export const read = {
 	thread: ({ actor }: PersonContext, id: string, request: PageRequest) => getThread(db(), actor, id, request),
 	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
+	unitLimits: (unitId: string) => unitLimitsOf(db(), unitId),
+	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>
+		patientLimitsOf(db(), actor, episodeId, now),
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id)
 };

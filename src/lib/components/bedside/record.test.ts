@@ -20,7 +20,7 @@ const LINE: ClearanceLine = {
 
 const BOARD: Pick<
 	Nameboard,
-	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances'
+	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances' | 'limits'
 > = {
 	level: 4,
 	phase: 'inpatient',
@@ -28,12 +28,26 @@ const BOARD: Pick<
 	rhythm: 'sinus',
 	operatedAt: '2026-02-27T08:00:00Z',
 	precautions: { sternal: true, endDue: '2026-04-24', maxElevationDeg: 90 },
-	clearances: [LINE]
+	clearances: [LINE],
+	limits: { unit: [], patient: [] }
 };
 
 const TODAY = '2026-03-03';
 
 describe('recordOf', () => {
+	it('judges by the set and the limits of the unit, and by those of the patient over them', () => {
+		const agreed = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-02-02' };
+		const unit = [
+			{ version: 1, set: 'guideline', key: null, value: null, ...agreed },
+			{ version: 2, set: 'guideline', key: 'systolic-fall', value: 15, ...agreed }
+		] as const;
+		const own = { version: 1, key: 'pain-ceiling', value: 5, setBy: 'Orla', untilOn: TODAY } as const;
+		const { limits } = recordOf({ ...BOARD, limits: { unit, patient: [own] } }, TODAY);
+		expect(limits.version).toBe('guideline/1+unit 2+patient 1');
+		expect(limits.limits['systolic-fall']?.value).toBe(15);
+		expect(limits.limits['pain-ceiling']?.value).toBe(5);
+	});
+
 	it('hands on the limit of a clearance in force', () => {
 		expect(recordOf(BOARD, TODAY).clearances).toEqual([
 			{ kind: 'arm-stage', state: 'given-with-limits', maxElevationDeg: 90, maxLoadKg: null }

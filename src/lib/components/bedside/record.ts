@@ -1,4 +1,5 @@
-import type { ClearanceInForce, Phase } from '$lib/domain/bedside';
+import type { ClearanceInForce, LimitSet, Phase } from '$lib/domain/bedside';
+import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
 import { isInForce } from '$lib/domain/clearances/states';
 import { CLEARANCE_KINDS, LEVELS, type ClearanceKind, type Level, type Rhythm } from '$lib/domain/core/codes';
 import type { LocalDate } from '$lib/domain/core/time';
@@ -12,11 +13,13 @@ export interface BedsideRecord {
 	rhythm: Rhythm | null;
 	sternotomy: boolean;
 	clearances: ClearanceInForce[];
+	/** The limits of unit and patient that judge, as they are when the record is read. */
+	limits: LimitSet;
 }
 
 type Known = Pick<
 	Nameboard,
-	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances'
+	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances' | 'limits'
 >;
 
 /**
@@ -30,6 +33,7 @@ export function recordOf(board: Known, today: LocalDate): BedsideRecord {
 		phase: board.phase,
 		betaBlocked: board.betaBlocked,
 		rhythm: board.rhythm,
+		limits: limitsOfPatient(setOfUnit(board.limits.unit, board.phase), board.limits),
 		sternotomy: board.operatedAt === null || board.precautions.sternal,
 		clearances: CLEARANCE_KINDS.flatMap((kind) => {
 			const newest = newestOf(board.clearances, kind);

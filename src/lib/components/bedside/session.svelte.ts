@@ -28,7 +28,7 @@ export class BedsideSession {
 	}
 
 	readonly assessment = $derived.by(() => toAssessment(this.draft, this.#record()));
-	readonly verdict = $derived.by(() => assess(this.assessment));
+	readonly verdict = $derived.by(() => assess(this.assessment, this.#record().limits));
 	readonly obstacles = $derived.by(() => obstaclesOf(this.draft));
 	readonly lacking = $derived.by(() => lackingOf(this.draft, this.#record()));
 	readonly #placed = $derived.by(() =>

@@ -1,3 +1,4 @@
+import { limitsFor } from '$lib/domain/bedside/limits/limits';
 import type { ReadingField } from './fields';
 import { newDraft, newReading, type DraftReading, type SessionDraft } from './draft';
 import type { BedsideRecord } from './record';
@@ -9,7 +10,8 @@ export const RECORD: BedsideRecord = {
 	betaBlocked: true,
 	rhythm: 'sinus',
 	sternotomy: true,
-	clearances: []
+	clearances: [],
+	limits: limitsFor('strict')
 };
 
 /** A reading with these texts. */

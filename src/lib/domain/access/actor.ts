@@ -9,6 +9,8 @@ export interface Person {
 	name: string;
 	role: Role;
 	unitIds: readonly string[];
+	/** Goes beyond the cautious figure, and signs for juniors who did. */
+	senior?: boolean;
 }
 
 /** The patient, known by the telephone number that answered. */

@@ -1,4 +1,5 @@
 import { CLINICAL_ROLES, type ClearanceKind, type Role, type Service } from '../core/codes';
+import { isSenior } from '../bedside/sign-off';
 import type { Person } from './actor';
 
 /**
@@ -21,6 +22,10 @@ export const PERMISSIONS = [
 	'clearance.withdraw',
 	'session.read',
 	'session.record',
+	'limit.set-for-patient',
+	'limit.change',
+	'level.decide',
+	'sign-off.decide',
 	'escalation.read',
 	'escalation.raise',
 	'escalation.take',
@@ -45,6 +50,9 @@ export interface Subject {
 export function can(person: Person, permission: Permission, subject: Subject = {}): boolean {
 	if (subject.unitId !== undefined && !person.unitIds.includes(subject.unitId)) {
 		return false;
+	}
+	if (permission === 'sign-off.decide') {
+		return isSenior(person) && roleMay(person.role, permission, subject);
 	}
 	return roleMay(person.role, permission, subject);
 }
@@ -86,6 +94,14 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 				: decides(role, subject.clearanceKind);
 		case 'session.record':
 			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
+		case 'limit.set-for-patient':
+			return among(role, 'physician', 'surgeon');
+		case 'limit.change':
+			return role === 'admin';
+		case 'level.decide':
+			return among(role, 'therapist', 'physician');
+		case 'sign-off.decide':
+			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician', 'surgeon');
 		case 'escalation.take':
 			return among(role, 'nurse', 'physician', 'surgeon');
 		case 'visit.plan':

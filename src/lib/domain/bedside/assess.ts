@@ -19,12 +19,15 @@ import { hasValues, placeReadings } from './timeline';
  */
 export function assess(input: Assessment, limits?: LimitSet): Verdict {
 	const facts = gather(input, limitsOfPatient(input.context, limits ?? limitsFor(setFor(input.context))));
-	const findings = RULES.flatMap((rule) => rule.judge(facts)).sort(byGravity);
+	const { set } = facts.limits;
+	const findings = RULES.flatMap((rule) => rule.judge(facts))
+		.map((found): Finding => ({ ...found, set }))
+		.sort(byGravity);
 	return {
 		findings,
 		outcome: outcomeOf(findings),
 		notJudged: RULES.filter((rule) => rule.lacks(facts)).map(({ id }) => id),
-		set: facts.limits.set,
+		set,
 		version: facts.limits.version
 	};
 }

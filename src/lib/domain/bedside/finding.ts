@@ -15,7 +15,14 @@ export interface Finding {
 	readonly reason: string;
 	/** The published source, or 'common practice, no published source'. */
 	readonly source: string;
+	/** The set of limits that judged. */
+	readonly set: SetName;
+	/** The version of this very limit: of the defaults, or whose change it was and which. */
+	readonly version: string;
 }
+
+/** A finding as a rule makes it; which set judged is the same for all of them. */
+export type RuleFinding = Omit<Finding, 'set'>;
 
 /** The answer of the response rules to one session. */
 export interface Verdict {

@@ -18,9 +18,13 @@ export interface SessionLine {
 	before: Reading;
 	during: Reading[];
 	after: Reading;
-	findings: Pick<
+	findings: (Pick<
 		Finding,
 		'rule' | 'grade' | 'reading' | 'measured' | 'limit' | 'unit' | 'reason' | 'source'
-	>[];
+	> & {
+		/** Null for findings of before these were kept. */
+		set: Finding['set'] | null;
+		version: Finding['version'] | null;
+	})[];
 	deviation: { reason: string } | null;
 }

@@ -9,6 +9,7 @@ import type {
 	VisitState
 } from '../core/codes';
 import type { ClearanceLimits } from '../clearances/forms';
+import type { LocalLayers } from '../bedside/limits/layers';
 import type { MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
 
@@ -85,11 +86,16 @@ export interface Nameboard {
 	operatedAt: string | null;
 	postOpDay: number | null;
 	surgeon: { id: string; name: string } | null;
+	/** Today's level, which can fall. */
 	level: number;
+	/** The highest level ever reached. */
+	levelReached: number;
 	betaBlocked: boolean | null;
 	rhythm: Rhythm | null;
 	mayDoNow: MayDoNow;
 	precautions: Precautions;
+	/** What lies over the default limits for this patient; empty for who may not see sessions. */
+	limits: LocalLayers;
 	referrals: {
 		id: string;
 		service: Service;

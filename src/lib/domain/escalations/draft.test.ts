@@ -109,7 +109,9 @@ describe('draftEscalation', () => {
 			limit: null,
 			unit: null,
 			reason: 'A reason.',
-			source: 'A source.'
+			source: 'A source.',
+			set: 'strict' as const,
+			version: '1'
 		}));
 		expect(draftEscalation(RECORD, { ...CLEAR, outcome, findings }, ZONE).grade).toBe(grade);
 	});

@@ -13,7 +13,13 @@ export interface UnitOfPerson {
 /** The person of an account with the units they belong to now; null when missing or disabled. */
 export async function loadPerson(reader: Reader, userId: string): Promise<Person | null> {
 	const rows = await reader
-		.select({ id: users.id, name: users.name, role: users.role, unitId: userUnits.unitId })
+		.select({
+			id: users.id,
+			name: users.name,
+			role: users.role,
+			senior: users.senior,
+			unitId: userUnits.unitId
+		})
 		.from(users)
 		.leftJoin(userUnits, eq(userUnits.userId, users.id))
 		.where(and(eq(users.id, userId), isNull(users.disabledAt)));
@@ -22,7 +28,8 @@ export async function loadPerson(reader: Reader, userId: string): Promise<Person
 		return null;
 	}
 	const unitIds = rows.flatMap((row) => (row.unitId ? [row.unitId] : []));
-	return { kind: 'person', id: first.id, name: first.name, role: first.role, unitIds };
+	const { id, name, role, senior } = first;
+	return { kind: 'person', id, name, role, unitIds, senior };
 }
 
 /** The units of a person by name, for pages and for `GET /api/me`. */

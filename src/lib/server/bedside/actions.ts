@@ -3,6 +3,8 @@ import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import { assess } from '$lib/domain/bedside/assess';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Assessment, Reading, SessionBody } from '$lib/domain/bedside/forms';
+import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
+import type { LimitSet } from '$lib/domain/bedside/limits/limits';
 import { lackingClearance } from '$lib/domain/bedside/rules/clearances';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
@@ -15,6 +17,7 @@ import type { Tx } from '../db';
 import { bedsideSessions, episodes, escalations, findings, readings } from '../db/schema';
 import { factsOfOne, type EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
+import { layersOf } from '../limits/queries';
 import { write, type Change, type Written } from '../write';
 import { summaryText } from './summary';
 
@@ -35,12 +38,12 @@ export function recordSession(
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'session.record');
 		refuseFuture(input, context.now);
 		const facts = await factsOfOne(tx, episode, context.now);
-		const judged = withRecord(input, facts);
+		const judged = withRecord(input, episode, facts);
 		const missing = missingClearances(judged);
 		if (missing.length > 0 && !input.deviation) {
 			throw new Problem('clearance-needed', `Not cleared: ${missing.join(', ')}.`, { needed: missing });
 		}
-		const verdict = assess(judged);
+		const verdict = assess(judged, await limitsThatJudge(tx, episode, judged.context, input));
 		const id = newId();
 		await insertSession(tx, context, id, episode, facts, { ...input, context: judged.context }, verdict);
 		await updateEpisode(tx, context, episode, input, verdict);
@@ -50,7 +53,7 @@ export function recordSession(
 }
 
 /** Clearances and limits on record count, not those that the client believes in. */
-function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
+function withRecord(input: SessionBody, episode: EpisodeRow, facts: EpisodeFacts): Assessment {
 	const clearances = facts.newest.map((row) => ({
 		kind: row.kind,
 		state: row.state,
@@ -59,7 +62,19 @@ function withRecord(input: SessionBody, facts: EpisodeFacts): Assessment {
 	}));
 	const sternotomy = facts.operation ? facts.precautions.sternal : input.context.sternotomy;
 	const { limits: _believed, ...context } = input.context;
-	return { ...input, context: { ...context, sternotomy, clearances, level: input.level } };
+	const phase = context.phase ?? episode.phase;
+	return { ...input, context: { ...context, phase, sternotomy, clearances, level: input.level } };
+}
+
+/** The limits of unit and patient that held when the session ended, also where it is entered afterwards. */
+async function limitsThatJudge(
+	tx: Tx,
+	episode: EpisodeRow,
+	{ set, phase }: Assessment['context'],
+	{ endedAt }: SessionBody
+): Promise<LimitSet> {
+	const layers = await layersOf(tx, episode, parseRfc3339(endedAt));
+	return limitsOfPatient(set ?? setOfUnit(layers.unit, phase ?? episode.phase), layers);
 }
 
 function missingClearances(judged: Assessment): ClearanceKind[] {
@@ -140,6 +155,7 @@ async function updateEpisode(
 		.update(episodes)
 		.set({
 			level: reached,
+			levelReached: Math.max(episode.levelReached, reached),
 			rhythm: input.context.rhythm,
 			betaBlocked: input.context.betaBlocked ?? episode.betaBlocked
 		})

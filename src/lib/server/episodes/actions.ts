@@ -31,6 +31,7 @@ export function admitPatient(
 			bed: place.bed,
 			phase: phaseIn(unit),
 			level: input.level ?? 1,
+			levelReached: input.level ?? 1,
 			betaBlocked: input.betaBlocked ?? null,
 			rhythm: input.rhythm ?? null,
 			surgeonId,

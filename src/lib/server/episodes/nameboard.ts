@@ -1,12 +1,14 @@
 import { asc, desc, eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
+import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { Nameboard } from '$lib/domain/episodes/views';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { listClearances } from '../clearances/queries';
 import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
+import { layersOf } from '../limits/queries';
 import { visitsOfEpisode } from '../visits/queries';
 import { factsOfOne } from './facts';
 import { patientLine } from './list';
@@ -21,12 +23,13 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, visits, calls] = await Promise.all([
+	const [who, asks, cleared, visits, calls, layers] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
 		listClearances(db, episodeId, derived.operation?.id ?? null, now),
 		visitsOfEpisode(db, episodeId),
-		clinical ? escalationsOf(db, episodeId) : []
+		clinical ? escalationsOf(db, episodeId) : [],
+		clinical ? layersOf(db, episode, now) : NO_LAYERS
 	]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
@@ -51,6 +54,8 @@ export async function getNameboard(
 		rhythm: episode.rhythm,
 		mayDoNow: derived.mayDoNow,
 		precautions: derived.precautions,
+		levelReached: Math.max(episode.level, episode.levelReached),
+		limits: layers,
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),
 		clearances: cleared,

@@ -56,9 +56,16 @@ export function limitsFor(set: SetName, overrides: LocalLimits = {}): LimitSet {
 	return overrideLimits(resolved, overrides);
 }
 
-/** The same limits with some of them changed once more, for one patient. */
-export function overrideLimits(base: LimitSet, overrides: LocalLimits): LimitSet {
-	const changes = withFollowers(overrides);
+/**
+ * The same limits with some of them changed once more.
+ * @param layer what the version of the set is marked with: whose change it was, and which
+ */
+export function overrideLimits(base: LimitSet, overrides: LocalLimits, layer = 'local'): LimitSet {
+	return layLimits(base, withFollowers(overrides), layer);
+}
+
+/** The same, each limit by its own name alone: none follows another. */
+export function layLimits(base: LimitSet, changes: LocalLimits, layer: string): LimitSet {
 	const keys = LIMIT_KEYS.filter((key) => changes[key] !== undefined);
 	if (keys.length === 0) {
 		return base;
@@ -68,7 +75,7 @@ export function overrideLimits(base: LimitSet, overrides: LocalLimits): LimitSet
 		limits[key] = changed(base, key, changes[key]);
 	}
 	tighten(limits, keys);
-	const version = base.version.endsWith('+local') ? base.version : `${base.version}+local`;
+	const version = base.version.endsWith(`+${layer}`) ? base.version : `${base.version}+${layer}`;
 	return { ...base, version, limits };
 }
 

@@ -6,7 +6,7 @@
  * the diastolic plus a third of the pulse pressure. Exertion is judged in effort and after, not at rest.
  */
 import type { LimitKey, Moment, RuleId } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { exact, plain } from '../numbers';
 import { measured, type Placed } from '../timeline';
@@ -134,7 +134,7 @@ export const absoluteRules: readonly Rule[] = ABSOLUTE.map((rule) => ({
 }));
 
 /** The gravest crossing among readings of one moment: one finding at most, so that a long walk is one line. */
-function worst(rule: AbsoluteRule, facts: Facts, moment: Moment, readings: readonly Placed[]): Finding[] {
+function worst(rule: AbsoluteRule, facts: Facts, moment: Moment, readings: readonly Placed[]): RuleFinding[] {
 	const bars = moment === 'before' ? rule.before : rule.effort;
 	const values = readings.map(rule.value).filter((value) => value !== null);
 	if (bars === null || values.length === 0) {

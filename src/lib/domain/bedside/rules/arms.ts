@@ -3,7 +3,7 @@
  * or by somebody else: the wound does not know who lifts. Once it is cleared the limit of the clearance holds,
  * and 90 degrees where the clearance states none. Over the limit stops.
  */
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { plain } from '../numbers';
 import { granted } from './clearances';
@@ -39,7 +39,7 @@ export function armLimit(facts: Facts): Limit | null {
 		: general;
 }
 
-function judgeHeight(facts: Facts, { activity, done }: Done, limit: Limit): Finding[] {
+function judgeHeight(facts: Facts, { activity, done }: Done, limit: Limit): RuleFinding[] {
 	const height = done.elevationDeg;
 	if (height == null || !crosses(limit, height)) {
 		return [];

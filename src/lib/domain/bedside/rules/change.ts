@@ -6,7 +6,7 @@
  * heart rate says little, so that it cautions at most; `rhythm.ts` adds the note that says why.
  */
 import type { FindingGrade, LimitKey, RuleId } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { exact, plain } from '../numbers';
 import { measured, type Measure, type Placed } from '../timeline';
@@ -106,7 +106,7 @@ function cautionFrom(limit: Limit, share: number | null): number {
 }
 
 /** One finding at most for readings of one moment: of the gravest grade the greatest change. */
-function worst(rule: ChangeRule, facts: Facts, readings: readonly Placed[]): Finding[] {
+function worst(rule: ChangeRule, facts: Facts, readings: readonly Placed[]): RuleFinding[] {
 	const limit = limitOf(facts, rule.limit(facts));
 	if (limit === null) {
 		return [];
@@ -133,7 +133,7 @@ function toFinding(
 	limit: Limit,
 	change: Change,
 	grade: FindingGrade
-): Finding {
+): RuleFinding {
 	const { placed, base, from, to } = change;
 	const amount = amountOf(rule, change);
 	const course = `The ${rule.what} ${rule.direction === 'fall' ? 'fell' : 'rose'} by ${plain(amount)} ${limit.unit}`;

@@ -4,7 +4,7 @@
  * is when a fall would show. In an irregular rhythm, where the pulse says little, exertion is needed too. Each
  * of these findings makes the outcome `incomplete`, unless something stops.
  */
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { cite } from '../limits/sources';
 import { measured, type Placed } from '../timeline';
 import { sessionIsIrregular } from './rhythm';
@@ -23,9 +23,9 @@ export const readingMissing: Rule = {
 	lacks: () => false
 };
 
-function missingAt(facts: Facts, placed: Placed): Finding[] {
+function missingAt(facts: Facts, placed: Placed): RuleFinding[] {
 	const walked = facts.activities.some(({ activity }) => activity.walking);
-	const found: Finding[] = [];
+	const found: RuleFinding[] = [];
 	if (measured(placed, 'hr') === null) {
 		found.push(missing(placed, 'heart rate', 'note'));
 	}
@@ -35,13 +35,13 @@ function missingAt(facts: Facts, placed: Placed): Finding[] {
 	return found;
 }
 
-function exertionMissing(facts: Facts): Finding[] {
+function exertionMissing(facts: Facts): RuleFinding[] {
 	const { during, after } = facts;
 	const asked = [...during, after].some((placed) => measured(placed, 'rpe') !== null);
 	return asked || !sessionIsIrregular(facts) ? [] : [missing(after, 'exertion', 'note')];
 }
 
-function missing({ moment }: Placed, what: string, grade: 'note' | 'caution'): Finding {
+function missing({ moment }: Placed, what: string, grade: 'note' | 'caution'): RuleFinding {
 	const reason = `The ${what} ${MOMENT_WORDS[moment]} was not measured. What is missing is not normal.`;
 	return withoutLimit('reading-missing', grade, moment, null, reason, cite('common-practice'));
 }

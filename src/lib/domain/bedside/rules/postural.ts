@@ -5,7 +5,7 @@
  * one. Later readings in the new posture belong to the change rules, once the patient has settled.
  */
 import { POSTURES, type LimitKey } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { exact, plain } from '../numbers';
 import { measured, type Placed } from '../timeline';
@@ -56,7 +56,7 @@ function fallAfter({ readings }: Facts, stay: number, pressure: Pressure): Fall 
 	return change ? { placed: first, amount: exact(-change.rise), from: change.from, to: change.to } : null;
 }
 
-function judgeRise(facts: Facts, stay: number): Finding[] {
+function judgeRise(facts: Facts, stay: number): RuleFinding[] {
 	const systolic = fallAfter(facts, stay, 'sbp');
 	const diastolic = fallAfter(facts, stay, 'dbp');
 	const found =
@@ -72,7 +72,7 @@ function graded(
 	pressure: Pressure,
 	key: LimitKey,
 	alone: 'stop' | 'caution'
-): Finding | null {
+): RuleFinding | null {
 	const limit = limitOf(facts, key);
 	if (fall === null || limit === null || !crosses(limit, fall.amount)) {
 		return null;

@@ -1,10 +1,11 @@
 /** What a response rule is made of, and the facts that all of them look at. */
 import type { Activity } from '../activities/activity';
 import type { FindingGrade, LimitKey, Moment, RuleId, SymptomCode } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import type { ActivityDone, Context } from '../forms';
 import type { Limit, LimitSet } from '../limits/limits';
 import type { SourceId } from '../limits/sources';
+import { DEFAULTS_VERSION } from '../limits/table';
 import type { Placed } from '../timeline';
 
 /** Something that was really done, with its entry in the catalogue. */
@@ -41,7 +42,7 @@ export interface Rule {
 	readonly words: string;
 	/** The sources of a rule without a limit of its own; the limits of a rule name theirs themselves. */
 	readonly sources: readonly SourceId[];
-	judge(facts: Facts): Finding[];
+	judge(facts: Facts): RuleFinding[];
 	/** True when something the rule should have looked at is missing. */
 	lacks(facts: Facts): boolean;
 }
@@ -59,7 +60,7 @@ export function overLimit(
 	measured: number | string | null,
 	limit: Limit,
 	reason: string
-): Finding {
+): RuleFinding {
 	return {
 		rule,
 		grade,
@@ -68,7 +69,8 @@ export function overLimit(
 		limit: limit.value,
 		unit: limit.unit,
 		reason,
-		source: limit.source
+		source: limit.source,
+		version: limit.version
 	};
 }
 
@@ -80,8 +82,18 @@ export function withoutLimit(
 	measured: string | null,
 	reason: string,
 	source: string
-): Finding {
-	return { rule, grade, reading, measured, limit: null, unit: null, reason, source };
+): RuleFinding {
+	return {
+		rule,
+		grade,
+		reading,
+		measured,
+		limit: null,
+		unit: null,
+		reason,
+		source,
+		version: DEFAULTS_VERSION
+	};
 }
 
 /** How a sentence names a moment of the session. */

@@ -6,7 +6,7 @@
  * with effort; readings without it say nothing about rising work and cannot be judged.
  */
 import type { RuleId } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { exact, plain } from '../numbers';
 import type { Measure, Placed } from '../timeline';
 import { changeBetween, comparable, type Change } from './base';
@@ -44,7 +44,7 @@ export const stageRules: readonly Rule[] = STAGES.map((rule) => ({
 	lacks: (facts) => limitOf(facts, rule.id) !== null && steps(rule, facts).length === 0
 }));
 
-function judge(rule: StageRule, facts: Facts): Finding[] {
+function judge(rule: StageRule, facts: Facts): RuleFinding[] {
 	const limit = limitOf(facts, rule.id);
 	const [steepest] = steps(rule, facts).sort((a, b) => a.rise - b.rise);
 	if (limit === null || steepest === undefined) {

@@ -4,7 +4,7 @@
  * go on) and cautions below it or where nobody graded it.
  */
 import type { SymptomCode } from '../codes';
-import type { Finding } from '../finding';
+import type { RuleFinding } from '../finding';
 import { crosses } from '../limits/limits';
 import { cite, type SourceId } from '../limits/sources';
 import { plain } from '../numbers';
@@ -43,7 +43,7 @@ export const symptomRule: Rule = {
 	lacks: () => false
 };
 
-function judgeSymptom(facts: Facts, { code, grade }: GradedSymptom): Finding {
+function judgeSymptom(facts: Facts, { code, grade }: GradedSymptom): RuleFinding {
 	const entry = SYMPTOM_TABLE[code];
 	const limit = code === 'breathlessness' ? limitOf(facts, 'symptom.breathlessness') : null;
 	if (limit && grade !== null && crosses(limit, grade)) {

@@ -1,6 +1,6 @@
 import { index, integer, primaryKey, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { ROLES } from '../../../domain/core/codes';
-import { id, instant } from './columns';
+import { id, instant, yesNo } from './columns';
 
 export const units = sqliteTable('units', {
 	id: id(),
@@ -18,6 +18,8 @@ export const users = sqliteTable('users', {
 	/** argon2id, with its parameters; null until the invitation was used. */
 	passwordHash: text('password_hash'),
 	phone: text('phone'),
+	/** May go beyond the cautious figure, and signs for juniors who did. */
+	senior: yesNo('senior').notNull().default(false),
 	createdAt: instant('created_at').notNull(),
 	disabledAt: instant('disabled_at')
 });

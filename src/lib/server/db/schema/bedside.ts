@@ -1,4 +1,5 @@
 import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import { SETS } from '../../../domain/bedside/codes';
 import { RHYTHMS } from '../../../domain/core/codes';
 import { users } from './accounts';
 import { id, instant, json, yesNo } from './columns';
@@ -75,6 +76,9 @@ export const findings = sqliteTable(
 		measured: json<number | string | null>('measured'),
 		limit: json<number | string | null>('limit'),
 		unit: text('unit'),
+		/** The set and the version of that very limit; null for findings older than these columns. */
+		set: text('limit_set', { enum: SETS }),
+		version: text('limit_version'),
 		reason: text('reason').notNull(),
 		source: text('source').notNull()
 	},

@@ -59,7 +59,9 @@ export const episodes = sqliteTable(
 		phase: text('phase', { enum: ['inpatient', 'outpatient'] })
 			.notNull()
 			.default('inpatient'),
+		/** Today's level, which can fall; the highest one reached stays. */
 		level: integer('level').notNull().default(1),
+		levelReached: integer('level_reached').notNull().default(1),
 		/** Any rate-slowing drug; null where nobody has said. */
 		betaBlocked: yesNo('beta_blocked'),
 		rhythm: text('rhythm', { enum: RHYTHMS }),

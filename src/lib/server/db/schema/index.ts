@@ -3,6 +3,8 @@ export * from './bedside';
 export * from './clearances';
 export * from './episodes';
 export * from './escalations';
+export * from './levels';
+export * from './limits';
 export * from './messages';
 export * from './referrals';
 export * from './system';

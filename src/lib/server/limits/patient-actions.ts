@@ -1,0 +1,125 @@
+import { and, eq, isNull, max } from 'drizzle-orm';
+import { directionOf, limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
+import { limitFault } from '$lib/domain/bedside/limits/ranges';
+import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
+import { addDays, localDateOf } from '$lib/domain/core/time';
+import type { SetPatientLimit } from '$lib/domain/limits/forms';
+import { m } from '$lib/i18n/paraglide/messages';
+import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
+import type { PersonContext } from '../context';
+import type { Tx } from '../db';
+import { patientLimits } from '../db/schema';
+import { env } from '../env';
+import { newId } from '../ids';
+import { write, type Change, type Written } from '../write';
+import { layersOf } from './queries';
+import type { Numbered } from './unit-actions';
+
+/** Longer than this a limit is no exception any more: the unit's own should change. */
+export const PATIENT_LIMIT_MAX_DAYS = 90;
+
+/**
+ * Narrow or widen a limit for one patient, with a reason and a last day.
+ * @throws Problem `invalid` for a number out of range or one that holds already, or a day in the past or too far off
+ */
+export function setPatientLimit(
+	context: PersonContext,
+	episodeId: string,
+	input: SetPatientLimit
+): Promise<Written<Numbered>> {
+	return write(context, 'limit.set-for-patient', async (tx) => {
+		const episode = await accessEpisode(tx, context.actor, episodeId, 'limit.set-for-patient');
+		refuseClosed(episode);
+		checkDay(input.untilOn, context.now);
+		const was = await checkValue(tx, episode, input, context.now);
+		const { key, value, reason, untilOn } = input;
+		const [id, version] = [newId(), await nextVersion(tx, episodeId)];
+		await tx.insert(patientLimits).values({
+			...{ id, episodeId, version, key, value, reason, untilOn },
+			...{ setBy: context.actor.id, setAt: context.now }
+		});
+		const body = m.limits_entry_set({ key, value, was: was ?? m.limits_off(), until: untilOn, reason });
+		const detail = { key, value, was, untilOn, version };
+		return following(tx, episodeId, { id, version }, body, 'limit.set-for-patient', detail);
+	});
+}
+
+/** End a limit of a patient before its last day: what holds for the unit holds again. */
+export function endPatientLimit(context: PersonContext, id: string): Promise<Written<Numbered>> {
+	return write(context, 'limit.set-for-patient', async (tx) => {
+		const [limit] = await tx.select().from(patientLimits).where(eq(patientLimits.id, id));
+		if (!limit) {
+			throw notFound('limit');
+		}
+		await accessEpisode(tx, context.actor, limit.episodeId, 'limit.set-for-patient');
+		const [ended] = await tx
+			.update(patientLimits)
+			.set({ endedBy: context.actor.id, endedAt: context.now })
+			.where(and(eq(patientLimits.id, id), isNull(patientLimits.endedAt)))
+			.returning({ id: patientLimits.id });
+		if (!ended) {
+			throw new Problem('wrong-state', 'This limit has ended already.', { state: 'ended' });
+		}
+		const { key, value, version, episodeId } = limit;
+		const body = m.limits_entry_ended({ key, value });
+		return following(tx, episodeId, { id, version }, body, 'limit.ended-for-patient', { key, version });
+	});
+}
+
+/** The number that held before; null where the rule was off. */
+async function checkValue(
+	tx: Tx,
+	episode: EpisodeRow,
+	{ key, value }: SetPatientLimit,
+	now: number
+): Promise<number | null> {
+	const fault = limitFault(key, value);
+	if (fault !== null) {
+		throw invalidField('/value', fault);
+	}
+	const layers = await layersOf(tx, episode, now);
+	const holds = limitsOfPatient(setOfUnit(layers.unit, episode.phase), layers).limits[key];
+	if (holds && directionOf(holds, value) === null) {
+		throw invalidField('/value', `value is ${value}: that is what ${key} is already.`);
+	}
+	return holds?.value ?? null;
+}
+
+function checkDay(untilOn: string, now: number): void {
+	const today = localDateOf(now, env().hospital.zone);
+	const last = addDays(today, PATIENT_LIMIT_MAX_DAYS);
+	if (untilOn < today || untilOn > last) {
+		throw invalidField('/untilOn', `untilOn is ${untilOn}: it must lie between ${today} and ${last}.`);
+	}
+}
+
+function refuseClosed(episode: EpisodeRow): void {
+	if (episode.closedAt !== null) {
+		throw new Problem('wrong-state', 'The episode is closed.', { state: 'closed' });
+	}
+}
+
+async function nextVersion(tx: Tx, episodeId: string): Promise<number> {
+	const [last] = await tx
+		.select({ version: max(patientLimits.version) })
+		.from(patientLimits)
+		.where(eq(patientLimits.episodeId, episodeId));
+	return (last?.version ?? 0) + 1;
+}
+
+async function following(
+	tx: Tx,
+	episodeId: string,
+	result: Numbered,
+	body: string,
+	action: 'limit.set-for-patient' | 'limit.ended-for-patient',
+	detail: Record<string, string | number | null>
+): Promise<Change<Numbered>> {
+	const threadId = await threadForDeed(tx, episodeId, undefined);
+	return {
+		result,
+		audit: { action, objectKind: 'limit', objectId: result.id, episodeId, detail },
+		entries: threadId === null ? [] : [{ threadId, kind: 'event', body }],
+		events: [{ topic: 'episode', kind: 'limits-changed', id: episodeId, episodeId }]
+	};
+}
