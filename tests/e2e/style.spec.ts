@@ -1,0 +1,87 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, test } from '@playwright/test';
+import { startProduct, type Product } from '../support/server';
+import { DESK, PHONE } from './people';
+
+let product: Product;
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { PUBLIC_STYLE_PAGE: '1', RATE_LIMIT_SCALE: '100' } });
+});
+test.afterAll(() => product?.stop());
+test.beforeEach(({ page }) => page.goto(`${product.url}/style`));
+
+for (const [size, viewport] of Object.entries({ desk: DESK, phone: PHONE })) {
+	for (const colorScheme of ['light', 'dark'] as const) {
+		test(`every part on the page of parts is accessible: ${size}, ${colorScheme}`, async ({ page }) => {
+			await page.setViewportSize(viewport);
+			await page.emulateMedia({ colorScheme });
+			const { violations } = await new AxeBuilder({ page }).analyze();
+			expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
+		});
+	}
+}
+
+test('a plot is read point by point with the arrow keys, and as a table', async ({ page }) => {
+	const points = page.getByRole('listbox', { name: /Blood pressure/ });
+	await points.getByRole('option', { selected: false }).first().focus();
+	await expect(page.getByText('Systolic 126 mmHg, day 3, before')).toBeVisible();
+	await page.keyboard.press('End');
+	await expect(page.getByText('Diastolic 70 mmHg, day 5, after')).toBeVisible();
+	await page.keyboard.press('ArrowLeft');
+	await expect(page.getByText('Systolic 108 mmHg, day 5, after, stop')).toBeVisible();
+	await page.getByText('Blood pressure as a table').press('Enter');
+	await expect(page.getByRole('row', { name: /day 5, after Systolic 108 stop/ })).toBeVisible();
+});
+
+test('a menu, a combobox and a toast are used by keyboard alone', async ({ page }) => {
+	await page.getByRole('button', { name: 'More' }).press('Enter');
+	await page.keyboard.press('ArrowDown');
+	await page.getByRole('menuitem', { name: 'Move to another bed' }).press('Enter');
+	await expect(page.getByText('Moved to T6.')).toBeVisible();
+
+	const passOn = page.getByRole('combobox', { name: /Pass on to/ });
+	await passOn.fill('strom');
+	await page.keyboard.press('ArrowDown');
+	await page.keyboard.press('Enter');
+	await expect(passOn).toHaveValue('Ada Strøm');
+	await passOn.fill('nobody');
+	await expect(page.getByText('Nothing fits “nobody”.')).toBeVisible();
+	await page.keyboard.press('Escape');
+	await expect(passOn).toHaveValue('Ada Strøm');
+
+	await page.getByRole('button', { name: 'One with a way back' }).press('Enter');
+	await page.getByRole('button', { name: 'Undo' }).press('Enter');
+	await expect(page.getByText('Given back.')).toBeVisible();
+});
+
+test('the number pad writes what was pressed and takes no fourth digit', async ({ page }) => {
+	const pad = page.getByRole('group', { name: 'Systolic, before' });
+	await pad.getByRole('button', { name: 'Erase' }).click();
+	await pad.getByRole('button', { name: '4' }).click();
+	await pad.getByRole('button', { name: '5' }).click();
+	await pad.getByRole('button', { name: 'Done' }).click();
+	await expect(page.getByText('Kept 124.')).toBeVisible();
+});
+
+test('forced colours keep every mark, and nothing moves for who asks for stillness', async ({ page }) => {
+	await page.emulateMedia({ forcedColors: 'active', reducedMotion: 'reduce' });
+	const high = page.getByText('High', { exact: true }).first();
+	await expect(high).toBeVisible();
+	const moving = await page.evaluate(
+		() =>
+			[...document.querySelectorAll('*')]
+				.map((each) => getComputedStyle(each))
+				.filter(({ transitionDuration, animationDuration }) =>
+					[...transitionDuration.split(','), ...animationDuration.split(',')].some(
+						(t) => parseFloat(t) > 0.001
+					)
+				).length
+	);
+	expect(moving).toBe(0);
+	const shapes = await page.evaluate(
+		() => [...document.querySelectorAll('svg')].filter((svg) => svg.getBoundingClientRect().width > 0).length
+	);
+	expect(shapes).toBeGreaterThan(10);
+});
