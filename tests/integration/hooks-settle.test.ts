@@ -1,5 +1,6 @@
 import { eq } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import type { PersonContext } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { audit, inboundMessages, liveEvents, outbox } from '$lib/server/db/schema';
 import { newId } from '$lib/server/ids';
@@ -59,11 +60,14 @@ const open = async () => {
 	return mine.map(({ id }) => id);
 };
 
+const settleText = (context: PersonContext, id: string) =>
+	settleInbound(context, id, { note: 'Called her, all is well.' });
+
 const CASES = [
 	['a message that failed', () => failedMessage('failed'), settleMessage],
 	['a message that did not arrive', () => failedMessage('undelivered'), settleMessage],
-	['a text of a patient', () => inboundText(hospital.patient.id), settleInbound],
-	['a text of nobody we know', () => inboundText(null), settleInbound]
+	['a text of a patient', () => inboundText(hospital.patient.id), settleText],
+	['a text of nobody we know', () => inboundText(null), settleText]
 ] as const;
 
 describe.each(CASES)('%s', (_, make, settle) => {
@@ -77,7 +81,8 @@ describe.each(CASES)('%s', (_, make, settle) => {
 		expect(row).toMatchObject({ action: 'message.settled', actorId: hospital.people.coordinator.id });
 		const events = await db().select().from(liveEvents).where(eq(liveEvents.subjectId, id));
 		expect(events.map(({ kind }) => kind)).toContain('settled');
-		await expect(settle(contextOf(hospital.people.therapist), id)).rejects.toMatchObject({
+		const again = contextOf(hospital.people.coordinator, HOSPITAL_NOW + 1);
+		await expect(settle(again, id)).rejects.toMatchObject({
 			code: 'wrong-state'
 		});
 	});

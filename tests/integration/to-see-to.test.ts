@@ -2,14 +2,21 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { db } from '$lib/server/db';
-import { inboundMessages, outbox, visits } from '$lib/server/db/schema';
+import { audit, entries, inboundMessages, outbox, visits } from '$lib/server/db/schema';
 import { newId } from '$lib/server/ids';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { settleInbound, settleMessage } from '$lib/server/messages/settle';
 import { getFailedMessage, getInboundText } from '$lib/server/messages/to-see-to';
 import { bookVisits, followUpVisit } from '$lib/server/visits/actions';
 import { freshDatabase } from '../support/database';
-import { contextOf, HOSPITAL_NOW, makeHospital, newPhone, type Hospital } from '../support/hospital';
+import {
+	addReferral,
+	contextOf,
+	HOSPITAL_NOW,
+	makeHospital,
+	newPhone,
+	type Hospital
+} from '../support/hospital';
 
 const DAY = 24 * 60 * 60 * 1000;
 
@@ -129,8 +136,36 @@ describe('a text that no rule understood', () => {
 		const { coordinator } = hospital.people;
 		const id = await text(hospital.patient.id);
 		expect(await open(coordinator)).toContain(`inbound ${id}`);
-		await settleInbound(contextOf(coordinator), id);
+		const note = 'Called her: her sister may come.';
+		await settleInbound(contextOf(coordinator), id, { note });
 		expect(await open(coordinator)).not.toContain(`inbound ${id}`);
+		expect(await getInboundText(coordinator, id)).toMatchObject({
+			settled: true,
+			done: { note, by: coordinator.name, at: '2026-03-03T09:00:00.000Z' }
+		});
+	});
+});
+
+describe('what was done about a text', () => {
+	it('stands in the thread with the words of the patient, by name, and on record without them', async () => {
+		const { coordinator, surgeon } = hospital.people;
+		const { threadId } = await addReferral({ episodeId: hospital.episodeId, askedBy: surgeon.id });
+		const id = await text(hospital.patient.id);
+		await settleInbound(contextOf(coordinator), id, { note: 'Called her back at 9.' });
+		const lines = await db().select().from(entries).where(eq(entries.threadId, threadId));
+		expect(lines).toMatchObject([
+			{
+				kind: 'event',
+				strand: 'patient',
+				authorId: coordinator.id,
+				body: 'Text of the patient: "May I bring my sister?". Seen to: Called her back at 9.'
+			}
+		]);
+		const [onRecord] = await db().select().from(audit).where(eq(audit.objectId, id));
+		expect(onRecord).toMatchObject({ action: 'message.settled', actorId: coordinator.id });
+		expect(JSON.stringify(onRecord)).not.toMatch(/sister|Called/);
+		const [row] = await db().select().from(inboundMessages).where(eq(inboundMessages.id, id));
+		expect(row).toMatchObject({ handledNote: 'Called her back at 9.', handledBy: coordinator.id });
 	});
 });
 

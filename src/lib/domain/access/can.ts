@@ -33,6 +33,7 @@ export const PERMISSIONS = [
 	'visit.read',
 	'visit.plan',
 	'visit.attend',
+	'stray-text.settle',
 	'account.manage',
 	'audit.read',
 	'own-account.change'
@@ -108,6 +109,9 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return among(role, 'coordinator', 'therapist');
 		case 'visit.attend':
 			return among(role, 'coordinator', 'therapist', 'nurse');
+		// A text that is filed under no patient: whoever keeps the contacts finds out whose it is.
+		case 'stray-text.settle':
+			return role === 'coordinator';
 		case 'account.manage':
 		case 'audit.read':
 			return role === 'admin';

@@ -84,8 +84,9 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			);
 		case 'visit-cancelled':
 		case 'message-failed':
-		case 'inbound':
 			return person.role === 'coordinator' && can(person, 'visit.plan', unit) ? 'mine' : null;
+		case 'inbound':
+			return can(person, 'stray-text.settle', unit) ? 'mine' : null;
 	}
 }
 

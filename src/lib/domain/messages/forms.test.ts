@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { calculateSmsBody, phoneField } from './forms';
+import { calculateSmsBody, phoneField, settleTextBody } from './forms';
 
 describe('calculateSmsBody', () => {
 	it.each([[''], ['  a '], ['x'.repeat(10_000)]])('keeps the text as it is', (text) => {
@@ -28,5 +28,21 @@ describe('phoneField', () => {
 		['0'.repeat(41), 'phone has at most 40 characters.']
 	])('refuses %j', (value, message) => {
 		expect(phoneField().safeParse(value).error?.issues[0]?.message).toContain(message);
+	});
+});
+
+describe('settleTextBody', () => {
+	it.each([
+		['', 'note is empty.'],
+		['   ', 'note is empty.'],
+		['x'.repeat(501), 'note has at most 500 characters.'],
+		[undefined, 'note is a text.']
+	])('refuses %j', (note, message) => {
+		const { error } = settleTextBody.safeParse({ note });
+		expect(error?.issues.map((issue) => issue.message)).toEqual([message]);
+	});
+
+	it.each([['Called.'], ['x'.repeat(500)]])('takes %j', (note) => {
+		expect(settleTextBody.parse({ note: ` ${note} ` })).toEqual({ note });
 	});
 });

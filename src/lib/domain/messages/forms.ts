@@ -1,5 +1,6 @@
 /** The bodies and fields of the message calls. A refusal names field, value and limit. */
 import { z } from 'zod';
+import { text } from '../core/fields';
 import { DEFAULT_COUNTRY, PhoneError, normalisePhone } from './phone';
 
 export const SMS_TEXT_MAX = 10_000;
@@ -28,3 +29,8 @@ export function phoneField(field = 'phone', country: string = DEFAULT_COUNTRY) {
 			}
 		});
 }
+
+export const SETTLE_NOTE_MAX = 500;
+
+/** Fields of closing a text that came in: what was done about it, such as who was called and what was said. */
+export const settleTextBody = z.strictObject({ note: text('note', SETTLE_NOTE_MAX) });

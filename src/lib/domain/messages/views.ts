@@ -36,4 +36,6 @@ export interface InboundTextView {
 	/** When it came, RFC 3339. */
 	at: string;
 	settled: boolean;
+	/** What was done about it, by whom and when (RFC 3339); null while it is open, and where no note was asked for. */
+	done: { note: string; by: string; at: string } | null;
 }

@@ -1,4 +1,5 @@
 import { sql, type SQL } from 'drizzle-orm';
+import { strayIn } from '../access/messages';
 
 /**
  * Loose ends are derived, never stored, so they cannot go stale: one query over the tables, a branch for each
@@ -18,7 +19,7 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		referralsAsked,
 		visitsCancelled(now),
 		messagesFailed,
-		textsUnread
+		textsUnread(unitIds)
 	];
 	return sql`
 		with place as (
@@ -97,12 +98,18 @@ const messagesFailed = sql`
 	join place on place.id = coalesce(v.episode_id, x.episode_id, r.episode_id)
 	where m.state in ('failed', 'undelivered') and m.handled_at is null`;
 
-/** Texts that no rule understood. From an unknown number there is no place, and every coordinator sees it. */
-const textsUnread = sql`
-	select 'inbound', i.id, ${PLACE}, null, null, i.understood_as, null, null, null,
-		null, null, i.at, null
-	from inbound_messages i
-	left join place on place.id = (
-		select e.id from episodes e where e.patient_id = i.patient_id order by e.created_at desc limit 1
-	)
-	where i.handled_at is null and (i.patient_id is null or place.id is not null)`;
+/** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */
+function textsUnread(unitIds: readonly string[]): SQL {
+	return sql`
+		select 'inbound', inbound_messages.id, ${PLACE}, null, null, inbound_messages.understood_as, null, null, null,
+			null, null, inbound_messages.at, null
+		from inbound_messages
+		left join place on place.id = (
+			select e.id from episodes e where e.patient_id = inbound_messages.patient_id
+			order by e.created_at desc, e.id desc limit 1
+		)
+		where inbound_messages.handled_at is null and (
+			place.id is not null
+			or ${strayIn(unitIds)}
+		)`;
+}

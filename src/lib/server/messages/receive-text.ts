@@ -5,6 +5,8 @@ import type { LiveEvent } from '$lib/domain/live/events';
 import { readPatientReply } from '$lib/domain/messages/reply';
 import { readStaffReply } from '$lib/domain/messages/staff-reply';
 import type { Context } from '../context';
+import { mayHearStray } from '../access/messages';
+import { loadPerson } from '../auth/people';
 import { db, type Reader, type Tx } from '../db';
 import { inboundMessages, users } from '../db/schema';
 import { newId } from '../ids';
@@ -149,15 +151,21 @@ function actorOf(sender: Sender): Actor | null {
 	}
 }
 
-/** Those who see the patient hear of it; what belongs to nobody is heard by every coordinator. */
+/** Those who see the patient hear of it; what is filed under no patient is heard by who may see to it. */
 async function receivedEvents(reader: Reader, id: string, episodeId: string | null): Promise<LiveEvent[]> {
 	const event = { topic: 'message', kind: 'received', id, episodeId } as const;
 	if (episodeId !== null) {
 		return [event];
 	}
-	const coordinators = await reader
+	const rows = await reader
 		.select({ id: users.id })
 		.from(users)
 		.where(and(eq(users.role, 'coordinator'), isNull(users.disabledAt)));
-	return coordinators.map(({ id: userId }) => ({ ...event, userId }));
+	const people = await Promise.all(rows.map((row) => loadPerson(reader, row.id)));
+	const concerned = await mayHearStray(
+		reader,
+		people.filter((person) => person !== null),
+		id
+	);
+	return concerned.map(({ id: userId }) => ({ ...event, userId }));
 }

@@ -4,74 +4,72 @@ import { notFound } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { PatientLine } from '$lib/domain/episodes/views';
 import type { FailedMessageView, InboundTextView } from '$lib/domain/messages/views';
-import { accessEpisode } from '../access/access';
-import { requirePermission } from '../access/require';
+import { m } from '$lib/i18n/paraglide/messages';
+import { accessInboundText, accessMessage, type InboundRow, type MessageRow } from '../access/messages';
 import { db, type Reader } from '../db';
-import { episodes, inboundMessages, outbox, patients, users } from '../db/schema';
+import { episodes, patients, users } from '../db/schema';
 import { patientLine } from '../episodes/list';
-import { episodeOfMessage, newestEpisode } from '../outbox/change';
-
-/** The same people who may settle it: `settle.ts`. */
-const PERMISSION = 'visit.plan';
 
 /**
  * One message that did not arrive.
  * @throws Problem `not-found` outside the person's units, and for a message that did not fail
  */
 export async function getFailedMessage(person: Person, id: string): Promise<FailedMessageView> {
-	const [row] = await db().select().from(outbox).where(eq(outbox.id, id));
-	const episodeId = row ? await episodeOfMessage(db(), row) : null;
-	const failed = row?.state === 'failed' || row?.state === 'undelivered';
-	// What goes to accounts is the administrator's, and may carry an invitation.
-	if (!row || !failed || row.refKind === 'account') {
+	const { message, episodeId } = await accessMessage(db(), person, id);
+	if (message.state !== 'failed' && message.state !== 'undelivered') {
 		throw notFound('message');
 	}
-	await requireAccess(person, episodeId);
 	return {
-		id: row.id,
-		body: row.body.replaceAll('{link}', '').trim(),
-		channel: row.channel,
-		to: await recipientOf(db(), row),
+		id: message.id,
+		body: message.body.replaceAll('{link}', '').trim(),
+		channel: message.channel,
+		to: await recipientOf(db(), message),
 		patient: await patientOf(db(), episodeId),
 		episodeId,
-		createdAt: toRfc3339(row.createdAt),
-		reason: row.stateReason,
-		settled: row.handledAt !== null
+		createdAt: toRfc3339(message.createdAt),
+		reason: message.stateReason,
+		settled: message.handledAt !== null
 	};
 }
 
 /**
- * One text that came in. From a number nobody knows it is anybody's who may see to it at all.
- * @throws Problem `not-found`
+ * One text that came in.
+ * @throws Problem `not-found` for one that this person may not see to
  */
 export async function getInboundText(person: Person, id: string): Promise<InboundTextView> {
-	const [row] = await db().select().from(inboundMessages).where(eq(inboundMessages.id, id));
-	if (!row) {
-		throw notFound('text');
-	}
-	const episodeId = row.patientId === null ? null : await newestEpisode(db(), row.patientId);
-	await requireAccess(person, episodeId);
+	const { text, episodeId } = await accessInboundText(db(), person, id);
 	const patient = await patientOf(db(), episodeId);
-	const staff = row.userId === null ? null : await userById(db(), row.userId);
+	const staff = text.userId === null ? null : await userById(db(), text.userId);
 	return {
-		id: row.id,
-		body: row.body,
-		from: { name: patient?.name ?? staff?.name ?? '', phone: row.fromNumber },
+		id: text.id,
+		body: text.body,
+		from: { name: patient?.name ?? staff?.name ?? nameOfNobody(text), phone: text.fromNumber },
 		patient,
 		episodeId,
-		at: toRfc3339(row.at),
-		settled: row.handledAt !== null
+		at: toRfc3339(text.at),
+		settled: text.handledAt !== null,
+		done: await doneAbout(text)
 	};
 }
 
-async function requireAccess(person: Person, episodeId: string | null): Promise<void> {
-	requirePermission(person, PERMISSION);
-	if (episodeId !== null) {
-		await accessEpisode(db(), person, episodeId, PERMISSION);
-	}
+/** Whose a shared number might be is not told. */
+function nameOfNobody({ understoodAs }: InboundRow): string {
+	return understoodAs === 'shared-number' ? m.home_shared_number() : '';
 }
 
-async function recipientOf(reader: Reader, row: typeof outbox.$inferSelect) {
+async function doneAbout({
+	handledNote,
+	handledBy,
+	handledAt
+}: InboundRow): Promise<InboundTextView['done']> {
+	if (handledNote === null || handledBy === null || handledAt === null) {
+		return null;
+	}
+	const by = await userById(db(), handledBy);
+	return { note: handledNote, by: by?.name ?? '', at: toRfc3339(handledAt) };
+}
+
+async function recipientOf(reader: Reader, row: MessageRow) {
 	if (row.userId !== null) {
 		return userById(reader, row.userId);
 	}

@@ -3,6 +3,7 @@ import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { notFound } from '$lib/domain/core/errors';
 import { emptyBody } from '$lib/domain/escalations/forms';
+import { settleTextBody } from '$lib/domain/messages/forms';
 import { routes } from '$lib/routes';
 import { formAction } from '$lib/server/http/form-action';
 import { idParam } from '$lib/server/http/param';
@@ -20,17 +21,24 @@ export const load: PageServerLoad = (event) =>
 				what === 'messages'
 					? { what, item: await getFailedMessage(actor, id) }
 					: { what, item: await getInboundText(actor, id) },
-			form: await superValidate(zod4(emptyBody)),
+			messageForm: await superValidate(zod4(emptyBody)),
+			textForm: await superValidate(zod4(settleTextBody)),
 			key: newFormKey()
 		};
 	});
 
 export const actions: Actions = {
-	settle: formAction({
+	message: formAction({
 		schema: emptyBody,
 		run: async (context, _fields, event) => {
-			const settle = whatOf(event.params) === 'messages' ? settleMessage : settleInbound;
-			await settle(context, idParam(event));
+			await settleMessage(context, idParam(event));
+			redirect(303, routes.looseEnds());
+		}
+	}),
+	text: formAction({
+		schema: settleTextBody,
+		run: async (context, fields, event) => {
+			await settleInbound(context, idParam(event), fields);
 			redirect(303, routes.looseEnds());
 		}
 	})
