@@ -281,6 +281,35 @@ describe('STOP, START and HELP', () => {
 		expect(await answers(start)).toHaveLength(1);
 	});
 
+	it('START brings the reminders back too', async () => {
+		const { patient, visitId } = await reminded();
+		await say(patient.phone, 'STOP');
+		await say(patient.phone, ' start ', newSid(), HOSPITAL_NOW + HOUR);
+		const next = await addReminder(visitId, patient.id);
+		await new OutboxWorker({
+			channels: { sms: new ScriptedChannel(), mail: null },
+			now: () => HOSPITAL_NOW + HOUR
+		}).settle();
+		expect((await rowOf(next)).state).toBe('accepted');
+	});
+
+	it('STOP in words of their own is confirmed once, by us, because the gateway does not know them', async () => {
+		const { patient } = await reminded();
+		await db().update(outbox).set({ state: 'cancelled' }).where(eq(outbox.state, 'ready'));
+		const sms = new ScriptedChannel();
+		const send = async (now: number) =>
+			new OutboxWorker({ channels: { sms, mail: null }, now: () => now }).settle();
+		await say(patient.phone, 'please stop these texts');
+		await send(HOSPITAL_NOW);
+		await say(patient.phone, 'I said no more texts', newSid(), HOSPITAL_NOW + 1);
+		await say(patient.phone, 'remove me', newSid(), HOSPITAL_NOW + HOUR);
+		await send(HOSPITAL_NOW + HOUR);
+		expect(sms.sent.map(({ body }) => body)).toEqual([
+			'Saltmarsh General: no more texts will come. START brings them back. Questions: +353 1 555 0100.'
+		]);
+		expect(await consentOf(patient.id)).toEqual([HOSPITAL_NOW, true]);
+	});
+
 	it('nothing goes out after STOP, not even an answer', async () => {
 		const { patient, visitId } = await reminded();
 		const next = await addReminder(visitId, patient.id);

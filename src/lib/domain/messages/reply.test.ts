@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { readPatientReply } from './reply';
+import { gatewayStops, readPatientReply } from './reply';
 
 describe('readPatientReply', () => {
 	it.each([
@@ -132,5 +132,27 @@ describe('readPatientReply', () => {
 				expect(readPatientReply(text)).not.toBe('other');
 			})
 		);
+	});
+});
+
+describe('gatewayStops', () => {
+	it.each(['STOP', ' stop ', 'StopAll', 'unsubscribe', 'CANCEL', 'end', 'quit', 'revoke', 'OPTOUT'])(
+		'%j is ended by the gateway, which says so itself',
+		(text) => {
+			expect(gatewayStops(text)).toBe(true);
+			expect(readPatientReply(text)).toBe('stop');
+		}
+	);
+
+	it.each([
+		'stop please',
+		'STOP.',
+		'opt out',
+		'remove me',
+		'no more texts please',
+		'stop sending me these messages'
+	])('%j is ended by us alone', (text) => {
+		expect(gatewayStops(text)).toBe(false);
+		expect(readPatientReply(text)).toBe('stop');
 	});
 });

@@ -70,6 +70,14 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 /** Ways to say stop that count only when the rest names the texts. */
 const ENDINGS = [...PHRASES.stop, 'no more', 'no', 'remove', 'take off', 'do not', 'dont'];
 
+/** What gateways take for STOP by themselves, when it is the whole text; they then send the one last text. */
+const GATEWAY_STOPS = ['stop', 'stopall', 'unsubscribe', 'cancel', 'end', 'quit', 'revoke', 'optout'];
+
+/** Whether the gateway has ended the texts by itself. Every other way to say it has to be confirmed by us. */
+export function gatewayStops(text: string): boolean {
+	return GATEWAY_STOPS.includes(text.trim().toLowerCase());
+}
+
 /** Said to be polite, or before the answer: it changes nothing. */
 const POLITE = /\b(please|pls|plz|thanks|thank you|thx|ta|cheers|sorry|hello|hi|dear|sir|madam)\b/g;
 /** What somebody wants to end: 'stop sending me these messages' is 'stop'. */

@@ -1,12 +1,12 @@
 import { and, asc, eq, gt, inArray, isNotNull, or, sql } from 'drizzle-orm';
-import { readPatientReply } from '$lib/domain/messages/reply';
+import { gatewayStops, readPatientReply } from '$lib/domain/messages/reply';
 import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
 import type { VisitState } from '$lib/domain/core/codes';
 import type { Reader, Tx } from '../db';
 import { episodes, outbox, patients, reminders, visits } from '../db/schema';
 import { moveVisit, type VisitRow } from '../visits/move';
 import type { PatientRow } from './sender';
-import { answerTo, senderFields, type ReceivedText, type Understood } from './understood';
+import { answerTo, senderFields, stopHeardKey, type ReceivedText, type Understood } from './understood';
 
 /** One automatic 'a person reads this' in so many hours: a telephone that answers by itself must not talk with us. */
 const PERSON_READS_EVERY_MS = 12 * 60 * 60 * 1000;
@@ -25,9 +25,15 @@ export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedT
 		case 'no':
 			return onNo(tx, patient, text);
 		case 'stop':
-			// The gateway sends the last text itself and would refuse one of ours.
 			await optOut(tx, [patient.id], text.now);
-			return { understoodAs, handled: true };
+			// Where the gateway has understood it too, it sends the last text itself and would refuse ours.
+			return gatewayStops(text.body) || patient.smsOptedOutAt !== null
+				? { understoodAs, handled: true }
+				: {
+						understoodAs,
+						handled: true,
+						change: answer('texts-stopped', senderFields(), stopHeardKey(patient.id, text.now))
+					};
 		case 'start':
 			// Asking for texts is consent in the patient's own words.
 			await tx

@@ -38,6 +38,11 @@ export function answerTo<T extends SmsTemplate>(
 	return { ...answerBase(text, to, options.causeKey), body: smsText(template, fields, options.language) };
 }
 
+/** Names the one text that may follow a STOP: it says that it was heard. `at` is the instant of the STOP. */
+export function stopHeardKey(patientId: string, at: number): string {
+	return `stop-heard:${patientId}:${at}`;
+}
+
 export type AnswerTo = { userId: string } | { patientId: string } | { address: string };
 
 /** An answer but for its words. */

@@ -3,6 +3,7 @@ import { isExpected } from '$lib/domain/visits/states';
 import { judgeReminder, type SkipReason as ReminderSkip } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
 import { escalationLinks, escalations, invitations, patients, users, visits } from '../db/schema';
+import { stopHeardKey } from '../messages/understood';
 import type { OutboxRow } from './change';
 
 /** Why a message is not sent after all. The words stand in the message log. */
@@ -90,14 +91,19 @@ async function recheckReminder(reader: Reader, row: OutboxRow, now: number): Pro
 	return verdict.kind === 'send' ? toPatient(patient) : verdict;
 }
 
-/** Answers need no consent: they go to somebody who has just written, and tell nothing. */
+/**
+ * Answers need no consent: they go to somebody who has just written, and tell nothing. After STOP one last text may
+ * go, the one that says that it was heard.
+ */
 async function recheckAnswer(reader: Reader, row: OutboxRow): Promise<Verdict> {
 	if (row.userId !== null) {
 		return toStaff(reader, row.userId, 'phone');
 	}
 	const patient = await patientOf(reader, row);
 	if (patient) {
-		return patient.smsOptedOutAt === null ? toPatient(patient) : skip('opted out');
+		const { smsOptedOutAt } = patient;
+		const last = smsOptedOutAt !== null && row.causeKey === stopHeardKey(patient.id, smsOptedOutAt);
+		return smsOptedOutAt === null || last ? toPatient(patient) : skip('opted out');
 	}
 	return row.address === null
 		? skip('nobody to send to')
