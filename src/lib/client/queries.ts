@@ -4,6 +4,7 @@ import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
+import type { Trouble } from '$lib/domain/messages/views';
 import type { ThreadView } from '$lib/domain/referrals/views';
 import type { VisitItem } from '$lib/domain/visits/views';
 import { getJson } from './api';
@@ -23,6 +24,8 @@ function query<T>(queryKey: readonly string[], path: string, initialData: T) {
 		refetchOnMount: 'always' as const
 	};
 }
+
+const TROUBLE_REFETCH_MS = 30_000;
 
 type List<T> = { items: T[]; next: string | null };
 
@@ -48,6 +51,12 @@ export const queries = {
 		query(['visits', from], `/api/visits?limit=200&from=${from}`, initial),
 	patientVisits: (episodeId: string, initial: List<VisitItem>) =>
 		query(['visits', 'of', episodeId], `/api/episodes/${episodeId}/visits`, initial),
+	/** While something does not work, its figures are asked for again: they grow without an event. */
+	delivery: (initial: List<Trouble>) => ({
+		...query(['delivery'], '/api/delivery', initial),
+		refetchInterval: (asked: { state: { data?: List<Trouble> } }) =>
+			asked.state.data?.items.length ? TROUBLE_REFETCH_MS : false
+	}),
 	escalation: (id: string, initial: EscalationView) =>
 		query(['escalation', id], `/api/escalations/${id}`, initial)
 };

@@ -6,21 +6,26 @@ import { coverNow } from './cover/queries';
 import { db } from './db';
 import { env } from './env';
 import { looseEndsOf } from './loose-ends/queries';
+import { read } from './read';
 
 const NOTHING_OPEN: LooseEnds = { mine: [], theirs: [] };
 
-/** What the frame around every signed-in page shows: who, which units, who is on cover, what is open, the time. */
-export async function frameOf({ actor, now }: PersonContext, cursor: number) {
-	const [units, cover, looseEnds] = await Promise.all([
+/** What the frame around every signed-in page shows: who, which units, who is on cover, what is open, which way out does not
+ * work, the time. */
+export async function frameOf(context: PersonContext, cursor: number) {
+	const { actor, now } = context;
+	const [units, cover, looseEnds, delivery] = await Promise.all([
 		unitsOf(db(), actor.id),
 		coverNow(db(), actor.unitIds, now),
-		can(actor, 'episode.read') ? looseEndsOf(db(), actor, now) : NOTHING_OPEN
+		can(actor, 'episode.read') ? looseEndsOf(db(), actor, now) : NOTHING_OPEN,
+		read.delivery(context)
 	]);
 	return {
 		user: { id: actor.id, name: actor.name, role: actor.role },
 		units,
 		cover,
 		looseEnds,
+		delivery,
 		seesPatients: can(actor, 'episode.read'),
 		cursor,
 		now,

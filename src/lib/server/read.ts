@@ -9,6 +9,7 @@ import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
 import { looseEndsOf } from './loose-ends/queries';
+import { troublesFor } from './messages/trouble';
 import { getThread } from './threads/queries';
 
 /**
@@ -27,5 +28,10 @@ export const read = {
 	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>
 		patientLimitsOf(db(), actor, episodeId, now),
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
-	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id)
+	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id),
+	/** The ways out of the product that do not work now, as a list of the API. */
+	delivery: async ({ actor, now }: PersonContext) => ({
+		items: await troublesFor(db(), actor, now),
+		next: null
+	})
 };

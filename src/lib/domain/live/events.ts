@@ -8,6 +8,7 @@ export const TOPICS = [
 	'escalation',
 	'visit',
 	'message',
+	'delivery',
 	'account'
 ] as const;
 export type Topic = (typeof TOPICS)[number];
@@ -54,6 +55,8 @@ export function staleKeys(event: StreamEvent): QueryKey[] {
 			return around;
 		case 'message':
 			return [['loose-ends'], ['messages'], ['visits'], ['escalation']];
+		case 'delivery':
+			return [['delivery']];
 		case 'account':
 			return [['me'], ['accounts']];
 	}

@@ -10,6 +10,17 @@ export type TransientReason =
 	'busy' | 'gateway-down' | 'credentials' | 'no-encryption' | 'not-reached' | 'try-later';
 export type UnknownReason = 'no-answer' | 'answer-without-id';
 
+/** Reasons that lie with the way out and not with one message: the next message would meet the same. */
+export const TROUBLE_REASONS: readonly (TransientReason | UnknownReason)[] = [
+	'busy',
+	'gateway-down',
+	'credentials',
+	'no-encryption',
+	'not-reached',
+	'no-answer',
+	'answer-without-id'
+];
+
 export type Outcome =
 	| { readonly kind: 'accepted'; readonly id: string }
 	| { readonly kind: 'permanent'; readonly reason: PermanentReason }

@@ -39,3 +39,12 @@ export interface InboundTextView {
 	/** What was done about it, by whom and when (RFC 3339); null while it is open, and where no note was asked for. */
 	done: { note: string; by: string; at: string } | null;
 }
+
+/** A way out of the product that does not work now. */
+export interface Trouble {
+	channel: 'sms' | 'mail';
+	/** When it began, RFC 3339. */
+	since: string;
+	/** How many messages are due and wait for it. */
+	waiting: number;
+}

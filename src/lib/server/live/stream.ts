@@ -16,6 +16,10 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
 	if (event.userId) {
 		return event.userId === person.id;
 	}
+	// That texts do not go out concerns everybody, and tells of nobody.
+	if (event.topic === 'delivery') {
+		return true;
+	}
 	if (event.unitId === null) {
 		return false;
 	}

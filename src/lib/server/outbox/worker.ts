@@ -4,6 +4,7 @@ import { newId } from '../ids';
 import { log } from '../log';
 import { attempt } from './attempt';
 import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels/channel';
+import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
 import { takeBackForeign } from './record';
 
@@ -41,6 +42,8 @@ export class OutboxWorker {
 	readonly #random: () => number;
 	readonly #inFlight = new Map<string, { channel: ChannelName; ended: Promise<void> }>();
 	readonly #pausedUntil = new Map<ChannelName, number>();
+	/** Whether the last attempt on a channel got through; not there before the first. */
+	readonly #working = new Map<ChannelName, boolean>();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
 	#timer: NodeJS.Timeout | null = null;
@@ -168,7 +171,9 @@ export class OutboxWorker {
 		try {
 			if (channel) {
 				const sending = { owner: this.#owner, channel, now: this.#now, random: this.#random };
-				this.#heed(name, await attempt(message, sending));
+				const sent = await attempt(message, sending);
+				this.#heed(name, sent);
+				await this.#tell(name, sent);
 			}
 		} catch (error) {
 			// The lease brings it back; whether it went out is then asked first.
@@ -176,6 +181,22 @@ export class OutboxWorker {
 		} finally {
 			this.#inFlight.delete(id);
 			this.wake();
+		}
+	}
+
+	/** Pages say when a way out does not work. They hear of each failure, and of the first success after one. */
+	async #tell(name: ChannelName, sent: Sent | null): Promise<void> {
+		if (sent === null) {
+			return;
+		}
+		const works = sent.outcome.kind === 'accepted' || sent.outcome.kind === 'permanent';
+		const known = this.#working.get(name) ?? false;
+		this.#working.set(name, works);
+		if (!works || !known) {
+			await changing(this.#now(), (_tx, events) => {
+				events.push({ topic: 'delivery', kind: works ? 'works' : 'fails', id: name, episodeId: null });
+				return Promise.resolve();
+			});
 		}
 	}
 
