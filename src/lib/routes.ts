@@ -21,6 +21,7 @@ export const routes = {
 	phoneLink: (token: string) => `/t/${token}`,
 	visits: (query = '') => `/visits${query}`,
 	patientVisits: (episodeId: string) => `/patients/${episodeId}/visits`,
+	patientVisit: (episodeId: string, id: string) => `/patients/${episodeId}/visits#visit-${id}`,
 	cover: () => '/cover',
 	rules: () => '/rules',
 	account: () => '/account',

@@ -66,6 +66,7 @@ export const API: Record<string, Row> = {
 	'POST /api/referrals/[id]/withdraw': { roles: ['surgeon', 'physician'], answers: [422] },
 	'GET /api/threads/[id]': { roles: SEEING, answers: [404] },
 	'POST /api/threads/[id]/entries': { roles: CLINICAL, answers: [422] },
+	'POST /api/mentions/[id]/seen': { roles: SEEING, answers: [404] },
 	'GET /api/clearances/[id]': { roles: SEEING, answers: [404] },
 	'POST /api/clearances/[id]/give': { roles: DECIDERS, answers: [404] },
 	'POST /api/clearances/[id]/withhold': { roles: DECIDERS, answers: [422] },

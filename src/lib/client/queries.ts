@@ -2,6 +2,7 @@ import { browser } from '$app/environment';
 import type { SessionLine } from '$lib/domain/bedside/views';
 import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
+import { MINUTE } from '$lib/domain/core/time';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
@@ -30,7 +31,11 @@ const TROUBLE_REFETCH_MS = 30_000;
 type List<T> = { items: T[]; next: string | null };
 
 export const queries = {
-	looseEnds: (initial: LooseEnds) => query(['loose-ends'], '/api/loose-ends', initial),
+	looseEnds: (initial: LooseEnds) => ({
+		...query(['loose-ends'], '/api/loose-ends', initial),
+		// A visit comes near and a re-check falls due by time alone, of which no event tells.
+		refetchInterval: MINUTE
+	}),
 	episodes: (unitId: string | null, initial: List<EpisodeListItem>) =>
 		query(
 			['episodes', unitId ?? ''],

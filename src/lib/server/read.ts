@@ -10,6 +10,7 @@ import type { PageRequest } from './http/paging';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
 import { looseEndsOf } from './loose-ends/queries';
 import { troublesFor } from './messages/trouble';
+import { listColleagues } from './threads/people';
 import { getThread } from './threads/queries';
 
 /**
@@ -22,6 +23,7 @@ export const read = {
 		listEpisodes(db(), actor, now, unit, request),
 	nameboard: ({ actor, now }: PersonContext, episodeId: string) => getNameboard(db(), actor, episodeId, now),
 	thread: ({ actor }: PersonContext, id: string, request: PageRequest) => getThread(db(), actor, id, request),
+	colleagues: ({ actor }: PersonContext, episodeId: string) => listColleagues(db(), actor, episodeId),
 	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
 	unitLimits: (unitId: string) => unitLimitsOf(db(), unitId),

@@ -14,6 +14,7 @@ function end(kind: LooseEndKind, rest: Partial<LooseEnd> = {}): LooseEnd {
 		patientName: null,
 		grade: null,
 		code: null,
+		priority: null,
 		title: '',
 		askedBy: null,
 		heldBy: null,
@@ -32,6 +33,8 @@ describe('nextStep', () => {
 		['recheck', 'surgeon', 'Look', '/escalations/x1', null],
 		['clearance', 'surgeon', 'Answer', '/patients/e1/clearances/x1', null],
 		['referral', 'therapist', 'Accept', '/patients/e1/threads/t1', '/api/referrals/x1/accept'],
+		['mention', 'nurse', 'Answer', '/patients/e1/threads/t1', null],
+		['visit-unconfirmed', 'coordinator', 'Call', '/patients/e1/visits#visit-x1', null],
 		['visit-cancelled', 'coordinator', 'Find a time', '/patients/e1/visits', null],
 		['message-failed', 'coordinator', 'Call', '/loose-ends/messages/x1', null],
 		['inbound', 'coordinator', 'Read', '/loose-ends/texts/x1', null]

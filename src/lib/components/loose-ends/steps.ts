@@ -37,6 +37,10 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 				href: placeOf(end) ?? routes.looseEnds(),
 				deed: `/api/referrals/${id}/accept`
 			};
+		case 'mention':
+			return open(m.home_step_answer(), placeOf(end) ?? routes.looseEnds());
+		case 'visit-unconfirmed':
+			return open(m.home_step_call(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
 		case 'visit-cancelled':
 			return open(m.home_step_rebook(), episodeId ? routes.patientVisits(episodeId) : routes.visits());
 		case 'message-failed':
@@ -55,11 +59,13 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			return routes.escalation(id);
 		case 'clearance':
 		case 'referral':
+		case 'mention':
 			if (episodeId === null) {
 				return null;
 			}
 			return threadId === null ? routes.patient(episodeId) : routes.thread(episodeId, threadId);
 		case 'visit-cancelled':
+		case 'visit-unconfirmed':
 		case 'message-failed':
 		case 'inbound':
 			return null;

@@ -17,6 +17,7 @@ function end(kind: LooseEndKind, rest: Partial<LooseEnd> = {}): LooseEnd {
 		patientName: 'Marta Lisowska',
 		grade: null,
 		code: null,
+		priority: null,
 		title: 'Something',
 		askedBy: 'I. Aldous',
 		heldBy: 'R. Ferris',
@@ -39,7 +40,8 @@ describe('waitWords', () => {
 		[end('recheck', { due: ago(-9 * MINUTE) }), 'due in 9 min'],
 		[end('recheck', { due: ago(12 * MINUTE) }), 'overdue by 12 min'],
 		// The time of a cancelled visit is said beside it; what counts is since when nobody has seen to it.
-		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), '40 min']
+		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), '40 min'],
+		[end('visit-unconfirmed', { due: '2026-03-03T16:00:00Z' }), '16:00']
 	])('%#: %s', (open, words) => {
 		expect(waitWords(open, READER)).toBe(words);
 	});
@@ -61,6 +63,9 @@ describe('askerWords', () => {
 		[end('escalation'), 'raised by I. Aldous'],
 		[end('recheck'), 'you settled it 13:20'],
 		[end('clearance'), 'I. Aldous asks'],
+		[end('referral', { priority: 'urgent' }), 'urgent, I. Aldous asks'],
+		[end('mention'), 'I. Aldous asks you'],
+		[end('visit-unconfirmed', { due: '2026-03-04T10:00:00Z' }), ''],
 		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('message-failed', { code: 'reminder' }), 'a reminder of a visit'],
 		[end('message-failed', { code: 'carrier-pigeon' }), ''],
@@ -75,6 +80,7 @@ describe('owerWords', () => {
 		[end('escalation'), ''],
 		[end('escalation-taken'), 'R. Ferris has it'],
 		[end('recheck'), 'R. Ferris sees that it is measured again'],
+		[end('mention', { code: 'nurse' }), 'R. Ferris to answer'],
 		[end('clearance', { code: 'arm-stage' }), 'surgeon to answer'],
 		[end('clearance', { code: 'stairs' }), 'surgeon or physician to answer'],
 		[end('referral', { code: 'speech-therapy' }), 'speech therapist to answer']

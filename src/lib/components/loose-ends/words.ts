@@ -3,7 +3,7 @@ import { rolesAsked } from '$lib/domain/loose-ends/owed-by';
 import type { Service } from '$lib/domain/core/codes';
 import { MINUTE } from '$lib/domain/core/time';
 import { ago, DEFAULT_LOCALE, due, duration, when, type Reader } from '$lib/format';
-import { SERVICE_WORDS } from '$lib/i18n/labels';
+import { PRIORITY_WORDS, SERVICE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 import { ROLE_WORDS } from '../shell/role-words';
 
@@ -15,6 +15,8 @@ export function waitWords(end: LooseEnd, reader: Reader): string {
 			return m.home_wait_untaken({ time: duration(open) });
 		case 'escalation-taken':
 			return m.home_wait_taken({ time: duration(open) });
+		case 'visit-unconfirmed':
+			return end.due === null ? elapsed(end, reader) : when(Date.parse(end.due), reader);
 		case 'recheck':
 			return end.due === null ? elapsed(end, reader) : due(Date.parse(end.due), reader);
 		default:
@@ -37,12 +39,18 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'clearance':
-		case 'referral':
 			return m.home_asker_asks({ name });
+		case 'referral':
+			return end.priority === null
+				? m.home_asker_asks({ name })
+				: m.home_asker_referral({ priority: PRIORITY_WORDS[end.priority]().toLowerCase(), name });
+		case 'mention':
+			return m.home_asker_mention({ name });
 		case 'visit-cancelled':
 			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';
+		case 'visit-unconfirmed':
 		case 'inbound':
 			return '';
 	}
@@ -58,6 +66,8 @@ export function owerWords(end: LooseEnd): string {
 			return m.home_ower_has({ name });
 		case 'recheck':
 			return m.home_ower_measures({ name });
+		case 'mention':
+			return m.home_ower_answers({ name });
 		default:
 			return m.home_ower_roles({ roles: anyOf(rolesAsked(end).map((role) => ROLE_WORDS[role]())) });
 	}

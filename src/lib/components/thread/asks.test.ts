@@ -13,7 +13,8 @@ function entry(kind: EntryLine['kind'], ref: EntryLine['ref'] = null): EntryLine
 		strand: 'therapy',
 		kind,
 		body: 'words',
-		ref
+		ref,
+		asked: []
 	};
 }
 const arm = { kind: 'clearance', id: 'c1' } as const;

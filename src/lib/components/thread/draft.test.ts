@@ -12,7 +12,7 @@ function memory(): Store & { size(): number } {
 }
 
 describe('keyFor', () => {
-	const tried = { body: 'Walked twice.', key: 'first' };
+	const tried = { body: 'Walked twice.', mention: '', key: 'first' };
 	it.each([
 		['Walked twice.', tried, 'first'],
 		[' Walked twice.\n', tried, 'first'],
@@ -20,14 +20,19 @@ describe('keyFor', () => {
 		['', tried, 'fresh'],
 		['Walked twice.', null, 'fresh']
 	])('%j after %j goes out under the key %s', (body, before, key) => {
-		expect(keyFor(body, before, 'fresh')).toBe(key);
+		expect(keyFor({ body, mention: '' }, before, 'fresh')).toBe(key);
+	});
+
+	it('the same words to somebody else are another entry', () => {
+		expect(keyFor({ body: tried.body, mention: 'u1' }, tried, 'fresh')).toBe('fresh');
+		expect(keyFor({ body: tried.body, mention: 'u1' }, { ...tried, mention: 'u1' }, 'fresh')).toBe('first');
 	});
 });
 
 describe('a draft', () => {
 	it('comes back for its own thread only', () => {
 		const store = memory();
-		const draft = { body: 'Half a sen', tried: { body: 'Half', key: 'k1' } };
+		const draft = { body: 'Half a sen', mention: 'u1', tried: { body: 'Half', mention: '', key: 'k1' } };
 		keepDraft(store, 't1', draft);
 		expect(loadDraft(store, 't1')).toEqual(draft);
 		expect(loadDraft(store, 't2')).toEqual(NO_DRAFT);
@@ -35,7 +40,7 @@ describe('a draft', () => {
 
 	it('leaves nothing behind once it is empty', () => {
 		const store = memory();
-		keepDraft(store, 't1', { body: 'x', tried: null });
+		keepDraft(store, 't1', { body: 'x', mention: '', tried: null });
 		keepDraft(store, 't1', NO_DRAFT);
 		expect(store.size()).toBe(0);
 	});
@@ -47,7 +52,8 @@ describe('a draft', () => {
 		'7',
 		'{"body":1,"tried":null}',
 		'{"body":"x"}',
-		'{"body":"x","tried":{"body":"x"}}'
+		'{"body":"x","tried":null}',
+		'{"body":"x","mention":"","tried":{"body":"x"}}'
 	])('that cannot be read is none: %j', (text) => {
 		const store = memory();
 		store.setItem('ropewalk-draft-t1', text);
@@ -59,7 +65,7 @@ describe('a draft', () => {
 			throw new Error('full');
 		};
 		const store = { getItem: refuse, setItem: refuse, removeItem: refuse };
-		keepDraft(store, 't1', { body: 'x', tried: null });
+		keepDraft(store, 't1', { body: 'x', mention: '', tried: null });
 		expect(loadDraft(store, 't1')).toEqual(NO_DRAFT);
 	});
 });

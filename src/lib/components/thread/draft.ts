@@ -1,21 +1,28 @@
 /** What is typed and not yet posted, kept for one thread while the tab lives, so that a reload costs nothing. */
 export interface Draft {
 	body: string;
+	/** The person to whom the question is put; empty for nobody. */
+	mention: string;
 	/**
 	 * The last try that got no answer. Nobody knows whether it arrived, so the same words are sent again under the
 	 * same key, and other words under another.
 	 */
-	tried: { body: string; key: string } | null;
+	tried: { body: string; mention: string; key: string } | null;
 }
 
-export const NO_DRAFT: Draft = { body: '', tried: null };
+export const NO_DRAFT: Draft = { body: '', mention: '', tried: null };
 
 /** The part of `Storage` that is used. */
 export type Store = Pick<Storage, 'getItem' | 'setItem' | 'removeItem'>;
 
-/** The key under which to post `body`: the one of the try it repeats, or the fresh one. */
-export function keyFor(body: string, tried: Draft['tried'], fresh: string): string {
-	return tried !== null && tried.body.trim() === body.trim() ? tried.key : fresh;
+/** The key under which to post: the one of the try that is repeated word for word, or the fresh one. */
+export function keyFor(
+	{ body, mention }: Pick<Draft, 'body' | 'mention'>,
+	tried: Draft['tried'],
+	fresh: string
+): string {
+	const same = tried !== null && tried.body.trim() === body.trim() && tried.mention === mention;
+	return same ? tried.key : fresh;
 }
 
 /** Read what was kept; what cannot be read is no draft. */
@@ -49,6 +56,10 @@ function isDraft(value: unknown): value is Draft {
 	const draft = value as Partial<Draft> | null;
 	const tried = draft?.tried;
 	const triedFits =
-		tried === null || (typeof tried?.body === 'string' && typeof tried.key === 'string' && tried.key !== '');
-	return typeof draft?.body === 'string' && triedFits;
+		tried === null ||
+		(typeof tried?.body === 'string' &&
+			typeof tried.mention === 'string' &&
+			typeof tried.key === 'string' &&
+			tried.key !== '');
+	return typeof draft?.body === 'string' && typeof draft.mention === 'string' && triedFits;
 }

@@ -6,9 +6,13 @@ export type MaybeReasonForm = SuperValidated<{ reason?: string }, string>;
 export type AskFields = { kind: ClearanceKind; question: string; threadId?: string };
 export type AskForm = SuperValidated<AskFields, string>;
 
+/** `mention` is the person whom the entry asks; empty for nobody. */
+export type EntryFields = { body: string; mention: string };
+
 /** The forms of a thread, as the server's `superValidate` gave them. */
 export interface ThreadForms {
-	post: SuperValidated<{ body: string }, string>;
+	post: SuperValidated<EntryFields, string>;
+	seen: SuperValidated<{ mentionId: string }, string>;
 	accept: MaybeReasonForm;
 	decline: ReasonForm;
 	close: MaybeReasonForm;

@@ -12,7 +12,8 @@ function entry(seq: number, authorId: string | null, kind: EntryLine['kind'] = '
 		strand: 'therapy',
 		kind,
 		body: 'words',
-		ref: kind === 'note' ? null : { kind: 'clearance', id: 'c1' }
+		ref: kind === 'note' ? null : { kind: 'clearance', id: 'c1' },
+		asked: []
 	};
 }
 

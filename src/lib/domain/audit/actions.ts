@@ -35,6 +35,7 @@ export const AUDIT_ACTIONS = [
 	'level.decided',
 	'limit.ended-for-patient',
 	'limit.set-for-patient',
+	'mention.seen',
 	'message.failed',
 	'message.received',
 	'message.settled',

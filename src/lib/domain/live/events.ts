@@ -40,7 +40,8 @@ export function staleKeys(event: StreamEvent): QueryKey[] {
 	const around: QueryKey[] = [['loose-ends'], ['episodes'], ...episode];
 	switch (event.topic) {
 		case 'thread':
-			return [['thread', event.id], ...episode];
+			// A question may be put to somebody, or be answered by what they wrote.
+			return [...around, ['thread', event.id]];
 		case 'referral':
 			return [...around, ['thread']];
 		case 'clearance':

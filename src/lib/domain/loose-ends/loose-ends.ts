@@ -1,6 +1,6 @@
 import type { Person } from '../access/actor';
 import { can } from '../access/can';
-import { GRADES, type ClearanceKind, type Grade, type Service } from '../core/codes';
+import { type ClearanceKind, type Grade, type Priority, type Service } from '../core/codes';
 
 export const LOOSE_END_KINDS = [
 	'escalation',
@@ -8,7 +8,9 @@ export const LOOSE_END_KINDS = [
 	'recheck',
 	'clearance',
 	'referral',
+	'mention',
 	'visit-cancelled',
+	'visit-unconfirmed',
 	'message-failed',
 	'inbound'
 ] as const;
@@ -25,8 +27,10 @@ export interface OpenThing {
 	bed: string | null;
 	patientName: string | null;
 	grade: Grade | null;
-	/** Service, clearance kind or whatever names the thing more closely. */
+	/** Service, clearance kind, the role that a question is put to, or whatever names the thing more closely. */
 	code: string | null;
+	/** How soon a referral asks for its answer. */
+	priority: Priority | null;
 	text: string | null;
 	askedById: string | null;
 	askedBy: string | null;
@@ -47,6 +51,7 @@ export interface LooseEnd {
 	patientName: string | null;
 	grade: Grade | null;
 	code: string | null;
+	priority: Priority | null;
 	title: string;
 	askedBy: string | null;
 	heldBy: string | null;
@@ -82,34 +87,13 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return (
 				asked ?? (can(person, 'referral.answer', { ...unit, service: thing.code as Service }) ? 'mine' : null)
 			);
+		case 'mention':
+			return thing.heldById === person.id ? 'mine' : asked;
 		case 'visit-cancelled':
+		case 'visit-unconfirmed':
 		case 'message-failed':
 			return person.role === 'coordinator' && can(person, 'visit.plan', unit) ? 'mine' : null;
 		case 'inbound':
 			return can(person, 'stray-text.settle', unit) ? 'mine' : null;
-	}
-}
-
-/** Most urgent first (untaken escalations, then held ones, then the rest), the oldest first within each. */
-export function byUrgency(a: OpenThing, b: OpenThing): number {
-	return rank(a) - rank(b) || (a.due ?? a.since) - (b.due ?? b.since) || a.id.localeCompare(b.id);
-}
-
-function rank(thing: OpenThing): number {
-	const grade = thing.grade === null ? GRADES.length : GRADES.indexOf(thing.grade);
-	switch (thing.kind) {
-		case 'escalation':
-			return grade;
-		case 'escalation-taken':
-			return 10 + grade;
-		case 'recheck':
-			return 20;
-		case 'clearance':
-		case 'referral':
-			return thing.text === 'urgent' ? 29 : 30;
-		case 'message-failed':
-		case 'inbound':
-		case 'visit-cancelled':
-			return 40;
 	}
 }

@@ -18,7 +18,11 @@ describe('owedBy', () => {
 		['clearance', 'oral-intake', null, 'therapy'],
 		['referral', 'physiotherapy', null, 'therapy'],
 		['referral', 'speech-therapy', null, 'therapy'],
+		['mention', 'nurse', null, 'nursing'],
+		['mention', 'surgeon', null, 'medical'],
+		['mention', 'coordinator', null, 'patient'],
 		['visit-cancelled', null, null, 'patient'],
+		['visit-unconfirmed', null, null, 'patient'],
 		['message-failed', 'reminder', null, 'patient'],
 		['inbound', 'other', null, 'patient']
 	] as const)('%s of %s, held by %s: %s', (kind, code, holder, strand) => {
@@ -35,6 +39,8 @@ describe('rolesAsked', () => {
 		['escalation', null, ['surgeon', 'physician', 'nurse']],
 		['escalation-taken', null, []],
 		['recheck', null, []],
+		['mention', 'nurse', []],
+		['visit-unconfirmed', null, ['coordinator']],
 		['clearance', 'arm-stage', ['surgeon']],
 		['clearance', 'corridor', ['surgeon', 'physician']],
 		['clearance', 'oral-intake', ['surgeon', 'speech-therapist']],

@@ -30,7 +30,10 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 			return code === 'oral-intake' ? 'therapy' : 'medical';
 		case 'referral':
 			return 'therapy';
+		case 'mention':
+			return STRAND_OF_ROLE[code as ClinicalRole] ?? 'patient';
 		case 'visit-cancelled':
+		case 'visit-unconfirmed':
 		case 'message-failed':
 		case 'inbound':
 			return 'patient';
@@ -49,9 +52,11 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'referral':
 			return ROLES.filter((role) => can(anyone(role), 'referral.answer', { service: code as Service }));
 		case 'visit-cancelled':
+		case 'visit-unconfirmed':
 		case 'message-failed':
 		case 'inbound':
 			return ['coordinator'];
+		case 'mention':
 		case 'escalation-taken':
 		case 'recheck':
 			return [];

@@ -11,6 +11,23 @@ export interface EntryLine {
 	kind: EntryKind;
 	body: string;
 	ref: { kind: RefKind; id: string } | null;
+	/** To whom the entry puts a question. */
+	asked: AskedPerson[];
+}
+
+/** Somebody to whom a question is put; open until they write into the thread or say that they have seen it. */
+export interface AskedPerson {
+	mentionId: string;
+	id: string;
+	name: string;
+	open: boolean;
+}
+
+/** Somebody of the unit, to choose from. */
+export interface Colleague {
+	id: string;
+	name: string;
+	role: Role;
 }
 
 export interface ThreadView {

@@ -1,4 +1,5 @@
 import { sql, type SQL } from 'drizzle-orm';
+import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
 import { strayIn } from '../access/messages';
 
 /**
@@ -17,7 +18,9 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		rechecksDue,
 		clearancesAsked,
 		referralsAsked,
+		questionsOpen,
 		visitsCancelled(now),
+		visitsUnconfirmed(now),
 		messagesFailed,
 		textsUnread(unitIds)
 	];
@@ -37,7 +40,7 @@ const PLACE = sql`place.id as "episodeId", place.unit_id as "unitId", place.unit
 const escalationsUntaken = sql`
 	select 'escalation' as "kind", x.id as "id", ${PLACE}, x.thread_id as "threadId", x.grade as "grade",
 		null as "code", x.situation as "text", x.raised_by as "askedById", asker.name as "askedBy",
-		null as "heldById", null as "heldBy", x.raised_at as "since", x.needed_by as "due"
+		null as "heldById", null as "heldBy", x.raised_at as "since", x.needed_by as "due", null as "priority"
 	from escalations x
 	join place on place.id = x.episode_id
 	join users asker on asker.id = x.raised_by
@@ -45,7 +48,7 @@ const escalationsUntaken = sql`
 
 const escalationsHeld = sql`
 	select 'escalation-taken', x.id, ${PLACE}, x.thread_id, x.grade, null, x.situation, x.raised_by, asker.name,
-		x.taken_by, holder.name, x.taken_at, x.needed_by
+		x.taken_by, holder.name, x.taken_at, x.needed_by, null
 	from escalations x
 	join place on place.id = x.episode_id
 	join users asker on asker.id = x.raised_by
@@ -54,7 +57,7 @@ const escalationsHeld = sql`
 
 const rechecksDue = sql`
 	select 'recheck', x.id, ${PLACE}, x.thread_id, null, null, null, x.raised_by, asker.name,
-		x.ended_by, holder.name, x.ended_at, x.recheck_due_at
+		x.ended_by, holder.name, x.ended_at, x.recheck_due_at, null
 	from escalations x
 	join place on place.id = x.episode_id
 	join users asker on asker.id = x.raised_by
@@ -63,26 +66,52 @@ const rechecksDue = sql`
 
 const clearancesAsked = sql`
 	select 'clearance', c.id, ${PLACE}, c.thread_id, null, c.kind, c.question, c.asked_by, asker.name,
-		null, null, c.asked_at, null
+		null, null, c.asked_at, null, null
 	from clearances c
 	join place on place.id = c.episode_id
 	join users asker on asker.id = c.asked_by
 	where c.state = 'asked'`;
 
 const referralsAsked = sql`
-	select 'referral', r.id, ${PLACE}, t.id, null, r.service, r.priority, r.asked_by, asker.name,
-		null, null, r.asked_at, null
+	select 'referral', r.id, ${PLACE}, t.id, null, r.service, r.question, r.asked_by, asker.name,
+		null, null, r.asked_at, null, r.priority
 	from referrals r
 	join threads t on t.referral_id = r.id
 	join place on place.id = r.episode_id
 	join users asker on asker.id = r.asked_by
 	where r.state = 'asked'`;
 
+/** A question is closed when the one it was put to writes into the thread, or says that they have seen it. */
+const questionsOpen = sql`
+	select 'mention', q.id, ${PLACE}, n.thread_id, null, who.role, n.body, n.author_id, asker.name,
+		q.user_id, who.name, n.at, null, null
+	from mentions q
+	join entries n on n.id = q.entry_id
+	join threads t on t.id = n.thread_id
+	join referrals r on r.id = t.referral_id
+	join place on place.id = t.episode_id
+	join users who on who.id = q.user_id
+	left join users asker on asker.id = n.author_id
+	where q.seen_at is null and r.state <> 'withdrawn' and not exists (
+		select 1 from entries later
+		where later.thread_id = n.thread_id and later.seq > n.seq and later.author_id = q.user_id
+	)`;
+
+/** A visit that nobody has confirmed by the evening before wants a telephone call, until it begins. */
+function visitsUnconfirmed(now: number): SQL {
+	return sql`
+		select 'visit-unconfirmed', v.id, ${PLACE}, null, null, null, null, null, null,
+			null, null, v.starts_at - ${UNCONFIRMED_WITHIN_MS}, v.starts_at, null
+		from visits v
+		join place on place.id = v.episode_id
+		where v.state = 'planned' and v.starts_at > ${now} and v.starts_at <= ${now + UNCONFIRMED_WITHIN_MS}`;
+}
+
 /** A visit that the patient cancelled wants another date; once its own time has passed nobody is asked any more. */
 function visitsCancelled(now: number): SQL {
 	return sql`
 		select 'visit-cancelled', v.id, ${PLACE}, null, null, null, v.reason, null, null,
-			null, null, v.decided_at, v.starts_at
+			null, null, v.decided_at, v.starts_at, null
 		from visits v
 		join place on place.id = v.episode_id
 		where v.patient_cancelled_at is not null and v.followed_up_at is null and v.starts_at > ${now}`;
@@ -90,7 +119,7 @@ function visitsCancelled(now: number): SQL {
 
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
-		null, null, m.created_at, null
+		null, null, m.created_at, null, null
 	from outbox m
 	left join visits v on m.ref_kind = 'visit' and v.id = m.ref_id
 	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
@@ -102,7 +131,7 @@ const messagesFailed = sql`
 function textsUnread(unitIds: readonly string[]): SQL {
 	return sql`
 		select 'inbound', inbound_messages.id, ${PLACE}, null, null, inbound_messages.understood_as, null, null, null,
-			null, null, inbound_messages.at, null
+			null, null, inbound_messages.at, null, null
 		from inbound_messages
 		left join place on place.id = (
 			select e.id from episodes e where e.patient_id = inbound_messages.patient_id

@@ -1,12 +1,7 @@
 import type { Person } from '$lib/domain/access/actor';
 import { toRfc3339 } from '$lib/domain/core/instant';
-import {
-	byUrgency,
-	whose,
-	type LooseEnd,
-	type LooseEnds,
-	type OpenThing
-} from '$lib/domain/loose-ends/loose-ends';
+import { whose, type LooseEnd, type LooseEnds, type OpenThing } from '$lib/domain/loose-ends/loose-ends';
+import { byUrgency } from '$lib/domain/loose-ends/order';
 import type { Reader } from '../db';
 import { openThingsSql } from './open-things';
 import { titleOf } from './titles';
@@ -50,6 +45,7 @@ function toLooseEnd(thing: OpenThing): LooseEnd {
 		patientName: thing.patientName,
 		grade: thing.grade,
 		code: thing.code,
+		priority: thing.priority,
 		title: titleOf(thing),
 		askedBy: thing.askedBy,
 		heldBy: thing.heldBy,

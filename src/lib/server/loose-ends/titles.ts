@@ -16,7 +16,11 @@ export function titleOf(thing: OpenThing): string {
 		case 'clearance':
 			return m.home_title_clearance({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'referral':
-			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service]() });
+			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service](), text });
+		case 'mention':
+			return m.home_title_mention({ text });
+		case 'visit-unconfirmed':
+			return m.home_title_visit_unconfirmed();
 		case 'visit-cancelled':
 			return m.home_title_visit_cancelled();
 		case 'message-failed':

@@ -5,7 +5,7 @@ import type { LiveEvent } from '$lib/domain/live/events';
 import type { EntryKind, RefKind } from '$lib/domain/referrals/entries';
 import type { Context } from '../context';
 import type { Tx } from '../db';
-import { entries, threads } from '../db/schema';
+import { entries, mentions, threads } from '../db/schema';
 import { newId } from '../ids';
 
 export interface NewEntry {
@@ -14,7 +14,8 @@ export interface NewEntry {
 	kind: EntryKind;
 	body: string;
 	ref?: { kind: RefKind; id: string };
-	mentions?: string[];
+	/** Whom it asks: the identifier of the question, and of the person. */
+	mentions?: readonly { mentionId: string; id: string }[];
 	/** Taken from the author's role when left out; the system names the strand it speaks for. */
 	strand?: Strand;
 }
@@ -35,8 +36,10 @@ export async function appendEntries(tx: Tx, context: Context, added: NewEntry[])
 		if (!thread) {
 			throw new Error(`Thread ${entry.threadId} is missing: the work named a thread that does not exist.`);
 		}
+		const id = entry.id ?? newId();
+		const asked = entry.mentions ?? [];
 		await tx.insert(entries).values({
-			id: entry.id ?? newId(),
+			id,
 			threadId: entry.threadId,
 			seq: thread.seq,
 			at: context.now,
@@ -46,8 +49,11 @@ export async function appendEntries(tx: Tx, context: Context, added: NewEntry[])
 			body: entry.body,
 			refKind: entry.ref?.kind ?? null,
 			refId: entry.ref?.id ?? null,
-			mentions: entry.mentions ?? []
+			mentions: asked.map((person) => person.id)
 		});
+		for (const { mentionId, id: userId } of asked) {
+			await tx.insert(mentions).values({ id: mentionId, entryId: id, userId });
+		}
 		events.push({ topic: 'thread', kind: 'entry', id: entry.threadId, episodeId: thread.episodeId });
 	}
 	return events;

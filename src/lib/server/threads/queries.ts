@@ -1,12 +1,12 @@
-import { and, asc, eq, gt } from 'drizzle-orm';
+import { and, asc, eq, exists, gt, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import { Problem } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
-import type { EntryLine, ThreadView } from '$lib/domain/referrals/views';
+import type { AskedPerson, EntryLine, ThreadView } from '$lib/domain/referrals/views';
 import { accessThread } from '../access/access';
 import type { Reader } from '../db';
-import { entries, referrals, users } from '../db/schema';
+import { entries, mentions, referrals, users } from '../db/schema';
 import { page, type PageRequest } from '../http/paging';
 
 /** A thread with its referral and its entries, oldest first; the cursor is the number of the last entry. */
@@ -28,7 +28,42 @@ export async function getThread(
 			.limit(request.limit + 1)
 	]);
 	const { items, next } = page(rows, request, (row) => String(row.entry.seq));
-	return { referral, items: items.map(({ entry, author }) => toLine(entry, author)), next };
+	const asked = await askedIn(db, threadId);
+	const lines = items.map(({ entry, author }) => toLine(entry, author, asked.get(entry.id) ?? []));
+	return { referral, items: lines, next };
+}
+
+/** Whom the entries of a thread ask, by entry. */
+async function askedIn(db: Reader, threadId: string): Promise<Map<string, AskedPerson[]>> {
+	const later = alias(entries, 'later');
+	const answered = db
+		.select({ id: later.id })
+		.from(later)
+		.where(
+			and(
+				eq(later.threadId, entries.threadId),
+				gt(later.seq, entries.seq),
+				eq(later.authorId, mentions.userId)
+			)
+		);
+	const rows = await db
+		.select({
+			entryId: mentions.entryId,
+			mentionId: mentions.id,
+			id: users.id,
+			name: users.name,
+			open: sql<number>`${mentions.seenAt} is null and not ${exists(answered)}`
+		})
+		.from(mentions)
+		.innerJoin(entries, eq(entries.id, mentions.entryId))
+		.innerJoin(users, eq(users.id, mentions.userId))
+		.where(eq(entries.threadId, threadId))
+		.orderBy(asc(users.name));
+	const asked = new Map<string, AskedPerson[]>();
+	for (const { entryId, open, ...person } of rows) {
+		asked.set(entryId, [...(asked.get(entryId) ?? []), { ...person, open: open === 1 }]);
+	}
+	return asked;
 }
 
 function seqAfter(cursor: string | null): number {
@@ -39,7 +74,11 @@ function seqAfter(cursor: string | null): number {
 	return seq;
 }
 
-function toLine(entry: typeof entries.$inferSelect, author: EntryLine['author']): EntryLine {
+function toLine(
+	entry: typeof entries.$inferSelect,
+	author: EntryLine['author'],
+	asked: AskedPerson[]
+): EntryLine {
 	return {
 		id: entry.id,
 		seq: entry.seq,
@@ -48,7 +87,8 @@ function toLine(entry: typeof entries.$inferSelect, author: EntryLine['author'])
 		strand: entry.strand,
 		kind: entry.kind,
 		body: entry.body,
-		ref: entry.refKind && entry.refId ? { kind: entry.refKind, id: entry.refId } : null
+		ref: entry.refKind && entry.refId ? { kind: entry.refKind, id: entry.refId } : null,
+		asked
 	};
 }
 

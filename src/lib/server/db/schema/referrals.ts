@@ -68,3 +68,19 @@ export const entries = sqliteTable(
 		index('entries_ref').on(t.refKind, t.refId)
 	]
 );
+
+/** A question that an entry puts to somebody: open until they write into the thread, or say that they have seen it. */
+export const mentions = sqliteTable(
+	'mentions',
+	{
+		id: id(),
+		entryId: text('entry_id')
+			.notNull()
+			.references(() => entries.id),
+		userId: text('user_id')
+			.notNull()
+			.references(() => users.id),
+		seenAt: instant('seen_at')
+	},
+	(t) => [uniqueIndex('mentions_once').on(t.entryId, t.userId), index('mentions_open').on(t.userId, t.seenAt)]
+);

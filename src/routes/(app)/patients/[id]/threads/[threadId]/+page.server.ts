@@ -8,7 +8,18 @@ import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
 import { askClearanceAction, askForm } from '../../ask-clearance';
-import { accept, close, decline, maybeReasonForm, post, postForm, reasonForm, withdraw } from './actions';
+import {
+	accept,
+	close,
+	decline,
+	maybeReasonForm,
+	post,
+	postForm,
+	reasonForm,
+	seen,
+	seenForm,
+	withdraw
+} from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 const PAGE = 200;
@@ -16,15 +27,18 @@ const PAGE = 200;
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => {
 		const { threadId } = event.params;
-		const [thread, { nameboard, zone, now }] = await Promise.all([
+		const [thread, people, { nameboard, zone, now }] = await Promise.all([
 			wholeThread(context, threadId, event),
+			read.colleagues(context, idParam(event)),
 			event.parent()
 		]);
 		return {
 			thread,
 			threadId,
+			people,
 			forms: {
 				post: await superValidate(zod4(postForm), { id: 'post' }),
+				seen: await superValidate(zod4(seenForm), { id: 'seen' }),
 				accept: await superValidate(zod4(maybeReasonForm), { id: 'accept' }),
 				decline: await superValidate(zod4(reasonForm), { id: 'decline' }),
 				close: await superValidate(zod4(maybeReasonForm), { id: 'close' }),
@@ -33,6 +47,7 @@ export const load: PageServerLoad = (event) =>
 			},
 			keys: {
 				post: newFormKey(),
+				seen: newFormKey(),
 				accept: newFormKey(),
 				decline: newFormKey(),
 				close: newFormKey(),
@@ -42,7 +57,7 @@ export const load: PageServerLoad = (event) =>
 		};
 	});
 
-export const actions: Actions = { post, accept, decline, close, withdraw, ask: askClearanceAction };
+export const actions: Actions = { post, seen, accept, decline, close, withdraw, ask: askClearanceAction };
 
 /** A thread with all its entries; one of another patient is not there. */
 async function wholeThread(context: PersonContext, id: string, event: RequestEvent): Promise<ThreadView> {

@@ -16,11 +16,12 @@ import {
 	declineReferral,
 	withdrawReferral
 } from '$lib/server/referrals/actions';
-import { postEntry } from '$lib/server/threads/actions';
+import { markSeen, postEntry } from '$lib/server/threads/actions';
 import { leadOnWithoutScript } from '../../without-script';
 
 /** The forms of a thread. They say the fields' own words where the API says their names. */
-export const postForm = z.object({ body: text('Entry', 8000) });
+export const postForm = z.object({ body: text('Entry', 8000), mention: z.string().max(64).default('') });
+export const seenForm = z.object({ mentionId: z.string().max(64).default('') });
 export const reasonForm = z.object({ reason: reason('Reason') });
 export const maybeReasonForm = reasonForm.partial();
 
@@ -28,10 +29,21 @@ export const post = formAction({
 	schema: postForm,
 	id: 'post',
 	words: { 'wrong-state': () => m.referrals_entry_withdrawn_closed() },
-	run: async (context, { body }, event) => {
-		const { result } = await postEntry(context, threadOf(event), { body });
+	run: async (context, { body, mention }, event) => {
+		const asked = mention === '' ? {} : { mentions: [mention] };
+		const { result } = await postEntry(context, threadOf(event), { body, ...asked });
 		leadOnWithoutScript(event, `${event.url.pathname}#entry-${result.seq}`);
 		return m.referrals_entry_sent();
+	}
+});
+
+export const seen = formAction({
+	schema: seenForm,
+	id: 'seen',
+	run: async (context, { mentionId }, event) => {
+		await markSeen(context, mentionId);
+		leadOnWithoutScript(event, event.url.pathname);
+		return m.referrals_seen();
 	}
 });
 
