@@ -190,4 +190,28 @@ describe('the outbox against the stand-in', () => {
 		expect((await rowOf(id)).state).toBe('accepted');
 		expect(await arrived(id)).toBe(1);
 	});
+
+	it('F12: twenty refusals with a wish to wait slow everything down, and lose and double nothing', async () => {
+		const ids = await Promise.all(Array.from({ length: 6 }, reminder));
+		await gateway.fault('sms', '429', 20);
+		const sending = worker();
+		const attemptedAt: number[] = [];
+		for (let round = 0; round < 60; round += 1) {
+			if ((await sending.settle()) > 0) {
+				attemptedAt.push(now);
+			}
+			now += 500;
+		}
+		// The stand-in asks for a second each time: between two rounds of attempts lies no less.
+		const gaps = attemptedAt.slice(1).map((at, index) => at - (attemptedAt[index] ?? 0));
+		expect(Math.min(...gaps)).toBeGreaterThanOrEqual(1_000);
+		for (let round = 0; round < 90; round += 1) {
+			now += 60_000;
+			await sending.settle();
+		}
+		for (const id of ids) {
+			expect((await rowOf(id)).state).toBe('accepted');
+			expect(await arrived(id)).toBe(1);
+		}
+	});
 });

@@ -1,6 +1,6 @@
 import { and, eq, inArray } from 'drizzle-orm';
 import type { LiveEvent } from '$lib/domain/live/events';
-import { readStatus } from '$lib/domain/messages/status';
+import { readStatus, type SmsStatus } from '$lib/domain/messages/status';
 import type { Tx } from '../db';
 import { outbox, smsStatuses } from '../db/schema';
 import { newId } from '../ids';
@@ -19,11 +19,24 @@ export async function receiveStatus(form: GatewayForm, now: number): Promise<voi
 	if (status === null) {
 		return;
 	}
-	const errorCode = /^\d{1,10}$/.exec(form.get('ErrorCode') ?? '')?.[0] ?? null;
+	await noteStatus(providerId, status, form.get('ErrorCode') ?? null, now);
+}
+
+/**
+ * Keep a status that the gateway has told, asked or unasked, and move the message on by all of them.
+ * @param errorCode the gateway's number of the error; anything else is left out
+ */
+export async function noteStatus(
+	providerId: string,
+	status: SmsStatus,
+	errorCode: string | null,
+	now: number
+): Promise<void> {
+	const known = /^\d{1,10}$/.exec(errorCode ?? '')?.[0] ?? null;
 	await changing(now, async (tx, events) => {
 		const [stored] = await tx
 			.insert(smsStatuses)
-			.values({ id: newId(), providerId, status, errorCode, at: now })
+			.values({ id: newId(), providerId, status, errorCode: known, at: now })
 			.onConflictDoNothing()
 			.returning({ id: smsStatuses.id });
 		if (stored) {

@@ -7,6 +7,7 @@ import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels
 import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
 import { takeBackForeign } from './record';
+import { SilentMessages } from './silent';
 
 /**
  * So many messages are on their way at once, counted for each channel: a gateway that hangs takes neither the
@@ -44,6 +45,8 @@ export class OutboxWorker {
 	readonly #pausedUntil = new Map<ChannelName, number>();
 	/** Whether the last attempt on a channel got through; not there before the first. */
 	readonly #working = new Map<ChannelName, boolean>();
+	readonly #silent: SilentMessages;
+	#asking: Promise<unknown> = Promise.resolve();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
 	#timer: NodeJS.Timeout | null = null;
@@ -52,6 +55,7 @@ export class OutboxWorker {
 
 	constructor(options: OutboxOptions) {
 		this.#channels = options.channels;
+		this.#silent = new SilentMessages(options.channels.sms);
 		this.#owner = options.owner ?? newId();
 		this.#now = options.now ?? now;
 		this.#random = options.random ?? Math.random;
@@ -60,10 +64,15 @@ export class OutboxWorker {
 	start(): void {
 		this.#stopped = false;
 		this.#unregister = onCommit(() => this.wake());
-		this.#timer = setInterval(() => this.wake(), BEAT_MS);
+		this.#timer = setInterval(() => this.#beat(), BEAT_MS);
 		this.#timer.unref();
 		this.#round = this.#round.then(() => this.#takeBack());
 		this.wake();
+	}
+
+	#beat(): void {
+		this.wake();
+		this.#asking = this.#silent.ask(this.#now());
 	}
 
 	/** Ask for a round soon. */
@@ -99,7 +108,7 @@ export class OutboxWorker {
 		}
 		await this.#round;
 		const patience = new Promise((resolve) => setTimeout(resolve, STOP_PATIENCE_MS).unref());
-		await Promise.race([Promise.all(this.#endings()), patience]);
+		await Promise.race([Promise.all([...this.#endings(), this.#asking]), patience]);
 	}
 
 	/** Claim as many as there is room for and set them going. Rounds never overlap. */

@@ -26,6 +26,17 @@ export interface Channel {
 	 * has null here when it cannot be asked.
 	 */
 	lookUp: ((message: Outgoing) => Promise<string[] | null>) | null;
+	/**
+	 * What became of a message that was accepted under this identifier, in the gateway's own word; null when it gave
+	 * no usable answer. Left out where the gateway cannot be asked.
+	 */
+	statusOf?: (providerId: string) => Promise<Told | null>;
+}
+
+/** A status as the gateway words it, with its number of the error where there was one. */
+export interface Told {
+	status: string;
+	errorCode: string | null;
 }
 
 export const CHANNELS = ['sms', 'mail'] as const;

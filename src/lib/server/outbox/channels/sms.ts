@@ -3,7 +3,7 @@ import { smsOutcome } from '$lib/domain/messages/outcome';
 import { readRetryAfter } from '$lib/domain/messages/retry';
 import { now } from '../../clock';
 import type { Env } from '../../env';
-import type { Channel, Outgoing, Sent } from './channel';
+import type { Channel, Outgoing, Sent, Told } from './channel';
 import { GATEWAY_LIMIT_MS, GatewayClient, GatewayRefusal } from './gateway-client';
 
 /** How many of the newest messages to one number are looked through for one of unknown outcome. */
@@ -25,7 +25,8 @@ export function smsChannel(
 	return {
 		send: ({ to, body }) =>
 			judged(() => messages.create({ to, from: gateway.from, body, statusCallback: statusUrl })),
-		lookUp: (message) => lookUp(messages, message)
+		lookUp: (message) => lookUp(messages, message),
+		statusOf: (providerId) => statusOf(messages, providerId)
 	};
 }
 
@@ -59,6 +60,15 @@ async function lookUp(messages: Messages, { to, body }: Outgoing): Promise<strin
 	try {
 		const found = await messages.list({ to, limit: LOOK_UP_LIMIT, pageSize: LOOK_UP_LIMIT });
 		return found.filter((message) => message.body === body).map(({ sid }) => sid);
+	} catch {
+		return null;
+	}
+}
+
+async function statusOf(messages: Messages, providerId: string): Promise<Told | null> {
+	try {
+		const { status, errorCode } = await messages(providerId).fetch();
+		return typeof status === 'string' ? { status, errorCode: errorCode ? String(errorCode) : null } : null;
 	} catch {
 		return null;
 	}
