@@ -36,7 +36,7 @@ export async function seat(
 
 /** A journey that kills the server sees its browser complain about the lost connection; nothing else is forgiven. */
 function isLostConnection(text: string): boolean {
-	return /net::ERR_(CONNECTION_REFUSED|CONNECTION_RESET|INCOMPLETE_CHUNKED_ENCODING|EMPTY_RESPONSE)/.test(
+	return /net::ERR_(CONNECTION_REFUSED|CONNECTION_RESET|INCOMPLETE_CHUNKED_ENCODING|EMPTY_RESPONSE|INTERNET_DISCONNECTED)/.test(
 		text
 	);
 }
@@ -53,4 +53,18 @@ export async function signIn(page: Page, who: keyof typeof SIGN_INS): Promise<vo
 /** The page hears what happens: the state that every shell shows. */
 export async function expectConnected(page: Page): Promise<void> {
 	await expect(page.getByText('Connected', { exact: true })).toBeVisible();
+}
+
+/**
+ * Hold back the scripts of the next pages, as a slow machine on a slow network does: the page is painted and takes
+ * what is typed, and nothing has taken it over yet. Answers the function that lets them go.
+ */
+export async function holdScripts(page: Page): Promise<() => void> {
+	let release = (): void => {};
+	const released = new Promise<void>((resolve) => (release = resolve));
+	await page.route('**/_app/immutable/**/*.js', async (route) => {
+		await released;
+		await route.continue();
+	});
+	return release;
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { keepDraft, keyFor, loadDraft, NO_DRAFT, type Store } from './draft';
+import { joined, keepDraft, keyFor, loadDraft, NO_DRAFT, type Store } from './draft';
 
 function memory(): Store & { size(): number } {
 	const kept = new Map<string, string>();
@@ -67,5 +67,20 @@ describe('a draft', () => {
 		const store = { getItem: refuse, setItem: refuse, removeItem: refuse };
 		keepDraft(store, 't1', { body: 'x', mention: '', tried: null });
 		expect(loadDraft(store, 't1')).toEqual(NO_DRAFT);
+	});
+});
+
+describe('a draft joined with what was entered before the page was ready', () => {
+	const kept = { body: 'kept', mention: 'u1', tried: { body: 'kept', mention: 'u1', key: 'k1' } };
+	const early = (body: string, mention = '') => ({ body, mention });
+	it.each([
+		['nothing kept, nothing typed', NO_DRAFT, early(''), NO_DRAFT],
+		['kept alone', kept, early(''), kept],
+		['typed alone', NO_DRAFT, early('typed', 'u2'), { body: 'typed', mention: 'u2', tried: null }],
+		['the same in both', kept, early('kept'), kept],
+		['one and another', kept, early('typed'), { ...kept, body: 'kept\ntyped' }],
+		['another person to ask', kept, early('', 'u2'), { ...kept, mention: 'u2' }]
+	])('%s', (_, draft, entered, expected) => {
+		expect(joined(draft, entered)).toEqual(expected);
 	});
 });

@@ -35,6 +35,12 @@ export function loadDraft(store: Store, threadId: string): Draft {
 	}
 }
 
+/** The kept draft together with what was entered before the page was ready: nothing is lost, nothing stands twice. */
+export function joined(kept: Draft, early: Pick<Draft, 'body' | 'mention'>): Draft {
+	const parts = kept.body === early.body ? [kept.body] : [kept.body, early.body];
+	return { ...kept, body: parts.filter(Boolean).join('\n'), mention: early.mention || kept.mention };
+}
+
 /** Keep a draft, or forget it once there is nothing left of it. A browser that keeps nothing is no reason to fail. */
 export function keepDraft(store: Store, threadId: string, draft: Draft): void {
 	try {
