@@ -27,7 +27,7 @@ async function eventually(holds: () => boolean): Promise<void> {
 	}
 }
 
-function openGuarded() {
+function openGuarded(options: { beats?: boolean } = {}) {
 	let sink: Sink | null = null;
 	let stopped = 0;
 	const response = guardedStream(
@@ -35,7 +35,8 @@ function openGuarded() {
 			sink = given;
 			return () => (stopped += 1);
 		},
-		() => Promise.resolve(true)
+		() => Promise.resolve(true),
+		options
 	);
 	const send = (frame: ReturnType<typeof change>) => (sink as Sink | null)?.send(frame);
 	return { response, send, stops: () => stopped, end: () => (sink as Sink | null)?.end() };
@@ -64,6 +65,23 @@ describe('one guarded stream', () => {
 		expect(text).toContain('id: 42\nevent: change\ndata: {"topic":"thread"');
 		expect(text).toContain('with\\nnew line\\r');
 		end();
+	});
+
+	it('tells a page that asked for beats the server’s instant, without an id that would move its place', async () => {
+		const { response, send, end } = openGuarded({ beats: true });
+		send(change(42));
+		const text = await readUntil(response, /event: beat/);
+		const block = text.split('\n\n').find((each) => each.includes('event: beat'));
+		expect(block).toMatch(/^event: beat\ndata: \d{13}$/);
+		end();
+	});
+
+	it('sends other programs nothing but what the contract names', async () => {
+		const { response, send, end } = openGuarded();
+		send(change(42));
+		end();
+		const text = await readUntil(response, /never/);
+		expect(text.match(/^event: .*$/gm)).toEqual(['event: change']);
 	});
 
 	it('cuts a reader that does not read, and lets go of everything', async () => {

@@ -1,48 +1,76 @@
+import { SILENCE_MS } from '$lib/domain/live/beat';
 import type { StreamEvent } from '$lib/domain/live/events';
+import { LiveStream } from './live-stream';
 
 const CHANNEL = 'ropewalk-live';
 const LOCK = 'ropewalk-live-leader';
-const CHECK_MS = 20_000;
-const RETRY_MS = 2_000;
+const WATCH_MS = 1_000;
 
+/** What the tab with the stream tells the others; `hello` is a new tab that asks. */
 type Message =
 	| { kind: 'change'; cursor: number; event: StreamEvent }
 	| { kind: 'reset'; cursor: number }
-	| { kind: 'state'; connected: boolean; since: number | null }
+	| { kind: 'beat'; serverNow: number }
+	| { kind: 'lost'; since: number | null }
 	| { kind: 'signed-out' }
 	| { kind: 'hello' };
+
+/** Who is told what the stream brings. */
+export interface Listener {
+	heard(event: StreamEvent): void;
+	/** Something may have been missed: everything on screen has to be read again. */
+	lostTrack(): void;
+	/** The server's instant, milliseconds UTC, as fresh as the network brought it. */
+	told(serverNow: number): void;
+}
 
 /**
  * One live stream for all tabs of a browser: browsers allow six connections to a host, and ten open tabs would use
  * them up. The tab that holds a lock keeps the stream and passes on what it hears; when it closes, another takes
- * the lock and goes on from the last cursor. The stream itself resumes by the browser's own EventSource.
+ * the lock and goes on from the last cursor. Every tab judges for itself: it is connected while it hears beats or
+ * events, and no other sign counts.
  */
 export class LiveConnection {
 	connected = $state(false);
-	/** When the stream was lost, milliseconds UTC; null when it was never up. */
+	/** When the connection was lost, by the server's clock, milliseconds UTC; null when it was never up. */
 	since = $state<number | null>(null);
+	/** The device itself says that it has no network. */
+	offline = $state(false);
 	/** The sign-in has ended: nothing comes any more until somebody signs in again. */
 	signedOut = $state(false);
 
 	#cursor: number;
-	#source: EventSource | null = null;
+	readonly #listener: Listener;
+	#stream: LiveStream | null = null;
 	#channel: BroadcastChannel | null = null;
 	#stopped = new AbortController();
-	#checker: ReturnType<typeof setInterval> | undefined;
+	/** When the last beat or event came, or the stream was last opened, by this device's clock. */
+	#sign = 0;
+	/** Server's clock minus this device's. */
+	#offset = 0;
 
-	constructor(
-		cursor: number,
-		private readonly heard: (event: StreamEvent) => void,
-		private readonly lostTrack: () => void
-	) {
+	/** @param cursor the place in the log from before the page was read */
+	constructor(cursor: number, listener: Listener) {
 		this.#cursor = cursor;
+		this.#listener = listener;
 	}
 
 	/** Start listening; answers the function that stops it. Browser only. */
 	start(): () => void {
+		const { signal } = this.#stopped;
+		this.#sign = Date.now();
 		this.#channel = new BroadcastChannel(CHANNEL);
 		this.#channel.onmessage = ({ data }: MessageEvent<Message>) => this.#receive(data);
 		this.#say({ kind: 'hello' });
+		const watcher = setInterval(() => this.#watch(), WATCH_MS);
+		signal.addEventListener('abort', () => clearInterval(watcher));
+		addEventListener('offline', () => this.#wentOffline(), { signal });
+		addEventListener('online', () => this.#cameOnline(), { signal });
+		addEventListener('pageshow', ({ persisted }) => persisted && this.#reopen(), { signal });
+		document.addEventListener('visibilitychange', () => this.#watch(), { signal });
+		if (!navigator.onLine) {
+			this.#wentOffline();
+		}
 		void this.#lead();
 		return () => this.#stop();
 	}
@@ -51,71 +79,61 @@ export class LiveConnection {
 		const { signal } = this.#stopped;
 		const hold = () =>
 			new Promise<void>((resolve) => {
-				this.#open();
-				this.#checker = setInterval(() => void this.#check(), CHECK_MS);
-				addEventListener('online', () => this.#reopen(), { signal });
+				this.#stream = new LiveStream(() => this.#cursor, this.#ears());
+				this.#reopen();
 				signal.addEventListener('abort', () => resolve());
 			});
 		// Without the lock (an old browser, an address without https) every tab keeps a stream of its own.
 		await (navigator.locks?.request(LOCK, { signal }, hold).catch(() => {}) ?? hold());
 	}
 
-	#open(): void {
-		const source = new EventSource(`/api/live?after=${this.#cursor}`);
-		this.#source = source;
-		source.onopen = () => this.#setState(true);
-		source.addEventListener('change', (event) =>
-			this.#tell({
-				kind: 'change',
-				cursor: Number(event.lastEventId),
-				event: JSON.parse(event.data) as StreamEvent
-			})
-		);
-		source.addEventListener('reset', (event) =>
-			this.#tell({ kind: 'reset', cursor: Number(event.lastEventId) })
-		);
-		source.onerror = () => {
-			this.#setState(false);
-			// A refusal closes it for good; a cut connection is retried by the browser itself.
-			if (source.readyState === EventSource.CLOSED && !this.#stopped.signal.aborted) {
-				void this.#refused(source);
-			}
+	#ears(): ConstructorParameters<typeof LiveStream>[1] {
+		return {
+			change: (event, cursor) => this.#tell({ kind: 'change', cursor, event }),
+			reset: (cursor) => this.#tell({ kind: 'reset', cursor }),
+			beat: (serverNow) => this.#tell({ kind: 'beat', serverNow }),
+			broke: () => this.#lose(Date.now()),
+			signedOut: () => this.#tell({ kind: 'signed-out' })
 		};
 	}
 
-	/** Refused: the sign-in ended, or the server is stopping. The first is told, the second waits for it. */
-	async #refused(source: EventSource): Promise<void> {
-		const status = await fetch('/api/me', { cache: 'no-store' }).then(
-			(response) => response.status,
-			() => 0
-		);
-		if (status === 401) {
-			this.#tell({ kind: 'signed-out' });
+	/** A connection dies without a word: silence is the sign, for the tab with the stream and for the others. */
+	#watch(): void {
+		// The device's clock may have been set back; what cannot be judged is opened anew.
+		if (Math.abs(Date.now() - this.#sign) <= SILENCE_MS) {
 			return;
 		}
-		setTimeout(() => source === this.#source && this.#reopen(), RETRY_MS);
+		this.#lose(this.#sign);
+		if (!this.signedOut) {
+			this.#reopen();
+		}
+	}
+
+	#wentOffline(): void {
+		this.offline = true;
+		this.#stream?.close();
+		this.#lose(Date.now());
+	}
+
+	#cameOnline(): void {
+		this.offline = false;
+		this.#reopen();
 	}
 
 	#reopen(): void {
-		this.#source?.close();
-		if (!this.#stopped.signal.aborted) {
-			this.#open();
-		}
+		this.#sign = Date.now();
+		this.#stream?.open();
 	}
 
-	/**
-	 * A connection can be dead without an error, and heartbeats are comments, which pages do not see. So ask: no
-	 * answer means not connected, and after that only a stream opened anew says connected again.
-	 */
-	async #check(): Promise<void> {
-		const alive = await fetch('/healthz', { cache: 'no-store' }).then(
-			(response) => response.ok,
-			() => false
-		);
-		if (!alive) {
-			this.#setState(false);
-		} else if (!this.connected && !this.signedOut) {
-			this.#reopen();
+	/** Not connected since `at`, this device's clock. A tab without the stream says it of itself alone. */
+	#lose(at: number): void {
+		if (!this.connected) {
+			return;
+		}
+		const lost: Message = { kind: 'lost', since: at + this.#offset };
+		this.#receive(lost);
+		if (this.#stream) {
+			this.#say(lost);
 		}
 	}
 
@@ -129,32 +147,54 @@ export class LiveConnection {
 		switch (message.kind) {
 			case 'change':
 				this.#cursor = Math.max(this.#cursor, message.cursor);
-				this.heard(message.event);
+				this.#live();
+				this.#listener.heard(message.event);
 				break;
 			case 'reset':
 				this.#cursor = message.cursor;
-				this.lostTrack();
+				this.#live();
+				this.#listener.lostTrack();
 				break;
-			case 'state':
-				this.connected = message.connected;
+			case 'beat':
+				this.#offset = message.serverNow - Date.now();
+				this.#live();
+				this.#listener.told(message.serverNow);
+				break;
+			case 'lost':
+				this.connected = false;
 				this.since = message.since;
-				this.signedOut &&= !message.connected;
 				break;
 			case 'signed-out':
+				this.connected = false;
 				this.signedOut = true;
 				break;
 			case 'hello':
-				if (this.#source) {
-					this.#say({ kind: 'state', connected: this.connected, since: this.since });
-				}
+				this.#greet();
 		}
 	}
 
-	#setState(connected: boolean): void {
-		if (connected === this.connected) {
+	/** Something came: the one thing that makes a tab connected. */
+	#live(): void {
+		this.#sign = Date.now();
+		this.connected = true;
+		this.since = null;
+		this.offline = false;
+		this.signedOut = false;
+	}
+
+	/** A new tab wants to know; and where it could be opened, somebody may have signed in again. */
+	#greet(): void {
+		if (!this.#stream) {
 			return;
 		}
-		this.#tell({ kind: 'state', connected, since: connected ? null : Date.now() });
+		if (this.connected) {
+			this.#say({ kind: 'beat', serverNow: Date.now() + this.#offset });
+			return;
+		}
+		this.#say({ kind: 'lost', since: this.since });
+		if (this.signedOut) {
+			this.#reopen();
+		}
 	}
 
 	#say(message: Message): void {
@@ -162,8 +202,7 @@ export class LiveConnection {
 	}
 
 	#stop(): void {
-		clearInterval(this.#checker);
-		this.#source?.close();
+		this.#stream?.stop();
 		this.#stopped.abort();
 		this.#channel?.close();
 		this.#channel = null;

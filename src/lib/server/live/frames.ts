@@ -32,6 +32,14 @@ export function rewriteBlock(block: string): string {
 	}
 }
 
+/**
+ * What a page hears of a heartbeat: comments are not shown to it, so a page that asked for beats gets an event
+ * beside them. It has no id and so moves no resume point; its data is the server's instant, milliseconds UTC.
+ */
+export function beatBlock(now: number): string {
+	return `event: beat\ndata: ${now}\n\n`;
+}
+
 /** Cut a growing text into whole blocks; the rest waits for more. */
 export function takeBlocks(text: string): { blocks: string[]; rest: string } {
 	const parts = text.split('\n\n');

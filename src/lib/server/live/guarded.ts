@@ -1,10 +1,11 @@
 import { produce } from 'sveltekit-sse';
+import { BEAT_MS } from '$lib/domain/live/beat';
+import { now } from '../clock';
 import { log } from '../log';
-import { rewriteBlock, takeBlocks, toEmit, type Frame } from './frames';
+import { beatBlock, rewriteBlock, takeBlocks, toEmit, type Frame } from './frames';
 
 /** A reader that lets this much pile up is cut; it resumes where it stopped and never slows the others. */
 export const MAX_QUEUED_BYTES = 256 * 1024;
-const HEARTBEAT_MS = 15_000;
 const RETRY_MS = 1_000;
 
 export interface Sink {
@@ -19,14 +20,19 @@ export interface Sink {
  *
  * @param start called once with the sink; what it returns is called when the stream is over
  * @param beat called before each heartbeat; false ends the stream
+ * @param options `beats`: with whatever is sent, heartbeats included, goes an event that a page can hear
  */
-export function guardedStream(start: (sink: Sink) => () => void, beat: () => Promise<boolean>): Response {
+export function guardedStream(
+	start: (sink: Sink) => () => void,
+	beat: () => Promise<boolean>,
+	options: { beats?: boolean } = {}
+): Response {
 	let stop = () => {};
 	const inner = produce(
 		({ emit, lock }) => {
 			const end = () => lock.set(false);
 			const sink: Sink = { send: (frame) => !emit(...toEmit(frame)).error, end };
-			const timer = setInterval(() => void heartbeat(beat, end), HEARTBEAT_MS);
+			const timer = setInterval(() => void heartbeat(beat, end), BEAT_MS);
 			timer.unref();
 			let close = () => {};
 			try {
@@ -40,10 +46,10 @@ export function guardedStream(start: (sink: Sink) => () => void, beat: () => Pro
 				close();
 			};
 		},
-		{ ping: HEARTBEAT_MS, stop: () => safely(() => stop()) }
+		{ ping: BEAT_MS, stop: () => safely(() => stop()) }
 	);
 	const body = inner.body as ReadableStream<Uint8Array>;
-	return new Response(bounded(body), {
+	return new Response(bounded(body, options.beats ?? false), {
 		headers: {
 			'content-type': 'text/event-stream',
 			'cache-control': 'no-store',
@@ -72,7 +78,7 @@ function safely(work: () => void): void {
 }
 
 /** Pass blocks on at the reader's pace and count what waits. */
-function bounded(inner: ReadableStream<Uint8Array>): ReadableStream<Uint8Array> {
+function bounded(inner: ReadableStream<Uint8Array>, beats: boolean): ReadableStream<Uint8Array> {
 	const reader = inner.getReader();
 	const encoder = new TextEncoder();
 	const queue: Uint8Array[] = [encoder.encode(`retry: ${RETRY_MS}\n\n`)];
@@ -106,6 +112,9 @@ function bounded(inner: ReadableStream<Uint8Array>): ReadableStream<Uint8Array> 
 			const taken = takeBlocks(rest + decoder.decode(value, { stream: true }));
 			rest = taken.rest;
 			taken.blocks.forEach((block) => push(rewriteBlock(block)));
+			if (beats && taken.blocks.length > 0) {
+				push(beatBlock(now()));
+			}
 			if (queued > MAX_QUEUED_BYTES) {
 				log().warn({ queued }, 'live reader too slow, cut');
 				return cut();

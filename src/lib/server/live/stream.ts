@@ -44,11 +44,13 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
  * Open the live stream of one person.
  * @param after the cursor to resume from; null starts with what happens next
  * @param stillGood whether the sign-in or token behind it is still good; asked again at each heartbeat
+ * @param options `beats`: for the product's own pages, which cannot see a heartbeat that is a comment
  */
 export function openStream(
 	person: Person,
 	stillGood: () => Promise<boolean>,
-	after: number | null
+	after: number | null,
+	options: { beats?: boolean } = {}
 ): Response {
 	if (closing) {
 		throw new Problem('not-ready', 'The server is stopping; try again in a few seconds.');
@@ -75,7 +77,7 @@ export function openStream(
 			open.delete(sink);
 		};
 	};
-	return guardedStream(start, stillEntitled);
+	return guardedStream(start, stillEntitled, options);
 }
 
 /** One client's events in order: first the replay, then what was heard meanwhile, then live. */

@@ -7,5 +7,6 @@ import { openStream } from '$lib/server/live/stream';
 export const GET: RequestHandler = ({ locals, request, url }) =>
 	answering(async () => {
 		const { actor } = requirePerson(locals.context);
-		return openStream(actor, locals.credentialStillGood, resumePoint(request.headers, url));
+		const after = resumePoint(request.headers, url);
+		return openStream(actor, locals.credentialStillGood, after, { beats: url.searchParams.has('beats') });
 	});
