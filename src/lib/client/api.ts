@@ -4,7 +4,7 @@ import { v7 } from 'uuid';
 export class ApiProblem extends Error {
 	constructor(
 		readonly status: number,
-		/** The stable code, such as `already-taken`; `network` when no answer came. */
+		/** The stable code, such as `already-taken`; `network` when no answer came, `offline` when it could not. */
 		readonly code: string,
 		readonly detail: string,
 		readonly body: Record<string, unknown> = {}
@@ -42,8 +42,14 @@ async function send(fetcher: typeof fetch, path: string, init: RequestInit): Pro
 	try {
 		return await fetcher(path, init);
 	} catch {
-		throw new ApiProblem(0, 'network', 'The server cannot be reached. Nothing is lost; try again.');
+		const code = deviceIsOffline() ? 'offline' : 'network';
+		throw new ApiProblem(0, code, 'The server cannot be reached. Nothing is lost; try again.');
 	}
+}
+
+/** Whether the device itself says that it has no network. */
+function deviceIsOffline(): boolean {
+	return typeof navigator !== 'undefined' && navigator.onLine === false;
 }
 
 async function answer<T>(response: Response): Promise<T> {

@@ -65,6 +65,9 @@ export function problemWords(error: unknown, reader?: Reader): ProblemWords {
 	if (error.status === 401) {
 		return { title: m.common_signed_out_title(), text: m.common_signed_out_link(), signIn: true };
 	}
+	if (error.code === 'offline') {
+		return { title: m.common_offline_title(), text: m.common_offline_text(), signIn: false };
+	}
 	if (error.status === 0 || error.status >= 500) {
 		return { title: m.common_unreached_title(), text: m.common_unreached_text(), signIn: false };
 	}

@@ -70,6 +70,7 @@ describe('Deeds', () => {
 describe('problemWords', () => {
 	it.each([
 		[0, 'network', 'No answer: this may not have arrived', false],
+		[0, 'offline', 'Not sent: this device has no network', false],
 		[503, 'not-ready', 'No answer: this may not have arrived', false],
 		[401, 'not-signed-in', 'Not sent: your sign-in has run out', true],
 		[409, 'wrong-state', 'Not done', false]

@@ -52,7 +52,7 @@ export function formState<T extends Record<string, unknown>>(
 			},
 			onResult: (event) => {
 				const { result } = event;
-				outcome = outcomeOf(result, routes.signIn());
+				outcome = outcomeOf(result, routes.signIn(), !navigator.onLine);
 				if (outcome) {
 					event.cancel();
 					return;

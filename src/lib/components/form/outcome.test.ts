@@ -19,9 +19,30 @@ describe('outcomeOf', () => {
 			{ kind: 'refused', message: 'Not yours.' }
 		],
 		['499', { type: 'error', status: 499, error: {} }, { kind: 'refused', message: '' }],
-		['500', { type: 'error', status: 500, error: { message: 'x' } }, { kind: 'unreached' }],
-		['no answer', { type: 'error', error: { message: 'Failed to fetch' } }, { kind: 'unreached' }]
+		['500', { type: 'error', status: 500, error: { message: 'x' } }, { kind: 'unreached', offline: false }],
+		[
+			'no answer',
+			{ type: 'error', error: { message: 'Failed to fetch' } },
+			{ kind: 'unreached', offline: false }
+		]
 	])('of %s', (_, answer, expected) => {
-		expect(outcomeOf(answer, '/sign-in')).toEqual(expected);
+		expect(outcomeOf(answer, '/sign-in', false)).toEqual(expected);
+	});
+
+	it.each<[string, ActionAnswer, Outcome | null]>([
+		['no answer', { type: 'error', error: {} }, { kind: 'unreached', offline: true }],
+		[
+			'no answer, as the form library hands it on',
+			{ type: 'error', status: 500, error: new TypeError('Failed to fetch') },
+			{ kind: 'unreached', offline: true }
+		],
+		[
+			'500, which is an answer',
+			{ type: 'error', status: 500, error: {} },
+			{ kind: 'unreached', offline: false }
+		],
+		['a success', { type: 'success' }, null]
+	])('of %s on a device that has no network', (_, answer, expected) => {
+		expect(outcomeOf(answer, '/sign-in', true)).toEqual(expected);
 	});
 });

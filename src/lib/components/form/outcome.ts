@@ -3,7 +3,10 @@
  * gone, or the server failed. None of them may cost what was typed.
  */
 export type Outcome =
-	{ kind: 'sign-in'; href: string } | { kind: 'unreached' } | { kind: 'refused'; message: string };
+	| { kind: 'sign-in'; href: string }
+	/** No answer came; `offline` when the device itself says that it has no network. */
+	| { kind: 'unreached'; offline: boolean }
+	| { kind: 'refused'; message: string };
 
 /** The part of an action's result that decides. */
 export type ActionAnswer =
@@ -14,8 +17,9 @@ export type ActionAnswer =
 /**
  * The outcome to tell of, or `null` when the answer speaks for itself: a success, errors beside fields, or a
  * redirect to where the person is meant to go. An expired sign-in shows as 401 or as a redirect to `signIn`.
+ * @param offline whether the device says that it has no network
  */
-export function outcomeOf(answer: ActionAnswer, signIn: string): Outcome | null {
+export function outcomeOf(answer: ActionAnswer, signIn: string, offline: boolean): Outcome | null {
 	if (answer.type === 'redirect') {
 		const expired = answer.location.split('?')[0] === signIn;
 		return expired ? { kind: 'sign-in', href: answer.location } : null;
@@ -26,8 +30,11 @@ export function outcomeOf(answer: ActionAnswer, signIn: string): Outcome | null 
 	if (answer.status === 401) {
 		return { kind: 'sign-in', href: signIn };
 	}
-	// Without a status there was no answer at all: nobody knows whether it arrived, and the key makes it safe to ask again.
-	return answer.status === undefined || answer.status >= 500
-		? { kind: 'unreached' }
-		: { kind: 'refused', message: answer.error.message ?? '' };
+	// What was thrown here, and not said by the server, is no answer at all, whatever status the form library gives
+	// it: nobody knows whether it arrived, and the key makes it safe to ask again.
+	const unanswered = answer.status === undefined || answer.error instanceof Error;
+	if (unanswered || (answer.status ?? 0) >= 500) {
+		return { kind: 'unreached', offline: offline && unanswered };
+	}
+	return { kind: 'refused', message: answer.error.message ?? '' };
 }
