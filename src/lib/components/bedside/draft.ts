@@ -71,7 +71,7 @@ export interface SessionDraft {
 	/** 1 to 4, null where it is not graded. */
 	breathlessness: number | null;
 	deviation: { reason: string; verbalFrom: string; readBack: boolean };
-	/** Sent, and no answer came: it may have arrived, so it is sent again exactly as it was. */
+	/** Sent, and no answer came yet: it may have arrived, so it is sent again exactly as it was. */
 	sent: { body: SessionBody; at: number } | null;
 }
 

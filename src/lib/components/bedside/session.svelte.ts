@@ -83,7 +83,7 @@ export class BedsideSession {
 		);
 	}
 
-	/** No answer came: hold on to what was sent, and to nothing else. */
+	/** Hold on to what is sent, and to nothing else, until there is an answer. */
 	hold(body: SessionBody): void {
 		this.draft.sent ??= { body, at: this.#now() };
 	}

@@ -144,4 +144,51 @@ describe('Recording', () => {
 		await Promise.all([recording.send(), recording.send()]);
 		expect(sent).toHaveLength(1);
 	});
+
+	it('is held before it leaves, so that a reload on the way sends the very same', async () => {
+		const session = open();
+		const kept: unknown[] = [];
+		const recording = new Recording(session, () => {
+			kept.push(session.draft.sent?.body);
+			return Promise.resolve(RECORDED);
+		});
+		await recording.send();
+		expect(kept).toEqual([expect.objectContaining({ level: 4 })]);
+	});
+
+	it('does not say that it was not sent while the first try is under way', async () => {
+		let answer = (_: Sent): void => {};
+		const recording = new Recording(open(), () => new Promise((resolve) => (answer = resolve)));
+		const sending = recording.send();
+		expect(recording).toMatchObject({ pending: true, unanswered: false });
+		answer(UNANSWERED);
+		await sending;
+		expect(recording).toMatchObject({ pending: false, unanswered: true });
+	});
+
+	it('that was on its way when the page went is sent again as it was, and is then recorded', async () => {
+		const body = { level: 3 } as SessionBody;
+		const session = open({ sent: { body, at: NOW - 60_000 } });
+		const { sent, send } = answering(RECORDED);
+		const recording = new Recording(session, send);
+		await recording.send();
+		expect(sent).toEqual([{ body, key: 'key-1' }]);
+		expect(recording).toMatchObject({ unanswered: false, recorded: { id: 's1' } });
+	});
+
+	it.each([
+		['a first try', [refused(401)], false],
+		['a try after one without an answer', [UNANSWERED, refused(401)], true],
+		['a try after one without an answer, too many requests', [UNANSWERED, refused(429)], true],
+		['a try after one without an answer, for good', [UNANSWERED, refused(422)], false]
+	])('refused: %s', async (_, answers, held) => {
+		const session = open();
+		const { send } = answering(...answers);
+		const recording = new Recording(session, send);
+		for (let n = 0; n < answers.length; n += 1) {
+			await recording.send();
+		}
+		expect(session.draft.sent !== null).toBe(held);
+		expect(recording.unanswered).toBe(held);
+	});
 });
