@@ -27,6 +27,7 @@ describe('isIn', () => {
 		['/escalations/018f', 'loose-ends'],
 		['/ward', 'ward'],
 		['/patients/018f/threads/0190', 'ward'],
+		['/bedside/018f', 'ward'],
 		['/visits', 'visits'],
 		['/cover', 'cover']
 	])('puts %s in %s and nowhere else', (path, key) => {
@@ -34,7 +35,7 @@ describe('isIn', () => {
 		expect(keys(places.filter((place) => isIn(place, path)))).toEqual([key]);
 	});
 
-	it.each(['/wardrobe', '/', '/bedside/018f'])('puts %s nowhere', (path) => {
+	it.each(['/wardrobe', '/', '/bedsides'])('puts %s nowhere', (path) => {
 		expect(mainPlaces('nurse').some((place) => isIn(place, path))).toBe(false);
 	});
 });

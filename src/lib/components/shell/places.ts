@@ -21,7 +21,7 @@ export function mainPlaces(role: Role): Place[] {
 	}
 	return [
 		place('loose-ends', routes.looseEnds(), m.common_place_loose_ends(), ['/escalations']),
-		place('ward', routes.ward(), m.common_place_ward(), ['/patients']),
+		place('ward', routes.ward(), m.common_place_ward(), ['/patients', '/bedside']),
 		place('visits', routes.visits(), m.common_place_visits())
 	];
 }

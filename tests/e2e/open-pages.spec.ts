@@ -1,0 +1,122 @@
+import { expect, test, type Page } from '@playwright/test';
+import { admit, signInAs, type Client } from '../support/api';
+import { startProduct, type Product } from '../support/server';
+import { expectConnected, PHONE, seat } from './people';
+
+let product: Product;
+let coordinator: Client;
+let surgeon: Client;
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { RATE_LIMIT_SCALE: '100' } });
+	[coordinator, surgeon] = await Promise.all([
+		signInAs(product.url, 'coordinator'),
+		signInAs(product.url, 'surgeon')
+	]);
+});
+test.afterAll(() => product?.stop());
+
+/** A patient of the test's own in this bed, referred to physiotherapy. */
+async function referred(bed: string): Promise<{ episodeId: string; thread: string }> {
+	const episodeId = await admit(coordinator, { bed, level: 5, betaBlocked: false, rhythm: 'sinus' });
+	const referral = { service: 'physiotherapy', priority: 'urgent', question: 'Please begin.' };
+	const { body } = await surgeon.post(`/api/episodes/${episodeId}/referrals`, referral);
+	return { episodeId, thread: `/patients/${episodeId}/threads/${body.threadId}` };
+}
+
+/** A reading whose pressure falls by twenty: a stop. */
+async function typeStop(page: Page): Promise<void> {
+	const reading = (name: string) => page.getByRole('textbox', { name: new RegExp(`^${name}`) });
+	await page.getByRole('radio', { name: 'awake, follows commands' }).check();
+	await reading('Systolic').fill('128');
+	await reading('Diastolic').fill('74');
+	await reading('Pulse').fill('76');
+	await page.getByRole('tab', { name: /After/ }).click();
+	await reading('Systolic').fill('108');
+	await reading('Diastolic').fill('66');
+	await reading('Pulse').fill('80');
+}
+
+test('without a network the page says so at once, stays, keeps what is typed, and sends it once afterwards', async ({
+	browser
+}) => {
+	const { thread } = await referred('T91');
+	const { page, context, complaints } = await seat(browser, product.url, 'nurse', PHONE);
+	await page.goto(thread);
+	await expectConnected(page);
+	const field = page.getByLabel('Write into the thread');
+	await field.fill('Pressure is steady.');
+
+	await context.setOffline(true);
+	await expect(page.getByText(/Not connected since \d\d:\d\d/)).toBeVisible({ timeout: 2_000 });
+	await page.getByRole('button', { name: 'Send' }).click();
+	await expect(page.getByText('Not sent: this device has no network')).toBeVisible();
+	await expect(field).toHaveValue('Pressure is steady.');
+	await page.getByRole('link', { name: 'Visits' }).last().click();
+	await expect(page.getByText('This device has no network, so that page cannot be fetched')).toBeInViewport();
+	await expect(page).toHaveURL(new RegExp(thread));
+	await expect(field).toHaveValue('Pressure is steady.');
+
+	await context.setOffline(false);
+	await expectConnected(page);
+	await page.getByRole('button', { name: 'Send' }).click();
+	await expect(field).toHaveValue('');
+	await expect(page.getByText('Pressure is steady.')).toHaveCount(1);
+	await page.getByRole('link', { name: 'Open the page that you wanted' }).click();
+	await expect(page).toHaveURL(/\/visits/);
+	expect(complaints).toEqual([]);
+	await context.close();
+});
+
+test('a session whose answer was lost is asked for at the next start, and then no longer reads as not sent', async ({
+	browser
+}) => {
+	const { episodeId } = await referred('T92');
+	const { page, context } = await seat(browser, product.url, 'therapist', PHONE);
+	await page.goto(`/bedside/${episodeId}`);
+	await typeStop(page);
+	const sessions = `**/api/episodes/${episodeId}/sessions`;
+	await page.route(sessions, async (route) => {
+		await route.fetch();
+		await route.abort();
+	});
+	await page.getByRole('button', { name: 'Record the session' }).click();
+	await expect(page.getByText('Not sent yet, as far as we know')).toBeVisible();
+	await page.unroute(sessions);
+	await page.reload();
+	await expect(page.getByRole('heading', { name: /Recorded/ })).toBeVisible();
+	await expect(page.getByText('Not sent yet')).toHaveCount(0);
+	await page.reload();
+	await expect(page.getByRole('button', { name: 'Record the session' })).toBeVisible();
+	await expect(page.getByText('What you had typed is back.')).toHaveCount(0);
+	await context.close();
+});
+
+test('an open page follows the clock of the server', async ({ browser }) => {
+	await referred('T93');
+	const { page, context } = await seat(browser, product.url, 'therapist');
+	const row = page.getByRole('listitem').filter({ hasText: 'T93' });
+	await expect(row).not.toContainText('3 h');
+	await product.advance(3 * 3_600_000);
+	await expect(row).toContainText('3 h', { timeout: 20_000 });
+	await context.close();
+});
+
+test('on a phone the bedside is a part of the ward, and its stop bar covers no field one is led to', async ({
+	browser
+}) => {
+	const { episodeId } = await referred('T94');
+	const { page, context } = await seat(browser, product.url, 'therapist', PHONE);
+	await page.goto(`/bedside/${episodeId}`);
+	await expect(page.locator('[aria-current="page"]:visible')).toHaveText('Ward');
+	await typeStop(page);
+	const bar = page.getByRole('alert').filter({ hasText: 'Measure again' });
+	await expect(bar).toBeVisible();
+	for (const field of await page.getByRole('textbox').all()) {
+		await field.focus();
+		const [low, top] = await Promise.all([field.boundingBox(), bar.boundingBox()]);
+		expect((low?.y ?? 0) + (low?.height ?? 0)).toBeLessThanOrEqual((top?.y ?? 0) + 1);
+	}
+	await context.close();
+});
