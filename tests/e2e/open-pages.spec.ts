@@ -120,3 +120,34 @@ test('on a phone the bedside is a part of the ward, and its stop bar covers no f
 	}
 	await context.close();
 });
+
+test('names of patients stand in Lato, whatever letters of Europe they need', async ({ browser }) => {
+	const { page, context } = await seat(browser, product.url, null);
+	await page.goto('/sign-in');
+	const weights = [400, 700, 900];
+	await page.evaluate(async (all) => {
+		const names = 'Łódź ő č ř ş ž ě ů ű ą ę ć ń ś ż ğ ı ș ț ß Ø å é ñ';
+		for (const weight of all) {
+			const line = document.createElement('p');
+			line.id = `names-${weight}`;
+			line.style.fontWeight = `${weight}`;
+			line.textContent = names;
+			document.body.append(line);
+			await document.fonts.load(`${weight} 16px Lato`, names);
+		}
+	}, weights);
+	const devtools = await context.newCDPSession(page);
+	await devtools.send('DOM.enable');
+	await devtools.send('CSS.enable');
+	const { root } = await devtools.send('DOM.getDocument');
+	for (const weight of weights) {
+		const line = { nodeId: root.nodeId, selector: `#names-${weight}` };
+		const { nodeId } = await devtools.send('DOM.querySelector', line);
+		const { fonts } = await devtools.send('CSS.getPlatformFontsForNode', { nodeId });
+		expect(fonts.length).toBeGreaterThan(0);
+		expect(
+			fonts.filter(({ familyName, isCustomFont }) => !isCustomFont || !familyName.startsWith('Lato'))
+		).toEqual([]);
+	}
+	await context.close();
+});
