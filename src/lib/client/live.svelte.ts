@@ -1,6 +1,6 @@
 import { SILENCE_MS } from '$lib/domain/live/beat';
 import type { StreamEvent } from '$lib/domain/live/events';
-import { LiveStream } from './live-stream';
+import { LiveStream, type Ears } from './live-stream';
 
 const CHANNEL = 'ropewalk-live';
 const LOCK = 'ropewalk-live-leader';
@@ -87,7 +87,7 @@ export class LiveConnection {
 		await (navigator.locks?.request(LOCK, { signal }, hold).catch(() => {}) ?? hold());
 	}
 
-	#ears(): ConstructorParameters<typeof LiveStream>[1] {
+	#ears(): Ears {
 		return {
 			change: (event, cursor) => this.#tell({ kind: 'change', cursor, event }),
 			reset: (cursor) => this.#tell({ kind: 'reset', cursor }),
