@@ -8,5 +8,10 @@ export interface ClearanceView extends ClearanceLine {
 	/** Who asked may take the ask back. */
 	askedById: string;
 	/** As it was when the ask was made. */
-	evidence: ClearanceEvidence;
+	evidence: ShownEvidence;
 }
+
+/** Evidence as a person may see it: who may not read sessions gets null instead of them. */
+export type ShownEvidence = Omit<ClearanceEvidence, 'sessions'> & {
+	sessions: ClearanceEvidence['sessions'] | null;
+};

@@ -39,7 +39,7 @@ export interface EpisodeListItem {
 	looseEnds: number;
 	mayDoNow: MayDoNow;
 	precautions: Precautions;
-	/** The most urgent escalation that is not settled. */
+	/** The most urgent escalation that is not settled; null also for who may not read any. */
 	escalation: {
 		id: string;
 		grade: 'high' | 'medium' | 'low';

@@ -1,7 +1,9 @@
 import { desc, eq } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
-import type { ClearanceView } from '$lib/domain/clearances/views';
+import { can } from '$lib/domain/access/can';
+import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
+import type { ClearanceView, ShownEvidence } from '$lib/domain/clearances/views';
 import { stateOn } from '$lib/domain/clearances/states';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
@@ -59,8 +61,13 @@ export async function getClearance(
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
-		evidence: clearance.evidence
+		evidence: shownTo(person, episode.unitId, clearance.evidence)
 	};
+}
+
+/** The sessions in the evidence are as much a bedside record as the sessions' own page. */
+function shownTo(person: Person, unitId: string, evidence: ClearanceEvidence): ShownEvidence {
+	return can(person, 'session.read', { unitId }) ? evidence : { ...evidence, sessions: null };
 }
 
 function toLine(

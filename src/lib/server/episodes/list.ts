@@ -1,5 +1,6 @@
 import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
+import { can } from '$lib/domain/access/can';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import type { Reader } from '../db';
@@ -72,7 +73,8 @@ export async function listEpisodes(
 			looseEnds: open.get(episode.id) ?? 0,
 			mayDoNow: derived?.mayDoNow,
 			precautions: derived?.precautions,
-			escalation: calls.get(episode.id) ?? null
+			// Who may not read calls for help sees none here either.
+			escalation: can(person, 'escalation.read', { unitId: at.id }) ? (calls.get(episode.id) ?? null) : null
 		} as EpisodeListItem;
 	});
 	return { items: lines, next };

@@ -1,9 +1,11 @@
 import { and, asc, eq, exists, gt, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
+import { mayReadEntry } from '$lib/domain/access/entries';
 import { Problem } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { AskedPerson, EntryLine, ThreadView } from '$lib/domain/referrals/views';
+import { m } from '$lib/i18n/paraglide/messages';
 import { accessThread } from '../access/access';
 import type { Reader } from '../db';
 import { entries, mentions, referrals, users } from '../db/schema';
@@ -16,7 +18,7 @@ export async function getThread(
 	threadId: string,
 	request: PageRequest
 ): Promise<ThreadView> {
-	const { thread } = await accessThread(db, person, threadId, 'thread.read');
+	const { thread, episode } = await accessThread(db, person, threadId, 'thread.read');
 	const [referral, rows] = await Promise.all([
 		referralOf(db, thread.referralId),
 		db
@@ -29,7 +31,10 @@ export async function getThread(
 	]);
 	const { items, next } = page(rows, request, (row) => String(row.entry.seq));
 	const asked = await askedIn(db, threadId);
-	const lines = items.map(({ entry, author }) => toLine(entry, author, asked.get(entry.id) ?? []));
+	const lines = items.map(({ entry, author }) => {
+		const line = toLine(entry, author, asked.get(entry.id) ?? []);
+		return mayReadEntry(person, episode.unitId, entry.refKind) ? line : withheld(line);
+	});
 	return { referral, items: lines, next };
 }
 
@@ -90,6 +95,11 @@ function toLine(
 		ref: entry.refKind && entry.refId ? { kind: entry.refKind, id: entry.refId } : null,
 		asked
 	};
+}
+
+/** That something was said, by whom and when, without what: the numbers of a thread have no gaps. */
+function withheld(line: EntryLine): EntryLine {
+	return { ...line, body: m.referrals_entry_withheld(), ref: null };
 }
 
 async function referralOf(db: Reader, id: string): Promise<ThreadView['referral']> {
