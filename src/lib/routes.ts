@@ -16,6 +16,7 @@ export const routes = {
 	sessions: (episodeId: string) => `/patients/${episodeId}/sessions`,
 	newSession: (episodeId: string) => `/bedside/${episodeId}`,
 	escalate: (episodeId: string, query = '') => `/patients/${episodeId}/escalate${query}`,
+	move: (episodeId: string) => `/patients/${episodeId}/move`,
 	refer: (episodeId: string) => `/patients/${episodeId}/refer`,
 	escalation: (id: string) => `/escalations/${id}`,
 	phoneLink: (token: string) => `/t/${token}`,

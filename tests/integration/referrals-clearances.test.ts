@@ -185,7 +185,7 @@ describe('a clearance', () => {
 		await giveClearance(as('surgeon'), id, {});
 		await holdClearance(as('surgeon'), id, 'Fell yesterday.');
 		const board = await getNameboard(db(), hospital.people.nurse, episodeId, hospital.now);
-		expect(board.mayDoNow.stairs).toBe('not');
+		expect(board.mayDoNow?.stairs).toBe('not');
 		expect((await giveClearance(as('surgeon'), id, {})).result.state).toBe('given');
 	});
 
@@ -195,7 +195,7 @@ describe('a clearance', () => {
 		const { id } = (await askClearance(as('therapist'), held.episodeId, { kind, question: 'May she?' }))
 			.result;
 		const chair = async () =>
-			(await getNameboard(db(), hospital.people.nurse, held.episodeId, hospital.now)).mayDoNow.chair;
+			(await getNameboard(db(), hospital.people.nurse, held.episodeId, hospital.now)).mayDoNow?.chair;
 		await withdrawClearance(as('therapist'), id, 'Asked too early.');
 		expect(await chair()).toBe('one');
 		const second = (await askClearance(as('therapist'), held.episodeId, { kind, question: 'And now?' }))

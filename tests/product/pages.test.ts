@@ -22,6 +22,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/admin/accounts/[id]': ['admin'],
 	'/patients/[id]': SEEING,
 	'/patients/[id]/refer': ['surgeon', 'physician'],
+	'/patients/[id]/move': ['coordinator', 'nurse', 'physician'],
 	'/patients/[id]/threads/[threadId]': SEEING,
 	'/patients/[id]/clearances': SEEING,
 	'/patients/[id]/clearances/[clearanceId]': SEEING,

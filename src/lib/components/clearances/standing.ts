@@ -1,5 +1,6 @@
 import { headline, isInForce, type ClearanceHeadline } from '$lib/domain/clearances/states';
-import { CLEARANCE_KINDS, type ClearanceKind } from '$lib/domain/core/codes';
+import { kindsIn, type Phase } from '$lib/domain/clearances/kinds';
+import type { ClearanceKind } from '$lib/domain/core/codes';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { m } from '$lib/i18n/paraglide/messages';
 
@@ -89,9 +90,12 @@ export interface KindHistory {
 	earlier: ClearanceLine[];
 }
 
-/** Every kind in the order of recovery, each with its asks. @param lines newest ask first */
-export function byKind(lines: readonly ClearanceLine[]): KindHistory[] {
-	return CLEARANCE_KINDS.map((kind) => {
+/**
+ * Every kind that means something in the phase, in the order of recovery, each with its asks.
+ * @param lines newest ask first
+ */
+export function byKind(lines: readonly ClearanceLine[], phase: Phase = 'inpatient'): KindHistory[] {
+	return kindsIn(phase).map((kind) => {
 		const [newest = null, ...earlier] = lines.filter((line) => line.kind === kind);
 		return { kind, newest, earlier };
 	});

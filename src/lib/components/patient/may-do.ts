@@ -22,6 +22,11 @@ export interface MayDoGroup {
 	places: Place[];
 }
 
+/** What stands in place of the groups where no level decides. */
+export function noLevelWords(phase: 'inpatient' | 'outpatient'): string {
+	return phase === 'outpatient' ? m.patient_may_do_outpatient() : m.patient_may_do_before();
+}
+
 /** What a patient may do now, from the bed to the stairs; neighbours with the same help stand together. */
 export function mayDoGroups(may: MayDoNow): MayDoGroup[] {
 	const groups: MayDoGroup[] = [];

@@ -29,15 +29,30 @@ describe('dayWords', () => {
 });
 
 describe('bewareWords', () => {
-	const sternal: Precautions = { sternal: true, endDue: '2026-04-26', maxElevationDeg: 45 };
+	const sternal: Precautions = {
+		basis: 'performed',
+		sternal: true,
+		endDue: '2026-04-26',
+		maxElevationDeg: 45
+	};
 	it.each<[string, Precautions, string[]]>([
 		['2026-04-25T22:59:59Z', sternal, ['Sternal precautions, end due Sun 26 Apr', 'arms to 45°']],
 		['2026-04-26T22:59:59Z', sternal, ['Sternal precautions, end due Sun 26 Apr', 'arms to 45°']],
 		['2026-04-26T23:00:00Z', sternal, ['Sternal precautions, end was due Sun 26 Apr', 'arms to 45°']],
 		[
 			'2026-03-03T09:00:00Z',
-			{ sternal: false, endDue: null, maxElevationDeg: null },
+			{ basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null },
 			['No sternal precautions']
+		],
+		[
+			'2026-03-03T09:00:00Z',
+			{ basis: 'planned', sternal: false, endDue: null, maxElevationDeg: null },
+			['Precautions begin with the operation']
+		],
+		[
+			'2026-03-03T09:00:00Z',
+			{ basis: 'none', sternal: false, endDue: null, maxElevationDeg: null },
+			['Precautions not known']
 		]
 	])('at %s of %j: %j', (now, precautions, words) => {
 		expect(bewareWords(precautions, reader(now))).toEqual(words);

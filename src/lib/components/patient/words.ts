@@ -2,7 +2,7 @@ import type { FindingGrade, Outcome } from '$lib/domain/bedside/codes';
 import type { Rhythm, VisitState } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
-import type { Precautions } from '$lib/domain/episodes/precautions';
+import type { Precautions, PrecautionsBasis } from '$lib/domain/episodes/precautions';
 import type { Nameboard } from '$lib/domain/episodes/views';
 import { shortDay, type Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -54,10 +54,20 @@ export function dayWords({ operatedAt }: Pick<Nameboard, 'operatedAt'>, { now, z
 	return day === null ? m.patient_before_operation() : m.patient_day({ day });
 }
 
+/** That there are none is said only of an operation that has begun; without one it is not known. */
+const NO_PRECAUTIONS: Record<PrecautionsBasis, () => string> = {
+	performed: m.patient_no_precautions,
+	planned: m.patient_precautions_planned,
+	none: m.patient_precautions_unknown
+};
+
 /** What to beware of: the precautions with the day on which to ask for their end, and how far the arms may go. */
-export function bewareWords({ sternal, endDue, maxElevationDeg }: Precautions, reader: Reader): string[] {
+export function bewareWords(
+	{ basis, sternal, endDue, maxElevationDeg }: Precautions,
+	reader: Reader
+): string[] {
 	if (!sternal) {
-		return [m.patient_no_precautions()];
+		return [NO_PRECAUTIONS[basis]()];
 	}
 	const overdue = endDue !== null && endDue < localDateOf(reader.now, reader.zone);
 	const word = overdue ? m.patient_sternal_overdue : m.patient_sternal_due;

@@ -3,8 +3,8 @@ import { precautionsOf } from '$lib/domain/episodes/precautions';
 import { escalationWords, procedureWords, wardBeware } from './words';
 
 const READER = { zone: 'Europe/Dublin', now: Date.parse('2026-03-03T09:00:00Z') };
-const STERNOTOMY = { approach: 'sternotomy', day: '2026-03-01' } as const;
-const NOTHING = precautionsOf(null, null, false);
+const STERNOTOMY = { approach: 'sternotomy', day: '2026-03-01', begun: true } as const;
+const NOTHING = precautionsOf({ ...STERNOTOMY, approach: 'other' }, null, false);
 
 describe('procedureWords', () => {
 	it.each([
@@ -33,6 +33,16 @@ describe('wardBeware', () => {
 			'arms to 45°',
 			'rate-slowing drug'
 		]);
+	});
+});
+
+describe('precautions that nobody knows', () => {
+	it.each([
+		['none', 'Precautions not known'],
+		['planned', 'Precautions begin with the operation']
+	] as const)('of %s: %s', (basis, words) => {
+		const precautions = { ...NOTHING, basis };
+		expect(wardBeware({ precautions, betaBlocked: false }, READER)).toEqual([words]);
 	});
 });
 

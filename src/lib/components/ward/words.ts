@@ -1,3 +1,4 @@
+import { mayHold } from '$lib/domain/episodes/precautions';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import type { Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -18,7 +19,7 @@ export function wardBeware(
 ): string[] {
 	const drug = { true: m.patient_drug_yes, false: null, null: m.patient_drug_unknown }[`${betaBlocked}`];
 	return [
-		...(precautions.sternal ? bewareWords(precautions, reader) : []),
+		...(mayHold(precautions) ? bewareWords(precautions, reader) : []),
 		...(drug === null ? [] : [drug()])
 	];
 }

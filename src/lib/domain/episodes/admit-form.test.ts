@@ -30,6 +30,8 @@ describe('admitForm', () => {
 		[{}, []],
 		[{ name: ' ' }, ['name']],
 		[{ birthDate: '1958-02-30' }, ['birthDate']],
+		[{ birthDate: '5 9 1958', operatedOn: '1/7/2026' }, []],
+		[{ birthDate: '1958' }, ['birthDate']],
 		[{ sex: '' }, ['sex']],
 		[{ mrn: 'x'.repeat(40) }, []],
 		[{ mrn: 'x'.repeat(41) }, ['mrn']],
@@ -46,6 +48,8 @@ describe('admitForm', () => {
 		[{ approach: '' }, ['approach']],
 		[{ operatedOn: '2026-02-29' }, ['operatedOn']],
 		[{ operatedTime: '24:00' }, ['operatedTime']],
+		[{ operatedTime: '9:05' }, []],
+		[{ operatedTime: '9:5' }, ['operatedTime']],
 		[{ operatedOn: '', operatedTime: '' }, ['operatedOn', 'operatedTime']]
 	])('%j: wrong is %j', (change, fields) => {
 		expect(wrongFields(change)).toEqual(fields);
@@ -69,6 +73,11 @@ describe('toAdmission', () => {
 			betaBlocked: true
 		});
 		expect([body.surgeonId, body.rhythm]).toEqual([undefined, undefined]);
+	});
+
+	it('reads days as they are written here', () => {
+		const form = admitForm.parse({ ...FILLED, birthDate: '5 9 1958', operatedOn: '1.7.2026' });
+		expect([form.birthDate, form.operatedOn]).toEqual(['1958-09-05', '2026-07-01']);
 	});
 
 	it.each([

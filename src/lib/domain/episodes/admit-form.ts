@@ -6,6 +6,7 @@ import { z } from 'zod';
 import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
+import { readDate } from '../core/typed-date';
 import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
 import type { AdmitInput } from './forms';
 
@@ -28,13 +29,15 @@ const known = (list: readonly string[], field: string) =>
 		.default('')
 		.refine((value) => value === '' || isIn(list, value), `${field} is not one of the list.`);
 
+/** What is no day stays as it was typed, so that it can be put right. */
+const typedDay = z.string().transform((typed) => readDate(typed) ?? typed);
+
 export const admitForm = z
 	.object({
 		name: text("The patient's name", 120).default(''),
-		birthDate: z
-			.string()
+		birthDate: typedDay
 			.default('')
-			.refine(isLocalDate, 'Birth date: write a day that exists, such as 1958-09-05.'),
+			.refine(isLocalDate, 'Birth date: write a day that exists, such as 5 9 1958.'),
 		sex: chosen(SEXES, 'Sex: choose one.'),
 		mrn: text('The hospital number', 40).default(''),
 		/** Ticked when the record has another name and this is the name now. */
@@ -46,8 +49,8 @@ export const admitForm = z
 		bed: line('The bed', 12),
 		procedure: line('The procedure', 120),
 		approach: known(APPROACHES, 'The approach'),
-		operatedOn: line('The day of the operation', 10),
-		operatedTime: line('The time of the operation', 5),
+		operatedOn: typedDay.default(''),
+		operatedTime: line('The time of the operation', 5).transform((typed) => typed.replace(/^\d:/, '0$&')),
 		surgeonId: line('The surgeon', 120),
 		level: chosen(LEVELS.map(String), 'Level: choose 1 to 6.').default('1'),
 		betaBlocked: chosen(DRUG_ANSWERS, 'Rate-slowing drug: choose one.').default('unknown'),
@@ -71,7 +74,11 @@ function operationProblems(form: OperationFields): [keyof OperationFields, strin
 	const problems: [keyof OperationFields, boolean, string][] = [
 		['procedure', procedure !== '', 'Procedure: say which operation, or leave all four fields empty.'],
 		['approach', approach !== '', 'Approach: choose one, or leave all four fields empty.'],
-		['operatedOn', isLocalDate(operatedOn), 'Day of the operation: write a day such as 2026-03-01.'],
+		[
+			'operatedOn',
+			isLocalDate(operatedOn),
+			'Day of the operation: write a day that exists, such as 1 3 2026.'
+		],
 		['operatedTime', isLocalTime(operatedTime), 'Time of the operation: write it from 00:00 to 23:59.']
 	];
 	return problems.flatMap(([field, right, message]) => (right ? [] : [[field, message]]));

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { APPROACHES, CLOSE_REASONS, RHYTHMS, SEXES } from '../core/codes';
+import { APPROACHES, CLOSE_REASONS, isOneOf, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { normaliseBed, normaliseMrn } from './identifiers';
 
@@ -60,7 +60,21 @@ export type AdmitInput = z.infer<typeof admitBody>;
 export const moveBody = z.strictObject({ unit, bed: bed.nullish() });
 export type MoveInput = z.infer<typeof moveBody>;
 
+/** The move as a page asks for it; whether the unit has beds knows the server. */
+export const moveForm = z.object({
+	unit: z.string().min(1, 'The unit is empty: choose one.').max(64).default(''),
+	bed: z.string().trim().max(12, 'The bed has at most 12 characters.').default('')
+});
+
 /** Why a stay is over. */
 export const closeBody = z.strictObject({
 	reason: z.enum(CLOSE_REASONS, `The reason is one of ${CLOSE_REASONS.join(', ')}.`)
+});
+
+/** The closing as a page asks for it: nothing is chosen beforehand. */
+export const closeForm = z.object({
+	reason: z
+		.string()
+		.default('')
+		.refine((value) => isOneOf(CLOSE_REASONS, value), 'The reason is empty: choose why the stay is over.')
 });

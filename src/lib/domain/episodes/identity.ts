@@ -10,6 +10,9 @@ import { isSameName, normaliseName } from './identifiers';
 export const PATIENT_FIELDS = ['name', 'sex', 'phone', 'language', 'smsConsent'] as const;
 export type PatientField = (typeof PATIENT_FIELDS)[number];
 
+/** How the message about another name begins; a page asks then whether it is the name now. */
+export const NAME_DIFFERS = "The patient's name differs";
+
 /** A patient as far as an admission states them. */
 export interface Identity {
 	name: string;
@@ -34,7 +37,7 @@ export function conflictsWith(mrn: string, known: Identity, given: Identity): Co
 	if (!isSameName(known.name, given.name)) {
 		errors.push({
 			pointer: '/patient/name',
-			message: `The patient's name differs: hospital number ${mrn} belongs to ${known.name}, not ${normaliseName(given.name)}.`
+			message: `${NAME_DIFFERS}: hospital number ${mrn} belongs to ${known.name}, not ${normaliseName(given.name)}.`
 		});
 	}
 	const confirmable = errors.length > 0;

@@ -6,7 +6,12 @@ export const ARM_LIMIT_BEFORE_CLEARANCE_DEG = 45;
 /** Eight weeks; published advice runs from 6 to 12 weeks, so the end is a surgeon's decision and this only a date to ask. */
 const STERNAL_DAYS = 56;
 
+/** What precautions are known from: an operation that has begun, one that is to come, or none on record. */
+export type PrecautionsBasis = 'performed' | 'planned' | 'none';
+
 export interface Precautions {
+	/** Without an operation that has begun nothing can be said: then their absence is no statement either. */
+	basis: PrecautionsBasis;
 	/** True after a sternotomy until somebody ends the precautions. */
 	sternal: boolean;
 	/** The day on which ending them should be asked for. */
@@ -16,21 +21,35 @@ export interface Precautions {
 }
 
 /**
- * What to beware of.
+ * What to beware of. Before the operation its precautions do not hold yet.
  * @param armStage the arm stage in force, or null
  * @param ended whether ending the precautions was cleared
  */
 export function precautionsOf(
-	operation: { approach: Approach; day: LocalDate } | null,
+	operation: { approach: Approach; day: LocalDate; begun: boolean } | null,
 	armStage: { maxElevationDeg: number | null } | null,
 	ended: boolean
 ): Precautions {
-	if (!operation || operation.approach !== 'sternotomy' || ended) {
-		return { sternal: false, endDue: null, maxElevationDeg: null };
+	const basis = basisOf(operation);
+	if (!operation || basis !== 'performed' || operation.approach !== 'sternotomy' || ended) {
+		return { basis, sternal: false, endDue: null, maxElevationDeg: null };
 	}
 	return {
+		basis,
 		sternal: true,
 		endDue: addDays(operation.day, STERNAL_DAYS),
 		maxElevationDeg: armStage ? (armStage.maxElevationDeg ?? 90) : ARM_LIMIT_BEFORE_CLEARANCE_DEG
 	};
+}
+
+function basisOf(operation: { begun: boolean } | null): PrecautionsBasis {
+	if (operation === null) {
+		return 'none';
+	}
+	return operation.begun ? 'performed' : 'planned';
+}
+
+/** Whether precautions hold, or nobody can say that they do not: what a bedside goes by. */
+export function mayHold({ basis, sternal }: Pick<Precautions, 'basis' | 'sternal'>): boolean {
+	return sternal || basis !== 'performed';
 }

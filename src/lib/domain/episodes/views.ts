@@ -37,7 +37,9 @@ export interface EpisodeListItem {
 	betaBlocked: boolean | null;
 	/** How many things are open about this patient. */
 	looseEnds: number;
-	mayDoNow: MayDoNow;
+	phase: 'inpatient' | 'outpatient';
+	/** Null where levels do not decide: before the operation, and for outpatients. */
+	mayDoNow: MayDoNow | null;
 	precautions: Precautions;
 	/** The most urgent escalation that is not settled; null also for who may not read any. */
 	escalation: {
@@ -92,7 +94,8 @@ export interface Nameboard {
 	levelReached: number;
 	betaBlocked: boolean | null;
 	rhythm: Rhythm | null;
-	mayDoNow: MayDoNow;
+	/** Null where levels do not decide: before the operation, and for outpatients. */
+	mayDoNow: MayDoNow | null;
 	precautions: Precautions;
 	/** What lies over the default limits for this patient; empty for who may not see sessions. */
 	limits: LocalLayers;

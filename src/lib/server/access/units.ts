@@ -1,7 +1,8 @@
-import { and, eq, or } from 'drizzle-orm';
+import { and, asc, eq, or } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { invalidField } from '$lib/domain/core/errors';
-import type { Reader } from '../db';
+import type { UnitOfPerson } from '../auth/people';
+import { db, type Reader } from '../db';
 import { units, users } from '../db/schema';
 
 /**
@@ -27,6 +28,14 @@ export async function resolveAnyUnit(db: Reader, idOrName: string, pointer: stri
 		throw invalidField(pointer, `There is no unit "${idOrName}".`);
 	}
 	return unit;
+}
+
+/** Every unit of the hospital by name: where a patient can be moved to. */
+export function allUnits(): Promise<UnitOfPerson[]> {
+	return db()
+		.select({ id: units.id, name: units.name, kind: units.kind })
+		.from(units)
+		.orderBy(asc(units.name));
 }
 
 async function findUnit(db: Reader, idOrName: string) {

@@ -24,6 +24,14 @@ export interface EpisodeFacts {
 	precautions: Precautions;
 }
 
+/**
+ * Whether the levels of the ward say what a patient may do now. They count from the operation, and end with the
+ * stay; where no operation is on record the level is all that is known, and it is cautious.
+ */
+export function levelsDecide({ phase }: { phase: 'inpatient' | 'outpatient' }, facts: EpisodeFacts): boolean {
+	return phase === 'inpatient' && facts.precautions.basis !== 'planned';
+}
+
 /** Derive the facts of several episodes with two queries. */
 export async function factsOf(
 	db: Reader,
@@ -94,7 +102,11 @@ function derive(
 		inForce,
 		mayDoNow: mayDoNow(episode.level as Level, newest),
 		precautions: precautionsOf(
-			operation && { approach: operation.approach, day: localDateOf(operation.operatedAt, zone) },
+			operation && {
+				approach: operation.approach,
+				day: localDateOf(operation.operatedAt, zone),
+				begun: operation.operatedAt <= now
+			},
 			armStage ? { maxElevationDeg: armStage.limits?.maxElevationDeg ?? null } : null,
 			inForce.some((row) => row.kind === 'precautions-end')
 		)

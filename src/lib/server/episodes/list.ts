@@ -7,7 +7,7 @@ import type { Reader } from '../db';
 import { episodes, escalations, patients, units, users } from '../db/schema';
 import { page, type Page, type PageRequest } from '../http/paging';
 import { countOpenThings } from '../loose-ends/queries';
-import { factsOf } from './facts';
+import { factsOf, levelsDecide } from './facts';
 
 /** Beds in the order in which people read them: T2 before T10. */
 const ORDER = sql`(${units.name}, length(coalesce(${episodes.bed}, '')), coalesce(${episodes.bed}, ''), ${episodes.id})`;
@@ -71,7 +71,8 @@ export async function listEpisodes(
 			level: episode.level,
 			betaBlocked: episode.betaBlocked,
 			looseEnds: open.get(episode.id) ?? 0,
-			mayDoNow: derived?.mayDoNow,
+			phase: episode.phase,
+			mayDoNow: derived && levelsDecide(episode, derived) ? derived.mayDoNow : null,
 			precautions: derived?.precautions,
 			// Who may not read calls for help sees none here either.
 			escalation: can(person, 'escalation.read', { unitId: at.id }) ? (calls.get(episode.id) ?? null) : null

@@ -10,7 +10,7 @@ import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
 import { layersOf } from '../limits/queries';
 import { visitsOfEpisode } from '../visits/queries';
-import { factsOfOne } from './facts';
+import { factsOfOne, levelsDecide } from './facts';
 import { patientLine } from './list';
 
 /** Everything on the nameboard of one patient, as far as this person may see it. */
@@ -52,7 +52,7 @@ export async function getNameboard(
 		level: episode.level,
 		betaBlocked: episode.betaBlocked,
 		rhythm: episode.rhythm,
-		mayDoNow: derived.mayDoNow,
+		mayDoNow: levelsDecide(episode, derived) ? derived.mayDoNow : null,
 		precautions: derived.precautions,
 		levelReached: Math.max(episode.level, episode.levelReached),
 		limits: layers,

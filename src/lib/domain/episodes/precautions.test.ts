@@ -1,0 +1,46 @@
+import { describe, expect, it } from 'vitest';
+import { mayHold, precautionsOf } from './precautions';
+
+const DAY = '2026-03-01' as const;
+const done = { approach: 'sternotomy', day: DAY, begun: true } as const;
+
+describe('precautionsOf', () => {
+	it.each([
+		['no operation on record', null, 'none', false],
+		['one that is to come', { ...done, begun: false }, 'planned', false],
+		['a sternotomy', done, 'performed', true],
+		['another approach', { ...done, approach: 'other' as const }, 'performed', false]
+	] as const)('%s: known from %s, sternal %s', (_, operation, basis, sternal) => {
+		expect(precautionsOf(operation, null, false)).toMatchObject({ basis, sternal });
+	});
+
+	it('ends when somebody has ended them, and that is a statement', () => {
+		const ended = precautionsOf(done, null, true);
+		expect(ended).toEqual({ basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null });
+		expect(mayHold(ended)).toBe(false);
+	});
+
+	it.each([
+		[null, 45],
+		[{ maxElevationDeg: null }, 90],
+		[{ maxElevationDeg: 60 }, 60]
+	])('arm stage %j: arms to %i', (armStage, degrees) => {
+		expect(precautionsOf(done, armStage, false).maxElevationDeg).toBe(degrees);
+	});
+
+	it('asks for the end after eight weeks: common practice, no published source', () => {
+		expect(precautionsOf(done, null, false).endDue).toBe('2026-04-26');
+	});
+});
+
+describe('mayHold', () => {
+	it('is true as long as nobody can say that they do not', () => {
+		const held = [null, { ...done, begun: false }, done, { ...done, approach: 'other' as const }];
+		expect(held.map((operation) => mayHold(precautionsOf(operation, null, false)))).toEqual([
+			true,
+			true,
+			true,
+			false
+		]);
+	});
+});

@@ -1,0 +1,71 @@
+import { eq } from 'drizzle-orm';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { bewareWords } from '$lib/components/patient/words';
+import { db } from '$lib/server/db';
+import { operations } from '$lib/server/db/schema';
+import { listEpisodes } from '$lib/server/episodes/list';
+import { movePatient } from '$lib/server/episodes/move';
+import { getNameboard } from '$lib/server/episodes/nameboard';
+import { freshDatabase } from '../support/database';
+import { addPatient, contextOf, makeHospital, ZONE, type Hospital } from '../support/hospital';
+
+let close: () => void;
+let hospital: Hospital;
+let episodeId: string;
+
+beforeAll(async () => {
+	({ close } = await freshDatabase());
+	hospital = await makeHospital();
+});
+beforeEach(async () => {
+	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
+});
+afterAll(() => close());
+
+const DAY = 24 * 3600 * 1000;
+const board = (now = hospital.now) => getNameboard(db(), hospital.people.nurse, episodeId, now);
+const beware = async (now = hospital.now) =>
+	bewareWords((await board(now)).precautions, { now, zone: ZONE }).join(' · ');
+const onTheWard = async () =>
+	(
+		await listEpisodes(db(), hospital.people.nurse, hospital.now, null, { limit: 200, after: null })
+	).items.find(({ id }) => id === episodeId);
+const operatedAt = (at: number) =>
+	db().update(operations).set({ operatedAt: at }).where(eq(operations.episodeId, episodeId));
+
+describe('a patient without an operation on record', () => {
+	it('is not said to have no precautions, and keeps the cautious level', async () => {
+		await db().delete(operations).where(eq(operations.episodeId, episodeId));
+		expect(await beware()).toBe('Precautions not known');
+		expect((await board()).mayDoNow).toMatchObject({ chair: 'one', stairs: 'not' });
+	});
+});
+
+describe('a patient before the operation', () => {
+	it('has no day, no precautions and no level that decides, until the minute it begins', async () => {
+		await operatedAt(hospital.now + DAY);
+		expect(await board()).toMatchObject({ postOpDay: null, mayDoNow: null });
+		expect(await beware()).toBe('Precautions begin with the operation');
+		expect(await onTheWard()).toMatchObject({ mayDoNow: null, postOpDay: null });
+		// Day 0 is the day of surgery; its first minutes are still before the operation.
+		expect(await board(hospital.now + DAY - 1)).toMatchObject({ postOpDay: 0, mayDoNow: null });
+		expect(await board(hospital.now + DAY)).toMatchObject({
+			postOpDay: 0,
+			precautions: { sternal: true, maxElevationDeg: 45 },
+			mayDoNow: { chair: 'one' }
+		});
+		expect(await beware(hospital.now + DAY)).toContain('Sternal precautions');
+	});
+});
+
+describe('an outpatient', () => {
+	it('carries the precautions, but nothing that the ward allowed', async () => {
+		await movePatient(contextOf(hospital.people.coordinator), episodeId, { unit: 'East Gym' });
+		expect(await board()).toMatchObject({
+			phase: 'outpatient',
+			mayDoNow: null,
+			precautions: { sternal: true }
+		});
+		expect(await onTheWard()).toMatchObject({ phase: 'outpatient', mayDoNow: null });
+	});
+});
