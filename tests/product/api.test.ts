@@ -20,7 +20,8 @@ beforeAll(async () => {
 afterAll(() => product?.stop());
 
 const REFERRAL = { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' };
-const refer = () => surgeon.post(`/api/episodes/${episodeId}/referrals`, REFERRAL);
+/** Of a patient of its own each time: a second open one to the same service is refused. */
+const refer = async () => surgeon.post(`/api/episodes/${await admit(surgeon)}/referrals`, REFERRAL);
 
 describe('signing in', () => {
 	it('answers the person and sets a cookie that scripts cannot read', async () => {
@@ -112,7 +113,8 @@ describe('bodies', () => {
 describe('a key', () => {
 	it('gives the first answer again, refuses another body, and does the work once', async () => {
 		const headers = { 'idempotency-key': newKey() };
-		const path = `/api/episodes/${episodeId}/referrals`;
+		const admitted = await admit(surgeon);
+		const path = `/api/episodes/${admitted}/referrals`;
 		const first = await surgeon.post(path, REFERRAL, headers);
 		const again = await surgeon.post(path, { ...REFERRAL }, headers);
 		const other = await surgeon.post(path, { ...REFERRAL, question: 'Other' }, headers);
@@ -126,12 +128,13 @@ describe('a key', () => {
 	it('sent five times at once does the work once', async () => {
 		const headers = { 'idempotency-key': newKey() };
 		const question = `Only once ${newKey()}`;
-		const path = `/api/episodes/${episodeId}/referrals`;
+		const admitted = await admit(surgeon);
+		const path = `/api/episodes/${admitted}/referrals`;
 		const answers = await Promise.all(
 			Array.from({ length: 5 }, () => surgeon.post(path, { ...REFERRAL, question }, headers))
 		);
 		expect(answers.filter((answer) => ![201, 409].includes(answer.status))).toEqual([]);
-		const board = await surgeon.get(`/api/episodes/${episodeId}`);
+		const board = await surgeon.get(`/api/episodes/${admitted}`);
 		const asked = board.body.referrals as unknown as { question: string }[];
 		expect(asked.filter((referral) => referral.question === question)).toHaveLength(1);
 	});

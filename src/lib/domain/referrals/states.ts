@@ -1,6 +1,9 @@
 import { Problem } from '../core/errors';
 import type { ReferralState } from '../core/codes';
 
+/** The states in which a referral still goes on: a second one to the same service would divide the talk. */
+export const OPEN_REFERRAL_STATES = ['asked', 'accepted'] as const satisfies readonly ReferralState[];
+
 export type ReferralMove = 'accept' | 'decline' | 'close' | 'withdraw';
 
 /** Which move is allowed from which state, and where it leads. What is not in the table is refused. */

@@ -1,18 +1,22 @@
-import { eq } from 'drizzle-orm';
+import { and, eq, inArray } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { AuditAction } from '$lib/domain/audit/actions';
 import { Problem } from '$lib/domain/core/errors';
-import type { ReferralState } from '$lib/domain/core/codes';
+import type { ReferralState, Service } from '$lib/domain/core/codes';
 import type { referBody } from '$lib/domain/referrals/forms';
-import { nextReferralState, type ReferralMove } from '$lib/domain/referrals/states';
+import { nextReferralState, OPEN_REFERRAL_STATES, type ReferralMove } from '$lib/domain/referrals/states';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, accessReferral } from '../access/access';
 import type { PersonContext } from '../context';
+import type { Tx } from '../db';
 import { referrals, threads } from '../db/schema';
 import { newId } from '../ids';
 import { write, type Written } from '../write';
 
-/** Ask a service to take on a patient. The thread of the referral begins with the question. */
+/**
+ * Ask a service to take on a patient. The thread of the referral begins with the question.
+ * @throws Problem `already-asked` with the thread of an earlier one that is asked or accepted and not closed
+ */
 export function refer(
 	context: PersonContext,
 	episodeId: string,
@@ -20,6 +24,7 @@ export function refer(
 ): Promise<Written<{ id: string; threadId: string; state: 'asked' }>> {
 	return write(context, 'referral.create', async (tx) => {
 		await accessEpisode(tx, context.actor, episodeId, 'referral.create');
+		await refuseSecond(tx, episodeId, input.service);
 		const id = newId();
 		const threadId = newId();
 		await tx.insert(referrals).values({
@@ -40,6 +45,28 @@ export function refer(
 			events: [{ topic: 'referral', kind: 'asked', id, episodeId }]
 		};
 	});
+}
+
+/** Two threads about one thing would each hold half of what is said. */
+async function refuseSecond(tx: Tx, episodeId: string, service: Service): Promise<void> {
+	const [open] = await tx
+		.select({ id: referrals.id, state: referrals.state, threadId: threads.id })
+		.from(referrals)
+		.innerJoin(threads, eq(threads.referralId, referrals.id))
+		.where(
+			and(
+				eq(referrals.episodeId, episodeId),
+				eq(referrals.service, service),
+				inArray(referrals.state, [...OPEN_REFERRAL_STATES])
+			)
+		);
+	if (open) {
+		throw new Problem(
+			'already-asked',
+			`A referral to this service is ${open.state}; write into its thread, or close it first.`,
+			open
+		);
+	}
 }
 
 export function acceptReferral(context: PersonContext, id: string) {
