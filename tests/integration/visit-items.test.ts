@@ -20,7 +20,12 @@ beforeAll(async () => {
 });
 afterAll(() => database.close());
 
-async function book(episodeId = hospital.episodeId, startsAt = HOSPITAL_NOW + 3 * DAY) {
+let hours = 0;
+
+/** A visit in three days, an hour after the one before: nobody can be in two at once. */
+async function book(episodeId = hospital.episodeId) {
+	const startsAt = HOSPITAL_NOW + 3 * DAY + hours * HOUR;
+	hours += 1;
 	const context = contextOf(hospital.people.coordinator);
 	const input = { kind: 'single', startsAt, minutes: 45, place: 'East Gym' } as const;
 	const { result } = await bookVisits(context, episodeId, input);

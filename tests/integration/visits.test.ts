@@ -4,15 +4,17 @@ import type { Person } from '$lib/domain/access/actor';
 import type { Role } from '$lib/domain/core/codes';
 import type { BookVisits } from '$lib/domain/visits/forms';
 import { db } from '$lib/server/db';
-import { audit, entries, episodes, liveEvents, outbox, visits } from '$lib/server/db/schema';
+import { audit, entries, episodes, liveEvents, outbox, settings, visits } from '$lib/server/db/schema';
 import {
 	attendVisit,
 	bookVisits,
 	cancelVisit,
 	confirmVisit,
 	followUpVisit,
-	missVisit
+	missVisit,
+	reopenVisit
 } from '$lib/server/visits/actions';
+import { PLACES_SETTING } from '$lib/server/visits/room';
 import { listVisits, visitsOfEpisode } from '$lib/server/visits/queries';
 import { POST as postVisits } from '../../src/routes/api/episodes/[id]/visits/+server';
 import { GET as getVisits } from '../../src/routes/api/visits/+server';
@@ -43,6 +45,9 @@ beforeAll(async () => {
 	const environment = testEnvironment({ PUBLIC_URL: 'https://ropewalk.saltmarsh.example' });
 	const database = await freshDatabase();
 	hospital = await makeHospital();
+	// Most tests book for the same hour; how many a place holds is tested for itself.
+	const value = { [hospital.units.gym]: 1000 };
+	await db().insert(settings).values({ key: PLACES_SETTING, value, changedAt: HOSPITAL_NOW });
 	cleanUp = () => {
 		database.close();
 		environment.remove();
@@ -288,12 +293,36 @@ describe('moving a visit', () => {
 		expect(reminders.every(({ body }) => body.includes(words))).toBe(true);
 	});
 
-	it('keeps the reason, and corrects attended and missed', async () => {
+	it('keeps the reason, and corrects attended and missed with one', async () => {
 		const { id } = await booked();
 		await missVisit(coordinator(), id, 'Bus broke down');
 		expect(await visitRow(id)).toMatchObject({ state: 'missed', reason: 'Bus broke down' });
+		await attendVisit(coordinator(), id, 'Came by taxi.');
+		expect(await visitRow(id)).toMatchObject({ state: 'attended', reason: 'Came by taxi.' });
+	});
+
+	it('changes nothing on record without a reason', async () => {
+		const { id } = await booked();
 		await attendVisit(coordinator(), id);
-		expect(await visitRow(id)).toMatchObject({ state: 'attended', reason: null });
+		const refused = { code: 'invalid', status: 422, extra: { errors: [{ pointer: '/reason' }] } };
+		await expect(missVisit(coordinator(), id, null)).rejects.toMatchObject(refused);
+		expect(await visitRow(id)).toMatchObject({ state: 'attended' });
+	});
+
+	it('takes back what was marked by mistake, on record with both states and why', async () => {
+		const { id, episodeId } = await booked();
+		const { threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id });
+		await missVisit(coordinator(), id, null);
+		const { result } = await reopenVisit(coordinator(), id, 'The wrong row.');
+		expect(result).toEqual({ id, state: 'planned' });
+		const [row] = await db()
+			.select()
+			.from(audit)
+			.where(and(eq(audit.objectId, id), eq(audit.action, 'visit.reopened')));
+		expect(row?.detail).toEqual({ by: 'staff', from: 'missed' });
+		const said = await db().select().from(entries).where(eq(entries.threadId, threadId));
+		expect(said.map(({ body }) => body).at(-1)).toContain('planned again. Reason: The wrong row.');
+		await expect(reopenVisit(coordinator(), id, 'Again.')).rejects.toMatchObject({ code: 'wrong-state' });
 	});
 
 	it('refuses what the state does not allow, and says the state', async () => {
@@ -355,7 +384,11 @@ describe('the list of visits', () => {
 		const { episodeId, patient } = await newEpisode({ name: 'Nuala Ferrybank' });
 		const inRange = ['2026-07-06T00:00:00Z', '2026-07-08T09:00:00Z', '2026-07-12T23:59:59Z'];
 		const outside = ['2026-07-05T23:59:59Z', '2026-07-13T00:00:00Z'];
-		for (const startsAt of [...outside, ...inRange]) {
+		const neighbour = await newEpisode();
+		for (const startsAt of outside) {
+			await bookVisits(coordinator(), neighbour.episodeId, single({ startsAt: at(startsAt) }));
+		}
+		for (const startsAt of inRange) {
 			await bookVisits(coordinator(), episodeId, single({ startsAt: at(startsAt) }));
 		}
 		const { items, next } = await listVisits(hospital.people.nurse, week);
@@ -424,8 +457,7 @@ describe('the calls of the API', () => {
 		['miss', postMiss, RECEIVERS, {}]
 	] as const)('%s is for its roles alone', async (what, handler, roles, given) => {
 		const call = async (person: Person | null) => {
-			const made = await booked();
-			const id = what === 'book' ? made.episodeId : made.id;
+			const id = what === 'book' ? (await newEpisode()).episodeId : (await booked()).id;
 			return (await callRoute(handler, person, { params: { id }, body: given })).status;
 		};
 		for (const person of Object.values(hospital.people)) {

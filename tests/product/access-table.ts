@@ -82,6 +82,7 @@ export const API: Record<string, Row> = {
 	'GET /api/visits': { roles: SEEING, answers: [200, 422] },
 	'POST /api/visits/[id]/confirm': { roles: ['coordinator', 'therapist'], answers: [404] },
 	'POST /api/visits/[id]/cancel': { roles: ['coordinator', 'therapist'], answers: [404] },
+	'POST /api/visits/[id]/reopen': { roles: ['coordinator', 'therapist', 'nurse'], answers: [422] },
 	'POST /api/visits/[id]/follow-up': { roles: ['coordinator', 'therapist'], answers: [404] },
 	'POST /api/visits/[id]/attend': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] },
 	'POST /api/visits/[id]/miss': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] }

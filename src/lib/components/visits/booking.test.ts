@@ -88,6 +88,15 @@ describe('what is wrong', () => {
 		expect(body === null).toBe(fields.length > 0);
 	});
 
+	it.each([
+		['2026-03-03', '08:59', 0],
+		['2026-03-03', '09:00', 1],
+		['2028-03-03', '10:00', 1],
+		['2028-03-04', '10:00', 0]
+	])('on %s at %s leaves %d visits in view', (date, time, count) => {
+		expect(plan({ date, time }).planned).toHaveLength(count);
+	});
+
 	it('still shows the days of a series whose length in minutes is missing', () => {
 		expect(plan({ minutes: null }, SERIES).planned).toHaveLength(4);
 	});

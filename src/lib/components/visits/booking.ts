@@ -46,7 +46,12 @@ export function planOf(draft: BookingDraft, zone: Zone, now: number): BookingPla
 	const planned = datable ? planSeries(seriesOf(draft), zone) : [];
 	const outside = rangeProblem(planned, zone, now);
 	const all = outside ? { ...problems, ...outside } : problems;
-	return { planned, problems: all, body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned) };
+	// What cannot be booked is not shown as if it could.
+	return {
+		planned: outside ? [] : planned,
+		problems: all,
+		body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned)
+	};
 }
 
 /** The field that an error of the server is about. */

@@ -19,8 +19,8 @@ describe('offeredMoves', () => {
 		['planned', '2026-03-07T00:00:00Z', 'attend miss'],
 		['confirmed', '2026-03-05T12:00:00Z', 'cancel'],
 		['confirmed', '2026-03-06T12:00:00Z', 'attend miss cancel'],
-		['attended', '2026-03-06T12:00:00Z', 'miss'],
-		['missed', '2026-03-07T12:00:00Z', 'attend'],
+		['attended', '2026-03-06T12:00:00Z', 'miss reopen'],
+		['missed', '2026-03-07T12:00:00Z', 'attend reopen'],
 		['cancelled', '2026-03-05T12:00:00Z', '']
 	])('%s, at %s: %s', (state, now, moves) => {
 		expect(offered(state, now)).toBe(moves);

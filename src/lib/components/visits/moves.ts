@@ -10,14 +10,16 @@ export const MOVE_WORDS: Record<VisitMove, () => string> = {
 	confirm: m.visits_move_confirm,
 	cancel: m.visits_move_cancel,
 	attend: m.visits_move_attend,
-	miss: m.visits_move_miss
+	miss: m.visits_move_miss,
+	reopen: m.visits_move_reopen
 };
 
 const PERMISSIONS = {
 	confirm: 'visit.plan',
 	cancel: 'visit.plan',
 	attend: 'visit.attend',
-	miss: 'visit.attend'
+	miss: 'visit.attend',
+	reopen: 'visit.attend'
 } as const;
 
 /**
@@ -36,7 +38,8 @@ export function offeredMoves(
 		confirm: now < startsAt,
 		cancel: today <= day,
 		attend: today >= day,
-		miss: today >= day
+		miss: today >= day,
+		reopen: true
 	};
 	const offered = movesOf(visit.state).filter((move) => makesSense[move] && can(viewer, PERMISSIONS[move]));
 	return offered.toSorted((a, b) => likelihood(b, today === day) - likelihood(a, today === day));
@@ -44,5 +47,5 @@ export function offeredMoves(
 
 /** On the day itself people arrive; what they said before matters less. */
 function likelihood(move: VisitMove, onTheDay: boolean): number {
-	return { confirm: onTheDay ? 1 : 3, attend: onTheDay ? 3 : 2, miss: 1, cancel: 0 }[move];
+	return { confirm: onTheDay ? 1 : 3, attend: onTheDay ? 3 : 2, miss: 1, cancel: 0, reopen: 0 }[move];
 }

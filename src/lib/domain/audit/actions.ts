@@ -59,7 +59,8 @@ export const AUDIT_ACTIONS = [
 	'visit.cancelled',
 	'visit.confirmed',
 	'visit.followed-up',
-	'visit.missed'
+	'visit.missed',
+	'visit.reopened'
 ] as const;
 export type AuditAction = (typeof AUDIT_ACTIONS)[number];
 

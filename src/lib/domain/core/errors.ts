@@ -17,6 +17,8 @@ export const PROBLEMS = {
 	'already-taken': { status: 409, title: 'Somebody has it already' },
 	'clearance-needed': { status: 409, title: 'A clearance is needed first' },
 	'already-admitted': { status: 409, title: 'The patient has an open stay' },
+	'visit-overlaps': { status: 409, title: 'The patient has another visit at that time' },
+	'place-full': { status: 409, title: 'All places of that time are taken' },
 	'bed-in-use': { status: 409, title: 'The bed is in use' },
 	'in-flight': { status: 409, title: 'The first request with this key is still running' },
 	'too-large': { status: 413, title: 'The request is too large' },

@@ -99,6 +99,9 @@ export type VisitForm = z.infer<typeof visitForm>;
 export const visitMoveBody = z.strictObject({ reason: reason('The reason').optional() }).prefault({});
 export type VisitMoveBody = z.infer<typeof visitMoveBody>;
 
+/** Body of `POST /api/visits/:id/reopen`. */
+export const reopenBody = z.strictObject({ reason: reason('reason') });
+
 /** Why a visit cannot be booked for this start, or null: it must lie ahead, by two years at most. */
 export function startProblem(at: Instant, now: Instant, zone: Zone): string | null {
 	const shownAt = new Date(at).toISOString();

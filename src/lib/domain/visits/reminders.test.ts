@@ -117,7 +117,8 @@ describe('property: over a year, hospital and patient in any of four zones', () 
 			}),
 			{ numRuns: 3000 }
 		);
-	});
+		// Thousands of dates in four zones: slow where a machine is busy.
+	}, 60_000);
 
 	it('none is dropped for a visit at daytime that is booked in time', () => {
 		fc.assert(

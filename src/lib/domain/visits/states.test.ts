@@ -1,15 +1,15 @@
 import { describe, expect, it } from 'vitest';
 import { VISIT_STATES } from '../core/codes';
-import { VISIT_MOVES, isExpected, movesOf, visitAfter, whyNot } from './states';
+import { VISIT_MOVES, isExpected, movesOf, needsReason, visitAfter, whyNot } from './states';
 
 /** Every state against every move; `-` is refused. */
 const MOVES = [
-	// state, confirm, cancel, attend, miss
-	['planned', 'confirmed', 'cancelled', 'attended', 'missed'],
-	['confirmed', '-', 'cancelled', 'attended', 'missed'],
-	['attended', '-', '-', '-', 'missed'],
-	['missed', '-', '-', 'attended', '-'],
-	['cancelled', '-', '-', '-', '-']
+	// state, confirm, cancel, attend, miss, reopen
+	['planned', 'confirmed', 'cancelled', 'attended', 'missed', '-'],
+	['confirmed', '-', 'cancelled', 'attended', 'missed', '-'],
+	['attended', '-', '-', '-', 'missed', 'planned'],
+	['missed', '-', '-', 'attended', '-', 'planned'],
+	['cancelled', '-', '-', '-', '-', '-']
 ] as const;
 
 describe('the moves of a visit', () => {
@@ -24,9 +24,18 @@ describe('the moves of a visit', () => {
 		expect(MOVES.map(([state]) => state)).toEqual([...VISIT_STATES]);
 	});
 
-	it('no move leads back to planned', () => {
-		const reached = VISIT_STATES.flatMap((state) => VISIT_MOVES.map((move) => visitAfter(state, move)));
-		expect(reached).not.toContain('planned');
+	it('only taking back leads to planned', () => {
+		const back = VISIT_STATES.flatMap((state) =>
+			VISIT_MOVES.filter((move) => visitAfter(state, move) === 'planned').map((move) => `${state} ${move}`)
+		);
+		expect(back).toEqual(['attended reopen', 'missed reopen']);
+	});
+
+	it('what is on record is changed with a reason, and nothing else needs one', () => {
+		const needing = VISIT_STATES.flatMap((state) =>
+			VISIT_MOVES.filter((move) => needsReason(state, move)).map((move) => `${state} ${move}`)
+		);
+		expect(needing).toEqual(['attended miss', 'attended reopen', 'missed attend', 'missed reopen']);
 	});
 
 	it.each([

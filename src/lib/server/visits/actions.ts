@@ -17,12 +17,13 @@ import { tellReferrer } from './notify';
 import { findPlace, plannedVisits } from './plan';
 import { visitLine } from './items';
 import { patientOfEpisode, remindOf } from './remind';
+import { requireRoom } from './room';
 import { bookedText } from './words';
 
 /**
  * Book one visit or a series for a patient. Reminders are planned, the thread says it, and the referrer gets a
  * mail with a link, all in one transaction. A visit that the patient had cancelled counts as followed up.
- * @throws Problem `invalid` naming field, value and limit
+ * @throws Problem `invalid` naming field, value and limit, `visit-overlaps` and `place-full` when there is no room
  */
 export function bookVisits(
 	context: PersonContext,
@@ -68,7 +69,9 @@ async function book(tx: Tx, context: PersonContext, episodeId: string, input: Bo
 	const seriesId = input.kind === 'series' ? newId() : null;
 	const booked: VisitRow[] = [];
 	const messages: NewMessage[] = [];
-	for (const planned of plannedVisits(input, env().hospital.zone, now)) {
+	const wanted = plannedVisits(input, env().hospital.zone, now);
+	await requireRoom(tx, patient.id, unit, wanted, now);
+	for (const planned of wanted) {
 		const visit = newVisit(planned, unit, { episodeId, seriesId, bookedBy: actor.id, bookedAt: now });
 		await tx.insert(visits).values(visit);
 		booked.push(visit);
@@ -106,12 +109,17 @@ export function cancelVisit(context: PersonContext, id: string, reason: string |
 	return moveByStaff(context, id, 'cancel', 'visit.plan', reason);
 }
 
-export function attendVisit(context: PersonContext, id: string) {
-	return moveByStaff(context, id, 'attend', 'visit.attend', null);
+export function attendVisit(context: PersonContext, id: string, reason: string | null = null) {
+	return moveByStaff(context, id, 'attend', 'visit.attend', reason);
 }
 
 export function missVisit(context: PersonContext, id: string, reason: string | null) {
 	return moveByStaff(context, id, 'miss', 'visit.attend', reason);
+}
+
+/** What was marked as attended or missed was not so: it is planned again. */
+export function reopenVisit(context: PersonContext, id: string, reason: string) {
+	return moveByStaff(context, id, 'reopen', 'visit.attend', reason);
 }
 
 function moveByStaff(

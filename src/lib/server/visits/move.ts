@@ -1,8 +1,8 @@
 import { eq } from 'drizzle-orm';
 import type { AuditAction } from '$lib/domain/audit/actions';
 import type { VisitState } from '$lib/domain/core/codes';
-import { Problem } from '$lib/domain/core/errors';
-import { isExpected, visitAfter, whyNot, type VisitMove } from '$lib/domain/visits/states';
+import { invalidField, Problem } from '$lib/domain/core/errors';
+import { isExpected, needsReason, visitAfter, whyNot, type VisitMove } from '$lib/domain/visits/states';
 import { threadForDeed } from '../access/access';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
@@ -20,7 +20,8 @@ const ACTIONS: Record<VisitMove, AuditAction> = {
 	confirm: 'visit.confirmed',
 	cancel: 'visit.cancelled',
 	attend: 'visit.attended',
-	miss: 'visit.missed'
+	miss: 'visit.missed',
+	reopen: 'visit.reopened'
 };
 
 export interface MovedVisit {
@@ -32,7 +33,7 @@ export interface MovedVisit {
  * Move a visit on, with what follows from it in the same transaction: reminders of a visit that is not expected
  * any more are dropped, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
  * until somebody has followed it up. Whether the caller may do it is decided before.
- * @throws Problem `wrong-state`
+ * @throws Problem `wrong-state`, and `invalid` where what is on record would be changed without a reason
  */
 export async function moveVisit(
 	tx: Tx,
@@ -45,6 +46,9 @@ export async function moveVisit(
 	const state = visitAfter(visit.state, move);
 	if (state === null) {
 		throw new Problem('wrong-state', whyNot(visit.state, move), { state: visit.state });
+	}
+	if (reason === null && needsReason(visit.state, move)) {
+		throw invalidField('/reason', `reason is missing: the visit is ${visit.state} on record.`);
 	}
 	const { id, episodeId } = visit;
 	const cancelledByPatient = by === 'patient' && state === 'cancelled';
@@ -67,7 +71,13 @@ export async function moveVisit(
 	const strand = by === 'patient' ? ({ strand: 'patient' } as const) : {};
 	return {
 		result: { id, state },
-		audit: { action: ACTIONS[move], objectKind: 'visit', objectId: id, episodeId, detail: { by } },
+		audit: {
+			action: ACTIONS[move],
+			objectKind: 'visit',
+			objectId: id,
+			episodeId,
+			detail: { by, from: visit.state }
+		},
 		entries: threadId ? [{ threadId, kind: 'event', body, ref: { kind: 'visit', id }, ...strand }] : [],
 		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped]
 	};

@@ -23,14 +23,17 @@ export function plannedVisits(input: BookVisits, zone: Zone, now: number): Plann
 	return planned;
 }
 
+/** A unit as a place of visits. */
+export type Place = Pick<typeof units.$inferSelect, 'id' | 'name' | 'kind'>;
+
 /**
  * The unit where a visit takes place, by identifier or exact name.
  * @throws Problem `invalid` when there is none
  */
-export async function findPlace(reader: Reader, input: BookVisits): Promise<{ id: string; name: string }> {
+export async function findPlace(reader: Reader, input: BookVisits): Promise<Place> {
 	const { place, kind } = input;
 	const [unit] = await reader
-		.select({ id: units.id, name: units.name })
+		.select({ id: units.id, name: units.name, kind: units.kind })
 		.from(units)
 		.where(or(eq(units.id, place), eq(units.name, place)));
 	if (!unit) {

@@ -45,9 +45,11 @@ const MOVED: Record<VisitMove, (inputs: { when: string }) => string> = {
 	confirm: m.visits_entry_confirmed,
 	cancel: m.visits_entry_cancelled,
 	attend: m.visits_entry_attended,
-	miss: m.visits_entry_missed
+	miss: m.visits_entry_missed,
+	reopen: m.visits_entry_reopened
 };
 
-function whenOf({ startsAt, zone }: VisitRow, now: number): string {
+/** A visit's time as people say it, in the hospital's wall time. */
+export function whenOf({ startsAt, zone }: Pick<VisitRow, 'startsAt' | 'zone'>, now: number): string {
 	return dayAndClock(startsAt, { zone, now });
 }

@@ -6,5 +6,5 @@ import { attendVisit } from '$lib/server/visits/actions';
 export const POST = writing({
 	permission: 'visit.attend',
 	body: visitMoveBody,
-	run: (context, _input, event) => attendVisit(context, idParam(event))
+	run: (context, { reason }, event) => attendVisit(context, idParam(event), reason ?? null)
 });
