@@ -195,6 +195,7 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 	const sheet = nurse.page.getByRole('dialog');
 	await sheet.getByRole('radio', { name: 'Settled with rest' }).check();
 	await sheet.getByLabel(/^Note/).fill('122/70 after five minutes, feels well.');
+	await sheet.getByLabel(/Which physician knows/).fill('Marta Lisowska');
 	await sheet.getByRole('radio', { name: '15 min' }).check();
 	await sheet.getByRole('button', { name: 'Settle' }).click();
 	await expect(raising.getByText('Escalation settled').first()).toBeVisible();

@@ -91,6 +91,7 @@ describe('append-only tables', () => {
 		'audit',
 		'entries',
 		'clearance_moves',
+		'escalation_facts',
 		'escalation_moves',
 		'findings',
 		'readings',

@@ -11,7 +11,8 @@ import { phonePage } from '$lib/server/escalations/phone';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { receiversOf } from '$lib/server/escalations/receivers';
-import { takeByLink, takeEscalation } from '$lib/server/escalations/take';
+import { takeByLink } from '$lib/server/escalations/link';
+import { takeEscalation } from '$lib/server/escalations/take';
 import { LINK_LIFE_MS } from '$lib/server/escalations/tell';
 import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
@@ -182,6 +183,6 @@ describe('the page of an escalation', () => {
 			passReason: 'Pressure.'
 		});
 		expect(movesFor(view, hospital.people.physician)).toEqual(['confirm']);
-		expect(movesFor(view, hospital.people.nurse)).toEqual(['arrive', 'pass', 'settle']);
+		expect(movesFor(view, hospital.people.nurse)).toEqual(['arrive', 'eta', 'pass', 'settle']);
 	});
 });

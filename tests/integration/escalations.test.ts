@@ -15,7 +15,8 @@ import { chainJob } from '$lib/server/escalations/chain-job';
 import { passEscalation, confirmPass, settleEscalation } from '$lib/server/escalations/hold';
 import { getByLink, getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
-import { takeByLink, takeEscalation } from '$lib/server/escalations/take';
+import { takeByLink } from '$lib/server/escalations/link';
+import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
 import { freshDatabase } from '../support/database';
@@ -97,7 +98,7 @@ describe('raising', () => {
 		const second = await raise({ grade: 'medium', situation: 'Dizzy.' }, 30);
 		expect(second).toMatchObject({ id: first.id, bundled: true });
 		const [row] = await db().select().from(escalations).where(eq(escalations.id, first.id));
-		expect(row?.situation).toBe(`${INPUT.situation}\nDizzy.`);
+		expect(row?.situation).toBe(INPUT.situation);
 		expect(await told(first.id)).toEqual(['0:nurse', '0:nurse-in-charge']);
 	});
 
@@ -121,7 +122,7 @@ describe('raising', () => {
 
 	it('does not tell the raiser of their own call', async () => {
 		const { id } = (await raiseEscalation(by('nurse'), episodeId, INPUT)).result;
-		expect(await told(id)).toEqual(['0:nurse (nobody)', '0:nurse-in-charge']);
+		expect(await told(id)).toEqual(['0:nurse-in-charge']);
 	});
 
 	it.each([

@@ -3,7 +3,7 @@ import type { SessionLine } from '$lib/domain/bedside/views';
 import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import { MINUTE } from '$lib/domain/core/time';
-import type { EscalationView } from '$lib/domain/escalations/views';
+import type { Alarm, EscalationView } from '$lib/domain/escalations/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
 import type { ThreadView } from '$lib/domain/referrals/views';
@@ -36,6 +36,7 @@ export const queries = {
 		// A visit comes near and a re-check falls due by time alone, of which no event tells.
 		refetchInterval: MINUTE
 	}),
+	alarms: (initial: { items: Alarm[] }) => query(['alarms'], '/api/alarms', initial),
 	episodes: (unitId: string | null, initial: List<EpisodeListItem>) =>
 		query(
 			['episodes', unitId ?? ''],

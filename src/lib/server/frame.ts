@@ -14,11 +14,12 @@ const NOTHING_OPEN: LooseEnds = { mine: [], theirs: [] };
  * work, the time. */
 export async function frameOf(context: PersonContext, cursor: number) {
 	const { actor, now } = context;
-	const [units, cover, looseEnds, delivery] = await Promise.all([
+	const [units, cover, looseEnds, delivery, alarms] = await Promise.all([
 		unitsOf(db(), actor.id),
 		coverNow(db(), actor.unitIds, now),
 		can(actor, 'episode.read') ? looseEndsOf(db(), actor, now) : NOTHING_OPEN,
-		read.delivery(context)
+		read.delivery(context),
+		read.alarms(context)
 	]);
 	return {
 		user: { id: actor.id, name: actor.name, role: actor.role },
@@ -26,7 +27,9 @@ export async function frameOf(context: PersonContext, cursor: number) {
 		cover,
 		looseEnds,
 		delivery,
+		alarms: { items: alarms },
 		seesPatients: can(actor, 'episode.read'),
+		readsEscalations: can(actor, 'escalation.read'),
 		cursor,
 		now,
 		zone: env().hospital.zone,

@@ -5,6 +5,7 @@ import type { PersonContext } from './context';
 import { coverNow } from './cover/queries';
 import { getNameboard } from './episodes/nameboard';
 import { listEpisodes } from './episodes/list';
+import { alarmsOf } from './escalations/alarms';
 import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
@@ -30,6 +31,7 @@ export const read = {
 	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>
 		patientLimitsOf(db(), actor, episodeId, now),
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
+	alarms: ({ actor }: PersonContext) => alarmsOf(db(), actor),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id),
 	/** The ways out of the product that do not work now, as a list of the API. */
 	delivery: async ({ actor, now }: PersonContext) => ({

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import type { EscalationView } from '$lib/domain/escalations/views';
 import { historyOf } from './history';
 
 const at = (second: number) => `2026-03-03T09:00:${String(second).padStart(2, '0')}Z`;
@@ -12,11 +13,21 @@ const STEP = {
 	message: 'delivered'
 } as const;
 
+type Move = EscalationView['moves'][number];
+const move = (given: Partial<Move>): Move => ({
+	at: at(0),
+	by: null,
+	kind: 'raised',
+	other: null,
+	etaMinutes: null,
+	...given
+});
+
 describe('historyOf', () => {
 	it('orders by time, and puts the call before the messages it caused', () => {
 		const moves = [
-			{ at: at(0), by: 'Iris Aldous', kind: 'raised' },
-			{ at: at(9), by: 'Rose Ferris', kind: 'taken' }
+			move({ kind: 'raised', by: 'Iris Aldous' }),
+			move({ at: at(9), kind: 'taken', by: 'Rose Ferris' })
 		];
 		const lines = historyOf({ moves, steps: [STEP, { ...STEP, at: at(5), message: 'accepted' }] });
 		expect(lines.map(({ words, fate }) => [words, fate])).toEqual([
@@ -45,8 +56,20 @@ describe('historyOf', () => {
 		expect(line?.failed).toBe(failed);
 	});
 
-	it('does not lose a kind of move that it has no words for', () => {
-		const [line] = historyOf({ moves: [{ at: at(0), by: null, kind: 'asked' }], steps: [] });
-		expect(line?.words).toBe('The hospital’s clockwork: asked');
+	it.each<[Partial<Move>, string]>([
+		[{ kind: 'passed', by: 'Rose Ferris', other: 'Odran Keel' }, 'Rose Ferris passes it on to Odran Keel.'],
+		[
+			{ kind: 'confirmed', by: 'Odran Keel', other: 'Rose Ferris' },
+			'Odran Keel has it now, from Rose Ferris.'
+		],
+		[{ kind: 'asked', other: 'Rose Ferris' }, 'Rose Ferris was asked: at the bedside?'],
+		[{ kind: 'eta', by: 'Rose Ferris', etaMinutes: 4 }, 'Rose Ferris will be there in 4 min.'],
+		[
+			{ kind: 'told-in-person', by: 'Iris Aldous', other: 'Rose Ferris' },
+			'Iris Aldous told Rose Ferris in person.'
+		]
+	])('names both sides of %o', (given, words) => {
+		const [line] = historyOf({ moves: [move(given)], steps: [] });
+		expect(line?.words).toBe(words);
 	});
 });

@@ -1,3 +1,4 @@
+import type { EscalationMoveKind } from '$lib/domain/core/codes';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import { m } from '$lib/i18n/paraglide/messages';
 import { POST_WORDS } from './chain-rope';
@@ -23,20 +24,31 @@ export function historyOf({ moves, steps }: Pick<EscalationView, 'moves' | 'step
 	return [...done, ...told].sort((a, b) => a.at - b.at);
 }
 
-const MOVE_WORDS: Record<string, (name: { name: string }) => string> = {
+type MoveWords = { name: string; other: string; minutes: number };
+const MOVE_WORDS: Record<EscalationMoveKind, (words: MoveWords) => string> = {
 	raised: m.escalations_move_raised,
+	'told-in-person': m.escalations_move_told_in_person,
 	added: m.escalations_move_added,
 	taken: m.escalations_move_taken,
+	untaken: m.escalations_move_untaken,
+	eta: m.escalations_move_eta,
+	asked: m.escalations_move_asked,
+	'went-on': m.escalations_move_went_on,
 	arrived: m.escalations_move_arrived,
 	passed: m.escalations_move_passed,
 	confirmed: m.escalations_move_confirmed,
 	settled: m.escalations_move_settled,
+	informed: m.escalations_move_informed,
 	withdrawn: m.escalations_move_withdrawn
 };
 
-function moveLine({ at, by, kind }: EscalationView['moves'][number], index: number): HistoryLine {
-	const name = by ?? m.escalations_by_nobody();
-	const words = MOVE_WORDS[kind]?.({ name }) ?? `${name}: ${kind}`;
+function moveLine(move: EscalationView['moves'][number], index: number): HistoryLine {
+	const { at, by, kind, other, etaMinutes } = move;
+	const words = MOVE_WORDS[kind]({
+		name: by ?? m.escalations_by_nobody(),
+		other: other ?? m.escalations_somebody(),
+		minutes: etaMinutes ?? 0
+	});
 	return { key: `move ${index}`, at: Date.parse(at), words, told: false, fate: null, failed: false };
 }
 

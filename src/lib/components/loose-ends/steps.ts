@@ -18,13 +18,17 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 	const { id, episodeId } = end;
 	switch (end.kind) {
 		case 'escalation':
-			return {
-				label: m.home_step_take(),
-				href: routes.escalation(id),
-				deed: `/api/escalations/${id}/take`
-			};
+			return onEscalation(id, 'take', m.home_step_take());
 		case 'escalation-taken':
-			return open(m.home_step_settle(), routes.escalation(id));
+			return end.code === 'on-the-way'
+				? onEscalation(id, 'arrive', m.home_step_arrive())
+				: open(m.home_step_settle(), routes.escalation(id));
+		case 'arrival':
+			return onEscalation(id, 'arrive', m.home_step_arrive());
+		case 'confirm':
+			return onEscalation(id, 'confirm', m.home_step_confirm());
+		case 'physician-to-tell':
+			return open(m.home_step_inform(), routes.escalation(id));
 		case 'recheck':
 			return mayRecord(role) && episodeId
 				? open(m.home_step_record(), routes.newSession(episodeId))
@@ -55,6 +59,9 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 	switch (kind) {
 		case 'escalation':
 		case 'escalation-taken':
+		case 'arrival':
+		case 'confirm':
+		case 'physician-to-tell':
 		case 'recheck':
 			return routes.escalation(id);
 		case 'clearance':
@@ -70,6 +77,11 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 		case 'inbound':
 			return null;
 	}
+}
+
+/** One press does it; without script it is done on the page of the escalation. */
+function onEscalation(id: string, move: 'take' | 'arrive' | 'confirm', label: string): Step {
+	return { label, href: routes.escalation(id), deed: `/api/escalations/${id}/${move}` };
 }
 
 function open(label: string, href: string): Step {

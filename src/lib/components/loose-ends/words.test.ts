@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { LooseEnd, LooseEndKind } from '$lib/domain/loose-ends/loose-ends';
-import { acceptedWords, askerWords, isOverdue, owerWords, waitWords } from './words';
+import { doneWords, askerWords, isOverdue, owerWords, waitWords } from './words';
 
 const NOW = Date.parse('2026-03-03T14:00:00Z');
 const READER = { zone: 'Europe/Dublin', now: NOW };
@@ -89,9 +89,9 @@ describe('owerWords', () => {
 	});
 });
 
-describe('acceptedWords', () => {
+describe('doneWords', () => {
 	it('name the service and the patient', () => {
-		expect(acceptedWords(end('referral', { code: 'physiotherapy' }))).toBe(
+		expect(doneWords(end('referral', { code: 'physiotherapy' }))).toBe(
 			'Accepted: Physiotherapy, Marta Lisowska.'
 		);
 	});

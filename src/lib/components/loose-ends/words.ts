@@ -13,6 +13,9 @@ export function waitWords(end: LooseEnd, reader: Reader): string {
 	switch (end.kind) {
 		case 'escalation':
 			return m.home_wait_untaken({ time: duration(open) });
+		case 'arrival':
+		case 'confirm':
+			return m.home_wait_answer({ time: duration(open) });
 		case 'escalation-taken':
 			return m.home_wait_taken({ time: duration(open) });
 		case 'visit-unconfirmed':
@@ -35,7 +38,12 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 	switch (end.kind) {
 		case 'escalation':
 		case 'escalation-taken':
+		case 'arrival':
 			return m.home_asker_raised({ name });
+		case 'confirm':
+			return m.home_asker_passed({ name });
+		case 'physician-to-tell':
+			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'clearance':
@@ -63,7 +71,12 @@ export function owerWords(end: LooseEnd): string {
 		case 'escalation':
 			return '';
 		case 'escalation-taken':
+		case 'arrival':
 			return m.home_ower_has({ name });
+		case 'confirm':
+			return m.home_ower_confirms({ name });
+		case 'physician-to-tell':
+			return m.home_ower_informs({ name });
 		case 'recheck':
 			return m.home_ower_measures({ name });
 		case 'mention':
@@ -73,8 +86,11 @@ export function owerWords(end: LooseEnd): string {
 	}
 }
 
-/** What was accepted, once it was. */
-export function acceptedWords({ code, patientName }: LooseEnd): string {
+/** What was done with one press, once it was: a referral accepted, or the holder at the bedside. */
+export function doneWords({ kind, code, patientName }: LooseEnd): string {
+	if (kind === 'arrival' || kind === 'escalation-taken') {
+		return m.home_arrived({ who: patientName ?? '' });
+	}
 	const service = SERVICE_WORDS[code as Service]?.() ?? '';
 	return m.home_accepted({ service, who: patientName ?? '' });
 }

@@ -26,6 +26,7 @@ export const PERMISSIONS = [
 	'limit.change',
 	'level.decide',
 	'sign-off.decide',
+	'alarm.read',
 	'escalation.read',
 	'escalation.raise',
 	'escalation.take',
@@ -115,6 +116,8 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 		case 'account.manage':
 		case 'audit.read':
 			return role === 'admin';
+		// Where and since when nobody comes is for everybody of the unit; what it is about is not.
+		case 'alarm.read':
 		case 'own-account.change':
 			return true;
 		default:

@@ -57,6 +57,25 @@ export type Grade = (typeof GRADES)[number];
 export const ESCALATION_STATES = ['raised', 'taken', 'settled', 'withdrawn'] as const;
 export type EscalationState = (typeof ESCALATION_STATES)[number];
 
+/** What can happen to an escalation; a line of its history each. */
+export const ESCALATION_MOVES = [
+	'raised',
+	'told-in-person',
+	'added',
+	'taken',
+	'untaken',
+	'eta',
+	'asked',
+	'went-on',
+	'arrived',
+	'passed',
+	'confirmed',
+	'settled',
+	'informed',
+	'withdrawn'
+] as const;
+export type EscalationMoveKind = (typeof ESCALATION_MOVES)[number];
+
 export const VISIT_STATES = ['planned', 'confirmed', 'attended', 'missed', 'cancelled'] as const;
 export type VisitState = (typeof VISIT_STATES)[number];
 

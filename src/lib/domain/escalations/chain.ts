@@ -14,6 +14,9 @@ export interface ChainStep {
 	post: Post;
 }
 
+/** Who was named as told in person has so long to confirm before the chain starts; common practice. */
+export const IN_PERSON_MS = 2 * 60 * 1000;
+
 interface Policy {
 	steps: readonly (readonly [afterSeconds: number, posts: readonly Post[]])[];
 	/** After the last step everybody is told again at this distance. */
@@ -51,11 +54,19 @@ const POLICIES: Record<Grade, Policy> = {
 	}
 };
 
-/** The chain as it is announced when an escalation is raised: one row for each post of each step. */
-export function chainOf(grade: Grade): ChainStep[] {
+/**
+ * The chain as it is announced when an escalation is raised: one row for each post of each step.
+ * @param delayMs how long after the raising it starts
+ */
+export function chainOf(grade: Grade, delayMs = 0): ChainStep[] {
 	return POLICIES[grade].steps.flatMap(([afterSeconds, posts], step) =>
-		posts.map((post) => ({ step, afterSeconds, post }))
+		posts.map((post) => ({ step, afterSeconds: afterSeconds + delayMs / 1000, post }))
 	);
+}
+
+/** The start that makes a step due at an instant: a chain that goes on keeps the distances between its steps. */
+export function startFor(grade: Grade, step: number, at: number): number {
+	return at - chainStep(grade, step).afterSeconds * 1000;
 }
 
 /** Who is told at a step, and how long after the raising it is due. Steps past the last one repeat the whole chain. */

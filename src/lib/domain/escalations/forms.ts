@@ -1,6 +1,8 @@
 import { z } from 'zod';
-import { GRADES } from '../core/codes';
+import { GRADES, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
+import { toRfc3339 } from '../core/instant';
+import { MINUTE } from '../core/time';
 
 const minutes = (field: string, max: number) =>
 	z
@@ -28,6 +30,10 @@ export const takeBody = z.strictObject({
 	etaMinutes: minutes('The time until you are there', 240).optional()
 });
 
+export const etaBody = z.strictObject({ etaMinutes: takeBody.shape.etaMinutes.unwrap() });
+
+export const informBody = z.strictObject({ informed: text('The physician who knows', 200) });
+
 export const passBody = z.strictObject({ to: z.string().min(1).max(64), reason: reason('The reason') });
 
 export const settleBody = z.strictObject({
@@ -39,18 +45,58 @@ export const settleBody = z.strictObject({
 
 export const emptyBody = z.strictObject({});
 
+/** What the page of a secret link can do; without a word it takes, as the bare button of an old page does. */
+export const linkDeed = z.preprocess(
+	(form) => ({ deed: 'take', ...(form as object) }),
+	z.discriminatedUnion('deed', [
+		z.object({ deed: z.literal(['take', 'untake', 'arrive', 'confirm']) }),
+		z.object({
+			deed: z.literal('eta'),
+			etaMinutes: z.coerce.number().pipe(etaBody.shape.etaMinutes)
+		})
+	])
+);
+export type LinkDeed = z.output<typeof linkDeed>;
+
 /** The form of the escalation page; the same fields as the JSON call. */
 export const takeForm = z.object({ etaMinutes: takeBody.shape.etaMinutes });
 
 /**
- * The form that raises one. `grade` may come empty, so that a page can ask for it without proposing one; the
- * action refuses it then.
+ * The form that raises one. `grade` comes empty when nobody has chosen, so that a page can ask for it without
+ * proposing one; a high one says by when somebody is needed. Every message names its field in plain words.
  */
-export const raiseForm = z.object({
-	grade: z.enum(['', ...GRADES], `The grade is one of ${GRADES.join(', ')}.`).default(''),
-	situation: raiseBody.shape.situation,
-	background: raiseBody.shape.background,
-	assessment: raiseBody.shape.assessment,
-	request: raiseBody.shape.request,
-	sessionId: raiseBody.shape.sessionId
-});
+export const raiseForm = z
+	.object({
+		grade: z
+			.enum(['', ...GRADES], `The grade is one of ${GRADES.join(', ')}.`)
+			.refine((grade) => grade !== '', 'How urgent is open: choose high, medium or low.')
+			.prefault(''),
+		situation: raiseBody.shape.situation,
+		background: raiseBody.shape.background,
+		assessment: raiseBody.shape.assessment,
+		request: raiseBody.shape.request,
+		/** In how many minutes somebody is needed at the latest; a page knows no instants before it is sent. */
+		neededInMinutes: minutes('The time until somebody is needed', 24 * 60).optional(),
+		toldInPerson: z.string().max(64).optional(),
+		sessionId: raiseBody.shape.sessionId
+	})
+	.superRefine(({ grade, neededInMinutes }, context) => {
+		if (grade === 'high' && neededInMinutes === undefined) {
+			const message = 'By when is open: a high one says within how many minutes somebody is needed.';
+			context.addIssue({ code: 'custom', path: ['neededInMinutes'], message });
+		}
+	});
+export type RaiseFilled = z.output<typeof raiseForm>;
+
+/** Within how many minutes somebody is needed, proposed for a grade; null where the shift is enough. */
+export const NEEDED_WITHIN: Readonly<Record<Grade, number | null>> = { high: 5, medium: 30, low: null };
+
+/** The call that a filled form asks for, at the instant when it is sent. */
+export function callOf(filled: RaiseFilled, now: number): RaiseInput {
+	const { neededInMinutes, toldInPerson, ...call } = filled;
+	return {
+		...call,
+		...(toldInPerson ? { toldInPerson } : {}),
+		...(neededInMinutes === undefined ? {} : { neededBy: toRfc3339(now + neededInMinutes * MINUTE) })
+	};
+}

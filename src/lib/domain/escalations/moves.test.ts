@@ -11,14 +11,23 @@ function person(role: Role, id: string = role, unitIds = [UNIT]): Person {
 
 const RAISED = {
 	state: 'raised',
+	grade: 'high',
 	unitId: UNIT,
 	holder: null,
 	passTo: null,
 	raisedBy: { id: 'therapist', name: 'Iris', role: 'therapist' },
-	arrivedAt: null
+	arrivedAt: null,
+	askedAt: null,
+	next: null,
+	informed: null
 } as const;
 const TAKEN = { ...RAISED, state: 'taken', holder: { id: 'nurse', name: 'Rose' } } as const;
 const THERE = { ...TAKEN, arrivedAt: '2026-03-03T09:04:00Z' } as const;
+const SOUGHT = {
+	...TAKEN,
+	askedAt: '2026-03-03T09:15:00Z',
+	next: { step: 1, posts: ['nurse'], at: '2026-03-03T09:18:00Z' }
+} as const;
 const PASSED = { ...THERE, passTo: { id: 'physician', name: 'Piet' } } as const;
 
 describe('movesFor', () => {
@@ -35,13 +44,28 @@ describe('movesFor', () => {
 			person('nurse'),
 			['take', 'withdraw']
 		],
-		['taken, the holder', TAKEN, person('nurse'), ['arrive', 'pass', 'settle']],
+		['taken, the holder', TAKEN, person('nurse'), ['arrive', 'eta', 'pass', 'settle']],
+		[
+			'sought anew, the holder who did not come',
+			SOUGHT,
+			person('nurse'),
+			['arrive', 'eta', 'pass', 'settle']
+		],
+		['sought anew, another nurse', SOUGHT, person('nurse', 'nurse2'), ['take']],
+		[
+			'made graver, its holder',
+			{ ...SOUGHT, askedAt: null },
+			person('nurse'),
+			['take', 'arrive', 'eta', 'pass', 'settle']
+		],
 		['at the bedside, the holder', THERE, person('nurse'), ['settle', 'pass']],
 		['taken, another nurse', TAKEN, person('nurse', 'nurse2'), []],
 		['taken, its raiser', TAKEN, person('therapist'), ['withdraw']],
 		['passed on, the receiver', PASSED, person('physician'), ['confirm']],
 		['passed on, the giver', PASSED, person('nurse'), ['settle', 'pass']],
-		['settled, the last holder', { ...TAKEN, state: 'settled' }, person('nurse'), []],
+		['settled, no physician named', { ...TAKEN, state: 'settled' }, person('nurse'), ['inform']],
+		['settled, one named', { ...TAKEN, state: 'settled', informed: 'M. L.' }, person('nurse'), []],
+		['settled, of medium grade', { ...TAKEN, state: 'settled', grade: 'medium' }, person('nurse'), []],
 		['settled, its raiser', { ...TAKEN, state: 'settled' }, person('therapist'), []],
 		['withdrawn, a nurse', { ...RAISED, state: 'withdrawn' }, person('nurse'), []],
 		['raised, a nurse of another unit', RAISED, person('nurse', 'nurse', ['gym']), []]

@@ -1,9 +1,22 @@
 import type { Person } from '../access/actor';
 import { can } from '../access/can';
+import { isOpenTo, type Held } from './holding';
 import type { EscalationMove } from './states';
 import type { EscalationView } from './views';
 
-type Facts = Pick<EscalationView, 'state' | 'unitId' | 'holder' | 'passTo' | 'raisedBy' | 'arrivedAt'>;
+type Facts = Pick<
+	EscalationView,
+	| 'state'
+	| 'grade'
+	| 'unitId'
+	| 'holder'
+	| 'passTo'
+	| 'raisedBy'
+	| 'arrivedAt'
+	| 'askedAt'
+	| 'next'
+	| 'informed'
+>;
 
 /**
  * What this person can do about an escalation as it stands, most pressing first; the server decides it once more.
@@ -19,9 +32,13 @@ export function movesFor(facts: Facts, person: Person): EscalationMove[] {
 	return moves;
 }
 
-function takersMoves({ state, holder, passTo, arrivedAt }: Facts, person: Person): EscalationMove[] {
+function takersMoves(facts: Facts, person: Person): EscalationMove[] {
+	const { state, holder, passTo } = facts;
 	if (state === 'raised') {
 		return ['take'];
+	}
+	if (state === 'settled') {
+		return facts.grade === 'high' && facts.informed === null ? ['inform'] : [];
 	}
 	if (state !== 'taken') {
 		return [];
@@ -29,8 +46,20 @@ function takersMoves({ state, holder, passTo, arrivedAt }: Facts, person: Person
 	if (passTo?.id === person.id) {
 		return ['confirm'];
 	}
-	if (holder?.id !== person.id) {
-		return [];
-	}
-	return arrivedAt === null ? ['arrive', 'pass', 'settle'] : ['settle', 'pass'];
+	const anew: EscalationMove[] = isOpenTo(heldOf(facts), person.id) ? ['take'] : [];
+	return holder?.id === person.id ? [...anew, ...holdersMoves(facts)] : anew;
+}
+
+function holdersMoves({ arrivedAt }: Facts): EscalationMove[] {
+	return arrivedAt === null ? ['arrive', 'eta', 'pass', 'settle'] : ['settle', 'pass'];
+}
+
+/** The rule about taking anew, asked of a view: a next step beside a holder means that others are sought. */
+function heldOf({ state, holder, askedAt, next }: Facts): Held {
+	return {
+		state,
+		takenBy: holder?.id ?? null,
+		holderAskedAt: askedAt === null ? null : Date.parse(askedAt),
+		nextStepAt: next === null ? null : Date.parse(next.at)
+	};
 }

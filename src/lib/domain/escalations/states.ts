@@ -1,14 +1,18 @@
 import type { EscalationState } from '../core/codes';
 import { Problem } from '../core/errors';
 
-export type EscalationMove = 'take' | 'arrive' | 'pass' | 'confirm' | 'settle' | 'withdraw';
+export type EscalationMove =
+	'take' | 'eta' | 'arrive' | 'pass' | 'confirm' | 'settle' | 'inform' | 'withdraw';
 
 const ALLOWED: Record<EscalationMove, readonly EscalationState[]> = {
-	take: ['raised'],
+	// A taken one too, when others are sought beside its holder; who that is decides `isOpenTo`.
+	take: ['raised', 'taken'],
+	eta: ['taken'],
 	arrive: ['taken'],
 	pass: ['taken'],
 	confirm: ['taken'],
 	settle: ['taken'],
+	inform: ['settled'],
 	withdraw: ['raised', 'taken']
 };
 

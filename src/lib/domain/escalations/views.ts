@@ -1,4 +1,4 @@
-import type { EscalationState, Grade, Post, Role } from '../core/codes';
+import type { EscalationMoveKind, EscalationState, Grade, Post, Role } from '../core/codes';
 
 export interface EscalationView {
 	id: string;
@@ -22,9 +22,19 @@ export interface EscalationView {
 	threadId: string | null;
 	raisedBy: { id: string; name: string; role: Role };
 	raisedAt: string;
+	/** Whom the raiser named as told in person. */
+	toldInPerson: { id: string; name: string } | null;
+	/** The newest calls that were added while it was open, oldest first; at most {@link ADDED_SHOWN}. */
+	added: AddedCall[];
+	/** How many were added in all. */
+	addedTotal: number;
 	holder: { id: string; name: string } | null;
 	takenAt: string | null;
 	etaMinutes: number | null;
+	/** When the holder said to be there. */
+	etaAt: string | null;
+	/** When the holder was asked whether they are there; null once they have answered. */
+	askedAt: string | null;
 	arrivedAt: string | null;
 	passTo: { id: string; name: string } | null;
 	passReason: string | null;
@@ -45,11 +55,53 @@ export interface EscalationView {
 		at: string;
 		message: string | null;
 	}[];
-	/** Who is told next and when; null once somebody has it. */
+	/** Who is told next and when; null while somebody has it and comes. */
 	next: { step: number; posts: readonly Post[]; at: string } | null;
 	/** Everybody was told and nobody took it. */
 	chainSpent: boolean;
-	moves: { at: string; by: string | null; kind: string }[];
+	/** `other` is whom a move names beside its maker: the receiver or the giver of a pass, whoever was asked. */
+	moves: {
+		at: string;
+		by: string | null;
+		kind: EscalationMoveKind;
+		other: string | null;
+		etaMinutes: number | null;
+	}[];
+}
+
+/** More are never shown at once; the rest is on record, and in the threads. */
+export const ADDED_SHOWN = 20;
+
+/** What a further caller said about an escalation that was open already. */
+export interface AddedCall {
+	id: string;
+	by: { id: string; name: string; role: Role };
+	at: string;
+	grade: Grade;
+	/** It made the escalation graver. */
+	raisedGrade: boolean;
+	situation: string;
+	background: string;
+	assessment: string;
+	request: string;
+	neededBy: string | null;
+	toldInPerson: { id: string; name: string } | null;
+	sessionId: string | null;
+	threadId: string | null;
+}
+
+/** An untaken high escalation as every screen of its unit shows it: where and since when, never what about. */
+export interface Alarm {
+	id: string;
+	unitId: string;
+	unit: string;
+	bed: string | null;
+	grade: Grade;
+	raisedAt: string;
+	/** Somebody took it and did not come. */
+	taken: boolean;
+	/** Everybody was told. */
+	chainSpent: boolean;
 }
 
 /** Somebody an escalation can be passed on to. */
@@ -75,6 +127,13 @@ export interface PhoneEscalation {
 	takenAt: string | null;
 	/** True when the holder is the person of this link. */
 	mine: boolean;
+	/** When the holder said to be there. */
+	etaAt: string | null;
+	arrivedAt: string | null;
+	/** True when the person of this link was asked whether they are there. */
+	asked: boolean;
+	/** Until when the person of this link can take their taking back; null when they do not hold it. */
+	undoUntil: string | null;
 	/** True when the holder waits for the person of this link to confirm that they have it. */
 	passedToMe: boolean;
 	usable: boolean;

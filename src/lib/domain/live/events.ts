@@ -6,6 +6,7 @@ export const TOPICS = [
 	'clearance',
 	'session',
 	'escalation',
+	'alarm',
 	'visit',
 	'message',
 	'delivery',
@@ -50,6 +51,8 @@ export function staleKeys(event: StreamEvent): QueryKey[] {
 			return [...around, ...(event.episodeId ? [['sessions', event.episodeId] as const] : [])];
 		case 'escalation':
 			return [...around, ['escalation', event.id]];
+		case 'alarm':
+			return [['alarms']];
 		case 'visit':
 			return [...around, ['visits'], ['visit', event.id]];
 		case 'episode':

@@ -5,7 +5,10 @@ import { type ClearanceKind, type Grade, type Priority, type Service } from '../
 export const LOOSE_END_KINDS = [
 	'escalation',
 	'escalation-taken',
+	'arrival',
+	'confirm',
 	'recheck',
+	'physician-to-tell',
 	'clearance',
 	'referral',
 	'mention',
@@ -70,11 +73,17 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 	const unit = thing.unitId === null ? {} : { unitId: thing.unitId };
 	switch (thing.kind) {
 		case 'escalation':
+			// One that others are sought for has a row of its own for its holder, and for who waits.
+			if (thing.heldById !== null && (asked || thing.heldById === person.id)) {
+				return null;
+			}
 			// Nobody is told of their own call for help; they see that they still wait.
 			return asked ?? (can(person, 'escalation.take', unit) ? 'mine' : null);
 		case 'escalation-taken':
-			return thing.heldById === person.id ? 'mine' : asked;
+		case 'arrival':
+		case 'confirm':
 		case 'recheck':
+		case 'physician-to-tell':
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'clearance':
 			return (

@@ -10,7 +10,16 @@ type Ranked = Pick<OpenThing, 'kind' | 'id' | 'grade' | 'priority' | 'since' | '
  * then what holds up treatment, then what can be telephoned about. A question in words never makes anything urgent:
  * only its kind, grade and priority do.
  */
-const FIRST_RANK = { untaken: 0, taken: 10, recheck: 20, asks: 30, messages: 40, visits: 50 } as const;
+const FIRST_RANK = {
+	untaken: 0,
+	answers: 5,
+	taken: 10,
+	recheck: 20,
+	physician: 25,
+	asks: 30,
+	messages: 40,
+	visits: 50
+} as const;
 const BY_PRIORITY: Record<Priority, number> = { urgent: 0, soon: 1, routine: 2 };
 
 /** Sorts the most urgent first, then the one that has waited longest; what has a time of its own goes by that. */
@@ -23,10 +32,15 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 	switch (kind) {
 		case 'escalation':
 			return FIRST_RANK.untaken + gradeRank(grade);
+		case 'arrival':
+		case 'confirm':
+			return FIRST_RANK.answers + gradeRank(grade);
 		case 'escalation-taken':
 			return FIRST_RANK.taken + gradeRank(grade);
 		case 'recheck':
 			return FIRST_RANK.recheck;
+		case 'physician-to-tell':
+			return FIRST_RANK.physician;
 		case 'clearance':
 		case 'mention':
 		case 'referral':

@@ -24,7 +24,10 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'escalation':
 			return 'nursing';
 		case 'escalation-taken':
+		case 'arrival':
+		case 'confirm':
 		case 'recheck':
+		case 'physician-to-tell':
 			return holder === null ? 'nursing' : STRAND_OF_ROLE[holder];
 		case 'clearance':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
@@ -58,7 +61,10 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 			return ['coordinator'];
 		case 'mention':
 		case 'escalation-taken':
+		case 'arrival':
+		case 'confirm':
 		case 'recheck':
+		case 'physician-to-tell':
 			return [];
 	}
 }

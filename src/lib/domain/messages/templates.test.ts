@@ -29,8 +29,13 @@ const TEXTS: [SmsTemplate, string, string][] = [
 	],
 	[
 		'escalation-taken',
-		smsText('escalation-taken', BEDSIDE),
-		`Ropewalk HIGH: Heron Unit, bed 4: somebody has it. You need do nothing. ${LINK}`
+		smsText('escalation-taken', { ...BEDSIDE, holder: 'nurse' }),
+		'Ropewalk HIGH: Heron Unit, bed 4: a nurse has it. You need do nothing.'
+	],
+	[
+		'holder-asked',
+		smsText('holder-asked', BEDSIDE),
+		`Ropewalk HIGH: Heron Unit, bed 4: are you there? Else others are told. ${LINK}`
 	],
 	['took-it', smsText('took-it', BEDSIDE), `Ropewalk HIGH: Heron Unit, bed 4: it is yours. ${LINK}`],
 	[

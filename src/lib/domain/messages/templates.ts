@@ -13,6 +13,7 @@ import type { Wording } from './templates/wording';
 export const STAFF_SMS = {
 	escalation: escalations.escalation,
 	'escalation-taken': escalations.escalationTaken,
+	'holder-asked': escalations.holderAsked,
 	'took-it': escalations.tookIt,
 	'taken-before': escalations.takenBefore,
 	'over-before': escalations.overBefore,

@@ -1,11 +1,12 @@
 import { and, eq, isNotNull } from 'drizzle-orm';
+import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { Tx } from '../db';
 import { escalations, escalationSteps } from '../db/schema';
 import { newId } from '../ids';
 import type { NewMessage } from '../outbox/enqueue';
-import { startChain } from './raise';
-import { alert, placeOf, stopAlerts, type EscalationRow } from './tell';
+import { escalationEvents } from './follow';
+import { alert, placeOf, startChain, stopAlerts, type EscalationRow } from './tell';
 
 /** What a move of the patient means for a call that nobody has ended. */
 export interface Followed {
@@ -28,11 +29,11 @@ export async function followPatient(
 	const open = await tx.select().from(escalations).where(eq(escalations.episodeId, episodeId));
 	const followed: Followed = { messages: [], events: [] };
 	for (const row of open.filter(({ state }) => state === 'raised' || state === 'taken')) {
-		const event = { topic: 'escalation', kind: 'moved', id: row.id, episodeId } as const;
-		followed.events.push(
-			...[...new Set([unitIds.left, unitIds.now])].map((unitId) => ({ ...event, unitId }))
-		);
-		if (row.state === 'raised') {
+		const events = escalationEvents(row, 'moved');
+		for (const unitId of new Set([unitIds.left, unitIds.now])) {
+			followed.events.push(...events.map((event) => ({ ...event, unitId })));
+		}
+		if (row.state === 'raised' || isSoughtAnew(row)) {
 			followed.messages.push(...(await tellAgain(tx, row, unitIds.left !== unitIds.now, now)));
 		}
 	}
@@ -42,18 +43,13 @@ export async function followPatient(
 async function tellAgain(tx: Tx, row: EscalationRow, elsewhere: boolean, now: number): Promise<NewMessage[]> {
 	await stopAlerts(tx, row.id, 'the patient was moved');
 	const told = await toldOf(tx, row.id);
-	const messages = elsewhere ? await startAgain(tx, row, now) : [];
+	const messages = elsewhere ? await startChain(tx, row, 0, now) : [];
 	const place = await placeOf(tx, row.episodeId);
 	const occasion = `moved:${newId()}`;
 	for (const userId of told.filter((id) => !messages.some((message) => message.userId === id))) {
 		messages.push(await alert(tx, row, userId, place, occasion, now));
 	}
 	return messages;
-}
-
-async function startAgain(tx: Tx, row: EscalationRow, now: number): Promise<NewMessage[]> {
-	await tx.update(escalations).set({ chainStartedAt: now }).where(eq(escalations.id, row.id));
-	return startChain(tx, { ...row, chainStartedAt: now }, now);
 }
 
 async function toldOf(tx: Tx, escalationId: string): Promise<string[]> {

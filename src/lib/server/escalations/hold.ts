@@ -1,33 +1,77 @@
 import { eq } from 'drizzle-orm';
 import type { z } from 'zod';
-import type { AuditAction } from '$lib/domain/audit/actions';
+import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import type { passBody, settleBody } from '$lib/domain/escalations/forms';
+import { askHolderAt, isSoughtAnew } from '$lib/domain/escalations/holding';
 import { requireEscalationMove, type EscalationMove } from '$lib/domain/escalations/states';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEscalation } from '../access/access';
 import { loadPerson } from '../auth/people';
-import type { PersonContext } from '../context';
+import type { Context, PersonContext } from '../context';
 import type { Tx } from '../db';
 import { escalations } from '../db/schema';
 import { write, type Change, type Written } from '../write';
+import { moved, type Moved } from './follow';
 import { recordMove } from './moves';
 import { alert, placeOf, stopAlerts, type EscalationRow } from './tell';
-
-export interface Moved {
-	id: string;
-	state: EscalationRow['state'];
-}
 
 /** The holder is at the bedside. */
 export function arriveAtEscalation(context: PersonContext, id: string): Promise<Written<Moved>> {
 	return write(context, 'escalation.take', async (tx) => {
-		const row = await accessHeld(tx, context, id, 'arrive');
-		await tx.update(escalations).set({ arrivedAt: context.now }).where(eq(escalations.id, id));
-		await recordMove(tx, context, id, 'arrived');
-		return moved(row, 'taken', 'escalation.arrived', 'arrived', m.escalations_entry_arrived());
+		const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
+		return arrive(tx, context, context.actor, escalation);
 	});
+}
+
+/** {@link arriveAtEscalation} inside a transaction. Nobody is asked or sought any more: somebody is there. */
+export async function arrive(
+	tx: Tx,
+	context: Context,
+	person: Person,
+	row: EscalationRow
+): Promise<Change<Moved>> {
+	requireHeld(row, person, 'arrive');
+	await tx
+		.update(escalations)
+		.set({ arrivedAt: row.arrivedAt ?? context.now, ...NOBODY_SOUGHT })
+		.where(eq(escalations.id, row.id));
+	await recordMove(tx, context, row.id, 'arrived');
+	await stopAlerts(tx, row.id, 'at the bedside');
+	return moved(tx, row, 'taken', 'escalation.arrived', 'arrived', m.escalations_entry_arrived());
+}
+
+/** In how many minutes the holder will be at the bedside: given after taking, or given anew. */
+export function giveEtaOf(context: PersonContext, id: string, minutes: number): Promise<Written<Moved>> {
+	return write(context, 'escalation.take', async (tx) => {
+		const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
+		return giveEta(tx, context, context.actor, escalation, minutes);
+	});
+}
+
+/**
+ * {@link giveEtaOf} inside a transaction. A holder who was asked has answered with it, as long as the chain has
+ * not gone on; from then on only being there, or another taker, stops it.
+ */
+export async function giveEta(
+	tx: Tx,
+	context: Context,
+	person: Person,
+	row: EscalationRow,
+	minutes: number
+): Promise<Change<Moved>> {
+	requireHeld(row, person, 'eta');
+	const { now } = context;
+	const timers = isSoughtAnew(row)
+		? {}
+		: { askHolderAt: askHolderAt(row.grade, now, minutes), holderAskedAt: null };
+	await tx
+		.update(escalations)
+		.set({ etaMinutes: minutes, etaGivenAt: now, ...timers })
+		.where(eq(escalations.id, row.id));
+	await recordMove(tx, context, row.id, 'eta', { etaMinutes: minutes });
+	return moved(tx, row, 'taken', 'escalation.eta-given', 'eta', m.escalations_entry_eta({ minutes }));
 }
 
 /** Pass it on to a named person. Until they confirm the giver still has it. */
@@ -50,7 +94,7 @@ export function passEscalation(
 		await recordMove(tx, context, id, 'passed', { to: receiver.id });
 		const body = m.escalations_entry_passed({ name: receiver.name, reason: input.reason });
 		return {
-			...moved(row, 'taken', 'escalation.passed', 'passed', body),
+			...(await moved(tx, row, 'taken', 'escalation.passed', 'passed', body)),
 			messages: [await alert(tx, row, receiver.id, where, `pass:${context.now}`, context.now)]
 		};
 	});
@@ -60,36 +104,40 @@ export function passEscalation(
 export function confirmPass(context: PersonContext, id: string): Promise<Written<Moved>> {
 	return write(context, 'escalation.take', async (tx) => {
 		const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
-		return confirm(tx, context, escalation);
+		return confirm(tx, context, context.actor, escalation);
 	});
 }
 
-/** The confirming itself, inside a transaction of the caller's, who has fetched the row with permission. */
+/** {@link confirmPass} inside a transaction. The new holder has their own time to be at the bedside. */
 export async function confirm(
 	tx: Tx,
-	context: PersonContext,
-	escalation: EscalationRow
+	context: Context,
+	person: Person,
+	row: EscalationRow
 ): Promise<Change<Moved>> {
-	const { id } = escalation;
-	requireEscalationMove(escalation.state, 'confirm');
-	if (escalation.passTo !== context.actor.id) {
+	requireEscalationMove(row.state, 'confirm');
+	if (row.passTo !== person.id) {
 		throw new Problem('not-allowed', 'This escalation was not passed to you.');
 	}
+	const { now } = context;
 	await tx
 		.update(escalations)
 		.set({
-			takenBy: context.actor.id,
-			takenAt: context.now,
+			takenBy: person.id,
+			takenAt: now,
 			arrivedAt: null,
 			etaMinutes: null,
+			etaGivenAt: null,
 			passTo: null,
-			passReason: null
+			passReason: null,
+			nextStepAt: null,
+			askHolderAt: askHolderAt(row.grade, now, null),
+			holderAskedAt: null
 		})
-		.where(eq(escalations.id, id));
-	await recordMove(tx, context, id, 'confirmed');
-	await stopAlerts(tx, id, 'confirmed');
-	const body = m.escalations_entry_confirmed();
-	return moved(escalation, 'taken', 'escalation.pass-confirmed', 'confirmed', body);
+		.where(eq(escalations.id, row.id));
+	await recordMove(tx, context, row.id, 'confirmed', { from: row.takenBy });
+	await stopAlerts(tx, row.id, 'confirmed');
+	return moved(tx, row, 'taken', 'escalation.pass-confirmed', 'confirmed', m.escalations_entry_confirmed());
 }
 
 /** The holder settles it: what came of it, whom they informed, and whether to measure again. */
@@ -111,15 +159,39 @@ export function settleEscalation(
 				note,
 				informed: informed ?? null,
 				recheckDueAt: recheckMinutes ? context.now + recheckMinutes * 60_000 : null,
-				passTo: null
+				passTo: null,
+				nextStep: null,
+				...NOBODY_SOUGHT
 			})
 			.where(eq(escalations.id, id));
 		await recordMove(tx, context, id, 'settled', { recheckMinutes: recheckMinutes ?? null });
+		await stopAlerts(tx, id, 'settled');
 		const words = [m.escalations_entry_settled({ outcome }), note];
 		if (recheckMinutes) {
 			words.push(m.escalations_entry_recheck({ minutes: recheckMinutes }));
 		}
-		return moved(row, 'settled', 'escalation.settled', 'settled', words.join(' '));
+		return moved(tx, row, 'settled', 'escalation.settled', 'settled', words.join(' '));
+	});
+}
+
+/** Say afterwards which physician knows of a settled one: the loose end that a nurse's settling left. */
+export function informOfEscalation(
+	context: PersonContext,
+	id: string,
+	informed: string
+): Promise<Written<Moved>> {
+	return write(context, 'escalation.take', async (tx) => {
+		const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
+		requireEscalationMove(escalation.state, 'inform');
+		if (escalation.informed !== null) {
+			throw new Problem('wrong-state', `${escalation.informed} is on record as informed.`, {
+				state: escalation.state
+			});
+		}
+		await tx.update(escalations).set({ informed }).where(eq(escalations.id, id));
+		await recordMove(tx, context, id, 'informed');
+		const body = m.escalations_entry_informed({ name: informed });
+		return moved(tx, escalation, 'settled', 'escalation.informed', 'informed', body);
 	});
 }
 
@@ -143,13 +215,13 @@ export function withdrawEscalation(
 				endedAt: context.now,
 				note: reason,
 				nextStep: null,
-				nextStepAt: null
+				...NOBODY_SOUGHT
 			})
 			.where(eq(escalations.id, id));
 		await recordMove(tx, context, id, 'withdrawn');
 		await stopAlerts(tx, id, 'withdrawn');
 		const body = m.escalations_entry_withdrawn({ reason });
-		return moved(escalation, 'withdrawn', 'escalation.withdrawn', 'withdrawn', body);
+		return moved(tx, escalation, 'withdrawn', 'escalation.withdrawn', 'withdrawn', body);
 	});
 }
 
@@ -161,25 +233,16 @@ async function accessHeld(
 	move: EscalationMove
 ): Promise<EscalationRow> {
 	const { escalation } = await accessEscalation(tx, context.actor, id, 'escalation.take');
-	requireEscalationMove(escalation.state, move);
-	if (escalation.takenBy !== context.actor.id) {
-		throw new Problem('not-allowed', 'Somebody else holds this escalation.', { state: escalation.state });
-	}
+	requireHeld(escalation, context.actor, move);
 	return escalation;
 }
 
-function moved(
-	row: EscalationRow,
-	state: Moved['state'],
-	action: AuditAction,
-	kind: string,
-	body: string
-): Change<Moved> {
-	const { id, episodeId, threadId } = row;
-	return {
-		result: { id, state },
-		audit: { action, objectKind: 'escalation', objectId: id, episodeId },
-		entries: threadId ? [{ threadId, kind: 'answer', body, ref: { kind: 'escalation', id } }] : [],
-		events: [{ topic: 'escalation', kind, id, episodeId }]
-	};
+function requireHeld(row: EscalationRow, person: Person, move: EscalationMove): void {
+	requireEscalationMove(row.state, move);
+	if (row.takenBy !== person.id) {
+		throw new Problem('not-allowed', 'Somebody else holds this escalation.', { state: row.state });
+	}
 }
+
+/** Neither is the holder asked, nor does the chain go on. */
+const NOBODY_SOUGHT = { askHolderAt: null, holderAskedAt: null, nextStepAt: null };

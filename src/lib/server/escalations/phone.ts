@@ -3,7 +3,7 @@ import type { PhoneEscalation } from '$lib/domain/escalations/views';
 import type { Context } from '../context';
 import { db } from '../db';
 import { getByLink } from './queries';
-import { findLink } from './take';
+import { findLink } from './link';
 
 /** What the page of a secret link is made of. */
 export interface PhonePage {

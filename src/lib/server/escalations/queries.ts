@@ -1,9 +1,10 @@
-import { and, asc, eq, gte, max } from 'drizzle-orm';
+import { and, asc, eq, gte, max, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import { notFound } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { chainPosts, chainStep, isChainSpent } from '$lib/domain/escalations/chain';
+import { askedOf, etaOf, isOpenTo, UNDO_MS } from '$lib/domain/escalations/holding';
 import type { EscalationView, PhoneEscalation } from '$lib/domain/escalations/views';
 import { accessEscalation } from '../access/access';
 import type { Reader } from '../db';
@@ -17,22 +18,29 @@ import {
 	units,
 	users
 } from '../db/schema';
-import { findLink } from './take';
+import { findLink } from './link';
+import { addedTo } from './added';
 import type { EscalationRow } from './tell';
 
 const holder = alias(users, 'holder');
 const receiver = alias(users, 'receiver');
 const ender = alias(users, 'ender');
+const named = alias(users, 'named');
+const other = alias(users, 'other');
 
 /** The whole of an escalation: who was told by which channel and when, who is next, who has it. */
 export async function getEscalation(db: Reader, person: Person, id: string): Promise<EscalationView> {
 	await accessEscalation(db, person, id, 'escalation.read');
-	const [[row], steps, moves] = await Promise.all([select(db, id), stepsOf(db, id), movesOf(db, id)]);
+	const [[row], steps, moves, added] = await Promise.all([
+		select(db, id),
+		stepsOf(db, id),
+		movesOf(db, id),
+		addedTo(db, id)
+	]);
 	if (!row) {
 		throw notFound('escalation');
 	}
 	const { escalation: e } = row;
-	const opt = (at: number | null) => (at === null ? null : toRfc3339(at));
 	return {
 		id,
 		episodeId: e.episodeId,
@@ -53,9 +61,13 @@ export async function getEscalation(db: Reader, person: Person, id: string): Pro
 		threadId: e.threadId,
 		raisedBy: row.raisedBy,
 		raisedAt: toRfc3339(e.raisedAt),
+		toldInPerson: row.named,
+		...added,
 		holder: row.holder,
 		takenAt: opt(e.takenAt),
 		etaMinutes: e.etaMinutes,
+		etaAt: opt(etaOf(e)),
+		askedAt: opt(e.holderAskedAt),
 		arrivedAt: opt(e.arrivedAt),
 		passTo: row.receiver,
 		passReason: e.passReason,
@@ -68,7 +80,7 @@ export async function getEscalation(db: Reader, person: Person, id: string): Pro
 		chainStartedAt: toRfc3339(e.chainStartedAt),
 		steps,
 		next: nextOf(e),
-		chainSpent: e.nextStep !== null && isChainSpent(e.grade, e.nextStep),
+		chainSpent: e.nextStepAt !== null && e.nextStep !== null && isChainSpent(e.grade, e.nextStep),
 		moves
 	};
 }
@@ -96,12 +108,18 @@ export async function getByLink(db: Reader, token: string, now: number): Promise
 		takenAt: e.takenAt === null ? null : toRfc3339(e.takenAt),
 		mine: e.takenBy === link.userId,
 		passedToMe: e.state === 'taken' && e.passTo === link.userId,
-		usable: e.state === 'raised' && link.usedAt === null,
+		etaAt: opt(etaOf(e)),
+		arrivedAt: opt(e.arrivedAt),
+		asked: e.takenBy === link.userId && askedOf(e),
+		undoUntil: opt(e.takenBy === link.userId && e.takenAt !== null ? e.takenAt + UNDO_MS : null),
+		usable: isOpenTo(e, link.userId) && link.usedAt === null,
 		chainStartedAt: toRfc3339(e.chainStartedAt),
 		steps: chainPosts(e.grade, await lastToldStep(db, e)),
 		nextAt: nextOf(e)?.at ?? null
 	};
 }
+
+const opt = (at: number | null) => (at === null ? null : toRfc3339(at));
 
 /** The last step that was told since the chain started; -1 when none was. */
 async function lastToldStep(db: Reader, e: EscalationRow): Promise<number> {
@@ -113,7 +131,7 @@ async function lastToldStep(db: Reader, e: EscalationRow): Promise<number> {
 }
 
 function nextOf(e: EscalationRow): EscalationView['next'] {
-	if (e.state !== 'raised' || e.nextStep === null || e.nextStepAt === null) {
+	if (e.nextStep === null || e.nextStepAt === null) {
 		return null;
 	}
 	return { step: e.nextStep, posts: chainStep(e.grade, e.nextStep).posts, at: toRfc3339(e.nextStepAt) };
@@ -132,7 +150,8 @@ function select(db: Reader, id: string) {
 			raisedBy: { id: users.id, name: users.name, role: users.role },
 			holder: { id: holder.id, name: holder.name },
 			receiver: { id: receiver.id, name: receiver.name },
-			ender: { id: ender.id, name: ender.name }
+			ender: { id: ender.id, name: ender.name },
+			named: { id: named.id, name: named.name }
 		})
 		.from(escalations)
 		.innerJoin(episodes, eq(episodes.id, escalations.episodeId))
@@ -142,6 +161,7 @@ function select(db: Reader, id: string) {
 		.leftJoin(holder, eq(holder.id, escalations.takenBy))
 		.leftJoin(receiver, eq(receiver.id, escalations.passTo))
 		.leftJoin(ender, eq(ender.id, escalations.endedBy))
+		.leftJoin(named, eq(named.id, escalations.toldInPerson))
 		.where(eq(escalations.id, id));
 }
 
@@ -163,11 +183,21 @@ async function stepsOf(db: Reader, id: string): Promise<EscalationView['steps']>
 	return rows.map((row) => ({ ...row, at: toRfc3339(row.at) }));
 }
 
+/** Whom a move names beside its maker: the receiver of a pass, its giver, whoever was told or asked. */
+const OTHER_PERSON = sql`coalesce(json_extract(${escalationMoves.detail}, '$.to'), json_extract(${escalationMoves.detail}, '$.from'))`;
+
 async function movesOf(db: Reader, id: string): Promise<EscalationView['moves']> {
 	const rows = await db
-		.select({ at: escalationMoves.at, by: users.name, kind: escalationMoves.kind })
+		.select({
+			at: escalationMoves.at,
+			by: users.name,
+			kind: escalationMoves.kind,
+			other: other.name,
+			etaMinutes: sql<number | null>`json_extract(${escalationMoves.detail}, '$.etaMinutes')`
+		})
 		.from(escalationMoves)
 		.leftJoin(users, eq(users.id, escalationMoves.byId))
+		.leftJoin(other, eq(other.id, OTHER_PERSON))
 		.where(eq(escalationMoves.escalationId, id))
 		.orderBy(asc(escalationMoves.at), asc(escalationMoves.id));
 	return rows.map((row) => ({ ...row, at: toRfc3339(row.at) }));

@@ -1,32 +1,34 @@
 import { and, eq } from 'drizzle-orm';
-import { GRADES, type Grade } from '$lib/domain/core/codes';
+import type { Person } from '$lib/domain/access/actor';
 import { invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
-import { chainOf, chainStep, type ChainStep } from '$lib/domain/escalations/chain';
+import { chainOf, IN_PERSON_MS, type ChainStep } from '$lib/domain/escalations/chain';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
-import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, threadForDeed } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { bedsideSessions, escalations, users } from '../db/schema';
 import { newId } from '../ids';
 import { write, type Change, type Written } from '../write';
+import { addFacts, callWords, personBeside, takesIn } from './add';
+import { entriesFor, escalationEvents } from './follow';
 import { recordMove } from './moves';
 import { freeReplyCode } from './reply-code';
-import { tellFrom, type EscalationRow } from './tell';
+import { alert, placeOf, setTimer, startChain, type EscalationRow } from './tell';
 
 export interface Raised {
 	id: string;
-	state: 'raised';
+	/** `taken` when graver facts were added to one that somebody has. */
+	state: 'raised' | 'taken';
 	chain: ChainStep[];
-	/** Set when an untaken one of the same patient took the new facts in. */
+	/** Set when an open one of the same patient took the new facts in. */
 	bundled?: true;
 }
 
 /**
  * Call for help about a patient. The first step of the chain is told in the same transaction, so that a raised
- * escalation always has its messages. An untaken one of the same patient takes the new facts in; when they are
- * graver its grade rises and its chain starts again.
+ * escalation always has its messages. One that is open already takes the new facts in: an untaken one always, a
+ * taken one when they are graver; its grade then rises and its chain starts again.
  */
 export function raiseEscalation(
 	context: PersonContext,
@@ -37,12 +39,9 @@ export function raiseEscalation(
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'escalation.raise');
 		await checkReferences(tx, episodeId, input);
 		const threadId = await threadForDeed(tx, episodeId, input.threadId);
-		const [untaken] = await tx
-			.select()
-			.from(escalations)
-			.where(and(eq(escalations.episodeId, episodeId), eq(escalations.state, 'raised')));
-		return untaken
-			? addFacts(tx, context, untaken, input)
+		const open = await takesIn(tx, episodeId, input.grade);
+		return open
+			? addFacts(tx, context, open, input, threadId)
 			: raiseNew(tx, context, { episodeId, unitId: episode.unitId, threadId }, input);
 	});
 }
@@ -73,50 +72,25 @@ async function raiseNew(
 	};
 	await tx.insert(escalations).values(row);
 	await recordMove(tx, context, row.id, 'raised', { grade: row.grade });
-	const messages = await startChain(tx, row, context.now);
+	const beside = await personBeside(tx, context, about.unitId, input.toldInPerson);
+	const messages = beside
+		? await waitForNamed(tx, context, row, beside)
+		: await startChain(tx, row, 0, context.now);
 	return {
-		result: { id: row.id, state: 'raised', chain: chainOf(row.grade) },
+		result: { id: row.id, state: 'raised', chain: chainOf(row.grade, beside ? IN_PERSON_MS : 0) },
 		audit: audited('escalation.raised', row),
-		entries: entriesFor(row, input),
-		events: [{ topic: 'escalation', kind: 'raised', id: row.id, episodeId: row.episodeId }],
+		entries: await entriesFor(tx, row, 'ask', callWords(input)),
+		events: escalationEvents(row, 'raised'),
 		messages
 	};
 }
 
-async function addFacts(
-	tx: Tx,
-	context: PersonContext,
-	untaken: EscalationRow,
-	input: RaiseInput
-): Promise<Change<Raised>> {
-	const worse = GRADES.indexOf(input.grade) < GRADES.indexOf(untaken.grade);
-	const row: EscalationRow = {
-		...untaken,
-		grade: worse ? input.grade : untaken.grade,
-		situation: joined(untaken.situation, input.situation),
-		assessment: joined(untaken.assessment, input.assessment),
-		request: joined(untaken.request, input.request),
-		sessionId: input.sessionId ?? untaken.sessionId,
-		chainStartedAt: worse ? context.now : untaken.chainStartedAt
-	};
-	await tx.update(escalations).set(row).where(eq(escalations.id, row.id));
-	await recordMove(tx, context, row.id, 'added', { grade: input.grade, raisedGrade: worse });
-	return {
-		result: { id: row.id, state: 'raised', chain: chainOf(row.grade), bundled: true },
-		audit: audited('escalation.added-to', row),
-		entries: entriesFor(row, input),
-		events: [{ topic: 'escalation', kind: 'added-to', id: row.id, episodeId: row.episodeId }],
-		messages: worse ? await startChain(tx, row, context.now) : []
-	};
-}
-
-/** Tell the first step now and set the timer of the next. */
-export async function startChain(tx: Tx, row: EscalationRow, now: number) {
-	const { messages, lastStep } = await tellFrom(tx, row, 0, now);
-	const nextStep = lastStep + 1;
-	const nextStepAt = row.chainStartedAt + chainStep(row.grade, nextStep).afterSeconds * 1000;
-	await tx.update(escalations).set({ nextStep, nextStepAt }).where(eq(escalations.id, row.id));
-	return messages;
+/** Told in person counts: the named one has two minutes to say so, and the chain starts only without it. */
+async function waitForNamed(tx: Tx, context: PersonContext, row: EscalationRow, named: Person) {
+	await recordMove(tx, context, row.id, 'told-in-person', { to: named.id });
+	await setTimer(tx, { ...row, chainStartedAt: context.now + IN_PERSON_MS }, 0);
+	const where = await placeOf(tx, row.episodeId);
+	return [await alert(tx, row, named.id, where, 'in-person', context.now)];
 }
 
 async function checkReferences(tx: Tx, episodeId: string, input: RaiseInput): Promise<void> {
@@ -137,30 +111,9 @@ async function checkReferences(tx: Tx, episodeId: string, input: RaiseInput): Pr
 	}
 }
 
-/** New facts stand below the old ones; the same sentence is not repeated. */
-function joined(before: string, added: string): string {
-	return before.split('\n').includes(added) ? before : `${before}\n${added}`;
-}
-
-function audited(action: 'escalation.raised' | 'escalation.added-to', row: EscalationRow) {
+function audited(action: 'escalation.raised', row: EscalationRow) {
 	const detail = { grade: row.grade };
 	return { action, objectKind: 'escalation', objectId: row.id, episodeId: row.episodeId, detail } as const;
-}
-
-const GRADE_WORDS: Record<Grade, () => string> = {
-	high: m.escalations_entry_high,
-	medium: m.escalations_entry_medium,
-	low: m.escalations_entry_low
-};
-
-function entriesFor(row: EscalationRow, input: RaiseInput) {
-	if (!row.threadId) {
-		return [];
-	}
-	const body = `${GRADE_WORDS[input.grade]()} ${input.situation}`;
-	return [
-		{ threadId: row.threadId, kind: 'ask' as const, body, ref: { kind: 'escalation' as const, id: row.id } }
-	];
 }
 
 /** What a new escalation does not have yet. */
@@ -168,6 +121,9 @@ const EMPTY = {
 	takenBy: null,
 	takenAt: null,
 	etaMinutes: null,
+	etaGivenAt: null,
+	askHolderAt: null,
+	holderAskedAt: null,
 	arrivedAt: null,
 	passTo: null,
 	passReason: null,

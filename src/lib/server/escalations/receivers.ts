@@ -18,6 +18,14 @@ export async function receiversOf({ actor, now }: PersonContext, escalationId: s
 	if (!can(actor, 'escalation.take', { unitId })) {
 		return [];
 	}
+	return takersOf({ actor, now }, unitId);
+}
+
+/** Everybody else of a unit whose role may take an escalation, those on cover first. */
+export async function takersOf(
+	{ actor, now }: Pick<PersonContext, 'actor' | 'now'>,
+	unitId: string
+): Promise<Receiver[]> {
 	const [people, onCover] = await Promise.all([takers(db(), actor, unitId), posts(db(), unitId, now)]);
 	const all = people.map((person) => ({ ...person, post: onCover.get(person.id) ?? null }));
 	return [...all.filter(({ post }) => post !== null), ...all.filter(({ post }) => post === null)];

@@ -1,18 +1,19 @@
-import { and, eq, isNull } from 'drizzle-orm';
-import type { LinkHolder, Person } from '$lib/domain/access/actor';
+import { eq } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
-import { Problem, notFound } from '$lib/domain/core/errors';
+import { Problem } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
+import { askHolderAt, isOpenTo } from '$lib/domain/escalations/holding';
 import { requireEscalationMove } from '$lib/domain/escalations/states';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEscalation } from '../access/access';
-import { loadPerson } from '../auth/people';
 import type { Context, PersonContext } from '../context';
-import { db, type Reader, type Tx } from '../db';
-import { escalationLinks, escalations, users } from '../db/schema';
-import { linkDigest } from '../links';
+import type { Tx } from '../db';
+import { escalations, users } from '../db/schema';
 import { write, type Change, type Written } from '../write';
+import { entriesFor, escalationEvents } from './follow';
 import { recordMove } from './moves';
+import { noticesOfTaking } from './notices';
 import { stopAlerts, type EscalationRow } from './tell';
 
 export interface Taken {
@@ -21,6 +22,9 @@ export interface Taken {
 	takenBy: { id: string; name: string };
 	takenAt: string;
 }
+
+/** By which way somebody took it; it stands in the history and in the audit. */
+export type TakenVia = 'page' | 'link' | 'text';
 
 /**
  * Take an escalation: from now on this person holds it and the chain stops. Of two who take at once one has it,
@@ -39,77 +43,33 @@ export function takeEscalation(
 }
 
 /**
- * Take by the secret link of an SMS, without a sign-in. The link is bound to one person, works once and for a
- * shift, and only by POST: fetching it changes nothing.
- * @throws Problem `not-found` for a link that is unknown, used, expired, or whose person may not take any more
- */
-export async function takeByLink(context: Context, token: string): Promise<Written<Taken>> {
-	const link = await findLink(db(), token);
-	const person = link && (await loadPerson(db(), link.userId));
-	if (!link || !person || link.expiresAt <= context.now) {
-		throw notFound('link');
-	}
-	const actor: LinkHolder = { kind: 'link', person, escalationId: link.escalationId };
-	return write({ ...context, actor, key: null }, 'anyone', async (tx) => {
-		const { escalation } = await accessEscalation(tx, person, link.escalationId, 'escalation.take');
-		const [used] = await tx
-			.update(escalationLinks)
-			.set({ usedAt: context.now })
-			.where(and(eq(escalationLinks.id, link.id), isNull(escalationLinks.usedAt)))
-			.returning({ id: escalationLinks.id });
-		if (!used && escalation.takenBy !== person.id) {
-			throw notFound('link');
-		}
-		return take(tx, { ...context, actor }, person, escalation, null, 'link');
-	});
-}
-
-export async function findLink(reader: Reader, token: string) {
-	const [link] = await reader
-		.select()
-		.from(escalationLinks)
-		.where(eq(escalationLinks.tokenHash, linkDigest(token)));
-	return link ?? null;
-}
-
-/**
- * The taking itself, inside a transaction of the caller's, who has fetched the row with permission.
- * @param via by which way: a page, the secret link, or a text
- * @throws Problem `already-taken` or `wrong-state`, before anything is changed
+ * The taking itself, inside the transaction of whoever decided that this person may ask for it: signed in, by the
+ * secret of a link, or by an answer from their telephone.
+ * @throws Problem `already-taken`, `wrong-state` once it has ended, `not-allowed` for a role that takes none
  */
 export async function take(
 	tx: Tx,
 	context: Context,
 	person: Person,
-	escalation: EscalationRow,
+	before: EscalationRow,
 	etaMinutes: number | null,
-	via: 'page' | 'link' | 'text'
+	via: TakenVia
 ): Promise<Change<Taken>> {
-	if (escalation.state === 'taken') {
-		throw await alreadyTaken(tx, escalation);
+	requireEscalationMove(before.state, 'take');
+	if (!isOpenTo(before, person.id)) {
+		throw await alreadyTaken(tx, before);
 	}
-	requireEscalationMove(escalation.state, 'take');
 	if (!can(person, 'escalation.take')) {
 		throw new Problem('not-allowed', `The role ${person.role} may not take escalations.`);
 	}
+	const messages = await noticesOfTaking(tx, before, person, context.now);
 	await tx
 		.update(escalations)
-		.set({
-			state: 'taken',
-			takenBy: person.id,
-			takenAt: context.now,
-			etaMinutes,
-			nextStep: null,
-			nextStepAt: null
-		})
-		.where(eq(escalations.id, escalation.id));
-	await recordMove(tx, context, escalation.id, 'taken', { via, etaMinutes });
-	await stopAlerts(tx, escalation.id, 'taken');
-	const { id, episodeId, threadId } = escalation;
-	const body =
-		etaMinutes === null
-			? m.escalations_entry_taken()
-			: m.escalations_entry_taken_eta({ minutes: etaMinutes });
+		.set(heldFrom(context.now, person, before, etaMinutes))
+		.where(eq(escalations.id, before.id));
+	await recordMove(tx, context, before.id, 'taken', { via, etaMinutes, before: holdOf(before) });
+	await stopAlerts(tx, before.id, 'taken');
+	const { id, episodeId } = before;
 	return {
 		result: {
 			id,
@@ -118,9 +78,68 @@ export async function take(
 			takenAt: toRfc3339(context.now)
 		},
 		audit: { action: 'escalation.taken', objectKind: 'escalation', objectId: id, episodeId, detail: { via } },
-		entries: threadId ? [{ threadId, kind: 'answer', body, ref: { kind: 'escalation', id } }] : [],
-		events: [{ topic: 'escalation', kind: 'taken', id, episodeId }]
+		entries: await entriesFor(tx, before, 'answer', takenWords(etaMinutes)),
+		events: escalationEvents(before, 'taken'),
+		messages
 	};
+}
+
+/** The columns that taking changes, as they stood: what taking back within the moment puts back. */
+export type Hold = Pick<
+	EscalationRow,
+	| 'state'
+	| 'takenBy'
+	| 'takenAt'
+	| 'etaMinutes'
+	| 'etaGivenAt'
+	| 'arrivedAt'
+	| 'askHolderAt'
+	| 'holderAskedAt'
+	| 'passTo'
+	| 'passReason'
+	| 'nextStepAt'
+>;
+
+function holdOf(row: EscalationRow): Hold {
+	const { state, takenBy, takenAt, etaMinutes, etaGivenAt, arrivedAt } = row;
+	const { askHolderAt, holderAskedAt, passTo, passReason, nextStepAt } = row;
+	return {
+		state,
+		takenBy,
+		takenAt,
+		etaMinutes,
+		etaGivenAt,
+		arrivedAt,
+		askHolderAt,
+		holderAskedAt,
+		passTo,
+		passReason,
+		nextStepAt
+	};
+}
+
+/** A holder who takes a graver grade anew may stand at the bedside already. */
+function heldFrom(now: number, person: Person, before: EscalationRow, etaMinutes: number | null): Hold {
+	const arrivedAt = before.takenBy === person.id ? before.arrivedAt : null;
+	return {
+		state: 'taken',
+		takenBy: person.id,
+		takenAt: now,
+		etaMinutes,
+		etaGivenAt: etaMinutes === null ? null : now,
+		arrivedAt,
+		askHolderAt: arrivedAt === null ? askHolderAt(before.grade, now, etaMinutes) : null,
+		holderAskedAt: null,
+		passTo: null,
+		passReason: null,
+		nextStepAt: null
+	};
+}
+
+function takenWords(etaMinutes: number | null): string {
+	return etaMinutes === null
+		? m.escalations_entry_taken()
+		: m.escalations_entry_taken_eta({ minutes: etaMinutes });
 }
 
 async function alreadyTaken(tx: Tx, escalation: EscalationRow): Promise<Problem> {

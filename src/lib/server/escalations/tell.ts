@@ -1,14 +1,14 @@
 import { and, eq, inArray } from 'drizzle-orm';
-import { chainStep, isChainSpent } from '$lib/domain/escalations/chain';
+import { chainStep, isChainSpent, startFor } from '$lib/domain/escalations/chain';
 import type { Post } from '$lib/domain/core/codes';
 import { smsText } from '$lib/domain/messages/templates';
 import { onCover } from '../cover/queries';
 import type { Tx } from '../db';
-import type { escalations } from '../db/schema';
-import { episodes, escalationLinks, escalationSteps, outbox, units } from '../db/schema';
+import { episodes, escalationLinks, escalations, escalationSteps, outbox, units } from '../db/schema';
 import { newId } from '../ids';
 import { aroundLink, linkDigest, linkToken } from '../links';
 import type { NewMessage } from '../outbox/enqueue';
+import { callerOf } from './follow';
 
 export type EscalationRow = typeof escalations.$inferSelect;
 
@@ -19,7 +19,7 @@ const MESSAGE_LIFE_MS = 60 * 60 * 1000;
 
 /**
  * Tell everybody of one step of the chain, inside the transaction that moves the timer. Who was told is recorded,
- * and so is a post that nobody covers. The raiser is not told of their own call.
+ * and so is a post that nobody covers. Nobody is told of their own call, nor a holder who was asked already.
  * @returns the messages to enqueue; empty when the step reached nobody
  */
 export async function tellStep(
@@ -30,11 +30,12 @@ export async function tellStep(
 ): Promise<NewMessage[]> {
 	const dueAt = escalation.chainStartedAt + chainStep(escalation.grade, step).afterSeconds * 1000;
 	const where = await placeOf(tx, escalation.episodeId);
-	const told = new Set<string>([escalation.raisedBy]);
+	const told = await knowing(tx, escalation);
 	const messages: NewMessage[] = [];
 	for (const post of chainStep(escalation.grade, step).posts) {
-		const people = (await onCover(tx, where.unitId, post, now)).filter((p) => !told.has(p.userId) && p.phone);
-		if (people.length === 0) {
+		const covering = (await onCover(tx, where.unitId, post, now)).filter((p) => p.phone);
+		const people = covering.filter((p) => !told.has(p.userId));
+		if (covering.length === 0) {
 			await recordStep(tx, escalation.id, { step, post, dueAt, at: now });
 		}
 		for (const { userId } of people) {
@@ -65,12 +66,55 @@ export async function tellFrom(
 	}
 }
 
+async function knowing(tx: Tx, escalation: EscalationRow): Promise<Set<string>> {
+	const { takenBy, holderAskedAt } = escalation;
+	const asked = takenBy !== null && holderAskedAt !== null ? [takenBy] : [];
+	return new Set([await callerOf(tx, escalation), ...asked]);
+}
+
+/**
+ * Start the chain at a step now, or let it go on there, and set the timer of the next one. The steps keep their
+ * distances from this moment.
+ */
+export async function startChain(
+	tx: Tx,
+	escalation: EscalationRow,
+	step: number,
+	now: number
+): Promise<NewMessage[]> {
+	const row = { ...escalation, chainStartedAt: startFor(escalation.grade, step, now) };
+	const { messages, lastStep } = await tellFrom(tx, row, step, now);
+	await setTimer(tx, row, lastStep + 1);
+	return messages;
+}
+
+/** From now on the timer waits for this step. */
+export async function setTimer(tx: Tx, { id, grade, chainStartedAt }: EscalationRow, nextStep: number) {
+	const nextStepAt = chainStartedAt + chainStep(grade, nextStep).afterSeconds * 1000;
+	await tx.update(escalations).set({ nextStep, nextStepAt, chainStartedAt }).where(eq(escalations.id, id));
+}
+
 /** The alert to one person: unit, bed, grade, a link that only they can use, and the code to reply TAKE with. */
 export async function alert(
 	tx: Tx,
 	escalation: EscalationRow,
 	userId: string,
 	where: { unit: string; bed: string | null },
+	occasion: string,
+	now: number
+): Promise<NewMessage & { id: string }> {
+	const { unit, bed } = where;
+	const { grade, replyCode: code } = escalation;
+	const body = aroundLink((link) => smsText('escalation', { unit, bed, grade, link, code }));
+	return withLink(tx, escalation, userId, body, occasion, now);
+}
+
+/** A message to one person with a link that only they can use; `{link}` in the text stands for it. */
+export async function withLink(
+	tx: Tx,
+	escalation: EscalationRow,
+	userId: string,
+	body: string,
 	occasion: string,
 	now: number
 ): Promise<NewMessage & { id: string }> {
@@ -89,15 +133,7 @@ export async function alert(
 		channel: 'sms',
 		causeKey: `escalation:${escalation.id}:${escalation.chainStartedAt}:${occasion}:${userId}`,
 		userId,
-		body: aroundLink((link) =>
-			smsText('escalation', {
-				unit: where.unit,
-				bed: where.bed,
-				grade: escalation.grade,
-				link,
-				code: escalation.replyCode
-			})
-		),
+		body,
 		linkId,
 		ref: { kind: 'escalation', id: escalation.id },
 		expiresAt: now + MESSAGE_LIFE_MS
@@ -124,6 +160,7 @@ export async function stopAlerts(tx: Tx, escalationId: string, reason: string): 
 		.set({ state: 'cancelled', stateReason: reason })
 		.where(
 			and(
+				eq(outbox.kind, 'escalation'),
 				eq(outbox.refKind, 'escalation'),
 				eq(outbox.refId, escalationId),
 				inArray(outbox.state, ['ready', 'held'])

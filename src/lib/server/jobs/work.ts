@@ -1,5 +1,6 @@
 import { lapseJob } from '../clearances/lapse';
 import { chainJob } from '../escalations/chain-job';
+import { holderJob } from '../escalations/holder-job';
 import { env } from '../env';
 import { openChannels } from '../outbox/channels';
 import { OutboxWorker } from '../outbox/worker';
@@ -7,7 +8,7 @@ import { Clockwork, type Job } from './clockwork';
 import { cleaning } from './cleaning';
 
 /** Everything that happens by itself, in the order in which a round does it. */
-const JOBS: Job[] = [chainJob, lapseJob, cleaning];
+const JOBS: Job[] = [chainJob, holderJob, lapseJob, cleaning];
 
 let clockwork: Clockwork | null = null;
 let outbox: OutboxWorker | null = null;

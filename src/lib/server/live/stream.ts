@@ -27,6 +27,8 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
 	switch (event.topic) {
 		case 'escalation':
 			return can(person, 'escalation.read', { unitId: event.unitId });
+		case 'alarm':
+			return can(person, 'alarm.read', { unitId: event.unitId });
 		case 'session':
 			return can(person, 'session.read', { unitId: event.unitId });
 		case 'episode':

@@ -15,7 +15,9 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 	const branches = [
 		escalationsUntaken,
 		escalationsHeld,
+		escalationsPassed,
 		rechecksDue,
+		physiciansToTell,
 		clearancesAsked,
 		referralsAsked,
 		questionsOpen,
@@ -37,23 +39,44 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 
 const PLACE = sql`place.id as "episodeId", place.unit_id as "unitId", place.unit as "unit", place.bed as "bed", place.patient as "patientName"`;
 
+/** What an escalation is about: the call that made it as grave as it is. */
+const WHAT = sql`coalesce((
+	select f.situation from escalation_facts f where f.escalation_id = x.id and f.raised_grade = 1
+	order by f.at desc, f.id desc limit 1
+), x.situation)`;
+
 const escalationsUntaken = sql`
 	select 'escalation' as "kind", x.id as "id", ${PLACE}, x.thread_id as "threadId", x.grade as "grade",
-		null as "code", x.situation as "text", x.raised_by as "askedById", asker.name as "askedBy",
-		null as "heldById", null as "heldBy", x.raised_at as "since", x.needed_by as "due", null as "priority"
+		null as "code", ${WHAT} as "text", x.raised_by as "askedById", asker.name as "askedBy",
+		x.taken_by as "heldById", holder.name as "heldBy", x.raised_at as "since", x.needed_by as "due", null as "priority"
 	from escalations x
 	join place on place.id = x.episode_id
 	join users asker on asker.id = x.raised_by
-	where x.state = 'raised'`;
+	left join users holder on holder.id = x.taken_by
+	where x.state = 'raised' or (x.state = 'taken' and x.next_step_at is not null)`;
 
+/** The holder who was asked whether they are there owes that answer first. */
 const escalationsHeld = sql`
-	select 'escalation-taken', x.id, ${PLACE}, x.thread_id, x.grade, null, x.situation, x.raised_by, asker.name,
-		x.taken_by, holder.name, x.taken_at, x.needed_by, null
+	select case when x.holder_asked_at is null then 'escalation-taken' else 'arrival' end, x.id, ${PLACE}, x.thread_id,
+		x.grade, case when x.arrived_at is null then 'on-the-way' else 'at-bedside' end, ${WHAT}, x.raised_by, asker.name,
+		x.taken_by, holder.name, coalesce(x.holder_asked_at, x.taken_at), x.needed_by, null
 	from escalations x
 	join place on place.id = x.episode_id
 	join users asker on asker.id = x.raised_by
 	join users holder on holder.id = x.taken_by
 	where x.state = 'taken'`;
+
+/** Passed on: the receiver owes a yes to the giver, who has it until then. */
+const escalationsPassed = sql`
+	select 'confirm', x.id, ${PLACE}, x.thread_id, x.grade, null, ${WHAT}, x.taken_by, giver.name,
+		x.pass_to, receiver.name, (
+			select max(v.at) from escalation_moves v where v.escalation_id = x.id and v.kind = 'passed'
+		), x.needed_by, null
+	from escalations x
+	join place on place.id = x.episode_id
+	join users giver on giver.id = x.taken_by
+	join users receiver on receiver.id = x.pass_to
+	where x.state = 'taken' and x.pass_to is not null`;
 
 const rechecksDue = sql`
 	select 'recheck', x.id, ${PLACE}, x.thread_id, null, null, null, x.raised_by, asker.name,
@@ -63,6 +86,16 @@ const rechecksDue = sql`
 	join users asker on asker.id = x.raised_by
 	join users holder on holder.id = x.ended_by
 	where x.state = 'settled' and x.recheck_due_at is not null and x.recheck_done_at is null`;
+
+/** A nurse who settles a high one says which physician knows of it; until then that is open. */
+const physiciansToTell = sql`
+	select 'physician-to-tell', x.id, ${PLACE}, x.thread_id, null, null, ${WHAT}, x.raised_by, asker.name,
+		x.ended_by, holder.name, x.ended_at, null, null
+	from escalations x
+	join place on place.id = x.episode_id
+	join users asker on asker.id = x.raised_by
+	join users holder on holder.id = x.ended_by
+	where x.state = 'settled' and x.grade = 'high' and x.informed is null and holder.role = 'nurse'`;
 
 const clearancesAsked = sql`
 	select 'clearance', c.id, ${PLACE}, c.thread_id, null, c.kind, c.question, c.asked_by, asker.name,
@@ -117,6 +150,7 @@ function visitsCancelled(now: number): SQL {
 		where v.patient_cancelled_at is not null and v.followed_up_at is null and v.starts_at > ${now}`;
 }
 
+/** A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. */
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
 		null, null, m.created_at, null, null
@@ -125,7 +159,7 @@ const messagesFailed = sql`
 	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
 	left join referrals r on m.ref_kind = 'referral' and r.id = m.ref_id
 	join place on place.id = coalesce(v.episode_id, x.episode_id, r.episode_id)
-	where m.state in ('failed', 'undelivered') and m.handled_at is null`;
+	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null`;
 
 /** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */
 function textsUnread(unitIds: readonly string[]): SQL {

@@ -11,6 +11,12 @@ export function titleOf(thing: OpenThing): string {
 		case 'escalation':
 		case 'escalation-taken':
 			return m.home_title_escalation({ text });
+		case 'arrival':
+			return m.home_title_arrival({ text });
+		case 'confirm':
+			return m.home_title_confirm({ text });
+		case 'physician-to-tell':
+			return m.home_title_physician_to_tell({ text });
 		case 'recheck':
 			return m.home_title_recheck();
 		case 'clearance':

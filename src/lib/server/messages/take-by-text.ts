@@ -1,6 +1,7 @@
-import { and, desc, eq, gt, isNotNull, or } from 'drizzle-orm';
+import { and, desc, eq, gt, isNotNull, ne, or } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { Problem } from '$lib/domain/core/errors';
+import { isOpenTo } from '$lib/domain/escalations/holding';
 import type { PlaceFields } from '$lib/domain/messages/templates/escalation';
 import { smsText } from '$lib/domain/messages/templates';
 import { routes } from '$lib/routes';
@@ -55,6 +56,7 @@ export async function waitingCallsOf(reader: Reader, userId: string) {
 	const mayHaveArrived = or(isNotNull(outbox.sentAt), gt(outbox.attempts, 0), eq(outbox.state, 'sending'));
 	const waits = or(
 		eq(escalations.state, 'raised'),
+		and(eq(escalations.state, 'taken'), isNotNull(escalations.nextStepAt), ne(escalations.takenBy, userId)),
 		and(eq(escalations.state, 'taken'), eq(escalations.passTo, userId))
 	);
 	return reader
@@ -83,12 +85,12 @@ async function takeCall(
 		const refused = error.code === 'not-allowed';
 		return answered(refused ? answerTo(text, { userId: actor.id }, 'may-not-take', {}) : unseen);
 	}
-	if (escalation.state === 'raised') {
+	if (isOpenTo(escalation, actor.id)) {
 		const change = await take(tx, context, actor, escalation, null, 'text');
 		return answered(await yours(tx, actor, escalation, text), change);
 	}
 	if (escalation.state === 'taken' && escalation.passTo === actor.id) {
-		const change = await confirm(tx, context, escalation);
+		const change = await confirm(tx, context, actor, escalation);
 		return answered(await yours(tx, actor, escalation, text), change);
 	}
 	return answered(await tooLate(tx, actor, escalation, text));

@@ -21,6 +21,7 @@ export interface History {
 
 const RETRY: Record<OutboxRow['kind'], RetryKind> = {
 	escalation: 'urgent',
+	notice: 'urgent',
 	reminder: 'reminder',
 	answer: 'reminder',
 	mail: 'mail'

@@ -1,4 +1,5 @@
 import { eq } from 'drizzle-orm';
+import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { isExpected } from '$lib/domain/visits/states';
 import { judgeReminder, type SkipReason as ReminderSkip } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
@@ -10,6 +11,7 @@ import type { OutboxRow } from './change';
 export type SkipReason =
 	| ReminderSkip
 	| 'escalation is not waiting for anybody'
+	| 'nobody else has the escalation'
 	| 'account disabled'
 	| 'link used, expired or not theirs'
 	| 'invitation used'
@@ -38,6 +40,8 @@ export async function recheck(reader: Reader, row: OutboxRow, now: number): Prom
 	switch (row.kind) {
 		case 'escalation':
 			return recheckEscalation(reader, row, now);
+		case 'notice':
+			return recheckNotice(reader, row, now);
 		case 'reminder':
 			return recheckReminder(reader, row, now);
 		case 'answer':
@@ -49,9 +53,7 @@ export async function recheck(reader: Reader, row: OutboxRow, now: number): Prom
 
 async function recheckEscalation(reader: Reader, row: OutboxRow, now: number): Promise<Verdict> {
 	const [escalation] = await reader.select().from(escalations).where(eq(escalations.id, row.refId));
-	const untaken = escalation?.state === 'raised';
-	const passedOn = escalation?.state === 'taken' && escalation.passTo === row.userId;
-	if (!untaken && !passedOn) {
+	if (!escalation || !isWaitingFor(escalation, row.userId)) {
 		return skip('escalation is not waiting for anybody');
 	}
 	const verdict = await toStaff(reader, row.userId, 'phone');
@@ -59,6 +61,24 @@ async function recheckEscalation(reader: Reader, row: OutboxRow, now: number): P
 		return skip('link used, expired or not theirs');
 	}
 	return verdict.kind === 'send' && now >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
+}
+
+/** Untaken, sought beside a holder who does not come, passed on to them, or they are the holder who is asked. */
+function isWaitingFor(escalation: typeof escalations.$inferSelect, userId: string | null): boolean {
+	const { state, passTo, takenBy, holderAskedAt } = escalation;
+	const asked = takenBy === userId && holderAskedAt !== null;
+	return (
+		state === 'raised' || isSoughtAnew(escalation) || (state === 'taken' && (passTo === userId || asked))
+	);
+}
+
+/** That somebody has it, as long as somebody else than the reader has. */
+async function recheckNotice(reader: Reader, row: OutboxRow, now: number): Promise<Verdict> {
+	const [escalation] = await reader.select().from(escalations).where(eq(escalations.id, row.refId));
+	if (!escalation || escalation.state === 'raised' || escalation.takenBy === row.userId) {
+		return skip('nobody else has the escalation');
+	}
+	return now >= row.expiresAt ? skip('too late') : toStaff(reader, row.userId, 'phone');
 }
 
 /** A link opens the call for one person: it must never travel to somebody else's telephone. */

@@ -31,10 +31,12 @@ export interface EarlierFields extends PlaceFields {
 	readonly zone: Zone;
 }
 
-export interface HeldFields extends EarlierFields {
+export interface TakenFields extends PlaceFields {
 	/** What whoever has it is; nobody is named. */
 	readonly holder: Role;
 }
+
+export interface HeldFields extends EarlierFields, TakenFields {}
 
 /** Somebody is needed. */
 export const escalation: Wording<EscalationFields> = {
@@ -44,10 +46,20 @@ export const escalation: Wording<EscalationFields> = {
 	}
 };
 
-/** To those who were told: somebody has it. */
-export const escalationTaken: Wording<BedsideFields> = {
+/** To those who were told: somebody has it, by role. There is nothing to open. */
+export const escalationTaken: Wording<TakenFields> = {
 	en: (fields) =>
-		withPlace(fields, 'en', (place) => `${place}: somebody has it. You need do nothing. ${fields.link}`)
+		withPlace(fields, 'en', (place) => {
+			return `${place}: ${HOLDER_WORDS.en[fields.holder].toLowerCase()} has it. You need do nothing.`;
+		})
+};
+
+/** To the holder who is not at the bedside in time. */
+export const holderAsked: Wording<BedsideFields> = {
+	en: (fields) =>
+		withPlace(fields, 'en', (place) => {
+			return `${place}: are you there? Else others are told. ${fields.link}`;
+		})
 };
 
 /** Answer to TAKE: it is yours. */

@@ -1,9 +1,9 @@
 import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
-import { ESCALATION_STATES, GRADES, POSTS } from '../../../domain/core/codes';
+import { ESCALATION_MOVES, ESCALATION_STATES, GRADES, POSTS } from '../../../domain/core/codes';
 import { units, users } from './accounts';
 import { bedsideSessions } from './bedside';
-import { id, instant, json } from './columns';
+import { id, instant, json, yesNo } from './columns';
 import { episodes } from './episodes';
 import { threads } from './referrals';
 
@@ -40,6 +40,12 @@ export const escalations = sqliteTable(
 		takenBy: text('taken_by').references(() => users.id),
 		takenAt: instant('taken_at'),
 		etaMinutes: integer('eta_minutes'),
+		/** When the minutes were given: with the taking, or changed later. */
+		etaGivenAt: instant('eta_given_at'),
+		/** When the holder of a high one is asked whether they are there; null when nobody is to be asked. */
+		askHolderAt: instant('ask_holder_at'),
+		/** When they were asked; null while they were not, or have answered. */
+		holderAskedAt: instant('holder_asked_at'),
 		arrivedAt: instant('arrived_at'),
 		passTo: text('pass_to').references(() => users.id),
 		passReason: text('pass_reason'),
@@ -50,15 +56,19 @@ export const escalations = sqliteTable(
 		informed: text('informed'),
 		recheckDueAt: instant('recheck_due_at'),
 		recheckDoneAt: instant('recheck_done_at'),
-		/** The chain: which step comes next and when; null once taken, settled or withdrawn. */
+		/**
+		 * The chain: which step comes next and when. While somebody has it the time is null and the step stays, so
+		 * that the chain can go on from there; a time beside a holder means that others are sought all the same.
+		 */
 		nextStep: integer('next_step'),
 		nextStepAt: instant('next_step_at'),
-		/** From when the steps count: the raising, or the moment a worse grade started the chain again. */
+		/** From when the steps count; moved when a worse grade starts the chain again, or when it goes on after a stop. */
 		chainStartedAt: instant('chain_started_at').notNull()
 	},
 	(t) => [
 		index('escalations_episode').on(t.episodeId, t.raisedAt),
 		index('escalations_timer').on(t.nextStepAt),
+		index('escalations_ask').on(t.askHolderAt),
 		index('escalations_state').on(t.state, t.unitId),
 		// One patient, one untaken escalation: later facts are added to it.
 		uniqueIndex('escalations_one_untaken')
@@ -69,6 +79,36 @@ export const escalations = sqliteTable(
 			.on(t.replyCode)
 			.where(sql`state in ('raised', 'taken')`)
 	]
+);
+
+/**
+ * What a second caller said about an escalation that was open already: a row of its own with who and when,
+ * append-only. The first call stays as it was said.
+ */
+export const escalationFacts = sqliteTable(
+	'escalation_facts',
+	{
+		id: id(),
+		escalationId: text('escalation_id')
+			.notNull()
+			.references(() => escalations.id),
+		byId: text('by_id')
+			.notNull()
+			.references(() => users.id),
+		at: instant('at').notNull(),
+		grade: text('grade', { enum: GRADES }).notNull(),
+		/** Whether it made the escalation graver and started the chain again. */
+		raisedGrade: yesNo('raised_grade').notNull(),
+		situation: text('situation').notNull(),
+		background: text('background').notNull(),
+		assessment: text('assessment').notNull(),
+		request: text('request').notNull(),
+		neededBy: instant('needed_by'),
+		toldInPerson: text('told_in_person').references(() => users.id),
+		sessionId: text('session_id').references(() => bedsideSessions.id),
+		threadId: text('thread_id').references(() => threads.id)
+	},
+	(t) => [index('escalation_facts_escalation').on(t.escalationId, t.at)]
 );
 
 /** Who was told, by which step of the chain and when; one row for each person, append-only. */
@@ -103,7 +143,7 @@ export const escalationMoves = sqliteTable(
 		at: instant('at').notNull(),
 		byId: text('by_id').references(() => users.id),
 		kind: text('kind', {
-			enum: ['raised', 'added', 'taken', 'arrived', 'passed', 'confirmed', 'settled', 'withdrawn']
+			enum: ESCALATION_MOVES
 		}).notNull(),
 		detail: json<Record<string, unknown>>('detail')
 	},

@@ -4,7 +4,7 @@ import { id, instant } from './columns';
 import { patients } from './episodes';
 import { visits } from './visits';
 
-export const MESSAGE_KINDS = ['escalation', 'reminder', 'answer', 'mail'] as const;
+export const MESSAGE_KINDS = ['escalation', 'notice', 'reminder', 'answer', 'mail'] as const;
 export const MESSAGE_STATES = [
 	'ready',
 	'sending',

@@ -1,8 +1,16 @@
 import { error, fail, redirect, type RequestEvent } from '@sveltejs/kit';
 import { Problem } from '$lib/domain/core/errors';
+import { linkDeed, type LinkDeed } from '$lib/domain/escalations/forms';
 import { routes } from '$lib/routes';
+import type { Context } from '$lib/server/context';
+import {
+	arriveByLink,
+	confirmByLink,
+	giveEtaByLink,
+	takeByLink,
+	untakeByLink
+} from '$lib/server/escalations/link';
 import { phonePage } from '$lib/server/escalations/phone';
-import { takeByLink } from '$lib/server/escalations/take';
 import { orErrorPage } from '$lib/server/http/page';
 import type { Actions, PageServerLoad } from './$types';
 
@@ -11,27 +19,46 @@ export const load: PageServerLoad = ({ locals, params }) =>
 	orErrorPage(() => phonePage(locals.context, params.token));
 
 export const actions: Actions = {
-	/** Take it, for the person whom the link was sent to. Sent twice it is taken once. */
-	default: async ({ locals, params }) => {
+	/** Take it, or what comes after it, for the person whom the link was sent to. Sent twice it is done once. */
+	default: async ({ locals, params, request }) => {
+		const deed = linkDeed.safeParse(Object.fromEntries(await request.formData()));
+		if (!deed.success) {
+			return fail(422, { refused: 'invalid' });
+		}
 		try {
-			await takeByLink(locals.context, params.token);
+			await perform(locals.context, params.token, deed.data);
 		} catch (thrown) {
-			return refused(thrown, locals, params.token);
+			return refused(thrown, locals, params.token, deed.data);
 		}
 		redirect(303, routes.phoneLink(params.token));
 	}
 };
 
+function perform(context: Context, token: string, input: LinkDeed): Promise<unknown> {
+	switch (input.deed) {
+		case 'take':
+			return takeByLink(context, token);
+		case 'untake':
+			return untakeByLink(context, token);
+		case 'eta':
+			return giveEtaByLink(context, token, input.etaMinutes);
+		case 'arrive':
+			return arriveByLink(context, token);
+		case 'confirm':
+			return confirmByLink(context, token);
+	}
+}
+
 /** Somebody was faster, or the link opens nothing any more. The page that comes back says who has it. */
-async function refused(thrown: unknown, locals: RequestEvent['locals'], token: string) {
+async function refused(thrown: unknown, locals: RequestEvent['locals'], token: string, { deed }: LinkDeed) {
 	if (!(thrown instanceof Problem)) {
 		throw thrown;
 	}
 	const { escalation } = await orErrorPage(() => phonePage(locals.context, token));
-	if (escalation.mine) {
+	if (escalation.mine && (deed === 'take' || deed === 'confirm')) {
 		redirect(303, routes.phoneLink(token));
 	}
-	if (thrown.status !== 409) {
+	if (thrown.status === 404) {
 		error(thrown.status, { message: thrown.detail, code: thrown.code });
 	}
 	return fail(thrown.status, { refused: thrown.code });

@@ -1,15 +1,16 @@
 import { redirect } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
-import { Problem, invalidField } from '$lib/domain/core/errors';
+import { Problem } from '$lib/domain/core/errors';
 import { can } from '$lib/domain/access/can';
 import { draftEscalation } from '$lib/domain/escalations/draft';
-import { raiseForm } from '$lib/domain/escalations/forms';
+import { callOf, NEEDED_WITHIN, raiseForm } from '$lib/domain/escalations/forms';
 import type { Nameboard } from '$lib/domain/episodes/views';
 import { m } from '$lib/i18n/paraglide/messages';
 import { routes } from '$lib/routes';
 import type { PersonContext } from '$lib/server/context';
 import { env } from '$lib/server/env';
+import { takersOf } from '$lib/server/escalations/receivers';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
@@ -27,9 +28,11 @@ export const load: PageServerLoad = (event) =>
 			session,
 			env().hospital.zone
 		);
-		const filled = { ...parts, grade: grade ?? ('' as const), sessionId: session?.id };
+		const neededInMinutes = (grade && NEEDED_WITHIN[grade]) ?? undefined;
+		const filled = { ...parts, grade: grade ?? ('' as const), neededInMinutes, sessionId: session?.id };
 		return {
 			form: await superValidate(filled, zod4(raiseForm), { errors: false }),
+			takers: await takersOf(context, nameboard.unitId),
 			key: newFormKey(),
 			emergency: env().hospital.emergency
 		};
@@ -50,11 +53,9 @@ function refuseRole({ actor }: PersonContext, { unitId }: Nameboard): void {
 export const actions: Actions = {
 	raise: formAction({
 		schema: raiseForm,
-		async run(context, { grade, ...call }, event) {
-			if (grade === '') {
-				throw invalidField('/grade', m.escalations_grade_needed());
-			}
-			const { result } = await raiseEscalation(context, idParam(event), { ...call, grade });
+		async run(context, form, event) {
+			const call = callOf(form, context.now);
+			const { result } = await raiseEscalation(context, idParam(event), call);
 			redirect(303, routes.escalation(result.id));
 		}
 	})

@@ -1,0 +1,46 @@
+import { describe, expect, it } from 'vitest';
+import { askHolderAt, etaOf, isOpenTo, isSoughtAnew } from './holding';
+
+const T = Date.parse('2026-03-03T09:00:00Z');
+const MINUTE = 60_000;
+
+describe('askHolderAt', () => {
+	// Common practice, no published source: five minutes after the minutes given, ten when none were.
+	it.each([
+		['high', null, 10],
+		['high', 1, 6],
+		['high', 20, 25],
+		['medium', null, null],
+		['low', 5, null]
+	] as const)('%s with %s minutes given: after %s', (grade, eta, minutes) => {
+		expect(askHolderAt(grade, T, eta)).toBe(minutes === null ? null : T + minutes * MINUTE);
+	});
+});
+
+describe('isOpenTo', () => {
+	const held = { state: 'taken', takenBy: 'nurse', holderAskedAt: null, nextStepAt: null } as const;
+	it.each([
+		['untaken', { ...held, state: 'raised', takenBy: null, nextStepAt: T }, true, true],
+		['taken, its holder coming', held, false, false],
+		['taken, its holder asked', { ...held, holderAskedAt: T }, false, false],
+		['its holder did not come', { ...held, holderAskedAt: T, nextStepAt: T }, false, true],
+		['made graver', { ...held, nextStepAt: T }, true, true],
+		['settled', { ...held, state: 'settled' }, false, false]
+	] as const)('%s: to the holder %s, to another %s', (_, facts, holder, other) => {
+		expect([isOpenTo(facts, 'nurse'), isOpenTo(facts, 'nurse2')]).toEqual([holder, other]);
+	});
+
+	it('does not call an untaken one sought anew', () => {
+		expect(isSoughtAnew({ state: 'raised', nextStepAt: T })).toBe(false);
+	});
+});
+
+describe('etaOf', () => {
+	it.each([
+		[{ etaMinutes: null, etaGivenAt: null, takenAt: T }, null],
+		[{ etaMinutes: 5, etaGivenAt: null, takenAt: T }, T + 5 * MINUTE],
+		[{ etaMinutes: 5, etaGivenAt: T + MINUTE, takenAt: T }, T + 6 * MINUTE]
+	])('%o', (held, expected) => {
+		expect(etaOf(held)).toBe(expected);
+	});
+});

@@ -1,0 +1,68 @@
+import type { EscalationState, Grade } from '../core/codes';
+import { MINUTE, SECOND } from '../core/time';
+
+/**
+ * What runs while somebody has an escalation: a high one must not die in a pocket. Its holder is asked when they
+ * are not at the bedside in time, and a minute later the chain goes on; they stay the holder until another takes.
+ * All times are common practice, no published source.
+ */
+
+/** A thumb that slipped can take back within this time, to the millisecond. */
+export const UNDO_MS = 5 * SECOND;
+/** After it the others hear that somebody has it: until then a slip could still be taken back. */
+export const NOTICE_AFTER_MS = UNDO_MS;
+/** The holder was asked and has not answered: the next ones are told. */
+export const GO_ON_AFTER_MS = MINUTE;
+
+const GRACE_MS = 5 * MINUTE;
+const WITHOUT_WORD_MS = 10 * MINUTE;
+
+/**
+ * When the holder is asked whether they are at the bedside: five minutes after the minutes they gave have run out,
+ * ten after taking when they gave none. Null for what is not high, where nobody is asked.
+ * @param since when it was taken, or when the minutes were given, milliseconds UTC
+ */
+export function askHolderAt(grade: Grade, since: number, etaMinutes: number | null): number | null {
+	if (grade !== 'high') {
+		return null;
+	}
+	return since + (etaMinutes === null ? WITHOUT_WORD_MS : etaMinutes * MINUTE + GRACE_MS);
+}
+
+export interface Held {
+	state: EscalationState;
+	takenBy: string | null;
+	holderAskedAt: number | null;
+	nextStepAt: number | null;
+}
+
+/** Somebody has it, and the chain goes on all the same: they did not come in time, or it became worse. */
+export function isSoughtAnew({ state, nextStepAt }: Pick<Held, 'state' | 'nextStepAt'>): boolean {
+	return state === 'taken' && nextStepAt !== null;
+}
+
+/**
+ * May this person take it as it stands? Untaken: whoever may take at all. Taken, with the chain going on: anybody
+ * but a holder who did not come, who has to be there instead. A holder may take a graver grade anew.
+ */
+export function isOpenTo(held: Held, personId: string): boolean {
+	if (held.state === 'raised') {
+		return true;
+	}
+	return isSoughtAnew(held) && (held.takenBy !== personId || held.holderAskedAt === null);
+}
+
+/** When the holder said to be there, milliseconds UTC; null when they did not say. */
+export function etaOf(held: {
+	etaMinutes: number | null;
+	etaGivenAt: number | null;
+	takenAt: number | null;
+}) {
+	const from = held.etaGivenAt ?? held.takenAt;
+	return held.etaMinutes === null || from === null ? null : from + held.etaMinutes * MINUTE;
+}
+
+/** Was the holder asked whether they are there, and has not answered? */
+export function askedOf({ state, holderAskedAt }: Pick<Held, 'state' | 'holderAskedAt'>): boolean {
+	return state === 'taken' && holderAskedAt !== null;
+}

@@ -1,0 +1,166 @@
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { sql } from 'drizzle-orm';
+import type { Context } from '$lib/server/context';
+import { db } from '$lib/server/db';
+import { chainJob } from '$lib/server/escalations/chain-job';
+import { holderJob } from '$lib/server/escalations/holder-job';
+import { passEscalation } from '$lib/server/escalations/hold';
+import { raiseEscalation } from '$lib/server/escalations/raise';
+import { takeEscalation } from '$lib/server/escalations/take';
+import { actions, load } from '../../src/routes/(phone)/t/[token]/+page.server';
+import { GET } from '../../src/routes/(phone)/t/[token]/state/+server';
+import { freshDatabase } from '../support/database';
+import { at, CALL, coverWard, escalationRow, nobody, tokenOf } from '../support/escalations';
+import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+
+let close: () => void;
+let hospital: Hospital;
+let id: string;
+
+beforeAll(async () => {
+	({ close } = await freshDatabase());
+	hospital = await makeHospital();
+	await coverWard(hospital);
+});
+beforeEach(async () => {
+	const { episodeId } = await addPatient({ unitId: hospital.units.ward });
+	({ id } = (await raiseEscalation(contextOf(hospital.people.therapist, at(0)), episodeId, CALL)).result);
+});
+afterAll(() => close());
+
+/** As much of a request as the handlers look at. */
+function request(context: Context, token: string, form: Record<string, string> = {}): never {
+	const body = new URLSearchParams(form);
+	return {
+		locals: { context },
+		params: { token },
+		request: new Request('http://127.0.0.1/t/x', { method: 'POST', body })
+	} as never;
+}
+
+/** What the one action of the page answers: where it leads, or why not. */
+async function post(context: Context, token: string, form: Record<string, string> = {}) {
+	try {
+		return (await actions.default?.(request(context, token, form))) as { status: number; data: unknown };
+	} catch (thrown) {
+		return thrown as { status: number; location?: string };
+	}
+}
+
+/** Every row of every table that a deed would touch. */
+async function everything(): Promise<string> {
+	const tables = ['escalations', 'escalation_moves', 'escalation_links', 'audit', 'outbox', 'live_events'];
+	const counts = await Promise.all(tables.map((table) => db().all(sql.raw(`select * from ${table}`))));
+	return JSON.stringify(counts);
+}
+
+describe('looking at a link', () => {
+	it.each([
+		['without a cookie', () => nobody(10)],
+		['signed in as its person', () => contextOf(hospital.people.nurse, at(10))],
+		['signed in as somebody else', () => contextOf(hospital.people.physician, at(10))]
+	])('%s changes nothing at all', async (_, context) => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		const before = await everything();
+		for (let n = 0; n < 3; n += 1) {
+			await load(request(context(), token));
+			expect((await GET(request(context(), token))).status).toBe(200);
+		}
+		expect(await everything()).toBe(before);
+		expect((await escalationRow(id)).state).toBe('raised');
+	});
+});
+
+describe('the page of a link, by POST', () => {
+	it('takes, gives and changes minutes, and arrives, for its person and without a sign-in', async () => {
+		const { nurse } = hospital.people;
+		const token = await tokenOf(id, nurse.id);
+		expect(await post(nobody(10), token)).toMatchObject({ status: 303, location: `/t/${token}` });
+		expect(await escalationRow(id)).toMatchObject({ takenBy: nurse.id, etaMinutes: null });
+		await post(nobody(20), token, { deed: 'eta', etaMinutes: '5' });
+		expect(await escalationRow(id)).toMatchObject({ etaMinutes: 5, askHolderAt: at(20 + 600) });
+		await post(nobody(40), token, { deed: 'eta', etaMinutes: '2' });
+		expect(await escalationRow(id)).toMatchObject({ etaMinutes: 2, etaGivenAt: at(40) });
+		await post(nobody(60), token, { deed: 'arrive' });
+		expect(await escalationRow(id)).toMatchObject({ arrivedAt: at(60), askHolderAt: null });
+	});
+
+	it('says nothing about a patient whatever was done', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		await post(nobody(20), token, { deed: 'arrive' });
+		const shown = await (await GET(request(nobody(30), token))).text();
+		expect(shown).not.toMatch(/Quillfeather|128|108|Bypass|Fall of/);
+	});
+
+	it.each([
+		['0', 422],
+		['1', 303],
+		['240', 303],
+		['241', 422],
+		['soon', 422],
+		['2.5', 422]
+	])('takes %s minutes: %i', async (etaMinutes, status) => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		expect(await post(nobody(20), token, { deed: 'eta', etaMinutes })).toMatchObject({ status });
+	});
+
+	it('knows no other deeds', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		expect(await post(nobody(10), token, { deed: 'settle' })).toMatchObject({ status: 422 });
+		expect((await escalationRow(id)).state).toBe('raised');
+	});
+
+	it.each(['eta', 'arrive', 'untake', 'confirm'])('%s is not for who does not hold it', async (deed) => {
+		const token = await tokenOf(id, hospital.nurse2.id);
+		await takeEscalation(contextOf(hospital.people.nurse, at(10)), id, null);
+		const before = await escalationRow(id);
+		const answer = await post(nobody(12), token, { deed, etaMinutes: '5' });
+		expect([403, 409]).toContain(answer.status);
+		expect(await escalationRow(id)).toEqual(before);
+	});
+
+	it('takes back within five seconds', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		await post(nobody(15), token, { deed: 'untake' });
+		expect((await escalationRow(id)).state).toBe('raised');
+		await post(nobody(16), token);
+		expect(await post(nobody(22), token, { deed: 'untake' })).toMatchObject({ status: 409 });
+	});
+
+	it('confirms what was passed to its person', async () => {
+		const { nurse, physician } = hospital.people;
+		await takeEscalation(contextOf(nurse, at(10)), id, null);
+		await passEscalation(contextOf(nurse, at(20)), id, { to: physician.id, reason: 'Pressure.' });
+		const token = await tokenOf(id, physician.id);
+		await post(nobody(30), token, { deed: 'confirm' });
+		expect(await escalationRow(id)).toMatchObject({ takenBy: physician.id, passTo: null });
+	});
+
+	it('tells the second of two who take at once, and the first has it', async () => {
+		const [one, two] = [await tokenOf(id, hospital.people.nurse.id), await tokenOf(id, hospital.nurse2.id)];
+		const answers = await Promise.all([post(nobody(10), one), post(nobody(10), two)]);
+		expect(answers.map(({ status }) => status).toSorted()).toEqual([303, 409]);
+	});
+
+	it('takes once: who did not come does not take again with the same link', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		for (const second of [610, 670]) {
+			await holderJob.run(at(second));
+		}
+		await chainJob.run(at(670));
+		const before = await escalationRow(id);
+		expect(before.nextStepAt).not.toBeNull();
+		await post(nobody(680), token);
+		expect(await escalationRow(id)).toEqual(before);
+	});
+
+	it('does nothing once it has expired', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		expect(await post(nobody(12 * 3600), token)).toMatchObject({ status: 404 });
+		expect((await escalationRow(id)).state).toBe('raised');
+	});
+});
