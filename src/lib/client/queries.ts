@@ -4,6 +4,7 @@ import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import { MINUTE } from '$lib/domain/core/time';
 import type { Alarm, EscalationView } from '$lib/domain/escalations/views';
+import type { PatientLimitLine } from '$lib/domain/limits/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
 import type { ThreadView } from '$lib/domain/referrals/views';
@@ -48,6 +49,9 @@ export const queries = {
 		...query(['thread', id], `/api/threads/${id}`, initial),
 		queryFn: () => wholeThread(id)
 	}),
+	/** Below the episode's key, because whatever changes the episode's limits is an event of the episode. */
+	patientLimits: (episodeId: string, initial: List<PatientLimitLine>) =>
+		query(['episode', episodeId, 'limits'], `/api/episodes/${episodeId}/limits`, initial),
 	clearance: (id: string, initial: ClearanceView) =>
 		query(['clearance', id], `/api/clearances/${id}`, initial),
 	sessions: (episodeId: string, initial: List<SessionLine>) =>

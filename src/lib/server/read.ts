@@ -8,6 +8,7 @@ import { listEpisodes } from './episodes/list';
 import { alarmsOf } from './escalations/alarms';
 import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
+import { listActivities } from './limits/activities';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
 import { looseEndsOf } from './loose-ends/queries';
 import { troublesFor } from './messages/trouble';
@@ -27,6 +28,7 @@ export const read = {
 	colleagues: ({ actor }: PersonContext, episodeId: string) => listColleagues(db(), actor, episodeId),
 	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
+	activities: (unitId: string | null) => listActivities(db(), unitId),
 	unitLimits: (unitId: string) => unitLimitsOf(db(), unitId),
 	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>
 		patientLimitsOf(db(), actor, episodeId, now),

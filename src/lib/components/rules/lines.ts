@@ -1,4 +1,5 @@
 import { SETS, type LimitKey, type SetName } from '$lib/domain/bedside/codes';
+import { DEFAULT_LIMITS } from '$lib/domain/bedside/limits/table';
 import type { RulebookLimit } from '$lib/domain/bedside/rulebook';
 import { m } from '$lib/i18n/paraglide/messages';
 
@@ -46,6 +47,13 @@ const MEANINGS: Record<string, () => string> = {
 	cleared: m.home_rules_stop_cleared,
 	breathlessness: m.home_rules_stop_breathless
 };
+
+/** A limit by itself: its rule, what crossing it means, and in what it is measured. */
+export function limitLabel(key: LimitKey): string {
+	const unit = SETS.map((set) => DEFAULT_LIMITS[set][key]?.unit).find((each) => each !== undefined) ?? '';
+	const what = m.home_rules_limit_label({ what: meaningOf(key), unit });
+	return m.limits_label({ rule: key.split('.')[0] ?? key, what });
+}
 
 /** A fall of the saturation never stops by itself; every other bare name of a rule is its stop limit. */
 function meaningOf(key: LimitKey): string {

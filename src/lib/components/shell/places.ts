@@ -5,7 +5,7 @@ import { routes } from '$lib/routes';
 /** A place of the navigation. `under` says which paths count as being in it. */
 export type Place = { key: PlaceKey; href: string; label: string; under: readonly string[] };
 export type PlaceKey =
-	'loose-ends' | 'ward' | 'visits' | 'cover' | 'rules' | 'account' | 'accounts' | 'phones';
+	'loose-ends' | 'ward' | 'visits' | 'cover' | 'rules' | 'account' | 'accounts' | 'limits' | 'phones';
 
 /**
  * The places of everyday work; a phone shows these three and 'More'. An administrator sees no patients, and so
@@ -30,6 +30,7 @@ export function mainPlaces(role: Role): Place[] {
 export function morePlaces(role: Role, demo: boolean): Place[] {
 	return [
 		place('rules', routes.rules(), m.common_place_rules()),
+		...(role === 'admin' ? [place('limits', routes.adminLimits(), m.common_place_limits())] : []),
 		...(role === 'admin' ? [] : [place('account', routes.account(), m.common_place_account())]),
 		...(demo ? [place('phones', routes.phones(), m.common_place_phones())] : [])
 	];

@@ -130,6 +130,60 @@ describe('a finding never disappears and never eases', () => {
 		);
 	});
 
+	/** Before a start there is nothing to compare with, so that only what judges each reading by itself is left. */
+	const WORSE_BEFORE: typeof WORSE = [
+		['sbp', 5, 280, ['systolic-ceiling']],
+		['dbp', 5, 180, ['diastolic-ceiling']],
+		['hr', 5, 250, ['heart-rate-ceiling']],
+		['rr', 3, 60, ['respiratory-ceiling']],
+		['pain', 1, 10, ['pain-ceiling']],
+		['sbp', -5, 50, ['systolic-floor', 'mean-floor']],
+		['hr', -5, 20, ['heart-rate-floor']],
+		['spo2', -2, 50, ['saturation-floor']]
+	];
+
+	it.each(WORSE_BEFORE)('when %s before a start moves by %d', (field, step, bound, rules) => {
+		fc.assert(
+			fc.property(anySession, fc.integer({ min: 1, max: 6 }), (input, times) => {
+				const value = input.before[field];
+				fc.pre(typeof value === 'number');
+				const moved = Number(value) + step * times;
+				const to = step > 0 ? Math.min(moved, bound) : Math.max(moved, bound);
+				const gravestBefore = (session: Assessment) =>
+					gravest({
+						...assess(session),
+						findings: assess(session).findings.filter(({ reading }) => reading === 'before')
+					});
+				const then = gravestBefore(input);
+				const now = gravestBefore({ ...input, before: { ...input.before, [field]: to } });
+				for (const rule of rules) {
+					expect(now.get(rule) ?? Infinity).toBeLessThanOrEqual(then.get(rule) ?? Infinity);
+				}
+			}),
+			RUNS
+		);
+	});
+
+	it('when a worse reading in effort is added', () => {
+		fc.assert(
+			fc.property(anySession, (input) => {
+				const last = input.during.at(-1) ?? {};
+				const worse = { ...last, sbp: 210, dbp: 116, hr: 140, spo2: 84, rr: 40, rpe: 18, pain: 9 };
+				const then = gravest(assess(input));
+				const now = gravest(assess({ ...input, during: [...input.during, worse] }));
+				for (const rule of [
+					'systolic-ceiling',
+					'heart-rate-ceiling',
+					'saturation-floor',
+					'pain-ceiling'
+				] as const) {
+					expect(now.get(rule) ?? Infinity).toBeLessThanOrEqual(then.get(rule) ?? Infinity);
+				}
+			}),
+			RUNS
+		);
+	});
+
 	it('when a symptom is added', () => {
 		fc.assert(
 			fc.property(anySession, (input) => {
@@ -161,6 +215,95 @@ describe('a finding never disappears and never eases', () => {
 			RUNS
 		);
 	});
+});
+
+describe('what must not matter', () => {
+	/** Everything a finding says except its words, as lines in a fixed order. */
+	const keys = ({ findings }: Verdict) =>
+		findings.map(({ rule, grade, reading, measured }) => [rule, grade, reading, measured].join()).sort();
+	/** Rules that look at one reading at a time: the order of the readings in effort is nothing to them. */
+	const ABSOLUTE: Finding['rule'][] = [
+		'systolic-ceiling',
+		'systolic-floor',
+		'mean-floor',
+		'diastolic-ceiling',
+		'heart-rate-ceiling',
+		'heart-rate-floor',
+		'respiratory-ceiling',
+		'saturation-floor',
+		'exertion-ceiling',
+		'pain-ceiling'
+	];
+
+	it('the order of readings in effort, for the rules that judge each by itself', () => {
+		fc.assert(
+			fc.property(anySession, (input) => {
+				const of = (session: Assessment) =>
+					keys(assess(session)).filter((line) => ABSOLUTE.some((rule) => line.startsWith(`${rule},`)));
+				expect(of({ ...input, during: [...input.during].reverse() })).toEqual(of(input));
+			}),
+			RUNS
+		);
+	});
+
+	it('a unit of work: watts, stages or metres per minute judge alike as long as they grow alike', () => {
+		fc.assert(
+			fc.property(anySession, fc.constantFrom(0.5, 6, 26.8), (input, factor) => {
+				const scaled = input.during.map((reading) =>
+					reading.work == null ? reading : { ...reading, work: reading.work * factor + 1 }
+				);
+				expect(keys(assess({ ...input, during: scaled }))).toEqual(keys(assess(input)));
+			}),
+			RUNS
+		);
+	});
+
+	it('a reading in effort that was taken twice', () => {
+		fc.assert(
+			fc.property(anySession, (input) => {
+				const [first, ...rest] = input.during;
+				fc.pre(first !== undefined);
+				const twice = first === undefined ? input.during : [first, first, ...rest];
+				expect(keys(assess({ ...input, during: twice }))).toEqual(keys(assess(input)));
+			}),
+			RUNS
+		);
+	});
+
+	it('a finding of a reading is found whether it stands in effort or after it', () => {
+		fc.assert(
+			fc.property(anySession, (input) => {
+				const moved = assess({ ...input, during: [...input.during, input.after] });
+				const gravestMoved = gravest(moved);
+				for (const [rule, grade] of gravest(assess(input))) {
+					if (ABSOLUTE.includes(rule)) {
+						expect(gravestMoved.get(rule) ?? Infinity).toBeLessThanOrEqual(grade);
+					}
+				}
+			}),
+			RUNS
+		);
+	});
+});
+
+it('a limit made narrower takes no finding away', () => {
+	const narrower = {
+		'systolic-ceiling': 150,
+		'systolic-fall': 5,
+		'pain-ceiling': 3,
+		'heart-rate-ceiling': 100
+	};
+	fc.assert(
+		fc.property(anySession, (input) => {
+			fc.pre(input.context.limits == null && input.context.prescribed == null);
+			const then = gravest(assess(input));
+			const now = gravest(assess({ ...input, context: { ...input.context, limits: narrower } }));
+			for (const [rule, grade] of then) {
+				expect(now.get(rule) ?? Infinity).toBeLessThanOrEqual(grade);
+			}
+		}),
+		RUNS
+	);
 });
 
 it('the order of symptoms and activities does not matter', () => {

@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { heartRateTarget, predictedMaximum, reservePercent, type MaximumMethod } from './heart-rate-target';
+import {
+	heartFailureMaximum,
+	heartRateTarget,
+	inpatientCeiling,
+	predictedMaximum,
+	reservePercent,
+	type MaximumMethod
+} from './heart-rate-target';
 
 const FRACTIONS = [0.4, 0.5, 0.6, 0.7, 0.8];
 
@@ -53,4 +60,23 @@ describe('reservePercent', () => {
 
 it('predicts maxima that differ by method', () => {
 	expect(predictedMaximum('208-0.7age', 65) - predictedMaximum('164-0.7age', 65)).toBeCloseTo(44, 9);
+});
+
+// Heart failure on a beta-blocker: Keteyian 2012 (PubMed 21900844), computed.
+it.each([
+	[65, 70, 'treadmill', 121.5],
+	[65, 70, 'cycle', 116.5]
+] as const)('heart failure, age %d, rest %d, %s: %d', (age, resting, mode, expected) => {
+	expect(heartFailureMaximum(age, resting, mode)).toBe(expected);
+});
+
+// Rest and thirty, capped at 130 (stop) or 120 (target): inpatient line of the ACSM, secondary source; computed.
+it.each([
+	[84, 130, 114],
+	[104, 130, 130],
+	[104, 120, 120],
+	[100, 130, 130],
+	[99.9, 130, 129.9]
+])('rest %d under a cap of %d: %d', (resting, cap, expected) => {
+	expect(inpatientCeiling(resting, cap)).toBe(expected);
 });

@@ -63,3 +63,22 @@ export function heartRateTarget({ age, resting, method, fractions }: HeartRateTa
 export function reservePercent(hr: number, resting: number, maximum: number): number {
 	return ((hr - resting) / (maximum - resting)) * 100;
 }
+
+/**
+ * The maximum predicted for heart failure on a beta-blocker, beats/min: Keteyian 2012, standard error 18 beats. On
+ * a cycle it lies 5 lower.
+ */
+export function heartFailureMaximum(age: number, resting: number, mode: 'treadmill' | 'cycle'): number {
+	return 119 + 0.5 * resting - 0.5 * age - (mode === 'cycle' ? 5 : 0);
+}
+
+/** What an inpatient may rise by after heart surgery, beats/min: inpatient line of the ACSM, secondary source. */
+export const INPATIENT_RISE = 30;
+
+/** The highest rate of an inpatient in effort: rest and the rise, and never over the cap of the set. */
+export function inpatientCeiling(resting: number, cap: number): number {
+	return Math.min(resting + INPATIENT_RISE, cap);
+}
+
+/** Under the rate at which ischaemia begins by at least this much, beats/min: from memory (ACSM). */
+export const ISCHAEMIC_MARGIN = 10;

@@ -20,7 +20,9 @@ export type {
 	WalkTestInput
 } from './forms';
 export {
+	heartFailureMaximum,
 	heartRateTarget,
+	inpatientCeiling,
 	MAXIMUM_METHODS,
 	METHODS,
 	predictedMaximum,
@@ -28,8 +30,15 @@ export {
 	type HeartRateTarget,
 	type MaximumMethod
 } from './heart-rate-target';
+export {
+	orthostatic,
+	ORTHOSTATIC_CRITERIA,
+	type Orthostatic,
+	type OrthostaticCriterion
+} from './orthostatic';
 export { CALCULATORS, type CalculatorEntry } from './rulebook';
-export { pressures, type Pressures } from './pressures';
+export { pressures, productBand, type Pressures } from './pressures';
+export { RISK_MARKS, riskClass, type RiskClass, type RiskMark } from './risk';
 export {
 	BALL_FLOWS_ML_PER_S,
 	breathesTooOften,

@@ -1,5 +1,5 @@
 import { expect, it } from 'vitest';
-import { pressures } from './pressures';
+import { pressures, productBand } from './pressures';
 
 /** Computed; 120/80 with a mean of 93.3 also stands in WikiLectures, Mean arterial pressure. */
 it.each([
@@ -14,4 +14,21 @@ it.each([
 	expect(found.map).toBeCloseTo(map, 2);
 	expect(found.shockIndex).toBeCloseTo(shockIndex, 3);
 	expect(found).toMatchObject({ pulsePressure, ratePressureProduct });
+});
+
+// Bands: Rate pressure product, Wikipedia.
+it.each([
+	[8400, null],
+	[9999, null],
+	[10_000, 'low'],
+	[14_999, 'low'],
+	[15_000, 'low-intermediate'],
+	[16_500, 'low-intermediate'],
+	[20_000, 'intermediate'],
+	[25_000, 'high-intermediate'],
+	[26_000, 'high-intermediate'],
+	[29_999, 'high-intermediate'],
+	[30_000, 'high']
+])('a rate-pressure product of %d is %s', (product, band) => {
+	expect(productBand(product)).toBe(band);
 });

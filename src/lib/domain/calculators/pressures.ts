@@ -25,3 +25,20 @@ export function pressures({ hr, sbp, dbp }: PressuresInput): Pressures {
 		shockIndex: hr / sbp
 	};
 }
+
+/** Bands of the rate-pressure product, each from its lower end on: Rate pressure product, Wikipedia. */
+export const PRODUCT_BANDS = [
+	{ from: 10_000, band: 'low' },
+	{ from: 15_000, band: 'low-intermediate' },
+	{ from: 20_000, band: 'intermediate' },
+	{ from: 25_000, band: 'high-intermediate' },
+	{ from: 30_000, band: 'high' }
+] as const;
+
+/** The band of a rate-pressure product; null below the lowest. Exactly at an edge belongs to the upper band. */
+export function productBand(product: number): (typeof PRODUCT_BANDS)[number]['band'] | null {
+	return PRODUCT_BANDS.findLast(({ from }) => product >= from)?.band ?? null;
+}
+
+/** A shock index over this raises the risk: Koch 2019. */
+export const SHOCK_INDEX_RISK = 1;

@@ -127,5 +127,71 @@ export const CALCULATORS: readonly CalculatorEntry[] = [
 		source: 'Koch 2019',
 		address: 'https://doi.org/10.2147/OAEM.S178358',
 		status: 'published'
+	},
+	{
+		name: 'Maximum heart rate, heart failure on a beta-blocker',
+		formula: '119 + 0.5 x resting - 0.5 x age; 5 lower on a cycle',
+		range: 'Heart failure on a beta-blocker; standard error 18 beats',
+		source: 'Keteyian 2012',
+		address: 'https://pubmed.ncbi.nlm.nih.gov/21900844/',
+		status: 'published'
+	},
+	{
+		name: 'Highest heart rate of an inpatient',
+		formula: 'resting + 30, and never over the cap of the set',
+		range: 'Inpatients after heart surgery; a cautious floor and no training dose',
+		source: 'Inpatient exercise limits of the ACSM line, as given in study notes',
+		address: 'https://www.brainscape.com/flashcards/cardiac-rehab-8733959',
+		status: 'secondary'
+	},
+	{
+		name: 'A change of the six-minute walk that matters',
+		formula: '25 m in coronary disease; 23 m pooled, 30 m general (from memory), 36 m in heart failure',
+		range: 'Two tests on the same corridor; the first is a rehearsal',
+		source: 'Gremeaux 2011',
+		address: 'https://doi.org/10.1016/j.apmr.2010.11.023',
+		status: 'published'
+	},
+	{
+		name: 'Pulse pressure',
+		formula: 'systolic - diastolic',
+		range: 'Asked about under 10 and over 150 mmHg',
+		source: 'common practice, no published source',
+		address: null,
+		status: 'common-practice'
+	},
+	{
+		name: 'Orthostatic hypotension',
+		formula:
+			'a fall of 20 systolic or 10 diastolic on standing after lying, 30 systolic where the pressure was high; 15 or 7 after sitting',
+		range: 'After five minutes lying down, within three minutes of standing',
+		source: 'Consensus on orthostatic hypotension 2011, as summarised; sitting: Shaw 2017',
+		address: 'https://doi.org/10.1007/978-3-030-62493-4_5',
+		status: 'published'
+	},
+	{
+		name: 'Risk class of an outpatient',
+		formula:
+			'high by any one mark or an ejection fraction under 40 %; low from 50 % and 7 METs without a mark; else moderate',
+		range: 'AACVPR line; what was not measured is never low',
+		source: 'PMC8006124, table 3',
+		address: 'https://www.ncbi.nlm.nih.gov/pmc/articles/PMC8006124/',
+		status: 'published'
+	},
+	{
+		name: 'Three-ball spirometer',
+		formula: 'flow of the highest ball (600, 900, 1200 mL/s) x seconds',
+		range: 'An estimate: the marks are flows, and a bench test found more at each',
+		source: 'Instructions for incentive spirometers (world.physio congress); 900 mL/s from a leaflet',
+		address: null,
+		status: 'published'
+	},
+	{
+		name: 'Corridor',
+		formula: 'laps x twice the length; speed is distance / minutes; METs by the walking equation',
+		range: '50 to 100 m/min; most ward walks are slower, and are marked',
+		source: ACSM,
+		address: ACSM_ADDRESS,
+		status: 'published'
 	}
 ];

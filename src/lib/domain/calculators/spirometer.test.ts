@@ -1,5 +1,5 @@
 import { expect, it } from 'vitest';
-import { breathesTooOften, breathEstimateMl, capacityTooSmall } from './spirometer';
+import { BALL_FLOWS_ML_PER_S, breathesTooOften, breathEstimateMl, capacityTooSmall } from './spirometer';
 
 /** Flows: published instructions (600 and 1200 mL/s) and a leaflet (900); volume is flow times seconds. */
 it.each([
@@ -26,4 +26,9 @@ it.each([
 	[800, false]
 ])('a vital capacity of %d mL at 80 kg is too small: %s', (capacity, expected) => {
 	expect(capacityTooSmall(capacity, 80)).toBe(expected);
+});
+
+// 600 and 1200 mL/s: world.physio congress abstract; 900: a leaflet. The marks are flows, and not volumes.
+it('the balls rise at 36, 54 and 72 L/min', () => {
+	expect(BALL_FLOWS_ML_PER_S.map((flow) => (flow * 60) / 1000)).toEqual([36, 54, 72]);
 });

@@ -34,6 +34,11 @@ const SYMPTOM_TABLE: Readonly<Record<SymptomCode, SymptomEntry>> = {
 	nausea: { word: 'nausea', grade: 'caution', source: 'common-practice' }
 };
 
+/** True for a symptom that stops by itself, whatever its grade. */
+export function symptomStops(code: SymptomCode): boolean {
+	return SYMPTOM_TABLE[code].grade === 'stop';
+}
+
 export const symptomRule: Rule = {
 	id: 'symptom',
 	words:
