@@ -26,6 +26,7 @@ export const routes = {
 	cover: () => '/cover',
 	rules: (unitId?: string) => (unitId ? `/rules?unit=${unitId}` : '/rules'),
 	account: () => '/account',
+	level: (episodeId: string) => `/patients/${episodeId}/level`,
 	patientLimits: (episodeId: string) => `/patients/${episodeId}/limits`,
 	adminLimits: (unitId?: string) => (unitId ? `/admin/limits?unit=${unitId}` : '/admin/limits'),
 	adminAccounts: () => '/admin/accounts',

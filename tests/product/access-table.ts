@@ -46,6 +46,11 @@ export const API: Record<string, Row> = {
 	'GET /api/units/[id]/limits': { roles: 'signed-in', answers: [404] },
 	'POST /api/units/[id]/limits': { roles: ['admin'], answers: [422] },
 	'POST /api/units/[id]/limit-set': { roles: ['admin'], answers: [422] },
+	'GET /api/episodes/[id]/level': { roles: CLINICAL, answers: [404] },
+	'POST /api/episodes/[id]/level': { roles: ['therapist', 'physician'], answers: [422] },
+	// Whoever signs is senior beside their role; the demonstration's therapist is.
+	'POST /api/sign-offs/[id]/sign': { roles: ['therapist', 'physician', 'surgeon'], answers: [404] },
+	'POST /api/sign-offs/[id]/refuse': { roles: ['therapist', 'physician', 'surgeon'], answers: [422] },
 	'GET /api/episodes/[id]/limits': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/limits': { roles: ['physician', 'surgeon'], answers: [422] },
 	'POST /api/limits/[id]/end': { roles: ['physician', 'surgeon'], answers: [404] },

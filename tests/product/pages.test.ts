@@ -28,6 +28,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/patients/[id]/clearances': SEEING,
 	'/patients/[id]/clearances/[clearanceId]': SEEING,
 	'/patients/[id]/sessions': CLINICAL,
+	'/patients/[id]/level': CLINICAL,
 	'/patients/[id]/limits': CLINICAL,
 	'/patients/[id]/visits': SEEING,
 	'/patients/[id]/escalate': CLINICAL,

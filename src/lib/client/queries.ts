@@ -4,6 +4,7 @@ import type { ClearanceView } from '$lib/domain/clearances/views';
 import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import { MINUTE } from '$lib/domain/core/time';
 import type { Alarm, EscalationView } from '$lib/domain/escalations/views';
+import type { LevelView } from '$lib/domain/levels/views';
 import type { PatientLimitLine } from '$lib/domain/limits/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
@@ -49,6 +50,8 @@ export const queries = {
 		...query(['thread', id], `/api/threads/${id}`, initial),
 		queryFn: () => wholeThread(id)
 	}),
+	level: (episodeId: string, initial: LevelView) =>
+		query(['episode', episodeId, 'level'], `/api/episodes/${episodeId}/level`, initial),
 	/** Below the episode's key, because whatever changes the episode's limits is an event of the episode. */
 	patientLimits: (episodeId: string, initial: List<PatientLimitLine>) =>
 		query(['episode', episodeId, 'limits'], `/api/episodes/${episodeId}/limits`, initial),

@@ -22,7 +22,7 @@ export async function frameOf(context: PersonContext, cursor: number) {
 		read.alarms(context)
 	]);
 	return {
-		user: { id: actor.id, name: actor.name, role: actor.role },
+		user: { id: actor.id, name: actor.name, role: actor.role, senior: actor.senior ?? false },
 		units,
 		cover,
 		looseEnds,

@@ -8,6 +8,7 @@ import { listEpisodes } from './episodes/list';
 import { alarmsOf } from './escalations/alarms';
 import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
+import { getLevel } from './levels/queries';
 import { listActivities } from './limits/activities';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
 import { looseEndsOf } from './loose-ends/queries';
@@ -28,6 +29,7 @@ export const read = {
 	colleagues: ({ actor }: PersonContext, episodeId: string) => listColleagues(db(), actor, episodeId),
 	clearance: ({ actor, now }: PersonContext, id: string) => getClearance(db(), actor, id, now),
 	sessions: ({ actor }: PersonContext, episodeId: string) => listSessions(db(), actor, episodeId),
+	level: ({ actor }: PersonContext, episodeId: string) => getLevel(db(), actor, episodeId),
 	activities: (unitId: string | null) => listActivities(db(), unitId),
 	unitLimits: (unitId: string) => unitLimitsOf(db(), unitId),
 	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>

@@ -41,6 +41,8 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 				href: placeOf(end) ?? routes.looseEnds(),
 				deed: `/api/referrals/${id}/accept`
 			};
+		case 'sign-off':
+			return open(m.home_step_sign(), episodeId ? routes.level(episodeId) : routes.looseEnds());
 		case 'mention':
 			return open(m.home_step_answer(), placeOf(end) ?? routes.looseEnds());
 		case 'visit-unconfirmed':
@@ -75,6 +77,7 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 		case 'visit-unconfirmed':
 		case 'message-failed':
 		case 'inbound':
+		case 'sign-off':
 			return null;
 	}
 }

@@ -47,6 +47,7 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'clearance':
+		case 'sign-off':
 			return m.home_asker_asks({ name });
 		case 'referral':
 			return end.priority === null

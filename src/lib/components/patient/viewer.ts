@@ -2,7 +2,7 @@ import type { Person } from '$lib/domain/access/actor';
 import type { Role } from '$lib/domain/core/codes';
 
 interface Frame {
-	user: { id: string; name: string; role: Role };
+	user: { id: string; name: string; role: Role; senior?: boolean };
 	units: readonly { id: string }[];
 }
 

@@ -8,6 +8,7 @@ export const AUDIT_ACTIONS = [
 	'account.signed-in',
 	'account.sign-in-failed',
 	'account.signed-out',
+	'account.senior-set',
 	'account.token-made',
 	'account.token-revoked',
 	'account.units-set',

@@ -4,6 +4,7 @@
  * Physicians and surgeons answer for themselves. Common practice, no published source.
  */
 import type { Person } from '../access/actor';
+import type { Role } from '../core/codes';
 
 export const SIGN_OFF_KINDS = ['level', 'dose'] as const;
 export type SignOffKind = (typeof SIGN_OFF_KINDS)[number];
@@ -16,3 +17,6 @@ export type SignOffState = (typeof SIGN_OFF_STATES)[number];
 export function isSenior({ role, senior }: Pick<Person, 'role' | 'senior'>): boolean {
 	return role === 'physician' || role === 'surgeon' || senior === true;
 }
+
+/** The roles whose accounts are marked: physicians and surgeons need no mark, others treat nobody. */
+export const MAY_BE_SENIOR = ['therapist', 'speech-therapist', 'nurse'] as const satisfies readonly Role[];

@@ -12,6 +12,7 @@ export const LOOSE_END_KINDS = [
 	'clearance',
 	'referral',
 	'mention',
+	'sign-off',
 	'visit-cancelled',
 	'visit-unconfirmed',
 	'message-failed',
@@ -96,6 +97,9 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return (
 				asked ?? (can(person, 'referral.answer', { ...unit, service: thing.code as Service }) ? 'mine' : null)
 			);
+		case 'sign-off':
+			// A physician may sign as well, but it is put to the seniors of the trade.
+			return asked ?? (person.senior === true && can(person, 'sign-off.decide', unit) ? 'mine' : null);
 		case 'mention':
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'visit-cancelled':

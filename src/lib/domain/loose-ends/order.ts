@@ -43,6 +43,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 			return FIRST_RANK.physician;
 		case 'clearance':
 		case 'mention':
+		case 'sign-off':
 		case 'referral':
 			return FIRST_RANK.asks + BY_PRIORITY[priority ?? 'soon'];
 		case 'message-failed':

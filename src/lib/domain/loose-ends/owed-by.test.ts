@@ -18,6 +18,7 @@ describe('owedBy', () => {
 		['clearance', 'oral-intake', null, 'therapy'],
 		['referral', 'physiotherapy', null, 'therapy'],
 		['referral', 'speech-therapy', null, 'therapy'],
+		['sign-off', 'dose', null, 'therapy'],
 		['mention', 'nurse', null, 'nursing'],
 		['mention', 'surgeon', null, 'medical'],
 		['mention', 'coordinator', null, 'patient'],
@@ -46,6 +47,7 @@ describe('rolesAsked', () => {
 		['clearance', 'oral-intake', ['surgeon', 'speech-therapist']],
 		['referral', 'physiotherapy', ['therapist']],
 		['referral', 'speech-therapy', ['speech-therapist']],
+		['sign-off', 'level', ['therapist']],
 		['inbound', 'other', ['coordinator']]
 	] as const)('%s of %s waits on %j', (kind, code, roles) => {
 		expect(rolesAsked({ kind, code })).toEqual(roles);

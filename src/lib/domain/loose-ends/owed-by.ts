@@ -32,6 +32,7 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'clearance':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
 		case 'referral':
+		case 'sign-off':
 			return 'therapy';
 		case 'mention':
 			return STRAND_OF_ROLE[code as ClinicalRole] ?? 'patient';
@@ -59,6 +60,8 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'message-failed':
 		case 'inbound':
 			return ['coordinator'];
+		case 'sign-off':
+			return ['therapist'];
 		case 'mention':
 		case 'escalation-taken':
 		case 'arrival':

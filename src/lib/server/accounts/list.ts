@@ -13,6 +13,7 @@ export interface AccountLine {
 	email: string;
 	role: Role;
 	phone: string | null;
+	senior: boolean;
 	unitIds: string[];
 	createdAt: number;
 	disabledAt: number | null;

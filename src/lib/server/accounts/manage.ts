@@ -4,6 +4,7 @@ import type { createAccountBody, createUnitBody } from '$lib/domain/accounts/for
 import type { AuditAction } from '$lib/domain/audit/actions';
 import type { Role } from '$lib/domain/core/codes';
 import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
+import { MAY_BE_SENIOR } from '$lib/domain/bedside/sign-off';
 import { PhoneError, normalisePhone } from '$lib/domain/messages/phone';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
@@ -105,6 +106,18 @@ export function setUnits(context: PersonContext, userId: string, unitIds: string
 		await tx.delete(userUnits).where(eq(userUnits.userId, userId));
 		await insertMemberships(tx, userId, unitIds);
 		return changed('account.units-set', 'units-set', userId, { units: unitIds.length });
+	});
+}
+
+/** Mark somebody as senior, or no longer: it counts from their next request on. */
+export function setSenior(context: PersonContext, userId: string, senior: boolean): Made {
+	return write(context, 'account.manage', async (tx) => {
+		const { role } = await accountById(tx, userId);
+		if (!MAY_BE_SENIOR.some((each) => each === role)) {
+			throw new Problem('wrong-state', `The role ${role} is not marked as senior.`, { state: role });
+		}
+		await tx.update(users).set({ senior }).where(eq(users.id, userId));
+		return changed('account.senior-set', 'senior-set', userId, { senior: senior ? 1 : 0 });
 	});
 }
 

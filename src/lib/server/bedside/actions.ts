@@ -17,6 +17,7 @@ import type { Tx } from '../db';
 import { bedsideSessions, episodes, escalations, findings, readings } from '../db/schema';
 import { factsOfOne, type EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
+import { askForSignature } from '../levels/sign-off';
 import { layersOf } from '../limits/queries';
 import { write, type Change, type Written } from '../write';
 import { summaryText } from './summary';
@@ -47,6 +48,7 @@ export function recordSession(
 		const id = newId();
 		await insertSession(tx, context, id, episode, facts, { ...input, context: judged.context }, verdict);
 		await updateEpisode(tx, context, episode, input, verdict);
+		await askForSignature(tx, context, episode, id, input);
 		const asks = await askForDeviations(tx, context, episode, facts, missing, input);
 		return consequences(tx, episode, id, input, verdict, asks);
 	});

@@ -21,6 +21,7 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		clearancesAsked,
 		referralsAsked,
 		questionsOpen,
+		signOffsAsked,
 		visitsCancelled(now),
 		visitsUnconfirmed(now),
 		messagesFailed,
@@ -113,6 +114,15 @@ const referralsAsked = sql`
 	join place on place.id = r.episode_id
 	join users asker on asker.id = r.asked_by
 	where r.state = 'asked'`;
+
+/** What a junior did or proposes beyond the cautious figure, until a senior has signed for it or said no. */
+const signOffsAsked = sql`
+	select 'sign-off', s.id, ${PLACE}, null, null, s.kind, s.words, s.asked_by, asker.name,
+		null, null, s.asked_at, null, null
+	from sign_offs s
+	join place on place.id = s.episode_id
+	join users asker on asker.id = s.asked_by
+	where s.state = 'asked'`;
 
 /** A question is closed when the one it was put to writes into the thread, or says that they have seen it. */
 const questionsOpen = sql`

@@ -23,6 +23,8 @@ export function titleOf(thing: OpenThing): string {
 			return m.home_title_clearance({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'referral':
 			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service](), text });
+		case 'sign-off':
+			return m.home_title_sign_off({ text });
 		case 'mention':
 			return m.home_title_mention({ text });
 		case 'visit-unconfirmed':

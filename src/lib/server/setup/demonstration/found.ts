@@ -10,7 +10,15 @@ import { write } from '../../write';
 import { markLoading } from '../mark';
 import type { Calendar } from './calendar';
 import { fillCover } from './cover';
-import { DEMO_PASSWORD, emailOf, PEOPLE, UNITS, type PersonKey, type UnitName } from './people';
+import {
+	DEMO_PASSWORD,
+	emailOf,
+	PEOPLE,
+	UNITS,
+	type DemoPerson,
+	type PersonKey,
+	type UnitName
+} from './people';
 
 /** The hospital before its first patient: identifiers and people by the names that the stories use. */
 export interface Found {
@@ -39,8 +47,8 @@ function newHospital(): Found {
 	const unitIds = UNITS.map(({ name }) => [name, newId()] as const);
 	const all = unitIds.map(([, id]) => id);
 	const people = PERSON_KEYS.map((key) => {
-		const { name, role } = PEOPLE[key];
-		return [key, { kind: 'person', id: newId(), name, role, unitIds: all }] as const;
+		const { name, role, senior = false }: DemoPerson = PEOPLE[key];
+		return [key, { kind: 'person', id: newId(), name, role, senior, unitIds: all }] as const;
 	});
 	return {
 		units: Object.fromEntries(unitIds) as Found['units'],
@@ -55,9 +63,10 @@ async function insertUnits(tx: Tx, found: Found): Promise<void> {
 
 async function insertPeople(tx: Tx, found: Found, hashes: string[], createdAt: number): Promise<void> {
 	const rows = PERSON_KEYS.map((key, index) => {
-		const { id, name, role } = found.people[key];
+		const { id, name, role, senior = false } = found.people[key];
+		const { phone } = PEOPLE[key];
 		const passwordHash = hashes[index] ?? null;
-		return { id, name, role, email: emailOf(key), phone: PEOPLE[key].phone, passwordHash, createdAt };
+		return { id, name, role, email: emailOf(key), phone, senior, passwordHash, createdAt };
 	});
 	await tx.insert(users).values(rows);
 	const memberships = rows.flatMap(({ id }) =>

@@ -15,12 +15,14 @@ export const UNITS = [
 ] as const satisfies readonly DemoUnit[];
 export type UnitName = (typeof UNITS)[number]['name'];
 
-interface DemoPerson {
+export interface DemoPerson {
 	/** The part of the address before `@saltmarsh.example`. */
 	signIn: string;
 	name: string;
 	role: Role;
 	phone: string;
+	/** Goes beyond the cautious figure, and signs for juniors. */
+	senior?: boolean;
 }
 
 /** The invented staff. The first eight are named in the README and on the front page. */
@@ -29,14 +31,26 @@ export const PEOPLE = {
 	physician: { signIn: 'physician', name: 'Marta Lisowska', role: 'physician', phone: '+353861000002' },
 	nurse: { signIn: 'nurse', name: 'Rona Ferris', role: 'nurse', phone: '+353861000003' },
 	nurse2: { signIn: 'nurse2', name: 'Desmond Quaye', role: 'nurse', phone: '+353861000004' },
-	therapist: { signIn: 'therapist', name: 'Ivo Aldous', role: 'therapist', phone: '+353861000005' },
+	therapist: {
+		signIn: 'therapist',
+		name: 'Ivo Aldous',
+		role: 'therapist',
+		phone: '+353861000005',
+		senior: true
+	},
 	speech: { signIn: 'speech', name: 'Noor Brandreth', role: 'speech-therapist', phone: '+353861000006' },
 	coordinator: { signIn: 'coordinator', name: 'Petra Sandoval', role: 'coordinator', phone: '+353861000007' },
 	admin: { signIn: 'admin', name: 'Lorcan Whitby', role: 'admin', phone: '+353861000008' },
 	surgeon2: { signIn: 'anselm.okoro', name: 'Anselm Okoro', role: 'surgeon', phone: '+353861000009' },
 	physician2: { signIn: 'judit.hale', name: 'Judit Hale', role: 'physician', phone: '+353861000010' },
 	nurse3: { signIn: 'bram.tolliver', name: 'Bram Tolliver', role: 'nurse', phone: '+353861000011' },
-	therapist2: { signIn: 'sefa.moran', name: 'Sefa Moran', role: 'therapist', phone: '+353861000012' }
+	therapist2: {
+		signIn: 'sefa.moran',
+		name: 'Sefa Moran',
+		role: 'therapist',
+		phone: '+353861000012',
+		senior: true
+	}
 } as const satisfies Record<string, DemoPerson>;
 export type PersonKey = keyof typeof PEOPLE;
 

@@ -4,7 +4,7 @@ import { idForm, setUnitsForm } from '$lib/domain/accounts/forms';
 import { notFound } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
 import { listAccounts } from '$lib/server/accounts/list';
-import { disableAccount, enableAccount, inviteAgain, setUnits } from '$lib/server/accounts/manage';
+import { disableAccount, enableAccount, inviteAgain, setSenior, setUnits } from '$lib/server/accounts/manage';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
@@ -25,7 +25,13 @@ export const load: PageServerLoad = (event) =>
 			units: await superValidate<{ units: string[] }, string>({ units: unitIds }, zod4(setUnitsForm), {
 				id: 'units'
 			}),
-			keys: { units: newFormKey(), invite: newFormKey(), disable: newFormKey(), enable: newFormKey() }
+			keys: {
+				units: newFormKey(),
+				invite: newFormKey(),
+				senior: newFormKey(),
+				disable: newFormKey(),
+				enable: newFormKey()
+			}
 		};
 	});
 
@@ -36,6 +42,14 @@ export const actions: Actions = {
 		async run(context, { units }, event) {
 			await setUnits(context, idParam(event), units);
 			return m.account_units_set();
+		}
+	}),
+	senior: formAction({
+		id: 'row',
+		schema: idForm,
+		async run(context, { id }, event) {
+			await setSenior(context, idParam(event), id === 'yes');
+			return m.levels_senior_done();
 		}
 	}),
 	invite: formAction({

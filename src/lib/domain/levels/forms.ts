@@ -1,0 +1,18 @@
+/** The bodies and forms by which a level is decided and a sign-off is given. */
+import { z } from 'zod';
+import { LEVELS } from '../core/codes';
+import { reason } from '../core/fields';
+
+const level = z.literal([...LEVELS], 'to is a whole number from 1 to 6.');
+
+/** Move a patient to a level. Against the advice of the last session a reason is needed. */
+export const decideLevelBody = z.strictObject({ to: level, reason: reason('reason').optional() });
+export type DecideLevel = z.output<typeof decideLevelBody>;
+
+/** The same as a form posts it: a level is chosen as a word. */
+export const decideLevelForm = z.strictObject({
+	to: z.enum(['1', '2', '3', '4', '5', '6'], 'Choose a level from 1 to 6.'),
+	reason: z.string().trim().max(1000, 'reason has at most 1000 characters.').default('')
+});
+
+export const refuseSignOffBody = z.strictObject({ reason: reason('reason') });
