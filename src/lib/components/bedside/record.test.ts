@@ -76,8 +76,9 @@ describe('recordOf', () => {
 	});
 
 	it('keeps the precautions where no operation is on record, and drops them where they were ended', () => {
-		const ended = { sternal: false, endDue: null, maxElevationDeg: null };
-		expect(recordOf({ ...BOARD, operatedAt: null, precautions: ended }, TODAY).sternotomy).toBe(true);
+		const ended = { basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null } as const;
+		const none = { ...ended, basis: 'none' } as const;
+		expect(recordOf({ ...BOARD, operatedAt: null, precautions: none }, TODAY).sternotomy).toBe(true);
 		expect(recordOf({ ...BOARD, precautions: ended }, TODAY).sternotomy).toBe(false);
 	});
 
