@@ -28,6 +28,8 @@ export const routes = {
 	account: () => '/account',
 	level: (episodeId: string) => `/patients/${episodeId}/level`,
 	patientLimits: (episodeId: string) => `/patients/${episodeId}/limits`,
+	adminActivities: (unitId: string, code: string) =>
+		`/admin/limits/activities?unit=${unitId}&activity=${code}`,
 	adminLimits: (unitId?: string) => (unitId ? `/admin/limits?unit=${unitId}` : '/admin/limits'),
 	adminAccounts: () => '/admin/accounts',
 	adminAccount: (id: string) => `/admin/accounts/${id}`,

@@ -45,6 +45,7 @@ export const API: Record<string, Row> = {
 	},
 	'GET /api/units/[id]/limits': { roles: 'signed-in', answers: [404] },
 	'POST /api/units/[id]/limits': { roles: ['admin'], answers: [422] },
+	'POST /api/units/[id]/activities': { roles: ['admin'], answers: [422] },
 	'POST /api/units/[id]/limit-set': { roles: ['admin'], answers: [422] },
 	'GET /api/episodes/[id]/level': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/level': { roles: ['therapist', 'physician'], answers: [422] },

@@ -19,6 +19,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/rules': EVERYBODY,
 	'/account': EVERYBODY,
 	'/admin/limits': ['admin'],
+	'/admin/limits/activities': ['admin'],
 	'/admin/accounts': ['admin'],
 	'/admin/accounts/[id]': ['admin'],
 	'/patients/[id]': SEEING,

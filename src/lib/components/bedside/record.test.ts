@@ -20,16 +20,25 @@ const LINE: ClearanceLine = {
 
 const BOARD: Pick<
 	Nameboard,
-	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances' | 'limits'
+	| 'level'
+	| 'phase'
+	| 'betaBlocked'
+	| 'rhythm'
+	| 'operatedAt'
+	| 'precautions'
+	| 'clearances'
+	| 'limits'
+	| 'wordings'
 > = {
 	level: 4,
 	phase: 'inpatient',
 	betaBlocked: true,
 	rhythm: 'sinus',
 	operatedAt: '2026-02-27T08:00:00Z',
-	precautions: { sternal: true, endDue: '2026-04-24', maxElevationDeg: 90 },
+	precautions: { basis: 'performed', sternal: true, endDue: '2026-04-24', maxElevationDeg: 90 },
 	clearances: [LINE],
-	limits: { unit: [], patient: [] }
+	limits: { unit: [], patient: [] },
+	wordings: []
 };
 
 const TODAY = '2026-03-03';

@@ -1,4 +1,5 @@
 import type { ClearanceInForce, LimitSet, Phase } from '$lib/domain/bedside';
+import type { LocalActivity } from '$lib/domain/bedside/activities/local';
 import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
 import { isInForce } from '$lib/domain/clearances/states';
 import { CLEARANCE_KINDS, LEVELS, type ClearanceKind, type Level, type Rhythm } from '$lib/domain/core/codes';
@@ -15,11 +16,21 @@ export interface BedsideRecord {
 	clearances: ClearanceInForce[];
 	/** The limits of unit and patient that judge, as they are when the record is read. */
 	limits: LimitSet;
+	/** What the unit says about activities in place of the catalogue. */
+	wordings: readonly LocalActivity[];
 }
 
 type Known = Pick<
 	Nameboard,
-	'level' | 'phase' | 'betaBlocked' | 'rhythm' | 'operatedAt' | 'precautions' | 'clearances' | 'limits'
+	| 'level'
+	| 'phase'
+	| 'betaBlocked'
+	| 'rhythm'
+	| 'operatedAt'
+	| 'precautions'
+	| 'clearances'
+	| 'limits'
+	| 'wordings'
 >;
 
 /**
@@ -33,6 +44,7 @@ export function recordOf(board: Known, today: LocalDate): BedsideRecord {
 		phase: board.phase,
 		betaBlocked: board.betaBlocked,
 		rhythm: board.rhythm,
+		wordings: board.wordings,
 		limits: limitsOfPatient(setOfUnit(board.limits.unit, board.phase), board.limits),
 		sternotomy: board.operatedAt === null || board.precautions.sternal,
 		clearances: CLEARANCE_KINDS.flatMap((kind) => {

@@ -11,7 +11,8 @@ export const RECORD: BedsideRecord = {
 	rhythm: 'sinus',
 	sternotomy: true,
 	clearances: [],
-	limits: limitsFor('strict')
+	limits: limitsFor('strict'),
+	wordings: []
 };
 
 /** A reading with these texts. */

@@ -9,6 +9,7 @@ import type {
 	VisitState
 } from '../core/codes';
 import type { ClearanceLimits } from '../clearances/forms';
+import type { LocalActivity } from '../bedside/activities/local';
 import type { LocalLayers } from '../bedside/limits/layers';
 import type { MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
@@ -97,6 +98,8 @@ export interface Nameboard {
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;
 	precautions: Precautions;
+	/** What the unit says about activities in place of the catalogue. */
+	wordings: LocalActivity[];
 	/** What lies over the default limits for this patient; empty for who may not see sessions. */
 	limits: LocalLayers;
 	referrals: {

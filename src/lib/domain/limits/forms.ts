@@ -1,5 +1,6 @@
 /** The bodies and forms by which limits are changed. Each message names field, value and what is allowed. */
 import { z } from 'zod';
+import { ACTIVITY_CODES } from '../bedside/activities/codes';
 import { LIMIT_KEYS, SETS } from '../bedside/codes';
 import { reason, text } from '../core/fields';
 
@@ -35,3 +36,57 @@ export type SetPatientLimit = z.output<typeof setPatientLimitBody>;
 /** The same as forms post them: a number that is not typed is missing, never nought. */
 export const changeUnitLimitForm = changeUnitLimitBody.extend({ value: value.optional() });
 export const setPatientLimitForm = setPatientLimitBody.extend({ value: value.optional() });
+
+/** A span of a dose: from and to, both included. */
+const span = (name: string, max: number) =>
+	z
+		.tuple([z.number(), z.number()], `${name} is two numbers, from and to.`)
+		.refine(([from, to]) => from > 0 && from <= to && to <= max, {
+			error: `${name} must run from more than 0 to at most ${max}, and not end below its start.`
+		})
+		.nullable();
+
+const lines = (name: string) =>
+	z
+		.array(text(name, 200), `${name} is a list of lines.`)
+		.min(1, `${name} is empty.`)
+		.max(8, `${name} has at most 8 lines.`);
+
+/** What a unit says about an activity: null goes back to the catalogue. */
+export const wordActivityBody = z.strictObject({
+	code: z.enum(ACTIVITY_CODES, 'code is no activity of the catalogue.'),
+	lines: z
+		.strictObject({
+			dose: z.strictObject({
+				minutes: span('minutes', 240),
+				repetitions: span('repetitions', 500),
+				timesADay: span('timesADay', 24),
+				words: text('words', 200)
+			}),
+			howTo: lines('howTo'),
+			watch: lines('watch'),
+			never: lines('never')
+		})
+		.nullable(),
+	...agreed
+});
+export type WordActivity = z.output<typeof wordActivityBody>;
+
+/** The same as a form posts it: lines as rows of a text, a span as two numbers that may both be empty. */
+export const wordActivityForm = z.strictObject({
+	code: wordActivityBody.shape.code,
+	words: text('words', 200),
+	minutesFrom: z.number().optional(),
+	minutesTo: z.number().optional(),
+	repetitionsFrom: z.number().optional(),
+	repetitionsTo: z.number().optional(),
+	timesADayFrom: z.number().optional(),
+	timesADayTo: z.number().optional(),
+	howTo: text('howTo', 1600),
+	watch: text('watch', 1600),
+	never: text('never', 1600),
+	...agreed
+});
+export type WordActivityFields = z.output<typeof wordActivityForm>;
+
+export const resetActivityForm = z.strictObject({ code: wordActivityBody.shape.code, ...agreed });

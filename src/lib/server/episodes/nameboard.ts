@@ -8,6 +8,7 @@ import { accessEpisode, type EpisodeRow } from '../access/access';
 import { listClearances } from '../clearances/queries';
 import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
+import { wordingsOf } from '../limits/activities';
 import { layersOf } from '../limits/queries';
 import { visitsOfEpisode } from '../visits/queries';
 import { factsOfOne, levelsDecide } from './facts';
@@ -23,13 +24,14 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, visits, calls, layers] = await Promise.all([
+	const [who, asks, cleared, visits, calls, layers, wordings] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
 		listClearances(db, episodeId, derived.operation?.id ?? null, now),
 		visitsOfEpisode(db, episodeId),
 		clinical ? escalationsOf(db, episodeId) : [],
-		clinical ? layersOf(db, episode, now) : NO_LAYERS
+		clinical ? layersOf(db, episode, now) : NO_LAYERS,
+		clinical ? wordingsOf(db, episode.unitId) : []
 	]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
@@ -55,6 +57,7 @@ export async function getNameboard(
 		mayDoNow: levelsDecide(episode, derived) ? derived.mayDoNow : null,
 		precautions: derived.precautions,
 		levelReached: Math.max(episode.level, episode.levelReached),
+		wordings,
 		limits: layers,
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),

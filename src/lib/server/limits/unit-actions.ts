@@ -94,7 +94,7 @@ async function changed(
 }
 
 /** Whoever has a patient of the unit open is judging by limits that no longer hold. */
-async function patientsOf(tx: Tx, unitId: string): Promise<LiveEvent[]> {
+export async function patientsOf(tx: Tx, unitId: string): Promise<LiveEvent[]> {
 	const open = await tx
 		.select({ id: episodes.id })
 		.from(episodes)
@@ -102,7 +102,8 @@ async function patientsOf(tx: Tx, unitId: string): Promise<LiveEvent[]> {
 	return open.map(({ id }) => ({ topic: 'episode', kind: 'limits-changed', id, episodeId: id }));
 }
 
-function refuseFutureDay(agreedOn: string, now: number): void {
+/** What was agreed was agreed on a day that has come. */
+export function refuseFutureDay(agreedOn: string, now: number): void {
 	const today = localDateOf(now, env().hospital.zone);
 	if (agreedOn > today) {
 		throw invalidField('/agreedOn', `agreedOn is ${agreedOn}: it must not lie after today, ${today}.`);

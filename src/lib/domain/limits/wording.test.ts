@@ -1,0 +1,64 @@
+import { describe, expect, it } from 'vitest';
+import { ACTIVITIES, activityByCode } from '../bedside/activities/activities';
+import { activitiesOf, worded } from '../bedside/activities/local';
+import { wordActivityBody } from './forms';
+import { fieldsOfLines, linesOfFields } from './wording';
+
+const AGREED = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-02-02' };
+
+describe('the form of an activity', () => {
+	it.each(ACTIVITIES.map((activity) => [activity.code, activity] as const))(
+		'%s comes back from it as it went in, and is accepted',
+		(code, { dose, howTo, watch, never }) => {
+			const lines = linesOfFields(fieldsOfLines({ dose, howTo, watch, never }));
+			expect(lines).toEqual({ dose, howTo, watch, never });
+			expect(wordActivityBody.safeParse({ code, lines, ...AGREED }).success).toBe(true);
+		}
+	);
+
+	const fields = fieldsOfLines(activityByCode('hall-walk'));
+
+	it('takes one end alone for one figure, and drops empty rows', () => {
+		const lines = linesOfFields({ ...fields, minutesTo: undefined, watch: ' Pulse. \n\n' });
+		expect([lines.dose.minutes, lines.watch]).toEqual([[5, 5], ['Pulse.']]);
+	});
+
+	it.each([
+		[{ minutesFrom: 0 }, 'minutes must run from more than 0 to at most 240'],
+		[{ minutesFrom: 8, minutesTo: 7 }, 'not end below its start'],
+		[{ minutesTo: 241 }, 'at most 240'],
+		[{ timesADayTo: 25 }, 'timesADay must run from more than 0 to at most 24'],
+		[{ never: ' \n ' }, 'never is empty']
+	])('refuses %j', (change, message) => {
+		const lines = linesOfFields({ ...fields, ...change });
+		const found = wordActivityBody.safeParse({ code: 'hall-walk', lines, ...AGREED });
+		expect(found.error?.issues.map((issue) => issue.message).join()).toContain(message);
+	});
+});
+
+describe('the words of a unit', () => {
+	const lines = { ...linesOfFields(fieldsOfLines(activityByCode('hall-walk'))), howTo: ['Slowly.'] };
+	const change = (version: number, over = {}) => ({
+		code: 'hall-walk' as const,
+		lines,
+		version,
+		...AGREED,
+		...over
+	});
+
+	it('take the place of the catalogue’s, are common practice, and open no gate', () => {
+		const entry = worded(activityByCode('hall-walk'), [change(1)]);
+		expect(entry).toMatchObject({ howTo: ['Slowly.'], source: 'common-practice', local: { version: 1 } });
+		const { level, mets, clearance, heldBy, walking } = activityByCode('hall-walk');
+		expect(entry).toMatchObject({ level, mets, clearance, heldBy, walking });
+	});
+
+	it('the newest counts, and null goes back to the catalogue', () => {
+		const entry = worded(activityByCode('hall-walk'), [change(2, { lines: null }), change(1)]);
+		expect(entry).toMatchObject({ howTo: activityByCode('hall-walk').howTo, local: null });
+	});
+
+	it('of one activity leave the others alone', () => {
+		expect(activitiesOf([change(1)]).filter(({ local }) => local !== null)).toHaveLength(1);
+	});
+});
