@@ -41,6 +41,18 @@ describe('adviseLevel', () => {
 		expect(reasons.find(({ words }) => words.startsWith('The systolic pressure rose'))?.weight).toBe(weight);
 	});
 
+	it.each([0, -4])('says of a systolic rise of %d that it did not rise', (rise) => {
+		const reading = { ...REST, sbp: 120 + rise, rpe: 11 };
+		const { reasons } = advice(3, {
+			context: { set: 'guideline' },
+			during: [reading],
+			after: { sbp: 120 + rise }
+		});
+		expect(reasons.map(({ words }) => words).join()).toContain(
+			'The systolic pressure did not rise; 10 to 40'
+		);
+	});
+
 	it('says nothing about a pressure that was not measured', () => {
 		const { reasons } = advice(3, { before: { sbp: null } });
 		expect(reasons.filter(({ words }) => words.startsWith('The systolic pressure rose'))).toEqual([]);

@@ -94,7 +94,10 @@ function pressureReasons({ before, during, after }: Assessment): ProgressReason[
 	}
 	const rise = exact(Math.max(...peaks) - rest);
 	const { from, to } = PROGRESS_SYSTOLIC_RISE;
-	const course = `The systolic pressure rose by ${plain(rise)} mmHg at most`;
+	const course =
+		rise > 0
+			? `The systolic pressure rose by ${plain(rise)} mmHg at most`
+			: 'The systolic pressure did not rise';
 	if (rise > to) {
 		return [{ weight: 'against', words: `${course}; more than ${to} holds the level.` }];
 	}

@@ -9,9 +9,12 @@ const level = z.literal([...LEVELS], 'to is a whole number from 1 to 6.');
 export const decideLevelBody = z.strictObject({ to: level, reason: reason('reason').optional() });
 export type DecideLevel = z.output<typeof decideLevelBody>;
 
-/** The same as a form posts it: a level is chosen as a word. */
+/**
+ * The same as a form posts it. A text and no closed list: of a list the first member would be taken where nothing
+ * was chosen, and nobody means level 1 by pressing too early.
+ */
 export const decideLevelForm = z.strictObject({
-	to: z.enum(['1', '2', '3', '4', '5', '6'], 'Choose a level from 1 to 6.'),
+	to: z.string().regex(/^[1-6]$/, 'Choose a level from 1 to 6.'),
 	reason: z.string().trim().max(1000, 'reason has at most 1000 characters.').default('')
 });
 
