@@ -49,6 +49,7 @@ describe('doseFieldsOf', () => {
 		['stairs', ['steps']],
 		['chair-sitting', ['minutes']],
 		['ankle-pumps', ['repetitions']],
+		['incentive-spirometer', ['balls', 'repetitions']],
 		['self-feeding', []]
 	] as const)('%s asks for %j', (code, fields) => {
 		expect(doseFieldsOf(activityByCode(code))).toEqual(fields);

@@ -24,7 +24,10 @@ import { READING_FIELDS, valueOf, type ReadingField } from './fields';
 import type { BedsideRecord } from './record';
 
 /** How much of an activity is asked for: the height of arms, the length of a walk, else as its dose is given. */
-export function doseFieldsOf({ arms, stairs, walking, dose }: Activity): DoseField[] {
+export function doseFieldsOf({ code, arms, stairs, walking, dose }: Activity): DoseField[] {
+	if (code === 'incentive-spirometer') {
+		return ['balls', 'repetitions'];
+	}
 	if (arms) {
 		return ['elevationDeg', 'repetitions'];
 	}

@@ -24,7 +24,7 @@ export interface DraftReading {
 	at: number | null;
 }
 
-export const DOSE_FIELDS = ['elevationDeg', 'distanceM', 'minutes', 'repetitions', 'steps'] as const;
+export const DOSE_FIELDS = ['elevationDeg', 'distanceM', 'minutes', 'repetitions', 'steps', 'balls'] as const;
 export type DoseField = (typeof DOSE_FIELDS)[number];
 
 export interface DraftActivity {

@@ -31,7 +31,8 @@ export const DOSE_LABELS: Record<DoseField, () => string> = {
 	distanceM: m.bedside_dose_distance,
 	minutes: m.bedside_dose_minutes,
 	repetitions: m.bedside_dose_repetitions,
-	steps: m.bedside_dose_steps
+	steps: m.bedside_dose_steps,
+	balls: m.bedside_dose_balls
 };
 
 export const DOSE_UNITS: Record<DoseField, () => string> = {
@@ -39,7 +40,8 @@ export const DOSE_UNITS: Record<DoseField, () => string> = {
 	distanceM: m.bedside_unit_metres,
 	minutes: m.bedside_unit_minutes,
 	repetitions: m.bedside_unit_times,
-	steps: m.bedside_unit_steps
+	steps: m.bedside_unit_steps,
+	balls: m.bedside_unit_balls
 };
 
 export const MOMENT_LABELS: Record<Moment, () => string> = {

@@ -28,6 +28,7 @@ export const BOUNDS = {
 	minutes: { name: 'minutes', low: 0, high: 240, unit: 'min', confirm: [0, 60] },
 	repetitions: { name: 'repetitions', low: 0, high: 500, unit: 'times', confirm: [0, 60] },
 	distanceM: { name: 'distance', low: 0, high: 20_000, unit: 'm', confirm: [0, 2000] },
+	balls: { name: 'balls', low: 0, high: 3, unit: 'balls', confirm: null },
 	steps: { name: 'steps', low: 0, high: 1000, unit: 'steps', confirm: [0, 60] },
 	symptomGrade: { name: 'symptom grade', low: 1, high: 4, unit: '', confirm: null }
 } as const satisfies Record<string, Bound>;

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { z } from 'zod';
 import { BOUNDS } from './bounds';
-import { assessBody, contextSchema, readingSchema, sessionBody } from './forms';
+import { activityDoneSchema, assessBody, contextSchema, readingSchema, sessionBody } from './forms';
 
 const context = { betaBlocked: false, rhythm: 'sinus', sternotomy: true, level: 3, conscious: true };
 const body = { context, before: {}, during: [], after: {}, symptoms: [], activities: [] };
@@ -192,4 +192,19 @@ describe('the body to store', () => {
 it('can be described as JSON Schema, which the API description is made from', () => {
 	const described = z.toJSONSchema(sessionBody, { io: 'input' });
 	expect(described.required).toEqual(['context', 'startedAt', 'endedAt', 'level']);
+});
+
+// Three balls, halves allowed: the device of common practice.
+it.each([
+	[-0.5, false],
+	[0, true],
+	[1.5, true],
+	[3, true],
+	[3.5, false]
+])('%d balls are accepted: %s', (balls, accepted) => {
+	const found = activityDoneSchema.safeParse({ code: 'incentive-spirometer', balls });
+	expect(found.success).toBe(accepted);
+	expect(found.error?.issues[0]?.message ?? '').toBe(
+		accepted ? '' : `balls is ${balls}: it must be a number from 0 to 3 balls.`
+	);
 });

@@ -170,6 +170,8 @@ export const activityDoneSchema = z.object({
 	distanceM: bounded('distanceM').nullish(),
 	elevationDeg: bounded('elevationDeg').nullish(),
 	steps: bounded('steps').nullish(),
+	/** Balls of the spirometer held up, halves allowed. */
+	balls: bounded('balls').nullish(),
 	assistance: oneOf('assistance', ASSISTANCE).nullish(),
 	helper: z
 		.union([z.boolean(), z.string().trim().max(NAME_MAX)], {
