@@ -9,8 +9,9 @@ import { LEVEL_BANDS, LEVEL_BANDS_SOURCE } from '../bedside/levels';
 import { SOURCES, type SourceStatus } from '../bedside/limits/sources';
 import { DEFAULT_LIMITS, DEFAULTS_VERSION } from '../bedside/limits/table';
 import { rulebook, type RulebookRow } from '../bedside/rulebook';
+import { STERNAL_BANS } from '../bedside/sternum';
 import { CALCULATORS } from '../calculators/rulebook';
-import { CAUTIONS, CHECKS, HOW_TO_READ, OWN_FIGURES } from './lists';
+import { CAUTIONS, CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
 
 /** How well a source is known, in the words of the document. */
 export const STANDING: Record<SourceStatus, string> = {
@@ -35,6 +36,7 @@ export function clinicalDocument(): string {
 		section('The limits', table(['limit', ...SETS, 'unit', 'source'], rows.flatMap(limitCells))),
 		section('The levels', levels()),
 		section('The activities', activities()),
+		section('Sternal precautions', precautions()),
 		section('The calculators', calculators()),
 		section('The sources', sources()),
 		section('Check values', checks()),
@@ -112,6 +114,10 @@ function activities(): string {
 
 function clearanceOf({ clearance, heldBy }: Activity): string {
 	return clearance ? code(clearance) : heldBy ? `unless ${code(heldBy)} is held` : 'none';
+}
+
+function precautions(): string {
+	return [PRECAUTIONS_LEAD, bullets(STERNAL_BANS)].join('\n\n');
 }
 
 function calculators(): string {

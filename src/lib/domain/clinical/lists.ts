@@ -17,6 +17,10 @@ export const CAUTIONS: readonly string[] = [
 	'Sternal precautions end by a surgeon’s decision. A calendar clears nobody.'
 ];
 
+/** How long sternal precautions hold; what they forbid stands beside it. */
+export const PRECAUTIONS_LEAD =
+	'They begin with a sternotomy. Usual is 6 to 8 weeks; their end falls due for the surgeon’s decision after eight, and they never end by the calendar. Until then they forbid (common practice, advice differs between hospitals):';
+
 const stopping = SYMPTOMS.filter(symptomStops).join(', ');
 
 /** How the tables are to be read, a sentence or two for each point. */
