@@ -97,7 +97,8 @@ describe('append-only tables', () => {
 		'readings',
 		'unit_limit_changes',
 		'unit_activity_changes',
-		'level_decisions'
+		'level_decisions',
+		'wound_notes'
 	])('%s refuses update and delete', async (table) => {
 		const triggers = await db().all<{ name: string }>(
 			sql`select name from sqlite_master where type = 'trigger' and tbl_name = ${table}`

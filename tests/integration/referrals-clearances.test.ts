@@ -1,7 +1,5 @@
 import { eq } from 'drizzle-orm';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import type { SessionBody } from '$lib/domain/bedside/forms';
-import { recordSession } from '$lib/server/bedside/actions';
 import {
 	askClearance,
 	giveClearance,
@@ -257,82 +255,5 @@ describe('a clearance', () => {
 		const { id } = (await ask()).result;
 		const given = giveClearance(as('surgeon'), id, { reviewOn: '2026-03-02' });
 		await expect(given).rejects.toMatchObject({ extra: { errors: [{ pointer: '/reviewOn' }] } });
-	});
-});
-
-describe('a bedside session', () => {
-	const session = (more: Partial<SessionBody> = {}): SessionBody => ({
-		context: {
-			betaBlocked: true,
-			rhythm: 'sinus',
-			sternotomy: true,
-			level: 5,
-			conscious: true,
-			followsCommands: true
-		},
-		before: { hr: 76, sbp: 128, dbp: 74, spo2: 96 },
-		during: [],
-		after: { hr: 86, sbp: 108, dbp: 66, spo2: 95 },
-		symptoms: [],
-		activities: [],
-		startedAt: '2026-03-03T08:30:00Z',
-		endedAt: '2026-03-03T08:50:00Z',
-		level: 5,
-		...more
-	});
-	const arms = { activities: [{ code: 'arm-exercise' as const, elevationDeg: 90 }] };
-
-	it('is judged and stored with its findings, and told in the thread', async () => {
-		const { threadId } = await referred();
-		const { result } = await recordSession(as('therapist'), episodeId, session());
-		expect(result.outcome).toBe('stop');
-		expect(result.findings).toContainEqual(
-			expect.objectContaining({ rule: 'systolic-fall', grade: 'stop', measured: 20, limit: 10 })
-		);
-		const thread = await getThread(db(), hospital.people.nurse, threadId, ALL);
-		expect(thread.items.at(-1)).toMatchObject({ kind: 'session', ref: { kind: 'session', id: result.id } });
-		expect(thread.items.at(-1)?.body).toContain('128/74');
-	});
-
-	it('is judged by the limits on record, whatever the client sends', async () => {
-		const believing = session();
-		believing.context.limits = { 'systolic-fall': 40 };
-		const { result } = await recordSession(as('therapist'), episodeId, believing);
-		expect(result.findings).toContainEqual(expect.objectContaining({ rule: 'systolic-fall', limit: 10 }));
-	});
-
-	it('with arm exercise needs the arm stage on record, whatever the client believes', async () => {
-		const believing = session(arms);
-		believing.context.clearances = ['arm-stage'];
-		await expect(recordSession(as('therapist'), episodeId, believing)).rejects.toMatchObject({
-			code: 'clearance-needed',
-			status: 409,
-			extra: { needed: ['arm-stage'] }
-		});
-	});
-
-	it('is recorded as a deviation with its reason, and the decider owes an answer', async () => {
-		await referred();
-		const deviation = { reason: 'Told by telephone.', verbalFrom: 'H. Castellane', readBack: true };
-		const { result } = await recordSession(as('therapist'), episodeId, session({ ...arms, deviation }));
-		expect(result.findings).toContainEqual(
-			expect.objectContaining({ rule: 'clearance-missing', grade: 'stop' })
-		);
-		expect(about((await endsOf('surgeon')).mine)).toEqual(['clearance']);
-	});
-
-	it('with the arm stage given is recorded', async () => {
-		const asked = await askClearance(as('therapist'), episodeId, { kind: 'arm-stage', question: 'May it?' });
-		await giveClearance(as('surgeon'), asked.result.id, { limits: { maxElevationDeg: 90 } });
-		const { result } = await recordSession(as('therapist'), episodeId, session(arms));
-		expect(result.findings.map((f) => f.rule)).not.toContain('clearance-missing');
-		expect(result.findings.map((f) => f.rule)).not.toContain('arm-elevation');
-	});
-
-	it('in the future is refused by name', async () => {
-		const late = session({ startedAt: '2026-03-03T09:06:00Z', endedAt: '2026-03-03T09:10:00Z' });
-		await expect(recordSession(as('therapist'), episodeId, late)).rejects.toMatchObject({
-			extra: { errors: [{ pointer: '/startedAt' }] }
-		});
 	});
 });

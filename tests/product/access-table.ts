@@ -79,6 +79,7 @@ export const API: Record<string, Row> = {
 	'POST /api/clearances/[id]/hold': { roles: DECIDERS, answers: [422] },
 	'POST /api/clearances/[id]/withdraw': { roles: SEEING, answers: [422] },
 	'GET /api/alarms': { roles: 'signed-in', answers: [200] },
+	'POST /api/deviations/[id]/acknowledge': { roles: DECIDERS, answers: [404] },
 	'GET /api/escalations/[id]': { roles: CLINICAL, answers: [404] },
 	'POST /api/escalations/[id]/take': { roles: TAKERS, answers: [404] },
 	'POST /api/escalations/[id]/untake': { roles: TAKERS, answers: [404] },

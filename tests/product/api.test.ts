@@ -287,7 +287,7 @@ describe('the main job', () => {
 		const recorded = await therapist.post(`/api/episodes/${other}/sessions`, { ...body, deviation });
 		expect(recorded.status).toBe(201);
 		const ends = await surgeon.get('/api/loose-ends');
-		expect(ends.body.mine).toContainEqual(expect.objectContaining({ kind: 'clearance', episodeId: other }));
+		expect(ends.body.mine).toContainEqual(expect.objectContaining({ kind: 'deviation', episodeId: other }));
 	});
 
 	it('a bed in use is 409', async () => {

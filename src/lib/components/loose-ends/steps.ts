@@ -35,6 +35,14 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 				: open(m.home_step_look(), routes.escalation(id));
 		case 'clearance':
 			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
+		case 'clearance-question':
+			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
+		case 'deviation':
+			return {
+				label: m.home_step_seen(),
+				href: placeOf(end) ?? routes.looseEnds(),
+				deed: `/api/deviations/${id}/acknowledge`
+			};
 		case 'referral':
 			return {
 				label: m.home_step_accept(),
@@ -66,7 +74,10 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 		case 'physician-to-tell':
 		case 'recheck':
 			return routes.escalation(id);
+		case 'deviation':
+			return episodeId === null ? null : routes.clearances(episodeId);
 		case 'clearance':
+		case 'clearance-question':
 		case 'referral':
 		case 'mention':
 			if (episodeId === null) {

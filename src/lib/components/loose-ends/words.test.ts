@@ -66,6 +66,7 @@ describe('askerWords', () => {
 		[end('referral', { priority: 'urgent' }), 'urgent, I. Aldous asks'],
 		[end('mention'), 'I. Aldous asks you'],
 		[end('visit-unconfirmed', { due: '2026-03-04T10:00:00Z' }), ''],
+		[end('deviation'), 'recorded by I. Aldous'],
 		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('message-failed', { code: 'reminder' }), 'a reminder of a visit'],
 		[end('message-failed', { code: 'carrier-pigeon' }), ''],
@@ -83,6 +84,8 @@ describe('owerWords', () => {
 		[end('mention', { code: 'nurse' }), 'R. Ferris to answer'],
 		[end('clearance', { code: 'arm-stage' }), 'surgeon to answer'],
 		[end('clearance', { code: 'stairs' }), 'surgeon or physician to answer'],
+		[end('deviation', { code: 'arm-stage' }), 'surgeon to see it'],
+		[end('clearance-question', { code: 'arm-stage' }), 'R. Ferris was asked back'],
 		[end('referral', { code: 'speech-therapy' }), 'speech therapist to answer']
 	])('%#: %s', (open, words) => {
 		expect(owerWords(open)).toBe(words);
@@ -94,5 +97,9 @@ describe('doneWords', () => {
 		expect(doneWords(end('referral', { code: 'physiotherapy' }))).toBe(
 			'Accepted: Physiotherapy, Marta Lisowska.'
 		);
+	});
+
+	it('say that a deviation was seen', () => {
+		expect(doneWords(end('deviation'))).toBe('Seen: Marta Lisowska. The thread says so.');
 	});
 });

@@ -46,8 +46,11 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
+		case 'deviation':
+			return m.home_asker_did({ name });
 		case 'clearance':
 		case 'sign-off':
+		case 'clearance-question':
 			return m.home_asker_asks({ name });
 		case 'referral':
 			return end.priority === null
@@ -82,13 +85,20 @@ export function owerWords(end: LooseEnd): string {
 			return m.home_ower_measures({ name });
 		case 'mention':
 			return m.home_ower_answers({ name });
+		case 'clearance-question':
+			return m.home_ower_asked_back({ name });
+		case 'deviation':
+			return m.home_ower_sees({ roles: anyOf(rolesAsked(end).map((role) => ROLE_WORDS[role]())) });
 		default:
 			return m.home_ower_roles({ roles: anyOf(rolesAsked(end).map((role) => ROLE_WORDS[role]())) });
 	}
 }
 
-/** What was done with one press, once it was: a referral accepted, or the holder at the bedside. */
+/** What was done with one press, once it was: a referral accepted, the holder at the bedside, a deviation seen. */
 export function doneWords({ kind, code, patientName }: LooseEnd): string {
+	if (kind === 'deviation') {
+		return m.home_seen({ who: patientName ?? '' });
+	}
 	if (kind === 'arrival' || kind === 'escalation-taken') {
 		return m.home_arrived({ who: patientName ?? '' });
 	}

@@ -19,6 +19,7 @@ export const AUDIT_ACTIONS = [
 	'clearance.withdrawn',
 	'clearance.withheld',
 	'demonstration.loaded',
+	'deviation.acknowledged',
 	'entry.posted',
 	'episode.admitted',
 	'episode.closed',

@@ -68,6 +68,20 @@ export interface ClearanceLine {
 	current: boolean;
 }
 
+/** Something done without its clearance that no decider has seen yet. */
+export interface DeviationLine {
+	id: string;
+	sessionId: string;
+	kind: ClearanceKind;
+	/** How the clearance stood when it was done; null when nobody had asked for it. */
+	stood: ClearanceState | null;
+	reason: string;
+	/** When the session began. */
+	doneAt: string;
+	recordedBy: string;
+	recordedById: string;
+}
+
 export interface VisitLine {
 	id: string;
 	startsAt: string;
@@ -113,6 +127,8 @@ export interface Nameboard {
 	}[];
 	threads: { id: string; service: Service; state: ReferralState }[];
 	clearances: ClearanceLine[];
+	/** Those that no decider has seen yet, the oldest first; empty for who may not read sessions. */
+	deviations: DeviationLine[];
 	visits: VisitLine[];
 	escalations: {
 		id: string;

@@ -10,6 +10,8 @@ export const LOOSE_END_KINDS = [
 	'recheck',
 	'physician-to-tell',
 	'clearance',
+	'clearance-question',
+	'deviation',
 	'referral',
 	'mention',
 	'sign-off',
@@ -86,7 +88,10 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 		case 'recheck':
 		case 'physician-to-tell':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'clearance-question':
+			return thing.heldById === person.id ? 'mine' : asked;
 		case 'clearance':
+		case 'deviation':
 			return (
 				asked ??
 				(can(person, 'clearance.decide', { ...unit, clearanceKind: thing.code as ClearanceKind })

@@ -7,7 +7,7 @@ type Ranked = Pick<OpenThing, 'kind' | 'id' | 'grade' | 'priority' | 'since' | '
 
 /**
  * Somebody who calls for help and is not heard, then who is heard and waits, then what was promised after a call,
- * then what holds up treatment, then what can be telephoned about. A question in words never makes anything urgent:
+ * then what was done without leave, then what holds up treatment, then what can be telephoned about. A question in words never makes anything urgent:
  * only its kind, grade and priority do.
  */
 const FIRST_RANK = {
@@ -16,6 +16,7 @@ const FIRST_RANK = {
 	taken: 10,
 	recheck: 20,
 	physician: 25,
+	deviation: 27,
 	asks: 30,
 	messages: 40,
 	visits: 50
@@ -41,7 +42,10 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 			return FIRST_RANK.recheck;
 		case 'physician-to-tell':
 			return FIRST_RANK.physician;
+		case 'deviation':
+			return FIRST_RANK.deviation;
 		case 'clearance':
+		case 'clearance-question':
 		case 'mention':
 		case 'sign-off':
 		case 'referral':

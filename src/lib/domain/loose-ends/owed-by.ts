@@ -30,7 +30,10 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'physician-to-tell':
 			return holder === null ? 'nursing' : STRAND_OF_ROLE[holder];
 		case 'clearance':
+		case 'deviation':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
+		case 'clearance-question':
+			return holder === null ? 'therapy' : STRAND_OF_ROLE[holder];
 		case 'referral':
 		case 'sign-off':
 			return 'therapy';
@@ -50,6 +53,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'escalation':
 			return ROLES.filter((role) => can(anyone(role), 'escalation.take'));
 		case 'clearance':
+		case 'deviation':
 			return ROLES.filter((role) =>
 				can(anyone(role), 'clearance.decide', { clearanceKind: code as ClearanceKind })
 			);
@@ -68,6 +72,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'confirm':
 		case 'recheck':
 		case 'physician-to-tell':
+		case 'clearance-question':
 			return [];
 	}
 }

@@ -3,7 +3,7 @@ import type { Person } from '$lib/domain/access/actor';
 import { can, type Permission, type Subject } from '$lib/domain/access/can';
 import { Problem, notFound } from '$lib/domain/core/errors';
 import type { Reader } from '../db';
-import { clearances, episodes, escalations, referrals, threads, visits } from '../db/schema';
+import { clearances, deviations, episodes, escalations, referrals, threads, visits } from '../db/schema';
 
 /**
  * Fetch with permission or not at all. These functions are the only way from an identifier in a request to a row.
@@ -53,6 +53,17 @@ export async function accessClearance(db: Reader, person: Person, id: string, pe
 		.where(eq(clearances.id, id));
 	const subject = { clearanceKind: row?.clearance.kind };
 	return allowed(person, row, row?.episode.unitId, permission, 'clearance', subject);
+}
+
+/** Something done without its clearance belongs to the kind that it lacked. */
+export async function accessDeviation(db: Reader, person: Person, id: string, permission: Permission) {
+	const [row] = await db
+		.select({ deviation: deviations, episode: episodes })
+		.from(deviations)
+		.innerJoin(episodes, eq(episodes.id, deviations.episodeId))
+		.where(eq(deviations.id, id));
+	const subject = { clearanceKind: row?.deviation.kind };
+	return allowed(person, row, row?.episode.unitId, permission, 'deviation', subject);
 }
 
 /** An escalation belongs to the unit where the patient lies now. */

@@ -1,56 +1,66 @@
-import { and, eq, isNotNull, isNull } from 'drizzle-orm';
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import { assess } from '$lib/domain/bedside/assess';
 import type { Verdict } from '$lib/domain/bedside/finding';
-import type { Assessment, Reading, SessionBody } from '$lib/domain/bedside/forms';
+import type { Assessment, SessionBody } from '$lib/domain/bedside/forms';
 import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
 import type { LimitSet } from '$lib/domain/bedside/limits/limits';
 import { lackingClearance } from '$lib/domain/bedside/rules/clearances';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
-import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
-import { insertAsk, openOrInForce } from '../clearances/ask';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { bedsideSessions, episodes, escalations, findings, readings } from '../db/schema';
-import { factsOfOne, type EpisodeFacts } from '../episodes/facts';
+import { factsDuring, type EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
 import { askForSignature } from '../levels/sign-off';
 import { layersOf } from '../limits/queries';
 import { write, type Change, type Written } from '../write';
+import { carryOver } from './carry-over';
+import { insertDeviations, type Lacking } from './deviations';
+import { insertSession, type SessionOf } from './store';
 import { summaryText } from './summary';
 
 /** A clock of a phone may run ahead of the server's by this much. */
 const FUTURE_MS = 5 * 60 * 1000;
 
+interface Recorded {
+	id: string;
+	findings: Verdict['findings'];
+	outcome: Verdict['outcome'];
+}
+
 /**
- * Record one bedside treatment, judged by the same function as the page and by the clearances on record.
- * @throws Problem `clearance-needed` when something was done whose clearance is not in force, unless it comes
+ * Record one bedside treatment, judged by the same function as the page and by the clearances on record as they
+ * stood when it happened.
+ * @throws Problem `clearance-needed` when something was done whose clearance was not in force, unless it comes
  * with a deviation: what happened is never refused a place in the record
  */
 export function recordSession(
 	context: PersonContext,
 	episodeId: string,
 	input: SessionBody
-): Promise<Written<{ id: string; findings: Verdict['findings']; outcome: Verdict['outcome'] }>> {
+): Promise<Written<Recorded>> {
 	return write(context, 'session.record', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'session.record');
 		refuseFuture(input, context.now);
-		const facts = await factsOfOne(tx, episode, context.now);
+		const facts = await factsDuring(tx, episode, {
+			startedAt: parseRfc3339(input.startedAt),
+			endedAt: parseRfc3339(input.endedAt)
+		});
 		const judged = withRecord(input, episode, facts);
-		const missing = missingClearances(judged);
-		if (missing.length > 0 && !input.deviation) {
-			throw new Problem('clearance-needed', `Not cleared: ${missing.join(', ')}.`, { needed: missing });
+		const lacking = lackingOf(judged, facts);
+		if (lacking.length > 0 && !input.deviation) {
+			throw clearanceNeeded(lacking.map(({ kind }) => kind));
 		}
 		const verdict = assess(judged, await limitsThatJudge(tx, episode, judged.context, input));
-		const id = newId();
-		await insertSession(tx, context, id, episode, facts, { ...input, context: judged.context }, verdict);
-		await updateEpisode(tx, context, episode, input, verdict);
-		await askForSignature(tx, context, episode, id, input);
-		const asks = await askForDeviations(tx, context, episode, facts, missing, input);
-		return consequences(tx, episode, id, input, verdict, asks);
+		const of = { id: newId(), episodeId, operationId: facts.operation?.id ?? null };
+		const threadId = await threadForDeed(tx, episodeId, undefined);
+		await insertSession(tx, context, of, { ...input, context: judged.context }, verdict);
+		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);
+		await carryOver(tx, context, episode, input, verdict);
+		await askForSignature(tx, context, episode, of.id, input);
+		return told(of, threadId, summaryText(input, verdict, lacking), verdict, lacking);
 	});
 }
 
@@ -79,12 +89,20 @@ async function limitsThatJudge(
 	return limitsOfPatient(set ?? setOfUnit(layers.unit, phase ?? episode.phase), layers);
 }
 
-function missingClearances(judged: Assessment): ClearanceKind[] {
-	const lacking = judged.activities
+/** The clearances that what was done lacked, each once, with how they stood. */
+function lackingOf({ context, activities }: Assessment, facts: EpisodeFacts): Lacking[] {
+	const kinds = activities
 		.filter((done) => !done.notDone)
-		.map((done) => lackingClearance(judged.context, activityByCode(done.code)))
+		.map((done) => lackingClearance(context, activityByCode(done.code)))
 		.filter((kind) => kind !== null);
-	return [...new Set(lacking)];
+	return [...new Set(kinds)].map((kind) => ({
+		kind,
+		stood: facts.newest.find((row) => row.kind === kind)?.state ?? null
+	}));
+}
+
+function clearanceNeeded(needed: ClearanceKind[]): Problem {
+	return new Problem('clearance-needed', `Not cleared: ${needed.join(', ')}.`, { needed });
 }
 
 function refuseFuture(input: SessionBody, now: number): void {
@@ -93,142 +111,23 @@ function refuseFuture(input: SessionBody, now: number): void {
 	}
 }
 
-async function insertSession(
-	tx: Tx,
-	context: PersonContext,
-	id: string,
-	episode: EpisodeRow,
-	facts: EpisodeFacts,
-	input: SessionBody,
-	verdict: Verdict
-): Promise<void> {
-	await tx.insert(bedsideSessions).values({
-		id,
-		episodeId: episode.id,
-		operationId: facts.operation?.id ?? null,
-		startedAt: parseRfc3339(input.startedAt),
-		endedAt: parseRfc3339(input.endedAt),
-		level: input.level,
-		context: { ...input.context },
-		symptoms: input.symptoms,
-		activities: input.activities,
-		outcome: verdict.outcome,
-		notJudged: [...verdict.notJudged],
-		limitSet: verdict.set,
-		limitVersion: verdict.version,
-		deviation: input.deviation ? { ...input.deviation } : null,
-		recordedBy: context.actor.id,
-		recordedAt: context.now
-	});
-	const rows = [
-		readingRow(id, 'before', 0, input.before),
-		...input.during.map((reading, index) => readingRow(id, 'during', index, reading)),
-		readingRow(id, 'after', 0, input.after)
-	];
-	await tx.insert(readings).values(rows);
-	if (verdict.findings.length > 0) {
-		await tx
-			.insert(findings)
-			.values(
-				verdict.findings.map((finding, ordinal) => ({ ...finding, id: newId(), sessionId: id, ordinal }))
-			);
-	}
-}
-
-function readingRow(
-	sessionId: string,
-	phase: 'before' | 'during' | 'after',
-	ordinal: number,
-	{ at, ...values }: Reading
-): typeof readings.$inferInsert {
-	return { id: newId(), sessionId, phase, ordinal, at: at ? parseRfc3339(at) : null, ...values };
-}
-
-/** What the session told about the patient, for the nameboard and for the next session's page. */
-async function updateEpisode(
-	tx: Tx,
-	context: PersonContext,
-	episode: EpisodeRow,
-	input: SessionBody,
-	verdict: Verdict
-): Promise<void> {
-	const reached = verdict.outcome === 'stop' ? episode.level : Math.max(episode.level, input.level);
-	await tx
-		.update(episodes)
-		.set({
-			level: reached,
-			levelReached: Math.max(episode.levelReached, reached),
-			rhythm: input.context.rhythm,
-			betaBlocked: input.context.betaBlocked ?? episode.betaBlocked
-		})
-		.where(eq(episodes.id, episode.id));
-	// A new set of readings is the re-check that somebody still owed.
-	await tx
-		.update(escalations)
-		.set({ recheckDoneAt: context.now })
-		.where(
-			and(
-				eq(escalations.episodeId, episode.id),
-				isNotNull(escalations.recheckDueAt),
-				isNull(escalations.recheckDoneAt)
-			)
-		);
-}
-
-/** What was done without its clearance becomes an ask, so that the decider is told and owes an answer. */
-async function askForDeviations(
-	tx: Tx,
-	context: PersonContext,
-	episode: EpisodeRow,
-	facts: EpisodeFacts,
-	missing: ClearanceKind[],
-	input: SessionBody
-): Promise<Change<unknown>[]> {
-	const asks: Change<unknown>[] = [];
-	const threadId = await threadForDeed(tx, episode.id, undefined);
-	for (const kind of missing) {
-		const operationId = facts.operation?.id ?? null;
-		const { open, lapsed } = await openOrInForce(tx, context, episode.id, kind, operationId);
-		asks.push(...lapsed);
-		if (!open) {
-			const question = m.bedside_deviation_question({ reason: input.deviation?.reason ?? '' });
-			asks.push(await insertAsk(tx, context, { episode, facts, threadId }, { kind, question }));
-		}
-	}
-	return asks;
-}
-
-async function consequences(
-	tx: Tx,
-	episode: EpisodeRow,
-	id: string,
-	input: SessionBody,
-	verdict: Verdict,
-	asks: Change<unknown>[]
-): Promise<Change<{ id: string; findings: Verdict['findings']; outcome: Verdict['outcome'] }>> {
-	const threadId = await threadForDeed(tx, episode.id, undefined);
-	const body = summaryText(input, verdict);
+function told(
+	{ id, episodeId }: SessionOf,
+	threadId: string | null,
+	body: string,
+	{ findings, outcome }: Verdict,
+	lacking: readonly Lacking[]
+): Change<Recorded> {
 	return {
-		result: { id, findings: verdict.findings, outcome: verdict.outcome },
-		audit: [
-			{
-				action: 'session.recorded',
-				objectKind: 'session',
-				objectId: id,
-				episodeId: episode.id,
-				detail: { outcome: verdict.outcome, deviation: Boolean(input.deviation) }
-			},
-			...asks.flatMap((ask) => ask.audit)
-		],
-		entries: [
-			...(threadId
-				? [{ threadId, kind: 'session' as const, body, ref: { kind: 'session' as const, id } }]
-				: []),
-			...asks.flatMap((ask) => ask.entries ?? [])
-		],
-		events: [
-			{ topic: 'session', kind: 'recorded', id, episodeId: episode.id },
-			...asks.flatMap((ask) => ask.events ?? [])
-		]
+		result: { id, findings, outcome },
+		audit: {
+			action: 'session.recorded',
+			objectKind: 'session',
+			objectId: id,
+			episodeId,
+			detail: { outcome, deviations: lacking.map(({ kind }) => kind).join() || null }
+		},
+		entries: threadId ? [{ threadId, kind: 'session', body, ref: { kind: 'session', id } }] : [],
+		events: [{ topic: 'session', kind: 'recorded', id, episodeId }]
 	};
 }

@@ -1,10 +1,13 @@
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Reading, SessionBody } from '$lib/domain/bedside/forms';
+import { CLEARANCE_WORDS } from '$lib/i18n/labels';
+import { stoodWords } from '$lib/i18n/standing';
 import { m } from '$lib/i18n/paraglide/messages';
+import type { Lacking } from './deviations';
 
 /** One session in the thread: what was done, the readings before and after, what the rules found. */
-export function summaryText(input: SessionBody, verdict: Verdict): string {
+export function summaryText(input: SessionBody, verdict: Verdict, lacking: readonly Lacking[]): string {
 	const done = input.activities.filter((a) => !a.notDone).map((a) => activityByCode(a.code).name);
 	const lines = [
 		m.bedside_summary_head({ level: input.level, activities: done.join(', ') || m.bedside_no_activity() }),
@@ -12,9 +15,17 @@ export function summaryText(input: SessionBody, verdict: Verdict): string {
 		...verdict.findings.filter((f) => f.grade !== 'note').map((f) => f.reason)
 	];
 	if (input.deviation) {
-		lines.push(m.bedside_summary_deviation({ reason: input.deviation.reason }));
+		lines.push(deviationText(input.deviation.reason, lacking));
 	}
 	return lines.join(' ');
+}
+
+/** Which clearance was missing and how it stood, so that whoever put it on hold reads that it was not kept. */
+function deviationText(reason: string, lacking: readonly Lacking[]): string {
+	const stood = lacking.map(({ kind, stood }) => `${CLEARANCE_WORDS[kind]()}: ${stoodWords(stood)}`);
+	return stood.length > 0
+		? m.bedside_summary_deviation_from({ stood: stood.join('; '), reason })
+		: m.bedside_summary_deviation({ reason });
 }
 
 /** `128/74, pulse 76, saturation 96 %`; what was not measured is left out. */

@@ -11,13 +11,14 @@ import { nextClearanceState, stateOn, type ClearanceMove } from '$lib/domain/cle
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
-import { accessClearance, accessEpisode, threadForDeed } from '../access/access';
+import { accessClearance, accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
 import { after, write, type Written } from '../write';
 import { insertAsk, openOrInForce } from './ask';
+import { gatherEvidence } from './evidence';
 import { hospitalToday } from './lapse';
 import { recordClearanceMove } from './moves';
 import { answerText } from './texts';
@@ -110,11 +111,12 @@ function decide(
 	seen: SeenDecision
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
-		const { clearance } = await accessForMove(tx, context, id, move);
+		const { clearance, episode } = await accessForMove(tx, context, id, move);
 		await refuseSlower(tx, clearance, seen);
 		const state = nextClearanceState(stateOn(clearance, hospitalToday(context.now)), move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
+		const reviewOn = decision.reviewOn === undefined ? clearance.reviewOn : decision.reviewOn;
 		// An ask taken back was never decided; only a decision can hold what the level allows.
 		const takenBack = move === 'withdraw' && clearance.state === 'asked';
 		const decidedBy = takenBack ? null : context.actor.id;
@@ -127,7 +129,9 @@ function decide(
 			fromState: clearance.state,
 			toState: state,
 			limits,
-			reason: decision.reason
+			reviewOn,
+			reason: decision.reason,
+			evidence: takenBack ? null : await evidenceNow(tx, context, episode)
 		});
 		const { threadId, episodeId } = clearance;
 		const body = answerText(clearance.kind, state, { ...decision, limits });
@@ -144,6 +148,12 @@ function decide(
 			events: [{ topic: 'clearance', kind: state, id, episodeId }]
 		};
 	});
+}
+
+/** What the decider could see of the patient at the moment of deciding. */
+async function evidenceNow(tx: Tx, context: PersonContext, episode: EpisodeRow): Promise<ClearanceEvidence> {
+	const facts = await factsOfOne(tx, episode, context.now);
+	return gatherEvidence(tx, episode, facts, context.now);
 }
 
 async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: SeenDecision): Promise<void> {

@@ -18,7 +18,7 @@ type ClearanceRow = typeof clearances.$inferSelect;
 
 const OPEN_OR_IN_FORCE = ['asked', 'given', 'given-with-limits', 'on-hold'] as const;
 
-/** One ask, as rows and consequences: used by asking, and by a session that was recorded against the rules. */
+/** One ask, as rows and consequences. */
 export async function insertAsk(
 	tx: Tx,
 	context: PersonContext,
@@ -40,7 +40,7 @@ export async function insertAsk(
 		askedAt: context.now,
 		evidence
 	});
-	await recordClearanceMove(tx, context, { clearanceId: id, fromState: null, toState: 'asked' });
+	await recordClearanceMove(tx, context, { clearanceId: id, fromState: null, toState: 'asked', evidence });
 	const body = `${CLEARANCE_WORDS[ask.kind]()}: ${ask.question}`;
 	return {
 		result: { id, state: 'asked', evidence },

@@ -1,12 +1,13 @@
-import { desc, inArray } from 'drizzle-orm';
+import { asc, desc, eq, inArray } from 'drizzle-orm';
 import type { Level } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
+import { standingDuring } from '$lib/domain/clearances/replay';
 import { isInForce, stateOn } from '$lib/domain/clearances/states';
 import { mayDoNow, type MayDoNow } from '$lib/domain/episodes/may-do-now';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
 import { precautionsOf, type Precautions } from '$lib/domain/episodes/precautions';
 import type { Reader } from '../db';
-import { clearances, operations } from '../db/schema';
+import { clearanceMoves, clearances, operations } from '../db/schema';
 import { env } from '../env';
 
 export type Operation = typeof operations.$inferSelect;
@@ -71,6 +72,57 @@ export async function factsOfOne(
 		throw new Error(`No facts were derived of episode ${episode.id}.`);
 	}
 	return facts;
+}
+
+/**
+ * The facts of one episode as they were while something was done, replayed from the moves of its clearances. The
+ * operation, and the day from which a review date is past, are those of the beginning.
+ */
+export async function factsDuring(
+	db: Reader,
+	episode: { id: string; level: number },
+	span: { startedAt: number; endedAt: number }
+): Promise<EpisodeFacts> {
+	const [performed, rows, moves] = await Promise.all([
+		db
+			.select()
+			.from(operations)
+			.where(eq(operations.episodeId, episode.id))
+			.orderBy(desc(operations.operatedAt)),
+		db
+			.select()
+			.from(clearances)
+			.where(eq(clearances.episodeId, episode.id))
+			.orderBy(desc(clearances.askedAt), desc(clearances.id)),
+		movesOf(db, episode.id)
+	]);
+	const day = localDateOf(span.startedAt, env().hospital.zone);
+	const asTheyWere = rows.flatMap((row) => {
+		const own = moves.filter((move) => move.clearanceId === row.id);
+		const standing = standingDuring(own, span, day);
+		if (standing === null) {
+			return [];
+		}
+		const { takenBack, ...stood } = standing;
+		return [{ ...row, ...stood, decidedBy: takenBack ? null : row.decidedBy }];
+	});
+	return derive(episode, performed, asTheyWere, span.startedAt);
+}
+
+function movesOf(db: Reader, episodeId: string) {
+	return db
+		.select({
+			clearanceId: clearanceMoves.clearanceId,
+			at: clearanceMoves.at,
+			fromState: clearanceMoves.fromState,
+			toState: clearanceMoves.toState,
+			limits: clearanceMoves.limits,
+			reviewOn: clearanceMoves.reviewOn
+		})
+		.from(clearanceMoves)
+		.innerJoin(clearances, eq(clearances.id, clearanceMoves.clearanceId))
+		.where(eq(clearances.episodeId, episodeId))
+		.orderBy(asc(clearanceMoves.at), asc(clearanceMoves.id));
 }
 
 function derive(

@@ -5,6 +5,7 @@ import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { Nameboard } from '$lib/domain/episodes/views';
 import { accessEpisode, type EpisodeRow } from '../access/access';
+import { unseenDeviations } from '../bedside/deviations';
 import { listClearances } from '../clearances/queries';
 import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
@@ -24,10 +25,11 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, visits, calls, layers, wordings] = await Promise.all([
+	const [who, asks, cleared, unseen, visits, calls, layers, wordings] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
 		listClearances(db, episodeId, derived.operation?.id ?? null, now),
+		clinical ? unseenDeviations(db, episodeId) : [],
 		visitsOfEpisode(db, episodeId),
 		clinical ? escalationsOf(db, episodeId) : [],
 		clinical ? layersOf(db, episode, now) : NO_LAYERS,
@@ -62,6 +64,7 @@ export async function getNameboard(
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),
 		clearances: cleared,
+		deviations: unseen,
 		visits,
 		escalations: calls
 	};

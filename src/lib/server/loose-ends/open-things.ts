@@ -19,6 +19,8 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		rechecksDue,
 		physiciansToTell,
 		clearancesAsked,
+		questionsBack,
+		deviationsUnseen,
 		referralsAsked,
 		questionsOpen,
 		signOffsAsked,
@@ -105,6 +107,25 @@ const clearancesAsked = sql`
 	join place on place.id = c.episode_id
 	join users asker on asker.id = c.asked_by
 	where c.state = 'asked'`;
+
+/** A decider's question back waits on whoever asked, as long as the ask itself is open. */
+const questionsBack = sql`
+	select 'clearance-question', c.id, ${PLACE}, c.thread_id, null, c.kind, q.question, q.asked_by, decider.name,
+		c.asked_by, asker.name, q.asked_at, null, null
+	from clearance_questions q
+	join clearances c on c.id = q.clearance_id
+	join place on place.id = c.episode_id
+	join users decider on decider.id = q.asked_by
+	join users asker on asker.id = c.asked_by
+	where q.answered_at is null and c.state = 'asked'`;
+
+const deviationsUnseen = sql`
+	select 'deviation', d.id, ${PLACE}, d.thread_id, null, d.kind, d.reason, d.recorded_by, doer.name,
+		null, null, d.recorded_at, null, null
+	from deviations d
+	join place on place.id = d.episode_id
+	join users doer on doer.id = d.recorded_by
+	where d.seen_at is null`;
 
 const referralsAsked = sql`
 	select 'referral', r.id, ${PLACE}, t.id, null, r.service, r.question, r.asked_by, asker.name,

@@ -21,6 +21,13 @@ export function titleOf(thing: OpenThing): string {
 			return m.home_title_recheck();
 		case 'clearance':
 			return m.home_title_clearance({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
+		case 'clearance-question':
+			return m.home_title_clearance_question({
+				kind: CLEARANCE_WORDS[thing.code as ClearanceKind](),
+				text
+			});
+		case 'deviation':
+			return m.home_title_deviation({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'referral':
 			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service](), text });
 		case 'sign-off':

@@ -1,6 +1,7 @@
 import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { SETS } from '../../../domain/bedside/codes';
 import { RHYTHMS } from '../../../domain/core/codes';
+import { STERNUM_FINDINGS, WOUND_FINDINGS } from '../../../domain/wounds/codes';
 import { users } from './accounts';
 import { id, instant, json, yesNo } from './columns';
 import { episodes, operations } from './episodes';
@@ -83,4 +84,24 @@ export const findings = sqliteTable(
 		source: text('source').notNull()
 	},
 	(t) => [index('findings_session').on(t.sessionId, t.ordinal)]
+);
+
+/** What somebody saw of the wound and felt of the breastbone; append-only, the newest counts. */
+export const woundNotes = sqliteTable(
+	'wound_notes',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		/** Null where nobody looked. */
+		wound: text('wound', { enum: WOUND_FINDINGS }),
+		sternum: text('sternum', { enum: STERNUM_FINDINGS }),
+		note: text('note'),
+		notedBy: text('noted_by')
+			.notNull()
+			.references(() => users.id),
+		notedAt: instant('noted_at').notNull()
+	},
+	(t) => [index('wound_notes_episode').on(t.episodeId, t.notedAt)]
 );

@@ -1,11 +1,30 @@
+import { z } from 'zod';
+import { m } from '$lib/i18n/paraglide/messages';
+import { acknowledgeDeviation } from '$lib/server/bedside/deviations';
+import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { askClearanceAction, askForm } from '../ask-clearance';
+import { leadOnWithoutScript } from '../without-script';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async () => {
 		const { nameboard, now, zone } = await event.parent();
-		return { form: await askForm(nameboard.clearances, { now, zone }), key: newFormKey() };
+		return {
+			form: await askForm(nameboard.clearances, { now, zone }),
+			key: newFormKey(),
+			seenKey: newFormKey()
+		};
 	});
 
-export const actions: Actions = { ask: askClearanceAction };
+const acknowledge = formAction({
+	schema: z.object({ deviationId: z.string().min(1) }),
+	id: 'acknowledge',
+	run: async (context, { deviationId }, event) => {
+		await acknowledgeDeviation(context, deviationId);
+		leadOnWithoutScript(event, event.url.pathname);
+		return m.clearances_done();
+	}
+});
+
+export const actions: Actions = { ask: askClearanceAction, acknowledge };

@@ -1,0 +1,32 @@
+/** What one recorded session says about the patient beyond itself: the level reached, and a re-check that was owed. */
+import type { Level } from '../core/codes';
+import { activityByCode } from './activities/activities';
+import type { Outcome } from './codes';
+import type { ActivityDone, Reading } from './forms';
+
+/**
+ * The level of a patient after a session. It rises only by a session that went well (clear, or with a caution) in
+ * which something of that level, or harder, was really done; it never falls here, because going back is somebody's
+ * decision.
+ */
+export function levelAfter(
+	reached: number,
+	session: { level: Level; outcome: Outcome; activities: readonly ActivityDone[] }
+): number {
+	const wentWell = session.outcome === 'clear' || session.outcome === 'caution';
+	const proven = session.activities.some(
+		({ code, notDone }) => !notDone && activityByCode(code).level >= session.level
+	);
+	return wentWell && proven ? Math.max(reached, session.level) : reached;
+}
+
+/** True when the session can stand for measuring again: a pulse or a pressure was taken in it. */
+export function measuresAgain(session: {
+	before: Reading;
+	during: readonly Reading[];
+	after: Reading;
+}): boolean {
+	return [session.before, ...session.during, session.after].some(
+		({ hr, sbp, dbp }) => hr != null || sbp != null || dbp != null
+	);
+}
