@@ -55,6 +55,7 @@ export const API: Record<string, Row> = {
 	'GET /api/episodes/[id]/limits': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/limits': { roles: ['physician', 'surgeon'], answers: [422] },
 	'POST /api/limits/[id]/end': { roles: ['physician', 'surgeon'], answers: [404] },
+	'POST /api/episodes/[id]/wound-notes': { roles: CLINICAL, answers: [422] },
 	'GET /api/episodes/[id]/sessions': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/sessions': {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
@@ -77,6 +78,11 @@ export const API: Record<string, Row> = {
 	'POST /api/clearances/[id]/give': { roles: DECIDERS, answers: [404] },
 	'POST /api/clearances/[id]/withhold': { roles: DECIDERS, answers: [422] },
 	'POST /api/clearances/[id]/hold': { roles: DECIDERS, answers: [422] },
+	'POST /api/clearances/[id]/ask-back': { roles: DECIDERS, answers: [422] },
+	'POST /api/clearances/[id]/answer': {
+		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
+		answers: [422]
+	},
 	'POST /api/clearances/[id]/withdraw': { roles: SEEING, answers: [422] },
 	'GET /api/alarms': { roles: 'signed-in', answers: [200] },
 	'POST /api/deviations/[id]/acknowledge': { roles: DECIDERS, answers: [404] },

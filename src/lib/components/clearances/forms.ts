@@ -9,6 +9,8 @@ export interface DecisionForms {
 	withhold: SuperValidated<ReasonFields, string>;
 	hold: SuperValidated<ReasonFields, string>;
 	withdraw: SuperValidated<ReasonFields, string>;
+	askBack: SuperValidated<ReasonFields, string>;
+	answer: SuperValidated<ReasonFields, string>;
 }
 
 /** The key of each form, made by the server with the page. */

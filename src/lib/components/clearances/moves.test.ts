@@ -16,16 +16,24 @@ const stairs = (state: ClearanceState, more: { current?: boolean; askedById?: st
 	state,
 	current: true,
 	askedById: 'somebody',
+	questions: [],
 	...more
 });
-const NOTHING: Moves = { give: null, withhold: false, hold: false, withdraw: null };
+const NOTHING: Moves = {
+	give: null,
+	withhold: false,
+	hold: false,
+	withdraw: null,
+	askBack: false,
+	answer: false
+};
 
 describe('movesOf', () => {
 	it.each<[ClearanceState, Moves]>([
-		['asked', { give: 'first', withhold: true, hold: false, withdraw: null }],
-		['on-hold', { give: 'first', withhold: true, hold: false, withdraw: 'decision' }],
-		['given', { give: 'again', withhold: false, hold: true, withdraw: 'decision' }],
-		['given-with-limits', { give: 'again', withhold: false, hold: true, withdraw: 'decision' }],
+		['asked', { ...NOTHING, give: 'first', withhold: true, askBack: true }],
+		['on-hold', { ...NOTHING, give: 'first', withhold: true, withdraw: 'decision' }],
+		['given', { ...NOTHING, give: 'again', hold: true, withdraw: 'decision' }],
+		['given-with-limits', { ...NOTHING, give: 'again', hold: true, withdraw: 'decision' }],
 		['withheld', NOTHING],
 		['withdrawn', NOTHING],
 		['lapsed', NOTHING]
@@ -35,8 +43,8 @@ describe('movesOf', () => {
 
 	it.each(CLEARANCE_STATES)('offers nothing on %s that the server would refuse', (state) => {
 		const moves = movesOf(person('surgeon'), 'ward', stairs(state, { askedById: 'p1' }));
-		const offered = (Object.keys(moves) as ClearanceMove[]).filter((move) => moves[move]);
-		for (const move of offered) {
+		const offered = Object.entries(moves).flatMap(([move, open]) => (open ? [move] : []));
+		for (const move of offered.map((name) => (name === 'askBack' ? 'ask-back' : name) as ClearanceMove)) {
 			expect(() => nextClearanceState(state, move)).not.toThrow();
 		}
 		expect(offered.length === 0).toBe(['withheld', 'withdrawn', 'lapsed'].includes(state));
@@ -56,8 +64,26 @@ describe('movesOf', () => {
 		expect(movesOf(viewer, 'ward', stairs('given', { askedById: 't1' })).withdraw).toBeNull();
 	});
 
+	it('asks back once at a time, and lets whoever may ask answer', () => {
+		const question = {
+			id: 'q1',
+			question: 'Does it click?',
+			askedBy: 'N',
+			askedAt: '2026-03-03T09:00:00Z',
+			answer: null,
+			answeredBy: null,
+			answeredAt: null
+		};
+		const waiting = { ...stairs('asked'), questions: [question] };
+		expect(movesOf(person('surgeon'), 'ward', waiting)).toMatchObject({ askBack: false, answer: false });
+		expect(movesOf(person('therapist'), 'ward', waiting)).toMatchObject({ askBack: false, answer: true });
+		const answered = { ...waiting, questions: [{ ...question, answer: 'No.' }] };
+		expect(movesOf(person('surgeon'), 'ward', answered).askBack).toBe(true);
+		expect(movesOf(person('therapist'), 'ward', answered).answer).toBe(false);
+	});
+
 	it('does not give what counts from an earlier operation', () => {
 		const moves = movesOf(person('surgeon'), 'ward', stairs('asked', { current: false }));
-		expect(moves).toEqual({ give: null, withhold: true, hold: false, withdraw: null });
+		expect(moves).toEqual({ ...NOTHING, withhold: true, askBack: true });
 	});
 });

@@ -10,15 +10,21 @@ export interface Moves {
 	hold: boolean;
 	/** Taking back one's own ask, or what was decided. */
 	withdraw: 'ask' | 'decision' | null;
+	/** A question instead of a decision, while none waits for its answer. */
+	askBack: boolean;
+	/** The answer to the question that waits. */
+	answer: boolean;
 }
 
-type About = Pick<ClearanceView, 'kind' | 'state' | 'current' | 'askedById'>;
+type About = Pick<ClearanceView, 'kind' | 'state' | 'current' | 'askedById' | 'questions'>;
 
 /**
  * What a person may do about a clearance as it stands. What counts from an earlier operation can only end: giving
  * it would permit nothing.
  */
-export function movesOf(viewer: Person, unitId: string, { kind, state, current, askedById }: About): Moves {
+export function movesOf(viewer: Person, unitId: string, about: About): Moves {
+	const { kind, state, current, askedById } = about;
+	const waits = state === 'asked' && about.questions.some(({ answer }) => answer === null);
 	const decides = can(viewer, 'clearance.decide', { unitId, clearanceKind: kind });
 	const undecided = state === 'asked' || state === 'on-hold';
 	const given = state === 'given' || state === 'given-with-limits';
@@ -26,7 +32,9 @@ export function movesOf(viewer: Person, unitId: string, { kind, state, current, 
 		give: !decides || !current ? null : undecided ? 'first' : given ? 'again' : null,
 		withhold: decides && undecided,
 		hold: decides && given,
-		withdraw: withdrawal(decides, state === 'asked', given || state === 'on-hold', askedById === viewer.id)
+		withdraw: withdrawal(decides, state === 'asked', given || state === 'on-hold', askedById === viewer.id),
+		askBack: decides && state === 'asked' && !waits,
+		answer: waits && can(viewer, 'clearance.ask', { unitId })
 	};
 }
 

@@ -22,6 +22,7 @@ export const PERMISSIONS = [
 	'clearance.withdraw',
 	'session.read',
 	'session.record',
+	'wound.note',
 	'limit.set-for-patient',
 	'limit.change',
 	'level.decide',
@@ -94,6 +95,8 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return subject.clearanceKind === undefined
 				? among(role, 'surgeon', 'physician', 'speech-therapist')
 				: decides(role, subject.clearanceKind);
+		case 'wound.note':
+			return clinical;
 		case 'session.record':
 			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
 		case 'limit.set-for-patient':

@@ -12,7 +12,9 @@ export const AUDIT_ACTIONS = [
 	'account.token-made',
 	'account.token-revoked',
 	'account.units-set',
+	'clearance.answered',
 	'clearance.asked',
+	'clearance.asked-back',
 	'clearance.given',
 	'clearance.held',
 	'clearance.lapsed',
@@ -67,7 +69,8 @@ export const AUDIT_ACTIONS = [
 	'visit.confirmed',
 	'visit.followed-up',
 	'visit.missed',
-	'visit.reopened'
+	'visit.reopened',
+	'wound.noted'
 ] as const;
 export type AuditAction = (typeof AUDIT_ACTIONS)[number];
 

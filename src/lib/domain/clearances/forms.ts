@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import { CLEARANCE_KINDS } from '../core/codes';
 import { reason, text } from '../core/fields';
+import type { Precautions } from '../episodes/precautions';
+import type { WoundNote } from '../wounds/views';
 
 /** How far a permission goes. Degrees are arm elevation from the side of the body, 0 down and 180 overhead. */
 export const clearanceLimits = z.strictObject({
@@ -35,14 +37,25 @@ export const giveClearanceBody = z.strictObject({
 
 export const reasonBody = z.strictObject({ reason: reason('The reason') });
 
-/** What the decider is shown, stored with the ask. */
+/** A question to whoever asked, instead of a decision. */
+export const askBackBody = z.strictObject({ question: text('question', 1000) });
+
+/** The answer to what was asked back. */
+export const answerBody = z.strictObject({ answer: text('answer', 2000) });
+
+/** What the decider is shown, stored with the ask and again with each decision. */
 export interface ClearanceEvidence {
 	at: string;
 	procedure: string | null;
 	approach: string | null;
+	/** The day of the operation, in the hospital's calendar; missing in what was stored before it was kept. */
+	operatedOn?: string | null;
 	postOpDay: number | null;
 	level: number;
 	betaBlocked: boolean | null;
 	rhythm: string | null;
+	/** The newest note about wound and breastbone; null where nobody has noted anything. */
+	wound?: WoundNote | null;
+	precautions?: Precautions;
 	sessions: { id: string; startedAt: string; outcome: string; findings: string[] }[];
 }

@@ -2,7 +2,9 @@ import type { ClearanceState } from '../core/codes';
 import { Problem } from '../core/errors';
 import type { ClearanceLimits } from './forms';
 
-export type ClearanceMove = 'give' | 'withhold' | 'hold' | 'withdraw';
+/** The moves that decide; asking back leaves the ask as it is. */
+export type DecidingMove = 'give' | 'withhold' | 'hold' | 'withdraw';
+export type ClearanceMove = DecidingMove | 'ask-back';
 
 /**
  * Which move is allowed from which state. A decider may give again what is on hold or was given, with other
@@ -10,6 +12,7 @@ export type ClearanceMove = 'give' | 'withhold' | 'hold' | 'withdraw';
  */
 const ALLOWED: Record<ClearanceMove, readonly ClearanceState[]> = {
 	give: ['asked', 'on-hold', 'given', 'given-with-limits'],
+	'ask-back': ['asked'],
 	withhold: ['asked', 'on-hold'],
 	hold: ['given', 'given-with-limits'],
 	withdraw: ['asked', 'given', 'given-with-limits', 'on-hold']
@@ -30,6 +33,8 @@ export function nextClearanceState(
 	switch (move) {
 		case 'give':
 			return limits && Object.keys(limits).length > 0 ? 'given-with-limits' : 'given';
+		case 'ask-back':
+			return 'asked';
 		case 'withhold':
 			return 'withheld';
 		case 'hold':

@@ -7,7 +7,7 @@ import type {
 	ClearanceLimits,
 	giveClearanceBody
 } from '$lib/domain/clearances/forms';
-import { nextClearanceState, stateOn, type ClearanceMove } from '$lib/domain/clearances/states';
+import { nextClearanceState, stateOn, type DecidingMove } from '$lib/domain/clearances/states';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
@@ -87,7 +87,7 @@ export function withdrawClearance(context: PersonContext, id: string, reason: st
 	return decide(context, id, 'withdraw', { reason }, seen);
 }
 
-const ACTIONS: Record<ClearanceMove, AuditAction> = {
+const ACTIONS: Record<DecidingMove, AuditAction> = {
 	give: 'clearance.given',
 	withhold: 'clearance.withheld',
 	hold: 'clearance.held',
@@ -106,7 +106,7 @@ interface Decision {
 function decide(
 	context: PersonContext,
 	id: string,
-	move: ClearanceMove,
+	move: DecidingMove,
 	decision: Decision,
 	seen: SeenDecision
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
@@ -120,6 +120,8 @@ function decide(
 		// An ask taken back was never decided; only a decision can hold what the level allows.
 		const takenBack = move === 'withdraw' && clearance.state === 'asked';
 		const decidedBy = takenBack ? null : context.actor.id;
+		// Before anything changes: what the decider could see, not what comes of the decision.
+		const evidence = takenBack ? null : await evidenceNow(tx, context, episode);
 		await tx
 			.update(clearances)
 			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now })
@@ -131,7 +133,7 @@ function decide(
 			limits,
 			reviewOn,
 			reason: decision.reason,
-			evidence: takenBack ? null : await evidenceNow(tx, context, episode)
+			evidence
 		});
 		const { threadId, episodeId } = clearance;
 		const body = answerText(clearance.kind, state, { ...decision, limits });
@@ -173,7 +175,7 @@ async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: SeenDecision)
 	});
 }
 
-async function accessForMove(tx: Tx, context: PersonContext, id: string, move: ClearanceMove) {
+async function accessForMove(tx: Tx, context: PersonContext, id: string, move: DecidingMove) {
 	if (move !== 'withdraw') {
 		return accessClearance(tx, context.actor, id, 'clearance.decide');
 	}

@@ -1,10 +1,13 @@
 import { desc, eq, inArray } from 'drizzle-orm';
 import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
 import { toRfc3339 } from '$lib/domain/core/instant';
+import { localDateOf } from '$lib/domain/core/time';
 import type { EpisodeRow } from '../access/access';
 import type { Reader } from '../db';
 import { bedsideSessions, findings } from '../db/schema';
+import { env } from '../env';
 import type { EpisodeFacts } from '../episodes/facts';
+import { newestWoundNote } from '../wounds/queries';
 
 const SESSIONS_SHOWN = 3;
 
@@ -30,14 +33,18 @@ export async function gatherEvidence(
 				sessions.map((session) => session.id)
 			)
 		);
+	const { operation } = facts;
 	return {
 		at: toRfc3339(now),
 		procedure: facts.operation?.procedure ?? null,
 		approach: facts.operation?.approach ?? null,
+		operatedOn: operation && localDateOf(operation.operatedAt, env().hospital.zone),
 		postOpDay: facts.postOpDay,
 		level: episode.level,
 		betaBlocked: episode.betaBlocked,
 		rhythm: episode.rhythm,
+		wound: await newestWoundNote(db, episode.id),
+		precautions: facts.precautions,
 		sessions: sessions.map((session) => ({
 			id: session.id,
 			startedAt: toRfc3339(session.startedAt),

@@ -1,4 +1,4 @@
-import { desc, eq } from 'drizzle-orm';
+import { and, desc, eq, isNotNull, ne } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
@@ -9,8 +9,9 @@ import { toRfc3339 } from '$lib/domain/core/instant';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { accessClearance } from '../access/access';
 import type { Reader } from '../db';
-import { clearances, users } from '../db/schema';
+import { clearanceMoves, clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
+import { questionsOf } from './ask-back';
 import { hospitalToday } from './lapse';
 
 const decider = alias(users, 'decider');
@@ -49,9 +50,11 @@ export async function getClearance(
 	now: number
 ): Promise<ClearanceView> {
 	const { clearance, episode } = await accessClearance(db, person, id, 'thread.read');
-	const [[row], facts] = await Promise.all([
+	const [[row], facts, decidedOn, questions] = await Promise.all([
 		select(db).where(eq(clearances.id, id)),
-		factsOfOne(db, episode, now)
+		factsOfOne(db, episode, now),
+		evidenceOfDecision(db, id),
+		questionsOf(db, id)
 	]);
 	if (!row) {
 		throw new Error(`Clearance ${id} lost the person who asked.`);
@@ -61,8 +64,27 @@ export async function getClearance(
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
-		evidence: shownTo(person, episode.unitId, clearance.evidence)
+		evidence: shownTo(person, episode.unitId, clearance.evidence),
+		decidedOn: decidedOn && shownTo(person, episode.unitId, decidedOn),
+		questions
 	};
+}
+
+/** What was on record at the latest decision; null before any, and for those from before it was kept. */
+async function evidenceOfDecision(db: Reader, id: string): Promise<ClearanceEvidence | null> {
+	const [decided] = await db
+		.select({ evidence: clearanceMoves.evidence })
+		.from(clearanceMoves)
+		.where(
+			and(
+				eq(clearanceMoves.clearanceId, id),
+				ne(clearanceMoves.toState, 'asked'),
+				isNotNull(clearanceMoves.evidence)
+			)
+		)
+		.orderBy(desc(clearanceMoves.at), desc(clearanceMoves.id))
+		.limit(1);
+	return decided?.evidence ?? null;
 }
 
 /** The sessions in the evidence are as much a bedside record as the sessions' own page. */

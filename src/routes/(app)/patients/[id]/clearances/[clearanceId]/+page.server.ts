@@ -8,7 +8,7 @@ import type { PersonContext } from '$lib/server/context';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
-import { give, hold, withdraw, withhold } from './actions';
+import { answer, askBack, give, hold, withdraw, withhold } from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
@@ -21,18 +21,22 @@ export const load: PageServerLoad = (event) =>
 				give: await superValidate(fields, zod4(giveForm), { id: 'give', errors: false }),
 				withhold: await superValidate(zod4(refuseForm), { id: 'withhold' }),
 				hold: await superValidate(zod4(refuseForm), { id: 'hold' }),
-				withdraw: await superValidate(zod4(refuseForm), { id: 'withdraw' })
+				withdraw: await superValidate(zod4(refuseForm), { id: 'withdraw' }),
+				askBack: await superValidate(zod4(refuseForm), { id: 'askBack' }),
+				answer: await superValidate(zod4(refuseForm), { id: 'answer' })
 			},
 			keys: {
 				give: newFormKey(),
 				withhold: newFormKey(),
 				hold: newFormKey(),
-				withdraw: newFormKey()
+				withdraw: newFormKey(),
+				askBack: newFormKey(),
+				answer: newFormKey()
 			}
 		};
 	});
 
-export const actions: Actions = { give, withhold, hold, withdraw };
+export const actions: Actions = { give, withhold, hold, withdraw, askBack, answer };
 
 /** A clearance of another patient is not there: the nameboard above it would be the wrong one. */
 async function ofThisPatient(

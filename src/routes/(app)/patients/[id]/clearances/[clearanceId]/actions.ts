@@ -10,6 +10,7 @@ import {
 	withholdClearance,
 	type SeenDecision
 } from '$lib/server/clearances/actions';
+import { answerQuestion, askBack as askBackAbout } from '$lib/server/clearances/ask-back';
 import type { PersonContext } from '$lib/server/context';
 import { env } from '$lib/server/env';
 import { formAction } from '$lib/server/http/form-action';
@@ -58,6 +59,9 @@ function refusing(id: string, refuse: Refusal) {
 export const withhold = refusing('withhold', withholdClearance);
 export const hold = refusing('hold', holdClearance);
 export const withdraw = refusing('withdraw', withdrawClearance);
+
+export const askBack = refusing('askBack', askBackAbout);
+export const answer = refusing('answer', answerQuestion);
 
 function clearanceOf({ params }: RequestEvent): string {
 	return params.clearanceId ?? '';

@@ -1,0 +1,38 @@
+import type { WoundNoteInput } from '$lib/domain/wounds/forms';
+import { m } from '$lib/i18n/paraglide/messages';
+import { woundWords } from '$lib/i18n/wounds';
+import { accessEpisode, threadForDeed } from '../access/access';
+import type { PersonContext } from '../context';
+import { woundNotes } from '../db/schema';
+import { newId } from '../ids';
+import { write, type Written } from '../write';
+
+/** Note what the wound looks like and how the breastbone feels. The newest note is what a decider is shown. */
+export function noteWound(
+	context: PersonContext,
+	episodeId: string,
+	input: WoundNoteInput
+): Promise<Written<{ id: string }>> {
+	return write(context, 'wound.note', async (tx) => {
+		await accessEpisode(tx, context.actor, episodeId, 'wound.note');
+		const id = newId();
+		const { wound = null, sternum = null, note = null } = input;
+		await tx
+			.insert(woundNotes)
+			.values({ id, episodeId, wound, sternum, note, notedBy: context.actor.id, notedAt: context.now });
+		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const body = m.wounds_entry({ words: woundWords({ wound, sternum, note }) });
+		return {
+			result: { id },
+			audit: {
+				action: 'wound.noted',
+				objectKind: 'wound-note',
+				objectId: id,
+				episodeId,
+				detail: { wound, sternum }
+			},
+			entries: threadId ? [{ threadId, kind: 'note', body }] : [],
+			events: [{ topic: 'episode', kind: 'wound-noted', id: episodeId, episodeId }]
+		};
+	});
+}

@@ -1,0 +1,21 @@
+import { desc, eq } from 'drizzle-orm';
+import { toRfc3339 } from '$lib/domain/core/instant';
+import type { WoundNote } from '$lib/domain/wounds/views';
+import type { Reader } from '../db';
+import { users, woundNotes } from '../db/schema';
+
+/** The newest note about wound and breastbone; null when nobody has noted anything. */
+export async function newestWoundNote(db: Reader, episodeId: string): Promise<WoundNote | null> {
+	const [row] = await db
+		.select({ noted: woundNotes, by: users.name })
+		.from(woundNotes)
+		.innerJoin(users, eq(users.id, woundNotes.notedBy))
+		.where(eq(woundNotes.episodeId, episodeId))
+		.orderBy(desc(woundNotes.notedAt), desc(woundNotes.id))
+		.limit(1);
+	if (!row) {
+		return null;
+	}
+	const { wound, sternum, note, notedAt } = row.noted;
+	return { at: toRfc3339(notedAt), by: row.by, wound, sternum, note };
+}
