@@ -36,7 +36,7 @@ describe('settleTextBody', () => {
 		['', 'note is empty.'],
 		['   ', 'note is empty.'],
 		['x'.repeat(501), 'note has at most 500 characters.'],
-		[undefined, 'note is a text.']
+		[undefined, 'note is missing or no text.']
 	])('refuses %j', (note, message) => {
 		const { error } = settleTextBody.safeParse({ note });
 		expect(error?.issues.map((issue) => issue.message)).toEqual([message]);
