@@ -1,3 +1,4 @@
+import type { IncomingMessage } from 'node:http';
 import type { Context } from '$lib/server/context';
 
 declare global {
@@ -12,6 +13,10 @@ declare global {
 			requestId: string;
 			/** The live log's cursor from before the page was read. */
 			liveCursor: number;
+		}
+		interface Platform {
+			/** The request as Node has it; only the built server hands it over. */
+			req?: IncomingMessage;
 		}
 		interface Error {
 			message: string;

@@ -8,8 +8,9 @@ import { now } from '$lib/server/clock';
 import { newId } from '$lib/server/ids';
 import { liveCursor } from '$lib/server/live/log';
 import { log } from '$lib/server/log';
+import { clientAddress } from '$lib/server/http/address';
 import { secureHeaders } from '$lib/server/http/headers';
-import { countRequest } from '$lib/server/http/limits';
+import { countedFor, countRequest } from '$lib/server/http/limits';
 import { refuseForeignOrigin } from '$lib/server/http/origin';
 import { problemResponse } from '$lib/server/http/problem';
 import { startServer } from '$lib/server/start';
@@ -17,13 +18,10 @@ import { startServer } from '$lib/server/start';
 /** Runs once, before the first request is answered. */
 export const init: ServerInit = () => startServer();
 
-/** Asked often, by machines: health checks, files of the build, and the gateway, which does not send a refused status again. */
-const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
-
 const identify: Handle = async ({ event, resolve }) => {
 	const { cookies, request } = event;
 	// Read first: a connection that is gone after an await has no address any more.
-	const address = event.getClientAddress();
+	const address = clientAddress(event);
 	const bearer = /^Bearer (\S+)$/.exec(request.headers.get('authorization') ?? '')?.[1];
 	const cookie = bearer ? null : await personOfCookie(cookies);
 	const person = bearer ? await personOfToken(bearer) : (cookie?.person ?? null);
@@ -34,8 +32,10 @@ const identify: Handle = async ({ event, resolve }) => {
 			? (await personOfToken(bearer)) !== null
 			: cookie !== null && signInStillGood(cookie.signInId, now());
 	event.locals.context = { actor: person, now: now(), address, key: null };
-	if (!UNCOUNTED.test(event.url.pathname)) {
-		countRequest(person?.id ?? address, now());
+	const { pathname } = event.url;
+	const counted = countedFor({ method: request.method, pathname }, person?.id ?? null, address);
+	if (counted !== null) {
+		countRequest(counted, now());
 	}
 	refuseForeignOrigin(event, bearer !== undefined);
 	return resolve(event);

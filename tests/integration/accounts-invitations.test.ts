@@ -3,7 +3,9 @@ import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { becomeFirstAdmin, lookAtInvitation, takeUpInvitation } from '$lib/server/accounts/invitations';
 import { INVITATION_LIFE_MS } from '$lib/server/accounts/invite';
 import { createAccount, disableAccount, inviteAgain } from '$lib/server/accounts/manage';
+import { makeToken } from '$lib/server/accounts/own';
 import { passwordFits } from '$lib/server/auth/passwords';
+import { loadPerson, personOfToken } from '$lib/server/auth/people';
 import type { Context } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { audit, invitations, outbox, signIns, users } from '$lib/server/db/schema';
@@ -183,14 +185,18 @@ describe('an invitation', () => {
 		await expect(inviteAgain(admin(), id)).rejects.toMatchObject({ code: 'wrong-state' });
 	});
 
-	it('for a forgotten password ends the sign-ins of before', async () => {
+	it('for a forgotten password ends the sign-ins and tokens of before', async () => {
 		const { id, token } = await invited();
 		await takeUpInvitation(anybody(), token, PASSWORD);
 		await db()
 			.insert(signIns)
 			.values({ id: `sign-in-${id}`, userId: id, expiresAt: END / 1000, createdAt: HOSPITAL_NOW });
+		const person = await loadPerson(db(), id);
+		const program = (person && (await makeToken(contextOf(person), { name: 'ward clock' }))) ?? '';
+		expect((await personOfToken(program))?.id).toBe(id);
 		await inviteAgain(admin(), id);
 		await takeUpInvitation(anybody(), await newestToken(id), 'eight white egrets fly');
+		expect(await personOfToken(program)).toBeNull();
 		expect(await db().$count(signIns, eq(signIns.userId, id))).toBe(0);
 		const { passwordHash = null } = (await userById(id)) ?? {};
 		expect(await passwordFits(passwordHash, PASSWORD)).toBe(false);

@@ -12,14 +12,14 @@ import {
 } from '$lib/server/accounts/manage';
 import { makeToken, revokeToken, tokensOf } from '$lib/server/accounts/own';
 import { loadPerson, personOfToken } from '$lib/server/auth/people';
-import { personOfCookie, signInStillGood, startSignIn } from '$lib/server/auth/sign-ins';
+import { personOfCookie, signInStillGood } from '$lib/server/auth/sign-ins';
 import { digestSecret } from '$lib/server/auth/lucia';
 import type { PersonContext } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { audit, outbox, signIns, units, users } from '$lib/server/db/schema';
 import { listen, type LoggedEvent } from '$lib/server/live/hub';
 import { openStream, openStreams } from '$lib/server/live/stream';
-import { Jar } from '../support/cookies';
+import { signedIn } from '../support/cookies';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
 import { HOSPITAL_NOW, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
@@ -61,6 +61,8 @@ async function auditOf(objectId: string) {
 	const rows = await db().select().from(audit).where(eq(audit.objectId, objectId)).orderBy(desc(audit.seq));
 	return rows.map(({ action }) => action);
 }
+
+const newestAudit = (count: number) => db().select().from(audit).orderBy(desc(audit.seq)).limit(count);
 
 describe('managing accounts', () => {
 	const deeds: [string, (context: PersonContext) => Promise<unknown>][] = [
@@ -163,9 +165,7 @@ describe('disabling an account', () => {
 	it('ends its sign-ins and tokens at once, and tells its streams', async () => {
 		vi.useFakeTimers({ toFake: ['Date'], now: HOSPITAL_NOW });
 		const person = await nurse();
-		const [desk, phone] = [Jar.empty(), Jar.empty()];
-		await startSignIn(desk, person.id, HOSPITAL_NOW);
-		await startSignIn(phone, person.id, HOSPITAL_NOW);
+		const [desk, phone] = [await signedIn(person.id, HOSPITAL_NOW), await signedIn(person.id, HOSPITAL_NOW)];
 		const token = (await makeToken(contextOf(person), { name: 'ward clock' })) ?? '';
 		expect((await personOfCookie(desk))?.person.id).toBe(person.id);
 		expect((await personOfToken(token))?.id).toBe(person.id);
@@ -177,14 +177,38 @@ describe('disabling an account', () => {
 		expect(await personOfToken(token)).toBeNull();
 		expect(await db().$count(signIns, eq(signIns.userId, person.id))).toBe(0);
 		expect(heard).toMatchObject([{ topic: 'account', kind: 'disabled', userId: person.id }]);
-		expect(await auditOf(person.id)).toEqual(['account.disabled']);
+		expect(await auditOf(person.id)).toEqual(['account.sign-ins-ended', 'account.disabled']);
+		const [ended] = await newestAudit(1);
+		expect(ended).toMatchObject({
+			action: 'account.token-revoked',
+			objectKind: 'token',
+			actorId: hospital.people.admin.id,
+			detail: { by: 'disabled' }
+		});
+	});
+
+	it('is final for tokens: enabled again, the account needs new ones', async () => {
+		const person = await nurse();
+		const token = (await makeToken(contextOf(person), { name: 'ward clock' })) ?? '';
+		await disableAccount(admin(), person.id);
+		await enableAccount(admin(), person.id);
+		expect(await personOfToken(token)).toBeNull();
+		expect(await tokensOf(contextOf(person))).toEqual([]);
+	});
+
+	it('ends with its taking back a token that outlived a disabling of an older version', async () => {
+		const person = await nurse();
+		const token = (await makeToken(contextOf(person), { name: 'ward clock' })) ?? '';
+		await db().update(users).set({ disabledAt: HOSPITAL_NOW }).where(eq(users.id, person.id));
+		await enableAccount(admin(), person.id);
+		expect(await personOfToken(token)).toBeNull();
+		expect((await newestAudit(1))[0]).toMatchObject({ detail: { by: 'enabled' } });
 	});
 
 	it('ends its open stream without waiting for a heartbeat, and no other', async () => {
 		vi.useFakeTimers({ toFake: ['Date'], now: HOSPITAL_NOW });
 		const [person, other] = [await nurse(), await nurse()];
-		const jar = Jar.empty();
-		await startSignIn(jar, person.id, HOSPITAL_NOW);
+		const jar = await signedIn(person.id, HOSPITAL_NOW);
 		const digest = digestSecret(jar.get('ropewalk') ?? '');
 		const own = openStream(person, () => signInStillGood(digest, HOSPITAL_NOW), null).body?.getReader();
 		const others = openStream(other, () => Promise.resolve(true), null).body?.getReader();

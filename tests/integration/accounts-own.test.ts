@@ -1,14 +1,14 @@
-import { eq } from 'drizzle-orm';
+import { desc, eq } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import { changePassword, makeToken, revokeToken, tokensOf } from '$lib/server/accounts/own';
 import { digestSecret } from '$lib/server/auth/lucia';
 import { hashPassword, passwordFits } from '$lib/server/auth/passwords';
 import { personOfToken } from '$lib/server/auth/people';
-import { personOfCookie, startSignIn } from '$lib/server/auth/sign-ins';
+import { personOfCookie } from '$lib/server/auth/sign-ins';
 import { db } from '$lib/server/db';
-import { idempotencyKeys, personalTokens, signInFailures, users } from '$lib/server/db/schema';
-import { Jar } from '../support/cookies';
+import { audit, idempotencyKeys, personalTokens, signInFailures, users } from '$lib/server/db/schema';
+import { signedIn } from '../support/cookies';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
 import { HOSPITAL_NOW, addPerson, contextOf } from '../support/hospital';
@@ -42,23 +42,35 @@ async function fits(password: string): Promise<boolean> {
 	return passwordFits(user?.passwordHash ?? null, password);
 }
 
-async function signedIn() {
-	const jar = Jar.empty();
-	await startSignIn(jar, person.id, HOSPITAL_NOW);
+async function here() {
+	const jar = await signedIn(person.id, HOSPITAL_NOW);
 	return { jar, id: digestSecret(jar.get('ropewalk') ?? '') };
 }
 
 describe('changing the password', () => {
 	it('ends every other sign-in and keeps this one', async () => {
-		const [here, there] = [await signedIn(), await signedIn()];
-		await changePassword(contextOf(person), here.id, { current: PASSWORD, next: NEXT });
+		const [desk, phone] = [await here(), await here()];
+		await changePassword(contextOf(person), desk.id, { current: PASSWORD, next: NEXT });
 		expect([await fits(PASSWORD), await fits(NEXT)]).toEqual([false, true]);
-		expect((await personOfCookie(here.jar))?.person.id).toBe(person.id);
-		expect(await personOfCookie(there.jar)).toBeNull();
+		expect((await personOfCookie(desk.jar))?.person.id).toBe(person.id);
+		expect(await personOfCookie(phone.jar)).toBeNull();
+	});
+
+	it('ends every token, and each is on record', async () => {
+		const [first, second] = [
+			(await makeToken(contextOf(person), { name: 'ward clock' })) ?? '',
+			(await makeToken(contextOf(person), { name: 'day list' })) ?? ''
+		];
+		const ids = (await tokensOf(contextOf(person))).map(({ id }) => id);
+		await changePassword(contextOf(person), null, { current: PASSWORD, next: NEXT });
+		expect([await personOfToken(first), await personOfToken(second)]).toEqual([null, null]);
+		const rows = await db().select().from(audit).orderBy(desc(audit.seq)).limit(2);
+		expect(rows.map(({ action }) => action)).toEqual(['account.token-revoked', 'account.token-revoked']);
+		expect(rows.map(({ objectId }) => objectId).toSorted()).toEqual(ids.toSorted());
 	});
 
 	it('asks for the current one', async () => {
-		const { jar, id } = await signedIn();
+		const { jar, id } = await here();
 		const refused = changePassword(contextOf(person), id, { current: 'not it', next: NEXT });
 		await expect(refused).rejects.toMatchObject({
 			code: 'invalid',

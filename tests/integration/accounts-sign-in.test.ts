@@ -1,4 +1,4 @@
-import { desc, eq } from 'drizzle-orm';
+import { desc, eq, sql } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import { Problem } from '$lib/domain/core/errors';
 import { signIn, signOut } from '$lib/server/accounts/sign-in';
@@ -94,6 +94,17 @@ describe('signing in', () => {
 		});
 	});
 
+	it('stands with its line on record, or not at all', async () => {
+		await db().run(sql`create trigger no_line before insert on audit when new.action = 'account.signed-in'
+			begin select raise(abort, 'no room'); end`);
+		const before = await db().$count(signIns);
+		const jar = Jar.empty();
+		const input = { email: 'una@saltmarsh.example', password: PASSWORD };
+		await expect(signIn(at(HOSPITAL_NOW), jar, input)).rejects.toThrow();
+		await db().run(sql`drop trigger no_line`);
+		expect([await db().$count(signIns), jar.getAll()]).toEqual([before, []]);
+	});
+
 	it('makes a new token each time and ends the one before', async () => {
 		const jar = Jar.empty();
 		const input = { email: 'una@saltmarsh.example', password: PASSWORD };
@@ -157,6 +168,31 @@ describe('guessing', () => {
 		expect((await attempt('una', PASSWORD, later)).user?.id).toBe(ids.una);
 		await fail(4, later);
 		expect((await attempt('una', PASSWORD, later)).user?.id).toBe(ids.una);
+	});
+
+	it('with many tries at once gets no further than one after the other', async () => {
+		const many = await Promise.all(Array.from({ length: 30 }, () => attempt('una', 'a guess')));
+		const codes = many.map(({ refused }) => refused?.code);
+		expect(codes.filter((code) => code === 'sign-in-failed')).toHaveLength(5);
+		expect(codes.filter((code) => code === 'too-many')).toHaveLength(25);
+	});
+
+	it('costs nobody anything while everybody is right, and leaves no count behind', async () => {
+		const one = await Promise.all(Array.from({ length: 4 }, () => attempt('una', PASSWORD)));
+		const other = await Promise.all(Array.from({ length: 4 }, () => attempt('bela', PASSWORD)));
+		expect([...one, ...other].filter(({ refused }) => refused !== null)).toEqual([]);
+		const counts = await db().select({ count: signInFailures.count }).from(signInFailures);
+		expect(counts).toEqual([{ count: 0 }]);
+	});
+
+	it('cannot be hidden from its address by signing in between', async () => {
+		for (let n = 0; n < 20; n += 1) {
+			await attempt(`nobody${n}`, 'a guess');
+		}
+		expect((await attempt('bela', PASSWORD, HOSPITAL_NOW + 1_000)).user?.id).toBe(ids.bela);
+		await attempt('nobody20', 'a guess', HOSPITAL_NOW + 1_000);
+		const { refused } = await attempt('bela', PASSWORD, HOSPITAL_NOW + 1_001);
+		expect(refused?.extra.retryAfterSeconds).toBe(2);
 	});
 
 	it('says nothing about whether the account exists', async () => {

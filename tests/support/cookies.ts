@@ -1,4 +1,6 @@
 import type { Cookies } from '@sveltejs/kit';
+import { keepInBrowser, startSignIn } from '$lib/server/auth/sign-ins';
+import { transact } from '$lib/server/db';
 
 /** The cookies of one browser, as far as signing in needs them. */
 export class Jar {
@@ -28,4 +30,11 @@ export class Jar {
 	static empty(): Jar & Cookies {
 		return new Jar();
 	}
+}
+
+/** A browser in which this person has signed in, without a line on record. */
+export async function signedIn(userId: string, at: number): Promise<Jar & Cookies> {
+	const jar = Jar.empty();
+	keepInBrowser(jar, await transact((tx) => startSignIn(tx, userId, at)));
+	return jar;
 }

@@ -41,7 +41,7 @@ export interface ProductOptions {
 const READY_LIMIT_MS = 120_000;
 
 /** Variables of a person's own server, which a test must not touch. */
-const LEFT_OUT = ['DATABASE_URL', 'DATA_DIR', 'HOST', 'ORIGIN', 'PORT', 'PUBLIC_URL'];
+const LEFT_OUT = ['ADDRESS_HEADER', 'DATABASE_URL', 'DATA_DIR', 'HOST', 'ORIGIN', 'PORT', 'PUBLIC_URL'];
 
 /**
  * Starts a product of its own on free ports, with `DEMO=1` and `TEST_CLOCK=1`. Should the test process be killed,

@@ -7,6 +7,7 @@ export const AUDIT_ACTIONS = [
 	'account.password-set',
 	'account.signed-in',
 	'account.sign-in-failed',
+	'account.sign-ins-ended',
 	'account.signed-out',
 	'account.senior-set',
 	'account.token-made',

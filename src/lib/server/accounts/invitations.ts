@@ -3,12 +3,13 @@ import type { z } from 'zod';
 import type { Person } from '$lib/domain/access/actor';
 import type { firstAdminBody } from '$lib/domain/accounts/forms';
 import { Problem } from '$lib/domain/core/errors';
+import { endCredentials } from '../auth/credentials';
 import { forgetFailures } from '../auth/failures';
 import { hashPassword } from '../auth/passwords';
 import { loadPerson } from '../auth/people';
 import type { Context } from '../context';
 import { db, type Reader, type Tx } from '../db';
-import { invitations, signIns, users } from '../db/schema';
+import { invitations, users } from '../db/schema';
 import { newId } from '../ids';
 import { linkDigest } from '../links';
 import { write } from '../write';
@@ -76,7 +77,7 @@ export async function becomeFirstAdmin(
 }
 
 /**
- * Somebody invited chooses a password, for a new account or instead of a forgotten one. Sign-ins of before end.
+ * Somebody invited chooses a password, for a new account or instead of a forgotten one. Sign-ins and tokens of before end.
  * @returns the account's identifier
  * @throws Problem `not-found` for a link that does not work any more
  */
@@ -89,14 +90,14 @@ export async function takeUpInvitation(context: Context, token: string, password
 	await write({ ...context, actor: person, key: null }, 'anyone', async (tx) => {
 		await takeUp(tx, token, context.now);
 		await tx.update(users).set({ passwordHash }).where(eq(users.id, user.id));
-		await tx.delete(signIns).where(eq(signIns.userId, user.id));
+		await forgetFailures(tx, user.email);
+		const ended = await endCredentials(tx, user.id, context.now, 'password-set');
 		return {
 			result: null,
-			audit: passwordSet(user.id),
+			audit: [passwordSet(user.id), ...ended],
 			events: [accountEvent('password-set', user.id)]
 		};
 	});
-	await forgetFailures(user.email);
 	return user.id;
 }
 

@@ -1,14 +1,15 @@
 import { and, eq, inArray, isNotNull, isNull } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { createAccountBody, createUnitBody } from '$lib/domain/accounts/forms';
-import type { AuditAction } from '$lib/domain/audit/actions';
+import type { AuditAction, AuditEvent } from '$lib/domain/audit/actions';
 import type { Role } from '$lib/domain/core/codes';
 import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
 import { MAY_BE_SENIOR } from '$lib/domain/bedside/sign-off';
 import { PhoneError, normalisePhone } from '$lib/domain/messages/phone';
+import { endCredentials } from '../auth/credentials';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { signIns, units, users, userUnits } from '../db/schema';
+import { units, users, userUnits } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
 import { write, type Change, type Written } from '../write';
@@ -75,13 +76,16 @@ export function disableAccount(context: PersonContext, userId: string): Made {
 		if (!disabled) {
 			throw new Problem('wrong-state', 'The account is disabled already.', { state: 'disabled' });
 		}
-		await tx.delete(signIns).where(eq(signIns.userId, userId));
 		await endInvitations(tx, userId, context.now);
-		return changed('account.disabled', 'disabled', userId);
+		const ended = await endCredentials(tx, userId, context.now, 'disabled');
+		return changed('account.disabled', 'disabled', userId, { ended });
 	});
 }
 
-/** Let the owner of a disabled account sign in again, with the password they had. */
+/**
+ * Let the owner of a disabled account sign in again, with the password they had. Nothing else of before works: a
+ * database of an older version can hold tokens that outlived the disabling.
+ */
 export function enableAccount(context: PersonContext, userId: string): Made {
 	return write(context, 'account.manage', async (tx) => {
 		await accountById(tx, userId);
@@ -93,7 +97,8 @@ export function enableAccount(context: PersonContext, userId: string): Made {
 		if (!enabled) {
 			throw new Problem('wrong-state', 'The account is enabled already.', { state: 'enabled' });
 		}
-		return changed('account.enabled', 'enabled', userId);
+		const ended = await endCredentials(tx, userId, context.now, 'enabled');
+		return changed('account.enabled', 'enabled', userId, { ended });
 	});
 }
 
@@ -105,7 +110,7 @@ export function setUnits(context: PersonContext, userId: string, unitIds: string
 		await requireUnits(tx, unitIds);
 		await tx.delete(userUnits).where(eq(userUnits.userId, userId));
 		await insertMemberships(tx, userId, unitIds);
-		return changed('account.units-set', 'units-set', userId, { units: unitIds.length });
+		return changed('account.units-set', 'units-set', userId, { detail: { units: unitIds.length } });
 	});
 }
 
@@ -197,6 +202,15 @@ function audited(action: AuditAction, objectId: string, detail: Detail | null = 
 	return { action, objectKind: 'account', objectId, ...(detail ? { detail } : {}) };
 }
 
-function changed(action: AuditAction, kind: string, id: string, detail?: Detail): Change<{ id: string }> {
-	return { result: { id }, audit: audited(action, id, detail), events: [accountEvent(kind, id)] };
+function changed(
+	action: AuditAction,
+	kind: string,
+	id: string,
+	{ detail = null, ended = [] }: { detail?: Detail | null; ended?: AuditEvent[] } = {}
+): Change<{ id: string }> {
+	return {
+		result: { id },
+		audit: [audited(action, id, detail), ...ended],
+		events: [accountEvent(kind, id)]
+	};
 }

@@ -1,13 +1,14 @@
-import { and, desc, eq, isNull, ne } from 'drizzle-orm';
+import { and, desc, eq, isNull } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { createTokenBody } from '$lib/domain/accounts/forms';
 import { invalidField, notFound } from '$lib/domain/core/errors';
-import { countFailure, forgetFailures, refuseWhileBlocked } from '../auth/failures';
+import { endCredentials } from '../auth/credentials';
+import { countAttempt, forgetAttempt } from '../auth/failures';
 import { digestSecret } from '../auth/lucia';
 import { hashPassword, passwordFits } from '../auth/passwords';
 import type { PersonContext } from '../context';
 import { db } from '../db';
-import { personalTokens, signIns, users } from '../db/schema';
+import { personalTokens, users } from '../db/schema';
 import { newId, newSecret } from '../ids';
 import { write } from '../write';
 import { accountEvent } from './event';
@@ -31,7 +32,7 @@ export function tokensOf({ actor }: PersonContext): Promise<TokenLine[]> {
 
 /**
  * Choose another password. The current one is asked for, and wrong tries count as failed sign-ins: who finds an
- * open screen must not be able to guess it there. All other sign-ins of the account end.
+ * open screen must not be able to guess it there. All other sign-ins of the account end, and its tokens.
  * @param signInId the browser's own sign-in, which goes on; null ends them all
  * @throws Problem `invalid` at `/current`, `too-many`
  */
@@ -45,23 +46,21 @@ export async function changePassword(
 	if (!user) {
 		throw notFound('account');
 	}
-	await refuseWhileBlocked(user.email, address, now);
+	await countAttempt(user.email, address, now);
 	if (!(await passwordFits(user.passwordHash, current))) {
-		await countFailure(user.email, address, now);
 		throw invalidField('/current', 'This is not your current password.');
 	}
 	const passwordHash = await hashPassword(next);
 	await write({ ...context, key: null }, 'own-account.change', async (tx) => {
 		await tx.update(users).set({ passwordHash }).where(eq(users.id, actor.id));
-		const others = signInId === null ? undefined : ne(signIns.id, signInId);
-		await tx.delete(signIns).where(and(eq(signIns.userId, actor.id), others));
+		await forgetAttempt(tx, user.email, address);
+		const ended = await endCredentials(tx, actor.id, now, 'password-set', signInId);
 		return {
 			result: null,
-			audit: { action: 'account.password-set', objectKind: 'account', objectId: actor.id },
+			audit: [{ action: 'account.password-set', objectKind: 'account', objectId: actor.id }, ...ended],
 			events: [accountEvent('password-set', actor.id)]
 		};
 	});
-	await forgetFailures(user.email);
 }
 
 /**

@@ -2,13 +2,12 @@ import type { Cookies } from '@sveltejs/kit';
 import { eq } from 'drizzle-orm';
 import type { Role } from '$lib/domain/core/codes';
 import { Problem } from '$lib/domain/core/errors';
-import { appendAudit } from '../audit/append';
-import { countFailure, forgetFailures, refuseWhileBlocked } from '../auth/failures';
+import { countAttempt, forgetAttempt } from '../auth/failures';
 import { passwordFits } from '../auth/passwords';
 import { unitsOf, type UnitOfPerson } from '../auth/people';
-import { endSignIn, startSignIn } from '../auth/sign-ins';
+import { endSignIn, forgetInBrowser, keepInBrowser, startSignIn } from '../auth/sign-ins';
 import type { Context } from '../context';
-import { db, transact } from '../db';
+import { db, type Tx } from '../db';
 import { users } from '../db/schema';
 import { write } from '../write';
 import { accountEvent } from './event';
@@ -30,45 +29,69 @@ export async function signIn(
 	cookies: Cookies,
 	input: { email: string; password: string }
 ): Promise<SignedIn> {
-	await refuseWhileBlocked(input.email, context.address, context.now);
+	await countAttempt(input.email, context.address, context.now);
 	const [user] = await db().select().from(users).where(eq(users.email, input.email));
 	const usable = user && user.disabledAt === null ? user : null;
 	if (!(await passwordFits(usable?.passwordHash ?? null, input.password)) || !usable) {
-		await countFailure(input.email, context.address, context.now);
-		await recordSignIn(context, user?.id ?? null, 'refused');
+		await recordRefusal(context, user?.id ?? null);
 		throw new Problem('sign-in-failed');
 	}
-	await forgetFailures(input.email);
-	await enterAs(context, cookies, usable.id);
+	await enter(context, cookies, usable.id, (tx) => forgetAttempt(tx, input.email, context.address));
 	return { id: usable.id, name: usable.name, role: usable.role, units: await unitsOf(db(), usable.id) };
 }
 
-/** Sign somebody in who has just proved who they are, by password or by their invitation. */
-export async function enterAs(context: Context, cookies: Cookies, userId: string): Promise<void> {
-	// A new token at each sign-in: one that was planted in the browser before is worth nothing.
-	await endSignIn(cookies);
-	await startSignIn(cookies, userId, context.now);
-	await recordSignIn(context, userId, 'done');
+/** Sign somebody in who has just proved by their invitation who they are. */
+export function enterAs(context: Context, cookies: Cookies, userId: string): Promise<void> {
+	return enter(context, cookies, userId, () => Promise.resolve());
+}
+
+/** The sign-in and its line on record stand together, or neither does. */
+async function enter(
+	context: Context,
+	cookies: Cookies,
+	userId: string,
+	also: (tx: Tx) => Promise<void>
+): Promise<void> {
+	let token = '';
+	await write({ ...context, key: null }, 'anyone', async (tx) => {
+		await also(tx);
+		// A new token at each sign-in: one that was planted in the browser before is worth nothing.
+		await endSignIn(tx, cookies);
+		token = await startSignIn(tx, userId, context.now);
+		return {
+			result: null,
+			audit: { action: 'account.signed-in', objectKind: 'account', objectId: userId }
+		};
+	});
+	keepInBrowser(cookies, token);
 }
 
 /** End this browser's sign-in. Its other tabs hear of it and look whether they may go on listening. */
 export async function signOut(context: Context, cookies: Cookies): Promise<void> {
-	await endSignIn(cookies);
 	const { actor } = context;
 	if (actor?.kind === 'person') {
-		await write({ ...context, key: null }, 'anyone', () =>
-			Promise.resolve({
+		await write({ ...context, key: null }, 'anyone', async (tx) => {
+			await endSignIn(tx, cookies);
+			return {
 				result: null,
 				audit: { action: 'account.signed-out', objectKind: 'account', objectId: actor.id },
 				events: [accountEvent('signed-out', actor.id)]
-			})
-		);
+			};
+		});
 	}
+	forgetInBrowser(cookies);
 }
 
-function recordSignIn(context: Context, userId: string | null, outcome: 'done' | 'refused'): Promise<void> {
-	const action = outcome === 'done' ? 'account.signed-in' : 'account.sign-in-failed';
-	return transact((tx) =>
-		appendAudit(tx, context, [{ action, objectKind: 'account', objectId: userId ?? '-', outcome }])
+async function recordRefusal(context: Context, userId: string | null): Promise<void> {
+	await write({ ...context, key: null }, 'anyone', () =>
+		Promise.resolve({
+			result: null,
+			audit: {
+				action: 'account.sign-in-failed',
+				objectKind: 'account',
+				objectId: userId ?? '-',
+				outcome: 'refused'
+			}
+		})
 	);
 }

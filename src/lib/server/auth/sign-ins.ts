@@ -1,8 +1,8 @@
 import type { Cookies } from '@sveltejs/kit';
-import { lt } from 'drizzle-orm';
+import { eq, lte } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { now } from '../clock';
-import { db } from '../db';
+import { db, type Tx } from '../db';
 import { signIns } from '../db/schema';
 import { env } from '../env';
 import { newSecret } from '../ids';
@@ -18,11 +18,25 @@ function cookieOptions() {
 	return { path: '/', httpOnly: true, sameSite: 'lax', secure: env().secure } as const;
 }
 
-/** Make a sign-in for an account and put its token into the cookie. */
-export async function startSignIn(cookies: Cookies, userId: string, at: number): Promise<void> {
+/**
+ * Make a sign-in for an account. The cookie is set with {@link keepInBrowser} once the transaction stands.
+ * @returns the token, of which the database keeps only a digest
+ */
+export async function startSignIn(tx: Tx, userId: string, at: number): Promise<string> {
 	const token = newSecret();
-	await lucia().createSession(userId, { createdAt: at }, { sessionId: digestSecret(token) });
+	const expiresAt = Math.floor((at + SIGN_IN_MS) / 1000);
+	await tx.insert(signIns).values({ id: digestSecret(token), userId, expiresAt, createdAt: at });
+	return token;
+}
+
+/** Put the token of a sign-in into the browser's cookie. */
+export function keepInBrowser(cookies: Cookies, token: string): void {
 	cookies.set(cookieName(), token, { ...cookieOptions(), maxAge: SIGN_IN_MS / 1000 });
+}
+
+/** Take the cookie out of the browser, after its sign-in has ended. */
+export function forgetInBrowser(cookies: Cookies): void {
+	cookies.delete(cookieName(), cookieOptions());
 }
 
 /**
@@ -46,17 +60,12 @@ export async function personOfCookie(cookies: Cookies): Promise<{ person: Person
 	return person && { person, signInId: session.id };
 }
 
-export async function endSignIn(cookies: Cookies): Promise<void> {
+/** End the sign-in behind a browser's cookie, if there is one. */
+export async function endSignIn(tx: Tx, cookies: Cookies): Promise<void> {
 	const token = cookies.get(cookieName());
 	if (token) {
-		await lucia().invalidateSession(digestSecret(token));
+		await tx.delete(signIns).where(eq(signIns.id, digestSecret(token)));
 	}
-	cookies.delete(cookieName(), cookieOptions());
-}
-
-/** End every sign-in of an account: after disabling it, or after its password changed. */
-export async function endAllSignIns(userId: string): Promise<void> {
-	await lucia().invalidateUserSessions(userId);
 }
 
 /** Is the sign-in behind an open stream still good? Checked at each heartbeat. */
@@ -65,8 +74,14 @@ export async function signInStillGood(signInId: string, at: number): Promise<boo
 	return session !== null && session.createdAt + SIGN_IN_MS > at;
 }
 
-export async function removeEndedSignIns(at: number): Promise<void> {
-	await db()
+/**
+ * Remove the sign-ins that are over by then.
+ * @returns how many
+ */
+export async function removeEndedSignIns(at: number): Promise<number> {
+	const ended = await db()
 		.delete(signIns)
-		.where(lt(signIns.createdAt, at - SIGN_IN_MS));
+		.where(lte(signIns.createdAt, at - SIGN_IN_MS))
+		.returning({ id: signIns.id });
+	return ended.length;
 }

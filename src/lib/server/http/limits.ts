@@ -7,8 +7,33 @@ const REQUESTS_PER_WINDOW = 100;
 
 const windows = new Map<string, { until: number; count: number }>();
 
+/** Asked often, by machines: health checks, files of the build, and the gateway, which does not send a refused status again. */
+const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
+/** The link of a call for help. Longer ones than ours lead nowhere and are cut, so that they fill no memory. */
+const CALL = /^\/t\/([^/]{1,32})/;
+
 /**
- * Count a request of a person or an address.
+ * For whom a request counts: the link of a call for help, else the person, else the address; null for what is
+ * never refused. A whole hospital can stand behind one address, and its nurses must be able to look at a call and
+ * take it; the link is what tells them apart.
+ */
+export function countedFor(
+	{ method, pathname }: { method: string; pathname: string },
+	personId: string | null,
+	address: string | null
+): string | null {
+	if (UNCOUNTED.test(pathname)) {
+		return null;
+	}
+	const link = CALL.exec(pathname)?.[1];
+	if (link === undefined) {
+		return personId ?? address ?? 'nobody';
+	}
+	return method === 'POST' ? null : `link:${link}`;
+}
+
+/**
+ * Count a request of whoever {@link countedFor} names.
  * @throws Problem `too-many` with the seconds to wait
  */
 export function countRequest(who: string, now: number): void {

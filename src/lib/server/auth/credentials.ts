@@ -1,0 +1,44 @@
+import { and, eq, isNull, ne } from 'drizzle-orm';
+import type { AuditEvent } from '$lib/domain/audit/actions';
+import type { Tx } from '../db';
+import { personalTokens, signIns } from '../db/schema';
+
+/**
+ * End everything that lets somebody in as this account: its sign-ins and its programs' tokens. Whoever had the old
+ * password, or held the account before it was disabled, may have made either.
+ * @param why what goes on record beside each
+ * @param keep the one sign-in that goes on, where the person is at the screen; null ends all
+ * @returns what goes on record, to follow the change that it belongs to
+ */
+export async function endCredentials(
+	tx: Tx,
+	userId: string,
+	now: number,
+	why: 'password-set' | 'disabled' | 'enabled',
+	keep: string | null = null
+): Promise<AuditEvent[]> {
+	const others = keep === null ? undefined : ne(signIns.id, keep);
+	const ended = await tx
+		.delete(signIns)
+		.where(and(eq(signIns.userId, userId), others))
+		.returning({ id: signIns.id });
+	const revoked = await tx
+		.update(personalTokens)
+		.set({ revokedAt: now })
+		.where(and(eq(personalTokens.userId, userId), isNull(personalTokens.revokedAt)))
+		.returning({ id: personalTokens.id });
+	const tokens = revoked.map(({ id }) => ({
+		action: 'account.token-revoked' as const,
+		objectKind: 'token',
+		objectId: id,
+		detail: { by: why }
+	}));
+	if (ended.length === 0) {
+		return tokens;
+	}
+	const count = { by: why, count: ended.length };
+	return [
+		{ action: 'account.sign-ins-ended', objectKind: 'account', objectId: userId, detail: count },
+		...tokens
+	];
+}
