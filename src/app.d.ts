@@ -1,4 +1,5 @@
 import type { IncomingMessage } from 'node:http';
+import type { KeptForm } from '$lib/domain/accounts/kept';
 import type { Context } from '$lib/server/context';
 
 declare global {
@@ -24,6 +25,8 @@ declare global {
 			code?: string;
 			/** To quote when something went wrong on our side. */
 			id?: string;
+			/** A form that came without script and without a sign-in; the page keeps it. */
+			kept?: KeptForm;
 		}
 	}
 }

@@ -41,10 +41,14 @@ const identify: Handle = async ({ event, resolve }) => {
 	return resolve(event);
 };
 
-/** Pages behind the sign-in send others to it; the API answers 401 by itself. */
+/**
+ * Pages behind the sign-in send others to it; the API answers 401 by itself, and so does a form, which keeps what was
+ * typed: see `formAction()`.
+ */
 const guard: Handle = async ({ event, resolve }) => {
 	const inside = event.route.id?.startsWith('/(app)') ?? false;
-	if (inside && event.locals.context.actor?.kind !== 'person') {
+	const reads = event.request.method === 'GET' || event.request.method === 'HEAD';
+	if (inside && reads && event.locals.context.actor?.kind !== 'person') {
 		redirect(303, routes.signIn(event.url.pathname + event.url.search));
 	}
 	// Taken before the page reads anything: what happens from here on comes by the stream.

@@ -2,6 +2,7 @@
 export const routes = {
 	front: () => '/',
 	signIn: (next?: string) => (next ? `/sign-in?next=${encodeURIComponent(next)}` : '/sign-in'),
+	signInAndSend: () => '/sign-in/send',
 	signOut: () => '/sign-out',
 	invitation: (token: string) => `/invite/${token}`,
 	looseEnds: () => '/loose-ends',

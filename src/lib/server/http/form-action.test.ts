@@ -96,8 +96,23 @@ describe('a form action', () => {
 	});
 
 	it('asks for a sign-in instead of losing what was typed', async () => {
-		const answer = answerOf(() => Promise.resolve(''), { actor: null });
-		await expect(answer).rejects.toMatchObject({ status: 401, body: { code: 'not-signed-in' } });
+		const given = { actor: null, search: '?/change', fields: { note: 'no', key: 'k1' } };
+		const answer = answerOf(() => Promise.resolve(''), given);
+		const kept = {
+			to: '/account?/change',
+			fields: [
+				['note', 'no'],
+				['key', 'k1']
+			]
+		};
+		await expect(answer).rejects.toMatchObject({ status: 401, body: { code: 'not-signed-in', kept } });
+	});
+
+	it('sends nothing back to a page whose script keeps it', async () => {
+		const event = posting({ actor: null });
+		event.request.headers.set('x-sveltekit-action', 'true');
+		const answer = formAction({ schema, run: () => Promise.resolve('') })(event);
+		await expect(answer).rejects.toSatisfy(({ body }) => body.code === 'not-signed-in' && !('kept' in body));
 	});
 
 	it('lets a redirect and a bug pass', async () => {

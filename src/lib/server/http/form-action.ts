@@ -1,6 +1,7 @@
 import { error, fail, type ActionFailure, type RequestEvent } from '@sveltejs/kit';
 import { message, setError, superValidate, type Infer, type SuperValidated } from 'sveltekit-superforms';
 import { zod4, type ZodValidationSchema } from 'sveltekit-superforms/adapters';
+import { keptForm } from '$lib/domain/accounts/kept';
 import { Problem, PROBLEMS, type ProblemCode } from '$lib/domain/core/errors';
 import { requirePerson, type Context, type PersonContext } from '../context';
 import { withFormKey } from './page';
@@ -25,7 +26,10 @@ interface Acting<S extends ZodValidationSchema, C extends Context> {
 	run(context: C, fields: Fields<S>, event: RequestEvent): Promise<string>;
 }
 
-/** An action for the person who is signed in. Without one the form says so and keeps what was typed. */
+/**
+ * An action for the person who is signed in. Without one the form says so and keeps what was typed: in the page where
+ * there is script, else in the page that answers, which asks for the sign-in and sends the form on.
+ */
 export function formAction<S extends ZodValidationSchema>(spec: Acting<S, PersonContext>) {
 	return (event: RequestEvent) => acting(spec, event, requirePerson);
 }
@@ -41,6 +45,7 @@ async function acting<S extends ZodValidationSchema, C extends Context>(
 	narrow: (context: Context) => C
 ): Promise<Answer<S>> {
 	const posted = await postedFields(event);
+	const context = orSignIn(() => narrow(event.locals.context), event, posted, spec.secrets ?? []);
 	const form: Posted<S> = await superValidate(posted, zod4(spec.schema), spec.id ? { id: spec.id } : {});
 	const fields = form.data;
 	form.data = without(fields, spec.secrets ?? []);
@@ -48,7 +53,6 @@ async function acting<S extends ZodValidationSchema, C extends Context>(
 		return fail(PROBLEMS.invalid.status, { form });
 	}
 	try {
-		const context = narrow(event.locals.context);
 		const key = posted.get('key');
 		const keyed = typeof key === 'string' && key ? withFormKey(context, event, key, form.data) : context;
 		return message(form, await spec.run(keyed, fields, event));
@@ -68,6 +72,29 @@ async function postedFields({ request }: RequestEvent): Promise<FormData> {
 	}
 }
 
+/** The context, or the answer 401 with the form in it, where no script keeps it. */
+function orSignIn<C>(
+	narrowed: () => C,
+	event: RequestEvent,
+	posted: FormData,
+	secrets: readonly string[]
+): C {
+	try {
+		return narrowed();
+	} catch (thrown) {
+		if (!(thrown instanceof Problem)) {
+			throw thrown;
+		}
+		const { request, url } = event;
+		const scripted = request.headers.get('x-sveltekit-action') === 'true';
+		error(thrown.status, {
+			message: thrown.detail,
+			code: thrown.code,
+			...(scripted ? {} : { kept: keptForm(url.pathname + url.search, posted, secrets) })
+		});
+	}
+}
+
 /** Blank the secret fields, so that they neither travel back nor stand in the page. */
 function without<T extends Record<string, unknown>>(fields: T, secrets: readonly string[]): T {
 	return { ...fields, ...Object.fromEntries(secrets.map((name) => [name, ''])) };
@@ -81,9 +108,6 @@ function refuse<S extends ZodValidationSchema, C extends Context>(
 	event: RequestEvent
 ): Answer<S> {
 	const { status } = PROBLEMS[problem.code];
-	if (problem.code === 'not-signed-in') {
-		error(status, { message: problem.detail, code: problem.code });
-	}
 	const { retryAfterSeconds, errors = [] } = problem.extra;
 	if (retryAfterSeconds !== undefined) {
 		event.setHeaders({ 'retry-after': String(retryAfterSeconds) });
