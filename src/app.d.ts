@@ -12,6 +12,8 @@ declare global {
 			/** Is the sign-in or token of this request good at the moment of asking? For what outlives a request. */
 			credentialStillGood: () => Promise<boolean>;
 			requestId: string;
+			/** A form of this request that found nobody signed in; the error page shows it. */
+			kept?: KeptForm;
 			/** The live log's cursor from before the page was read. */
 			liveCursor: number;
 		}

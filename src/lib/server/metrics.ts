@@ -1,8 +1,9 @@
 import { count, eq } from 'drizzle-orm';
-import { collectDefaultMetrics, Gauge, Registry } from 'prom-client';
+import { collectDefaultMetrics, Counter, Gauge, Registry } from 'prom-client';
 import { db } from './db';
 import { escalations, outbox } from './db/schema';
 import { MESSAGE_STATES } from './db/schema/messages';
+import { droppedListeners } from './live/hub';
 import { openStreams } from './live/stream';
 
 /** Figures about the process and the work that waits. They are counts alone: no name, unit or address. */
@@ -37,6 +38,12 @@ function newRegistry(): Registry {
 			this.set(openStreams());
 		}
 	});
+	counted(
+		made,
+		'ropewalk_live_listeners_dropped_total',
+		'Live listeners dropped because they threw.',
+		droppedListeners
+	);
 	new Gauge({
 		name: 'ropewalk_escalations_untaken',
 		help: 'Escalations that nobody has taken yet.',
@@ -46,4 +53,17 @@ function newRegistry(): Registry {
 		}
 	});
 	return made;
+}
+
+/** A counter that is kept elsewhere and read at the moment of asking. */
+function counted(registry: Registry, name: string, help: string, read: () => number): void {
+	new Counter({
+		name,
+		help,
+		registers: [registry],
+		collect() {
+			this.reset();
+			this.inc(read());
+		}
+	});
 }

@@ -50,13 +50,22 @@ function stopOnSignal(lock: { release(): void }): void {
 		process.once(signal, () => {
 			log().info({ signal }, 'stopping');
 			endAllStreams();
-			void stopWork();
+			void stopped();
 		});
 	}
 	process.once('sveltekit:shutdown', () => {
-		void stopWork().then(() => {
+		void stopped().then(() => {
 			closeDatabase();
 			lock.release();
 		});
 	});
+}
+
+/** The work has stopped. A stop that fails is logged and keeps neither database nor lock open. */
+async function stopped(): Promise<void> {
+	try {
+		await stopWork();
+	} catch (error) {
+		log().error({ err: error }, 'work did not stop cleanly');
+	}
 }

@@ -1,6 +1,14 @@
+import { error } from '@sveltejs/kit';
+import { Problem } from '$lib/domain/core/errors';
 import { requirePerson } from '$lib/server/context';
 import { frameOf } from '$lib/server/frame';
 import type { LayoutServerLoad } from './$types';
 
-export const load: LayoutServerLoad = ({ locals }) =>
-	frameOf(requirePerson(locals.context), locals.liveCursor);
+export const load: LayoutServerLoad = ({ locals }) => {
+	// The guard has led away whoever looks; only a form comes so far with nobody signed in, and is kept.
+	if (locals.context.actor?.kind !== 'person') {
+		const { status, detail, code } = new Problem('not-signed-in');
+		error(status, { message: detail, code, ...(locals.kept && { kept: locals.kept }) });
+	}
+	return frameOf(requirePerson(locals.context), locals.liveCursor);
+};

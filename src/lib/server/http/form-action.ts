@@ -87,11 +87,11 @@ function orSignIn<C>(
 		}
 		const { request, url } = event;
 		const scripted = request.headers.get('x-sveltekit-action') === 'true';
-		error(thrown.status, {
-			message: thrown.detail,
-			code: thrown.code,
-			...(scripted ? {} : { kept: keptForm(url.pathname + url.search, posted, secrets) })
-		});
+		if (!scripted) {
+			// The layout behind the sign-in fails before this error is shown, so it has to find the form.
+			event.locals.kept = keptForm(url.pathname + url.search, posted, secrets);
+		}
+		error(thrown.status, { message: thrown.detail, code: thrown.code });
 	}
 }
 

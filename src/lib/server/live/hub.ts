@@ -1,4 +1,5 @@
 import type { LiveEvent } from '$lib/domain/live/events';
+import { log } from '../log';
 
 /** A live event after commit, with its place in the log and the unit that may hear it. */
 export interface LoggedEvent extends LiveEvent {
@@ -9,25 +10,49 @@ export interface LoggedEvent extends LiveEvent {
 
 type Listener = (event: LoggedEvent) => void;
 
-const listeners = new Set<Listener>();
+/** Each listener with what tells its owner that it was dropped. */
+const listeners = new Map<Listener, () => void>();
+let dropped = 0;
 
-/** Hand committed events to every open stream of this process. A listener that throws does not stop the others. */
+/**
+ * Hand committed events to every open stream of this process. A listener that throws does not stop the others; it is
+ * dropped, and its owner is told: a stream that stays open and deaf would look like a quiet ward.
+ */
 export function publish(events: LoggedEvent[]): void {
 	for (const event of events) {
-		for (const listener of [...listeners]) {
+		for (const [listener, onDropped] of [...listeners]) {
 			try {
 				listener(event);
-			} catch {
-				listeners.delete(listener);
+			} catch (error) {
+				drop(listener, onDropped, error);
 			}
 		}
 	}
 }
 
-/** Listen until the returned function is called. */
-export function listen(listener: Listener): () => void {
-	listeners.add(listener);
+function drop(listener: Listener, onDropped: () => void, error: unknown): void {
+	listeners.delete(listener);
+	dropped += 1;
+	log().error({ err: error }, 'live listener failed, dropped');
+	try {
+		onDropped();
+	} catch (failed) {
+		log().error({ err: failed }, 'dropped live listener did not end');
+	}
+}
+
+/**
+ * Listen until the returned function is called.
+ * @param onDropped called when the listener has thrown and hears nothing any more
+ */
+export function listen(listener: Listener, onDropped: () => void = () => {}): () => void {
+	listeners.set(listener, onDropped);
 	return () => listeners.delete(listener);
+}
+
+/** How many listeners have thrown since the start of the process. */
+export function droppedListeners(): number {
+	return dropped;
 }
 
 export function listenerCount(): number {

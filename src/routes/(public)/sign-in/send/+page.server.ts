@@ -22,7 +22,7 @@ export const actions: Actions = {
 	default: async (event) => {
 		const posted = await event.request.formData();
 		const to = textOf(posted, SIGN_IN_FIELDS.to);
-		if (safeNext(to, '') !== to) {
+		if (to === '' || safeNext(to, '') !== to) {
 			error(400, { message: 'The form was going to no page of ours.', code: 'malformed' });
 		}
 		const refused = await refusalOf(event, posted);
