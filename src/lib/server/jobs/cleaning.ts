@@ -2,13 +2,14 @@ import { removeEndedSignIns } from '../auth/sign-ins';
 import { db } from '../db';
 import { forgetOldKeys } from '../idempotency';
 import { forgetOldEvents } from '../live/log';
+import { endUnentitledStreams } from '../live/stream';
 import type { Job } from './clockwork';
 
 const EVERY_MS = 10 * 60 * 1000;
 
 let lastAt = -Infinity;
 
-/** Remove what has outlived its use: ended sign-ins, old keys, old live events. Counts as no work done. */
+/** Remove what has outlived its use: old keys, old live events. Counts as no work done. */
 export const cleaning: Job = {
 	name: 'cleaning',
 	async run(now) {
@@ -16,9 +17,20 @@ export const cleaning: Job = {
 			return 0;
 		}
 		lastAt = now;
-		await removeEndedSignIns(now);
 		await forgetOldKeys(db(), now);
 		await forgetOldEvents(db(), now);
 		return 0;
+	}
+};
+
+/** End the sign-ins whose shift is over, and the streams that they opened, without waiting for a heartbeat. */
+export const signInEnds: Job = {
+	name: 'sign-in ends',
+	async run(now) {
+		const ended = await removeEndedSignIns(now);
+		if (ended > 0) {
+			await endUnentitledStreams();
+		}
+		return ended;
 	}
 };

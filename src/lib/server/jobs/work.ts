@@ -5,10 +5,10 @@ import { env } from '../env';
 import { openChannels } from '../outbox/channels';
 import { OutboxWorker } from '../outbox/worker';
 import { Clockwork, type Job } from './clockwork';
-import { cleaning } from './cleaning';
+import { cleaning, signInEnds } from './cleaning';
 
 /** Everything that happens by itself, in the order in which a round does it. */
-const JOBS: Job[] = [chainJob, holderJob, lapseJob, cleaning];
+const JOBS: Job[] = [chainJob, holderJob, lapseJob, signInEnds, cleaning];
 
 let clockwork: Clockwork | null = null;
 let outbox: OutboxWorker | null = null;

@@ -8,7 +8,8 @@ import { guardedStream, type Sink } from './guarded';
 import { listen, type LoggedEvent } from './hub';
 import { canResume, currentCursor, eventsAfter } from './log';
 
-const open = new Set<Sink>();
+/** Each open stream, with the question whether its person may still listen. */
+const open = new Map<Sink, () => Promise<boolean>>();
 let closing = false;
 
 /** May this person hear that event? Decided anew for each event, with their role and units of now. */
@@ -67,7 +68,7 @@ export function openStream(
 		return true;
 	};
 	const start = (sink: Sink) => {
-		open.add(sink);
+		open.set(sink, stillEntitled);
 		const feed = new Feed(sink, () => current, stillEntitled, person.id);
 		const stopListening = listen((event) => feed.offer(event));
 		feed.replay(after).catch((error: unknown) => {
@@ -161,10 +162,19 @@ export function openStreams(): number {
 	return open.size;
 }
 
+/** Ask every stream whether it may go on, as its heartbeat does, and end those that may not. */
+export async function endUnentitledStreams(): Promise<void> {
+	for (const [sink, stillEntitled] of [...open]) {
+		if (!(await stillEntitled())) {
+			sink.end();
+		}
+	}
+}
+
 /** End every stream and open no more: a stopping server would otherwise wait for them for half a minute. */
 export function endAllStreams(): void {
 	closing = true;
-	for (const sink of open) {
+	for (const sink of open.keys()) {
 		sink.end();
 	}
 }
