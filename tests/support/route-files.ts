@@ -1,5 +1,6 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import path from 'node:path';
+import ts from 'typescript';
 
 const ROUTES = path.resolve('src/routes');
 
@@ -32,4 +33,28 @@ function files(name: string): string[] {
 function addressOf(file: string): string {
 	const parts = path.dirname(file).split(path.sep);
 	return `/${parts.filter((part) => part !== '.' && !part.startsWith('(')).join('/')}`;
+}
+
+/** Every form action of a page behind the sign-in, as `/patients/[id]/threads/[threadId]?/post`; a page's only one has no name. */
+export function formActions(): string[] {
+	return files('+page.server.ts')
+		.filter((file) => file.startsWith('(app)'))
+		.flatMap((file) => {
+			const text = readFileSync(path.join(ROUTES, file), 'utf8');
+			const names = actionNames(ts.createSourceFile(file, text, ts.ScriptTarget.Latest));
+			return names.map((name) => addressOf(file) + (name === 'default' ? '' : `?/${name}`));
+		});
+}
+
+function actionNames(source: ts.SourceFile): string[] {
+	const names: string[] = [];
+	source.forEachChild((node) => {
+		const declared = ts.isVariableStatement(node) ? node.declarationList.declarations : [];
+		for (const { name, initializer } of declared) {
+			if (name.getText(source) === 'actions' && initializer && ts.isObjectLiteralExpression(initializer)) {
+				names.push(...initializer.properties.map((property) => property.name?.getText(source) ?? ''));
+			}
+		}
+	});
+	return names;
 }

@@ -1,0 +1,76 @@
+import type { Role } from '$lib/domain/core/codes';
+
+/** Who may send which form. An action that is missing here fails the test, and so does one that is gone. */
+export interface ActionRow {
+	/** Fields that the form's own checks let pass, so that the role decides. */
+	fields: Record<string, string>;
+	roles: readonly Role[] | 'signed-in';
+}
+
+const CLINICAL: Role[] = ['surgeon', 'physician', 'nurse', 'therapist', 'speech-therapist'];
+const ANSWERING: Role[] = ['therapist', 'speech-therapist'];
+const REFERRING: Role[] = ['surgeon', 'physician'];
+const ADMIN: Role[] = ['admin'];
+
+const WHY = { reason: 'Not today.' };
+const ASK = { kind: 'stairs', question: 'Six steps went well. May it start?' };
+const CALL = {
+	grade: 'low',
+	situation: 'Pressure fell.',
+	background: 'Bypass.',
+	assessment: 'Too much.',
+	request: 'Please come.'
+};
+const THREAD = '/patients/[id]/threads/[threadId]';
+/** An undecided clearance of the demonstration; its kind is one that a physician may decide too. */
+const CLEARANCE = '/patients/[id]/clearances/[clearanceId]';
+
+export const ACTIONS: Record<string, ActionRow> = {
+	'/account?/password': { fields: { current: 'not it', next: 'eight white egrets fly' }, roles: 'signed-in' },
+	'/account?/token': { fields: { name: 'ward clock' }, roles: 'signed-in' },
+	'/account?/revoke': { fields: { id: 'none' }, roles: 'signed-in' },
+	'/admin/accounts?/account': {
+		fields: { name: 'Una Fairlead', email: 'surgeon@saltmarsh.example', role: 'nurse' },
+		roles: ADMIN
+	},
+	'/admin/accounts?/unit': { fields: { name: 'Tern Ward', kind: 'ward' }, roles: ADMIN },
+	'/admin/accounts/[id]?/units': { fields: {}, roles: ADMIN },
+	'/admin/accounts/[id]?/invite': { fields: { id: 'none' }, roles: ADMIN },
+	'/admin/accounts/[id]?/disable': { fields: { id: 'none' }, roles: ADMIN },
+	'/admin/accounts/[id]?/enable': { fields: { id: 'none' }, roles: ADMIN },
+	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },
+	'/loose-ends/[what]/[id]?/settle': { fields: {}, roles: ['coordinator', 'therapist'] },
+	'/patients/[id]/refer': {
+		fields: { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' },
+		roles: REFERRING
+	},
+	'/patients/[id]/escalate?/raise': { fields: CALL, roles: CLINICAL },
+	'/patients/[id]/clearances?/ask': {
+		fields: ASK,
+		roles: ['therapist', 'speech-therapist', 'nurse', 'physician']
+	},
+	[`${THREAD}?/post`]: { fields: { body: 'She slept well.' }, roles: CLINICAL },
+	// The thread is one of physiotherapy, asked by the surgeon.
+	[`${THREAD}?/accept`]: { fields: {}, roles: ['therapist'] },
+	[`${THREAD}?/decline`]: { fields: WHY, roles: ['therapist'] },
+	[`${THREAD}?/close`]: { fields: {}, roles: [...REFERRING, ...ANSWERING] },
+	[`${THREAD}?/withdraw`]: { fields: WHY, roles: ['surgeon'] },
+	[`${THREAD}?/ask`]: { fields: ASK, roles: ['therapist', 'speech-therapist', 'nurse', 'physician'] },
+	[`${CLEARANCE}?/give`]: { fields: {}, roles: REFERRING },
+	[`${CLEARANCE}?/withhold`]: { fields: WHY, roles: REFERRING },
+	[`${CLEARANCE}?/hold`]: { fields: WHY, roles: REFERRING },
+	[`${CLEARANCE}?/withdraw`]: { fields: WHY, roles: REFERRING },
+	'/ward/admit': {
+		fields: {
+			name: 'Remi Tide',
+			birthDate: '1950-01-31',
+			sex: 'male',
+			mrn: 'ACT 1',
+			unit: 'Tern Ward',
+			bed: 'ACT1',
+			level: '1',
+			betaBlocked: 'unknown'
+		},
+		roles: ['surgeon', 'physician', 'nurse', 'coordinator']
+	}
+};
