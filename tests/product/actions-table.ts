@@ -8,6 +8,7 @@ export interface ActionRow {
 }
 
 const CLINICAL: Role[] = ['surgeon', 'physician', 'nurse', 'therapist', 'speech-therapist'];
+const SEEING: Role[] = [...CLINICAL, 'coordinator'];
 const ANSWERING: Role[] = ['therapist', 'speech-therapist'];
 const REFERRING: Role[] = ['surgeon', 'physician'];
 const ADMIN: Role[] = ['admin'];
@@ -39,7 +40,8 @@ export const ACTIONS: Record<string, ActionRow> = {
 	'/admin/accounts/[id]?/disable': { fields: { id: 'none' }, roles: ADMIN },
 	'/admin/accounts/[id]?/enable': { fields: { id: 'none' }, roles: ADMIN },
 	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },
-	'/loose-ends/[what]/[id]?/settle': { fields: {}, roles: ['coordinator', 'therapist'] },
+	'/loose-ends/[what]/[id]?/message': { fields: {}, roles: ['coordinator', 'therapist'] },
+	'/loose-ends/[what]/[id]?/text': { fields: { note: 'Rang her back.' }, roles: ['coordinator'] },
 	'/patients/[id]/refer': {
 		fields: { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' },
 		roles: REFERRING
@@ -50,6 +52,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician']
 	},
 	[`${THREAD}?/post`]: { fields: { body: 'She slept well.' }, roles: CLINICAL },
+	[`${THREAD}?/seen`]: { fields: { mentionId: 'none' }, roles: SEEING },
 	// The thread is one of physiotherapy, asked by the surgeon.
 	[`${THREAD}?/accept`]: { fields: {}, roles: ['therapist'] },
 	[`${THREAD}?/decline`]: { fields: WHY, roles: ['therapist'] },

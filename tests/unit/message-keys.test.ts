@@ -16,7 +16,11 @@ describe('the words of the screens', () => {
 		const keys = keysOf(file).filter((key) => !key.startsWith('$'));
 		const parsed = JSON.parse(readFileSync(path.join(FOLDER, file), 'utf8')) as object;
 		expect(keys.length).toBeGreaterThan(0);
-		expect(keys.toSorted()).toEqual(Object.keys(parsed).filter((key) => !key.startsWith('$')).toSorted());
+		expect(keys.toSorted()).toEqual(
+			Object.keys(parsed)
+				.filter((key) => !key.startsWith('$'))
+				.toSorted()
+		);
 	});
 
 	it('have no key in two files: the one read last would win without a word', () => {
