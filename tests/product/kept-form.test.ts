@@ -50,7 +50,7 @@ async function submit(path: string, fields: [string, string][], cookie: string |
 function keptFields({ text }: Page): [string, string][] {
 	const form = /<form[^>]*action="\/sign-in\/send"[\s\S]*?<\/form>/.exec(text)?.[0] ?? '';
 	const to = /name="signInTo" value="([^"]*)"/.exec(form)?.[1] ?? '';
-	const areas = [...form.matchAll(/<textarea hidden name="([^"]*)"[^>]*>([\s\S]*?)<\/textarea>/g)];
+	const areas = [...form.matchAll(/<textarea hidden[^>]* name="([^"]*)"[^>]*>([\s\S]*?)<\/textarea>/g)];
 	return [
 		['signInTo', plain(to)],
 		...areas.map(([, name = '', value = '']): [string, string] => [name, plain(value)])
