@@ -70,7 +70,10 @@ export function openStream(
 	const start = (sink: Sink) => {
 		open.set(sink, stillEntitled);
 		const feed = new Feed(sink, () => current, stillEntitled, person.id);
-		const stopListening = listen((event) => feed.offer(event));
+		const stopListening = listen(
+			(event) => feed.offer(event),
+			() => sink.end()
+		);
 		feed.replay(after).catch((error: unknown) => {
 			log().error({ err: error }, 'live replay failed');
 			sink.end();
