@@ -122,7 +122,7 @@ export function setSenior(context: PersonContext, userId: string, senior: boolea
 			throw new Problem('wrong-state', `The role ${role} is not marked as senior.`, { state: role });
 		}
 		await tx.update(users).set({ senior }).where(eq(users.id, userId));
-		return changed('account.senior-set', 'senior-set', userId, { senior: senior ? 1 : 0 });
+		return changed('account.senior-set', 'senior-set', userId, { detail: { senior: senior ? 1 : 0 } });
 	});
 }
 
