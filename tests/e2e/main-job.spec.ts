@@ -188,9 +188,12 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 	await phone.context.close();
 
 	await goTo(nurse.page, 'Loose ends');
-	await rowOf(nurse.page).getByRole('link', { name: /Go on/ }).press('Enter');
-	await nurse.page.getByRole('button', { name: 'I am at the bedside' }).click();
+	// Two taps from the list: there, and on to what is to be written. By key: see the first step.
+	await rowOf(nurse.page)
+		.getByRole('button', { name: /I am there/ })
+		.press('Enter');
 	await expect(raising.getByText(/At the bedside since/).first()).toBeVisible();
+	await rowOf(nurse.page).getByRole('link', { name: /Go on/ }).press('Enter');
 	await nurse.page.getByRole('button', { name: 'Settle' }).first().click();
 	const sheet = nurse.page.getByRole('dialog');
 	await sheet.getByRole('radio', { name: 'Settled with rest' }).check();
