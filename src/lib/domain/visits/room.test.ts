@@ -8,7 +8,12 @@ const held = (minute: number, minutes = 60, who = 'other', unitId = 'gym'): Held
 	patientId: who,
 	unitId
 });
-const wanted = (visits = [at(600)], places = 2) => ({ patientId: 'own', unitId: 'gym', places, visits });
+const wanted = (visits = [at(600)], places: number | null = 2) => ({
+	patientId: 'own',
+	unitId: 'gym',
+	places,
+	visits
+});
 
 describe('overlap', () => {
 	it.each([
@@ -44,6 +49,15 @@ describe('room for a visit', () => {
 		const visits = [at(600), at(2040), at(3480)];
 		const clash = firstClash(wanted(visits, 1), [held(3480), held(2040)]);
 		expect(clash).toEqual({ kind: 'full', wanted: at(2040), taken: 1 });
+	});
+
+	it('is never wanting where nobody has said how many there are', () => {
+		expect(
+			firstClash(
+				wanted([at(600)], null),
+				Array.from({ length: 40 }, () => held(600))
+			)
+		).toBeNull();
 	});
 
 	it.each([1, 2, 6])('where %d are there already, one more place is needed', (count) => {

@@ -16,8 +16,8 @@ export interface Held extends Stretch {
 export interface Wanted {
 	readonly patientId: string;
 	readonly unitId: string;
-	/** How many patients the unit holds at a time. */
-	readonly places: number;
+	/** How many patients the unit holds at a time; null where nobody has said. */
+	readonly places: number | null;
 	readonly visits: readonly Stretch[];
 }
 
@@ -25,9 +25,6 @@ export interface Wanted {
 export type Clash<H extends Held = Held> =
 	| { readonly kind: 'overlaps'; readonly wanted: Stretch; readonly held: H }
 	| { readonly kind: 'full'; readonly wanted: Stretch; readonly taken: number };
-
-/** How many patients a unit of each kind holds at a time where no setting says otherwise. Common practice. */
-export const DEFAULT_PLACES = { gym: 6, ward: 4, 'intensive-care': 1 } as const;
 
 /** The first of the wanted visits for which there is no room, and why; null when all of them fit. */
 export function firstClash<H extends Held>(wanted: Wanted, held: readonly H[]): Clash<H> | null {
@@ -39,7 +36,7 @@ export function firstClash<H extends Held>(wanted: Wanted, held: readonly H[]): 
 		}
 		const here = meanwhile.filter(({ unitId }) => unitId === wanted.unitId);
 		const taken = mostAtOnce(visit, here);
-		if (taken >= wanted.places) {
+		if (wanted.places !== null && taken >= wanted.places) {
 			return { kind: 'full', wanted: visit, taken };
 		}
 	}

@@ -24,7 +24,7 @@ export function plannedVisits(input: BookVisits, zone: Zone, now: number): Plann
 }
 
 /** A unit as a place of visits. */
-export type Place = Pick<typeof units.$inferSelect, 'id' | 'name' | 'kind'>;
+export type Place = Pick<typeof units.$inferSelect, 'id' | 'name'>;
 
 /**
  * The unit where a visit takes place, by identifier or exact name.
@@ -33,7 +33,7 @@ export type Place = Pick<typeof units.$inferSelect, 'id' | 'name' | 'kind'>;
 export async function findPlace(reader: Reader, input: BookVisits): Promise<Place> {
 	const { place, kind } = input;
 	const [unit] = await reader
-		.select({ id: units.id, name: units.name, kind: units.kind })
+		.select({ id: units.id, name: units.name })
 		.from(units)
 		.where(or(eq(units.id, place), eq(units.name, place)));
 	if (!unit) {

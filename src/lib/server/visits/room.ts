@@ -3,7 +3,7 @@ import { Problem } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { MINUTE } from '$lib/domain/core/time';
 import { MINUTES_MAX } from '$lib/domain/visits/limits';
-import { DEFAULT_PLACES, endOf, firstClash, type Held, type Stretch } from '$lib/domain/visits/room';
+import { endOf, firstClash, type Held, type Stretch } from '$lib/domain/visits/room';
 import type { PlannedVisit } from '$lib/domain/visits/series';
 import type { Tx } from '../db';
 import { episodes, settings, visits } from '../db/schema';
@@ -11,7 +11,10 @@ import { env } from '../env';
 import type { Place } from './plan';
 import { whenOf } from './words';
 
-/** The setting that holds the places of units at a time, by unit: `{ [unitId]: number }`. */
+/**
+ * The setting that holds the places of units at a time, by unit: `{ [unitId]: number }`. A unit without one takes
+ * any number: a figure nobody has decided must not turn a patient away.
+ */
 export const PLACES_SETTING = 'visits.places';
 
 /**
@@ -48,10 +51,10 @@ export async function requireRoom(
 	throw new Problem('place-full', detail, { startsAt, places, taken: clash.taken });
 }
 
-async function placesOf(tx: Tx, { id, kind }: Place): Promise<number> {
+async function placesOf(tx: Tx, { id }: Place): Promise<number | null> {
 	const [row] = await tx.select().from(settings).where(eq(settings.key, PLACES_SETTING));
 	const set = (row?.value as Record<string, unknown> | undefined)?.[id];
-	return typeof set === 'number' ? set : DEFAULT_PLACES[kind];
+	return typeof set === 'number' ? set : null;
 }
 
 /** The expected visits of the patient, and of the unit, that could touch one of those planned. */
