@@ -12,13 +12,7 @@ import { clearances, operations } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
-import {
-	acceptReferral,
-	closeReferral,
-	declineReferral,
-	refer,
-	withdrawReferral
-} from '$lib/server/referrals/actions';
+import { acceptReferral, declineReferral, refer, withdrawReferral } from '$lib/server/referrals/actions';
 import { postEntry } from '$lib/server/threads/actions';
 import { getThread } from '$lib/server/threads/queries';
 import { freshDatabase } from '../support/database';
@@ -51,28 +45,11 @@ const about = (ends: { episodeId: string | null; kind: string }[]) =>
 	ends.filter((end) => end.episodeId === episodeId).map((end) => end.kind);
 
 describe('a referral', () => {
-	it.each([
-		['asked', () => undefined],
-		['accepted', (id: string) => acceptReferral(as('therapist'), id)]
-	])('to a service whose earlier one is %s is refused and leads to its thread', async (state, move) => {
-		const { id, threadId } = await referred();
-		await move(id);
-		await expect(referred()).rejects.toMatchObject({
-			code: 'already-asked',
-			status: 409,
-			extra: { id, threadId, state }
-		});
-	});
-
-	it('may be asked again once it was closed, and to another service or for another patient at any time', async () => {
-		const { id } = await referred();
-		const speech = { service: 'speech-therapy', priority: 'soon', question: 'Hoarse.' } as const;
-		expect((await refer(as('surgeon'), episodeId, speech)).result.state).toBe('asked');
-		await acceptReferral(as('therapist'), id);
-		await closeReferral(as('therapist'), id, null);
-		expect((await referred()).state).toBe('asked');
-		({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
-		expect((await referred()).state).toBe('asked');
+	it('to a service that has one already is a question and a thread of its own', async () => {
+		const [first, second] = [await referred(), await referred()];
+		expect(second).toMatchObject({ state: 'asked' });
+		expect(second.threadId).not.toBe(first.threadId);
+		expect(about((await endsOf('therapist')).mine)).toEqual(['referral', 'referral']);
 	});
 
 	it('waits on the service, and the one who asked waits for it', async () => {

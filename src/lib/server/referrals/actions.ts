@@ -1,21 +1,20 @@
-import { and, eq, inArray } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { AuditAction } from '$lib/domain/audit/actions';
 import { Problem } from '$lib/domain/core/errors';
-import type { ReferralState, Service } from '$lib/domain/core/codes';
+import type { ReferralState } from '$lib/domain/core/codes';
 import type { referBody } from '$lib/domain/referrals/forms';
-import { nextReferralState, OPEN_REFERRAL_STATES, type ReferralMove } from '$lib/domain/referrals/states';
+import { nextReferralState, type ReferralMove } from '$lib/domain/referrals/states';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, accessReferral } from '../access/access';
 import type { PersonContext } from '../context';
-import type { Tx } from '../db';
 import { referrals, threads } from '../db/schema';
 import { newId } from '../ids';
 import { write, type Written } from '../write';
 
 /**
- * Ask a service to take on a patient. The thread of the referral begins with the question.
- * @throws Problem `already-asked` with the thread of an earlier one that is asked or accepted and not closed
+ * Ask a service to take on a patient. The thread of the referral begins with the question. A second one to the same
+ * service is a question of its own: the page says that one goes on, and leaves it to the person.
  */
 export function refer(
 	context: PersonContext,
@@ -24,7 +23,6 @@ export function refer(
 ): Promise<Written<{ id: string; threadId: string; state: 'asked' }>> {
 	return write(context, 'referral.create', async (tx) => {
 		await accessEpisode(tx, context.actor, episodeId, 'referral.create');
-		await refuseSecond(tx, episodeId, input.service);
 		const id = newId();
 		const threadId = newId();
 		await tx.insert(referrals).values({
@@ -45,28 +43,6 @@ export function refer(
 			events: [{ topic: 'referral', kind: 'asked', id, episodeId }]
 		};
 	});
-}
-
-/** Two threads about one thing would each hold half of what is said. */
-async function refuseSecond(tx: Tx, episodeId: string, service: Service): Promise<void> {
-	const [open] = await tx
-		.select({ id: referrals.id, state: referrals.state, threadId: threads.id })
-		.from(referrals)
-		.innerJoin(threads, eq(threads.referralId, referrals.id))
-		.where(
-			and(
-				eq(referrals.episodeId, episodeId),
-				eq(referrals.service, service),
-				inArray(referrals.state, [...OPEN_REFERRAL_STATES])
-			)
-		);
-	if (open) {
-		throw new Problem(
-			'already-asked',
-			`A referral to this service is ${open.state}; write into its thread, or close it first.`,
-			open
-		);
-	}
 }
 
 export function acceptReferral(context: PersonContext, id: string) {
