@@ -1,7 +1,7 @@
 import { building } from '$app/environment';
 import { migrateDatabase } from './db/migrate';
 import { closeDatabase, db, openDatabase } from './db';
-import { lockDataFolder } from './db/lock';
+import { lockData, type Lock } from './db/lock';
 import { env } from './env';
 import { startWork, stopWork } from './jobs/work';
 import { endAllStreams } from './live/stream';
@@ -12,7 +12,7 @@ import { prepareHospital } from './setup';
 const state = globalThis as typeof globalThis & { __ropewalkStarted?: Promise<void> };
 
 /**
- * Start the server: own the data folder, open and migrate the database, prepare the hospital, resume the timers.
+ * Start the server: own the data, open and migrate the database, prepare the hospital, resume the timers.
  * A start that fails stops the process: a half-started hub would look alive and hear nothing.
  */
 export function startServer(): Promise<void> {
@@ -32,7 +32,7 @@ function refuseToStart(error: unknown): never {
 }
 
 async function start(): Promise<void> {
-	const lock = lockDataFolder(env().dataDir);
+	const lock = lockData(env().dataDir, env().databaseUrl);
 	await openDatabase(env().databaseUrl);
 	await migrateDatabase(db());
 	await prepareHospital();
@@ -45,7 +45,7 @@ async function start(): Promise<void> {
  * End the streams first: they never become idle, and the server would wait half a minute for them. Then the
  * requests in progress finish, and the database closes when everything else is done.
  */
-function stopOnSignal(lock: { release(): void }): void {
+function stopOnSignal(lock: Lock): void {
 	for (const signal of ['SIGTERM', 'SIGINT'] as const) {
 		process.once(signal, () => {
 			log().info({ signal }, 'stopping');
