@@ -2,7 +2,7 @@ import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { MAX_IN_FLIGHT, OutboxWorker } from '$lib/server/outbox/worker';
-import { ScriptedChannel } from '../support/channels';
+import { ScriptedChannel, transient } from '../support/channels';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
 import { HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
@@ -131,5 +131,45 @@ describe('places that are kept for calls for help', () => {
 		await worker().settle();
 		expect(sentIds(sms).slice(0, MAX_IN_FLIGHT.sms.routine)).toContain(call);
 		expect(sentIds(sms).toSorted()).toEqual([...early, call].toSorted());
+	});
+});
+
+describe('a gateway that asks for time', () => {
+	const MINUTE = 60_000;
+	let now: number;
+	const paced = () => new OutboxWorker({ channels: { sms, mail }, now: () => now, random: () => 0.5 });
+	beforeEach(() => {
+		now = HOSPITAL_NOW;
+	});
+
+	it('gets it from reminders, and a call goes out meanwhile', async () => {
+		sms.script = [transient(MINUTE)];
+		const sending = paced();
+		const refused = await reminder();
+		await sending.settle();
+		const [call, later] = [await alert(), await reminder()];
+		await sending.settle();
+		expect(sentIds(sms)).toEqual([refused, call]);
+		now = HOSPITAL_NOW + MINUTE - 1;
+		await sending.settle();
+		expect(sentIds(sms)).toEqual([refused, call]);
+		now += 1;
+		await sending.settle();
+		expect(sentIds(sms)).toContain(later);
+	});
+
+	it('gets it from the call that it refused, not from the next one', async () => {
+		sms.script = [transient(30_000)];
+		const sending = paced();
+		const escalation = await addEscalation(hospital);
+		const toNurse = async () => (await addAlert(escalation, hospital.people.nurse.id)).id;
+		const refused = await toNurse();
+		await sending.settle();
+		const [next, later] = [await toNurse(), await reminder()];
+		await sending.settle();
+		expect(sentIds(sms)).toEqual([refused, next]);
+		now = HOSPITAL_NOW + 30_000;
+		await sending.settle();
+		expect(sentIds(sms).toSorted()).toEqual([refused, refused, next, later].toSorted());
 	});
 });

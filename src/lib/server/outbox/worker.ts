@@ -21,7 +21,10 @@ export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }
 const BEAT_MS = 1_000;
 /** A server that stops waits no longer for a gateway; the lease then tells the next start that the end is unknown. */
 const STOP_PATIENCE_MS = 9_000;
-/** A gateway that asks for time gets it from all messages, up to this. */
+/**
+ * A gateway that asks for time gets it from everything but calls for help, up to this. Each call waits for itself
+ * alone, by its own schedule: the refusal of one message, or of one number, must not silence the next call.
+ */
 const LONGEST_PAUSE_MS = 60_000;
 
 export interface OutboxOptions {
@@ -42,7 +45,7 @@ export class OutboxWorker {
 	readonly #now: () => number;
 	readonly #random: () => number;
 	readonly #inFlight = new Map<string, { channel: ChannelName; ended: Promise<void> }>();
-	readonly #pausedUntil = new Map<ChannelName, number>();
+	readonly #routinePausedUntil = new Map<ChannelName, number>();
 	/** Whether the last attempt on a channel got through; not there before the first. */
 	readonly #working = new Map<ChannelName, boolean>();
 	readonly #silent: SilentMessages;
@@ -143,9 +146,11 @@ export class OutboxWorker {
 		const at = this.#now();
 		const configured = CHANNELS.filter((name) => this.#channels[name] !== null);
 		let seen = await holdDue(at, configured);
-		for (const channel of configured.filter((name) => (this.#pausedUntil.get(name) ?? 0) <= at)) {
+		for (const channel of configured) {
 			seen += await this.#claimOn(channel, true, at);
-			seen += await this.#claimOn(channel, false, at);
+			if ((this.#routinePausedUntil.get(channel) ?? 0) <= at) {
+				seen += await this.#claimOn(channel, false, at);
+			}
 		}
 		return seen;
 	}
@@ -212,7 +217,7 @@ export class OutboxWorker {
 	#heed(name: ChannelName, sent: Sent | null): void {
 		if (sent?.outcome.kind === 'transient' && sent.outcome.retryAfter !== null) {
 			const pause = Math.min(sent.outcome.retryAfter, LONGEST_PAUSE_MS);
-			this.#pausedUntil.set(name, this.#now() + pause);
+			this.#routinePausedUntil.set(name, this.#now() + pause);
 		}
 	}
 }
