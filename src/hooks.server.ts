@@ -5,12 +5,13 @@ import { routes } from '$lib/routes';
 import { personOfToken } from '$lib/server/auth/people';
 import { personOfCookie, signInStillGood } from '$lib/server/auth/sign-ins';
 import { now } from '$lib/server/clock';
+import { linkExists } from '$lib/server/escalations/link';
 import { newId } from '$lib/server/ids';
 import { liveCursor } from '$lib/server/live/log';
 import { log } from '$lib/server/log';
 import { clientAddress } from '$lib/server/http/address';
 import { secureHeaders } from '$lib/server/http/headers';
-import { countedFor, countRequest } from '$lib/server/http/limits';
+import { countedFor, countRequest, linkTokenIn } from '$lib/server/http/limits';
 import { refuseForeignOrigin } from '$lib/server/http/origin';
 import { problemResponse } from '$lib/server/http/problem';
 import { startServer } from '$lib/server/start';
@@ -33,13 +34,20 @@ const identify: Handle = async ({ event, resolve }) => {
 			: cookie !== null && signInStillGood(cookie.signInId, now());
 	event.locals.context = { actor: person, now: now(), address, key: null };
 	const { pathname } = event.url;
-	const counted = countedFor({ method: request.method, pathname }, person?.id ?? null, address);
+	const link = await knownLink(pathname);
+	const counted = countedFor({ method: request.method, pathname }, person?.id ?? null, address, link);
 	if (counted !== null) {
 		countRequest(counted, now());
 	}
 	refuseForeignOrigin(event, bearer !== undefined);
 	return resolve(event);
 };
+
+/** The token of a link that exists, also of one that has expired; null for any other address. */
+async function knownLink(pathname: string): Promise<string | null> {
+	const token = linkTokenIn(pathname);
+	return token !== null && (await linkExists(token)) ? token : null;
+}
 
 /**
  * Pages behind the sign-in send others to it; the API answers 401 by itself, and so does a form, which keeps what was

@@ -63,6 +63,11 @@ export async function findLink(reader: Reader, token: string): Promise<Link | nu
 	return link ?? null;
 }
 
+/** Whether a token was ever given out, also one that has expired. */
+export async function linkExists(token: string): Promise<boolean> {
+	return (await findLink(db(), token)) !== null;
+}
+
 /**
  * Act as the person whom the link was sent to.
  * @throws Problem `not-found` for a link that is unknown or expired, or whose person has no access any more

@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest';
-import { countedFor, countRequest } from './limits';
+import { countedFor, countRequest, linkTokenIn } from './limits';
 
 vi.mock('../env', () => ({ env: () => ({ rateLimitScale: 1 }) }));
 
@@ -9,19 +9,38 @@ const TOKEN = 'Ab-cdefghijklmnopqrs_t';
 
 describe('a request counts for', () => {
 	it.each([
-		['a person wherever they are', get('/ward'), 'p1', '192.0.2.7', 'p1'],
-		['its address when nobody is signed in', get('/sign-in'), null, '192.0.2.7', '192.0.2.7'],
-		['nobody in particular without either', get('/sign-in'), null, null, 'nobody'],
-		['the link of a call', get(`/t/${TOKEN}`), null, '192.0.2.7', `link:${TOKEN}`],
-		['the link of a call, signed in too', get(`/t/${TOKEN}/state`), 'p1', '192.0.2.7', `link:${TOKEN}`],
-		['no more of a link than ours has', get(`/t/${'x'.repeat(5000)}`), null, null, `link:${'x'.repeat(32)}`],
-		['nothing when it takes a call', post(`/t/${TOKEN}`), null, '192.0.2.7', null],
-		['nothing when it is the gateway', post('/api/hooks/sms'), null, '192.0.2.7', null],
-		['nothing when it asks for health', get('/healthz'), null, '192.0.2.7', null],
-		['its address where health is only a prefix', get('/healthz/x'), null, '192.0.2.7', '192.0.2.7'],
-		['its address on other posts', post('/sign-in'), null, '192.0.2.7', '192.0.2.7']
-	])('%s', (_, request, person, address, whom) => {
-		expect(countedFor(request, person, address)).toBe(whom);
+		['a person wherever they are', get('/ward'), 'p1', '192.0.2.7', null, 'p1'],
+		['its address when nobody is signed in', get('/sign-in'), null, '192.0.2.7', null, '192.0.2.7'],
+		['nobody in particular without either', get('/sign-in'), null, null, null, 'nobody'],
+		['the link of a call', get(`/t/${TOKEN}`), null, '192.0.2.7', TOKEN, `link:${TOKEN}`],
+		['that link, signed in too', get(`/t/${TOKEN}/state`), 'p1', '192.0.2.7', TOKEN, `link:${TOKEN}`],
+		['nothing when it takes a call', post(`/t/${TOKEN}`), null, '192.0.2.7', TOKEN, null],
+		['its address when its link is made up', get(`/t/${TOKEN}`), null, '192.0.2.7', null, '192.0.2.7'],
+		['its address when it posts to one', post(`/t/${TOKEN}`), null, '192.0.2.7', null, '192.0.2.7'],
+		['its person when they make one up', get(`/t/${TOKEN}`), 'p1', '192.0.2.7', null, 'p1'],
+		['nothing when it is the gateway', post('/api/hooks/sms'), null, '192.0.2.7', null, null],
+		['nothing when it asks for health', get('/healthz'), null, '192.0.2.7', null, null],
+		['its address where health is only a prefix', get('/healthz/x'), null, '192.0.2.7', null, '192.0.2.7'],
+		['its address on other posts', post('/sign-in'), null, '192.0.2.7', null, '192.0.2.7']
+	])('%s', (_, request, person, address, link, whom) => {
+		expect(countedFor(request, person, address, link)).toBe(whom);
+	});
+});
+
+describe('an address holds the link of a call', () => {
+	it.each([
+		[`/t/${TOKEN}`, TOKEN],
+		[`/t/${TOKEN}/state`, TOKEN],
+		[`/t/${TOKEN}/__data.json`, TOKEN],
+		[`/t/${TOKEN.slice(1)}`, null],
+		[`/t/${TOKEN}x`, null],
+		[`/t/${'x'.repeat(5000)}`, null],
+		[`/t/${TOKEN.replace('-', '.')}`, null],
+		[`/x/t/${TOKEN}`, null],
+		['/t/', null],
+		['/ward', null]
+	])('%s: %s', (pathname, token) => {
+		expect(linkTokenIn(pathname)).toBe(token);
 	});
 });
 

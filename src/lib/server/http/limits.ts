@@ -9,24 +9,31 @@ const windows = new Map<string, { until: number; count: number }>();
 
 /** Asked often, by machines: health checks, files of the build, and the gateway, which does not send a refused status again. */
 const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
-/** The link of a call for help. Longer ones than ours lead nowhere and are cut, so that they fill no memory. */
-const CALL = /^\/t\/([^/]{1,32})/;
+/** The link of a call for help, with the shape of its token. */
+const CALL = /^\/t\/([\w-]{22})(?:\/|$)/;
+
+/** The token in an address that could be the link of a call for help; null in any other. */
+export function linkTokenIn(pathname: string): string | null {
+	return CALL.exec(pathname)?.[1] ?? null;
+}
 
 /**
  * For whom a request counts: the link of a call for help, else the person, else the address; null for what is
  * never refused. A whole hospital can stand behind one address, and its nurses must be able to look at a call and
- * take it; the link is what tells them apart.
+ * take it; the link is what tells them apart. A link that does not exist tells nobody apart: made-up ones count
+ * for who sends them, and no list of them grows.
+ * @param link the token of a link that exists; null for none
  */
 export function countedFor(
 	{ method, pathname }: { method: string; pathname: string },
 	personId: string | null,
-	address: string | null
+	address: string | null,
+	link: string | null
 ): string | null {
 	if (UNCOUNTED.test(pathname)) {
 		return null;
 	}
-	const link = CALL.exec(pathname)?.[1];
-	if (link === undefined) {
+	if (link === null) {
 		return personId ?? address ?? 'nobody';
 	}
 	return method === 'POST' ? null : `link:${link}`;
