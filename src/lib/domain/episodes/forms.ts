@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { APPROACHES, CLOSE_REASONS, isOneOf, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
-import { normaliseBed, normaliseMrn } from './identifiers';
+import { written } from './identifiers';
 
 const level = z
 	.number('The level is a number from 1 to 6.')
@@ -11,11 +11,14 @@ const level = z
 
 const unit = z.string('The unit is missing or no text.').min(1, 'The unit is empty.').max(64);
 
-/** A bed as people write it; a gym has none. */
-const bed = text('The bed', 12).refine((typed) => normaliseBed(typed) !== '', 'The bed is empty.');
+/** Messages carry the bed, and have little room. */
+export const BED_MAX = 20;
+
+/** A bed as people write it; a gym needs none. */
+const bed = text('The bed', BED_MAX).refine((typed) => written(typed) !== '', 'The bed is empty.');
 
 const mrn = text('The hospital number', 40).refine(
-	(typed) => normaliseMrn(typed) !== '',
+	(typed) => written(typed) !== '',
 	'The hospital number is empty.'
 );
 
@@ -63,7 +66,7 @@ export type MoveInput = z.infer<typeof moveBody>;
 /** The move as a page asks for it; whether the unit has beds knows the server. */
 export const moveForm = z.object({
 	unit: z.string().min(1, 'The unit is empty: choose one.').max(64).default(''),
-	bed: z.string().trim().max(12, 'The bed has at most 12 characters.').default('')
+	bed: z.string().trim().max(BED_MAX, `The bed has at most ${BED_MAX} characters.`).default('')
 });
 
 /** Why a stay is over. */

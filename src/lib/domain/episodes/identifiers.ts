@@ -1,24 +1,20 @@
 /**
- * Hospital numbers and beds in the one form in which they are stored and compared: what people type differs in
- * case and in spaces, and a second spelling must not make a second patient or a second bed.
+ * Hospital numbers and beds are stored as they were written, because staff and other programs look for them in that
+ * form, and compared without case and spaces, because a second spelling must not make a second patient or bed.
  */
 
-/** `t 9` is `T9`: capitals, no spaces, no invisible characters, full-width digits as plain ones. */
-function compact(typed: string): string {
+/** As it is stored: no outer or doubled spaces, no invisible characters, full-width digits as plain ones. */
+export function written(typed: string): string {
 	return typed
 		.normalize('NFKC')
-		.replace(/[\s\p{Cf}]+/gu, '')
-		.toUpperCase();
+		.replace(/\p{Cf}+/gu, '')
+		.replace(/\s+/gu, ' ')
+		.trim();
 }
 
-/** The hospital number as it is stored; empty when nothing but spaces was typed. */
-export function normaliseMrn(typed: string): string {
-	return compact(typed);
-}
-
-/** The bed as it is stored; empty when nothing but spaces was typed. */
-export function normaliseBed(typed: string): string {
-	return compact(typed);
+/** What two spellings of one number or bed have in common: `t 9` and `T9` are both `T9`. */
+export function spellingKey(typed: string): string {
+	return written(typed).replaceAll(' ', '').toUpperCase();
 }
 
 /** A name without doubled spaces, as it is stored. */

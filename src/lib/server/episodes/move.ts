@@ -1,5 +1,6 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import { Problem } from '$lib/domain/core/errors';
+import { spellingKey } from '$lib/domain/episodes/identifiers';
 import type { MoveInput } from '$lib/domain/episodes/forms';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { resolveAnyUnit } from '../access/units';
@@ -21,7 +22,7 @@ export interface Moved {
  * Move a patient to another bed or unit; to a gym means into the outpatient programme. The episode goes on, where
  * it was before stays on record, and an open call for help follows. Any unit can be named: a patient who gets
  * worse goes where those who send them do not belong.
- * @throws Problem `bed-in-use`; `invalid` for a ward without a bed or a gym with one; `wrong-state` when closed or
+ * @throws Problem `bed-in-use`; `invalid` for a ward without a bed; `wrong-state` when closed or
  * there already
  */
 export function movePatient(
@@ -34,7 +35,7 @@ export function movePatient(
 		refuseClosed(episode);
 		const place = await placeIn(tx, await resolveAnyUnit(tx, input.unit, '/unit'), input.bed, episodeId);
 		const { unit, bed } = place;
-		if (unit.id === episode.unitId && bed === episode.bed) {
+		if (unit.id === episode.unitId && spellingKey(bed ?? '') === spellingKey(episode.bed ?? '')) {
 			throw new Problem('wrong-state', 'The patient is there already.', { unit: unit.name, bed });
 		}
 		await tx

@@ -4,7 +4,7 @@ import { Problem, invalidField } from '$lib/domain/core/errors';
 import { Refusals } from '$lib/domain/core/refusals';
 import { localDateOf } from '$lib/domain/core/time';
 import type { AdmitInput } from '$lib/domain/episodes/forms';
-import { isSameName, normaliseMrn, normaliseName } from '$lib/domain/episodes/identifiers';
+import { isSameName, normaliseName, written } from '$lib/domain/episodes/identifiers';
 import { conflictsWith, PATIENT_FIELDS, type PatientField } from '$lib/domain/episodes/identity';
 import { normalisePhone, PhoneError } from '$lib/domain/messages/phone';
 import type { PersonContext } from '../context';
@@ -12,6 +12,7 @@ import type { Tx } from '../db';
 import { episodes, patientAmendments, patients, units } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
+import { spelt } from './spelt';
 
 type PatientRow = typeof patients.$inferSelect;
 type Given = AdmitInput['patient'];
@@ -37,8 +38,8 @@ export async function identifyPatient(
 	given: Given,
 	confirmName: boolean
 ): Promise<Identified> {
-	const mrn = normaliseMrn(given.mrn);
-	const [known = null] = await tx.select().from(patients).where(eq(patients.mrn, mrn));
+	const mrn = written(given.mrn);
+	const [known = null] = await tx.select().from(patients).where(spelt(patients.mrn, mrn));
 	const refusals = new Refusals();
 	const phone = await refusals.of(() => phoneOf(given.phone));
 	await refusals.of(() =>

@@ -1,23 +1,24 @@
 import { and, eq, isNull, ne } from 'drizzle-orm';
 import { Problem, invalidField } from '$lib/domain/core/errors';
-import { normaliseBed } from '$lib/domain/episodes/identifiers';
+import { written } from '$lib/domain/episodes/identifiers';
 import type { Tx } from '../db';
 import { episodes, placements, type units } from '../db/schema';
 import { newId } from '../ids';
+import { spelt } from './spelt';
 
 export type UnitRow = typeof units.$inferSelect;
 
 /** Where a patient is from a moment on: in a bed, or without one in a gym. */
 export interface Place {
 	unit: UnitRow;
-	/** In the form in which it is stored; null in a gym. */
+	/** In the form in which it is stored; null in a gym, unless its places have names. */
 	bed: string | null;
 }
 
 /**
  * The place that is meant by a unit and what was typed as its bed.
  * @param episodeId whose place it is to be: their own bed is not in use by somebody else; null for a new stay
- * @throws Problem `invalid` for a ward without a bed or a gym with one, `bed-in-use`
+ * @throws Problem `invalid` for a ward without a bed, `bed-in-use`
  */
 export async function placeIn(
 	tx: Tx,
@@ -25,11 +26,8 @@ export async function placeIn(
 	typed: string | null | undefined,
 	episodeId: string | null
 ): Promise<Place> {
-	const bed = normaliseBed(typed ?? '');
-	if (unit.kind === 'gym') {
-		if (bed !== '') {
-			throw invalidField('/bed', `${unit.name} has no beds: leave the bed empty.`);
-		}
+	const bed = written(typed ?? '');
+	if (bed === '' && unit.kind === 'gym') {
 		return { unit, bed: null };
 	}
 	if (bed === '') {
@@ -46,7 +44,7 @@ async function refuseUsedBed(tx: Tx, unit: UnitRow, bed: string, episodeId: stri
 		.where(
 			and(
 				eq(episodes.unitId, unit.id),
-				eq(episodes.bed, bed),
+				spelt(episodes.bed, bed),
 				isNull(episodes.closedAt),
 				episodeId === null ? undefined : ne(episodes.id, episodeId)
 			)
