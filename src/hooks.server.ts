@@ -14,15 +14,20 @@ import { secureHeaders } from '$lib/server/http/headers';
 import { countedFor, countRequest, linkTokenIn } from '$lib/server/http/limits';
 import { refuseForeignOrigin } from '$lib/server/http/origin';
 import { problemResponse } from '$lib/server/http/problem';
+import { Turnstile } from '$lib/server/http/turnstile';
 import { startServer } from '$lib/server/start';
 
 /** Runs once, before the first request is answered. */
 export const init: ServerInit = () => startServer();
 
+/** All requests go through it before they ask the database anything. */
+const turnstile = new Turnstile();
+
 const identify: Handle = async ({ event, resolve }) => {
 	const { cookies, request } = event;
 	// Read first: a connection that is gone after an await has no address any more.
 	const address = clientAddress(event);
+	await turnstile.pass();
 	const bearer = /^Bearer (\S+)$/.exec(request.headers.get('authorization') ?? '')?.[1];
 	const cookie = bearer ? null : await personOfCookie(cookies);
 	const person = bearer ? await personOfToken(bearer) : (cookie?.person ?? null);

@@ -2,29 +2,24 @@ import { setImmediate as turn } from 'node:timers/promises';
 
 /**
  * A first-come-first-served lock. `acquire` resolves to the function that releases it; calling it twice is harmless.
- * Between two holders the event loop turns once: the database works synchronously underneath, so that a row of
- * waiting writes would otherwise run as one and let nobody else in meanwhile.
+ * Before each holder the event loop turns once, even when nobody holds it: the database works synchronously
+ * underneath, so that writes that arrive together would otherwise run as one and let nobody else in meanwhile, each
+ * finding the lock free again.
  */
 export class Mutex {
 	#tail: Promise<void> = Promise.resolve();
-	#holders = 0;
 
 	async acquire(): Promise<() => void> {
 		let open = () => {};
 		const mine = new Promise<void>((resolve) => (open = resolve));
 		const before = this.#tail;
-		const waits = this.#holders > 0;
 		this.#tail = before.then(() => mine);
-		this.#holders += 1;
 		await before;
-		if (waits) {
-			await turn();
-		}
+		await turn();
 		let held = true;
 		return () => {
 			if (held) {
 				held = false;
-				this.#holders -= 1;
 				open();
 			}
 		};
