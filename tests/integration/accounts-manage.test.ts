@@ -210,8 +210,16 @@ describe('disabling an account', () => {
 		const [person, other] = [await nurse(), await nurse()];
 		const jar = await signedIn(person.id, HOSPITAL_NOW);
 		const digest = digestSecret(jar.get('ropewalk') ?? '');
-		const own = openStream(person, () => signInStillGood(digest, HOSPITAL_NOW), null).body?.getReader();
-		const others = openStream(other, () => Promise.resolve(true), null).body?.getReader();
+		const own = openStream({
+			person,
+			stillGood: () => signInStillGood(digest, HOSPITAL_NOW),
+			after: null
+		}).body?.getReader();
+		const others = openStream({
+			person: other,
+			stillGood: () => Promise.resolve(true),
+			after: null
+		}).body?.getReader();
 		if (!own || !others) {
 			throw new Error('A stream has no body.');
 		}
@@ -230,7 +238,7 @@ describe('disabling an account', () => {
 		const person = await nurse();
 		const token = (await makeToken(contextOf(person), { name: 'ward clock' })) ?? '';
 		const good = async () => (await personOfToken(token)) !== null;
-		const stream = openStream(person, good, null).body?.getReader();
+		const stream = openStream({ person, stillGood: good, after: null }).body?.getReader();
 		await stream?.read();
 		await stream?.read();
 		const [row] = await tokensOf(contextOf(person));

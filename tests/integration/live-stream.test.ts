@@ -1,10 +1,12 @@
 import { setImmediate as turn } from 'node:timers/promises';
+import { sql } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { db, transact } from '$lib/server/db';
 import { liveEvents } from '$lib/server/db/schema';
-import { guardedStream, MAX_QUEUED_BYTES, type Sink } from '$lib/server/live/guarded';
-import { publish } from '$lib/server/live/hub';
+import { cutReaders, guardedStream, type Sink } from '$lib/server/live/guarded';
+import { droppedListeners, listen, publish } from '$lib/server/live/hub';
 import { appendLive, canResume, currentCursor, forgetOldEvents, LIVE_HISTORY_MS } from '$lib/server/live/log';
+import { MAX_QUEUED_BYTES } from '$lib/server/live/pipe';
 import { mayHear, openStream } from '$lib/server/live/stream';
 import { freshDatabase } from '../support/database';
 import { makeHospital, type Hospital } from '../support/hospital';
@@ -16,6 +18,8 @@ beforeAll(async () => {
 	hospital = await makeHospital();
 });
 afterAll(() => close());
+
+const stillGood = () => Promise.resolve(true);
 
 const change = (cursor: number, id = 'x') =>
 	({ kind: 'change', cursor, event: { topic: 'thread', kind: 'entry', id, episodeId: null } }) as const;
@@ -30,23 +34,27 @@ async function eventually(holds: () => boolean): Promise<void> {
 function openGuarded(options: { beats?: boolean } = {}) {
 	let sink: Sink | null = null;
 	let stopped = 0;
+	let cutOff = 0;
 	const response = guardedStream(
 		(given) => {
 			sink = given;
 			return () => (stopped += 1);
 		},
-		() => Promise.resolve(true),
-		options
+		stillGood,
+		{ ...options, cutOff: () => (cutOff += 1) }
 	);
 	const send = (frame: ReturnType<typeof change>) => (sink as Sink | null)?.send(frame);
-	return { response, send, stops: () => stopped, end: () => (sink as Sink | null)?.end() };
+	const end = () => (sink as Sink | null)?.end();
+	return { response, send, stops: () => stopped, cuts: () => cutOff, end };
 }
 
 async function readUntil(response: Response, wanted: RegExp): Promise<string> {
 	const reader = response.body?.getReader();
 	const decoder = new TextDecoder();
 	let text = '';
-	while (!wanted.test(text)) {
+	while (!wanted.test(text.slice(-2_000))) {
+		// A reader that is slower than the sender, as every network is.
+		await turn();
 		const part = await reader?.read();
 		if (!part || part.done) {
 			break;
@@ -85,23 +93,25 @@ describe('one guarded stream', () => {
 	});
 
 	it('cuts a reader that does not read, and lets go of everything', async () => {
-		const { response, send, stops } = openGuarded();
+		const { response, send, stops, cuts } = openGuarded();
+		const before = cutReaders();
 		const bytes = JSON.stringify(change(1)).length;
 		for (let n = 0; n < (2 * MAX_QUEUED_BYTES) / bytes; n += 1) {
 			send(change(n));
 		}
 		await eventually(() => stops() === 1);
 		expect(send(change(1))).toBe(false);
+		expect([cuts(), cutReaders() - before]).toEqual([1, 1]);
 		// What was queued is gone too: a cut reader gets no half of it.
 		const reader = response.body?.getReader();
 		expect(await reader?.read()).toMatchObject({ done: true });
 	});
 
 	it('stops once when the client goes away', async () => {
-		const { response, stops } = openGuarded();
+		const { response, stops, cuts } = openGuarded();
 		await response.body?.cancel();
 		await eventually(() => stops() > 0);
-		expect(stops()).toBe(1);
+		expect([stops(), cuts()]).toEqual([1, 0]);
 	});
 
 	it('survives a start that throws', async () => {
@@ -144,13 +154,55 @@ describe('the log', () => {
 		const from = await currentCursor(db());
 		await happened(1);
 		await happened(2);
-		const response = openStream(hospital.people.nurse, () => Promise.resolve(true), from);
+		const response = openStream({ person: hospital.people.nurse, stillGood, after: from });
 		publish(await happened(3));
 		publish(await happened(4));
 		const text = await readUntil(response, new RegExp(`id: ${from + 4}\nevent`));
 		const ids = [...text.matchAll(/id: (\d+)\nevent: change/g)].map((match) => Number(match[1]));
 		expect(ids).toEqual([from + 1, from + 2, from + 3, from + 4]);
 		await response.body?.cancel();
+	});
+
+	it('replays more than may pile up to a reader at its own pace, whole and in order', async () => {
+		const from = await currentCursor(db());
+		const many = 5_000;
+		await transact((tx) =>
+			tx.run(sql`
+				with recursive n(i) as (select 1 union all select i + 1 from n where i < ${many})
+				insert into live_events (at, topic, kind, subject_id, episode_id, unit_id)
+				select 1, 'episode', 'admitted', 'e', ${hospital.episodeId},
+				(select unit_id from episodes where id = ${hospital.episodeId}) from n`)
+		);
+		const response = openStream({ person: hospital.people.nurse, stillGood, after: from });
+		const text = await readUntil(response, new RegExp(`id: ${from + many}\nevent`));
+		expect(text.length).toBeGreaterThan(2 * MAX_QUEUED_BYTES);
+		const ids = [...text.matchAll(/id: (\d+)\nevent: change/g)].map((match) => Number(match[1]));
+		expect(ids).toEqual(Array.from({ length: many }, (_, n) => from + 1 + n));
+		await response.body?.cancel();
+	});
+});
+
+describe('a listener that throws', () => {
+	it('is dropped, counted and told of, and the others hear on', async () => {
+		const before = droppedListeners();
+		const heard: string[] = [];
+		const stops = [
+			listen(
+				() => {
+					throw new Error('a bug');
+				},
+				() => heard.push('dropped')
+			),
+			listen((event) => heard.push(event.id))
+		];
+		const events = await transact((tx) =>
+			appendLive(tx, 1, [{ topic: 'episode', kind: 'admitted', id: 'e', episodeId: null }])
+		);
+		publish(events);
+		publish(events);
+		stops.forEach((stop) => stop());
+		expect(heard).toEqual(['dropped', 'e', 'e']);
+		expect(droppedListeners() - before).toBe(1);
 	});
 });
 

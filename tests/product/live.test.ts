@@ -1,6 +1,10 @@
 import { connect } from 'node:net';
+import path from 'node:path';
+import { sql } from 'drizzle-orm';
 import { EventSource } from 'eventsource';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { closeDatabase, db, openDatabase } from '$lib/server/db';
+import { currentCursor } from '$lib/server/live/log';
 import type { Client } from '../support/api';
 import { admit, signInAs } from '../support/api';
 import { startProduct, type Product } from '../support/server';
@@ -62,6 +66,29 @@ class Listener {
 	close(): void {
 		this.#source.close();
 	}
+}
+
+/** Many events of the past, more than sockets hold, so that a client can fall behind; gives the cursor before them. */
+async function fillLog(count: number): Promise<number> {
+	await product.kill('SIGTERM');
+	await openDatabase(`file:${path.join(product.dataDir, 'ropewalk.db')}`);
+	const before = await currentCursor(db());
+	try {
+		await db().run(sql`
+			with recursive n(i) as (select 1 union all select i + 1 from n where i < ${count})
+			insert into live_events (at, topic, kind, subject_id, episode_id, unit_id)
+			select ${Date.now()}, 'episode', 'admitted', ${episodeId}, ${episodeId},
+				(select unit_id from episodes where id = ${episodeId}) from n`);
+	} finally {
+		closeDatabase();
+	}
+	await product.restart();
+	return before;
+}
+
+async function metric(name: string): Promise<number> {
+	const text = await (await fetch(`${product.url}/metrics`)).text();
+	return Number(new RegExp(`^${name} (\\d+)$`, 'm').exec(text)?.[1]);
 }
 
 /** Of a patient of its own each time: a second open one to the same service is refused. */
@@ -191,6 +218,34 @@ describe('the live stream', () => {
 		listener.close();
 		stalled.destroy();
 		await closed;
+	});
+
+	it('cuts a client that stops reading, takes its connection away, and others hear on', async () => {
+		const after = await fillLog(120_000);
+		const listener = new Listener(nurse);
+		await listener.opened;
+		const before = await metric('ropewalk_live_readers_cut_total');
+		const { hostname, port } = new URL(product.url);
+		const stalled = connect(Number(port), hostname);
+		stalled.write(
+			`GET /api/live?after=${after} HTTP/1.1\r\nHost: ${hostname}\r\nCookie: ${nurse.cookie}\r\n\r\n`
+		);
+		stalled.pause();
+		stalled.on('error', () => {});
+		const closed = new Promise<void>((resolve) => stalled.once('close', () => resolve()));
+		// The others are served meanwhile; each answer is also a moment in which the reader is still not reading.
+		let served = 0;
+		while ((await metric('ropewalk_live_readers_cut_total')) === before) {
+			await refer();
+			served += 1;
+		}
+		await listener.until(() => referrals(listener).length >= served);
+		listener.close();
+		// A connection that was only let go of would stay open here for the next request.
+		stalled.resume();
+		await closed;
+		expect(served).toBeGreaterThan(0);
+		expect(stalled.bytesRead).toBeLessThan(120_000 * 50);
 	});
 
 	it('ends within a second of SIGTERM, and the server with it', async () => {

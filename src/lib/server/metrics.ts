@@ -3,6 +3,7 @@ import { collectDefaultMetrics, Counter, Gauge, Registry } from 'prom-client';
 import { db } from './db';
 import { escalations, outbox } from './db/schema';
 import { MESSAGE_STATES } from './db/schema/messages';
+import { cutReaders } from './live/guarded';
 import { droppedListeners } from './live/hub';
 import { openStreams } from './live/stream';
 
@@ -38,6 +39,7 @@ function newRegistry(): Registry {
 			this.set(openStreams());
 		}
 	});
+	counted(made, 'ropewalk_live_readers_cut_total', 'Live readers cut because they did not read.', cutReaders);
 	counted(
 		made,
 		'ropewalk_live_listeners_dropped_total',

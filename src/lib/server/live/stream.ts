@@ -4,7 +4,7 @@ import { Problem } from '$lib/domain/core/errors';
 import { loadPerson } from '../auth/people';
 import { db } from '../db';
 import { log } from '../log';
-import { guardedStream, type Sink } from './guarded';
+import { guardedStream, type Sink, type StreamOptions } from './guarded';
 import { listen, type LoggedEvent } from './hub';
 import { canResume, currentCursor, eventsAfter } from './log';
 
@@ -43,18 +43,17 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
 	}
 }
 
-/**
- * Open the live stream of one person.
- * @param after the cursor to resume from; null starts with what happens next
- * @param stillGood whether the sign-in or token behind it is still good; asked again at each heartbeat
- * @param options `beats`: for the product's own pages, which cannot see a heartbeat that is a comment
- */
-export function openStream(
-	person: Person,
-	stillGood: () => Promise<boolean>,
-	after: number | null,
-	options: { beats?: boolean } = {}
-): Response {
+/** `beats` is for the product's own pages, which cannot see a heartbeat that is a comment. */
+interface Listening extends StreamOptions {
+	person: Person;
+	/** Whether the sign-in or token behind it is still good; asked again at each heartbeat. */
+	stillGood: () => Promise<boolean>;
+	/** The cursor to resume from; null starts with what happens next. */
+	after: number | null;
+}
+
+/** Open the live stream of one person. */
+export function openStream({ person, stillGood, after, ...options }: Listening): Response {
 	if (closing) {
 		throw new Problem('not-ready', 'The server is stopping; try again in a few seconds.');
 	}
@@ -86,10 +85,15 @@ export function openStream(
 	return guardedStream(start, stillEntitled, options);
 }
 
+/** Events that wait for the end of a replay; more are read from the log again. */
+const MOST_WAITING = 500;
+
 /** One client's events in order: first the replay, then what was heard meanwhile, then live. */
 class Feed {
 	#waiting: LoggedEvent[] = [];
 	#busy = true;
+	#replaying = true;
+	#overflowed = false;
 	#last = 0;
 
 	constructor(
@@ -101,6 +105,11 @@ class Feed {
 
 	offer(event: LoggedEvent): void {
 		this.#waiting.push(event);
+		if (this.#replaying && this.#waiting.length > MOST_WAITING) {
+			// The replay reads them from the log; nothing may pile up behind a slow reader.
+			this.#waiting = [];
+			this.#overflowed = true;
+		}
 		if (!this.#busy) {
 			void this.#drain();
 		}
@@ -114,8 +123,12 @@ class Feed {
 		} else {
 			this.#last = after ?? newest;
 			this.sink.send({ kind: 'cursor', cursor: this.#last });
-			await this.#catchUp();
+			do {
+				this.#overflowed = false;
+				await this.#catchUp();
+			} while (this.#overflowed);
 		}
+		this.#replaying = false;
 		await this.#drain();
 	}
 
@@ -128,6 +141,7 @@ class Feed {
 			for (const event of events) {
 				await this.#pass(event);
 			}
+			await this.sink.room();
 		}
 	}
 
