@@ -4,6 +4,7 @@ import type { AddressInfo } from 'node:net';
 import { eq, sql } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { POSTS } from '$lib/domain/core/codes';
+import { admitBody } from '$lib/domain/episodes/forms';
 import { verifyAudit } from '$lib/server/audit/verify';
 import { passwordFits } from '$lib/server/auth/passwords';
 import { onCover } from '$lib/server/cover/queries';
@@ -21,9 +22,15 @@ import {
 import { listEpisodes } from '$lib/server/episodes/list';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { loadPerson } from '$lib/server/auth/people';
+import { now } from '$lib/server/clock';
+import { env } from '$lib/server/env';
+import { admitPatient } from '$lib/server/episodes/actions';
 import { prepareHospital } from '$lib/server/setup';
+import { Calendar } from '$lib/server/setup/demonstration/calendar';
+import { foundHospital } from '$lib/server/setup/demonstration/found';
 import { loadDemonstration } from '$lib/server/setup/demonstration/load';
 import { DEMO_PASSWORD } from '$lib/server/setup/demonstration/people';
+import { kindOfDatabase } from '$lib/server/setup/mark';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
 import { makeHospital } from '../support/hospital';
@@ -259,10 +266,27 @@ describe('a database that was not made as a demonstration', () => {
 		expect(await db().$count(users)).toBe(before);
 		expect(await db().$count(settings)).toBe(0);
 	});
+});
 
-	it('is refused when its making was interrupted', async () => {
+describe('a demonstration whose making was interrupted', () => {
+	let close = () => {};
+	afterEach(() => close());
+
+	it('is made anew at the next start, and is complete then', async () => {
 		({ close } = await freshDatabase());
-		await db().insert(settings).values({ key: 'demonstration', value: 'loading', changedAt: 1 });
-		await expect(prepareHospital()).rejects.toThrow(/is not complete/);
+		const { zone } = env().hospital;
+		const { people } = await foundHospital(new Calendar(now(), zone), now() - 80 * DAY);
+		const patient = { name: 'Left Over', birthDate: '1950-01-31', sex: 'female', mrn: 'LEFT-1' };
+		await admitPatient(
+			{ actor: people.nurse, now: now() - 79 * DAY, address: null, key: null },
+			admitBody.parse({ patient, unit: 'Tern Ward', bed: 'T3' })
+		);
+		expect(await kindOfDatabase()).toBe('unfinished');
+		await prepareHospital();
+		expect(await kindOfDatabase()).toBe('demonstration');
+		expect(await db().$count(users)).toBe(12);
+		expect(await db().$count(episodes)).toBe(14);
+		expect(await db().$count(patients, eq(patients.mrn, 'LEFT-1'))).toBe(0);
+		expect(await verifyAudit(db())).toMatchObject({ intact: true });
 	});
 });

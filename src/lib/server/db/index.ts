@@ -1,5 +1,7 @@
+import { rmSync } from 'node:fs';
 import { drizzle, type LibSQLDatabase } from 'drizzle-orm/libsql';
 import { SerialClient, watched } from './client';
+import { databaseFile } from './file';
 import { CarefulPool } from './pool';
 import * as schema from './schema';
 
@@ -15,6 +17,7 @@ const MAX_CONNECTIONS = 20;
 interface Open {
 	db: Db;
 	client: SerialClient;
+	url: string;
 }
 
 // In development the module is evaluated anew after a change while the old connections live on.
@@ -32,16 +35,20 @@ export async function openDatabase(url: string): Promise<Db> {
 	const client = new SerialClient(pool, 'number');
 	await client.execute('PRAGMA journal_mode = WAL');
 	const db = drizzle(client, { schema });
-	holder.__ropewalkDb = { db, client };
+	holder.__ropewalkDb = { db, client, url };
 	return db;
 }
 
 /** The database of this process. */
 export function db(): Db {
+	return opened().db;
+}
+
+function opened(): Open {
 	if (!holder.__ropewalkDb) {
 		throw new Error('The database is not open yet: openDatabase() runs in the start of the server.');
 	}
-	return holder.__ropewalkDb.db;
+	return holder.__ropewalkDb;
 }
 
 export function isDatabaseOpen(): boolean {
@@ -51,6 +58,22 @@ export function isDatabaseOpen(): boolean {
 export function closeDatabase(): void {
 	holder.__ropewalkDb?.client.close();
 	holder.__ropewalkDb = null;
+}
+
+/**
+ * Throw the database of this process away, with all that is in it, and open an empty one in its place, without
+ * tables. Only for what nobody has ever worked in: a demonstration whose making was interrupted.
+ * @throws Error when no database is open.
+ */
+export async function replaceDatabase(): Promise<Db> {
+	const { url } = opened();
+	closeDatabase();
+	const file = databaseFile(url);
+	// The file goes last: whatever is left by a kill in between is still a database of the same kind, or none.
+	for (const part of [`${file}-wal`, `${file}-shm`, file]) {
+		rmSync(part, { force: true });
+	}
+	return openDatabase(url);
 }
 
 /**

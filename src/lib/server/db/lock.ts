@@ -1,6 +1,6 @@
-import { realpathSync } from 'node:fs';
 import path from 'node:path';
 import Database from 'libsql';
+import { databaseFile } from './file';
 
 /** What a process owns for its life. */
 export interface Lock {
@@ -49,22 +49,4 @@ function hold(file: string, refusal: string): Lock {
 		throw new Error(refusal, { cause: error });
 	}
 	return { release: () => connection.close() };
-}
-
-/** The file itself: however it is written, and whatever points to it, two processes mean the same one. */
-function databaseFile(databaseUrl: string): string {
-	const given = path.resolve(databaseUrl.replace(/^file:/, ''));
-	return real(given) ?? path.join(real(path.dirname(given)) ?? path.dirname(given), path.basename(given));
-}
-
-/** Null when it is not there: the first start makes the file. */
-function real(place: string): string | null {
-	try {
-		return realpathSync(place);
-	} catch (error) {
-		if ((error as NodeJS.ErrnoException).code === 'ENOENT') {
-			return null;
-		}
-		throw error;
-	}
 }

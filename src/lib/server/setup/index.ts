@@ -1,5 +1,8 @@
 import { now } from '../clock';
+import { replaceDatabase } from '../db';
+import { migrateDatabase } from '../db/migrate';
 import { env } from '../env';
+import { log } from '../log';
 import { loadDemonstration } from './demonstration/load';
 import { namePhones } from './demonstration/phones';
 import { inviteFirstAdmin, printFirstAdminLink } from './first-admin';
@@ -36,11 +39,18 @@ async function prepareDemonstration(kind: Kind): Promise<void> {
 					'Nothing was changed. Choose another DATA_DIR, or start without DEMO=1.'
 			);
 		case 'unfinished':
-			throw new Error(
-				`The demonstration in ${env().databaseUrl} is not complete, because its making was interrupted. ` +
-					'Remove that file, or choose another DATA_DIR, and start again.'
-			);
+			return makeAnew();
 	}
+}
+
+/**
+ * A server that was stopped while it made the demonstration has let nobody in yet: what it leaves is invented, and
+ * nothing in it can be completed, because its deeds happened in an order.
+ */
+async function makeAnew(): Promise<void> {
+	log().warn('the making of the demonstration was interrupted; it is made anew');
+	await migrateDatabase(await replaceDatabase());
+	await loadDemonstration(now());
 }
 
 function refuseDemonstration(kind: Kind): void {
