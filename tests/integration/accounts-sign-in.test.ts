@@ -2,6 +2,7 @@ import { desc, eq, sql } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import { Problem } from '$lib/domain/core/errors';
 import { signIn, signOut } from '$lib/server/accounts/sign-in';
+import { endSignInsOver } from '$lib/server/accounts/sign-in-ends';
 import { SIGN_IN_MS } from '$lib/server/auth/lucia';
 import { hashPassword } from '$lib/server/auth/passwords';
 import { personOfCookie } from '$lib/server/auth/sign-ins';
@@ -14,6 +15,7 @@ import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
 import { HOSPITAL_NOW, addPerson, contextOf, makeHospital } from '../support/hospital';
 
+const HOUR = 60 * 60 * 1000;
 const PASSWORD = 'seven grey herons stand';
 const ADDRESS = '203.0.113.7';
 
@@ -233,5 +235,62 @@ describe('signing out', () => {
 		const before = await db().$count(audit);
 		await signOut(at(HOSPITAL_NOW), Jar.empty());
 		expect(await db().$count(audit)).toBe(before);
+	});
+});
+
+describe('a shift that is over', () => {
+	/** Una signs in twice and Bela once, an hour later; nobody else has a sign-in. */
+	async function threeSignIns(): Promise<void> {
+		await db().delete(signIns);
+		await attempt('una', PASSWORD);
+		await attempt('una', PASSWORD);
+		await attempt('bela', PASSWORD, HOSPITAL_NOW + HOUR);
+	}
+	const ends = () => db().select().from(audit).where(eq(audit.action, 'account.sign-ins-ended'));
+
+	it.each([
+		['an instant before', SIGN_IN_MS - 1, [], 3],
+		['at its end', SIGN_IN_MS, [['una', 2]], 1],
+		['an instant before the later one', SIGN_IN_MS + HOUR - 1, [['una', 2]], 1],
+		[
+			'when both are over',
+			SIGN_IN_MS + HOUR,
+			[
+				['una', 2],
+				['bela', 1]
+			],
+			0
+		]
+	] as const)('%s ends what it must, with a line for each account', async (_, after, ended, left) => {
+		await threeSignIns();
+		const before = (await ends()).length;
+		expect(await endSignInsOver(HOSPITAL_NOW + after)).toBe(ended.length);
+		expect(await db().$count(signIns)).toBe(left);
+		const lines = (await ends()).slice(before).map(({ actorKind, actorId, objectId, detail }) => {
+			return { actorKind, actorId, objectId, detail };
+		});
+		expect(lines).toEqual(
+			expect.arrayContaining(
+				ended.map(([name, count]) => ({
+					actorKind: 'system',
+					actorId: 'sign-ins',
+					objectId: ids[name],
+					detail: { by: 'shift-over', count }
+				}))
+			)
+		);
+		expect(lines).toHaveLength(ended.length);
+	});
+
+	it('is put on record once, though its cookie is shown again and again', async () => {
+		await db().delete(signIns);
+		const { jar } = await attempt('una', PASSWORD);
+		vi.setSystemTime(HOSPITAL_NOW + 2 * SIGN_IN_MS);
+		const before = (await ends()).length;
+		expect([await personOfCookie(jar), await personOfCookie(jar)]).toEqual([null, null]);
+		expect(await db().$count(signIns)).toBe(1);
+		expect(await endSignInsOver(HOSPITAL_NOW + 2 * SIGN_IN_MS)).toBe(1);
+		expect(await endSignInsOver(HOSPITAL_NOW + 2 * SIGN_IN_MS)).toBe(0);
+		expect(await ends()).toHaveLength(before + 1);
 	});
 });

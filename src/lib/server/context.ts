@@ -24,7 +24,7 @@ export interface WriteKey {
 
 /** A context for work that no request asked for. */
 export function systemContext(
-	id: 'chain' | 'lapses' | 'reminders' | 'setup' | 'demonstration',
+	id: 'chain' | 'lapses' | 'reminders' | 'setup' | 'demonstration' | 'sign-ins',
 	at: number = now()
 ): Context<{ kind: 'system'; id: typeof id }> {
 	return { actor: { kind: 'system', id }, now: at, address: null, key: null };

@@ -22,7 +22,7 @@ export interface PatientActor {
 /** The hospital's own clockwork: chain, lapses, reminders, demonstration. */
 export interface SystemActor {
 	kind: 'system';
-	id: 'chain' | 'lapses' | 'reminders' | 'setup' | 'demonstration';
+	id: 'chain' | 'lapses' | 'reminders' | 'setup' | 'demonstration' | 'sign-ins';
 }
 
 /** Somebody who holds the secret link of one escalation: that person, for that one deed, without a sign-in. */

@@ -17,10 +17,17 @@ export const SIGN_IN_MS = SIGN_IN_HOURS * 60 * 60 * 1000;
 
 let made: { lucia: Lucia<{ createdAt: number }>; on: Db } | null = null;
 
+/** Looking at a sign-in that has ended does not remove it: `endSignInsOver()` does, and puts it on record. */
+class KeepingAdapter extends DrizzleSQLiteAdapter {
+	override deleteSession(): Promise<void> {
+		return Promise.resolve();
+	}
+}
+
 /** lucia over the database that is open now; only `auth/` knows that it is lucia. */
 export function lucia(): Lucia<{ createdAt: number }> {
 	if (made?.on !== db()) {
-		const adapter = new DrizzleSQLiteAdapter(db(), signIns, users);
+		const adapter = new KeepingAdapter(db(), signIns, users);
 		made = {
 			on: db(),
 			lucia: new Lucia(adapter, {

@@ -1,5 +1,5 @@
 import type { Cookies } from '@sveltejs/kit';
-import { eq, lte } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { now } from '../clock';
 import { db, type Tx } from '../db';
@@ -49,11 +49,7 @@ export async function personOfCookie(cookies: Cookies): Promise<{ person: Person
 		return null;
 	}
 	const { session } = await lucia().validateSession(digestSecret(token));
-	if (!session) {
-		return null;
-	}
-	if (session.createdAt + SIGN_IN_MS <= now()) {
-		await lucia().invalidateSession(session.id);
+	if (!session || session.createdAt + SIGN_IN_MS <= now()) {
 		return null;
 	}
 	const person = await loadPerson(db(), session.userId);
@@ -72,18 +68,4 @@ export async function endSignIn(tx: Tx, cookies: Cookies): Promise<void> {
 export async function signInStillGood(signInId: string, at: number): Promise<boolean> {
 	const { session } = await lucia().validateSession(signInId);
 	return session !== null && session.createdAt + SIGN_IN_MS > at;
-}
-
-/**
- * Remove the sign-ins that are over by then.
- * @returns how many
- */
-export async function removeEndedSignIns(at: number): Promise<number> {
-	const over = lte(signIns.createdAt, at - SIGN_IN_MS);
-	// Asked every second, and seldom so: looking first keeps the write lock free.
-	if ((await db().$count(signIns, over)) === 0) {
-		return 0;
-	}
-	const ended = await db().delete(signIns).where(over).returning({ id: signIns.id });
-	return ended.length;
 }

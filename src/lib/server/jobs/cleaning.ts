@@ -1,4 +1,4 @@
-import { removeEndedSignIns } from '../auth/sign-ins';
+import { endSignInsOver } from '../accounts/sign-in-ends';
 import { db } from '../db';
 import { forgetOldKeys } from '../idempotency';
 import { forgetOldEvents } from '../live/log';
@@ -27,7 +27,7 @@ export const cleaning: Job = {
 export const signInEnds: Job = {
 	name: 'sign-in ends',
 	async run(now) {
-		const ended = await removeEndedSignIns(now);
+		const ended = await endSignInsOver(now);
 		if (ended > 0) {
 			await endUnentitledStreams();
 		}

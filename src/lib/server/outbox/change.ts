@@ -10,7 +10,8 @@ export type MessageState = OutboxRow['state'];
 
 /**
  * One transaction over messages alone: what the work pushes to `events` is logged with it and published after the
- * commit. What becomes of a message is on record in its attempts, so it needs no row of the audit.
+ * commit. What becomes of a message is on record in its attempts; the audit gets a row when it fails. This goes past
+ * `write()` on purpose: docs/ARCHITECTURE.md names all that does.
  */
 export async function changing<T>(at: number, work: (tx: Tx, events: LiveEvent[]) => Promise<T>): Promise<T> {
 	const { result, logged } = await transact(async (tx) => {
