@@ -75,7 +75,7 @@ const problems: Handle = async ({ event, resolve }) => {
 	try {
 		const response = await resolve(event);
 		if (api && response.status === 405) {
-			return problemResponse(new Problem('no-such-method', `${event.request.method} is not known here.`));
+			return noSuchMethod(event.request.method, response);
 		}
 		if (api && event.route.id === null) {
 			return problemResponse(new Problem('not-found', `There is no ${event.url.pathname}.`));
@@ -91,6 +91,13 @@ const problems: Handle = async ({ event, resolve }) => {
 		error(thrown.status, { message: thrown.detail, code: thrown.code });
 	}
 };
+
+/** RFC 9110, 15.5.6: the answer says which methods there are. */
+function noSuchMethod(method: string, { headers }: Response): Response {
+	const response = problemResponse(new Problem('no-such-method', `${method} is not known here.`));
+	response.headers.set('allow', headers.get('allow') ?? '');
+	return response;
+}
 
 const harden: Handle = async ({ event, resolve }) => secureHeaders(await resolve(event), event.url.pathname);
 

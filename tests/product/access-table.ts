@@ -104,3 +104,33 @@ export const API: Record<string, Row> = {
 	'POST /api/visits/[id]/attend': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] },
 	'POST /api/visits/[id]/miss': { roles: ['coordinator', 'therapist', 'nurse'], answers: [404] }
 };
+
+/** The handlers that are no part of the API, nor of a page. */
+export const OUTSIDE: Record<string, Row> = {
+	'GET /healthz': { roles: 'everyone', answers: [200] },
+	'GET /readyz': { roles: 'everyone', answers: [200] },
+	'GET /metrics': { roles: 'everyone', answers: [200] },
+	'GET /demo': { roles: 'everyone', answers: [303] },
+	'GET /phones': { roles: 'everyone', answers: [303] },
+	'POST /sign-out': { roles: 'everyone', answers: [303] },
+	'GET /t/[token]/state': { roles: 'everyone', answers: [404] }
+};
+
+/** A form that needs no sign-in: whoever sends it, the fields alone decide. */
+export interface OpenForm {
+	fields: Record<string, string>;
+	answer: number;
+}
+
+const PASSWORD = 'eight white egrets fly';
+
+export const OPEN_FORMS: Record<string, OpenForm> = {
+	'/sign-in': { fields: {}, answer: 422 },
+	'/sign-in/send': { fields: {}, answer: 400 },
+	'/invite/[token]?/become': {
+		fields: { name: 'Una Fairlead', email: 'una@saltmarsh.example', password: PASSWORD },
+		answer: 404
+	},
+	'/invite/[token]?/choose': { fields: { password: PASSWORD }, answer: 404 },
+	'/t/[token]': { fields: { deed: 'take' }, answer: 404 }
+};

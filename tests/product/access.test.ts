@@ -1,11 +1,15 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { ROLES, type Role } from '$lib/domain/core/codes';
 import { Client, signInAs } from '../support/api';
-import { apiHandlers } from '../support/route-files';
+import { handlers, noHandlers, openFormActions } from '../support/route-files';
 import { startProduct, type Product } from '../support/server';
-import { API, type Row } from './access-table';
+import { API, OPEN_FORMS, OUTSIDE, type Row } from './access-table';
 
 const UNKNOWN = '01890000-0000-7000-8000-000000000000';
+/** Shaped like the token of a link, and none. */
+const MADE_UP = 'Ab-cdefghijklmnopqrs_t';
+/** They end the sign-in that they come with, so each call gets one of its own. */
+const ENDING = ['DELETE /api/session', 'POST /sign-out'];
 
 let product: Product;
 const clients = new Map<Role, Client>();
@@ -22,10 +26,14 @@ function allowed(row: Row, role: Role): boolean {
 	return typeof row.roles === 'string' || row.roles.includes(role);
 }
 
+function addressOf(handler: string): string {
+	return handler.replace(/^\w+ /, '').replace('[id]', UNKNOWN).replace('[token]', MADE_UP);
+}
+
 async function call(client: Client, handler: string): Promise<number> {
-	const [method = '', address = ''] = handler.split(' ');
-	const path = address.replace('[id]', UNKNOWN);
-	if (address === '/api/live') {
+	const [method = ''] = handler.split(' ');
+	const path = addressOf(handler);
+	if (path === '/api/live') {
 		const stop = new AbortController();
 		const headers = client.cookie ? { cookie: client.cookie } : undefined;
 		const response = await fetch(client.url + path, { signal: stop.signal, ...(headers && { headers }) });
@@ -35,17 +43,22 @@ async function call(client: Client, handler: string): Promise<number> {
 	return (await client.send(method, path, method === 'GET' ? undefined : {})).status;
 }
 
-describe('every handler of the API', () => {
+const ROWS = { ...API, ...OUTSIDE };
+
+describe('every handler', () => {
 	it('has its row, and every row its handler', () => {
-		expect(Object.keys(API).toSorted()).toEqual(apiHandlers().toSorted());
+		expect(Object.keys(ROWS).toSorted()).toEqual(handlers().toSorted());
 	});
 
-	// Signing out would end the client's own sign-in for the rows after it; api.test.ts covers it.
-	const rows = Object.entries(API).filter(([handler]) => handler !== 'DELETE /api/session');
-	describe.each(rows)('%s', (handler, row) => {
+	describe.each(Object.entries(ROWS))('%s', (handler, row) => {
 		it.each(ROLES)('by a %s', async (role) => {
-			const status = await call(clients.get(role) ?? new Client(product.url, null), handler);
+			const ending = ENDING.includes(handler);
+			const client = ending ? await signInAs(product.url, role) : clients.get(role);
+			const status = await call(client ?? new Client(product.url, null), handler);
 			expect(allowed(row, role) ? row.answers : [403]).toContain(status);
+			if (ending) {
+				expect((await client?.get('/api/me'))?.status).toBe(401);
+			}
 		});
 
 		it('by nobody', async () => {
@@ -65,13 +78,60 @@ describe('every handler of the API', () => {
 					...(cookie && { cookie }),
 					...(origin && { origin })
 				};
-				const response = await fetch(product.url + address.replace('[id]', UNKNOWN), {
+				const response = await fetch(product.url + addressOf(handler), {
 					method,
 					headers,
 					body: '{}'
 				});
 				expect([origin, response.status]).toEqual([origin, 403]);
 			}
+		});
+	});
+});
+
+describe('a method that a route does not have', () => {
+	it.each(noHandlers())('%s', async (handler) => {
+		const [method = '', route = ''] = handler.split(' ');
+		const client = clients.get('surgeon') ?? new Client(product.url, null);
+		const { status, headers, body } = await client.send(method, addressOf(handler));
+		expect(status).toBe(405);
+		const there = handlers().filter((each) => each.endsWith(` ${route}`));
+		for (const each of there) {
+			expect(headers.get('allow')).toContain(each.split(' ')[0]);
+		}
+		if (route.startsWith('/api/')) {
+			expect(headers.get('content-type')).toBe('application/problem+json');
+			expect(body).toMatchObject({ type: 'no-such-method', status: 405 });
+		}
+	});
+});
+
+describe('every form that needs no sign-in', () => {
+	it('has its row, and every row its form', () => {
+		expect(Object.keys(OPEN_FORMS).toSorted()).toEqual(openFormActions().toSorted());
+	});
+
+	/** The status that the action itself gave, as a page with script gets it. */
+	async function sent(action: string, fields: Record<string, string>, more: Record<string, string>) {
+		const response = await fetch(product.url + action.replace('[token]', MADE_UP), {
+			method: 'POST',
+			redirect: 'manual',
+			headers: { accept: 'application/json', 'x-sveltekit-action': 'true', ...more },
+			body: new URLSearchParams(fields)
+		});
+		const { status } = (await response.json()) as { status?: number };
+		return status ?? response.status;
+	}
+
+	describe.each(Object.entries(OPEN_FORMS))('%s', (action, { fields, answer }) => {
+		it.each([...ROLES, null])('by a %s', async (role) => {
+			const cookie = role && clients.get(role)?.cookie;
+			const headers = { origin: product.url, ...(cookie && { cookie }) };
+			expect(await sent(action, fields, headers)).toBe(answer);
+		});
+
+		it.each(['https://evil.example', 'null'])('from the page %s', async (origin) => {
+			expect(await sent(action, fields, { origin })).toBe(403);
 		});
 	});
 });

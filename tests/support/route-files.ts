@@ -4,17 +4,31 @@ import ts from 'typescript';
 
 const ROUTES = path.resolve('src/routes');
 
-/** Every handler of the API, as `POST /api/episodes/[id]/visits`, read from the route files themselves. */
+const METHODS = ['GET', 'POST', 'PUT', 'PATCH', 'DELETE'] as const;
+
+/** Every handler of a `+server.ts`, as `POST /api/episodes/[id]/visits`, read from the route files themselves. */
+export function handlers(): string[] {
+	return servers().flatMap(({ address, methods }) => methods.map((method) => `${method} ${address}`));
+}
+
+/** Those of the API alone. */
 export function apiHandlers(): string[] {
-	return files('+server.ts')
-		.filter((file) => file.startsWith('api/'))
-		.flatMap((file) => {
-			const text = readFileSync(path.join(ROUTES, file), 'utf8');
-			const methods = [
-				...text.matchAll(/export (?:const|function|async function) (GET|POST|PUT|PATCH|DELETE)\b/g)
-			];
-			return methods.map((match) => `${match[1]} ${addressOf(file)}`);
-		});
+	return handlers().filter((handler) => handler.includes(' /api/'));
+}
+
+/** Every method that a `+server.ts` does not export, written as its handlers are. */
+export function noHandlers(): string[] {
+	return servers().flatMap(({ address, methods }) =>
+		METHODS.filter((method) => !methods.includes(method)).map((method) => `${method} ${address}`)
+	);
+}
+
+function servers(): { address: string; methods: string[] }[] {
+	return files('+server.ts').map((file) => {
+		const text = readFileSync(path.join(ROUTES, file), 'utf8');
+		const exported = text.matchAll(/export (?:const|function|async function) (GET|POST|PUT|PATCH|DELETE)\b/g);
+		return { address: addressOf(file), methods: [...exported].map((match) => match[1] ?? '') };
+	});
 }
 
 /** Every page, as `/patients/[id]/threads/[threadId]`, with the group it belongs to. */
@@ -37,8 +51,17 @@ function addressOf(file: string): string {
 
 /** Every form action of a page behind the sign-in, as `/patients/[id]/threads/[threadId]?/post`; a page's only one has no name. */
 export function formActions(): string[] {
+	return actionsOf((file) => file.startsWith('(app)'));
+}
+
+/** Every form action of a page that needs no sign-in, written the same way; the page that shows styles left out. */
+export function openFormActions(): string[] {
+	return actionsOf((file) => file.startsWith('(public)') || file.startsWith('(phone)'));
+}
+
+function actionsOf(among: (file: string) => boolean): string[] {
 	return files('+page.server.ts')
-		.filter((file) => file.startsWith('(app)'))
+		.filter(among)
 		.flatMap((file) => {
 			const text = readFileSync(path.join(ROUTES, file), 'utf8');
 			const names = actionNames(ts.createSourceFile(file, text, ts.ScriptTarget.Latest));
