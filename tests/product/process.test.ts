@@ -1,6 +1,9 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
+import { mkdtempSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
 import { signInAs } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 import { freePorts } from '../../src/cli/lib/ports.mjs';
@@ -12,10 +15,19 @@ beforeAll(async () => {
 afterAll(() => product?.stop());
 
 describe('processes', () => {
-	it('a second one on the same folder says so and stops', async () => {
+	it.each([
+		['folder', () => ({ DATA_DIR: product.dataDir })],
+		[
+			'database, with a folder of its own,',
+			() => ({
+				DATA_DIR: mkdtempSync(path.join(tmpdir(), 'ropewalk-')),
+				DATABASE_URL: `file:${path.join(product.dataDir, 'ropewalk.db')}`
+			})
+		]
+	])('a second one on the same %s says so and stops', async (_, where) => {
 		const [port = 0] = await freePorts(1);
 		const second = spawn(process.execPath, ['build/index.js'], {
-			env: { ...process.env, DEMO: '1', PORT: String(port), HOST: '127.0.0.1', DATA_DIR: product.dataDir },
+			env: { ...process.env, DEMO: '1', PORT: String(port), HOST: '127.0.0.1', ...where() },
 			stdio: ['ignore', 'pipe', 'pipe']
 		});
 		let said = '';
