@@ -1,17 +1,22 @@
 /**
  * Kill the server with SIGKILL at random moments while four writers post, start it again, and look: nothing that
  * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds.
+ * Then the same in the middle of calls for help: none lost, none with two holders, and every untaken one goes on.
  * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run.
  */
 import { setTimeout as pause } from 'node:timers/promises';
 import { admit, signInAs, type Client } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 import { checkEntries, checkFile } from './checks';
+import { checkCalls } from './escalation-checks';
+import { callThroughKill, type Call, type Crew, type Taker } from './escalations';
 import { postUntil, send, type Write } from './writers';
 
 const READY_MS = 3_000;
 const SHORT_ROUNDS = 5;
 const LONG_ROUNDS = 60;
+const SHORT_CALLS = 4;
+const LONG_CALLS = 100;
 const WRITERS = ['surgeon', 'nurse', 'therapist', 'physician'] as const;
 
 const argument = (name: string) => {
@@ -19,6 +24,7 @@ const argument = (name: string) => {
 	return index < 0 ? null : (process.argv[index + 1] ?? null);
 };
 const rounds = process.argv.includes('--short') ? SHORT_ROUNDS : LONG_ROUNDS;
+const callCount = process.argv.includes('--short') ? SHORT_CALLS : LONG_CALLS;
 const seed = Number(argument('--seed') ?? Date.now() % 1_000_000);
 const random = mulberry32(seed);
 
@@ -85,8 +91,35 @@ async function crash(
 	return ready;
 }
 
+async function takerOf(client: Client): Promise<Taker> {
+	const { user } = (await client.get('/api/me')).body as unknown as { user: { id: string } };
+	return { client, id: user.id };
+}
+
+/** Kill the server once in the middle of each of many calls for help, and add how long each start took. */
+async function killCalls(
+	product: Product,
+	[surgeon, nurse, therapist, physician]: Client[],
+	readyTimes: number[]
+): Promise<void> {
+	if (!surgeon || !nurse || !therapist || !physician) {
+		throw new Error('The crew of a call is not complete.');
+	}
+	const crew: Crew = { surgeon, therapist, takers: [await takerOf(nurse), await takerOf(physician)] };
+	const calls: Call[] = [];
+	for (let n = 0; n < callCount; n += 1) {
+		const { call, readyMs } = await callThroughKill(product, crew, random);
+		calls.push(call);
+		readyTimes.push(readyMs);
+	}
+	check(
+		'calls for help, a kill in each: none lost, none with two holders, all go on',
+		await checkCalls(product, surgeon, calls)
+	);
+}
+
 async function main(): Promise<void> {
-	console.log(`crash test: ${rounds} rounds, seed ${seed}`);
+	console.log(`crash test: ${rounds} rounds and ${callCount} calls, seed ${seed}`);
 	const product = await startProduct({ env: { RATE_LIMIT_SCALE: '1000' } });
 	try {
 		const clients = await Promise.all(WRITERS.map((role) => signInAs(product.url, role)));
@@ -100,6 +133,7 @@ async function main(): Promise<void> {
 			`${writes.length} entries in ${rounds} kills: none lost, none doubled`,
 			await checkEntries(clients[1] as Client, writes)
 		);
+		await killCalls(product, clients, readyTimes);
 		const slow = readyTimes.filter((ms) => ms > READY_MS).map((ms) => `ready after ${Math.round(ms)} ms`);
 		check(`ready again within ${READY_MS} ms, at most ${Math.round(Math.max(...readyTimes))} ms`, slow);
 		await product.kill('SIGTERM');
