@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { ROLES, type Role } from '$lib/domain/core/codes';
+import { m } from '$lib/i18n/paraglide/messages';
 import { Client, signInAs } from '../support/api';
 import { pages } from '../support/route-files';
 import { startProduct, type Product } from '../support/server';
@@ -95,5 +96,30 @@ describe('every page behind the sign-in', () => {
 			const data = await nobody.get(`${addressFor(page)}/__data.json`);
 			expect([data.status, data.body]).toEqual([200, { type: 'redirect', location: onward }]);
 		});
+	});
+});
+
+describe('what the product is not', () => {
+	it.each(['/', '/sign-in'])(
+		'stands on %s, for who comes without script and without a sign-in',
+		async (page) => {
+			const { status, text } = await new Client(product.url, null).get(page);
+			expect(status).toBe(200);
+			for (const words of [
+				m.common_use_is_text(),
+				m.common_use_not_title(),
+				m.common_use_not_text(),
+				m.common_use_emergency_text()
+			]) {
+				expect(text).toContain(words);
+			}
+		}
+	);
+
+	it('is said in words that deny a monitor, an alarm, prescribing and the legal record', () => {
+		const said = `${m.common_use_not_title()} ${m.common_use_not_text()}`;
+		for (const denied of ['monitor', 'alarm system', 'prescribing system', 'legal patient record']) {
+			expect(said).toContain(denied);
+		}
 	});
 });
