@@ -19,3 +19,8 @@ export function advanceClock(byMs: number): void {
 	}
 	offsetMs += byMs;
 }
+
+/** How far the clock was moved so far, milliseconds. */
+export function movedBy(): number {
+	return offsetMs;
+}

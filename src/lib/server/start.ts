@@ -7,6 +7,7 @@ import { startWork, stopWork } from './jobs/work';
 import { endAllStreams } from './live/stream';
 import { log } from './log';
 import { prepareHospital } from './setup';
+import { takeUpClock } from './setup/moved-clock';
 
 // In development this module is evaluated anew after a change, while the process and its database live on.
 const state = globalThis as typeof globalThis & { __ropewalkStarted?: Promise<void> };
@@ -35,6 +36,9 @@ async function start(): Promise<void> {
 	const lock = lockData(env().dataDir, env().databaseUrl);
 	await openDatabase(env().databaseUrl);
 	await migrateDatabase(db());
+	if (env().testClock) {
+		await takeUpClock();
+	}
 	await prepareHospital();
 	startWork();
 	stopOnSignal(lock);

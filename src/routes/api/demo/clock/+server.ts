@@ -1,11 +1,12 @@
 import { z } from 'zod';
 import { Problem } from '$lib/domain/core/errors';
-import { advanceClock, now } from '$lib/server/clock';
+import { now } from '$lib/server/clock';
 import { env } from '$lib/server/env';
 import { readJson } from '$lib/server/http/body';
 import { answering, jsonResponse } from '$lib/server/http/endpoint';
 import { invalidBody } from '$lib/server/http/problem';
 import { settleWork } from '$lib/server/jobs/work';
+import { moveClock } from '$lib/server/setup/moved-clock';
 import type { RequestHandler } from './$types';
 
 const YEAR_MS = 366 * 24 * 60 * 60 * 1000;
@@ -28,7 +29,7 @@ export const PUT: RequestHandler = ({ request }) =>
 		if (!parsed.success) {
 			throw invalidBody(parsed.error);
 		}
-		advanceClock(parsed.data.advanceMs);
+		await moveClock(parsed.data.advanceMs);
 		await settleWork();
 		return jsonResponse(200, { now: new Date(now()).toISOString() });
 	});
