@@ -9,7 +9,7 @@ export default defineConfig({
 		paraglideVitePlugin({
 			project: './src/lib/i18n/project.inlang',
 			outdir: './src/lib/i18n/paraglide',
-			strategy: ['baseLocale']
+			strategy: ['cookie', 'baseLocale']
 		}),
 		sveltekit()
 	],

@@ -1,6 +1,8 @@
 import { error, redirect, type Handle, type HandleServerError, type ServerInit } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 import { Problem } from '$lib/domain/core/errors';
+import { baseLocale } from '$lib/i18n/paraglide/runtime';
+import { paraglideMiddleware } from '$lib/i18n/paraglide/server';
 import { routes } from '$lib/routes';
 import { personOfToken } from '$lib/server/auth/people';
 import { personOfCookie, signInStillGood } from '$lib/server/auth/sign-ins';
@@ -101,7 +103,18 @@ function noSuchMethod(method: string, { headers }: Response): Response {
 
 const harden: Handle = async ({ event, resolve }) => secureHeaders(await resolve(event), event.url.pathname);
 
-export const handle = sequence(harden, problems, identify, guard);
+/**
+ * A page is read in the language that its reader chose. What a write puts on record is not: a thread has one
+ * language, that of the hospital, whoever writes into it.
+ */
+const language: Handle = ({ event, resolve }) => {
+	const spoken = (lang: string) =>
+		resolve(event, { transformPageChunk: ({ html }) => html.replace('%lang%', lang) });
+	const isPage = event.request.method === 'GET' && !event.url.pathname.startsWith('/api/');
+	return isPage ? paraglideMiddleware(event.request, ({ locale }) => spoken(locale)) : spoken(baseLocale);
+};
+
+export const handle = sequence(harden, problems, language, identify, guard);
 
 /** Expected errors keep their text; anything else is logged under an id and answered without detail. */
 export const handleError: HandleServerError = ({ error: thrown, event, status, message }) => {

@@ -46,7 +46,7 @@ const patientOf = async (id: string) => (await db().select().from(patients).wher
 describe('who is admitted', () => {
 	it('is one patient for one hospital number, however it is written', async () => {
 		const { mrn, patientId } = await wasHere();
-		const again = await admitPatient(as(), asked({ mrn: ` ${mrn.toLowerCase().replace('-', '- ')} ` }));
+		const again = await admitPatient(as(), asked({ mrn: ` ${mrn.toLowerCase().replace('-', ' ')} ` }));
 		expect(again.result.patientId).toBe(patientId);
 		expect((await patientOf(patientId))?.mrn).toBe(mrn);
 	});

@@ -112,3 +112,19 @@ describe('words of the pages', () => {
 		expect(written).toEqual([]);
 	});
 });
+
+describe('Spanish, as far as it has come', () => {
+	const english: Record<string, string> = JSON.parse(readFileSync(`${CATALOGUE}/common.json`, 'utf8'));
+	const spanish: Record<string, string> = JSON.parse(
+		readFileSync(`${CATALOGUE.replace(/en$/, 'es')}/common.json`, 'utf8')
+	);
+	const blanks = (text = '') => [...text.matchAll(/\{\w+\}/g)].map(([blank]) => blank).sort();
+
+	it('has the words of the shell and the front page, each with the same blanks', () => {
+		expect(Object.keys(spanish).length).toBeGreaterThan(100);
+		const other = Object.entries(spanish).filter(
+			([key, text]) => !(key in english) || blanks(text).join() !== blanks(english[key]).join()
+		);
+		expect(other).toEqual([]);
+	});
+});

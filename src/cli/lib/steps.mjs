@@ -30,7 +30,7 @@ export const STEPS = [
 			'compile',
 			...['--project', './src/lib/i18n/project.inlang'],
 			...['--outdir', './src/lib/i18n/paraglide'],
-			...['--strategy', 'baseLocale', '--silent']
+			...['--strategy', 'cookie', 'baseLocale', '--silent']
 		],
 		['svelte-kit', 'sync']
 	]),

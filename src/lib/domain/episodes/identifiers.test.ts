@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { isSameName, normaliseName, spellingKey, written } from './identifiers';
+import { isSameName, normaliseName, numberKey, spellingKey, written } from './identifiers';
 
 describe('hospital numbers and beds', () => {
 	it.each([
@@ -17,6 +17,16 @@ describe('hospital numbers and beds', () => {
 
 	it('keeps what tells one from another', () => {
 		expect(new Set(['T1', 'T10', 'T-1', 'T01', 'I1'].map(spellingKey)).size).toBe(5);
+	});
+});
+
+describe('a hospital number', () => {
+	it.each(['SG-40098', 'sg40098', ' SG 40098', 'sg/40.098'])('%j is one', (typed) => {
+		expect(numberKey(typed)).toBe('SG40098');
+	});
+
+	it('is another with another digit', () => {
+		expect(numberKey('SG-40089')).not.toBe(numberKey('SG-40098'));
 	});
 });
 

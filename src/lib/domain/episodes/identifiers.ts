@@ -17,6 +17,14 @@ export function spellingKey(typed: string): string {
 	return written(typed).replaceAll(' ', '').toUpperCase();
 }
 
+/** As `spellingKey()`, without the signs that part a hospital number: `SG40098` is `SG-40098`. */
+export function numberKey(typed: string): string {
+	return NUMBER_SIGNS.reduce((key, sign) => key.replaceAll(sign, ''), spellingKey(typed));
+}
+
+/** What people leave out of a hospital number, or put in. */
+export const NUMBER_SIGNS = ['-', '.', '/'] as const;
+
 /** A name without doubled spaces, as it is stored. */
 export function normaliseName(typed: string): string {
 	return typed.normalize('NFC').replace(/\s+/gu, ' ').trim();

@@ -12,7 +12,7 @@ import type { Tx } from '../db';
 import { episodes, patientAmendments, patients, units } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
-import { spelt } from './spelt';
+import { isNumber } from './spelt';
 
 type PatientRow = typeof patients.$inferSelect;
 type Given = AdmitInput['patient'];
@@ -39,7 +39,7 @@ export async function identifyPatient(
 	confirmName: boolean
 ): Promise<Identified> {
 	const mrn = written(given.mrn);
-	const [known = null] = await tx.select().from(patients).where(spelt(patients.mrn, mrn));
+	const [known = null] = await tx.select().from(patients).where(isNumber(patients.mrn, mrn));
 	const refusals = new Refusals();
 	const phone = await refusals.of(() => phoneOf(given.phone));
 	await refusals.of(() =>

@@ -4,7 +4,7 @@ import { written } from '$lib/domain/episodes/identifiers';
 import type { Tx } from '../db';
 import { episodes, placements, type units } from '../db/schema';
 import { newId } from '../ids';
-import { spelt } from './spelt';
+import { isBed } from './spelt';
 
 export type UnitRow = typeof units.$inferSelect;
 
@@ -44,7 +44,7 @@ async function refuseUsedBed(tx: Tx, unit: UnitRow, bed: string, episodeId: stri
 		.where(
 			and(
 				eq(episodes.unitId, unit.id),
-				spelt(episodes.bed, bed),
+				isBed(episodes.bed, bed),
 				isNull(episodes.closedAt),
 				episodeId === null ? undefined : ne(episodes.id, episodeId)
 			)
