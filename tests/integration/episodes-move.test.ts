@@ -188,6 +188,17 @@ describe('a call for help about a patient who is moved', () => {
 		]);
 	});
 
+	it('tells the new bed to who was told in person, before any chain', async () => {
+		const { nurse, therapist } = hospital.people;
+		const input = { ...CALL, toldInPerson: nurse.id };
+		const { id } = (await raiseEscalation(contextOf(therapist), episodeId, input)).result;
+		await movePatient(as(), episodeId, { unit: 'Tern Ward', bed: `N${count}` });
+		expect(await textsTo(nurse, id)).toMatchObject([
+			{ body: expect.stringContaining(`bed ${bed}`), state: 'cancelled' },
+			{ body: expect.stringContaining(`bed N${count}`), state: 'ready' }
+		]);
+	});
+
 	it('starts its chain again in another unit, and those told before hear the place', async () => {
 		const id = await raise();
 		const later = { ...as(), now: hospital.now + 60_000 };

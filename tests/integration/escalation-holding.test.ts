@@ -18,6 +18,7 @@ import { takeEscalation } from '$lib/server/escalations/take';
 import { untakeEscalation } from '$lib/server/escalations/undo';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { recheck } from '$lib/server/outbox/recheck';
+import { releaseRow } from '$lib/server/outbox/record';
 import { freshDatabase } from '../support/database';
 import {
 	at,
@@ -50,6 +51,12 @@ const by = (role: 'therapist' | 'nurse' | 'physician' | 'surgeon', seconds = 0) 
 	contextOf(hospital.people[role], at(seconds));
 const raise = async (seconds = 0, input: Partial<typeof CALL> = {}) =>
 	(await raiseEscalation(by('therapist', seconds), episodeId, { ...CALL, ...input })).result.id;
+
+const setMessage = (id: string | undefined, change: Partial<typeof outbox.$inferSelect>) =>
+	db()
+		.update(outbox)
+		.set(change)
+		.where(eq(outbox.id, id ?? ''));
 
 /** Everything that is due by this second, as the clockwork does it. */
 async function beat(seconds: number): Promise<void> {
@@ -162,11 +169,41 @@ describe('a holder who is not at the bedside', () => {
 		expect(moves.slice(-2).map(({ kind }) => kind)).toEqual(['asked', 'went-on']);
 	});
 
-	it.each(['medium', 'low'] as const)('of a %s one is not asked', async (grade) => {
-		const id = await raise(0, { grade });
-		await takeEscalation(by('nurse', 1), id, 1);
-		await beat(7200);
-		expect((await getEscalation(db(), hospital.people.nurse, id)).askedAt).toBeNull();
+	// Common practice, no published source: thirty minutes and five to answer; four hours and thirty minutes.
+	it.each([
+		['medium', null, 30 * 60, 5 * 60],
+		['medium', 20, 50 * 60, 5 * 60],
+		['low', null, 240 * 60, 30 * 60]
+	] as const)(
+		'of a %s one, %s minutes given, is asked and then passed by',
+		async (grade, eta, ask, answer) => {
+			const id = await raise(0, { grade });
+			await takeEscalation(by('nurse', 0), id, eta);
+			const newest = async () => (await getEscalation(db(), hospital.people.nurse, id)).moves.at(-1)?.kind;
+			for (const [second, kind] of [
+				[ask - 1, 'taken'],
+				[ask, 'asked'],
+				[ask + answer - 1, 'asked'],
+				[ask + answer, 'went-on']
+			] as const) {
+				await beat(second);
+				expect(await newest()).toBe(kind);
+			}
+			expect(await kindsOf('physician', id, ask + answer)).toEqual(['escalation']);
+			await takeEscalation(by('physician', ask + answer), id, null);
+			expect((await escalationRow(id)).takenBy).toBe(hospital.people.physician.id);
+		}
+	);
+
+	it('is not at the bedside twice, nor asked there', async () => {
+		const id = await raise();
+		await takeEscalation(by('nurse', 1), id, null);
+		await arriveAtEscalation(by('nurse', 60), id);
+		const before = await escalationRow(id);
+		for (const again of [arriveAtEscalation(by('nurse', 90), id), giveEtaOf(by('nurse', 90), id, 5)]) {
+			await expect(again).rejects.toMatchObject({ code: 'wrong-state' });
+		}
+		expect(await escalationRow(id)).toEqual(before);
 	});
 
 	it('is not asked once it is settled', async () => {
@@ -230,6 +267,24 @@ describe('taking back', () => {
 		});
 		await beat(120);
 		expect(await toldOf(id)).toContain('1:nurse');
+	});
+
+	it('sends what was on its way out and was let go because somebody had it, and nothing else', async () => {
+		const id = await raise();
+		const [inHand, other] = await messagesOf(id);
+		await setMessage(inHand?.id, { state: 'sending', leaseOwner: 'worker', leaseUntil: at(90) });
+		await setMessage(other?.id, { state: 'skipped', stateReason: 'account disabled' });
+		await takeEscalation(by('nurse', 30), id, null);
+		const row = (await messagesOf(id)).find((message) => message.id === inHand?.id) as never;
+		const verdict = await recheck(db(), row, at(31));
+		expect(verdict.kind).toBe('skip');
+		const reason = verdict.kind === 'skip' ? verdict.reason : null;
+		await releaseRow(row, 'worker', at(31), { state: 'skipped', reason });
+		await untakeEscalation(by('nurse', 33), id);
+		expect(await messagesOf(id)).toMatchObject([
+			{ id: inHand?.id, state: 'ready', stateReason: null, nextAt: at(33) },
+			{ id: other?.id, state: 'skipped', stateReason: 'account disabled' }
+		]);
 	});
 
 	it('works by the link that took it, which then takes once more', async () => {

@@ -23,14 +23,23 @@ export interface Change<T> {
 }
 
 /** A change with what had to change before it: all of it is on record and announced, the earlier first. */
-export function after<T>(earlier: readonly Change<unknown>[], { audit, ...change }: Change<T>): Change<T> {
-	const [first, ...rest] = [...earlier.flatMap((one) => one.audit), ...[audit].flat()];
+export function after<T>(earlier: readonly Change<unknown>[], change: Change<T>): Change<T> {
+	return joined(change, [...earlier, change]);
+}
+
+/** A change with what it brought about elsewhere: all of it is on record and announced, the consequences last. */
+export function bringing<T>(change: Change<T>, later: readonly Change<unknown>[]): Change<T> {
+	return joined(change, [change, ...later]);
+}
+
+function joined<T>({ result, audit }: Change<T>, all: readonly Change<unknown>[]): Change<T> {
+	const [first, ...rest] = all.flatMap((one) => one.audit);
 	return {
-		result: change.result,
+		result,
 		audit: first ? [first, ...rest] : audit,
-		entries: [...earlier.flatMap((one) => one.entries ?? []), ...(change.entries ?? [])],
-		events: [...earlier.flatMap((one) => one.events ?? []), ...(change.events ?? [])],
-		messages: [...earlier.flatMap((one) => one.messages ?? []), ...(change.messages ?? [])]
+		entries: all.flatMap((one) => one.entries ?? []),
+		events: all.flatMap((one) => one.events ?? []),
+		messages: all.flatMap((one) => one.messages ?? [])
 	};
 }
 

@@ -34,6 +34,7 @@ const MOVE_WORDS: Record<EscalationMoveKind, (words: MoveWords) => string> = {
 	eta: m.escalations_move_eta,
 	asked: m.escalations_move_asked,
 	'went-on': m.escalations_move_went_on,
+	'out-of-reach': m.escalations_move_out_of_reach,
 	arrived: m.escalations_move_arrived,
 	passed: m.escalations_move_passed,
 	confirmed: m.escalations_move_confirmed,

@@ -34,6 +34,7 @@ export const AUDIT_ACTIONS = [
 	'escalation.eta-given',
 	'escalation.holder-asked',
 	'escalation.informed',
+	'escalation.out-of-reach',
 	'escalation.passed',
 	'escalation.pass-confirmed',
 	'escalation.raised',

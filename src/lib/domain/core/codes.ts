@@ -67,6 +67,7 @@ export const ESCALATION_MOVES = [
 	'eta',
 	'asked',
 	'went-on',
+	'out-of-reach',
 	'arrived',
 	'passed',
 	'confirmed',

@@ -95,6 +95,14 @@ export function isChainSpent(grade: Grade, nextStep: number): boolean {
 }
 
 /**
+ * While nobody has it, or its holder does not come: does every screen of the unit show it? A high one at once, any
+ * other once its chain is spent.
+ */
+export function isOverEveryScreen({ grade, nextStep }: { grade: Grade; nextStep: number | null }): boolean {
+	return grade === 'high' || (nextStep !== null && isChainSpent(grade, nextStep));
+}
+
+/**
  * The step that is due at `now` and when the one after it is due. After a stop of the server several steps can be
  * overdue: they are told together, oldest first, and the timer goes on from the last.
  * @param raisedAt milliseconds UTC

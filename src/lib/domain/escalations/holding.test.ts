@@ -1,19 +1,29 @@
 import { describe, expect, it } from 'vitest';
-import { askHolderAt, etaOf, isOpenTo, isSoughtAnew } from './holding';
+import { askHolderAt, etaOf, goOnAfterMs, isOpenTo, isSoughtAnew } from './holding';
 
 const T = Date.parse('2026-03-03T09:00:00Z');
 const MINUTE = 60_000;
 
 describe('askHolderAt', () => {
-	// Common practice, no published source: five minutes after the minutes given, ten when none were.
+	// Common practice, no published source: some time after the minutes given, or after the taking without any.
 	it.each([
 		['high', null, 10],
 		['high', 1, 6],
 		['high', 20, 25],
-		['medium', null, null],
-		['low', 5, null]
+		['medium', null, 30],
+		['medium', 10, 40],
+		['low', null, 240],
+		['low', 5, 245]
 	] as const)('%s with %s minutes given: after %s', (grade, eta, minutes) => {
-		expect(askHolderAt(grade, T, eta)).toBe(minutes === null ? null : T + minutes * MINUTE);
+		expect(askHolderAt(grade, T, eta)).toBe(T + minutes * MINUTE);
+	});
+
+	it.each([
+		['high', 1],
+		['medium', 5],
+		['low', 30]
+	] as const)('%s: the answer is waited for %i minutes', (grade, minutes) => {
+		expect(goOnAfterMs(grade)).toBe(minutes * MINUTE);
 	});
 });
 

@@ -1,32 +1,45 @@
 import type { EscalationState, Grade } from '../core/codes';
-import { MINUTE, SECOND } from '../core/time';
+import { HOUR, MINUTE, SECOND } from '../core/time';
 
 /**
- * What runs while somebody has an escalation: a high one must not die in a pocket. Its holder is asked when they
- * are not at the bedside in time, and a minute later the chain goes on; they stay the holder until another takes.
- * All times are common practice, no published source.
+ * What runs while somebody has an escalation: none must die in a pocket, whatever its grade. Its holder is asked
+ * when they are not at the bedside in time, and a while later the chain goes on; they stay the holder until another
+ * takes. All times are common practice, no published source.
  */
 
 /** A thumb that slipped can take back within this time, to the millisecond. */
 export const UNDO_MS = 5 * SECOND;
 /** After it the others hear that somebody has it: until then a slip could still be taken back. */
 export const NOTICE_AFTER_MS = UNDO_MS;
-/** The holder was asked and has not answered: the next ones are told. */
-export const GO_ON_AFTER_MS = MINUTE;
+interface Patience {
+	/** From the taking, when the holder gave no minutes. */
+	withoutWordMs: number;
+	/** Beyond the minutes that the holder gave. */
+	graceMs: number;
+	/** From the question until the next ones are told, when the holder does not answer. */
+	answerMs: number;
+}
 
-const GRACE_MS = 5 * MINUTE;
-const WITHOUT_WORD_MS = 10 * MINUTE;
+/** How long a holder is waited for: as the chain does, the lesser grades give more time. */
+const PATIENCE: Record<Grade, Patience> = {
+	high: { withoutWordMs: 10 * MINUTE, graceMs: 5 * MINUTE, answerMs: MINUTE },
+	medium: { withoutWordMs: 30 * MINUTE, graceMs: 30 * MINUTE, answerMs: 5 * MINUTE },
+	low: { withoutWordMs: 4 * HOUR, graceMs: 4 * HOUR, answerMs: 30 * MINUTE }
+};
 
 /**
- * When the holder is asked whether they are at the bedside: five minutes after the minutes they gave have run out,
- * ten after taking when they gave none. Null for what is not high, where nobody is asked.
+ * When the holder is asked whether they are at the bedside: some time after the minutes they gave have run out, or
+ * after taking when they gave none.
  * @param since when it was taken, or when the minutes were given, milliseconds UTC
  */
-export function askHolderAt(grade: Grade, since: number, etaMinutes: number | null): number | null {
-	if (grade !== 'high') {
-		return null;
-	}
-	return since + (etaMinutes === null ? WITHOUT_WORD_MS : etaMinutes * MINUTE + GRACE_MS);
+export function askHolderAt(grade: Grade, since: number, etaMinutes: number | null): number {
+	const { withoutWordMs, graceMs } = PATIENCE[grade];
+	return since + (etaMinutes === null ? withoutWordMs : etaMinutes * MINUTE + graceMs);
+}
+
+/** How long after the question the chain goes on without an answer, milliseconds. */
+export function goOnAfterMs(grade: Grade): number {
+	return PATIENCE[grade].answerMs;
 }
 
 export interface Held {

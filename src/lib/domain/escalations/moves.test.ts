@@ -16,6 +16,7 @@ const RAISED = {
 	holder: null,
 	passTo: null,
 	raisedBy: { id: 'therapist', name: 'Iris', role: 'therapist' },
+	otherCallers: [],
 	arrivedAt: null,
 	askedAt: null,
 	next: null,
@@ -60,6 +61,12 @@ describe('movesFor', () => {
 		],
 		['at the bedside, the holder', THERE, person('nurse'), ['settle', 'pass']],
 		['taken, another nurse', TAKEN, person('nurse', 'nurse2'), []],
+		[
+			'raised, its raiser, when another called too',
+			{ ...RAISED, otherCallers: [{ id: 'speech', name: 'Mae' }] },
+			person('therapist'),
+			[]
+		],
 		['taken, its raiser', TAKEN, person('therapist'), ['withdraw']],
 		['passed on, the receiver', PASSED, person('physician'), ['confirm']],
 		['passed on, the giver', PASSED, person('nurse'), ['settle', 'pass']],

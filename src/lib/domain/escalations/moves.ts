@@ -12,6 +12,7 @@ type Facts = Pick<
 	| 'holder'
 	| 'passTo'
 	| 'raisedBy'
+	| 'otherCallers'
 	| 'arrivedAt'
 	| 'askedAt'
 	| 'next'
@@ -26,7 +27,8 @@ export function movesFor(facts: Facts, person: Person): EscalationMove[] {
 	const subject = { unitId: facts.unitId };
 	const moves: EscalationMove[] = can(person, 'escalation.take', subject) ? takersMoves(facts, person) : [];
 	const open = facts.state === 'raised' || facts.state === 'taken';
-	if (open && facts.raisedBy.id === person.id && can(person, 'escalation.withdraw', subject)) {
+	const own = facts.raisedBy.id === person.id && facts.otherCallers.length === 0;
+	if (open && own && can(person, 'escalation.withdraw', subject)) {
 		moves.push('withdraw');
 	}
 	return moves;

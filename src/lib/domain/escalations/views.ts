@@ -28,6 +28,8 @@ export interface EscalationView {
 	added: AddedCall[];
 	/** How many were added in all. */
 	addedTotal: number;
+	/** Everybody but its raiser who added a call of their own: what they called for is not the raiser's to withdraw. */
+	otherCallers: readonly { id: string; name: string }[];
 	holder: { id: string; name: string } | null;
 	takenAt: string | null;
 	etaMinutes: number | null;
@@ -90,7 +92,7 @@ export interface AddedCall {
 	threadId: string | null;
 }
 
-/** An untaken high escalation as every screen of its unit shows it: where and since when, never what about. */
+/** An escalation that nobody comes for as every screen of its unit shows it: where and since when, never what about. */
 export interface Alarm {
 	id: string;
 	unitId: string;

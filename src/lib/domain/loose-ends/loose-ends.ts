@@ -40,6 +40,8 @@ export interface OpenThing {
 	text: string | null;
 	askedById: string | null;
 	askedBy: string | null;
+	/** Who asked the same beside them: their own calls for help were added to this one. */
+	alsoAskedByIds: readonly string[];
 	heldById: string | null;
 	heldBy: string | null;
 	since: number;
@@ -72,7 +74,8 @@ export interface LooseEnds {
 
 /** Does it wait on this person, does this person wait for it, or is it none of theirs? */
 export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | null {
-	const asked = thing.askedById === person.id ? 'theirs' : null;
+	const asks = thing.askedById === person.id || thing.alsoAskedByIds.includes(person.id);
+	const asked = asks ? 'theirs' : null;
 	const unit = thing.unitId === null ? {} : { unitId: thing.unitId };
 	switch (thing.kind) {
 		case 'escalation':

@@ -11,8 +11,9 @@ import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { units, users, userUnits } from '../db/schema';
 import { env } from '../env';
+import { seekForHolder } from '../escalations/out-of-reach';
 import { newId } from '../ids';
-import { write, type Change, type Written } from '../write';
+import { bringing, write, type Change, type Written } from '../write';
 import { accountEvent } from './event';
 import { endInvitations, invite } from './invite';
 
@@ -60,7 +61,7 @@ export function inviteAgain(context: PersonContext, userId: string): Made {
 
 /**
  * Disable an account: its sign-ins, tokens and links end at once, and so do its open streams. What its owner did
- * stays theirs on record.
+ * stays theirs on record; for a call for help that they have, others are sought.
  */
 export function disableAccount(context: PersonContext, userId: string): Made {
 	return write(context, 'account.manage', async (tx) => {
@@ -78,7 +79,8 @@ export function disableAccount(context: PersonContext, userId: string): Made {
 		}
 		await endInvitations(tx, userId, context.now);
 		const ended = await endCredentials(tx, userId, context.now, 'disabled');
-		return changed('account.disabled', 'disabled', userId, { ended });
+		const calls = await seekForHolder(tx, context, userId);
+		return bringing(changed('account.disabled', 'disabled', userId, { ended }), calls);
 	});
 }
 
@@ -102,7 +104,10 @@ export function enableAccount(context: PersonContext, userId: string): Made {
 	});
 }
 
-/** Say which units somebody belongs to from now on; what they may see follows with their next request. */
+/**
+ * Say which units somebody belongs to from now on; what they may see follows with their next request. For a call
+ * for help that they have and cannot see any more others are sought.
+ */
 export function setUnits(context: PersonContext, userId: string, unitIds: string[]): Made {
 	return write(context, 'account.manage', async (tx) => {
 		const { role } = await accountById(tx, userId);
@@ -110,7 +115,9 @@ export function setUnits(context: PersonContext, userId: string, unitIds: string
 		await requireUnits(tx, unitIds);
 		await tx.delete(userUnits).where(eq(userUnits.userId, userId));
 		await insertMemberships(tx, userId, unitIds);
-		return changed('account.units-set', 'units-set', userId, { detail: { units: unitIds.length } });
+		const detail = { units: unitIds.length };
+		const calls = await seekForHolder(tx, context, userId);
+		return bringing(changed('account.units-set', 'units-set', userId, { detail }), calls);
 	});
 }
 

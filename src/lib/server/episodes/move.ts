@@ -43,25 +43,27 @@ export function movePatient(
 			.set({ unitId: unit.id, bed, phase: phaseIn(unit) })
 			.where(and(eq(episodes.id, episodeId), isNull(episodes.closedAt)));
 		await recordPlacement(tx, episodeId, place, context.now);
-		const { messages, events } = await followPatient(
-			tx,
-			episodeId,
-			{ left: episode.unitId, now: unit.id },
-			context.now
-		);
+		const calls = await followPatient(tx, context, episodeId, { left: episode.unitId, now: unit.id });
 		const moved = { topic: 'episode', kind: 'moved', id: episodeId, episodeId } as const;
 		return {
 			result: { id: episodeId, unit: unit.name, unitId: unit.id, bed },
-			audit: {
-				action: 'episode.moved',
-				objectKind: 'episode',
-				objectId: episodeId,
-				episodeId,
-				detail: { fromUnit: episode.unitId, fromBed: episode.bed, toUnit: unit.id, toBed: bed }
-			},
+			audit: [
+				{
+					action: 'episode.moved',
+					objectKind: 'episode',
+					objectId: episodeId,
+					episodeId,
+					detail: { fromUnit: episode.unitId, fromBed: episode.bed, toUnit: unit.id, toBed: bed }
+				},
+				...calls.audit.flat()
+			],
+			entries: calls.entries,
 			// Those whom the patient left must hear it too: else they go on seeing somebody who is gone.
-			events: [...[...new Set([episode.unitId, unit.id])].map((unitId) => ({ ...moved, unitId })), ...events],
-			messages
+			events: [
+				...[...new Set([episode.unitId, unit.id])].map((unitId) => ({ ...moved, unitId })),
+				...calls.events
+			],
+			messages: calls.messages
 		};
 	});
 }

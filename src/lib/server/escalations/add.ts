@@ -72,6 +72,7 @@ export async function addFacts(
 		.set({ grade, neededBy: row.neededBy, ...(graver ? NOBODY_ASKED : {}) })
 		.where(eq(escalations.id, row.id));
 	await recordMove(tx, context, row.id, 'added', { grade: input.grade, raisedGrade: graver });
+	const messages = await tellOfFacts(tx, context, { ...row, ...NOBODY_ASKED }, { graver, factId, input });
 	return {
 		result: { id: row.id, state: heldOrNot(row), chain: chainOf(grade), bundled: true },
 		audit: {
@@ -82,8 +83,8 @@ export async function addFacts(
 			detail: { grade }
 		},
 		entries: await entriesFor(tx, row, 'ask', callWords(input)),
-		events: escalationEvents(row, 'added-to', before.grade),
-		messages: await tellOfFacts(tx, context, { ...row, ...NOBODY_ASKED }, { graver, factId, input })
+		events: await escalationEvents(tx, before, 'added-to'),
+		messages
 	};
 }
 

@@ -1,11 +1,26 @@
-import { count, desc, eq } from 'drizzle-orm';
+import { and, count, desc, eq, min, ne } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { ADDED_SHOWN, type EscalationView } from '$lib/domain/escalations/views';
 import type { Reader } from '../db';
 import { escalationFacts, users } from '../db/schema';
+import type { EscalationRow } from './tell';
 
 const named = alias(users, 'named');
+
+/** Everybody but its raiser who has called into an escalation, in the order of their first calls. */
+export function otherCallersOf(
+	db: Reader,
+	{ id, raisedBy }: Pick<EscalationRow, 'id' | 'raisedBy'>
+): Promise<EscalationView['otherCallers']> {
+	return db
+		.select({ id: users.id, name: users.name })
+		.from(escalationFacts)
+		.innerJoin(users, eq(users.id, escalationFacts.byId))
+		.where(and(eq(escalationFacts.escalationId, id), ne(escalationFacts.byId, raisedBy)))
+		.groupBy(users.id, users.name)
+		.orderBy(min(escalationFacts.at), users.id);
+}
 
 /** The newest calls that were added to an escalation, oldest first, and how many there are in all. */
 export async function addedTo(db: Reader, id: string): Promise<Pick<EscalationView, 'added' | 'addedTotal'>> {

@@ -62,7 +62,7 @@ async function tellDue(id: string, now: number): Promise<void> {
 				episodeId: row.episodeId,
 				detail: { told: messages.length, step: row.nextStep }
 			},
-			events: escalationEvents(row, 'told'),
+			events: await escalationEvents(tx, row, 'told'),
 			messages
 		};
 	});

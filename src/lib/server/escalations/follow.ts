@@ -1,10 +1,11 @@
 import { eq } from 'drizzle-orm';
 import type { AuditAction } from '$lib/domain/audit/actions';
-import type { EscalationState, Grade } from '$lib/domain/core/codes';
+import type { EscalationState } from '$lib/domain/core/codes';
+import { isOverEveryScreen } from '$lib/domain/escalations/chain';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { EntryKind } from '$lib/domain/referrals/entries';
 import type { Reader, Tx } from '../db';
-import { escalationFacts } from '../db/schema';
+import { escalationFacts, escalations } from '../db/schema';
 import type { NewEntry } from '../threads/append';
 import type { Change } from '../write';
 import type { EscalationRow } from './tell';
@@ -28,7 +29,7 @@ export async function moved(
 		result: { id, state },
 		audit: { action, objectKind: 'escalation', objectId: id, episodeId },
 		entries: await entriesFor(tx, row, 'answer', body),
-		events: escalationEvents(row, kind)
+		events: await escalationEvents(tx, row, kind)
 	};
 }
 
@@ -51,17 +52,23 @@ export async function entriesFor(
 }
 
 /**
- * Who may read the escalation hears of it; of a high one also everybody of the unit, whose screens show that
- * nobody has it.
- * @param was its grade before, where that has changed
+ * Who may read the escalation hears of it; of one that every screen of the unit shows, or has shown, also everybody
+ * of the unit. Call it when all of the move is written: a step can have been the last of the chain.
+ * @param before how it stood before the move
  */
-export function escalationEvents(
-	{ id, episodeId, grade }: Pick<EscalationRow, 'id' | 'episodeId' | 'grade'>,
-	kind: string,
-	was: Grade = grade
-): LiveEvent[] {
+export async function escalationEvents(
+	tx: Tx,
+	before: Pick<EscalationRow, 'id' | 'episodeId' | 'grade' | 'nextStep'>,
+	kind: string
+): Promise<LiveEvent[]> {
+	const { id, episodeId } = before;
+	const [after = before] = await tx
+		.select({ grade: escalations.grade, nextStep: escalations.nextStep })
+		.from(escalations)
+		.where(eq(escalations.id, id));
 	const event: LiveEvent = { topic: 'escalation', kind, id, episodeId };
-	return grade === 'high' || was === 'high' ? [event, { ...event, topic: 'alarm' }] : [event];
+	const shown = isOverEveryScreen(before) || isOverEveryScreen(after);
+	return shown ? [event, { ...event, topic: 'alarm' }] : [event];
 }
 
 /** The newest call that set the grade as it stands: its maker is not told of it. */

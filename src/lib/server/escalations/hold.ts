@@ -3,6 +3,7 @@ import type { z } from 'zod';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { Problem, invalidField } from '$lib/domain/core/errors';
+import { toRfc3339 } from '$lib/domain/core/instant';
 import type { passBody, settleBody } from '$lib/domain/escalations/forms';
 import { askHolderAt, isSoughtAnew } from '$lib/domain/escalations/holding';
 import { requireEscalationMove, type EscalationMove } from '$lib/domain/escalations/states';
@@ -13,6 +14,7 @@ import type { Context, PersonContext } from '../context';
 import type { Tx } from '../db';
 import { escalations } from '../db/schema';
 import { write, type Change, type Written } from '../write';
+import { otherCallersOf } from './added';
 import { moved, type Moved } from './follow';
 import { recordMove } from './moves';
 import { alert, placeOf, stopAlerts, type EscalationRow } from './tell';
@@ -25,17 +27,20 @@ export function arriveAtEscalation(context: PersonContext, id: string): Promise<
 	});
 }
 
-/** {@link arriveAtEscalation} inside a transaction. Nobody is asked or sought any more: somebody is there. */
+/**
+ * {@link arriveAtEscalation} inside a transaction. Nobody is asked or sought any more: somebody is there.
+ * @throws Problem `wrong-state` for who is there already
+ */
 export async function arrive(
 	tx: Tx,
 	context: Context,
 	person: Person,
 	row: EscalationRow
 ): Promise<Change<Moved>> {
-	requireHeld(row, person, 'arrive');
+	requireOnTheWay(row, person, 'arrive');
 	await tx
 		.update(escalations)
-		.set({ arrivedAt: row.arrivedAt ?? context.now, ...NOBODY_SOUGHT })
+		.set({ arrivedAt: context.now, ...NOBODY_SOUGHT })
 		.where(eq(escalations.id, row.id));
 	await recordMove(tx, context, row.id, 'arrived');
 	await stopAlerts(tx, row.id, 'at the bedside');
@@ -61,7 +66,7 @@ export async function giveEta(
 	row: EscalationRow,
 	minutes: number
 ): Promise<Change<Moved>> {
-	requireHeld(row, person, 'eta');
+	requireOnTheWay(row, person, 'eta');
 	const { now } = context;
 	const timers = isSoughtAnew(row)
 		? {}
@@ -195,7 +200,10 @@ export function informOfEscalation(
 	});
 }
 
-/** Take back a mistaken call. */
+/**
+ * Take back a mistaken call.
+ * @throws Problem `wrong-state` naming the others whose own calls were added to it: only settling ends those
+ */
 export function withdrawEscalation(
 	context: PersonContext,
 	id: string,
@@ -207,6 +215,7 @@ export function withdrawEscalation(
 			throw new Problem('not-allowed', 'Only the person who raised an escalation can withdraw it.');
 		}
 		requireEscalationMove(escalation.state, 'withdraw');
+		await requireNoOtherCaller(tx, escalation);
 		await tx
 			.update(escalations)
 			.set({
@@ -225,6 +234,16 @@ export function withdrawEscalation(
 	});
 }
 
+/** Whoever called into it was told that help is coming: the first caller's mistake does not end their call. */
+async function requireNoOtherCaller(tx: Tx, row: EscalationRow): Promise<void> {
+	const callers = await otherCallersOf(tx, row);
+	if (callers.length > 0) {
+		const names = callers.map(({ name }) => name).join(', ');
+		const detail = `${names} called for help in the same escalation. It can be settled, but not withdrawn.`;
+		throw new Problem('wrong-state', detail, { state: row.state, callers });
+	}
+}
+
 /** The row, when this person holds it. */
 async function accessHeld(
 	tx: Tx,
@@ -241,6 +260,17 @@ function requireHeld(row: EscalationRow, person: Person, move: EscalationMove): 
 	requireEscalationMove(row.state, move);
 	if (row.takenBy !== person.id) {
 		throw new Problem('not-allowed', 'Somebody else holds this escalation.', { state: row.state });
+	}
+}
+
+/** The history says once when the holder came, and nobody who stands at the bedside is asked whether they do. */
+function requireOnTheWay(row: EscalationRow, person: Person, move: EscalationMove): void {
+	requireHeld(row, person, move);
+	if (row.arrivedAt !== null) {
+		throw new Problem('wrong-state', `You are at the bedside since ${toRfc3339(row.arrivedAt)}.`, {
+			state: row.state,
+			arrivedAt: toRfc3339(row.arrivedAt)
+		});
 	}
 }
 

@@ -1,6 +1,7 @@
-import { and, asc, eq, isNotNull, isNull, lte } from 'drizzle-orm';
+import { and, asc, eq, isNotNull, isNull, lte, or } from 'drizzle-orm';
+import { GRADES } from '$lib/domain/core/codes';
 import { Problem } from '$lib/domain/core/errors';
-import { GO_ON_AFTER_MS } from '$lib/domain/escalations/holding';
+import { goOnAfterMs } from '$lib/domain/escalations/holding';
 import { smsText } from '$lib/domain/messages/templates';
 import { m } from '$lib/i18n/paraglide/messages';
 import { loadPerson } from '../auth/people';
@@ -21,15 +22,19 @@ const unanswered = (now: number) =>
 		eq(escalations.state, 'taken'),
 		isNotNull(escalations.holderAskedAt),
 		isNull(escalations.nextStepAt),
-		lte(escalations.askHolderAt, now - GO_ON_AFTER_MS)
+		or(
+			...GRADES.map((grade) =>
+				and(eq(escalations.grade, grade), lte(escalations.askHolderAt, now - goOnAfterMs(grade)))
+			)
+		)
 	);
 
 const unasked = (now: number) =>
 	and(eq(escalations.state, 'taken'), isNull(escalations.holderAskedAt), lte(escalations.askHolderAt, now));
 
 /**
- * A high escalation does not die with its holder: who is not at the bedside in time is asked, and a minute later
- * the chain goes on with the next step. They stay the holder until another takes it. The timers are rows; after a
+ * An escalation does not die with its holder: who is not at the bedside in time is asked, and a while later the
+ * chain goes on with the next step. They stay the holder until another takes it. The timers are rows; after a
  * stop that outlasted both, the holder is asked and the others are told in the same round.
  */
 export const holderJob: Job = {
@@ -77,7 +82,7 @@ async function ask(tx: Tx, context: Context, row: EscalationRow): Promise<Change
 	return {
 		result: null,
 		audit: audited('escalation.holder-asked', row.id, row.episodeId),
-		events: escalationEvents(row, 'asked'),
+		events: await escalationEvents(tx, row, 'asked'),
 		messages: row.takenBy === null ? [] : [await withLink(tx, row, row.takenBy, body, `ask:${now}`, now)]
 	};
 }
@@ -91,7 +96,7 @@ async function goOn(tx: Tx, context: Context, row: EscalationRow): Promise<Chang
 		result: null,
 		audit: audited('escalation.went-on', row.id, row.episodeId),
 		entries: await entriesFor(tx, row, 'event', words, { strand: 'nursing' }),
-		events: escalationEvents(row, 'went-on'),
+		events: await escalationEvents(tx, row, 'went-on'),
 		messages
 	};
 }

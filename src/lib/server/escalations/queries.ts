@@ -19,7 +19,7 @@ import {
 	users
 } from '../db/schema';
 import { findLink } from './link';
-import { addedTo } from './added';
+import { addedTo, otherCallersOf } from './added';
 import type { EscalationRow } from './tell';
 
 const holder = alias(users, 'holder');
@@ -63,6 +63,7 @@ export async function getEscalation(db: Reader, person: Person, id: string): Pro
 		raisedAt: toRfc3339(e.raisedAt),
 		toldInPerson: row.named,
 		...added,
+		otherCallers: await otherCallersOf(db, e),
 		holder: row.holder,
 		takenAt: opt(e.takenAt),
 		etaMinutes: e.etaMinutes,

@@ -80,7 +80,7 @@ async function raiseNew(
 		result: { id: row.id, state: 'raised', chain: chainOf(row.grade, beside ? IN_PERSON_MS : 0) },
 		audit: audited('escalation.raised', row),
 		entries: await entriesFor(tx, row, 'ask', callWords(input)),
-		events: escalationEvents(row, 'raised'),
+		events: await escalationEvents(tx, row, 'raised'),
 		messages
 	};
 }

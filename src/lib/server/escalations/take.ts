@@ -14,7 +14,7 @@ import { write, type Change, type Written } from '../write';
 import { entriesFor, escalationEvents } from './follow';
 import { recordMove } from './moves';
 import { noticesOfTaking } from './notices';
-import { stopAlerts, type EscalationRow } from './tell';
+import { leavingOf, stopAlerts, type EscalationRow } from './tell';
 
 export interface Taken {
 	id: string;
@@ -67,7 +67,8 @@ export async function take(
 		.update(escalations)
 		.set(heldFrom(context.now, person, before, etaMinutes))
 		.where(eq(escalations.id, before.id));
-	await recordMove(tx, context, before.id, 'taken', { via, etaMinutes, before: holdOf(before) });
+	const leaving = await leavingOf(tx, before.id);
+	await recordMove(tx, context, before.id, 'taken', { via, etaMinutes, before: holdOf(before), leaving });
 	await stopAlerts(tx, before.id, 'taken');
 	const { id, episodeId } = before;
 	return {
@@ -79,7 +80,7 @@ export async function take(
 		},
 		audit: { action: 'escalation.taken', objectKind: 'escalation', objectId: id, episodeId, detail: { via } },
 		entries: await entriesFor(tx, before, 'answer', takenWords(etaMinutes)),
-		events: escalationEvents(before, 'taken'),
+		events: await escalationEvents(tx, before, 'taken'),
 		messages
 	};
 }

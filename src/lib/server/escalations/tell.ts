@@ -168,6 +168,15 @@ export async function stopAlerts(tx: Tx, escalationId: string, reason: string): 
 		);
 }
 
+/** The messages that a worker has in hand: one it has not checked yet is skipped once somebody has it. */
+export async function leavingOf(tx: Tx, escalationId: string): Promise<string[]> {
+	const rows = await tx
+		.select({ id: outbox.id })
+		.from(outbox)
+		.where(and(eq(outbox.kind, 'escalation'), eq(outbox.refId, escalationId), eq(outbox.state, 'sending')));
+	return rows.map(({ id }) => id);
+}
+
 async function recordStep(
 	tx: Tx,
 	escalationId: string,

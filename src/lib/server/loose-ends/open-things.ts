@@ -36,9 +36,17 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 			join units u on u.id = e.unit_id
 			join patients p on p.id = e.patient_id
 			where e.unit_id in (${units})
-		)
-		${sql.join(branches, sql` union all `)}`;
+		), open as (${sql.join(branches, sql` union all `)})
+		select open.*, ${FURTHER_CALLERS} as "alsoAskedByIds" from open`;
 }
+
+/**
+ * Whoever has called into an open escalation waits for it as its raiser does; a pass is the giver's own ask.
+ * A list of identifiers in JSON, null for what is no call for help.
+ */
+const FURTHER_CALLERS = sql`case when open.kind in (
+	'escalation', 'escalation-taken', 'arrival', 'recheck', 'physician-to-tell'
+) then (select json_group_array(distinct f.by_id) from escalation_facts f where f.escalation_id = open.id) end`;
 
 const PLACE = sql`place.id as "episodeId", place.unit_id as "unitId", place.unit as "unit", place.bed as "bed", place.patient as "patientName"`;
 

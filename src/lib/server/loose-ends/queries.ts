@@ -6,9 +6,19 @@ import type { Reader } from '../db';
 import { openThingsSql } from './open-things';
 import { titleOf } from './titles';
 
+/** As the database answers it, a list in JSON. */
+type OpenRow = Omit<OpenThing, 'alsoAskedByIds'> & { alsoAskedByIds: string | null };
+
 /** Everything open in the given units at `now`, in no particular order. */
 export async function openThings(db: Reader, unitIds: readonly string[], now: number): Promise<OpenThing[]> {
-	return unitIds.length === 0 ? [] : db.all<OpenThing>(openThingsSql(unitIds, now));
+	if (unitIds.length === 0) {
+		return [];
+	}
+	const rows = await db.all<OpenRow>(openThingsSql(unitIds, now));
+	return rows.map((row) => ({
+		...row,
+		alsoAskedByIds: row.alsoAskedByIds === null ? [] : (JSON.parse(row.alsoAskedByIds) as string[])
+	}));
 }
 
 /** What waits on a person and what they wait for, each sorted as it is shown. */

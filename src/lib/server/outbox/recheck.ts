@@ -7,10 +7,13 @@ import { escalationLinks, escalations, invitations, patients, users, visits } fr
 import { stopHeardKey } from '../messages/understood';
 import type { OutboxRow } from './change';
 
+/** Somebody has the call, or it has ended. Taking back within the moment sends what was skipped for it after all. */
+export const NOT_WAITING = 'escalation is not waiting for anybody';
+
 /** Why a message is not sent after all. The words stand in the message log. */
 export type SkipReason =
 	| ReminderSkip
-	| 'escalation is not waiting for anybody'
+	| typeof NOT_WAITING
 	| 'nobody else has the escalation'
 	| 'account disabled'
 	| 'link used, expired or not theirs'
@@ -54,7 +57,7 @@ export async function recheck(reader: Reader, row: OutboxRow, now: number): Prom
 async function recheckEscalation(reader: Reader, row: OutboxRow, now: number): Promise<Verdict> {
 	const [escalation] = await reader.select().from(escalations).where(eq(escalations.id, row.refId));
 	if (!escalation || !isWaitingFor(escalation, row.userId)) {
-		return skip('escalation is not waiting for anybody');
+		return skip(NOT_WAITING);
 	}
 	const verdict = await toStaff(reader, row.userId, 'phone');
 	if (verdict.kind === 'send' && !(await linkStillGood(reader, row, now))) {

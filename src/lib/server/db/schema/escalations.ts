@@ -42,7 +42,7 @@ export const escalations = sqliteTable(
 		etaMinutes: integer('eta_minutes'),
 		/** When the minutes were given: with the taking, or changed later. */
 		etaGivenAt: instant('eta_given_at'),
-		/** When the holder of a high one is asked whether they are there; null when nobody is to be asked. */
+		/** When the holder is asked whether they are there; null when nobody is to be asked. */
 		askHolderAt: instant('ask_holder_at'),
 		/** When they were asked; null while they were not, or have answered. */
 		holderAskedAt: instant('holder_asked_at'),
