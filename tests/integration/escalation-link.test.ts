@@ -5,6 +5,7 @@ import { db } from '$lib/server/db';
 import { chainJob } from '$lib/server/escalations/chain-job';
 import { holderJob } from '$lib/server/escalations/holder-job';
 import { passEscalation } from '$lib/server/escalations/hold';
+import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { actions, load } from '../../src/routes/(phone)/t/[token]/+page.server';
@@ -34,6 +35,7 @@ function request(context: Context, token: string, form: Record<string, string> =
 	return {
 		locals: { context },
 		params: { token },
+		url: new URL(`http://127.0.0.1/t/${token}`),
 		request: new Request('http://127.0.0.1/t/x', { method: 'POST', body })
 	} as never;
 }
@@ -45,6 +47,11 @@ async function post(context: Context, token: string, form: Record<string, string
 	} catch (thrown) {
 		return thrown as { status: number; location?: string };
 	}
+}
+
+async function movesOf(escalationId: string): Promise<string[]> {
+	const view = await getEscalation(db(), hospital.people.nurse, escalationId);
+	return view.moves.map(({ kind }) => kind);
 }
 
 /** Every row of every table that a deed would touch. */
@@ -143,6 +150,55 @@ describe('the page of a link, by POST', () => {
 		const [one, two] = [await tokenOf(id, hospital.people.nurse.id), await tokenOf(id, hospital.nurse2.id)];
 		const answers = await Promise.all([post(nobody(10), one), post(nobody(10), two)]);
 		expect(answers.map(({ status }) => status).toSorted()).toEqual([303, 409]);
+	});
+
+	it('does each deed once when its form is sent twice, with the key that the page gave it', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		const { keys } = (await load(request(nobody(5), token))) as { keys: Record<string, string> };
+		expect(new Set(Object.values(keys)).size).toBe(5);
+		const forms: [string, Record<string, string>][] = [
+			['take', {}],
+			['eta', { etaMinutes: '5' }],
+			['arrive', {}]
+		];
+		for (const [deed, fields] of forms) {
+			const keyed = { ...fields, deed, key: keys[deed] ?? '' };
+			for (const second of [10, 20]) {
+				expect(await post(nobody(second), token, keyed)).toMatchObject({ status: 303 });
+			}
+		}
+		expect(await movesOf(id)).toEqual(['raised', 'taken', 'eta', 'arrived']);
+	});
+
+	it('does a deed once when two presses come at the same moment, and both lead back to the page', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		const form = { deed: 'eta', etaMinutes: '5', key: 'one-press' };
+		const answers = await Promise.all([post(nobody(20), token, form), post(nobody(20), token, form)]);
+		expect(answers).toMatchObject([{ status: 303 }, { status: 303 }]);
+		expect(await movesOf(id)).toEqual(['raised', 'taken', 'eta']);
+	});
+
+	it('arrives once even without a key: the second leads back to the page', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		for (const second of [20, 30]) {
+			expect(await post(nobody(second), token, { deed: 'arrive' })).toMatchObject({ status: 303 });
+		}
+		expect(await movesOf(id)).toEqual(['raised', 'taken', 'arrived']);
+		expect((await escalationRow(id)).arrivedAt).toBe(at(20));
+	});
+
+	it('takes other minutes under the same key for a mistake, and does not keep the secret of the link', async () => {
+		const token = await tokenOf(id, hospital.people.nurse.id);
+		await post(nobody(10), token);
+		await post(nobody(20), token, { deed: 'eta', etaMinutes: '5', key: 'k' });
+		const other = await post(nobody(21), token, { deed: 'eta', etaMinutes: '9', key: 'k' });
+		expect(other.status).toBeGreaterThanOrEqual(400);
+		expect((await escalationRow(id)).etaMinutes).toBe(5);
+		const kept = await db().all(sql.raw('select * from idempotency_keys'));
+		expect(kept.length).toBeGreaterThan(0);
+		expect(JSON.stringify(kept)).not.toContain(token);
 	});
 
 	it('takes once: who did not come does not take again with the same link', async () => {

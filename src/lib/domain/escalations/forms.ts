@@ -45,11 +45,14 @@ export const settleBody = z.strictObject({
 
 export const emptyBody = z.strictObject({});
 
+const PLAIN_LINK_DEEDS = ['take', 'untake', 'arrive', 'confirm'] as const;
+export const LINK_DEEDS = [...PLAIN_LINK_DEEDS, 'eta'] as const;
+
 /** What the page of a secret link can do; without a word it takes, as the bare button of an old page does. */
 export const linkDeed = z.preprocess(
 	(form) => ({ deed: 'take', ...(form as object) }),
 	z.discriminatedUnion('deed', [
-		z.object({ deed: z.literal(['take', 'untake', 'arrive', 'confirm']) }),
+		z.object({ deed: z.literal(PLAIN_LINK_DEEDS) }),
 		z.object({
 			deed: z.literal('eta'),
 			etaMinutes: z.coerce.number().pipe(etaBody.shape.etaMinutes)

@@ -69,7 +69,7 @@ export async function linkExists(token: string): Promise<boolean> {
 }
 
 /**
- * Act as the person whom the link was sent to.
+ * Act as the person whom the link was sent to; the same form sent twice acts once.
  * @throws Problem `not-found` for a link that is unknown or expired, or whose person has no access any more
  */
 async function byLink<T>(
@@ -83,7 +83,9 @@ async function byLink<T>(
 		throw notFound('link');
 	}
 	const actor: LinkHolder = { kind: 'link', person, escalationId: link.escalationId };
-	const as = { ...context, actor, key: null };
+	// The address of a link is its secret: what is kept of a key names the link and not the way to it.
+	const key = context.key && { ...context.key, path: `link:${link.id}` };
+	const as = { ...context, actor, key };
 	return write(as, 'anyone', async (tx) => {
 		const { escalation } = await accessEscalation(tx, person, link.escalationId, 'escalation.take');
 		return deed(tx, as, person, escalation, link);

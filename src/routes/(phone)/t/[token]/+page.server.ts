@@ -1,6 +1,6 @@
 import { error, fail, redirect, type RequestEvent } from '@sveltejs/kit';
 import { Problem } from '$lib/domain/core/errors';
-import { linkDeed, type LinkDeed } from '$lib/domain/escalations/forms';
+import { LINK_DEEDS, linkDeed, type LinkDeed } from '$lib/domain/escalations/forms';
 import { routes } from '$lib/routes';
 import type { Context } from '$lib/server/context';
 import {
@@ -11,22 +11,33 @@ import {
 	untakeByLink
 } from '$lib/server/escalations/link';
 import { phonePage } from '$lib/server/escalations/phone';
-import { orErrorPage } from '$lib/server/http/page';
+import { newFormKey, orErrorPage, withFormKey } from '$lib/server/http/page';
 import type { Actions, PageServerLoad } from './$types';
 
 /** Looking takes nothing: previews of messages, virus scanners and curious thumbs only read. */
 export const load: PageServerLoad = ({ locals, params }) =>
-	orErrorPage(() => phonePage(locals.context, params.token));
+	orErrorPage(async () => ({
+		...(await phonePage(locals.context, params.token)),
+		keys: Object.fromEntries(LINK_DEEDS.map((deed) => [deed, newFormKey()])) as Record<
+			LinkDeed['deed'],
+			string
+		>
+	}));
 
 export const actions: Actions = {
 	/** Take it, or what comes after it, for the person whom the link was sent to. Sent twice it is done once. */
-	default: async ({ locals, params, request }) => {
-		const deed = linkDeed.safeParse(Object.fromEntries(await request.formData()));
+	default: async (event) => {
+		const { locals, params, request } = event;
+		const posted = await request.formData();
+		const deed = linkDeed.safeParse(Object.fromEntries(posted));
 		if (!deed.success) {
 			return fail(422, { refused: 'invalid' });
 		}
 		try {
-			await perform(locals.context, params.token, deed.data);
+			const key = posted.get('key');
+			const context =
+				typeof key === 'string' && key ? withFormKey(locals.context, event, key, deed.data) : locals.context;
+			await perform(context, params.token, deed.data);
 		} catch (thrown) {
 			return refused(thrown, locals, params.token, deed.data);
 		}
@@ -55,7 +66,10 @@ async function refused(thrown: unknown, locals: RequestEvent['locals'], token: s
 		throw thrown;
 	}
 	const { escalation } = await orErrorPage(() => phonePage(locals.context, token));
-	if (escalation.mine && (deed === 'take' || deed === 'confirm')) {
+	const there = deed === 'arrive' && escalation.arrivedAt !== null;
+	const done = escalation.mine && (deed === 'take' || deed === 'confirm' || there);
+	// The first of two presses is still on its way: the page that comes back says what became of it.
+	if (done || thrown.code === 'in-flight') {
 		redirect(303, routes.phoneLink(token));
 	}
 	if (thrown.status === 404) {
