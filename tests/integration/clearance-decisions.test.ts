@@ -41,13 +41,13 @@ async function asked(kind: 'stairs' | 'arm-stage' | 'out-of-bed' = 'stairs'): Pr
 
 describe('a decision by somebody who saw an earlier state', () => {
 	const give = (context: PersonContext, id: string, seen: string | null) =>
-		giveClearance(context, id, { limits: { helpers: 'one' } }, seen);
+		giveClearance(context, id, { limits: { helpers: 'one' } }, { decidedAt: seen });
 	const withhold = (context: PersonContext, id: string, seen: string | null) =>
-		withholdClearance(context, id, 'Not today.', seen);
+		withholdClearance(context, id, 'Not today.', { decidedAt: seen });
 	const hold = (context: PersonContext, id: string, seen: string | null) =>
-		holdClearance(context, id, 'Fell yesterday.', seen);
+		holdClearance(context, id, 'Fell yesterday.', { decidedAt: seen });
 	const withdraw = (context: PersonContext, id: string, seen: string | null) =>
-		withdrawClearance(context, id, 'Click felt.', seen);
+		withdrawClearance(context, id, 'Click felt.', { decidedAt: seen });
 
 	it.each([
 		['give', give],
@@ -56,7 +56,7 @@ describe('a decision by somebody who saw an earlier state', () => {
 		['withdraw', withdraw]
 	])('by "%s" is refused and names who was faster', async (_, move) => {
 		const id = await asked();
-		await giveClearance(as('physician', 60), id, {}, null);
+		await giveClearance(as('physician', 60), id, {}, { decidedAt: null });
 		await expect(move(as('surgeon', 61), id, null)).rejects.toMatchObject({
 			code: 'wrong-state',
 			status: 409,

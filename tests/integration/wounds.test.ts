@@ -79,7 +79,7 @@ describe('the evidence of a clearance', () => {
 		await noteWound(as('nurse', 120), episodeId, DRY);
 		await giveClearance(as('surgeon', 180), result.id, { limits: { maxElevationDeg: 60 } });
 		expect(await shown(result.id)).toMatchObject({
-			evidence: { wound: { wound: 'moist' } },
+			askedOn: { wound: { wound: 'moist' } },
 			decidedOn: { at: '2026-03-03T09:03:00.000Z', wound: { wound: 'dry' } }
 		});
 

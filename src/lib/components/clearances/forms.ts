@@ -1,7 +1,7 @@
 import type { SuperValidated } from 'sveltekit-superforms';
 import type { GiveFields } from './decision';
 
-type ReasonFields = { reason: string; seen: string };
+type ReasonFields = { reason: string; seen: string; shown?: string };
 
 /** The forms of the decider's page, as the server's `superValidate` gave them. */
 export interface DecisionForms {

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { CLEARANCE_KINDS } from '../core/codes';
+import { CLEARANCE_KINDS, type EscalationState, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
 import type { Precautions } from '../episodes/precautions';
 import type { WoundNote } from '../wounds/views';
@@ -29,13 +29,22 @@ export const askClearanceBody = z.strictObject({
 	threadId: z.string().min(1).optional()
 });
 
+/** What the decider was shown, from `shown` of the clearance: when something is new since, it is refused once. */
+export const shownMarks = z
+	.string()
+	.max(20_000, 'shown is at most 20000 characters, as the clearance gave it.');
+
 export const giveClearanceBody = z.strictObject({
 	limits: clearanceLimits.optional(),
 	reviewOn: z.iso.date('The review day is a date like 2026-12-14.').optional(),
-	note: text('The note', 1000).optional()
+	note: text('The note', 1000).optional(),
+	shown: shownMarks.optional()
 });
 
 export const reasonBody = z.strictObject({ reason: reason('The reason') });
+
+/** A decision that is not a yes: withhold, hold, withdraw. */
+export const refuseClearanceBody = reasonBody.extend({ shown: shownMarks.optional() });
 
 /** A question to whoever asked, instead of a decision. */
 export const askBackBody = z.strictObject({ question: text('question', 1000) });
@@ -57,5 +66,17 @@ export interface ClearanceEvidence {
 	/** The newest note about wound and breastbone; null where nobody has noted anything. */
 	wound?: WoundNote | null;
 	precautions?: Precautions;
+	/** The last ones, and all that were recorded since the ask or the decision before. */
 	sessions: { id: string; startedAt: string; outcome: string; findings: string[] }[];
+	/** Open calls for help, and those since the ask; missing in what was stored before they were kept. */
+	escalations?: EvidenceEscalation[];
+}
+
+/** A call for help as a decider is shown it. */
+export interface EvidenceEscalation {
+	id: string;
+	grade: Grade;
+	state: EscalationState;
+	situation: string;
+	raisedAt: string;
 }

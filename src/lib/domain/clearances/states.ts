@@ -44,6 +44,11 @@ export function nextClearanceState(
 	}
 }
 
+/** Whether a decision can be made on it: first, again with other limits, or to hold or take back. */
+export function isDecidable(state: ClearanceState): boolean {
+	return ALLOWED.give.includes(state);
+}
+
 /** A clearance as far as its end is concerned; `reviewOn` is a day in the hospital's calendar, itself included. */
 export interface Ending {
 	state: ClearanceState;

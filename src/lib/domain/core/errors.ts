@@ -15,6 +15,7 @@ export const PROBLEMS = {
 	'already-asked': { status: 409, title: 'It is already asked' },
 	'already-given': { status: 409, title: 'It is already given' },
 	'already-taken': { status: 409, title: 'Somebody has it already' },
+	'evidence-changed': { status: 409, title: 'Something new is on record' },
 	'clearance-needed': { status: 409, title: 'A clearance is needed first' },
 	'already-admitted': { status: 409, title: 'The patient has an open stay' },
 	'visit-overlaps': { status: 409, title: 'The patient has another visit at that time' },

@@ -46,17 +46,19 @@ export function staleKeys(event: StreamEvent): QueryKey[] {
 		case 'referral':
 			return [...around, ['thread']];
 		case 'clearance':
-			return [...around, ['clearance', event.id], ['thread']];
+			// One clearance can change what another rests on: an arm stage moves the precautions.
+			return [...around, ['clearance'], ['thread']];
 		case 'session':
-			return [...around, ...(event.episodeId ? [['sessions', event.episodeId] as const] : [])];
+			return [...around, ['clearance'], ...(event.episodeId ? [['sessions', event.episodeId] as const] : [])];
 		case 'escalation':
-			return [...around, ['escalation', event.id]];
+			return [...around, ['clearance'], ['escalation', event.id]];
 		case 'alarm':
 			return [['alarms']];
 		case 'visit':
 			return [...around, ['visits'], ['visit', event.id]];
 		case 'episode':
-			return around;
+			// Wound, level and move: what a decision rests on.
+			return [...around, ['clearance']];
 		case 'message':
 			return [['loose-ends'], ['messages'], ['visits'], ['escalation']];
 		case 'delivery':

@@ -7,10 +7,13 @@ import type {
 	ClearanceLimits,
 	giveClearanceBody
 } from '$lib/domain/clearances/forms';
+import { newsSince } from '$lib/domain/clearances/news';
 import { nextClearanceState, stateOn, type DecidingMove } from '$lib/domain/clearances/states';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
+import { newsWords } from '$lib/i18n/clearance-news';
+import { m } from '$lib/i18n/paraglide/messages';
 import { accessClearance, accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
@@ -18,7 +21,7 @@ import { clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
 import { after, write, type Written } from '../write';
 import { insertAsk, openOrInForce } from './ask';
-import { gatherEvidence } from './evidence';
+import { gatherEvidence, shownTo } from './evidence';
 import { hospitalToday } from './lapse';
 import { recordClearanceMove } from './moves';
 import { answerText } from './texts';
@@ -52,18 +55,23 @@ function second(open: { id: string; state: ClearanceState }): Problem {
 		: new Problem('already-given', `This clearance is ${open.state}; it need not be asked again.`, facts);
 }
 
-/**
- * The decision that somebody had in view when they decided: its instant in RFC 3339, null for none. When another
- * decision has come between, theirs is refused and names who was faster; left out, the state alone decides.
- */
-export type SeenDecision = string | null | undefined;
+/** What somebody had in view when they decided; what is left out is not checked. */
+export interface Seen {
+	/**
+	 * The decision before theirs: its instant in RFC 3339, null for none. When another has come between, theirs is
+	 * refused and names who was faster.
+	 */
+	decidedAt?: string | null;
+	/** The evidence, as {@link marksOf} gives it. When something new is on record, theirs is refused and says what. */
+	evidence?: string;
+}
 
 /** Give a clearance, with limits or without. */
 export function giveClearance(
 	context: PersonContext,
 	id: string,
 	input: z.infer<typeof giveClearanceBody>,
-	seen?: SeenDecision
+	seen: Seen = {}
 ) {
 	const decision = {
 		limits: input.limits && Object.keys(input.limits).length > 0 ? input.limits : null,
@@ -74,16 +82,16 @@ export function giveClearance(
 	return decide(context, id, 'give', decision, seen);
 }
 
-export function withholdClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+export function withholdClearance(context: PersonContext, id: string, reason: string, seen: Seen = {}) {
 	return decide(context, id, 'withhold', { limits: null, reviewOn: null, note: null, reason }, seen);
 }
 
-export function holdClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+export function holdClearance(context: PersonContext, id: string, reason: string, seen: Seen = {}) {
 	return decide(context, id, 'hold', { reason }, seen);
 }
 
 /** Who asked may take the ask back; a decider may take back what was given. */
-export function withdrawClearance(context: PersonContext, id: string, reason: string, seen?: SeenDecision) {
+export function withdrawClearance(context: PersonContext, id: string, reason: string, seen: Seen = {}) {
 	return decide(context, id, 'withdraw', { reason }, seen);
 }
 
@@ -108,11 +116,11 @@ function decide(
 	id: string,
 	move: DecidingMove,
 	decision: Decision,
-	seen: SeenDecision
+	seen: Seen
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
 		const { clearance, episode } = await accessForMove(tx, context, id, move);
-		await refuseSlower(tx, clearance, seen);
+		await refuseSlower(tx, clearance, seen.decidedAt);
 		const state = nextClearanceState(stateOn(clearance, hospitalToday(context.now)), move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
@@ -121,7 +129,8 @@ function decide(
 		const takenBack = move === 'withdraw' && clearance.state === 'asked';
 		const decidedBy = takenBack ? null : context.actor.id;
 		// Before anything changes: what the decider could see, not what comes of the decision.
-		const evidence = takenBack ? null : await evidenceNow(tx, context, episode);
+		const evidence = takenBack ? null : await evidenceNow(tx, context, { clearance, episode });
+		refuseUnseen(context, episode, evidence, seen.evidence);
 		await tx
 			.update(clearances)
 			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now })
@@ -153,12 +162,30 @@ function decide(
 }
 
 /** What the decider could see of the patient at the moment of deciding. */
-async function evidenceNow(tx: Tx, context: PersonContext, episode: EpisodeRow): Promise<ClearanceEvidence> {
-	const facts = await factsOfOne(tx, episode, context.now);
-	return gatherEvidence(tx, episode, facts, context.now);
+async function evidenceNow(
+	tx: Tx,
+	{ now }: PersonContext,
+	{ clearance, episode }: { clearance: ClearanceRow; episode: EpisodeRow }
+): Promise<ClearanceEvidence> {
+	const since = clearance.decidedAt ?? clearance.askedAt;
+	return gatherEvidence(tx, episode, await factsOfOne(tx, episode, now), { now, since });
 }
 
-async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: SeenDecision): Promise<void> {
+/** A decision is stored with what is on record: it must not claim that somebody knew what they were not shown. */
+function refuseUnseen(
+	{ actor }: PersonContext,
+	{ unitId }: EpisodeRow,
+	evidence: ClearanceEvidence | null,
+	shown: string | undefined
+): void {
+	const news =
+		evidence === null || shown === undefined ? null : newsSince(shown, shownTo(actor, unitId, evidence));
+	if (news !== null) {
+		throw new Problem('evidence-changed', m.clearances_evidence_changed({ news: newsWords(news) }), { news });
+	}
+}
+
+async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: Seen['decidedAt']): Promise<void> {
 	const decidedAt = clearance.decidedAt === null ? null : toRfc3339(clearance.decidedAt);
 	if (seen === undefined || seen === decidedAt) {
 		return;

@@ -26,7 +26,7 @@ export async function insertAsk(
 	ask: { kind: ClearanceKind; question: string }
 ): Promise<Change<{ id: string; state: 'asked'; evidence: ClearanceEvidence }>> {
 	const { episode, facts, threadId } = about;
-	const evidence = await gatherEvidence(tx, episode, facts, context.now);
+	const evidence = await gatherEvidence(tx, episode, facts, { now: context.now, since: context.now });
 	const id = newId();
 	await tx.insert(clearances).values({
 		id,

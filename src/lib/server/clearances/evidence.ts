@@ -1,29 +1,80 @@
-import { desc, eq, inArray } from 'drizzle-orm';
-import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
+import { and, desc, eq, gt, inArray, or } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
+import { can } from '$lib/domain/access/can';
+import type { ClearanceEvidence, EvidenceEscalation } from '$lib/domain/clearances/forms';
+import type { ShownEvidence } from '$lib/domain/clearances/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { localDateOf } from '$lib/domain/core/time';
 import type { EpisodeRow } from '../access/access';
 import type { Reader } from '../db';
-import { bedsideSessions, findings } from '../db/schema';
+import { bedsideSessions, escalations, findings } from '../db/schema';
 import { env } from '../env';
 import type { EpisodeFacts } from '../episodes/facts';
 import { newestWoundNote } from '../wounds/queries';
 
 const SESSIONS_SHOWN = 3;
+const OPEN = ['raised', 'taken'] as const;
 
-/** What a decider needs in fifteen seconds, as it is now; stored with the ask and with the decision. */
+/**
+ * What a decider needs in fifteen seconds, as it is now; stored with the ask and with the decision.
+ * @param span what was recorded after `since` is shown however much it is, up to `now`
+ */
 export async function gatherEvidence(
 	db: Reader,
 	episode: EpisodeRow,
 	facts: EpisodeFacts,
-	now: number
+	{ now, since }: { now: number; since: number }
 ): Promise<ClearanceEvidence> {
+	const [wound, sessions, calls] = await Promise.all([
+		newestWoundNote(db, episode.id),
+		sessionsOf(db, episode.id, since),
+		escalationsOf(db, episode.id, since)
+	]);
+	const { operation } = facts;
+	return {
+		at: toRfc3339(now),
+		procedure: operation?.procedure ?? null,
+		approach: operation?.approach ?? null,
+		operatedOn: operation && localDateOf(operation.operatedAt, env().hospital.zone),
+		postOpDay: facts.postOpDay,
+		level: episode.level,
+		betaBlocked: episode.betaBlocked,
+		rhythm: episode.rhythm,
+		wound,
+		precautions: facts.precautions,
+		sessions,
+		escalations: calls
+	};
+}
+
+/** Sessions and calls for help in the evidence are as much a clinical record as they are on their own pages. */
+export function shownTo(person: Person, unitId: string, evidence: ClearanceEvidence): ShownEvidence {
+	return {
+		...evidence,
+		sessions: can(person, 'session.read', { unitId }) ? evidence.sessions : null,
+		escalations: can(person, 'escalation.read', { unitId }) ? evidence.escalations : null
+	};
+}
+
+/** The last sessions, and all that were recorded since: one that is entered late may lie before the last. */
+async function sessionsOf(db: Reader, episodeId: string, since: number) {
+	const last = await db
+		.select({ id: bedsideSessions.id })
+		.from(bedsideSessions)
+		.where(eq(bedsideSessions.episodeId, episodeId))
+		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id))
+		.limit(SESSIONS_SHOWN);
+	const ids = last.map(({ id }) => id);
 	const sessions = await db
 		.select()
 		.from(bedsideSessions)
-		.where(eq(bedsideSessions.episodeId, episode.id))
-		.orderBy(desc(bedsideSessions.startedAt))
-		.limit(SESSIONS_SHOWN);
+		.where(
+			and(
+				eq(bedsideSessions.episodeId, episodeId),
+				or(inArray(bedsideSessions.id, ids), gt(bedsideSessions.recordedAt, since))
+			)
+		)
+		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id));
 	const found = await db
 		.select()
 		.from(findings)
@@ -33,25 +84,37 @@ export async function gatherEvidence(
 				sessions.map((session) => session.id)
 			)
 		);
-	const { operation } = facts;
-	return {
-		at: toRfc3339(now),
-		procedure: facts.operation?.procedure ?? null,
-		approach: facts.operation?.approach ?? null,
-		operatedOn: operation && localDateOf(operation.operatedAt, env().hospital.zone),
-		postOpDay: facts.postOpDay,
-		level: episode.level,
-		betaBlocked: episode.betaBlocked,
-		rhythm: episode.rhythm,
-		wound: await newestWoundNote(db, episode.id),
-		precautions: facts.precautions,
-		sessions: sessions.map((session) => ({
-			id: session.id,
-			startedAt: toRfc3339(session.startedAt),
-			outcome: session.outcome,
-			findings: found
-				.filter((finding) => finding.sessionId === session.id && finding.grade !== 'note')
-				.map((finding) => finding.reason)
-		}))
-	};
+	return sessions.map((session) => ({
+		id: session.id,
+		startedAt: toRfc3339(session.startedAt),
+		outcome: session.outcome,
+		findings: found
+			.filter((finding) => finding.sessionId === session.id && finding.grade !== 'note')
+			.map((finding) => finding.reason)
+	}));
+}
+
+/** Open calls for help, and those raised or ended since, which may have been settled meanwhile. */
+async function escalationsOf(db: Reader, episodeId: string, since: number): Promise<EvidenceEscalation[]> {
+	const rows = await db
+		.select({
+			id: escalations.id,
+			grade: escalations.grade,
+			state: escalations.state,
+			situation: escalations.situation,
+			raisedAt: escalations.raisedAt
+		})
+		.from(escalations)
+		.where(
+			and(
+				eq(escalations.episodeId, episodeId),
+				or(
+					inArray(escalations.state, [...OPEN]),
+					gt(escalations.raisedAt, since),
+					gt(escalations.endedAt, since)
+				)
+			)
+		)
+		.orderBy(desc(escalations.raisedAt), desc(escalations.id));
+	return rows.map((row) => ({ ...row, raisedAt: toRfc3339(row.raisedAt) }));
 }

@@ -1,10 +1,10 @@
 import { and, desc, eq, isNotNull, ne } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
-import { can } from '$lib/domain/access/can';
 import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
-import type { ClearanceView, ShownEvidence } from '$lib/domain/clearances/views';
-import { stateOn } from '$lib/domain/clearances/states';
+import { marksOf, newsSince } from '$lib/domain/clearances/news';
+import type { ClearanceView } from '$lib/domain/clearances/views';
+import { isDecidable, stateOn } from '$lib/domain/clearances/states';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { accessClearance } from '../access/access';
@@ -12,6 +12,7 @@ import type { Reader } from '../db';
 import { clearanceMoves, clearances, users } from '../db/schema';
 import { factsOfOne } from '../episodes/facts';
 import { questionsOf } from './ask-back';
+import { gatherEvidence, shownTo } from './evidence';
 import { hospitalToday } from './lapse';
 
 const decider = alias(users, 'decider');
@@ -42,7 +43,7 @@ export async function listClearances(
 	return rows.map((row) => toLine(row, operationId, now));
 }
 
-/** One clearance with what the decider was shown. */
+/** One clearance with what a decision on it rests on. */
 export async function getClearance(
 	db: Reader,
 	person: Person,
@@ -59,13 +60,23 @@ export async function getClearance(
 	if (!row) {
 		throw new Error(`Clearance ${id} lost the person who asked.`);
 	}
+	const line = toLine(row, facts.operation?.id ?? null, now);
+	const seenBy = (evidence: ClearanceEvidence) => shownTo(person, episode.unitId, evidence);
+	const since = clearance.decidedAt ?? clearance.askedAt;
+	const decidable = line.current && isDecidable(line.state);
+	const evidence = seenBy(
+		decidable ? await gatherEvidence(db, episode, facts, { now, since }) : (decidedOn ?? clearance.evidence)
+	);
 	return {
-		...toLine(row, facts.operation?.id ?? null, now),
+		...line,
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
-		evidence: shownTo(person, episode.unitId, clearance.evidence),
-		decidedOn: decidedOn && shownTo(person, episode.unitId, decidedOn),
+		evidence,
+		askedOn: seenBy(clearance.evidence),
+		decidedOn: decidedOn && seenBy(decidedOn),
+		news: line.state === 'asked' ? newsSince(marksOf(seenBy(clearance.evidence)), evidence) : null,
+		shown: marksOf(evidence),
 		questions
 	};
 }
@@ -85,11 +96,6 @@ async function evidenceOfDecision(db: Reader, id: string): Promise<ClearanceEvid
 		.orderBy(desc(clearanceMoves.at), desc(clearanceMoves.id))
 		.limit(1);
 	return decided?.evidence ?? null;
-}
-
-/** The sessions in the evidence are as much a bedside record as the sessions' own page. */
-function shownTo(person: Person, unitId: string, evidence: ClearanceEvidence): ShownEvidence {
-	return can(person, 'session.read', { unitId }) ? evidence : { ...evidence, sessions: null };
 }
 
 function toLine(

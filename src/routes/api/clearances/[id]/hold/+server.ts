@@ -1,10 +1,11 @@
-import { reasonBody } from '$lib/domain/clearances/forms';
+import { refuseClearanceBody } from '$lib/domain/clearances/forms';
 import { holdClearance } from '$lib/server/clearances/actions';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 
 export const POST = writing({
 	permission: 'clearance.decide',
-	body: reasonBody,
-	run: (context, { reason }, event) => holdClearance(context, idParam(event), reason)
+	body: refuseClearanceBody,
+	run: (context, { reason, shown }, event) =>
+		holdClearance(context, idParam(event), reason, { evidence: shown })
 });

@@ -8,7 +8,7 @@ import {
 	holdClearance,
 	withdrawClearance,
 	withholdClearance,
-	type SeenDecision
+	type Seen
 } from '$lib/server/clearances/actions';
 import { answerQuestion, askBack as askBackAbout } from '$lib/server/clearances/ask-back';
 import type { PersonContext } from '$lib/server/context';
@@ -27,7 +27,7 @@ export const give = formAction({
 	run: async (context, fields, event) => {
 		const id = clearanceOf(event);
 		const { kind } = await read.clearance(context, id);
-		const { reviewOn, note, seen } = fields;
+		const { reviewOn, note } = fields;
 		const wrong = wrongChoice(kind, fields.limit);
 		if (wrong !== null) {
 			throw invalidField('/limit', wrong);
@@ -35,21 +35,21 @@ export const give = formAction({
 		if (reviewOn !== undefined && reviewOn < localDateOf(context.now, env().hospital.zone)) {
 			throw invalidField('/reviewOn', m.clearances_review_is_past());
 		}
-		await giveClearance(context, id, { limits: limitsOf(fields), reviewOn, note }, seen || null);
+		await giveClearance(context, id, { limits: limitsOf(fields), reviewOn, note }, seenOf(fields));
 		leadOnWithoutScript(event, event.url.pathname);
 		return m.clearances_given();
 	}
 });
 
-type Refusal = (context: PersonContext, id: string, reason: string, seen: SeenDecision) => Promise<unknown>;
+type Refusal = (context: PersonContext, id: string, reason: string, seen: Seen) => Promise<unknown>;
 
 function refusing(id: string, refuse: Refusal) {
 	return formAction({
 		schema: refuseForm,
 		id,
 		words,
-		run: async (context, { reason, seen }, event) => {
-			await refuse(context, clearanceOf(event), reason, seen || null);
+		run: async (context, fields, event) => {
+			await refuse(context, clearanceOf(event), fields.reason, seenOf(fields));
 			leadOnWithoutScript(event, event.url.pathname);
 			return m.clearances_done();
 		}
@@ -62,6 +62,11 @@ export const withdraw = refusing('withdraw', withdrawClearance);
 
 export const askBack = refusing('askBack', askBackAbout);
 export const answer = refusing('answer', answerQuestion);
+
+/** What the page showed when it was decided on. */
+function seenOf({ seen, shown }: { seen: string; shown?: string }): Seen {
+	return { decidedAt: seen || null, evidence: shown };
+}
 
 function clearanceOf({ params }: RequestEvent): string {
 	return params.clearanceId ?? '';
