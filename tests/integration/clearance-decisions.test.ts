@@ -92,6 +92,12 @@ describe('what a clearance permits now', () => {
 		expect(after.mayDoNow?.chair).toBe('not');
 	});
 
+	it('does not grow because somebody asks again', async () => {
+		await withholdClearance(as('surgeon'), await asked('out-of-bed'), 'Bleeding.');
+		await asked('out-of-bed');
+		expect((await today()).mayDoNow).toMatchObject({ chair: 'not', corridor: 'not' });
+	});
+
 	it('is nothing once a later operation has begun', async () => {
 		const id = await asked('arm-stage');
 		await giveClearance(as('surgeon'), id, {});

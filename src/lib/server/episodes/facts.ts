@@ -138,9 +138,9 @@ function derive(
 		(row) => (row.operationId === null || row.operationId === operation?.id) && !takenBack(row)
 	);
 	const today = localDateOf(now, zone);
-	const newest = counting
-		.filter((row, index) => counting.findIndex((c) => c.kind === row.kind) === index)
-		.map((row) => ({ ...row, state: stateOn(row, today) }));
+	const newest = newestOfKind(counting).map((row) => ({ ...row, state: stateOn(row, today) }));
+	// Asking again opens no door: until it is decided anew, the last decision stands.
+	const decided = newestOfKind(counting.filter((row) => row.state !== 'asked'));
 	const inForce = newest.filter((row) => isInForce(row, today));
 	const armStage = inForce.find((row) => row.kind === 'arm-stage');
 	return {
@@ -152,7 +152,10 @@ function derive(
 		),
 		newest,
 		inForce,
-		mayDoNow: mayDoNow(episode.level as Level, newest),
+		mayDoNow: mayDoNow(
+			episode.level as Level,
+			decided.map((row) => ({ ...row, state: stateOn(row, today) }))
+		),
 		precautions: precautionsOf(
 			operation && {
 				approach: operation.approach,
@@ -163,4 +166,9 @@ function derive(
 			inForce.some((row) => row.kind === 'precautions-end')
 		)
 	};
+}
+
+/** The first of each kind of a list that begins with the newest. */
+function newestOfKind(newestFirst: Clearance[]): Clearance[] {
+	return newestFirst.filter((row, index) => newestFirst.findIndex(({ kind }) => kind === row.kind) === index);
 }
