@@ -119,6 +119,16 @@ describe('signing in', () => {
 		expect((await personOfCookie(jar))?.person.id).toBe(ids.una);
 	});
 
+	it('in a browser where somebody else sat tells their streams, and nobody’s where nobody did', async () => {
+		const heard: LoggedEvent[] = [];
+		const stop = listen((event) => heard.push(event));
+		const { jar } = await attempt('una', PASSWORD);
+		expect(heard).toEqual([]);
+		await signIn(at(HOSPITAL_NOW), jar, { email: 'bela@saltmarsh.example', password: PASSWORD });
+		stop();
+		expect(heard).toMatchObject([{ topic: 'account', kind: 'signed-out', userId: ids.una, episodeId: null }]);
+	});
+
 	it.each([
 		['nobody of that address', 'nobody', PASSWORD],
 		['a wrong password', 'una', 'eight grey herons stand'],

@@ -1,12 +1,12 @@
 import { setImmediate as turn } from 'node:timers/promises';
 import { sql } from 'drizzle-orm';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 import { db, transact } from '$lib/server/db';
 import { liveEvents } from '$lib/server/db/schema';
-import { cutReaders, guardedStream, type Sink } from '$lib/server/live/guarded';
+import { guardedStream, type Sink } from '$lib/server/live/guarded';
 import { droppedListeners, listen, publish } from '$lib/server/live/hub';
 import { appendLive, canResume, currentCursor, forgetOldEvents, LIVE_HISTORY_MS } from '$lib/server/live/log';
-import { MAX_QUEUED_BYTES } from '$lib/server/live/pipe';
+import { cutReaders, ENDING_MS, MAX_QUEUED_BYTES, ROOM_BYTES, STALLED_MS } from '$lib/server/live/pipe';
 import { mayHear, openStream } from '$lib/server/live/stream';
 import { freshDatabase } from '../support/database';
 import { makeHospital, type Hospital } from '../support/hospital';
@@ -18,6 +18,7 @@ beforeAll(async () => {
 	hospital = await makeHospital();
 });
 afterAll(() => close());
+afterEach(() => vi.useRealTimers());
 
 const stillGood = () => Promise.resolve(true);
 
@@ -32,37 +33,53 @@ async function eventually(holds: () => boolean): Promise<void> {
 }
 
 function openGuarded(options: { beats?: boolean } = {}) {
-	let sink: Sink | null = null;
+	let given: Sink | null = null;
 	let stopped = 0;
-	let cutOff = 0;
+	let dropped = 0;
 	const response = guardedStream(
-		(given) => {
-			sink = given;
+		(sink) => {
+			given = sink;
 			return () => (stopped += 1);
 		},
-		stillGood,
-		{ ...options, cutOff: () => (cutOff += 1) }
+		() => Promise.resolve(true),
+		{ ...options, dropConnection: () => (dropped += 1) }
 	);
-	const send = (frame: ReturnType<typeof change>) => (sink as Sink | null)?.send(frame);
-	const end = () => (sink as Sink | null)?.end();
-	return { response, send, stops: () => stopped, cuts: () => cutOff, end };
+	const sink = given as Sink | null;
+	if (!sink) {
+		throw new Error('The stream did not start.');
+	}
+	return { response, sink, send: sink.send, end: sink.end, stops: () => stopped, drops: () => dropped };
+}
+
+/** The bytes of one change as they wait for a reader. */
+const CHANGE_BYTES =
+	'id: 1000\nevent: change\ndata: {"topic":"thread","kind":"entry","id":"x","episodeId":null}\n\n'.length;
+
+/** Send as many changes as there is place for in so many bytes. */
+function fill(sink: Sink, bytes: number): void {
+	for (let n = 0; n < Math.floor(bytes / CHANGE_BYTES); n += 1) {
+		sink.send(change(1000 + n));
+	}
 }
 
 async function readUntil(response: Response, wanted: RegExp): Promise<string> {
 	const reader = response.body?.getReader();
 	const decoder = new TextDecoder();
-	let text = '';
-	while (!wanted.test(text.slice(-2_000))) {
-		// A reader that is slower than the sender, as every network is.
+	const parts: string[] = [];
+	let tail = '';
+	while (!wanted.test(tail)) {
+		// As a server writes to a socket: when that is full, the event loop turns before there is room.
 		await turn();
 		const part = await reader?.read();
 		if (!part || part.done) {
 			break;
 		}
-		text += decoder.decode(part.value);
+		const text = decoder.decode(part.value);
+		parts.push(text);
+		tail = (tail + text).slice(-500);
 	}
 	reader?.releaseLock();
-	return text;
+	return parts.join('');
 }
 
 describe('one guarded stream', () => {
@@ -92,26 +109,76 @@ describe('one guarded stream', () => {
 		expect(text.match(/^event: .*$/gm)).toEqual(['event: change']);
 	});
 
-	it('cuts a reader that does not read, and lets go of everything', async () => {
-		const { response, send, stops, cuts } = openGuarded();
-		const before = cutReaders();
-		const bytes = JSON.stringify(change(1)).length;
-		for (let n = 0; n < (2 * MAX_QUEUED_BYTES) / bytes; n += 1) {
-			send(change(n));
-		}
-		await eventually(() => stops() === 1);
-		expect(send(change(1))).toBe(false);
-		expect([cuts(), cutReaders() - before]).toEqual([1, 1]);
-		// What was queued is gone too: a cut reader gets no half of it.
-		const reader = response.body?.getReader();
-		expect(await reader?.read()).toMatchObject({ done: true });
+	it('lets a reader fall behind as far as it may', async () => {
+		const { response, sink, end, stops } = openGuarded();
+		fill(sink, MAX_QUEUED_BYTES - CHANGE_BYTES);
+		await turn();
+		expect(stops()).toBe(0);
+		expect(await response.body?.getReader().read()).toMatchObject({ done: false });
+		end();
 	});
 
-	it('stops once when the client goes away', async () => {
-		const { response, stops, cuts } = openGuarded();
+	it('cuts a reader that does not read, and lets go of everything', async () => {
+		const { response, sink, stops, drops } = openGuarded();
+		const before = cutReaders();
+		fill(sink, MAX_QUEUED_BYTES + 2 * CHANGE_BYTES);
+		await turn();
+		expect([stops(), drops(), cutReaders() - before]).toEqual([1, 1, 1]);
+		expect(sink.send(change(1))).toBe(false);
+		// What was queued is gone too: a cut reader gets no half of it, and no end that looks like a good one.
+		await expect(response.body?.getReader().read()).rejects.toThrow('too slow');
+	});
+
+	it('cuts a reader that takes nothing while somebody waits for room', async () => {
+		vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] });
+		const { response, sink, drops } = openGuarded();
+		fill(sink, ROOM_BYTES + 2 * CHANGE_BYTES);
+		const room = sink.room();
+		await turn();
+		await vi.advanceTimersByTimeAsync(STALLED_MS - 1);
+		expect(drops()).toBe(0);
+		// One block is a sign of life: the time starts anew.
+		await response.body?.getReader().read();
+		await vi.advanceTimersByTimeAsync(1 + STALLED_MS - 1);
+		expect(drops()).toBe(0);
+		await vi.advanceTimersByTimeAsync(1);
+		expect([drops(), await room]).toEqual([1, false]);
+	});
+
+	it('has room again when the reader has read, and at once while little waits', async () => {
+		const { response, sink, end, drops } = openGuarded();
+		fill(sink, ROOM_BYTES - CHANGE_BYTES);
+		expect(await sink.room()).toBe(true);
+		fill(sink, ROOM_BYTES);
+		const room = sink.room();
+		const reader = response.body?.getReader();
+		for (let n = 0; n <= ROOM_BYTES / CHANGE_BYTES; n += 1) {
+			await reader?.read();
+		}
+		expect(await room).toBe(true);
+		expect(drops()).toBe(0);
+		end();
+	});
+
+	it('takes the connection from who does not read the end in time', async () => {
+		vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] });
+		const { sink, drops } = openGuarded();
+		fill(sink, ROOM_BYTES);
+		sink.end();
+		await turn();
+		await vi.advanceTimersByTimeAsync(ENDING_MS - 1);
+		expect(drops()).toBe(0);
+		await vi.advanceTimersByTimeAsync(1);
+		expect(drops()).toBe(1);
+	});
+
+	it('stops once when the client goes away, and leaves its connection alone', async () => {
+		vi.useFakeTimers({ toFake: ['setTimeout', 'clearTimeout'] });
+		const { response, stops, drops } = openGuarded();
 		await response.body?.cancel();
 		await eventually(() => stops() > 0);
-		expect([stops(), cuts()]).toEqual([1, 0]);
+		await vi.advanceTimersByTimeAsync(2 * ENDING_MS);
+		expect([stops(), drops()]).toEqual([1, 0]);
 	});
 
 	it('survives a start that throws', async () => {
@@ -163,21 +230,22 @@ describe('the log', () => {
 		await response.body?.cancel();
 	});
 
-	it('replays more than may pile up to a reader at its own pace, whole and in order', async () => {
+	it('replays more than may pile up at the reader’s pace, whole and in order, and what happens meanwhile', async () => {
+		const many = 6_000;
 		const from = await currentCursor(db());
-		const many = 5_000;
-		await transact((tx) =>
-			tx.run(sql`
-				with recursive n(i) as (select 1 union all select i + 1 from n where i < ${many})
-				insert into live_events (at, topic, kind, subject_id, episode_id, unit_id)
-				select 1, 'episode', 'admitted', 'e', ${hospital.episodeId},
-				(select unit_id from episodes where id = ${hospital.episodeId}) from n`)
-		);
-		const response = openStream({ person: hospital.people.nurse, stillGood, after: from });
-		const text = await readUntil(response, new RegExp(`id: ${from + many}\nevent`));
-		expect(text.length).toBeGreaterThan(2 * MAX_QUEUED_BYTES);
+		await db().run(sql`
+			with recursive n(i) as (select 1 union all select i + 1 from n where i < ${many})
+			insert into live_events (at, topic, kind, subject_id, episode_id, unit_id)
+			select 1, 'episode', 'admitted', ${hospital.episodeId}, ${hospital.episodeId}, ${hospital.units.ward} from n`);
+		const before = cutReaders();
+		const response = openStream({ person: hospital.people.nurse, stillGood, after: from, beats: true });
+		const start = await readUntil(response, new RegExp(`id: ${from + 1_000}\n`));
+		publish(await happened(2));
+		const text = start + (await readUntil(response, new RegExp(`id: ${from + many + 1}\nevent`)));
 		const ids = [...text.matchAll(/id: (\d+)\nevent: change/g)].map((match) => Number(match[1]));
-		expect(ids).toEqual(Array.from({ length: many }, (_, n) => from + 1 + n));
+		expect(text.length).toBeGreaterThan(4 * MAX_QUEUED_BYTES);
+		expect(ids).toEqual(Array.from({ length: many + 1 }, (_, n) => from + 1 + n));
+		expect(cutReaders() - before).toBe(0);
 		await response.body?.cancel();
 	});
 });

@@ -11,7 +11,7 @@ export interface Ears {
 	beat(serverNow: number): void;
 	/** The connection broke. The browser tries again by itself. */
 	broke(): void;
-	/** The server refuses, because the sign-in has ended. */
+	/** The server refuses, because the sign-in has ended; somebody else may have signed in since. */
 	signedOut(): void;
 }
 
@@ -23,8 +23,12 @@ export class LiveStream {
 	#source: EventSource | null = null;
 	#stopped = false;
 
-	/** @param cursor where to go on from, whenever the stream is opened anew */
+	/**
+	 * @param userId whose stream it is; the server refuses it while somebody else is signed in in this browser
+	 * @param cursor where to go on from, whenever the stream is opened anew
+	 */
 	constructor(
+		private readonly userId: string,
 		private readonly cursor: () => number,
 		private readonly ears: Ears
 	) {}
@@ -35,7 +39,7 @@ export class LiveStream {
 		if (this.#stopped) {
 			return;
 		}
-		const source = new EventSource(`/api/live?beats=1&after=${this.cursor()}`);
+		const source = new EventSource(`/api/live?beats=1&as=${this.userId}&after=${this.cursor()}`);
 		this.#source = source;
 		source.addEventListener('change', ({ data, lastEventId }) =>
 			this.ears.change(JSON.parse(data) as StreamEvent, Number(lastEventId))
@@ -62,19 +66,29 @@ export class LiveStream {
 		this.close();
 	}
 
-	/** Refused: the sign-in ended, or the server is stopping. The first is told, the second waits for it. */
+	/** Refused: the sign-in ended or is another's, or the server is stopping. The first is told, the second waits for it. */
 	async #refused(source: EventSource): Promise<void> {
-		const status = await fetch('/api/me', { cache: 'no-store' }).then(
-			(response) => response.status,
-			() => 0
-		);
+		const signedIn = await whoIsSignedIn();
 		if (source !== this.#source) {
 			return;
 		}
-		if (status === 401) {
+		if (signedIn !== 'not-known' && signedIn !== this.userId) {
 			this.ears.signedOut();
 			return;
 		}
 		setTimeout(() => source === this.#source && this.open(), RETRY_MS);
+	}
+}
+
+/** The id of the person who is signed in in this browser, null for nobody. */
+async function whoIsSignedIn(): Promise<string | null | 'not-known'> {
+	try {
+		const response = await fetch('/api/me', { cache: 'no-store' });
+		if (response.ok) {
+			return ((await response.json()) as { user: { id: string } }).user.id;
+		}
+		return response.status === 401 ? null : 'not-known';
+	} catch {
+		return 'not-known';
 	}
 }

@@ -15,6 +15,13 @@ type Message =
 	| { kind: 'signed-out' }
 	| { kind: 'hello' };
 
+/** For whom a page listens, and from where on. */
+export interface Place {
+	userId: string;
+	/** The place in the log from before the page was read. */
+	cursor: number;
+}
+
 /** Who is told what the stream brings. */
 export interface Listener {
 	heard(event: StreamEvent): void;
@@ -25,10 +32,11 @@ export interface Listener {
 }
 
 /**
- * One live stream for all tabs of a browser: browsers allow six connections to a host, and ten open tabs would use
+ * One live stream for all tabs of one person in a browser: browsers allow six connections to a host, and ten open tabs would use
  * them up. The tab that holds a lock keeps the stream and passes on what it hears; when it closes, another takes
  * the lock and goes on from the last cursor. Every tab judges for itself: it is connected while it hears beats or
- * events, and no other sign counts.
+ * events, and no other sign counts. Lock and channel are the person's own: a tab that was left open by somebody else
+ * neither leads the tabs of who is signed in now, nor hears from them.
  */
 export class LiveConnection {
 	connected = $state(false);
@@ -39,6 +47,7 @@ export class LiveConnection {
 	/** The sign-in has ended: nothing comes any more until somebody signs in again. */
 	signedOut = $state(false);
 
+	readonly #userId: string;
 	#cursor: number;
 	readonly #listener: Listener;
 	#stream: LiveStream | null = null;
@@ -49,8 +58,8 @@ export class LiveConnection {
 	/** Server's clock minus this device's. */
 	#offset = 0;
 
-	/** @param cursor the place in the log from before the page was read */
-	constructor(cursor: number, listener: Listener) {
+	constructor({ userId, cursor }: Place, listener: Listener) {
+		this.#userId = userId;
 		this.#cursor = cursor;
 		this.#listener = listener;
 	}
@@ -59,7 +68,7 @@ export class LiveConnection {
 	start(): () => void {
 		const { signal } = this.#stopped;
 		this.#sign = Date.now();
-		this.#channel = new BroadcastChannel(CHANNEL);
+		this.#channel = new BroadcastChannel(`${CHANNEL}:${this.#userId}`);
 		this.#channel.onmessage = ({ data }: MessageEvent<Message>) => this.#receive(data);
 		this.#say({ kind: 'hello' });
 		const watcher = setInterval(() => this.#watch(), WATCH_MS);
@@ -79,12 +88,13 @@ export class LiveConnection {
 		const { signal } = this.#stopped;
 		const hold = () =>
 			new Promise<void>((resolve) => {
-				this.#stream = new LiveStream(() => this.#cursor, this.#ears());
+				this.#stream = new LiveStream(this.#userId, () => this.#cursor, this.#ears());
 				this.#reopen();
 				signal.addEventListener('abort', () => resolve());
 			});
 		// Without the lock (an old browser, an address without https) every tab keeps a stream of its own.
-		await (navigator.locks?.request(LOCK, { signal }, hold).catch(() => {}) ?? hold());
+		const lock = `${LOCK}:${this.#userId}`;
+		await (navigator.locks?.request(lock, { signal }, hold).catch(() => {}) ?? hold());
 	}
 
 	#ears(): Ears {

@@ -23,9 +23,9 @@ afterEach(() => {
 });
 
 /** A tab of the browser; the first one gets the stream. */
-async function tab(cursor = 7) {
+async function tab(cursor = 7, userId = 'una') {
 	const listener = { heard: vi.fn(), lostTrack: vi.fn(), told: vi.fn() };
-	const live = new LiveConnection(cursor, listener);
+	const live = new LiveConnection({ userId, cursor }, listener);
 	const stop = live.start();
 	stops.push(stop);
 	await settled();
@@ -35,10 +35,10 @@ async function tab(cursor = 7) {
 /** Everything that waits for a promise has had its turn; no time has passed. */
 const settled = () => vi.advanceTimersByTimeAsync(0);
 const beat = (serverNow = SERVER_NOW) => FakeEventSource.newest.send('beat', String(serverNow));
-const answer = (status: number) =>
+const answer = (status: number, body: unknown = {}) =>
 	vi.stubGlobal(
 		'fetch',
-		vi.fn(() => Promise.resolve(new Response('{}', { status })))
+		vi.fn(() => Promise.resolve(new Response(JSON.stringify(body), { status })))
 	);
 
 describe('a tab is connected', () => {
@@ -99,7 +99,7 @@ describe('a stream that went silent', () => {
 		const dead = FakeEventSource.newest;
 		await vi.advanceTimersByTimeAsync(SILENCE_MS + 1_000);
 		expect(dead.readyState).toBe(FakeEventSource.CLOSED);
-		expect(FakeEventSource.newest.url).toBe('/api/live?beats=1&after=9');
+		expect(FakeEventSource.newest.url).toBe('/api/live?beats=1&as=una&after=9');
 		expect(live.since).toBe(SERVER_NOW);
 		beat();
 		expect(live.connected).toBe(true);
@@ -153,8 +153,22 @@ describe('a refusal', () => {
 		expect(FakeEventSource.opened).toHaveLength(1);
 	});
 
-	it('of a server that stops is tried again', async () => {
-		answer(503);
+	it('because somebody else signed in is told like an end, and not tried again by itself', async () => {
+		answer(200, { user: { id: 'bela' } });
+		const { live } = await tab();
+		beat();
+		FakeEventSource.newest.refuse();
+		await settled();
+		expect(live).toMatchObject({ connected: false, signedOut: true });
+		await vi.advanceTimersByTimeAsync(10 * SILENCE_MS);
+		expect(FakeEventSource.opened).toHaveLength(1);
+	});
+
+	it.each([
+		['of a server that stops', 503, {}],
+		['of somebody who is still signed in', 200, { user: { id: 'una' } }]
+	])('%s is tried again', async (_, status, body) => {
+		answer(status, body);
 		await tab();
 		FakeEventSource.newest.refuse();
 		await vi.advanceTimersByTimeAsync(2_000);
@@ -194,9 +208,24 @@ describe('several tabs', () => {
 		FakeEventSource.newest.send('change', CHANGE, '12');
 		first.stop();
 		await settled();
-		expect(FakeEventSource.newest.url).toBe('/api/live?beats=1&after=12');
+		expect(FakeEventSource.newest.url).toBe('/api/live?beats=1&as=una&after=12');
 		beat();
 		expect(second.live.connected).toBe(true);
+	});
+
+	it('of somebody else lead none of mine, and neither hear the other', async () => {
+		const before = await tab(7, 'una');
+		beat();
+		const [hers] = FakeEventSource.opened;
+		const after = await tab(7, 'bela');
+		expect(FakeEventSource.newest.url).toBe('/api/live?beats=1&as=bela&after=7');
+		expect(after.live.connected).toBe(false);
+		beat();
+		hers?.send('change', CHANGE, '8');
+		expect(before.listener.heard).toHaveBeenCalledExactlyOnceWith(CHANGE);
+		expect(after.listener.heard).not.toHaveBeenCalled();
+		hers?.break();
+		expect([before.live.connected, after.live.connected]).toEqual([false, true]);
 	});
 
 	it('do not believe a tab that fell silent', async () => {

@@ -44,17 +44,18 @@ export class FakeEventSource extends EventTarget {
 	}
 }
 
-/** A channel between the tabs of one test, which delivers at once and to everybody else. */
+/** A channel between the tabs of one test, which delivers at once and to everybody else on a channel of that name. */
 export class FakeChannel {
 	static all = new Set<FakeChannel>();
 	onmessage: ((event: { data: unknown }) => void) | null = null;
 
-	constructor() {
+	constructor(readonly name: string) {
 		FakeChannel.all.add(this);
 	}
 
 	postMessage(data: unknown): void {
-		[...FakeChannel.all].filter((other) => other !== this).forEach((other) => other.onmessage?.({ data }));
+		const others = [...FakeChannel.all].filter((other) => other !== this && other.name === this.name);
+		others.forEach((other) => other.onmessage?.({ data }));
 	}
 
 	close(): void {
@@ -62,12 +63,13 @@ export class FakeChannel {
 	}
 }
 
-/** The lock of one browser: who asks first holds it until they are done, then the next gets it. */
+/** The locks of one browser: who asks first for one holds it until they are done, then the next gets it. */
 export function fakeLocks() {
-	let tail = Promise.resolve();
+	const tails = new Map<string, Promise<void>>();
 	return {
-		request(_name: string, _options: object, hold: () => Promise<void>): Promise<void> {
-			tail = tail.then(hold);
+		request(name: string, _options: object, hold: () => Promise<void>): Promise<void> {
+			const tail = (tails.get(name) ?? Promise.resolve()).then(hold);
+			tails.set(name, tail);
 			return tail;
 		}
 	};

@@ -3,8 +3,8 @@ import { collectDefaultMetrics, Counter, Gauge, Registry } from 'prom-client';
 import { db } from './db';
 import { escalations, outbox } from './db/schema';
 import { MESSAGE_STATES } from './db/schema/messages';
-import { cutReaders } from './live/guarded';
 import { droppedListeners } from './live/hub';
+import { cutReaders } from './live/pipe';
 import { openStreams } from './live/stream';
 
 /** Figures about the process and the work that waits. They are counts alone: no name, unit or address. */

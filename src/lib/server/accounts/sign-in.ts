@@ -56,11 +56,13 @@ async function enter(
 	await write({ ...context, key: null }, 'anyone', async (tx) => {
 		await also(tx);
 		// A new token at each sign-in: one that was planted in the browser before is worth nothing.
-		await endSignIn(tx, cookies);
+		const before = await endSignIn(tx, cookies);
 		token = await startSignIn(tx, userId, context.now);
 		return {
 			result: null,
-			audit: { action: 'account.signed-in', objectKind: 'account', objectId: userId }
+			audit: { action: 'account.signed-in', objectKind: 'account', objectId: userId },
+			// Whoever sat here before has left: what this browser still listens to for them ends.
+			events: before === null ? [] : [accountEvent('signed-out', before)]
 		};
 	});
 	keepInBrowser(cookies, token);

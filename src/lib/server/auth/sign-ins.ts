@@ -56,12 +56,20 @@ export async function personOfCookie(cookies: Cookies): Promise<{ person: Person
 	return person && { person, signInId: session.id };
 }
 
-/** End the sign-in behind a browser's cookie, if there is one. */
-export async function endSignIn(tx: Tx, cookies: Cookies): Promise<void> {
+/**
+ * End the sign-in behind a browser's cookie, if there is one.
+ * @returns the id of the account that was signed in, or null
+ */
+export async function endSignIn(tx: Tx, cookies: Cookies): Promise<string | null> {
 	const token = cookies.get(cookieName());
-	if (token) {
-		await tx.delete(signIns).where(eq(signIns.id, digestSecret(token)));
+	if (!token) {
+		return null;
 	}
+	const ended = await tx
+		.delete(signIns)
+		.where(eq(signIns.id, digestSecret(token)))
+		.returning({ userId: signIns.userId });
+	return ended[0]?.userId ?? null;
 }
 
 /** Is the sign-in behind an open stream still good? Checked at each heartbeat. */

@@ -4,26 +4,19 @@ import { log } from '../log';
 import { toEmit, type Frame } from './frames';
 import { Pipe } from './pipe';
 
-let cut = 0;
-
-/** How many readers were cut since the start of the process. */
-export function cutReaders(): number {
-	return cut;
-}
-
 export interface Sink {
 	/** False once the client is gone. */
 	send(frame: Frame): boolean;
-	/** Resolves when the reader has taken most of what waits, or is gone. For who has much to send at once. */
-	room(): Promise<void>;
+	/** Wait until the reader has taken most of what was sent; false once the client is gone. For who sends much at once. */
+	room(): Promise<boolean>;
 	end(): void;
 }
 
 export interface StreamOptions {
 	/** With whatever is sent, heartbeats included, goes an event that a page can hear. */
 	beats?: boolean;
-	/** Takes the connection away from a reader that is cut: what waits in its socket would hide an end from it. */
-	cutOff?: () => void;
+	/** Takes the connection away from a reader that does not read. */
+	dropConnection?: () => void;
 }
 
 /**
@@ -36,13 +29,10 @@ export interface StreamOptions {
 export function guardedStream(
 	start: (sink: Sink) => () => void,
 	beat: () => Promise<boolean>,
-	{ beats = false, cutOff = () => {} }: StreamOptions = {}
+	{ beats = false, dropConnection = () => {} }: StreamOptions = {}
 ): Response {
 	let stop = () => {};
-	const pipe = new Pipe(() => {
-		cut += 1;
-		safely(cutOff);
-	}, beats);
+	const pipe = new Pipe(beats, () => safely(dropConnection));
 	const inner = produce(
 		({ emit, lock }) => {
 			const end = () => lock.set(false);
@@ -68,6 +58,8 @@ export function guardedStream(
 		headers: {
 			'content-type': 'text/event-stream',
 			'cache-control': 'no-store',
+			// Nothing else is ever answered on this connection, so it can be taken away with the stream.
+			connection: 'close',
 			'x-accel-buffering': 'no'
 		}
 	});

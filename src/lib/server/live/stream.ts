@@ -43,7 +43,7 @@ export function mayHear(person: Person, event: LoggedEvent): boolean {
 	}
 }
 
-/** `beats` is for the product's own pages, which cannot see a heartbeat that is a comment. */
+/** `beats` are for the product's own pages, which cannot see a heartbeat that is a comment. */
 interface Listening extends StreamOptions {
 	person: Person;
 	/** Whether the sign-in or token behind it is still good; asked again at each heartbeat. */
@@ -85,15 +85,16 @@ export function openStream({ person, stillGood, after, ...options }: Listening):
 	return guardedStream(start, stillEntitled, options);
 }
 
-/** Events that wait for the end of a replay; more are read from the log again. */
-const MOST_WAITING = 500;
+/** Events read from the log at once. At some two hundred bytes each they are well below what may pile up. */
+const REPLAY_BATCH = 500;
 
-/** One client's events in order: first the replay, then what was heard meanwhile, then live. */
+/** One client's events in order: first the replay, at the reader's pace, then live. */
 class Feed {
 	#waiting: LoggedEvent[] = [];
-	#busy = true;
 	#replaying = true;
-	#overflowed = false;
+	/** Something happened during the replay that it may not have read yet. */
+	#missed = false;
+	#busy = false;
 	#last = 0;
 
 	constructor(
@@ -104,12 +105,12 @@ class Feed {
 	) {}
 
 	offer(event: LoggedEvent): void {
-		this.#waiting.push(event);
-		if (this.#replaying && this.#waiting.length > MOST_WAITING) {
-			// The replay reads them from the log; nothing may pile up behind a slow reader.
-			this.#waiting = [];
-			this.#overflowed = true;
+		if (this.#replaying) {
+			// It is in the log, where the replay finds it: nothing may pile up behind a slow reader.
+			this.#missed = true;
+			return;
 		}
+		this.#waiting.push(event);
 		if (!this.#busy) {
 			void this.#drain();
 		}
@@ -117,31 +118,31 @@ class Feed {
 
 	async replay(after: number | null): Promise<void> {
 		const newest = await currentCursor(db());
-		if (after !== null && !(await canResume(db(), after))) {
-			this.sink.send({ kind: 'reset', cursor: newest });
-			this.#last = newest;
-		} else {
-			this.#last = after ?? newest;
-			this.sink.send({ kind: 'cursor', cursor: this.#last });
-			do {
-				this.#overflowed = false;
-				await this.#catchUp();
-			} while (this.#overflowed);
-		}
+		const kept = after === null || (await canResume(db(), after));
+		this.#last = kept ? (after ?? newest) : newest;
+		this.sink.send({ kind: kept ? 'cursor' : 'reset', cursor: this.#last });
+		do {
+			this.#missed = false;
+			if (!(await this.#catchUp())) {
+				return;
+			}
+		} while (this.#missed);
 		this.#replaying = false;
-		await this.#drain();
 	}
 
-	async #catchUp(): Promise<void> {
+	/** @returns false once the client is gone */
+	async #catchUp(): Promise<boolean> {
 		for (;;) {
-			const events = await eventsAfter(db(), this.#last);
+			const events = await eventsAfter(db(), this.#last, REPLAY_BATCH);
 			if (events.length === 0) {
-				return;
+				return true;
 			}
 			for (const event of events) {
 				await this.#pass(event);
 			}
-			await this.sink.room();
+			if (!(await this.sink.room())) {
+				return false;
+			}
 		}
 	}
 
