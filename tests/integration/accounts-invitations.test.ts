@@ -1,5 +1,5 @@
 import { and, desc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { becomeFirstAdmin, lookAtInvitation, takeUpInvitation } from '$lib/server/accounts/invitations';
 import { INVITATION_LIFE_MS } from '$lib/server/accounts/invite';
 import { createAccount, disableAccount, inviteAgain } from '$lib/server/accounts/manage';
@@ -12,27 +12,15 @@ import { audit, invitations, outbox, signIns, users } from '$lib/server/db/schem
 import { linkToken } from '$lib/server/links';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { HOSPITAL_NOW, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const PASSWORD = 'seven grey herons stand';
 const END = HOSPITAL_NOW + INVITATION_LIFE_MS;
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({ PORT: '4451' });
 let mail: ScriptedChannel;
 
-beforeAll(async () => {
-	const environment = testEnvironment({ PORT: '4451' });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 beforeEach(async () => {
 	mail = new ScriptedChannel();
 	await db().update(outbox).set({ state: 'cancelled' });

@@ -1,5 +1,5 @@
 import { desc, eq } from 'drizzle-orm';
-import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
+import { afterEach, describe, expect, it, vi } from 'vitest';
 import { ROLES } from '$lib/domain/core/codes';
 import { listAccounts } from '$lib/server/accounts/list';
 import {
@@ -20,23 +20,11 @@ import { audit, outbox, signIns, units, users } from '$lib/server/db/schema';
 import { listen, type LoggedEvent } from '$lib/server/live/hub';
 import { openStream, openStreams } from '$lib/server/live/stream';
 import { signedIn } from '../support/cookies';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { HOSPITAL_NOW, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW, addPerson, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({});
 
-beforeAll(async () => {
-	const environment = testEnvironment();
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 afterEach(() => vi.useRealTimers());
 
 const admin = () => contextOf(hospital.people.admin);

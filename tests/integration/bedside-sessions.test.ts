@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { recordSession } from '$lib/server/bedside/actions';
 import { db } from '$lib/server/db';
@@ -10,22 +10,16 @@ import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { sessionAt, sessionBody } from '../support/session';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const MINUTE = 60_000;
 const as = (role: keyof Hospital['people'], ms = 0) => contextOf(hospital.people[role], hospital.now + ms);

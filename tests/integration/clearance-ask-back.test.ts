@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { giveClearance, askClearance, withdrawClearance } from '$lib/server/clearances/actions';
 import { answerQuestion, askBack } from '$lib/server/clearances/ask-back';
 import { getClearance } from '$lib/server/clearances/queries';
@@ -6,26 +6,20 @@ import { db } from '$lib/server/db';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { eventsAfter } from '$lib/server/live/log';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let threadId: string;
 let id: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 	({ threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id }));
 	const ask = { kind: 'arm-stage', question: 'May it start?' } as const;
 	({ id } = (await askClearance(as('therapist'), episodeId, ask)).result);
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], seconds = 0) =>
 	contextOf(hospital.people[role], hospital.now + seconds * 1000);

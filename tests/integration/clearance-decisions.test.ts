@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import {
 	askClearance,
 	giveClearance,
@@ -12,21 +12,15 @@ import { db } from '$lib/server/db';
 import { operations } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const DAY = 24 * 3600;
 const as = (role: keyof Hospital['people'], seconds = 0) =>

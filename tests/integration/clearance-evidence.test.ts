@@ -1,5 +1,5 @@
 import { and, eq, ne } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { recordSession } from '$lib/server/bedside/actions';
 import {
 	askClearance,
@@ -15,26 +15,20 @@ import { clearanceMoves } from '$lib/server/db/schema';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { noteWound } from '$lib/server/wounds/actions';
 import { CALL } from '../support/escalations';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { sessionAt, sessionBody } from '../support/session';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let id: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 	await recordSession(as('therapist'), episodeId, sessionBody());
 	const ask = { kind: 'arm-stage', question: 'May the arms start?' } as const;
 	id = (await askClearance(as('therapist', 60), episodeId, ask)).result.id;
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], seconds = 0) =>
 	contextOf(hospital.people[role], hospital.now + seconds * 1000);

@@ -1,5 +1,5 @@
 import { and, asc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { askClearance, giveClearance, holdClearance } from '$lib/server/clearances/actions';
 import { lapseJob } from '$lib/server/clearances/lapse';
 import { getClearance } from '$lib/server/clearances/queries';
@@ -7,11 +7,10 @@ import { db } from '$lib/server/db';
 import { audit, clearanceMoves, clearances, entries, liveEvents, operations } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
-import { freshDatabase } from '../support/database';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let threadId: string;
 let id: string;
@@ -20,10 +19,6 @@ let id: string;
 const LAST_MS = Date.parse('2026-03-04T23:59:59.999Z');
 const PAST_MS = LAST_MS + 1;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	// What an earlier test left behind is out of the way.
 	await lapseJob.run(PAST_MS);
@@ -32,7 +27,6 @@ beforeEach(async () => {
 	id = await asked();
 	await giveClearance(as('surgeon'), id, { reviewOn: '2026-03-04' });
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], now = hospital.now) => contextOf(hospital.people[role], now);
 const shown = (now: number) => getClearance(db(), hospital.people.nurse, id, now);

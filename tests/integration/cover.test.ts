@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import { ROLES } from '$lib/domain/core/codes';
 import { coverNow, onCover } from '$lib/server/cover/queries';
@@ -6,23 +6,17 @@ import { db } from '$lib/server/db';
 import { coverShifts } from '$lib/server/db/schema';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { newId } from '$lib/server/ids';
-import { freshDatabase } from '../support/database';
 import { at, CALL, messagesOf, toldOf } from '../support/escalations';
-import { addPatient, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addPerson, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const HOUR = 3600;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	await db().delete(coverShifts);
 });
-afterAll(() => close());
 
 const ward = () => hospital.units.ward;
 async function cover({ id: userId }: Person, from = -HOUR, until = HOUR): Promise<void> {

@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { ROLES } from '$lib/domain/core/codes';
 import { db } from '$lib/server/db';
 import { liveEvents, outbox, outboxAttempts } from '$lib/server/db/schema';
@@ -10,10 +10,9 @@ import type { Channels } from '$lib/server/outbox/channels/channel';
 import { smsChannel } from '$lib/server/outbox/channels/sms';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, permanent, transient, unknown } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { startGateway, type Gateway } from '../support/gateway';
-import { HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
+import { startGateway } from '../support/gateway';
+import { HOSPITAL_NOW } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addAlert, addEscalation, addReminder, addVisit, rowOf } from '../support/messages';
 
 /** That a gateway is down is seen on every page, with since when and how many wait: fault F10. */
@@ -22,27 +21,15 @@ const SECOND = 1_000;
 const MINUTE = 60 * SECOND;
 const HOUR = 60 * MINUTE;
 
-let hospital: Hospital;
-let gateway: Gateway;
-let cleanUp: () => Promise<void>;
+const gateway = await startGateway('http://127.0.0.1:4114');
+const hospital = await openHospital(gateway.env);
 let sms: ScriptedChannel;
 let mail: ScriptedChannel;
 /** Each test is a day after the one before, so that no success of another counts. */
 let start = HOSPITAL_NOW;
 let now: number;
 
-beforeAll(async () => {
-	gateway = await startGateway('http://127.0.0.1:4114');
-	const environment = testEnvironment(gateway.env);
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		await gateway.stop();
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+afterAll(() => gateway.stop());
 
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled', stateReason: null });

@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { recordSession } from '$lib/server/bedside/actions';
 import { acknowledgeDeviation } from '$lib/server/bedside/deviations';
@@ -13,24 +13,18 @@ import { db } from '$lib/server/db';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { ARMS, sessionAt, sessionBody } from '../support/session';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let threadId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 	({ threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id }));
 });
-afterAll(() => close());
 
 const MINUTE = 60_000;
 const HOUR = 60 * MINUTE;

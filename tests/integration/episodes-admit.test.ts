@@ -1,23 +1,16 @@
 import { and, eq, isNull } from 'drizzle-orm';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { admitBody } from '$lib/domain/episodes/forms';
 import { db } from '$lib/server/db';
 import { audit, episodes, patientAmendments, patients, placements } from '$lib/server/db/schema';
 import { written } from '$lib/domain/episodes/identifiers';
 import { admitPatient } from '$lib/server/episodes/actions';
 import { closeEpisode } from '$lib/server/episodes/close';
-import { freshDatabase } from '../support/database';
-import { addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPerson, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let count = 0;
-
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
-afterAll(() => close());
 
 const PERSON = { name: 'Maeve Sandoval', birthDate: '1961-02-11', sex: 'female' } as const;
 const as = (role: keyof Hospital['people'] = 'coordinator') => contextOf(hospital.people[role]);

@@ -1,5 +1,5 @@
 import { and, asc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { ROLES, CLOSE_REASONS } from '$lib/domain/core/codes';
 import type { Person } from '$lib/domain/access/actor';
 import { db } from '$lib/server/db';
@@ -21,8 +21,8 @@ import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { eventsAfter, liveCursor } from '$lib/server/live/log';
 import { mayHear } from '$lib/server/live/stream';
-import { freshDatabase } from '../support/database';
-import { addPatient, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addPerson, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const HOUR = 3600 * 1000;
 const CALL = {
@@ -33,8 +33,7 @@ const CALL = {
 	request: 'Please come.'
 } as const;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let bed: string;
 let count = 0;
@@ -43,8 +42,6 @@ let onWard: Person;
 let onIcu: Person;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	const { ward, icu } = hospital.units;
 	onWard = await addPerson({ role: 'nurse', unitIds: [ward] });
 	onIcu = await addPerson({ role: 'nurse', unitIds: [icu] });
@@ -55,7 +52,6 @@ beforeEach(async () => {
 	bed = `B${(count += 1)}`;
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward, bed }));
 });
-afterAll(() => close());
 
 async function cover(unitId: string, { id: userId }: Person) {
 	const { now } = hospital;

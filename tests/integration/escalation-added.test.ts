@@ -1,5 +1,5 @@
 import { asc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { ADDED_SHOWN } from '$lib/domain/escalations/views';
 import { db } from '$lib/server/db';
@@ -16,24 +16,20 @@ import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard, escalationRow, messagesOf, toldOf } from '../support/escalations';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import type { Person } from '$lib/domain/access/actor';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 });
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const as = (person: Person, seconds = 0) => contextOf(person, at(seconds));
 async function call(person: Person, seconds: number, input: Partial<RaiseInput> = {}) {

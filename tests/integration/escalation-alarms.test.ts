@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import type { Grade } from '$lib/domain/core/codes';
 import { db } from '$lib/server/db';
 import { alarmsOf } from '$lib/server/escalations/alarms';
@@ -7,19 +7,15 @@ import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { untakeEscalation } from '$lib/server/escalations/undo';
 import { eventsAfter, liveCursor } from '$lib/server/live/log';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard } from '../support/escalations';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 });
-afterAll(() => close());
 
 async function call(grade: Grade, unitId = hospital.units.ward) {
 	const { episodeId } = await addPatient({ unitId });

@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { movesFor } from '$lib/domain/escalations/moves';
@@ -8,20 +8,17 @@ import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard, escalationRow, messagesOf } from '../support/escalations';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let id: string;
 let first: Person;
 let second: Person;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 	first = hospital.people.therapist;
 	second = hospital.people['speech-therapist'];
@@ -30,7 +27,6 @@ beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 	id = await call(first, 0);
 });
-afterAll(() => close());
 
 const as = (person: Person, seconds = 0) => contextOf(person, at(seconds));
 async function call(person: Person, seconds: number, input: Partial<RaiseInput> = {}) {

@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
@@ -19,7 +19,6 @@ import { untakeEscalation } from '$lib/server/escalations/undo';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { recheck } from '$lib/server/outbox/recheck';
 import { releaseRow } from '$lib/server/outbox/record';
-import { freshDatabase } from '../support/database';
 import {
 	at,
 	CALL,
@@ -31,21 +30,18 @@ import {
 	tokenOf,
 	toldOf
 } from '../support/escalations';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 });
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const by = (role: 'therapist' | 'nurse' | 'physician' | 'surgeon', seconds = 0) =>
 	contextOf(hospital.people[role], at(seconds));

@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { sql } from 'drizzle-orm';
 import type { Context } from '$lib/server/context';
 import { db } from '$lib/server/db';
@@ -10,24 +10,20 @@ import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { actions, load } from '../../src/routes/(phone)/t/[token]/+page.server';
 import { GET } from '../../src/routes/(phone)/t/[token]/state/+server';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard, escalationRow, nobody, tokenOf } from '../support/escalations';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let id: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 });
 beforeEach(async () => {
 	const { episodeId } = await addPatient({ unitId: hospital.units.ward });
 	({ id } = (await raiseEscalation(contextOf(hospital.people.therapist, at(0)), episodeId, CALL)).result);
 });
-afterAll(() => close());
 
 /** As much of a request as the handlers look at. */
 function request(context: Context, token: string, form: Record<string, string> = {}): never {

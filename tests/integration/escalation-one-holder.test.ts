@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import { Problem } from '$lib/domain/core/errors';
 import { db } from '$lib/server/db';
@@ -10,19 +10,15 @@ import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { untakeEscalation } from '$lib/server/escalations/undo';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard, escalationRow } from '../support/escalations';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 });
-afterAll(() => close());
 
 type Deed = { who: 0 | 1 | 2; what: 'take' | 'untake' | 'pass' | 'confirm' | 'arrive'; to: 0 | 1 | 2 };
 const person = fc.constantFrom(0 as const, 1 as const, 2 as const);

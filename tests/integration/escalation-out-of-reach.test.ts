@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import { disableAccount, setUnits } from '$lib/server/accounts/manage';
 import { db } from '$lib/server/db';
@@ -10,21 +10,13 @@ import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
-import { freshDatabase } from '../support/database';
 import { at, CALL, coverWard, escalationRow, messagesOf } from '../support/escalations';
-import {
-	addPatient,
-	addPerson,
-	addReferral,
-	contextOf,
-	makeHospital,
-	type Hospital
-} from '../support/hospital';
+import { addPatient, addPerson, addReferral, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const YEAR = 365 * 24 * 3600;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let onWard: Person;
 let onIcu: Person;
@@ -32,8 +24,6 @@ let id: string;
 let bed = 0;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	await coverWard(hospital);
 	const { icu } = hospital.units;
 	onIcu = await addPerson({ role: 'nurse', unitIds: [icu] });
@@ -50,7 +40,6 @@ beforeEach(async () => {
 	({ id } = (await raiseEscalation(therapist, episodeId, { ...CALL, grade: 'medium', threadId })).result);
 	await takeEscalation(as(onWard, 10), id, 5);
 });
-afterAll(() => close());
 
 const as = (person: Person, seconds: number) => contextOf(person, at(seconds));
 const admin = (seconds: number) => as(hospital.people.admin, seconds);

@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { movesFor } from '$lib/domain/escalations/moves';
 import type { Context } from '$lib/server/context';
@@ -16,8 +16,8 @@ import { takeEscalation } from '$lib/server/escalations/take';
 import { LINK_LIFE_MS } from '$lib/server/escalations/tell';
 import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
-import { freshDatabase } from '../support/database';
-import { addPatient, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addPerson, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const INPUT: RaiseInput = {
 	grade: 'high',
@@ -28,13 +28,10 @@ const INPUT: RaiseInput = {
 };
 const DAY = 24 * 3600 * 1000;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let id: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	const { nurse, physician } = hospital.people;
 	for (const [post, userId] of [
 		['nurse', nurse.id],
@@ -49,7 +46,6 @@ beforeEach(async () => {
 	const { episodeId } = await addPatient({ unitId: hospital.units.ward });
 	({ id } = (await raiseEscalation(by('therapist'), episodeId, INPUT)).result);
 });
-afterAll(() => close());
 
 const at = (seconds: number) => hospital.now + seconds * 1000;
 const by = (role: 'therapist' | 'nurse' | 'physician', seconds = 0) =>

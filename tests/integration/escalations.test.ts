@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Post } from '$lib/domain/core/codes';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { db } from '$lib/server/db';
@@ -19,8 +19,8 @@ import { takeByLink } from '$lib/server/escalations/link';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const INPUT: RaiseInput = {
 	grade: 'high',
@@ -31,13 +31,10 @@ const INPUT: RaiseInput = {
 };
 const YEAR = 365 * 24 * 3600 * 1000;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	const { nurse, physician, surgeon } = hospital.people;
 	const posts: [Post, string][] = [
 		['nurse', nurse.id],
@@ -55,7 +52,6 @@ beforeAll(async () => {
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const at = (seconds: number) => hospital.now + seconds * 1000;
 const by = (role: 'therapist' | 'nurse' | 'physician' | 'surgeon', seconds = 0) =>

@@ -1,36 +1,16 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { PersonContext } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { audit, inboundMessages, liveEvents, outbox } from '$lib/server/db/schema';
 import { newId } from '$lib/server/ids';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { settleInbound, settleMessage } from '$lib/server/messages/settle';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import {
-	HOSPITAL_NOW,
-	addPerson,
-	contextOf,
-	makeHospital,
-	newPhone,
-	type Hospital
-} from '../support/hospital';
+import { HOSPITAL_NOW, addPerson, contextOf, newPhone } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addReminder, addVisit, rowOf } from '../support/messages';
 
-let hospital: Hospital;
-let cleanUp: () => void;
-
-beforeAll(async () => {
-	const environment = testEnvironment();
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+const hospital = await openHospital({});
 
 async function failedMessage(state: 'failed' | 'undelivered' | 'delivered', change = {}): Promise<string> {
 	const id = await addReminder(await addVisit(hospital), hospital.patient.id);

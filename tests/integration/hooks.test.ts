@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { and, asc, desc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { VisitState } from '$lib/domain/core/codes';
 import { db } from '$lib/server/db';
 import {
@@ -16,37 +16,16 @@ import {
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, accepted } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
 import { callHook, signedPost } from '../support/hook-server';
-import {
-	HOSPITAL_NOW,
-	addPatient,
-	addPerson,
-	addReferral,
-	makeHospital,
-	newPhone,
-	type Hospital
-} from '../support/hospital';
+import { HOSPITAL_NOW, addPatient, addPerson, addReferral, newPhone } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addReminder, addVisit, rowOf } from '../support/messages';
 
 const PUBLIC_URL = 'https://ropewalk.saltmarsh.example';
 const HOUR = 60 * 60 * 1000;
 const DAY = 24 * HOUR;
 
-let hospital: Hospital;
-let cleanUp: () => void;
-
-beforeAll(async () => {
-	const environment = testEnvironment({ PUBLIC_URL });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+const hospital = await openHospital({ PUBLIC_URL });
 
 const newSid = () => `SM${randomBytes(16).toString('hex')}`;
 const text = (From: string, Body: string, MessageSid = newSid()) => ({

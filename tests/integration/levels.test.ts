@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { sessionBody, type SessionBody } from '$lib/domain/bedside/forms';
 import type { Person } from '$lib/domain/access/actor';
 import { setSenior } from '$lib/server/accounts/manage';
@@ -12,18 +12,15 @@ import { decideLevel } from '$lib/server/levels/actions';
 import { getLevel } from '$lib/server/levels/queries';
 import { refuseToSign, sign } from '$lib/server/levels/sign-off';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, addPerson, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addPerson, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let junior: Person;
 let senior: Person;
 let episodeId: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	const unitIds = Object.values(hospital.units);
 	junior = await addPerson({ role: 'therapist', unitIds });
 	senior = { ...(await addPerson({ role: 'therapist', unitIds })), senior: true };
@@ -32,7 +29,6 @@ beforeEach(async () => {
 	// Level 2, two days after a sternotomy.
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const at = (person: Person, minutes = 0) => contextOf(person, hospital.now + minutes * 60_000);
 const levelNow = () => getLevel(db(), hospital.people.nurse, episodeId);

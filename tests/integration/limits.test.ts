@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { sessionBody } from '$lib/domain/bedside/forms';
 import { ROLES } from '$lib/domain/core/codes';
 import type { WordActivity } from '$lib/domain/limits/forms';
@@ -16,11 +16,10 @@ import { patientLimitsOf, unitLimitsOf } from '$lib/server/limits/queries';
 import { changeUnitLimit, chooseUnitSet } from '$lib/server/limits/unit-actions';
 import { listen, type LoggedEvent } from '$lib/server/live/hub';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let unitId: string;
 let episodeId: string;
 
@@ -29,10 +28,6 @@ const AGREED = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-03-01' };
 const FALL = { set: 'strict', key: 'systolic-fall', value: 15, ...AGREED } as const;
 const OWN = { key: 'systolic-fall', value: 6, reason: 'Tight left main.', untilOn: '2026-03-05' } as const;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	unitId = newId();
 	await db()
@@ -43,7 +38,6 @@ beforeEach(async () => {
 	}
 	({ episodeId } = await addPatient({ unitId, bed: '1' }));
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], minutes = 0) =>
 	contextOf(hospital.people[role], hospital.now + minutes * 60_000);

@@ -1,6 +1,6 @@
 import { setImmediate as turn } from 'node:timers/promises';
 import { sql } from 'drizzle-orm';
-import { afterAll, afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
+import { afterEach, describe, expect, it, vi } from 'vitest';
 import { db, transact } from '$lib/server/db';
 import { liveEvents } from '$lib/server/db/schema';
 import { guardedStream, type Sink } from '$lib/server/live/guarded';
@@ -8,16 +8,9 @@ import { droppedListeners, listen, publish } from '$lib/server/live/hub';
 import { appendLive, canResume, currentCursor, forgetOldEvents, LIVE_HISTORY_MS } from '$lib/server/live/log';
 import { cutReaders, ENDING_MS, MAX_QUEUED_BYTES, ROOM_BYTES, STALLED_MS } from '$lib/server/live/pipe';
 import { mayHear, openStream } from '$lib/server/live/stream';
-import { freshDatabase } from '../support/database';
-import { makeHospital, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
-afterAll(() => close());
+const hospital = await openHospital();
 afterEach(() => vi.useRealTimers());
 
 const stillGood = () => Promise.resolve(true);

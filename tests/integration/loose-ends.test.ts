@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { staleKeys } from '$lib/domain/live/events';
 import type { LooseEnd } from '$lib/domain/loose-ends/loose-ends';
 import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
@@ -11,32 +11,19 @@ import { markSeen, postEntry } from '$lib/server/threads/actions';
 import { listColleagues } from '$lib/server/threads/people';
 import { getThread } from '$lib/server/threads/queries';
 import { bookVisits, cancelVisit, confirmVisit } from '$lib/server/visits/actions';
-import { freshDatabase } from '../support/database';
-import {
-	addPatient,
-	addPerson,
-	addReferral,
-	contextOf,
-	makeHospital,
-	type Hospital
-} from '../support/hospital';
+import { addPatient, addPerson, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 let threadId: string;
 
 type Who = keyof Hospital['people'];
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 	({ threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id }));
 });
-afterAll(() => close());
 
 const as = (role: Who, now = hospital.now) => contextOf(hospital.people[role], now);
 

@@ -1,26 +1,20 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { bewareWords } from '$lib/components/patient/words';
 import { db } from '$lib/server/db';
 import { operations } from '$lib/server/db/schema';
 import { listEpisodes } from '$lib/server/episodes/list';
 import { movePatient } from '$lib/server/episodes/move';
 import { getNameboard } from '$lib/server/episodes/nameboard';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, ZONE, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, ZONE } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const DAY = 24 * 3600 * 1000;
 const board = (now = hospital.now) => getNameboard(db(), hospital.people.nurse, episodeId, now);

@@ -1,32 +1,19 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { MAX_IN_FLIGHT, OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, transient } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addAlert, addEscalation, addReminder, addVisit, rowOf } from '../support/messages';
 
 /** A gateway that hangs holds up nobody else, and routine never holds up a call for help: fault F11. */
 
 const HOUR = 60 * 60 * 1000;
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({ PORT: '4113' });
 let sms: ScriptedChannel;
 let mail: ScriptedChannel;
-
-beforeAll(async () => {
-	const environment = testEnvironment({ PORT: '4113' });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled', leaseOwner: null, leaseUntil: null });

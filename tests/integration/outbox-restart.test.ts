@@ -1,12 +1,11 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { liveEvents, outbox } from '$lib/server/db/schema';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, transient, unknown } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addAlert, addEscalation, addReminder, addVisit, attemptsOf, rowOf } from '../support/messages';
 
 /** What becomes of messages that a killed process was sending: faults F2, F3 and F25. */
@@ -15,21 +14,9 @@ const SECOND = 1_000;
 const MINUTE = 60 * SECOND;
 const HOUR = 60 * MINUTE;
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({ PORT: '4112' });
 let sms: ScriptedChannel;
 let now: number;
-
-beforeAll(async () => {
-	const environment = testEnvironment({ PORT: '4112' });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled', leaseOwner: null, leaseUntil: null });

@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox, smsStatuses } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
@@ -7,34 +7,21 @@ import { smsChannel } from '$lib/server/outbox/channels/sms';
 import { SILENT_AFTER_MS, SilentMessages } from '$lib/server/outbox/silent';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { startGateway, type Gateway } from '../support/gateway';
-import { HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
+import { startGateway } from '../support/gateway';
+import { HOSPITAL_NOW } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addReminder, addVisit, rowOf } from '../support/messages';
 
 /** A text that the gateway accepted and told nothing of afterwards: fault F15. */
 
 const MINUTE = 60 * 1000;
 
-let gateway: Gateway;
-let hospital: Hospital;
-let cleanUp: () => Promise<void>;
+// Nobody listens at the public address, so that every callback is lost.
+const gateway = await startGateway('http://127.0.0.1:4119');
+const hospital = await openHospital(gateway.env);
 let now: number;
 
-beforeAll(async () => {
-	// Nobody listens at the public address, so that every callback is lost.
-	gateway = await startGateway('http://127.0.0.1:4119');
-	const environment = testEnvironment(gateway.env);
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		await gateway.stop();
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+afterAll(() => gateway.stop());
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled' });
 	await gateway.fault('sms', 'ok');

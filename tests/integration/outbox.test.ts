@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import {
 	audit,
@@ -16,9 +16,8 @@ import { linkToken } from '$lib/server/links';
 import type { Channels } from '$lib/server/outbox/channels/channel';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, accepted, permanent, transient, unknown } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { HOSPITAL_NOW, addPatient, addPerson, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW, addPatient, addPerson } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { addAlert, addEscalation, addReminder, addVisit, attemptsOf, rowOf } from '../support/messages';
 
 const SECOND = 1_000;
@@ -26,22 +25,10 @@ const MINUTE = 60 * SECOND;
 const HOUR = 60 * MINUTE;
 const DAY = 24 * HOUR;
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({ PORT: '4300' });
 let sms: ScriptedChannel;
 let mail: ScriptedChannel;
 let now: number;
-
-beforeAll(async () => {
-	const environment = testEnvironment({ PORT: '4300' });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled' });

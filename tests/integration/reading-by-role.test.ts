@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import { CLINICAL_ROLES, type Role } from '$lib/domain/core/codes';
 import { listSessions } from '$lib/server/bedside/queries';
 import { recordSession } from '$lib/server/bedside/actions';
@@ -10,8 +10,8 @@ import { raiseEscalation } from '$lib/server/escalations/raise';
 import { acceptReferral, refer } from '$lib/server/referrals/actions';
 import { postEntry } from '$lib/server/threads/actions';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const ALL = { limit: 200, after: null };
 /** A fall of 20 in the systolic pressure: API.md, rule systolic-fall, stops over 10. */
@@ -34,14 +34,11 @@ const CALL = {
 	request: 'Please come.'
 } as const;
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let threadId: string;
 let clearanceId: string;
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	const { episodeId } = hospital;
 	const as = (role: Role) => contextOf(hospital.people[role]);
 	const asked = { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' } as const;
@@ -59,7 +56,6 @@ beforeAll(async () => {
 	const stairs = { kind: 'stairs', question: 'May she take the stairs?' } as const;
 	clearanceId = (await askClearance(as('therapist'), episodeId, stairs)).result.id;
 });
-afterAll(() => close());
 
 const threadOf = (role: Role) => getThread(db(), hospital.people[role], threadId, ALL);
 const evidenceOf = async (role: Role) =>

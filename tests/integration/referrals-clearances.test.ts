@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import {
 	askClearance,
 	giveClearance,
@@ -15,21 +15,15 @@ import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { acceptReferral, declineReferral, refer, withdrawReferral } from '$lib/server/referrals/actions';
 import { postEntry } from '$lib/server/threads/actions';
 import { getThread } from '$lib/server/threads/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], seconds = 0) =>
 	contextOf(hospital.people[role], hospital.now + seconds * 1000);

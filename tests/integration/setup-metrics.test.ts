@@ -1,23 +1,9 @@
-import { afterAll, beforeAll, expect, it } from 'vitest';
+import { expect, it } from 'vitest';
 import { metricsText } from '$lib/server/metrics';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { makeHospital, type Hospital } from '../support/hospital';
 import { addAlert, addEscalation } from '../support/messages';
+import { openHospital } from '../support/open-hospital';
 
-let hospital: Hospital;
-let cleanUp: () => void;
-
-beforeAll(async () => {
-	const environment = testEnvironment();
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+const hospital = await openHospital({});
 
 it('counts what waits, as it is at the moment of asking', async () => {
 	const before = (await metricsText()).text;

@@ -1,6 +1,6 @@
 import { randomBytes } from 'node:crypto';
 import { and, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { measureSms } from '$lib/domain/messages/sms-length';
@@ -24,19 +24,9 @@ import { linkToken } from '$lib/server/links';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel } from '../support/channels';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
 import { callHook, signedPost } from '../support/hook-server';
-import {
-	HOSPITAL_NOW,
-	addPatient,
-	addPerson,
-	addReferral,
-	contextOf,
-	makeHospital,
-	newPhone,
-	type Hospital
-} from '../support/hospital';
+import { HOSPITAL_NOW, addPatient, addPerson, addReferral, contextOf, newPhone } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 /** Replying TAKE to the text of an escalation, through the signed webhook and out again. */
 
@@ -52,24 +42,12 @@ const INPUT: RaiseInput = {
 	request: 'Please come.'
 };
 
-let hospital: Hospital;
-let cleanUp: () => void;
+const hospital = await openHospital({ PUBLIC_URL });
 let sms: ScriptedChannel;
 /** Each test has a ward and a nurse on cover of its own, so that nobody is sent the calls of another. */
 let ward: string;
 let nurse: Person;
 let phone: string;
-
-beforeAll(async () => {
-	const environment = testEnvironment({ PUBLIC_URL });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = () => {
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
 
 beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled' });

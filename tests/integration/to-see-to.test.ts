@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it } from 'vitest';
 import { eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { db } from '$lib/server/db';
@@ -8,30 +8,19 @@ import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { settleInbound, settleMessage } from '$lib/server/messages/settle';
 import { getFailedMessage, getInboundText } from '$lib/server/messages/to-see-to';
 import { bookVisits, followUpVisit } from '$lib/server/visits/actions';
-import { freshDatabase } from '../support/database';
-import {
-	addReferral,
-	contextOf,
-	HOSPITAL_NOW,
-	makeHospital,
-	newPhone,
-	type Hospital
-} from '../support/hospital';
+import { addReferral, contextOf, HOSPITAL_NOW, newPhone } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const DAY = 24 * 60 * 60 * 1000;
 
-let hospital: Hospital;
-let database: Awaited<ReturnType<typeof freshDatabase>>;
+const hospital = await openHospital();
 let visitId: string;
 
 beforeAll(async () => {
-	database = await freshDatabase();
-	hospital = await makeHospital();
 	const input = { kind: 'single', startsAt: HOSPITAL_NOW + 5 * DAY, minutes: 45, place: 'East Gym' } as const;
 	const { result } = await bookVisits(contextOf(hospital.people.coordinator), hospital.episodeId, input);
 	visitId = result.items[0]?.id ?? '';
 });
-afterAll(() => database.close());
 
 type NewMessage = Partial<typeof outbox.$inferInsert>;
 

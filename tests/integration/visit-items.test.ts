@@ -1,24 +1,17 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { eq } from 'drizzle-orm';
 import { bookVisits } from '$lib/server/visits/actions';
 import { listVisits, visitItemsOf } from '$lib/server/visits/queries';
 import { db } from '$lib/server/db';
 import { inboundMessages, outbox, visits } from '$lib/server/db/schema';
 import { newId } from '$lib/server/ids';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, HOSPITAL_NOW, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, HOSPITAL_NOW } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
 const HOUR = 60 * 60 * 1000;
 const DAY = 24 * HOUR;
 
-let hospital: Hospital;
-let database: Awaited<ReturnType<typeof freshDatabase>>;
-
-beforeAll(async () => {
-	database = await freshDatabase();
-	hospital = await makeHospital();
-});
-afterAll(() => database.close());
+const hospital = await openHospital();
 
 let hours = 0;
 

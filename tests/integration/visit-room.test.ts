@@ -1,20 +1,13 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { BookVisits } from '$lib/domain/visits/forms';
 import { db } from '$lib/server/db';
 import { settings, visits } from '$lib/server/db/schema';
 import { bookVisits, cancelVisit } from '$lib/server/visits/actions';
 import { PLACES_SETTING } from '$lib/server/visits/room';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
-
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
-afterAll(() => close());
+const hospital = await openHospital();
 
 const coordinator = () => contextOf(hospital.people.coordinator);
 const newPatient = async () => (await addPatient({ unitId: hospital.units.ward })).episodeId;

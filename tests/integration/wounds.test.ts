@@ -1,26 +1,20 @@
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { recordSession } from '$lib/server/bedside/actions';
 import { askClearance, giveClearance, holdClearance } from '$lib/server/clearances/actions';
 import { getClearance } from '$lib/server/clearances/queries';
 import { db } from '$lib/server/db';
 import { noteWound } from '$lib/server/wounds/actions';
 import { newestWoundNote } from '$lib/server/wounds/queries';
-import { freshDatabase } from '../support/database';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addPatient, contextOf, type Hospital } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 import { sessionBody } from '../support/session';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let episodeId: string;
 
-beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
-});
 beforeEach(async () => {
 	({ episodeId } = await addPatient({ unitId: hospital.units.ward }));
 });
-afterAll(() => close());
 
 const as = (role: keyof Hospital['people'], seconds = 0) =>
 	contextOf(hospital.people[role], hospital.now + seconds * 1000);

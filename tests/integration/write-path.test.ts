@@ -1,29 +1,25 @@
 import { eq, sql } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { verifyAudit } from '$lib/server/audit/verify';
 import type { PersonContext } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { audit, entries, idempotencyKeys, liveEvents, outbox, settings } from '$lib/server/db/schema';
 import { listen, type LoggedEvent } from '$lib/server/live/hub';
 import { write, type Change } from '$lib/server/write';
-import { freshDatabase } from '../support/database';
-import { addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { addReferral, contextOf } from '../support/hospital';
+import { openHospital } from '../support/open-hospital';
 
-let close: () => void;
-let hospital: Hospital;
+const hospital = await openHospital();
 let threadId: string;
 let context: PersonContext;
 let heard: LoggedEvent[];
 
 beforeAll(async () => {
-	({ close } = await freshDatabase());
-	hospital = await makeHospital();
 	({ threadId } = await addReferral({ episodeId: hospital.episodeId, askedBy: hospital.people.surgeon.id }));
 	context = contextOf(hospital.people.therapist);
 	listen((event) => heard.push(event));
 });
 beforeEach(() => (heard = []));
-afterAll(() => close());
 
 function change(name: string): Change<{ name: string }> {
 	return {
