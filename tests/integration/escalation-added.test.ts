@@ -6,12 +6,8 @@ import { db } from '$lib/server/db';
 import { entries } from '$lib/server/db/schema';
 import { alarmsOf } from '$lib/server/escalations/alarms';
 import { chainJob } from '$lib/server/escalations/chain-job';
-import {
-	confirmPass,
-	informOfEscalation,
-	passEscalation,
-	settleEscalation
-} from '$lib/server/escalations/hold';
+import { informOfEscalation, settleEscalation } from '$lib/server/escalations/end';
+import { confirmPass, passEscalation } from '$lib/server/escalations/pass';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';

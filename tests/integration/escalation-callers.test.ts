@@ -3,7 +3,7 @@ import type { Person } from '$lib/domain/access/actor';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { movesFor } from '$lib/domain/escalations/moves';
 import { db } from '$lib/server/db';
-import { settleEscalation, withdrawEscalation } from '$lib/server/escalations/hold';
+import { settleEscalation, withdrawEscalation } from '$lib/server/escalations/end';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';

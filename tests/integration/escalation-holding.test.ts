@@ -4,13 +4,9 @@ import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
 import { holderJob } from '$lib/server/escalations/holder-job';
-import {
-	arriveAtEscalation,
-	confirmPass,
-	giveEtaOf,
-	passEscalation,
-	settleEscalation
-} from '$lib/server/escalations/hold';
+import { arriveAtEscalation, giveEtaOf } from '$lib/server/escalations/arrive';
+import { settleEscalation } from '$lib/server/escalations/end';
+import { confirmPass, passEscalation } from '$lib/server/escalations/pass';
 import { takeByLink, untakeByLink } from '$lib/server/escalations/link';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';

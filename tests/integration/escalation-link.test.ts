@@ -4,7 +4,7 @@ import type { Context } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { chainJob } from '$lib/server/escalations/chain-job';
 import { holderJob } from '$lib/server/escalations/holder-job';
-import { passEscalation } from '$lib/server/escalations/hold';
+import { passEscalation } from '$lib/server/escalations/pass';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';

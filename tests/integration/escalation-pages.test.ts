@@ -6,7 +6,7 @@ import type { Context } from '$lib/server/context';
 import { db } from '$lib/server/db';
 import { coverShifts, escalationLinks } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
-import { confirmPass, passEscalation } from '$lib/server/escalations/hold';
+import { confirmPass, passEscalation } from '$lib/server/escalations/pass';
 import { phonePage } from '$lib/server/escalations/phone';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';

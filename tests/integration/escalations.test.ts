@@ -12,7 +12,8 @@ import {
 	users
 } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
-import { passEscalation, confirmPass, settleEscalation } from '$lib/server/escalations/hold';
+import { settleEscalation } from '$lib/server/escalations/end';
+import { passEscalation, confirmPass } from '$lib/server/escalations/pass';
 import { getByLink, getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeByLink } from '$lib/server/escalations/link';

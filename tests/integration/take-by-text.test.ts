@@ -16,7 +16,8 @@ import {
 	units,
 	users
 } from '$lib/server/db/schema';
-import { passEscalation, withdrawEscalation } from '$lib/server/escalations/hold';
+import { withdrawEscalation } from '$lib/server/escalations/end';
+import { passEscalation } from '$lib/server/escalations/pass';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';

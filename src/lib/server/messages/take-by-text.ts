@@ -10,7 +10,7 @@ import type { PersonContext } from '../context';
 import type { Reader, Tx } from '../db';
 import { escalationLinks, escalations, outbox, units, users } from '../db/schema';
 import { env } from '../env';
-import { confirm } from '../escalations/hold';
+import { confirm } from '../escalations/pass';
 import { take } from '../escalations/take';
 import { placeOf, type EscalationRow } from '../escalations/tell';
 import { aroundLink } from '../links';

@@ -12,7 +12,8 @@ import { askClearance, giveClearance, holdClearance, withholdClearance } from '.
 import type { PersonContext } from '../../context';
 import { admitPatient } from '../../episodes/actions';
 import { movePatient } from '../../episodes/move';
-import { arriveAtEscalation, settleEscalation } from '../../escalations/hold';
+import { arriveAtEscalation } from '../../escalations/arrive';
+import { settleEscalation } from '../../escalations/end';
 import { raiseEscalation } from '../../escalations/raise';
 import { takeEscalation } from '../../escalations/take';
 import { acceptReferral, closeReferral, declineReferral, refer } from '../../referrals/actions';

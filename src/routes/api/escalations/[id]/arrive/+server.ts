@@ -1,5 +1,5 @@
 import { emptyBody } from '$lib/domain/escalations/forms';
-import { arriveAtEscalation } from '$lib/server/escalations/hold';
+import { arriveAtEscalation } from '$lib/server/escalations/arrive';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

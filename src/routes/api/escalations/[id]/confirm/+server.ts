@@ -1,5 +1,5 @@
 import { emptyBody } from '$lib/domain/escalations/forms';
-import { confirmPass } from '$lib/server/escalations/hold';
+import { confirmPass } from '$lib/server/escalations/pass';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

@@ -1,5 +1,5 @@
 import { etaBody } from '$lib/domain/escalations/forms';
-import { giveEtaOf } from '$lib/server/escalations/hold';
+import { giveEtaOf } from '$lib/server/escalations/arrive';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

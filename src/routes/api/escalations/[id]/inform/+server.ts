@@ -1,5 +1,5 @@
 import { informBody } from '$lib/domain/escalations/forms';
-import { informOfEscalation } from '$lib/server/escalations/hold';
+import { informOfEscalation } from '$lib/server/escalations/end';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

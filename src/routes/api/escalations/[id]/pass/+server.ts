@@ -1,5 +1,5 @@
 import { passBody } from '$lib/domain/escalations/forms';
-import { passEscalation } from '$lib/server/escalations/hold';
+import { passEscalation } from '$lib/server/escalations/pass';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

@@ -1,5 +1,5 @@
 import { settleBody } from '$lib/domain/escalations/forms';
-import { settleEscalation } from '$lib/server/escalations/hold';
+import { settleEscalation } from '$lib/server/escalations/end';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 

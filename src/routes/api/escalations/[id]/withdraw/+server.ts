@@ -1,5 +1,5 @@
 import { reasonBody } from '$lib/domain/clearances/forms';
-import { withdrawEscalation } from '$lib/server/escalations/hold';
+import { withdrawEscalation } from '$lib/server/escalations/end';
 import { writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
 
