@@ -114,7 +114,8 @@ const language: Handle = ({ event, resolve }) => {
 	return isPage ? paraglideMiddleware(event.request, ({ locale }) => spoken(locale)) : spoken(baseLocale);
 };
 
-export const handle = sequence(harden, problems, language, identify, guard);
+/** The language comes last: it waits, and who calls from where must be read before anything waits. */
+export const handle = sequence(harden, problems, identify, guard, language);
 
 /** Expected errors keep their text; anything else is logged under an id and answered without detail. */
 export const handleError: HandleServerError = ({ error: thrown, event, status, message }) => {
