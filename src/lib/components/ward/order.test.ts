@@ -20,6 +20,7 @@ function row(bed: string | null, name: string, level: 1 | 3 | 5, looseEnds: numb
 		phase: 'inpatient',
 		mayDoNow: mayDoNow(level, []),
 		precautions: precautionsOf(null, null, false),
+		nothingByMouth: false,
 		escalation: null
 	} satisfies EpisodeListItem;
 }
@@ -33,15 +34,15 @@ const ROWS = [
 
 describe('inOrder', () => {
 	it.each([
-		[null, 'Ayesha, Bram, Desmond, Orla'],
-		[{ by: 'bed', direction: 'ascending' }, 'Ayesha, Bram, Desmond, Orla'],
-		[{ by: 'bed', direction: 'descending' }, 'Orla, Desmond, Bram, Ayesha'],
+		[null, 'Bram, Desmond, Orla, Ayesha'],
+		[{ by: 'bed', direction: 'ascending' }, 'Bram, Desmond, Orla, Ayesha'],
+		[{ by: 'bed', direction: 'descending' }, 'Ayesha, Orla, Desmond, Bram'],
 		[{ by: 'patient', direction: 'ascending' }, 'Ayesha, Bram, Desmond, Orla'],
 		[{ by: 'patient', direction: 'descending' }, 'Orla, Desmond, Bram, Ayesha'],
-		[{ by: 'level', direction: 'ascending' }, 'Orla, Bram, Ayesha, Desmond'],
-		[{ by: 'level', direction: 'descending' }, 'Ayesha, Desmond, Bram, Orla'],
-		[{ by: 'open', direction: 'descending' }, 'Bram, Desmond, Ayesha, Orla'],
-		[{ by: 'nothing known', direction: 'ascending' }, 'Ayesha, Bram, Desmond, Orla']
+		[{ by: 'level', direction: 'ascending' }, 'Orla, Bram, Desmond, Ayesha'],
+		[{ by: 'level', direction: 'descending' }, 'Desmond, Ayesha, Bram, Orla'],
+		[{ by: 'open', direction: 'descending' }, 'Bram, Desmond, Orla, Ayesha'],
+		[{ by: 'nothing known', direction: 'ascending' }, 'Bram, Desmond, Orla, Ayesha']
 	] as const)('%j: %s', (sort, names) => {
 		const rows = inOrder(ROWS, sort);
 		expect(rows.map(({ patient }) => patient.name).join(', ')).toBe(names);

@@ -7,8 +7,11 @@ const NATURAL = new Intl.Collator(DEFAULT_LOCALE, { numeric: true });
 
 type Compare = (a: EpisodeListItem, b: EpisodeListItem) => number;
 
+/** Who lies in a bed stands before who only comes for visits. */
 const byPlace: Compare = (a, b) =>
-	NATURAL.compare(a.unit, b.unit) || NATURAL.compare(a.bed ?? '', b.bed ?? '');
+	Number(a.bed === null) - Number(b.bed === null) ||
+	NATURAL.compare(a.unit, b.unit) ||
+	NATURAL.compare(a.bed ?? '', b.bed ?? '');
 const byName: Compare = (a, b) => NATURAL.compare(a.patient.name, b.patient.name);
 
 const COMPARE: Record<string, Compare> = {
