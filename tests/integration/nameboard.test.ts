@@ -1,7 +1,10 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
+import { sessionBody } from '$lib/domain/bedside/forms';
 import { bewareWords } from '$lib/components/patient/words';
+import { askClearance, giveClearance } from '$lib/server/clearances/actions';
 import { db } from '$lib/server/db';
+import { recordSession } from '$lib/server/bedside/actions';
 import { operations } from '$lib/server/db/schema';
 import { listEpisodes } from '$lib/server/episodes/list';
 import { movePatient } from '$lib/server/episodes/move';
@@ -61,5 +64,46 @@ describe('an outpatient', () => {
 			precautions: { sternal: true }
 		});
 		expect(await onTheWard()).toMatchObject({ phase: 'outpatient', mayDoNow: null });
+	});
+});
+
+describe('a patient whose breathing tube is on record', () => {
+	const TUBED = {
+		context: {
+			betaBlocked: true,
+			rhythm: 'sinus',
+			sternotomy: true,
+			level: 1,
+			conscious: false,
+			airway: 'tube'
+		},
+		startedAt: '2026-03-02T10:00:00Z',
+		endedAt: '2026-03-02T10:15:00Z',
+		level: 1,
+		before: { hr: 92, sbp: 108, dbp: 58 },
+		during: [],
+		after: { hr: 92, sbp: 108, dbp: 58 },
+		symptoms: [],
+		activities: []
+	} as const;
+	const byMouth = async () => [(await board()).nothingByMouth, (await onTheWard())?.nothingByMouth];
+
+	it('takes nothing by mouth until it is cleared, on the board and on the ward', async () => {
+		const { therapist } = hospital.people;
+		const speech = hospital.people['speech-therapist'];
+		expect(await byMouth()).toEqual([false, false]);
+		await recordSession(contextOf(therapist), episodeId, sessionBody.parse(TUBED));
+		expect(await byMouth()).toEqual([true, true]);
+		const ask = { kind: 'oral-intake', question: 'May she have sips?' } as const;
+		const { result } = await askClearance(contextOf(therapist), episodeId, ask);
+		expect(await byMouth()).toEqual([true, true]);
+		await giveClearance(contextOf(speech), result.id, {});
+		expect(await byMouth()).toEqual([false, false]);
+	});
+
+	it('is not told so at home', async () => {
+		await recordSession(contextOf(hospital.people.therapist), episodeId, sessionBody.parse(TUBED));
+		await movePatient(contextOf(hospital.people.coordinator), episodeId, { unit: 'East Gym' });
+		expect(await byMouth()).toEqual([false, false]);
 	});
 });

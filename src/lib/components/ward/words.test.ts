@@ -23,12 +23,13 @@ describe('wardBeware', () => {
 		[false, []],
 		[null, ['rate-slowing drug: not known']]
 	])('without precautions, drug %s: %j', (betaBlocked, words) => {
-		expect(wardBeware({ precautions: NOTHING, betaBlocked }, READER)).toEqual(words);
+		expect(wardBeware({ precautions: NOTHING, betaBlocked, nothingByMouth: false }, READER)).toEqual(words);
 	});
 
-	it('names precautions before the drug', () => {
+	it('names what may not be taken by mouth before precautions, and those before the drug', () => {
 		const precautions = precautionsOf(STERNOTOMY, null, false);
-		expect(wardBeware({ precautions, betaBlocked: true }, READER)).toEqual([
+		expect(wardBeware({ precautions, betaBlocked: true, nothingByMouth: true }, READER)).toEqual([
+			'Nothing by mouth',
 			'Sternal precautions, end due Sun 26 Apr',
 			'arms to 45°',
 			'rate-slowing drug'
@@ -42,7 +43,7 @@ describe('precautions that nobody knows', () => {
 		['planned', 'Precautions begin with the operation']
 	] as const)('of %s: %s', (basis, words) => {
 		const precautions = { ...NOTHING, basis };
-		expect(wardBeware({ precautions, betaBlocked: false }, READER)).toEqual([words]);
+		expect(wardBeware({ precautions, betaBlocked: false, nothingByMouth: false }, READER)).toEqual([words]);
 	});
 });
 

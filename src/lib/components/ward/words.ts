@@ -2,6 +2,7 @@ import { mayHold } from '$lib/domain/episodes/precautions';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import type { Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
+import { byMouthWords } from '../patient/by-mouth';
 import { bewareWords, dayWords } from '../patient/words';
 
 /** What was operated and how long ago: `Bypass, day 4`. */
@@ -12,13 +13,15 @@ export function procedureWords(
 	return [item.procedure, dayWords(item, reader)].filter(Boolean).join(', ');
 }
 
-/** Precautions and the drug that slows the heart, where there are any; a drug nobody knows of is judged as given. */
+/** That nothing goes by mouth, precautions and the drug that slows the heart, where there are any; a drug nobody knows of is judged as given. */
 export function wardBeware(
-	{ precautions, betaBlocked }: Pick<EpisodeListItem, 'precautions' | 'betaBlocked'>,
+	item: Pick<EpisodeListItem, 'precautions' | 'betaBlocked' | 'nothingByMouth'>,
 	reader: Reader
 ): string[] {
+	const { precautions, betaBlocked } = item;
 	const drug = { true: m.patient_drug_yes, false: null, null: m.patient_drug_unknown }[`${betaBlocked}`];
 	return [
+		...byMouthWords(item),
 		...(mayHold(precautions) ? bewareWords(precautions, reader) : []),
 		...(drug === null ? [] : [drug()])
 	];

@@ -42,6 +42,8 @@ export interface EpisodeListItem {
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;
 	precautions: Precautions;
+	/** Whether nothing may be taken by mouth; false also where nobody has said. */
+	nothingByMouth: boolean;
 	/** The most urgent escalation that is not settled; null also for who may not read any. */
 	escalation: {
 		id: string;
@@ -112,6 +114,8 @@ export interface Nameboard {
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;
 	precautions: Precautions;
+	/** Whether nothing may be taken by mouth; false also where nobody has said. */
+	nothingByMouth: boolean;
 	/** What the unit says about activities in place of the catalogue. */
 	wordings: LocalActivity[];
 	/** What lies over the default limits for this patient; empty for who may not see sessions. */

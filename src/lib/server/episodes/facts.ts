@@ -1,13 +1,14 @@
-import { asc, desc, eq, inArray } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { Level } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
 import { standingDuring } from '$lib/domain/clearances/replay';
 import { isInForce, stateOn } from '$lib/domain/clearances/states';
+import { nothingByMouth } from '$lib/domain/episodes/by-mouth';
 import { mayDoNow, type MayDoNow } from '$lib/domain/episodes/may-do-now';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
 import { precautionsOf, type Precautions } from '$lib/domain/episodes/precautions';
 import type { Reader } from '../db';
-import { clearanceMoves, clearances, operations } from '../db/schema';
+import { bedsideSessions, clearanceMoves, clearances, operations } from '../db/schema';
 import { env } from '../env';
 
 export type Operation = typeof operations.$inferSelect;
@@ -22,6 +23,8 @@ export interface EpisodeFacts {
 	newest: Clearance[];
 	inForce: Clearance[];
 	mayDoNow: MayDoNow;
+	/** Whether nothing may be taken by mouth, as long as the patient is in hospital. */
+	nothingByMouth: boolean;
 	precautions: Precautions;
 }
 
@@ -33,20 +36,21 @@ export function levelsDecide({ phase }: { phase: 'inpatient' | 'outpatient' }, f
 	return phase === 'inpatient' && facts.precautions.basis !== 'planned';
 }
 
-/** Derive the facts of several episodes with two queries. */
+/** Derive the facts of several episodes with three queries. */
 export async function factsOf(
 	db: Reader,
 	episodes: readonly { id: string; level: number }[],
 	now: number
 ): Promise<Map<string, EpisodeFacts>> {
 	const ids = episodes.map((episode) => episode.id);
-	const [allOperations, allClearances] = await Promise.all([
+	const [allOperations, allClearances, tubed] = await Promise.all([
 		db
 			.select()
 			.from(operations)
 			.where(inArray(operations.episodeId, ids))
 			.orderBy(desc(operations.operatedAt)),
-		db.select().from(clearances).where(inArray(clearances.episodeId, ids)).orderBy(desc(clearances.askedAt))
+		db.select().from(clearances).where(inArray(clearances.episodeId, ids)).orderBy(desc(clearances.askedAt)),
+		tubedOf(db, ids)
 	]);
 	return new Map(
 		episodes.map((episode) => [
@@ -55,7 +59,8 @@ export async function factsOf(
 				episode,
 				allOperations.filter((row) => row.episodeId === episode.id),
 				allClearances.filter((row) => row.episodeId === episode.id),
-				now
+				now,
+				tubed.filter((row) => row.episodeId === episode.id)
 			)
 		])
 	);
@@ -109,6 +114,19 @@ export async function factsDuring(
 	return derive(episode, performed, asTheyWere, span.startedAt);
 }
 
+/** After which operations a session found the airway held open by a tube. */
+function tubedOf(db: Reader, episodeIds: string[]) {
+	return db
+		.selectDistinct({ episodeId: bedsideSessions.episodeId, operationId: bedsideSessions.operationId })
+		.from(bedsideSessions)
+		.where(
+			and(
+				inArray(bedsideSessions.episodeId, episodeIds),
+				sql`json_extract(${bedsideSessions.context}, '$.airway') in ('tube', 'tracheostomy')`
+			)
+		);
+}
+
 function movesOf(db: Reader, episodeId: string) {
 	return db
 		.select({
@@ -129,7 +147,8 @@ function derive(
 	episode: { level: number },
 	newestFirst: Operation[],
 	asked: Clearance[],
-	now: number
+	now: number,
+	tubed: { operationId: string | null }[] = []
 ): EpisodeFacts {
 	const { zone } = env().hospital;
 	const operation = newestFirst.find((row) => row.operatedAt <= now) ?? newestFirst.at(-1) ?? null;
@@ -142,6 +161,7 @@ function derive(
 	// Asking again opens no door: until it is decided anew, the last decision stands.
 	const decided = newestOfKind(counting.filter((row) => row.state !== 'asked'));
 	const inForce = newest.filter((row) => isInForce(row, today));
+	const byMouth = newest.find((row) => row.kind === 'oral-intake');
 	const armStage = inForce.find((row) => row.kind === 'arm-stage');
 	return {
 		operation,
@@ -155,6 +175,10 @@ function derive(
 		mayDoNow: mayDoNow(
 			episode.level as Level,
 			decided.map((row) => ({ ...row, state: stateOn(row, today) }))
+		),
+		nothingByMouth: nothingByMouth(
+			byMouth?.state ?? null,
+			tubed.some((row) => row.operationId === (operation?.id ?? null))
 		),
 		precautions: precautionsOf(
 			operation && {

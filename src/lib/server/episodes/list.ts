@@ -9,8 +9,8 @@ import { page, type Page, type PageRequest } from '../http/paging';
 import { countOpenThings } from '../loose-ends/queries';
 import { factsOf, levelsDecide } from './facts';
 
-/** Beds in the order in which people read them: T2 before T10. */
-const ORDER = sql`(${units.name}, length(coalesce(${episodes.bed}, '')), coalesce(${episodes.bed}, ''), ${episodes.id})`;
+/** Who lies in a bed before who only comes for visits, and beds in the order in which people read them: T2 before T10. */
+const ORDER = sql`(${episodes.bed} is null, ${units.name}, length(coalesce(${episodes.bed}, '')), coalesce(${episodes.bed}, ''), ${episodes.id})`;
 
 /**
  * The patients of a person's units, by unit and bed.
@@ -37,6 +37,7 @@ export async function listEpisodes(
 			)
 		)
 		.orderBy(
+			sql`${episodes.bed} is null`,
 			asc(units.name),
 			sql`length(coalesce(${episodes.bed}, ''))`,
 			sql`coalesce(${episodes.bed}, '')`,
@@ -74,6 +75,7 @@ export async function listEpisodes(
 			phase: episode.phase,
 			mayDoNow: derived && levelsDecide(episode, derived) ? derived.mayDoNow : null,
 			precautions: derived?.precautions,
+			nothingByMouth: episode.phase === 'inpatient' && derived?.nothingByMouth === true,
 			// Who may not read calls for help sees none here either.
 			escalation: can(person, 'escalation.read', { unitId: at.id }) ? (calls.get(episode.id) ?? null) : null
 		} as EpisodeListItem;
@@ -87,7 +89,7 @@ export function patientLine(row: typeof patients.$inferSelect) {
 
 /** Where the cursor's episode stands in the order; unknown cursors end the list. */
 function placeOf(episodeId: string) {
-	return sql`select cu.name, length(coalesce(ce.bed, '')), coalesce(ce.bed, ''), ce.id
+	return sql`select ce.bed is null, cu.name, length(coalesce(ce.bed, '')), coalesce(ce.bed, ''), ce.id
 		from episodes ce join units cu on cu.id = ce.unit_id where ce.id = ${episodeId}`;
 }
 

@@ -58,6 +58,7 @@ export async function getNameboard(
 		rhythm: episode.rhythm,
 		mayDoNow: levelsDecide(episode, derived) ? derived.mayDoNow : null,
 		precautions: derived.precautions,
+		nothingByMouth: episode.phase === 'inpatient' && derived.nothingByMouth,
 		levelReached: Math.max(episode.level, episode.levelReached),
 		wordings,
 		limits: layers,
