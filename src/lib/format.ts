@@ -13,6 +13,7 @@ import {
 	localDateOf,
 	localParts
 } from './domain/core/time';
+import { readDate, readTime } from './domain/core/typed-date';
 import type { Instant, LocalDate, LocalParts, Zone } from './domain/core/time';
 
 export const DEFAULT_LOCALE = 'en-IE';
@@ -67,6 +68,22 @@ export function shortDay(date: LocalDate, { zone, now, locale }: Reader): string
 export function longDay(date: LocalDate, locale: string = DEFAULT_LOCALE): string {
 	const words = [weekday(date, 'long', locale), dayOfMonth(date), month(date, 'long', locale)];
 	return `${words.join(' ')} ${date.slice(0, 4)}`;
+}
+
+/** The day that was typed, in the words of `longDay`; null for what is no day. */
+export function typedDay(typed: string, locale?: string): string | null {
+	const date = readDate(typed);
+	return date === null ? null : longDay(date, locale);
+}
+
+/** A day as it is typed, day before month: `5 9 1958`. */
+export function dayToType(date: LocalDate): string {
+	return [date.slice(8), date.slice(5, 7), date.slice(0, 4)].map(Number).join(' ');
+}
+
+/** The time that was typed, by the 24 h clock: `09:30` of `930`; null for what is no time. */
+export function typedTime(typed: string): string | null {
+	return readTime(typed);
 }
 
 /** `Thu 5 Sep 12:31`, with the year when it is not the reader's. */

@@ -83,7 +83,11 @@ describe('giveForm', () => {
 		[{ maxMinutes: 240 }, null],
 		[{ maxMinutes: 241 }, 'Minutes: at most 240.'],
 		[{ maxMinutes: 1.5 }, 'Minutes: a whole number from 1 to 240.'],
-		[{ reviewOn: '2026-02-30' }, 'Review date: a date like 2026-12-14.'],
+		[
+			{ reviewOn: '2026-02-30' },
+			'Review date: “2026-02-30” is no day; write one that exists, such as 14 12 2026.'
+		],
+		[{ reviewOn: '28 2 2026' }, null],
 		[{ reviewOn: '2026-02-28' }, null],
 		[{ note: 'x'.repeat(1000) }, null],
 		[{ note: 'x'.repeat(1001) }, 'Note has at most 1000 characters.'],

@@ -2,7 +2,7 @@
 import { z } from 'zod';
 import { shownMarks, type ClearanceLimits } from '$lib/domain/clearances/forms';
 import type { ClearanceKind } from '$lib/domain/core/codes';
-import { reason, text } from '$lib/domain/core/fields';
+import { reason, text, typedDay } from '$lib/domain/core/fields';
 import { m } from '$lib/i18n/paraglide/messages';
 
 export const LIMIT_CHOICES = ['60', '90', '120', 'one', 'two', 'none'] as const;
@@ -22,7 +22,7 @@ export const giveForm = z.object({
 		.max(240, 'Minutes: at most 240.')
 		.optional(),
 	other: text('Other limit', 200).optional(),
-	reviewOn: z.iso.date('Review date: a date like 2026-12-14.').optional(),
+	reviewOn: typedDay('Review date').optional(),
 	note: text('Note', 1000).optional(),
 	seen,
 	shown

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { bookVisitsBody } from '$lib/domain/visits/forms';
-import { bookingField, emptyDraft, planOf, type BookingDraft } from './booking';
+import { bookingField, emptyDraft, nextDays, planOf, type BookingDraft } from './booking';
 
 const ZONE = 'Europe/Dublin';
 /** A Tuesday, 09:00 in Dublin. */
@@ -25,6 +25,20 @@ describe('a single visit', () => {
 		]);
 		expect(problems).toEqual({});
 		expect(body).toEqual({ startsAt: '2026-03-06T10:00:00.000Z', minutes: 60, place: 'east-gym' });
+	});
+
+	it('is asked for the same whatever way its day and time were typed', () => {
+		expect(plan({ date: '6 3 2026', time: '1000' })).toEqual(plan({}));
+	});
+
+	it('is offered the three days after today', () => {
+		expect(nextDays(NOW, ZONE)).toEqual(['2026-03-04', '2026-03-05', '2026-03-06']);
+	});
+
+	it('names what was typed where it is no day and no time', () => {
+		const { problems } = plan({ date: '32 3 2026', time: '24:00' });
+		expect(problems.date).toContain('“32 3 2026”');
+		expect(problems.time).toContain('“24:00”');
 	});
 
 	it('is an hour earlier in UTC once the clock has changed', () => {

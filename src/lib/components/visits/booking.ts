@@ -6,14 +6,16 @@ import {
 	isLocalDate,
 	isLocalTime,
 	localDateOf,
+	type LocalDate,
 	type Weekday,
 	type Zone
 } from '$lib/domain/core/time';
+import { readDate, readTime } from '$lib/domain/core/typed-date';
 import { planSeries, type PlannedVisit } from '$lib/domain/visits/series';
 import { day } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
-/** What the fields hold; `date` is the day of a single visit, or the day from which a series counts. */
+/** What the fields hold, day and time as they were typed; `date` is the day of a single visit, or the day from which a series counts. */
 export interface BookingDraft {
 	kind: 'single' | 'series';
 	date: string;
@@ -40,7 +42,8 @@ export function emptyDraft(place: string): BookingDraft {
 }
 
 /** Work a draft out in the hospital's wall time, as the server will. */
-export function planOf(draft: BookingDraft, zone: Zone, now: number): BookingPlan {
+export function planOf(typed: BookingDraft, zone: Zone, now: number): BookingPlan {
+	const draft = readDraft(typed);
 	const problems = fieldProblems(draft);
 	const datable = !(['date', 'time', 'weekdays', 'count'] as const).some((field) => problems[field]);
 	const planned = datable ? planSeries(seriesOf(draft), zone) : [];
@@ -52,6 +55,17 @@ export function planOf(draft: BookingDraft, zone: Zone, now: number): BookingPla
 		problems: all,
 		body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned)
 	};
+}
+
+/** The days a visit is booked for most often: the three after today. */
+export function nextDays(now: number, zone: Zone): LocalDate[] {
+	return [1, 2, 3].map((days) => addDays(localDateOf(now, zone), days));
+}
+
+/** The draft with its day and time read; what is none stays as it was typed, and is named in what is wrong. */
+function readDraft(draft: BookingDraft): BookingDraft {
+	const { date, time } = draft;
+	return { ...draft, date: readDate(date) ?? date, time: readTime(time) ?? time };
 }
 
 /** The field that an error of the server is about. */
@@ -72,8 +86,8 @@ const EVERY_DAY = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'] as const;
 function fieldProblems(draft: BookingDraft): BookingProblems {
 	const series = draft.kind === 'series';
 	const checks: [keyof BookingDraft, boolean, () => string][] = [
-		['date', isLocalDate(draft.date), m.visits_problem_date],
-		['time', isLocalTime(draft.time), m.visits_problem_time],
+		['date', isLocalDate(draft.date), () => wrongDay(draft.date)],
+		['time', isLocalTime(draft.time), () => wrongTime(draft.time)],
 		[
 			'minutes',
 			isWhole(draft.minutes, MINUTES_MIN, MINUTES_MAX),
@@ -84,6 +98,14 @@ function fieldProblems(draft: BookingDraft): BookingProblems {
 		['count', !series || isWhole(draft.count, 1, COUNT_MAX), () => m.visits_problem_count({ max: COUNT_MAX })]
 	];
 	return Object.fromEntries(checks.flatMap(([field, right, words]) => (right ? [] : [[field, words()]])));
+}
+
+function wrongDay(typed: string): string {
+	return typed.trim() ? m.visits_problem_date({ typed }) : m.visits_problem_no_date();
+}
+
+function wrongTime(typed: string): string {
+	return typed.trim() ? m.visits_problem_time({ typed }) : m.visits_problem_no_time();
 }
 
 function isWhole(value: number | null, min: number, max: number): boolean {

@@ -1,7 +1,5 @@
 import type { Approach, Rhythm, Sex } from '$lib/domain/core/codes';
 import type { DrugAnswer } from '$lib/domain/episodes/admit-form';
-import { readDate } from '$lib/domain/core/typed-date';
-import { longDay } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
 /** The words of the lists that an admission chooses from. */
@@ -33,10 +31,4 @@ export const DRUG_WORDS: Record<DrugAnswer, () => string> = {
 /** Words as the options of a list, in their order. */
 export function options(words: Record<string, () => string>): { value: string; label: string }[] {
 	return Object.entries(words).map(([value, label]) => ({ value, label: label() }));
-}
-
-/** The day that was typed, in words; null for what is no day. */
-export function typedDay(typed: string): string | null {
-	const date = readDate(typed);
-	return date === null ? null : longDay(date);
 }

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { readDate } from './typed-date';
+import { readDate, readTime } from './typed-date';
 
 describe('readDate', () => {
 	it.each([
@@ -20,5 +20,27 @@ describe('readDate', () => {
 		['', null]
 	])('%j is %j', (typed, date) => {
 		expect(readDate(typed)).toBe(date);
+	});
+});
+
+describe('readTime', () => {
+	it.each([
+		['09:30', '09:30'],
+		['9:30', '09:30'],
+		['9.30', '09:30'],
+		[' 9 30 ', '09:30'],
+		['9h30', '09:30'],
+		['930', '09:30'],
+		['0930', '09:30'],
+		['9', '09:00'],
+		['23:59', '23:59'],
+		['24:00', null],
+		['9:60', null],
+		['9:3', null],
+		['12345', null],
+		['noon', null],
+		['', null]
+	])('%j is %j', (typed, time) => {
+		expect(readTime(typed)).toBe(time);
 	});
 });

@@ -6,7 +6,7 @@ import { z } from 'zod';
 import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
-import { readDate } from '../core/typed-date';
+import { readDate, readTime } from '../core/typed-date';
 import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
 import type { AdmitInput } from './forms';
 
@@ -32,6 +32,11 @@ const known = (list: readonly string[], field: string) =>
 /** What is no day stays as it was typed, so that it can be put right. */
 const typedDay = z.string().transform((typed) => readDate(typed) ?? typed);
 
+const typedTime = z
+	.string()
+	.max(20, 'The time of the operation has at most 20 characters.')
+	.transform((typed) => readTime(typed) ?? typed);
+
 export const admitForm = z
 	.object({
 		name: text("The patient's name", 120).default(''),
@@ -50,7 +55,7 @@ export const admitForm = z
 		procedure: line('The procedure', 120),
 		approach: known(APPROACHES, 'The approach'),
 		operatedOn: typedDay.default(''),
-		operatedTime: line('The time of the operation', 5).transform((typed) => typed.replace(/^\d:/, '0$&')),
+		operatedTime: typedTime.default(''),
 		surgeonId: line('The surgeon', 120),
 		level: chosen(LEVELS.map(String), 'Level: choose 1 to 6.').default('1'),
 		betaBlocked: chosen(DRUG_ANSWERS, 'Rate-slowing drug: choose one.').default('unknown'),

@@ -2,7 +2,7 @@
 import { z } from 'zod';
 import { ACTIVITY_CODES } from '../bedside/activities/codes';
 import { LIMIT_KEYS, SETS } from '../bedside/codes';
-import { reason, text } from '../core/fields';
+import { reason, text, typedDay } from '../core/fields';
 
 const setName = z.enum(SETS, `set is one of ${SETS.join(', ')}.`);
 const key = z.enum(LIMIT_KEYS, 'key is no limit of the response rules.');
@@ -33,9 +33,16 @@ export const setPatientLimitBody = z.strictObject({
 });
 export type SetPatientLimit = z.output<typeof setPatientLimitBody>;
 
+/** As forms post it: the day as it was typed. */
+const agreedForm = { ...agreed, agreedOn: typedDay('Agreed on') };
+
 /** The same as forms post them: a number that is not typed is missing, never nought. */
-export const changeUnitLimitForm = changeUnitLimitBody.extend({ value: value.optional() });
-export const setPatientLimitForm = setPatientLimitBody.extend({ value: value.optional() });
+export const changeUnitLimitForm = changeUnitLimitBody.extend({ value: value.optional(), ...agreedForm });
+export const chooseUnitSetForm = chooseUnitSetBody.extend(agreedForm);
+export const setPatientLimitForm = setPatientLimitBody.extend({
+	value: value.optional(),
+	untilOn: typedDay('The last day')
+});
 
 /** A span of a dose: from and to, both included. */
 const span = (name: string, max: number) =>
@@ -85,8 +92,8 @@ export const wordActivityForm = z.strictObject({
 	howTo: text('howTo', 1600),
 	watch: text('watch', 1600),
 	never: text('never', 1600),
-	...agreed
+	...agreedForm
 });
 export type WordActivityFields = z.output<typeof wordActivityForm>;
 
-export const resetActivityForm = z.strictObject({ code: wordActivityBody.shape.code, ...agreed });
+export const resetActivityForm = z.strictObject({ code: wordActivityBody.shape.code, ...agreedForm });

@@ -3,7 +3,7 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import type { RequestEvent } from '@sveltejs/kit';
 import type { z } from 'zod';
 import { localDateOf } from '$lib/domain/core/time';
-import { changeUnitLimitForm, chooseUnitSetBody } from '$lib/domain/limits/forms';
+import { changeUnitLimitForm, chooseUnitSetForm } from '$lib/domain/limits/forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { listAccounts } from '$lib/server/accounts/list';
 import { env } from '$lib/server/env';
@@ -14,7 +14,7 @@ import { read } from '$lib/server/read';
 import type { Actions, PageServerLoad } from './$types';
 
 type LimitFields = z.output<typeof changeUnitLimitForm>;
-type SetFields = z.output<typeof chooseUnitSetBody>;
+type SetFields = z.output<typeof chooseUnitSetForm>;
 
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => {
@@ -31,7 +31,7 @@ export const load: PageServerLoad = (event) =>
 				id: 'limit',
 				defaults: limit
 			}),
-			set: await superValidate<SetFields, string>(zod4(chooseUnitSetBody), { id: 'set', defaults: set }),
+			set: await superValidate<SetFields, string>(zod4(chooseUnitSetForm), { id: 'set', defaults: set }),
 			keys: { limit: newFormKey(), set: newFormKey() }
 		};
 	});
@@ -47,7 +47,7 @@ export const actions: Actions = {
 	}),
 	set: formAction({
 		id: 'set',
-		schema: chooseUnitSetBody,
+		schema: chooseUnitSetForm,
 		async run(context, fields, event) {
 			const { result } = await chooseUnitSet(context, unitOf(event), fields);
 			return m.limits_changed({ version: result.version });
