@@ -17,6 +17,7 @@ function row(bed: string | null, name: string, level: 1 | 3 | 5, looseEnds: numb
 		level,
 		betaBlocked: null,
 		looseEnds,
+		ends: [],
 		phase: 'inpatient',
 		mayDoNow: mayDoNow(level, []),
 		precautions: precautionsOf(null, null, false),

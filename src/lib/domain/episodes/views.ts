@@ -11,6 +11,7 @@ import type {
 import type { ClearanceLimits } from '../clearances/forms';
 import type { LocalActivity } from '../bedside/activities/local';
 import type { LocalLayers } from '../bedside/limits/layers';
+import type { HangingEnd } from '../loose-ends/hanging';
 import type { MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
 
@@ -38,6 +39,8 @@ export interface EpisodeListItem {
 	betaBlocked: boolean | null;
 	/** How many things are open about this patient. */
 	looseEnds: number;
+	/** What they are, the most urgent first. */
+	ends: HangingEnd[];
 	phase: 'inpatient' | 'outpatient';
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;

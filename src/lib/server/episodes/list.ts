@@ -3,10 +3,11 @@ import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
+import { hangingEnds } from '$lib/domain/loose-ends/hanging';
 import type { Reader } from '../db';
 import { episodes, escalations, patients, units, users } from '../db/schema';
 import { page, type Page, type PageRequest } from '../http/paging';
-import { countOpenThings } from '../loose-ends/queries';
+import { openThings } from '../loose-ends/queries';
 import { factsOf, levelsDecide } from './facts';
 
 /** Who lies in a bed before who only comes for visits, and beds in the order in which people read them: T2 before T10. */
@@ -45,18 +46,19 @@ export async function listEpisodes(
 		)
 		.limit(request.limit + 1);
 	const { items, next } = page(rows, request, (row) => row.episode.id);
-	const [facts, open, calls] = await Promise.all([
+	const [facts, things, calls] = await Promise.all([
 		factsOf(
 			db,
 			items.map((row) => row.episode),
 			now
 		),
-		countOpenThings(db, person.unitIds, now),
+		openThings(db, person.unitIds, now),
 		openEscalations(
 			db,
 			items.map((row) => row.episode.id)
 		)
 	]);
+	const ends = hangingEnds(things, can(person, 'escalation.read'));
 	const lines = items.map(({ episode, patient, unit: at }) => {
 		const derived = facts.get(episode.id);
 		const operation = derived?.operation ?? null;
@@ -71,7 +73,8 @@ export async function listEpisodes(
 			postOpDay: derived?.postOpDay ?? null,
 			level: episode.level,
 			betaBlocked: episode.betaBlocked,
-			looseEnds: open.get(episode.id) ?? 0,
+			looseEnds: ends.get(episode.id)?.length ?? 0,
+			ends: ends.get(episode.id) ?? [],
 			phase: episode.phase,
 			mayDoNow: derived && levelsDecide(episode, derived) ? derived.mayDoNow : null,
 			precautions: derived?.precautions,

@@ -29,21 +29,6 @@ export async function looseEndsOf(db: Reader, person: Person, now: number): Prom
 	return { mine: pick('mine'), theirs: pick('theirs') };
 }
 
-/** How many things are open about each episode, by episode id. */
-export async function countOpenThings(
-	db: Reader,
-	unitIds: readonly string[],
-	now: number
-): Promise<Map<string, number>> {
-	const counts = new Map<string, number>();
-	for (const { episodeId } of await openThings(db, unitIds, now)) {
-		if (episodeId) {
-			counts.set(episodeId, (counts.get(episodeId) ?? 0) + 1);
-		}
-	}
-	return counts;
-}
-
 function toLooseEnd(thing: OpenThing): LooseEnd {
 	return {
 		kind: thing.kind,
