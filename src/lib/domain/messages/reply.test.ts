@@ -18,6 +18,10 @@ describe('readPatientReply', () => {
 		'I’ll be there',
 		'I will come',
 		'confirmed',
+		'SÍ',
+		'si, gracias',
+		'Confirmo',
+		'Vale',
 		'👍',
 		'👍🏽',
 		'yes\n'
@@ -35,6 +39,8 @@ describe('readPatientReply', () => {
 		"can't come",
 		'Cannot make it',
 		'not coming',
+		'No puedo ir',
+		'Lo siento, no puedo',
 		'👎'
 	])('%j is no', (text) => {
 		expect(readPatientReply(text)).toBe('no');
@@ -42,6 +48,8 @@ describe('readPatientReply', () => {
 
 	it.each([
 		' Stop. ',
+		'BAJA',
+		'No más mensajes',
 		'STOP',
 		'STOP PLEASE',
 		'stop!!!',

@@ -3,7 +3,8 @@
  * the known ways to say it: 'don't stop my tablets' and 'yes but not at ten' go to a person.
  *
  * The words that end texts are those of the United States' rule of 2024 (stop, quit, end, revoke, opt out,
- * cancel, unsubscribe; any reasonable wording counts) and those that gateways obey by themselves.
+ * cancel, unsubscribe; any reasonable wording counts) and those that gateways obey by themselves. Whatever language
+ * patients are written to in, they may answer in any that the texts have.
  */
 export const PATIENT_REPLIES = ['yes', 'no', 'stop', 'start', 'help', 'other'] as const;
 export type PatientReply = (typeof PATIENT_REPLIES)[number];
@@ -20,10 +21,17 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'unsubscribe',
 		'opt out',
 		'optout',
-		'remove me'
+		'remove me',
+		'baja',
+		'darme de baja',
+		'parar',
+		'alto',
+		'no mas',
+		'no mas textos',
+		'no mas mensajes'
 	],
-	start: ['start', 'unstop', 'resume', 'subscribe', 'opt in', 'optin'],
-	help: ['help', 'info'],
+	start: ['start', 'unstop', 'resume', 'subscribe', 'opt in', 'optin', 'alta', 'empezar', 'reanudar'],
+	help: ['help', 'info', 'ayuda'],
 	yes: [
 		'yes',
 		'y',
@@ -43,7 +51,19 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'will come',
 		'will be there',
 		'see you then',
-		'see you there'
+		'see you there',
+		'si',
+		'vale',
+		'de acuerdo',
+		'confirmo',
+		'confirmado',
+		'alli estare',
+		'ahi estare',
+		'voy',
+		'ire',
+		'si voy',
+		'si ire',
+		'si puedo'
 	],
 	no: [
 		'no',
@@ -63,7 +83,14 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'will not come',
 		'wont come',
 		'wont be there',
-		'will not be there'
+		'will not be there',
+		'no puedo',
+		'no puedo ir',
+		'no puedo venir',
+		'no podre ir',
+		'no voy',
+		'no ire',
+		'no asistire'
 	]
 };
 
@@ -79,7 +106,8 @@ export function gatewayStops(text: string): boolean {
 }
 
 /** Said to be polite, or before the answer: it changes nothing. */
-const POLITE = /\b(please|pls|plz|thanks|thank you|thx|ta|cheers|sorry|hello|hi|dear|sir|madam)\b/g;
+const POLITE =
+	/\b(please|pls|plz|thanks|thank you|thx|ta|cheers|sorry|hello|hi|dear|sir|madam|gracias|muchas|por favor|hola|buenos dias|buenas tardes|perdon|lo siento)\b/g;
 /** What somebody wants to end: 'stop sending me these messages' is 'stop'. */
 const ABOUT_TEXTS =
 	/\b(to|sending|send|getting|texting|messaging|texts?|messages?|sms|reminders?|me|my|us|the|these|this|those|of|from|your|list|now|any|it)\b/g;

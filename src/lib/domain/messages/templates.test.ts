@@ -5,10 +5,11 @@ import { isGsm7 } from './gsm7';
 import { measureSms } from './sms-length';
 import { PATIENT_SMS, SMS, STAFF_SMS, mailText, smsText } from './templates';
 import type { SmsTemplate } from './templates';
-import { dayAndTime, messageLanguage, safeName, shortened } from './templates/wording';
+import { dayAndTime, MESSAGE_LANGUAGES, messageLanguage, safeName, shortened } from './templates/wording';
 
 const LINK = 'http://127.0.0.1:3000/t/q7Zr2LxV0aYd8KcM3nTfPw';
 const BEDSIDE = { unit: 'Heron Unit', bed: '4', grade: 'high', link: LINK } as const;
+const PAGE = 'http://127.0.0.1:3000/p/q7Zr2LxV0aYd8KcM3nTfPw';
 /** In Dublin 14:05, because summer time has begun. */
 const SINCE = { since: Date.parse('2025-03-31T13:05:00Z'), zone: 'Europe/Dublin' };
 const VISIT = {
@@ -89,6 +90,16 @@ const TEXTS: [SmsTemplate, string, string][] = [
 		'Saltmarsh General: your visit is Fri 28 Mar 10:00, East Gym. Reply YES or NO. Questions: +353 1 555 0100. STOP ends texts.'
 	],
 	[
+		'visit-moved',
+		smsText('visit-moved', VISIT),
+		'Saltmarsh General: your visit is MOVED to Fri 28 Mar 10:00, East Gym. Reply YES or NO. Questions: +353 1 555 0100. STOP ends texts.'
+	],
+	[
+		'visit-cancelled',
+		smsText('visit-cancelled', VISIT),
+		'Saltmarsh General: your visit Fri 28 Mar 10:00 is cancelled. Please do not come. Questions: +353 1 555 0100.'
+	],
+	[
 		'visit-confirmed',
 		smsText('visit-confirmed', VISIT),
 		'Saltmarsh General: thank you, see you Fri 28 Mar 10:00, East Gym. To change it call +353 1 555 0100.'
@@ -97,11 +108,6 @@ const TEXTS: [SmsTemplate, string, string][] = [
 		'visit-declined',
 		smsText('visit-declined', VISIT),
 		'Saltmarsh General: thank you, Fri 28 Mar 10:00 is cancelled. We will call about another time, or call +353 1 555 0100.'
-	],
-	[
-		'visit-cancelled',
-		smsText('visit-cancelled', VISIT),
-		'Saltmarsh General: your visit Fri 28 Mar 10:00 is cancelled. Please do not come. Questions: +353 1 555 0100.'
 	],
 	[
 		'no-visit-open',
@@ -127,6 +133,56 @@ const TEXTS: [SmsTemplate, string, string][] = [
 		'texts-help',
 		smsText('texts-help', VISIT),
 		'Saltmarsh General: Reply YES, NO, or STOP to end texts. Questions: +353 1 555 0100. In an emergency call 112.'
+	],
+	[
+		'page-link',
+		smsText('page-link', { ...VISIT, link: PAGE }),
+		`Saltmarsh General: your visits: ${PAGE} For you alone. Help: +353 1 555 0100. STOP ends texts.`
+	]
+];
+
+/** The texts to patients in Spanish; accents that the alphabet of texts lacks are left out. */
+const SPANISH: [keyof typeof PATIENT_SMS, string][] = [
+	[
+		'visit-reminder',
+		'Saltmarsh General: su cita es vie 28 mar 10:00, East Gym. Responda SI o NO. Preguntas: +353 1 555 0100. STOP: no mas textos.'
+	],
+	[
+		'visit-moved',
+		'Saltmarsh General: su cita CAMBIA a vie 28 mar 10:00, East Gym. Responda SI o NO. Preguntas: +353 1 555 0100. STOP: no mas textos.'
+	],
+	[
+		'visit-cancelled',
+		'Saltmarsh General: su cita vie 28 mar 10:00 se ha anulado. No venga, por favor. Preguntas: +353 1 555 0100.'
+	],
+	[
+		'visit-confirmed',
+		'Saltmarsh General: gracias, le esperamos vie 28 mar 10:00, East Gym. Para cambiarla llame al +353 1 555 0100.'
+	],
+	[
+		'visit-declined',
+		'Saltmarsh General: gracias, vie 28 mar 10:00 queda anulada. Le llamaremos para otra hora, o llame al +353 1 555 0100.'
+	],
+	['no-visit-open', 'Saltmarsh General: ninguna cita espera su respuesta. Preguntas: +353 1 555 0100.'],
+	[
+		'person-reads',
+		'Saltmarsh General: gracias. Una persona lo leera, pero no enseguida. Antes: +353 1 555 0100. Si es una emergencia llame al 112.'
+	],
+	[
+		'texts-stopped',
+		'Saltmarsh General: no recibira mas textos. Con START vuelven. Preguntas: +353 1 555 0100.'
+	],
+	[
+		'texts-started',
+		'Saltmarsh General: los textos sobre sus citas vuelven a llegar. STOP los para. Preguntas: +353 1 555 0100.'
+	],
+	[
+		'texts-help',
+		'Saltmarsh General: Responda SI, NO o STOP. Preguntas: +353 1 555 0100. Si es una emergencia llame al 112.'
+	],
+	[
+		'page-link',
+		`Saltmarsh General: sus citas http://127.0.0.1:3000/p/q7Zr2LxV0aYd8KcM3nTfPw Solo para usted. Tel. +353 1 555 0100. STOP: no mas.`
 	]
 ];
 
@@ -138,6 +194,17 @@ describe('texts', () => {
 
 	it('the table has every template', () => {
 		expect(TEXTS.map(([template]) => template)).toEqual(Object.keys(SMS));
+		expect(SPANISH.map(([template]) => template)).toEqual(Object.keys(PATIENT_SMS));
+	});
+
+	it.each(SPANISH)('%s in Spanish', (template, expected) => {
+		const text = smsText(template, { ...VISIT, confirmed: false, link: PAGE }, 'es');
+		expect(text).toBe(expected);
+		expect(measureSms(text)).toMatchObject({ encoding: 'gsm7', segments: 1 });
+	});
+
+	it('staff are written to in the language of the hospital, whatever theirs is', () => {
+		expect(smsText('may-not-take', {}, 'es')).toBe(smsText('may-not-take', {}));
 	});
 
 	it('without bed or code', () => {
@@ -187,13 +254,16 @@ describe('names that a hospital chooses', () => {
 				place: '[East Gym behind the second lift, ground floor, through the yellow doors at the end]',
 				phone: '+353 (0)1 555 0100 0123',
 				startsAt: Date.parse('2025-09-24T21:50:00Z'),
-				confirmed: true
+				confirmed: true,
+				link: 'https://ropewalk.hospital.saltmarsh-county.example/p/q7Zr2LxV0aYd8KcM3nTfPw'
 			};
-			const text = smsText(template, fields);
-			expect(measureSms(text).segments).toBe(1);
-			expect(isGsm7(text)).toBe(true);
-			expect(text).toContain('The Old Harbour');
-			expect(text).toContain('+353015550100');
+			for (const language of MESSAGE_LANGUAGES) {
+				const text = smsText(template, fields, language);
+				expect(measureSms(text).segments).toBe(1);
+				expect(isGsm7(text)).toBe(true);
+				expect(text).toContain('The Old');
+				expect(text).toContain('+353015550100');
+			}
 		}
 	);
 });
@@ -241,6 +311,61 @@ describe('mails', () => {
 	});
 });
 
+describe('mails to patients', () => {
+	it.each([
+		['visit-booked', 'en', 'Saltmarsh General: your visit', 'Your visit is Fri 28 Mar 10:00, East Gym.'],
+		['visit-booked', 'es', 'Saltmarsh General: su cita', 'Su cita es vie 28 mar 10:00, East Gym.'],
+		[
+			'series-booked',
+			'en',
+			'Saltmarsh General: your visits',
+			'36 visits are booked for you. Their days and times are in the file.'
+		],
+		[
+			'series-booked',
+			'es',
+			'Saltmarsh General: sus citas',
+			'Tiene 36 citas. Los días y las horas están en el archivo.'
+		],
+		[
+			'visit-moved',
+			'en',
+			'Saltmarsh General: your visit has moved',
+			'Your visit is now Fri 28 Mar 10:00, East Gym.'
+		],
+		[
+			'visit-moved',
+			'es',
+			'Saltmarsh General: su cita cambia',
+			'Su cita es ahora vie 28 mar 10:00, East Gym.'
+		],
+		[
+			'visit-cancelled',
+			'en',
+			'Saltmarsh General: your visit is cancelled',
+			'Your visit Fri 28 Mar 10:00, East Gym is cancelled.'
+		],
+		[
+			'visit-cancelled',
+			'es',
+			'Saltmarsh General: su cita se ha anulado',
+			'Su cita vie 28 mar 10:00, East Gym se ha anulado.'
+		]
+	] as const)('%s in %s', (template, language, subject, first) => {
+		const mail = mailText(template, { ...VISIT, count: 36 }, language);
+		expect(mail.subject).toBe(subject);
+		expect(mail.text.split('\n')[0]).toBe(first);
+		expect(mail.text).toContain('+353 1 555 0100');
+		expect(deniedWords(`${mail.subject} ${mail.text}`)).toEqual([]);
+	});
+
+	it('with the link of the page, which is for the patient alone', () => {
+		const mail = mailText('page-link', { ...VISIT, link: PAGE });
+		expect(mail.subject).toBe('Saltmarsh General: your visits');
+		expect(mail.text).toContain(`\n\n${PAGE}\n\n`);
+	});
+});
+
 describe('the small parts', () => {
 	it.each([
 		['2025-03-28T10:00:00Z', 'Europe/Dublin', 'Fri 28 Mar 10:00'],
@@ -255,6 +380,7 @@ describe('the small parts', () => {
 		['en', 'en'],
 		['en-IE', 'en'],
 		['EN_gb', 'en'],
+		['es-ES', 'es'],
 		['pl', 'en'],
 		['', 'en'],
 		[null, 'en']

@@ -4,10 +4,12 @@
  */
 import * as escalations from './templates/escalation';
 import * as mails from './templates/mail';
+import * as pages from './templates/page';
+import * as replies from './templates/reply';
 import * as visits from './templates/visit';
 import { messageLanguage } from './templates/wording';
 import type { MailText } from './templates/mail';
-import type { Wording } from './templates/wording';
+import type { MessageLanguage, StaffWording } from './templates/wording';
 
 /** Texts to staff may name unit and bed; texts to patients may not. */
 export const STAFF_SMS = {
@@ -28,26 +30,40 @@ export const STAFF_SMS = {
 
 export const PATIENT_SMS = {
 	'visit-reminder': visits.visitReminder,
-	'visit-confirmed': visits.visitConfirmed,
-	'visit-declined': visits.visitDeclined,
+	'visit-moved': visits.visitMoved,
 	'visit-cancelled': visits.visitCancelled,
-	'no-visit-open': visits.noVisitOpen,
-	'person-reads': visits.personReads,
-	'texts-stopped': visits.textsStopped,
-	'texts-started': visits.textsStarted,
-	'texts-help': visits.textsHelp
+	'visit-confirmed': replies.visitConfirmed,
+	'visit-declined': replies.visitDeclined,
+	'no-visit-open': replies.noVisitOpen,
+	'person-reads': replies.personReads,
+	'texts-stopped': replies.textsStopped,
+	'texts-started': replies.textsStarted,
+	'texts-help': replies.textsHelp,
+	'page-link': pages.pageLink
 };
 
-export const MAILS = {
+export const STAFF_MAILS = {
 	referrer: mails.referrerMail,
+	summary: mails.summaryMail,
 	invitation: mails.invitationMail
 };
+
+export const PATIENT_MAILS = {
+	'visit-booked': mails.visitBookedMail,
+	'series-booked': mails.seriesBookedMail,
+	'visit-moved': mails.visitMovedMail,
+	'visit-cancelled': mails.visitCancelledMail,
+	'page-link': pages.pageLinkMail
+};
+export const MAILS = { ...STAFF_MAILS, ...PATIENT_MAILS };
 
 export const SMS = { ...STAFF_SMS, ...PATIENT_SMS };
 export type SmsTemplate = keyof typeof SMS;
 export type MailTemplate = keyof typeof MAILS;
 
-type FieldsOf<T> = T extends Wording<infer Fields, string | MailText> ? Fields : never;
+type AnyWording<Fields, Text> = StaffWording<Fields, Text> &
+	Partial<Record<MessageLanguage, (fields: Fields) => Text>>;
+type FieldsOf<T> = T extends StaffWording<infer Fields, string | MailText> ? Fields : never;
 /** What a template has to be given. */
 export type SmsFields<T extends SmsTemplate> = FieldsOf<(typeof SMS)[T]>;
 export type MailFields<T extends MailTemplate> = FieldsOf<(typeof MAILS)[T]>;
@@ -58,8 +74,8 @@ export function smsText<T extends SmsTemplate>(
 	fields: SmsFields<T>,
 	language: string | null = null
 ): string {
-	const wording = SMS[template] as Wording<SmsFields<T>>;
-	return wording[messageLanguage(language)](fields);
+	const wording = SMS[template] as AnyWording<SmsFields<T>, string>;
+	return (wording[messageLanguage(language)] ?? wording.en)(fields);
 }
 
 /** Subject and text of a mail, in the receiver's language where it is known, else in English. */
@@ -68,5 +84,6 @@ export function mailText<T extends MailTemplate>(
 	fields: MailFields<T>,
 	language: string | null = null
 ): MailText {
-	return (MAILS[template] as Wording<MailFields<T>, MailText>)[messageLanguage(language)](fields);
+	const wording = MAILS[template] as AnyWording<MailFields<T>, MailText>;
+	return (wording[messageLanguage(language)] ?? wording.en)(fields);
 }

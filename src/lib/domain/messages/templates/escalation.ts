@@ -4,7 +4,7 @@ import { localParts } from '../../core/time';
 import type { Instant, Zone } from '../../core/time';
 import { toGsm7 } from '../gsm7';
 import { GRADE_WORDS, PRODUCT, fitted } from './wording';
-import type { MessageLanguage, Wording } from './wording';
+import type { StaffWording } from './wording';
 
 /** Which bed it is about, and how urgent. */
 export interface PlaceFields {
@@ -39,101 +39,99 @@ export interface TakenFields extends PlaceFields {
 export interface HeldFields extends EarlierFields, TakenFields {}
 
 /** Somebody is needed. */
-export const escalation: Wording<EscalationFields> = {
+export const escalation: StaffWording<EscalationFields> = {
 	en: (fields) => {
 		const how = fields.code === null ? '' : ` or reply TAKE ${fields.code}`;
-		return withPlace(fields, 'en', (place) => `${place}. To take it open ${fields.link}${how}`);
+		return withPlace(fields, (place) => `${place}. To take it open ${fields.link}${how}`);
 	}
 };
 
 /** To those who were told: somebody has it, by role. There is nothing to open. */
-export const escalationTaken: Wording<TakenFields> = {
+export const escalationTaken: StaffWording<TakenFields> = {
 	en: (fields) =>
-		withPlace(fields, 'en', (place) => {
-			return `${place}: ${HOLDER_WORDS.en[fields.holder].toLowerCase()} has it. You need do nothing.`;
+		withPlace(fields, (place) => {
+			return `${place}: ${HOLDER_WORDS[fields.holder].toLowerCase()} has it. You need do nothing.`;
 		})
 };
 
 /** To the holder who is not at the bedside in time. */
-export const holderAsked: Wording<BedsideFields> = {
+export const holderAsked: StaffWording<BedsideFields> = {
 	en: (fields) =>
-		withPlace(fields, 'en', (place) => {
+		withPlace(fields, (place) => {
 			return `${place}: are you there? Else others are told. ${fields.link}`;
 		})
 };
 
 /** Answer to TAKE: it is yours. */
-export const tookIt: Wording<BedsideFields> = {
-	en: (fields) => withPlace(fields, 'en', (place) => `${place}: it is yours. ${fields.link}`)
+export const tookIt: StaffWording<BedsideFields> = {
+	en: (fields) => withPlace(fields, (place) => `${place}: it is yours. ${fields.link}`)
 };
 
 /** Answer to TAKE: somebody was first. */
-export const takenBefore: Wording<HeldFields> = {
+export const takenBefore: StaffWording<HeldFields> = {
 	en: (fields) =>
-		withPlace(fields, 'en', (place) => {
-			const who = HOLDER_WORDS.en[fields.holder];
+		withPlace(fields, (place) => {
+			const who = HOLDER_WORDS[fields.holder];
 			return `${place}: NOT yours. ${who} has it since ${clock(fields)}. Nothing is asked of you now.`;
 		})
 };
 
 /** Answer to TAKE: settled or withdrawn. */
-export const overBefore: Wording<EarlierFields> = {
+export const overBefore: StaffWording<EarlierFields> = {
 	en: (fields) =>
-		withPlace(fields, 'en', (place) => {
+		withPlace(fields, (place) => {
 			return `${place}: NOT taken, it is over since ${clock(fields)}. Nothing is asked of you now.`;
 		})
 };
 
 /** Answer to TAKE by a person whose role takes no calls. */
-export const mayNotTake: Wording<Record<never, never>> = {
+export const mayNotTake: StaffWording<Record<never, never>> = {
 	en: () => `${PRODUCT}: NOT taken. Your account may not take calls. The call goes on to others.`
 };
 
 /** Answer to TAKE with a code that no call of theirs has. What they may not see is answered like what is not there. */
-export const unknownCode: Wording<{ readonly code: string }> = {
+export const unknownCode: StaffWording<{ readonly code: string }> = {
 	en: ({ code }) =>
 		`${PRODUCT}: NOT taken. No call that you may take has the code ${code}. Look at the code again, or open the link of the call.`
 };
 
 /** Answer to TAKE alone, when several calls wait. */
-export const whichOne: Wording<Record<never, never>> = {
+export const whichOne: StaffWording<Record<never, never>> = {
 	en: () =>
 		`${PRODUCT}: NOT taken. Several calls were sent to you. Reply TAKE and the code of one, or open its link.`
 };
 
 /** Answer to TAKE alone, when none waits. */
-export const noneOpen: Wording<Record<never, never>> = {
+export const noneOpen: StaffWording<Record<never, never>> = {
 	en: () => `${PRODUCT}: NOT taken. No call that was sent to you is waiting. Sign in to see all of them.`
 };
 
 /** Answer to any other text of staff. Nothing has been taken and nobody reads it, and the text must say so. */
-export const staffUnclear: Wording<{ readonly code: string | null }> = {
+export const staffUnclear: StaffWording<{ readonly code: string | null }> = {
 	en: ({ code }) =>
 		`${PRODUCT}: NOT taken, and nobody reads this. To take a call reply TAKE ${code ?? 'and its code'}, or open its link.`
 };
 
 /** Answer to a number that is on record for several people: whose reply it was cannot be told. */
-export const sharedNumber: Wording<Record<never, never>> = {
+export const sharedNumber: StaffWording<Record<never, never>> = {
 	en: () =>
 		`${PRODUCT}: NOT taken. This number is on record for several people. Open the link of the call, or sign in.`
 };
 
 /** Answer to TAKE from a number that nobody of staff has. */
-export const unknownNumber: Wording<Record<never, never>> = {
+export const unknownNumber: StaffWording<Record<never, never>> = {
 	en: () => `${PRODUCT}: NOT taken. This number is on record for nobody who takes calls. Sign in to take it.`
 };
 
 /** 'Surgeon' would tell what kind of ward it is. */
-const HOLDER_WORDS: Record<MessageLanguage, Record<Role, string>> = {
-	en: {
-		surgeon: 'A doctor',
-		physician: 'A doctor',
-		nurse: 'A nurse',
-		therapist: 'A colleague',
-		'speech-therapist': 'A colleague',
-		coordinator: 'A colleague',
-		admin: 'A colleague'
-	}
+const HOLDER_WORDS: Record<Role, string> = {
+	surgeon: 'A doctor',
+	physician: 'A doctor',
+	nurse: 'A nurse',
+	therapist: 'A colleague',
+	'speech-therapist': 'A colleague',
+	coordinator: 'A colleague',
+	admin: 'A colleague'
 };
 
 function clock({ since, zone }: EarlierFields): string {
@@ -141,17 +139,7 @@ function clock({ since, zone }: EarlierFields): string {
 }
 
 /** Product, grade, unit and bed, then the rest; a long unit name is cut so that it stays one part. */
-function withPlace(
-	{ unit, bed, grade }: PlaceFields,
-	language: MessageLanguage,
-	write: (place: string) => string
-): string {
-	const where = bed === null ? '' : `, ${BED_WORDS[language](toGsm7(bed))}`;
-	return fitted(
-		(_, name) => write(`${PRODUCT} ${GRADE_WORDS[language][grade]}: ${name}${where}`),
-		'',
-		toGsm7(unit)
-	);
+function withPlace({ unit, bed, grade }: PlaceFields, write: (place: string) => string): string {
+	const where = bed === null ? '' : `, bed ${toGsm7(bed)}`;
+	return fitted((_, name) => write(`${PRODUCT} ${GRADE_WORDS[grade]}: ${name}${where}`), '', toGsm7(unit));
 }
-
-const BED_WORDS: Record<MessageLanguage, (bed: string) => string> = { en: (bed) => `bed ${bed}` };

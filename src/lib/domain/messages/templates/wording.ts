@@ -8,12 +8,14 @@ import { isOneSegment, measureSms } from '../sms-length';
 
 export const PRODUCT = 'Ropewalk';
 
-/** A second language adds its code here, and the compiler then asks for its wording in every template. */
-export const MESSAGE_LANGUAGES = ['en'] as const;
+/** A further language adds its code here, and the compiler then asks for its wording in every text to patients. */
+export const MESSAGE_LANGUAGES = ['en', 'es'] as const;
 export type MessageLanguage = (typeof MESSAGE_LANGUAGES)[number];
 
-/** The wording of one template: all its languages side by side. */
+/** The wording of a text to patients: all languages side by side, so that none is forgotten. */
 export type Wording<Fields, Text = string> = Record<MessageLanguage, (fields: Fields) => Text>;
+/** The wording of a text to staff, who are written to in the hospital's own language. */
+export type StaffWording<Fields, Text = string> = { readonly en: (fields: Fields) => Text };
 
 /** The language to write to somebody in; English where theirs is not there. `en-IE` counts as `en`. */
 export function messageLanguage(language: string | null): MessageLanguage {
@@ -21,15 +23,16 @@ export function messageLanguage(language: string | null): MessageLanguage {
 	return MESSAGE_LANGUAGES.find((known) => known === wanted) ?? 'en';
 }
 
-export const GRADE_WORDS: Record<MessageLanguage, Record<Grade, string>> = {
-	en: { high: 'HIGH', medium: 'MEDIUM', low: 'LOW' }
-};
+export const GRADE_WORDS: Record<Grade, string> = { high: 'HIGH', medium: 'MEDIUM', low: 'LOW' };
 
+/** Without the accents that the alphabet of texts lacks. */
 const WEEKDAY_WORDS: Record<MessageLanguage, readonly string[]> = {
-	en: ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun']
+	en: ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun'],
+	es: ['lun', 'mar', 'mie', 'jue', 'vie', 'sab', 'dom']
 };
 const MONTH_WORDS: Record<MessageLanguage, readonly string[]> = {
-	en: ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
+	en: ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'],
+	es: ['ene', 'feb', 'mar', 'abr', 'may', 'jun', 'jul', 'ago', 'sep', 'oct', 'nov', 'dic']
 };
 
 /** `Fri 28 Mar 10:00`, in the zone of the place one has to come to. */
