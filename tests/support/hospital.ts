@@ -119,6 +119,9 @@ export interface NewPatient {
 	zone?: string;
 	smsConsent?: boolean;
 	smsOptedOutAt?: number | null;
+	/** Nobody has one where left out; whoever has one consents to mails. */
+	email?: string;
+	language?: string;
 	/** Two days before `now` where left out. */
 	operatedAt?: number;
 }
@@ -141,10 +144,12 @@ export async function addPatient(
 			birthDate: '1958-09-05',
 			sex: 'female',
 			phone,
-			language: 'en',
+			language: given.language ?? 'en',
 			zone: given.zone ?? ZONE,
 			smsConsent: given.smsConsent ?? true,
 			smsOptedOutAt: given.smsOptedOutAt ?? null,
+			email: given.email ?? null,
+			mailConsent: given.email !== undefined,
 			createdAt: operatedAt
 		});
 	await db().insert(episodes).values({

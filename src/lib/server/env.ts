@@ -70,6 +70,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		linkSecret: e.LINK_SECRET ?? null,
 		sms: smsGateway(e),
 		mail: mailGateway(e),
+		/** Who mails and calendar files come from, also where no mail server is set up. */
+		mailFrom: e.MAIL_FROM,
 		logLevel: e.LOG_LEVEL
 	};
 }

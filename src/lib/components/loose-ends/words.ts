@@ -110,7 +110,9 @@ const MESSAGES: Record<string, () => string> = {
 	reminder: m.home_message_reminder,
 	escalation: m.home_message_escalation,
 	answer: m.home_message_answer,
-	mail: m.home_message_mail
+	mail: m.home_message_mail,
+	visit: m.home_message_visit,
+	page: m.home_message_page
 };
 
 function elapsed({ since }: LooseEnd, reader: Reader): string {

@@ -53,6 +53,7 @@ function wordsOf({ state, reason, dueAt, sentAt }: ReminderFate, reader: Reader)
 
 const SKIPPED: Record<SkipReason, () => string> = {
 	'visit is over or cancelled': m.visits_skip_over,
+	'visit has moved': m.visits_skip_moved,
 	'too late': m.visits_skip_late,
 	'no telephone number': m.visits_skip_number,
 	'no consent': m.visits_skip_consent,

@@ -35,6 +35,7 @@ export const PERMISSIONS = [
 	'visit.read',
 	'visit.plan',
 	'visit.attend',
+	'closed-day.keep',
 	'stray-text.settle',
 	'account.manage',
 	'audit.read',
@@ -113,6 +114,8 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return among(role, 'coordinator', 'therapist');
 		case 'visit.attend':
 			return among(role, 'coordinator', 'therapist', 'nurse');
+		case 'closed-day.keep':
+			return among(role, 'coordinator', 'admin');
 		// A text that is filed under no patient: whoever keeps the contacts finds out whose it is.
 		case 'stray-text.settle':
 			return role === 'coordinator';

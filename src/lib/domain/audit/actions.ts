@@ -21,6 +21,8 @@ export const AUDIT_ACTIONS = [
 	'clearance.lapsed',
 	'clearance.withdrawn',
 	'clearance.withheld',
+	'closed-day.added',
+	'closed-day.removed',
 	'demonstration.loaded',
 	'deviation.acknowledged',
 	'entry.posted',
@@ -51,6 +53,8 @@ export const AUDIT_ACTIONS = [
 	'message.received',
 	'message.settled',
 	'patient.amended',
+	'patient-page.sent',
+	'patient-page.ended',
 	'referral.accepted',
 	'referral.asked',
 	'referral.closed',
@@ -71,6 +75,7 @@ export const AUDIT_ACTIONS = [
 	'visit.confirmed',
 	'visit.followed-up',
 	'visit.missed',
+	'visit.moved',
 	'visit.reopened',
 	'wound.noted'
 ] as const;

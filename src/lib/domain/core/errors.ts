@@ -22,6 +22,7 @@ export const PROBLEMS = {
 	'place-full': { status: 409, title: 'All places of that time are taken' },
 	'bed-in-use': { status: 409, title: 'The bed is in use' },
 	'in-flight': { status: 409, title: 'The first request with this key is still running' },
+	'link-ended': { status: 410, title: 'This link has ended' },
 	'too-large': { status: 413, title: 'The request is too large' },
 	'wrong-type': { status: 415, title: 'The body is not JSON' },
 	invalid: { status: 422, title: 'Some values are not valid' },

@@ -7,6 +7,7 @@ import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { readDate, readTime } from '../core/typed-date';
+import { MESSAGE_LANGUAGES } from '../messages/templates/wording';
 import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
 import type { AdmitInput } from './forms';
 
@@ -49,6 +50,9 @@ export const admitForm = z
 		confirmName: z.boolean().default(false),
 		phone: line('The telephone number', 30),
 		smsConsent: z.boolean().default(false),
+		email: line('The e-mail address', 254),
+		mailConsent: z.boolean().default(false),
+		language: known(MESSAGE_LANGUAGES, 'The language').default('en'),
 		unit: z.string().min(1, 'Unit: choose one.').max(64).default(''),
 		/** Empty for a gym; whether the unit has beds knows the server. */
 		bed: line('The bed', 12),
@@ -99,7 +103,10 @@ export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInpu
 			mrn: form.mrn,
 			phone: form.phone || undefined,
 			// An empty box says nothing: it must not take away a consent that was given before.
-			smsConsent: form.smsConsent || undefined
+			smsConsent: form.smsConsent || undefined,
+			email: form.email || undefined,
+			mailConsent: form.mailConsent || undefined,
+			language: form.language || undefined
 		},
 		operation: form.procedure
 			? {

@@ -32,7 +32,9 @@ const patient = z.strictObject({
 		.string()
 		.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.')
 		.optional(),
-	smsConsent: z.boolean('The consent to text messages is true or false.').optional()
+	smsConsent: z.boolean('The consent to text messages is true or false.').optional(),
+	email: z.email('The e-mail address is one address, such as name@post.example.').max(254).optional(),
+	mailConsent: z.boolean('The consent to mails is true or false.').optional()
 });
 
 const operation = z.strictObject({

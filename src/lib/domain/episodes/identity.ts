@@ -7,7 +7,15 @@ import type { FieldError } from '../core/errors';
 import { isSameName, normaliseName } from './identifiers';
 
 /** The parts of a patient's record that an admission can amend. */
-export const PATIENT_FIELDS = ['name', 'sex', 'phone', 'language', 'smsConsent'] as const;
+export const PATIENT_FIELDS = [
+	'name',
+	'sex',
+	'phone',
+	'language',
+	'smsConsent',
+	'email',
+	'mailConsent'
+] as const;
 export type PatientField = (typeof PATIENT_FIELDS)[number];
 
 /** How the message about another name begins; a page asks then whether it is the name now. */

@@ -7,7 +7,7 @@ import { reason, text } from '../core/fields';
 import { isRfc3339, parseRfc3339 } from '../core/instant';
 import { WEEKDAYS, addDays, isLocalDate, isLocalTime, localDateOf } from '../core/time';
 import type { Instant, Zone } from '../core/time';
-import { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN, PLACE_MAX } from './limits';
+import { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN, NAME_MAX, PLACE_MAX } from './limits';
 
 export { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN, PLACE_MAX };
 
@@ -94,6 +94,19 @@ export const bookVisitsBody = z
 /** One visit as the page asks for it, in the hospital's local time. */
 export const visitForm = z.strictObject({ date: localDate('date'), time: localTime, minutes, place });
 export type VisitForm = z.infer<typeof visitForm>;
+
+/** Body of `POST /api/visits/:id/move`: the new start, and what else changes. */
+export const rescheduleBody = z.strictObject({
+	startsAt: startsAt.transform(parseRfc3339),
+	minutes: minutes.optional(),
+	place: place.optional(),
+	reason: reason('The reason').optional()
+});
+export type Reschedule = z.infer<typeof rescheduleBody>;
+
+/** Body of `POST /api/closed-days`. */
+export const closedDayBody = z.strictObject({ date: localDate('date'), name: text('The name', NAME_MAX) });
+export type ClosedDayBody = z.infer<typeof closedDayBody>;
 
 /** Body of `POST /api/visits/:id/confirm`, `/cancel`, `/attend`, `/miss`; it may be left out. */
 export const visitMoveBody = z.strictObject({ reason: reason('The reason').optional() }).prefault({});

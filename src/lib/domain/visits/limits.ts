@@ -5,6 +5,8 @@ export const MINUTES_MIN = 10;
 export const MINUTES_MAX = 240;
 export const COUNT_MAX = 60;
 export const PLACE_MAX = 80;
+/** Of a closed day. */
+export const NAME_MAX = 80;
 /** How far ahead a visit may be booked: two years, so that the yearly check fits and a slip in the year shows. */
 export const DAYS_AHEAD_MAX = 731;
 /**

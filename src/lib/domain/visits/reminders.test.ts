@@ -143,6 +143,7 @@ describe('judgeReminder, at the moment of sending', () => {
 	const facts: ReminderFacts = {
 		state: 'planned',
 		startsAt: utc('2025-01-16T10:00Z'),
+		upToDate: true,
 		expiresAt: utc('2025-01-16T10:00Z'),
 		hasPhone: true,
 		consented: true,
@@ -167,6 +168,7 @@ describe('judgeReminder, at the moment of sending', () => {
 	);
 
 	it.each([
+		['visit has moved', { upToDate: false }],
 		['no telephone number', { hasPhone: false }],
 		['opted out', { optedOut: true }],
 		['no consent', { consented: false }],

@@ -73,6 +73,8 @@ function dueTime(kind: ReminderKind, startsAt: Instant, context: ReminderContext
 export interface ReminderFacts {
 	readonly state: VisitState;
 	readonly startsAt: Instant;
+	/** False once the visit has another time or place than the reminder tells. */
+	readonly upToDate: boolean;
 	readonly expiresAt: Instant;
 	readonly hasPhone: boolean;
 	readonly consented: boolean;
@@ -82,7 +84,12 @@ export interface ReminderFacts {
 
 /** Why a reminder is not sent. The words stand in the message log. */
 export type SkipReason =
-	'visit is over or cancelled' | 'too late' | 'no telephone number' | 'no consent' | 'opted out';
+	| 'visit is over or cancelled'
+	| 'visit has moved'
+	| 'too late'
+	| 'no telephone number'
+	| 'no consent'
+	| 'opted out';
 
 export type ReminderVerdict =
 	| { readonly kind: 'send' }
@@ -107,6 +114,9 @@ export function judgeReminder(facts: ReminderFacts, now: Instant): ReminderVerdi
 function skipReason(facts: ReminderFacts, now: Instant): SkipReason | null {
 	if (!isExpected(facts.state)) {
 		return 'visit is over or cancelled';
+	}
+	if (!facts.upToDate) {
+		return 'visit has moved';
 	}
 	if (now >= facts.startsAt || now >= facts.expiresAt) {
 		return 'too late';

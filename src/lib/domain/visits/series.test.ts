@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { WEEKDAYS, addDays, localParts, weekdayOf } from '../core/time';
 import type { Weekday } from '../core/time';
-import { planSeries, planVisit, rederive } from './series';
+import { planSeries, planVisit, rederive, skippedDays } from './series';
 
 const utc = (text: string) => Date.parse(text);
 const ZONES = ['Europe/Berlin', 'America/New_York', 'Australia/Lord_Howe', 'Europe/Dublin'];
@@ -56,6 +56,30 @@ describe('planSeries', () => {
 		expect(visit?.startsAt).toBe(utc('2025-03-30T01:00Z'));
 	});
 
+	// In the hour that comes twice the first one counts, whichever half hour or hour the zone repeats.
+	it.each([
+		['Europe/Berlin', '2025-10-26', '02:30', '2025-10-26T00:30Z'],
+		['America/New_York', '2025-11-02', '01:30', '2025-11-02T05:30Z'],
+		['Australia/Lord_Howe', '2025-04-06', '01:45', '2025-04-05T14:45Z'],
+		['Europe/Dublin', '2025-10-26', '01:30', '2025-10-26T00:30Z']
+	])('%s: %s %s happens twice, and the visit is at the first', (zone, from, time, startsAt) => {
+		const [visit] = planSeries(series(from, [weekdayOf(from)], time, 1), zone);
+		expect(visit).toMatchObject({ localTime: time, startsAt: utc(startsAt) });
+	});
+
+	it.each([
+		['Europe/Berlin', '2025-03-30', '02:30', '2025-03-30T01:00Z'],
+		['America/New_York', '2025-03-09', '02:30', '2025-03-09T07:00Z'],
+		['Australia/Lord_Howe', '2025-10-05', '02:15', '2025-10-04T15:30Z'],
+		['Europe/Dublin', '2025-03-30', '01:30', '2025-03-30T01:00Z']
+	])(
+		'%s: %s %s does not happen, and the visit is at the first minute after',
+		(zone, from, time, startsAt) => {
+			const [visit] = planSeries(series(from, [weekdayOf(from)], time, 1), zone);
+			expect(visit).toMatchObject({ localTime: time, startsAt: utc(startsAt) });
+		}
+	);
+
 	it('property: right days, right time, in order, none left out', () => {
 		const dates = fc.integer({ min: 0, max: 730 }).map((days) => addDays('2024-06-01', days));
 		const weekdays = fc.uniqueArray(fc.constantFrom(...WEEKDAYS), { minLength: 1 });
@@ -77,6 +101,17 @@ describe('planSeries', () => {
 				}
 			)
 		);
+	});
+
+	// Saint Patrick's Day and an invented Friday: the two visits that fall on them come after the last.
+	it('steps over closed days and is as long as was asked', () => {
+		const wanted = series('2025-01-06', ['mon', 'wed', 'fri'], '10:00', 36);
+		const closed = new Set(['2025-03-17', '2025-01-10', '2025-01-11', '2025-12-25']);
+		const visits = planSeries(wanted, 'Europe/Dublin', closed);
+		expect(visits).toHaveLength(36);
+		expect(visits.map(({ localDate }) => localDate).filter((date) => closed.has(date))).toEqual([]);
+		expect(visits.at(-1)?.localDate).toBe('2025-04-02');
+		expect(skippedDays(wanted, visits, closed)).toEqual(['2025-01-10', '2025-03-17']);
 	});
 
 	it('refuses a series without weekdays instead of looking for ever', () => {

@@ -26,18 +26,25 @@ export function planVisit(startsAt: Instant, minutes: number, zone: Zone): Plann
 	return { localDate: date, localTime: time, zone, startsAt, minutes };
 }
 
+/** No day is closed. */
+const NONE: ReadonlySet<LocalDate> = new Set();
+
 /**
- * The visits of a series, in order. Each keeps its time of day over a change of the clock; one that falls into
+ * The visits of a series, in order, none of them on a closed day: the series grows longer by as many. Each keeps its time of day over a change of the clock; one that falls into
  * the skipped hour begins at the first minute after it. Throws a RangeError when no weekday is given.
  */
-export function planSeries(series: Series, zone: Zone): PlannedVisit[] {
+export function planSeries(
+	series: Series,
+	zone: Zone,
+	closed: ReadonlySet<LocalDate> = NONE
+): PlannedVisit[] {
 	const { weekdays, time, count, minutes } = series;
 	if (!weekdays.some((weekday) => WEEKDAYS.includes(weekday))) {
 		throw new RangeError('A series needs at least one weekday.');
 	}
 	const visits: PlannedVisit[] = [];
 	for (let date = series.from; visits.length < count; date = addDays(date, 1)) {
-		if (weekdays.includes(weekdayOf(date))) {
+		if (weekdays.includes(weekdayOf(date)) && !closed.has(date)) {
 			visits.push({
 				localDate: date,
 				localTime: time,
@@ -48,6 +55,18 @@ export function planSeries(series: Series, zone: Zone): PlannedVisit[] {
 		}
 	}
 	return visits;
+}
+
+/** The closed days that a series stepped over, in order. */
+export function skippedDays(
+	series: Series,
+	planned: readonly PlannedVisit[],
+	closed: ReadonlySet<LocalDate>
+): LocalDate[] {
+	const last = planned.at(-1)?.localDate ?? series.from;
+	return [...closed]
+		.filter((date) => date >= series.from && date <= last && series.weekdays.includes(weekdayOf(date)))
+		.sort();
 }
 
 /** The same visit after the zone's rules have changed: wall time stays, the instant is worked out anew. */

@@ -11,6 +11,16 @@ export interface ReminderFate {
 	sentAt: string | null;
 }
 
+/** A day on which the hospital receives no visits. */
+export interface ClosedDay {
+	id: string;
+	/** `YYYY-MM-DD`. */
+	date: string;
+	name: string;
+	/** How many visits stand on it all the same: each of them has to be moved. */
+	visits: number;
+}
+
 /** What the patient answered to a reminder, and when (RFC 3339). */
 export interface PatientAnswer {
 	at: string;

@@ -6,6 +6,7 @@ import { accessEpisode } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, escalations } from '../db/schema';
+import { tellDischarge } from '../visits/notify';
 import { write, type Written } from '../write';
 import { refuseClosed } from './move';
 import { endPlacement } from './place';
@@ -31,6 +32,7 @@ export function closeEpisode(
 			.set({ closedAt: context.now, closedFor: reason })
 			.where(and(eq(episodes.id, episodeId), isNull(episodes.closedAt)));
 		await endPlacement(tx, episodeId, context.now);
+		const messages = await tellDischarge(tx, episodeId, context.actor.id, context.now);
 		return {
 			result: { id: episodeId, closedAt: toRfc3339(context.now) },
 			audit: {
@@ -40,7 +42,8 @@ export function closeEpisode(
 				episodeId,
 				detail: { reason }
 			},
-			events: [{ topic: 'episode', kind: 'closed', id: episodeId, episodeId }]
+			events: [{ topic: 'episode', kind: 'closed', id: episodeId, episodeId }],
+			messages
 		};
 	});
 }

@@ -112,6 +112,8 @@ async function insertPatient(tx: Tx, context: PersonContext, who: Identified): P
 		language: given.language ?? 'en',
 		zone: env().hospital.zone,
 		smsConsent: given.smsConsent ?? false,
+		email: given.email ?? null,
+		mailConsent: given.mailConsent ?? false,
 		createdAt: context.now
 	});
 	return id;
@@ -129,7 +131,9 @@ async function amend(
 		sex: given.sex === 'unknown' ? known.sex : given.sex,
 		phone: phone ?? known.phone,
 		language: given.language ?? known.language,
-		smsConsent: given.smsConsent ?? known.smsConsent
+		smsConsent: given.smsConsent ?? known.smsConsent,
+		email: given.email ?? known.email,
+		mailConsent: given.mailConsent ?? known.mailConsent
 	};
 	const changed = PATIENT_FIELDS.filter((field) => after[field] !== known[field]);
 	if (changed.length === 0) {

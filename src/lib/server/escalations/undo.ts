@@ -7,7 +7,7 @@ import { accessEscalation } from '../access/access';
 import type { Context, PersonContext } from '../context';
 import type { Tx } from '../db';
 import { escalationLinks, escalationMoves, escalations, outbox } from '../db/schema';
-import { NOT_WAITING } from '../outbox/recheck';
+import { NOT_WAITING } from '../outbox/verdict';
 import { write, type Change, type Written } from '../write';
 import { moved, type Moved } from './follow';
 import { recordMove } from './moves';

@@ -82,13 +82,13 @@ async function moved(
 	visit: VisitRow,
 	move: 'confirm' | 'cancel'
 ): Promise<Understood> {
-	const { audit, entries, events } = await moveVisit(tx, visit, move, 'patient', text.now);
+	const { audit, entries, events, messages = [] } = await moveVisit(tx, visit, move, 'patient', text.now);
 	const template = move === 'confirm' ? 'visit-confirmed' : 'visit-declined';
 	return {
 		understoodAs: move === 'confirm' ? 'yes' : 'no',
 		handled: true,
 		visitId: visit.id,
-		change: { audit, entries, events, messages: [aboutVisit(patient, text, template, visit)] }
+		change: { audit, entries, events, messages: [aboutVisit(patient, text, template, visit), ...messages] }
 	};
 }
 
@@ -102,7 +102,7 @@ function aboutVisit(
 	return answerTo(text, { patientId: patient.id }, template, fields, patient);
 }
 
-/** Visits ahead that a reminder has gone out for, or may have, the next one first. */
+/** Visits ahead whose time a text has told, or may have, the next one first. */
 async function remindedVisits(
 	reader: Reader,
 	patientId: string,
@@ -110,17 +110,23 @@ async function remindedVisits(
 	now: number
 ): Promise<VisitRow[]> {
 	const mayHaveArrived = or(isNotNull(outbox.sentAt), gt(outbox.attempts, 0), eq(outbox.state, 'sending'));
+	// A yes to the old time of a visit is none to the new one, which the news or a reminder of its own has told.
+	const tellsHowItIs = or(
+		eq(reminders.sequence, visits.sequence),
+		eq(outbox.causeKey, sql`'visit-news:' || ${visits.id} || ':' || ${visits.sequence} || ':sms'`)
+	);
 	const rows = await reader
 		.selectDistinct({ visit: visits })
 		.from(visits)
 		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
-		.innerJoin(reminders, eq(reminders.visitId, visits.id))
-		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
+		.innerJoin(outbox, and(eq(outbox.refKind, 'visit'), eq(outbox.refId, visits.id)))
+		.leftJoin(reminders, eq(reminders.messageId, outbox.id))
 		.where(
 			and(
 				eq(episodes.patientId, patientId),
 				inArray(visits.state, states),
 				gt(visits.startsAt, now),
+				tellsHowItIs,
 				mayHaveArrived
 			)
 		)

@@ -5,7 +5,8 @@ import { routes } from '$lib/routes';
 import type { Channel, Outgoing, Sent } from './channels/channel';
 import type { OutboxRow } from './change';
 import type { Claimed } from './claim';
-import { recheck, type Receiver } from './recheck';
+import { recheck } from './recheck';
+import type { Receiver } from './verdict';
 import { attemptsOf, knownProviderIds, recordAttempt, recordInterrupted, releaseRow } from './record';
 
 /** An attempt that is not over by then counts as unknown; well within the lease. */
@@ -62,13 +63,24 @@ async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sendin
 	return sent;
 }
 
-/** Fill in what is not stored: the secret link, of a call for help or of an invitation. */
+/** Fill in what is not stored: the secret link, of a call for help, an invitation or a patient's page. */
 function outgoing(row: OutboxRow, { to, name }: Receiver): Outgoing {
-	const { id, subject, linkId } = row;
-	const path = row.refKind === 'account' ? routes.invitation : routes.phoneLink;
-	const link = linkId === null ? null : env().publicUrl + path(linkToken(linkId));
+	const { id, subject, linkId, calendar } = row;
+	const link = linkId === null ? null : env().publicUrl + pathOf(row)(linkToken(linkId));
 	const body = link === null ? row.body : row.body.replaceAll('{link}', () => link);
-	return { id, to, name, subject, body };
+	return { id, to, name, subject, body, calendar };
+}
+
+/** Which page a secret link opens. */
+function pathOf({ refKind }: OutboxRow): (token: string) => string {
+	switch (refKind) {
+		case 'account':
+			return routes.invitation;
+		case 'page':
+			return routes.patientPage;
+		default:
+			return routes.phoneLink;
+	}
 }
 
 /**

@@ -48,6 +48,9 @@ export async function episodeOfMessage(
 				.where(eq(table.id, refId));
 			return row?.episodeId ?? null;
 		}
+		case 'episode':
+		case 'page':
+			return refId;
 		case 'inbound':
 			return patientId === null ? null : newestEpisode(reader, patientId);
 		case 'account':

@@ -14,6 +14,8 @@ export interface NewMessage {
 	address?: string;
 	subject?: string;
 	body: string;
+	/** A calendar file that goes with a mail. */
+	calendar?: string;
 	linkId?: string;
 	ref: { kind: (typeof outbox.$inferInsert)['refKind']; id: string };
 	/** Not before this instant; now when left out. */
@@ -36,6 +38,7 @@ export async function enqueue(tx: Tx, now: number, messages: NewMessage[]): Prom
 				address: message.address ?? null,
 				subject: message.subject ?? null,
 				body: message.body,
+				calendar: message.calendar ?? null,
 				linkId: message.linkId ?? null,
 				refKind: message.ref.kind,
 				refId: message.ref.id,

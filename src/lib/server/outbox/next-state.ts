@@ -24,7 +24,9 @@ const RETRY: Record<OutboxRow['kind'], RetryKind> = {
 	notice: 'urgent',
 	reminder: 'reminder',
 	answer: 'reminder',
-	mail: 'mail'
+	mail: 'mail',
+	visit: 'reminder',
+	page: 'reminder'
 };
 
 /** Accepted, tried again on the schedule of its kind, or failed with the reason. */

@@ -1,39 +1,11 @@
 import { eq } from 'drizzle-orm';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { isExpected } from '$lib/domain/visits/states';
-import { judgeReminder, type SkipReason as ReminderSkip } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
-import { escalationLinks, escalations, invitations, patients, users, visits } from '../db/schema';
-import { stopHeardKey } from '../messages/understood';
+import { escalationLinks, escalations, invitations, users, visits } from '../db/schema';
 import type { OutboxRow } from './change';
-
-/** Somebody has the call, or it has ended. Taking back within the moment sends what was skipped for it after all. */
-export const NOT_WAITING = 'escalation is not waiting for anybody';
-
-/** Why a message is not sent after all. The words stand in the message log. */
-export type SkipReason =
-	| ReminderSkip
-	| typeof NOT_WAITING
-	| 'nobody else has the escalation'
-	| 'account disabled'
-	| 'link used, expired or not theirs'
-	| 'invitation used'
-	| 'nobody to send to';
-
-export interface Receiver {
-	/** A telephone number or an e-mail address, read at the moment of sending. */
-	to: string;
-	name: string | null;
-}
-
-export type Verdict =
-	| { kind: 'send'; receiver: Receiver }
-	| { kind: 'wait'; until: number }
-	| { kind: 'skip'; reason: SkipReason }
-	/** Still wanted, but it came to nothing in time: somebody has to see to it. */
-	| { kind: 'fail'; reason: 'expired' };
-
-const skip = (reason: SkipReason): Verdict => ({ kind: 'skip', reason });
+import { recheckAnswer, recheckNews, recheckPageLink, recheckReminder } from './recheck-patient';
+import { NOT_WAITING, skip, type Verdict } from './verdict';
 
 /**
  * Is the message still wanted, still allowed, and whom does it reach? Read from the tables at the moment of
@@ -48,7 +20,11 @@ export async function recheck(reader: Reader, row: OutboxRow, now: number): Prom
 		case 'reminder':
 			return recheckReminder(reader, row, now);
 		case 'answer':
-			return now >= row.expiresAt ? skip('too late') : recheckAnswer(reader, row);
+			return now >= row.expiresAt ? skip('too late') : recheckAnswerTo(reader, row);
+		case 'visit':
+			return recheckNews(reader, row, now);
+		case 'page':
+			return recheckPageLink(reader, row, now);
 		case 'mail':
 			return recheckMail(reader, row, now);
 	}
@@ -93,40 +69,14 @@ async function linkStillGood(reader: Reader, row: OutboxRow, now: number): Promi
 	return link !== undefined && link.userId === row.userId && link.usedAt === null && link.expiresAt > now;
 }
 
-async function recheckReminder(reader: Reader, row: OutboxRow, now: number): Promise<Verdict> {
-	const [visit] = await reader.select().from(visits).where(eq(visits.id, row.refId));
-	const patient = await patientOf(reader, row);
-	if (!visit || !patient) {
-		return skip('nobody to send to');
-	}
-	const verdict = judgeReminder(
-		{
-			state: visit.state,
-			startsAt: visit.startsAt,
-			expiresAt: row.expiresAt,
-			hasPhone: patient.phone !== null,
-			consented: patient.smsConsent,
-			optedOut: patient.smsOptedOutAt !== null,
-			patientZone: patient.zone
-		},
-		now
-	);
-	return verdict.kind === 'send' ? toPatient(patient) : verdict;
-}
-
-/**
- * Answers need no consent: they go to somebody who has just written, and tell nothing. After STOP one last text may
- * go, the one that says that it was heard.
- */
-async function recheckAnswer(reader: Reader, row: OutboxRow): Promise<Verdict> {
+/** An answer to staff, to a patient, or to a number that is nobody's alone. */
+async function recheckAnswerTo(reader: Reader, row: OutboxRow): Promise<Verdict> {
 	if (row.userId !== null) {
 		return toStaff(reader, row.userId, 'phone');
 	}
-	const patient = await patientOf(reader, row);
-	if (patient) {
-		const { smsOptedOutAt } = patient;
-		const last = smsOptedOutAt !== null && row.causeKey === stopHeardKey(patient.id, smsOptedOutAt);
-		return smsOptedOutAt === null || last ? toPatient(patient) : skip('opted out');
+	const verdict = await recheckAnswer(reader, row);
+	if (verdict !== null) {
+		return verdict;
 	}
 	return row.address === null
 		? skip('nobody to send to')
@@ -166,16 +116,4 @@ async function toStaff(reader: Reader, userId: string | null, way: 'phone' | 'em
 	return to === null
 		? skip('no telephone number')
 		: { kind: 'send', receiver: { to, name: way === 'email' ? user.name : null } };
-}
-
-async function patientOf(reader: Reader, { patientId }: OutboxRow) {
-	if (patientId === null) {
-		return null;
-	}
-	const [patient] = await reader.select().from(patients).where(eq(patients.id, patientId));
-	return patient ?? null;
-}
-
-function toPatient({ phone }: { phone: string | null }): Verdict {
-	return phone === null ? skip('no telephone number') : { kind: 'send', receiver: { to: phone, name: null } };
 }

@@ -4,30 +4,33 @@ import type { Tx } from '../db';
 import { outbox } from '../db/schema';
 import { messageEvent } from './change';
 
-/** Reminders of the visit that nobody has begun to send. */
-function waitingOf(visitId: string) {
+/** Messages about the visit to its patient that nobody has begun to send. */
+function waitingOf(visitId: string, kinds: ('reminder' | 'visit')[]) {
 	return and(
 		eq(outbox.refKind, 'visit'),
 		eq(outbox.refId, visitId),
-		eq(outbox.kind, 'reminder'),
+		inArray(outbox.kind, kinds),
 		inArray(outbox.state, ['ready', 'held'])
 	);
 }
 
 /**
- * Drop the reminders of a visit that is not expected any more, in the transaction that makes it so. One that is
- * being sent in this moment is checked again before a second attempt.
+ * Drop reminders and news of a visit that is not as they tell any more, in the transaction that makes it so. One
+ * that is being sent in this moment is checked again before a second attempt.
  */
-export async function dropReminders(tx: Tx, visitId: string, reason: string): Promise<LiveEvent[]> {
+export async function dropWaiting(tx: Tx, visitId: string, reason: string): Promise<LiveEvent[]> {
 	const dropped = await tx
 		.update(outbox)
 		.set({ state: 'cancelled', stateReason: reason })
-		.where(waitingOf(visitId))
+		.where(waitingOf(visitId, ['reminder', 'visit']))
 		.returning();
 	return Promise.all(dropped.map((row) => messageEvent(tx, row, 'cancelled')));
 }
 
 /** Give the waiting reminders of a visit another text: who has said yes is not asked again. */
 export async function rewordReminders(tx: Tx, visitId: string, body: string): Promise<void> {
-	await tx.update(outbox).set({ body }).where(waitingOf(visitId));
+	await tx
+		.update(outbox)
+		.set({ body })
+		.where(waitingOf(visitId, ['reminder']));
 }

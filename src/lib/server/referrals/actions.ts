@@ -10,6 +10,7 @@ import { accessEpisode, accessReferral } from '../access/access';
 import type { PersonContext } from '../context';
 import { referrals, threads } from '../db/schema';
 import { newId } from '../ids';
+import { tellReferralClosed } from '../visits/notify';
 import { write, type Written } from '../write';
 
 /**
@@ -93,7 +94,8 @@ function answer(
 			result: { id, state },
 			audit: { action, objectKind: 'referral', objectId: id, episodeId: referral.episodeId },
 			entries: [{ threadId, kind, body: entryText(move, reason), ref: { kind: 'referral', id } }],
-			events: [{ topic: 'referral', kind: state, id, episodeId: referral.episodeId }]
+			events: [{ topic: 'referral', kind: state, id, episodeId: referral.episodeId }],
+			messages: move === 'close' ? tellReferralClosed(referral, threadId, context.actor.id, context.now) : []
 		};
 	});
 }

@@ -13,11 +13,13 @@ import { newId } from '../ids';
 import type { NewMessage } from '../outbox/enqueue';
 import { write, type Written } from '../write';
 import { moveVisit, type MovedVisit, type VisitRow } from './move';
+import { closedDates, refuseClosedDay } from './closed-days';
 import { tellReferrer } from './notify';
 import { findPlace, plannedVisits } from './plan';
 import { visitLine } from './items';
 import { patientOfEpisode, remindOf } from './remind';
 import { requireRoom } from './room';
+import { tellBooked } from './tell-patient';
 import { bookedText } from './words';
 
 /**
@@ -64,12 +66,15 @@ export function bookVisits(
 
 async function book(tx: Tx, context: PersonContext, episodeId: string, input: BookVisits) {
 	const { now, actor } = context;
-	const unit = await findPlace(tx, input);
+	const unit = await findPlace(tx, input.place, input.kind === 'single' ? '/place' : '/series/place');
 	const patient = await patientOfEpisode(tx, episodeId);
 	const seriesId = input.kind === 'series' ? newId() : null;
 	const booked: VisitRow[] = [];
 	const messages: NewMessage[] = [];
-	const wanted = plannedVisits(input, env().hospital.zone, now);
+	const wanted = plannedVisits(input, env().hospital.zone, now, await closedDates(tx));
+	if (input.kind === 'single') {
+		await refuseClosedDay(tx, wanted[0]?.localDate ?? '', '/startsAt');
+	}
 	await requireRoom(tx, patient.id, unit, wanted, now);
 	for (const planned of wanted) {
 		const visit = newVisit(planned, unit, { episodeId, seriesId, bookedBy: actor.id, bookedAt: now });
@@ -77,7 +82,7 @@ async function book(tx: Tx, context: PersonContext, episodeId: string, input: Bo
 		booked.push(visit);
 		messages.push(...(await remindOf(tx, visit, patient, now)));
 	}
-	return { booked, messages };
+	return { booked, messages: [...messages, ...tellBooked(booked, patient, now)] };
 }
 
 function newVisit(
@@ -89,6 +94,7 @@ function newVisit(
 		id: newId(),
 		...planned,
 		...rest,
+		sequence: 0,
 		unitId: unit.id,
 		place: unit.name,
 		state: 'planned',

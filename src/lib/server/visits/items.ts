@@ -3,7 +3,7 @@ import { toRfc3339 } from '$lib/domain/core/instant';
 import type { VisitLine } from '$lib/domain/episodes/views';
 import type { PatientAnswer, ReminderFate, VisitItem } from '$lib/domain/visits/views';
 import { db, type Reader } from '../db';
-import { inboundMessages, outbox, reminders, type patients, type visits } from '../db/schema';
+import { inboundMessages, outbox, reminders, visits, type patients } from '../db/schema';
 import { patientLine } from '../episodes/list';
 
 type VisitRow = typeof visits.$inferSelect;
@@ -44,6 +44,7 @@ async function fatesOf(reader: Reader, visitIds: string[]): Promise<Map<string, 
 		})
 		.from(reminders)
 		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
+		.innerJoin(visits, and(eq(visits.id, reminders.visitId), eq(visits.sequence, reminders.sequence)))
 		.where(inArray(reminders.visitId, visitIds))
 		.orderBy(asc(reminders.dueAt));
 	const fates = new Map<string, ReminderFate[]>();

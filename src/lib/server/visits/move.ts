@@ -6,14 +6,15 @@ import { isExpected, needsReason, visitAfter, whyNot, type VisitMove } from '$li
 import { threadForDeed } from '../access/access';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
-import { dropReminders, rewordReminders } from '../outbox/reminders';
+import { dropWaiting, rewordReminders } from '../outbox/reminders';
 import type { Change } from '../write';
 import { patientOfEpisode, reminderText } from './remind';
+import { tellCancelled } from './tell-patient';
 import { movedText } from './words';
 
 export type VisitRow = typeof visits.$inferSelect;
 
-/** The reason on record when patients cancel themselves; theirs is not asked for. */
+/** The reason on record when patients cancel themselves and give none. */
 export const CANCELLED_BY_PATIENT = 'patient';
 
 const ACTIONS: Record<VisitMove, AuditAction> = {
@@ -33,6 +34,7 @@ export interface MovedVisit {
  * Move a visit on, with what follows from it in the same transaction: reminders of a visit that is not expected
  * any more are dropped, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
  * until somebody has followed it up. Whether the caller may do it is decided before.
+ * @param way how patients said it, where it was them
  * @throws Problem `wrong-state`, and `invalid` where what is on record would be changed without a reason
  */
 export async function moveVisit(
@@ -41,7 +43,8 @@ export async function moveVisit(
 	move: VisitMove,
 	by: 'staff' | 'patient',
 	now: number,
-	reason: string | null = null
+	reason: string | null = null,
+	way: 'text' | 'page' = 'text'
 ): Promise<Change<MovedVisit>> {
 	const state = visitAfter(visit.state, move);
 	if (state === null) {
@@ -51,23 +54,16 @@ export async function moveVisit(
 		throw invalidField('/reason', `reason is missing: the visit is ${visit.state} on record.`);
 	}
 	const { id, episodeId } = visit;
-	const cancelledByPatient = by === 'patient' && state === 'cancelled';
-	await tx
-		.update(visits)
-		.set({
-			state,
-			decidedAt: now,
-			reason: cancelledByPatient ? CANCELLED_BY_PATIENT : reason,
-			patientCancelledAt: cancelledByPatient ? now : null
-		})
-		.where(eq(visits.id, id));
-	const dropped = isExpected(state) ? [] : await dropReminders(tx, id, `visit ${state}`);
+	const after = { ...visit, ...moved(visit, state, by, now, reason) };
+	await tx.update(visits).set(after).where(eq(visits.id, id));
+	const dropped = isExpected(state) ? [] : await dropWaiting(tx, id, `visit ${state}`);
+	const patient = await patientOfEpisode(tx, episodeId);
 	if (state === 'confirmed') {
-		const patient = await patientOfEpisode(tx, episodeId);
 		await rewordReminders(tx, id, reminderText(visit, patient, true));
 	}
+	const messages = state === 'cancelled' ? tellCancelled(after, by, patient, now) : [];
 	const threadId = await threadForDeed(tx, episodeId, undefined);
-	const body = movedText(visit, move, by, reason, now);
+	const body = movedText(visit, move, by === 'staff' ? by : way, reason, now);
 	const strand = by === 'patient' ? ({ strand: 'patient' } as const) : {};
 	return {
 		result: { id, state },
@@ -76,9 +72,29 @@ export async function moveVisit(
 			objectKind: 'visit',
 			objectId: id,
 			episodeId,
-			detail: { by, from: visit.state }
+			detail: { by, from: visit.state, ...(by === 'patient' ? { way } : {}) }
 		},
 		entries: threadId ? [{ threadId, kind: 'event', body, ref: { kind: 'visit', id }, ...strand }] : [],
-		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped]
+		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped],
+		messages
+	};
+}
+
+/** What changes in the row. A cancellation is a change that calendars have to hear of, so it raises the sequence. */
+function moved(
+	{ sequence }: VisitRow,
+	state: VisitState,
+	by: 'staff' | 'patient',
+	now: number,
+	reason: string | null
+): Partial<VisitRow> {
+	const cancelled = state === 'cancelled';
+	const byPatient = cancelled && by === 'patient';
+	return {
+		state,
+		decidedAt: now,
+		reason: byPatient ? (reason ?? CANCELLED_BY_PATIENT) : reason,
+		patientCancelledAt: byPatient ? now : null,
+		sequence: cancelled ? sequence + 1 : sequence
 	};
 }

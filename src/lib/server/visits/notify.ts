@@ -1,4 +1,4 @@
-import { desc, eq } from 'drizzle-orm';
+import { and, desc, eq, inArray } from 'drizzle-orm';
 import { mailText } from '$lib/domain/messages/templates';
 import { routes } from '$lib/routes';
 import type { Tx } from '../db';
@@ -28,17 +28,75 @@ export async function tellReferrer(
 		return [];
 	}
 	const link = env().publicUrl + routes.patientVisits(visit.episodeId);
-	const { subject, text } = mailText('referrer', { link });
 	return [
-		{
-			kind: 'mail',
-			channel: 'mail',
-			causeKey: `visit-booked:${visit.id}`,
-			userId: referral.askedBy,
-			subject,
-			body: text,
-			ref: { kind: 'visit', id: visit.id },
-			expiresAt: now + MAIL_LIFE_MS
-		}
+		mailTo(
+			referral.askedBy,
+			'referrer',
+			link,
+			`visit-booked:${visit.id}`,
+			{ kind: 'visit', id: visit.id },
+			now
+		)
 	];
+}
+
+/** Tell who asked that a referral is closed: how it went stands in its thread, behind the sign-in. */
+export function tellReferralClosed(
+	{ id, episodeId, askedBy }: Pick<typeof referrals.$inferSelect, 'id' | 'episodeId' | 'askedBy'>,
+	threadId: string,
+	closedBy: string,
+	now: number
+): NewMessage[] {
+	if (askedBy === closedBy) {
+		return [];
+	}
+	const link = env().publicUrl + routes.thread(episodeId, threadId);
+	return [mailTo(askedBy, 'summary', link, `referral-closed:${id}`, { kind: 'referral', id }, now)];
+}
+
+/** Tell everybody who referred a patient, and whose referral was not closed before, that the stay is over. */
+export async function tellDischarge(
+	tx: Tx,
+	episodeId: string,
+	closedBy: string,
+	now: number
+): Promise<NewMessage[]> {
+	const open = await tx
+		.selectDistinct({ askedBy: referrals.askedBy })
+		.from(referrals)
+		.where(and(eq(referrals.episodeId, episodeId), inArray(referrals.state, ['asked', 'accepted'])));
+	const link = env().publicUrl + routes.patient(episodeId);
+	return open
+		.filter(({ askedBy }) => askedBy !== closedBy)
+		.map(({ askedBy }) =>
+			mailTo(
+				askedBy,
+				'summary',
+				link,
+				`episode-closed:${episodeId}:${askedBy}`,
+				{ kind: 'episode', id: episodeId },
+				now
+			)
+		);
+}
+
+function mailTo(
+	userId: string,
+	template: 'referrer' | 'summary',
+	link: string,
+	causeKey: string,
+	ref: NewMessage['ref'],
+	now: number
+): NewMessage {
+	const { subject, text } = mailText(template, { link });
+	return {
+		kind: 'mail',
+		channel: 'mail',
+		causeKey,
+		userId,
+		subject,
+		body: text,
+		ref,
+		expiresAt: now + MAIL_LIFE_MS
+	};
 }

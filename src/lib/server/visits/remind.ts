@@ -23,7 +23,7 @@ export async function patientOfEpisode(tx: Tx, episodeId: string): Promise<Patie
 }
 
 /**
- * Plan the reminders of a visit that was just booked: their rows here, their messages for the outbox. Consent,
+ * Plan the reminders of a visit that was just booked or moved: their rows here, their messages for the outbox. Consent,
  * number and hours are looked at when they are due, because all three can change until then.
  */
 export async function remindOf(
@@ -40,12 +40,13 @@ export async function remindOf(
 	const messages: NewMessage[] = [];
 	for (const { kind, dueAt, expiresAt } of planned) {
 		const messageId = newId();
-		await tx.insert(reminders).values({ id: newId(), visitId: visit.id, dueAt, messageId });
+		const { id: visitId, sequence } = visit;
+		await tx.insert(reminders).values({ id: newId(), visitId, dueAt, sequence, messageId });
 		messages.push({
 			id: messageId,
 			kind: 'reminder',
 			channel: 'sms',
-			causeKey: `reminder:${visit.id}:${kind}`,
+			causeKey: `reminder:${visitId}:${sequence}:${kind}`,
 			patientId: patient.id,
 			body,
 			ref: { kind: 'visit', id: visit.id },

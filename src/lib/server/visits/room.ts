@@ -19,6 +19,7 @@ export const PLACES_SETTING = 'visits.places';
 
 /**
  * Refuse visits for which there is no room.
+ * @param movedId the visit that moves, which is not in its own way
  * @throws Problem `visit-overlaps` with the patient's other visit, `place-full` with how many are there; both say when
  */
 export async function requireRoom(
@@ -26,10 +27,12 @@ export async function requireRoom(
 	patientId: string,
 	place: Place,
 	planned: readonly PlannedVisit[],
-	now: number
+	now: number,
+	movedId: string | null = null
 ): Promise<void> {
 	const places = await placesOf(tx, place);
-	const held = await heldAround(tx, patientId, place.id, planned);
+	const around = await heldAround(tx, patientId, place.id, planned);
+	const held = around.filter(({ id }) => id !== movedId);
 	const clash = firstClash({ patientId, unitId: place.id, places, visits: planned }, held);
 	if (clash === null) {
 		return;

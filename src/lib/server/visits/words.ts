@@ -23,23 +23,40 @@ export function bookedText(booked: readonly VisitRow[], now: number): string {
 			});
 }
 
+/** What the thread says when a visit has another time or place. */
+export function rescheduledText(
+	before: VisitRow,
+	visit: VisitRow,
+	reason: string | null,
+	now: number
+): string {
+	const words = m.visits_entry_rescheduled({
+		from: whenOf(before, now),
+		to: whenOf(visit, now),
+		place: visit.place
+	});
+	return reason === null ? words : m.visits_entry_with_reason({ words, reason });
+}
+
 /** What the thread says when a visit moved on, and who moved it. */
 export function movedText(
 	visit: VisitRow,
 	move: VisitMove,
-	by: 'staff' | 'patient',
+	by: 'staff' | 'text' | 'page',
 	reason: string | null,
 	now: number
 ): string {
 	const when = whenOf(visit, now);
-	if (by === 'patient') {
-		return move === 'confirm'
-			? m.visits_entry_patient_confirmed({ when })
-			: m.visits_entry_patient_cancelled({ when });
-	}
-	const words = MOVED[move]({ when });
+	const words = (by === 'staff' ? MOVED[move] : BY_PATIENT[by][move === 'confirm' ? 'confirm' : 'cancel'])({
+		when
+	});
 	return reason === null ? words : m.visits_entry_with_reason({ words, reason });
 }
+
+const BY_PATIENT = {
+	text: { confirm: m.visits_entry_patient_confirmed, cancel: m.visits_entry_patient_cancelled },
+	page: { confirm: m.visits_entry_page_confirmed, cancel: m.visits_entry_page_cancelled }
+};
 
 const MOVED: Record<VisitMove, (inputs: { when: string }) => string> = {
 	confirm: m.visits_entry_confirmed,

@@ -19,6 +19,9 @@ export const patients = sqliteTable(
 		zone: text('zone').notNull(),
 		smsConsent: yesNo('sms_consent').notNull().default(false),
 		smsOptedOutAt: instant('sms_opted_out_at'),
+		/** For mails about visits alone, and only with their consent: mail is read by others, as texts are. */
+		email: text('email'),
+		mailConsent: yesNo('mail_consent').notNull().default(false),
 		createdAt: instant('created_at').notNull()
 	},
 	(t) => [index('patients_phone').on(t.phone)]

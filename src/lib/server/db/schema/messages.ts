@@ -4,7 +4,7 @@ import { id, instant } from './columns';
 import { patients } from './episodes';
 import { visits } from './visits';
 
-export const MESSAGE_KINDS = ['escalation', 'notice', 'reminder', 'answer', 'mail'] as const;
+export const MESSAGE_KINDS = ['escalation', 'notice', 'reminder', 'answer', 'mail', 'visit', 'page'] as const;
 export const MESSAGE_STATES = [
 	'ready',
 	'sending',
@@ -33,8 +33,12 @@ export const outbox = sqliteTable(
 		subject: text('subject'),
 		/** `{link}` stands for the secret link, which is made at the moment of sending and never stored. */
 		body: text('body').notNull(),
+		/** A calendar file that goes with a mail about a visit. */
+		calendar: text('calendar'),
 		linkId: text('link_id'),
-		refKind: text('ref_kind', { enum: ['escalation', 'visit', 'referral', 'inbound', 'account'] }).notNull(),
+		refKind: text('ref_kind', {
+			enum: ['escalation', 'visit', 'referral', 'inbound', 'account', 'episode', 'page']
+		}).notNull(),
 		refId: text('ref_id').notNull(),
 		state: text('state', { enum: MESSAGE_STATES }).notNull(),
 		stateReason: text('state_reason'),

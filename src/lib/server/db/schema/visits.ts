@@ -1,4 +1,5 @@
-import { index, integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import { sql } from 'drizzle-orm';
+import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 import { VISIT_STATES } from '../../../domain/core/codes';
 import { units, users } from './accounts';
 import { id, instant } from './columns';
@@ -18,6 +19,8 @@ export const visits = sqliteTable(
 		zone: text('zone').notNull(),
 		startsAt: instant('starts_at').notNull(),
 		minutes: integer('minutes').notNull(),
+		/** Grows when the visit is moved or called off: of two calendar entries the one with the higher number counts. */
+		sequence: integer('sequence').notNull().default(0),
 		unitId: text('unit_id')
 			.notNull()
 			.references(() => units.id),
@@ -46,7 +49,53 @@ export const reminders = sqliteTable(
 			.notNull()
 			.references(() => visits.id),
 		dueAt: instant('due_at').notNull(),
+		/** The visit's when this was planned: after a move it is about a time that does not hold any more. */
+		sequence: integer('sequence').notNull().default(0),
 		messageId: text('message_id').notNull()
 	},
 	(t) => [index('reminders_visit').on(t.visitId)]
+);
+
+/** Days on which the hospital receives no visits. One that is taken off the list stays on record. */
+export const closedDays = sqliteTable(
+	'closed_days',
+	{
+		id: id(),
+		date: text('date').notNull(),
+		/** What day it is, in the hospital's words. */
+		name: text('name').notNull(),
+		addedBy: text('added_by')
+			.notNull()
+			.references(() => users.id),
+		addedAt: instant('added_at').notNull(),
+		removedAt: instant('removed_at'),
+		removedBy: text('removed_by').references(() => users.id)
+	},
+	(t) => [
+		uniqueIndex('closed_days_date')
+			.on(t.date)
+			.where(sql`removed_at is null`)
+	]
+);
+
+/** Private links to a patient's own page; of the secret only its SHA-256 is stored. */
+export const patientLinks = sqliteTable(
+	'patient_links',
+	{
+		id: id(),
+		tokenHash: text('token_hash').notNull().unique(),
+		/** The stay whose visits it shows. */
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		way: text('way', { enum: ['sms', 'mail'] }).notNull(),
+		createdBy: text('created_by')
+			.notNull()
+			.references(() => users.id),
+		createdAt: instant('created_at').notNull(),
+		expiresAt: instant('expires_at').notNull(),
+		revokedAt: instant('revoked_at'),
+		revokedBy: text('revoked_by').references(() => users.id)
+	},
+	(t) => [index('patient_links_episode').on(t.episodeId, t.createdAt)]
 );

@@ -9,6 +9,8 @@ export interface Outgoing {
 	name: string | null;
 	subject: string | null;
 	body: string;
+	/** The calendar file that goes with a mail; null or left out for none. */
+	calendar?: string | null;
 }
 
 /** How one attempt ended. `code` is the gateway's status or error code, or that of the connection; never prose. */

@@ -1,5 +1,6 @@
 import nodemailer, { type Transporter } from 'nodemailer';
 import { mailOutcome } from '$lib/domain/messages/outcome';
+import { methodOf } from '$lib/domain/visits/calendar';
 import type { Env } from '../../env';
 import type { Channel, Outgoing, Sent } from './channel';
 import { mailAddress, readSender, type MailAddress } from './mail-address';
@@ -44,7 +45,7 @@ async function send(
 	transport: Transporter,
 	from: MailAddress,
 	host: string,
-	{ id, to, name, subject, body }: Outgoing
+	{ id, to, name, subject, body, calendar }: Outgoing
 ): Promise<Sent> {
 	const receiver = mailAddress(to, name);
 	if (!receiver) {
@@ -59,12 +60,19 @@ async function send(
 			subject: subject ?? '',
 			text: body,
 			html: htmlOf(body),
+			...withCalendar(calendar ?? null),
 			headers: { 'Auto-Submitted': 'auto-generated' }
 		});
 		return { outcome: mailOutcome({ kind: 'answered', id: messageId }), code: null };
 	} catch (error) {
 		return judgedError(error);
 	}
+}
+
+/** The file as an answerable part of the mail and as an attachment, both with the method that it states itself. */
+function withCalendar(content: string | null) {
+	const method = content === null ? null : methodOf(content);
+	return content === null || method === null ? {} : { icalEvent: { method, filename: 'visit.ics', content } };
 }
 
 function judgedError(error: unknown): Sent {
