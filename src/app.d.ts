@@ -14,6 +14,8 @@ declare global {
 			requestId: string;
 			/** A form of this request that found nobody signed in; the error page shows it. */
 			kept?: KeptForm;
+			/** The language of a page that is not read in the one that its reader chose, such as a patient's own. */
+			language?: string;
 			/** The live log's cursor from before the page was read. */
 			liveCursor: number;
 		}

@@ -11,9 +11,10 @@ import { linkExists } from '$lib/server/escalations/link';
 import { newId } from '$lib/server/ids';
 import { liveCursor } from '$lib/server/live/log';
 import { log } from '$lib/server/log';
+import { pageExists } from '$lib/server/patient-page/link';
 import { clientAddress } from '$lib/server/http/address';
 import { secureHeaders } from '$lib/server/http/headers';
-import { countedFor, countRequest, linkTokenIn } from '$lib/server/http/limits';
+import { countedFor, countRequest, linkTokenIn, pageTokenIn } from '$lib/server/http/limits';
 import { refuseForeignOrigin } from '$lib/server/http/origin';
 import { problemResponse } from '$lib/server/http/problem';
 import { Turnstile } from '$lib/server/http/turnstile';
@@ -41,8 +42,11 @@ const identify: Handle = async ({ event, resolve }) => {
 			: cookie !== null && signInStillGood(cookie.signInId, now());
 	event.locals.context = { actor: person, now: now(), address, key: null };
 	const { pathname } = event.url;
-	const link = await knownLink(pathname);
-	const counted = countedFor({ method: request.method, pathname }, person?.id ?? null, address, link);
+	const [link, page] = [await knownLink(pathname), await knownPage(pathname)];
+	const counted =
+		page === null
+			? countedFor({ method: request.method, pathname }, person?.id ?? null, address, link)
+			: `page:${page}`;
 	if (counted !== null) {
 		countRequest(counted, now());
 	}
@@ -54,6 +58,12 @@ const identify: Handle = async ({ event, resolve }) => {
 async function knownLink(pathname: string): Promise<string | null> {
 	const token = linkTokenIn(pathname);
 	return token !== null && (await linkExists(token)) ? token : null;
+}
+
+/** The token of a link to a patient's page that exists, also of one that has ended; null for any other address. */
+async function knownPage(pathname: string): Promise<string | null> {
+	const token = pageTokenIn(pathname);
+	return token !== null && (await pageExists(token)) ? token : null;
 }
 
 /**
@@ -109,7 +119,9 @@ const harden: Handle = async ({ event, resolve }) => secureHeaders(await resolve
  */
 const language: Handle = ({ event, resolve }) => {
 	const spoken = (lang: string) =>
-		resolve(event, { transformPageChunk: ({ html }) => html.replace('%lang%', lang) });
+		resolve(event, {
+			transformPageChunk: ({ html }) => html.replace('%lang%', event.locals.language ?? lang)
+		});
 	const isPage = event.request.method === 'GET' && !event.url.pathname.startsWith('/api/');
 	return isPage ? paraglideMiddleware(event.request, ({ locale }) => spoken(locale)) : spoken(baseLocale);
 };

@@ -37,6 +37,16 @@ const TIMES = { startedAt: '2026-01-02T10:00:00Z', endedAt: '2026-01-02T10:20:00
 const MONTH_MS = 30 * 24 * 60 * 60 * 1000;
 const VISIT = { startsAt: new Date(Date.now() + MONTH_MS).toISOString(), minutes: 45, place: 'East Gym' };
 
+const MOVE = { startsAt: new Date(Date.now() + 2 * MONTH_MS).toISOString() };
+const SERIES = {
+	from: MOVE.startsAt.slice(0, 10),
+	weekdays: ['mon', 'wed', 'fri'],
+	time: '16:00',
+	count: 2,
+	minutes: 45,
+	place: 'East Gym'
+};
+
 /**
  * Every call of the main job that changes something.
  * @param people signed in by the time that a path is asked for
@@ -246,7 +256,27 @@ function visitCalls(make: Makers): Call[] {
 			wrong: null
 		},
 		deed('confirm'),
-		deed('cancel')
+		deed('cancel'),
+		deed('attend'),
+		deed('miss'),
+		{
+			name: 'move a visit',
+			by: 'coordinator',
+			path: on('move', 'planned'),
+			body: MOVE,
+			other: { ...MOVE, minutes: 30 },
+			bad: { startsAt: 'tomorrow' },
+			wrong: on('move', 'cancelled')
+		},
+		{
+			name: 'book a series',
+			by: 'coordinator',
+			path: async () => `/api/episodes/${await make.episode()}/visits`,
+			body: { series: SERIES },
+			other: { series: { ...SERIES, count: 3 } },
+			bad: { series: { ...SERIES, count: 61 } },
+			wrong: null
+		}
 	];
 }
 

@@ -34,6 +34,8 @@ const BODIES: Record<string, object> = {
 	'POST /api/episodes/[id]/sessions': SESSION,
 	'POST /api/episodes/[id]/escalations': CALL,
 	'POST /api/episodes/[id]/visits': { startsAt: '2099-12-01T10:00:00Z', minutes: 45, place: 'East Gym' },
+	'POST /api/episodes/[id]/patient-page': { way: 'sms' },
+	'POST /api/visits/[id]/move': { startsAt: '2099-12-02T10:00:00Z' },
 	'POST /api/sign-offs/[id]/refuse': WHY,
 	'POST /api/referrals/[id]/decline': WHY,
 	'POST /api/referrals/[id]/withdraw': WHY,
@@ -53,7 +55,10 @@ const BODIES: Record<string, object> = {
 
 /** Every row of the table that names a patient or something of theirs; closing comes last, because it ends things. */
 const ROWS = Object.entries(API)
-	.filter(([handler]) => handler.includes('[id]') && !handler.includes('/api/units/'))
+	.filter(
+		([handler]) =>
+			handler.includes('[id]') && !handler.includes('/api/units/') && !handler.includes('/api/closed-days/')
+	)
 	.toSorted(([a], [b]) => Number(a.endsWith('/close')) - Number(b.endsWith('/close')));
 
 const TERN = `(select e.id from episodes e join units u on u.id = e.unit_id where u.name = 'Tern Ward')`;
@@ -66,6 +71,7 @@ const FOUND: Record<string, string> = {
 	clearances: `select id from clearances ${OF_TERN}`,
 	escalations: `select id from escalations ${OF_TERN}`,
 	visits: `select id from visits ${OF_TERN}`,
+	'patient-pages': `select id from patient_links ${OF_TERN}`,
 	'sign-offs': `select id from sign_offs ${OF_TERN}`,
 	deviations: `select id from deviations ${OF_TERN}`,
 	limits: `select id from patient_limits ${OF_TERN}`
@@ -79,6 +85,8 @@ const ADDED = `
 		select 'a-deviation', episode_id, id, 'arm-stage', 'Why.', recorded_by, 1 from bedside_sessions ${OF_TERN};
 	insert into patient_limits (id, episode_id, version, limit_key, value, reason, until_on, set_by, set_at)
 		select 'a-limit', e.id, 1, 'systolic-ceiling', 170, 'Why.', '2099-12-01', u.id, 1 from episodes e, users u where e.id in ${TERN} limit 1;
+	insert into patient_links (id, token_hash, episode_id, way, created_by, created_at, expires_at)
+		select 'a-page', 'none', e.id, 'sms', u.id, 1, 9999999999999 from episodes e, users u where e.id in ${TERN} limit 1;
 	insert into mentions (id, entry_id, user_id)
 		select 'mention-of-' || u.email, n.id, u.id from users u, (
 			select e.id from entries e join threads t on t.id = e.thread_id where t.episode_id in ${TERN} limit 1

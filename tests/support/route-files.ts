@@ -56,7 +56,7 @@ export function formActions(): string[] {
 
 /** Every form action of a page that needs no sign-in, written the same way; the page that shows styles left out. */
 export function openFormActions(): string[] {
-	return actionsOf((file) => file.startsWith('(public)') || file.startsWith('(phone)'));
+	return actionsOf((file) => /^\((public|phone|patient)\)/.test(file));
 }
 
 function actionsOf(among: (file: string) => boolean): string[] {

@@ -1,4 +1,5 @@
 import { env } from '../env';
+import { pageTokenIn } from './limits';
 
 /**
  * Headers of every answer. The content security policy of pages is Kit's, with a nonce; what is not a page gets
@@ -7,8 +8,9 @@ import { env } from '../env';
 export function secureHeaders(response: Response, path: string): Response {
 	const { headers } = response;
 	headers.set('x-content-type-options', 'nosniff');
-	// Other sites learn nothing. 'no-referrer' would also make forms without script send `Origin: null`.
-	headers.set('referrer-policy', 'same-origin');
+	// Other sites learn nothing. 'no-referrer' would also make forms without script send `Origin: null`, which the
+	// check of origins takes from patients' pages alone: their address is their secret.
+	headers.set('referrer-policy', pageTokenIn(path) === null ? 'same-origin' : 'no-referrer');
 	headers.set('cross-origin-opener-policy', 'same-origin');
 	headers.set('cross-origin-resource-policy', 'same-origin');
 	headers.set('permissions-policy', 'camera=(), microphone=(), geolocation=(), payment=(), usb=()');

@@ -12,6 +12,14 @@ const UNCOUNTED = /^\/(healthz$|readyz$|metrics$|_app\/|api\/hooks\/)/;
 /** The link of a call for help, with the shape of its token. */
 const CALL = /^\/t\/([\w-]{22})(?:\/|$)/;
 
+/** The link of a patient's own page. */
+const PAGE = /^\/p\/([\w-]{22})(?:\/|$)/;
+
+/** The token in an address that could be the link to a patient's page; null in any other. */
+export function pageTokenIn(pathname: string): string | null {
+	return PAGE.exec(pathname)?.[1] ?? null;
+}
+
 /** The token in an address that could be the link of a call for help; null in any other. */
 export function linkTokenIn(pathname: string): string | null {
 	return CALL.exec(pathname)?.[1] ?? null;
