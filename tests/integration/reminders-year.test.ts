@@ -1,7 +1,8 @@
 import { and, asc, eq } from 'drizzle-orm';
 import fc from 'fast-check';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { addDays, instantOf, localDateOf } from '$lib/domain/core/time';
+import { WEEKDAYS, addDays, instantOf, localDateOf } from '$lib/domain/core/time';
+import type { BookVisits } from '$lib/domain/visits/forms';
 import { Problem } from '$lib/domain/core/errors';
 import { db } from '$lib/server/db';
 import { outbox, patients, visits } from '$lib/server/db/schema';
@@ -132,17 +133,11 @@ describe.each(ZONES)('property: a patient in %s', (zone) => {
 					}
 					now = until;
 				};
-				const input = story.series
-					? ({
-							kind: 'series',
-							from: date,
-							weekdays: ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'],
-							time: story.time,
-							count: 2,
-							minutes: 45,
-							place: 'East Gym'
-						} as const)
-					: ({ kind: 'single', startsAt, minutes: 45, place: 'East Gym' } as const);
+				const { time } = story;
+				const where = { minutes: 45, place: 'East Gym' };
+				const input: BookVisits = story.series
+					? { kind: 'series', from: date, weekdays: [...WEEKDAYS], time, count: 2, ...where }
+					: { kind: 'single', startsAt, ...where };
 				await unlessRefused(bookVisits(context(), episodeId, input));
 				const [visit] = await db().select().from(visits).where(eq(visits.episodeId, episodeId));
 				for (const deed of visit ? story.deeds : []) {

@@ -119,6 +119,7 @@ export const OUTSIDE: Record<string, Row> = {
 	'GET /demo': { roles: 'everyone', answers: [303] },
 	'GET /phones': { roles: 'everyone', answers: [303] },
 	'POST /sign-out': { roles: 'everyone', answers: [303] },
+	'GET /p/[token]/visits.ics': { roles: 'everyone', answers: [404] },
 	'GET /t/[token]/state': { roles: 'everyone', answers: [404] }
 };
 
@@ -126,6 +127,8 @@ export const OUTSIDE: Record<string, Row> = {
 export interface OpenForm {
 	fields: Record<string, string>;
 	answer: number;
+	/** What a page that does not say where it is gets; 403 where left out. A patient's page sends no referrer. */
+	fromNowhere?: number;
 }
 
 const PASSWORD = 'eight white egrets fly';
@@ -138,5 +141,6 @@ export const OPEN_FORMS: Record<string, OpenForm> = {
 		answer: 404
 	},
 	'/invite/[token]?/choose': { fields: { password: PASSWORD }, answer: 404 },
-	'/t/[token]': { fields: { deed: 'take' }, answer: 404 }
+	'/t/[token]': { fields: { deed: 'take' }, answer: 404 },
+	'/p/[token]': { fields: { deed: 'confirm', visit: 'none' }, answer: 404, fromNowhere: 404 }
 };
