@@ -61,6 +61,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 		fields: { note: 'Rang her back.' },
 		roles: ['coordinator', 'therapist']
 	},
+	'/patients/[id]?/wound': { fields: { wound: 'dry', sternum: '', note: '' }, roles: CLINICAL },
 	'/patients/[id]/refer': {
 		fields: { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' },
 		roles: REFERRING
@@ -71,6 +72,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 		fields: { deviationId: UNKNOWN },
 		roles: [...REFERRING, 'speech-therapist']
 	},
+	'/patients/[id]/clearances?/review': { fields: {}, roles: ['surgeon'] },
 	'/patients/[id]/level?/decide': {
 		fields: { to: '3', reason: 'Walks well.' },
 		roles: ['therapist', 'physician']

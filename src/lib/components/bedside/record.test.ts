@@ -18,6 +18,7 @@ const LINE: ClearanceLine = {
 	current: true
 };
 
+const NO_LOAD = { maxLoadKg: null, armStage: null };
 const BOARD: Pick<
 	Nameboard,
 	| 'level'
@@ -35,7 +36,7 @@ const BOARD: Pick<
 	betaBlocked: true,
 	rhythm: 'sinus',
 	operatedAt: '2026-02-27T08:00:00Z',
-	precautions: { basis: 'performed', sternal: true, endDue: '2026-04-24', maxElevationDeg: 90 },
+	precautions: { basis: 'performed', sternal: true, endDue: '2026-04-24', maxElevationDeg: 90, ...NO_LOAD },
 	clearances: [LINE],
 	limits: { unit: [], patient: [] },
 	wordings: []
@@ -85,7 +86,13 @@ describe('recordOf', () => {
 	});
 
 	it('keeps the precautions where no operation is on record, and drops them where they were ended', () => {
-		const ended = { basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null } as const;
+		const ended = {
+			basis: 'performed',
+			sternal: false,
+			endDue: null,
+			maxElevationDeg: null,
+			...NO_LOAD
+		} as const;
 		const none = { ...ended, basis: 'none' } as const;
 		expect(recordOf({ ...BOARD, operatedAt: null, precautions: none }, TODAY).sternotomy).toBe(true);
 		expect(recordOf({ ...BOARD, precautions: ended }, TODAY).sternotomy).toBe(false);

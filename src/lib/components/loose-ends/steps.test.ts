@@ -34,6 +34,7 @@ describe('nextStep', () => {
 		['clearance', 'surgeon', 'Answer', '/patients/e1/clearances/x1', null],
 		['clearance-question', 'therapist', 'Answer', '/patients/e1/clearances/x1', null],
 		['deviation', 'surgeon', 'Seen', '/patients/e1/clearances', '/api/deviations/x1/acknowledge'],
+		['precautions-due', 'surgeon', 'Decide', '/patients/e1/clearances', null],
 		['referral', 'therapist', 'Accept', '/patients/e1/threads/t1', '/api/referrals/x1/accept'],
 		['mention', 'nurse', 'Answer', '/patients/e1/threads/t1', null],
 		['visit-unconfirmed', 'coordinator', 'Call', '/patients/e1/visits#visit-x1', null],

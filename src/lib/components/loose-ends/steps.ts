@@ -43,6 +43,8 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 				href: placeOf(end) ?? routes.looseEnds(),
 				deed: `/api/deviations/${id}/acknowledge`
 			};
+		case 'precautions-due':
+			return open(m.home_step_decide(), episodeId ? routes.clearances(episodeId) : routes.looseEnds());
 		case 'referral':
 			return {
 				label: m.home_step_accept(),
@@ -89,6 +91,7 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 		case 'message-failed':
 		case 'inbound':
 		case 'sign-off':
+		case 'precautions-due':
 			return null;
 	}
 }

@@ -62,6 +62,8 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';
+		case 'precautions-due':
+			return m.home_asker_precautions_due({ day: when(Date.parse(end.since), reader) });
 		case 'visit-unconfirmed':
 		case 'inbound':
 			return '';

@@ -29,11 +29,14 @@ describe('dayWords', () => {
 });
 
 describe('bewareWords', () => {
+	const NO_FIGURES = { maxElevationDeg: null, maxLoadKg: null, armStage: null };
 	const sternal: Precautions = {
 		basis: 'performed',
 		sternal: true,
 		endDue: '2026-04-26',
-		maxElevationDeg: 45
+		maxElevationDeg: 45,
+		maxLoadKg: null,
+		armStage: null
 	};
 	it.each<[string, Precautions, string[]]>([
 		['2026-04-25T22:59:59Z', sternal, ['Sternal precautions, end due Sun 26 Apr', 'arms to 45°']],
@@ -41,17 +44,17 @@ describe('bewareWords', () => {
 		['2026-04-26T23:00:00Z', sternal, ['Sternal precautions, end was due Sun 26 Apr', 'arms to 45°']],
 		[
 			'2026-03-03T09:00:00Z',
-			{ basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null },
+			{ basis: 'performed', sternal: false, endDue: null, ...NO_FIGURES },
 			['No sternal precautions']
 		],
 		[
 			'2026-03-03T09:00:00Z',
-			{ basis: 'planned', sternal: false, endDue: null, maxElevationDeg: null },
+			{ basis: 'planned', sternal: false, endDue: null, ...NO_FIGURES },
 			['Precautions begin with the operation']
 		],
 		[
 			'2026-03-03T09:00:00Z',
-			{ basis: 'none', sternal: false, endDue: null, maxElevationDeg: null },
+			{ basis: 'none', sternal: false, endDue: null, ...NO_FIGURES },
 			['Precautions not known']
 		]
 	])('at %s of %j: %j', (now, precautions, words) => {

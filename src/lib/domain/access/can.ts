@@ -20,6 +20,7 @@ export const PERMISSIONS = [
 	'clearance.ask',
 	'clearance.decide',
 	'clearance.withdraw',
+	'precautions.review',
 	'session.read',
 	'session.record',
 	'wound.note',
@@ -96,6 +97,9 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return subject.clearanceKind === undefined
 				? among(role, 'surgeon', 'physician', 'speech-therapist')
 				: decides(role, subject.clearanceKind);
+		// Ending the precautions is the surgeon's, who need not wait to be asked.
+		case 'precautions.review':
+			return role === 'surgeon';
 		case 'wound.note':
 			return clinical;
 		case 'session.record':

@@ -1,5 +1,5 @@
 import { expect, it } from 'vitest';
-import { kilogramsOf, sternalAdvice, type SternalGrade } from './sternum';
+import { kilogramsOf, sternalAdvice, sternalBans, type SternalGrade } from './sternum';
 
 // Scale: El-Ansary 2018 (doi 10.15344/2455-7498/2018/140); what follows is from memory.
 it.each<[SternalGrade, boolean, boolean, boolean]>([
@@ -19,4 +19,23 @@ it.each([
 	[10, 4.54]
 ])('%d lb are %d kg', (pounds, kilograms) => {
 	expect(kilogramsOf(pounds)).toBeCloseTo(kilograms, 2);
+});
+
+// Common practice, no published source.
+it.each([
+	[undefined, 'Lifting either arm above the height allowed.', 'Lifting more than the load allowed.'],
+	[
+		{ maxElevationDeg: 45, maxLoadKg: null },
+		'Lifting either arm above 45 degrees.',
+		'Lifting any load: none is stated as allowed.'
+	],
+	[
+		{ maxElevationDeg: 70, maxLoadKg: 2.5 },
+		'Lifting either arm above 70 degrees.',
+		'Lifting more than 2.5 kg.'
+	]
+])('with %j the precautions forbid: %s %s', (allowed, height, load) => {
+	const bans = sternalBans(allowed);
+	expect([bans[2], bans[6]]).toEqual([height, load]);
+	expect(bans).toHaveLength(7);
 });

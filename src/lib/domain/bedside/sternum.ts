@@ -3,6 +3,8 @@
  * and 2 mean (slight; moderate, in part) and what follows from them is from memory and needs local consent. Loads
  * are given in pounds by some leaflets and in kilograms here.
  */
+import { plain } from './numbers';
+
 export const STERNAL_GRADES = [0, 1, 2, 3] as const;
 export type SternalGrade = (typeof STERNAL_GRADES)[number];
 
@@ -26,13 +28,32 @@ export function kilogramsOf(pounds: number): number {
 	return pounds * KG_PER_LB;
 }
 
-/** What sternal precautions forbid: common practice, no published source; advice differs between hospitals. */
-export const STERNAL_BANS = [
-	'Pushing up through the arms.',
-	'Pulling, or being pulled by an arm.',
-	'Lifting either arm above the height allowed.',
-	'Reaching behind the back.',
-	'Leaning or lying on an arm.',
-	'Crutches.',
-	'Lifting more than the load allowed.'
-] as const;
+/** How far arms may go for one patient, from the arm stage in force and its limits. */
+export interface ArmsAllowed {
+	/** Degrees from the side of the body. */
+	readonly maxElevationDeg: number | null;
+	/** Kilograms; null where no load is stated, and then nothing is lifted. */
+	readonly maxLoadKg: number | null;
+}
+
+/**
+ * What sternal precautions forbid: common practice, no published source; advice differs between hospitals.
+ * @param allowed of one patient; left out, the lines speak of no figure
+ */
+export function sternalBans(allowed?: ArmsAllowed): string[] {
+	return [
+		'Pushing up through the arms.',
+		'Pulling, or being pulled by an arm.',
+		allowed?.maxElevationDeg == null
+			? 'Lifting either arm above the height allowed.'
+			: `Lifting either arm above ${plain(allowed.maxElevationDeg)} degrees.`,
+		'Reaching behind the back.',
+		'Leaning or lying on an arm.',
+		'Crutches.',
+		allowed === undefined
+			? 'Lifting more than the load allowed.'
+			: allowed.maxLoadKg === null
+				? 'Lifting any load: none is stated as allowed.'
+				: `Lifting more than ${plain(allowed.maxLoadKg)} kg.`
+	];
+}

@@ -17,7 +17,14 @@ const WOUND = {
 	sternum: null,
 	note: null
 } as const;
-const PRECAUTIONS = { basis: 'performed', sternal: true, endDue: '2026-04-26', maxElevationDeg: 45 } as const;
+const PRECAUTIONS = {
+	basis: 'performed',
+	sternal: true,
+	endDue: '2026-04-26',
+	maxElevationDeg: 45,
+	maxLoadKg: null,
+	armStage: null
+} as const;
 
 const SHOWN: ShownEvidence = {
 	at: '2026-03-02T12:00:00.000Z',
@@ -52,6 +59,11 @@ describe('newsSince', () => {
 		[
 			'arms that may go up',
 			{ precautions: { ...PRECAUTIONS, maxElevationDeg: 90 } },
+			news({ changed: ['precautions'] })
+		],
+		[
+			'a load that may be lifted',
+			{ precautions: { ...PRECAUTIONS, maxLoadKg: 2 } },
 			news({ changed: ['precautions'] })
 		],
 		['what this person may not see', { sessions: null, escalations: null }, null]

@@ -48,7 +48,13 @@ function facts({ procedure, approach, operatedOn, wound, level, ...rest }: Shown
 		mark('wound', wound?.at, wound?.wound, wound?.sternum),
 		mark('level', level),
 		mark('heart', betaBlocked, rhythm),
-		mark('precautions', precautions?.basis, precautions?.sternal, precautions?.maxElevationDeg)
+		mark(
+			'precautions',
+			precautions?.basis,
+			precautions?.sternal,
+			precautions?.maxElevationDeg,
+			precautions?.maxLoadKg
+		)
 	];
 }
 

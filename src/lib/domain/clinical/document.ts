@@ -9,7 +9,7 @@ import { LEVEL_BANDS, LEVEL_BANDS_SOURCE } from '../bedside/levels';
 import { SOURCES, type SourceStatus } from '../bedside/limits/sources';
 import { DEFAULT_LIMITS, DEFAULTS_VERSION } from '../bedside/limits/table';
 import { rulebook, type RulebookRow } from '../bedside/rulebook';
-import { STERNAL_BANS } from '../bedside/sternum';
+import { sternalBans } from '../bedside/sternum';
 import { CALCULATORS } from '../calculators/rulebook';
 import { CAUTIONS, CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
 
@@ -117,7 +117,7 @@ function clearanceOf({ clearance, heldBy }: Activity): string {
 }
 
 function precautions(): string {
-	return [PRECAUTIONS_LEAD, bullets(STERNAL_BANS)].join('\n\n');
+	return [PRECAUTIONS_LEAD, bullets(sternalBans())].join('\n\n');
 }
 
 function calculators(): string {

@@ -16,16 +16,27 @@ describe('precautionsOf', () => {
 
 	it('ends when somebody has ended them, and that is a statement', () => {
 		const ended = precautionsOf(done, null, true);
-		expect(ended).toEqual({ basis: 'performed', sternal: false, endDue: null, maxElevationDeg: null });
+		expect(ended).toEqual({
+			basis: 'performed',
+			sternal: false,
+			endDue: null,
+			maxElevationDeg: null,
+			maxLoadKg: null,
+			armStage: null
+		});
 		expect(mayHold(ended)).toBe(false);
 	});
 
 	it.each([
-		[null, 45],
-		[{ maxElevationDeg: null }, 90],
-		[{ maxElevationDeg: 60 }, 60]
-	])('arm stage %j: arms to %i', (armStage, degrees) => {
-		expect(precautionsOf(done, armStage, false).maxElevationDeg).toBe(degrees);
+		[null, 45, null],
+		[{ maxElevationDeg: null, maxLoadKg: null, reviewOn: null }, 90, null],
+		[{ maxElevationDeg: 60, maxLoadKg: 2, reviewOn: '2026-04-01' }, 60, 2]
+	])('arm stage %j: arms to %i, lifting %s', (armStage, degrees, load) => {
+		expect(precautionsOf(done, armStage, false)).toMatchObject({
+			maxElevationDeg: degrees,
+			maxLoadKg: load,
+			armStage: armStage && { reviewOn: armStage.reviewOn }
+		});
 	});
 
 	it('asks for the end after eight weeks: common practice, no published source', () => {

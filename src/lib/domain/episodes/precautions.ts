@@ -4,7 +4,9 @@ import { addDays, type LocalDate } from '../core/time';
 /** Arms stay below this until the arm stage is cleared: common practice, no published source. */
 export const ARM_LIMIT_BEFORE_CLEARANCE_DEG = 45;
 /** Eight weeks; published advice runs from 6 to 12 weeks, so the end is a surgeon's decision and this only a date to ask. */
-const STERNAL_DAYS = 56;
+export const STERNAL_DAYS = 56;
+/** When a decision did not end them it falls due again: common practice, no published source. */
+export const REVIEW_AGAIN_DAYS = 14;
 
 /** What precautions are known from: an operation that has begun, one that is to come, or none on record. */
 export type PrecautionsBasis = 'performed' | 'planned' | 'none';
@@ -18,6 +20,10 @@ export interface Precautions {
 	endDue: LocalDate | null;
 	/** Arm elevation allowed now, degrees; null without a limit. */
 	maxElevationDeg: number | null;
+	/** What the arms may lift, kg; null where none is stated, and then nothing is lifted, pushed or pulled. */
+	maxLoadKg: number | null;
+	/** The arm stage is cleared, and until which day where it has one. */
+	armStage: { reviewOn: LocalDate | null } | null;
 }
 
 /**
@@ -27,18 +33,27 @@ export interface Precautions {
  */
 export function precautionsOf(
 	operation: { approach: Approach; day: LocalDate; begun: boolean } | null,
-	armStage: { maxElevationDeg: number | null } | null,
+	armStage: { maxElevationDeg: number | null; maxLoadKg: number | null; reviewOn: LocalDate | null } | null,
 	ended: boolean
 ): Precautions {
 	const basis = basisOf(operation);
 	if (!operation || basis !== 'performed' || operation.approach !== 'sternotomy' || ended) {
-		return { basis, sternal: false, endDue: null, maxElevationDeg: null };
+		return {
+			basis,
+			sternal: false,
+			endDue: null,
+			maxElevationDeg: null,
+			maxLoadKg: null,
+			armStage: null
+		};
 	}
 	return {
 		basis,
 		sternal: true,
 		endDue: addDays(operation.day, STERNAL_DAYS),
-		maxElevationDeg: armStage ? (armStage.maxElevationDeg ?? 90) : ARM_LIMIT_BEFORE_CLEARANCE_DEG
+		maxElevationDeg: armStage ? (armStage.maxElevationDeg ?? 90) : ARM_LIMIT_BEFORE_CLEARANCE_DEG,
+		maxLoadKg: armStage?.maxLoadKg ?? null,
+		armStage: armStage && { reviewOn: armStage.reviewOn }
 	};
 }
 
@@ -47,6 +62,11 @@ function basisOf(operation: { begun: boolean } | null): PrecautionsBasis {
 		return 'none';
 	}
 	return operation.begun ? 'performed' : 'planned';
+}
+
+/** Whether their end waits on the surgeon on that day of the hospital's calendar. */
+export function endFallsDue({ sternal, endDue }: Precautions, today: LocalDate): boolean {
+	return sternal && endDue !== null && endDue <= today;
 }
 
 /** Whether precautions hold, or nobody can say that they do not: what a bedside goes by. */

@@ -12,6 +12,7 @@ import type { ClearanceLimits } from '../clearances/forms';
 import type { LocalActivity } from '../bedside/activities/local';
 import type { LocalLayers } from '../bedside/limits/layers';
 import type { HangingEnd } from '../loose-ends/hanging';
+import type { WoundNote } from '../wounds/views';
 import type { MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
 
@@ -123,6 +124,8 @@ export interface Nameboard {
 	wordings: LocalActivity[];
 	/** What lies over the default limits for this patient; empty for who may not see sessions. */
 	limits: LocalLayers;
+	/** The newest notes about wound and breastbone, newest first; empty for who may not see sessions. */
+	wounds: WoundNote[];
 	referrals: {
 		id: string;
 		service: Service;

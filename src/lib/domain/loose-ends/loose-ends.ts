@@ -12,6 +12,7 @@ export const LOOSE_END_KINDS = [
 	'clearance',
 	'clearance-question',
 	'deviation',
+	'precautions-due',
 	'referral',
 	'mention',
 	'sign-off',
@@ -93,7 +94,19 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'clearance-question':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'precautions-due':
+			return can(person, 'precautions.review', unit) ? 'mine' : null;
 		case 'clearance':
+			// A surgeon who looks at the precautions of a patient puts the question to the surgeons, themselves included.
+			if (thing.code === 'precautions-end' && can(person, 'precautions.review', unit)) {
+				return 'mine';
+			}
+			return (
+				asked ??
+				(can(person, 'clearance.decide', { ...unit, clearanceKind: thing.code as ClearanceKind })
+					? 'mine'
+					: null)
+			);
 		case 'deviation':
 			return (
 				asked ??

@@ -44,6 +44,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 			return FIRST_RANK.physician;
 		case 'deviation':
 			return FIRST_RANK.deviation;
+		case 'precautions-due':
 		case 'clearance':
 		case 'clearance-question':
 		case 'mention':

@@ -29,6 +29,8 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'recheck':
 		case 'physician-to-tell':
 			return holder === null ? 'nursing' : STRAND_OF_ROLE[holder];
+		case 'precautions-due':
+			return 'medical';
 		case 'clearance':
 		case 'deviation':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
@@ -52,6 +54,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 	switch (kind) {
 		case 'escalation':
 			return ROLES.filter((role) => can(anyone(role), 'escalation.take'));
+		case 'precautions-due':
 		case 'clearance':
 		case 'deviation':
 			return ROLES.filter((role) =>

@@ -14,3 +14,20 @@ export const woundNoteBody = fields.refine(
 	'Nothing is noted: give wound, sternum or note.'
 );
 export type WoundNoteInput = z.infer<typeof woundNoteBody>;
+
+/** The same as a page posts it: what was not looked at is empty. */
+export const woundNoteForm = z.strictObject({
+	wound: z.enum(['', ...WOUND_FINDINGS]),
+	sternum: z.enum(['', ...STERNUM_FINDINGS]),
+	note: z.string().trim().max(500, 'The note is longer than 500 characters.')
+});
+export type WoundNoteFields = z.infer<typeof woundNoteForm>;
+
+/** What a page posted, without what was not looked at. */
+export function woundNoteOf({ wound, sternum, note }: WoundNoteFields): WoundNoteInput {
+	return {
+		...(wound === '' ? {} : { wound }),
+		...(sternum === '' ? {} : { sternum }),
+		...(note === '' ? {} : { note })
+	};
+}

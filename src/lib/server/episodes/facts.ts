@@ -186,7 +186,13 @@ function derive(
 				day: localDateOf(operation.operatedAt, zone),
 				begun: operation.operatedAt <= now
 			},
-			armStage ? { maxElevationDeg: armStage.limits?.maxElevationDeg ?? null } : null,
+			armStage
+				? {
+						maxElevationDeg: armStage.limits?.maxElevationDeg ?? null,
+						maxLoadKg: armStage.limits?.maxLoadKg ?? null,
+						reviewOn: armStage.reviewOn
+					}
+				: null,
 			inForce.some((row) => row.kind === 'precautions-end')
 		)
 	};

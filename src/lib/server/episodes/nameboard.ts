@@ -11,9 +11,13 @@ import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
 import { wordingsOf } from '../limits/activities';
 import { layersOf } from '../limits/queries';
+import { listWoundNotes } from '../wounds/queries';
 import { visitsOfEpisode } from '../visits/queries';
 import { factsOfOne, levelsDecide } from './facts';
 import { patientLine } from './list';
+
+/** So many notes of the wound tell how it goes. */
+const WOUND_NOTES = 5;
 
 /** Everything on the nameboard of one patient, as far as this person may see it. */
 export async function getNameboard(
@@ -25,7 +29,7 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, unseen, visits, calls, layers, wordings] = await Promise.all([
+	const [who, asks, cleared, unseen, visits, calls, layers, wordings, wounds] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
 		listClearances(db, episodeId, derived.operation?.id ?? null, now),
@@ -33,7 +37,8 @@ export async function getNameboard(
 		visitsOfEpisode(db, episodeId),
 		clinical ? escalationsOf(db, episodeId) : [],
 		clinical ? layersOf(db, episode, now) : NO_LAYERS,
-		clinical ? wordingsOf(db, episode.unitId) : []
+		clinical ? wordingsOf(db, episode.unitId) : [],
+		clinical ? listWoundNotes(db, episodeId, WOUND_NOTES) : []
 	]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
@@ -61,6 +66,7 @@ export async function getNameboard(
 		nothingByMouth: episode.phase === 'inpatient' && derived.nothingByMouth,
 		levelReached: Math.max(episode.level, episode.levelReached),
 		wordings,
+		wounds,
 		limits: layers,
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),

@@ -28,6 +28,8 @@ export function titleOf(thing: OpenThing): string {
 			});
 		case 'deviation':
 			return m.home_title_deviation({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
+		case 'precautions-due':
+			return m.home_title_precautions_due();
 		case 'referral':
 			return m.home_title_referral({ service: SERVICE_WORDS[thing.code as Service](), text });
 		case 'sign-off':

@@ -6,16 +6,24 @@ import { users, woundNotes } from '../db/schema';
 
 /** The newest note about wound and breastbone; null when nobody has noted anything. */
 export async function newestWoundNote(db: Reader, episodeId: string): Promise<WoundNote | null> {
-	const [row] = await db
+	const [newest = null] = await listWoundNotes(db, episodeId, 1);
+	return newest;
+}
+
+/** The newest notes about wound and breastbone, newest first. */
+export async function listWoundNotes(db: Reader, episodeId: string, limit: number): Promise<WoundNote[]> {
+	const rows = await db
 		.select({ noted: woundNotes, by: users.name })
 		.from(woundNotes)
 		.innerJoin(users, eq(users.id, woundNotes.notedBy))
 		.where(eq(woundNotes.episodeId, episodeId))
 		.orderBy(desc(woundNotes.notedAt), desc(woundNotes.id))
-		.limit(1);
-	if (!row) {
-		return null;
-	}
-	const { wound, sternum, note, notedAt } = row.noted;
-	return { at: toRfc3339(notedAt), by: row.by, wound, sternum, note };
+		.limit(limit);
+	return rows.map(({ noted: { wound, sternum, note, notedAt }, by }) => ({
+		at: toRfc3339(notedAt),
+		by,
+		wound,
+		sternum,
+		note
+	}));
 }
