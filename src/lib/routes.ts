@@ -29,6 +29,7 @@ export const routes = {
 	closedDays: () => '/visits/closed-days',
 	cover: () => '/cover',
 	rules: (unitId?: string) => (unitId ? `/rules?unit=${unitId}` : '/rules'),
+	calculators: () => '/rules/calculators',
 	account: () => '/account',
 	level: (episodeId: string) => `/patients/${episodeId}/level`,
 	patientLimits: (episodeId: string) => `/patients/${episodeId}/limits`,

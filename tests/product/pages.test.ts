@@ -18,6 +18,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/visits': SEEING,
 	'/cover': EVERYBODY,
 	'/rules': EVERYBODY,
+	'/rules/calculators': EVERYBODY,
 	'/account': EVERYBODY,
 	'/admin/limits': ['admin'],
 	'/admin/limits/activities': ['admin'],

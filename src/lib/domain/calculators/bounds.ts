@@ -9,5 +9,8 @@ export const CALCULATOR_BOUNDS = {
 	stepsPerMin: { low: 0, high: 60, unit: 'steps/min' },
 	stepHeightM: { low: 0, high: 1, unit: 'm' },
 	watts: { low: 0, high: 600, unit: 'W' },
+	corridorM: { low: 5, high: 200, unit: 'm' },
+	laps: { low: 0, high: 200, unit: 'laps' },
+	walkMinutes: { low: 0.5, high: 120, unit: 'minutes' },
 	fraction: { low: 0, high: 1, unit: 'as a fraction (0.4 is 40 %)' }
 } as const;

@@ -9,6 +9,7 @@ import { numberWithin, oneOf, shown, yesNo } from '../bedside/form-fields';
 import { CALCULATOR_BOUNDS as OURS } from './bounds';
 import { plain } from '../bedside/numbers';
 import { MAXIMUM_METHODS, predictedMaximum } from './heart-rate-target';
+import { MEANINGFUL_GROUPS } from './walk-test';
 
 const FRACTIONS_MAX = 20;
 
@@ -99,3 +100,20 @@ export const pressuresBody = z
 		}
 	});
 export type PressuresInput = z.output<typeof pressuresBody>;
+
+/** Counted laps of a corridor, there and back, and the part of a lap walked last. */
+export const corridorBody = z.object({
+	lengthM: numberWithin('lengthM', OURS.corridorM),
+	laps: numberWithin('laps', OURS.laps),
+	minutes: numberWithin('minutes', OURS.walkMinutes),
+	extraM: numberWithin('extraM', OURS.corridorM).nullish()
+});
+export type CorridorInput = z.output<typeof corridorBody>;
+
+/** Two walks of one patient, and the group whose smallest change that matters they are held against. */
+export const walkChangeBody = z.object({
+	beforeM: numberWithin('beforeM', OURS.walkedM),
+	afterM: numberWithin('afterM', OURS.walkedM),
+	against: oneOf('against', MEANINGFUL_GROUPS)
+});
+export type WalkChangeInput = z.output<typeof walkChangeBody>;

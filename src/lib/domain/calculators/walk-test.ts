@@ -46,14 +46,17 @@ function predicted(sex: 'male' | 'female', { heightCm, ageYears, weightKg }: Wal
 		: 2.11 * heightCm - 2.29 * weightKg - 5.78 * ageYears + 667;
 }
 
+/** Whom the smallest change that matters was measured in. */
+export const MEANINGFUL_GROUPS = ['coronary', 'cardiac-pooled', 'heart-failure', 'respiratory'] as const;
+export type MeaningfulChange = (typeof MEANINGFUL_GROUPS)[number];
+
 /** The smallest change between two walks that patients notice, metres, by whom it was measured in. */
-export const MEANINGFUL_CHANGES = {
+export const MEANINGFUL_CHANGES: Readonly<Record<MeaningfulChange, { metres: number; source: string }>> = {
 	coronary: { metres: 25, source: 'Gremeaux 2011, coronary artery disease' },
 	'cardiac-pooled': { metres: 23, source: 'Daynes 2025, pooled cardiac groups' },
 	'heart-failure': { metres: 36, source: 'PubMed 25049008, heart failure' },
 	respiratory: { metres: 30, source: 'ERS/ATS 2014 (from memory, not yet verified)' }
-} as const;
-export type MeaningfulChange = keyof typeof MEANINGFUL_CHANGES;
+};
 
 /** How two walks differ, metres, and whether the difference is one that matters. */
 export function walkChange(
