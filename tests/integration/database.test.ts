@@ -101,6 +101,7 @@ describe('append-only tables', () => {
 		'level_decisions',
 		'outbox_attempts',
 		'patient_amendments',
+		'prescribed_ranges',
 		'readings',
 		'unit_activity_changes',
 		'unit_limit_changes',

@@ -54,6 +54,15 @@ export const API: Record<string, Row> = {
 	'POST /api/sign-offs/[id]/refuse': { roles: ['therapist', 'physician', 'surgeon'], answers: [422] },
 	'GET /api/episodes/[id]/limits': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/limits': { roles: ['physician', 'surgeon'], answers: [422] },
+	'GET /api/episodes/[id]/prescribed-ranges': { roles: CLINICAL, answers: [404] },
+	'POST /api/episodes/[id]/prescribed-ranges': {
+		roles: ['therapist', 'physician', 'surgeon'],
+		answers: [422]
+	},
+	'POST /api/episodes/[id]/prescribed-ranges/end': {
+		roles: ['therapist', 'physician', 'surgeon'],
+		answers: [404]
+	},
 	'POST /api/limits/[id]/end': { roles: ['physician', 'surgeon'], answers: [404] },
 	'POST /api/episodes/[id]/wound-notes': { roles: CLINICAL, answers: [422] },
 	'GET /api/episodes/[id]/sessions': { roles: CLINICAL, answers: [404] },

@@ -83,6 +83,11 @@ export const ACTIONS: Record<string, ActionRow> = {
 		fields: { key: 'systolic-ceiling', value: '170', untilOn: '2026-12-01', ...WHY },
 		roles: REFERRING
 	},
+	'/patients/[id]/limits?/prescribe': {
+		fields: { hrMax: '118', method: 'walk-test', note: '' },
+		roles: SIGNING
+	},
+	'/patients/[id]/limits?/endRange': { fields: {}, roles: SIGNING },
 	'/patients/[id]/limits?/end': { fields: { id: UNKNOWN }, roles: REFERRING },
 	// There is no such unit: the patient stays where they are for the other rows.
 	'/patients/[id]/move?/move': { fields: { unit: 'Nowhere', bed: 'A1' }, roles: ['coordinator', 'nurse'] },

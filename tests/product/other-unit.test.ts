@@ -30,6 +30,7 @@ const BODIES: Record<string, object> = {
 	'POST /api/episodes/[id]/clearances': { kind: 'treadmill', question: 'May it start?' },
 	'POST /api/episodes/[id]/level': { to: 3, reason: 'Walks well.' },
 	'POST /api/episodes/[id]/limits': { key: 'systolic-ceiling', value: 170, untilOn: '2099-12-01', ...WHY },
+	'POST /api/episodes/[id]/prescribed-ranges': { hrMax: 118, method: 'walk-test' },
 	'POST /api/episodes/[id]/wound-notes': { wound: 'dry' },
 	'POST /api/episodes/[id]/sessions': SESSION,
 	'POST /api/episodes/[id]/escalations': CALL,

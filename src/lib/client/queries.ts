@@ -5,7 +5,7 @@ import type { EpisodeListItem, Nameboard } from '$lib/domain/episodes/views';
 import { MINUTE } from '$lib/domain/core/time';
 import type { Alarm, EscalationView } from '$lib/domain/escalations/views';
 import type { LevelView } from '$lib/domain/levels/views';
-import type { PatientLimitLine } from '$lib/domain/limits/views';
+import type { PatientLimitLine, RangeLine } from '$lib/domain/limits/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
 import type { ThreadView } from '$lib/domain/referrals/views';
@@ -55,6 +55,8 @@ export const queries = {
 	/** Below the episode's key, because whatever changes the episode's limits is an event of the episode. */
 	patientLimits: (episodeId: string, initial: List<PatientLimitLine>) =>
 		query(['episode', episodeId, 'limits'], `/api/episodes/${episodeId}/limits`, initial),
+	ranges: (episodeId: string, initial: List<RangeLine>) =>
+		query(['episode', episodeId, 'ranges'], `/api/episodes/${episodeId}/prescribed-ranges`, initial),
 	clearance: (id: string, initial: ClearanceView) =>
 		query(['clearance', id], `/api/clearances/${id}`, initial),
 	sessions: (episodeId: string, initial: List<SessionLine>) =>

@@ -36,6 +36,7 @@ const ABOUT: Record<keyof typeof queries, readonly Topic[]> = {
 	thread: ['thread', 'referral', 'clearance'],
 	level: ['session', 'episode'],
 	patientLimits: ['episode'],
+	ranges: ['episode'],
 	clearance: ['clearance'],
 	sessions: ['session'],
 	visits: ['visit', 'message'],

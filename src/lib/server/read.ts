@@ -11,6 +11,7 @@ import type { PageRequest } from './http/paging';
 import { getLevel } from './levels/queries';
 import { listActivities } from './limits/activities';
 import { patientLimitsOf, unitLimitsOf } from './limits/queries';
+import { rangesOf } from './limits/ranges';
 import { looseEndsOf } from './loose-ends/queries';
 import { troublesFor } from './messages/trouble';
 import { listColleagues } from './threads/people';
@@ -34,6 +35,7 @@ export const read = {
 	unitLimits: (unitId: string) => unitLimitsOf(db(), unitId),
 	patientLimits: ({ actor, now }: PersonContext, episodeId: string) =>
 		patientLimitsOf(db(), actor, episodeId, now),
+	ranges: ({ actor }: PersonContext, episodeId: string) => rangesOf(db(), actor, episodeId),
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
 	alarms: ({ actor }: PersonContext) => alarmsOf(db(), actor),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id),

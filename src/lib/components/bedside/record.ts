@@ -1,6 +1,7 @@
 import type { ClearanceInForce, LimitSet, Phase } from '$lib/domain/bedside';
 import type { LocalActivity } from '$lib/domain/bedside/activities/local';
 import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
+import type { PrescribedRange } from '$lib/domain/bedside/limits/prescribed';
 import { isInForce } from '$lib/domain/clearances/states';
 import { CLEARANCE_KINDS, LEVELS, type ClearanceKind, type Level, type Rhythm } from '$lib/domain/core/codes';
 import type { LocalDate } from '$lib/domain/core/time';
@@ -16,6 +17,8 @@ export interface BedsideRecord {
 	clearances: ClearanceInForce[];
 	/** The limits of unit and patient that judge, as they are when the record is read. */
 	limits: LimitSet;
+	/** The range prescribed for an outpatient, laid into the limits already. */
+	range: PrescribedRange | null;
 	/** What the unit says about activities in place of the catalogue. */
 	wordings: readonly LocalActivity[];
 }
@@ -45,6 +48,7 @@ export function recordOf(board: Known, today: LocalDate): BedsideRecord {
 		betaBlocked: board.betaBlocked,
 		rhythm: board.rhythm,
 		wordings: board.wordings,
+		range: board.phase === 'outpatient' ? (board.limits.prescribed ?? null) : null,
 		limits: limitsOfPatient(setOfUnit(board.limits.unit, board.phase), board.limits),
 		sternotomy: board.operatedAt === null || board.precautions.sternal,
 		clearances: CLEARANCE_KINDS.flatMap((kind) => {

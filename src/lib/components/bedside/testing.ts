@@ -12,6 +12,7 @@ export const RECORD: BedsideRecord = {
 	sternotomy: true,
 	clearances: [],
 	limits: limitsFor('strict'),
+	range: null,
 	wordings: []
 };
 

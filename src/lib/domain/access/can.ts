@@ -25,6 +25,7 @@ export const PERMISSIONS = [
 	'session.record',
 	'wound.note',
 	'limit.set-for-patient',
+	'range.prescribe',
 	'limit.change',
 	'level.decide',
 	'sign-off.decide',
@@ -56,7 +57,7 @@ export function can(person: Person, permission: Permission, subject: Subject = {
 	if (subject.unitId !== undefined && !person.unitIds.includes(subject.unitId)) {
 		return false;
 	}
-	if (permission === 'sign-off.decide') {
+	if (permission === 'sign-off.decide' || permission === 'range.prescribe') {
 		return isSenior(person) && roleMay(person.role, permission, subject);
 	}
 	return roleMay(person.role, permission, subject);
@@ -106,6 +107,9 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
 		case 'limit.set-for-patient':
 			return among(role, 'physician', 'surgeon');
+		// The programme's range replaces the general ceilings, so a junior does not set it.
+		case 'range.prescribe':
+			return among(role, 'physician', 'surgeon', 'therapist');
 		case 'limit.change':
 			return role === 'admin';
 		case 'level.decide':

@@ -55,6 +55,8 @@ export const AUDIT_ACTIONS = [
 	'patient.amended',
 	'patient-page.sent',
 	'patient-page.ended',
+	'range.ended',
+	'range.prescribed',
 	'referral.accepted',
 	'referral.asked',
 	'referral.closed',

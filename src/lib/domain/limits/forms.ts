@@ -3,6 +3,9 @@ import { z } from 'zod';
 import { ACTIVITY_CODES } from '../bedside/activities/codes';
 import { LIMIT_KEYS, SETS } from '../bedside/codes';
 import { reason, text, typedDay } from '../core/fields';
+import { BOUNDS } from '../bedside/bounds';
+import { numberWithin } from '../bedside/form-fields';
+import { PRESCRIBING_METHODS } from '../bedside/limits/prescribed';
 
 const setName = z.enum(SETS, `set is one of ${SETS.join(', ')}.`);
 const key = z.enum(LIMIT_KEYS, 'key is no limit of the response rules.');
@@ -43,6 +46,58 @@ export const setPatientLimitForm = setPatientLimitBody.extend({
 	value: value.optional(),
 	untilOn: typedDay('The last day')
 });
+
+const rangeShape = {
+	hrMin: numberWithin('hrMin', BOUNDS.hr).nullish(),
+	hrMax: numberWithin('hrMax', BOUNDS.hr).nullish(),
+	rpeMin: numberWithin('rpeMin', BOUNDS.rpe).nullish(),
+	rpeMax: numberWithin('rpeMax', BOUNDS.rpe).nullish(),
+	/** How its figures were found. */
+	method: z.enum(PRESCRIBING_METHODS, `method is one of ${PRESCRIBING_METHODS.join(', ')}.`)
+};
+
+/** A range for an outpatient; an end that is left out stays open, and at least one upper end is given. */
+export const prescribeRangeBody = z
+	.strictObject({ ...rangeShape, note: text('note', 300).optional() })
+	.superRefine((range, ctx) => {
+		for (const { path, message } of rangeFaults(range)) {
+			ctx.addIssue({ code: 'custom', path: [path], message });
+		}
+	});
+export type PrescribeRange = z.output<typeof prescribeRangeBody>;
+
+/** The same as a form posts it. */
+export const prescribeRangeForm = z.strictObject({
+	...rangeShape,
+	note: z.string().trim().max(300, 'note is longer than 300 characters.')
+});
+
+/** What the schema of each field cannot say: how the ends lie to each other. */
+export function rangeFaults(
+	range: Pick<z.output<typeof prescribeRangeForm>, 'hrMin' | 'hrMax' | 'rpeMin' | 'rpeMax'>
+): { path: 'hrMin' | 'hrMax' | 'rpeMin'; message: string }[] {
+	const below = (low: 'hrMin' | 'rpeMin', high: 'hrMax' | 'rpeMax') => {
+		const [from, to] = [range[low], range[high]];
+		return from != null && to != null && from > to
+			? [
+					{
+						path: low,
+						message: `${low} is ${from} and ${high} is ${to}: the range must not end below its start.`
+					}
+				]
+			: [];
+	};
+	const open =
+		range.hrMax == null && range.rpeMax == null
+			? [
+					{
+						path: 'hrMax' as const,
+						message: 'hrMax and rpeMax are missing: a range has at least one upper end.'
+					}
+				]
+			: [];
+	return [...below('hrMin', 'hrMax'), ...below('rpeMin', 'rpeMax'), ...open];
+}
 
 /** A span of a dose: from and to, both included. */
 const span = (name: string, max: number) =>

@@ -2,7 +2,7 @@ import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import { assess } from '$lib/domain/bedside/assess';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Assessment, SessionBody } from '$lib/domain/bedside/forms';
-import { limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
+import { limitsOfPatient, setOfUnit, type LocalLayers } from '$lib/domain/bedside/limits/layers';
 import type { LimitSet } from '$lib/domain/bedside/limits/limits';
 import { lackingClearance } from '$lib/domain/bedside/rules/clearances';
 import type { ClearanceKind } from '$lib/domain/core/codes';
@@ -10,7 +10,6 @@ import { Problem, invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
 import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
-import type { Tx } from '../db';
 import { factsDuring, type EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
 import { askForSignature } from '../levels/sign-off';
@@ -48,19 +47,22 @@ export function recordSession(
 			startedAt: parseRfc3339(input.startedAt),
 			endedAt: parseRfc3339(input.endedAt)
 		});
-		const judged = withRecord(input, episode, facts);
-		const lacking = lackingOf(judged, facts);
+		const told = withRecord(input, episode, facts);
+		const lacking = lackingOf(told, facts);
 		if (lacking.length > 0 && !input.deviation) {
 			throw clearanceNeeded(lacking.map(({ kind }) => kind));
 		}
-		const verdict = assess(judged, await limitsThatJudge(tx, episode, judged.context, input));
+		// The limits that held when the session ended, also where it is entered afterwards.
+		const layers = await layersOf(tx, episode, parseRfc3339(input.endedAt));
+		const judged = withRange(told, layers);
+		const verdict = assess(judged, limitsThatJudge(judged.context, episode, layers));
 		const of = { id: newId(), episodeId, operationId: facts.operation?.id ?? null };
 		const threadId = await threadForDeed(tx, episodeId, undefined);
 		await insertSession(tx, context, of, { ...input, context: judged.context }, verdict);
 		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);
 		await carryOver(tx, context, episode, input, verdict);
 		await askForSignature(tx, context, episode, of.id, input);
-		return told(of, threadId, summaryText(input, verdict, lacking), verdict, lacking);
+		return recorded(of, threadId, summaryText(input, verdict, lacking), verdict, lacking);
 	});
 }
 
@@ -78,14 +80,21 @@ function withRecord(input: SessionBody, episode: EpisodeRow, facts: EpisodeFacts
 	return { ...input, context: { ...context, phase, sternotomy, clearances, level: input.level } };
 }
 
-/** The limits of unit and patient that held when the session ended, also where it is entered afterwards. */
-async function limitsThatJudge(
-	tx: Tx,
-	episode: EpisodeRow,
+/** A range on record counts, and is kept with the session; without one, what the client was told to go by. */
+function withRange(told: Assessment, { prescribed }: LocalLayers): Assessment {
+	if (!prescribed) {
+		return told;
+	}
+	const { hrMin, hrMax, rpeMin, rpeMax } = prescribed;
+	return { ...told, context: { ...told.context, prescribed: { hrMin, hrMax, rpeMin, rpeMax } } };
+}
+
+/** The limits of unit, patient and range. */
+function limitsThatJudge(
 	{ set, phase }: Assessment['context'],
-	{ endedAt }: SessionBody
-): Promise<LimitSet> {
-	const layers = await layersOf(tx, episode, parseRfc3339(endedAt));
+	episode: EpisodeRow,
+	layers: LocalLayers
+): LimitSet {
 	return limitsOfPatient(set ?? setOfUnit(layers.unit, phase ?? episode.phase), layers);
 }
 
@@ -111,7 +120,7 @@ function refuseFuture(input: SessionBody, now: number): void {
 	}
 }
 
-function told(
+function recorded(
 	{ id, episodeId }: SessionOf,
 	threadId: string | null,
 	body: string,

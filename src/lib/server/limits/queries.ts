@@ -15,18 +15,20 @@ import { accessEpisode } from '../access/access';
 import type { Reader } from '../db';
 import { patientLimits, unitLimitChanges, units, users } from '../db/schema';
 import { env } from '../env';
+import { rangeAt } from './ranges';
 
-/** What lies over the default limits of one patient at an instant: the unit's changes and the patient's own. */
+/** What lies over the default limits of one patient at an instant: the unit's changes, the patient's own, a range. */
 export async function layersOf(
 	db: Reader,
 	episode: { id: string; unitId: string },
 	at: number
 ): Promise<LocalLayers> {
-	const [unit, patient] = await Promise.all([
+	const [unit, patient, prescribed] = await Promise.all([
 		changesOfUnit(db, episode.unitId, at),
-		limitsInForce(db, episode.id, at)
+		limitsInForce(db, episode.id, at),
+		rangeAt(db, episode.id, at)
 	]);
-	return { unit, patient };
+	return { unit, patient, prescribed };
 }
 
 /** The changes of a unit up to an instant, oldest first. */

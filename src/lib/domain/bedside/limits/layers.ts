@@ -13,6 +13,7 @@ import {
 	type LocalLimit,
 	type LocalLimits
 } from './limits';
+import { withRange, type PrescribedRange } from './prescribed';
 import { DEFAULT_LIMITS } from './table';
 
 /** A change that a unit made; without a key it chooses the set that judges the unit's inpatients. */
@@ -42,6 +43,8 @@ export interface PatientLimit {
 export interface LocalLayers {
 	readonly unit: readonly UnitChange[];
 	readonly patient: readonly PatientLimit[];
+	/** The range prescribed for an outpatient; null or left out where there is none. */
+	readonly prescribed?: PrescribedRange | null;
 }
 
 export const NO_LAYERS: LocalLayers = { unit: [], patient: [] };
@@ -85,8 +88,8 @@ function valueOf(limit: LocalLimit): number {
 	return typeof limit === 'number' ? limit : limit.value;
 }
 
-/** The limits that judge one patient: the set, the unit's changes, the patient's own. */
-export function limitsOfPatient(set: SetName, { unit, patient }: LocalLayers): LimitSet {
+/** The limits that judge one patient: the set, the unit's changes, the patient's own, an outpatient's range. */
+export function limitsOfPatient(set: SetName, { unit, patient, prescribed = null }: LocalLayers): LimitSet {
 	const base = limitsOfUnit(set, unit);
 	const own: LocalLimits = Object.fromEntries(
 		inForce(patient).map(({ key, value, setBy, untilOn, version }) => [
@@ -98,7 +101,7 @@ export function limitsOfPatient(set: SetName, { unit, patient }: LocalLayers): L
 			}
 		])
 	);
-	return overrideLimits(base, own, `patient ${newest(patient)?.version ?? 0}`);
+	return withRange(overrideLimits(base, own, `patient ${newest(patient)?.version ?? 0}`), prescribed);
 }
 
 /** Whether a number makes a limit narrower or wider than it was; null where the two are the same. */

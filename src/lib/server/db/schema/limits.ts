@@ -2,6 +2,7 @@ import { index, integer, real, sqliteTable, text, uniqueIndex } from 'drizzle-or
 import type { LocalLines } from '../../../domain/bedside/activities/local';
 import { ACTIVITY_CODES } from '../../../domain/bedside/activities/codes';
 import { LIMIT_KEYS, SETS } from '../../../domain/bedside/codes';
+import { PRESCRIBING_METHODS } from '../../../domain/bedside/limits/prescribed';
 import { units, users } from './accounts';
 import { id, instant, json } from './columns';
 import { episodes } from './episodes';
@@ -58,6 +59,32 @@ export const patientLimits = sqliteTable(
 		uniqueIndex('patient_limits_version').on(t.episodeId, t.version),
 		index('patient_limits_episode').on(t.episodeId, t.setAt)
 	]
+);
+
+/**
+ * The range of heart rate and exertion prescribed for an outpatient, append-only. The newest row holds; one without
+ * a method ends what was prescribed.
+ */
+export const prescribedRanges = sqliteTable(
+	'prescribed_ranges',
+	{
+		id: id(),
+		episodeId: text('episode_id')
+			.notNull()
+			.references(() => episodes.id),
+		version: integer('version').notNull(),
+		hrMin: real('hr_min'),
+		hrMax: real('hr_max'),
+		rpeMin: real('rpe_min'),
+		rpeMax: real('rpe_max'),
+		method: text('method', { enum: PRESCRIBING_METHODS }),
+		note: text('note'),
+		prescribedBy: text('prescribed_by')
+			.notNull()
+			.references(() => users.id),
+		prescribedAt: instant('prescribed_at').notNull()
+	},
+	(t) => [uniqueIndex('prescribed_ranges_version').on(t.episodeId, t.version)]
 );
 
 /** What a unit says about an activity in place of the catalogue, append-only; null goes back to the catalogue. */

@@ -1,18 +1,22 @@
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
-import type { z } from 'zod';
+import { z } from 'zod';
 import { idForm } from '$lib/domain/accounts/forms';
-import { invalidField } from '$lib/domain/core/errors';
-import { setPatientLimitForm } from '$lib/domain/limits/forms';
+import { Problem, invalidField } from '$lib/domain/core/errors';
+import { prescribeRangeForm, rangeFaults, setPatientLimitForm } from '$lib/domain/limits/forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
+import { endRange, prescribeRange } from '$lib/server/limits/range-actions';
 import { endPatientLimit, setPatientLimit } from '$lib/server/limits/patient-actions';
 import { read } from '$lib/server/read';
 import type { Actions, PageServerLoad } from './$types';
 
 type Fields = z.output<typeof setPatientLimitForm>;
+type RangeFields = z.output<typeof prescribeRangeForm>;
+
+const NO_RANGE = { method: '', note: '' } as unknown as RangeFields;
 
 /** Nothing is chosen beforehand, least of all the last day. */
 const NOTHING = { key: '', reason: '', untilOn: '' } as unknown as Fields;
@@ -21,7 +25,12 @@ export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => ({
 		limits: { items: await read.patientLimits(context, idParam(event)), next: null },
 		form: await superValidate<Fields, string>(zod4(setPatientLimitForm), { id: 'set', defaults: NOTHING }),
-		keys: { set: newFormKey(), end: newFormKey() }
+		ranges: { items: await read.ranges(context, idParam(event)), next: null },
+		range: await superValidate<RangeFields, string>(zod4(prescribeRangeForm), {
+			id: 'prescribe',
+			defaults: NO_RANGE
+		}),
+		keys: { set: newFormKey(), end: newFormKey(), prescribe: newFormKey(), endRange: newFormKey() }
 	}));
 
 export const actions: Actions = {
@@ -34,6 +43,27 @@ export const actions: Actions = {
 			}
 			await setPatientLimit(context, idParam(event), { ...fields, value });
 			return m.limits_patient_done();
+		}
+	}),
+	prescribe: formAction({
+		id: 'prescribe',
+		schema: prescribeRangeForm,
+		async run(context, { note, ...range }, event) {
+			const errors = rangeFaults(range).map(({ path, message }) => ({ pointer: `/${path}`, message }));
+			const [first] = errors;
+			if (first) {
+				throw new Problem('invalid', first.message, { errors });
+			}
+			await prescribeRange(context, idParam(event), note === '' ? range : { ...range, note });
+			return m.limits_range_done();
+		}
+	}),
+	endRange: formAction({
+		id: 'end-range',
+		schema: z.object({}),
+		async run(context, _fields, event) {
+			await endRange(context, idParam(event));
+			return m.limits_range_end_done();
 		}
 	}),
 	end: formAction({
