@@ -2,7 +2,18 @@
 import fc from 'fast-check';
 import { CLEARANCE_KINDS, CLEARANCE_STATES, LEVELS, RHYTHMS } from '../../core/codes';
 import { ACTIVITY_CODES } from '../activities/codes';
-import { AIRWAYS, ASSISTANCE, POSTURES, PRESSURE_SOURCES, SETS, SYMPTOMS } from '../codes';
+import {
+	AIRWAYS,
+	ASSISTANCE,
+	LIMIT_KEYS,
+	POSTURES,
+	PRESSURE_SOURCES,
+	SETS,
+	SYMPTOMS,
+	type LimitKey
+} from '../codes';
+import type { LocalLayers } from '../limits/layers';
+import { rangeOf } from '../limits/ranges';
 import type { ActivityDone, Assessment, Context, Reading, Symptom } from '../forms';
 
 const maybe = <T>(arbitrary: fc.Arbitrary<T>) => fc.option(arbitrary, { nil: undefined, freq: 3 });
@@ -91,6 +102,63 @@ export const anySession: fc.Arbitrary<Assessment> = fc.record({
 	symptoms: fc.array(anySymptom, { maxLength: 2 }),
 	activities: fc.array(anyActivity, { maxLength: 2 })
 });
+
+const anyKey = fc.constantFrom(...LIMIT_KEYS);
+/** A limit of that name within the range it may be moved in. */
+const within = (key: LimitKey) => {
+	const { low, high } = rangeOf(key);
+	return fc.integer({ min: Math.ceil(low), max: Math.floor(high) });
+};
+const keyAndValue = anyKey.chain((key) => fc.record({ key: fc.constant(key), value: within(key) }));
+
+/** What a unit and a physician may lay over the defaults, and a range on record, in no particular order. */
+export const anyLayers: fc.Arbitrary<LocalLayers> = fc
+	.record({
+		unit: fc.array(fc.record({ of: keyAndValue, set: fc.constantFrom(...SETS), back: fc.boolean() }), {
+			maxLength: 6
+		}),
+		patient: fc.array(keyAndValue, { maxLength: 4 }),
+		prescribed: maybe(fc.record({ hrMax: maybe(about(90, 150)), rpeMax: maybe(about(10, 16)) })),
+		turned: fc.boolean()
+	})
+	.map(({ unit, patient, prescribed, turned }) => {
+		const changes = unit.map(({ of, set, back }, index) => ({
+			version: index + 1,
+			set,
+			key: of.key,
+			// Now and then a later change takes an earlier one back.
+			value: back && index > 2 ? null : of.value,
+			agreedBy: 'Maeve Tidewell',
+			agreedOn: '2026-02-02'
+		}));
+		const own = patient.map((limit, index) => ({
+			...limit,
+			version: index + 1,
+			setBy: 'Orla Marsh',
+			untilOn: '2026-03-05'
+		}));
+		return {
+			unit: turned ? changes.reverse() : changes,
+			patient: turned ? own.reverse() : own,
+			prescribed: prescribed
+				? {
+						version: 1,
+						hrMin: null,
+						hrMax: prescribed.hrMax ?? null,
+						rpeMin: null,
+						rpeMax: prescribed.rpeMax ?? null,
+						method: 'walk-test' as const,
+						prescribedBy: 'Orla Marsh',
+						prescribedOn: '2026-03-01'
+					}
+				: null
+		};
+	});
+
+/** Limits that the body of a session itself states. */
+export const anyLimits: fc.Arbitrary<NonNullable<Context['limits']>> = fc
+	.array(keyAndValue, { maxLength: 3 })
+	.map((limits) => Object.fromEntries(limits.map(({ key, value }) => [key, value])));
 
 /** Values as they mostly are: complete, and near enough to a limit now and then to reach a caution. */
 const calmReading: fc.Arbitrary<Reading> = fc.record({
