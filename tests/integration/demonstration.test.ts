@@ -164,7 +164,7 @@ describe('the demonstration hospital', () => {
 	});
 
 	it.each([
-		['surgeon', ['clearance', 'clearance']],
+		['surgeon', ['clearance', 'clearance', 'precautions-due']],
 		['physician', ['clearance']],
 		['therapist', ['referral']],
 		['nurse2', ['escalation-taken']],

@@ -42,6 +42,8 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_clearance_question(clearance());
 		case 'deviation':
 			return m.home_end_deviation(clearance());
+		case 'precautions-due':
+			return m.home_end_precautions_due();
 		case 'referral':
 			return m.home_end_referral({ service: SERVICE_WORDS[code as Service]().toLowerCase() });
 		case 'mention':

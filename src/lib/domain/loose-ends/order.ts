@@ -45,6 +45,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 		case 'deviation':
 			return FIRST_RANK.deviation;
 		case 'precautions-due':
+			return FIRST_RANK.asks + BY_PRIORITY.routine;
 		case 'clearance':
 		case 'clearance-question':
 		case 'mention':

@@ -1,9 +1,8 @@
 import { sql, type SQL } from 'drizzle-orm';
-import { instantOf, localDateOf, addDays } from '$lib/domain/core/time';
-import { REVIEW_AGAIN_DAYS, STERNAL_DAYS } from '$lib/domain/episodes/precautions';
 import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
 import { strayIn } from '../access/messages';
-import { env } from '../env';
+import { precautionsDue } from './precautions-due';
+import { PLACE } from './place';
 
 /**
  * Loose ends are derived, never stored, so they cannot go stale: one query over the tables, a branch for each
@@ -51,8 +50,6 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 const FURTHER_CALLERS = sql`case when open.kind in (
 	'escalation', 'escalation-taken', 'arrival', 'recheck', 'physician-to-tell'
 ) then (select json_group_array(distinct f.by_id) from escalation_facts f where f.escalation_id = open.id) end`;
-
-const PLACE = sql`place.id as "episodeId", place.unit_id as "unitId", place.unit as "unit", place.bed as "bed", place.patient as "patientName"`;
 
 /** What an escalation is about: the call that made it as grave as it is. */
 const WHAT = sql`coalesce((
@@ -138,45 +135,6 @@ const deviationsUnseen = sql`
 	join place on place.id = d.episode_id
 	join users doer on doer.id = d.recorded_by
 	where d.seen_at is null`;
-
-const DAY_MS = 24 * 60 * 60 * 1000;
-
-/**
- * Sternal precautions never end by the calendar: from the day on which their end falls due it waits on the surgeon,
- * and again a while after a decision that did not end them. An ask that is open stands for itself.
- */
-function precautionsDue(now: number): SQL {
-	const { zone } = env().hospital;
-	const today = localDateOf(now, zone);
-	const midnight = instantOf(today, '00:00', zone);
-	const operatedBefore = instantOf(addDays(today, 1 - STERNAL_DAYS), '00:00', zone);
-	// The first instant of the day on which it fell due, counted back from today's in whole days.
-	const dayOld = sql`cast(${midnight - (STERNAL_DAYS - 1) * DAY_MS - 1} - o.operated_at as integer)`;
-	const since = sql`cast(${midnight} - ${dayOld} / cast(${DAY_MS} as integer) * ${DAY_MS} as integer)`;
-	return sql`
-		select 'precautions-due', e.id, ${PLACE}, null, null, 'precautions-end', null, null, null,
-			null, null, ${since}, ${since}, null
-		from operations o
-		join episodes e on e.id = o.episode_id
-		join place on place.id = e.id
-		where e.closed_at is null and o.approach = 'sternotomy' and o.operated_at < ${operatedBefore}
-			and not exists (
-				select 1 from operations later
-				where later.episode_id = o.episode_id and later.operated_at <= ${now}
-					and (later.operated_at, later.id) > (o.operated_at, o.id)
-			)
-			and not exists (
-				select 1 from clearances c
-				where c.episode_id = e.id and c.kind = 'precautions-end'
-					and (c.operation_id is null or c.operation_id = o.id)
-					and (
-						c.state = 'asked'
-						or (c.state in ('given', 'given-with-limits') and (c.review_on is null or c.review_on >= ${today}))
-						or (c.state in ('withheld', 'on-hold', 'withdrawn') and c.decided_by is not null
-							and c.decided_at > ${now - REVIEW_AGAIN_DAYS * DAY_MS})
-					)
-			)`;
-}
 
 const referralsAsked = sql`
 	select 'referral', r.id, ${PLACE}, t.id, null, r.service, r.question, r.asked_by, asker.name,

@@ -133,6 +133,11 @@ export class Telling {
 		this.#do(at, who, (as) => holdClearance(as, clearance.id, reason));
 	}
 
+	/** Any other deed about the stay. */
+	deed(at: Instant, who: PersonKey, run: (as: PersonContext, id: string) => Promise<unknown>): void {
+		this.#do(at, who, (as) => run(as, this.#episode.id));
+	}
+
 	/** @param at when it is recorded, two minutes after its end */
 	session(at: Instant, who: PersonKey, told: ToldSession): Later {
 		const made = new Later('a session');

@@ -1,4 +1,5 @@
 import { MINUTE } from '$lib/domain/core/time';
+import { prescribeRange } from '../../../limits/range-actions';
 import { done, reading } from '../readings';
 import type { Telling, ToldVisit } from '../telling';
 import { home } from './home';
@@ -15,6 +16,9 @@ export function thorne(t: Telling): void {
 		question: 'Well at two weeks, wound closed. Please take her on for the supervised programme.'
 	});
 	t.accept(when.on(14, '09:20'), 'therapist', asked);
+	t.deed(when.on(14, '09:30'), 'physician', (as, id) =>
+		prescribeRange(as, id, { ...RANGE, method: '164-0.7age' })
+	);
 	const visits = t.book(when.on(14, '09:40'), 'coordinator', {
 		kind: 'series',
 		from: when.date(-8),
@@ -54,6 +58,9 @@ export function ferrow(t: Telling): void {
 		question: 'Valve replaced, sings in a choir, wants his breath back. Please begin in week 4.'
 	});
 	t.accept(when.on(29, '15:30'), 'therapist', asked);
+	t.deed(when.on(29, '15:40'), 'physician', (as, id) =>
+		prescribeRange(as, id, { ...RANGE, method: 'walk-test' })
+	);
 	const visits = t.book(when.on(29, '15:50'), 'coordinator', {
 		kind: 'series',
 		from: when.date(-13),
@@ -159,10 +166,12 @@ export function oakes(t: Telling): void {
 	t.say(when.on(8, '10:10'), 'therapist', asked, 'Told him, and wrote the steps down for the boatyard.');
 }
 
+const RANGE = { hrMin: 85, hrMax: 108, rpeMin: 11, rpeMax: 13 } as const;
+
 const OUTPATIENT = {
 	phase: 'outpatient',
 	set: 'outpatient',
-	prescribed: { hrMin: 85, hrMax: 108, rpeMin: 11, rpeMax: 13 }
+	prescribed: RANGE
 } as const;
 
 /**

@@ -1,3 +1,4 @@
+import { noteWound } from '../../../wounds/actions';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
 
@@ -144,6 +145,9 @@ export function sorrel(t: Telling): void {
 		after: reading(86, 132, 74, 97, { rr: 16, rpe: 12, pain: 2 }),
 		activities: done({ code: 'hall-walk-long', minutes: 9, distanceM: 260, assistance: 'alone' })
 	});
+	t.deed(when.on(2, '11:55'), 'nurse', (as, id) =>
+		noteWound(as, id, { wound: 'dry', sternum: 'stable', note: 'Edges together, no heat.' })
+	);
 	const arms = t.ask(
 		when.on(2, '12:05'),
 		'therapist',
