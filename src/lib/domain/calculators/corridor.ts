@@ -4,6 +4,9 @@
  */
 import { energy } from './energy';
 
+/** The corridor that laps are counted on where nothing else is said, metres. Common practice, no published source. */
+export const WARD_CORRIDOR_M = 50;
+
 export interface CorridorWalk {
 	readonly distanceM: number;
 	/** m/min; null when no time has passed. */

@@ -33,7 +33,7 @@ export const HOW_TO_READ: readonly string[] = [
 	'A change is measured from the reading before the session, or from a later one marked as settled after a change of posture. Only readings in the same posture are compared, and pressures only from the same source, cuff or arterial line.',
 	'A missing reading is never taken as normal. What could not be judged is listed as not judged.',
 	'Whether a rate-slowing drug is taken may be unknown. Then the narrower limit holds, and a note says so.',
-	'In the set *outpatient* the top of a prescribed range takes the place of the heart-rate ceiling. Exertion over the prescribed range cautions; more than two points over it stops.',
+	'In the set *outpatient* the top of a prescribed range takes the place of the heart-rate ceiling. Exertion over the prescribed range cautions; more than two points over it stops. The range on record of a patient counts, with who prescribed it, when, and how it was found; a lower limit set for the patient stays.',
 	`These symptoms stop: ${stopping}. Breathlessness stops from grade 3. Every other symptom cautions.`,
 	'A unit may change any limit, entered by an administrator with the name of its clinical lead and the day it was agreed. A physician or surgeon may narrow or widen one for a patient, with a reason and a last day. Changes are numbered and never overwritten, and every stored finding keeps the set, the limit and the version that made it.'
 ];
@@ -112,12 +112,14 @@ export const CHECKS: readonly CheckEntry[] = [
 		tests: [
 			`${BEDSIDE}/assess.test.ts`,
 			`${BEDSIDE}/rules/absolute.test.ts`,
-			`${BEDSIDE}/rules/change.test.ts`
+			`${BEDSIDE}/rules/change.test.ts`,
+			`${BEDSIDE}/rules/each-set.test.ts`
 		]
 	},
 	{
 		what: 'Response rules, a second way',
-		values: '10,000 random sessions against an implementation that shares no code with the first',
+		values:
+			'10,000 random sessions against an implementation that shares no code with the first, and 10,000 more under random limits of unit, patient, body and prescribed range',
 		tests: [`${BEDSIDE}/assess.oracle.test.ts`]
 	},
 	{
@@ -155,6 +157,18 @@ export const OWN_FIGURES: readonly OwnFigure[] = [
 		figure:
 			'Eight weeks until ending the sternal precautions should be asked for (published advice runs from 6 to 12)',
 		path: 'src/lib/domain/episodes/precautions.ts'
+	},
+	{
+		figure: 'Two weeks until their end falls due again after a decision that did not end them',
+		path: 'src/lib/domain/episodes/precautions.ts'
+	},
+	{
+		figure: 'What is told to the surgeon the same day of a wound and a breastbone',
+		path: 'src/lib/domain/wounds/advice.ts'
+	},
+	{
+		figure: 'The corridor of 50 m that laps are counted on',
+		path: `${CALC}/corridor.ts`
 	},
 	{
 		figure: 'What sternal precautions forbid, and what follows from a moving breastbone',

@@ -21,6 +21,17 @@ function own(version: number, key: LimitKey, value: number): PatientLimit {
 	return { version, key, value, setBy: 'Orla Marsh', untilOn: '2026-03-05' };
 }
 
+const RANGE = {
+	version: 3,
+	hrMin: 90,
+	hrMax: 118,
+	rpeMin: 11,
+	rpeMax: 13,
+	method: 'walk-test',
+	prescribedBy: 'Orla Marsh',
+	prescribedOn: '2026-03-01'
+} as const;
+
 describe('setOfUnit', () => {
 	it.each([
 		['nothing chosen', [], 'inpatient', 'strict'],
@@ -101,6 +112,28 @@ describe('limitsOfPatient', () => {
 			const { limits } = limitsOfPatient(set, { unit: [], patient: [own(1, 'systolic-rise', 25)] });
 			expect(limits['systolic-rise']?.value).toBe(25);
 		}
+	});
+
+	it.each([
+		[118, 118, 'prescribed 3'],
+		[140, 140, 'prescribed 3']
+	])('take a range of an outpatient with a top of %d', (hrMax, value, version) => {
+		const prescribed = { ...RANGE, hrMax };
+		const set = limitsOfPatient('outpatient', { unit: [], patient: [], prescribed });
+		expect(set.version).toBe('outpatient/1+prescribed 3');
+		expect(set.limits['heart-rate-ceiling']).toMatchObject({
+			value,
+			version,
+			source: 'range prescribed for this patient by Orla Marsh, 2026-03-01 (walk-test)'
+		});
+		expect(set.limits['exertion-ceiling']).toMatchObject({ value: 15, version });
+		expect(set.limits['exertion-ceiling.caution']).toMatchObject({ value: 13, version });
+	});
+
+	it.each(['strict', 'guideline'] as const)('leave a range aside in the set %s', (set) => {
+		const laid = limitsOfPatient(set, { unit: [], patient: [], prescribed: RANGE });
+		expect(laid.version).toBe(`${set}/1`);
+		expect(laid.limits['heart-rate-ceiling']?.value).toBe(130);
 	});
 
 	it('judge a session, and every finding names set, limit and version', () => {

@@ -1,0 +1,94 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, test, type Page } from '@playwright/test';
+import { signInAs, type Client } from '../support/api';
+import { startProduct, type Product } from '../support/server';
+import { PHONE, seat } from './people';
+
+let product: Product;
+let nurse: Client;
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { RATE_LIMIT_SCALE: '100' } });
+	nurse = await signInAs(product.url, 'nurse');
+});
+test.afterAll(() => product?.stop());
+
+interface Line {
+	id: string;
+	phase: string;
+	precautions: { sternal: boolean };
+}
+async function patientIn(phase: string): Promise<string> {
+	const { items } = (await nurse.get('/api/episodes?limit=200')).body as unknown as { items: Line[] };
+	return items.find((line) => line.phase === phase && line.precautions.sternal)?.id ?? '';
+}
+
+async function expectAccessible(page: Page): Promise<void> {
+	const { violations } = await new AxeBuilder({ page }).analyze();
+	expect(violations.map(({ id, nodes }) => [id, nodes[0]?.html])).toEqual([]);
+}
+
+test('the precautions stand on the patient’s page, and the wound is noted there', async ({ browser }) => {
+	const { page, complaints } = await seat(browser, product.url, 'nurse', PHONE);
+	await page.goto(`/patients/${await patientIn('inpatient')}`);
+	await expect(page.getByText('Pushing up through the arms.')).toBeVisible();
+	await page.getByText('Note wound and breastbone').click();
+	await page.getByRole('button', { name: 'Note it' }).click();
+	await expect(page.getByText(/^Nothing is noted: say/)).toBeVisible();
+	await page.getByRole('radio', { name: 'weeping' }).check();
+	await page.getByRole('radio', { name: 'moves' }).check();
+	await page.getByRole('button', { name: 'Note it' }).click();
+	await expect(page.getByText('Tell the surgeon today')).toBeVisible();
+	await expect(page.getByText('No arm work until the surgeon has seen it.')).toBeVisible();
+	await expectAccessible(page);
+	expect(complaints).toEqual([]);
+});
+
+test('the surgeon comes from the loose end to the decision on the end of precautions', async ({
+	browser
+}) => {
+	const { page } = await seat(browser, product.url, 'surgeon');
+	const row = page.getByRole('listitem').filter({ hasText: 'End of the sternal precautions' });
+	await row.getByRole('link', { name: /^Decide/ }).click();
+	await page.getByRole('button', { name: 'Decide on their end' }).click();
+	await expect(page).toHaveURL(/clearances\/[\w-]+$/);
+	await expect(page.getByText(/weeks since the operation: may the precautions/).first()).toBeVisible();
+});
+
+test('a range is prescribed for an outpatient and stands at the bedside', async ({ browser }) => {
+	const { page } = await seat(browser, product.url, 'physician');
+	const id = await patientIn('outpatient');
+	await page.goto(`/patients/${id}/limits`);
+	await page.getByLabel('Pulse from').fill('120');
+	await page.getByLabel('Pulse to').fill('110');
+	await page.getByLabel('How it was found').selectOption('walk-test');
+	await page.getByRole('button', { name: 'Prescribe' }).click();
+	await expect(page.getByText(/hrMin is 120 and hrMax is 110/)).toBeVisible();
+	await page.getByLabel('Pulse from').fill('90');
+	await page.getByRole('button', { name: 'Prescribe' }).click();
+	await expect(page.getByText('Pulse 90 to 110; six-minute walk')).toBeVisible();
+	await page.goto(`/bedside/${id}`);
+	await expect(page.getByText(/Range: pulse 90 to 110; six-minute walk/)).toBeVisible();
+});
+
+test('a calculator answers while one types, and the stairs are counted step by step', async ({ browser }) => {
+	const { page, complaints } = await seat(browser, product.url, 'therapist', PHONE);
+	await page.goto('/rules/calculators');
+	await page.locator('#corridor-laps').fill('4');
+	await page.locator('#corridor-minutes').fill('6');
+	await expect(page.getByText('400 m', { exact: true })).toBeVisible();
+	await page.locator('#pressures-hr').fill('251');
+	await expect(page.getByText('hr is 251: it must be a number from 20 to 250 beats/min.')).toBeVisible();
+	await expectAccessible(page);
+	await page.goto(`/bedside/${await patientIn('inpatient')}`);
+	await page.getByRole('radio', { name: '6', exact: true }).check();
+	await page.getByRole('button', { name: /One flight of stairs/ }).click();
+	await page.getByRole('button', { name: 'Step 1: pulse, breathing, face' }).click();
+	await expect(page.getByRole('button', { name: 'Step 2: pulse, breathing, face' })).toBeVisible();
+	await page.getByRole('radio', { name: 'awake, does not follow' }).check();
+	await expect(page.getByText(/the passive set only, with arm and wrist supported/)).toBeVisible();
+	await expect(page.getByRole('button', { name: 'Arms moved for the patient' })).toBeVisible();
+	await expect(page.getByRole('button', { name: 'Ankle pumps' })).toHaveCount(0);
+	expect(complaints).toEqual([]);
+});
