@@ -39,7 +39,7 @@ test.beforeAll(async ({ browser }) => {
 		rhythm: 'sinus'
 	});
 	[surgeon, therapist, nurse, coordinator] = await Promise.all([
-		seat(browser, product.url, 'surgeon', DESK),
+		seat(browser, product.url, 'surgeon', PHONE),
 		seat(browser, product.url, 'therapist', DESK),
 		seat(browser, product.url, 'nurse', PHONE),
 		seat(browser, product.url, 'coordinator', DESK)
@@ -173,6 +173,10 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 		}
 	}
 	await expect(raising.getByText(/nobody has it/i).first()).toBeVisible();
+	// The surgeon has the thread open on a phone, and hears of it as everybody of the unit does.
+	await openThread(surgeon.page);
+	const strip = surgeon.page.getByRole('region', { name: 'Untaken escalations' });
+	await expect(strip.getByText(/nobody has it/)).toBeVisible();
 
 	// Two minutes later, still untaken: the nurses are told again, from a timer in the database.
 	await product.advance(120_000);
@@ -185,6 +189,8 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 	await phone.page.getByRole('button', { name: 'I take it' }).click();
 	await expect(phone.page.getByText('You have it').first()).toBeVisible();
 	await expect(raising.getByText(/Rona Ferris has it/).first()).toBeVisible();
+	await expect(strip.getByText(/nobody has it/)).toHaveCount(0);
+	await expect(surgeon.page.getByText('Taken.', { exact: true })).toBeVisible();
 	await phone.context.close();
 
 	await goTo(nurse.page, 'Loose ends');
@@ -202,6 +208,7 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 	await sheet.getByRole('radio', { name: '15 min' }).check();
 	await sheet.getByRole('button', { name: 'Settle' }).click();
 	await expect(raising.getByText('Escalation settled').first()).toBeVisible();
+	await expect(surgeon.page.getByText(/Escalation settled: Settled with rest/)).toBeVisible();
 	await goTo(nurse.page, 'Loose ends');
 	await expect(rowOf(nurse.page)).toContainText('Measure again');
 });
