@@ -1,7 +1,8 @@
 /**
  * Kill the server with SIGKILL at random moments while four writers post, start it again, and look: nothing that
- * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds.
- * Then the same in the middle of calls for help: none lost, none with two holders, and every untaken one goes on.
+ * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds,
+ * of twenty starts all but one. Then the same in the middle of calls for help: none lost, none with two holders, and
+ * every untaken one goes on.
  * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run.
  */
 import { setTimeout as pause } from 'node:timers/promises';
@@ -13,6 +14,8 @@ import { callThroughKill, type Call, type Crew, type Taker } from './escalations
 import { postUntil, send, type Write } from './writers';
 
 const READY_MS = 3_000;
+/** A machine that others work on too starts a program late now and then: of so many starts one may be slower. */
+const ONE_SLOW_IN = 20;
 const SHORT_ROUNDS = 5;
 const LONG_ROUNDS = 60;
 const SHORT_CALLS = 4;
@@ -91,6 +94,15 @@ async function crash(
 	return ready;
 }
 
+/** How long the starts took: the middle one and the slowest are said, too many slow ones are a fault. */
+function checkReady(readyTimes: readonly number[]): void {
+	const sorted = readyTimes.toSorted((a, b) => a - b).map(Math.round);
+	const slow = sorted.filter((ms) => ms > READY_MS);
+	const figures = `${sorted.length} starts, ${sorted[sorted.length >> 1]} ms in the middle, ${sorted.at(-1)} ms at most`;
+	const faults = slow.length * ONE_SLOW_IN > sorted.length ? slow.map((ms) => `ready after ${ms} ms`) : [];
+	check(`ready again within ${READY_MS} ms: ${figures}, ${slow.length} slower`, faults);
+}
+
 async function takerOf(client: Client): Promise<Taker> {
 	const { user } = (await client.get('/api/me')).body as unknown as { user: { id: string } };
 	return { client, id: user.id };
@@ -111,6 +123,9 @@ async function killCalls(
 		const { call, readyMs } = await callThroughKill(product, crew, random);
 		calls.push(call);
 		readyTimes.push(readyMs);
+		if (calls.length % 10 === 0) {
+			console.log(`     ${calls.length} of ${callCount} calls`);
+		}
 	}
 	check(
 		'calls for help, a kill in each: none lost, none with two holders, all go on',
@@ -134,8 +149,7 @@ async function main(): Promise<void> {
 			await checkEntries(clients[1] as Client, writes)
 		);
 		await killCalls(product, clients, readyTimes);
-		const slow = readyTimes.filter((ms) => ms > READY_MS).map((ms) => `ready after ${Math.round(ms)} ms`);
-		check(`ready again within ${READY_MS} ms, at most ${Math.round(Math.max(...readyTimes))} ms`, slow);
+		checkReady(readyTimes);
 		await product.kill('SIGTERM');
 		check('file, foreign keys and audit chain are whole', await checkFile(product.dataDir));
 	} finally {
