@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { ClearanceKind, ClearanceState } from '$lib/domain/core/codes';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
-import { askable, byKind, standingOf, type Judged } from './standing';
+import { askable, byKind, standingOf, unaskedWords, type Judged } from './standing';
 
 const TODAY = '2026-03-03';
 
@@ -71,6 +71,17 @@ describe('standingOf', () => {
 		expect(standing(asked, { kind: 'corridor' })).toEqual({ headline, why: why || null });
 	});
 
+	it.each<[ClearanceState | null, string | null, string]>([
+		['withheld', 'not-cleared', 'refused · asked, not decided'],
+		['on-hold', 'not-cleared', 'on hold · asked, not decided'],
+		['lapsed', 'not-cleared', 'lapsed · asked, not decided'],
+		['given', null, 'as the level allows · asked, not decided'],
+		[null, null, 'as the level allows · asked, not decided']
+	])('asking again after %s opens no door: %s %s', (before, headline, why) => {
+		const asked = line('asked', { kind: 'corridor' });
+		expect(standing(asked, { kind: 'corridor', before })).toEqual({ headline, why });
+	});
+
 	it.each<[ClearanceKind, string | null]>([
 		['arm-stage', null],
 		['precautions-end', null],
@@ -90,17 +101,37 @@ describe('byKind', () => {
 		];
 		const kinds = byKind([newest, older, stairs]);
 		expect(kinds).toHaveLength(8);
-		expect(kinds[0]).toEqual({ kind: 'arm-stage', newest, earlier: [older] });
+		expect(kinds[0]).toEqual({ kind: 'arm-stage', newest, earlier: [older], before: 'withheld' });
 		expect(kinds.find(({ kind }) => kind === 'stairs')).toEqual({
 			kind: 'stairs',
 			newest: stairs,
-			earlier: []
+			earlier: [],
+			before: null
 		});
 		expect(kinds.find(({ kind }) => kind === 'treadmill')).toEqual({
 			kind: 'treadmill',
 			newest: null,
-			earlier: []
+			earlier: [],
+			before: null
 		});
+	});
+
+	it('passes by an ask that was taken back before anybody decided', () => {
+		const back = line('withdrawn', { id: 'c2' });
+		const asked = line('given', { id: 'c1', decidedBy: 'H. Castellane' });
+		expect(byKind([back])[0]).toMatchObject({ newest: null, earlier: [back] });
+		expect(byKind([back, asked])[0]).toMatchObject({ newest: asked, earlier: [back] });
+		const decided = line('withdrawn', { decidedBy: 'H. Castellane' });
+		expect(byKind([decided])[0]).toMatchObject({ newest: decided, earlier: [] });
+	});
+});
+
+describe('unaskedWords', () => {
+	it('says of each what decides, as the page of the clearances and the nameboard do', () => {
+		expect(unaskedWords(['arm-stage', 'out-of-bed', 'corridor', 'stairs'], true, TODAY)).toEqual([
+			'Not cleared, not yet asked: arm stage and stairs',
+			'As the level allows: out of bed and corridor'
+		]);
 	});
 });
 

@@ -2,6 +2,8 @@ import { headline, isInForce, type ClearanceHeadline } from '$lib/domain/clearan
 import { kindsIn, type Phase } from '$lib/domain/clearances/kinds';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
+import { DEFAULT_LOCALE } from '$lib/format';
+import { CLEARANCE_WORDS, HEADLINE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 
 /** How a kind of activity stands today. */
@@ -16,6 +18,8 @@ export interface Judged {
 	kind: ClearanceKind;
 	/** The newest ask of the kind; null where nobody has asked. */
 	line: Pick<ClearanceLine, 'state' | 'reviewOn' | 'current'> | null;
+	/** How the last decision before an open ask stands: asking again opens no door. Null where there is none. */
+	before?: ClearanceLine['state'] | null;
 	/** Whether sternal precautions hold. */
 	sternal: boolean;
 	/** The hospital's date, `YYYY-MM-DD`. */
@@ -26,9 +30,12 @@ export interface Judged {
  * How a clearance stands: what is past its review date, or counts from an earlier operation, permits nothing,
  * whatever its state says.
  */
-export function standingOf({ kind, line, sternal, today }: Judged): Standing {
+export function standingOf({ kind, line, before = null, sternal, today }: Judged): Standing {
 	if (line !== null && line.current && isInForce(line, today)) {
 		return { headline: headline(line.state), why: null };
+	}
+	if (line?.current && line.state === 'asked' && before !== null && !before.startsWith('given')) {
+		return { headline: 'not-cleared', why: `${whyNot(before)} · ${m.clearances_why_asked()}` };
 	}
 	if (line === null || !line.current || line.state === 'asked') {
 		const why = whyUndecided(line);
@@ -84,10 +91,12 @@ function whyNot(state: ClearanceLine['state']): string {
 /** One kind with all its asks. */
 export interface KindHistory {
 	kind: ClearanceKind;
-	/** The one that counts: the newest ask. Null where nobody has asked. */
+	/** The one that counts: the newest ask that was not taken back undecided. Null where there is none. */
 	newest: ClearanceLine | null;
-	/** The asks before it, newest first. */
+	/** All others, newest first. */
 	earlier: ClearanceLine[];
+	/** How the last decision before the newest ask stands, for {@link standingOf}. */
+	before: ClearanceLine['state'] | null;
 }
 
 /**
@@ -96,9 +105,38 @@ export interface KindHistory {
  */
 export function byKind(lines: readonly ClearanceLine[], phase: Phase = 'inpatient'): KindHistory[] {
 	return kindsIn(phase).map((kind) => {
-		const [newest = null, ...earlier] = lines.filter((line) => line.kind === kind);
-		return { kind, newest, earlier };
+		const own = lines.filter((line) => line.kind === kind);
+		const [newest = null, ...older] = own.filter((line) => !isTakenBack(line));
+		const decided = older.find((line) => line.current && line.state !== 'asked');
+		return {
+			kind,
+			newest,
+			earlier: own.filter((line) => line !== newest),
+			before: decided?.state ?? null
+		};
 	});
+}
+
+/** Whoever asked took the ask back before anybody decided: it says nothing about the patient. */
+function isTakenBack({ state, decidedBy }: ClearanceLine): boolean {
+	return state === 'withdrawn' && decidedBy === null;
+}
+
+/** The kinds that nobody has asked for, one line for each way in which they stand: `Not cleared, not yet asked: stairs`. */
+export function unaskedWords(kinds: readonly ClearanceKind[], sternal: boolean, today: string): string[] {
+	const lines = new Map<string, string[]>();
+	for (const kind of kinds) {
+		const { headline: head, why } = standingOf({ kind, line: null, sternal, today });
+		const stands = [head === null ? '' : HEADLINE_WORDS[head](), why ?? ''].filter(Boolean).join(', ');
+		lines.set(stands, [...(lines.get(stands) ?? []), CLEARANCE_WORDS[kind]().toLowerCase()]);
+	}
+	const list = new Intl.ListFormat(DEFAULT_LOCALE);
+	return [...lines].map(([stands, names]) =>
+		m.clearances_unasked({
+			stands: stands.charAt(0).toUpperCase() + stands.slice(1),
+			kinds: list.format(names)
+		})
+	);
 }
 
 /** The kinds that can be asked for now: neither open nor in force. */
