@@ -1,5 +1,6 @@
 import { eq } from 'drizzle-orm';
 import { beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { toRfc3339 } from '$lib/domain/core/instant';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
@@ -61,6 +62,49 @@ const kindsOf = async (role: 'nurse' | 'physician', id: string, seconds: number)
 	const { mine } = await looseEndsOf(db(), hospital.people[role], at(seconds));
 	return mine.filter((end) => end.id === id).map(({ kind }) => kind);
 };
+
+describe('a call that says by when somebody is needed', () => {
+	// Of a medium one both nurses are told again after ten minutes, and a holder is asked after thirty.
+	const needed = (seconds: number) => ({ grade: 'medium', neededBy: toRfc3339(at(seconds)) }) as const;
+	const stepsOf = async (id: string) =>
+		(await getEscalation(db(), hospital.people.nurse, id)).steps.map(({ step }) => step);
+
+	it('tells the next ones at that moment when nobody has it, and then keeps to the plan', async () => {
+		const id = await raise(0, needed(300));
+		await beat(299);
+		expect(new Set(await stepsOf(id))).toEqual(new Set([0]));
+		await beat(300);
+		expect(new Set(await stepsOf(id))).toEqual(new Set([0, 1]));
+		await beat(1799);
+		expect(new Set(await stepsOf(id))).toEqual(new Set([0, 1]));
+		await beat(1800);
+		expect(new Set(await stepsOf(id))).toEqual(new Set([0, 1, 2]));
+	});
+
+	it('keeps the plan where the plan is sooner', async () => {
+		const id = await raise(0, needed(601));
+		await beat(600);
+		expect((await escalationRow(id)).nextStepAt).toBe(at(601));
+	});
+
+	it('asks the holder at that moment, and goes on without an answer', async () => {
+		const id = await raise(0, needed(300));
+		await takeEscalation(by('nurse', 30), id, null);
+		await beat(299);
+		expect((await escalationRow(id)).holderAskedAt).toBeNull();
+		await beat(300);
+		expect((await escalationRow(id)).holderAskedAt).toBe(at(300));
+		await beat(600);
+		expect((await escalationRow(id)).nextStepAt).not.toBeNull();
+	});
+
+	it('is moved by a second caller who needs somebody sooner', async () => {
+		const id = await raise(0, needed(500));
+		await raise(10, needed(200));
+		await beat(200);
+		expect(new Set(await stepsOf(id))).toEqual(new Set([0, 1]));
+	});
+});
 
 describe('a holder who is not at the bedside', () => {
 	// Taken at 30 s. Minutes given + 5, or 10 without; the chain goes on a minute after the question.

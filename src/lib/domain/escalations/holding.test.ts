@@ -15,7 +15,15 @@ describe('askHolderAt', () => {
 		['low', null, 240],
 		['low', 5, 245]
 	] as const)('%s with %s minutes given: after %s', (grade, eta, minutes) => {
-		expect(askHolderAt(grade, T, eta)).toBe(T + minutes * MINUTE);
+		expect(askHolderAt(grade, T, eta, null)).toBe(T + minutes * MINUTE);
+	});
+
+	it.each([
+		['before', 9, 9],
+		['with', 10, 10],
+		['after', 11, 10]
+	])('needed by a minute %s the patience ends: after %s', (_, neededIn, minutes) => {
+		expect(askHolderAt('high', T, null, T + neededIn * MINUTE)).toBe(T + minutes * MINUTE);
 	});
 
 	it.each([

@@ -1,5 +1,6 @@
 import type { EscalationState, Grade } from '../core/codes';
 import { HOUR, MINUTE, SECOND } from '../core/time';
+import { hurried } from './needed-by';
 
 /**
  * What runs while somebody has an escalation: none must die in a pocket, whatever its grade. Its holder is asked
@@ -29,12 +30,22 @@ const PATIENCE: Record<Grade, Patience> = {
 
 /**
  * When the holder is asked whether they are at the bedside: some time after the minutes they gave have run out, or
- * after taking when they gave none.
+ * after taking when they gave none, and at the latest when somebody is needed.
  * @param since when it was taken, or when the minutes were given, milliseconds UTC
+ * @param neededBy milliseconds UTC; null where the caller did not say
  */
-export function askHolderAt(grade: Grade, since: number, etaMinutes: number | null): number {
+export function askHolderAt(
+	grade: Grade,
+	since: number,
+	etaMinutes: number | null,
+	neededBy: number | null
+): number {
 	const { withoutWordMs, graceMs } = PATIENCE[grade];
-	return since + (etaMinutes === null ? withoutWordMs : etaMinutes * MINUTE + graceMs);
+	return hurried(
+		since + (etaMinutes === null ? withoutWordMs : etaMinutes * MINUTE + graceMs),
+		neededBy,
+		since
+	);
 }
 
 /** How long after the question the chain goes on without an answer, milliseconds. */

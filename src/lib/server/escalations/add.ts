@@ -4,6 +4,7 @@ import { can } from '$lib/domain/access/can';
 import { GRADES, type Grade } from '$lib/domain/core/codes';
 import { parseRfc3339 } from '$lib/domain/core/instant';
 import { chainOf } from '$lib/domain/escalations/chain';
+import { hurried } from '$lib/domain/escalations/needed-by';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { loadPerson } from '../auth/people';
@@ -69,7 +70,7 @@ export async function addFacts(
 	});
 	await tx
 		.update(escalations)
-		.set({ grade, neededBy: row.neededBy, ...(graver ? NOBODY_ASKED : {}) })
+		.set({ grade, neededBy: row.neededBy, ...(graver ? NOBODY_ASKED : hurriedTimers(row, context.now)) })
 		.where(eq(escalations.id, row.id));
 	await recordMove(tx, context, row.id, 'added', { grade: input.grade, raisedGrade: graver });
 	const messages = await tellOfFacts(tx, context, { ...row, ...NOBODY_ASKED }, { graver, factId, input });
@@ -85,6 +86,14 @@ export async function addFacts(
 		entries: await entriesFor(tx, row, 'ask', callWords(input)),
 		events: await escalationEvents(tx, before, 'added-to'),
 		messages
+	};
+}
+
+/** An earlier time moves what is planned after it; a graver grade sets its timers anew. */
+function hurriedTimers({ nextStepAt, askHolderAt, holderAskedAt, neededBy }: EscalationRow, now: number) {
+	return {
+		nextStepAt: nextStepAt && hurried(nextStepAt, neededBy, now),
+		askHolderAt: holderAskedAt === null ? askHolderAt && hurried(askHolderAt, neededBy, now) : askHolderAt
 	};
 }
 

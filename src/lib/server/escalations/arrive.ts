@@ -63,7 +63,7 @@ export async function giveEta(
 	const { now } = context;
 	const timers = isSoughtAnew(row)
 		? {}
-		: { askHolderAt: askHolderAt(row.grade, now, minutes), holderAskedAt: null };
+		: { askHolderAt: askHolderAt(row.grade, now, minutes, row.neededBy), holderAskedAt: null };
 	await tx
 		.update(escalations)
 		.set({ etaMinutes: minutes, etaGivenAt: now, ...timers })

@@ -69,8 +69,8 @@ async function tellDue(id: string, now: number): Promise<void> {
 }
 
 /**
- * Tell every step from `first` on that is due, and move the timer. When those steps reach nobody the next one is
- * told at once, as at the start of the chain.
+ * Tell every step from `first` on that is due, and move the timer. When those steps reach nobody, or none is due and
+ * somebody is needed by now, the next one is told at once, as at the start of the chain.
  */
 async function advance(tx: Tx, row: EscalationRow, first: number, now: number): Promise<NewMessage[]> {
 	const { due, nextStep } = dueSteps(row.grade, row.chainStartedAt, first, now);
@@ -78,11 +78,11 @@ async function advance(tx: Tx, row: EscalationRow, first: number, now: number): 
 	for (const step of due) {
 		messages.push(...(await tellStep(tx, row, step, now)));
 	}
-	if (messages.length > 0 || isChainSpent(row.grade, nextStep)) {
-		await setTimer(tx, row, nextStep);
+	if (messages.length > 0 || (due.length > 0 && isChainSpent(row.grade, nextStep))) {
+		await setTimer(tx, row, nextStep, now);
 		return messages;
 	}
 	const onward = await tellFrom(tx, row, nextStep, now);
-	await setTimer(tx, row, onward.lastStep + 1);
+	await setTimer(tx, row, onward.lastStep + 1, now);
 	return onward.messages;
 }

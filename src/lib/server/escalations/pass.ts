@@ -75,7 +75,7 @@ export async function confirm(
 			passTo: null,
 			passReason: null,
 			nextStepAt: null,
-			askHolderAt: askHolderAt(row.grade, now, null),
+			askHolderAt: askHolderAt(row.grade, now, null, row.neededBy),
 			holderAskedAt: null
 		})
 		.where(eq(escalations.id, row.id));

@@ -88,7 +88,7 @@ async function raiseNew(
 /** Told in person counts: the named one has two minutes to say so, and the chain starts only without it. */
 async function waitForNamed(tx: Tx, context: PersonContext, row: EscalationRow, named: Person) {
 	await recordMove(tx, context, row.id, 'told-in-person', { to: named.id });
-	await setTimer(tx, { ...row, chainStartedAt: context.now + IN_PERSON_MS }, 0);
+	await setTimer(tx, { ...row, chainStartedAt: context.now + IN_PERSON_MS }, 0, context.now);
 	const where = await placeOf(tx, row.episodeId);
 	return [await alert(tx, row, named.id, where, 'in-person', context.now)];
 }

@@ -129,7 +129,7 @@ function heldFrom(now: number, person: Person, before: EscalationRow, etaMinutes
 		etaMinutes,
 		etaGivenAt: etaMinutes === null ? null : now,
 		arrivedAt,
-		askHolderAt: arrivedAt === null ? askHolderAt(before.grade, now, etaMinutes) : null,
+		askHolderAt: arrivedAt === null ? askHolderAt(before.grade, now, etaMinutes, before.neededBy) : null,
 		holderAskedAt: null,
 		passTo: null,
 		passReason: null,

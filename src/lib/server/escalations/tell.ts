@@ -1,5 +1,6 @@
 import { and, eq, inArray } from 'drizzle-orm';
 import { chainStep, isChainSpent, startFor } from '$lib/domain/escalations/chain';
+import { hurried } from '$lib/domain/escalations/needed-by';
 import type { Post } from '$lib/domain/core/codes';
 import { smsText } from '$lib/domain/messages/templates';
 import { onCover } from '../cover/queries';
@@ -84,13 +85,19 @@ export async function startChain(
 ): Promise<NewMessage[]> {
 	const row = { ...escalation, chainStartedAt: startFor(escalation.grade, step, now) };
 	const { messages, lastStep } = await tellFrom(tx, row, step, now);
-	await setTimer(tx, row, lastStep + 1);
+	await setTimer(tx, row, lastStep + 1, now);
 	return messages;
 }
 
-/** From now on the timer waits for this step. */
-export async function setTimer(tx: Tx, { id, grade, chainStartedAt }: EscalationRow, nextStep: number) {
-	const nextStepAt = chainStartedAt + chainStep(grade, nextStep).afterSeconds * 1000;
+/** From now on the timer waits for this step, which comes sooner when somebody is needed before it. */
+export async function setTimer(
+	tx: Tx,
+	{ id, grade, chainStartedAt, neededBy }: EscalationRow,
+	nextStep: number,
+	now: number
+) {
+	const planned = chainStartedAt + chainStep(grade, nextStep).afterSeconds * 1000;
+	const nextStepAt = hurried(planned, neededBy, now);
 	await tx.update(escalations).set({ nextStep, nextStepAt, chainStartedAt }).where(eq(escalations.id, id));
 }
 
