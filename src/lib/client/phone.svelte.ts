@@ -1,6 +1,6 @@
 import type { PhoneEscalation } from '$lib/domain/escalations/views';
 import { routes } from '$lib/routes';
-import { getJson } from './api';
+import { ApiProblem, getJson } from './api';
 
 const EVERY_MS = 4_000;
 
@@ -15,8 +15,14 @@ interface PhoneState {
  * Keep the page of a link fresh without a sign-in, which the live stream would need: ask every few seconds while
  * the page is looked at, and say since when no answer came.
  * @param heard hears the server's instant of each answer
+ * @param over hears that the link opens nothing any more, which is an answer too
  */
-export function watchPhone(token: string, initial: PhoneState, heard: (now: number) => void) {
+export function watchPhone(
+	token: string,
+	initial: PhoneState,
+	heard: (now: number) => void,
+	over: () => void
+) {
 	let state = $state.raw(initial);
 	let answeredAt = $state.raw(initial.now);
 	let lost = $state(false);
@@ -34,7 +40,10 @@ export function watchPhone(token: string, initial: PhoneState, heard: (now: numb
 		}
 		try {
 			take(await getJson<PhoneState>(`${routes.phoneLink(token)}/state`));
-		} catch {
+		} catch (error) {
+			if (error instanceof ApiProblem && error.status === 404) {
+				over();
+			}
 			lost = true;
 		}
 	}
