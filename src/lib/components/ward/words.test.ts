@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { precautionsOf } from '$lib/domain/episodes/precautions';
-import { escalationWords, procedureWords, wardBeware } from './words';
+import { procedureWords, wardBeware } from './words';
 
 const READER = { zone: 'Europe/Dublin', now: Date.parse('2026-03-03T09:00:00Z') };
 const STERNOTOMY = { approach: 'sternotomy', day: '2026-03-01', begun: true } as const;
@@ -44,14 +44,5 @@ describe('precautions that nobody knows', () => {
 	] as const)('of %s: %s', (basis, words) => {
 		const precautions = { ...NOTHING, basis };
 		expect(wardBeware({ precautions, betaBlocked: false, nothingByMouth: false }, READER)).toEqual([words]);
-	});
-});
-
-describe('escalationWords', () => {
-	it.each([
-		['raised', null, ', nobody has it'],
-		['taken', 'R. Ferris', ', taken by R. Ferris']
-	] as const)('%s by %s: %s', (state, takenBy, words) => {
-		expect(escalationWords({ state, takenBy })).toBe(words);
 	});
 });

@@ -26,13 +26,3 @@ export function wardBeware(
 		...(drug === null ? [] : [drug()])
 	];
 }
-
-/** Whether somebody has the escalation; it follows the word of the grade. */
-export function escalationWords({
-	state,
-	takenBy
-}: Pick<NonNullable<EpisodeListItem['escalation']>, 'state' | 'takenBy'>): string {
-	return state === 'raised' || takenBy === null
-		? m.home_ward_escalation_untaken()
-		: m.home_ward_escalation_taken({ name: takenBy });
-}

@@ -2,6 +2,7 @@ import type {
 	Approach,
 	ClearanceKind,
 	ClearanceState,
+	EscalationState,
 	ReferralState,
 	Rhythm,
 	Service,
@@ -54,6 +55,8 @@ export interface EpisodeListItem {
 		grade: 'high' | 'medium' | 'low';
 		state: 'raised' | 'taken';
 		takenBy: string | null;
+		/** Somebody has it and did not come, so that others are sought. */
+		notThere: boolean;
 	} | null;
 }
 
@@ -143,9 +146,11 @@ export interface Nameboard {
 	escalations: {
 		id: string;
 		grade: 'high' | 'medium' | 'low';
-		state: string;
+		state: EscalationState;
 		situation: string;
 		raisedAt: string;
 		takenBy: string | null;
+		/** Somebody has it and did not come, so that others are sought. */
+		notThere: boolean;
 	}[];
 }

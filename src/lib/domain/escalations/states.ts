@@ -22,3 +22,8 @@ export function requireEscalationMove(state: EscalationState, move: EscalationMo
 		throw new Problem('wrong-state', `The escalation is ${state}; "${move}" is not possible now.`, { state });
 	}
 }
+
+/** Settled or withdrawn: nobody is needed any more. */
+export function isOver(state: EscalationState): boolean {
+	return state === 'settled' || state === 'withdrawn';
+}

@@ -2,6 +2,7 @@ import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { toRfc3339 } from '$lib/domain/core/instant';
+import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import { hangingEnds } from '$lib/domain/loose-ends/hanging';
 import type { Reader } from '../db';
@@ -104,7 +105,8 @@ async function openEscalations(db: Reader, ids: string[]) {
 			id: escalations.id,
 			grade: escalations.grade,
 			state: escalations.state,
-			takenBy: users.name
+			takenBy: users.name,
+			nextStepAt: escalations.nextStepAt
 		})
 		.from(escalations)
 		.leftJoin(users, eq(users.id, escalations.takenBy))
@@ -114,9 +116,15 @@ async function openEscalations(db: Reader, ids: string[]) {
 			sql`case ${escalations.grade} when 'high' then 0 when 'medium' then 1 else 2 end`
 		);
 	const found = new Map<string, EpisodeListItem['escalation']>();
-	for (const { episodeId, id, grade, state, takenBy } of rows) {
+	for (const { episodeId, id, grade, state, takenBy, nextStepAt } of rows) {
 		if (!found.has(episodeId)) {
-			found.set(episodeId, { id, grade, state: state === 'taken' ? 'taken' : 'raised', takenBy });
+			found.set(episodeId, {
+				id,
+				grade,
+				state: state === 'taken' ? 'taken' : 'raised',
+				takenBy,
+				notThere: isSoughtAnew({ state, nextStepAt })
+			});
 		}
 	}
 	return found;

@@ -3,6 +3,7 @@ import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
+import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import type { Nameboard } from '$lib/domain/episodes/views';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { unseenDeviations } from '../bedside/deviations';
@@ -119,12 +120,17 @@ async function escalationsOf(db: Reader, episodeId: string): Promise<Nameboard['
 			state: escalations.state,
 			situation: escalations.situation,
 			raisedAt: escalations.raisedAt,
-			takenBy: users.name
+			takenBy: users.name,
+			nextStepAt: escalations.nextStepAt
 		})
 		.from(escalations)
 		.leftJoin(users, eq(users.id, escalations.takenBy))
 		.where(eq(escalations.episodeId, episodeId))
 		.orderBy(desc(escalations.raisedAt))
 		.limit(20);
-	return rows.map((row) => ({ ...row, raisedAt: toRfc3339(row.raisedAt) }));
+	return rows.map(({ nextStepAt, ...row }) => ({
+		...row,
+		raisedAt: toRfc3339(row.raisedAt),
+		notThere: isSoughtAnew({ state: row.state, nextStepAt })
+	}));
 }
