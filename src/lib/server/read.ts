@@ -6,6 +6,7 @@ import { coverNow } from './cover/queries';
 import { getNameboard } from './episodes/nameboard';
 import { listEpisodes } from './episodes/list';
 import { alarmsOf } from './escalations/alarms';
+import { openCallOf } from './escalations/follow-patient';
 import { getEscalation } from './escalations/queries';
 import type { PageRequest } from './http/paging';
 import { getLevel } from './levels/queries';
@@ -39,6 +40,7 @@ export const read = {
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
 	alarms: ({ actor }: PersonContext) => alarmsOf(db(), actor),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id),
+	openCall: ({ actor }: PersonContext, episodeId: string) => openCallOf(db(), actor, episodeId),
 	/** The ways out of the product that do not work now, as a list of the API. */
 	delivery: async ({ actor, now }: PersonContext) => ({
 		items: await troublesFor(db(), actor, now),

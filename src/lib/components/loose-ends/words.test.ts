@@ -31,7 +31,7 @@ const ago = (ms: number) => new Date(NOW - ms).toISOString();
 
 describe('waitWords', () => {
 	it.each<[LooseEnd, string]>([
-		[end('escalation', { since: ago(106_000) }), '1 min 46 s, nobody has it'],
+		[end('escalation', { since: ago(106_000) }), '1 min 46 s, nobody has it yet'],
 		[end('escalation-taken', { since: ago(5 * MINUTE) }), 'taken 5 min ago'],
 		[end('clearance'), '40 min'],
 		[end('clearance', { since: ago(59_999) }), 'just now'],

@@ -108,6 +108,12 @@ export function doneWords({ kind, code, patientName }: LooseEnd): string {
 	return m.home_accepted({ service, who: patientName ?? '' });
 }
 
+/** That an ask has its answer, and from whom where that is known. */
+export function answeredWords({ title, patientName }: LooseEnd, by: string | null): string {
+	const what = { title, who: patientName ?? '' };
+	return by === null ? m.home_answered(what) : m.home_answered_by({ ...what, name: by });
+}
+
 const MESSAGES: Record<string, () => string> = {
 	reminder: m.home_message_reminder,
 	escalation: m.home_message_escalation,

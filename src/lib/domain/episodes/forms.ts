@@ -68,7 +68,9 @@ export type MoveInput = z.infer<typeof moveBody>;
 /** The move as a page asks for it; whether the unit has beds knows the server. */
 export const moveForm = z.object({
 	unit: z.string().min(1, 'The unit is empty: choose one.').max(64).default(''),
-	bed: z.string().trim().max(BED_MAX, `The bed has at most ${BED_MAX} characters.`).default('')
+	bed: z.string().trim().max(BED_MAX, `The bed has at most ${BED_MAX} characters.`).default(''),
+	/** Asked where a call for help is open: whoever comes must not go to the old bed. */
+	toldHolder: z.boolean().default(false)
 });
 
 /** Why a stay is over. */

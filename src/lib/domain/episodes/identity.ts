@@ -30,7 +30,7 @@ export interface Identity {
 
 /** Where an admission and the record contradict each other. */
 export interface Conflicts {
-	/** One for each field, with a pointer into the body of the JSON API. Empty when it is the same person. */
+	/** One for each field, and for another name one of the number before it, with a pointer into the body of the JSON API. Empty when it is the same person. */
 	errors: FieldError[];
 	/** True when a person may confirm it: a name can change, a birth date cannot. */
 	confirmable: boolean;
@@ -42,24 +42,36 @@ export interface Conflicts {
  */
 export function conflictsWith(mrn: string, known: Identity, given: Identity): Conflicts {
 	const errors: FieldError[] = [];
-	if (!isSameName(known.name, given.name)) {
-		errors.push({
-			pointer: '/patient/name',
-			message: `${NAME_DIFFERS}: hospital number ${mrn} belongs to ${known.name}, not ${normaliseName(given.name)}.`
-		});
+	const otherName = !isSameName(known.name, given.name);
+	if (otherName) {
+		// A mistyped number is more likely than a new name, so it is asked about first.
+		errors.push(
+			{
+				pointer: '/patient/mrn',
+				message: `Hospital number ${mrn} belongs to ${known.name}, born ${known.birthDate}. Is it the right number?`
+			},
+			{
+				pointer: '/patient/name',
+				message: `${NAME_DIFFERS}: on record is ${known.name}, not ${normaliseName(given.name)}.`
+			}
+		);
 	}
-	const confirmable = errors.length > 0;
+	const confirmable = otherName && known.birthDate === given.birthDate && !isOtherSex(known.sex, given.sex);
 	if (known.birthDate !== given.birthDate) {
 		errors.push({
 			pointer: '/patient/birthDate',
 			message: `The birth date differs: hospital number ${mrn} is on record with ${known.birthDate}, not ${given.birthDate}.`
 		});
 	}
-	if (known.sex !== given.sex && known.sex !== 'unknown' && given.sex !== 'unknown') {
+	if (isOtherSex(known.sex, given.sex)) {
 		errors.push({
 			pointer: '/patient/sex',
 			message: `The sex differs: hospital number ${mrn} is on record as ${known.sex}, not ${given.sex}.`
 		});
 	}
-	return { errors, confirmable: confirmable && errors.length === 1 };
+	return { errors, confirmable };
+}
+
+function isOtherSex(known: Sex, given: Sex): boolean {
+	return known !== given && known !== 'unknown' && given !== 'unknown';
 }

@@ -1,7 +1,9 @@
-import { and, eq, inArray } from 'drizzle-orm';
+import { and, asc, eq, inArray } from 'drizzle-orm';
+import type { Person } from '$lib/domain/access/actor';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
+import { accessEpisode } from '../access/access';
 import type { Context } from '../context';
-import type { Tx } from '../db';
+import type { Reader, Tx } from '../db';
 import { escalationLinks, escalations } from '../db/schema';
 import { newId } from '../ids';
 import type { NewMessage } from '../outbox/enqueue';
@@ -87,6 +89,24 @@ async function tellPlace(
 		messages.push(await alert(tx, row, userId, place, occasion, now));
 	}
 	return messages;
+}
+
+/**
+ * How the call for help about a patient stands that nobody has ended, for whoever moves the patient: that there is
+ * one is for all of the unit, as on the strip; who has it and what it is about is not. Null where there is none.
+ */
+export async function openCallOf(
+	db: Reader,
+	person: Person,
+	episodeId: string
+): Promise<Pick<EscalationRow, 'state'> | null> {
+	await accessEpisode(db, person, episodeId, 'episode.read');
+	const [open] = await db
+		.select({ state: escalations.state })
+		.from(escalations)
+		.where(and(eq(escalations.episodeId, episodeId), inArray(escalations.state, ['raised', 'taken'])))
+		.orderBy(asc(escalations.state));
+	return open ?? null;
 }
 
 /** Nobody has it, or others are sought beside its holder. */

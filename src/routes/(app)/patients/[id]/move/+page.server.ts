@@ -4,20 +4,23 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import { isOneOf, CLOSE_REASONS } from '$lib/domain/core/codes';
 import { invalidField, Problem } from '$lib/domain/core/errors';
 import { closeForm, moveForm } from '$lib/domain/episodes/forms';
+import { m } from '$lib/i18n/paraglide/messages';
 import { routes } from '$lib/routes';
 import { requirePermission } from '$lib/server/access/require';
 import { allUnits } from '$lib/server/access/units';
 import { closeEpisode } from '$lib/server/episodes/close';
 import { movePatient } from '$lib/server/episodes/move';
+import { read } from '$lib/server/read';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
-	pageLoad(event, async ({ actor }) => {
-		requirePermission(actor, 'episode.close');
+	pageLoad(event, async (context) => {
+		requirePermission(context.actor, 'episode.close');
 		return {
+			call: await read.openCall(context, idParam(event)),
 			hospitalUnits: await allUnits(),
 			move: await superValidate<Infer<typeof moveForm, 'zod4'>, string>(zod4(moveForm), { id: 'move' }),
 			close: await superValidate<Infer<typeof closeForm, 'zod4'>, string>(zod4(closeForm), { id: 'close' }),
@@ -29,7 +32,10 @@ export const actions: Actions = {
 	move: formAction({
 		id: 'move',
 		schema: moveForm,
-		async run(context, { unit, bed }, event) {
+		async run(context, { unit, bed, toldHolder }, event) {
+			if (!toldHolder && (await read.openCall(context, idParam(event))) !== null) {
+				throw invalidField('/toldHolder', m.patient_move_tell_first());
+			}
 			const { result } = await besideBed(() => movePatient(context, idParam(event), { unit, bed }));
 			const stays = context.actor.unitIds.includes(result.unitId);
 			redirect(303, stays ? routes.patient(result.id) : routes.ward());
