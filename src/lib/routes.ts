@@ -18,6 +18,7 @@ export const routes = {
 	newSession: (episodeId: string) => `/bedside/${episodeId}`,
 	escalate: (episodeId: string, query = '') => `/patients/${episodeId}/escalate${query}`,
 	move: (episodeId: string) => `/patients/${episodeId}/move`,
+	details: (episodeId: string) => `/patients/${episodeId}/details`,
 	refer: (episodeId: string) => `/patients/${episodeId}/refer`,
 	escalation: (id: string) => `/escalations/${id}`,
 	phoneLink: (token: string) => `/t/${token}`,

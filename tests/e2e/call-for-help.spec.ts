@@ -133,3 +133,41 @@ test('wait: nobody takes it, the chain goes on by its times over a kill, and the
 	await expect(watcher.page.getByText(/everybody was told and nobody has it/).first()).toBeVisible();
 	await watcher.context.close();
 });
+
+test('expire: a link left open says that it has expired, not that the network is gone', async ({
+	browser
+}) => {
+	const id = await raise('E1');
+	const { body } = await textArrives(product.smsUrl, RONA, /E1/);
+	const link = /https?:\S+\/t\/\S+/.exec(body)?.[0] ?? '';
+	const phone = await seat(browser, product.url, null, PHONE);
+	await phone.page.goto(link);
+	await expect(phone.page.getByRole('button', { name: 'I take it' })).toBeVisible();
+	await product.advance(13 * 60 * MINUTE);
+	await expect(phone.page.getByText('This link opens nothing any more')).toBeVisible();
+	await expect(phone.page.getByText(/No connection/)).toHaveCount(0);
+	const reader = await signInAs(product.url, 'therapist');
+	expect((await reader.get(`/api/escalations/${id}`)).body).toMatchObject({ state: 'raised' });
+	await phone.context.close();
+});
+
+test('double tap: the second tap of "I take it" presses nothing that came beneath the finger', async ({
+	browser
+}) => {
+	therapist = await signInAs(product.url, 'therapist');
+	const id = await raise('D1');
+	const { body } = await textArrives(product.smsUrl, RONA, /D1/);
+	const phone = await seat(browser, product.url, null, PHONE);
+	await phone.page.goto(/https?:\S+\/t\/\S+/.exec(body)?.[0] ?? '');
+	const button = phone.page.getByRole('button', { name: 'I take it' });
+	const box = await button.boundingBox();
+	const [x, y] = [(box?.x ?? 0) + (box?.width ?? 0) / 2, (box?.y ?? 0) + (box?.height ?? 0) / 2];
+	await phone.page.mouse.click(x, y);
+	await phone.page.getByRole('button', { name: 'I am there' }).waitFor();
+	// As quick as a hand: within the blink in which the buttons have changed.
+	await phone.page.mouse.click(x, y);
+	await expect(phone.page.getByText('You have it').first()).toBeVisible();
+	const { body: call } = await therapist.get(`/api/escalations/${id}`);
+	expect(call).toMatchObject({ state: 'taken', arrivedAt: null, etaMinutes: null });
+	await phone.context.close();
+});

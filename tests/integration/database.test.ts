@@ -99,10 +99,12 @@ describe('append-only tables', () => {
 		'escalation_steps',
 		'findings',
 		'level_decisions',
+		'operation_amendments',
 		'outbox_attempts',
 		'patient_amendments',
 		'prescribed_ranges',
 		'readings',
+		'session_amendments',
 		'unit_activity_changes',
 		'unit_limit_changes',
 		'wound_notes'

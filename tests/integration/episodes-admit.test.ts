@@ -111,7 +111,9 @@ describe('who is admitted', () => {
 		const { mrn } = await wasHere();
 		const stranger = asked({ mrn, name: 'Tom Reed', birthDate: '1985-01-01' }, { confirmName: true });
 		await expect(admitPatient(as(), stranger)).rejects.toMatchObject({
-			extra: { errors: [{ pointer: '/patient/name' }, { pointer: '/patient/birthDate' }] }
+			extra: {
+				errors: [{ pointer: '/patient/mrn' }, { pointer: '/patient/name' }, { pointer: '/patient/birthDate' }]
+			}
 		});
 	});
 
@@ -156,6 +158,7 @@ describe('an admission with several faults', () => {
 					{ pointer: '/bed' },
 					{ pointer: '/surgeonId' },
 					{ pointer: '/patient/phone' },
+					{ pointer: '/patient/mrn' },
 					{ pointer: '/patient/name' }
 				]
 			}

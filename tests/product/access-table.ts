@@ -37,6 +37,12 @@ export const API: Record<string, Row> = {
 	'POST /api/episodes': { roles: ['coordinator', 'nurse', 'physician', 'surgeon'], answers: [422] },
 	'GET /api/episodes/[id]': { roles: SEEING, answers: [404] },
 	'POST /api/episodes/[id]/move': { roles: ['coordinator', 'nurse'], answers: [422] },
+	'POST /api/episodes/[id]/operations': { roles: ['coordinator', 'physician', 'surgeon'], answers: [422] },
+	'POST /api/episodes/[id]/contact': { roles: ['coordinator', 'nurse'], answers: [404] },
+	'POST /api/episodes/[id]/session-amendments': {
+		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],
+		answers: [422]
+	},
 	'POST /api/episodes/[id]/close': { roles: ['coordinator', 'nurse', 'physician'], answers: [422] },
 	'POST /api/episodes/[id]/referrals': { roles: ['surgeon', 'physician'], answers: [422] },
 	'POST /api/episodes/[id]/clearances': {

@@ -55,6 +55,20 @@ export const ACTIONS: Record<string, ActionRow> = {
 	'/admin/limits?/set': { fields: { set: 'guideline', ...AGREED }, roles: ADMIN },
 	'/admin/limits/activities?/word': { fields: { ...WORDING, ...AGREED }, roles: ADMIN },
 	'/admin/limits/activities?/reset': { fields: { code: 'arm-exercise', ...AGREED }, roles: ADMIN },
+	'/patients/[id]/details?/operation': {
+		fields: {
+			which: 'further',
+			procedure: 'Bypass',
+			approach: 'other',
+			operatedOn: '1 3 2026',
+			operatedTime: '9:05'
+		},
+		roles: ['coordinator', 'physician', 'surgeon']
+	},
+	'/patients/[id]/details?/contact': {
+		fields: { phone: '+353 86 123 4567' },
+		roles: ['coordinator', 'nurse']
+	},
 	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },
 	'/loose-ends/[what]/[id]?/message': { fields: {}, roles: ['coordinator', 'therapist'] },
 	'/loose-ends/[what]/[id]?/text': {

@@ -25,6 +25,12 @@ const SESSION = {
 /** Bodies that their handlers take, so that the unit decides; the others take an empty one. */
 const BODIES: Record<string, object> = {
 	'POST /api/episodes/[id]/move': { unit: 'Tern Ward', bed: 'Z9' },
+	'POST /api/episodes/[id]/operations': {
+		procedure: 'Bypass',
+		approach: 'sternotomy',
+		operatedAt: '2026-01-02T10:00:00Z'
+	},
+	'POST /api/episodes/[id]/session-amendments': { sessionId: 'a', kind: 'amended', body: 'More.' },
 	'POST /api/episodes/[id]/close': { reason: 'home' },
 	'POST /api/episodes/[id]/referrals': { service: 'physiotherapy', priority: 'soon', question: 'Begin.' },
 	'POST /api/episodes/[id]/clearances': { kind: 'treadmill', question: 'May it start?' },

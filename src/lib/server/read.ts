@@ -4,6 +4,7 @@ import { getClearance } from './clearances/queries';
 import type { PersonContext } from './context';
 import { coverNow } from './cover/queries';
 import { getNameboard } from './episodes/nameboard';
+import { correctionsOf } from './episodes/operation';
 import { listEpisodes } from './episodes/list';
 import { alarmsOf } from './escalations/alarms';
 import { openCallOf } from './escalations/follow-patient';
@@ -40,6 +41,7 @@ export const read = {
 	cover: ({ actor, now }: PersonContext) => coverNow(db(), actor.unitIds, now),
 	alarms: ({ actor }: PersonContext) => alarmsOf(db(), actor),
 	escalation: ({ actor }: PersonContext, id: string) => getEscalation(db(), actor, id),
+	corrections: ({ actor }: PersonContext, episodeId: string) => correctionsOf(db(), actor, episodeId),
 	openCall: ({ actor }: PersonContext, episodeId: string) => openCallOf(db(), actor, episodeId),
 	/** The ways out of the product that do not work now, as a list of the API. */
 	delivery: async ({ actor, now }: PersonContext) => ({

@@ -35,6 +35,17 @@ describe('obstaclesOf', () => {
 		expect(idsOf(draft(changes))).toEqual([id]);
 	});
 
+	it.each<[string, Partial<SessionDraft>]>([
+		['a reading', { before: typed({ hr: '80' }) }],
+		['what was done', { activities: [{ code: 'self-feeding', texts: {}, confirmed: [], helper: false }] }],
+		['what was felt', { symptoms: ['dizziness'] }],
+		['the temperature', { temperature: '37.2' }]
+	])('lets nothing at all be recorded, and %s alone', (_, something) => {
+		const nothing = { before: typed({}), during: [], after: typed({}), activities: [], symptoms: [] };
+		expect(idsOf(draft({ ...nothing, temperature: ' ' }))).toEqual(['activities']);
+		expect(idsOf(draft({ ...nothing, temperature: '', ...something }))).toEqual([]);
+	});
+
 	it('names moment, field, value and bounds', () => {
 		const [obstacle] = obstaclesOf(draft({ after: typed({ hr: '300' }) }));
 		expect(obstacle?.words).toBe('After, Pulse: 300 is not possible here: 20 to 250 beats/min.');

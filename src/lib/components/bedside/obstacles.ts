@@ -20,6 +20,7 @@ export function readingFieldId(place: Place, field: string): string {
 /** Everything that must be answered, corrected or confirmed before the session can be recorded, in page order. */
 export function obstaclesOf(draft: SessionDraft): Obstacle[] {
 	return [
+		...nothingYet(draft),
 		...openQuestions(draft),
 		...fieldObstacles(
 			'temperature',
@@ -38,6 +39,15 @@ export function obstaclesOf(draft: SessionDraft): Obstacle[] {
 		...readingObstacles({ moment: 'after' }, draft.after)
 	];
 }
+
+/** One press must not put a session on record in which nothing was done, measured or felt. */
+function nothingYet({ activities, before, during, after, symptoms, temperature }: SessionDraft): Obstacle[] {
+	const typed = [before, ...during, after].some(({ texts }) => Object.values(texts).some(isTyped));
+	const empty = activities.length === 0 && symptoms.length === 0 && !typed && !isTyped(temperature);
+	return empty ? [{ id: 'activities', words: m.bedside_nothing_yet() }] : [];
+}
+
+const isTyped = (text: string) => text.trim() !== '';
 
 function openQuestions({ drug, rhythm, responds }: SessionDraft): Obstacle[] {
 	return [

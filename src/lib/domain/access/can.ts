@@ -11,6 +11,8 @@ export const PERMISSIONS = [
 	'episode.move',
 	'episode.close',
 	'contact.read',
+	'contact.amend',
+	'operation.record',
 	'referral.create',
 	'referral.answer',
 	'referral.close',
@@ -78,6 +80,10 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return among(role, 'coordinator', 'nurse', 'physician');
 		case 'contact.read':
 			return clinical || role === 'coordinator';
+		case 'contact.amend':
+			return among(role, 'coordinator', 'nurse');
+		case 'operation.record':
+			return among(role, 'coordinator', 'physician', 'surgeon');
 		case 'referral.create':
 		case 'referral.withdraw':
 			return among(role, 'surgeon', 'physician');

@@ -1,3 +1,4 @@
+import type { SessionAmendment } from './amendments';
 import type { Finding } from './finding';
 import type { Reading } from './forms';
 import type { Outcome } from './codes';
@@ -12,6 +13,7 @@ export interface SessionLine {
 	limitSet: string;
 	limitVersion: string;
 	recordedBy: string;
+	recordedById: string;
 	recordedAt: string;
 	activities: { code: string; name: string }[];
 	symptoms: string[];
@@ -27,4 +29,6 @@ export interface SessionLine {
 		version: Finding['version'] | null;
 	})[];
 	deviation: { reason: string } | null;
+	/** What was said about it since, oldest first; empty for one that stands as it was recorded. */
+	amendments: SessionAmendment[];
 }

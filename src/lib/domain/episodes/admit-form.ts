@@ -15,11 +15,13 @@ import type { AdmitInput } from './forms';
 export const DRUG_ANSWERS = ['yes', 'no', 'unknown'] as const;
 export type DrugAnswer = (typeof DRUG_ANSWERS)[number];
 
-const line = (field: string, max: number) =>
+/** A text that may be left empty. */
+export const line = (field: string, max: number) =>
 	z.string().trim().max(max, `${field} has at most ${max} characters.`).default('');
 /** Stays a text: a browser may post anything, and what was posted is shown again. */
 const isIn = (list: readonly string[], value: string): boolean => list.includes(value);
-const chosen = (list: readonly string[], message: string) =>
+/** One of a list, and never none. */
+export const chosen = (list: readonly string[], message: string) =>
 	z
 		.string()
 		.default('')
@@ -31,9 +33,10 @@ const known = (list: readonly string[], field: string) =>
 		.refine((value) => value === '' || isIn(list, value), `${field} is not one of the list.`);
 
 /** What is no day stays as it was typed, so that it can be put right. */
-const typedDay = z.string().transform((typed) => readDate(typed) ?? typed);
+export const typedDay = z.string().transform((typed) => readDate(typed) ?? typed);
 
-const typedTime = z
+/** What is no time stays as it was typed, too. */
+export const typedTime = z
 	.string()
 	.max(20, 'The time of the operation has at most 20 characters.')
 	.transform((typed) => readTime(typed) ?? typed);

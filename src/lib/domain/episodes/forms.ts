@@ -1,7 +1,8 @@
 import { z } from 'zod';
-import { APPROACHES, CLOSE_REASONS, isOneOf, RHYTHMS, SEXES } from '../core/codes';
+import { CLOSE_REASONS, isOneOf, RHYTHMS, SEXES } from '../core/codes';
 import { text } from '../core/fields';
 import { written } from './identifiers';
+import { contactBody, operation } from './operation';
 
 const level = z
 	.number('The level is a number from 1 to 6.')
@@ -27,23 +28,11 @@ const patient = z.strictObject({
 	birthDate: z.iso.date('The birth date is a date like 1958-09-05.'),
 	sex: z.enum(SEXES, `The sex is one of ${SEXES.join(', ')}.`),
 	mrn,
-	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').optional(),
-	language: z
-		.string()
-		.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.')
-		.optional(),
-	smsConsent: z.boolean('The consent to text messages is true or false.').optional(),
-	email: z.email('The e-mail address is one address, such as name@post.example.').max(254).optional(),
-	mailConsent: z.boolean('The consent to mails is true or false.').optional()
-});
-
-const operation = z.strictObject({
-	procedure: text('The procedure', 120),
-	approach: z.enum(APPROACHES, `The approach is one of ${APPROACHES.join(', ')}.`),
-	operatedAt: z.iso.datetime({
-		offset: true,
-		error: 'The time of the operation is an instant like 2026-12-01T09:30:00Z.'
-	})
+	phone: contactBody.shape.phone.unwrap().unwrap().optional(),
+	language: contactBody.shape.language,
+	smsConsent: contactBody.shape.smsConsent,
+	email: contactBody.shape.email.unwrap().unwrap().optional(),
+	mailConsent: contactBody.shape.mailConsent
 });
 
 export const admitBody = z.strictObject({

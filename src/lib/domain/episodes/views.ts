@@ -107,6 +107,8 @@ export interface Nameboard {
 	unitId: string;
 	bed: string | null;
 	phase: 'inpatient' | 'outpatient';
+	/** The latest operation, of which the next ones speak; null without one. */
+	operationId: string | null;
 	procedure: string | null;
 	approach: Approach | null;
 	operatedAt: string | null;

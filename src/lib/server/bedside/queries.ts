@@ -1,4 +1,4 @@
-import { asc, desc, eq, inArray } from 'drizzle-orm';
+import { asc, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import type { ActivityCode } from '$lib/domain/bedside/activities/codes';
@@ -7,7 +7,7 @@ import type { SessionLine } from '$lib/domain/bedside/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { accessEpisode } from '../access/access';
 import type { Reader } from '../db';
-import { bedsideSessions, findings, readings, users } from '../db/schema';
+import { bedsideSessions, findings, readings, sessionAmendments, users } from '../db/schema';
 
 /** The newest sessions of an episode, newest first, each with its readings and findings. */
 export async function listSessions(
@@ -25,9 +25,10 @@ export async function listSessions(
 		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id))
 		.limit(limit);
 	const ids = sessions.map(({ session }) => session.id);
-	const [measured, found] = await Promise.all([
+	const [measured, found, amended] = await Promise.all([
 		db.select().from(readings).where(inArray(readings.sessionId, ids)).orderBy(asc(readings.ordinal)),
-		db.select().from(findings).where(inArray(findings.sessionId, ids)).orderBy(asc(findings.ordinal))
+		db.select().from(findings).where(inArray(findings.sessionId, ids)).orderBy(asc(findings.ordinal)),
+		amendmentsOf(db, ids)
 	]);
 	return sessions.map(({ session, recordedBy }) => {
 		const own = measured.filter((row) => row.sessionId === session.id);
@@ -41,6 +42,7 @@ export async function listSessions(
 			limitSet: session.limitSet,
 			limitVersion: session.limitVersion,
 			recordedBy,
+			recordedById: session.recordedBy,
 			recordedAt: toRfc3339(session.recordedAt),
 			activities: session.activities.map(toActivity),
 			symptoms: session.symptoms.map((s) => (typeof s === 'string' ? s : (s as { code: string }).code)),
@@ -48,9 +50,33 @@ export async function listSessions(
 			during: phase('during'),
 			after: phase('after')[0] ?? {},
 			findings: found.filter((f) => f.sessionId === session.id).map(toFinding),
-			deviation: session.deviation as { reason: string } | null
+			deviation: session.deviation as { reason: string } | null,
+			amendments: amended
+				.filter(({ sessionId }) => sessionId === session.id)
+				.map(({ sessionId: _session, at, ...row }) => ({ ...row, at: toRfc3339(at) }))
 		};
 	});
+}
+
+/** Left out of what counts: a session that was entered in error stays on record and says nothing about the patient. */
+export function notInError() {
+	return sql`not exists (select 1 from session_amendments where session_amendments.session_id = ${bedsideSessions.id}
+		and session_amendments.kind = 'entered-in-error')`;
+}
+
+function amendmentsOf(db: Reader, sessionIds: string[]) {
+	return db
+		.select({
+			sessionId: sessionAmendments.sessionId,
+			kind: sessionAmendments.kind,
+			body: sessionAmendments.body,
+			by: users.name,
+			at: sessionAmendments.at
+		})
+		.from(sessionAmendments)
+		.innerJoin(users, eq(users.id, sessionAmendments.byId))
+		.where(inArray(sessionAmendments.sessionId, sessionIds))
+		.orderBy(asc(sessionAmendments.at), asc(sessionAmendments.id));
 }
 
 function toActivity(activity: unknown): { code: string; name: string } {

@@ -1,7 +1,8 @@
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import type { Verdict } from '$lib/domain/bedside/finding';
-import type { Reading, SessionBody } from '$lib/domain/bedside/forms';
+import type { SessionBody } from '$lib/domain/bedside/forms';
 import { CLEARANCE_WORDS } from '$lib/i18n/labels';
+import { readingText } from '$lib/i18n/readings';
 import { stoodWords } from '$lib/i18n/standing';
 import { m } from '$lib/i18n/paraglide/messages';
 import type { Lacking } from './deviations';
@@ -26,14 +27,4 @@ function deviationText(reason: string, lacking: readonly Lacking[]): string {
 	return stood.length > 0
 		? m.bedside_summary_deviation_from({ stood: stood.join('; '), reason })
 		: m.bedside_summary_deviation({ reason });
-}
-
-/** `128/74, pulse 76, saturation 96 %`; what was not measured is left out. */
-export function readingText(reading: Reading): string {
-	const parts = [
-		reading.sbp != null ? `${reading.sbp}/${reading.dbp ?? '–'}` : '',
-		reading.hr != null ? m.bedside_pulse({ hr: reading.hr }) : '',
-		reading.spo2 != null ? m.bedside_saturation({ spo2: reading.spo2 }) : ''
-	].filter((part) => part !== '');
-	return parts.join(', ') || m.bedside_not_measured();
 }

@@ -6,6 +6,7 @@ import type { ShownEvidence } from '$lib/domain/clearances/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { localDateOf } from '$lib/domain/core/time';
 import type { EpisodeRow } from '../access/access';
+import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, escalations, findings } from '../db/schema';
 import { env } from '../env';
@@ -61,7 +62,7 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 	const last = await db
 		.select({ id: bedsideSessions.id })
 		.from(bedsideSessions)
-		.where(eq(bedsideSessions.episodeId, episodeId))
+		.where(and(eq(bedsideSessions.episodeId, episodeId), notInError()))
 		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id))
 		.limit(SESSIONS_SHOWN);
 	const ids = last.map(({ id }) => id);
@@ -71,6 +72,7 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 		.where(
 			and(
 				eq(bedsideSessions.episodeId, episodeId),
+				notInError(),
 				or(inArray(bedsideSessions.id, ids), gt(bedsideSessions.recordedAt, since))
 			)
 		)

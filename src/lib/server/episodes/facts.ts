@@ -7,6 +7,7 @@ import { nothingByMouth } from '$lib/domain/episodes/by-mouth';
 import { mayDoNow, type MayDoNow } from '$lib/domain/episodes/may-do-now';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
 import { precautionsOf, type Precautions } from '$lib/domain/episodes/precautions';
+import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, clearanceMoves, clearances, operations } from '../db/schema';
 import { env } from '../env';
@@ -122,6 +123,7 @@ function tubedOf(db: Reader, episodeIds: string[]) {
 		.where(
 			and(
 				inArray(bedsideSessions.episodeId, episodeIds),
+				notInError(),
 				sql`json_extract(${bedsideSessions.context}, '$.airway') in ('tube', 'tracheostomy')`
 			)
 		);

@@ -54,6 +54,7 @@ export async function getNameboard(
 		unitId: episode.unitId,
 		bed: episode.bed,
 		phase: episode.phase,
+		operationId: derived.operation?.id ?? null,
 		procedure: derived.operation?.procedure ?? null,
 		approach: derived.operation?.approach ?? null,
 		operatedAt: derived.operation ? toRfc3339(derived.operation.operatedAt) : null,

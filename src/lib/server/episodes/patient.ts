@@ -4,14 +4,17 @@ import { Problem, invalidField } from '$lib/domain/core/errors';
 import { Refusals } from '$lib/domain/core/refusals';
 import { localDateOf } from '$lib/domain/core/time';
 import type { AdmitInput } from '$lib/domain/episodes/forms';
+import type { Contact } from '$lib/domain/episodes/operation';
 import { isSameName, normaliseName, written } from '$lib/domain/episodes/identifiers';
 import { conflictsWith, PATIENT_FIELDS, type PatientField } from '$lib/domain/episodes/identity';
 import { normalisePhone, PhoneError } from '$lib/domain/messages/phone';
+import { accessEpisode } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, patientAmendments, patients, units } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
+import { write, type Written } from '../write';
 import { isNumber } from './spelt';
 
 type PatientRow = typeof patients.$inferSelect;
@@ -62,6 +65,39 @@ export async function settlePatient(
 	return known
 		? { patientId: known.id, audit: await amend(tx, context, known, who) }
 		: { patientId: await insertPatient(tx, context, who), audit: [] };
+}
+
+/**
+ * Put right how a patient is reached. An empty number takes it away; what is left out stays as it is.
+ * @throws Problem `invalid` for a telephone number that is none; `wrong-state` when the record says it already
+ */
+export function amendContact(
+	context: PersonContext,
+	episodeId: string,
+	input: Contact
+): Promise<Written<{ id: string }>> {
+	return write(context, 'contact.amend', async (tx) => {
+		const episode = await accessEpisode(tx, context.actor, episodeId, 'contact.amend');
+		const [known] = await tx.select().from(patients).where(eq(patients.id, episode.patientId));
+		if (!known) {
+			throw new Error(`Episode ${episodeId} lost its patient.`);
+		}
+		const [amended] = await amendPatient(tx, context, known, contactOf(input));
+		if (!amended) {
+			throw new Problem('wrong-state', 'The record says this already; nothing was changed.');
+		}
+		return {
+			result: { id: known.id },
+			audit: { ...amended, episodeId },
+			events: [{ topic: 'episode', kind: 'contact', id: episodeId, episodeId }]
+		};
+	});
+}
+
+/** What was given; what was left out is no part of it. */
+function contactOf({ phone, ...rest }: Contact): Partial<Pick<PatientRow, PatientField>> {
+	const given = Object.fromEntries(Object.entries(rest).filter(([, value]) => value !== undefined));
+	return { ...given, ...(phone === undefined ? {} : { phone: phoneOf(phone ?? undefined, '/phone') }) };
 }
 
 function refuseConflicts(known: PatientRow, given: Given, confirmName: boolean): void {
@@ -135,7 +171,17 @@ async function amend(
 		email: given.email ?? known.email,
 		mailConsent: given.mailConsent ?? known.mailConsent
 	};
-	const changed = PATIENT_FIELDS.filter((field) => after[field] !== known[field]);
+	return amendPatient(tx, context, known, after);
+}
+
+/** Change what a record of a patient says, and keep what stood there before. Nothing changed leaves no trace. */
+async function amendPatient(
+	tx: Tx,
+	context: PersonContext,
+	known: PatientRow,
+	after: Partial<Pick<PatientRow, PatientField>>
+): Promise<AuditEvent[]> {
+	const changed = PATIENT_FIELDS.filter((field) => field in after && after[field] !== known[field]);
 	if (changed.length === 0) {
 		return [];
 	}
@@ -159,7 +205,7 @@ function textOf(value: string | boolean | null | undefined): string | null {
 	return value === null || value === undefined ? null : String(value);
 }
 
-function phoneOf(typed: string | undefined): string | null {
+function phoneOf(typed: string | undefined, pointer = '/patient/phone'): string | null {
 	if (!typed) {
 		return null;
 	}
@@ -167,7 +213,7 @@ function phoneOf(typed: string | undefined): string | null {
 		return normalisePhone(typed);
 	} catch (error) {
 		if (error instanceof PhoneError) {
-			throw invalidField('/patient/phone', error.message);
+			throw invalidField(pointer, error.message);
 		}
 		throw error;
 	}

@@ -1,9 +1,10 @@
-import { asc, desc, eq } from 'drizzle-orm';
+import { and, asc, desc, eq } from 'drizzle-orm';
 import type { RuleId } from '$lib/domain/bedside/codes';
 import type { Finding } from '$lib/domain/bedside/finding';
 import type { Assessment, Context, Reading } from '$lib/domain/bedside/forms';
 import { adviseLevel, type Advice } from '$lib/domain/bedside/progress';
 import { LEVELS, type Level } from '$lib/domain/core/codes';
+import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, findings, readings } from '../db/schema';
 
@@ -20,7 +21,7 @@ export async function adviceOf(db: Reader, episodeId: string, today: Level): Pro
 	const [session] = await db
 		.select()
 		.from(bedsideSessions)
-		.where(eq(bedsideSessions.episodeId, episodeId))
+		.where(and(eq(bedsideSessions.episodeId, episodeId), notInError()))
 		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id))
 		.limit(1);
 	if (!session) {

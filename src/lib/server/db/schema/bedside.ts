@@ -1,5 +1,6 @@
 import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { SETS } from '../../../domain/bedside/codes';
+import { SESSION_AMENDMENTS } from '../../../domain/bedside/amendments';
 import { RHYTHMS } from '../../../domain/core/codes';
 import { STERNUM_FINDINGS, WOUND_FINDINGS } from '../../../domain/wounds/codes';
 import { users } from './accounts';
@@ -33,6 +34,24 @@ export const bedsideSessions = sqliteTable(
 		recordedAt: instant('recorded_at').notNull()
 	},
 	(t) => [index('bedside_sessions_episode').on(t.episodeId, t.startedAt)]
+);
+
+/** What was said about a session after it was recorded; what it says itself is never changed. Append-only by trigger. */
+export const sessionAmendments = sqliteTable(
+	'session_amendments',
+	{
+		id: id(),
+		sessionId: text('session_id')
+			.notNull()
+			.references(() => bedsideSessions.id),
+		kind: text('kind', { enum: SESSION_AMENDMENTS }).notNull(),
+		body: text('body').notNull(),
+		byId: text('by_id')
+			.notNull()
+			.references(() => users.id),
+		at: instant('at').notNull()
+	},
+	(t) => [index('session_amendments_session').on(t.sessionId, t.at)]
 );
 
 /** Units: beats/min, mmHg, %, breaths/min, Borg 6-20, 0-10, L/min. */

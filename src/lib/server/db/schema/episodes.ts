@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 import { APPROACHES, CLOSE_REASONS, RHYTHMS, SEXES } from '../../../domain/core/codes';
 import { PATIENT_FIELDS } from '../../../domain/episodes/identity';
+import { OPERATION_FIELDS } from '../../../domain/episodes/operation';
 import { units, users } from './accounts';
 import { id, instant, yesNo } from './columns';
 
@@ -97,6 +98,25 @@ export const operations = sqliteTable(
 		createdAt: instant('created_at').notNull()
 	},
 	(t) => [index('operations_episode').on(t.episodeId, t.operatedAt)]
+);
+
+/** What a record of an operation said before it was corrected, and by whom; append-only by trigger. */
+export const operationAmendments = sqliteTable(
+	'operation_amendments',
+	{
+		id: id(),
+		operationId: text('operation_id')
+			.notNull()
+			.references(() => operations.id),
+		at: instant('at').notNull(),
+		byId: text('by_id')
+			.notNull()
+			.references(() => users.id),
+		field: text('field', { enum: OPERATION_FIELDS }).notNull(),
+		before: text('before'),
+		after: text('after')
+	},
+	(t) => [index('operation_amendments_operation').on(t.operationId, t.at)]
 );
 
 /** Where the patient lay, from when until when. */

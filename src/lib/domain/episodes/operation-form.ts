@@ -1,0 +1,46 @@
+/** An operation and a contact as pages ask for them: flat, in wall time, everything a text. */
+import { z } from 'zod';
+import { APPROACHES } from '../core/codes';
+import { text } from '../core/fields';
+import { toRfc3339 } from '../core/instant';
+import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
+import { chosen, line, typedDay, typedTime } from './admit-form';
+import type { Contact, RecordOperation } from './operation';
+
+/** Whether the record is put right, or gets a further operation. */
+export const OPERATION_DEEDS = ['corrects', 'further'] as const;
+
+export const operationForm = z.object({
+	which: chosen(OPERATION_DEEDS, 'What you are recording: choose one.'),
+	procedure: text('The procedure', 120).default(''),
+	approach: chosen(APPROACHES, 'Approach: choose one.'),
+	operatedOn: typedDay
+		.default('')
+		.refine(isLocalDate, 'Day of the operation: write a day that exists, such as 1 3 2026.'),
+	operatedTime: typedTime
+		.default('')
+		.refine(isLocalTime, 'Time of the operation: write it from 00:00 to 23:59.'),
+	surgeonId: line('The surgeon', 120)
+});
+export type OperationForm = z.output<typeof operationForm>;
+
+/** @param known the operation on record that a correction is about; null for none */
+export function toOperation(form: OperationForm, known: string | null, zone: Zone): Record<string, unknown> {
+	return {
+		procedure: form.procedure,
+		approach: form.approach,
+		operatedAt: toRfc3339(instantOf(form.operatedOn, form.operatedTime, zone)),
+		surgeonId: form.surgeonId || undefined,
+		corrects: form.which === 'corrects' && known !== null ? known : undefined
+	} satisfies Record<keyof RecordOperation, unknown>;
+}
+
+export const contactForm = z.object({
+	phone: line('The telephone number', 30),
+	smsConsent: z.boolean().default(false)
+});
+
+/** An empty number takes away the one on record. */
+export function toContact(form: z.output<typeof contactForm>): Contact {
+	return { phone: form.phone || null, smsConsent: form.smsConsent };
+}

@@ -1,0 +1,47 @@
+import { z } from 'zod';
+import { APPROACHES } from '../core/codes';
+import { text } from '../core/fields';
+
+/** The parts of an operation's record that can be corrected. */
+export const OPERATION_FIELDS = ['procedure', 'approach', 'operatedAt', 'surgeonId'] as const;
+export type OperationField = (typeof OPERATION_FIELDS)[number];
+
+export const operation = z.strictObject({
+	procedure: text('The procedure', 120),
+	approach: z.enum(APPROACHES, `The approach is one of ${APPROACHES.join(', ')}.`),
+	operatedAt: z.iso.datetime({
+		offset: true,
+		error: 'The time of the operation is an instant like 2026-12-01T09:30:00Z.'
+	})
+});
+
+/** What the record said before a correction: one for each field that changed. */
+export interface Correction {
+	field: OperationField;
+	before: string | null;
+	by: string;
+	at: string;
+}
+
+/**
+ * An operation after the admission: a further one, which a return to theatre is, or with `corrects` what the record
+ * should have said of one that stands there.
+ */
+export const recordOperationBody = operation.extend({
+	surgeonId: z.string().min(1, 'The surgeon is empty.').max(120).optional(),
+	corrects: z.string().min(1, 'The operation to correct is empty.').max(64).optional()
+});
+export type RecordOperation = z.infer<typeof recordOperationBody>;
+
+/** The number, language and consent by which a patient is reached; what is left out stays as it is. */
+export const contactBody = z.strictObject({
+	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').nullish(),
+	language: z
+		.string()
+		.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.')
+		.optional(),
+	smsConsent: z.boolean('The consent to text messages is true or false.').optional(),
+	email: z.email('The e-mail address is one address, such as name@post.example.').max(254).nullish(),
+	mailConsent: z.boolean('The consent to mails is true or false.').optional()
+});
+export type Contact = z.infer<typeof contactBody>;
