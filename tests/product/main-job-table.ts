@@ -53,7 +53,19 @@ const SERIES = {
  */
 export function mainJob(people: () => People): Call[] {
 	const make = new Makers(people);
+	let admission: Body = {};
 	return [
+		{
+			name: 'admit',
+			by: 'coordinator',
+			path: async () => {
+				admission = newAdmission();
+				return '/api/episodes';
+			},
+			body: () => admission,
+			other: newAdmission(),
+			wrong: null
+		},
 		{
 			name: 'refer',
 			by: 'surgeon',
@@ -76,6 +88,17 @@ export function mainJob(people: () => People): Call[] {
 		...escalationCalls(make),
 		...visitCalls(make)
 	];
+}
+
+/** Somebody who was never here, into a bed that nobody has. */
+function newAdmission(): Body {
+	const mrn = `M ${randomUUID()}`;
+	return {
+		patient: { name: 'Ines Marram', birthDate: '1950-01-31', sex: 'female', mrn },
+		unit: 'Tern Ward',
+		bed: mrn.slice(0, 12),
+		level: 2
+	};
 }
 
 function referralCalls(make: Makers): Call[] {
@@ -281,7 +304,7 @@ function visitCalls(make: Makers): Call[] {
 }
 
 /** Brings things into a state, each time for a patient of their own. */
-class Makers {
+export class Makers {
 	physicianId = '';
 
 	constructor(private readonly people: () => People) {}

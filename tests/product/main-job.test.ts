@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { newKey, signInAs, type Answer } from '../support/api';
 import { startProduct, type Product } from '../support/server';
-import { mainJob, type Call, type People, type Role } from './main-job-table';
+import { mainJob, Makers, type Call, type People, type Role } from './main-job-table';
 
 let product: Product;
 let people: People;
@@ -73,5 +73,82 @@ describe.each(CALLS.filter(({ wrong }) => wrong !== null))('$name', (call) => {
 		const known = ['already-asked', 'already-taken'].includes(String(body.type));
 		expect(known ? body.type : body.state).toEqual(expect.any(String));
 		expect(known || body.type === 'wrong-state').toBe(true);
+	});
+});
+
+describe('what is read', () => {
+	const some = expect.anything();
+	const READS: [string, (ids: Ids) => string, Record<string, unknown>][] = [
+		[
+			'/api/me',
+			() => '/api/me',
+			{ user: { id: some, name: some, role: 'nurse' }, units: some, permissions: some }
+		],
+		['/api/loose-ends', () => '/api/loose-ends', { mine: expect.any(Array), theirs: expect.any(Array) }],
+		[
+			'/api/episodes/:id',
+			({ episodeId }) => `/api/episodes/${episodeId}`,
+			{
+				id: some,
+				patient: { id: some, name: some, mrn: some, birthDate: some },
+				referrals: [{ id: some, service: 'physiotherapy', state: 'accepted', threadId: some }],
+				threads: [{ id: some, service: 'physiotherapy', state: 'accepted' }],
+				clearances: expect.any(Array),
+				visits: [],
+				mayDoNow: some
+			}
+		],
+		[
+			'/api/threads/:id',
+			({ threadId }) => `/api/threads/${threadId}`,
+			{ referral: { state: 'accepted' }, next: null }
+		],
+		[
+			'/api/escalations/:id',
+			({ escalationId }) => `/api/escalations/${escalationId}`,
+			{ grade: 'high', state: 'raised', holder: null, steps: expect.any(Array), next: { step: 1, at: some } }
+		]
+	];
+	interface Ids {
+		episodeId: string;
+		threadId: string;
+		escalationId: string;
+	}
+	let ids: Ids;
+	beforeAll(async () => {
+		const make = new Makers(() => people);
+		const episodeId = await make.episode();
+		const refer = { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' };
+		const { body } = await people.surgeon.post(`/api/episodes/${episodeId}/referrals`, refer);
+		await people.therapist.post(`/api/referrals/${body.id}/accept`);
+		const call = { grade: 'high', situation: 's', background: 'b', assessment: 'a', request: 'r' };
+		const raised = await people.therapist.post(`/api/episodes/${episodeId}/escalations`, call);
+		ids = { episodeId, threadId: String(body.threadId), escalationId: String(raised.body.id) };
+	});
+
+	it.each(READS)('%s answers as written', async (_, path, shape) => {
+		const { status, body } = await people.nurse.get(path(ids));
+		expect([status, body]).toEqual([200, expect.objectContaining({})]);
+		expect(body).toMatchObject(shape);
+	});
+
+	it('a loose end and a row of the ward have what is written', async () => {
+		const { mine } = (await people.nurse.get('/api/loose-ends')).body as unknown as { mine: object[] };
+		const LOOSE = ['bed', 'due', 'episodeId', 'grade', 'id', 'kind', 'patientName', 'since', 'title', 'unit'];
+		expect(Object.keys(mine[0] ?? {})).toEqual(expect.arrayContaining(LOOSE));
+		const { items, next } = (await people.nurse.get('/api/episodes?limit=1')).body;
+		const ROW = [
+			'bed',
+			'betaBlocked',
+			'id',
+			'level',
+			'looseEnds',
+			'operatedAt',
+			'patient',
+			'postOpDay',
+			'procedure'
+		];
+		expect(Object.keys(items[0] ?? {})).toEqual(expect.arrayContaining([...ROW, 'unit']));
+		expect(next).toEqual(expect.any(String));
 	});
 });

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import type { SessionDraft } from './draft';
 import { confirmation, obstaclesOf, pressureDoubt, pressureFault } from './obstacles';
 import { draft, typed } from './testing';
 
