@@ -64,7 +64,7 @@ describe('an operation after the admission', () => {
 			...OPERATION,
 			corrects: operationId
 		});
-		await expect(foreign).rejects.toMatchObject({ code: 'not-found' });
+		await expect(foreign).rejects.toMatchObject({ code: 'invalid' });
 	});
 
 	it.each(['nurse', 'therapist'] as const)('is not for a %s to record', async (role) => {

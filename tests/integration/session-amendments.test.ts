@@ -61,7 +61,7 @@ describe('a session on record', () => {
 		const other = await addPatient({ unitId: hospital.units.ward });
 		const input = { sessionId, kind: 'amended', body: 'More.' } as const;
 		const foreign = amendSession(contextOf(therapist), other.episodeId, input);
-		await expect(foreign).rejects.toMatchObject({ code: 'not-found' });
+		await expect(foreign).rejects.toMatchObject({ code: 'invalid' });
 		await expect(amend('amended', surgeon)).rejects.toMatchObject({ code: 'not-allowed' });
 	});
 });

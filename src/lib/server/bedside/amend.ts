@@ -1,6 +1,6 @@
 import { and, eq } from 'drizzle-orm';
 import { isInError, type AmendSession } from '$lib/domain/bedside/amendments';
-import { Problem } from '$lib/domain/core/errors';
+import { invalidField, Problem } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, threadForDeed } from '../access/access';
 import type { PersonContext } from '../context';
@@ -11,7 +11,7 @@ import { write, type Written } from '../write';
 /**
  * Say more about a session that is on record, or that it was entered in error: for the wrong patient, or twice. What
  * it says itself is never changed. Only who recorded it can say that it was an error.
- * @throws Problem `not-found` for a session of another stay; `wrong-state` for one in error already
+ * @throws Problem `invalid` for a session of another stay; `wrong-state` for one in error already
  */
 export function amendSession(
 	context: PersonContext,
@@ -25,7 +25,7 @@ export function amendSession(
 			.from(bedsideSessions)
 			.where(and(eq(bedsideSessions.id, sessionId), eq(bedsideSessions.episodeId, episodeId)));
 		if (!session) {
-			throw new Problem('not-found', 'There is no such session of this stay.');
+			throw invalidField('/sessionId', `sessionId ${sessionId} is no session of this stay.`);
 		}
 		const amendments = await tx
 			.select({ kind: sessionAmendments.kind })

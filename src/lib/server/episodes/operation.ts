@@ -1,6 +1,6 @@
 import { and, desc, eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
-import { Problem } from '$lib/domain/core/errors';
+import { invalidField, Problem } from '$lib/domain/core/errors';
 import { parseRfc3339, toRfc3339 } from '$lib/domain/core/instant';
 import { localDateOf } from '$lib/domain/core/time';
 import { OPERATION_FIELDS, type Correction, type RecordOperation } from '$lib/domain/episodes/operation';
@@ -20,7 +20,7 @@ type Values = Pick<Operation, 'procedure' | 'approach' | 'operatedAt' | 'surgeon
 /**
  * Put an operation on record after the admission, or correct what stands there: day, precautions and clearances
  * count from it. A correction keeps what was there before.
- * @throws Problem `not-found` for an operation to correct that is not of this stay; `wrong-state` when the
+ * @throws Problem `invalid` for an operation to correct that is not of this stay; `wrong-state` when the
  * correction says what is on record already
  */
 export function recordOperation(
@@ -71,7 +71,7 @@ async function operationOf(tx: Tx, episodeId: string, id: string): Promise<Opera
 		.from(operations)
 		.where(and(eq(operations.id, id), eq(operations.episodeId, episodeId)));
 	if (!row) {
-		throw new Problem('not-found', 'There is no such operation of this stay.');
+		throw invalidField('/corrects', `corrects ${id} is no operation of this stay.`);
 	}
 	return row;
 }
