@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { limitsOfPatient } from '../bedside/limits/layers';
 import { mayHold, precautionsOf } from './precautions';
 
 const DAY = '2026-03-01' as const;
@@ -37,6 +38,14 @@ describe('precautionsOf', () => {
 			maxLoadKg: load,
 			armStage: armStage && { reviewOn: armStage.reviewOn }
 		});
+	});
+
+	it('allows no more than a limit that was set for the patient, as the rules do', () => {
+		const by = { setBy: 'Orla Marsh', untilOn: '2026-03-20' };
+		const own = { version: 1, key: 'arm-elevation.cleared', value: 60, ...by } as const;
+		const limits = limitsOfPatient('strict', { unit: [], patient: [own] });
+		const armStage = { maxElevationDeg: 90, maxLoadKg: null, reviewOn: null };
+		expect(precautionsOf(done, armStage, false, limits).maxElevationDeg).toBe(60);
 	});
 
 	it('asks for the end after eight weeks: common practice, no published source', () => {

@@ -1,8 +1,8 @@
+import { armLimitOf } from '../bedside/limits/arms';
+import { limitsFor, type LimitSet } from '../bedside/limits/limits';
 import type { Approach } from '../core/codes';
 import { addDays, type LocalDate } from '../core/time';
 
-/** Arms stay below this until the arm stage is cleared: common practice, no published source. */
-export const ARM_LIMIT_BEFORE_CLEARANCE_DEG = 45;
 /** Eight weeks; published advice runs from 6 to 12 weeks, so the end is a surgeon's decision and this only a date to ask. */
 export const STERNAL_DAYS = 56;
 /** When a decision did not end them it falls due again: common practice, no published source. */
@@ -30,11 +30,13 @@ export interface Precautions {
  * What to beware of. Before the operation its precautions do not hold yet.
  * @param armStage the arm stage in force, or null
  * @param ended whether ending the precautions was cleared
+ * @param limits those that judge the patient: how high an arm may go is the same here as in the rules
  */
 export function precautionsOf(
 	operation: { approach: Approach; day: LocalDate; begun: boolean } | null,
 	armStage: { maxElevationDeg: number | null; maxLoadKg: number | null; reviewOn: LocalDate | null } | null,
-	ended: boolean
+	ended: boolean,
+	limits: LimitSet = limitsFor('strict')
 ): Precautions {
 	const basis = basisOf(operation);
 	if (!operation || basis !== 'performed' || operation.approach !== 'sternotomy' || ended) {
@@ -51,7 +53,7 @@ export function precautionsOf(
 		basis,
 		sternal: true,
 		endDue: addDays(operation.day, STERNAL_DAYS),
-		maxElevationDeg: armStage ? (armStage.maxElevationDeg ?? 90) : ARM_LIMIT_BEFORE_CLEARANCE_DEG,
+		maxElevationDeg: armLimitOf(limits, armStage)?.value ?? null,
 		maxLoadKg: armStage?.maxLoadKg ?? null,
 		armStage: armStage && { reviewOn: armStage.reviewOn }
 	};

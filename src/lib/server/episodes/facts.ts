@@ -1,4 +1,5 @@
 import { and, asc, desc, eq, inArray, sql } from 'drizzle-orm';
+import { limitsOfPatient, NO_LAYERS, setOfUnit, type LocalLayers } from '$lib/domain/bedside/limits/layers';
 import type { Level } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
 import { standingDuring } from '$lib/domain/clearances/replay';
@@ -11,6 +12,7 @@ import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, clearanceMoves, clearances, operations } from '../db/schema';
 import { env } from '../env';
+import { layersOfMany } from '../limits/queries';
 
 export type Operation = typeof operations.$inferSelect;
 export type Clearance = typeof clearances.$inferSelect;
@@ -37,21 +39,25 @@ export function levelsDecide({ phase }: { phase: 'inpatient' | 'outpatient' }, f
 	return phase === 'inpatient' && facts.precautions.basis !== 'planned';
 }
 
-/** Derive the facts of several episodes with three queries. */
+/** What the facts of an episode are derived from, beside its operations and clearances. */
+type Stay = { id: string; level: number; unitId: string; phase: 'inpatient' | 'outpatient' };
+
+/** Derive the facts of several episodes, with a few queries for all of them. */
 export async function factsOf(
 	db: Reader,
-	episodes: readonly { id: string; level: number }[],
+	episodes: readonly Stay[],
 	now: number
 ): Promise<Map<string, EpisodeFacts>> {
 	const ids = episodes.map((episode) => episode.id);
-	const [allOperations, allClearances, tubed] = await Promise.all([
+	const [allOperations, allClearances, tubed, layers] = await Promise.all([
 		db
 			.select()
 			.from(operations)
 			.where(inArray(operations.episodeId, ids))
 			.orderBy(desc(operations.operatedAt)),
 		db.select().from(clearances).where(inArray(clearances.episodeId, ids)).orderBy(desc(clearances.askedAt)),
-		tubedOf(db, ids)
+		tubedOf(db, ids),
+		layersOfMany(db, episodes, now)
 	]);
 	return new Map(
 		episodes.map((episode) => [
@@ -61,18 +67,15 @@ export async function factsOf(
 				allOperations.filter((row) => row.episodeId === episode.id),
 				allClearances.filter((row) => row.episodeId === episode.id),
 				now,
-				tubed.filter((row) => row.episodeId === episode.id)
+				tubed.filter((row) => row.episodeId === episode.id),
+				layers.get(episode.id)
 			)
 		])
 	);
 }
 
 /** The facts of one episode. */
-export async function factsOfOne(
-	db: Reader,
-	episode: { id: string; level: number },
-	now: number
-): Promise<EpisodeFacts> {
+export async function factsOfOne(db: Reader, episode: Stay, now: number): Promise<EpisodeFacts> {
 	const facts = (await factsOf(db, [episode], now)).get(episode.id);
 	if (!facts) {
 		throw new Error(`No facts were derived of episode ${episode.id}.`);
@@ -86,7 +89,7 @@ export async function factsOfOne(
  */
 export async function factsDuring(
 	db: Reader,
-	episode: { id: string; level: number },
+	episode: Stay,
 	span: { startedAt: number; endedAt: number }
 ): Promise<EpisodeFacts> {
 	const [performed, rows, moves] = await Promise.all([
@@ -146,11 +149,12 @@ function movesOf(db: Reader, episodeId: string) {
 }
 
 function derive(
-	episode: { level: number },
+	episode: Stay,
 	newestFirst: Operation[],
 	asked: Clearance[],
 	now: number,
-	tubed: { operationId: string | null }[] = []
+	tubed: { operationId: string | null }[] = [],
+	layers: LocalLayers = NO_LAYERS
 ): EpisodeFacts {
 	const { zone } = env().hospital;
 	const operation = newestFirst.find((row) => row.operatedAt <= now) ?? newestFirst.at(-1) ?? null;
@@ -195,7 +199,8 @@ function derive(
 						reviewOn: armStage.reviewOn
 					}
 				: null,
-			inForce.some((row) => row.kind === 'precautions-end')
+			inForce.some((row) => row.kind === 'precautions-end'),
+			limitsOfPatient(setOfUnit(layers.unit, episode.phase), layers)
 		)
 	};
 }

@@ -1,7 +1,8 @@
-import { and, asc, desc, eq, gte, isNull, or, gt, lte } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, gte, inArray, isNull, lte, or } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/sqlite-core';
 import type { Person } from '$lib/domain/access/actor';
 import {
+	NO_LAYERS,
 	setOfUnit,
 	type LocalLayers,
 	type PatientLimit,
@@ -23,34 +24,66 @@ export async function layersOf(
 	episode: { id: string; unitId: string },
 	at: number
 ): Promise<LocalLayers> {
-	const [unit, patient, prescribed] = await Promise.all([
-		changesOfUnit(db, episode.unitId, at),
-		limitsInForce(db, episode.id, at),
+	const [layers, prescribed] = await Promise.all([
+		layersOfMany(db, [episode], at),
 		rangeAt(db, episode.id, at)
 	]);
-	return { unit, patient, prescribed };
+	return { ...(layers.get(episode.id) ?? NO_LAYERS), prescribed };
 }
 
-/** The changes of a unit up to an instant, oldest first. */
-async function changesOfUnit(db: Reader, unitId: string, at: number): Promise<UnitChange[]> {
-	const { version, set, key, value, agreedBy, agreedOn } = unitLimitChanges;
+/** The same of several patients at once, without what is prescribed, by episode. */
+export async function layersOfMany(
+	db: Reader,
+	episodes: readonly { id: string; unitId: string }[],
+	at: number
+): Promise<Map<string, LocalLayers>> {
+	const [changes, own] = await Promise.all([
+		changesOfUnits(db, [...new Set(episodes.map(({ unitId }) => unitId))], at),
+		limitsInForce(
+			db,
+			episodes.map(({ id }) => id),
+			at
+		)
+	]);
+	return new Map(
+		episodes.map(({ id, unitId }) => [
+			id,
+			{
+				unit: changes.filter((change) => change.unitId === unitId).map(({ unitId: _, ...change }) => change),
+				patient: own.filter(({ episodeId }) => episodeId === id).map(({ episodeId: _, ...limit }) => limit)
+			}
+		])
+	);
+}
+
+/** The changes of units up to an instant, oldest first. */
+async function changesOfUnits(
+	db: Reader,
+	unitIds: string[],
+	at: number
+): Promise<(UnitChange & { unitId: string })[]> {
+	const { unitId, version, set, key, value, agreedBy, agreedOn } = unitLimitChanges;
 	return db
-		.select({ version, set, key, value, agreedBy, agreedOn })
+		.select({ unitId, version, set, key, value, agreedBy, agreedOn })
 		.from(unitLimitChanges)
-		.where(and(eq(unitLimitChanges.unitId, unitId), lte(unitLimitChanges.changedAt, at)))
+		.where(and(inArray(unitId, unitIds), lte(unitLimitChanges.changedAt, at)))
 		.orderBy(asc(version));
 }
 
-/** The limits of a patient that held at an instant. */
-async function limitsInForce(db: Reader, episodeId: string, at: number): Promise<PatientLimit[]> {
-	const { version, key, value, untilOn } = patientLimits;
+/** The limits of patients that held at an instant. */
+async function limitsInForce(
+	db: Reader,
+	episodeIds: string[],
+	at: number
+): Promise<(PatientLimit & { episodeId: string })[]> {
+	const { episodeId, version, key, value, untilOn } = patientLimits;
 	return db
-		.select({ version, key, value, untilOn, setBy: users.name })
+		.select({ episodeId, version, key, value, untilOn, setBy: users.name })
 		.from(patientLimits)
 		.innerJoin(users, eq(users.id, patientLimits.setBy))
 		.where(
 			and(
-				eq(patientLimits.episodeId, episodeId),
+				inArray(episodeId, episodeIds),
 				lte(patientLimits.setAt, at),
 				or(isNull(patientLimits.endedAt), gt(patientLimits.endedAt, at)),
 				gte(untilOn, localDateOf(at, env().hospital.zone))
@@ -89,7 +122,7 @@ export async function patientLimitsOf(
 	now: number
 ): Promise<PatientLimitLine[]> {
 	await accessEpisode(db, person, episodeId, 'session.read');
-	const inForce = await limitsInForce(db, episodeId, now);
+	const inForce = await limitsInForce(db, [episodeId], now);
 	// A newer limit of the same name takes the place of an older one, which then no longer counts.
 	const counting = new Map(inForce.map(({ key, version }) => [key, version]));
 	const rows = await db

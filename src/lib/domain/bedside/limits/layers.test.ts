@@ -130,6 +130,22 @@ describe('limitsOfPatient', () => {
 		expect(set.limits['exertion-ceiling.caution']).toMatchObject({ value: 13, version });
 	});
 
+	// The programme's range is for this patient, and so is a physician's limit; a unit's change is for everybody.
+	it.each([
+		['a wider one of the unit', { unit: 140 }, 150],
+		['a narrower one of the unit', { unit: 120 }, 150],
+		['a narrower one of the patient', { patient: 125 }, 125],
+		['a wider one of the patient', { patient: 160 }, 150]
+	] as const)('leave %s: %o', (_what, { unit, patient }: { unit?: number; patient?: number }, value) => {
+		const key = 'heart-rate-ceiling';
+		const { limits } = limitsOfPatient('outpatient', {
+			unit: unit ? [change(1, { set: 'outpatient', key, value: unit })] : [],
+			patient: patient ? [own(1, key, patient)] : [],
+			prescribed: { ...RANGE, hrMax: 150 }
+		});
+		expect(limits[key]?.value).toBe(value);
+	});
+
 	it.each(['strict', 'guideline'] as const)('leave a range aside in the set %s', (set) => {
 		const laid = limitsOfPatient(set, { unit: [], patient: [], prescribed: RANGE });
 		expect(laid.version).toBe(`${set}/1`);

@@ -79,6 +79,11 @@ export function layLimits(base: LimitSet, changes: LocalLimits, layer: string): 
 	return { ...base, version, limits };
 }
 
+/** Whether somebody set it for this one patient, or with this session: a unit's change is for all of its patients. */
+export function isPatientsOwn({ local, version }: Pick<Limit, 'local' | 'version'>): boolean {
+	return local && !version.startsWith('unit ');
+}
+
 /** True when the measured value crosses the limit. Both sides are freed of binary noise first. */
 export function crosses(limit: Pick<Limit, 'value' | 'when'>, measured: number): boolean {
 	const [value, bar] = [exact(measured), exact(limit.value)];

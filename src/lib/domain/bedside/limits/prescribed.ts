@@ -6,7 +6,7 @@
  */
 import type { Prescribed } from '../forms';
 import type { LimitKey } from '../codes';
-import type { Limit, LimitSet } from './limits';
+import { isPatientsOwn, type Limit, type LimitSet } from './limits';
 
 const EXERTION_MARGIN = 2;
 
@@ -79,7 +79,7 @@ function lowered(
 	from: Pick<Limit, 'source' | 'version'>
 ): Limit | null {
 	const general = base.limits[key];
-	if (general === null || (general.local && general.value <= value)) {
+	if (general === null || (isPatientsOwn(general) && general.value <= value)) {
 		return general;
 	}
 	return { ...general, ...from, value, local: true };

@@ -40,6 +40,12 @@ describe('arm-elevation', () => {
 			71,
 			['stop during']
 		],
+		[
+			'cleared to 90, narrower for the patient',
+			{ clearances: [{ kind: 'arm-stage', maxElevationDeg: 90 }], limits: { 'arm-elevation.cleared': 60 } },
+			61,
+			['stop during']
+		],
 		['a limit of the patient before clearance', { limits: { 'arm-elevation': 30 } }, 31, ['stop during']],
 		['no sternotomy', { sternotomy: false }, 180, []]
 	])('%s, %o: %d degrees', (_what, context, degrees, found) => {

@@ -1,13 +1,15 @@
 /**
  * Arms after a sternotomy. Until the arm stage is cleared an arm is lifted to 45 degrees at most, by the patient
  * or by somebody else: the wound does not know who lifts. Once it is cleared the limit of the clearance holds,
- * and 90 degrees where the clearance states none. Over the limit stops.
+ * and 90 degrees where the clearance states none. A narrower limit that was set for the patient holds beside it: two
+ * people said something about these arms, and the more careful word counts. Over the limit stops.
  */
 import type { RuleFinding } from '../finding';
+import { armLimitOf } from '../limits/arms';
 import { crosses, type Limit } from '../limits/limits';
 import { plain } from '../numbers';
 import { granted } from './clearances';
-import { limitOf, overLimit, type Done, type Facts, type Rule } from './rule';
+import { overLimit, type Done, type Facts, type Rule } from './rule';
 
 export const armElevation: Rule = {
 	id: 'arm-elevation',
@@ -28,15 +30,7 @@ export function armLimit(facts: Facts): Limit | null {
 	if (!facts.context.sternotomy) {
 		return null;
 	}
-	const clearance = granted(facts.context, 'arm-stage');
-	if (clearance === null) {
-		return limitOf(facts, 'arm-elevation');
-	}
-	const general = limitOf(facts, 'arm-elevation.cleared');
-	const value = clearance.maxElevationDeg;
-	return general && value !== null
-		? { ...general, value, source: 'limit of the clearance', version: 'clearance', local: true }
-		: general;
+	return armLimitOf(facts.limits, granted(facts.context, 'arm-stage'));
 }
 
 function judgeHeight(facts: Facts, { activity, done }: Done, limit: Limit): RuleFinding[] {

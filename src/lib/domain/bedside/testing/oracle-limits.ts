@@ -4,7 +4,7 @@
  */
 import type { Assessment } from '../forms';
 
-/** How a value crosses a limit: over, at or under it. */
+/** How a value crosses a limit: over, at or under it; `ours` when it was said of this patient alone. */
 type Bar = { n: number; how: '>' | '>=' | '<'; ours?: boolean };
 export type Bars = Record<string, Bar | null>;
 
@@ -59,9 +59,9 @@ function newestOf(rows: readonly { version: number; key: string | null; value: n
 }
 
 /** Lay one layer on: whatever it says, nobody starts above what would stop them at once. */
-function lay(bars: Bars, changes: Record<string, number>): void {
+function lay(bars: Bars, changes: Record<string, number>, ours = true): void {
 	for (const [key, n] of Object.entries(changes)) {
-		bars[key] = { n, how: bars[key]?.how ?? '>', ours: true };
+		bars[key] = { n, how: bars[key]?.how ?? '>', ours };
 	}
 	for (const rule of ['systolic-ceiling', 'diastolic-ceiling', 'heart-rate-ceiling', 'respiratory-ceiling']) {
 		const [start, stop] = [bars[`${rule}.before`], bars[rule]];
@@ -81,7 +81,7 @@ export function barsOf({ context }: Assessment, set: string, layers: OracleLayer
 	if (rise !== undefined && !('heart-rate-rise.beta-blocked' in unit) && (!drug || rise < drug.n)) {
 		unit['heart-rate-rise.beta-blocked'] = rise;
 	}
-	lay(bars, unit);
+	lay(bars, unit, false);
 	lay(bars, both(newestOf(layers.patient)));
 	const { maxElevationDeg, maxLoadKg: _load, ...named } = (context.limits ?? {}) as Record<string, number>;
 	lay(

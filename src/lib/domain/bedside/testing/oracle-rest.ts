@@ -103,7 +103,10 @@ export function theRest(
 		if (held || (!has && (context.sternotomy || !ARM_FREE.has(code)))) {
 			found.add(`clearance-missing stop ${now}`);
 		}
-		const tooHigh = (degrees: number) => (own === null ? past(bars, height, degrees) : degrees > own);
+		// The clearance's own height counts, unless somebody said a lower one of this patient.
+		const lower = own !== null && bars[height]?.ours === true && bars[height].n < own;
+		const tooHigh = (degrees: number) =>
+			own === null || lower ? past(bars, height, degrees) : degrees > own;
 		if (context.sternotomy && elevationDeg != null && tooHigh(elevationDeg)) {
 			found.add(`arm-elevation stop ${now}`);
 		}
