@@ -134,18 +134,38 @@ describe('a re-check that is owed', () => {
 });
 
 describe('what a session says of the patient', () => {
-	const WALK: Partial<SessionBody> = { level: 4, activities: [{ code: 'hall-walk', assistance: 'one' }] };
+	const WALK: Partial<SessionBody> = { level: 3, activities: [{ code: 'room-walk', assistance: 'one' }] };
+	const JUMP: Partial<SessionBody> = { level: 4, activities: [{ code: 'hall-walk', assistance: 'one' }] };
+	const recordedBy = (role: keyof Hospital['people'], more: Partial<SessionBody>) =>
+		recordSession(as(role), episodeId, sessionBody(more));
 
-	it('raises the level when something of it was done and went well', async () => {
+	it('raises the level by one when something of it was done and went well', async () => {
 		await record(WALK);
-		expect((await episode())?.level).toBe(4);
+		expect(await episode()).toMatchObject({ level: 3, levelReached: 3 });
+	});
+
+	it.each([
+		['two levels at once', 'therapist', JUMP, 4],
+		['by a nurse, who does not decide on levels', 'nurse', WALK, 3],
+		['by a speech therapist, who does not either', 'speech-therapist', WALK, 3]
+	] as const)('shows as reached and leaves today’s level: %s', async (_, role, more, levelReached) => {
+		await recordedBy(role, more);
+		expect(await episode()).toMatchObject({ level: 2, levelReached });
+	});
+
+	it('leaves today’s level after a caution to a senior', async () => {
+		const cautious = { ...WALK, symptoms: ['nausea' as const] };
+		await record(cautious);
+		expect(await episode()).toMatchObject({ level: 2, levelReached: 3 });
+		await recordedBy('physician', cautious);
+		expect(await episode()).toMatchObject({ level: 3, levelReached: 3 });
 	});
 
 	it.each<[string, Partial<SessionBody>]>([
 		['it was stopped', { ...WALK, after: { hr: 86, sbp: 108, dbp: 66 } }],
 		['it could not be judged', { ...WALK, after: {} }],
-		['nothing of it was done', { level: 4, activities: [{ code: 'chair-sitting' }] }],
-		['it was planned and not done', { level: 4, activities: [{ code: 'hall-walk', notDone: true }] }]
+		['nothing of it was done', { level: 3, activities: [{ code: 'chair-sitting' }] }],
+		['it was planned and not done', { level: 3, activities: [{ code: 'room-walk', notDone: true }] }]
 	])('leaves the level where it is when %s', async (_, more) => {
 		await record(more);
 		expect((await episode())?.level).toBe(2);
@@ -173,8 +193,8 @@ describe('what a session says of the patient', () => {
 
 	it.each([
 		['before a return to theatre says nothing of now', -1, 2, true],
-		['at the return to theatre counts', 0, 4, false],
-		['after it counts', 1, 4, false]
+		['at the return to theatre counts', 0, 3, false],
+		['after it counts', 1, 3, false]
 	] as const)('%s', async (_, ms, level, betaBlocked) => {
 		const returned = hospital.now - 60 * MINUTE;
 		await db().insert(operations).values({

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Level } from '../core/codes';
-import { levelAfter, measuresAgain } from './carry-over';
+import { levelAfter, measuresAgain, todayAfter } from './carry-over';
 import { OUTCOMES, type Outcome } from './codes';
 import type { ActivityDone } from './forms';
 
@@ -25,6 +25,22 @@ describe('the level after a session', () => {
 	it.each(OUTCOMES)('with the outcome %s rises only when it went well', (outcome) => {
 		const after = levelAfter(3, { level: 4, outcome, activities: [WALK] });
 		expect(after).toBe(outcome === 'clear' || outcome === 'caution' ? 4 : 3);
+	});
+});
+
+describe('today’s level after a session', () => {
+	it.each<[string, number, Level, Outcome, boolean, number]>([
+		['one level up, done well', 3, 4, 'clear', false, 4],
+		['at today’s level', 4, 4, 'clear', false, 4],
+		['below it', 5, 4, 'clear', false, 5],
+		['two levels at once', 2, 4, 'clear', false, 2],
+		['two levels at once, by a senior', 2, 4, 'clear', true, 2],
+		['one level up with a caution', 3, 4, 'caution', false, 3],
+		['one level up with a caution, by a senior', 3, 4, 'caution', true, 4],
+		['one level up, stopped', 3, 4, 'stop', true, 3],
+		['one level up, not all measured', 3, 4, 'incomplete', true, 3]
+	])('%s', (_, today, level, outcome, senior, after) => {
+		expect(todayAfter(today, { level, outcome, activities: [WALK] }, senior)).toBe(after);
 	});
 });
 

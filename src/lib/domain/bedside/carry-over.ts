@@ -20,6 +20,20 @@ export function levelAfter(
 	return wentWell && proven ? Math.max(reached, session.level) : reached;
 }
 
+/**
+ * Today's level after a session recorded by somebody who may decide on levels. Treating one level up and doing it well
+ * is going up; a jump nobody makes by the way, and after a caution a junior stays where the patient was. What does not
+ * count here still shows as reached, and waits for a decision.
+ */
+export function todayAfter(
+	today: number,
+	session: Parameters<typeof levelAfter>[1],
+	senior: boolean
+): number {
+	const held = session.level > today + 1 || (session.outcome === 'caution' && !senior);
+	return held ? today : levelAfter(today, session);
+}
+
 /** True when the session can stand for measuring again: a pulse or a pressure was taken in it. */
 export function measuresAgain(session: {
 	before: Reading;

@@ -1,7 +1,9 @@
 import { and, eq, gt, isNotNull, isNull, lt, lte } from 'drizzle-orm';
-import { levelAfter, measuresAgain } from '$lib/domain/bedside/carry-over';
+import { can } from '$lib/domain/access/can';
+import { levelAfter, measuresAgain, todayAfter } from '$lib/domain/bedside/carry-over';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { SessionBody } from '$lib/domain/bedside/forms';
+import { isSenior } from '$lib/domain/bedside/sign-off';
 import { parseRfc3339 } from '$lib/domain/core/instant';
 import type { EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
@@ -26,6 +28,7 @@ export async function carryOver(
 		return;
 	}
 	const decided = await levelDecidedSince(tx, episode.id, startedAt);
+	const decides = can(context.actor, 'level.decide', { unitId: episode.unitId });
 	const told = { ...input, outcome: verdict.outcome };
 	const newest = !(await laterSession(tx, episode.id, startedAt));
 	const heart = {
@@ -36,7 +39,7 @@ export async function carryOver(
 		.update(episodes)
 		.set({
 			// What somebody decided about today's level later than this stands; what was reached was reached.
-			level: decided ? episode.level : levelAfter(episode.level, told),
+			level: decided || !decides ? episode.level : todayAfter(episode.level, told, isSenior(context.actor)),
 			levelReached: levelAfter(episode.levelReached, told),
 			...(newest ? heart : {})
 		})

@@ -25,6 +25,7 @@ import type { Found } from './found';
 import { Later } from './later';
 import type { DemoPatient } from './patients';
 import type { PersonKey } from './people';
+import { decideOnTheRound } from './round';
 
 /** One deed at one instant. The deeds of all stories are done in the order of time. */
 export interface Deed {
@@ -142,6 +143,8 @@ export class Telling {
 	session(at: Instant, who: PersonKey, told: ToldSession): Later {
 		const made = new Later('a session');
 		const endedAt = at - 2 * MINUTE;
+		const round = endedAt - told.minutes * MINUTE - 30 * MINUTE;
+		this.#do(round, 'physician', (as) => decideOnTheRound(as, this.#episode.id, told.level));
 		this.#do(at, who, async (as) => {
 			const body = this.#sessionBody(endedAt - told.minutes * MINUTE, endedAt, told);
 			made.is((await recordSession(as, this.#episode.id, body)).result.id);
