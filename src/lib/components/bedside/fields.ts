@@ -2,8 +2,8 @@ import { readNumber } from '$lib/components/ui/number-text';
 import { BOUNDS, needsConfirming, type BoundedField } from '$lib/domain/bedside/bounds';
 import { m } from '$lib/i18n/paraglide/messages';
 
-/** What is measured at the bedside, in the order it is usually read off. */
-export const READING_FIELDS = ['sbp', 'dbp', 'hr', 'spo2', 'rr', 'rpe', 'pain', 'oxygenLpm'] as const;
+/** What is measured at the bedside, in the order it is usually read off; `work` in effort alone. */
+export const READING_FIELDS = ['sbp', 'dbp', 'hr', 'spo2', 'rr', 'rpe', 'pain', 'oxygenLpm', 'work'] as const;
 export type ReadingField = (typeof READING_FIELDS)[number];
 
 /** What stands in a field. Only `fine` and `doubtful` carry a value that may be judged. */

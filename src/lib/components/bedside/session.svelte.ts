@@ -27,6 +27,8 @@ export class BedsideSession {
 		this.draft = $state(newDraft(record(), key));
 	}
 
+	/** An outpatient exercises at a stated work: a stage, watts, a speed. */
+	readonly inGym = $derived.by(() => this.#record().phase === 'outpatient');
 	readonly assessment = $derived.by(() => toAssessment(this.draft, this.#record()));
 	readonly verdict = $derived.by(() => assess(this.assessment, this.#record().limits));
 	readonly obstacles = $derived.by(() => obstaclesOf(this.draft));

@@ -36,6 +36,28 @@ const refused = (status: number): Sent => ({
 	problem: new ApiProblem(status, 'x', 'Why.')
 });
 
+describe('rising work', () => {
+	const stages = (first: string, second: string) =>
+		open({
+			before: typed({ sbp: '140', dbp: '80', hr: '80' }),
+			during: [
+				typed({ sbp: '150', hr: '110', work: first }),
+				typed({ sbp: '138', hr: '96', work: second })
+			]
+		}).verdict.findings.map(({ rule, grade }) => `${rule} ${grade}`);
+
+	it.each([
+		['1', '2', true],
+		['2.5', '3.0', true],
+		['2', '2', false],
+		['2', '1', false],
+		['', '2', false]
+	])('from %s to %s: a fall of 12 and 14 is found, %s', (first, second, found) => {
+		expect(stages(first, second).includes('systolic-stage-fall stop')).toBe(found);
+		expect(stages(first, second).includes('heart-rate-fall stop')).toBe(found);
+	});
+});
+
 describe('a session while it is typed', () => {
 	it.each([
 		['a low pressure before', { before: typed({ sbp: '85', dbp: '50' }), after: typed({}) }, 'before'],

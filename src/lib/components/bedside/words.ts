@@ -12,7 +12,8 @@ export const FIELD_LABELS: Record<ReadingField, () => string> = {
 	rr: m.bedside_field_rr,
 	rpe: m.bedside_field_rpe,
 	pain: m.bedside_field_pain,
-	oxygenLpm: m.bedside_field_oxygen
+	oxygenLpm: m.bedside_field_oxygen,
+	work: m.bedside_field_work
 };
 
 export const FIELD_UNITS: Record<ReadingField, () => string> = {
@@ -23,7 +24,8 @@ export const FIELD_UNITS: Record<ReadingField, () => string> = {
 	rr: m.bedside_unit_breaths,
 	rpe: m.bedside_unit_borg,
 	pain: m.bedside_unit_of_ten,
-	oxygenLpm: m.bedside_unit_litres
+	oxygenLpm: m.bedside_unit_litres,
+	work: m.bedside_unit_work
 };
 
 export const DOSE_LABELS: Record<DoseField, () => string> = {

@@ -30,6 +30,7 @@ export const BOUNDS = {
 	distanceM: { name: 'distance', low: 0, high: 20_000, unit: 'm', confirm: [0, 2000] },
 	balls: { name: 'balls', low: 0, high: 3, unit: 'balls', confirm: null },
 	steps: { name: 'steps', low: 0, high: 1000, unit: 'steps', confirm: [0, 60] },
+	work: { name: 'work', low: 0, high: 10_000, unit: '', confirm: null },
 	symptomGrade: { name: 'symptom grade', low: 1, high: 4, unit: '', confirm: null }
 } as const satisfies Record<string, Bound>;
 
