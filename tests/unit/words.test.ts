@@ -105,7 +105,8 @@ describe('words of the pages', () => {
 		]);
 	});
 
-	it('come from the catalogue', () => {
+	// Every template of the product is parsed, which takes a busy machine longer than the usual limit.
+	it('come from the catalogue', { timeout: 30_000 }, () => {
 		const written = templates()
 			.map((file) => [file, wordsInMarkup(readFileSync(file, 'utf8'))] as const)
 			.filter(([, words]) => words.length > 0);

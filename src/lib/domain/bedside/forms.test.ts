@@ -20,6 +20,33 @@ function complaints(schema: z.ZodType, value: unknown): string[] {
 		: result.error.issues.map(({ path, message }) => `/${path.join('/')}: ${message}`);
 }
 
+// Hard bounds of what can be typed, written out here so that the table itself is checked: plausible bounds, from
+// memory; 6 to 20 is the scale of exertion as Borg made it.
+describe('the hard bounds', () => {
+	it.each([
+		['hr', 19, 20, 250, 251],
+		['sbp', 49, 50, 280, 281],
+		['dbp', 19, 20, 180, 181],
+		['spo2', 49, 50, 100, 101],
+		['rr', 3, 4, 60, 61],
+		['rpe', 5, 6, 20, 21],
+		['pain', -1, 0, 10, 11]
+	])('%s: %d is refused, %d and %d are taken, %d is refused', (field, below, low, high, above) => {
+		const taken = (value: number) => readingSchema.safeParse({ [field]: value }).success;
+		expect([below, low, high, above].map(taken)).toEqual([false, true, true, false]);
+	});
+
+	it.each([
+		[29.9, false],
+		[30, true],
+		[43, true],
+		[43.1, false]
+	])('a temperature of %d is taken: %s', (temperature, taken) => {
+		const context = { betaBlocked: false, rhythm: 'sinus', sternotomy: true, level: 2, conscious: true };
+		expect(contextSchema.safeParse({ ...context, temperature }).success).toBe(taken);
+	});
+});
+
 describe('readings', () => {
 	const fields = ['hr', 'sbp', 'dbp', 'spo2', 'rr', 'rpe', 'pain', 'oxygenLpm'] as const;
 

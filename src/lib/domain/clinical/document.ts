@@ -103,12 +103,16 @@ function activities(): string {
 		activity.phase === 'outpatient' ? 'gym' : `${activity.level}`,
 		activity.mets.join(' to '),
 		clearanceOf(activity),
+		activity.needs.join('; ').toLowerCase(),
 		activity.dose.words,
 		STANDING[SOURCES[activity.source].status]
 	]);
 	return [
 		'Usual doses. A unit may word dose and lines anew; level, energy and clearances stay. How it is done, what to watch and what never to do stand beside each activity at the bedside and in `src/lib/domain/bedside/activities/`.',
-		table(['code', 'activity', 'level', 'METs', 'clearance', 'usual dose', 'standing of the dose'], rows)
+		table(
+			['code', 'activity', 'level', 'METs', 'clearance', 'needs first', 'usual dose', 'standing of the dose'],
+			rows
+		)
 	].join('\n\n');
 }
 

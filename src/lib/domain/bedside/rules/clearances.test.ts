@@ -39,6 +39,16 @@ describe('clearance-missing', () => {
 		}
 	);
 
+	// The reference's check of levels: stairs ask for 4 METs, which a patient at level 4 has no clearance for; from memory.
+	it.each([[4], [5], [6]] as const)('refuses stairs at level %i until they are cleared', (level) => {
+		const stairs = [{ code: 'stairs' as const, helper: true }];
+		expect(grades(judge({ context: { level }, activities: stairs }), 'clearance-missing')).toEqual([
+			'stop during'
+		]);
+		const cleared = { level, clearances: ['stairs' as const] };
+		expect(grades(judge({ context: cleared, activities: stairs }), 'clearance-missing')).toEqual([]);
+	});
+
 	it('asks for the arm stage after a sternotomy only', () => {
 		const verdict = judge({ context: { sternotomy: false }, activities: [{ code: 'arm-exercise' }] });
 		expect(grades(verdict, 'clearance-missing')).toEqual([]);
