@@ -32,6 +32,7 @@ describe('days', () => {
 
 	it('speaks another language where Intl does', () => {
 		expect(longDay('2025-09-05', 'fr')).toBe('vendredi 5 septembre 2025');
+		expect(longDay('2025-09-05', 'es')).toBe('viernes 5 de septiembre de 2025');
 		expect(duration(3 * 24 * H, 'de')).toBe('3 Tage');
 	});
 });

@@ -64,10 +64,11 @@ export function shortDay(date: LocalDate, { zone, now, locale }: Reader): string
 	return sameYear ? words : `${words} ${date.slice(0, 4)}`;
 }
 
-/** `Thursday 5 September 2025`, for headings and letters. */
+/** `Thursday 5 September 2025`, in Spanish `jueves 5 de septiembre de 2025`, for headings and letters. */
 export function longDay(date: LocalDate, locale: string = DEFAULT_LOCALE): string {
-	const words = [weekday(date, 'long', locale), dayOfMonth(date), month(date, 'long', locale)];
-	return `${words.join(' ')} ${date.slice(0, 4)}`;
+	const of = locale.startsWith('es') ? ' de ' : ' ';
+	const named = [dayOfMonth(date), month(date, 'long', locale), date.slice(0, 4)].join(of);
+	return `${weekday(date, 'long', locale)} ${named}`;
 }
 
 /** The day that was typed, in the words of `longDay`; null for what is no day. */

@@ -109,7 +109,7 @@ describe('the link', () => {
 
 	it.each([
 		['sms', { phone: null }, 'no telephone number'],
-		['sms', { smsConsent: false }, 'has not consented'],
+		['sms', { smsConsent: false }, 'has not consented to it'],
 		['sms', { smsOptedOutAt: 1 }, 'no more texts'],
 		['mail', {}, 'no e-mail address']
 	] as const)('is not sent by %s with %j', async (way, change, words) => {

@@ -111,6 +111,7 @@ export const API: Record<string, Row> = {
 	'POST /api/escalations/[id]/confirm': { roles: TAKERS, answers: [404] },
 	'POST /api/escalations/[id]/settle': { roles: TAKERS, answers: [422] },
 	'POST /api/escalations/[id]/withdraw': { roles: CLINICAL, answers: [422] },
+	'GET /api/episodes/[id]/patient-page': { roles: SEEING, answers: [404] },
 	'POST /api/episodes/[id]/patient-page': { roles: ['coordinator', 'therapist'], answers: [422] },
 	'POST /api/patient-pages/[id]/end': { roles: ['coordinator', 'therapist'], answers: [404] },
 	'GET /api/closed-days': { roles: 'signed-in', answers: [200] },

@@ -16,6 +16,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/ward': SEEING,
 	'/ward/admit': ['surgeon', 'physician', 'nurse', 'coordinator'],
 	'/visits': SEEING,
+	'/visits/closed-days': ['coordinator', 'admin'],
 	'/cover': EVERYBODY,
 	'/rules': EVERYBODY,
 	'/rules/calculators': EVERYBODY,

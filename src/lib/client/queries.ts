@@ -9,7 +9,8 @@ import type { PatientLimitLine, RangeLine } from '$lib/domain/limits/views';
 import type { LooseEnds } from '$lib/domain/loose-ends/loose-ends';
 import type { Trouble } from '$lib/domain/messages/views';
 import type { ThreadView } from '$lib/domain/referrals/views';
-import type { VisitItem } from '$lib/domain/visits/views';
+import type { PageSharing } from '$lib/domain/patient-page/views';
+import type { ClosedDay, VisitItem } from '$lib/domain/visits/views';
 import { getJson } from './api';
 
 /**
@@ -66,6 +67,10 @@ export const queries = {
 		query(['visits', from], `/api/visits?limit=200&from=${from}`, initial),
 	patientVisits: (episodeId: string, initial: List<VisitItem>) =>
 		query(['visits', 'of', episodeId], `/api/episodes/${episodeId}/visits`, initial),
+	/** Below the visits' key, because whatever becomes of the link is an event of visits or messages. */
+	patientPage: (episodeId: string, initial: PageSharing) =>
+		query(['visits', 'page', episodeId], `/api/episodes/${episodeId}/patient-page`, initial),
+	closedDays: (initial: List<ClosedDay>) => query(['visits', 'closed'], '/api/closed-days', initial),
 	/** While something does not work, its figures are asked for again: they grow without an event. */
 	delivery: (initial: List<Trouble>) => ({
 		...query(['delivery'], '/api/delivery', initial),

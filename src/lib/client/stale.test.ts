@@ -41,6 +41,8 @@ const ABOUT: Record<keyof typeof queries, readonly Topic[]> = {
 	sessions: ['session'],
 	visits: ['visit', 'message'],
 	patientVisits: ['visit', 'message'],
+	patientPage: ['visit', 'message'],
+	closedDays: ['visit', 'message'],
 	delivery: ['delivery'],
 	escalation: ['escalation', 'message']
 };

@@ -1,5 +1,6 @@
 import type { QueryClient } from '@tanstack/svelte-query';
 import type { VisitLine } from '$lib/domain/episodes/views';
+import type { PageWay } from '$lib/domain/patient-page/forms';
 import type { VisitMove } from '$lib/domain/visits/states';
 import type { VisitItem } from '$lib/domain/visits/views';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -19,7 +20,7 @@ export class VisitDesk {
 
 	constructor(private readonly client: QueryClient) {}
 
-	isMoving(visit: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up'): boolean {
+	isMoving(visit: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up' | 'move'): boolean {
 		return this.#deeds.isPending(pathOf(visit, move));
 	}
 
@@ -34,6 +35,37 @@ export class VisitDesk {
 			await this.#deeds.post(pathOf(visit, move), body);
 			return '';
 		});
+	}
+
+	/** Another time, length or place; whether the patient hears of it is said, because else somebody has to call. */
+	reschedule(visit: VisitItem, body: Record<string, unknown>): Promise<boolean> {
+		return this.#attempt(async () => {
+			const { told } = await this.#deeds.post<{ told: string[] }>(pathOf(visit, 'move'), body);
+			return told.length > 0 ? m.visits_done_moved() : m.visits_done_moved_untold();
+		});
+	}
+
+	/** Send the patient the link to their page. */
+	sendPage(episodeId: string, way: PageWay): Promise<boolean> {
+		return this.#attempt(async () => {
+			await this.#deeds.post(pagePath(episodeId), { way });
+			return m.visits_page_done_sent();
+		});
+	}
+
+	endPage(linkId: string): Promise<boolean> {
+		return this.#attempt(async () => {
+			await this.#deeds.post(endPath(linkId), {});
+			return m.visits_page_done_ended();
+		});
+	}
+
+	isSending(episodeId: string): boolean {
+		return this.#deeds.isPending(pagePath(episodeId));
+	}
+
+	isEnding(linkId: string): boolean {
+		return this.#deeds.isPending(endPath(linkId));
 	}
 
 	/** Nothing more is to be done about a visit that the patient cancelled. */
@@ -76,7 +108,15 @@ export class VisitDesk {
 	}
 }
 
-function pathOf({ id }: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up'): string {
+function pagePath(episodeId: string): string {
+	return `/api/episodes/${episodeId}/patient-page`;
+}
+
+function endPath(linkId: string): string {
+	return `/api/patient-pages/${linkId}/end`;
+}
+
+function pathOf({ id }: Pick<VisitItem, 'id'>, move: VisitMove | 'follow-up' | 'move'): string {
 	return `/api/visits/${id}/${move}`;
 }
 

@@ -30,7 +30,12 @@ export function mainPlaces(role: Role): Place[] {
 export function morePlaces(role: Role, demo: boolean): Place[] {
 	return [
 		place('rules', routes.rules(), m.common_place_rules()),
-		...(role === 'admin' ? [place('limits', routes.adminLimits(), m.common_place_limits())] : []),
+		...(role === 'admin'
+			? [
+					place('limits', routes.adminLimits(), m.common_place_limits()),
+					place('closed-days', routes.closedDays(), m.visits_closed_title())
+				]
+			: []),
 		...(role === 'admin' ? [] : [place('account', routes.account(), m.common_place_account())]),
 		...(demo ? [place('phones', routes.phones(), m.common_place_phones())] : [])
 	];

@@ -128,3 +128,35 @@ describe('bookingField', () => {
 		expect(bookingField(pointer)).toBe(field);
 	});
 });
+
+describe('closed days', () => {
+	const closed = new Set(['2026-03-06']);
+	const withClosed = (base: BookingDraft) => planOf(base, ZONE, NOW, closed);
+
+	it('a single visit on one is refused, and nothing is shown as if it could be booked', () => {
+		const { planned, problems, body } = withClosed(SINGLE);
+		expect([planned, body]).toEqual([[], null]);
+		expect(problems.date).toBe('6 Mar 2026 is a closed day: choose another day.');
+	});
+
+	it('a series steps over one, and says which', () => {
+		const { planned, skipped } = withClosed(SERIES);
+		expect(planned.map(({ localDate }) => localDate)).toEqual([
+			'2026-03-04',
+			'2026-03-09',
+			'2026-03-11',
+			'2026-03-13'
+		]);
+		expect(skipped).toEqual(['2026-03-06']);
+	});
+});
+
+describe('what no reminder goes of', () => {
+	it.each([
+		['2026-03-03', '16:00', 1],
+		['2026-03-04', '10:00', 0],
+		['2026-03-04', '09:00', 0]
+	])('%s %s, booked at 09:00: %i', (date, time, count) => {
+		expect(plan({ date, time }).withoutReminder).toBe(count);
+	});
+});

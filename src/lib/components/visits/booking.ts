@@ -6,13 +6,16 @@ import {
 	isLocalDate,
 	isLocalTime,
 	localDateOf,
+	localParts,
 	type LocalDate,
 	type Weekday,
 	type Zone
 } from '$lib/domain/core/time';
 import { readDate, readTime } from '$lib/domain/core/typed-date';
-import { planSeries, type PlannedVisit } from '$lib/domain/visits/series';
-import { day } from '$lib/format';
+import { planReminders } from '$lib/domain/visits/reminders';
+import { planSeries, skippedDays, type PlannedVisit } from '$lib/domain/visits/series';
+import type { VisitItem } from '$lib/domain/visits/views';
+import { day, dayToType } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
 /** What the fields hold, day and time as they were typed; `date` is the day of a single visit, or the day from which a series counts. */
@@ -32,6 +35,10 @@ export type BookingProblems = Partial<Record<keyof BookingDraft, string>>;
 export interface BookingPlan {
 	/** The visits it would make, in order; empty while they cannot be told. */
 	planned: PlannedVisit[];
+	/** Closed days that a series steps over. */
+	skipped: LocalDate[];
+	/** How many of them no reminder can be sent of any more, for a patient who lives where the hospital is. */
+	withoutReminder: number;
 	problems: BookingProblems;
 	/** What to post; null while something is wrong. */
 	body: Record<string, unknown> | null;
@@ -42,19 +49,59 @@ export function emptyDraft(place: string): BookingDraft {
 }
 
 /** Work a draft out in the hospital's wall time, as the server will. */
-export function planOf(typed: BookingDraft, zone: Zone, now: number): BookingPlan {
+export function planOf(
+	typed: BookingDraft,
+	zone: Zone,
+	now: number,
+	closed: ReadonlySet<LocalDate> = new Set()
+): BookingPlan {
 	const draft = readDraft(typed);
 	const problems = fieldProblems(draft);
 	const datable = !(['date', 'time', 'weekdays', 'count'] as const).some((field) => problems[field]);
-	const planned = datable ? planSeries(seriesOf(draft), zone) : [];
-	const outside = rangeProblem(planned, zone, now);
+	const planned = datable ? plannedOf(draft, zone, closed) : [];
+	const outside = rangeProblem(planned, zone, now) ?? closedProblem(draft, closed);
 	const all = outside ? { ...problems, ...outside } : problems;
 	// What cannot be booked is not shown as if it could.
 	return {
 		planned: outside ? [] : planned,
+		skipped: outside || !datable ? [] : skippedOf(draft, planned, closed),
+		withoutReminder: outside ? 0 : withoutReminder(draft, planned, zone, now),
 		problems: all,
 		body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned)
 	};
+}
+
+/** A visit as a draft, for giving it another time. */
+export function draftOf(
+	{ startsAt, minutes, unitId }: Pick<VisitItem, 'startsAt' | 'minutes' | 'unitId'>,
+	zone: Zone
+): BookingDraft {
+	const { date, time } = localParts(Date.parse(startsAt), zone);
+	return { ...emptyDraft(unitId), date: dayToType(date), time, minutes };
+}
+
+function plannedOf(draft: BookingDraft, zone: Zone, closed: ReadonlySet<LocalDate>): PlannedVisit[] {
+	// A single visit is on the day that was asked for or not at all.
+	return planSeries(seriesOf(draft), zone, draft.kind === 'series' ? closed : undefined);
+}
+
+function skippedOf(draft: BookingDraft, planned: readonly PlannedVisit[], closed: ReadonlySet<LocalDate>) {
+	return draft.kind === 'series' ? skippedDays(seriesOf(draft), planned, closed) : [];
+}
+
+function closedProblem({ kind, date }: BookingDraft, closed: ReadonlySet<LocalDate>): BookingProblems | null {
+	return kind === 'single' && closed.has(date) ? { date: m.visits_problem_closed({ day: day(date) }) } : null;
+}
+
+function withoutReminder(
+	{ kind }: BookingDraft,
+	planned: readonly PlannedVisit[],
+	zone: Zone,
+	now: number
+): number {
+	const inSeries = kind === 'series';
+	const context = { zone, patientZone: zone, now };
+	return planned.filter(({ startsAt }) => planReminders({ startsAt, inSeries }, context).length === 0).length;
 }
 
 /** The days a visit is booked for most often: the three after today. */

@@ -11,7 +11,8 @@ const fate = (state: string, rest: Partial<ReminderFate> = {}): ReminderFate => 
 	sentAt: null,
 	...rest
 });
-const words = (...reminders: ReminderFate[]) => fateWords({ reminders, answer: null }, READER);
+const words = (...reminders: ReminderFate[]) =>
+	fateWords({ reminders, answer: null, noReminder: null }, READER);
 
 describe('fateWords', () => {
 	it.each<[ReminderFate, string, boolean]>([
@@ -27,6 +28,18 @@ describe('fateWords', () => {
 		[fate('cancelled'), 'reminder not needed any more', false]
 	])('%j', (reminder, expected, alarming) => {
 		expect(words(reminder)).toEqual([{ words: expected, alarming }]);
+	});
+
+	it.each([
+		['too-late-for-one', 'no reminder will go: it was booked after the hour of the last one'],
+		['no-consent', 'no reminder will go: no consent to text messages'],
+		['no-number', 'no reminder will go: no telephone number is known'],
+		['opted-out', 'no reminder will go: the patient asked for no more texts']
+	] as const)('says why none will go: %s', (noReminder, expected) => {
+		const reminders = noReminder === 'too-late-for-one' ? [] : [fate('ready')];
+		expect(fateWords({ reminders, answer: null, noReminder }, READER)).toEqual([
+			{ words: expected, alarming: true }
+		]);
 	});
 
 	it('says that there is none', () => {
@@ -46,7 +59,9 @@ describe('fateWords', () => {
 
 	it('does not alarm once the patient has answered', () => {
 		const answer = { at: '2026-03-03T08:30:00Z', yes: true };
-		expect(fateWords({ reminders: [fate('failed')], answer }, READER)[0]?.alarming).toBe(false);
+		expect(fateWords({ reminders: [fate('failed')], answer, noReminder: null }, READER)[0]?.alarming).toBe(
+			false
+		);
 	});
 
 	it.each([
@@ -54,7 +69,10 @@ describe('fateWords', () => {
 		[false, 'answered no 08:30']
 	])('ends with the answer, yes is %s', (yes, expected) => {
 		const answer = { at: '2026-03-03T08:30:00Z', yes };
-		const all = fateWords({ reminders: [fate('delivered', { sentAt: DUE })], answer }, READER);
+		const all = fateWords(
+			{ reminders: [fate('delivered', { sentAt: DUE })], answer, noReminder: null },
+			READER
+		);
 		expect(all.at(-1)).toEqual({ words: expected, alarming: false });
 		expect(all).toHaveLength(2);
 	});

@@ -1,5 +1,5 @@
 import type { SkipReason } from '$lib/domain/visits/reminders';
-import type { ReminderFate, VisitItem } from '$lib/domain/visits/views';
+import type { NoReminder, ReminderFate, VisitItem } from '$lib/domain/visits/views';
 import { when, type Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
@@ -16,7 +16,13 @@ const ON_ITS_WAY: readonly string[] = ['ready', 'sending', 'accepted', 'delivere
  * The reminders of a visit in words, then the patient's answer. One that was not sent alarms only where no other
  * one reaches the patient either.
  */
-export function fateWords({ reminders, answer }: Pick<VisitItem, 'reminders' | 'answer'>, reader: Reader) {
+export function fateWords(
+	{ reminders, answer, noReminder }: Pick<VisitItem, 'reminders' | 'answer' | 'noReminder'>,
+	reader: Reader
+): FateWords[] {
+	if (noReminder !== null && answer === null) {
+		return [alarm(m.visits_fate_will_not_go({ reason: NO_REMINDER[noReminder]() }))];
+	}
 	const reached = answer !== null || reminders.some(({ state }) => ON_ITS_WAY.includes(state));
 	const fates = reminders.map((fate): FateWords => {
 		const { words, alarming } = wordsOf(fate, reader);
@@ -50,6 +56,14 @@ function wordsOf({ state, reason, dueAt, sentAt }: ReminderFate, reader: Reader)
 			return alarm(m.visits_fate_failed({ reason: reasonWords(reason) }));
 	}
 }
+
+const NO_REMINDER: Record<NoReminder, () => string> = {
+	'no-number': m.visits_skip_number,
+	'no-address': m.visits_skip_address,
+	'opted-out': m.visits_skip_opted_out,
+	'no-consent': m.visits_skip_consent,
+	'too-late-for-one': m.visits_skip_booked_late
+};
 
 const SKIPPED: Record<SkipReason, () => string> = {
 	'visit is over or cancelled': m.visits_skip_over,

@@ -1,10 +1,22 @@
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { localDateOf } from '$lib/domain/core/time';
-import { movesOf, type VisitMove } from '$lib/domain/visits/states';
+import { isExpected, movesOf, type VisitMove } from '$lib/domain/visits/states';
 import type { VisitItem } from '$lib/domain/visits/views';
 import type { Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
+
+/** What can be done about a visit from a list. */
+export type VisitDeed = VisitMove | 'follow-up' | 'move';
+
+/** Whether another time can be given to a visit: it is expected and has not begun, and the role plans visits. */
+export function mayReschedule(
+	{ state, startsAt }: Pick<VisitItem, 'state' | 'startsAt'>,
+	viewer: Person,
+	{ now }: Reader
+): boolean {
+	return isExpected(state) && now < Date.parse(startsAt) && can(viewer, 'visit.plan');
+}
 
 export const MOVE_WORDS: Record<VisitMove, () => string> = {
 	confirm: m.visits_move_confirm,

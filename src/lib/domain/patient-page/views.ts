@@ -1,5 +1,6 @@
 import type { VisitState } from '../core/codes';
 import type { MessageLanguage } from '../messages/templates/wording';
+import type { ReachProblem } from '../messages/reach';
 import type { PageWay } from './forms';
 
 /** A visit as its patient sees it. */
@@ -32,4 +33,12 @@ export interface PageLinkLine {
 	expiresAt: string;
 	/** What became of the message with the link; as in the message log. */
 	message: string;
+}
+
+/** What can be done about a patient's page, for those who plan visits. */
+export interface PageSharing {
+	/** The link that opens the page now. */
+	link: PageLinkLine | null;
+	/** Each way to send one, and what stands in its way. */
+	ways: { way: PageWay; problem: ReachProblem | null }[];
 }

@@ -1,5 +1,6 @@
 import type { VisitState } from '../core/codes';
 import type { PatientLine } from '../episodes/views';
+import type { ReachProblem } from '../messages/reach';
 
 /** What became of one reminder; `state` and `reason` are those of its message. */
 export interface ReminderFate {
@@ -21,6 +22,9 @@ export interface ClosedDay {
 	visits: number;
 }
 
+/** Why no reminder of a visit goes: it was booked or moved after the hour of the last one, or nobody can be written to. */
+export type NoReminder = ReachProblem | 'too-late-for-one';
+
 /** What the patient answered to a reminder, and when (RFC 3339). */
 export interface PatientAnswer {
 	at: string;
@@ -41,6 +45,10 @@ export interface VisitItem {
 	reason: string | null;
 	/** Cancelled by the patient, and nobody has followed it up yet. */
 	wantsFollowUp: boolean;
+	/** Grows with each move; see the calendar file. */
+	sequence: number;
+	/** Why no reminder goes; null when one goes or has gone. */
+	noReminder: NoReminder | null;
 	/** The same for all visits that were booked together. */
 	seriesId: string | null;
 	reminders: ReminderFate[];

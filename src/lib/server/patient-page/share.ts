@@ -3,13 +3,14 @@ import { invalidField, notFound, Problem } from '$lib/domain/core/errors';
 import { nextWithinHours } from '$lib/domain/core/hours';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { HOUR } from '$lib/domain/core/time';
+import { mailProblem, textProblem, type ReachProblem } from '$lib/domain/messages/reach';
 import { mailText, smsText } from '$lib/domain/messages/templates';
 import type { PageWay } from '$lib/domain/patient-page/forms';
-import type { PageLinkLine } from '$lib/domain/patient-page/views';
+import type { PageLinkLine, PageSharing } from '$lib/domain/patient-page/views';
 import { REMINDER_HOURS } from '$lib/domain/visits/reminders';
 import { accessEpisode } from '../access/access';
 import type { PersonContext } from '../context';
-import type { Reader, Tx } from '../db';
+import { db, type Reader, type Tx } from '../db';
 import { outbox, patientLinks, type patients } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
@@ -88,6 +89,22 @@ export function endPage(context: PersonContext, id: string): Promise<Written<{ i
 	});
 }
 
+/**
+ * Whether the patient has a link to their page, and by which ways one can be sent.
+ * @throws Problem `not-found` outside the person's units
+ */
+export async function sharingOf({ actor, now }: PersonContext, episodeId: string): Promise<PageSharing> {
+	await accessEpisode(db(), actor, episodeId, 'visit.read');
+	const patient = await patientOfEpisode(db(), episodeId);
+	return {
+		link: await openLinkOf(db(), episodeId, now),
+		ways: [
+			{ way: 'sms', problem: textProblem(patient) },
+			{ way: 'mail', problem: mailProblem(patient) }
+		]
+	};
+}
+
 /** The link that opens the patient's page now; null when there is none. */
 export async function openLinkOf(
 	reader: Reader,
@@ -121,28 +138,18 @@ async function endLinks(tx: Tx, episodeId: string, userId: string, now: number):
 		.where(and(eq(patientLinks.episodeId, episodeId), isNull(patientLinks.revokedAt)));
 }
 
+const PROBLEMS: Record<ReachProblem, string> = {
+	'no-number': 'no telephone number of the patient is known.',
+	'no-address': 'no e-mail address of the patient is known.',
+	'opted-out': 'the patient asked for no more texts.',
+	'no-consent': 'the patient has not consented to it.'
+};
+
 function refuseWithoutConsent(patient: PatientRow, way: PageWay): void {
 	const problem = way === 'sms' ? textProblem(patient) : mailProblem(patient);
 	if (problem !== null) {
-		throw invalidField('/way', problem);
+		throw invalidField('/way', `way is ${way}: ${PROBLEMS[problem]}`);
 	}
-}
-
-function textProblem({ phone, smsConsent, smsOptedOutAt }: PatientRow): string | null {
-	if (phone === null) {
-		return 'way is sms: no telephone number of the patient is known.';
-	}
-	if (smsOptedOutAt !== null) {
-		return 'way is sms: the patient asked for no more texts.';
-	}
-	return smsConsent ? null : 'way is sms: the patient has not consented to texts.';
-}
-
-function mailProblem({ email, mailConsent }: PatientRow): string | null {
-	if (email === null) {
-		return 'way is mail: no e-mail address of the patient is known.';
-	}
-	return mailConsent ? null : 'way is mail: the patient has not consented to mails.';
 }
 
 function messageWith(

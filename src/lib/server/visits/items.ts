@@ -1,7 +1,9 @@
 import { and, asc, eq, inArray } from 'drizzle-orm';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { VisitLine } from '$lib/domain/episodes/views';
-import type { PatientAnswer, ReminderFate, VisitItem } from '$lib/domain/visits/views';
+import { textProblem } from '$lib/domain/messages/reach';
+import { isExpected } from '$lib/domain/visits/states';
+import type { NoReminder, PatientAnswer, ReminderFate, VisitItem } from '$lib/domain/visits/views';
 import { db, type Reader } from '../db';
 import { inboundMessages, outbox, reminders, visits, type patients } from '../db/schema';
 import { patientLine } from '../episodes/list';
@@ -27,10 +29,23 @@ export async function visitItems(
 		unitId: visit.unitId,
 		reason: visit.reason,
 		wantsFollowUp: visit.patientCancelledAt !== null && visit.followedUpAt === null,
+		sequence: visit.sequence,
+		noReminder: noReminder(visit, patient, fates.get(visit.id) ?? []),
 		seriesId: visit.seriesId,
 		reminders: fates.get(visit.id) ?? [],
 		answer: answers.get(visit.id) ?? null
 	}));
+}
+
+/** Why nothing will remind of a visit that is expected: said before it shows in what was not sent. */
+function noReminder(visit: VisitRow, patient: PatientRow, fates: readonly ReminderFate[]): NoReminder | null {
+	if (!isExpected(visit.state)) {
+		return null;
+	}
+	if (fates.length === 0) {
+		return 'too-late-for-one';
+	}
+	return fates.every(({ state }) => state === 'ready' || state === 'held') ? textProblem(patient) : null;
 }
 
 async function fatesOf(reader: Reader, visitIds: string[]): Promise<Map<string, ReminderFate[]>> {

@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { smsText } from '$lib/domain/messages/templates';
 import { planReminders } from '$lib/domain/visits/reminders';
-import type { Tx } from '../db';
+import type { Reader, Tx } from '../db';
 import { episodes, patients, reminders, type visits } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
@@ -10,7 +10,7 @@ import type { NewMessage } from '../outbox/enqueue';
 type VisitRow = typeof visits.$inferSelect;
 type PatientRow = typeof patients.$inferSelect;
 
-export async function patientOfEpisode(tx: Tx, episodeId: string): Promise<PatientRow> {
+export async function patientOfEpisode(tx: Reader, episodeId: string): Promise<PatientRow> {
 	const [row] = await tx
 		.select({ patient: patients })
 		.from(patients)

@@ -1,5 +1,6 @@
 import { HOUR } from '$lib/domain/core/time';
 import { nextWithinHours } from '$lib/domain/core/hours';
+import { mailProblem, textProblem } from '$lib/domain/messages/reach';
 import { mailText, smsText } from '$lib/domain/messages/templates';
 import { REMINDER_HOURS } from '$lib/domain/visits/reminders';
 import type { patients, visits } from '../db/schema';
@@ -24,7 +25,7 @@ export function newsKey({ id, sequence }: Pick<VisitRow, 'id' | 'sequence'>, way
 /** A single visit is booked: a mail with its calendar file, where the patient wants mail. Texts are left to reminders. */
 export function tellBooked(booked: readonly VisitRow[], patient: PatientRow, now: number): NewMessage[] {
 	const [first] = booked;
-	if (!first || !wantsMail(patient)) {
+	if (!first || mailProblem(patient) !== null) {
 		return [];
 	}
 	if (booked.length === 1) {
@@ -75,10 +76,6 @@ export function waysOf(messages: readonly NewMessage[]): Way[] {
 	return messages.map(({ channel }) => channel);
 }
 
-function wantsMail({ email, mailConsent }: PatientRow): boolean {
-	return email !== null && mailConsent;
-}
-
 /** A text, at daytime; none where it could only come too late, because somebody then has to call. */
 function textOf(
 	visit: VisitRow,
@@ -88,8 +85,7 @@ function textOf(
 	now: number
 ): NewMessage[] {
 	const notBefore = nextWithinHours(now, patient.zone, REMINDER_HOURS);
-	const { phone, smsConsent, smsOptedOutAt } = patient;
-	if (phone === null || !smsConsent || smsOptedOutAt !== null || notBefore >= useful) {
+	if (textProblem(patient) !== null || notBefore >= useful) {
 		return [];
 	}
 	return [
@@ -108,7 +104,7 @@ function mailOf(
 	template: 'visit-booked' | 'visit-moved' | 'visit-cancelled',
 	now: number
 ): NewMessage[] {
-	if (!wantsMail(patient) || visit.startsAt <= now) {
+	if (mailProblem(patient) !== null || visit.startsAt <= now) {
 		return [];
 	}
 	const { subject, text } = mailText(

@@ -7,6 +7,7 @@ import { env } from '$lib/server/env';
 import { MAX_LIMIT } from '$lib/server/http/paging';
 import { pageLoad } from '$lib/server/http/page';
 import { read } from '$lib/server/read';
+import { listClosedDays } from '$lib/server/visits/closed-days';
 import { listVisits } from '$lib/server/visits/queries';
 import type { PageServerLoad } from './$types';
 
@@ -21,12 +22,13 @@ export const load: PageServerLoad = (event) =>
 		const asked = searchParams.get('from') ?? '';
 		const from = mondayOf(isLocalDate(asked) ? asked : localDateOf(context.now, zone));
 		const range = visitRange(from, null, zone, context.now);
-		const [visits, patients] = await Promise.all([
+		const [visits, closed, patients] = await Promise.all([
 			listVisits(context.actor, range, ALL),
+			listClosedDays(from),
 			can(context.actor, 'visit.plan') ? patientsToBook(context) : []
 		]);
 		const view = searchParams.get('view') === 'list' ? ('list' as const) : ('week' as const);
-		return { from, view, visits, patients };
+		return { from, view, visits, closed, patients };
 	});
 
 /** No more than what tells patients apart in a list. */

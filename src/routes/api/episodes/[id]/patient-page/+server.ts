@@ -1,7 +1,13 @@
 import { sendPageBody } from '$lib/domain/patient-page/forms';
-import { writing } from '$lib/server/http/endpoint';
+import { reading, writing } from '$lib/server/http/endpoint';
 import { idParam } from '$lib/server/http/param';
-import { sendPage } from '$lib/server/patient-page/share';
+import { sendPage, sharingOf } from '$lib/server/patient-page/share';
+
+/** Whether the patient has a link to their page, and by which ways one can be sent. */
+export const GET = reading({
+	permission: 'visit.read',
+	run: (context, event) => sharingOf(context, idParam(event))
+});
 
 /** Send the patient the link to their page. */
 export const POST = writing({
