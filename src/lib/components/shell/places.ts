@@ -5,7 +5,16 @@ import { routes } from '$lib/routes';
 /** A place of the navigation. `under` says which paths count as being in it. */
 export type Place = { key: PlaceKey; href: string; label: string; under: readonly string[] };
 export type PlaceKey =
-	'loose-ends' | 'ward' | 'visits' | 'cover' | 'rules' | 'account' | 'accounts' | 'limits' | 'phones';
+	| 'loose-ends'
+	| 'ward'
+	| 'visits'
+	| 'cover'
+	| 'rules'
+	| 'account'
+	| 'accounts'
+	| 'limits'
+	| 'closed-days'
+	| 'phones';
 
 /**
  * The places of everyday work; a phone shows these three and 'More'. An administrator sees no patients, and so
