@@ -5,6 +5,8 @@ export interface PlotPoint {
 	readonly moment: string;
 	/** What the rules made of it: its mark changes, and the words say so. */
 	readonly verdict?: 'caution' | 'stop' | null;
+	/** The limits that judged it, in words, for the table. */
+	readonly limits?: string;
 }
 
 /** What is measured again and again. The points of one run are joined by a line; between runs there is none. */
@@ -24,6 +26,8 @@ export interface PlotLimit {
 	readonly to: number;
 	readonly y: number;
 	readonly label: string;
+	/** A caution is drawn in dots, a stop in dashes. */
+	readonly grade?: 'caution' | 'stop';
 }
 
 /** Something that happened between the readings: the operation, a move, a clearance. */

@@ -18,7 +18,7 @@ import { hasValues, placeReadings } from './timeline';
  * throws on a body that its schema accepts, and never reads anything but its arguments.
  */
 export function assess(input: Assessment, limits?: LimitSet): Verdict {
-	const facts = gather(input, limitsOfPatient(input.context, limits ?? limitsFor(setFor(input.context))));
+	const facts = gather(input, limits);
 	const { set } = facts.limits;
 	const findings = RULES.flatMap((rule) => rule.judge(facts))
 		.map((found): Finding => ({ ...found, set }))
@@ -32,8 +32,9 @@ export function assess(input: Assessment, limits?: LimitSet): Verdict {
 	};
 }
 
-/** Lay a session out for the rules. */
-function gather(input: Assessment, limits: LimitSet): Facts {
+/** Lay a session out for the rules, with the limits of the patient over those given. */
+export function gather(input: Assessment, unit: LimitSet = limitsFor(setFor(input.context))): Facts {
+	const limits = limitsOfPatient(input.context, unit);
 	const readings = placeReadings(input);
 	const [before, after] = [readings.at(0), readings.at(-1)];
 	if (before === undefined || after === undefined) {

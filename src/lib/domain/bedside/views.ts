@@ -1,4 +1,5 @@
 import type { SessionAmendment } from './amendments';
+import type { KeptBar } from './drawn';
 import type { Finding } from './finding';
 import type { Reading } from './forms';
 import type { Outcome } from './codes';
@@ -28,6 +29,8 @@ export interface SessionLine {
 		set: Finding['set'] | null;
 		version: Finding['version'] | null;
 	})[];
+	/** The limits beside each value as they judged it; null for sessions of before these were kept. */
+	bars: KeptBar[] | null;
 	deviation: { reason: string } | null;
 	/** What was said about it since, oldest first; empty for one that stands as it was recorded. */
 	amendments: SessionAmendment[];

@@ -1,5 +1,6 @@
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import { assess } from '$lib/domain/bedside/assess';
+import { barsOf } from '$lib/domain/bedside/bars';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Assessment, SessionBody } from '$lib/domain/bedside/forms';
 import { limitsOfPatient, setOfUnit, type LocalLayers } from '$lib/domain/bedside/limits/layers';
@@ -55,10 +56,12 @@ export function recordSession(
 		// The limits that held when the session ended, also where it is entered afterwards.
 		const layers = await layersOf(tx, episode, parseRfc3339(input.endedAt));
 		const judged = withRange(told, layers);
-		const verdict = assess(judged, limitsThatJudge(judged.context, episode, layers));
+		const limits = limitsThatJudge(judged.context, episode, layers);
+		const verdict = assess(judged, limits);
 		const of = { id: newId(), episodeId, operationId: facts.operation?.id ?? null };
 		const threadId = await threadForDeed(tx, episodeId, undefined);
-		await insertSession(tx, context, of, { ...input, context: judged.context }, verdict);
+		const kept = { ...input, context: judged.context };
+		await insertSession(tx, context, of, kept, verdict, barsOf(judged, limits));
 		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);
 		await carryOver(tx, context, episode, input, verdict);
 		await askForSignature(tx, context, episode, of.id, input);

@@ -50,6 +50,7 @@ export async function listSessions(
 			during: phase('during'),
 			after: phase('after')[0] ?? {},
 			findings: found.filter((f) => f.sessionId === session.id).map(toFinding),
+			bars: session.bars,
 			deviation: session.deviation as { reason: string } | null,
 			amendments: amended
 				.filter(({ sessionId }) => sessionId === session.id)

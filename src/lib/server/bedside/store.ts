@@ -1,3 +1,4 @@
+import type { KeptBar } from '$lib/domain/bedside/drawn';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Reading, SessionBody } from '$lib/domain/bedside/forms';
 import { parseRfc3339 } from '$lib/domain/core/instant';
@@ -19,7 +20,8 @@ export async function insertSession(
 	context: PersonContext,
 	of: SessionOf,
 	input: SessionBody,
-	verdict: Verdict
+	verdict: Verdict,
+	bars: KeptBar[]
 ): Promise<void> {
 	await tx.insert(bedsideSessions).values({
 		...of,
@@ -33,6 +35,7 @@ export async function insertSession(
 		notJudged: [...verdict.notJudged],
 		limitSet: verdict.set,
 		limitVersion: verdict.version,
+		bars,
 		deviation: input.deviation ? { ...input.deviation } : null,
 		recordedBy: context.actor.id,
 		recordedAt: context.now

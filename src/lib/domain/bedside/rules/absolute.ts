@@ -9,7 +9,8 @@ import type { LimitKey, Moment, RuleId } from '../codes';
 import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { exact, plain } from '../numbers';
-import { measured, type Placed } from '../timeline';
+import { measured, type Measure, type Placed } from '../timeline';
+import { barAt, type Bar } from './bar';
 import { CROSSING_WORDS, limitOf, MOMENT_WORDS, overLimit, type Facts, type Rule } from './rule';
 
 /** The limits that stop and caution at one kind of moment. */
@@ -22,6 +23,8 @@ interface AbsoluteRule {
 	readonly id: RuleId;
 	readonly what: string;
 	readonly words: string;
+	/** The value of a reading that it judges; null where it is worked out of several. */
+	readonly measure: Measure | null;
 	readonly value: (placed: Placed) => number | null;
 	/** Null where the rule does not judge the reading before the session. */
 	readonly before: Bars | null;
@@ -39,6 +42,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'systolic-ceiling',
 		what: 'systolic pressure',
 		words: 'The systolic pressure must not be too high: lower before a start than in effort and after it.',
+		measure: 'sbp',
 		value: (placed) => measured(placed, 'sbp'),
 		before: { stop: 'systolic-ceiling.before', caution: null },
 		effort: { stop: 'systolic-ceiling', caution: 'systolic-ceiling.caution' }
@@ -47,6 +51,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'systolic-floor',
 		what: 'systolic pressure',
 		words: 'The systolic pressure must not be too low, at any moment.',
+		measure: 'sbp',
 		value: (placed) => measured(placed, 'sbp'),
 		before: { stop: 'systolic-floor', caution: null },
 		effort: { stop: 'systolic-floor', caution: null }
@@ -56,6 +61,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		what: 'mean pressure',
 		words:
 			'The mean pressure, the diastolic plus a third of the pulse pressure, must not be too low at any moment.',
+		measure: null,
 		value: meanPressure,
 		before: { stop: 'mean-floor', caution: null },
 		effort: { stop: 'mean-floor', caution: null }
@@ -64,6 +70,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'diastolic-ceiling',
 		what: 'diastolic pressure',
 		words: 'The diastolic pressure must not be too high, at any moment.',
+		measure: 'dbp',
 		value: (placed) => measured(placed, 'dbp'),
 		before: { stop: 'diastolic-ceiling.before', caution: 'diastolic-ceiling.caution' },
 		effort: { stop: 'diastolic-ceiling', caution: 'diastolic-ceiling.caution' }
@@ -73,6 +80,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		what: 'heart rate',
 		words:
 			'The heart rate must not be too high. An outpatient is stopped by the top of the prescribed range; without one the general ceiling holds.',
+		measure: 'hr',
 		value: (placed) => measured(placed, 'hr'),
 		before: { stop: 'heart-rate-ceiling.before', caution: null },
 		effort: { stop: 'heart-rate-ceiling', caution: 'heart-rate-ceiling.caution' }
@@ -81,6 +89,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'heart-rate-floor',
 		what: 'heart rate',
 		words: 'The heart rate must not be too low, at any moment.',
+		measure: 'hr',
 		value: (placed) => measured(placed, 'hr'),
 		before: { stop: 'heart-rate-floor', caution: 'heart-rate-floor.caution' },
 		effort: { stop: 'heart-rate-floor', caution: 'heart-rate-floor.caution' }
@@ -89,6 +98,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'respiratory-ceiling',
 		what: 'breathing rate',
 		words: 'The breathing rate must not be too high: lower before a start than in effort and after it.',
+		measure: 'rr',
 		value: (placed) => measured(placed, 'rr'),
 		before: { stop: 'respiratory-ceiling.before', caution: 'respiratory-ceiling.before-caution' },
 		effort: { stop: 'respiratory-ceiling', caution: 'respiratory-ceiling.caution' }
@@ -97,6 +107,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'saturation-floor',
 		what: 'oxygen saturation',
 		words: 'The oxygen saturation must not be too low, at any moment.',
+		measure: 'spo2',
 		value: (placed) => measured(placed, 'spo2'),
 		before: { stop: 'saturation-floor', caution: 'saturation-floor.caution' },
 		effort: { stop: 'saturation-floor', caution: 'saturation-floor.caution' }
@@ -106,6 +117,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		what: 'exertion',
 		words:
 			'The effort a patient feels, on the Borg scale from 6 to 20, must not be too high. An outpatient is cautioned over the prescribed range and stopped more than two points over it.',
+		measure: 'rpe',
 		value: (placed) => measured(placed, 'rpe'),
 		before: null,
 		effort: { stop: 'exertion-ceiling', caution: 'exertion-ceiling.caution' }
@@ -114,6 +126,7 @@ const ABSOLUTE: readonly AbsoluteRule[] = [
 		id: 'pain-ceiling',
 		what: 'pain',
 		words: 'Pain, from 0 to 10, must not be too strong at any moment.',
+		measure: 'pain',
 		value: (placed) => measured(placed, 'pain'),
 		before: { stop: 'pain-ceiling', caution: 'pain-ceiling.caution' },
 		effort: { stop: 'pain-ceiling', caution: 'pain-ceiling.caution' }
@@ -132,6 +145,17 @@ export const absoluteRules: readonly Rule[] = ABSOLUTE.map((rule) => ({
 	],
 	lacks: (facts) => lacks(rule, facts)
 }));
+
+/** The limits that judged one value of one reading by itself. */
+export function absoluteBars(facts: Facts, { moment }: Placed, measure: Measure): Bar[] {
+	return ABSOLUTE.filter((rule) => rule.measure === measure).flatMap((rule) => {
+		const bars = moment === 'before' ? rule.before : rule.effort;
+		return (['stop', 'caution'] as const).flatMap((grade) => {
+			const limit = bars?.[grade] ? limitOf(facts, bars[grade]) : null;
+			return limit ? [barAt(grade, limit.value, limit.when !== 'under', limit.when === 'at')] : [];
+		});
+	});
+}
 
 /** The gravest crossing among readings of one moment: one finding at most, so that a long walk is one line. */
 function worst(rule: AbsoluteRule, facts: Facts, moment: Moment, readings: readonly Placed[]): RuleFinding[] {

@@ -10,6 +10,7 @@ import type { RuleFinding } from '../finding';
 import { crosses, type Limit } from '../limits/limits';
 import { exact, plain } from '../numbers';
 import { measured, type Measure, type Placed } from '../timeline';
+import { barAt, type Bar } from './bar';
 import { changeSinceBase, settlesAnew, type Change } from './base';
 import { isIrregular } from './rhythm';
 import { limitOf, MOMENT_WORDS, overLimit, type Facts, type Rule } from './rule';
@@ -103,6 +104,24 @@ export function limitWords({ limits }: Facts, limit: Limit, amount: number): str
 
 function cautionFrom(limit: Limit, share: number | null): number {
 	return exact(limit.value * (share ?? 1));
+}
+
+/** The limits that judged how one value of one reading had changed, counted from its base. */
+export function changeBars(facts: Facts, placed: Placed, measure: Measure): Bar[] {
+	const change = placed.moment === 'before' ? null : changeSinceBase(facts, placed, measure);
+	return CHANGES.filter((rule) => change !== null && rule.measure === measure).flatMap((rule) => {
+		const limit = limitOf(facts, rule.limit(facts));
+		const up = rule.direction === 'rise';
+		const at = (amount: number) => (change?.from ?? 0) + (up ? amount : -amount);
+		if (limit === null) {
+			return [];
+		}
+		const early = limit.when === 'over' && facts.limits.cautionShare !== null;
+		return [
+			barAt(rule.gravest(placed), at(limit.value), up, limit.when === 'at'),
+			...(early ? [barAt('caution', at(cautionFrom(limit, facts.limits.cautionShare)), up, true)] : [])
+		];
+	});
 }
 
 /** One finding at most for readings of one moment: of the gravest grade the greatest change. */

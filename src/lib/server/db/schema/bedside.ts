@@ -1,4 +1,5 @@
 import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
+import type { KeptBar } from '../../../domain/bedside/drawn';
 import { SETS } from '../../../domain/bedside/codes';
 import { SESSION_AMENDMENTS } from '../../../domain/bedside/amendments';
 import { RHYTHMS } from '../../../domain/core/codes';
@@ -27,6 +28,8 @@ export const bedsideSessions = sqliteTable(
 		/** Which limits judged it: the findings can be explained years later. */
 		limitSet: text('limit_set').notNull(),
 		limitVersion: text('limit_version').notNull(),
+		/** The limits beside each value, as `barsOf` gave them; null for sessions of before these were kept. */
+		bars: json<KeptBar[]>('bars'),
 		deviation: json<Record<string, unknown>>('deviation'),
 		recordedBy: text('recorded_by')
 			.notNull()

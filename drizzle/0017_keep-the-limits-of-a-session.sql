@@ -1,0 +1,1 @@
+ALTER TABLE `bedside_sessions` ADD `bars` text;
