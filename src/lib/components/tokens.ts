@@ -139,6 +139,8 @@ export const TYPE: Record<string, [size: string, lineHeight: string]> = {
 	body: ['1rem', '1.5rem'],
 	row: ['1.125rem', '1.5rem'],
 	title: ['1.25rem', '1.625rem'],
+	/** The one large action of a phone page. */
+	take: ['1.75rem', '2rem'],
 	head: ['1.9375rem', '2.25rem'],
 	figure: ['2.25rem', '2.5rem'],
 	hero: ['clamp(2.75rem, 1.9rem + 3.6vw, 4.25rem)', '1.04']

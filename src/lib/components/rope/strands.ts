@@ -36,3 +36,8 @@ export function yarnOf(strand: StrandName, width: number): string | null {
 export function round(value: number): number {
 	return Math.round(value * 10) / 10;
 }
+
+/** The far side of a strand: its dye, darkened by `share` percent towards what the theme calls shade. */
+export function shadedDye(strand: StrandName, share: number): string {
+	return `color-mix(in oklab, ${dyeOf(strand)}, var(--shade) ${share}%)`;
+}

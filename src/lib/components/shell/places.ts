@@ -1,9 +1,25 @@
+import type { IconDrawing } from '$lib/components/ui/icon';
+import BedDouble from '@lucide/svelte/icons/bed-double';
+import BookOpen from '@lucide/svelte/icons/book-open';
+import CalendarDays from '@lucide/svelte/icons/calendar-days';
+import ListChecks from '@lucide/svelte/icons/list-checks';
+import PhoneCall from '@lucide/svelte/icons/phone-call';
+import Ruler from '@lucide/svelte/icons/ruler';
+import Smartphone from '@lucide/svelte/icons/smartphone';
+import UserRound from '@lucide/svelte/icons/user-round';
+import UsersRound from '@lucide/svelte/icons/users-round';
 import type { Role } from '$lib/domain/core/codes';
 import { m } from '$lib/i18n/paraglide/messages';
 import { routes } from '$lib/routes';
 
 /** A place of the navigation. `under` says which paths count as being in it. */
-export type Place = { key: PlaceKey; href: string; label: string; under: readonly string[] };
+export type Place = {
+	key: PlaceKey;
+	href: string;
+	label: string;
+	icon: IconDrawing;
+	under: readonly string[];
+};
 export type PlaceKey =
 	| 'loose-ends'
 	| 'ward'
@@ -60,6 +76,19 @@ export function isIn(place: Place, path: string): boolean {
 	return place.under.some((root) => path === root || path.startsWith(`${root}/`));
 }
 
+/** One drawing for each place, always beside its word. */
+const ICONS: Record<PlaceKey, IconDrawing> = {
+	'loose-ends': ListChecks,
+	ward: BedDouble,
+	visits: CalendarDays,
+	cover: PhoneCall,
+	rules: BookOpen,
+	account: UserRound,
+	accounts: UsersRound,
+	limits: Ruler,
+	phones: Smartphone
+};
+
 function place(key: PlaceKey, href: string, label: string, also: readonly string[] = []): Place {
-	return { key, href, label, under: [href, ...also] };
+	return { key, href, label, icon: ICONS[key], under: [href, ...also] };
 }

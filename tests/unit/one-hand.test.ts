@@ -1,0 +1,212 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { parse, type AST } from 'svelte/compiler';
+import { describe, expect, it } from 'vitest';
+
+/** Files of the pages and their parts, by their ending. */
+function files(ending: string): string[] {
+	return readdirSync('src', { recursive: true, encoding: 'utf8' })
+		.map((file) => `src/${file.replaceAll('\\', '/')}`)
+		.filter((file) => file.endsWith(ending) && !file.includes('/paraglide/'));
+}
+
+const sourceOf = (file: string) => readFileSync(file, 'utf8');
+
+/** Every element and component of a template, with what stands around it. */
+function walk(
+	node: unknown,
+	visit: (element: AST.RegularElement | AST.Component, around: unknown[]) => void
+) {
+	const step = (at: unknown, around: unknown[]): void => {
+		if (Array.isArray(at)) {
+			at.forEach((each) => step(each, around));
+		} else if (at !== null && typeof at === 'object') {
+			const { type } = at as { type?: string };
+			const element = type === 'RegularElement' || type === 'Component';
+			if (element) {
+				visit(at as AST.RegularElement, around);
+			}
+			Object.values(at).forEach((each) => step(each, element ? [...around, at] : around));
+		}
+	};
+	step(node, []);
+}
+
+describe('forms', () => {
+	/** Forms that are not drawn by `components/form`, each with its reason. */
+	const OTHERS: Record<string, string> = {
+		'src/lib/components/thread/Composer.svelte': 'one line and a draft; over the same formState',
+		'src/lib/components/escalations/PhoneForm.svelte': 'a link without a sign-in; checked by linkDeed',
+		'src/lib/components/accounts/SignInAndSend.svelte':
+			'sends another form on as it was; checked by signInBody',
+		'src/lib/components/shell/MorePanel.svelte': 'signing out has nothing to check',
+		'src/lib/components/visits/BookVisits.svelte': 'sent as JSON; checked by bookVisitsBody',
+		'src/lib/components/bedside/Bedside.svelte': 'kept on the device and sent as JSON; checked by sessionBody'
+	};
+	const drawn = () =>
+		files('.svelte').filter(
+			(file) => /<form[\s>]/.test(sourceOf(file)) && !file.startsWith('src/lib/components/form/')
+		);
+
+	it('are drawn once, and every other one has a reason', () => {
+		expect(drawn().toSorted()).toEqual(Object.keys(OTHERS).toSorted());
+	});
+
+	it.each(files('.svelte').filter((file) => /<form[^>]*method="POST"/.test(sourceOf(file))))(
+		'%s carries a key against being done twice, or signs in or out',
+		(file) => {
+			const safe =
+				/name="key"/.test(sourceOf(file)) || /routes\.sign(Out|InAndSend)\(\)/.test(sourceOf(file));
+			expect(safe).toBe(true);
+		}
+	);
+
+	/** Where a posted form may be read: in the one wrapper, and by the two doors that need no sign-in. */
+	const READERS = [
+		'src/lib/server/http/form-action.ts',
+		'src/routes/(phone)/t/[token]/+page.server.ts',
+		'src/routes/(public)/sign-in/send/+page.server.ts',
+		'src/routes/style/form/+page.server.ts'
+	];
+
+	it('are read by the wrapper that checks them with the schema of their area', () => {
+		const readers = files('.ts').filter(
+			(file) => /\.formData\(\)/.test(sourceOf(file)) && !file.endsWith('.test.ts')
+		);
+		expect(readers.toSorted()).toEqual(READERS.toSorted());
+		for (const file of readers) {
+			expect(sourceOf(file), file).toMatch(/superValidate|safeParse/);
+		}
+	});
+
+	it.each(files('+page.server.ts').filter((file) => /export const actions/.test(sourceOf(file))))(
+		'%s checks with the schema that it fills the form by',
+		(file) => {
+			const source = sourceOf(file);
+			const checks = /formAction\(|openFormAction\(|safeParse\(|superValidate\(/.test(source);
+			const borrows = /import \{[^}]*\} from '(\.\/|\.\.\/)[^']*(actions|ask-clearance)'/.test(source);
+			expect(checks || borrows).toBe(true);
+		}
+	);
+});
+
+describe('looks', () => {
+	const RAW =
+		/#[\da-f]{3,8}\b(?!['"]?\s*\))|\b(rgba?|hsla?|oklch|lab)\(|\b(text|bg|border|fill|stroke|decoration)-\[(#|rgb|hsl)/i;
+	/** Ids and addresses within a page look like colours; a class or a style does not contain one. */
+	const coloursIn = (source: string) =>
+		source
+			.replace(/(href|id|for|aria-\w+)=["'{`][^"'}`]*["'}`]/g, '')
+			.replace(/\{[#/:@]\w+/g, '')
+			.split('\n')
+			.filter((line) => RAW.test(line));
+	const looked = () =>
+		[...files('.svelte'), ...files('.ts')].filter(
+			(file) =>
+				/^src\/(lib\/components|routes)\//.test(file) && !/tokens(\.test)?\.ts$|\.test\.ts$/.test(file)
+		);
+
+	it.each([
+		'class="bg-[#f4f0e6]"',
+		"style:color={'#123'}",
+		'style="color: rgb(1 2 3)"',
+		'fill="oklch(1 0 0)"'
+	])('would notice the colour in %s', (line) => expect(coloursIn(line)).toEqual([line]));
+
+	it('name no colour beside the tokens', () => {
+		const raw = looked().flatMap((file) =>
+			coloursIn(sourceOf(file)).map((line) => `${file}: ${line.trim()}`)
+		);
+		expect(raw).toEqual([]);
+	});
+
+	it('take their type, corners, distances and durations from the tokens', () => {
+		// Widths and columns belong to one layout; what a token carries does not.
+		const OWN =
+			/\b(text|leading|tracking|rounded(-\w+)?|font|duration|ease|[mp][xytblr]?|gap(-[xy])?|shadow)-\[(?!GrayText|max\(|env\()[^\]]+\]/g;
+		const own = looked().flatMap((file) =>
+			(sourceOf(file).match(OWN) ?? []).map((each) => `${file}: ${each}`)
+		);
+		expect(own).toEqual([]);
+	});
+
+	it('are not written twice: a long run of classes stands in one place', () => {
+		const places = new Map<string, Set<string>>();
+		for (const file of looked()) {
+			for (const [, classes = ''] of sourceOf(file).matchAll(/["'`]([^"'`\n{}]{60,})["'`]/g)) {
+				const words = classes.trim().split(/\s+/);
+				if (words.length >= 6 && words.every((word) => /^[-!\w:[\]().%/&>=,*#+@]+$/.test(word))) {
+					const key = words.toSorted().join(' ');
+					places.set(key, (places.get(key) ?? new Set()).add(file));
+				}
+			}
+		}
+		expect(
+			[...places].filter(([, where]) => where.size > 1).map(([key, where]) => [key, [...where]])
+		).toEqual([]);
+	});
+});
+
+describe('icons', () => {
+	/** Whether the element around an icon has words that are seen: in itself, or in a part of it that is not hidden. */
+	function hasWords(node: unknown): boolean {
+		if (Array.isArray(node)) {
+			return node.some(hasWords);
+		}
+		if (node === null || typeof node !== 'object') {
+			return false;
+		}
+		const { type } = node as { type?: string };
+		if (
+			type === 'RegularElement' &&
+			/sr-only/.test(JSON.stringify((node as AST.RegularElement).attributes))
+		) {
+			return false;
+		}
+		const { fragment, consequent, data } = node as Record<string, unknown>;
+		return type === 'ExpressionTag' || type === 'RenderTag'
+			? true
+			: type === 'Text'
+				? String(data).trim() !== ''
+				: hasWords((fragment as AST.Fragment | undefined)?.nodes) ||
+					hasWords((consequent as AST.Fragment | undefined)?.nodes);
+	}
+
+	function besideWords(source: string): { icons: number; alone: number } {
+		let [icons, alone] = [0, 0];
+		walk(parse(source, { modern: true }).fragment, (element, around) => {
+			if (element.name === 'Icon') {
+				icons += 1;
+				const nearest = around.at(-1) as AST.RegularElement | undefined;
+				alone += hasWords(nearest?.fragment.nodes) ? 0 : 1;
+			}
+		});
+		return { icons, alone };
+	}
+
+	it.each([
+		['<a><Icon icon={x} /></a>', 1],
+		['<a><Icon icon={x} /><span class="sr-only">Ward</span></a>', 1],
+		['<a><Icon icon={x} />Ward</a>', 0],
+		['<a>{#if y}<Icon icon={x} />{/if}<span>{label}</span></a>', 0]
+	])('stand alone in %s: %d', (source, alone) => {
+		expect(besideWords(source).alone).toBe(alone);
+	});
+
+	it('never stand without a word, and are in use', () => {
+		const counted = files('.svelte')
+			.filter((file) => /<Icon\b/.test(sourceOf(file)))
+			.map((file) => [file, besideWords(sourceOf(file))] as const);
+		expect(counted.filter(([, { alone }]) => alone > 0)).toEqual([]);
+		expect(counted.filter(([file]) => !file.startsWith('src/routes/style/')).length).toBeGreaterThan(2);
+	});
+
+	it('come by the one part that hides them from screen readers', () => {
+		const direct = files('.svelte').filter((file) => {
+			const names = [...sourceOf(file).matchAll(/import (\w+) from '@lucide\/svelte/g)].map(
+				([, name]) => name
+			);
+			return names.some((name) => new RegExp(`<${name}\\b`).test(sourceOf(file)));
+		});
+		expect(direct).toEqual([]);
+	});
+});
