@@ -56,6 +56,60 @@ test('a menu, a combobox and a toast are used by keyboard alone', async ({ page 
 	await expect(page.getByText('Given back.')).toBeVisible();
 });
 
+test('every part is reached with the tabulator key', async ({ page }) => {
+	const left = () =>
+		page.evaluate(() => {
+			const named = new Set<string>();
+			return [
+				...document.querySelectorAll<HTMLElement>(
+					'a[href], button, input, select, textarea, summary, [tabindex="0"]'
+				)
+			]
+				.filter((each) => each.tabIndex >= 0 && !each.matches(':disabled') && each.checkVisibility())
+				.filter((each) => {
+					// Of several radio buttons with one name the tabulator key reaches one.
+					const group = each instanceof HTMLInputElement && each.type === 'radio' ? each.name : null;
+					const again =
+						group !== null &&
+						(named.has(group) || document.querySelector(`[name="${group}"][data-reached]`) !== null);
+					named.add(group ?? '');
+					return !again && !each.dataset.reached;
+				})
+				.map((each) => each.outerHTML.slice(0, 80));
+		});
+	const all = (await left()).length;
+	expect(all).toBeGreaterThan(40);
+	for (let pressed = 0; pressed < all + 10; pressed += 1) {
+		await page.keyboard.press('Tab');
+		await page.evaluate(() => {
+			const focused = document.activeElement as HTMLElement | null;
+			focused?.setAttribute('data-reached', String(focused.matches(':focus-visible')));
+		});
+	}
+	expect(await left()).toEqual([]);
+	expect(await page.locator('[data-reached="false"]').count()).toBe(0);
+});
+
+test('a table is narrowed by what is typed and ordered by its headings, and says when nothing is left', async ({
+	page
+}) => {
+	const rows = page.getByRole('region', { name: 'Patients' }).getByRole('rowheader');
+	await page.getByRole('button', { name: 'Day', exact: true }).press('Enter');
+	await expect(rows).toHaveText(['T2', 'T5', 'T4']);
+	await page.getByLabel('Name or bed').fill('mar');
+	await expect(rows).toHaveText(['T4']);
+	await page.getByLabel('Name or bed').fill('nobody');
+	await expect(page.getByText('Nothing fits “nobody”.')).toBeVisible();
+});
+
+test('a day and a time say what was understood, and a day that is offered is taken', async ({ page }) => {
+	await expect(page.getByText('Monday 8 December 2025')).toBeVisible();
+	await expect(page.getByText('09:30', { exact: true })).toBeVisible();
+	await page.getByRole('button', { name: 'Mon 29 Dec' }).click();
+	await expect(page.getByLabel('Review')).toHaveValue('29 12 2025');
+	await expect(page.getByText('Monday 29 December 2025')).toBeVisible();
+});
+
 test('the number pad writes what was pressed and takes no fourth digit', async ({ page }) => {
 	const pad = page.getByRole('group', { name: 'Systolic, before' });
 	await pad.getByRole('button', { name: 'Erase' }).click();

@@ -115,17 +115,42 @@ describe('words of the pages', () => {
 });
 
 describe('Spanish, as far as it has come', () => {
-	const english: Record<string, string> = JSON.parse(readFileSync(`${CATALOGUE}/common.json`, 'utf8'));
-	const spanish: Record<string, string> = JSON.parse(
-		readFileSync(`${CATALOGUE.replace(/en$/, 'es')}/common.json`, 'utf8')
-	);
+	const SPANISH = CATALOGUE.replace(/en$/, 'es');
+	const read = (folder: string, file: string): Record<string, string> =>
+		JSON.parse(readFileSync(path.join(folder, file), 'utf8'));
 	const blanks = (text = '') => [...text.matchAll(/\{\w+\}/g)].map(([blank]) => blank).sort();
 
-	it('has the words of the shell and the front page, each with the same blanks', () => {
-		expect(Object.keys(spanish).length).toBeGreaterThan(100);
-		const other = Object.entries(spanish).filter(
-			([key, text]) => !(key in english) || blanks(text).join() !== blanks(english[key]).join()
-		);
-		expect(other).toEqual([]);
+	it.each(readdirSync(SPANISH))(
+		'%s has whole sentences for words of ours, each with the same blanks',
+		(file) => {
+			const [english, spanish] = [read(CATALOGUE, file), read(SPANISH, file)];
+			expect(Object.keys(spanish).length).toBeGreaterThan(40);
+			const other = Object.entries(spanish).filter(
+				([key, text]) =>
+					!(key in english) || blanks(text).join() !== blanks(english[key]).join() || text.trim() === ''
+			);
+			expect(other).toEqual([]);
+		}
+	);
+
+	/** Pages that are wholly in Spanish, with their parts; a page that mixes two languages has half sentences. */
+	const PAGES: Record<string, RegExp> = {
+		'the shell': /^src\/lib\/components\/shell\//,
+		'the page that a link on a phone opens':
+			/^src\/(routes\/\(phone\)\/|lib\/components\/escalations\/(Phone|SinceClock))/,
+		'loose ends':
+			/^src\/(routes\/\(app\)\/loose-ends\/\+page\.svelte|lib\/components\/loose-ends\/(EndMark|LooseEndRow|WaitingOnYou|YouWaitFor|words\.ts|steps\.ts))/
+	};
+
+	it.each(Object.entries(PAGES))('says everything on %s', (_, pattern) => {
+		const spanish = Object.assign({}, ...readdirSync(SPANISH).map((file) => read(SPANISH, file)));
+		const said = readdirSync('src', { recursive: true, encoding: 'utf8' })
+			.map((file) => `src/${file}`)
+			.filter((file) => pattern.test(file) && /\.(svelte|ts)$/.test(file) && !file.endsWith('.test.ts'))
+			.flatMap((file) =>
+				[...readFileSync(file, 'utf8').matchAll(/\bm\.(\w+_\w+)/g)].map(([, key = '']) => key)
+			);
+		expect(said.length).toBeGreaterThan(5);
+		expect([...new Set(said)].filter((key) => !(key in spanish))).toEqual([]);
 	});
 });

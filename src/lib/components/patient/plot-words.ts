@@ -37,13 +37,23 @@ const BAR_WORDS = {
 	}
 } as const;
 
-/** `stop over 158`; without the number where a line shows it. */
-export function barWords({ grade, up, including, value }: Bar, figure = true): string {
-	const words = BAR_WORDS[grade][up ? 'up' : 'down'][including ? 1 : 0]();
-	return figure ? `${words} ${value}` : words;
+const EDGE_WORDS = {
+	stop: { up: m.patient_limit_upper_stop, down: m.patient_limit_lower_stop },
+	caution: { up: m.patient_limit_upper_caution, down: m.patient_limit_lower_caution }
+} as const;
+
+/** `stop over 158` */
+export function barWords({ grade, up, including, value }: Bar): string {
+	return `${BAR_WORDS[grade][up ? 'up' : 'down'][including ? 1 : 0]()} ${value}`;
 }
 
-/** `1 Dec`: short enough to stand below a session on a phone. */
-export function tickDay(date: LocalDate, { locale }: Reader): string {
-	return day(date, locale).split(' ').slice(0, 2).join(' ');
+/** `upper stop`, beside a line whose height is its number. */
+export function edgeWords({ grade, up }: Bar): string {
+	return EDGE_WORDS[grade][up ? 'up' : 'down']();
+}
+
+/** `1 Dec`, or `1` alone: short enough to stand below a session on a phone. */
+export function tickDay(date: LocalDate, withMonth: boolean, { locale }: Reader): string {
+	const [dayOfMonth = '', month = ''] = day(date, locale).split(' ');
+	return withMonth ? `${dayOfMonth} ${month}` : dayOfMonth;
 }

@@ -8,7 +8,7 @@ import type { Nameboard } from '$lib/domain/episodes/views';
 import { dayAndClock, type Reader } from '$lib/format';
 import { localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
-import { barWords, MEASURE_WORDS, MOMENT_WORDS, tickDay, UNIT_WORDS } from './plot-words';
+import { barWords, edgeWords, MEASURE_WORDS, MOMENT_WORDS, tickDay, UNIT_WORDS } from './plot-words';
 import { OUTCOME_WORDS } from './words';
 
 export interface SessionPlot {
@@ -148,10 +148,12 @@ function gravest(grades: readonly ('stop' | 'caution')[]): PlotPoint['verdict'] 
 /** Each limit holds half way to the readings beside the one it judged; alike neighbours are one line. */
 function stretches(bars: readonly KeptBar[], placed: readonly Placed[]): PlotLimit[] {
 	const half = WIDTH / (placed.length - 1) / 2;
+	// What bars a start stands in the table: drawn, its far higher ceilings would flatten every curve.
+	const inEffort = bars.filter(({ reading }) => reading > 0);
 	const found: PlotLimit[] = [];
-	for (const bar of bars) {
+	for (const bar of inEffort) {
 		const x = placed[bar.reading]?.x ?? 0;
-		const label = barWords(bar, false);
+		const label = edgeWords(bar);
 		const before = found.find(
 			(each) => each.label === label && each.y === bar.value && each.to > x - half - 0.01
 		);
@@ -164,12 +166,14 @@ function stretches(bars: readonly KeptBar[], placed: readonly Placed[]): PlotLim
 	return found;
 }
 
-/** The day below each session, once for those of one day. */
+/** The day below each session, once for those of one day; the month only where it changes, for want of room. */
 function ticksOf(drawn: readonly SessionLine[], reader: Reader): PlotTick[] {
 	const days = drawn.map(({ startedAt }) => localDateOf(Date.parse(startedAt), reader.zone));
-	return days.flatMap((day, at) =>
-		day === days[at - 1] ? [] : [{ x: at + WIDTH / 2, label: tickDay(day, reader) }]
-	);
+	return days.flatMap((day, at) => {
+		const before = days[at - 1];
+		const label = tickDay(day, before?.slice(0, 7) !== day.slice(0, 7), reader);
+		return day === before ? [] : [{ x: at + WIDTH / 2, label }];
+	});
 }
 
 /** How each session ended, and each call for help since the first of them, where it falls between them. */
