@@ -43,7 +43,7 @@ for (const path of ['/', '/sign-in', '/loose-ends']) {
 }
 
 test(`no other page has more than ${MORE_KIB} KiB beyond it`, async ({ browser }) => {
-	test.setTimeout(120_000);
+	test.setTimeout(300_000);
 	const patient = `/patients/${episodeId}`;
 	const below = ['', '/clearances', '/sessions', '/refer', '/escalate', '/visits', '/level', '/limits'];
 	const pages = [...below.map((path) => patient + path), `/bedside/${episodeId}`, '/ward', '/visits'];

@@ -41,7 +41,7 @@ test('a menu, a combobox and a toast are used by keyboard alone', async ({ page 
 	await page.getByRole('menuitem', { name: 'Move to another bed' }).press('Enter');
 	await expect(page.getByText('Moved to T6.')).toBeVisible();
 
-	const passOn = page.getByRole('combobox', { name: /Pass on to/ });
+	const passOn = page.getByRole('combobox', { name: 'Pass on to', exact: true });
 	await passOn.fill('strom');
 	await page.keyboard.press('ArrowDown');
 	await page.keyboard.press('Enter');
