@@ -83,7 +83,10 @@ test('every part is reached with the tabulator key', async ({ page }) => {
 		await page.keyboard.press('Tab');
 		await page.evaluate(() => {
 			const focused = document.activeElement as HTMLElement | null;
-			focused?.setAttribute('data-reached', String(focused.matches(':focus-visible')));
+			// Past the last part the page itself has the focus.
+			if (focused !== document.body) {
+				focused?.setAttribute('data-reached', String(focused.matches(':focus-visible')));
+			}
 		});
 	}
 	expect(await left()).toEqual([]);
@@ -93,8 +96,9 @@ test('every part is reached with the tabulator key', async ({ page }) => {
 test('a table is narrowed by what is typed and ordered by its headings, and says when nothing is left', async ({
 	page
 }) => {
-	const rows = page.getByRole('region', { name: 'Patients' }).getByRole('rowheader');
-	await page.getByRole('button', { name: 'Day', exact: true }).press('Enter');
+	const table = page.getByRole('region', { name: 'Patients' });
+	const rows = table.getByRole('rowheader');
+	await table.getByRole('button', { name: 'Day', exact: true }).press('Enter');
 	await expect(rows).toHaveText(['T2', 'T5', 'T4']);
 	await page.getByLabel('Name or bed').fill('mar');
 	await expect(rows).toHaveText(['T4']);

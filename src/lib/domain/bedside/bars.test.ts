@@ -8,7 +8,7 @@ import type { Assessment } from './forms';
 import { limitsFor } from './limits/limits';
 import { isBeyond } from './rules/bar';
 import { anySession } from './testing/arbitrary';
-import type { REST} from './testing/sample';
+import type { REST } from './testing/sample';
 import { session } from './testing/sample';
 
 /** The rules whose limits are drawn, and the value each looks at. */
