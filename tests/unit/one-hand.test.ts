@@ -36,6 +36,8 @@ describe('forms', () => {
 	const OTHERS: Record<string, string> = {
 		'src/lib/components/thread/Composer.svelte': 'one line and a draft; over the same formState',
 		'src/lib/components/escalations/PhoneForm.svelte': 'a link without a sign-in; checked by linkDeed',
+		'src/lib/components/patient-page/OwnVisit.svelte':
+			'a link without a sign-in; checked by the deed of the page',
 		'src/lib/components/accounts/SignInAndSend.svelte':
 			'sends another form on as it was; checked by signInBody',
 		'src/lib/components/shell/MorePanel.svelte': 'signing out has nothing to check',
@@ -60,9 +62,10 @@ describe('forms', () => {
 		}
 	);
 
-	/** Where a posted form may be read: in the one wrapper, and by the two doors that need no sign-in. */
+	/** Where a posted form may be read: in the one wrapper, and by the doors that need no sign-in. */
 	const READERS = [
 		'src/lib/server/http/form-action.ts',
+		'src/routes/(patient)/p/[token]/+page.server.ts',
 		'src/routes/(phone)/t/[token]/+page.server.ts',
 		'src/routes/(public)/sign-in/send/+page.server.ts',
 		'src/routes/style/form/+page.server.ts'

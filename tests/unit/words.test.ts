@@ -124,7 +124,7 @@ describe('Spanish, as far as it has come', () => {
 		'%s has whole sentences for words of ours, each with the same blanks',
 		(file) => {
 			const [english, spanish] = [read(CATALOGUE, file), read(SPANISH, file)];
-			expect(Object.keys(spanish).length).toBeGreaterThan(40);
+			expect(Object.keys(spanish).length).toBeGreaterThan(20);
 			const other = Object.entries(spanish).filter(
 				([key, text]) =>
 					!(key in english) || blanks(text).join() !== blanks(english[key]).join() || text.trim() === ''
