@@ -14,7 +14,14 @@ function recorded(day: number, changes: Changes = {}, kept = true): SessionLine 
 	const startedAt = new Date(Date.UTC(2026, 2, day, 10)).toISOString();
 	return {
 		...{ id: `${day}`, startedAt, endedAt: startedAt, level: 3, outcome },
-		...{ limitSet: set, limitVersion: version, recordedBy: 'Orla Brannigan', recordedAt: startedAt },
+		...{
+			limitSet: set,
+			limitVersion: version,
+			recordedBy: 'Orla Brannigan',
+			recordedById: 'orla',
+			recordedAt: startedAt
+		},
+		amendments: [],
 		...{ activities: [], symptoms: [], deviation: null, findings, bars: kept ? barsOf(input) : null },
 		...{ before: input.before, during: input.during, after: input.after }
 	};
@@ -97,6 +104,13 @@ describe('what is drawn', () => {
 		expect(ticks.map(({ label }) => label)).toEqual(['4 Mar', '5', '6', '7', '8', '9']);
 	});
 
+	it('leaves a session out that was entered in error', () => {
+		const kind = 'entered-in-error' as const;
+		const amendment = { kind, at: '', by: 'Orla Brannigan', reason: 'Wrong patient.' };
+		const wrong = { ...recorded(2), amendments: [amendment as unknown as SessionLine['amendments'][number]] };
+		expect(sessionPlots([recorded(3), wrong, recorded(1)], [], READER).shown).toBe(2);
+	});
+
 	it('leaves a value out that was never measured', () => {
 		expect(sessionPlots([recorded(1)], [], READER).plots.map(({ key }) => key)).toEqual([
 			'hr',
@@ -108,7 +122,14 @@ describe('what is drawn', () => {
 
 	it('ticks each outcome, and the calls for help since the first session where they fell', () => {
 		const call = (day: number) => ({
-			...{ id: `e${day}`, grade: 'high' as const, state: 'settled', situation: 'Pale.', takenBy: null },
+			...{
+				id: `e${day}`,
+				grade: 'high' as const,
+				state: 'settled' as const,
+				situation: 'Pale.',
+				takenBy: null
+			},
+			notThere: false,
 			raisedAt: new Date(Date.UTC(2026, 2, day, 12)).toISOString()
 		});
 		const { events } = sessionPlots([recorded(3), recorded(2, rise(13))], [call(1), call(2)], READER);

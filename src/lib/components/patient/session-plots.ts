@@ -1,6 +1,7 @@
 /** The recorded sessions as plots: one for each value, over the sessions, against the limits that judged them. */
 import type { MarkShape, PlotEvent, PlotLimit, PlotPoint, PlotTick, Range } from '$lib/components/plot/plot';
 import { DRAWN, type Drawn, type KeptBar } from '$lib/domain/bedside/drawn';
+import { isInError } from '$lib/domain/bedside/amendments';
 import type { RuleId } from '$lib/domain/bedside/codes';
 import { isBeyond } from '$lib/domain/bedside/rules/bar';
 import type { SessionLine } from '$lib/domain/bedside/views';
@@ -59,7 +60,7 @@ const MARKED: Partial<Record<RuleId, readonly [measure: Drawn, end: 'most' | 'le
 type Placed = { moment: 'before' | 'during' | 'after'; value: number | null; x: number };
 
 /**
- * @param sessions newest first, as they are listed
+ * @param sessions newest first, as they are listed; one that was entered in error is not drawn
  * @param escalations of the same stay; those since the first session that is drawn become ticks
  */
 export function sessionPlots(
@@ -67,7 +68,10 @@ export function sessionPlots(
 	escalations: Nameboard['escalations'],
 	reader: Reader
 ): SessionPlots {
-	const drawn = sessions.slice(0, SESSIONS_DRAWN).toReversed();
+	const drawn = sessions
+		.filter((session) => !isInError(session))
+		.slice(0, SESSIONS_DRAWN)
+		.toReversed();
 	const plots = DRAWN.map((measure): SessionPlot => {
 		const parts = drawn.map((session, at) => partOf(session, at, measure, reader));
 		return {
