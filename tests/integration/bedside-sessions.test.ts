@@ -13,7 +13,7 @@ import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { getThread } from '$lib/server/threads/queries';
 import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
-import { sessionAt, sessionBody } from '../support/session';
+import { iso, sessionAt, sessionBody } from '../support/session';
 
 const hospital = await openHospital();
 let episodeId: string;
@@ -60,7 +60,7 @@ describe('a bedside session', () => {
 		[5 * MINUTE, true],
 		[5 * MINUTE + 1, false]
 	])('that begins %d ms ahead of the server: recorded %s', async (ahead, recorded) => {
-		const outcome = await record(sessionAt(hospital.now + ahead)).then(
+		const outcome = await record(sessionAt(hospital.now + ahead, 0)).then(
 			() => true,
 			(error: { extra: unknown }) => {
 				expect(error.extra).toMatchObject({ errors: [{ pointer: '/startedAt' }] });
@@ -68,6 +68,20 @@ describe('a bedside session', () => {
 			}
 		);
 		expect(outcome).toBe(recorded);
+	});
+
+	it.each([
+		[5 * MINUTE - 1, null],
+		[5 * MINUTE, null],
+		[5 * MINUTE + 1, '/endedAt']
+	])('that ends %d ms ahead of the server: refused at %s', async (ahead, pointer) => {
+		const endedAt = iso(hospital.now + ahead);
+		const refused = await record({ endedAt }).then(
+			() => null,
+			(error: { extra: { errors: { pointer: string; message: string }[] } }) => error.extra.errors[0]
+		);
+		expect(refused?.pointer ?? null).toBe(pointer);
+		expect(refused?.message ?? endedAt).toContain(endedAt);
 	});
 });
 

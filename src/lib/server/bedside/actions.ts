@@ -118,8 +118,11 @@ function clearanceNeeded(needed: ClearanceKind[]): Problem {
 }
 
 function refuseFuture(input: SessionBody, now: number): void {
-	if (parseRfc3339(input.startedAt) > now + FUTURE_MS) {
-		throw invalidField('/startedAt', `startedAt ${input.startedAt} lies in the future.`);
+	// The end too: the limits that judge are those of its moment.
+	for (const field of ['startedAt', 'endedAt'] as const) {
+		if (parseRfc3339(input[field]) > now + FUTURE_MS) {
+			throw invalidField(`/${field}`, `${field} ${input[field]} lies in the future.`);
+		}
 	}
 }
 
