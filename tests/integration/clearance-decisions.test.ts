@@ -74,6 +74,54 @@ describe('a decision by somebody who saw an earlier state', () => {
 	});
 });
 
+describe('a decision by somebody who does not say what they saw', () => {
+	const refused = (decidedBy: string, state: string, decidedAt: string) => ({
+		code: 'wrong-state',
+		status: 409,
+		extra: { state, decidedBy, decidedAt }
+	});
+	const AT = '2026-03-03T09:01:00.000Z';
+
+	it('at the same time as another: one answers, the other is told who was faster', async () => {
+		const id = await asked();
+		const given = [
+			[hospital.people.surgeon, 'given-with-limits', { limits: { helpers: 'two' } }],
+			[hospital.people.physician, 'given', {}]
+		] as const;
+		const told = await Promise.allSettled(
+			given.map(([person, , input]) => giveClearance(contextOf(person, hospital.now + 60_000), id, input))
+		);
+		const winner = told.findIndex(({ status }) => status === 'fulfilled');
+		const [person, state] = given[winner] ?? given[0];
+		expect(told[winner]).toMatchObject({ value: { result: { id, state } } });
+		expect(told[1 - winner]).toMatchObject({ reason: refused(person.name, state, AT) });
+		expect(await shown(id)).toMatchObject({ state, decidedBy: person.name, decidedAt: AT });
+	});
+
+	it.each([
+		['given', {}],
+		['given-with-limits', { limits: { helpers: 'two' } }]
+	] as const)('does not change what is %s; one who says so does', async (state, input) => {
+		const id = await asked();
+		await giveClearance(as('physician', 60), id, input);
+		const again = (decidedAt?: string) =>
+			giveClearance(as('surgeon', 90), id, { limits: { helpers: 'one' } }, { decidedAt });
+		const { name } = hospital.people.physician;
+		await expect(again()).rejects.toMatchObject(refused(name, state, AT));
+		await expect(again('2026-03-03T09:00:59.999Z')).rejects.toMatchObject(refused(name, state, AT));
+		await expect(again('a minute past nine')).rejects.toMatchObject(refused(name, state, AT));
+		expect((await again('2026-03-03T10:01:00+01:00')).result.state).toBe('given-with-limits');
+	});
+
+	it('gives what is on hold, and takes back what was given', async () => {
+		const id = await asked();
+		await giveClearance(as('physician', 60), id, {});
+		await holdClearance(as('surgeon', 70), id, 'Fell yesterday.');
+		expect((await giveClearance(as('surgeon', 80), id, {})).result.state).toBe('given');
+		expect((await withdrawClearance(as('surgeon', 90), id, 'Click felt.')).result.state).toBe('withdrawn');
+	});
+});
+
 describe('what a clearance permits now', () => {
 	const today = async (seconds = 0) =>
 		getNameboard(db(), hospital.people.nurse, episodeId, hospital.now + seconds * 1000);

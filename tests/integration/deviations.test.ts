@@ -80,7 +80,12 @@ describe('arm exercise', () => {
 	it('is held to the limit that was in force then', async () => {
 		const id = await asked();
 		await giveClearance(as('surgeon', GIVEN), id, { limits: { maxElevationDeg: 60 } });
-		await giveClearance(as('surgeon', WITHDRAWN), id, { limits: { maxElevationDeg: 120 } });
+		await giveClearance(
+			as('surgeon', WITHDRAWN),
+			id,
+			{ limits: { maxElevationDeg: 120 } },
+			{ decidedAt: new Date(hospital.now + GIVEN).toISOString() }
+		);
 		const rules = async (startedAt: number) => {
 			const { result } = await recordSession(as('therapist'), episodeId, arms(startedAt));
 			return result.findings.filter(({ rule }) => rule === 'arm-elevation').map(({ limit }) => limit);

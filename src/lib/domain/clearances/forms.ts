@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { instant } from '../bedside/form-fields';
 import { CLEARANCE_KINDS, type EscalationState, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
 import type { Precautions } from '../episodes/precautions';
@@ -34,17 +35,24 @@ export const shownMarks = z
 	.string()
 	.max(20_000, 'shown is at most 20000 characters, as the clearance gave it.');
 
+/**
+ * The decision that the decider goes from, from `decidedAt` of the clearance; null for none. When another has come
+ * between, theirs is refused. Needed to give with other limits what was given already.
+ */
+const decidedAt = instant('decidedAt').nullable().optional();
+
 export const giveClearanceBody = z.strictObject({
 	limits: clearanceLimits.optional(),
 	reviewOn: z.iso.date('The review day is a date like 2026-12-14.').optional(),
 	note: text('The note', 1000).optional(),
-	shown: shownMarks.optional()
+	shown: shownMarks.optional(),
+	decidedAt
 });
 
 export const reasonBody = z.strictObject({ reason: reason('The reason') });
 
 /** A decision that is not a yes: withhold, hold, withdraw. */
-export const refuseClearanceBody = reasonBody.extend({ shown: shownMarks.optional() });
+export const refuseClearanceBody = reasonBody.extend({ shown: shownMarks.optional(), decidedAt });
 
 /** A question to whoever asked, instead of a decision. */
 export const askBackBody = z.strictObject({ question: text('question', 1000) });

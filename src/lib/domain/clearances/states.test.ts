@@ -1,6 +1,48 @@
 import { describe, expect, it } from 'vitest';
-import { CLEARANCE_STATES } from '../core/codes';
-import { isInForce, stateOn } from './states';
+import { CLEARANCE_STATES, type ClearanceState } from '../core/codes';
+import { isInForce, mustSayWhatStood, nextClearanceState, stateOn, type ClearanceMove } from './states';
+
+/** What each state allows, in the order of the columns: give, ask back, withhold, hold, withdraw. */
+const COLUMNS: readonly ClearanceMove[] = ['give', 'ask-back', 'withhold', 'hold', 'withdraw'];
+const TABLE: Record<ClearanceState, readonly (ClearanceState | null)[]> = {
+	asked: ['given', 'asked', 'withheld', null, 'withdrawn'],
+	given: ['given', null, null, 'on-hold', 'withdrawn'],
+	'given-with-limits': ['given', null, null, 'on-hold', 'withdrawn'],
+	withheld: [null, null, null, null, null],
+	'on-hold': ['given', null, 'withheld', null, 'withdrawn'],
+	withdrawn: [null, null, null, null, null],
+	lapsed: [null, null, null, null, null]
+};
+const ROWS = CLEARANCE_STATES.flatMap((state) =>
+	COLUMNS.map((move, column) => [state, move, TABLE[state][column] ?? null] as const)
+);
+
+describe('nextClearanceState', () => {
+	it.each(ROWS)('%s: %s makes it %s', (state, move, expected) => {
+		if (expected === null) {
+			expect(() => nextClearanceState(state, move)).toThrow(
+				expect.objectContaining({ code: 'wrong-state', status: 409, extra: { state } })
+			);
+		} else {
+			expect(nextClearanceState(state, move)).toBe(expected);
+		}
+	});
+
+	it.each([
+		[{}, 'given'],
+		[null, 'given'],
+		[{ maxElevationDeg: 0 }, 'given-with-limits']
+	] as const)('given with %o is %s', (limits, expected) => {
+		expect(nextClearanceState('asked', 'give', limits)).toBe(expected);
+	});
+});
+
+describe('mustSayWhatStood', () => {
+	it.each(ROWS)('%s: %s', (state, move) => {
+		const changesGiven = move === 'give' && state.startsWith('given');
+		expect(mustSayWhatStood(state, move)).toBe(changesGiven);
+	});
+});
 
 describe('stateOn', () => {
 	it.each([

@@ -20,7 +20,7 @@ const ALLOWED: Record<ClearanceMove, readonly ClearanceState[]> = {
 
 /**
  * The state after a move.
- * @throws Problem `already-given` when an ask is decided a second time, else `wrong-state` with the state
+ * @throws Problem `wrong-state` with the state that does not allow it
  */
 export function nextClearanceState(
 	state: ClearanceState,
@@ -42,6 +42,14 @@ export function nextClearanceState(
 		case 'withdraw':
 			return 'withdrawn';
 	}
+}
+
+/**
+ * Whether a move must say which decision it goes from: other limits for what was given are a change of somebody's
+ * decision, and two first decisions at once must not pass for one.
+ */
+export function mustSayWhatStood(state: ClearanceState, move: ClearanceMove): boolean {
+	return move === 'give' && (state === 'given' || state === 'given-with-limits');
 }
 
 /** Whether a decision can be made on it: first, again with other limits, or to hold or take back. */

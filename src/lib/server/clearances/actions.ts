@@ -8,10 +8,15 @@ import type {
 	giveClearanceBody
 } from '$lib/domain/clearances/forms';
 import { newsSince } from '$lib/domain/clearances/news';
-import { nextClearanceState, stateOn, type DecidingMove } from '$lib/domain/clearances/states';
+import {
+	mustSayWhatStood,
+	nextClearanceState,
+	stateOn,
+	type DecidingMove
+} from '$lib/domain/clearances/states';
 import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
-import { toRfc3339 } from '$lib/domain/core/instant';
+import { isRfc3339, parseRfc3339, toRfc3339 } from '$lib/domain/core/instant';
 import { newsWords } from '$lib/i18n/clearance-news';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessClearance, accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
@@ -55,7 +60,10 @@ function second(open: { id: string; state: ClearanceState }): Problem {
 		: new Problem('already-given', `This clearance is ${open.state}; it need not be asked again.`, facts);
 }
 
-/** What somebody had in view when they decided; what is left out is not checked. */
+/**
+ * What somebody had in view when they decided. What is left out is not checked, but for the decision before when
+ * what was given is given with other limits.
+ */
 export interface Seen {
 	/**
 	 * The decision before theirs: its instant in RFC 3339, null for none. When another has come between, theirs is
@@ -120,8 +128,9 @@ function decide(
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
 		const { clearance, episode } = await accessForMove(tx, context, id, move);
-		await refuseSlower(tx, clearance, seen.decidedAt);
-		const state = nextClearanceState(stateOn(clearance, hospitalToday(context.now)), move, decision.limits);
+		const stood = stateOn(clearance, hospitalToday(context.now));
+		await refuseSlower(tx, clearance, seen.decidedAt, mustSayWhatStood(stood, move));
+		const state = nextClearanceState(stood, move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
 		const reviewOn = decision.reviewOn === undefined ? clearance.reviewOn : decision.reviewOn;
@@ -185,20 +194,32 @@ function refuseUnseen(
 	}
 }
 
-async function refuseSlower(tx: Tx, clearance: ClearanceRow, seen: Seen['decidedAt']): Promise<void> {
-	const decidedAt = clearance.decidedAt === null ? null : toRfc3339(clearance.decidedAt);
-	if (seen === undefined || seen === decidedAt) {
+/** Whether the decision on record is the one that they go by; an instant is the same however it is written. */
+function isSeen({ decidedAt }: ClearanceRow, seen: Seen['decidedAt']): boolean {
+	if (seen === undefined || seen === null) {
+		return seen === undefined || decidedAt === null;
+	}
+	return isRfc3339(seen) && parseRfc3339(seen) === decidedAt;
+}
+
+async function refuseSlower(
+	tx: Tx,
+	clearance: ClearanceRow,
+	seen: Seen['decidedAt'],
+	mustSay: boolean
+): Promise<void> {
+	if (isSeen(clearance, seen) && !(mustSay && seen === undefined)) {
 		return;
 	}
+	const { state, decidedBy, decidedAt } = clearance;
 	const [decider] = await tx
 		.select({ name: users.name })
 		.from(users)
-		.where(eq(users.id, clearance.decidedBy ?? ''));
-	const { state } = clearance;
+		.where(eq(users.id, decidedBy ?? ''));
 	throw new Problem('wrong-state', `${decider?.name ?? 'Somebody'} was faster: the clearance is ${state}.`, {
 		state,
 		decidedBy: decider?.name ?? null,
-		decidedAt
+		decidedAt: decidedAt === null ? null : toRfc3339(decidedAt)
 	});
 }
 

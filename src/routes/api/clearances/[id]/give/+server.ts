@@ -6,6 +6,6 @@ import { idParam } from '$lib/server/http/param';
 export const POST = writing({
 	permission: 'clearance.decide',
 	body: giveClearanceBody,
-	run: (context, { shown, ...input }, event) =>
-		giveClearance(context, idParam(event), input, { evidence: shown })
+	run: (context, { shown, decidedAt, ...input }, event) =>
+		giveClearance(context, idParam(event), input, { evidence: shown, decidedAt })
 });

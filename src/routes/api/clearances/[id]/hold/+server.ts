@@ -6,6 +6,6 @@ import { idParam } from '$lib/server/http/param';
 export const POST = writing({
 	permission: 'clearance.decide',
 	body: refuseClearanceBody,
-	run: (context, { reason, shown }, event) =>
-		holdClearance(context, idParam(event), reason, { evidence: shown })
+	run: (context, { reason, shown, decidedAt }, event) =>
+		holdClearance(context, idParam(event), reason, { evidence: shown, decidedAt })
 });

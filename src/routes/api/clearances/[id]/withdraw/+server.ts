@@ -6,6 +6,6 @@ import { idParam } from '$lib/server/http/param';
 export const POST = writing({
 	permission: 'thread.read',
 	body: refuseClearanceBody,
-	run: (context, { reason, shown }, event) =>
-		withdrawClearance(context, idParam(event), reason, { evidence: shown })
+	run: (context, { reason, shown, decidedAt }, event) =>
+		withdrawClearance(context, idParam(event), reason, { evidence: shown, decidedAt })
 });

@@ -6,6 +6,6 @@ import { idParam } from '$lib/server/http/param';
 export const POST = writing({
 	permission: 'clearance.decide',
 	body: refuseClearanceBody,
-	run: (context, { reason, shown }, event) =>
-		withholdClearance(context, idParam(event), reason, { evidence: shown })
+	run: (context, { reason, shown, decidedAt }, event) =>
+		withholdClearance(context, idParam(event), reason, { evidence: shown, decidedAt })
 });
