@@ -14,7 +14,7 @@ import {
 } from './src/lib/components/tokens';
 
 /** One CSS variable per colour: `--woad: #2c5a88`. */
-function variables(palette: Partial<Palette>): Record<string, string> {
+function variables(palette: Palette): Record<string, string> {
 	return Object.fromEntries(Object.entries(palette).map(([name, value]) => [`--${name}`, value]));
 }
 

@@ -84,21 +84,30 @@ export const NIGHT: Palette = {
 export const THEMES = { day: DAY, night: NIGHT } as const;
 export type ThemeName = keyof typeof THEMES;
 
-/** System colours for people whose device forces its own. Marks that mean something keep their shape and word. */
-export const FORCED: Partial<Palette> = {
+/**
+ * System colours for people whose device forces its own. Marks that mean something keep their shape and word. All
+ * of them stand here: browsers force text, edges and grounds, but leave what an SVG is painted with alone.
+ */
+export const FORCED: Palette = {
 	canvas: 'Canvas',
 	raised: 'Canvas',
 	sunk: 'Canvas',
 	rule: 'CanvasText',
 	ink: 'CanvasText',
 	soft: 'CanvasText',
+	hemp: 'CanvasText',
 	'hemp-ink': 'CanvasText',
+	woad: 'CanvasText',
+	moss: 'CanvasText',
+	heather: 'CanvasText',
 	high: 'CanvasText',
 	medium: 'CanvasText',
 	low: 'CanvasText',
 	'high-ground': 'Canvas',
 	'medium-ground': 'Canvas',
-	'low-ground': 'Canvas'
+	'low-ground': 'Canvas',
+	shade: 'Canvas',
+	yarn: 'Canvas'
 };
 
 /** Colours that text is written in, on each of the grounds it may stand on. */
