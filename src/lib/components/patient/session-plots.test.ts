@@ -108,7 +108,8 @@ describe('what is drawn', () => {
 		const kind = 'entered-in-error' as const;
 		const amendment = { kind, at: '', by: 'Orla Brannigan', reason: 'Wrong patient.' };
 		const wrong = { ...recorded(2), amendments: [amendment as unknown as SessionLine['amendments'][number]] };
-		expect(sessionPlots([recorded(3), wrong, recorded(1)], [], READER).shown).toBe(2);
+		const { shown, all } = sessionPlots([recorded(3), wrong, recorded(1)], [], READER);
+		expect({ shown, all }).toEqual({ shown: 2, all: 2 });
 	});
 
 	it('leaves a value out that was never measured', () => {

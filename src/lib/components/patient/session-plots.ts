@@ -1,5 +1,6 @@
 /** The recorded sessions as plots: one for each value, over the sessions, against the limits that judged them. */
 import type { MarkShape, PlotEvent, PlotLimit, PlotPoint, PlotTick, Range } from '$lib/components/plot/plot';
+import { GRADE_WORDS } from '$lib/components/ui/grades';
 import { DRAWN, type Drawn, type KeptBar } from '$lib/domain/bedside/drawn';
 import { isInError } from '$lib/domain/bedside/amendments';
 import type { RuleId } from '$lib/domain/bedside/codes';
@@ -28,6 +29,8 @@ export interface SessionPlots {
 	events: PlotEvent[];
 	/** How many sessions are drawn. */
 	shown: number;
+	/** How many could be: one that was entered in error counts for nothing. */
+	all: number;
 }
 
 /** More would not leave a finger's width between them on a phone. */
@@ -68,10 +71,8 @@ export function sessionPlots(
 	escalations: Nameboard['escalations'],
 	reader: Reader
 ): SessionPlots {
-	const drawn = sessions
-		.filter((session) => !isInError(session))
-		.slice(0, SESSIONS_DRAWN)
-		.toReversed();
+	const standing = sessions.filter((session) => !isInError(session));
+	const drawn = standing.slice(0, SESSIONS_DRAWN).toReversed();
 	const plots = DRAWN.map((measure): SessionPlot => {
 		const parts = drawn.map((session, at) => partOf(session, at, measure, reader));
 		return {
@@ -88,7 +89,8 @@ export function sessionPlots(
 		across: { from: -0.25, to: Math.max(drawn.length - 1, 0) + WIDTH + 0.25 },
 		ticks: ticksOf(drawn, reader),
 		events: eventsOf(drawn, escalations, reader),
-		shown: drawn.length
+		shown: drawn.length,
+		all: standing.length
 	};
 }
 
@@ -195,7 +197,7 @@ function eventsOf(
 	const calls = escalations.flatMap(({ raisedAt, grade }) => {
 		const at = Date.parse(raisedAt);
 		const after = starts.filter((start) => start <= at).length - 1;
-		const words = m.patient_plots_escalation({ grade });
+		const words = m.patient_plots_escalation({ grade: GRADE_WORDS[grade]().toLowerCase() });
 		return after < 0 ? [] : [{ at, x: after + WIDTH + 0.15, words }];
 	});
 	return [...outcomes, ...calls]
