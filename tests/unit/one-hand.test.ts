@@ -42,6 +42,8 @@ describe('forms', () => {
 			'sends another form on as it was; checked by signInBody',
 		'src/lib/components/shell/MorePanel.svelte': 'signing out has nothing to check',
 		'src/lib/components/visits/BookVisits.svelte': 'sent as JSON; checked by bookVisitsBody',
+		'src/lib/components/visits/CloseDay.svelte': 'sent as JSON; checked by closedDayBody',
+		'src/lib/components/visits/RescheduleSheet.svelte': 'sent as JSON; checked by rescheduleBody',
 		'src/lib/components/bedside/Bedside.svelte': 'kept on the device and sent as JSON; checked by sessionBody'
 	};
 	const drawn = () =>
@@ -130,6 +132,33 @@ describe('looks', () => {
 			(sourceOf(file).match(OWN) ?? []).map((each) => `${file}: ${each}`)
 		);
 		expect(own).toEqual([]);
+	});
+
+	const OUTSIDE_UI = (file: string) => !file.startsWith('src/lib/components/ui/');
+
+	it('underline by the one link', () => {
+		expect(
+			looked().filter((file) => OUTSIDE_UI(file) && /(?<![\w/])underline\b/.test(sourceOf(file)))
+		).toEqual([]);
+	});
+
+	/** Controls that one sees and that are not of `components/ui`, each with its reason. */
+	const OWN_CONTROLS: Record<string, string> = {
+		'src/lib/components/escalations/GradeChoice.svelte':
+			'a radio button that a whole row with its mark and meaning covers; look and ring are those of Choice'
+	};
+
+	it('draw the control that one types into in one place', () => {
+		const seen = files('.svelte').filter((file) => {
+			let own = false;
+			walk(parse(sourceOf(file), { modern: true }).fragment, (element) => {
+				const said = sourceOf(file).slice(element.start, element.end).split('>')[0] ?? '';
+				own ||=
+					['input', 'select', 'textarea'].includes(element.name) && !/type="hidden"|\shidden\b/.test(said);
+			});
+			return own && OUTSIDE_UI(file);
+		});
+		expect(seen.toSorted()).toEqual(Object.keys(OWN_CONTROLS).toSorted());
 	});
 
 	it('are not written twice: a long run of classes stands in one place', () => {

@@ -10,3 +10,7 @@ export const CONTROL_UNIT =
 
 /** A radio button that covers the words it belongs to: the whole of them is pressed, and it takes the focus. */
 export const COVERING_RADIO = 'absolute inset-0 cursor-pointer appearance-none rounded outline-none';
+
+/** The ring of focus around the words that such a radio button covers. */
+export const COVERED_FOCUS =
+	'has-focus-visible:outline-ink has-focus-visible:outline-3 has-focus-visible:outline-offset-2';

@@ -1,6 +1,21 @@
 /** The look of what reads as text and is pressed: a link, and the word that opens more. */
 const TEXT = 'underline decoration-soft underline-offset-4 hover:decoration-ink hover:decoration-2';
+const QUIET = 'decoration-soft underline-offset-4 hover:underline hover:decoration-ink';
+const ROW = 'min-h-touch inline-flex items-center';
 
-/** Within a sentence, or in a row of its own as tall as a finger. */
-export const LINK = { text: TEXT, row: `${TEXT} min-h-touch inline-flex items-center` } as const;
+/**
+ * `text` stands within a sentence, `row` by itself and as tall as a finger. `quiet` is for a name or a heading whose
+ * place already says that it leads on: its line comes when it is pointed at. `place` is one of a list of places, the
+ * one where the reader is underlined in hemp.
+ */
+export const LINK = {
+	text: TEXT,
+	row: `${TEXT} ${ROW}`,
+	quiet: QUIET,
+	'quiet-row': `${QUIET} ${ROW}`,
+	place: `${QUIET} ${ROW} gap-3 aria-[current]:font-black aria-[current]:underline aria-[current]:decoration-hemp aria-[current]:decoration-3`
+} as const;
 export type LinkVariant = keyof typeof LINK;
+
+/** The words that are underlined within a `group` that is pressed as a whole. */
+export const LINK_WORDS = 'decoration-soft underline-offset-4 group-hover:underline';
