@@ -10,10 +10,13 @@ const drawn = (shape: MarkShape, verdict: PlotPoint['verdict']) =>
 		.replace(/ class="[^"]*"/g, '');
 
 describe('the marks of a point', () => {
-	it.each(['disc', 'ring', 'square'] as const)('tell stop, caution and neither apart by shape: %s', (shape) => {
-		const marks = ([null, 'caution', 'stop'] as const).map((verdict) => drawn(shape, verdict));
-		expect(new Set(marks).size).toBe(3);
-	});
+	it.each(['disc', 'ring', 'square'] as const)(
+		'tell stop, caution and neither apart by shape: %s',
+		(shape) => {
+			const marks = ([null, 'caution', 'stop'] as const).map((verdict) => drawn(shape, verdict));
+			expect(new Set(marks).size).toBe(3);
+		}
+	);
 
 	it('are no alarm shape: an escalation alone has the triangle and the diamond', () => {
 		expect(drawn('disc', 'stop')).not.toContain('path');

@@ -2,6 +2,7 @@ import type { IconDrawing } from '$lib/components/ui/icon';
 import BedDouble from '@lucide/svelte/icons/bed-double';
 import BookOpen from '@lucide/svelte/icons/book-open';
 import CalendarDays from '@lucide/svelte/icons/calendar-days';
+import CalendarOff from '@lucide/svelte/icons/calendar-off';
 import ListChecks from '@lucide/svelte/icons/list-checks';
 import PhoneCall from '@lucide/svelte/icons/phone-call';
 import Ruler from '@lucide/svelte/icons/ruler';
@@ -58,7 +59,7 @@ export function morePlaces(role: Role, demo: boolean): Place[] {
 		...(role === 'admin'
 			? [
 					place('limits', routes.adminLimits(), m.common_place_limits()),
-					place('closed-days', routes.closedDays(), m.visits_closed_title())
+					place('closed-days', routes.closedDays(), m.common_place_closed_days())
 				]
 			: []),
 		...(role === 'admin' ? [] : [place('account', routes.account(), m.common_place_account())]),
@@ -85,6 +86,7 @@ const ICONS: Record<PlaceKey, IconDrawing> = {
 	rules: BookOpen,
 	account: UserRound,
 	accounts: UsersRound,
+	'closed-days': CalendarOff,
 	limits: Ruler,
 	phones: Smartphone
 };
