@@ -40,10 +40,7 @@ describe('rising work', () => {
 	const stages = (first: string, second: string) =>
 		open({
 			before: typed({ sbp: '140', dbp: '80', hr: '80' }),
-			during: [
-				typed({ sbp: '150', hr: '110', work: first }),
-				typed({ sbp: '138', hr: '96', work: second })
-			]
+			during: [typed({ sbp: '150', hr: '110', work: first }), typed({ sbp: '138', hr: '96', work: second })]
 		}).verdict.findings.map(({ rule, grade }) => `${rule} ${grade}`);
 
 	it.each([

@@ -81,7 +81,8 @@ export const raiseForm = z
 		/** In how many minutes somebody is needed at the latest; a page knows no instants before it is sent. */
 		neededInMinutes: minutes('The time until somebody is needed', 24 * 60).optional(),
 		toldInPerson: z.string().max(64).optional(),
-		sessionId: raiseBody.shape.sessionId
+		sessionId: raiseBody.shape.sessionId,
+		threadId: raiseBody.shape.threadId
 	})
 	.superRefine(({ grade, neededInMinutes }, context) => {
 		if (grade === 'high' && neededInMinutes === undefined) {

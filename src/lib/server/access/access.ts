@@ -85,32 +85,6 @@ export async function accessVisit(db: Reader, person: Person, id: string, permis
 	return allowed(person, row, row?.episode.unitId, permission, 'visit');
 }
 
-/** The thread that a new deed is written into: the named one, which must be of this episode, or the newest open one. */
-export async function threadForDeed(
-	db: Reader,
-	episodeId: string,
-	threadId: string | undefined
-): Promise<string | null> {
-	if (threadId !== undefined) {
-		const [named] = await db
-			.select({ id: threads.id })
-			.from(threads)
-			.where(and(eq(threads.id, threadId), eq(threads.episodeId, episodeId)));
-		if (!named) {
-			throw notFound('thread');
-		}
-		return named.id;
-	}
-	const open = await db
-		.select({ id: threads.id, state: referrals.state })
-		.from(threads)
-		.innerJoin(referrals, eq(referrals.id, threads.referralId))
-		.where(eq(threads.episodeId, episodeId))
-		.orderBy(referrals.askedAt);
-	const usable = open.filter((t) => t.state === 'accepted' || t.state === 'asked');
-	return (usable.findLast((t) => t.state === 'accepted') ?? usable.at(-1))?.id ?? null;
-}
-
 function allowed<T>(
 	person: Person,
 	row: T | undefined,

@@ -9,7 +9,8 @@ import { lackingClearance } from '$lib/domain/bedside/rules/clearances';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
-import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
+import { accessEpisode, type EpisodeRow } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import { factsDuring, type EpisodeFacts } from '../episodes/facts';
 import { newId } from '../ids';
@@ -59,7 +60,7 @@ export function recordSession(
 		const limits = limitsThatJudge(judged.context, episode, layers);
 		const verdict = assess(judged, limits);
 		const of = { id: newId(), episodeId, operationId: facts.operation?.id ?? null };
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const kept = { ...input, context: judged.context };
 		await insertSession(tx, context, of, kept, verdict, barsOf(judged, limits));
 		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);

@@ -2,7 +2,8 @@ import { and, eq } from 'drizzle-orm';
 import { isInError, type AmendSession } from '$lib/domain/bedside/amendments';
 import { invalidField, Problem } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import { bedsideSessions, sessionAmendments } from '../db/schema';
 import { newId } from '../ids';
@@ -43,7 +44,7 @@ export function amendSession(
 		await tx
 			.insert(sessionAmendments)
 			.values({ id, sessionId, kind, body, byId: context.actor.id, at: context.now });
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const words = kind === 'amended' ? m.bedside_entry_amended({ body }) : m.bedside_entry_in_error({ body });
 		return {
 			result: { id },

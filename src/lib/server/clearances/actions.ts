@@ -19,7 +19,8 @@ import { Problem, invalidField } from '$lib/domain/core/errors';
 import { isRfc3339, parseRfc3339, toRfc3339 } from '$lib/domain/core/instant';
 import { newsWords } from '$lib/i18n/clearance-news';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessClearance, accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
+import { accessClearance, accessEpisode, type EpisodeRow } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { clearances, users } from '../db/schema';
@@ -48,7 +49,7 @@ export function askClearance(
 		if (open) {
 			throw second(open);
 		}
-		const threadId = await threadForDeed(tx, episodeId, input.threadId);
+		const threadId = await threadForDeed(tx, episodeId, context.actor, input.threadId);
 		return after(lapsed, await insertAsk(tx, context, { episode, facts, threadId }, input));
 	});
 }

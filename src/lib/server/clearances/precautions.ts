@@ -1,7 +1,8 @@
 import { Problem } from '$lib/domain/core/errors';
 import { daysBetween, localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import { env } from '../env';
 import { factsOfOne } from '../episodes/facts';
@@ -35,7 +36,7 @@ export function reviewPrecautions(
 		const { zone } = env().hospital;
 		const days = daysBetween(localDateOf(operation.operatedAt, zone), localDateOf(context.now, zone));
 		const question = m.clearances_precautions_question({ weeks: Math.floor(days / WEEK) });
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		return after(lapsed, await insertAsk(tx, context, { episode, facts, threadId }, { kind, question }));
 	});
 }

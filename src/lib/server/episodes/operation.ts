@@ -5,7 +5,8 @@ import { parseRfc3339, toRfc3339 } from '$lib/domain/core/instant';
 import { localDateOf } from '$lib/domain/core/time';
 import { OPERATION_FIELDS, type Correction, type RecordOperation } from '$lib/domain/episodes/operation';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import { resolveSurgeon } from '../access/units';
 import type { PersonContext } from '../context';
 import type { Reader, Tx } from '../db';
@@ -43,7 +44,7 @@ export function recordOperation(
 		} else {
 			await tx.insert(operations).values({ id, episodeId, ...values, createdAt: context.now });
 		}
-		return told(tx, episodeId, id, values, corrects !== undefined);
+		return told(tx, context, episodeId, id, values, corrects !== undefined);
 	});
 }
 
@@ -103,12 +104,13 @@ function textOf(value: string | number | null): string | null {
 
 async function told(
 	tx: Tx,
+	context: PersonContext,
 	episodeId: string,
 	id: string,
 	{ procedure, operatedAt }: Values,
 	corrected: boolean
 ): Promise<Change<{ id: string }>> {
-	const threadId = await threadForDeed(tx, episodeId, undefined);
+	const threadId = await threadForDeed(tx, episodeId, context.actor);
 	const words = { procedure, day: localDateOf(operatedAt, env().hospital.zone) };
 	const body = corrected ? m.patient_entry_operation_corrected(words) : m.patient_entry_operation(words);
 	return {

@@ -4,7 +4,8 @@ import { invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
 import { chainOf, IN_PERSON_MS, type ChainStep } from '$lib/domain/escalations/chain';
 import type { RaiseInput } from '$lib/domain/escalations/forms';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { bedsideSessions, escalations, users } from '../db/schema';
@@ -38,7 +39,7 @@ export function raiseEscalation(
 	return write(context, 'escalation.raise', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'escalation.raise');
 		await checkReferences(tx, episodeId, input);
-		const threadId = await threadForDeed(tx, episodeId, input.threadId);
+		const threadId = await threadForDeed(tx, episodeId, context.actor, input.threadId);
 		const open = await takesIn(tx, episodeId, input.grade);
 		return open
 			? addFacts(tx, context, open, input, threadId)

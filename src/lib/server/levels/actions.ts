@@ -5,7 +5,8 @@ import type { Level } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import type { DecideLevel } from '$lib/domain/levels/forms';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
+import { accessEpisode, type EpisodeRow } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, levelDecisions, signOffs } from '../db/schema';
@@ -86,7 +87,7 @@ export async function make(
 		.update(episodes)
 		.set({ level: levels.today, levelReached: levels.reached })
 		.where(eq(episodes.id, episode.id));
-	const threadId = await threadForDeed(tx, episode.id, undefined);
+	const threadId = await threadForDeed(tx, episode.id, context.actor);
 	const body = m.levels_entry({ from, to, reason: reason ?? '' }).trim();
 	const detail = { from, to, signed: signedBy !== null };
 	return {

@@ -5,7 +5,8 @@ import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
 import { addDays, localDateOf } from '$lib/domain/core/time';
 import type { SetPatientLimit } from '$lib/domain/limits/forms';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed, type EpisodeRow } from '../access/access';
+import { accessEpisode, type EpisodeRow } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { patientLimits } from '../db/schema';
@@ -40,7 +41,7 @@ export function setPatientLimit(
 		});
 		const body = m.limits_entry_set({ key, value, was: was ?? m.limits_off(), until: untilOn, reason });
 		const detail = { key, value, was, untilOn, version };
-		return following(tx, episodeId, { id, version }, body, 'limit.set-for-patient', detail);
+		return following(tx, context, episodeId, { id, version }, body, 'limit.set-for-patient', detail);
 	});
 }
 
@@ -62,7 +63,10 @@ export function endPatientLimit(context: PersonContext, id: string): Promise<Wri
 		}
 		const { key, value, version, episodeId } = limit;
 		const body = m.limits_entry_ended({ key, value });
-		return following(tx, episodeId, { id, version }, body, 'limit.ended-for-patient', { key, version });
+		return following(tx, context, episodeId, { id, version }, body, 'limit.ended-for-patient', {
+			key,
+			version
+		});
 	});
 }
 
@@ -109,13 +113,14 @@ async function nextVersion(tx: Tx, episodeId: string): Promise<number> {
 
 async function following(
 	tx: Tx,
+	context: PersonContext,
 	episodeId: string,
 	result: Numbered,
 	body: string,
 	action: 'limit.set-for-patient' | 'limit.ended-for-patient',
 	detail: Record<string, string | number | null>
 ): Promise<Change<Numbered>> {
-	const threadId = await threadForDeed(tx, episodeId, undefined);
+	const threadId = await threadForDeed(tx, episodeId, context.actor);
 	return {
 		result,
 		audit: { action, objectKind: 'limit', objectId: result.id, episodeId, detail },

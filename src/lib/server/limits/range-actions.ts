@@ -3,7 +3,8 @@ import { Problem } from '$lib/domain/core/errors';
 import type { PrescribeRange } from '$lib/domain/limits/forms';
 import { rangeWords } from '$lib/i18n/ranges';
 import { m } from '$lib/i18n/paraglide/messages';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { prescribedRanges } from '../db/schema';
@@ -65,7 +66,7 @@ async function insert(
 	const [id, version] = [newId(), (last?.version ?? 0) + 1];
 	const by = { prescribedBy: context.actor.id, prescribedAt: context.now };
 	await tx.insert(prescribedRanges).values({ id, episodeId, version, ...row, ...by });
-	const threadId = await threadForDeed(tx, episodeId, undefined);
+	const threadId = await threadForDeed(tx, episodeId, context.actor);
 	const { note: _note, ...figures } = row;
 	return {
 		result: { id, version },

@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { Problem } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
-import { threadForDeed } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import { accessInboundText, accessMessage } from '../access/messages';
 import type { PersonContext } from '../context';
 import { inboundMessages, outbox } from '../db/schema';
@@ -42,7 +42,7 @@ export function settleInbound(
 			.update(inboundMessages)
 			.set({ handledAt: context.now, handledBy: context.actor.id, handledNote: note })
 			.where(eq(inboundMessages.id, id));
-		const threadId = episodeId === null ? null : await threadForDeed(tx, episodeId, undefined);
+		const threadId = episodeId === null ? null : await threadForDeed(tx, episodeId, context.actor);
 		const body = m.home_entry_text({ text: text.body, note });
 		return {
 			...settled('inbound', id, episodeId),

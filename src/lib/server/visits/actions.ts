@@ -4,7 +4,8 @@ import type { VisitLine } from '$lib/domain/episodes/views';
 import type { BookVisits } from '$lib/domain/visits/forms';
 import type { PlannedVisit } from '$lib/domain/visits/series';
 import type { VisitMove } from '$lib/domain/visits/states';
-import { accessEpisode, accessVisit, threadForDeed } from '../access/access';
+import { accessEpisode, accessVisit } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
@@ -46,7 +47,7 @@ export function bookVisits(
 		}
 		await followUpAll(tx, context, episodeId);
 		const mails = await tellReferrer(tx, first, context.actor.id, context.now);
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const body = bookedText(booked, context.now);
 		return {
 			result: { items: booked.map(visitLine) },

@@ -3,7 +3,7 @@ import type { AuditAction } from '$lib/domain/audit/actions';
 import type { VisitState } from '$lib/domain/core/codes';
 import { invalidField, Problem } from '$lib/domain/core/errors';
 import { isExpected, needsReason, visitAfter, whyNot, type VisitMove } from '$lib/domain/visits/states';
-import { threadForDeed } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
 import { dropWaiting, rewordReminders } from '../outbox/reminders';
@@ -62,7 +62,7 @@ export async function moveVisit(
 		await rewordReminders(tx, id, reminderText(visit, patient, true));
 	}
 	const messages = state === 'cancelled' ? tellCancelled(after, by, patient, now) : [];
-	const threadId = await threadForDeed(tx, episodeId, undefined);
+	const threadId = await threadForDeed(tx, episodeId, null);
 	const body = movedText(visit, move, by === 'staff' ? by : way, reason, now);
 	const strand = by === 'patient' ? ({ strand: 'patient' } as const) : {};
 	return {

@@ -5,7 +5,8 @@ import type { VisitLine } from '$lib/domain/episodes/views';
 import { startProblem, type Reschedule } from '$lib/domain/visits/forms';
 import { planVisit } from '$lib/domain/visits/series';
 import { isExpected } from '$lib/domain/visits/states';
-import { accessVisit, threadForDeed } from '../access/access';
+import { accessVisit } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
@@ -51,7 +52,7 @@ export function rescheduleVisit(
 		const reminders = await remindOf(tx, visit, patient, context.now);
 		const news = tellMoved(visit, before.startsAt, patient, context.now);
 		const { episodeId } = visit;
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const body = rescheduledText(before, visit, input.reason ?? null, context.now);
 		return {
 			result: { ...visitLine(visit), sequence: visit.sequence, told: waysOf(news) },

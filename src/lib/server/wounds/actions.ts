@@ -1,7 +1,8 @@
 import type { WoundNoteInput } from '$lib/domain/wounds/forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { woundWords } from '$lib/i18n/wounds';
-import { accessEpisode, threadForDeed } from '../access/access';
+import { accessEpisode } from '../access/access';
+import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import { woundNotes } from '../db/schema';
 import { newId } from '../ids';
@@ -20,7 +21,7 @@ export function noteWound(
 		await tx
 			.insert(woundNotes)
 			.values({ id, episodeId, wound, sternum, note, notedBy: context.actor.id, notedAt: context.now });
-		const threadId = await threadForDeed(tx, episodeId, undefined);
+		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const body = m.wounds_entry({ words: woundWords({ wound, sternum, note }) });
 		return {
 			result: { id },

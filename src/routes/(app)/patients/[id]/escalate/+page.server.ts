@@ -29,7 +29,8 @@ export const load: PageServerLoad = (event) =>
 			env().hospital.zone
 		);
 		const neededInMinutes = (grade && NEEDED_WITHIN[grade]) ?? undefined;
-		const filled = { ...parts, grade: grade ?? ('' as const), neededInMinutes, sessionId: session?.id };
+		const from = { sessionId: session?.id, threadId: threadOf(nameboard, event.url) };
+		const filled = { ...parts, grade: grade ?? ('' as const), neededInMinutes, ...from };
 		return {
 			form: await superValidate(filled, zod4(raiseForm), { errors: false }),
 			takers: await takersOf(context, nameboard.unitId),
@@ -42,6 +43,11 @@ export const load: PageServerLoad = (event) =>
 async function sessionOf(context: PersonContext, episodeId: string, id: string | null) {
 	const sessions = id === null ? [] : await read.sessions(context, episodeId);
 	return sessions.find((session) => session.id === id) ?? null;
+}
+
+/** The thread from which somebody calls; undefined for none, or one that is not of this patient. */
+function threadOf({ threads }: Nameboard, url: URL): string | undefined {
+	return threads.find(({ id }) => id === url.searchParams.get('thread'))?.id;
 }
 
 function refuseRole({ actor }: PersonContext, { unitId }: Nameboard): void {
