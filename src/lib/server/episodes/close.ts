@@ -6,14 +6,16 @@ import { accessEpisode } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, escalations } from '../db/schema';
+import { endVisits } from '../visits/end-all';
 import { tellDischarge } from '../visits/notify';
-import { write, type Written } from '../write';
+import { bringing, write, type Change, type Written } from '../write';
 import { refuseClosed } from './move';
 import { endPlacement } from './place';
 
 /**
  * Close a stay: the patient has left and the bed is free. Everything about it stays on record and readable; what
- * is asked and not answered stays a loose end of whoever owes it.
+ * is asked and not answered stays a loose end of whoever owes it. Visits ahead end with it, unless the patient goes
+ * home to come back to them.
  * @param reason one of the closed list; it goes into the audit, so it is a code and no prose
  * @throws Problem `wrong-state` when it is closed already, or while a call for help is open: somebody may be on
  * their way to that bed
@@ -33,7 +35,8 @@ export function closeEpisode(
 			.where(and(eq(episodes.id, episodeId), isNull(episodes.closedAt)));
 		await endPlacement(tx, episodeId, context.now);
 		const messages = await tellDischarge(tx, episodeId, context.actor.id, context.now);
-		return {
+		const ended = await endVisits(tx, context, episodeId, reason);
+		const change = {
 			result: { id: episodeId, closedAt: toRfc3339(context.now) },
 			audit: {
 				action: 'episode.closed',
@@ -44,7 +47,8 @@ export function closeEpisode(
 			},
 			events: [{ topic: 'episode', kind: 'closed', id: episodeId, episodeId }],
 			messages
-		};
+		} satisfies Change<{ id: string; closedAt: string }>;
+		return bringing(change, ended);
 	});
 }
 

@@ -1,9 +1,9 @@
-import { eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import { isWithinHours, nextWithinHours } from '$lib/domain/core/hours';
 import { isExpected } from '$lib/domain/visits/states';
 import { judgeReminder, REMINDER_HOURS } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
-import { patientLinks, patients, reminders, visits } from '../db/schema';
+import { episodes, patientLinks, patients, reminders, visits } from '../db/schema';
 import { stopHeardKey } from '../messages/understood';
 import { newsKey } from '../visits/tell-patient';
 import type { OutboxRow } from './change';
@@ -107,12 +107,14 @@ function byMail({ email, mailConsent, name }: PatientRow): Verdict {
 	return mailConsent ? { kind: 'send', receiver: { to: email, name } } : skip('no consent');
 }
 
+/** Whom a message is for; null for nobody, and for a patient who has died: whatever waits, it is not sent to them. */
 async function patientOf(reader: Reader, { patientId }: OutboxRow): Promise<PatientRow | null> {
 	if (patientId === null) {
 		return null;
 	}
 	const [patient] = await reader.select().from(patients).where(eq(patients.id, patientId));
-	return patient ?? null;
+	const died = and(eq(episodes.patientId, patientId), eq(episodes.closedFor, 'died'));
+	return patient && (await reader.$count(episodes, died)) === 0 ? patient : null;
 }
 
 function toPatient({ phone }: PatientRow): Verdict {
