@@ -17,6 +17,7 @@ import {
 } from '$lib/server/patient-page/link';
 import { endPage, openLinkOf, PAGE_LIFE_MS, sendPage } from '$lib/server/patient-page/share';
 import { bookVisits } from '$lib/server/visits/actions';
+import { rescheduleVisit } from '$lib/server/visits/reschedule';
 import { ScriptedChannel } from '../support/channels';
 import { freshDatabase } from '../support/database';
 import { testEnvironment } from '../support/environment';
@@ -78,9 +79,10 @@ async function bodySent(now: number, wanted: RegExp, way: 'sms' | 'mail') {
 	return channels[way].sent.filter(({ body }) => wanted.test(body)).at(-1)?.body ?? '';
 }
 
-const deed = (visit: string, what: PageDeed['deed'], why = ''): PageDeed => ({
+const deed = (visit: string, what: PageDeed['deed'], why = '', sequence = 0): PageDeed => ({
 	deed: what,
 	visit,
+	sequence,
 	why,
 	key: ''
 });
@@ -204,6 +206,21 @@ describe('the page', () => {
 		expect(events(await calendarOfPage(holder(), token))).toHaveLength(1);
 		await answerOnPage(holder(), token, deed(visitId, 'decline'));
 		expect(events(await calendarOfPage(holder(), token))).toHaveLength(0);
+	});
+});
+
+describe('an answer to a visit that has moved since the page was opened', () => {
+	it.each(['confirm', 'decline'] as const)('%s is refused, and the new time stays as it is', async (what) => {
+		const { token, visitId } = await withPage();
+		const opened = (await readPage(holder(), token)).visits[0]?.sequence ?? -1;
+		await rescheduleVisit(coordinator(), visitId, { startsAt: HOSPITAL_NOW + 8 * DAY_MS });
+		const old = answerOnPage(holder(), token, deed(visitId, what, '', opened));
+		await expect(old).rejects.toMatchObject({ code: 'wrong-state', extra: { state: 'moved' } });
+		expect(await stateOf(visitId)).toBe('planned');
+		const now = (await readPage(holder(), token)).visits[0]?.sequence ?? -1;
+		expect((await answerOnPage(holder(), token, deed(visitId, 'confirm', '', now))).result.state).toBe(
+			'confirmed'
+		);
 	});
 });
 

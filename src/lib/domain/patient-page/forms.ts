@@ -17,6 +17,8 @@ export const WHY_MAX = 200;
 export const pageDeed = z.object({
 	deed: z.enum(['confirm', 'decline']),
 	visit: z.string().min(1).max(64),
+	/** Which time of the visit the patient saw: a yes to an old one is none to the new. */
+	sequence: z.coerce.number().int().min(0),
 	why: z
 		.string()
 		.transform((typed) => typed.replace(/\p{Cc}+/gu, ' ').trim())

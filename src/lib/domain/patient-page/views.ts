@@ -11,6 +11,8 @@ export interface OwnVisit {
 	minutes: number;
 	place: string;
 	state: VisitState;
+	/** Counts the changes of its time. */
+	sequence: number;
 }
 
 /** What a patient's page shows. Nothing of it is clinical, because a link can fall into other hands. */

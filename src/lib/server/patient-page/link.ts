@@ -49,12 +49,13 @@ export async function readPage({ now }: Context, token: string): Promise<Patient
 	const rows = await visitsOf(db(), link.episodeId, now);
 	return {
 		language: messageLanguage(patient.language),
-		visits: rows.map(({ id, startsAt, minutes, place, state }) => ({
+		visits: rows.map(({ id, startsAt, minutes, place, state, sequence }) => ({
 			id,
 			startsAt: toRfc3339(startsAt),
 			minutes,
 			place,
-			state
+			state,
+			sequence
 		})),
 		expiresAt: toRfc3339(link.expiresAt),
 		zone: env().hospital.zone,
@@ -85,7 +86,7 @@ export async function calendarOfPage({ now }: Context, token: string): Promise<s
 export async function answerOnPage(
 	context: Context,
 	token: string,
-	{ deed, visit: id, why }: PageDeed
+	{ deed, visit: id, sequence, why }: PageDeed
 ): Promise<Written<MovedVisit>> {
 	const { patient, link } = await openPage(db(), token, context.now);
 	// The address of the page is its secret: what is kept of a key names the link and not the way to it.
@@ -104,6 +105,9 @@ export async function answerOnPage(
 			throw new Problem('wrong-state', 'This visit has begun.', { state: visit.state });
 		}
 		const move = deed === 'confirm' ? 'confirm' : 'cancel';
+		if (visit.sequence !== sequence && isExpected(visit.state)) {
+			throw new Problem('wrong-state', 'This visit has moved since the page was opened.', { state: 'moved' });
+		}
 		return moveVisit(tx, visit, move, 'patient', context.now, why === '' ? null : why, 'page');
 	});
 }
