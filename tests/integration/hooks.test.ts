@@ -230,6 +230,28 @@ describe('NO', () => {
 		expect((await answers(sid))[0]?.body).toContain('cancelled');
 	});
 
+	it('is to the visit that the newest text told of, not to the next one', async () => {
+		const { own, patient, visitId } = await reminded({ state: 'confirmed' });
+		const later = await addVisit(own, { startsAt: HOSPITAL_NOW + 3 * DAY });
+		const newest = await remind(later, patient.id);
+		await db()
+			.update(outbox)
+			.set({ sentAt: HOSPITAL_NOW + 1 })
+			.where(eq(outbox.id, newest));
+		await say(patient.phone, 'No', newSid(), HOSPITAL_NOW + 2);
+		expect([await stateOf(visitId), await stateOf(later)]).toEqual(['confirmed', 'cancelled']);
+	});
+
+	it('stays a loose end when the time of the visit comes, and after it', async () => {
+		const { patient, visitId } = await reminded();
+		await say(patient.phone, 'No');
+		const startsAt = HOSPITAL_NOW + DAY;
+		for (const now of [startsAt - 1, startsAt, startsAt + 1]) {
+			const { mine } = await looseEndsOf(db(), hospital.people.coordinator, now);
+			expect(mine).toContainEqual(expect.objectContaining({ kind: 'visit-cancelled', id: visitId }));
+		}
+	});
+
 	it('without a reminded visit is left to a person', async () => {
 		const { patient } = await addPatient({ unitId: hospital.units.ward });
 		const sid = newSid();

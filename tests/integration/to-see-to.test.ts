@@ -67,6 +67,14 @@ const open = async (person: Person) =>
 	(await looseEndsOf(db(), person, HOSPITAL_NOW)).mine.map(({ kind, id }) => `${kind} ${id}`);
 
 describe('a message that did not arrive', () => {
+	it.each([
+		['the link to the patient’s page', { kind: 'page', refKind: 'page' }],
+		['a mail with the visits of a series', { kind: 'mail', channel: 'mail', refKind: 'episode' }]
+	] as const)('waits on the coordinator: %s', async (_what, given) => {
+		const id = await message({ ...given, refId: hospital.episodeId, state: 'failed' });
+		expect(await open(hospital.people.coordinator)).toContain(`message-failed ${id}`);
+	});
+
 	it('shows whom to call and what it was to say, without its link', async () => {
 		const id = await message();
 		expect(await getFailedMessage(hospital.people.coordinator, id)).toMatchObject({

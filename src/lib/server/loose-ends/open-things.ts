@@ -27,7 +27,7 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		referralsAsked,
 		questionsOpen,
 		signOffsAsked,
-		visitsCancelled(now),
+		visitsCancelled,
 		visitsUnconfirmed(now),
 		messagesFailed,
 		textsUnread(unitIds)
@@ -180,15 +180,13 @@ function visitsUnconfirmed(now: number): SQL {
 		where v.state = 'planned' and v.starts_at > ${now} and v.starts_at <= ${now + UNCONFIRMED_WITHIN_MS}`;
 }
 
-/** A visit that the patient cancelled wants another date; once its own time has passed nobody is asked any more. */
-function visitsCancelled(now: number): SQL {
-	return sql`
+/** A visit that the patient cancelled wants another date, until somebody has found one or said that none is wanted. */
+const visitsCancelled = sql`
 		select 'visit-cancelled', v.id, ${PLACE}, null, null, null, v.reason, null, null,
 			null, null, v.decided_at, v.starts_at, null
 		from visits v
 		join place on place.id = v.episode_id
-		where v.patient_cancelled_at is not null and v.followed_up_at is null and v.starts_at > ${now}`;
-}
+		where v.patient_cancelled_at is not null and v.followed_up_at is null`;
 
 /** A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. */
 const messagesFailed = sql`
@@ -198,7 +196,9 @@ const messagesFailed = sql`
 	left join visits v on m.ref_kind = 'visit' and v.id = m.ref_id
 	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
 	left join referrals r on m.ref_kind = 'referral' and r.id = m.ref_id
-	join place on place.id = coalesce(v.episode_id, x.episode_id, r.episode_id)
+	join place on place.id = coalesce(
+		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end
+	)
 	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null`;
 
 /** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */

@@ -1,4 +1,4 @@
-import { and, asc, eq, gt, inArray, isNotNull, or, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, inArray, isNotNull, or, sql } from 'drizzle-orm';
 import { gatewayStops, readPatientReply } from '$lib/domain/messages/reply';
 import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
 import type { VisitState } from '$lib/domain/core/codes';
@@ -65,7 +65,7 @@ async function onYes(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<U
 	return { understoodAs: 'yes', handled: true, visitId: confirmed?.id, change: { messages } };
 }
 
-/** NO cancels the next visit that was reminded of. Without one somebody has to ask what was meant. */
+/** NO cancels the visit that the newest text told of. Without one somebody has to ask what was meant. */
 async function onNo(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
 	const [visit] = await remindedVisits(tx, patient.id, ['planned', 'confirmed'], text.now);
 	if (visit) {
@@ -102,7 +102,10 @@ function aboutVisit(
 	return answerTo(text, { patientId: patient.id }, template, fields, patient);
 }
 
-/** Visits ahead whose time a text has told, or may have, the next one first. */
+/**
+ * Visits ahead whose time a text has told, or may have: the one of the newest text first, because that is what an
+ * answer is to; of those told at once the next.
+ */
 async function remindedVisits(
 	reader: Reader,
 	patientId: string,
@@ -115,8 +118,9 @@ async function remindedVisits(
 		eq(reminders.sequence, visits.sequence),
 		eq(outbox.causeKey, sql`'visit-news:' || ${visits.id} || ':' || ${visits.sequence} || ':sms'`)
 	);
+	const toldAt = sql`max(coalesce(${outbox.sentAt}, ${outbox.nextAt}))`;
 	const rows = await reader
-		.selectDistinct({ visit: visits })
+		.select({ visit: visits })
 		.from(visits)
 		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
 		.innerJoin(outbox, and(eq(outbox.refKind, 'visit'), eq(outbox.refId, visits.id)))
@@ -130,7 +134,8 @@ async function remindedVisits(
 				mayHaveArrived
 			)
 		)
-		.orderBy(asc(visits.startsAt), asc(visits.id))
+		.groupBy(visits.id)
+		.orderBy(desc(toldAt), asc(visits.startsAt), asc(visits.id))
 		.limit(1);
 	return rows.map(({ visit }) => visit);
 }
