@@ -1,0 +1,104 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, test, type Locator, type Page } from '@playwright/test';
+import { startProduct, type Product } from '../support/server';
+
+let product: Product;
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { PUBLIC_STYLE_PAGE: '1', RATE_LIMIT_SCALE: '100' } });
+});
+test.afterAll(() => product?.stop());
+test.beforeEach(async ({ page }) => {
+	await page.goto(`${product.url}/style`);
+	// The days on offer are drawn once script is there to hear a press.
+	await expect(page.getByRole('button', { name: 'Mon 29 Dec' })).toBeVisible();
+});
+
+async function expectAccessible(page: Page): Promise<void> {
+	const { violations } = await new AxeBuilder({ page }).analyze();
+	expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
+}
+
+const holdsFocus = (part: Locator) => part.evaluate((node) => node.contains(document.activeElement));
+
+for (const { opener, name, buttons } of [
+	{ opener: 'Open a dialog', name: 'Withdraw the referral?', buttons: 3 },
+	{ opener: 'Open a sheet', name: 'Ask for a clearance', buttons: 4 }
+]) {
+	test(`${name}: keeps the focus, closes by Escape and gives the focus back`, async ({ page }) => {
+		const by = page.getByRole('button', { name: opener });
+		const over = page.getByRole('dialog', { name });
+		await by.press('Enter');
+		await expect(over).toBeVisible();
+		await expect.poll(() => holdsFocus(over)).toBe(true);
+		// Once round and one further, in both directions.
+		for (const key of ['Tab', 'Shift+Tab']) {
+			for (let pressed = 0; pressed <= buttons; pressed += 1) {
+				await page.keyboard.press(key);
+				expect(await holdsFocus(over)).toBe(true);
+			}
+		}
+		await page.keyboard.press('Escape');
+		await expect(over).toBeHidden();
+		await expect(by).toBeFocused();
+	});
+}
+
+test('tabs, a chip and a choice are worked by keyboard alone', async ({ page }) => {
+	await page.getByRole('tab', { name: 'After' }).press('ArrowLeft');
+	await expect(page.getByRole('tab', { name: /During/ })).toBeFocused();
+	await expect(page.getByText('Readings during the effort.')).toBeVisible();
+	await page.keyboard.press('Home');
+	await expect(page.getByText('Readings before the effort.')).toBeVisible();
+
+	const chip = page.getByRole('button', { name: 'pallor' });
+	await chip.press('Space');
+	await expect(chip).toHaveAttribute('aria-pressed', 'true');
+	await chip.press('Enter');
+	await expect(chip).toHaveAttribute('aria-pressed', 'false');
+
+	const degrees = page.getByRole('group', { name: 'Up to' });
+	await degrees.getByRole('radio', { name: '90°' }).press('ArrowRight');
+	await expect(degrees.getByRole('radio', { name: '120°' })).toBeChecked();
+	// What is not open is stepped over.
+	await page.keyboard.press('ArrowRight');
+	await expect(degrees.getByRole('radio', { name: '60°' })).toBeChecked();
+});
+
+test('the number pad and a day are worked by keyboard alone', async ({ page }) => {
+	const pad = page.getByRole('group', { name: 'Systolic, before' });
+	await pad.getByRole('button', { name: 'Erase' }).press('Enter');
+	await pad.getByRole('button', { name: '6' }).press('Space');
+	await pad.getByRole('button', { name: 'Done' }).press('Enter');
+	await expect(page.getByText('Kept 126.')).toBeVisible();
+
+	const review = page.getByLabel('Review');
+	await review.press('End');
+	await review.press('Backspace');
+	await review.press('6');
+	await expect(page.getByText('Tuesday 8 December 2026')).toBeVisible();
+	await page.getByRole('button', { name: 'Mon 29 Dec' }).press('Space');
+	await expect(review).toHaveValue('29 12 2025');
+});
+
+/** What lies over the page, each opened by keys. */
+const OVER: Record<string, (page: Page) => Promise<Locator>> = {
+	async dialog(page) {
+		await page.getByRole('button', { name: 'Open a dialog' }).press('Enter');
+		return page.getByRole('dialog');
+	},
+	async sheet(page) {
+		await page.getByRole('button', { name: 'Open a sheet' }).press('Enter');
+		return page.getByRole('dialog');
+	}
+};
+
+for (const [name, open] of Object.entries(OVER)) {
+	test(`axe finds nothing with the ${name} open`, async ({ page }) => {
+		await page.emulateMedia({ colorScheme: 'light', reducedMotion: 'reduce' });
+		const over = await open(page);
+		await expect(over.first()).toBeVisible();
+		await expectAccessible(page);
+	});
+}
