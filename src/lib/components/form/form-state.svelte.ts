@@ -1,6 +1,7 @@
 import { fromStore } from 'svelte/store';
 import { superForm, type FormOptions, type SuperForm, type SuperValidated } from 'sveltekit-superforms';
 import { routes } from '$lib/routes';
+import { earlyCheck, type SchemaSource } from './early-check';
 import { outcomeOf, type Outcome } from './outcome';
 
 /** What a form's fields read and write, in runes. */
@@ -17,6 +18,8 @@ export type FormState<T extends Record<string, unknown>> = {
 	/** It got no answer of its own; what was typed is still there. */
 	readonly outcome: Outcome | null;
 	readonly enhance: SuperForm<T, string>['enhance'];
+	/** Somebody has stepped into the form: what checks it may be fetched. */
+	entered(): void;
 };
 
 type Source<T extends Record<string, unknown>> = SuperValidated<T, string> | SuperForm<T, string>;
@@ -27,17 +30,25 @@ type Source<T extends Record<string, unknown>> = SuperValidated<T, string> | Sup
  * @param source what the server's `superValidate` gave, or a form that a page made itself
  * @param options superforms' own; they win over the ones here
  * @param onsaved hears when the server has taken what was sent
+ * @param schema the one that the server checks with; with it, what is wrong is said before anything is sent
  */
 export function formState<T extends Record<string, unknown>>(
 	source: Source<T>,
 	options: FormOptions<T, string> = {},
-	onsaved: () => void = () => {}
+	onsaved: () => void = () => {},
+	schema?: SchemaSource
 ): FormState<T> {
+	const check = schema && earlyCheck<T>(schema);
 	let outcome = $state<Outcome | null>(null);
 	// A page that comes back without script already says how the form ended.
 	let valid = $state('enhance' in source || !source.posted || source.valid);
+	// Checked when it is sent and not at every step: an error that appeared on leaving a field would push the button
+	// away from under the finger.
+	const checked = check && ({ validators: check.validators, validationMethod: 'submit-only' } as const);
 	const form =
-		'enhance' in source ? source : superForm(source, { clearOnSubmit: 'errors-and-message', ...options });
+		'enhance' in source
+			? source
+			: superForm(source, { clearOnSubmit: 'errors-and-message', ...checked, ...options });
 	const typed = fromStore(form.form);
 	const errors = fromStore(form.errors);
 	const message = fromStore(form.message);
@@ -48,6 +59,7 @@ export function formState<T extends Record<string, unknown>>(
 			...events,
 			onSubmit: (input) => {
 				outcome = null;
+				check?.begin(input);
 				return events?.onSubmit?.(input);
 			},
 			onResult: (event) => {
@@ -85,7 +97,8 @@ export function formState<T extends Record<string, unknown>>(
 		get outcome() {
 			return outcome;
 		},
-		enhance
+		enhance,
+		entered: () => void check?.load()
 	};
 }
 

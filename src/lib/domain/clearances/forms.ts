@@ -30,6 +30,9 @@ export const askClearanceBody = z.strictObject({
 	threadId: z.string().min(1).optional()
 });
 
+/** The form that asks; its message names the field as the page does. */
+export const askClearanceForm = askClearanceBody.extend({ question: text('Question', 2000) });
+
 /** What the decider was shown, from `shown` of the clearance: when something is new since, it is refused once. */
 export const shownMarks = z
 	.string()

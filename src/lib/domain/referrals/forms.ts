@@ -8,6 +8,13 @@ export const referBody = z.strictObject({
 	question: text('The question', 4000)
 });
 
+/** The form that refers; its message names the field as the page does. */
+export const referForm = referBody.extend({ question: text('Question', 4000) });
+
+/** Why a referral ends, as its forms ask for it: to close it no word is needed. */
+export const reasonForm = z.object({ reason: reason('Reason') });
+export const maybeReasonForm = reasonForm.partial();
+
 /** Accepting and closing need no words; declining and withdrawing do. */
 export const acceptBody = z.strictObject({ reason: reason('The reason').optional() });
 export const declineBody = z.strictObject({ reason: reason('The reason') });

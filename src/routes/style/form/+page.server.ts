@@ -1,18 +1,10 @@
 import { error } from '@sveltejs/kit';
 import { message, superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
-import { z } from 'zod';
 import { dev } from '$app/environment';
 import { env } from '$env/dynamic/public';
+import { questionForm } from './schema';
 import type { Actions, PageServerLoad } from './$types';
-
-const schema = z.object({
-	question: z
-		.string()
-		.min(3, 'Question: write at least 3 characters.')
-		.max(40, 'Question: at most 40 characters.'),
-	priority: z.enum(['routine', 'soon'], { error: 'Priority: choose routine or soon.' })
-});
 
 /** The page is for those who build pages, as `/style` is. */
 function onlyForBuilders(): void {
@@ -23,7 +15,7 @@ function onlyForBuilders(): void {
 
 export const load: PageServerLoad = async () => {
 	onlyForBuilders();
-	return { form: await superValidate(zod4(schema)), key: 'a-key-from-the-server' };
+	return { form: await superValidate(zod4(questionForm)), key: 'a-key-from-the-server' };
 };
 
 /** Every way a form can end, chosen by what is typed. */
@@ -31,7 +23,7 @@ export const actions: Actions = {
 	ask: async ({ request }) => {
 		onlyForBuilders();
 		const data = await request.formData();
-		const form = await superValidate(data, zod4(schema));
+		const form = await superValidate(data, zod4(questionForm));
 		if (!form.valid) {
 			return message(form, 'Nothing was asked.', { status: 400 });
 		}

@@ -1,8 +1,7 @@
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { askable } from '$lib/components/clearances/standing';
-import { askClearanceBody } from '$lib/domain/clearances/forms';
-import { text } from '$lib/domain/core/fields';
+import { askClearanceForm } from '$lib/domain/clearances/forms';
 import { localDateOf } from '$lib/domain/core/time';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -12,7 +11,6 @@ import { idParam } from '$lib/server/http/param';
 import { leadOnWithoutScript } from './without-script';
 
 const ID = 'ask-clearance';
-const schema = askClearanceBody.extend({ question: text('Question', 2000) });
 
 /** The empty ask, open at the first kind that can be asked for. */
 export function askForm(
@@ -21,12 +19,12 @@ export function askForm(
 	threadId?: string
 ) {
 	const [kind] = askable(lines, localDateOf(at.now, at.zone));
-	return superValidate({ kind, threadId }, zod4(schema), { id: ID, errors: false });
+	return superValidate({ kind, threadId }, zod4(askClearanceForm), { id: ID, errors: false });
 }
 
 /** The action behind it, on every page that has the form. */
 export const askClearanceAction = formAction({
-	schema,
+	schema: askClearanceForm,
 	id: ID,
 	run: async (context, fields, event) => {
 		await askClearance(context, idParam(event), fields);

@@ -3,16 +3,13 @@ import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { can } from '$lib/domain/access/can';
 import { Problem } from '$lib/domain/core/errors';
-import { text } from '$lib/domain/core/fields';
-import { referBody } from '$lib/domain/referrals/forms';
+import { referForm } from '$lib/domain/referrals/forms';
 import { routes } from '$lib/routes';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { refer } from '$lib/server/referrals/actions';
 import type { Actions, PageServerLoad } from './$types';
-
-const referForm = referBody.extend({ question: text('Question', 4000) });
 
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async ({ actor }) => {

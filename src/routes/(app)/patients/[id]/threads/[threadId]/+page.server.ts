@@ -1,6 +1,7 @@
 import type { RequestEvent } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
+import { maybeReasonForm, reasonForm } from '$lib/domain/referrals/forms';
 import { notFound } from '$lib/domain/core/errors';
 import type { ThreadView } from '$lib/domain/referrals/views';
 import type { PersonContext } from '$lib/server/context';
@@ -8,18 +9,7 @@ import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
 import { askClearanceAction, askForm } from '../../ask-clearance';
-import {
-	accept,
-	close,
-	decline,
-	maybeReasonForm,
-	post,
-	postForm,
-	reasonForm,
-	seen,
-	seenForm,
-	withdraw
-} from './actions';
+import { accept, close, decline, post, postForm, seen, seenForm, withdraw } from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 const PAGE = 200;

@@ -2,7 +2,8 @@ import type { RequestEvent } from '@sveltejs/kit';
 import { z } from 'zod';
 import type { Problem } from '$lib/domain/core/errors';
 import { isOneOf, REFERRAL_STATES } from '$lib/domain/core/codes';
-import { reason, text } from '$lib/domain/core/fields';
+import { text } from '$lib/domain/core/fields';
+import { maybeReasonForm, reasonForm } from '$lib/domain/referrals/forms';
 import { REFERRAL_STATE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 import { routes } from '$lib/routes';
@@ -22,8 +23,6 @@ import { leadOnWithoutScript } from '../../without-script';
 /** The forms of a thread. They say the fields' own words where the API says their names. */
 export const postForm = z.object({ body: text('Entry', 8000), mention: z.string().max(64).default('') });
 export const seenForm = z.object({ mentionId: z.string().max(64).default('') });
-export const reasonForm = z.object({ reason: reason('Reason') });
-export const maybeReasonForm = reasonForm.partial();
 
 export const post = formAction({
 	schema: postForm,
