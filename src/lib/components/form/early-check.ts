@@ -1,11 +1,11 @@
 import type { issuesOf } from './check';
-import type { ClientValidationAdapter, ZodValidationSchema } from 'sveltekit-superforms/adapters';
+import type { ClientValidationAdapter } from 'sveltekit-superforms/adapters';
+import type { ZodObject } from 'zod';
 
 /** Fetches the schema of an area when it is wanted: `() => import('…').then(({ referForm }) => referForm)`. */
-export type SchemaSource = () => Promise<ZodValidationSchema>;
+export type SchemaSource = () => Promise<ZodObject>;
 
-type Submitted = { formData: FormData; formElement: HTMLFormElement };
-type Loaded = [{ issuesOf: typeof issuesOf }, ZodValidationSchema];
+type Loaded = [{ issuesOf: typeof issuesOf }, ZodObject];
 
 /**
  * The check of a form in the browser, before anything is sent. Schema and checker are fetched with the first step
@@ -13,7 +13,6 @@ type Loaded = [{ issuesOf: typeof issuesOf }, ZodValidationSchema];
  * server alone decides, as it does without script.
  */
 export function earlyCheck<T extends Record<string, unknown>>(source: SchemaSource) {
-	let submitted: FormData | null = null;
 	let loading: Promise<Loaded | null> | null = null;
 
 	/** Fetch what is needed; what failed is tried again the next time. */
@@ -30,7 +29,7 @@ export function earlyCheck<T extends Record<string, unknown>>(source: SchemaSour
 		// What was typed stays as it was typed: a day in words is not turned into its code on the way.
 		async validate(data) {
 			const loaded = await load();
-			const issues = loaded && submitted ? await loaded[0].issuesOf(submitted, loaded[1]) : [];
+			const issues = loaded ? await loaded[0].issuesOf(data as T, loaded[1]) : [];
 			return issues.length > 0 ? { success: false, issues } : { success: true, data: data as T };
 		}
 	};
@@ -39,8 +38,7 @@ export function earlyCheck<T extends Record<string, unknown>>(source: SchemaSour
 	 * superforms leaves out its check of a form that carries `novalidate`, as ours do to keep the browser's own
 	 * bubbles away. So the mark is lifted while it looks, in the same turn, and stands again after it.
 	 */
-	function begin({ formData, formElement }: Submitted): void {
-		submitted = formData;
+	function begin({ formElement }: { formElement: HTMLFormElement }): void {
 		formElement.noValidate = false;
 		setTimeout(() => (formElement.noValidate = true));
 	}

@@ -1,0 +1,141 @@
+import { expect, test, type Browser, type Page } from '@playwright/test';
+import { admit, signInAs } from '../support/api';
+import { startProduct, type Product } from '../support/server';
+import { holdScripts, PHONE, seat } from './people';
+
+/** What the network does with a posted form, for a while. */
+type Fate = 'pass' | 'lose' | 'hold';
+
+let product: Product;
+let episodeId: string;
+
+test.beforeAll(async () => {
+	test.setTimeout(180_000);
+	product = await startProduct({ env: { PUBLIC_STYLE_PAGE: '1', RATE_LIMIT_SCALE: '100' } });
+	episodeId = await admit(await signInAs(product.url, 'coordinator'), {});
+});
+test.afterAll(() => product?.stop());
+
+/** Every form that a page posts from now on. */
+function posts(page: Page): string[] {
+	const posted: string[] = [];
+	page.on('request', (request) => {
+		if (request.method() === 'POST') {
+			posted.push(request.postData() ?? '');
+		}
+	});
+	return posted;
+}
+
+/** The page of one form, taken over by script, and a hand on its network. */
+async function formPage(page: Page) {
+	let fate: Fate = 'pass';
+	let release = (): void => {};
+	const released = new Promise<void>((resolve) => (release = resolve));
+	await page.route('**/style/form?/ask', async (route) => {
+		if (fate === 'lose') {
+			return route.abort();
+		}
+		if (fate === 'hold') {
+			await released;
+		}
+		return route.continue();
+	});
+	await page.goto(`${product.url}/style`);
+	await page.getByRole('link', { name: 'A form in every way it can end' }).click();
+	await expect(page).toHaveURL(/\/style\/form$/);
+	return {
+		posted: posts(page),
+		question: page.getByLabel('Question'),
+		ask: page.getByRole('button', { name: 'Ask' }),
+		network: (next: Fate) => void (fate = next),
+		release
+	};
+}
+
+test('too short: the field says its limit, nothing is sent, and what was typed stays', async ({ page }) => {
+	const { posted, question, ask } = await formPage(page);
+	await question.fill('ab');
+	await ask.click();
+	await expect(page.getByText('Question: write at least 3 characters.')).toBeVisible();
+	await expect(question).toHaveAttribute('aria-invalid', 'true');
+	await expect(question).toHaveValue('ab');
+	expect(posted).toEqual([]);
+	await question.fill('abc');
+	await ask.click();
+	await expect(page.getByText('Asked with a-key-from-the-server.')).toBeVisible();
+	expect(posted).toHaveLength(1);
+});
+
+for (const [typed, notice] of [
+	['signed out', 'Not sent: your sign-in has run out'],
+	['broken', 'No answer: this may not have arrived'],
+	['forbidden', 'A therapist asks for this.']
+] as const) {
+	test(`answered by ${typed}: the page says so, and what was typed stays`, async ({ page }) => {
+		const { question, ask, posted } = await formPage(page);
+		await question.fill(typed);
+		await ask.click();
+		await expect(page.getByRole('alert').getByText(notice)).toBeVisible();
+		await expect(question).toHaveValue(typed);
+		expect(posted).toHaveLength(1);
+	});
+}
+
+test('a lost network: what was typed stays, and the next press carries the same key', async ({ page }) => {
+	const { question, ask, network, posted } = await formPage(page);
+	network('lose');
+	await question.fill('May walking go on?');
+	await ask.click();
+	await expect(page.getByRole('alert').getByText('No answer: this may not have arrived')).toBeVisible();
+	await expect(question).toHaveValue('May walking go on?');
+	network('pass');
+	await ask.click();
+	await expect(page.getByText('Asked with a-key-from-the-server.')).toBeVisible();
+	expect(posted).toHaveLength(2);
+});
+
+test('two presses are one form', async ({ page }) => {
+	const { question, ask, network, release, posted } = await formPage(page);
+	network('hold');
+	await question.fill('May walking go on?');
+	await ask.dblclick();
+	await expect.poll(() => posted.length).toBe(1);
+	release();
+	await expect(page.getByText('Asked with a-key-from-the-server.')).toBeVisible();
+	expect(posted).toHaveLength(1);
+});
+
+/** A person on the page that refers this patient. */
+async function refers(browser: Browser) {
+	const { page, context, complaints } = await seat(browser, product.url, 'surgeon', PHONE);
+	return { page, context, complaints, question: page.getByLabel('What do you ask?') };
+}
+
+test('refer: an empty question is named beside its field before anything is sent', async ({ browser }) => {
+	const { page, context, complaints, question } = await refers(browser);
+	const release = await holdScripts(page);
+	await page.goto(`/patients/${episodeId}/refer`, { waitUntil: 'commit' });
+	await question.fill(' '.repeat(3));
+	release();
+	const posted = posts(page);
+	await page.waitForLoadState('networkidle');
+	await expect(question).toHaveValue(' '.repeat(3));
+	await page.getByRole('button', { name: 'Refer', exact: true }).click();
+	await expect(page.getByText('Question is empty.')).toBeVisible();
+	await expect(question).toBeFocused();
+	expect(posted).toEqual([]);
+	expect(complaints).toEqual([]);
+	await context.close();
+});
+
+test('refer: two presses on a slow network are one referral', async ({ browser }) => {
+	const { page, context, question } = await refers(browser);
+	await page.goto(`/patients/${episodeId}/refer`, { waitUntil: 'networkidle' });
+	await question.fill('Please begin to walk with her.');
+	await page.getByRole('button', { name: 'Refer', exact: true }).dblclick();
+	await expect(page).toHaveURL(/\/threads\//);
+	const { body } = await (await signInAs(product.url, 'surgeon')).get(`/api/episodes/${episodeId}`);
+	expect((body as unknown as { referrals: unknown[] }).referrals).toHaveLength(1);
+	await context.close();
+});
