@@ -224,12 +224,36 @@ describe('icons', () => {
 		expect(besideWords(source).alone).toBe(alone);
 	});
 
+	/** What stands on a control without a word, because every browser draws the same there. */
+	const OF_THE_TRADE: Record<string, string> = {
+		'src/lib/components/ui/Combobox.svelte': 'the arrow of a list that opens, as on a select'
+	};
+
 	it('never stand without a word, and are in use', () => {
 		const counted = files('.svelte')
 			.filter((file) => /<Icon\b/.test(sourceOf(file)))
 			.map((file) => [file, besideWords(sourceOf(file))] as const);
-		expect(counted.filter(([, { alone }]) => alone > 0)).toEqual([]);
+		const alone = counted.filter((counts) => counts[1].alone > 0).map(([file]) => file);
+		expect(alone).toEqual(Object.keys(OF_THE_TRADE));
 		expect(counted.filter(([file]) => !file.startsWith('src/routes/style/')).length).toBeGreaterThan(2);
+	});
+
+	/** Drawings that no library has, each with what it shows; plots and ropes are rooms of their own. */
+	const DRAWN: Record<string, string> = {
+		'src/lib/components/clearances/ArmFigure.svelte': 'an arm raised by so many degrees',
+		'src/lib/components/escalations/ChainRope.svelte': 'the rope that a call goes along',
+		'src/lib/components/shell/Connection.svelte': 'a strand, whole or parted',
+		'src/lib/components/ui/GradeShape.svelte': 'the shapes of urgency',
+		'src/lib/components/ward/LevelLane.svelte': 'the way up the levels'
+	};
+
+	it('are not drawn by hand', () => {
+		const drawn = files('.svelte').filter(
+			(file) =>
+				!/^src\/lib\/components\/(rope|plot)\//.test(file) &&
+				/<svg[\s>]/.test(sourceOf(file).replace(/<!--[\s\S]*?-->/g, ''))
+		);
+		expect(drawn.toSorted()).toEqual(Object.keys(DRAWN).toSorted());
 	});
 
 	it('come by the one part that hides them from screen readers', () => {
