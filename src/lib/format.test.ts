@@ -1,5 +1,17 @@
 import { describe, expect, it } from 'vitest';
-import { ago, clock, day, dayAndClock, due, duration, longDay, shortDay, weekdayClock, when } from './format';
+import {
+	ago,
+	clock,
+	day,
+	dayAndClock,
+	due,
+	duration,
+	localeOf,
+	longDay,
+	shortDay,
+	weekdayClock,
+	when
+} from './format';
 
 const utc = (text: string) => Date.parse(text);
 const S = 1000;
@@ -134,5 +146,46 @@ describe('due', () => {
 		[-72 * H, 'overdue by 3 days']
 	])('%i ms from now: %s', (milliseconds, expected) => {
 		expect(due(NOW + milliseconds, READER)).toBe(expected);
+	});
+});
+
+describe('in Spanish', () => {
+	const READS = { ...READER, locale: 'es' };
+
+	it.each([
+		[59 * S, 'ahora mismo'],
+		[MIN, 'hace 1 min'],
+		[2 * H + 10 * MIN, 'hace 2 h 10'],
+		[72 * H, 'hace 3 días']
+	])('%i ms before now: %s', (milliseconds, expected) => {
+		expect(ago(NOW - milliseconds, READS)).toBe(expected);
+	});
+
+	it.each([
+		[59 * MIN, 'vence en 59 min'],
+		[H, 'vence hoy 13:31'],
+		[utc('2025-07-04T08:00:00Z') - NOW, 'vence mañana 09:00'],
+		[utc('2025-07-08T11:31:00Z') - NOW, 'vence mar 12:31'],
+		[0, 'vence ahora'],
+		[-MIN, 'vencido hace 1 min'],
+		[-72 * H, 'vencido hace 3 días']
+	])('%i ms from now: %s', (milliseconds, expected) => {
+		expect(due(NOW + milliseconds, READS)).toBe(expected);
+	});
+
+	it.each([
+		['2025-07-03T16:00:00Z', '17:00'],
+		['2025-07-02T11:31:00Z', 'ayer 12:31'],
+		['2025-07-10T11:31:00Z', 'jue 10 jul 12:31']
+	])('%s is %s', (at, expected) => {
+		expect(when(utc(at), READS)).toBe(expected);
+	});
+
+	it('a locale without words of its own reads English', () => {
+		expect(ago(NOW, { ...READER, locale: 'fr' })).toBe('just now');
+	});
+
+	it('days are written as the language of the page writes them', () => {
+		expect([localeOf('en'), localeOf('es')]).toEqual(['en-IE', 'es']);
 	});
 });

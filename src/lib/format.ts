@@ -15,8 +15,15 @@ import {
 } from './domain/core/time';
 import { readDate, readTime } from './domain/core/typed-date';
 import type { Instant, LocalDate, LocalParts, Zone } from './domain/core/time';
+import { m } from './i18n/paraglide/messages';
+import { baseLocale, locales, type Locale } from './i18n/paraglide/runtime';
 
 export const DEFAULT_LOCALE = 'en-IE';
+
+/** How days and numbers are written in a language of the pages. */
+export function localeOf(language: Locale): string {
+	return language === 'en' ? DEFAULT_LOCALE : language;
+}
 
 /** Where and when somebody reads: the zone of the hospital (or the patient), the instant of now, the language. */
 export interface Reader {
@@ -24,18 +31,6 @@ export interface Reader {
 	readonly now: Instant;
 	readonly locale?: string;
 }
-
-/** The few words that Intl does not have. A second language adds its own row. */
-const WORDS = {
-	en: {
-		due: 'due',
-		dueIn: 'due in',
-		dueNow: 'due now',
-		overdue: 'overdue by',
-		ago: 'ago',
-		justNow: 'just now'
-	}
-};
 
 type Length = 'short' | 'long';
 type Field = 'weekday' | 'month';
@@ -119,8 +114,10 @@ export function duration(milliseconds: number, locale: string = DEFAULT_LOCALE):
 
 /** `just now` under a minute, then `9 min ago`, `2 h 10 ago`, `3 days ago`. */
 export function ago(at: Instant, { now, locale }: Omit<Reader, 'zone'>): string {
-	const { justNow, ago: word } = words(locale);
-	return now - at < MINUTE ? justNow : `${duration(wholeMinutes(now - at), locale)} ${word}`;
+	const language = languageOf(locale);
+	return now - at < MINUTE
+		? m.common_time_just_now({}, language)
+		: m.common_time_ago({ time: duration(wholeMinutes(now - at), locale) }, language);
 }
 
 /**
@@ -128,16 +125,18 @@ export function ago(at: Instant, { now, locale }: Omit<Reader, 'zone'>): string 
  * 17:00`, `due tomorrow 09:00`, `due Thu 12:31`; `due now` for its minute, then `overdue by 12 min`.
  */
 export function due(at: Instant, reader: Reader): string {
-	const word = words(reader.locale);
+	const language = languageOf(reader.locale);
 	const left = at - reader.now;
 	if (left <= -MINUTE) {
-		return `${word.overdue} ${duration(wholeMinutes(-left), reader.locale)}`;
+		return m.common_time_overdue({ time: duration(wholeMinutes(-left), reader.locale) }, language);
 	}
 	if (left <= 0) {
-		return word.dueNow;
+		return m.common_time_due_now({}, language);
 	}
 	const minutes = Math.ceil(left / MINUTE);
-	return minutes < 60 ? `${word.dueIn} ${minutes} min` : `${word.due} ${namedWhen(at, reader)}`;
+	return minutes < 60
+		? m.common_time_due_in({ time: `${minutes} min` }, language)
+		: m.common_time_due({ time: namedWhen(at, reader) }, language);
 }
 
 /** As `when`, with `today` said. */
@@ -217,9 +216,9 @@ function nameFormat(field: Field, length: Length, locale: string): Intl.DateTime
 	return format;
 }
 
-function words(locale: string = DEFAULT_LOCALE): (typeof WORDS)['en'] {
-	const language = locale.split('-')[0] ?? '';
-	return language in WORDS ? WORDS[language as keyof typeof WORDS] : WORDS.en;
+/** The language of the catalogue that a locale is of; its words come from there, whatever page is shown. */
+function languageOf(locale: string = DEFAULT_LOCALE): { locale: Locale } {
+	return { locale: locales.find((one) => one === locale.split('-')[0]) ?? baseLocale };
 }
 
 function two(value: number): string {

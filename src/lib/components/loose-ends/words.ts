@@ -12,12 +12,12 @@ export function waitWords(end: LooseEnd, reader: Reader): string {
 	const open = reader.now - Date.parse(end.since);
 	switch (end.kind) {
 		case 'escalation':
-			return m.home_wait_untaken({ time: duration(open) });
+			return m.home_wait_untaken({ time: duration(open, reader.locale) });
 		case 'arrival':
 		case 'confirm':
-			return m.home_wait_answer({ time: duration(open) });
+			return m.home_wait_answer({ time: duration(open, reader.locale) });
 		case 'escalation-taken':
-			return m.home_wait_taken({ time: duration(open) });
+			return m.home_wait_taken({ time: duration(open, reader.locale) });
 		case 'visit-unconfirmed':
 			return end.due === null ? elapsed(end, reader) : when(Date.parse(end.due), reader);
 		case 'recheck':
@@ -126,7 +126,7 @@ const MESSAGES: Record<string, () => string> = {
 function elapsed({ since }: LooseEnd, reader: Reader): string {
 	const at = Date.parse(since);
 	const minutes = Math.floor((reader.now - at) / MINUTE);
-	return minutes < 1 ? ago(at, reader) : duration(minutes * MINUTE);
+	return minutes < 1 ? ago(at, reader) : duration(minutes * MINUTE, reader.locale);
 }
 
 function anyOf(words: string[]): string {
