@@ -44,6 +44,7 @@ async function formPage(page: Page) {
 	await page.goto(`${product.url}/style`);
 	await page.getByRole('link', { name: 'A form in every way it can end' }).click();
 	await expect(page).toHaveURL(/\/style\/form$/);
+	await page.waitForLoadState('networkidle');
 	return {
 		posted: posts(page),
 		question: page.getByLabel('Question'),
