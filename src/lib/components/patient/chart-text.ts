@@ -1,4 +1,4 @@
-import { isInError } from '$lib/domain/bedside/amendments';
+import { isInError } from '$lib/domain/bedside/amended';
 import { isOneOf } from '$lib/domain/core/codes';
 import { SYMPTOMS } from '$lib/domain/bedside/codes';
 import type { SessionLine } from '$lib/domain/bedside/views';

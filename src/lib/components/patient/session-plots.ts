@@ -2,7 +2,7 @@
 import type { MarkShape, PlotEvent, PlotLimit, PlotPoint, PlotTick, Range } from '$lib/components/plot/plot';
 import { GRADE_WORDS } from '$lib/components/ui/grades';
 import { DRAWN, type Drawn, type KeptBar } from '$lib/domain/bedside/drawn';
-import { isInError } from '$lib/domain/bedside/amendments';
+import { isInError } from '$lib/domain/bedside/amended';
 import type { RuleId } from '$lib/domain/bedside/codes';
 import { isBeyond } from '$lib/domain/bedside/rules/bar';
 import type { SessionLine } from '$lib/domain/bedside/views';

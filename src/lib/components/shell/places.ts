@@ -88,6 +88,7 @@ const ICONS: Record<PlaceKey, IconDrawing> = {
 	accounts: UsersRound,
 	'closed-days': CalendarOff,
 	limits: Ruler,
+	'closed-days': CalendarOff,
 	phones: Smartphone
 };
 

@@ -1,4 +1,4 @@
-import type { SessionAmendment } from './amendments';
+import type { SessionAmendment } from './amended';
 import type { KeptBar } from './drawn';
 import type { Finding } from './finding';
 import type { Reading } from './forms';

@@ -1,5 +1,6 @@
 import { and, eq } from 'drizzle-orm';
-import { isInError, type AmendSession } from '$lib/domain/bedside/amendments';
+import { isInError } from '$lib/domain/bedside/amended';
+import type { AmendSession } from '$lib/domain/bedside/amendments';
 import { invalidField, Problem } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode } from '../access/access';

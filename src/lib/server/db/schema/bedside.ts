@@ -1,7 +1,7 @@
 import { index, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import type { KeptBar } from '../../../domain/bedside/drawn';
 import { SETS } from '../../../domain/bedside/codes';
-import { SESSION_AMENDMENTS } from '../../../domain/bedside/amendments';
+import { SESSION_AMENDMENTS } from '../../../domain/bedside/amended';
 import { RHYTHMS } from '../../../domain/core/codes';
 import { STERNUM_FINDINGS, WOUND_FINDINGS } from '../../../domain/wounds/codes';
 import { users } from './accounts';
