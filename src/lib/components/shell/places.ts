@@ -88,7 +88,6 @@ const ICONS: Record<PlaceKey, IconDrawing> = {
 	accounts: UsersRound,
 	'closed-days': CalendarOff,
 	limits: Ruler,
-	'closed-days': CalendarOff,
 	phones: Smartphone
 };
 
