@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { giveForm } from '$lib/components/clearances/decision';
+import { giveForm } from '$lib/components/clearances/decision-forms';
 import { admitForm } from '$lib/domain/episodes/admit-form';
 import { raiseForm } from '$lib/domain/escalations/forms';
 import { referForm } from '$lib/domain/referrals/forms';

@@ -1,16 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { clearanceLimits, type ClearanceLimits } from '$lib/domain/clearances/forms';
 import { CLEARANCE_KINDS, type ClearanceKind } from '$lib/domain/core/codes';
-import {
-	choicesOf,
-	fieldsOf,
-	giveForm,
-	limitsOf,
-	refuseForm,
-	wrongChoice,
-	type GiveFields,
-	type LimitChoice
-} from './decision';
+import { choicesOf, fieldsOf, limitsOf, wrongChoice, type LimitChoice } from './decision';
+import { giveForm, refuseForm, type GiveFields } from './decision-forms';
 
 describe('limitsOf', () => {
 	it.each<[Pick<GiveFields, 'limit' | 'maxMinutes' | 'other'>, ClearanceLimits | undefined]>([

@@ -1,36 +1,11 @@
-/** The decision form: what is chosen on the page, and the limits that come of it. Used by page and server alike. */
-import { z } from 'zod';
-import { shownMarks, type ClearanceLimits } from '$lib/domain/clearances/forms';
+/** The decision: what is chosen on the page, and the limits that come of it. Used by page and server alike. */
+import type { ClearanceLimits } from '$lib/domain/clearances/forms';
 import type { ClearanceKind } from '$lib/domain/core/codes';
-import { reason, text, typedDay } from '$lib/domain/core/fields';
 import { m } from '$lib/i18n/paraglide/messages';
+import type { GiveFields } from './decision-forms';
 
 export const LIMIT_CHOICES = ['60', '90', '120', 'one', 'two', 'none'] as const;
 export type LimitChoice = (typeof LIMIT_CHOICES)[number];
-
-/** What the decider had in view: the instant of the decision before this one, empty for none. */
-const seen = z.string().max(40, 'seen is an instant.').default('');
-/** The evidence they had in view; a form without it, kept from before it was asked for, is not held against it. */
-const shown = shownMarks.optional();
-
-export const giveForm = z.object({
-	limit: z.enum(LIMIT_CHOICES, `limit is one of ${LIMIT_CHOICES.join(', ')}.`).optional(),
-	maxMinutes: z
-		.number('Minutes: a whole number from 1 to 240.')
-		.int('Minutes: a whole number from 1 to 240.')
-		.min(1, 'Minutes: at least 1.')
-		.max(240, 'Minutes: at most 240.')
-		.optional(),
-	other: text('Other limit', 200).optional(),
-	reviewOn: typedDay('Review date').optional(),
-	note: text('Note', 1000).optional(),
-	seen,
-	shown
-});
-export type GiveFields = z.infer<typeof giveForm>;
-
-/** For everything that is not a yes: withhold, hold, withdraw. */
-export const refuseForm = z.object({ reason: reason('Reason'), seen, shown });
 
 /** The choices that are in view for a kind, the cautious one first chosen; none for kinds without a usual limit. */
 export function choicesOf(kind: ClearanceKind): { choices: LimitChoice[]; chosen: LimitChoice | null } {

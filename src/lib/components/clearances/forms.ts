@@ -1,5 +1,5 @@
 import type { SuperValidated } from 'sveltekit-superforms';
-import type { GiveFields } from './decision';
+import type { GiveFields } from './decision-forms';
 
 type ReasonFields = { reason: string; seen: string; shown?: string };
 

@@ -12,6 +12,9 @@ import type { Approach, Grade, Rhythm } from '../core/codes';
 import { parseRfc3339 } from '../core/instant';
 import { localTimeOf, type Zone } from '../core/time';
 
+/** Within how many minutes somebody is needed, proposed for a grade; null where the shift is enough. */
+export const NEEDED_WITHIN: Readonly<Record<Grade, number | null>> = { high: 5, medium: 30, low: null };
+
 /** What the nameboard knows of the patient. */
 export interface DraftRecord {
 	procedure: string | null;

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { GRADES, type Grade } from '../core/codes';
+import { GRADES } from '../core/codes';
 import { reason, text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { MINUTE } from '../core/time';
@@ -91,9 +91,6 @@ export const raiseForm = z
 		}
 	});
 export type RaiseFilled = z.output<typeof raiseForm>;
-
-/** Within how many minutes somebody is needed, proposed for a grade; null where the shift is enough. */
-export const NEEDED_WITHIN: Readonly<Record<Grade, number | null>> = { high: 5, medium: 30, low: null };
 
 /** The call that a filled form asks for, at the instant when it is sent. */
 export function callOf(filled: RaiseFilled, now: number): RaiseInput {

@@ -1,7 +1,8 @@
 import type { RequestEvent } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
-import { fieldsOf, giveForm, refuseForm } from '$lib/components/clearances/decision';
+import { fieldsOf } from '$lib/components/clearances/decision';
+import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
 import type { ClearanceView } from '$lib/domain/clearances/views';
 import { notFound } from '$lib/domain/core/errors';
 import type { PersonContext } from '$lib/server/context';

@@ -1,5 +1,6 @@
 import type { RequestEvent } from '@sveltejs/kit';
-import { giveForm, limitsOf, refuseForm, wrongChoice } from '$lib/components/clearances/decision';
+import { limitsOf, wrongChoice } from '$lib/components/clearances/decision';
+import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
 import { invalidField, type Problem } from '$lib/domain/core/errors';
 import { localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
