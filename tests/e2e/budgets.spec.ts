@@ -7,6 +7,11 @@ import { DESK, PHONE, seat, signIn } from './people';
 /** Script that a first page may load, compressed, and what any other may have beyond it. */
 const FIRST_KIB = 120;
 const MORE_KIB = 40;
+/**
+ * The bedside judges without a network, so it carries the rules, the limits and the catalogue of activities, and is over
+ * what other pages may have: it may shrink, and not grow.
+ */
+const BEDSIDE_KIB = 170;
 
 let product: Product;
 let episodeId: string;
@@ -56,7 +61,8 @@ test(`no other page has more than ${MORE_KIB} KiB beyond it`, async ({ browser }
 		heavy.push([path, Math.round(kib)]);
 		await context.close();
 	}
-	expect(heavy.filter(([, kib]) => kib > FIRST_KIB + MORE_KIB)).toEqual([]);
+	const most = (path: string) => (path.startsWith('/bedside/') ? BEDSIDE_KIB : FIRST_KIB + MORE_KIB);
+	expect(heavy.filter(([path, kib]) => kib > most(path))).toEqual([]);
 });
 
 for (const [size, viewport] of Object.entries({ phone: PHONE, desk: DESK })) {
