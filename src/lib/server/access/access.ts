@@ -1,4 +1,4 @@
-import { and, eq } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can, type Permission, type Subject } from '$lib/domain/access/can';
 import { Problem, notFound } from '$lib/domain/core/errors';
