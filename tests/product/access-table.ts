@@ -158,5 +158,5 @@ export const OPEN_FORMS: Record<string, OpenForm> = {
 	},
 	'/invite/[token]?/choose': { fields: { password: PASSWORD }, answer: 404 },
 	'/t/[token]': { fields: { deed: 'take' }, answer: 404 },
-	'/p/[token]': { fields: { deed: 'confirm', visit: 'none' }, answer: 404, fromNowhere: 404 }
+	'/p/[token]': { fields: { deed: 'confirm', visit: 'none', sequence: '0' }, answer: 404, fromNowhere: 404 }
 };

@@ -28,6 +28,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/patients/[id]': SEEING,
 	'/patients/[id]/refer': ['surgeon', 'physician'],
 	'/patients/[id]/move': ['coordinator', 'nurse', 'physician'],
+	'/patients/[id]/details': ['coordinator', 'nurse', 'physician', 'surgeon'],
 	'/patients/[id]/threads/[threadId]': SEEING,
 	'/patients/[id]/clearances': SEEING,
 	'/patients/[id]/clearances/[clearanceId]': SEEING,
