@@ -32,7 +32,7 @@ export function noteWound(
 				episodeId,
 				detail: { wound, sternum }
 			},
-			entries: threadId ? [{ threadId, kind: 'note', body }] : [],
+			entries: threadId ? [{ threadId, kind: 'event', body }] : [],
 			events: [{ topic: 'episode', kind: 'wound-noted', id: episodeId, episodeId }]
 		};
 	});

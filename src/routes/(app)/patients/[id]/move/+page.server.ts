@@ -33,6 +33,7 @@ export const actions: Actions = {
 		id: 'move',
 		schema: moveForm,
 		async run(context, { unit, bed, toldHolder }, event) {
+			requirePermission(context.actor, 'episode.move');
 			if (!toldHolder && (await read.openCall(context, idParam(event))) !== null) {
 				throw invalidField('/toldHolder', m.patient_move_tell_first());
 			}
