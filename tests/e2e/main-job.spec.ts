@@ -65,6 +65,8 @@ async function goTo(page: Page, place: 'Loose ends' | 'Ward'): Promise<void> {
 /** This journey's patient, from wherever one is. */
 async function openPatient(page: Page): Promise<void> {
 	await goTo(page, 'Ward');
+	// The page before it may have a loose end of the same name.
+	await expect(page).toHaveURL(/\/ward/);
 	await page.getByRole('link', { name: new RegExp(PATIENT) }).click();
 	await expect(page).toHaveURL(new RegExp(`/patients/${episodeId}$`));
 }
