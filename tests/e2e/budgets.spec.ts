@@ -93,7 +93,7 @@ for (const [size, viewport] of Object.entries({ phone: PHONE, desk: DESK })) {
 			const moved = await page.evaluate(() =>
 				(window as unknown as { shifts: number[] }).shifts.reduce((sum, each) => sum + each, 0)
 			);
-			// A fifth of what Web Vitals calls good (0.1): no line moves.
+			// What Web Vitals calls good.
 			expect(moved, `${path} jumps`).toBeLessThanOrEqual(0.1);
 		}
 		expect(foreign).toEqual([]);

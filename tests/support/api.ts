@@ -89,7 +89,11 @@ export async function admit(client: Client, more: Record<string, unknown> = {}):
 			sex: 'female',
 			mrn: `T ${randomUUID()}`
 		},
-		operation: { procedure: 'Bypass', approach: 'sternotomy', operatedAt: new Date(Date.now() - 4 * 86_400_000).toISOString() },
+		operation: {
+			procedure: 'Bypass',
+			approach: 'sternotomy',
+			operatedAt: new Date(Date.now() - 4 * 86_400_000).toISOString()
+		},
 		unit: 'Tern Ward',
 		bed: `X${beds}-${randomUUID().slice(0, 4)}`,
 		...more
