@@ -279,7 +279,8 @@ describe('the main job', () => {
 
 	it('a session with arm exercise and no clearance is 409 until it comes with its deviation', async () => {
 		const other = await admit(surgeon);
-		const times = { startedAt: '2026-01-02T10:00:00Z', endedAt: '2026-01-02T10:20:00Z', level: 5 };
+		const ago = (minutes: number) => new Date(Date.now() - minutes * 60_000).toISOString();
+		const times = { startedAt: ago(30), endedAt: ago(10), level: 5 };
 		const body = { ...session, ...times, activities: [{ code: 'arm-exercise', elevationDeg: 60 }] };
 		const refused = await therapist.post(`/api/episodes/${other}/sessions`, body);
 		expect([refused.status, refused.body.type]).toEqual([409, 'clearance-needed']);
