@@ -8,7 +8,7 @@ import { clock, day, type Reader } from '$lib/format';
 import { readingText } from '$lib/i18n/readings';
 import { m } from '$lib/i18n/paraglide/messages';
 import { SYMPTOM_WORDS } from '../bedside/words';
-import { OUTCOME_WORDS } from './words';
+import { outcomeWords } from './words';
 
 type Board = Pick<Nameboard, 'patient' | 'procedure'>;
 
@@ -36,7 +36,7 @@ export function chartText(session: SessionLine, { patient, procedure }: Board, r
 		during && m.patient_chart_during({ readings: during }),
 		m.patient_chart_after({ reading: readingText(session.after) }),
 		symptoms && m.patient_chart_symptoms({ symptoms }),
-		m.patient_chart_outcome({ outcome: OUTCOME_WORDS[session.outcome]() }),
+		m.patient_chart_outcome({ outcome: outcomeWords(session.outcome, session.findings) }),
 		...session.findings.filter(({ grade }) => grade !== 'note').map(({ reason }) => `- ${reason}`),
 		session.deviation && m.patient_session_deviation({ reason: session.deviation.reason }),
 		...session.amendments.map(({ body, by, at }) =>

@@ -11,7 +11,7 @@ import { dayAndClock, type Reader } from '$lib/format';
 import { localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
 import { barWords, edgeWords, MEASURE_WORDS, MOMENT_WORDS, tickDay, UNIT_WORDS } from './plot-words';
-import { OUTCOME_WORDS } from './words';
+import { outcomeWords } from './words';
 
 export interface SessionPlot {
 	key: Drawn;
@@ -189,10 +189,10 @@ function eventsOf(
 	reader: Reader
 ): PlotEvent[] {
 	const starts = drawn.map(({ startedAt }) => Date.parse(startedAt));
-	const outcomes = drawn.map(({ outcome }, at) => ({
+	const outcomes = drawn.map(({ outcome, findings }, at) => ({
 		at: starts[at] ?? 0,
 		x: at + WIDTH,
-		words: OUTCOME_WORDS[outcome]()
+		words: outcomeWords(outcome, findings)
 	}));
 	const calls = escalations.flatMap(({ raisedAt, grade }) => {
 		const at = Date.parse(raisedAt);

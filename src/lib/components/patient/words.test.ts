@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Precautions } from '$lib/domain/episodes/precautions';
-import { bewareWords, dayWords, DOT, heartWords } from './words';
+import { bewareWords, dayWords, DOT, findingWords, heartWords, outcomeWords } from './words';
 
 const reader = (now: string) => ({ zone: 'Europe/Dublin', now: Date.parse(now) });
 
@@ -13,6 +13,18 @@ describe('heartWords', () => {
 		[true, 'unheard of', 'rate-slowing drug · rhythm: not known']
 	])('%s and %s: %s', (drug, rhythm, words) => {
 		expect(heartWords(drug, rhythm).split(DOT).join(' · ')).toBe(words);
+	});
+});
+
+describe('the words of a stop', () => {
+	it.each([
+		['stop', 'before', 'do not start', 'do not start'],
+		['stop', 'during', 'stop', 'stop'],
+		['stop', 'after', 'stop', 'stop'],
+		['caution', 'before', 'caution', 'caution']
+	] as const)('a %s %s: %s, and the session: %s', (grade, reading, words, ofSession) => {
+		expect(findingWords({ grade, reading })).toBe(words);
+		expect(outcomeWords(grade, [{ grade, reading }])).toBe(ofSession);
 	});
 });
 

@@ -1,4 +1,6 @@
 import type { FindingGrade, Outcome } from '$lib/domain/bedside/codes';
+import type { Finding } from '$lib/domain/bedside/finding';
+import { gradeReadAs, outcomeReadAs, type ReadAs } from '$lib/domain/bedside/read-as';
 import type { Rhythm, VisitState } from '$lib/domain/core/codes';
 import { localDateOf } from '$lib/domain/core/time';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
@@ -25,18 +27,32 @@ export const VISIT_STATE_WORDS: Record<VisitState, () => string> = {
 	cancelled: m.patient_visit_cancelled
 };
 
-export const OUTCOME_WORDS: Record<Outcome, () => string> = {
+export const OUTCOME_WORDS: Record<ReadAs<Outcome>, () => string> = {
 	clear: m.patient_outcome_clear,
 	caution: m.patient_outcome_caution,
 	stop: m.patient_outcome_stop,
+	'do-not-start': m.patient_do_not_start,
 	incomplete: m.patient_outcome_incomplete
 };
 
-export const FINDING_WORDS: Record<FindingGrade, () => string> = {
+const FINDING_WORDS: Record<ReadAs<FindingGrade>, () => string> = {
 	stop: m.patient_finding_stop,
+	'do-not-start': m.patient_do_not_start,
 	caution: m.patient_finding_caution,
 	note: m.patient_finding_note
 };
+
+type Read = Pick<Finding, 'grade' | 'reading'>;
+
+/** How a session ended. What must not start was never stopped. */
+export function outcomeWords(outcome: Outcome, findings: readonly Read[]): string {
+	return OUTCOME_WORDS[outcomeReadAs(outcome, findings)]();
+}
+
+/** The grade of a finding. */
+export function findingWords(finding: Read): string {
+	return FINDING_WORDS[gradeReadAs(finding)]();
+}
 
 /** The drug that slows the heart and the rhythm: what a pulse must be read with. Not known is said, never left out. */
 export function heartWords(betaBlocked: boolean | null, rhythm: string | null): string {

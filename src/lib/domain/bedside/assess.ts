@@ -8,6 +8,7 @@ import type { Finding, Verdict } from './finding';
 import type { Assessment, Context, Symptom } from './forms';
 import { limitsFor, overrideLimits, setFor, type LimitSet, type LocalLimits } from './limits/limits';
 import { withPrescribed } from './limits/prescribed';
+import { reasonReadAs } from './read-as';
 import { RULES } from './rules/registry';
 import type { Facts, GradedSymptom } from './rules/rule';
 import { hasValues, placeReadings } from './timeline';
@@ -21,7 +22,7 @@ export function assess(input: Assessment, limits?: LimitSet): Verdict {
 	const facts = gather(input, limits);
 	const { set } = facts.limits;
 	const findings = RULES.flatMap((rule) => rule.judge(facts))
-		.map((found): Finding => ({ ...found, set }))
+		.map((found): Finding => ({ ...found, reason: reasonReadAs(found), set }))
 		.sort(byGravity);
 	return {
 		findings,

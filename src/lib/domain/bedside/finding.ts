@@ -4,7 +4,7 @@ import type { FindingGrade, Moment, Outcome, RuleId, SetName } from './codes';
 export interface Finding {
 	readonly rule: RuleId;
 	readonly grade: FindingGrade;
-	/** A stop on `before` reads 'do not start'. */
+	/** A stop on `before` reads 'do not start', see `read-as.ts`. */
 	readonly reading: Moment;
 	/** The number measured; the code of a symptom, rhythm or activity; null when it was not measured. */
 	readonly measured: number | string | null;

@@ -1,5 +1,7 @@
 import { z } from 'zod';
+import type { Outcome } from '../bedside/codes';
 import { instant } from '../bedside/form-fields';
+import type { ReadAs } from '../bedside/read-as';
 import { CLEARANCE_KINDS, type EscalationState, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
 import type { Precautions } from '../episodes/precautions';
@@ -78,9 +80,19 @@ export interface ClearanceEvidence {
 	wound?: WoundNote | null;
 	precautions?: Precautions;
 	/** The last ones, and all that were recorded since the ask or the decision before. */
-	sessions: { id: string; startedAt: string; outcome: string; findings: string[] }[];
+	sessions: EvidenceSession[];
 	/** Open calls for help, and those since the ask; missing in what was stored before they were kept. */
 	escalations?: EvidenceEscalation[];
+}
+
+/** A session as a decider is shown it. */
+export interface EvidenceSession {
+	id: string;
+	startedAt: string;
+	outcome: Outcome;
+	/** As it is read; missing in what was stored before it was kept. */
+	readAs?: ReadAs<Outcome>;
+	findings: string[];
 }
 
 /** A call for help as a decider is shown it. */

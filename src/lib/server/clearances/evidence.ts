@@ -1,6 +1,7 @@
 import { and, desc, eq, gt, inArray, or } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
+import { outcomeReadAs } from '$lib/domain/bedside/read-as';
 import type { ClearanceEvidence, EvidenceEscalation } from '$lib/domain/clearances/forms';
 import type { ShownEvidence } from '$lib/domain/clearances/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
@@ -86,14 +87,16 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 				sessions.map((session) => session.id)
 			)
 		);
-	return sessions.map((session) => ({
-		id: session.id,
-		startedAt: toRfc3339(session.startedAt),
-		outcome: session.outcome,
-		findings: found
-			.filter((finding) => finding.sessionId === session.id && finding.grade !== 'note')
-			.map((finding) => finding.reason)
-	}));
+	return sessions.map(({ id, startedAt, outcome }) => {
+		const own = found.filter((finding) => finding.sessionId === id);
+		return {
+			id,
+			startedAt: toRfc3339(startedAt),
+			outcome,
+			readAs: outcomeReadAs(outcome, own),
+			findings: own.filter(({ grade }) => grade !== 'note').map(({ reason }) => reason)
+		};
+	});
 }
 
 /** Open calls for help, and those raised or ended since, which may have been settled meanwhile. */

@@ -221,7 +221,7 @@ it('says what was measured, where, and against which limit', () => {
 		measured: 84,
 		limit: 90,
 		unit: 'mmHg',
-		reason: 'The systolic pressure before the session is 84 mmHg, under the limit of 90.',
+		reason: 'Do not start: the systolic pressure before the session is 84 mmHg, under the limit of 90.',
 		source: 'Critical Care Research and Practice 2020, early mobilisation in intensive care, tables 5 and 6',
 		set: 'strict',
 		version: '1'

@@ -25,7 +25,7 @@ describe('new-rhythm', () => {
 		const verdict = judge({ before: { rhythm: 'atrial-fibrillation' } });
 		expect(grades(verdict, 'new-rhythm')).toEqual(['stop before']);
 		expect(only(verdict, 'new-rhythm').reason).toBe(
-			'The rhythm before the session is atrial fibrillation; it was sinus rhythm.'
+			'Do not start: the rhythm before the session is atrial fibrillation; it was sinus rhythm.'
 		);
 	});
 

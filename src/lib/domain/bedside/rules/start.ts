@@ -10,10 +10,10 @@ import { plain } from '../numbers';
 import { CROSSING_WORDS, limitOf, overLimit, withoutLimit, type Rule } from './rule';
 
 const BARS = [
-	['vasopressorRising', 'a vasopressor is being raised'],
-	['balloonPump', 'a balloon pump is in place'],
-	['pacingDependent', 'the rhythm depends on temporary pacing'],
-	['bleeding', 'there is bleeding that is not controlled']
+	['vasopressorRising', 'A vasopressor is being raised'],
+	['balloonPump', 'A balloon pump is in place'],
+	['pacingDependent', 'The rhythm depends on temporary pacing'],
+	['bleeding', 'There is bleeding that is not controlled']
 ] as const satisfies readonly (readonly [keyof Context, string])[];
 
 export const startCheck: Rule = {
@@ -23,14 +23,7 @@ export const startCheck: Rule = {
 	sources: ['early-mobilisation'],
 	judge: ({ context }) =>
 		BARS.filter(([field]) => context[field] === true).map(([field, words]) =>
-			withoutLimit(
-				'start-check',
-				'stop',
-				'before',
-				field,
-				`Do not start: ${words}.`,
-				cite('early-mobilisation')
-			)
+			withoutLimit('start-check', 'stop', 'before', field, `${words}.`, cite('early-mobilisation'))
 		),
 	lacks: ({ context }) => BARS.some(([field]) => context[field] == null)
 };

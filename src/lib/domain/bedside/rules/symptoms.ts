@@ -56,9 +56,14 @@ function judgeSymptom(facts: Facts, { code, grade }: GradedSymptom): RuleFinding
 		return overLimit('symptom', 'stop', facts.stage, code, limit, reason);
 	}
 	const graded = grade === null ? '' : ` of grade ${plain(grade)}`;
-	const reason =
-		entry.grade === 'stop'
-			? `The patient has ${entry.word}${graded}: that is a reason to stop.`
-			: `The patient has ${entry.word}${graded}: go on with caution.`;
+	const reason = `The patient has ${entry.word}${graded}${adviceOf(entry, facts)}.`;
 	return withoutLimit('symptom', entry.grade, facts.stage, code, reason, cite(entry.source));
+}
+
+/** What follows. Before a start a stop says by itself that there must be none. */
+function adviceOf({ grade }: SymptomEntry, { stage }: Facts): string {
+	if (grade === 'stop') {
+		return stage === 'before' ? '' : ': that is a reason to stop';
+	}
+	return stage === 'before' ? ': start only with caution' : ': go on with caution';
 }
