@@ -1,6 +1,7 @@
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
 import { assess } from '$lib/domain/bedside/assess';
 import { barsOf } from '$lib/domain/bedside/bars';
+import type { Phase } from '$lib/domain/bedside/codes';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { Assessment, SessionBody } from '$lib/domain/bedside/forms';
 import { limitsOfPatient, setOfUnit, type LocalLayers } from '$lib/domain/bedside/limits/layers';
@@ -9,10 +10,11 @@ import { lackingClearance } from '$lib/domain/bedside/rules/clearances';
 import type { ClearanceKind } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { parseRfc3339 } from '$lib/domain/core/instant';
-import { accessEpisode, type EpisodeRow } from '../access/access';
+import { accessEpisode } from '../access/access';
 import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import { factsDuring, type EpisodeFacts } from '../episodes/facts';
+import { whereAt } from '../episodes/place';
 import { newId } from '../ids';
 import { askForSignature } from '../levels/sign-off';
 import { layersOf } from '../limits/queries';
@@ -49,15 +51,16 @@ export function recordSession(
 			startedAt: parseRfc3339(input.startedAt),
 			endedAt: parseRfc3339(input.endedAt)
 		});
-		const told = withRecord(input, episode, facts);
+		const was = await whereAt(tx, episode, parseRfc3339(input.endedAt));
+		const told = withRecord(input, was.phase, facts);
 		const lacking = lackingOf(told, facts);
 		if (lacking.length > 0 && !input.deviation) {
 			throw clearanceNeeded(lacking.map(({ kind }) => kind));
 		}
 		// The limits that held when the session ended, also where it is entered afterwards.
-		const layers = await layersOf(tx, episode, parseRfc3339(input.endedAt));
+		const layers = await layersOf(tx, { id: episodeId, unitId: was.unitId }, parseRfc3339(input.endedAt));
 		const judged = withRange(told, layers);
-		const limits = limitsThatJudge(judged.context, episode, layers);
+		const limits = limitsThatJudge(judged.context, was.phase, layers);
 		const verdict = assess(judged, limits);
 		const of = { id: newId(), episodeId, operationId: facts.operation?.id ?? null };
 		const threadId = await threadForDeed(tx, episodeId, context.actor);
@@ -66,12 +69,13 @@ export function recordSession(
 		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);
 		await carryOver(tx, context, episode, input, verdict);
 		await askForSignature(tx, context, episode, of.id, input);
-		return recorded(of, threadId, summaryText(input, verdict, lacking), verdict, lacking);
+		const body = summaryText(input, verdict, lacking, was.phase);
+		return recorded(of, threadId, body, verdict, lacking);
 	});
 }
 
-/** Clearances and limits on record count, not those that the client believes in. */
-function withRecord(input: SessionBody, episode: EpisodeRow, facts: EpisodeFacts): Assessment {
+/** Phase, clearances and limits on record count, not those that the client believes in. */
+function withRecord(input: SessionBody, phase: Phase, facts: EpisodeFacts): Assessment {
 	const clearances = facts.newest.map((row) => ({
 		kind: row.kind,
 		state: row.state,
@@ -80,7 +84,6 @@ function withRecord(input: SessionBody, episode: EpisodeRow, facts: EpisodeFacts
 	}));
 	const sternotomy = facts.operation ? facts.precautions.sternal : input.context.sternotomy;
 	const { limits: _believed, ...context } = input.context;
-	const phase = context.phase ?? episode.phase;
 	return { ...input, context: { ...context, phase, sternotomy, clearances, level: input.level } };
 }
 
@@ -94,12 +97,8 @@ function withRange(told: Assessment, { prescribed }: LocalLayers): Assessment {
 }
 
 /** The limits of unit, patient and range. */
-function limitsThatJudge(
-	{ set, phase }: Assessment['context'],
-	episode: EpisodeRow,
-	layers: LocalLayers
-): LimitSet {
-	return limitsOfPatient(set ?? setOfUnit(layers.unit, phase ?? episode.phase), layers);
+function limitsThatJudge({ set }: Assessment['context'], phase: Phase, layers: LocalLayers): LimitSet {
+	return limitsOfPatient(set ?? setOfUnit(layers.unit, phase), layers);
 }
 
 /** The clearances that what was done lacked, each once, with how they stood. */

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { assess } from '$lib/domain/bedside/assess';
+import type { Phase } from '$lib/domain/bedside/codes';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { session, type Changes } from '$lib/domain/bedside/testing/sample';
 import { summaryText } from './summary';
@@ -7,7 +8,7 @@ import { summaryText } from './summary';
 const NOT_MEASURED = { hr: null, sbp: null, dbp: null, spo2: null, rr: null, pain: null };
 
 /** The line of a session with these changes in its thread. */
-function line(changes: Changes): string {
+function line(changes: Changes, phase: Phase = 'inpatient'): string {
 	const body: SessionBody = {
 		...session(changes),
 		level: 3,
@@ -15,7 +16,7 @@ function line(changes: Changes): string {
 		endedAt: '2026-03-02T10:20:00Z',
 		deviation: null
 	};
-	return summaryText(body, assess(body), []);
+	return summaryText(body, assess(body), [], phase);
 }
 
 describe('the line of a session in its thread', () => {
@@ -36,5 +37,16 @@ describe('the line of a session in its thread', () => {
 		const text = line({ symptoms: ['angina'] });
 		expect(text).toContain('chest pain from the heart: that is a reason to stop.');
 		expect(text).not.toContain('Do not start');
+	});
+
+	it.each([
+		['inpatient', 'outpatient', 'Sent as inpatient; judged as outpatient, as the record has it.'],
+		['outpatient', 'inpatient', 'Sent as outpatient; judged as inpatient, as the record has it.'],
+		['outpatient', 'outpatient', null],
+		[null, 'outpatient', null]
+	] as const)('sent as %s on the record of an %s: %s', (said, phase, words) => {
+		const text = line({ context: { phase: said } }, phase);
+		expect(text.includes('as the record has it')).toBe(words !== null);
+		expect(text).toContain(words ?? '');
 	});
 });

@@ -1,4 +1,5 @@
 import { activityByCode } from '$lib/domain/bedside/activities/activities';
+import type { Phase } from '$lib/domain/bedside/codes';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { CLEARANCE_WORDS } from '$lib/i18n/labels';
@@ -7,8 +8,16 @@ import { stoodWords } from '$lib/i18n/standing';
 import { m } from '$lib/i18n/paraglide/messages';
 import type { Lacking } from './deviations';
 
-/** One session in the thread: what was done, the readings before and after, what the rules found. */
-export function summaryText(input: SessionBody, verdict: Verdict, lacking: readonly Lacking[]): string {
+/**
+ * One session in the thread: what was done, the readings before and after, what the rules found.
+ * @param phase the one on record, which judged it
+ */
+export function summaryText(
+	input: SessionBody,
+	verdict: Verdict,
+	lacking: readonly Lacking[],
+	phase: Phase
+): string {
 	const done = input.activities.filter((a) => !a.notDone).map((a) => activityByCode(a.code).name);
 	const lines = [
 		m.bedside_summary_head({ level: input.level, activities: done.join(', ') || m.bedside_no_activity() }),
@@ -18,8 +27,17 @@ export function summaryText(input: SessionBody, verdict: Verdict, lacking: reado
 	if (input.deviation) {
 		lines.push(deviationText(input.deviation.reason, lacking));
 	}
+	const said = input.context.phase;
+	if (said && said !== phase) {
+		lines.push(m.bedside_summary_phase({ said: PHASE_WORDS[said](), phase: PHASE_WORDS[phase]() }));
+	}
 	return lines.join(' ');
 }
+
+const PHASE_WORDS: Record<Phase, () => string> = {
+	inpatient: m.bedside_phase_inpatient,
+	outpatient: m.bedside_phase_outpatient
+};
 
 /** Which clearance was missing and how it stood, so that whoever put it on hold reads that it was not kept. */
 function deviationText(reason: string, lacking: readonly Lacking[]): string {

@@ -1,8 +1,9 @@
-import { and, eq, isNull, ne } from 'drizzle-orm';
+import { and, desc, eq, gt, isNull, lte, ne } from 'drizzle-orm';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { written } from '$lib/domain/episodes/identifiers';
+import type { EpisodeRow } from '../access/access';
 import type { Tx } from '../db';
-import { episodes, placements, type units } from '../db/schema';
+import { episodes, placements, units } from '../db/schema';
 import { newId } from '../ids';
 import { isBed } from './spelt';
 
@@ -73,4 +74,20 @@ export async function endPlacement(tx: Tx, episodeId: string, now: number): Prom
 /** A gym is where outpatients come to; everybody with a bed is in hospital. */
 export function phaseIn(unit: UnitRow): 'inpatient' | 'outpatient' {
 	return unit.kind === 'gym' ? 'outpatient' : 'inpatient';
+}
+
+/** The unit and the phase of a stay at an instant, as the record has them: a session may be entered after a move. */
+export async function whereAt(
+	tx: Tx,
+	{ id, unitId, phase }: Pick<EpisodeRow, 'id' | 'unitId' | 'phase'>,
+	at: number
+): Promise<Pick<EpisodeRow, 'unitId' | 'phase'>> {
+	const [left] = await tx
+		.select({ unit: units })
+		.from(placements)
+		.innerJoin(units, eq(units.id, placements.unitId))
+		.where(and(eq(placements.episodeId, id), lte(placements.fromAt, at), gt(placements.untilAt, at)))
+		.orderBy(desc(placements.fromAt))
+		.limit(1);
+	return left ? { unitId: left.unit.id, phase: phaseIn(left.unit) } : { unitId, phase };
 }
