@@ -200,9 +200,9 @@ describe('what a session says of the patient', () => {
 		expect(await episode()).toMatchObject({ rhythm, betaBlocked });
 	});
 
-	it('keeps the drug on record when the newest session does not know it', async () => {
+	it('knows no more than the newest session: not known takes the place of an older answer', async () => {
 		await record(heart('atrial-fibrillation', null));
-		expect(await episode()).toMatchObject({ rhythm: 'atrial-fibrillation', betaBlocked: true });
+		expect(await episode()).toMatchObject({ rhythm: 'atrial-fibrillation', betaBlocked: null });
 	});
 
 	it.each([

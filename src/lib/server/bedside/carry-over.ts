@@ -31,17 +31,15 @@ export async function carryOver(
 	const decides = can(context.actor, 'level.decide', { unitId: episode.unitId });
 	const told = { ...input, outcome: verdict.outcome };
 	const newest = !(await laterSession(tx, episode.id, startedAt));
-	const heart = {
-		rhythm: input.context.rhythm,
-		betaBlocked: input.context.betaBlocked ?? episode.betaBlocked
-	};
+	// 'Not known' is an answer too: an older one must not stand in its place.
+	const { rhythm, betaBlocked } = input.context;
 	await tx
 		.update(episodes)
 		.set({
 			// What somebody decided about today's level later than this stands; what was reached was reached.
 			level: decided || !decides ? episode.level : todayAfter(episode.level, told, isSenior(context.actor)),
 			levelReached: levelAfter(episode.levelReached, told),
-			...(newest ? heart : {})
+			...(newest ? { rhythm, betaBlocked } : {})
 		})
 		.where(eq(episodes.id, episode.id));
 }
