@@ -83,7 +83,7 @@ describe('a limit of a unit', () => {
 	});
 
 	it('judges the sessions recorded after it, and not those before', async () => {
-		expect(await judged(12)).toMatchObject([{ grade: 'stop', limit: 10, set: 'strict', version: '1' }]);
+		expect(await judged(12)).toMatchObject([{ grade: 'stop', limit: 10, set: 'strict', version: '2' }]);
 		await changeUnitLimit(as('admin', 20), unitId, FALL);
 		expect(await judged(12, 30)).toMatchObject([{ grade: 'caution', limit: 15, version: 'unit 1' }]);
 		// Entered afterwards: what held then judges it.
@@ -154,7 +154,7 @@ describe('a limit of a patient', () => {
 		await setPatientLimit(as(role, 1), episodeId, OWN);
 		expect(await judged(7)).toMatchObject([{ grade: 'stop', limit: 6, version: 'patient 1' }]);
 		const [kept] = await listSessions(db(), hospital.people.nurse, episodeId);
-		expect(kept?.limitVersion).toBe('strict/1+unit 1+patient 1');
+		expect(kept?.limitVersion).toBe('strict/2+unit 1+patient 1');
 		const rows = await db()
 			.select()
 			.from(findings)

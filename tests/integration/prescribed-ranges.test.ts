@@ -82,7 +82,7 @@ describe('a prescribed range', () => {
 		await prescribeRange(as('physician'), episodeId, RANGE);
 		await recordSession(as('therapist', 10), episodeId, session(125));
 		const [line] = await listSessions(db(), hospital.people.nurse, episodeId);
-		expect(line).toMatchObject({ limitSet: 'outpatient', limitVersion: 'outpatient/1+prescribed 1' });
+		expect(line).toMatchObject({ limitSet: 'outpatient', limitVersion: 'outpatient/2+prescribed 1' });
 		expect(line?.findings.find(({ rule }) => rule === 'heart-rate-ceiling')).toMatchObject({
 			grade: 'stop',
 			limit: 118,

@@ -53,7 +53,7 @@ describe('recordOf', () => {
 		] as const;
 		const own = { version: 1, key: 'pain-ceiling', value: 5, setBy: 'Orla', untilOn: TODAY } as const;
 		const { limits } = recordOf({ ...BOARD, limits: { unit, patient: [own] } }, TODAY);
-		expect(limits.version).toBe('guideline/1+unit 2+patient 1');
+		expect(limits.version).toBe('guideline/2+unit 2+patient 1');
 		expect(limits.limits['systolic-fall']?.value).toBe(15);
 		expect(limits.limits['pain-ceiling']?.value).toBe(5);
 	});

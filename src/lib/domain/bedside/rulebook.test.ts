@@ -11,7 +11,7 @@ describe('the rulebook', () => {
 		const limits = rows.flatMap((row) => row.limits.map(({ key, set }) => `${key} ${set}`));
 		expect(new Set(limits).size).toBe(limits.length);
 		expect(limits).toHaveLength(LIMIT_KEYS.length * 3);
-		expect(version).toBe('strict/1, guideline/1, outpatient/1');
+		expect(version).toBe('strict/2, guideline/2, outpatient/2');
 	});
 
 	it.each(rows.map((row) => [row.rule, row] as const))(
@@ -35,6 +35,6 @@ describe('the rulebook', () => {
 		const unit = rulebook({ strict: limitsFor('strict', { 'systolic-fall': 15 }) });
 		const fall = unit.rows.find(({ rule }) => rule === 'systolic-fall')?.limits[0];
 		expect(fall).toMatchObject({ value: 15, when: 'over', unit: 'mmHg', local: true });
-		expect(unit.version).toContain('strict/1+local');
+		expect(unit.version).toContain('strict/2+local');
 	});
 });

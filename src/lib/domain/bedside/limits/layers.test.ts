@@ -51,12 +51,12 @@ describe('setOfUnit', () => {
 
 describe('limitsOfUnit', () => {
 	it('are the defaults where the unit changed nothing', () => {
-		expect(limitsOfUnit('strict', []).version).toBe('strict/1');
+		expect(limitsOfUnit('strict', []).version).toBe('strict/2');
 	});
 
 	it('name who answers for a change, since when, and what the default was', () => {
 		const { version, limits } = limitsOfUnit('strict', [change(3, {})]);
-		expect(version).toBe('strict/1+unit 3');
+		expect(version).toBe('strict/2+unit 3');
 		expect(limits['systolic-fall']).toMatchObject({
 			value: 15,
 			version: 'unit 3',
@@ -75,7 +75,7 @@ describe('limitsOfUnit', () => {
 		expect([limits['systolic-fall']?.value, limits['systolic-fall']?.local, version]).toEqual([
 			10,
 			false,
-			'strict/1'
+			'strict/2'
 		]);
 	});
 
@@ -99,7 +99,7 @@ describe('limitsOfUnit', () => {
 describe('limitsOfPatient', () => {
 	it('come on top of those of the unit, and say until when', () => {
 		const set = limitsOfPatient('strict', { unit: [change(3, {})], patient: [own(2, 'systolic-fall', 8)] });
-		expect(set.version).toBe('strict/1+unit 3+patient 2');
+		expect(set.version).toBe('strict/2+unit 3+patient 2');
 		expect(set.limits['systolic-fall']).toMatchObject({
 			value: 8,
 			version: 'patient 2',
@@ -120,7 +120,7 @@ describe('limitsOfPatient', () => {
 	])('take a range of an outpatient with a top of %d', (hrMax, value, version) => {
 		const prescribed = { ...RANGE, hrMax };
 		const set = limitsOfPatient('outpatient', { unit: [], patient: [], prescribed });
-		expect(set.version).toBe('outpatient/1+prescribed 3');
+		expect(set.version).toBe('outpatient/2+prescribed 3');
 		expect(set.limits['heart-rate-ceiling']).toMatchObject({
 			value,
 			version,
@@ -148,7 +148,7 @@ describe('limitsOfPatient', () => {
 
 	it.each(['strict', 'guideline'] as const)('leave a range aside in the set %s', (set) => {
 		const laid = limitsOfPatient(set, { unit: [], patient: [], prescribed: RANGE });
-		expect(laid.version).toBe(`${set}/1`);
+		expect(laid.version).toBe(`${set}/2`);
 		expect(laid.limits['heart-rate-ceiling']?.value).toBe(130);
 	});
 

@@ -69,12 +69,12 @@ describe('changed limits', () => {
 	it('leave the set as it is when nothing is changed', () => {
 		const base = limitsFor('strict');
 		expect(overrideLimits(base, {})).toBe(base);
-		expect(base.version).toBe('strict/1');
+		expect(base.version).toBe('strict/2');
 	});
 
 	it('say that they are local, and what the default was', () => {
 		const { version, limits } = limitsFor('guideline', { 'systolic-fall': 15 });
-		expect(version).toBe('guideline/1+local');
+		expect(version).toBe('guideline/2+local');
 		expect(limits['systolic-fall']).toMatchObject({
 			value: 15,
 			when: 'over',
@@ -146,7 +146,7 @@ describe('changed limits', () => {
 		});
 		const verdict = assess(input, unit);
 		expect(only(verdict, 'systolic-fall').limit).toBe(12);
-		expect(verdict).toMatchObject({ set: 'strict', version: 'strict/1+local' });
+		expect(verdict).toMatchObject({ set: 'strict', version: 'strict/2+local' });
 	});
 
 	it('of the unit decide the set', () => {

@@ -3,12 +3,12 @@
  * a physician may change a value (`limits.ts`); what stands here is what holds until somebody does. A limit that
  * is null is off in that set.
  *
- * When a default changes, raise `DEFAULTS_VERSION`: findings are stored with the version that made them.
+ * When a default or a rule changes, raise `DEFAULTS_VERSION`: findings are stored with the version that made them.
  */
 import type { LimitKey, SetName } from '../codes';
 import type { SourceId } from './sources';
 
-export const DEFAULTS_VERSION = '1';
+export const DEFAULTS_VERSION = '2';
 
 /** How a measured value crosses a limit. */
 export type Crossing = 'over' | 'at' | 'under';

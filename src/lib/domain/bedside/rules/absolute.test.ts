@@ -224,7 +224,7 @@ it('says what was measured, where, and against which limit', () => {
 		reason: 'Do not start: the systolic pressure before the session is 84 mmHg, under the limit of 90.',
 		source: 'Critical Care Research and Practice 2020, early mobilisation in intensive care, tables 5 and 6',
 		set: 'strict',
-		version: '1'
+		version: '2'
 	});
 	expect(verdict.outcome).toBe('stop');
 });

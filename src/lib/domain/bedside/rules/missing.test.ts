@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import { grades, judge, only, REST } from '../testing/sample';
+import { SETS, type Outcome } from '../codes';
+import type { Reading } from '../forms';
+import { grades, judge, only, REST, type Changes } from '../testing/sample';
 
 const NEEDED = ['hr', 'sbp', 'dbp'] as const;
 const corridor = {
@@ -104,5 +106,62 @@ describe('in an irregular rhythm', () => {
 	it('is asked for as well when the rhythm came up in effort', () => {
 		const verdict = judge({ during: [REST], after: { rhythm: 'paced' } });
 		expect(grades(verdict, 'reading-missing')).toEqual(['note after']);
+	});
+});
+
+// Common practice, no published source: readings of two postures are not compared, and what is unknown is not normal.
+describe.each(SETS)('a posture that nobody stated, in the set %s', (set) => {
+	const lying: Reading = { ...REST, posture: 'lying' };
+	const standing: Reading = { ...REST, posture: 'standing' };
+	const unstated: Reading = { ...REST, posture: undefined };
+	const cases: [string, Changes, string[], Outcome][] = [
+		[
+			'in effort after an unsettled rise',
+			{ during: [standing, unstated], after: lying },
+			['note during'],
+			'incomplete'
+		],
+		[
+			'twice in effort is said once',
+			{ during: [standing, unstated, unstated], after: lying },
+			['note during'],
+			'incomplete'
+		],
+		['after effort', { during: [standing], after: unstated }, ['note after'], 'incomplete'],
+		[
+			'after a rise that has settled',
+			{ during: [{ ...standing, settled: true }], after: unstated },
+			[],
+			'clear'
+		],
+		[
+			'marked as settled itself',
+			{ during: [standing, { ...unstated, settled: true }], after: lying },
+			[],
+			'clear'
+		],
+		['without a rise', { during: [lying], after: unstated }, [], 'clear'],
+		['with nothing measured to compare', { during: [standing, { rpe: 9 }], after: lying }, [], 'clear'],
+		[
+			'with pressures of another source and no pulse',
+			{ during: [standing, { ...unstated, hr: null, bpSource: 'arterial' }], after: lying },
+			[],
+			'clear'
+		],
+		['stated', { during: [standing], after: standing }, [], 'clear']
+	];
+
+	it.each(cases)('%s', (_what, changes, found, outcome) => {
+		const verdict = judge({ context: { set }, before: lying, ...changes });
+		expect(grades(verdict, 'reading-missing')).toEqual(found);
+		expect(verdict.outcome).toBe(outcome);
+	});
+
+	it('is compared with no other posture, however far the pressure fell', () => {
+		const after = { ...unstated, sbp: 100, dbp: 66 };
+		const verdict = judge({ context: { set }, before: lying, during: [standing], after });
+		expect(grades(verdict, 'systolic-fall')).toEqual([]);
+		expect(verdict.notJudged).toContain('systolic-fall');
+		expect(verdict.outcome).toBe('incomplete');
 	});
 });
