@@ -3,6 +3,12 @@ import { SETS, type Outcome } from '../codes';
 import type { Reading } from '../forms';
 import { grades, judge, only, REST, type Changes } from '../testing/sample';
 
+/*
+ * What is needed before and after, that a pressure missing after walking cautions, and that what is missing is not
+ * normal: common practice, no published source. That exertion is needed where the pulse says little: Rostagno, on the
+ * rhythms after surgery (published as an abstract); what follows from it: common practice, no published source.
+ */
+
 const NEEDED = ['hr', 'sbp', 'dbp'] as const;
 const corridor = {
 	clearances: ['corridor' as const, 'out-of-bed' as const, 'stairs' as const, 'treadmill' as const]

@@ -3,6 +3,12 @@ import { ACTIVITIES } from '../activities/activities';
 import type { ActivityDone, Context } from '../forms';
 import { grades, judge, only } from '../testing/sample';
 
+/*
+ * The passive set, the cough of the awake, the spirometer once the tube is out, stairs with a helper: common practice,
+ * no published source. That a rate-slowing drug blunts the pulse: Keteyian 2023 (published); that 'not known' is judged
+ * as taken: common practice, no published source.
+ */
+
 const done = (code: ActivityDone['code'], more: Partial<ActivityDone> = {}): ActivityDone[] => [
 	{ code, ...more }
 ];

@@ -3,6 +3,12 @@ import type { SetName } from '../codes';
 import type { Reading } from '../forms';
 import { grades, judge, only, REST } from '../testing/sample';
 
+/*
+ * Systolic, a fall of over 10 mmHg with rising work: American Family Physician 2017, reasons to end a stress test
+ * (published). Heart rate, a fall of over 10: common practice, no published source. Caution from 80 % of a limit on in
+ * the strict set: common practice, no published source.
+ */
+
 type Grade = 'stop' | 'caution' | null;
 
 const RULES = [

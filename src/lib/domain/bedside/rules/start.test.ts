@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { grades, judge, only } from '../testing/sample';
 
+// Critical Care Research and Practice 2020, early mobilisation in intensive care, table 6 (published).
 const BARS = ['vasopressorRising', 'balloonPump', 'pacingDependent', 'bleeding'] as const;
 
 describe('start-check', () => {
@@ -24,6 +25,7 @@ describe('start-check', () => {
 });
 
 describe('temperature-ceiling', () => {
+	// 38.5: early mobilisation 2020, table 5 (published). 38: BMJ Open, table of contraindications (published).
 	it.each([
 		[38, []],
 		[38.1, ['caution before']],
@@ -36,6 +38,7 @@ describe('temperature-ceiling', () => {
 		}
 	});
 
+	// Common practice, no published source.
 	it('is unjudged when nobody took it', () => {
 		expect(judge({ context: { temperature: undefined } }).notJudged).toEqual(['temperature-ceiling']);
 	});

@@ -3,17 +3,22 @@ import { SYMPTOMS, type SymptomCode } from '../codes';
 import { grades, judge, only } from '../testing/sample';
 
 const STOPS: SymptomCode[] = [
+	// Inpatient stop criteria as given in study notes (secondary).
 	'angina',
 	'dizziness',
 	'light-headedness',
 	'fainting',
-	'confusion',
+	// Heart Online, exercise following cardiac interventions (published).
 	'sternal-click',
+	// Critical Care Research and Practice 2020, early mobilisation, table 6 (published).
+	'new-bleeding',
+	// Common practice, no published source.
+	'confusion',
 	'pallor',
 	'distress',
-	'new-bleeding',
 	'line-dislodged'
 ];
+/** Common practice, no published source. */
 const CAUTIONS = SYMPTOMS.filter((code) => !STOPS.includes(code));
 
 describe('symptom', () => {
@@ -33,6 +38,7 @@ describe('symptom', () => {
 		}
 	});
 
+	// The scale of breathlessness from 1 to 4: ACSM, from memory. That grade 3 stops: common practice, no published source.
 	it.each([
 		[1, 'caution'],
 		[2, 'caution'],
@@ -68,6 +74,7 @@ describe('symptom', () => {
 		});
 	});
 
+	// Common practice, no published source.
 	it('before anything was done reads as a reason not to start', () => {
 		const nothing = { hr: null, sbp: null, dbp: null, spo2: null, rr: null, pain: null };
 		const verdict = judge({ symptoms: ['angina'], during: [], after: nothing });
