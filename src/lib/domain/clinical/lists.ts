@@ -126,7 +126,12 @@ export const CHECKS: readonly CheckEntry[] = [
 		what: 'Response rules, properties',
 		values:
 			'a finding never disappears when a reading gets worse, a missing reading never makes an outcome clear, the order of what has no order does not matter',
-		tests: [`${BEDSIDE}/assess.property.test.ts`]
+		tests: [
+			`${BEDSIDE}/properties/worse.test.ts`,
+			`${BEDSIDE}/properties/answers.test.ts`,
+			`${BEDSIDE}/properties/context.test.ts`,
+			`${BEDSIDE}/properties/order.test.ts`
+		]
 	},
 	{
 		what: 'Text messages',

@@ -6,6 +6,7 @@ import {
 	AIRWAYS,
 	ASSISTANCE,
 	LIMIT_KEYS,
+	PHASES,
 	POSTURES,
 	PRESSURE_SOURCES,
 	SETS,
@@ -52,8 +53,12 @@ export const anyReading: fc.Arbitrary<Reading> = fc
 		dbp: half === 'sbp' ? undefined : pressure?.[1]
 	}));
 
+/** Answered with no mostly, not at all sometimes, with yes now and then: a yes hides every other outcome. */
+const startCheck = fc.constantFrom(undefined, null, false, false, false, false, false, false, true);
+
 const anyContext: fc.Arbitrary<Context> = fc.record({
-	set: fc.constantFrom(...SETS),
+	set: maybe(fc.constantFrom(...SETS)),
+	phase: maybe(fc.constantFrom(...PHASES)),
 	betaBlocked: fc.constantFrom(true, false, null),
 	rhythm: fc.constantFrom('sinus' as const, 'sinus' as const, ...RHYTHMS),
 	sternotomy: fc.boolean(),
@@ -61,8 +66,10 @@ const anyContext: fc.Arbitrary<Context> = fc.record({
 	conscious: fc.boolean(),
 	followsCommands: maybe(fc.boolean()),
 	airway: maybe(fc.constantFrom(...AIRWAYS)),
-	balloonPump: maybe(fc.constant(false)),
-	bleeding: fc.constantFrom(undefined, false, false, false, true),
+	vasopressorRising: startCheck,
+	balloonPump: startCheck,
+	pacingDependent: startCheck,
+	bleeding: startCheck,
 	temperature: maybe(about(36, 40)),
 	clearances: maybe(
 		fc.array(
@@ -175,6 +182,9 @@ const calmReading: fc.Arbitrary<Reading> = fc.record({
 export const calmSession: fc.Arbitrary<Assessment> = fc.record({
 	context: anyContext.map((context): Context => ({
 		...context,
+		vasopressorRising: false,
+		balloonPump: false,
+		pacingDependent: false,
 		bleeding: false,
 		temperature: 36.9,
 		prescribed: undefined

@@ -38,6 +38,11 @@ function near(bars: Bars, key: string, value: number, set: string): boolean {
 
 const NO_LAYERS: OracleLayers = { unit: [], patient: [] };
 
+/** The set that judges where nobody says which: outpatients have one of their own. */
+function setOf({ context: { set, phase } }: Assessment): string {
+	return set ?? (phase === 'outpatient' ? 'outpatient' : 'strict');
+}
+
 /**
  * The findings as `rule grade reading`, without repeats, and the outcome.
  * @param set the one that judges; left out, that of the context
@@ -45,7 +50,7 @@ const NO_LAYERS: OracleLayers = { unit: [], patient: [] };
 export function workedOut(
 	input: Assessment,
 	layers: OracleLayers = NO_LAYERS,
-	set = `${input.context.set}`
+	set = setOf(input)
 ): { found: Set<string>; outcome: string } {
 	const found = new Set<string>();
 	const bars = barsOf(input, set, layers);
