@@ -2,15 +2,12 @@ import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { sessionBody } from '$lib/domain/bedside/forms';
 import { ROLES } from '$lib/domain/core/codes';
-import type { WordActivity } from '$lib/domain/limits/forms';
 import { recordSession } from '$lib/server/bedside/actions';
 import { listSessions } from '$lib/server/bedside/queries';
 import { db } from '$lib/server/db';
 import { audit, findings, units } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
-import { listActivities } from '$lib/server/limits/activities';
-import { wordActivity } from '$lib/server/limits/activity-actions';
 import { endPatientLimit, setPatientLimit } from '$lib/server/limits/patient-actions';
 import { patientLimitsOf, unitLimitsOf } from '$lib/server/limits/queries';
 import { changeUnitLimit, chooseUnitSet } from '$lib/server/limits/unit-actions';
@@ -245,39 +242,4 @@ it('a client that believes in other limits is judged by those on record', async 
 	const believed = { ...body, context: { ...body.context, limits: { 'systolic-fall': 40 } } };
 	const { result } = await recordSession(as('therapist', 10), episodeId, believed);
 	expect(result.findings.find(({ rule }) => rule === 'systolic-fall')).toMatchObject({ limit: 10 });
-});
-
-describe('an activity in the words of a unit', () => {
-	const lines = {
-		dose: { minutes: [5, 6], repetitions: null, timesADay: [3, 4], words: '5 to 6 minutes' },
-		howTo: ['Slowly.'],
-		watch: ['The pulse.'],
-		never: ['Never alone.']
-	} satisfies WordActivity['lines'];
-	const WORDED: WordActivity = { code: 'hall-walk', lines, ...AGREED };
-	const entry = async () => (await listActivities(db(), unitId)).find(({ code }) => code === 'hall-walk');
-
-	it('stands at the bedside, with who answers for it, and goes back to the catalogue', async () => {
-		await wordActivity(as('admin'), unitId, WORDED);
-		expect(await entry()).toMatchObject({ howTo: ['Slowly.'], local: { version: 1, ...AGREED } });
-		const board = await getNameboard(db(), hospital.people.nurse, episodeId, hospital.now);
-		expect(board.wordings).toMatchObject([{ code: 'hall-walk', version: 1 }]);
-		await wordActivity(as('admin', 1), unitId, { ...WORDED, lines: null });
-		expect((await entry())?.local).toBeNull();
-	});
-
-	it('of another unit stays there', async () => {
-		await wordActivity(as('admin'), unitId, WORDED);
-		const elsewhere = await listActivities(db(), hospital.units.ward);
-		expect(elsewhere.every(({ local }) => local === null)).toBe(true);
-	});
-
-	it('is refused where there is nothing to go back from, for other roles, and for no unit', async () => {
-		const reset = { ...WORDED, lines: null };
-		await expect(wordActivity(as('admin'), unitId, reset)).rejects.toMatchObject({ code: 'invalid' });
-		await expect(wordActivity(as('physician'), unitId, WORDED)).rejects.toMatchObject({
-			code: 'not-allowed'
-		});
-		await expect(wordActivity(as('admin'), newId(), WORDED)).rejects.toMatchObject({ code: 'not-found' });
-	});
 });

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { marksOf, newsSince, type EvidenceNews } from './news';
 import type { ShownEvidence } from './views';
 
-const SESSION = { id: 's1', startedAt: '2026-03-02T10:00:00.000Z', outcome: 'clear', findings: [] };
+const SESSION = { id: 's1', startedAt: '2026-03-02T10:00:00.000Z', outcome: 'clear' as const, findings: [] };
 const CALL = {
 	id: 'e1',
 	grade: 'high',
