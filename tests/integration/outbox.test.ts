@@ -197,26 +197,27 @@ describe('what does not go through', () => {
 		expect((await rowOf(second)).state).toBe('accepted');
 	});
 
-	it('sends a reminder of unknown fate again only once while the gateway cannot be asked', async () => {
-		const id = await reminder();
-		sms.script = [unknown(), unknown()];
-		sms.found = [null, null, ['SM-after-all']];
-		const states: string[] = [];
-		for (let round = 0; round < 4; round += 1) {
-			await worker().settle();
-			const row = await rowOf(id);
-			states.push(row.state);
-			now = row.nextAt;
+	it.each([
+		['reminder', 1, ['ECONNRESET', 'not-looked-up', 'not-looked-up', 'looked-up']],
+		['answer', 2, ['ECONNRESET', 'ECONNRESET', 'not-looked-up', 'looked-up']]
+	] as const)(
+		'while the gateway cannot be asked, a message of unknown fate (%s) goes out so often: %i',
+		async (kind, times, codes) => {
+			const id = await reminder({ kind });
+			sms.script = [unknown(), unknown()];
+			sms.found = [null, null, [`SM-of-${kind}`]];
+			const states: string[] = [];
+			for (let round = 0; round < 4; round += 1) {
+				await worker().settle();
+				const row = await rowOf(id);
+				states.push(row.state);
+				now = row.nextAt;
+			}
+			expect(sms.sent).toHaveLength(times);
+			expect(states).toEqual(['ready', 'ready', 'ready', 'accepted']);
+			expect((await attemptsOf(id)).map(({ code }) => code)).toEqual(codes);
 		}
-		expect(sms.sent).toHaveLength(2);
-		expect(states).toEqual(['ready', 'ready', 'ready', 'accepted']);
-		expect((await attemptsOf(id)).map(({ code }) => code)).toEqual([
-			'ECONNRESET',
-			'ECONNRESET',
-			'not-looked-up',
-			'looked-up'
-		]);
-	});
+	);
 
 	it('sends a call for help of unknown fate again each time', async () => {
 		const { id } = await alertTo(hospital.people.nurse.id);

@@ -98,11 +98,25 @@ async function lookedUp(row: OutboxRow, message: Outgoing, channel: Channel): Pr
 		const id = found.find((candidate) => !known.has(candidate));
 		return id === undefined ? null : { outcome: { kind: 'accepted', id }, code: 'looked-up' };
 	}
-	const sentBlind = attempts.filter(({ outcome, code }) => outcome === 'unknown' && code !== NOT_LOOKED_UP);
-	// Silence is the harm, a second copy a nuisance: a call for help goes out again, all else once.
-	return row.kind === 'escalation' || sentBlind.length < 2
+	const sent = attempts.filter(({ outcome, code }) => outcome === 'unknown' && code !== NOT_LOOKED_UP);
+	return sent.length <= blindRepeats(row)
 		? null
 		: { outcome: { kind: 'unknown', reason: 'no-answer' }, code: NOT_LOOKED_UP };
+}
+
+/**
+ * How often a message whose fate is unknown goes out again while the gateway cannot be asked. Silence is the harm in a
+ * call for help, a second copy a nuisance. A reminder has days to ask again, and nobody is reminded twice.
+ */
+function blindRepeats({ kind }: OutboxRow): number {
+	switch (kind) {
+		case 'escalation':
+			return Infinity;
+		case 'reminder':
+			return 0;
+		default:
+			return 1;
+	}
 }
 
 /** What the work answers, or the fallback when it takes too long. */

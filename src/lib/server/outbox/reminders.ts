@@ -27,10 +27,13 @@ export async function dropWaiting(tx: Tx, visitId: string, reason: string): Prom
 	return Promise.all(dropped.map((row) => messageEvent(tx, row, 'cancelled')));
 }
 
-/** Give the waiting reminders of a visit another text: who has said yes is not asked again. */
+/**
+ * Give the reminders of a visit that nobody has tried to send another text: who has said yes is not asked again. One
+ * that was tried keeps its words, because by them the gateway is asked whether it has gone through.
+ */
 export async function rewordReminders(tx: Tx, visitId: string, body: string): Promise<void> {
 	await tx
 		.update(outbox)
 		.set({ body })
-		.where(waitingOf(visitId, ['reminder']));
+		.where(and(waitingOf(visitId, ['reminder']), eq(outbox.attempts, 0)));
 }
