@@ -73,7 +73,7 @@ const YES: Record<string, (visit: Booked, now: number) => Promise<unknown>> = {
 	'on the page': async ({ id, episodeId }, now) => {
 		const { result } = await sendPage(contextOf(hospital.people.coordinator, now), episodeId, 'sms');
 		const holder = { actor: null, now, address: '127.0.0.1', key: null };
-		const deed = { deed: 'confirm', visit: id, sequence: 0, why: '' } as const;
+		const deed = { deed: 'confirm', visit: id, sequence: 0, why: '', key: '' } as const;
 		return answerOnPage(holder, linkToken(result.id), deed);
 	}
 };

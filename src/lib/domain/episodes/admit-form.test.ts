@@ -12,6 +12,7 @@ const FILLED = {
 	email: 'ide@post.example',
 	mailConsent: true,
 	language: 'es',
+	zone: '',
 	confirmName: false,
 	unit: 'Tern Ward',
 	bed: 'T4',
@@ -36,6 +37,8 @@ describe('admitForm', () => {
 		[{ birthDate: '5 9 1958', operatedOn: '1/7/2026' }, []],
 		[{ birthDate: '1958' }, ['birthDate']],
 		[{ sex: '' }, ['sex']],
+		[{ zone: 'Europe/Dublin' }, []],
+		[{ zone: 'Dublin' }, ['zone']],
 		[{ mrn: 'x'.repeat(40) }, []],
 		[{ mrn: 'x'.repeat(41) }, ['mrn']],
 		[{ unit: '' }, ['unit']],
@@ -94,6 +97,14 @@ describe('toAdmission', () => {
 	it('does not take a consent away because a box is empty', () => {
 		const body = admitBody.parse(toAdmission({ ...FILLED, smsConsent: false }, 'Europe/Dublin'));
 		expect(body.patient.smsConsent).toBeUndefined();
+	});
+
+	it.each([
+		['', undefined],
+		['America/New_York', 'America/New_York']
+	])('the zone "%s" is passed on as %s', (zone, passed) => {
+		const body = admitBody.parse(toAdmission({ ...FILLED, zone }, 'Europe/Dublin'));
+		expect(body.patient.zone).toBe(passed);
 	});
 
 	it('asks no bed of a gym and passes on a confirmed name', () => {

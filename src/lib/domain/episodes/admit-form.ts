@@ -8,8 +8,9 @@ import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { readDate, readTime } from '../core/typed-date';
 import { MESSAGE_LANGUAGES } from '../messages/templates/wording';
-import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
+import { instantOf, isLocalDate, isLocalTime, isZone, type Zone } from '../core/time';
 import type { AdmitInput } from './forms';
+import { noZone } from './operation';
 
 /** What is known about a drug that slows the heart: three answers, because not knowing is one. */
 export const DRUG_ANSWERS = ['yes', 'no', 'unknown'] as const;
@@ -41,6 +42,12 @@ export const typedTime = z
 	.max(20, 'The time of the operation has at most 20 characters.')
 	.transform((typed) => readTime(typed) ?? typed);
 
+/** Where somebody is by the clock, chosen from a list; empty for no choice. */
+const optionalZone = z
+	.string()
+	.default('')
+	.refine((value) => value === '' || isZone(value), { error: ({ input }) => noZone(input) });
+
 export const admitForm = z
 	.object({
 		name: text("The patient's name", 120).default(''),
@@ -56,6 +63,8 @@ export const admitForm = z
 		email: line('The e-mail address', 254),
 		mailConsent: z.boolean().default(false),
 		language: known(MESSAGE_LANGUAGES, 'The language').default('en'),
+		/** Empty for what is on record, which for a new patient is the hospital's. */
+		zone: optionalZone,
 		unit: z.string().min(1, 'Unit: choose one.').max(64).default(''),
 		/** Empty for a gym; whether the unit has beds knows the server. */
 		bed: line('The bed', 12),
@@ -109,7 +118,8 @@ export function toAdmission(form: AdmitForm, zone: Zone): Record<keyof AdmitInpu
 			smsConsent: form.smsConsent || undefined,
 			email: form.email || undefined,
 			mailConsent: form.mailConsent || undefined,
-			language: form.language || undefined
+			language: form.language || undefined,
+			zone: form.zone || undefined
 		},
 		operation: form.procedure
 			? {

@@ -32,7 +32,9 @@ const patient = z.strictObject({
 	language: contactBody.shape.language,
 	smsConsent: contactBody.shape.smsConsent,
 	email: contactBody.shape.email.unwrap().unwrap().optional(),
-	mailConsent: contactBody.shape.mailConsent
+	mailConsent: contactBody.shape.mailConsent,
+	/** The hospital's where it is left out. */
+	zone: contactBody.shape.zone
 });
 
 export const admitBody = z.strictObject({

@@ -14,7 +14,8 @@ export const PATIENT_FIELDS = [
 	'language',
 	'smsConsent',
 	'email',
-	'mailConsent'
+	'mailConsent',
+	'zone'
 ] as const;
 export type PatientField = (typeof PATIENT_FIELDS)[number];
 

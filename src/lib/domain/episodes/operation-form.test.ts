@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { contactBody } from './operation';
 import { contactForm, operationForm, toContact, toOperation } from './operation-form';
 
 const FILLED = {
@@ -49,9 +50,24 @@ describe('contactForm', () => {
 		['', null],
 		[' 086 123 4567 ', '086 123 4567']
 	])('of "%s" keeps %s', (phone, kept) => {
-		expect(toContact(contactForm.parse({ phone, smsConsent: true }))).toEqual({
+		const form = { phone, smsConsent: true, language: 'es', zone: 'Europe/Dublin' };
+		expect(contactBody.parse(toContact(contactForm.parse(form)))).toEqual({
 			phone: kept,
-			smsConsent: true
+			smsConsent: true,
+			email: null,
+			mailConsent: false,
+			language: 'es',
+			zone: 'Europe/Dublin'
 		});
+	});
+
+	it.each(['', 'Dublin', '+01:00', 'Europe/Atlantis'])('refuses the zone "%s" and says so', (zone) => {
+		const { error } = contactForm.safeParse({ language: 'en', zone });
+		expect(error?.issues).toMatchObject([
+			{
+				path: ['zone'],
+				message: `zone is '${zone}': it must be the name of a time zone such as Europe/Dublin.`
+			}
+		]);
 	});
 });

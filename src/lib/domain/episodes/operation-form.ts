@@ -5,7 +5,7 @@ import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
 import { chosen, line, typedDay, typedTime } from './admit-form';
-import type { Contact, RecordOperation } from './operation';
+import { language, zone, type Contact, type RecordOperation } from './operation';
 
 /** Whether the record is put right, or gets a further operation. */
 export const OPERATION_DEEDS = ['corrects', 'further'] as const;
@@ -37,10 +37,15 @@ export function toOperation(form: OperationForm, known: string | null, zone: Zon
 
 export const contactForm = z.object({
 	phone: line('The telephone number', 30),
-	smsConsent: z.boolean().default(false)
+	smsConsent: z.boolean().default(false),
+	email: line('The e-mail address', 254),
+	mailConsent: z.boolean().default(false),
+	language: language.default('en'),
+	zone: zone.default('')
 });
+export type ContactForm = z.output<typeof contactForm>;
 
-/** An empty number takes away the one on record. */
-export function toContact(form: z.output<typeof contactForm>): Contact {
-	return { phone: form.phone || null, smsConsent: form.smsConsent };
+/** An empty number or address takes away the one on record. */
+export function toContact({ phone, email, ...rest }: ContactForm): Record<keyof Contact, unknown> {
+	return { ...rest, phone: phone || null, email: email || null };
 }

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { APPROACHES } from '../core/codes';
 import { text } from '../core/fields';
+import { isZone } from '../core/time';
 
 /** The parts of an operation's record that can be corrected. */
 export const OPERATION_FIELDS = ['procedure', 'approach', 'operatedAt', 'surgeonId'] as const;
@@ -33,15 +34,28 @@ export const recordOperationBody = operation.extend({
 });
 export type RecordOperation = z.infer<typeof recordOperationBody>;
 
-/** The number, language and consent by which a patient is reached; what is left out stays as it is. */
+/** What is said of a zone that nobody knows. */
+export function noZone(value: unknown): string {
+	const shown = typeof value === 'string' ? `'${value.slice(0, 60)}'` : 'no text';
+	return `zone is ${shown}: it must be the name of a time zone such as Europe/Dublin.`;
+}
+
+/** Where a patient is by the clock, by the name of the time zone database. */
+export const zone = z
+	.string({ error: ({ input }) => noZone(input) })
+	.refine(isZone, { error: ({ input }) => noZone(input) });
+
+/** The tag of the language in which a patient is written to. */
+export const language = z.string().regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.');
+
+/** The number, language, zone and consent by which a patient is reached; what is left out stays as it is. */
 export const contactBody = z.strictObject({
 	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').nullish(),
-	language: z
-		.string()
-		.regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language is a tag like en or es.')
-		.optional(),
+	language: language.optional(),
 	smsConsent: z.boolean('The consent to text messages is true or false.').optional(),
 	email: z.email('The e-mail address is one address, such as name@post.example.').max(254).nullish(),
-	mailConsent: z.boolean('The consent to mails is true or false.').optional()
+	mailConsent: z.boolean('The consent to mails is true or false.').optional(),
+	/** Texts come at the daytime of this zone. */
+	zone: zone.optional()
 });
 export type Contact = z.infer<typeof contactBody>;

@@ -99,10 +99,21 @@ export interface VisitLine {
 	state: VisitState;
 }
 
+/** How a patient is reached, and at whose daytime. */
+export interface PatientContact {
+	phone: string | null;
+	language: string;
+	smsConsent: boolean;
+	email: string | null;
+	mailConsent: boolean;
+	zone: string;
+}
+
 /** Everything on the nameboard of one patient. */
 export interface Nameboard {
 	id: string;
-	patient: PatientLine & { phone?: string | null; language?: string; smsConsent?: boolean };
+	/** With the contact for those who may use it. */
+	patient: PatientLine & Partial<PatientContact>;
 	unit: string;
 	unitId: string;
 	bed: string | null;

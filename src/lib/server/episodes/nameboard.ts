@@ -4,7 +4,7 @@ import { can } from '$lib/domain/access/can';
 import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
-import type { Nameboard } from '$lib/domain/episodes/views';
+import type { Nameboard, PatientContact } from '$lib/domain/episodes/views';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { unseenDeviations } from '../bedside/deviations';
 import { listClearances } from '../clearances/queries';
@@ -44,9 +44,7 @@ export async function getNameboard(
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
 	}
-	const contact = can(person, 'contact.read', { unitId: episode.unitId })
-		? { phone: who.patient.phone, language: who.patient.language, smsConsent: who.patient.smsConsent }
-		: {};
+	const contact = can(person, 'contact.read', { unitId: episode.unitId }) ? contactOf(who.patient) : {};
 	return {
 		id: episodeId,
 		patient: { ...patientLine(who.patient), ...contact },
@@ -77,6 +75,11 @@ export async function getNameboard(
 		visits,
 		escalations: calls
 	};
+}
+
+function contactOf(patient: PatientContact): PatientContact {
+	const { phone, language, smsConsent, email, mailConsent, zone } = patient;
+	return { phone, language, smsConsent, email, mailConsent, zone };
 }
 
 async function whoAndWhere(db: Reader, episode: EpisodeRow) {

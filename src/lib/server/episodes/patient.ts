@@ -6,15 +6,16 @@ import { localDateOf } from '$lib/domain/core/time';
 import type { AdmitInput } from '$lib/domain/episodes/forms';
 import type { Contact } from '$lib/domain/episodes/operation';
 import { isSameName, normaliseName, written } from '$lib/domain/episodes/identifiers';
-import { conflictsWith, PATIENT_FIELDS, type PatientField } from '$lib/domain/episodes/identity';
+import { conflictsWith, type PatientField } from '$lib/domain/episodes/identity';
 import { normalisePhone, PhoneError } from '$lib/domain/messages/phone';
 import { accessEpisode } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { episodes, patientAmendments, patients, units } from '../db/schema';
+import { episodes, patients, units } from '../db/schema';
 import { env } from '../env';
 import { newId } from '../ids';
 import { write, type Written } from '../write';
+import { amendPatient } from './amend-patient';
 import { isNumber } from './spelt';
 
 type PatientRow = typeof patients.$inferSelect;
@@ -146,7 +147,7 @@ async function insertPatient(tx: Tx, context: PersonContext, who: Identified): P
 		sex: given.sex,
 		phone,
 		language: given.language ?? 'en',
-		zone: env().hospital.zone,
+		zone: given.zone ?? env().hospital.zone,
 		smsConsent: given.smsConsent ?? false,
 		email: given.email ?? null,
 		mailConsent: given.mailConsent ?? false,
@@ -169,40 +170,10 @@ async function amend(
 		language: given.language ?? known.language,
 		smsConsent: given.smsConsent ?? known.smsConsent,
 		email: given.email ?? known.email,
-		mailConsent: given.mailConsent ?? known.mailConsent
+		mailConsent: given.mailConsent ?? known.mailConsent,
+		zone: given.zone ?? known.zone
 	};
 	return amendPatient(tx, context, known, after);
-}
-
-/** Change what a record of a patient says, and keep what stood there before. Nothing changed leaves no trace. */
-async function amendPatient(
-	tx: Tx,
-	context: PersonContext,
-	known: PatientRow,
-	after: Partial<Pick<PatientRow, PatientField>>
-): Promise<AuditEvent[]> {
-	const changed = PATIENT_FIELDS.filter((field) => field in after && after[field] !== known[field]);
-	if (changed.length === 0) {
-		return [];
-	}
-	await tx.update(patients).set(after).where(eq(patients.id, known.id));
-	await tx.insert(patientAmendments).values(
-		changed.map((field) => ({
-			id: newId(),
-			patientId: known.id,
-			at: context.now,
-			byId: context.actor.id,
-			field,
-			before: textOf(known[field]),
-			after: textOf(after[field])
-		}))
-	);
-	const detail = Object.fromEntries(changed.map((field) => [field, true]));
-	return [{ action: 'patient.amended', objectKind: 'patient', objectId: known.id, detail }];
-}
-
-function textOf(value: string | boolean | null | undefined): string | null {
-	return value === null || value === undefined ? null : String(value);
 }
 
 function phoneOf(typed: string | undefined, pointer = '/patient/phone'): string | null {

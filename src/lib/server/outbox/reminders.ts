@@ -5,11 +5,11 @@ import { outbox } from '../db/schema';
 import { messageEvent } from './change';
 
 /** Messages about the visit to its patient that nobody has begun to send. */
-function waitingOf(visitId: string, kinds: ('reminder' | 'visit')[]) {
+function waitingOf(visitId: string) {
 	return and(
 		eq(outbox.refKind, 'visit'),
 		eq(outbox.refId, visitId),
-		inArray(outbox.kind, kinds),
+		inArray(outbox.kind, ['reminder', 'visit']),
 		inArray(outbox.state, ['ready', 'held'])
 	);
 }
@@ -22,18 +22,7 @@ export async function dropWaiting(tx: Tx, visitId: string, reason: string): Prom
 	const dropped = await tx
 		.update(outbox)
 		.set({ state: 'cancelled', stateReason: reason })
-		.where(waitingOf(visitId, ['reminder', 'visit']))
+		.where(waitingOf(visitId))
 		.returning();
 	return Promise.all(dropped.map((row) => messageEvent(tx, row, 'cancelled')));
-}
-
-/**
- * Give the reminders of a visit that nobody has tried to send another text: who has said yes is not asked again. One
- * that was tried keeps its words, because by them the gateway is asked whether it has gone through.
- */
-export async function rewordReminders(tx: Tx, visitId: string, body: string): Promise<void> {
-	await tx
-		.update(outbox)
-		.set({ body })
-		.where(and(waitingOf(visitId, ['reminder']), eq(outbox.attempts, 0)));
 }

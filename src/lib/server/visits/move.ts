@@ -6,10 +6,11 @@ import { isExpected, needsReason, visitAfter, whyNot, type VisitMove } from '$li
 import { threadForDeed } from '../access/thread';
 import type { Tx } from '../db';
 import { visits } from '../db/schema';
-import { dropWaiting, rewordReminders } from '../outbox/reminders';
+import { dropWaiting } from '../outbox/reminders';
 import type { Change } from '../write';
-import { patientOfEpisode, reminderText } from './remind';
+import { patientOfEpisode } from './remind';
 import { tellCancelled } from './tell-patient';
+import { rewordReminders } from './waiting-reminders';
 import { movedText } from './words';
 
 export type VisitRow = typeof visits.$inferSelect;
@@ -59,7 +60,7 @@ export async function moveVisit(
 	const dropped = isExpected(state) ? [] : await dropWaiting(tx, id, `visit ${state}`);
 	const patient = await patientOfEpisode(tx, episodeId);
 	if (state === 'confirmed') {
-		await rewordReminders(tx, id, reminderText(visit, patient, true));
+		await rewordReminders(tx, patient, id);
 	}
 	const messages = state === 'cancelled' ? tellCancelled(after, by, patient, now) : [];
 	const threadId = await threadForDeed(tx, episodeId, null);

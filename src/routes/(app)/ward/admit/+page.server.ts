@@ -2,6 +2,7 @@ import { redirect } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { Problem } from '$lib/domain/core/errors';
+import { zoneGroups } from '$lib/domain/core/zones';
 import { admitForm, formFieldOf, toAdmission, type AdmitForm } from '$lib/domain/episodes/admit-form';
 import { admitBody, type AdmitInput } from '$lib/domain/episodes/forms';
 import { routes } from '$lib/routes';
@@ -22,7 +23,8 @@ export const load: PageServerLoad = (event) =>
 		return {
 			form: await superValidate<AdmitForm, string>({ unit }, zod4(admitForm), { errors: false }),
 			key: newFormKey(),
-			surgeons: await surgeonsFor(actor)
+			surgeons: await surgeonsFor(actor),
+			zones: zoneGroups(env().hospital.zone)
 		};
 	});
 

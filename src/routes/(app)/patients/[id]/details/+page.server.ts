@@ -4,13 +4,15 @@ import type { z } from 'zod';
 import { can } from '$lib/domain/access/can';
 import { Problem } from '$lib/domain/core/errors';
 import { localParts } from '$lib/domain/core/time';
+import { zoneGroups } from '$lib/domain/core/zones';
 import { formFieldOf } from '$lib/domain/episodes/admit-form';
-import { recordOperationBody, type RecordOperation } from '$lib/domain/episodes/operation';
+import { contactBody, recordOperationBody } from '$lib/domain/episodes/operation';
 import {
 	contactForm,
 	operationForm,
 	toContact,
 	toOperation,
+	type ContactForm,
 	type OperationForm
 } from '$lib/domain/episodes/operation-form';
 import type { Nameboard } from '$lib/domain/episodes/views';
@@ -27,8 +29,6 @@ import { invalidBody } from '$lib/server/http/problem';
 import { read } from '$lib/server/read';
 import type { Actions, PageServerLoad } from './$types';
 
-type ContactForm = z.output<typeof contactForm>;
-
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => {
 		const { actor } = context;
@@ -43,11 +43,11 @@ export const load: PageServerLoad = (event) =>
 				id: 'operation',
 				errors: false
 			}),
-			contact: await superValidate<ContactForm, string>(
-				{ phone: board.patient.phone ?? '', smsConsent: board.patient.smsConsent ?? false },
-				zod4(contactForm),
-				{ id: 'contact', errors: false }
-			),
+			contact: await superValidate<ContactForm, string>(contactOnRecord(board), zod4(contactForm), {
+				id: 'contact',
+				errors: false
+			}),
+			zones: zoneGroups(board.patient.zone ?? env().hospital.zone),
 			keys: { operation: newFormKey(), contact: newFormKey() }
 		};
 	});
@@ -65,6 +65,11 @@ function onRecord({ procedure, approach, operatedAt, surgeon }: Nameboard): Part
 	};
 }
 
+function contactOnRecord({ patient }: Nameboard): Partial<ContactForm> {
+	const { phone, email, language = '', smsConsent, mailConsent, zone = env().hospital.zone } = patient;
+	return { phone: phone ?? '', email: email ?? '', language, smsConsent, mailConsent, zone };
+}
+
 export const actions: Actions = {
 	operation: formAction({
 		id: 'operation',
@@ -72,7 +77,7 @@ export const actions: Actions = {
 		async run(context, fields, event) {
 			const board = await read.nameboard(context, idParam(event));
 			const body = toOperation(fields, board.operationId, env().hospital.zone);
-			await besideFields(() => recordOperation(context, board.id, operationOf(body)));
+			await besideFields(() => recordOperation(context, board.id, bodyOf(recordOperationBody, body)));
 			return m.patient_details_saved();
 		}
 	}),
@@ -80,14 +85,15 @@ export const actions: Actions = {
 		id: 'contact',
 		schema: contactForm,
 		async run(context, fields, event) {
-			await amendContact(context, idParam(event), toContact(fields));
+			await amendContact(context, idParam(event), bodyOf(contactBody, toContact(fields)));
 			return m.patient_details_saved();
 		}
 	})
 };
 
-function operationOf(body: unknown): RecordOperation {
-	const parsed = recordOperationBody.safeParse(body);
+/** What the JSON API would take; its checks have the last word. */
+function bodyOf<Body>(schema: z.ZodType<Body>, body: unknown): Body {
+	const parsed = schema.safeParse(body);
 	if (!parsed.success) {
 		throw invalidBody(parsed.error);
 	}

@@ -1,0 +1,58 @@
+import { and, eq, inArray } from 'drizzle-orm';
+import { planReminders } from '$lib/domain/visits/reminders';
+import type { Tx } from '../db';
+import { outbox, reminders, visits, type patients } from '../db/schema';
+import { reminderText } from './remind';
+
+type PatientRow = typeof patients.$inferSelect;
+
+/**
+ * The reminders of a patient that nobody has tried to send, each with its visit as it is now. One that was tried keeps
+ * its words and its hour, because by its words the gateway is asked whether it has gone through.
+ */
+function untried(tx: Tx, patientId: string, visitId?: string) {
+	return tx
+		.select({ id: outbox.id, causeKey: outbox.causeKey, visit: visits })
+		.from(outbox)
+		.innerJoin(reminders, eq(reminders.messageId, outbox.id))
+		.innerJoin(visits, and(eq(visits.id, reminders.visitId), eq(visits.sequence, reminders.sequence)))
+		.where(
+			and(
+				eq(outbox.patientId, patientId),
+				eq(outbox.kind, 'reminder'),
+				inArray(outbox.state, ['ready', 'held']),
+				eq(outbox.attempts, 0),
+				visitId === undefined ? undefined : eq(visits.id, visitId)
+			)
+		);
+}
+
+/**
+ * Give waiting reminders the words that fit now: who has said yes is not asked again, and who reads another language
+ * gets it.
+ * @param visitId of this visit alone; of all that are ahead where left out
+ */
+export async function rewordReminders(tx: Tx, patient: PatientRow, visitId?: string): Promise<void> {
+	for (const { id, visit } of await untried(tx, patient.id, visitId)) {
+		const body = reminderText(visit, patient, visit.state === 'confirmed');
+		await tx.update(outbox).set({ body }).where(eq(outbox.id, id));
+	}
+}
+
+/**
+ * Give waiting reminders the hours that fit the patient's zone. What has no hour there any more keeps its own: it is
+ * judged by that zone when it is due.
+ */
+export async function replanReminders(tx: Tx, patient: PatientRow, now: number): Promise<void> {
+	for (const { id, causeKey, visit } of await untried(tx, patient.id)) {
+		const planned = planReminders(
+			{ startsAt: visit.startsAt, inSeries: visit.seriesId !== null },
+			{ zone: visit.zone, patientZone: patient.zone, now }
+		).find(({ kind }) => causeKey.endsWith(`:${kind}`));
+		if (planned) {
+			const { dueAt, expiresAt } = planned;
+			await tx.update(outbox).set({ nextAt: dueAt, expiresAt }).where(eq(outbox.id, id));
+			await tx.update(reminders).set({ dueAt }).where(eq(reminders.messageId, id));
+		}
+	}
+}
