@@ -47,6 +47,7 @@ function askOf({ kind, ref }: EntryLine): OpenAsk | null {
 			return { kind: ref.kind, id: ref.id };
 		case 'session':
 		case 'visit':
+		case 'wound-note':
 			return null;
 	}
 }

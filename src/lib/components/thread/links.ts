@@ -16,6 +16,8 @@ export function placeOfRef(
 			return { href: routes.escalation(ref.id), label: m.referrals_see_escalation() };
 		case 'visit':
 			return { href: routes.patientVisits(episodeId), label: m.referrals_see_visits() };
+		case 'wound-note':
+			return { href: routes.patient(episodeId), label: m.referrals_see_wound() };
 		case 'referral':
 		case undefined:
 			return null;

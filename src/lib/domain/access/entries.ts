@@ -8,7 +8,8 @@ const NEEDS: Record<RefKind, Permission> = {
 	clearance: 'thread.read',
 	visit: 'visit.read',
 	session: 'session.read',
-	escalation: 'escalation.read'
+	escalation: 'escalation.read',
+	'wound-note': 'session.read'
 };
 
 /**

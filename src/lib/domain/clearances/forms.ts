@@ -5,7 +5,7 @@ import type { ReadAs } from '../bedside/read-as';
 import { CLEARANCE_KINDS, type EscalationState, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
 import type { Precautions } from '../episodes/precautions';
-import type { WoundNote } from '../wounds/views';
+import type { StandingWound } from '../wounds/stand';
 
 /** How far a permission goes. Degrees are arm elevation from the side of the body, 0 down and 180 overhead. */
 export const clearanceLimits = z.strictObject({
@@ -76,8 +76,8 @@ export interface ClearanceEvidence {
 	level: number;
 	betaBlocked: boolean | null;
 	rhythm: string | null;
-	/** The newest note about wound and breastbone; null where nobody has noted anything. */
-	wound?: WoundNote | null;
+	/** How wound and breastbone stand; null where nobody has noted anything. */
+	wound?: StandingWound | null;
 	precautions?: Precautions;
 	/** The last ones, and all that were recorded since the ask or the decision before. */
 	sessions: EvidenceSession[];
@@ -92,7 +92,10 @@ export interface EvidenceSession {
 	outcome: Outcome;
 	/** As it is read; missing in what was stored before it was kept. */
 	readAs?: ReadAs<Outcome>;
+	/** What stopped it, what cautioned, and what was not measured. */
 	findings: string[];
+	/** What was corrected in words since; missing in what was stored before it was kept. */
+	amendments?: string[];
 }
 
 /** A call for help as a decider is shown it. */

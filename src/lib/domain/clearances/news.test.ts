@@ -47,6 +47,11 @@ describe('newsSince', () => {
 		['nothing', {}, null],
 		['only the clock and midnight', { at: '2026-03-03T00:00:00.000Z', postOpDay: 2 }, null],
 		['a session', { sessions: [{ ...SESSION, id: 's2' }, SESSION] }, news({ sessions: 1 })],
+		[
+			'an amended session',
+			{ sessions: [{ ...SESSION, amendments: ['96, not 69.'] }] },
+			news({ sessions: 1 })
+		],
 		['a session that no longer is among the last', { sessions: [] }, null],
 		['a call for help', { escalations: [{ ...CALL, id: 'e2' }, CALL] }, news({ escalations: 1 })],
 		['a call that somebody took', { escalations: [{ ...CALL, state: 'taken' }] }, null],

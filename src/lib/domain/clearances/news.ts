@@ -6,7 +6,7 @@ export type Changeable = (typeof CHANGEABLE)[number];
 
 /** What stands in newer evidence and not in older. */
 export interface EvidenceNews {
-	/** Sessions that were not there. */
+	/** Sessions that were not there, or were amended since. */
 	sessions: number;
 	/** Calls for help that were not there, or have ended since. */
 	escalations: number;
@@ -59,7 +59,7 @@ function facts({ procedure, approach, operatedOn, wound, level, ...rest }: Shown
 }
 
 function sessionMarks({ sessions }: ShownEvidence): string[] {
-	return (sessions ?? []).map(({ id }) => mark('session', id));
+	return (sessions ?? []).map(({ id, amendments = [] }) => mark('session', id, amendments.length));
 }
 
 /** Who has taken it does not matter to a decision; whether it is over does. */

@@ -13,6 +13,7 @@ import type { ClearanceLimits } from '../clearances/forms';
 import type { LocalActivity } from '../bedside/activities/local';
 import type { LocalLayers } from '../bedside/limits/layers';
 import type { HangingEnd } from '../loose-ends/hanging';
+import type { StandingWound } from '../wounds/stand';
 import type { WoundNote } from '../wounds/views';
 import type { MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
@@ -142,6 +143,8 @@ export interface Nameboard {
 	limits: LocalLayers;
 	/** The newest notes about wound and breastbone, newest first; empty for who may not see sessions. */
 	wounds: WoundNote[];
+	/** How wound and breastbone stand after all notes; null where there are none, and for who may not see them. */
+	wound: StandingWound | null;
 	referrals: {
 		id: string;
 		service: Service;

@@ -65,7 +65,8 @@ export function notInError() {
 		and session_amendments.kind = 'entered-in-error')`;
 }
 
-function amendmentsOf(db: Reader, sessionIds: string[]) {
+/** What was added to sessions after they were recorded, oldest first. */
+export function amendmentsOf(db: Reader, sessionIds: string[]) {
 	return db
 		.select({
 			sessionId: sessionAmendments.sessionId,

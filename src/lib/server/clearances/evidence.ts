@@ -6,13 +6,14 @@ import type { ClearanceEvidence, EvidenceEscalation } from '$lib/domain/clearanc
 import type { ShownEvidence } from '$lib/domain/clearances/views';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { localDateOf } from '$lib/domain/core/time';
+import { standingWound } from '$lib/domain/wounds/stand';
 import type { EpisodeRow } from '../access/access';
-import { notInError } from '../bedside/queries';
+import { amendmentsOf, notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, escalations, findings } from '../db/schema';
 import { env } from '../env';
 import type { EpisodeFacts } from '../episodes/facts';
-import { newestWoundNote } from '../wounds/queries';
+import { listWoundNotes } from '../wounds/queries';
 
 const SESSIONS_SHOWN = 3;
 const OPEN = ['raised', 'taken'] as const;
@@ -27,8 +28,8 @@ export async function gatherEvidence(
 	facts: EpisodeFacts,
 	{ now, since }: { now: number; since: number }
 ): Promise<ClearanceEvidence> {
-	const [wound, sessions, calls] = await Promise.all([
-		newestWoundNote(db, episode.id),
+	const [wounds, sessions, calls] = await Promise.all([
+		listWoundNotes(db, episode.id),
 		sessionsOf(db, episode.id, since),
 		escalationsOf(db, episode.id, since)
 	]);
@@ -42,17 +43,18 @@ export async function gatherEvidence(
 		level: episode.level,
 		betaBlocked: episode.betaBlocked,
 		rhythm: episode.rhythm,
-		wound,
+		wound: standingWound(wounds),
 		precautions: facts.precautions,
 		sessions,
 		escalations: calls
 	};
 }
 
-/** Sessions and calls for help in the evidence are as much a clinical record as they are on their own pages. */
+/** Wound, sessions and calls for help in the evidence are as much a clinical record as on their own pages. */
 export function shownTo(person: Person, unitId: string, evidence: ClearanceEvidence): ShownEvidence {
 	return {
 		...evidence,
+		wound: can(person, 'session.read', { unitId }) ? evidence.wound : null,
 		sessions: can(person, 'session.read', { unitId }) ? evidence.sessions : null,
 		escalations: can(person, 'escalation.read', { unitId }) ? evidence.escalations : null
 	};
@@ -66,7 +68,6 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 		.where(and(eq(bedsideSessions.episodeId, episodeId), notInError()))
 		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id))
 		.limit(SESSIONS_SHOWN);
-	const ids = last.map(({ id }) => id);
 	const sessions = await db
 		.select()
 		.from(bedsideSessions)
@@ -74,19 +75,21 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 			and(
 				eq(bedsideSessions.episodeId, episodeId),
 				notInError(),
-				or(inArray(bedsideSessions.id, ids), gt(bedsideSessions.recordedAt, since))
+				or(
+					inArray(
+						bedsideSessions.id,
+						last.map(({ id }) => id)
+					),
+					gt(bedsideSessions.recordedAt, since)
+				)
 			)
 		)
 		.orderBy(desc(bedsideSessions.startedAt), desc(bedsideSessions.id));
-	const found = await db
-		.select()
-		.from(findings)
-		.where(
-			inArray(
-				findings.sessionId,
-				sessions.map((session) => session.id)
-			)
-		);
+	const ids = sessions.map(({ id }) => id);
+	const [found, amended] = await Promise.all([
+		db.select().from(findings).where(inArray(findings.sessionId, ids)),
+		amendmentsOf(db, ids)
+	]);
 	return sessions.map(({ id, startedAt, outcome }) => {
 		const own = found.filter((finding) => finding.sessionId === id);
 		return {
@@ -94,9 +97,15 @@ async function sessionsOf(db: Reader, episodeId: string, since: number) {
 			startedAt: toRfc3339(startedAt),
 			outcome,
 			readAs: outcomeReadAs(outcome, own),
-			findings: own.filter(({ grade }) => grade !== 'note').map(({ reason }) => reason)
+			findings: own.filter(counts).map(({ reason }) => reason),
+			amendments: amended.filter(({ sessionId }) => sessionId === id).map(({ body }) => body)
 		};
 	});
+}
+
+/** Notes explain a rule to whoever stands at the bed; that something was not measured matters to a decider too. */
+function counts({ grade, rule }: typeof findings.$inferSelect): boolean {
+	return grade !== 'note' || rule === 'reading-missing';
 }
 
 /** Open calls for help, and those raised or ended since, which may have been settled meanwhile. */

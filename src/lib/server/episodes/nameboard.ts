@@ -5,6 +5,7 @@ import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import type { Nameboard, PatientContact } from '$lib/domain/episodes/views';
+import { standingWound } from '$lib/domain/wounds/stand';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { unseenDeviations } from '../bedside/deviations';
 import { listClearances } from '../clearances/queries';
@@ -39,7 +40,7 @@ export async function getNameboard(
 		clinical ? escalationsOf(db, episodeId) : [],
 		clinical ? layersOf(db, episode, now) : NO_LAYERS,
 		clinical ? wordingsOf(db, episode.unitId) : [],
-		clinical ? listWoundNotes(db, episodeId, WOUND_NOTES) : []
+		clinical ? listWoundNotes(db, episodeId) : []
 	]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
@@ -66,7 +67,8 @@ export async function getNameboard(
 		nothingByMouth: episode.phase === 'inpatient' && derived.nothingByMouth,
 		levelReached: Math.max(episode.level, episode.levelReached),
 		wordings,
-		wounds,
+		wounds: wounds.slice(0, WOUND_NOTES),
+		wound: standingWound(wounds),
 		limits: layers,
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),

@@ -8,7 +8,7 @@ import { woundNotes } from '../db/schema';
 import { newId } from '../ids';
 import { write, type Written } from '../write';
 
-/** Note what the wound looks like and how the breastbone feels. The newest note is what a decider is shown. */
+/** Note what the wound looks like and how the breastbone feels. Of each part the newest note is what a decider is shown. */
 export function noteWound(
 	context: PersonContext,
 	episodeId: string,
@@ -32,7 +32,7 @@ export function noteWound(
 				episodeId,
 				detail: { wound, sternum }
 			},
-			entries: threadId ? [{ threadId, kind: 'event', body }] : [],
+			entries: threadId ? [{ threadId, kind: 'event', body, ref: { kind: 'wound-note', id } }] : [],
 			events: [{ topic: 'episode', kind: 'wound-noted', id: episodeId, episodeId }]
 		};
 	});
