@@ -18,6 +18,7 @@ import {
 } from '$lib/server/db/schema';
 import { withdrawEscalation } from '$lib/server/escalations/end';
 import { passEscalation } from '$lib/server/escalations/pass';
+import { heldReplyCodes } from '$lib/server/escalations/reply-code';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
@@ -80,12 +81,12 @@ async function send(now = HOSPITAL_NOW): Promise<void> {
 }
 
 /** A new patient of the ward about whom help was called, and the texts of the first step sent. */
-async function called(bed = '4') {
+async function called(bed = '4', now = HOSPITAL_NOW) {
 	const { episodeId, patient } = await addPatient({ unitId: ward, bed });
 	const { threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id });
 	const raiser = { ...hospital.people.therapist, unitIds: [ward] };
-	const { result } = await raiseEscalation(contextOf(raiser), episodeId, INPUT);
-	await send();
+	const { result } = await raiseEscalation(contextOf(raiser, now), episodeId, INPUT);
+	await send(now);
 	const { replyCode } = await escalationOf(result.id);
 	return { id: result.id, code: replyCode ?? '', episodeId, patient, threadId, raiser };
 }
@@ -156,6 +157,18 @@ describe('the text of an escalation', () => {
 				.set({ replyCode: second?.code })
 				.where(eq(escalations.id, first?.id ?? ''))
 		).rejects.toThrow();
+	});
+});
+
+describe('a code', () => {
+	it('is nobody else’s while its call is open, and for twelve hours from its newest text', async () => {
+		const { id, code, raiser } = await called();
+		const later = HOSPITAL_NOW + 30 * HOUR;
+		expect(await heldReplyCodes(db(), later)).toContain(code);
+		await withdrawEscalation(contextOf(raiser, later), id, 'An error.');
+		await db().update(escalationLinks).set({ createdAt: later }).where(eq(escalationLinks.escalationId, id));
+		expect(await heldReplyCodes(db(), later + 12 * HOUR - 1)).toContain(code);
+		expect(await heldReplyCodes(db(), later + 12 * HOUR)).not.toContain(code);
 	});
 });
 
@@ -326,13 +339,26 @@ describe('TAKE alone', () => {
 		}
 	});
 
-	it('takes the second when somebody has the first', async () => {
+	it.each(['TAKE', 'ok coming'])('takes no other bed when somebody has the first: %s', async (words) => {
 		const [one, two] = [await called('1'), await called('2')];
 		const other = await staff('physician');
 		await takeEscalation(contextOf(other.person), one.id, null);
-		await say(phone, 'TAKE');
-		expect((await escalationOf(two.id)).takenBy).toBe(nurse.id);
+		const [answer] = await say(phone, words);
+		expect(answer).toContain('NOT taken');
+		expect(answer).not.toContain(two.code);
+		expect((await escalationOf(two.id)).state).toBe('raised');
 		expect((await escalationOf(one.id)).takenBy).toBe(other.person.id);
+	});
+
+	it.each([
+		['while the first could still be answered', 12 * HOUR - 1, 'raised'],
+		['once its link has ended', 12 * HOUR, 'taken']
+	])('of two over time, %s', async (_, later, state) => {
+		const one = await called('1');
+		await withdrawEscalation(contextOf(one.raiser), one.id, 'An error.');
+		const two = await called('2', HOSPITAL_NOW + later);
+		await say(phone, 'TAKE', { now: HOSPITAL_NOW + later });
+		expect((await escalationOf(two.id)).state).toBe(state);
 	});
 
 	it('takes nothing that was not sent to this person', async () => {

@@ -4,7 +4,8 @@ import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
 import { readStaffReply } from '$lib/domain/messages/staff-reply';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { takeByText, takeOnlyCall, waitingCallsOf } from './take-by-text';
+import { takeByText, takeOnlyCall } from './take-by-text';
+import { meantCall } from './texted-calls';
 import { answerTo, type AnswerTo, type ReceivedText, type Understood } from './understood';
 
 /** The same words from the same number are answered once in so long: a telephone may answer by itself. */
@@ -26,8 +27,8 @@ export async function onStaffText(tx: Tx, context: PersonContext, text: Received
 	if (reply.kind === 'take') {
 		return reply.code === null ? takeOnlyCall(tx, context, text) : takeByText(tx, context, reply.code, text);
 	}
-	const [call, ...more] = await waitingCallsOf(tx, id);
-	const code = more.length > 0 ? null : (call?.code ?? null);
+	const call = await meantCall(tx, id, text.now);
+	const code = typeof call === 'string' ? null : call.code;
 	const understoodAs = reply.kind === 'unclear' ? 'take' : 'staff';
 	return toldOnce(text, understoodAs, { userId: id }, 'staff-unclear', { code });
 }

@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, isNotNull, ne, or } from 'drizzle-orm';
+import { and, desc, eq, gt } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { Problem } from '$lib/domain/core/errors';
 import { isOpenTo } from '$lib/domain/escalations/holding';
@@ -7,8 +7,8 @@ import { smsText } from '$lib/domain/messages/templates';
 import { routes } from '$lib/routes';
 import { accessEscalation } from '../access/access';
 import type { PersonContext } from '../context';
-import type { Reader, Tx } from '../db';
-import { escalationLinks, escalations, outbox, units, users } from '../db/schema';
+import type { Tx } from '../db';
+import { escalationLinks, escalations, units, users } from '../db/schema';
 import { env } from '../env';
 import { confirm } from '../escalations/pass';
 import { take } from '../escalations/take';
@@ -16,6 +16,7 @@ import { placeOf, type EscalationRow } from '../escalations/tell';
 import { aroundLink } from '../links';
 import type { NewMessage } from '../outbox/enqueue';
 import type { Change } from '../write';
+import { meantCall } from './texted-calls';
 import { answerBase, answerTo, type ReceivedText, type Understood } from './understood';
 
 /**
@@ -38,32 +39,15 @@ export async function takeByText(
 	return row ? takeCall(tx, context, row.id, text, unknown) : answered(unknown);
 }
 
-/** TAKE alone: the one call that was sent to this person and waits; with none or several it is asked back. */
+/** TAKE alone: the one call that was sent to this person, while it waits; with none or several it is asked back. */
 export async function takeOnlyCall(tx: Tx, context: PersonContext, text: ReceivedText): Promise<Understood> {
 	const to = { userId: context.actor.id };
-	const [call, ...more] = await waitingCallsOf(tx, to.userId);
-	const none = answerTo(text, to, 'none-open', {});
-	if (!call) {
-		return answered(none);
+	const call = await meantCall(tx, to.userId, text.now);
+	if (call === 'several') {
+		return answered(answerTo(text, to, 'which-one', {}));
 	}
-	return more.length > 0
-		? answered(answerTo(text, to, 'which-one', {}))
-		: takeCall(tx, context, call.id, text, none);
-}
-
-/** The calls that were sent to this person, or may have been, and wait for them. */
-export async function waitingCallsOf(reader: Reader, userId: string) {
-	const mayHaveArrived = or(isNotNull(outbox.sentAt), gt(outbox.attempts, 0), eq(outbox.state, 'sending'));
-	const waits = or(
-		eq(escalations.state, 'raised'),
-		and(eq(escalations.state, 'taken'), isNotNull(escalations.nextStepAt), ne(escalations.takenBy, userId)),
-		and(eq(escalations.state, 'taken'), eq(escalations.passTo, userId))
-	);
-	return reader
-		.selectDistinct({ id: escalations.id, code: escalations.replyCode })
-		.from(outbox)
-		.innerJoin(escalations, eq(escalations.id, outbox.refId))
-		.where(and(eq(outbox.kind, 'escalation'), eq(outbox.userId, userId), mayHaveArrived, waits));
+	const none = answerTo(text, to, 'none-open', {});
+	return call === 'none' ? answered(none) : takeCall(tx, context, call.id, text, none);
 }
 
 /** @param unseen the answer when this person may not see the call: the same as when there is none */
