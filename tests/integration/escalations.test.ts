@@ -15,6 +15,7 @@ import { chainJob } from '$lib/server/escalations/chain-job';
 import { settleEscalation } from '$lib/server/escalations/end';
 import { passEscalation, confirmPass } from '$lib/server/escalations/pass';
 import { getByLink, getEscalation } from '$lib/server/escalations/queries';
+import { recordSession } from '$lib/server/bedside/actions';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeByLink } from '$lib/server/escalations/link';
 import { takeEscalation } from '$lib/server/escalations/take';
@@ -22,6 +23,7 @@ import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
 import { addPatient, contextOf } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
+import { sessionBody } from '../support/session';
 
 const INPUT: RaiseInput = {
 	grade: 'high',
@@ -120,6 +122,18 @@ describe('raising', () => {
 	it('does not tell the raiser of their own call', async () => {
 		const { id } = (await raiseEscalation(by('nurse'), episodeId, INPUT)).result;
 		expect(await told(id)).toEqual(['0:nurse-in-charge']);
+	});
+
+	it('refuses a session of another patient, and tells nobody', async () => {
+		const other = await addPatient({ unitId: hospital.units.ward });
+		const { result } = await recordSession(by('therapist'), other.episodeId, sessionBody());
+		await expect(raise({ sessionId: result.id })).rejects.toMatchObject({
+			code: 'invalid',
+			extra: { errors: [{ pointer: '/sessionId' }] }
+		});
+		expect(await db().select().from(escalations).where(eq(escalations.episodeId, episodeId))).toEqual([]);
+		const own = await raiseEscalation(by('therapist'), other.episodeId, { ...INPUT, sessionId: result.id });
+		expect(own.result.state).toBe('raised');
 	});
 
 	it.each([

@@ -5,7 +5,7 @@ import { bewareWords } from '$lib/components/patient/words';
 import { askClearance, giveClearance } from '$lib/server/clearances/actions';
 import { db } from '$lib/server/db';
 import { recordSession } from '$lib/server/bedside/actions';
-import { operations } from '$lib/server/db/schema';
+import { operations, patients } from '$lib/server/db/schema';
 import { listEpisodes } from '$lib/server/episodes/list';
 import { movePatient } from '$lib/server/episodes/move';
 import { getNameboard } from '$lib/server/episodes/nameboard';
@@ -29,6 +29,15 @@ const onTheWard = async () =>
 	).items.find(({ id }) => id === episodeId);
 const operatedAt = (at: number) =>
 	db().update(operations).set({ operatedAt: at }).where(eq(operations.episodeId, episodeId));
+
+describe('whose board it is', () => {
+	it('stands on it three times: name, birth date and hospital number', async () => {
+		const { patient } = await board();
+		const [row] = await db().select().from(patients).where(eq(patients.id, patient.id));
+		expect(patient).toMatchObject({ name: row?.name, birthDate: row?.birthDate, mrn: row?.mrn });
+		expect([row?.birthDate, row?.mrn]).not.toContain(undefined);
+	});
+});
 
 describe('a patient without an operation on record', () => {
 	it('is not said to have no precautions, and keeps the cautious level', async () => {

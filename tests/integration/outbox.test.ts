@@ -16,7 +16,7 @@ import { linkToken } from '$lib/server/links';
 import type { Channels } from '$lib/server/outbox/channels/channel';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel, accepted, permanent, transient, unknown } from '../support/channels';
-import { HOSPITAL_NOW, addPatient, addPerson } from '../support/hospital';
+import { HOSPITAL_NOW, addPatient, addPerson, newPhone } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
 import { addAlert, addEscalation, addReminder, addVisit, attemptsOf, rowOf } from '../support/messages';
 
@@ -267,6 +267,16 @@ describe('checked again at the moment of sending', () => {
 		await worker().settle();
 		expect((await rowOf(receiver.id)).state).toBe('accepted');
 		expect((await rowOf(other.id)).state).toBe('skipped');
+	});
+
+	it('the number that a person has when it is sent, not the one of the call', async () => {
+		const person = await addPerson({ role: 'nurse', unitIds: [hospital.units.ward], phone: newPhone() });
+		const { id } = await addAlert(await addEscalation(hospital), person.id);
+		const phone = newPhone();
+		await db().update(users).set({ phone }).where(eq(users.id, person.id));
+		await worker().settle();
+		expect((await rowOf(id)).state).toBe('accepted');
+		expect(sms.sent.map(({ to }) => to)).toEqual([phone]);
 	});
 
 	it('nobody whose account was disabled, and nobody without a number', async () => {

@@ -1,6 +1,9 @@
+import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { recordSession } from '$lib/server/bedside/actions';
+import { askClearance } from '$lib/server/clearances/actions';
 import { db } from '$lib/server/db';
+import { clearances, escalations } from '$lib/server/db/schema';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { getThread } from '$lib/server/threads/queries';
 import { CALL } from '../support/escalations';
@@ -31,6 +34,12 @@ async function kindsIn(threadId: string): Promise<string[]> {
 	return (await getThread(db(), hospital.people.nurse, threadId, all)).items.map(({ kind }) => kind);
 }
 
+/** The thread of a patient whom the same people treat, so that no right stands between. */
+async function threadOfAnother(): Promise<string> {
+	const other = await addPatient({ unitId: hospital.units.ward });
+	return (await addReferral({ episodeId: other.episodeId, askedBy: hospital.people.surgeon.id })).threadId;
+}
+
 describe('a session', () => {
 	it.each([
 		['therapist', () => physiotherapy, () => speech],
@@ -50,6 +59,14 @@ describe('a call for help', () => {
 		expect(await kindsIn(physiotherapy)).toEqual([]);
 	});
 
+	it('raised with the thread of another patient is refused, and nothing of it is written', async () => {
+		const threadId = await threadOfAnother();
+		const call = raiseEscalation(contextOf(hospital.people.therapist), episodeId, { ...CALL, threadId });
+		await expect(call).rejects.toMatchObject({ code: 'not-found' });
+		expect(await db().select().from(escalations).where(eq(escalations.episodeId, episodeId))).toEqual([]);
+		expect(await kindsIn(threadId)).toEqual([]);
+	});
+
 	it('raised from a thread that was withdrawn is heard all the same, and stands in another', async () => {
 		const withdrawn = await addReferral({
 			...{ episodeId, askedBy: hospital.people.surgeon.id },
@@ -59,5 +76,16 @@ describe('a call for help', () => {
 		const { result } = await raiseEscalation(contextOf(hospital.people.therapist), episodeId, call);
 		expect(result.state).toBe('raised');
 		expect(await kindsIn(physiotherapy)).toHaveLength(1);
+	});
+});
+
+describe('an ask for a clearance', () => {
+	it('with the thread of another patient is refused, and nothing of it is written', async () => {
+		const threadId = await threadOfAnother();
+		const ask = { kind: 'arm-stage', question: 'May it start?', threadId } as const;
+		const asked = askClearance(contextOf(hospital.people.therapist), episodeId, ask);
+		await expect(asked).rejects.toMatchObject({ code: 'not-found' });
+		expect(await db().select().from(clearances).where(eq(clearances.episodeId, episodeId))).toEqual([]);
+		expect(await kindsIn(threadId)).toEqual([]);
 	});
 });
