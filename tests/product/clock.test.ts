@@ -71,8 +71,8 @@ describe('moving the clock', () => {
 			headers: { 'content-type': 'application/json' },
 			body: JSON.stringify({ mode: 'refuse' })
 		});
-		const id = await raise(therapist, episodeId);
 		const before = Date.parse(await serverNow());
+		const id = await raise(therapist, episodeId);
 		await product.kill('SIGKILL');
 		expect(await texts(bed)).toEqual([]);
 		await fetch(`${product.smsUrl}/faults`, {
@@ -84,11 +84,14 @@ describe('moving the clock', () => {
 		// A clock that was moved does not go back: all that is due would wait for it to come round again.
 		expect(Date.parse(await serverNow())).toBeGreaterThanOrEqual(before);
 		// An attempt that was refused waits for its next one, one that was cut short for the end of its lease.
-		for (let n = 0; n < 6 && (await texts(bed)).length === 0; n += 1) {
+		const called = (await escalation(surgeon, id)).steps.length;
+		expect(called).toBe(2);
+		for (let n = 0; n < 6 && (await texts(bed)).length < called; n += 1) {
 			await product.advance(MINUTE / 4);
 		}
+		// The nurse and the nurse in charge, each with a link of their own, and neither twice.
 		const first = (await texts(bed)).length;
-		expect(first).toBeGreaterThan(0);
+		expect([first, new Set(await texts(bed)).size]).toEqual([2, 2]);
 		const steps = (await escalation(surgeon, id)).steps.length;
 		await product.advance(10 * MINUTE);
 		expect((await escalation(surgeon, id)).steps.length).toBeGreaterThan(steps);
