@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { LIMIT_KEYS, SETS } from '$lib/domain/bedside/codes';
+import { limitsFor } from '$lib/domain/bedside/limits/limits';
 import { rulebook } from '$lib/domain/bedside/rulebook';
 import { limitLines } from './lines';
 
@@ -32,6 +33,23 @@ describe('limitLines', () => {
 		]);
 		expect(linesOf('systolic-floor')[0]?.sources).toHaveLength(1);
 		expect(linesOf('systolic-floor')[0]?.sources[0]).not.toMatch(/^Strict/);
+	});
+
+	it.each([
+		['systolic-ceiling', 0, ['version 2'], []],
+		['systolic-ceiling', 2, ['version 2'], ['Our own figure']],
+		['heart-rate-fall', 0, ['version 2'], ['Our own figure']],
+		['systolic-fall', 0, ['version 2'], []]
+	])('%s, line %d: %j, %j', (rule, index, versions, own) => {
+		expect(linesOf(rule)[index]).toMatchObject({ versions, own });
+	});
+
+	it('names the sets in which the unit has a figure of its own, with its version', () => {
+		const local = { 'systolic-fall': { value: 15, source: 'set by the unit', version: 'unit 3' } };
+		const unit = rulebook({ strict: limitsFor('strict', local) });
+		const [fall] = limitLines(unit.rows.find(({ rule }) => rule === 'systolic-fall')?.limits ?? []);
+		expect(fall?.versions).toEqual(['Strict: version unit 3', 'Guideline, Outpatient: version 2']);
+		expect(fall?.own).toEqual(['Strict: The unit’s own figure']);
 	});
 
 	it('has a word for the meaning of every limit', () => {

@@ -12,6 +12,9 @@ export interface LimitLine {
 	values: Record<SetName, string>;
 	/** Each source once; with the sets it holds for where they differ. */
 	sources: string[];
+	/** The versions of the limit, and in which sets its figure is our own or the unit's; told like the sources. */
+	versions: string[];
+	own: string[];
 }
 
 /** The limits of a rule, a line for each. */
@@ -25,7 +28,9 @@ export function limitLines(limits: readonly RulebookLimit[]): LimitLine[] {
 			key,
 			label: m.home_rules_limit_label({ what: meaningOf(key), unit }),
 			values: Object.fromEntries(SETS.map((set) => [set, valueOf(set)])) as Record<SetName, string>,
-			sources: sourceWords(own)
+			sources: bySet(own, ({ source }) => source),
+			versions: bySet(own, ({ version }) => version && m.home_rules_limit_version({ version })),
+			own: bySet(own, ownWords)
 		};
 	});
 }
@@ -69,13 +74,21 @@ function valueWords(limit: RulebookLimit | undefined): string {
 	return crossing({ value: limit.value });
 }
 
-function sourceWords(limits: readonly RulebookLimit[]): string[] {
-	const sources = [...new Set(limits.flatMap(({ source }) => source ?? []))];
-	if (sources.length < 2) {
-		return sources;
+/** That nobody published the figure; null where somebody did, or the limit is off. */
+function ownWords({ status, local }: RulebookLimit): string | null {
+	if (local) {
+		return m.home_rules_unit_figure();
 	}
-	return sources.map((source) => {
-		const sets = limits.filter((limit) => limit.source === source).map(({ set }) => SET_WORDS[set]());
-		return m.home_rules_source_of({ sets: sets.join(', '), source });
+	return status === 'common-practice' ? m.home_rules_own_figure() : null;
+}
+
+/** What is said of a limit, each once; with the sets it is said of where that is not all that have the limit on. */
+function bySet(limits: readonly RulebookLimit[], say: (limit: RulebookLimit) => string | null): string[] {
+	const on = limits.filter(({ value }) => value !== null);
+	const said = [...new Set(on.flatMap((limit) => say(limit) ?? []))];
+	return said.map((words) => {
+		const sets = on.filter((limit) => say(limit) === words);
+		const names = sets.map(({ set }) => SET_WORDS[set]()).join(', ');
+		return sets.length === on.length ? words : m.home_rules_source_of({ sets: names, source: words });
 	});
 }

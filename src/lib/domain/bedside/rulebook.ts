@@ -4,7 +4,7 @@
  */
 import { LIMIT_KEYS, SETS, type LimitKey, type RuleId, type SetName } from './codes';
 import { limitsFor, type LimitSet } from './limits/limits';
-import { SOURCES, type Source, type SourceId } from './limits/sources';
+import { SOURCES, type Source, type SourceId, type SourceStatus } from './limits/sources';
 import { DEFAULT_LIMITS, type Crossing } from './limits/table';
 import { RULES } from './rules/registry';
 
@@ -17,6 +17,8 @@ export interface RulebookLimit {
 	readonly when: Crossing | null;
 	readonly unit: string | null;
 	readonly source: string | null;
+	/** How well that source is known; `common-practice` is a figure of our own, or of the unit. Null where it is off. */
+	readonly status: SourceStatus | null;
 	readonly version: string | null;
 	/** Changed by the unit. */
 	readonly local: boolean;
@@ -61,10 +63,26 @@ export function keysOf(rule: RuleId): LimitKey[] {
 function limitRow(key: LimitKey, { set, limits }: LimitSet): RulebookLimit {
 	const limit = limits[key];
 	if (limit === null) {
-		return { key, set, value: null, when: null, unit: null, source: null, version: null, local: false };
+		return {
+			key,
+			set,
+			value: null,
+			when: null,
+			unit: null,
+			source: null,
+			status: null,
+			version: null,
+			local: false
+		};
 	}
 	const { value, when, unit, source, version, local } = limit;
-	return { key, set, value, when, unit, source, version, local };
+	return { key, set, value, when, unit, source, status: statusOf(key, set, local), version, local };
+}
+
+/** Whatever a default rests on, the figure that a unit puts in its place is the unit's own. */
+function statusOf(key: LimitKey, set: SetName, local: boolean): SourceStatus {
+	const source = local ? undefined : DEFAULT_LIMITS[set][key]?.source;
+	return source === undefined ? 'common-practice' : SOURCES[source].status;
 }
 
 function sourcesOf(keys: readonly LimitKey[], own: readonly SourceId[]): RulebookRow['sources'] {

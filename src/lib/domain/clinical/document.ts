@@ -8,7 +8,7 @@ import { SETS, type LimitKey } from '../bedside/codes';
 import { LEVEL_BANDS, LEVEL_BANDS_SOURCE } from '../bedside/levels';
 import { SOURCES, type SourceStatus } from '../bedside/limits/sources';
 import { DEFAULT_LIMITS, DEFAULTS_VERSION } from '../bedside/limits/table';
-import { rulebook, type RulebookRow } from '../bedside/rulebook';
+import { rulebook, type RulebookLimit, type RulebookRow } from '../bedside/rulebook';
 import { sternalBans } from '../bedside/sternum';
 import { CALCULATORS } from '../calculators/rulebook';
 import { CAUTIONS, CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
@@ -33,7 +33,10 @@ export function clinicalDocument(): string {
 		section('How to read it', bullets(HOW_TO_READ)),
 		section('The rules', table(['rule', 'what it says', 'rests on'], rows.map(ruleCells))),
 		'Rules without a number have no row in the next table.',
-		section('The limits', table(['limit', ...SETS, 'unit', 'source'], rows.flatMap(limitCells))),
+		section(
+			'The limits',
+			table(['limit', ...SETS, 'unit', 'version', 'source', 'standing'], rows.flatMap(limitCells))
+		),
 		section('The levels', levels()),
 		section('The activities', activities()),
 		section('Sternal precautions', precautions()),
@@ -64,8 +67,29 @@ function limitCells({ limits }: RulebookRow): string[][] {
 		const sets = SETS.map((set) => limits.find((limit) => limit.key === key && limit.set === set));
 		const unit = sets.find((limit) => limit?.unit)?.unit ?? '';
 		const values = sets.map((limit) => (limit?.when ? `${limit.when} ${limit.value}` : 'off'));
-		return [code(key), ...values, unit, sourcesOf(key)];
+		const version = [...new Set(sets.flatMap((limit) => limit?.version ?? []))].join(', ');
+		return [
+			code(key),
+			...values,
+			unit,
+			version,
+			sourcesOf(key),
+			standingOf(sets.filter((limit) => limit?.when))
+		];
 	});
+}
+
+/** How well a limit is known, with its sets where they differ; what nobody published is a figure of our own. */
+function standingOf(sets: readonly (RulebookLimit | undefined)[]): string {
+	const words = (limit: RulebookLimit | undefined) =>
+		limit?.status === 'common-practice' ? '**our own figure**' : STANDING[limit?.status ?? 'common-practice'];
+	const said = [...new Set(sets.map(words))];
+	return said
+		.map((each) => {
+			const of = sets.filter((limit) => words(limit) === each).map((limit) => limit?.set);
+			return said.length === 1 ? each : `${each} (${of.join(', ')})`;
+		})
+		.join(', ');
 }
 
 /** The source of a limit, with its sets where they differ. */
