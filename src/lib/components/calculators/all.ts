@@ -1,5 +1,9 @@
 import { corridorSpec, energySpec, heartRateSpec } from './effort';
 import { earlyWarningSpec, pressuresSpec } from './observations';
+import { spirometerSpec } from './breathing';
+import { riskSpec } from './outpatient';
+import { heartFailureSpec, inpatientCeilingSpec } from './rates';
+import { orthostaticSpec } from './rising';
 import type { CalculatorSpec } from './spec';
 import { walkChangeSpec, walkTestSpec } from './walk';
 
@@ -7,9 +11,14 @@ import { walkChangeSpec, walkTestSpec } from './walk';
 export const CALCULATOR_SPECS: readonly CalculatorSpec[] = [
 	earlyWarningSpec,
 	pressuresSpec,
+	orthostaticSpec,
 	corridorSpec,
 	energySpec,
 	heartRateSpec,
+	heartFailureSpec,
+	inpatientCeilingSpec,
 	walkTestSpec,
-	walkChangeSpec
+	walkChangeSpec,
+	spirometerSpec,
+	riskSpec
 ];

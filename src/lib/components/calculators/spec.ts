@@ -1,5 +1,7 @@
 /** What a calculator of the page is made of: its fields, how they are checked, and what it says. */
 import type { z } from 'zod';
+import { doubtAbout } from '$lib/domain/calculators/doubts';
+import { m } from '$lib/i18n/paraglide/messages';
 
 export interface CalculatorField {
 	/** The name of the field in the body that is checked. */
@@ -79,6 +81,13 @@ export function numbersOf(typed: Typed): Record<string, number | string> {
 function numberOf(text: string): number | null {
 	const plain = text.trim().replace(',', '.');
 	return /^-?\d+(\.\d+)?$/.test(plain) ? Number(plain) : null;
+}
+
+/** What a field asks about its value once more; null where it is usual, or no number. */
+export function doubtOf(name: string, text: string): string | null {
+	const value = numberOf(text);
+	const usual = value === null ? null : doubtAbout(name, value);
+	return usual && m.calculators_doubt({ value: text.trim(), ...usual });
 }
 
 /** A figure as a page shows it; never more digits than it deserves. */

@@ -191,6 +191,11 @@ export const OWN_FIGURES: readonly OwnFigure[] = [
 		path: `${BEDSIDE}/levels.ts`
 	},
 	{
+		figure:
+			'What can be typed at all, and outside which range the pages ask once more: to be confirmed by each hospital',
+		path: `${CALC}/bounds.ts`
+	},
+	{
 		figure: 'When a patient is reminded of a visit, and between which hours',
 		path: 'src/lib/domain/visits/reminders.ts'
 	}
