@@ -1,7 +1,8 @@
+import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import type { WordActivity } from '$lib/domain/limits/forms';
 import { db } from '$lib/server/db';
-import { units } from '$lib/server/db/schema';
+import { audit, units } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
 import { listActivities } from '$lib/server/limits/activities';
@@ -30,6 +31,8 @@ const as = (role: keyof Hospital['people'], minutes = 0) =>
 
 describe('an activity in the words of a unit', () => {
 	const lines = {
+		name: 'Along the hall',
+		needs: ['Drain out'],
 		dose: { minutes: [5, 6], repetitions: null, timesADay: [3, 4], words: '5 to 6 minutes' },
 		howTo: ['Slowly.'],
 		watch: ['The pulse.'],
@@ -40,11 +43,25 @@ describe('an activity in the words of a unit', () => {
 
 	it('stands at the bedside, with who answers for it, and goes back to the catalogue', async () => {
 		await wordActivity(as('admin'), unitId, WORDED);
-		expect(await entry()).toMatchObject({ howTo: ['Slowly.'], local: { version: 1, ...AGREED } });
+		expect(await entry()).toMatchObject({
+			name: 'Along the hall',
+			howTo: ['Slowly.'],
+			local: { version: 1, ...AGREED }
+		});
 		const board = await getNameboard(db(), hospital.people.nurse, episodeId, hospital.now);
 		expect(board.wordings).toMatchObject([{ code: 'hall-walk', version: 1 }]);
 		await wordActivity(as('admin', 1), unitId, { ...WORDED, lines: null });
 		expect((await entry())?.local).toBeNull();
+	});
+
+	it('is on record with its number and the activity, and with no word of it', async () => {
+		await wordActivity(as('admin'), unitId, WORDED);
+		const [line] = await db().select().from(audit).where(eq(audit.objectId, unitId));
+		expect(line).toMatchObject({
+			action: 'unit.activity-worded',
+			actorId: hospital.people.admin.id,
+			detail: { code: 'hall-walk', version: 1, reset: false }
+		});
 	});
 
 	it('of another unit stays there', async () => {

@@ -6,7 +6,7 @@ import { setSenior } from '$lib/server/accounts/manage';
 import { loadPerson } from '$lib/server/auth/people';
 import { recordSession } from '$lib/server/bedside/actions';
 import { db } from '$lib/server/db';
-import { audit } from '$lib/server/db/schema';
+import { audit, episodes } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { decideLevel } from '$lib/server/levels/actions';
 import { getLevel } from '$lib/server/levels/queries';
@@ -66,6 +66,17 @@ describe('a decision on the level', () => {
 		expect(decisions).toMatchObject([
 			{ from: 2, to: 3, suggestion: 'progress', decidedBy: junior.name, signedBy: null }
 		]);
+	});
+
+	it.each([
+		['chest pain in that session', { symptoms: ['angina'] }, 'Before daily walking: there was chest pain'],
+		['nothing of the kind', {}, 'Before daily walking, ask: any chest pain']
+	] as const)('is advised with what the record says of the hours before: %s', async (_, changes, words) => {
+		await db().update(episodes).set({ level: 1, levelReached: 1 }).where(eq(episodes.id, episodeId));
+		await record(junior, { ...changes, symptoms: 'symptoms' in changes ? [...changes.symptoms] : [] });
+		await db().update(episodes).set({ level: 1 }).where(eq(episodes.id, episodeId));
+		const { advice } = await levelNow();
+		expect(advice?.reasons.map((reason) => reason.words).join('\n')).toContain(words);
 	});
 
 	it('lowers today’s level, and what was reached stays', async () => {

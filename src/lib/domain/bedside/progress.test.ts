@@ -2,7 +2,10 @@ import { describe, expect, it } from 'vitest';
 import { assess } from './assess';
 import { adviseLevel, afterDecision, seniorSignsLevel, type Suggestion } from './progress';
 import { REST, session, type Changes } from './testing/sample';
-import type { Level } from '../core/codes';
+import { LEVELS, type Level } from '../core/codes';
+
+/** The catalogue has its first walk, round the bed, at the level after this one. */
+const BEFORE_WALKING = 1;
 
 const NOTHING = { hr: null, sbp: null, dbp: null, spo2: null, rr: null, pain: null };
 
@@ -27,6 +30,24 @@ describe('adviseLevel', () => {
 	it('does not climb over level 6 or fall under level 1', () => {
 		expect(advice(6)).toMatchObject({ suggestion: 'progress', to: 6, needs: [] });
 		expect(advice(1, { symptoms: ['angina'] })).toMatchObject({ suggestion: 'step-back', to: 1 });
+	});
+
+	// Chest pain and rhythm over 8 hours: study notes of the inpatient line (secondary); the rest from memory.
+	it('asks what daily walking needs before the first level with walking, and at no other', () => {
+		const asked = LEVELS.map(
+			(level) => advice(level).reasons.filter(({ words }) => words.startsWith('Before daily walking')).length
+		);
+		expect(asked).toEqual(LEVELS.map((level) => (level === BEFORE_WALKING ? 3 : 0)));
+	});
+
+	it.each([
+		[{ chestPain: true, heartFailureSigns: false, newRhythm: false }, 'stay'],
+		[{ chestPain: false, heartFailureSigns: false, newRhythm: true }, 'stay'],
+		[{ chestPain: null, heartFailureSigns: null, newRhythm: null }, 'progress'],
+		[{ chestPain: false, heartFailureSigns: false, newRhythm: false }, 'progress']
+	] as const)('before it %j speaks for: %s', (checks, suggestion) => {
+		const input = session();
+		expect(adviseLevel(BEFORE_WALKING, input, assess(input), checks).suggestion).toBe(suggestion);
 	});
 
 	// 10 to 40 mmHg above rest: AACVPR line, from memory.

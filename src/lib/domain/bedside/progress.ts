@@ -12,6 +12,7 @@ import { ACTIVITIES } from './activities/activities';
 import type { Verdict } from './finding';
 import type { Assessment } from './forms';
 import { exact, plain } from './numbers';
+import { readyToWalk, type WalkingChecks } from './readiness';
 import { lackingClearance } from './rules/clearances';
 
 /** The rise of the systolic pressure above rest that progress is made on, mmHg, both ends included. */
@@ -35,11 +36,25 @@ export interface Advice {
 	readonly needs: readonly ClearanceKind[];
 }
 
-/** Advise on the level of a patient after a session at `level`. */
-export function adviseLevel(level: Level, session: Assessment, verdict: Verdict): Advice {
-	const reasons = [...findingReasons(verdict), ...pressureReasons(session)];
-	const suggestion = suggest(verdict, reasons);
+const NOTHING_SAID: WalkingChecks = { chestPain: null, heartFailureSigns: null, newRhythm: null };
+
+/**
+ * Advise on the level of a patient after a session at `level`.
+ * @param walking what is on record of the hours before; asked about where the next level is the first with walking
+ */
+export function adviseLevel(
+	level: Level,
+	session: Assessment,
+	verdict: Verdict,
+	walking: WalkingChecks = NOTHING_SAID
+): Advice {
 	const up = shifted(level, 1);
+	const reasons = [
+		...findingReasons(verdict),
+		...pressureReasons(session),
+		...(isFirstWithWalking(up) ? walkingReasons(walking) : [])
+	];
+	const suggestion = suggest(verdict, reasons);
 	const to = suggestion === 'progress' ? up : suggestion === 'step-back' ? shifted(level, -1) : level;
 	return { suggestion, to, reasons, needs: up === level ? [] : clearancesLacking(session, up) };
 }
@@ -110,6 +125,22 @@ function pressureReasons({ before, during, after }: Assessment): ProgressReason[
 		];
 	}
 	return [{ weight: 'for', words: `${course}, within the usual ${from} to ${to}.` }];
+}
+
+function walkingReasons(checks: WalkingChecks): ProgressReason[] {
+	const { against, open } = readyToWalk(checks);
+	return [
+		...against.map((words): ProgressReason => ({ weight: 'against', words })),
+		...open.map((words): ProgressReason => ({ weight: 'consider', words }))
+	];
+}
+
+/** True for the level at which a patient first walks. */
+function isFirstWithWalking(level: Level): boolean {
+	const levels = ACTIVITIES.filter(({ walking, phase }) => walking && phase === 'inpatient').map(
+		(activity) => activity.level
+	);
+	return level === Math.min(...levels);
 }
 
 function clearancesLacking({ context }: Assessment, level: Level): ClearanceKind[] {

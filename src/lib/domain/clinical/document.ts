@@ -132,7 +132,7 @@ function activities(): string {
 		STANDING[SOURCES[activity.source].status]
 	]);
 	return [
-		'Usual doses. A unit may word dose and lines anew; level, energy and clearances stay. How it is done, what to watch and what never to do stand beside each activity at the bedside and in `src/lib/domain/bedside/activities/`.',
+		'Usual doses. A unit may word name, dose and lines anew and ask for more first; level, energy, clearances and what is needed first stay. How it is done, what to watch and what never to do stand beside each activity at the bedside and in `src/lib/domain/bedside/activities/`.',
 		table(
 			['code', 'activity', 'level', 'METs', 'clearance', 'needs first', 'usual dose', 'standing of the dose'],
 			rows

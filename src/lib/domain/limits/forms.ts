@@ -102,23 +102,34 @@ export function rangeFaults(
 /** A span of a dose: from and to, both included. */
 const span = (name: string, max: number) =>
 	z
-		.tuple([z.number(), z.number()], `${name} is two numbers, from and to.`)
+		.tuple([z.number(), z.number()], {
+			error: ({ input }) => `${name} is ${JSON.stringify(input)}: it must be two numbers, from and to.`
+		})
 		.refine(([from, to]) => from > 0 && from <= to && to <= max, {
-			error: `${name} must run from more than 0 to at most ${max}, and not end below its start.`
+			error: ({ input }) =>
+				`${name} is ${(input as number[]).join(' to ')}: it must run from more than 0 to at most ${max}, and not end below its start.`
 		})
 		.nullable();
 
-const lines = (name: string) =>
+/** The most lines of one part of an activity, and the most characters of a line. */
+export const LINES_MAX = 8;
+export const LINE_MAX = 200;
+
+const lines = (name: string, least = 1) =>
 	z
-		.array(text(name, 200), `${name} is a list of lines.`)
-		.min(1, `${name} is empty.`)
-		.max(8, `${name} has at most 8 lines.`);
+		.array(text(`a line of ${name}`, LINE_MAX), `${name} is a list of lines.`)
+		.min(least, `${name} is empty: it must have 1 to ${LINES_MAX} lines.`)
+		.max(LINES_MAX, {
+			error: ({ input }) => `${name} has ${(input as unknown[]).length} lines: at most ${LINES_MAX}.`
+		});
 
 /** What a unit says about an activity: null goes back to the catalogue. */
 export const wordActivityBody = z.strictObject({
 	code: z.enum(ACTIVITY_CODES, 'code is no activity of the catalogue.'),
 	lines: z
 		.strictObject({
+			name: text('name', 80).optional(),
+			needs: lines('needs', 0).optional(),
 			dose: z.strictObject({
 				minutes: span('minutes', 240),
 				repetitions: span('repetitions', 500),
@@ -137,6 +148,8 @@ export type WordActivity = z.output<typeof wordActivityBody>;
 /** The same as a form posts it: lines as rows of a text, a span as two numbers that may both be empty. */
 export const wordActivityForm = z.strictObject({
 	code: wordActivityBody.shape.code,
+	name: text('name', 80),
+	needs: z.string().trim().max(1600, 'needs has at most 1600 characters.'),
 	words: text('words', 200),
 	minutesFrom: z.number().optional(),
 	minutesTo: z.number().optional(),

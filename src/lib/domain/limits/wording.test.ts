@@ -9,9 +9,10 @@ const AGREED = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-02-02' };
 describe('the form of an activity', () => {
 	it.each(ACTIVITIES.map((activity) => [activity.code, activity] as const))(
 		'%s comes back from it as it went in, and is accepted',
-		(code, { dose, howTo, watch, never }) => {
-			const lines = linesOfFields(fieldsOfLines({ dose, howTo, watch, never }));
-			expect(lines).toEqual({ dose, howTo, watch, never });
+		(code, activity) => {
+			const { name, dose, howTo, watch, never } = activity;
+			const lines = linesOfFields(fieldsOfLines(activity));
+			expect(lines).toEqual({ name, needs: [], dose, howTo, watch, never });
 			expect(wordActivityBody.safeParse({ code, lines, ...AGREED }).success).toBe(true);
 		}
 	);
@@ -24,11 +25,16 @@ describe('the form of an activity', () => {
 	});
 
 	it.each([
-		[{ minutesFrom: 0 }, 'minutes must run from more than 0 to at most 240'],
+		[{ minutesFrom: 0 }, 'minutes is 0 to 7: it must run from more than 0 to at most 240'],
 		[{ minutesFrom: 8, minutesTo: 7 }, 'not end below its start'],
 		[{ minutesTo: 241 }, 'at most 240'],
-		[{ timesADayTo: 25 }, 'timesADay must run from more than 0 to at most 24'],
-		[{ never: ' \n ' }, 'never is empty']
+		[{ timesADayTo: 25 }, 'timesADay is 3 to 25: it must run from more than 0 to at most 24'],
+		[{ never: ' \n ' }, 'never is empty: it must have 1 to 8 lines'],
+		[{ watch: 'a\n'.repeat(9) }, 'watch has 9 lines: at most 8.'],
+		[{ howTo: 'a'.repeat(201) }, 'a line of howTo has at most 200 characters.'],
+		[{ name: 'a'.repeat(81) }, 'name has at most 80 characters.'],
+		[{ name: ' ' }, 'name is empty.'],
+		[{ needs: 'a\n'.repeat(9) }, 'needs has 9 lines: at most 8.']
 	])('refuses %j', (change, message) => {
 		const lines = linesOfFields({ ...fields, ...change });
 		const found = wordActivityBody.safeParse({ code: 'hall-walk', lines, ...AGREED });
@@ -56,6 +62,25 @@ describe('the words of a unit', () => {
 	it('the newest counts, and null goes back to the catalogue', () => {
 		const entry = worded(activityByCode('hall-walk'), [change(2, { lines: null }), change(1)]);
 		expect(entry).toMatchObject({ howTo: activityByCode('hall-walk').howTo, local: null });
+	});
+
+	it('may ask for more first, never for less, under a name of their own', () => {
+		const more = { ...lines, name: 'Long slides', needs: ['Drain out'] };
+		const entry = worded(activityByCode('leg-slides'), [change(1, { code: 'leg-slides', lines: more })]);
+		expect(entry).toMatchObject({
+			name: 'Long slides',
+			needs: ['Day 1 or 2', 'The patient follows commands', 'Drain out']
+		});
+		expect(fieldsOfLines(entry)).toMatchObject({ name: 'Long slides', needs: 'Drain out' });
+	});
+
+	it('of before units had names keep the catalogue’s', () => {
+		const { name: _name, needs: _needs, ...old } = lines;
+		const entry = worded(activityByCode('hall-walk'), [change(1, { lines: old })]);
+		expect(entry).toMatchObject({
+			name: activityByCode('hall-walk').name,
+			needs: activityByCode('hall-walk').needs
+		});
 	});
 
 	it('of one activity leave the others alone', () => {

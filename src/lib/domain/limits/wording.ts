@@ -1,13 +1,18 @@
 /** Between the form of an activity and its entry: lines are rows of a text, a span is two numbers. */
-import type { Span } from '../bedside/activities/activity';
+import { activityByCode } from '../bedside/activities/activities';
+import type { Activity, Span } from '../bedside/activities/activity';
 import type { LocalLines } from '../bedside/activities/local';
 import type { WordActivityFields } from './forms';
 
 type Worded = Omit<WordActivityFields, 'code' | 'agreedBy' | 'agreedOn'>;
 
-/** What the form starts with: the entry as the unit has it now. */
-export function fieldsOfLines({ dose, howTo, watch, never }: LocalLines): Worded {
+/** What the form starts with: the entry as the unit has it now, and of its needs those that the unit added. */
+export function fieldsOfLines(activity: LocalLines & Pick<Activity, 'name' | 'code'>): Worded {
+	const { name, needs = [], dose, howTo, watch, never } = activity;
+	const ofCatalogue = activityByCode(activity.code).needs;
 	return {
+		name,
+		needs: needs.filter((need) => !ofCatalogue.includes(need)).join('\n'),
 		words: dose.words,
 		...spanFields('minutes', dose.minutes),
 		...spanFields('repetitions', dose.repetitions),
@@ -21,6 +26,8 @@ export function fieldsOfLines({ dose, howTo, watch, never }: LocalLines): Worded
 /** The entry from the form. A span of which one end is empty is that one figure; checked by `wordActivityBody`. */
 export function linesOfFields(fields: Worded) {
 	return {
+		name: fields.name,
+		needs: rowsOf(fields.needs),
 		dose: {
 			minutes: spanOf(fields.minutesFrom, fields.minutesTo),
 			repetitions: spanOf(fields.repetitionsFrom, fields.repetitionsTo),

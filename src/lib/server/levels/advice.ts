@@ -1,9 +1,11 @@
-import { and, asc, desc, eq } from 'drizzle-orm';
+import { and, asc, desc, eq, gte, inArray } from 'drizzle-orm';
 import type { RuleId } from '$lib/domain/bedside/codes';
 import type { Finding } from '$lib/domain/bedside/finding';
 import type { Assessment, Context, Reading } from '$lib/domain/bedside/forms';
 import { adviseLevel, type Advice } from '$lib/domain/bedside/progress';
+import { CALM_HOURS_BEFORE_WALKING, type WalkingChecks } from '$lib/domain/bedside/readiness';
 import { LEVELS, type Level } from '$lib/domain/core/codes';
+import { HOUR } from '$lib/domain/core/time';
 import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
 import { bedsideSessions, findings, readings } from '../db/schema';
@@ -44,8 +46,29 @@ export async function adviceOf(db: Reader, episodeId: string, today: Level): Pro
 		set: found[0]?.set ?? 'strict',
 		version: session.limitVersion
 	};
-	const advice = adviseLevel(today, toAssessment(session, measured), verdict);
+	const walking = await walkingChecks(db, session);
+	const advice = adviseLevel(today, toAssessment(session, measured), verdict, walking);
 	return { advice, sessionId: session.id, sessionLevel: levelOf(session.level), at: session.startedAt };
+}
+
+/** What the sessions of the hours before say against walking; what none of them says, nobody has said. */
+async function walkingChecks(db: Reader, { episodeId, endedAt }: Session): Promise<WalkingChecks> {
+	const since = endedAt - CALM_HOURS_BEFORE_WALKING * HOUR;
+	const recent = await db
+		.select({ id: bedsideSessions.id, symptoms: bedsideSessions.symptoms })
+		.from(bedsideSessions)
+		.where(and(eq(bedsideSessions.episodeId, episodeId), gte(bedsideSessions.endedAt, since), notInError()));
+	const ids = recent.map(({ id }) => id);
+	const rhythms = await db.$count(
+		findings,
+		and(inArray(findings.sessionId, ids), eq(findings.rule, 'new-rhythm'))
+	);
+	const pain = recent.some(({ symptoms }) => (symptoms as Assessment['symptoms']).some(isAngina));
+	return { chestPain: pain || null, heartFailureSigns: null, newRhythm: rhythms > 0 || null };
+}
+
+function isAngina(symptom: Assessment['symptoms'][number]): boolean {
+	return (typeof symptom === 'string' ? symptom : symptom.code) === 'angina';
 }
 
 /** A stored level, which is one of the six. */

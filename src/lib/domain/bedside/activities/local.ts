@@ -1,6 +1,7 @@
 /**
- * What a unit says about an activity in its own words: dose and lines. Level, energy band, clearances and what the
- * rules look at stay those of the catalogue, so that no change of words opens a gate.
+ * What a unit says about an activity in its own words: name, dose, lines, and what it asks for first besides. Level,
+ * energy band, clearances, what the catalogue needs first and what the rules look at stay, so that no change of words
+ * opens a gate. Findings and the record name an activity as the catalogue does.
  */
 import type { Activity, Dose } from './activity';
 import { ACTIVITIES } from './activities';
@@ -8,6 +9,10 @@ import type { ActivityCode } from './codes';
 
 /** The parts of an entry that a unit may word anew. */
 export interface LocalLines {
+	/** Missing where the catalogue's name stays, as in wordings of before units had names. */
+	readonly name?: string;
+	/** What the unit asks for first besides what the catalogue needs. */
+	readonly needs?: readonly string[];
 	readonly dose: Dose;
 	readonly howTo: readonly string[];
 	readonly watch: readonly string[];
@@ -46,6 +51,14 @@ export function worded(activity: Activity, changes: readonly LocalActivity[]): U
 		return { ...activity, local: null };
 	}
 	const { lines, version, agreedBy, agreedOn } = newest;
+	const { name = activity.name, needs = [], ...rest } = lines;
 	// A figure of the unit has no published source, whatever the catalogue's own figure had.
-	return { ...activity, ...lines, source: 'common-practice', local: { version, agreedBy, agreedOn } };
+	return {
+		...activity,
+		...rest,
+		name,
+		needs: [...activity.needs, ...needs],
+		source: 'common-practice',
+		local: { version, agreedBy, agreedOn }
+	};
 }
