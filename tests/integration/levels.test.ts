@@ -116,6 +116,20 @@ describe('a decision on the level', () => {
 		expect(await endsOf(senior, 'mine')).toEqual([]);
 	});
 
+	it('needs a session of the new level before it goes on again', async () => {
+		await record(junior);
+		await decideLevel(at(junior, 20), episodeId, { to: 3 });
+		expect((await levelNow()).advice).toMatchObject({ suggestion: 'stay', sessionLevel: 2 });
+		const { result } = await decideLevel(at(junior, 30), episodeId, { to: 4, reason: 'Strong.' });
+		expect(result.state).toBe('asked');
+	});
+
+	it('that lowers the level is not undone by the session before it', async () => {
+		await record(junior);
+		await decideLevel(at(junior, 20), episodeId, { to: 1, reason: 'Tired, pressure low.' });
+		expect((await levelNow()).advice?.suggestion).toBe('stay');
+	});
+
 	it('of a senior against the advice holds at once, under their own name', async () => {
 		const input = { to: 4, reason: 'Climbs at home already.' } as const;
 		expect((await decideLevel(at(senior), episodeId, input)).result.state).toBe('made');

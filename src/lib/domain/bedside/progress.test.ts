@@ -27,6 +27,35 @@ describe('adviseLevel', () => {
 		expect(advice(3, changes)).toMatchObject({ suggestion, to });
 	});
 
+	it.each<[string, Level, boolean, Suggestion]>([
+		['a session of the level', 3, false, 'progress'],
+		['a session of a harder level', 4, false, 'progress'],
+		['a session of an easier level', 2, false, 'stay'],
+		['a session before somebody decided on the level', 3, true, 'stay']
+	])('by %s', (_what, sessionLevel, decidedSince, suggestion) => {
+		const input = session({});
+		expect(adviseLevel(3, input, assess(input), undefined, { sessionLevel, decidedSince }).suggestion).toBe(
+			suggestion
+		);
+	});
+
+	it('of an easier level still speaks for going back', () => {
+		const input = session({ symptoms: ['dizziness'] });
+		const basis = { sessionLevel: 2, decidedSince: true } as const;
+		expect(adviseLevel(3, input, assess(input), undefined, basis)).toMatchObject({
+			suggestion: 'step-back',
+			to: 2
+		});
+	});
+
+	it('holds where nothing was compared with rest in the same posture', () => {
+		const standing = { posture: 'standing' } as const;
+		const changes = { before: { posture: 'lying' } as const, during: [], after: standing };
+		const { suggestion, reasons } = advice(3, changes);
+		expect(suggestion).toBe('stay');
+		expect(reasons.filter(({ weight }) => weight === 'for').map(({ words }) => words)).toEqual([]);
+	});
+
 	it('does not climb over level 6 or fall under level 1', () => {
 		expect(advice(6)).toMatchObject({ suggestion: 'progress', to: 6, needs: [] });
 		expect(advice(1, { symptoms: ['angina'] })).toMatchObject({ suggestion: 'step-back', to: 1 });
@@ -95,7 +124,7 @@ describe('adviseLevel', () => {
 		expect(reasons.map(({ weight, words }) => `${weight}: ${words}`)).toEqual(
 			expect.arrayContaining([
 				'against: The oxygen saturation after effort is 89 %, under the limit of 90.',
-				'consider: Not judged for want of readings: temperature-ceiling.'
+				'consider: Rules that could not be judged, for want of a reading, a posture or an answer: 1.'
 			])
 		);
 	});

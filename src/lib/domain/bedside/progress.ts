@@ -36,20 +36,32 @@ export interface Advice {
 	readonly needs: readonly ClearanceKind[];
 }
 
+/** How the session stands to the level that is advised on. */
+export interface Basis {
+	/** The level that was treated at. */
+	readonly sessionLevel: Level;
+	/** Somebody has decided on the level since. */
+	readonly decidedSince: boolean;
+}
+
 const NOTHING_SAID: WalkingChecks = { chestPain: null, heartFailureSigns: null, newRhythm: null };
 
 /**
- * Advise on the level of a patient after a session at `level`.
+ * Advise on the level of a patient from their last session.
  * @param walking what is on record of the hours before; asked about where the next level is the first with walking
+ * @param basis where the session was not one of today's level: an easier one, or one from before a decision, cannot
+ *   speak for going on
  */
 export function adviseLevel(
 	level: Level,
 	session: Assessment,
 	verdict: Verdict,
-	walking: WalkingChecks = NOTHING_SAID
+	walking: WalkingChecks = NOTHING_SAID,
+	basis?: Basis
 ): Advice {
 	const up = shifted(level, 1);
 	const reasons = [
+		...basisReasons(level, basis),
 		...findingReasons(verdict),
 		...pressureReasons(session),
 		...(isFirstWithWalking(up) ? walkingReasons(walking) : [])
@@ -83,6 +95,18 @@ function suggest({ outcome, findings }: Verdict, reasons: readonly ProgressReaso
 	return held ? 'stay' : 'progress';
 }
 
+function basisReasons(level: Level, basis: Basis | undefined): ProgressReason[] {
+	if (basis === undefined) {
+		return [];
+	}
+	const easier = `It was a session of level ${basis.sessionLevel}; nothing is on record yet of level ${level}.`;
+	const older = 'The level was decided on after it; no session is on record since.';
+	return [
+		...(basis.sessionLevel < level ? [{ weight: 'against' as const, words: easier }] : []),
+		...(basis.decidedSince ? [{ weight: 'against' as const, words: older }] : [])
+	];
+}
+
 function findingReasons({ findings, notJudged }: Verdict): ProgressReason[] {
 	const against = findings
 		.filter(({ grade, rule }) => grade !== 'note' || rule === 'reading-missing')
@@ -90,15 +114,30 @@ function findingReasons({ findings, notJudged }: Verdict): ProgressReason[] {
 	const caveats = findings
 		.filter(({ grade, rule }) => grade === 'note' && rule !== 'reading-missing')
 		.map(({ reason }): ProgressReason => ({ weight: 'consider', words: reason }));
+	const open = notJudged.filter((rule) => findings.every((finding) => finding.rule !== rule)).length;
 	const unjudged: ProgressReason[] =
-		notJudged.length === 0
+		open === 0
 			? []
-			: [{ weight: 'consider', words: `Not judged for want of readings: ${notJudged.join(', ')}.` }];
+			: [
+					{
+						weight: 'consider',
+						words: `Rules that could not be judged, for want of a reading, a posture or an answer: ${open}.`
+					}
+				];
+	// A session in which nothing was compared with rest is quiet because nobody could hear.
+	const uncompared: ProgressReason[] = notJudged.includes('systolic-fall')
+		? [
+				{
+					weight: 'against',
+					words: 'The pressure in effort or after it was not compared with one at rest in the same posture.'
+				}
+			]
+		: [];
 	const quiet: ProgressReason[] =
-		against.length === 0
+		against.length + uncompared.length === 0
 			? [{ weight: 'for', words: 'No rule had a stop or a caution in this session.' }]
 			: [];
-	return [...quiet, ...against, ...caveats, ...unjudged];
+	return [...quiet, ...against, ...uncompared, ...caveats, ...unjudged];
 }
 
 function pressureReasons({ before, during, after }: Assessment): ProgressReason[] {

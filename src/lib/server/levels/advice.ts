@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, gte, inArray } from 'drizzle-orm';
+import { and, asc, desc, eq, gt, gte, inArray } from 'drizzle-orm';
 import type { RuleId } from '$lib/domain/bedside/codes';
 import type { Finding } from '$lib/domain/bedside/finding';
 import type { Assessment, Context, Reading } from '$lib/domain/bedside/forms';
@@ -8,7 +8,7 @@ import { LEVELS, type Level } from '$lib/domain/core/codes';
 import { HOUR } from '$lib/domain/core/time';
 import { notInError } from '../bedside/queries';
 import type { Reader } from '../db';
-import { bedsideSessions, findings, readings } from '../db/schema';
+import { bedsideSessions, findings, levelDecisions, readings } from '../db/schema';
 
 export interface SessionAdvice {
 	advice: Advice;
@@ -47,8 +47,19 @@ export async function adviceOf(db: Reader, episodeId: string, today: Level): Pro
 		version: session.limitVersion
 	};
 	const walking = await walkingChecks(db, session);
-	const advice = adviseLevel(today, toAssessment(session, measured), verdict, walking);
-	return { advice, sessionId: session.id, sessionLevel: levelOf(session.level), at: session.startedAt };
+	const sessionLevel = levelOf(session.level);
+	const basis = { sessionLevel, decidedSince: await decidedSince(db, session) };
+	const advice = adviseLevel(today, toAssessment(session, measured), verdict, walking, basis);
+	return { advice, sessionId: session.id, sessionLevel, at: session.startedAt };
+}
+
+async function decidedSince(db: Reader, { episodeId, endedAt }: Session): Promise<boolean> {
+	const [later] = await db
+		.select({ id: levelDecisions.id })
+		.from(levelDecisions)
+		.where(and(eq(levelDecisions.episodeId, episodeId), gt(levelDecisions.decidedAt, endedAt)))
+		.limit(1);
+	return later !== undefined;
 }
 
 /** What the sessions of the hours before say against walking; what none of them says, nobody has said. */
