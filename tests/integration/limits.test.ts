@@ -192,6 +192,19 @@ describe('a limit of a patient', () => {
 		expect(await judged(7)).toMatchObject([{ grade: 'caution', limit: 8, version: 'patient 2' }]);
 	});
 
+	it('that was overruled does not come back when the newer one ends', async () => {
+		await setPatientLimit(as('physician'), episodeId, { ...OWN, value: 30 });
+		const { result } = await setPatientLimit(as('physician', 1), episodeId, { ...OWN, value: 8 });
+		await endPatientLimit(as('surgeon', 2), result.id);
+		const lines = await patientLimitsOf(db(), hospital.people.nurse, episodeId, hospital.now + 5 * 60_000);
+		expect(lines.map(({ value, inForce }) => [value, inForce])).toEqual([
+			[8, false],
+			[30, false]
+		]);
+		// The default of the strict set, API.md: a fall over 10 stops.
+		expect(await judged(11)).toMatchObject([{ grade: 'stop', limit: 10 }]);
+	});
+
 	it('is told in the thread, and audited without its reason', async () => {
 		const { threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id });
 		await setPatientLimit(as('physician'), episodeId, OWN);

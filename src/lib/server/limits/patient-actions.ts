@@ -20,7 +20,8 @@ import type { Numbered } from './unit-actions';
 export const PATIENT_LIMIT_MAX_DAYS = 90;
 
 /**
- * Narrow or widen a limit for one patient, with a reason and a last day.
+ * Narrow or widen a limit for one patient, with a reason and a last day. An earlier one of the same key ends with it:
+ * when the new one is taken back, the unit's own holds again and not what somebody had overruled.
  * @throws Problem `invalid` for a number out of range or one that holds already, or a day in the past or too far off
  */
 export function setPatientLimit(
@@ -35,6 +36,7 @@ export function setPatientLimit(
 		const was = await checkValue(tx, episode, input, context.now);
 		const { key, value, reason, untilOn } = input;
 		const [id, version] = [newId(), await nextVersion(tx, episodeId)];
+		await replaceEarlier(tx, context, episodeId, key);
 		await tx.insert(patientLimits).values({
 			...{ id, episodeId, version, key, value, reason, untilOn },
 			...{ setBy: context.actor.id, setAt: context.now }
@@ -68,6 +70,20 @@ export function endPatientLimit(context: PersonContext, id: string): Promise<Wri
 			version
 		});
 	});
+}
+
+async function replaceEarlier(
+	tx: Tx,
+	context: PersonContext,
+	episodeId: string,
+	key: SetPatientLimit['key']
+): Promise<void> {
+	await tx
+		.update(patientLimits)
+		.set({ endedBy: context.actor.id, endedAt: context.now })
+		.where(
+			and(eq(patientLimits.episodeId, episodeId), eq(patientLimits.key, key), isNull(patientLimits.endedAt))
+		);
 }
 
 /** The number that held before; null where the rule was off. */
