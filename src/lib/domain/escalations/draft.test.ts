@@ -47,6 +47,15 @@ describe('draftEscalation', () => {
 		expect(draft.request).toBe('Please come to the bedside now.');
 	});
 
+	it('says of a stop before the start that nothing was begun, and misses nothing of effort', () => {
+		const before = { posture: 'sitting', sbp: 128, dbp: 74, hr: 140 } as const;
+		const { findings, outcome } = judge({ before, during: [], after: { hr: null, sbp: null, dbp: null } });
+		const barred = { ...CLEAR, before, after: {}, findings, outcome };
+		const { situation, assessment } = draftEscalation(RECORD, barred, ZONE);
+		expect(situation).toMatch(/^Not begun: walking in the corridor, level 4/);
+		expect(assessment).toBe('Before: sitting, 128/74 mmHg, pulse 140.');
+	});
+
 	it('says each symptom in the situation', () => {
 		const { after } = CLEAR;
 		const draft = draftEscalation(RECORD, walked(after, ['dizziness']), ZONE);

@@ -84,7 +84,8 @@ function situationOf(session: DraftSession, zone: Zone): string[] {
 	const [from, to] = [session.startedAt, session.endedAt].map((at) => localTimeOf(parseRfc3339(at), zone));
 	const done = session.activities.map(({ name }) => name).join(', ') || 'Session at the bedside';
 	const span = from === to ? `at ${from}` : `${from} to ${to}`;
-	const head = `${done}, level ${session.level}, ${span}.`;
+	const what = notBegun(session) ? `Not begun: ${done.toLowerCase()}` : done;
+	const head = `${what}, level ${session.level}, ${span}.`;
 	const stops = reasonsOf(session, 'stop');
 	return [head, ...(stops.length > 0 ? stops : reasonsOf(session, 'caution'))];
 }
@@ -122,11 +123,19 @@ function assessmentOf(session: DraftSession): string[] {
 	return [
 		`Before: ${readingWords(before)}.`,
 		...during.map((reading, index) => `In effort (${index + 1}): ${readingWords(reading)}.`),
-		`After: ${readingWords(after)}.`,
+		...(notBegun(session) ? [] : [`After: ${readingWords(after)}.`]),
 		...(stopped ? reasonsOf(session, 'caution') : []),
 		...missingOf(session)
 	];
 }
+
+/** What stopped before anything was begun has nothing to tell of effort, and nothing of it is missing. */
+function notBegun({ during, after, findings }: DraftSession): boolean {
+	const barred = findings.some(({ grade, reading }) => grade === 'stop' && reading === 'before');
+	return barred && during.length === 0 && readingWords(after) === NOT_MEASURED;
+}
+
+const NOT_MEASURED = 'not measured';
 
 /** `sitting, 108/66 mmHg, pulse 86, saturation 95 %`; what was not measured is left out. */
 export function readingWords(reading: Reading): string {
@@ -140,7 +149,7 @@ export function readingWords(reading: Reading): string {
 		pain != null ? `pain ${plain(pain)} of 10` : '',
 		oxygenLpm != null ? `oxygen ${plain(oxygenLpm)} L/min` : ''
 	].filter(Boolean);
-	return values.length === 0 ? 'not measured' : [posture, ...values].filter(Boolean).join(', ');
+	return values.length === 0 ? NOT_MEASURED : [posture, ...values].filter(Boolean).join(', ');
 }
 
 function reasonsOf({ findings }: DraftSession, grade: FindingGrade): string[] {
@@ -148,9 +157,10 @@ function reasonsOf({ findings }: DraftSession, grade: FindingGrade): string[] {
 }
 
 /** What was not measured: the reader must not take it as normal. Other notes stand in the background already. */
-function missingOf({ findings }: DraftSession): string[] {
-	return findings
+function missingOf(session: DraftSession): string[] {
+	return session.findings
 		.filter(({ rule, grade }) => rule === 'reading-missing' && grade === 'note')
+		.filter(({ reading }) => reading === 'before' || !notBegun(session))
 		.map(({ reason }) => reason);
 }
 
