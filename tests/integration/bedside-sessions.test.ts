@@ -205,6 +205,18 @@ describe('what a session says of the patient', () => {
 		expect(await episode()).toMatchObject({ rhythm: 'atrial-fibrillation', betaBlocked: null });
 	});
 
+	it('keeps the rhythm that was found before effort, and bars the start by it', async () => {
+		const body = {
+			...heart('sinus', true),
+			before: { hr: 110, sbp: 128, dbp: 74, rhythm: 'atrial-fibrillation' as const }
+		};
+		const { result } = await record(body);
+		expect(result.findings).toContainEqual(
+			expect.objectContaining({ rule: 'new-rhythm', reading: 'before' })
+		);
+		expect(await episode()).toMatchObject({ rhythm: 'atrial-fibrillation' });
+	});
+
 	it.each([
 		['before a return to theatre says nothing of now', -1, 2, true],
 		['at the return to theatre counts', 0, 3, false],

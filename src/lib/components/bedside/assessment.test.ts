@@ -12,6 +12,32 @@ function done(code: DraftActivity['code'], texts: DraftActivity['texts'] = {}): 
 	return { code, texts, confirmed: [], helper: false };
 }
 
+describe('a rhythm that is not the one on record', () => {
+	const other = (rhythmKnown: boolean | null) => draft({ rhythm: 'atrial-fibrillation', rhythmKnown });
+	const barred = (session: ReturnType<typeof draft>) =>
+		assess(toAssessment(session, RECORD)).findings.filter(({ rule }) => rule === 'new-rhythm');
+
+	it.each([null, false])('bars the start until somebody says that it was known: %s', (known) => {
+		expect(barred(other(known))).toMatchObject([{ grade: 'stop', reading: 'before' }]);
+		expect(toBody(other(known), RECORD, NOW)).toMatchObject({
+			context: { rhythm: 'sinus' },
+			before: { rhythm: 'atrial-fibrillation' }
+		});
+	});
+
+	it('bars nothing once it was known, and the caveat stands', () => {
+		const { context, before } = toAssessment(other(true), RECORD);
+		expect([context.rhythm, before.rhythm]).toEqual(['atrial-fibrillation', undefined]);
+		expect(barred(other(true))).toEqual([]);
+	});
+
+	it('is none where the record says nothing, or the same', () => {
+		expect(barred(draft({ rhythm: 'sinus' }))).toEqual([]);
+		const unknown = { ...RECORD, rhythm: null };
+		expect(toAssessment(other(null), unknown).context.rhythm).toBe('atrial-fibrillation');
+	});
+});
+
 describe('toReading', () => {
 	it('leaves out what cannot be true and what is no number', () => {
 		expect(toReading(typed({ sbp: '12', hr: '8o', spo2: '96', dbp: ' ' }))).toEqual({ spo2: 96 });

@@ -51,7 +51,7 @@ export function doseFieldsOf({ code, arms, stairs, walking, dose }: Activity): D
 export function toAssessment(draft: SessionDraft, record: BedsideRecord): Assessment {
 	return {
 		context: contextOf(draft, record),
-		before: toReading(draft.before),
+		before: { ...toReading(draft.before), ...(rhythmIsNew(draft, record) ? { rhythm: draft.rhythm } : {}) },
 		during: draft.during.map(toReading),
 		after: toReading(draft.after),
 		symptoms: draft.symptoms.map((code) => toSymptom(code, draft.breathlessness)),
@@ -80,6 +80,19 @@ export function lackingOf(
 ): ClearanceKind[] {
 	const kinds = activities.map(({ code }) => lackingClearance(record, activityByCode(code)));
 	return [...new Set(kinds.filter((kind) => kind !== null))];
+}
+
+/** True where today's rhythm is not the one on record. */
+export function rhythmDiffers({ rhythm }: Pick<SessionDraft, 'rhythm'>, record: BedsideRecord): boolean {
+	return rhythm !== null && record.rhythm !== null && rhythm !== record.rhythm;
+}
+
+/** Another rhythm than the one on record is judged as new until somebody says that it was known already. */
+export function rhythmIsNew(
+	draft: Pick<SessionDraft, 'rhythm' | 'rhythmKnown'>,
+	record: BedsideRecord
+): boolean {
+	return rhythmDiffers(draft, record) && draft.rhythmKnown !== true;
 }
 
 /** A reading with the values that may be judged. */
@@ -120,7 +133,7 @@ function contextOf(draft: SessionDraft, record: BedsideRecord): Context {
 	return {
 		phase: record.phase,
 		betaBlocked: draft.drug === 'no' ? false : draft.drug === 'yes' ? true : null,
-		rhythm: draft.rhythm ?? 'sinus',
+		rhythm: (rhythmIsNew(draft, record) ? record.rhythm : draft.rhythm) ?? 'sinus',
 		sternotomy: record.sternotomy,
 		level: draft.level,
 		...RESPONSE_FACTS[draft.responds ?? 'open'],

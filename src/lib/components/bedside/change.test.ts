@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { baseText, changeWords } from './change';
+import { baseText, changeWords, unlikePostures } from './change';
 import { typed } from './testing';
 
 const BEFORE = typed({ sbp: '128', hr: '76', rr: '16' }, { posture: 'sitting', bpSource: 'cuff' });
@@ -15,6 +15,14 @@ describe('changeWords', () => {
 		['dbp', '66', null]
 	] as const)('%s %j: %j', (field, text, words) => {
 		expect(changeWords(field, BEFORE, typed({ [field]: text }))).toBe(words);
+	});
+
+	it.each([
+		['standing', { before: 'sitting', now: 'standing' }],
+		['sitting', null],
+		[null, null]
+	] as const)('says of %s after sitting whether nothing is compared', (posture, unlike) => {
+		expect(unlikePostures(BEFORE, typed({}, { posture }))).toEqual(unlike);
 	});
 
 	it('compares nothing across postures', () => {

@@ -1,5 +1,6 @@
 import { plain } from '$lib/domain/bedside/numbers';
 import { m } from '$lib/i18n/paraglide/messages';
+import type { Posture } from '$lib/domain/bedside/codes';
 import type { DraftReading } from './draft';
 import { valueOf, type ReadingField } from './fields';
 
@@ -33,4 +34,17 @@ function isComparable(field: ReadingField, before: DraftReading, reading: DraftR
 
 function isSame<T>(one: T | null, other: T | null): boolean {
 	return one === null || other === null || one === other;
+}
+
+/**
+ * The two postures where a reading stands in another than the one before and does not count as a base of its own:
+ * then it is compared with nothing. Null where it is compared.
+ */
+export function unlikePostures(
+	before: DraftReading,
+	reading: DraftReading
+): { before: Posture; now: Posture } | null {
+	return before.posture !== null && reading.posture !== null && before.posture !== reading.posture
+		? { before: before.posture, now: reading.posture }
+		: null;
 }

@@ -55,6 +55,8 @@ export interface SessionDraft {
 	/** A rate-slowing drug today; null until it is answered. */
 	drug: DrugAnswer | null;
 	rhythm: Rhythm | null;
+	/** Where it is not the one on record: somebody says that it was known already. Missing in what was kept before. */
+	rhythmKnown?: boolean | null;
 	responds: Response | null;
 	airway: Airway | null;
 	startChecks: StartCheck[];
@@ -91,6 +93,7 @@ export function newDraft(record: BedsideRecord, key: string): SessionDraft {
 		level: record.level,
 		drug: drug[`${record.betaBlocked}`],
 		rhythm: record.rhythm,
+		rhythmKnown: null,
 		responds: null,
 		airway: null,
 		startChecks: [],

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { SessionDraft } from './draft';
-import { confirmation, obstaclesOf, pressureDoubt, pressureFault } from './obstacles';
+import { confirmation, obstaclesOf, pressureDoubt, pressureFault, unansweredOf } from './obstacles';
 import { draft, typed } from './testing';
 
 const idsOf = (session: ReturnType<typeof draft>) => obstaclesOf(session).map(({ id }) => id);
@@ -92,5 +92,19 @@ describe('two pressures', () => {
 		const confirmed = [confirmation('pressures', '109/100')];
 		expect(pressureDoubt(typed({ sbp: '109', dbp: '100' }, { confirmed }))).toBeNull();
 		expect(pressureDoubt(typed({ sbp: '108', dbp: '100' }, { confirmed }))).not.toBeNull();
+	});
+});
+
+describe('unansweredOf', () => {
+	const spirometer = { code: 'incentive-spirometer' as const, texts: {}, confirmed: [], helper: false };
+
+	it.each([
+		['nobody looked', {}, 1],
+		['somebody looked and found none', { noStartChecks: true }, 0],
+		['somebody found one', { startChecks: ['bleeding' as const] }, 0],
+		['the spirometer without an answer on the tube', { noStartChecks: true, activities: [spirometer] }, 1],
+		['the spirometer with one', { noStartChecks: true, activities: [spirometer], airway: 'none' as const }, 0]
+	])('%s', (_, changes, count) => {
+		expect(unansweredOf(draft(changes))).toHaveLength(count);
 	});
 });

@@ -57,6 +57,21 @@ function openQuestions({ drug, rhythm, responds }: SessionDraft): Obstacle[] {
 	];
 }
 
+/** Questions that may stay open when a session is recorded, and are then said not to have been answered. */
+export function unansweredOf({
+	startChecks,
+	noStartChecks,
+	activities,
+	airway
+}: Pick<SessionDraft, 'startChecks' | 'noStartChecks' | 'activities' | 'airway'>): string[] {
+	const looked = noStartChecks || startChecks.length > 0;
+	const needsAirway = activities.some(({ code }) => code === 'incentive-spirometer');
+	return [
+		...(looked ? [] : [m.bedside_start_not_asked()]),
+		...(needsAirway && airway === null ? [m.bedside_airway_open()] : [])
+	];
+}
+
 function readingObstacles(place: Place, reading: DraftReading): Obstacle[] {
 	const moment = MOMENT_LABELS[place.moment]();
 	const fields = READING_FIELDS.flatMap((field) =>

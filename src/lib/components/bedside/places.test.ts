@@ -6,7 +6,12 @@ import { duringIndexOf, placeOf } from './places';
 
 describe('placeOf', () => {
 	it.each(RULE_IDS)('has a place for %s', (rule) => {
-		expect(placeOf({ rule })).toEqual(expect.any(String));
+		expect(placeOf({ rule, reading: 'after' })).toEqual(expect.any(String));
+	});
+
+	it('puts a rhythm that was not on record beside the question', () => {
+		expect(placeOf({ rule: 'new-rhythm', reading: 'before' })).toBe('rhythm');
+		expect(placeOf({ rule: 'new-rhythm', reading: 'after' })).toBe('hr');
 	});
 });
 

@@ -5,7 +5,7 @@ import type { Assessment } from '$lib/domain/bedside/forms';
 import type { ReadingField } from './fields';
 
 /** Where on the page a finding belongs: beside a reading's field, or to one of the other parts. */
-export type FindingPlace = ReadingField | 'asked' | 'activities' | 'symptoms' | 'missing';
+export type FindingPlace = ReadingField | 'asked' | 'rhythm' | 'activities' | 'symptoms' | 'missing';
 
 const PLACES: Record<RuleId, FindingPlace> = {
 	'systolic-ceiling': 'sbp',
@@ -40,8 +40,9 @@ const PLACES: Record<RuleId, FindingPlace> = {
 };
 
 /** The part of the page that a finding stands in. */
-export function placeOf({ rule }: Pick<Finding, 'rule'>): FindingPlace {
-	return PLACES[rule];
+export function placeOf({ rule, reading }: Pick<Finding, 'rule' | 'reading'>): FindingPlace {
+	// Before the session there is one answer to what the rhythm is, asked by itself.
+	return rule === 'new-rhythm' && reading === 'before' ? 'rhythm' : PLACES[rule];
 }
 
 /**

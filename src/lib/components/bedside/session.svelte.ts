@@ -4,7 +4,7 @@ import type { Finding } from '$lib/domain/bedside/finding';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { lackingOf, toAssessment, toBody } from './assessment';
 import { isTouched, measureAgain, newDraft, type Place, type SessionDraft } from './draft';
-import { obstaclesOf } from './obstacles';
+import { obstaclesOf, unansweredOf } from './obstacles';
 import { duringIndexOf, placeOf, type FindingPlace } from './places';
 import type { BedsideRecord } from './record';
 
@@ -52,8 +52,17 @@ export class BedsideSession {
 		const goesOn = this.stops.some(({ reading, rule }) => reading === 'after' || rule === 'symptom');
 		return goesOn || !isTouched(this.draft.after) ? 'now' : 'past';
 	});
-	/** What has not been measured yet. */
-	readonly missing = $derived.by(() => this.findingsAt('missing'));
+	/** Every stop, also of what is done or planned. */
+	readonly allStops = $derived.by(() => this.verdict.findings.filter(({ grade }) => grade === 'stop'));
+	/** What was not measured, and what nobody has answered: none of it is normal. */
+	readonly missing = $derived.by(() => [
+		...this.findingsAt('missing').map(({ reason }) => reason),
+		...unansweredOf(this.draft)
+	]);
+	/** Rules that found nothing and could not be judged; one that found something was. */
+	readonly notJudged = $derived.by(() =>
+		this.verdict.notJudged.filter((rule) => this.verdict.findings.every((finding) => finding.rule !== rule))
+	);
 	/** Nothing was answered to, measured or chosen yet. */
 	readonly untouched = $derived.by(() => this.draft.startedAt === null);
 

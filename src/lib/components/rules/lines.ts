@@ -1,7 +1,8 @@
-import { SETS, type LimitKey, type SetName } from '$lib/domain/bedside/codes';
+import { RULE_IDS, SETS, type LimitKey, type RuleId, type SetName } from '$lib/domain/bedside/codes';
 import { DEFAULT_LIMITS } from '$lib/domain/bedside/limits/table';
 import type { RulebookLimit } from '$lib/domain/bedside/rulebook';
 import { m } from '$lib/i18n/paraglide/messages';
+import { RULE_NAMES } from '$lib/i18n/rules';
 
 /** One limit of a rule, with its value in each set. */
 export interface LimitLine {
@@ -57,7 +58,16 @@ const MEANINGS: Record<string, () => string> = {
 export function limitLabel(key: LimitKey): string {
 	const unit = SETS.map((set) => DEFAULT_LIMITS[set][key]?.unit).find((each) => each !== undefined) ?? '';
 	const what = m.home_rules_limit_label({ what: meaningOf(key), unit });
-	return m.limits_label({ rule: key.split('.')[0] ?? key, what });
+	return m.limits_label({ rule: RULE_NAMES[ruleOf(key)](), what });
+}
+
+function ruleOf(key: LimitKey): RuleId {
+	const [bare] = key.split('.');
+	const rule = RULE_IDS.find((id) => id === bare);
+	if (rule === undefined) {
+		throw new Error(`The limit '${key}' is of no rule.`);
+	}
+	return rule;
 }
 
 /** A fall of the saturation never stops by itself; every other bare name of a rule is its stop limit. */

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import type { Level } from '../core/codes';
-import { levelAfter, measuresAgain, todayAfter } from './carry-over';
+import { levelAfter, measuresAgain, rhythmAtEnd, todayAfter } from './carry-over';
 import { OUTCOMES, type Outcome } from './codes';
 import type { ActivityDone } from './forms';
+import { session } from './testing/sample';
 
 const WALK: ActivityDone = { code: 'hall-walk' }; // level 4
 const LONG_WALK: ActivityDone = { code: 'hall-walk-long' }; // level 5
@@ -54,5 +55,18 @@ describe('measuring again', () => {
 		['a pulse that was sent as not measured', { before: { hr: null, sbp: null, dbp: null } }, false]
 	])('by %s: %s', (_, readings, measured) => {
 		expect(measuresAgain({ before: {}, during: [], after: {}, ...readings })).toBe(measured);
+	});
+});
+
+describe('the rhythm at the end of a session', () => {
+	const AF = { rhythm: 'atrial-fibrillation' } as const;
+	it.each([
+		['the one that was asked for', {}, 'sinus'],
+		['a new one before', { before: AF }, 'atrial-fibrillation'],
+		['the last that was stated', { before: AF, during: [{}, { rhythm: 'paced' as const }, {}] }, 'paced'],
+		['the one after effort', { during: [AF], after: { rhythm: 'sinus' as const } }, 'sinus']
+	])('is %s', (_, readings, rhythm) => {
+		const { context } = session({ context: { rhythm: 'sinus' } });
+		expect(rhythmAtEnd({ context, before: {}, during: [], after: {}, ...readings })).toBe(rhythm);
 	});
 });

@@ -1,8 +1,8 @@
 /** What one recorded session says about the patient beyond itself: the level reached, and a re-check that was owed. */
-import type { Level } from '../core/codes';
+import type { Level, Rhythm } from '../core/codes';
 import { activityByCode } from './activities/activities';
 import type { Outcome } from './codes';
-import type { ActivityDone, Reading } from './forms';
+import type { ActivityDone, Assessment, Reading } from './forms';
 
 /**
  * The level of a patient after a session. It rises only by a session that went well (clear, or with a caution) in
@@ -32,6 +32,17 @@ export function todayAfter(
 ): number {
 	const held = session.level > today + 1 || (session.outcome === 'caution' && !senior);
 	return held ? today : levelAfter(today, session);
+}
+
+/** The rhythm that a session ended with: the last one that a reading states, else the one asked for at its begin. */
+export function rhythmAtEnd({
+	context,
+	before,
+	during,
+	after
+}: Pick<Assessment, 'context' | 'before' | 'during' | 'after'>): Rhythm {
+	const stated = [after, ...during.toReversed(), before].map(({ rhythm }) => rhythm);
+	return stated.find((rhythm) => rhythm != null) ?? context.rhythm;
 }
 
 /** True when the session can stand for measuring again: a pulse or a pressure was taken in it. */

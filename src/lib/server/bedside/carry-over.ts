@@ -1,6 +1,6 @@
 import { and, eq, gt, isNotNull, isNull, lt, lte } from 'drizzle-orm';
 import { can } from '$lib/domain/access/can';
-import { levelAfter, measuresAgain, todayAfter } from '$lib/domain/bedside/carry-over';
+import { levelAfter, measuresAgain, rhythmAtEnd, todayAfter } from '$lib/domain/bedside/carry-over';
 import type { Verdict } from '$lib/domain/bedside/finding';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { isSenior } from '$lib/domain/bedside/sign-off';
@@ -32,14 +32,14 @@ export async function carryOver(
 	const told = { ...input, outcome: verdict.outcome };
 	const newest = !(await laterSession(tx, episode.id, startedAt));
 	// 'Not known' is an answer too: an older one must not stand in its place.
-	const { rhythm, betaBlocked } = input.context;
+	const { betaBlocked } = input.context;
 	await tx
 		.update(episodes)
 		.set({
 			// What somebody decided about today's level later than this stands; what was reached was reached.
 			level: decided || !decides ? episode.level : todayAfter(episode.level, told, isSenior(context.actor)),
 			levelReached: levelAfter(episode.levelReached, told),
-			...(newest ? { rhythm, betaBlocked } : {})
+			...(newest ? { rhythm: rhythmAtEnd(input), betaBlocked } : {})
 		})
 		.where(eq(episodes.id, episode.id));
 }
