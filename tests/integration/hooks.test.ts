@@ -230,17 +230,39 @@ describe('NO', () => {
 		expect((await answers(sid))[0]?.body).toContain('cancelled');
 	});
 
-	it('is to the visit that the newest text told of, not to the next one', async () => {
+	/** A second visit of the same patient, whose reminder was sent so long after that of the first. */
+	async function twoReminded(apart: number) {
 		const { own, patient, visitId } = await reminded({ state: 'confirmed' });
 		const later = await addVisit(own, { startsAt: HOSPITAL_NOW + 3 * DAY });
 		const newest = await remind(later, patient.id);
 		await db()
 			.update(outbox)
-			.set({ sentAt: HOSPITAL_NOW + 1 })
+			.set({ sentAt: HOSPITAL_NOW + apart })
 			.where(eq(outbox.id, newest));
-		await say(patient.phone, 'No', newSid(), HOSPITAL_NOW + 2);
-		expect([await stateOf(visitId), await stateOf(later)]).toEqual(['confirmed', 'cancelled']);
+		return { patient, states: async () => [await stateOf(visitId), await stateOf(later)] };
+	}
+
+	it('is to the visit that the newest text told of, not to the next one', async () => {
+		const { patient, states } = await twoReminded(HOUR + 1);
+		await say(patient.phone, 'No', newSid(), HOSPITAL_NOW + HOUR + 2);
+		expect(await states()).toEqual(['confirmed', 'cancelled']);
 	});
+
+	// That texts within an hour are read together: common practice, no published source.
+	it.each([0, 1, HOUR - 1, HOUR])(
+		'to two visits that were told of %d ms apart is neither: a person asks which',
+		async (apart) => {
+			const { patient, states } = await twoReminded(apart);
+			const sid = newSid();
+			await say(patient.phone, 'No', sid, HOSPITAL_NOW + HOUR + 2);
+			expect(await states()).toEqual(['confirmed', 'planned']);
+			const row = await inbound(sid);
+			expect(row).toMatchObject({ understoodAs: 'no', handledAt: null, visitId: null });
+			const { mine } = await looseEndsOf(db(), hospital.people.coordinator, HOSPITAL_NOW + 2 * HOUR);
+			expect(mine).toContainEqual(expect.objectContaining({ kind: 'inbound', id: row?.id }));
+			expect((await answers(sid))[0]?.body).toContain('A person will read');
+		}
+	);
 
 	it('stays a loose end when the time of the visit comes, and after it', async () => {
 		const { patient, visitId } = await reminded();

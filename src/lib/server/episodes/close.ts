@@ -34,7 +34,7 @@ export function closeEpisode(
 			.set({ closedAt: context.now, closedFor: reason })
 			.where(and(eq(episodes.id, episodeId), isNull(episodes.closedAt)));
 		await endPlacement(tx, episodeId, context.now);
-		const messages = await tellDischarge(tx, episodeId, context.actor.id, context.now);
+		const messages = await tellDischarge(tx, episodeId, context.actor.id, reason, context.now);
 		const ended = await endVisits(tx, context, episodeId, reason);
 		const change = {
 			result: { id: episodeId, closedAt: toRfc3339(context.now) },

@@ -11,6 +11,9 @@ import { answerTo, senderFields, stopHeardKey, type ReceivedText, type Understoo
 /** One automatic 'a person reads this' in so many hours: a telephone that answers by itself must not talk with us. */
 const PERSON_READS_EVERY_MS = 12 * 60 * 60 * 1000;
 
+/** Texts that come within so long of each other are read together: an answer to them may be to either. */
+const AT_ONCE_MS = 60 * 60 * 1000;
+
 /** Do what a patient's text asks for, or leave it to a person. */
 export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
 	const understoodAs = readPatientReply(text.body);
@@ -65,13 +68,17 @@ async function onYes(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<U
 	return { understoodAs: 'yes', handled: true, visitId: confirmed?.id, change: { messages } };
 }
 
-/** NO cancels the visit that the newest text told of. Without one somebody has to ask what was meant. */
+/**
+ * NO cancels the visit that the newest text told of. Without one, or where several were told at once, somebody has to
+ * ask what was meant: the wrong visit cancelled is a patient who comes for nothing, or does not come.
+ */
 async function onNo(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
-	const [visit] = await remindedVisits(tx, patient.id, ['planned', 'confirmed'], text.now);
-	if (visit) {
+	const [visit, ...others] = await remindedVisits(tx, patient.id, ['planned', 'confirmed'], text.now);
+	if (visit && others.length === 0) {
 		return moved(tx, patient, text, visit, 'cancel');
 	}
-	const answer = answerTo(text, { patientId: patient.id }, 'no-visit-open', senderFields(), patient);
+	const template = visit ? 'person-reads' : 'no-visit-open';
+	const answer = answerTo(text, { patientId: patient.id }, template, senderFields(), patient);
 	return { understoodAs: 'no', handled: false, change: { messages: [answer] } };
 }
 
@@ -104,7 +111,7 @@ function aboutVisit(
 
 /**
  * Visits ahead whose time a text has told, or may have: the one of the newest text first, because that is what an
- * answer is to; of those told at once the next.
+ * answer is to, then those that were told at once with it.
  */
 async function remindedVisits(
 	reader: Reader,
@@ -118,9 +125,9 @@ async function remindedVisits(
 		eq(reminders.sequence, visits.sequence),
 		eq(outbox.causeKey, sql`'visit-news:' || ${visits.id} || ':' || ${visits.sequence} || ':sms'`)
 	);
-	const toldAt = sql`max(coalesce(${outbox.sentAt}, ${outbox.nextAt}))`;
+	const toldAt = sql<number>`max(coalesce(${outbox.sentAt}, ${outbox.nextAt}))`;
 	const rows = await reader
-		.select({ visit: visits })
+		.select({ visit: visits, toldAt })
 		.from(visits)
 		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
 		.innerJoin(outbox, and(eq(outbox.refKind, 'visit'), eq(outbox.refId, visits.id)))
@@ -135,9 +142,9 @@ async function remindedVisits(
 			)
 		)
 		.groupBy(visits.id)
-		.orderBy(desc(toldAt), asc(visits.startsAt), asc(visits.id))
-		.limit(1);
-	return rows.map(({ visit }) => visit);
+		.orderBy(desc(toldAt), asc(visits.startsAt), asc(visits.id));
+	const newest = rows[0]?.toldAt ?? 0;
+	return rows.filter((row) => newest - row.toldAt <= AT_ONCE_MS).map(({ visit }) => visit);
 }
 
 /** From now on these patients get no texts. A second STOP does not move the date of the first. */

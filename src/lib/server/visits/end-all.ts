@@ -1,5 +1,6 @@
 import { and, eq, gt, isNull } from 'drizzle-orm';
 import type { CloseReason } from '$lib/domain/core/codes';
+import { isNobodyTold } from '$lib/domain/episodes/close-reasons';
 import { isExpected } from '$lib/domain/visits/states';
 import { m } from '$lib/i18n/paraglide/messages';
 import type { PersonContext } from '../context';
@@ -10,8 +11,6 @@ import { moveVisit } from './move';
 
 /** Somebody goes home to come back to their visits; in every other case there is nothing to come to. */
 const VISITS_STAND: readonly CloseReason[] = ['home'];
-/** Nobody writes to a patient who has died, nor about a stay that never was. */
-const NOBODY_IS_TOLD: readonly CloseReason[] = ['died', 'entered-in-error'];
 
 /**
  * What the end of a stay does to the visits ahead: they are cancelled, what waits to be sent about them is dropped,
@@ -34,7 +33,7 @@ export async function endVisits(
 	const changes: Change<unknown>[] = [];
 	for (const visit of ahead.filter(({ state }) => isExpected(state))) {
 		const change = await moveVisit(tx, visit, 'cancel', 'staff', now, m.visits_stay_over());
-		const messages = NOBODY_IS_TOLD.includes(reason) ? [] : (change.messages ?? []);
+		const messages = isNobodyTold(reason) ? [] : (change.messages ?? []);
 		changes.push({ ...change, entries: [], messages });
 	}
 	await tx

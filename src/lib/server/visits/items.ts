@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray } from 'drizzle-orm';
+import { and, asc, eq, inArray, or, sql } from 'drizzle-orm';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { VisitLine } from '$lib/domain/episodes/views';
 import { textProblem } from '$lib/domain/messages/reach';
@@ -49,6 +49,11 @@ function noReminder(visit: VisitRow, patient: PatientRow, fates: readonly Remind
 }
 
 async function fatesOf(reader: Reader, visitIds: string[]): Promise<Map<string, ReminderFate[]>> {
+	// A cancellation raises the sequence and moves nothing: the reminders of the time that it ended are its history.
+	const tellsOf = or(
+		eq(reminders.sequence, visits.sequence),
+		and(eq(visits.state, 'cancelled'), eq(reminders.sequence, sql`${visits.sequence} - 1`))
+	);
 	const rows = await reader
 		.select({
 			visitId: reminders.visitId,
@@ -59,7 +64,7 @@ async function fatesOf(reader: Reader, visitIds: string[]): Promise<Map<string, 
 		})
 		.from(reminders)
 		.innerJoin(outbox, eq(outbox.id, reminders.messageId))
-		.innerJoin(visits, and(eq(visits.id, reminders.visitId), eq(visits.sequence, reminders.sequence)))
+		.innerJoin(visits, and(eq(visits.id, reminders.visitId), tellsOf))
 		.where(inArray(reminders.visitId, visitIds))
 		.orderBy(asc(reminders.dueAt));
 	const fates = new Map<string, ReminderFate[]>();

@@ -10,7 +10,7 @@ import { dropWaiting } from '../outbox/reminders';
 import type { Change } from '../write';
 import { patientOfEpisode } from './remind';
 import { tellCancelled } from './tell-patient';
-import { rewordReminders } from './waiting-reminders';
+import { reviveReminders, rewordReminders } from './waiting-reminders';
 import { movedText } from './words';
 
 export type VisitRow = typeof visits.$inferSelect;
@@ -33,7 +33,7 @@ export interface MovedVisit {
 
 /**
  * Move a visit on, with what follows from it in the same transaction: reminders of a visit that is not expected
- * any more are dropped, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
+ * any more are dropped, those of one that was marked by mistake wait again, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
  * until somebody has followed it up. Whether the caller may do it is decided before.
  * @param way how patients said it, where it was them
  * @throws Problem `wrong-state`, and `invalid` where what is on record would be changed without a reason
@@ -62,6 +62,7 @@ export async function moveVisit(
 	if (state === 'confirmed') {
 		await rewordReminders(tx, patient, id);
 	}
+	const revived = move === 'reopen' ? await reviveReminders(tx, patient, after, now) : [];
 	const messages = state === 'cancelled' ? tellCancelled(after, by, patient, now) : [];
 	const threadId = await threadForDeed(tx, episodeId, null);
 	const body = movedText(visit, move, by === 'staff' ? by : way, reason, now);
@@ -76,7 +77,7 @@ export async function moveVisit(
 			detail: { by, from: visit.state, ...(by === 'patient' ? { way } : {}) }
 		},
 		entries: threadId ? [{ threadId, kind: 'event', body, ref: { kind: 'visit', id }, ...strand }] : [],
-		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped],
+		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped, ...revived],
 		messages
 	};
 }

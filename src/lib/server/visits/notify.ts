@@ -1,4 +1,6 @@
 import { and, desc, eq, inArray } from 'drizzle-orm';
+import type { CloseReason } from '$lib/domain/core/codes';
+import { isNobodyTold } from '$lib/domain/episodes/close-reasons';
 import { mailText } from '$lib/domain/messages/templates';
 import { routes } from '$lib/routes';
 import type { Tx } from '../db';
@@ -54,13 +56,20 @@ export function tellReferralClosed(
 	return [mailTo(askedBy, 'summary', link, `referral-closed:${id}`, { kind: 'referral', id }, now)];
 }
 
-/** Tell everybody who referred a patient, and whose referral was not closed before, that the stay is over. */
+/**
+ * Tell everybody who referred a patient, and whose referral was not closed before, that the stay is over. A death is
+ * told by people and not by a mail; of a stay that never was there is nothing to tell.
+ */
 export async function tellDischarge(
 	tx: Tx,
 	episodeId: string,
 	closedBy: string,
+	reason: CloseReason,
 	now: number
 ): Promise<NewMessage[]> {
+	if (isNobodyTold(reason)) {
+		return [];
+	}
 	const open = await tx
 		.selectDistinct({ askedBy: referrals.askedBy })
 		.from(referrals)

@@ -1,16 +1,59 @@
 import { and, eq, inArray } from 'drizzle-orm';
 import { planReminders } from '$lib/domain/visits/reminders';
+import type { LiveEvent } from '$lib/domain/live/events';
 import type { Tx } from '../db';
 import { outbox, reminders, visits, type patients } from '../db/schema';
+import { messageEvent } from '../outbox/change';
 import { reminderText } from './remind';
 
 type PatientRow = typeof patients.$inferSelect;
 
 /**
+ * Let the reminders of a visit that was marked by mistake wait again, asking as before: those that were dropped with
+ * the mark, that nobody had tried to send, and whose hour is still to come.
+ */
+export async function reviveReminders(
+	tx: Tx,
+	patient: PatientRow,
+	visit: typeof visits.$inferSelect,
+	now: number
+): Promise<LiveEvent[]> {
+	const dropped = await untried(tx, patient.id, visit.id, ['cancelled']);
+	const planned = planOf(visit, patient, now);
+	const events: LiveEvent[] = [];
+	for (const { id, causeKey } of dropped) {
+		const again = planned.find(({ kind }) => causeKey.endsWith(`:${kind}`));
+		if (again) {
+			const { dueAt: nextAt, expiresAt } = again;
+			const body = reminderText(visit, patient, false);
+			const [row] = await tx
+				.update(outbox)
+				.set({ state: 'ready', stateReason: null, nextAt, expiresAt, body })
+				.where(eq(outbox.id, id))
+				.returning();
+			events.push(...(row ? [await messageEvent(tx, row, 'ready')] : []));
+		}
+	}
+	return events;
+}
+
+function planOf(visit: typeof visits.$inferSelect, patient: PatientRow, now: number) {
+	return planReminders(
+		{ startsAt: visit.startsAt, inSeries: visit.seriesId !== null },
+		{ zone: visit.zone, patientZone: patient.zone, now }
+	);
+}
+
+/**
  * The reminders of a patient that nobody has tried to send, each with its visit as it is now. One that was tried keeps
  * its words and its hour, because by its words the gateway is asked whether it has gone through.
  */
-function untried(tx: Tx, patientId: string, visitId?: string) {
+function untried(
+	tx: Tx,
+	patientId: string,
+	visitId?: string,
+	states: (typeof outbox.$inferSelect)['state'][] = ['ready', 'held']
+) {
 	return tx
 		.select({ id: outbox.id, causeKey: outbox.causeKey, visit: visits })
 		.from(outbox)
@@ -20,7 +63,7 @@ function untried(tx: Tx, patientId: string, visitId?: string) {
 			and(
 				eq(outbox.patientId, patientId),
 				eq(outbox.kind, 'reminder'),
-				inArray(outbox.state, ['ready', 'held']),
+				inArray(outbox.state, states),
 				eq(outbox.attempts, 0),
 				visitId === undefined ? undefined : eq(visits.id, visitId)
 			)
@@ -45,10 +88,7 @@ export async function rewordReminders(tx: Tx, patient: PatientRow, visitId?: str
  */
 export async function replanReminders(tx: Tx, patient: PatientRow, now: number): Promise<void> {
 	for (const { id, causeKey, visit } of await untried(tx, patient.id)) {
-		const planned = planReminders(
-			{ startsAt: visit.startsAt, inSeries: visit.seriesId !== null },
-			{ zone: visit.zone, patientZone: patient.zone, now }
-		).find(({ kind }) => causeKey.endsWith(`:${kind}`));
+		const planned = planOf(visit, patient, now).find(({ kind }) => causeKey.endsWith(`:${kind}`));
 		if (planned) {
 			const { dueAt, expiresAt } = planned;
 			await tx.update(outbox).set({ nextAt: dueAt, expiresAt }).where(eq(outbox.id, id));

@@ -14,9 +14,13 @@ export const actions: Actions = {
 	/** The patient will come, or cannot. Sent twice it is done once. */
 	default: async (event) => {
 		const { locals, params, request } = event;
-		const deed = pageDeed.safeParse(Object.fromEntries(await request.formData()));
+		const posted = Object.fromEntries(await request.formData());
+		const deed = pageDeed.safeParse(posted);
 		if (!deed.success) {
-			return fail(422, { refused: 'invalid', visit: null });
+			const [visit, why] = [posted.visit, posted.why].map((typed) =>
+				typeof typed === 'string' ? typed : ''
+			);
+			return fail(422, { refused: 'invalid', visit, why });
 		}
 		try {
 			const { key } = deed.data;
@@ -32,7 +36,7 @@ export const actions: Actions = {
 const WANTED = { confirm: 'confirmed', decline: 'cancelled' } as const;
 
 /** What is already as the patient wants it is no refusal. */
-function refused(thrown: unknown, { url }: RequestEvent, token: string, { deed, visit }: PageDeed) {
+function refused(thrown: unknown, { url }: RequestEvent, token: string, { deed, visit, why }: PageDeed) {
 	if (!(thrown instanceof Problem)) {
 		throw thrown;
 	}
@@ -42,5 +46,5 @@ function refused(thrown: unknown, { url }: RequestEvent, token: string, { deed, 
 	if (thrown.status === 404 || thrown.status === 410) {
 		error(thrown.status, { message: thrown.detail, code: thrown.code });
 	}
-	return fail(thrown.status, { refused: thrown.code, visit });
+	return fail(thrown.status, { refused: thrown.code, visit, why });
 }
