@@ -4,7 +4,7 @@ import { addDays, instantOf, localDateOf, weekdayOf, type LocalDate } from '../.
 import { admit, signInAs, type Client } from '../support/api';
 import { itemsOf } from '../support/fakes';
 import { startProduct, type Product } from '../support/server';
-import { mailArrives, reply, textArrives } from './fakes';
+import { mailArrives, reply, textArrives, textsTo } from './fakes';
 import { DESK, expectConnected, PHONE, seat, signIn, type Seat } from './people';
 
 /** Visits from the booking to the day: coordinator, therapist, surgeon, nurse, and the patient with a phone and a mailbox. */
@@ -70,6 +70,25 @@ const row = (page: Page, text: string) => page.getByRole('listitem').filter({ ha
 const named = (day: LocalDate) =>
 	`${['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'][Number(day.slice(5, 7)) - 1]}`;
 const shown = (weekday: string, day: LocalDate) => `${weekday} ${Number(day.slice(8))} ${named(day)}`;
+
+const CANCELLED = 'Visit cancelled by the patient: find another time';
+
+/** What the coordinator owes for a visit that this patient cancelled, with its day, by day. */
+async function cancelledEnds(): Promise<string[]> {
+	// The move of the clock has ended the sign-in.
+	desk = await signInAs(product.url, 'coordinator');
+	const { mine } = (await desk.get('/api/loose-ends')).body as unknown as {
+		mine: { kind: string; id: string; episodeId: string; title: string }[];
+	};
+	const board = (await desk.get(`/api/episodes/${episodeId}`)).body as unknown as {
+		visits: { id: string; startsAt: string }[];
+	};
+	const starts = new Map(board.visits.map(({ id, startsAt }) => [id, startsAt]));
+	return mine
+		.filter((end) => end.episodeId === episodeId && end.kind === 'visit-cancelled')
+		.map(({ id, title }) => `${title} ${localDateOf(Date.parse(starts.get(id) ?? ''), ZONE)}`)
+		.toSorted((one, other) => one.slice(-10).localeCompare(other.slice(-10)));
+}
 
 test('the coordinator closes a day, and a series that is booked steps over it', async () => {
 	const { page } = coordinator;
@@ -160,6 +179,9 @@ test('the patient’s own page: a private link, no script, a yes and a no', asyn
 	await expectConnected(coordinator.page);
 	await coordinator.page.getByRole('button', { name: 'Send a link by mail' }).click();
 	await expect(coordinator.page.getByText(/A link was sent by mail/)).toBeVisible();
+	await expect(
+		coordinator.page.getByText('The message was sent; whether it arrived is not known yet.')
+	).toBeVisible();
 	await expect
 		.poll(async () =>
 			(await itemsOf<{ to: string; text: string }>(`${product.mailUrl}/mails`)).some(({ text }) =>
@@ -230,8 +252,13 @@ test('the day before, the phone is reminded once; a no frees the place; on the d
 	const start = Date.now();
 	const dayBefore = instantOf(addDays(monday, -1), '17:01', ZONE);
 	await product.advance(dayBefore - start - 16 * 60 * 60 * 1000);
+	const ofMonday = async () =>
+		(await textsTo(product.smsUrl, number)).filter(({ body }) =>
+			body.includes(`your visit is ${shown('Mon', monday)}`)
+		);
 	const text = await textArrives(product.smsUrl, number, /your visit is Mon/);
 	expect(text.body).toContain('Reply NO if you cannot come');
+	expect(await ofMonday()).toHaveLength(1);
 
 	await signIn(nurse.page, 'nurse');
 	await product.advance(instantOf(monday, '09:30', ZONE) - dayBefore);
@@ -249,6 +276,9 @@ test('the day before, the phone is reminded once; a no frees the place; on the d
 	await textArrives(product.smsUrl, number, new RegExp(`your visit is ${shown('Mon', next)}`));
 	await reply(product.smsUrl, NUMBER, 'Sorry, no.');
 	await textArrives(product.smsUrl, number, /is cancelled. We will call/);
+	expect(await ofMonday()).toHaveLength(1);
+
+	expect(await cancelledEnds()).toEqual([addDays(monday, 3), next].map((day) => `${CANCELLED} ${day}`));
 	await signIn(coordinator.page, 'coordinator');
-	await expect(row(coordinator.page, PATIENT).first()).toBeVisible();
+	await expect(row(coordinator.page, PATIENT).filter({ hasText: CANCELLED })).toHaveCount(2);
 });
