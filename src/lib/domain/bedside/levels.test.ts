@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { LEVELS } from '../core/codes';
+import { LEVELS, type ClearanceKind } from '../core/codes';
+import { activitiesUpTo, activityByCode } from './activities/activities';
 import { LEVEL_BANDS, levelForMets } from './levels';
+import { grades, judge } from './testing/sample';
 
 describe('levelForMets', () => {
 	// Bands from memory (textbook step programmes); edges are ours: the lower end belongs to the band, and 5 to the last.
@@ -28,6 +30,18 @@ describe('levelForMets', () => {
 	])('%d METs: %s', (mets, expected) => {
 		const found = levelForMets(mets);
 		expect(found.kind === 'level' ? found.level : found.kind).toBe(expected);
+	});
+
+	// Stairs are 4.0 METs in the Compendium table (published), so that they belong to level 6; bands from memory.
+	it('keeps the stairs from a patient at level 4 until they are cleared', () => {
+		expect(levelForMets(4)).toMatchObject({ kind: 'level', level: activityByCode('stairs').level });
+		expect(activitiesUpTo(4).map(({ code }) => code)).not.toContain('stairs');
+		const stairs = (clearances: ClearanceKind[]) =>
+			grades(
+				judge({ context: { level: 4, clearances }, activities: [{ code: 'stairs', helper: true }] }),
+				'clearance-missing'
+			);
+		expect([stairs([]), stairs(['stairs'])]).toEqual([['stop during'], []]);
 	});
 
 	it('has bands that join without a gap', () => {

@@ -70,6 +70,20 @@ describe('walkChange', () => {
 		expect(walkChange(400, 400 + change)).toMatchObject({ matters, thresholdM: 25 });
 	});
 
+	// Pooled 23 m: Daynes 2025 (published). 30 m: ERS and ATS, from memory. 36 m in heart failure: PubMed 25049008 (published).
+	it.each([
+		['coronary', 25],
+		['cardiac-pooled', 23],
+		['respiratory', 30],
+		['heart-failure', 36]
+	] as const)('against %s it matters from %d m on', (group, thresholdM) => {
+		const matters = [thresholdM - 0.1, thresholdM, thresholdM + 0.1].map(
+			(change) => walkChange(400, 400 + change, group).matters
+		);
+		expect(matters).toEqual([false, true, true]);
+		expect(walkChange(400, 400, group).thresholdM).toBe(thresholdM);
+	});
+
 	it('may be held against another group', () => {
 		expect(walkChange(300, 330, 'heart-failure')).toEqual({ changeM: 30, matters: false, thresholdM: 36 });
 	});
