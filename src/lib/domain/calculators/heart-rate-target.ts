@@ -79,6 +79,3 @@ export const INPATIENT_RISE = 30;
 export function inpatientCeiling(resting: number, cap: number): number {
 	return Math.min(resting + INPATIENT_RISE, cap);
 }
-
-/** Under the rate at which ischaemia begins by at least this much, beats/min: from memory (ACSM). */
-export const ISCHAEMIC_MARGIN = 10;
