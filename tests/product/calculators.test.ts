@@ -174,7 +174,7 @@ it.each([
 	const answer = await nurse.post(`/api/calculate/${name}`, body);
 	expect(answer.status).toBe(422);
 	expect(answer.headers.get('content-type')).toBe('application/problem+json');
-	const [error] = answer.body.errors as { pointer: string; message: string }[];
+	const [error] = answer.body.errors as unknown as { pointer: string; message: string }[];
 	expect(error?.pointer).toBe(pointer);
 	expect(error?.message).toContain(words);
 });
