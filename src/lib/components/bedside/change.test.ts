@@ -21,7 +21,7 @@ describe('changeWords', () => {
 		['standing', { before: 'sitting', now: 'standing' }],
 		['sitting', null],
 		[null, null]
-	] as const)('says of %s after sitting whether nothing is compared', (posture, unlike) => {
+	] as const)('names the two postures where %s after sitting is another', (posture, unlike) => {
 		expect(unlikePostures(BEFORE, typed({}, { posture }))).toEqual(unlike);
 	});
 

@@ -37,8 +37,8 @@ function isSame<T>(one: T | null, other: T | null): boolean {
 }
 
 /**
- * The two postures where a reading stands in another than the one before and does not count as a base of its own:
- * then it is compared with nothing. Null where it is compared.
+ * The two postures where a reading was taken in another than the one before; without a rest in the new one the rules
+ * compare only the first pressure after rising. Null where they are the same, or one was not stated.
  */
 export function unlikePostures(
 	before: DraftReading,

@@ -70,10 +70,10 @@ describe('the base', () => {
 			['stop during']
 		],
 		[
-			'unstated after an unsettled rise is compared with no other posture',
+			'unstated after an unsettled rise is still judged',
 			lying,
 			[standing, { ...REST, posture: undefined, sbp: 105 }],
-			[]
+			['stop during']
 		]
 	])('%s', (_what, before, during, found) => {
 		expect(falls(before, during)).toEqual(found);

@@ -3,8 +3,8 @@
  * changed posture, the first later reading marked `settled` in the new posture. Only readings in the same posture
  * are compared, and pressures only when they come from the same source (cuff or arterial line). A posture keeps
  * the first base it has: a later, lower resting value must not hide a fall. A reading that does not state its
- * posture was taken in the one before it; where that one has no base yet, it is compared with nothing, and
- * `missing.ts` says so.
+ * posture counts as unchanged and is never left unjudged for that: where its posture has no base yet, the latest base
+ * of all is used, so that a fall is rather heard twice than not at all.
  */
 import { exact } from '../numbers';
 import { measured, type Measure, type Placed } from '../timeline';
@@ -44,24 +44,11 @@ export function settlesAnew({ reading, stay }: Placed): boolean {
 
 /** The base of a reading for one measure, or null when there is none it may be compared with. */
 export function baseFor({ readings }: Facts, placed: Placed, measure: Measure): Placed | null {
-	return basesOf(readings, placed, measure).find(({ posture }) => posture === placed.posture) ?? null;
-}
-
-/** True when nobody stated the posture of a reading and it is no longer the one that it could be compared in. */
-export function postureIsUnknown({ readings }: Facts, placed: Placed): boolean {
-	if (placed.reading.posture != null || settlesAnew(placed)) {
-		return false;
-	}
-	return (['hr', 'sbp'] as const).some((measure) => {
-		const bases = measured(placed, measure) === null ? [] : basesOf(readings, placed, measure);
-		return bases.length > 0 && bases.every(({ posture }) => posture !== placed.posture);
-	});
-}
-
-/** What a reading could be compared with if the posture were the same. */
-function basesOf(readings: readonly Placed[], placed: Placed, measure: Measure): Placed[] {
-	return readings
+	const bases = readings
 		.slice(0, readings.indexOf(placed))
 		.filter((earlier) => earlier.moment === 'before' || settlesAnew(earlier))
 		.filter((earlier) => comparable(earlier, placed, measure));
+	const samePosture = bases.find(({ posture }) => posture === placed.posture);
+	const unstated = placed.reading.posture == null ? bases.at(-1) : undefined;
+	return samePosture ?? unstated ?? null;
 }

@@ -1,29 +1,24 @@
 /**
  * Missing readings. A missing value is never a normal one: heart rate and both pressures are needed before and
  * after every session, and what is not there is said. After walking a missing pressure cautions, because that
- * is when a fall would show. In an irregular rhythm, where the pulse says little, exertion is needed too. After a
- * change of posture in which the patient has not come to rest, a reading that does not state its posture can be
- * compared with nothing: the posture is missing. Each of these findings makes the outcome `incomplete`, unless
- * something stops.
+ * is when a fall would show. In an irregular rhythm, where the pulse says little, exertion is needed too. Each
+ * of these findings makes the outcome `incomplete`, unless something stops.
  */
-import type { Moment } from '../codes';
 import type { RuleFinding } from '../finding';
 import { cite } from '../limits/sources';
 import { measured, type Placed } from '../timeline';
-import { postureIsUnknown } from './base';
 import { sessionIsIrregular } from './rhythm';
 import { MOMENT_WORDS, withoutLimit, type Facts, type Rule } from './rule';
 
 export const readingMissing: Rule = {
 	id: 'reading-missing',
 	words:
-		'Heart rate and pressure are needed before and after; in an irregular rhythm exertion as well; after a change of posture the posture too. What is missing is never taken as normal.',
+		'Heart rate and pressure are needed before and after; in an irregular rhythm exertion as well. What is missing is never taken as normal.',
 	sources: ['common-practice'],
 	judge: (facts) => [
 		...missingAt(facts, facts.before),
 		...missingAt(facts, facts.after),
-		...exertionMissing(facts),
-		...postureMissing(facts)
+		...exertionMissing(facts)
 	],
 	lacks: () => false
 };
@@ -44,16 +39,6 @@ function exertionMissing(facts: Facts): RuleFinding[] {
 	const { during, after } = facts;
 	const asked = [...during, after].some((placed) => measured(placed, 'rpe') !== null);
 	return asked || !sessionIsIrregular(facts) ? [] : [missing(after, 'exertion', 'note')];
-}
-
-/** One for each moment, however many readings lack it. */
-function postureMissing(facts: Facts): RuleFinding[] {
-	const reason = (moment: Moment) =>
-		`The posture ${MOMENT_WORDS[moment]} was not stated, and it has changed since the start: compared with nothing. What is missing is not normal.`;
-	const unknown = facts.readings.filter((placed) => postureIsUnknown(facts, placed));
-	return [...new Set(unknown.map(({ moment }) => moment))].map((moment) =>
-		withoutLimit('reading-missing', 'note', moment, null, reason(moment), cite('common-practice'))
-	);
 }
 
 function missing({ moment }: Placed, what: string, grade: 'note' | 'caution'): RuleFinding {

@@ -161,13 +161,8 @@ function againstBase(
 				const rested = i === 0 || (base.settled === true && base.moved > 0);
 				return rested && base[field] != null && (field !== 'sbp' || base.src === row.src);
 			});
-			const base = bases.find(({ pos }) => pos === row.pos);
+			const base = bases.find(({ pos }) => pos === row.pos) ?? (row.posture ? undefined : bases.at(-1));
 			if (base === undefined) {
-				const restsHere = row.settled === true && row.moved > 0;
-				// Nobody said that this is still the posture of the rest before: it stands beside nothing.
-				if (field !== 'spo2' && bases.length > 0 && row.posture == null && !restsHere) {
-					found.add(`reading-missing note ${row.when}`);
-				}
 				return;
 			}
 			const change = (Number(row[field]) - Number(base[field])) * sign;
