@@ -11,7 +11,7 @@ const MORE_KIB = 40;
  * The bedside judges without a network, so it carries the rules, the limits and the catalogue of activities, and is over
  * what other pages may have: it may shrink, and not grow.
  */
-const BEDSIDE_KIB = 170;
+const BEDSIDE_KIB = 164;
 
 let product: Product;
 let episodeId: string;

@@ -11,7 +11,8 @@ import { DEFAULT_LIMITS, DEFAULTS_VERSION } from '../bedside/limits/table';
 import { rulebook, type RulebookLimit, type RulebookRow } from '../bedside/rulebook';
 import { sternalBans } from '../bedside/sternum';
 import { CALCULATORS } from '../calculators/rulebook';
-import { CAUTIONS, CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
+import { CAUTIONS } from './cautions';
+import { CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
 
 /** How well a source is known, in the words of the document. */
 export const STANDING: Record<SourceStatus, string> = {
