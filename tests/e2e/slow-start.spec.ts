@@ -105,3 +105,27 @@ test('a line begun before script takes over stands below the draft that was kept
 	await expect(field).toHaveValue('Slept well.\nAte little.');
 	await context.close();
 });
+
+test('a fold opened before script takes over stays open, and what its form answers is seen', async ({
+	browser
+}) => {
+	const { page, context } = await seat(browser, product.url, 'nurse', PHONE);
+	const release = await holdScripts(page);
+	await page.goto(`/patients/${episodeId}`, { waitUntil: 'commit' });
+	const noteIt = page.getByRole('button', { name: 'Note it' });
+	await page.getByText('Note wound and breastbone').click();
+	await expect(noteIt).toBeVisible();
+	release();
+	await expectConnected(page);
+	await expect(noteIt).toBeVisible();
+
+	const again = await holdScripts(page);
+	await page.reload({ waitUntil: 'commit' });
+	await page.getByText('Note wound and breastbone').click();
+	await noteIt.click();
+	await expect(page).toHaveURL(/wound/);
+	again();
+	await expectConnected(page);
+	await expect(page.getByText(/^Nothing is noted: say/)).toBeVisible();
+	await context.close();
+});

@@ -10,10 +10,11 @@ const PAGE = `
 	<input id="soon" type="radio" name="priority" value="soon" />
 	<input id="routine" type="radio" name="priority" value="routine" checked />
 	<input id="consent" type="checkbox" checked />
+	<details id="fold"><summary>More</summary></details>
 	<select id="list"><option value="a">A</option><option value="b">B</option></select>
 	<select id="chosen"><option value="a">A</option><option value="b" selected>B</option></select>`;
 
-type Field = HTMLInputElement & HTMLSelectElement;
+type Field = HTMLInputElement & HTMLSelectElement & HTMLDetailsElement;
 const field = (id: string) => document.getElementById(id) as Field;
 const page = () => (document.body.innerHTML = PAGE);
 const ids = () => typedEarly(document).map(({ control }) => control.id);
@@ -41,6 +42,15 @@ describe('what was entered before script took over', () => {
 	it('is nothing on a page that nobody touched', () => {
 		page();
 		expect(ids()).toEqual([]);
+	});
+
+	it('is a fold that somebody opened', () => {
+		page();
+		field('fold').open = true;
+		const early = typedEarly(document);
+		field('fold').open = false;
+		early.forEach((entered) => entered.giveBack());
+		expect(field('fold').open).toBe(true);
 	});
 
 	it.each(CASES)('is put back into #%s, and told to who listens', (id, person, takeOver, kept) => {

@@ -8,7 +8,7 @@ type Control = HTMLInputElement | HTMLTextAreaElement | HTMLSelectElement;
 
 /** What somebody had entered into one control; putting it back is told to whoever listens to the control. */
 export interface Entered {
-	control: Control;
+	control: Control | HTMLDetailsElement;
 	giveBack(): void;
 }
 
@@ -18,7 +18,14 @@ const NO_ENTRY = ['hidden', 'submit', 'button', 'reset', 'image', 'file'];
 /** What differs from the page as the server sent it, in the order of the page. */
 export function typedEarly(root: ParentNode): Entered[] {
 	const controls = root.querySelectorAll<Control>('input, textarea, select');
-	return [...controls].flatMap((control) => entered(control) ?? []);
+	return [...unfolded(root), ...[...controls].flatMap((control) => entered(control) ?? [])];
+}
+
+/** A fold that stands open was opened by somebody, or sent so; either way it is open afterwards. */
+function unfolded(root: ParentNode): Entered[] {
+	return [...root.querySelectorAll('details')]
+		.filter((fold) => fold.open)
+		.map((control) => ({ control, giveBack: () => void (control.open = true) }));
 }
 
 function entered(control: Control): Entered | null {
