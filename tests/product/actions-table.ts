@@ -20,7 +20,15 @@ const WHY = { reason: 'Not today.' };
 const ASK = { kind: 'stairs', question: 'Six steps went well. May it start?' };
 /** A date that no check of the form refuses; that it is past says the server, after it has let the role in. */
 const AGREED = { agreedBy: 'Dr Ana Keel', agreedOn: '2026-12-01' };
-const WORDING = { code: 'arm-exercise', words: 'A few', howTo: 'Slowly.', watch: 'Colour.', never: 'Alone.' };
+const WORDING = {
+	code: 'arm-exercise',
+	name: 'Arms',
+	needs: '',
+	words: 'A few',
+	howTo: 'Slowly.',
+	watch: 'Colour.',
+	never: 'Alone.'
+};
 const CALL = {
 	grade: 'low',
 	situation: 'Pressure fell.',
@@ -66,7 +74,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 		roles: ['coordinator', 'physician', 'surgeon']
 	},
 	'/patients/[id]/details?/contact': {
-		fields: { phone: '+353 86 123 4567' },
+		fields: { phone: '+353 86 123 4567', email: '' },
 		roles: ['coordinator', 'nurse']
 	},
 	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },
