@@ -2,12 +2,12 @@ import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import type { WordActivity } from '$lib/domain/limits/forms';
 import { db } from '$lib/server/db';
-import { audit, units } from '$lib/server/db/schema';
+import { audit } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
 import { listActivities } from '$lib/server/limits/activities';
 import { wordActivity } from '$lib/server/limits/activity-actions';
-import { addPatient, contextOf, type Hospital } from '../support/hospital';
+import { addWard, contextOf, type Hospital } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
 
 const hospital = await openHospital();
@@ -16,14 +16,7 @@ let unitId: string;
 let episodeId: string;
 
 beforeEach(async () => {
-	unitId = newId();
-	await db()
-		.insert(units)
-		.values({ id: unitId, name: `Ward ${unitId}`, kind: 'ward', zone: 'Europe/Dublin' });
-	for (const person of Object.values(hospital.people)) {
-		person.unitIds = [...person.unitIds, unitId];
-	}
-	({ episodeId } = await addPatient({ unitId, bed: '1' }));
+	({ unitId, episodeId } = await addWard(hospital));
 });
 
 const as = (role: keyof Hospital['people'], minutes = 0) =>

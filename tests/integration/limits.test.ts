@@ -5,7 +5,7 @@ import { ROLES } from '$lib/domain/core/codes';
 import { recordSession } from '$lib/server/bedside/actions';
 import { listSessions } from '$lib/server/bedside/queries';
 import { db } from '$lib/server/db';
-import { audit, findings, units } from '$lib/server/db/schema';
+import { audit, findings } from '$lib/server/db/schema';
 import { getNameboard } from '$lib/server/episodes/nameboard';
 import { newId } from '$lib/server/ids';
 import { endPatientLimit, setPatientLimit } from '$lib/server/limits/patient-actions';
@@ -13,7 +13,7 @@ import { patientLimitsOf, unitLimitsOf } from '$lib/server/limits/queries';
 import { changeUnitLimit, chooseUnitSet } from '$lib/server/limits/unit-actions';
 import { listen, type LoggedEvent } from '$lib/server/live/hub';
 import { getThread } from '$lib/server/threads/queries';
-import { addPatient, addReferral, contextOf, type Hospital } from '../support/hospital';
+import { addReferral, addWard, contextOf, type Hospital } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
 
 const hospital = await openHospital();
@@ -26,14 +26,7 @@ const FALL = { set: 'strict', key: 'systolic-fall', value: 15, ...AGREED } as co
 const OWN = { key: 'systolic-fall', value: 6, reason: 'Tight left main.', untilOn: '2026-03-05' } as const;
 
 beforeEach(async () => {
-	unitId = newId();
-	await db()
-		.insert(units)
-		.values({ id: unitId, name: `Ward ${unitId}`, kind: 'ward', zone: 'Europe/Dublin' });
-	for (const person of Object.values(hospital.people)) {
-		person.unitIds = [...person.unitIds, unitId];
-	}
-	({ episodeId } = await addPatient({ unitId, bed: '1' }));
+	({ unitId, episodeId } = await addWard(hospital));
 });
 
 const as = (role: keyof Hospital['people'], minutes = 0) =>
@@ -190,6 +183,17 @@ describe('a limit of a patient', () => {
 			[1, 6, false]
 		]);
 		expect(await judged(7)).toMatchObject([{ grade: 'caution', limit: 8, version: 'patient 2' }]);
+	});
+
+	it('that lapsed by its own day was ended by nobody when a newer one comes', async () => {
+		await setPatientLimit(as('physician'), episodeId, { ...OWN, untilOn: '2026-03-03' });
+		const tomorrow = hospital.now + 24 * 60 * 60_000;
+		await setPatientLimit(contextOf(hospital.people.physician, tomorrow), episodeId, { ...OWN, value: 8 });
+		const lines = await patientLimitsOf(db(), hospital.people.nurse, episodeId, tomorrow);
+		expect(lines.map(({ value, inForce, endedBy }) => [value, inForce, endedBy])).toEqual([
+			[8, true, null],
+			[6, false, null]
+		]);
 	});
 
 	it('that was overruled does not come back when the newer one ends', async () => {

@@ -108,6 +108,19 @@ export async function addPerson(given: NewPerson): Promise<Person> {
 	return { kind: 'person', id, name, role, unitIds };
 }
 
+/** Another ward in which everybody of the hospital works too, with one patient: what is agreed for it is nobody else's. */
+export async function addWard(hospital: Hospital): Promise<{ unitId: string; episodeId: string }> {
+	const unitId = newId();
+	await db()
+		.insert(units)
+		.values({ id: unitId, name: `Ward ${unitId}`, kind: 'ward', zone: ZONE });
+	for (const person of Object.values(hospital.people)) {
+		person.unitIds = [...person.unitIds, unitId];
+	}
+	const { episodeId } = await addPatient({ unitId, bed: '1' });
+	return { unitId, episodeId };
+}
+
 export interface NewPatient {
 	unitId: string;
 	bed?: string | null;

@@ -1,4 +1,4 @@
-import { and, eq, isNull, max } from 'drizzle-orm';
+import { and, eq, gte, isNull, max } from 'drizzle-orm';
 import { directionOf, limitsOfPatient, setOfUnit } from '$lib/domain/bedside/limits/layers';
 import { limitFault } from '$lib/domain/bedside/limits/ranges';
 import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
@@ -82,7 +82,13 @@ async function replaceEarlier(
 		.update(patientLimits)
 		.set({ endedBy: context.actor.id, endedAt: context.now })
 		.where(
-			and(eq(patientLimits.episodeId, episodeId), eq(patientLimits.key, key), isNull(patientLimits.endedAt))
+			and(
+				eq(patientLimits.episodeId, episodeId),
+				eq(patientLimits.key, key),
+				isNull(patientLimits.endedAt),
+				// What has lapsed by its own day was ended by nobody.
+				gte(patientLimits.untilOn, localDateOf(context.now, env().hospital.zone))
+			)
 		);
 }
 
