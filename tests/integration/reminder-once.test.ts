@@ -1,5 +1,5 @@
 import { and, asc, eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
@@ -9,11 +9,8 @@ import { OutboxWorker } from '$lib/server/outbox/worker';
 import { answerOnPage } from '$lib/server/patient-page/link';
 import { sendPage } from '$lib/server/patient-page/share';
 import { bookVisits, confirmVisit } from '$lib/server/visits/actions';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { startGateway, type Gateway } from '../support/gateway';
-import { serveHooks, type HookServer } from '../support/hook-server';
-import { addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { openGateway } from '../support/open-gateway';
+import { addPatient, contextOf } from '../support/hospital';
 
 /**
  * A reminder whose first attempt ended unknown lies on the telephone already when its visit is confirmed: whichever
@@ -23,25 +20,7 @@ const STARTS_AT = Date.parse('2026-03-09T10:00:00Z');
 const DUE = Date.parse('2026-03-07T17:00:00Z');
 const MINUTE_MS = 60_000;
 
-let hooks: HookServer;
-let gateway: Gateway;
-let hospital: Hospital;
-let cleanUp: () => Promise<void>;
-
-beforeAll(async () => {
-	hooks = await serveHooks();
-	gateway = await startGateway(hooks.url);
-	const environment = testEnvironment({ ...gateway.env, PUBLIC_URL: hooks.url });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		await gateway.stop();
-		await hooks.close();
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+const { hooks, gateway, hospital } = await openGateway();
 beforeEach(() => gateway.fault('sms', 'ok'));
 
 async function settleAt(now: number): Promise<void> {

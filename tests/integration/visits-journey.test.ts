@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, expect, it } from 'vitest';
+import { expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox, visits } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
@@ -8,36 +8,15 @@ import { openChannels } from '$lib/server/outbox/channels';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { bookVisits } from '$lib/server/visits/actions';
 import { listVisits } from '$lib/server/visits/queries';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { startGateway, type Gateway } from '../support/gateway';
-import { serveHooks, type HookServer } from '../support/hook-server';
-import { HOSPITAL_NOW, addReferral, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { openGateway } from '../support/open-gateway';
+import { HOSPITAL_NOW, addReferral, contextOf } from '../support/hospital';
 
 /** A visit from the booking to the patient's answer, through the real SDK, real SMTP and the signed webhooks. */
 
 const DAY = 24 * 60 * 60 * 1000;
 const STARTS_AT = Date.parse('2026-03-09T10:00:00Z');
 
-let hooks: HookServer;
-let gateway: Gateway;
-let hospital: Hospital;
-let cleanUp: () => Promise<void>;
-
-beforeAll(async () => {
-	hooks = await serveHooks();
-	gateway = await startGateway(hooks.url);
-	const environment = testEnvironment({ ...gateway.env, PUBLIC_URL: hooks.url });
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		await gateway.stop();
-		await hooks.close();
-		database.close();
-		environment.remove();
-	};
-});
-afterAll(() => cleanUp());
+const { hooks, gateway, hospital } = await openGateway();
 
 /** Resolves when a message of this state is announced to pages. */
 function announced(state: string): Promise<string> {

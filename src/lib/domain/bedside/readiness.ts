@@ -1,7 +1,8 @@
 /**
  * Before daily walking begins: no new or recurrent chest pain for 8 hours, no new sign that the heart is failing,
  * no new significant rhythm or change of the tracing for 8 hours. What nobody has said is not ready: a question
- * that was not asked has no good answer. The advice on the level says it before the first level with walking.
+ * that was not asked has no good answer. Before the first level with walking the advice on the level holds a patient
+ * back for what happened, and puts what is open as a question; asking it is the therapist's.
  *
  * Chest pain and rhythm over 8 hours: inpatient limits of the ACSM line, as given in study notes. The rest:
  * AACVPR guidelines, from memory, not yet verified.

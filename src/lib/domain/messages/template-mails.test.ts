@@ -1,16 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { deniedWords } from './deny-list';
 import { mailText } from './templates';
+import { VISIT } from './testing/visit';
 
 const PAGE = 'http://127.0.0.1:3000/p/q7Zr2LxV0aYd8KcM3nTfPw';
-const VISIT = {
-	sender: 'Saltmarsh General',
-	phone: '+353 1 555 0100',
-	startsAt: Date.parse('2025-03-28T10:00:00Z'),
-	zone: 'Europe/Dublin',
-	place: 'East Gym',
-	emergency: '112'
-};
 
 describe('mails', () => {
 	const link = 'https://ropewalk.saltmarsh.example/patients/1';

@@ -3,15 +3,7 @@ import { isGsm7 } from './gsm7';
 import { measureSms } from './sms-length';
 import { PATIENT_SMS, STAFF_SMS, smsText } from './templates';
 import { MESSAGE_LANGUAGES } from './templates/wording';
-
-const VISIT = {
-	sender: 'Saltmarsh General',
-	phone: '+353 1 555 0100',
-	startsAt: Date.parse('2025-03-28T10:00:00Z'),
-	zone: 'Europe/Dublin',
-	place: 'East Gym',
-	emergency: '112'
-};
+import { VISIT } from './testing/visit';
 
 describe('names that a hospital chooses', () => {
 	it.each([

@@ -4,20 +4,13 @@ import { deniedWords } from './deny-list';
 import { measureSms } from './sms-length';
 import { PATIENT_SMS, SMS, smsText } from './templates';
 import type { SmsTemplate } from './templates';
+import { VISIT } from './testing/visit';
 
 const LINK = 'http://127.0.0.1:3000/t/q7Zr2LxV0aYd8KcM3nTfPw';
 const BEDSIDE = { unit: 'Heron Unit', bed: '4', grade: 'high', link: LINK } as const;
 const PAGE = 'http://127.0.0.1:3000/p/q7Zr2LxV0aYd8KcM3nTfPw';
 /** In Dublin 14:05, because summer time has begun. */
 const SINCE = { since: Date.parse('2025-03-31T13:05:00Z'), zone: 'Europe/Dublin' };
-const VISIT = {
-	sender: 'Saltmarsh General',
-	phone: '+353 1 555 0100',
-	startsAt: Date.parse('2025-03-28T10:00:00Z'),
-	zone: 'Europe/Dublin',
-	place: 'East Gym',
-	emergency: '112'
-};
 
 /** Each template word for word: a change of wording is a decision, and shows here. */
 const TEXTS: [SmsTemplate, string, string][] = [

@@ -2,24 +2,13 @@
 import fc from 'fast-check';
 import { expect, it } from 'vitest';
 import { assess } from '../assess';
-import type { RuleId } from '../codes';
 import type { Assessment } from '../forms';
+import { absoluteRules } from '../rules/absolute';
 import { anySession } from '../testing/arbitrary';
 import { gravest, keysOf, RUNS } from '../testing/worse';
 
 /** Rules that look at one reading at a time: the order of the readings in effort is nothing to them. */
-const ABSOLUTE: RuleId[] = [
-	'systolic-ceiling',
-	'systolic-floor',
-	'mean-floor',
-	'diastolic-ceiling',
-	'heart-rate-ceiling',
-	'heart-rate-floor',
-	'respiratory-ceiling',
-	'saturation-floor',
-	'exertion-ceiling',
-	'pain-ceiling'
-];
+const ABSOLUTE = absoluteRules.map(({ id }) => id);
 
 it('the order of readings in effort, for the rules that judge each by itself', () => {
 	fc.assert(
