@@ -256,7 +256,7 @@ test('remind: the coordinator books, the text goes out when due, YES confirms, t
 	// Up to here no browser complained; what comes now ends their sign-ins, and they say so.
 	expect([surgeon, therapist, nurse, coordinator].flatMap((each) => each.complaints)).toEqual([]);
 	// Two days before the visit at 17:00 the text is due. Every sign-in has ended by then, as a shift does.
-	await product.advance(instantOf(addDays(day, -2), '17:01', ZONE) - Date.now());
+	await product.advanceTo(instantOf(addDays(day, -2), '17:01', ZONE));
 	const text = await textArrives(product.smsUrl, new RegExp(NUMBER.replace('+', '\\+')), /YES/);
 	expect(text.body).not.toMatch(/Penhale|surgery|heart|bypass/i);
 	await expect(therapist.page.getByText('Your sign-in has ended')).toBeVisible({ timeout: 30_000 });

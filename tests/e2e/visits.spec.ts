@@ -1,6 +1,15 @@
 import AxeBuilder from '@axe-core/playwright';
 import { expect, test, type Page } from '@playwright/test';
-import { addDays, instantOf, localDateOf, weekdayOf, type LocalDate } from '../../src/lib/domain/core/time';
+import { nextWithinHours } from '../../src/lib/domain/core/hours';
+import {
+	addDays,
+	instantOf,
+	localDateOf,
+	MINUTE,
+	weekdayOf,
+	type LocalDate
+} from '../../src/lib/domain/core/time';
+import { REMINDER_HOURS } from '../../src/lib/domain/visits/reminders';
 import { admit, signInAs, type Client } from '../support/api';
 import { itemsOf } from '../support/fakes';
 import { startProduct, type Product } from '../support/server';
@@ -165,11 +174,12 @@ test('a visit moves: the patient is told at daytime, colleagues see it at once',
 	await expect(page.getByText('Moved. The patient is being told.')).toBeVisible();
 	await expect(row(therapist.page, shown('Thu', addDays(monday, 3)))).toBeVisible();
 	await expect(row(therapist.page, shown('Fri', friday))).toHaveCount(0);
-	// Whatever the hour is now, a text waits for the morning.
-	await product.advance(16 * 60 * 60 * 1000);
+	// Whatever the hour is now, a text waits for the daytime.
+	await product.advanceTo(nextWithinHours(Date.now() + MINUTE, ZONE, REMINDER_HOURS));
 	const text = await textArrives(product.smsUrl, new RegExp(NUMBER.replace('+', '\\+')), /MOVED/);
 	expect(text.body).toContain(`${shown('Thu', addDays(monday, 3))} 14:30`);
 	expect(text.body).not.toMatch(/Vale|Corentin/);
+	await product.advance(13 * 60 * MINUTE);
 });
 
 test('the patient’s own page: a private link, no script, a yes and a no', async ({ browser }) => {
@@ -249,9 +259,7 @@ test('the patient’s page is clean, day and night, and an ended link says whom 
 
 test('the day before, the phone is reminded once; a no frees the place; on the day the nurse marks who came', async () => {
 	const number = new RegExp(NUMBER.replace('+', '\\+'));
-	const start = Date.now();
-	const dayBefore = instantOf(addDays(monday, -1), '17:01', ZONE);
-	await product.advance(dayBefore - start - 16 * 60 * 60 * 1000);
+	await product.advanceTo(instantOf(addDays(monday, -1), '17:01', ZONE));
 	const ofMonday = async () =>
 		(await textsTo(product.smsUrl, number)).filter(({ body }) =>
 			body.includes(`your visit is ${shown('Mon', monday)}`)
@@ -261,7 +269,7 @@ test('the day before, the phone is reminded once; a no frees the place; on the d
 	expect(await ofMonday()).toHaveLength(1);
 
 	await signIn(nurse.page, 'nurse');
-	await product.advance(instantOf(monday, '09:30', ZONE) - dayBefore);
+	await product.advanceTo(instantOf(monday, '09:30', ZONE));
 	await signIn(nurse.page, 'nurse');
 	await nurse.page.goto(visits());
 	await expectConnected(nurse.page);
@@ -272,7 +280,7 @@ test('the day before, the phone is reminded once; a no frees the place; on the d
 	await expect(row(nurse.page, shown('Mon', monday))).toContainText('attended');
 
 	const next = addDays(monday, 7);
-	await product.advance(instantOf(addDays(next, -1), '17:01', ZONE) - instantOf(monday, '09:30', ZONE));
+	await product.advanceTo(instantOf(addDays(next, -1), '17:01', ZONE));
 	await textArrives(product.smsUrl, number, new RegExp(`your visit is ${shown('Mon', next)}`));
 	await reply(product.smsUrl, NUMBER, 'Sorry, no.');
 	await textArrives(product.smsUrl, number, /is cancelled. We will call/);

@@ -74,7 +74,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 		roles: ['coordinator', 'physician', 'surgeon']
 	},
 	'/patients/[id]/details?/contact': {
-		fields: { phone: '+353 86 123 4567', email: '' },
+		fields: { phone: '+353 86 123 4567', email: '', language: 'en', zone: 'Europe/Dublin' },
 		roles: ['coordinator', 'nurse']
 	},
 	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },

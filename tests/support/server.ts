@@ -24,6 +24,8 @@ export interface Product {
 	restart(): Promise<void>;
 	/** Moves the server's clock forward by milliseconds; all work due by then is done when it resolves. */
 	advance(ms: number): Promise<void>;
+	/** Moves the server's clock forward to an instant. */
+	advanceTo(instant: number): Promise<void>;
 	/** Ends server and fakes, and removes the data if they were made for this product. */
 	stop(): Promise<void>;
 }
@@ -98,7 +100,12 @@ export async function startProduct(options: ProductOptions = {}): Promise<Produc
 		kill,
 		restart,
 		stop,
-		advance: (ms) => advanceClock(url, ms)
+		advance: async (ms) => {
+			await advanceClock(url, ms);
+		},
+		advanceTo: async (instant) => {
+			await advanceClock(url, instant - (await advanceClock(url, 0)));
+		}
 	};
 }
 
@@ -137,7 +144,8 @@ function listenTo(child: ChildProcess, logs: string[]): ChildProcess {
 	return child;
 }
 
-async function advanceClock(url: string, ms: number): Promise<void> {
+/** Answers with the instant it is then. */
+async function advanceClock(url: string, ms: number): Promise<number> {
 	const response = await fetch(`${url}/api/demo/clock`, {
 		method: 'PUT',
 		headers: { 'Content-Type': 'application/json' },
@@ -146,4 +154,6 @@ async function advanceClock(url: string, ms: number): Promise<void> {
 	if (!response.ok) {
 		throw new Error(`The clock was not moved by ${ms} ms: ${response.status} ${await response.text()}`);
 	}
+	const { now } = (await response.json()) as { now: string };
+	return Date.parse(now);
 }
