@@ -285,6 +285,39 @@ describe('NO', () => {
 	});
 });
 
+describe('a bare Ok', () => {
+	it.each(['Ok', 'vale', '👍'])('%s to a reminder is a yes', async (body) => {
+		const { patient, visitId } = await reminded();
+		await say(patient.phone, body);
+		expect(await stateOf(visitId)).toBe('confirmed');
+	});
+
+	it.each(['Ok', 'vale', '👍'])(
+		'%s to the news that another visit is cancelled confirms nothing',
+		async (body) => {
+			const { own, patient, visitId } = await reminded();
+			const gone = await addVisit(own, { startsAt: HOSPITAL_NOW + 2 * DAY, state: 'cancelled' });
+			const news = await addReminder(gone, patient.id, { kind: 'visit' });
+			await db()
+				.update(outbox)
+				.set({ state: 'delivered', sentAt: HOSPITAL_NOW + 1, attempts: 1 })
+				.where(eq(outbox.id, news));
+			const sid = newSid();
+			await say(patient.phone, body, sid, HOSPITAL_NOW + 2);
+			expect(await stateOf(visitId)).toBe('planned');
+			expect(await inbound(sid)).toMatchObject({
+				understoodAs: 'acknowledged',
+				visitId: null,
+				handledAt: HOSPITAL_NOW + 2
+			});
+			expect(await answers(sid)).toEqual([]);
+			// A yes in words is one, whatever was written last.
+			await say(patient.phone, 'Yes', newSid(), HOSPITAL_NOW + 3);
+			expect(await stateOf(visitId)).toBe('confirmed');
+		}
+	);
+});
+
 describe('STOP, START and HELP', () => {
 	const consentOf = async (id: string) => {
 		const [row] = await db().select().from(patients).where(eq(patients.id, id));

@@ -10,8 +10,6 @@ describe('readPatientReply', () => {
 		'Yés!',
 		'y',
 		'ＹＥＳ',
-		'ok',
-		'Okay, thanks',
 		'Yes please',
 		'Hello, yes. Thank you!',
 		"I'll be there",
@@ -21,13 +19,17 @@ describe('readPatientReply', () => {
 		'SÍ',
 		'si, gracias',
 		'Confirmo',
-		'Vale',
-		'👍',
-		'👍🏽',
 		'yes\n'
 	])('%j is yes', (text) => {
 		expect(readPatientReply(text)).toBe('yes');
 	});
+
+	it.each(['ok', 'Okay, thanks', 'Vale', 'De acuerdo', '👍', '👍🏽', '✅'])(
+		'%j says that it was read',
+		(text) => {
+			expect(readPatientReply(text)).toBe('acknowledged');
+		}
+	);
 
 	it.each([
 		'NO',

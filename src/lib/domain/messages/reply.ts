@@ -6,7 +6,7 @@
  * cancel, unsubscribe; any reasonable wording counts) and those that gateways obey by themselves. Whatever language
  * patients are written to in, they may answer in any that the texts have.
  */
-export const PATIENT_REPLIES = ['yes', 'no', 'stop', 'start', 'help', 'other'] as const;
+export const PATIENT_REPLIES = ['yes', 'no', 'stop', 'start', 'help', 'acknowledged', 'other'] as const;
 export type PatientReply = (typeof PATIENT_REPLIES)[number];
 
 const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
@@ -38,8 +38,6 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'yep',
 		'yeah',
 		'yup',
-		'ok',
-		'okay',
 		'confirm',
 		'confirmed',
 		'i confirm',
@@ -53,8 +51,6 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'see you then',
 		'see you there',
 		'si',
-		'vale',
-		'de acuerdo',
 		'confirmo',
 		'confirmado',
 		'alli estare',
@@ -65,6 +61,8 @@ const PHRASES: Record<Exclude<PatientReply, 'other'>, readonly string[]> = {
 		'si ire',
 		'si puedo'
 	],
+	/** Says that it was read. It is a yes only where something was asked. */
+	acknowledged: ['ok', 'okay', 'vale', 'de acuerdo', 'thumbs up'],
 	no: [
 		'no',
 		'n',
@@ -115,7 +113,7 @@ const ABOUT_TEXTS =
 /** Understand a patient's text. Case, accents and punctuation do not matter. */
 export function readPatientReply(text: string): PatientReply {
 	const plain = collapsed(words(text).replace(POLITE, ' '));
-	const exact = (['yes', 'no', 'help', 'start'] as const).find((kind) => says(kind, plain));
+	const exact = (['yes', 'no', 'help', 'start', 'acknowledged'] as const).find((kind) => says(kind, plain));
 	if (exact) {
 		return exact;
 	}
@@ -136,7 +134,7 @@ function endsTexts(plain: string): boolean {
 export function words(text: string): string {
 	const lower = text.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase();
 	const spoken = lower
-		.replace(/👍\p{Emoji_Modifier}?|✅|👌/gu, ' yes ')
+		.replace(/👍\p{Emoji_Modifier}?|✅|👌/gu, ' thumbs up ')
 		.replace(/👎\p{Emoji_Modifier}?/gu, ' no ');
 	return collapsed(spoken.replace(/['’`´]/g, '').replace(/[^\p{L}\p{N}]+/gu, ' '));
 }

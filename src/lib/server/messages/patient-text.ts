@@ -1,18 +1,18 @@
-import { and, asc, desc, eq, gt, inArray, isNotNull, or, sql } from 'drizzle-orm';
+import { eq, inArray, sql } from 'drizzle-orm';
 import { gatewayStops, readPatientReply } from '$lib/domain/messages/reply';
 import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
-import type { VisitState } from '$lib/domain/core/codes';
-import type { Reader, Tx } from '../db';
-import { episodes, outbox, patients, reminders, visits } from '../db/schema';
+import type { Tx } from '../db';
+import { patients } from '../db/schema';
 import { moveVisit, type VisitRow } from '../visits/move';
 import type { PatientRow } from './sender';
+import { newestTextAsks, toldVisits } from './told-visits';
 import { answerTo, senderFields, stopHeardKey, type ReceivedText, type Understood } from './understood';
 
 /** One automatic 'a person reads this' in so many hours: a telephone that answers by itself must not talk with us. */
 const PERSON_READS_EVERY_MS = 12 * 60 * 60 * 1000;
 
-/** Texts that come within so long of each other are read together: an answer to them may be to either. */
-const AT_ONCE_MS = 60 * 60 * 1000;
+/** Texts of one evening: which of them a NO answers, nobody can tell. */
+const TOLD_TOGETHER_MS = 60 * 60 * 1000;
 
 /** Do what a patient's text asks for, or leave it to a person. */
 export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
@@ -25,6 +25,11 @@ export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedT
 	switch (understoodAs) {
 		case 'yes':
 			return onYes(tx, patient, text);
+		case 'acknowledged':
+			// 'Ok' to 'your visit is cancelled' must not confirm another one.
+			return (await newestTextAsks(tx, patient.id))
+				? onYes(tx, patient, text)
+				: { understoodAs, handled: true };
 		case 'no':
 			return onNo(tx, patient, text);
 		case 'stop':
@@ -55,11 +60,12 @@ export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedT
 
 /** YES confirms the next visit that was reminded of and not confirmed; a second YES is thanked again. */
 async function onYes(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
-	const [open] = await remindedVisits(tx, patient.id, ['planned'], text.now);
+	const told = await toldVisits(tx, patient.id, text.now);
+	const open = told.find(({ visit }) => visit.state === 'planned');
 	if (open) {
-		return moved(tx, patient, text, open, 'confirm');
+		return moved(tx, patient, text, open.visit, 'confirm');
 	}
-	const [confirmed] = await remindedVisits(tx, patient.id, ['confirmed'], text.now);
+	const confirmed = told[0]?.visit;
 	const messages = [
 		confirmed
 			? aboutVisit(patient, text, 'visit-confirmed', confirmed)
@@ -70,15 +76,18 @@ async function onYes(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<U
 
 /**
  * NO cancels the visit that the newest text told of. Without one, or where several were told at once, somebody has to
- * ask what was meant: the wrong visit cancelled is a patient who comes for nothing, or does not come.
+ * ask what was meant: the wrong visit must not be cancelled.
  */
 async function onNo(tx: Tx, patient: PatientRow, text: ReceivedText): Promise<Understood> {
-	const [visit, ...others] = await remindedVisits(tx, patient.id, ['planned', 'confirmed'], text.now);
-	if (visit && others.length === 0) {
-		return moved(tx, patient, text, visit, 'cancel');
+	const [newest, ...others] = await toldVisits(tx, patient.id, text.now);
+	if (newest && others.some(({ toldAt }) => newest.toldAt - toldAt <= TOLD_TOGETHER_MS)) {
+		const which = answerTo(text, { patientId: patient.id }, 'person-reads', senderFields(), patient);
+		return { understoodAs: 'no', handled: false, change: { messages: [which] } };
 	}
-	const template = visit ? 'person-reads' : 'no-visit-open';
-	const answer = answerTo(text, { patientId: patient.id }, template, senderFields(), patient);
+	if (newest) {
+		return moved(tx, patient, text, newest.visit, 'cancel');
+	}
+	const answer = answerTo(text, { patientId: patient.id }, 'no-visit-open', senderFields(), patient);
 	return { understoodAs: 'no', handled: false, change: { messages: [answer] } };
 }
 
@@ -107,44 +116,6 @@ function aboutVisit(
 ) {
 	const fields = { ...senderFields(), startsAt, zone, place };
 	return answerTo(text, { patientId: patient.id }, template, fields, patient);
-}
-
-/**
- * Visits ahead whose time a text has told, or may have: the one of the newest text first, because that is what an
- * answer is to, then those that were told at once with it.
- */
-async function remindedVisits(
-	reader: Reader,
-	patientId: string,
-	states: VisitState[],
-	now: number
-): Promise<VisitRow[]> {
-	const mayHaveArrived = or(isNotNull(outbox.sentAt), gt(outbox.attempts, 0), eq(outbox.state, 'sending'));
-	// A yes to the old time of a visit is none to the new one, which the news or a reminder of its own has told.
-	const tellsHowItIs = or(
-		eq(reminders.sequence, visits.sequence),
-		eq(outbox.causeKey, sql`'visit-news:' || ${visits.id} || ':' || ${visits.sequence} || ':sms'`)
-	);
-	const toldAt = sql<number>`max(coalesce(${outbox.sentAt}, ${outbox.nextAt}))`;
-	const rows = await reader
-		.select({ visit: visits, toldAt })
-		.from(visits)
-		.innerJoin(episodes, eq(episodes.id, visits.episodeId))
-		.innerJoin(outbox, and(eq(outbox.refKind, 'visit'), eq(outbox.refId, visits.id)))
-		.leftJoin(reminders, eq(reminders.messageId, outbox.id))
-		.where(
-			and(
-				eq(episodes.patientId, patientId),
-				inArray(visits.state, states),
-				gt(visits.startsAt, now),
-				tellsHowItIs,
-				mayHaveArrived
-			)
-		)
-		.groupBy(visits.id)
-		.orderBy(desc(toldAt), asc(visits.startsAt), asc(visits.id));
-	const newest = rows[0]?.toldAt ?? 0;
-	return rows.filter((row) => newest - row.toldAt <= AT_ONCE_MS).map(({ visit }) => visit);
 }
 
 /** From now on these patients get no texts. A second STOP does not move the date of the first. */
