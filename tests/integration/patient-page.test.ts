@@ -197,15 +197,21 @@ describe('the page', () => {
 		expect(await stateOf(visitId)).toBe('planned');
 	});
 
-	it('its calendar file holds the visits that are expected', async () => {
+	it('its calendar file holds the visits ahead, also those that are cancelled, and is none without one', async () => {
 		const { token, visitId } = await withPage();
 		const events = (file: string) =>
 			new ICAL.Component(ICAL.parse(file) as unknown as [string, object[], object[]]).getAllSubcomponents(
 				'vevent'
 			);
-		expect(events(await calendarOfPage(holder(), token))).toHaveLength(1);
+		const states = async () =>
+			events((await calendarOfPage(holder(), token)) ?? '').map((event) =>
+				event.getFirstPropertyValue('status')
+			);
+		expect(await states()).toEqual(['CONFIRMED']);
 		await answerOnPage(holder(), token, deed(visitId, 'decline'));
-		expect(events(await calendarOfPage(holder(), token))).toHaveLength(0);
+		expect(await states()).toEqual(['CANCELLED']);
+		await db().update(visits).set({ state: 'attended' }).where(eq(visits.id, visitId));
+		expect(await calendarOfPage(holder(), token)).toBeNull();
 	});
 });
 

@@ -18,9 +18,10 @@ export function mailRoutes(mailbox: Mailbox): Route[] {
 
 /** `to` is one text with all addresses of the envelope; contents of attachments are base64. */
 function viewMail({ id, at, from, to, subject, text, html, files }: Mail): unknown {
-	const attachments = files.map(({ filename, contentType, content }) => ({
+	const attachments = files.map(({ filename, contentType, method, content }) => ({
 		filename,
 		contentType,
+		method,
 		size: content.length,
 		content: content.toString('base64')
 	}));

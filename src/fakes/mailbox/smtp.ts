@@ -79,10 +79,17 @@ async function receive(
 		subject: parsed.subject ?? '',
 		text: parsed.text ?? '',
 		html: parsed.html || null,
-		files: parsed.attachments.map(({ filename, contentType, content }) => ({
+		files: parsed.attachments.map(({ filename, contentType, content, headers }) => ({
 			filename: filename ?? null,
 			contentType,
+			method: methodOf(headers.get('content-type')),
 			content
 		}))
 	});
+}
+
+/** The method that the header of a calendar part states; null for any other part. */
+function methodOf(header: unknown): string | null {
+	const { params } = (header ?? {}) as { params?: Record<string, string> };
+	return params?.method ?? null;
 }

@@ -8,6 +8,8 @@ export type MailMode = (typeof MAIL_MODES)[number];
 export interface MailFile {
 	filename: string | null;
 	contentType: string;
+	/** What a calendar part is for, as its header states; null for any other. */
+	method: string | null;
 	content: Buffer;
 }
 

@@ -1,9 +1,7 @@
-import fc from 'fast-check';
-import ICAL from 'ical.js';
-import ical from 'node-ical';
 import { describe, expect, it } from 'vitest';
 import { deniedWords } from '../messages/deny-list';
 import { calendarFile, calendarId, methodOf, type CalendarFrame, type CalendarVisit } from './calendar';
+import { PARSERS, readByIcalJs, readByNodeIcal } from './testing/read-calendar';
 import { escapeText, folded, quoted, utcStamp } from './calendar-text';
 
 const utc = (text: string) => Date.parse(text);
@@ -24,63 +22,6 @@ const FRAME: CalendarFrame = {
 	organizer: 'ropewalk@saltmarsh.example',
 	attendee: 'pat@post.example'
 };
-
-/** What a parser read, as far as both tell it. */
-interface Read {
-	uid: string;
-	sequence: number;
-	start: number;
-	end: number;
-	summary: string;
-	location: string;
-	description: string;
-	status: string;
-}
-
-function readByIcalJs(file: string): { method: string; events: Read[] } {
-	const calendar = new ICAL.Component(ICAL.parse(file) as unknown as [string, object[], object[]]);
-	const events = calendar.getAllSubcomponents('vevent').map((component) => {
-		const event = new ICAL.Event(component);
-		return {
-			uid: event.uid,
-			sequence: Number(event.sequence),
-			start: event.startDate.toJSDate().getTime(),
-			end: event.endDate.toJSDate().getTime(),
-			summary: event.summary,
-			location: event.location,
-			description: event.description,
-			status: String(component.getFirstPropertyValue('status'))
-		};
-	});
-	return { method: String(calendar.getFirstPropertyValue('method')), events };
-}
-
-function readByNodeIcal(file: string): { method: string; events: Read[] } {
-	const parsed = ical.sync.parseICS(file);
-	const events = Object.values(parsed).flatMap((one) =>
-		one?.type === 'VEVENT'
-			? [
-					{
-						uid: one.uid,
-						sequence: Number(one.sequence),
-						start: one.start.getTime(),
-						end: one.end?.getTime() ?? NaN,
-						summary: String(one.summary),
-						location: String(one.location),
-						description: String(one.description),
-						status: String(one.status)
-					}
-				]
-			: []
-	);
-	const method = String((parsed.vcalendar as { method?: string } | undefined)?.method);
-	return { method, events };
-}
-
-const PARSERS = [
-	['ical.js', readByIcalJs],
-	['node-ical', readByNodeIcal]
-] as const;
 
 describe('a calendar file', () => {
 	it('is written letter for letter', () => {
@@ -154,30 +95,6 @@ describe('a calendar file', () => {
 			);
 			expect(events[0]?.summary).toBe('Cita, Saltmarsh General');
 		});
-
-		it('property: whatever the hospital is called, instants and words arrive and every line is short', () => {
-			fc.assert(
-				fc.property(
-					fc.integer({ min: utc('2025-01-01') / 60_000, max: utc('2030-01-01') / 60_000 }),
-					fc.integer({ min: 10, max: 240 }),
-					fc.integer({ min: 0, max: 40 }),
-					fc.string({ unit: 'grapheme', maxLength: 80 }),
-					(minute, minutes, sequence, place) => {
-						const visit = { ...VISIT, startsAt: minute * 60_000, minutes, sequence, place };
-						const file = calendarFile([visit], FRAME);
-						const [event] = read(file).events;
-						expect(event).toMatchObject({
-							start: visit.startsAt,
-							end: visit.startsAt + minutes * 60_000,
-							sequence
-						});
-						expect(tooLong(file)).toEqual([]);
-						expect(deniedWords(event?.location ?? '')).toEqual([]);
-					}
-				),
-				{ numRuns: 300 }
-			);
-		});
 	});
 
 	it('asks about one visit at a time', () => {
@@ -231,5 +148,26 @@ describe('the letter', () => {
 		expect(file.split('\r\n')).toHaveLength(parts);
 		expect(tooLong(file)).toEqual([]);
 		expect(file.replaceAll('\r\n ', '')).toBe(line);
+	});
+});
+
+describe('a file that publishes several', () => {
+	it('marks those that are cancelled, and frees their hours', () => {
+		const file = calendarFile([VISIT, { ...VISIT, id: '0198b', cancelled: true }], {
+			...FRAME,
+			method: 'PUBLISH',
+			attendee: null
+		});
+		for (const { events } of [readByIcalJs(file), readByNodeIcal(file)]) {
+			expect(events.map(({ uid, status }) => [uid, status])).toEqual([
+				[calendarId('0198a'), 'CONFIRMED'],
+				[calendarId('0198b'), 'CANCELLED']
+			]);
+		}
+		expect(file.match(/TRANSP:\w+/g)).toEqual(['TRANSP:OPAQUE', 'TRANSP:TRANSPARENT']);
+	});
+
+	it.each(['PUBLISH', 'REQUEST', 'CANCEL'] as const)('is none without a visit (%s)', (method) => {
+		expect(() => calendarFile([], { ...FRAME, method })).toThrow(RangeError);
 	});
 });

@@ -22,6 +22,8 @@ export interface CalendarVisit {
 	readonly startsAt: Instant;
 	readonly minutes: number;
 	readonly place: string;
+	/** Called off; in a file that publishes several, one may be and the next not. */
+	readonly cancelled?: boolean;
 }
 
 export interface CalendarFrame {
@@ -59,9 +61,13 @@ export function calendarId(visitId: string): string {
 
 /**
  * The calendar file of some visits.
- * @throws RangeError for a request or a cancellation of several: RFC 5546 allows one
+ * @throws RangeError for none, because RFC 5545 wants one at least, and for a request or a cancellation of several,
+ * because RFC 5546 allows one
  */
 export function calendarFile(visits: readonly CalendarVisit[], frame: CalendarFrame): string {
+	if (visits.length === 0) {
+		throw new RangeError('A calendar file is about one visit at least, not 0.');
+	}
 	if (frame.method !== 'PUBLISH' && visits.length !== 1) {
 		throw new RangeError(
 			`A calendar file with the method ${frame.method} is about one visit, not ${visits.length}.`
@@ -86,6 +92,7 @@ export function methodOf(file: string): CalendarMethod | null {
 
 function eventOf(visit: CalendarVisit, frame: CalendarFrame): string[] {
 	const { method, now, language, organizer, attendee } = frame;
+	const cancelled = method === 'CANCEL' || visit.cancelled === true;
 	const sender = senderName(frame, language);
 	const words = WORDS[language];
 	return [
@@ -98,12 +105,12 @@ function eventOf(visit: CalendarVisit, frame: CalendarFrame): string[] {
 		`SUMMARY:${escapeText(words.visit(sender))}`,
 		`LOCATION:${escapeText(placeName(visit, language))}`,
 		`DESCRIPTION:${escapeText(words.call(frame.phone))}`,
-		`STATUS:${method === 'CANCEL' ? 'CANCELLED' : 'CONFIRMED'}`,
+		`STATUS:${cancelled ? 'CANCELLED' : 'CONFIRMED'}`,
 		`ORGANIZER;CN=${quoted(sender)}:mailto:${organizer}`,
 		...(attendee === null
 			? []
 			: [`ATTENDEE;ROLE=REQ-PARTICIPANT;PARTSTAT=NEEDS-ACTION;RSVP=FALSE:mailto:${attendee}`]),
-		'TRANSP:OPAQUE',
+		`TRANSP:${cancelled ? 'TRANSPARENT' : 'OPAQUE'}`,
 		'END:VEVENT'
 	];
 }

@@ -64,11 +64,11 @@ async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sendin
 }
 
 /** Fill in what is not stored: the secret link, of a call for help, an invitation or a patient's page. */
-function outgoing(row: OutboxRow, { to, name }: Receiver): Outgoing {
+function outgoing(row: OutboxRow, { to, name, language }: Receiver): Outgoing {
 	const { id, subject, linkId, calendar } = row;
 	const link = linkId === null ? null : env().publicUrl + pathOf(row)(linkToken(linkId));
 	const body = link === null ? row.body : row.body.replaceAll('{link}', () => link);
-	return { id, to, name, subject, body, calendar };
+	return { id, to, name, language, subject, body, calendar };
 }
 
 /** Which page a secret link opens. */

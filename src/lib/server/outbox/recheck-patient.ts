@@ -1,5 +1,6 @@
 import { and, eq } from 'drizzle-orm';
 import { isWithinHours, nextWithinHours } from '$lib/domain/core/hours';
+import { messageLanguage } from '$lib/domain/messages/templates/wording';
 import { isExpected } from '$lib/domain/visits/states';
 import { judgeReminder, REMINDER_HOURS } from '$lib/domain/visits/reminders';
 import type { Reader } from '../db';
@@ -100,11 +101,13 @@ function byText(patient: PatientRow, now: number): Verdict {
 		: { kind: 'wait', until: nextWithinHours(now, patient.zone, REMINDER_HOURS) };
 }
 
-function byMail({ email, mailConsent, name }: PatientRow): Verdict {
+function byMail({ email, mailConsent, name, language }: PatientRow): Verdict {
 	if (email === null) {
 		return skip('no e-mail address');
 	}
-	return mailConsent ? { kind: 'send', receiver: { to: email, name } } : skip('no consent');
+	return mailConsent
+		? { kind: 'send', receiver: { to: email, name, language: messageLanguage(language) } }
+		: skip('no consent');
 }
 
 /** Whom a message is for; null for nobody, and for a patient who has died: whatever waits, it is not sent to them. */

@@ -18,6 +18,8 @@ export interface Receiver {
 	/** A telephone number or an e-mail address, read at the moment of sending. */
 	to: string;
 	name: string | null;
+	/** The language that they are written to in; left out for staff, who are written to in English. */
+	language?: string;
 }
 
 export type Verdict =

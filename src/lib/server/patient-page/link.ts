@@ -64,18 +64,15 @@ export async function readPage({ now }: Context, token: string): Promise<Patient
 }
 
 /**
- * The visits ahead as a calendar file.
+ * The visits ahead as a calendar file, those that are cancelled too: who fetched an earlier one has them still. Null
+ * where there is none: a calendar without an entry is no calendar.
  * @throws Problem as `readPage()`
  */
-export async function calendarOfPage({ now }: Context, token: string): Promise<string> {
+export async function calendarOfPage({ now }: Context, token: string): Promise<string | null> {
 	const { patient, link } = await openPage(db(), token, now);
 	const rows = await visitsOf(db(), link.episodeId, now);
-	return calendarOf(
-		rows.filter(({ state }) => isExpected(state)),
-		'PUBLISH',
-		patient,
-		now
-	);
+	const ahead = rows.filter(({ state }) => isExpected(state) || state === 'cancelled');
+	return ahead.length === 0 ? null : calendarOf(ahead, 'PUBLISH', patient, now);
 }
 
 /**

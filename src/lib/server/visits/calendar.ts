@@ -15,7 +15,8 @@ export function calendarOf(
 	now: number
 ): string {
 	const { hospital, mailFrom } = env();
-	return calendarFile(rows, {
+	const entries = rows.map((row) => ({ ...row, cancelled: row.state === 'cancelled' }));
+	return calendarFile(entries, {
 		method,
 		now,
 		sender: hospital.name,

@@ -7,6 +7,8 @@ export interface Outgoing {
 	/** A telephone number in E.164 form, or an e-mail address. */
 	to: string;
 	name: string | null;
+	/** The tag of the language that the text is written in; English where left out. */
+	language?: string;
 	subject: string | null;
 	body: string;
 	/** The calendar file that goes with a mail; null or left out for none. */

@@ -1,9 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { htmlOf } from './mail-html';
 
-const inside = (text: string) => /<body>\n([\s\S]*)\n<\/body>/.exec(htmlOf(text))?.[1];
+const inside = (text: string) => /<body>\n([\s\S]*)\n<\/body>/.exec(htmlOf(text, 'en'))?.[1];
 
 describe('htmlOf', () => {
+	it('says which language it is in', () => {
+		expect(htmlOf('Su cita.', 'es')).toContain('<html lang="es">');
+	});
+
 	it('keeps paragraphs and lines', () => {
 		expect(inside('One.\n\nTwo,\nstill two.\n\n\nThree.\n')).toBe(
 			'<p>One.</p>\n<p>Two,<br>still two.</p>\n<p>Three.</p>'

@@ -1,12 +1,15 @@
 const LINK = /https?:\/\/[^\s<>"]+/g;
 
-/** A plain text as simple HTML: its paragraphs, its links, and nothing else. */
-export function htmlOf(text: string): string {
+/**
+ * A plain text as simple HTML: its paragraphs, its links, and nothing else.
+ * @param language of the text, so that it is read aloud as what it is
+ */
+export function htmlOf(text: string, language: string): string {
 	const paragraphs = text
 		.trim()
 		.split(/\n{2,}/)
 		.map((paragraph) => `<p>${paragraph.split('\n').map(lineOf).join('<br>')}</p>`);
-	return `<!doctype html>\n<html lang="en"><body>\n${paragraphs.join('\n')}\n</body></html>\n`;
+	return `<!doctype html>\n<html lang="${escaped(language)}"><body>\n${paragraphs.join('\n')}\n</body></html>\n`;
 }
 
 /** The text between links is escaped, and so is each link, in its attribute and on the page. */

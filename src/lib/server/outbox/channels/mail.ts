@@ -45,7 +45,7 @@ async function send(
 	transport: Transporter,
 	from: MailAddress,
 	host: string,
-	{ id, to, name, subject, body, calendar }: Outgoing
+	{ id, to, name, language, subject, body, calendar }: Outgoing
 ): Promise<Sent> {
 	const receiver = mailAddress(to, name);
 	if (!receiver) {
@@ -59,7 +59,7 @@ async function send(
 			to: receiver,
 			subject: subject ?? '',
 			text: body,
-			html: htmlOf(body),
+			html: htmlOf(body, language ?? 'en'),
 			...withCalendar(calendar ?? null),
 			headers: { 'Auto-Submitted': 'auto-generated' }
 		});
