@@ -232,7 +232,7 @@ test('the patient’s own page: a private link, no script, a yes and a no', asyn
 
 	const file = await fetch(`${link}/visits.ics`);
 	expect(file.headers.get('content-type')).toContain('text/calendar');
-	expect((await file.text()).match(/BEGIN:VEVENT/g)).toHaveLength(2);
+	expect((await file.text()).match(/STATUS:CONFIRMED/g)).toHaveLength(2);
 });
 
 test('the patient’s page is clean, day and night, and an ended link says whom to call', async ({
