@@ -1,6 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { CLOSE_REASONS } from '$lib/domain/core/codes';
+import type { BookVisits } from '$lib/domain/visits/forms';
 import { db } from '$lib/server/db';
 import { outbox, patientLinks, visits } from '$lib/server/db/schema';
 import { closeEpisode } from '$lib/server/episodes/close';
@@ -76,5 +77,53 @@ describe('a stay that is over', () => {
 		await closeEpisode(contextOf(hospital.people.physician), episodeId, 'died');
 		await db().update(outbox).set({ state: 'ready' }).where(eq(outbox.patientId, patientId));
 		expect(await sentUntilTheVisit()).toEqual([]);
+	});
+
+	it('tells of all visits ahead at once, by one text and one mail whose file takes each out', async () => {
+		const made = await addPatient({ unitId: hospital.units.gym, email: 'all@post.example' });
+		const input: BookVisits = {
+			kind: 'series',
+			from: '2026-03-30',
+			weekdays: ['mon', 'wed'],
+			time: '07:15',
+			count: 3,
+			minutes: 45,
+			place: 'Tern Ward'
+		};
+		await bookVisits(coordinator(), made.episodeId, input);
+		await db().update(outbox).set({ state: 'cancelled' });
+		await closeEpisode(contextOf(hospital.people.physician), made.episodeId, 'other-hospital');
+		const [sms, mail] = [new ScriptedChannel(), new ScriptedChannel()];
+		await new OutboxWorker({ channels: { sms, mail }, now: () => HOSPITAL_NOW }).settle();
+		expect(sms.sent.map(({ body }) => body)).toEqual([
+			expect.stringContaining('all your visits from Mon 30 Mar 07:15 on are cancelled')
+		]);
+		expect(mail.sent).toHaveLength(1);
+		const [{ body, calendar } = { body: '', calendar: '' }] = mail.sent;
+		expect(body).toContain(
+			'Mon 30 Mar 07:15, Tern Ward\nWed 1 Apr 07:15, Tern Ward\nMon 6 Apr 07:15, Tern Ward'
+		);
+		expect(calendar?.match(/METHOD:\w+|STATUS:\w+|SEQUENCE:\d+/g)).toEqual([
+			'METHOD:PUBLISH',
+			...Array.from({ length: 3 }, () => ['SEQUENCE:1', 'STATUS:CANCELLED']).flat()
+		]);
+	});
+
+	it.each([
+		['home', true],
+		['other-hospital', false]
+	] as const)('for %s takes a new link and a new visit: %s', async (reason, taken) => {
+		await closeEpisode(contextOf(hospital.people.physician), episodeId, reason);
+		const another = {
+			kind: 'single',
+			startsAt: HOSPITAL_NOW + 40 * DAY,
+			minutes: 45,
+			place: 'East Gym'
+		} as const;
+		const tried = await Promise.allSettled([
+			sendPage(coordinator(), episodeId, 'sms'),
+			bookVisits(coordinator(), episodeId, another)
+		]);
+		expect(tried.map(({ status }) => status === 'fulfilled')).toEqual([taken, taken]);
 	});
 });

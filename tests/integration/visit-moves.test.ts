@@ -108,6 +108,28 @@ describe('moving a visit', () => {
 		expect(heard.map(({ topic, kind }) => `${topic} ${kind}`)).toContain('visit moved');
 	});
 
+	it('that takes longer at its time and place keeps the yes and the reminders, and sends no text', async () => {
+		const { id, threadId, patient } = await booked({ email: 'longer@post.example' });
+		await settle(HOSPITAL_NOW, patient);
+		await settle(at('2026-03-07T17:00:00Z'), patient);
+		await confirmVisit(coordinator(), id);
+		const before = await messagesAbout(id, 'reminder');
+		const { result } = await rescheduleVisit(coordinator(at('2026-03-07T18:00:00Z')), id, {
+			startsAt: MONDAY,
+			minutes: 60
+		});
+		expect(result).toMatchObject({ state: 'confirmed', minutes: 60, sequence: 1, told: ['mail'] });
+		expect(await messagesAbout(id, 'reminder')).toEqual(before);
+		const said = await db().select().from(entries).where(eq(entries.threadId, threadId));
+		expect(said.at(-1)?.body).toBe('Visit on Mon 9 Mar 10:00: it takes 60 minutes now.');
+		const { texts, mails } = await settle(at('2026-03-08T17:00:00Z'), patient, 'longer@post.example');
+		expect(texts.map(({ body }) => body)).toEqual([expect.stringContaining('your visit is Mon 9 Mar 10:00')]);
+		expect(mails.map(({ body }) => body.split('\n')[0])).toEqual([
+			'Your visit Mon 9 Mar 10:00, East Gym, now takes 60 minutes.'
+		]);
+		expect(mails[0]?.calendar).toContain('SEQUENCE:1');
+	});
+
 	it('drops the reminders of the old time and plans those of the new one', async () => {
 		const { id, episodeId } = await booked();
 		await rescheduleVisit(coordinator(), id, { startsAt: WEDNESDAY });

@@ -270,7 +270,7 @@ describe('moving a visit', () => {
 		const { id, episodeId } = await booked();
 		const { threadId } = await addReferral({ episodeId, askedBy: hospital.people.surgeon.id });
 		const { result } = await move(coordinator(), id, null);
-		expect(result).toEqual({ id, state });
+		expect(result).toEqual({ id, state, ...(state === 'cancelled' ? { told: ['sms'] } : {}) });
 		expect(await visitRow(id)).toMatchObject({ state, decidedAt: HOSPITAL_NOW, patientCancelledAt: null });
 		const [entry] = await db().select().from(entries).where(eq(entries.threadId, threadId));
 		expect(entry).toMatchObject({ kind: 'event', refId: id, authorId: hospital.people.coordinator.id });

@@ -32,8 +32,8 @@ export class VisitDesk {
 	move(visit: VisitItem, move: VisitMove, reason?: string): Promise<boolean> {
 		const body = reason === undefined ? {} : { reason };
 		return this.#attempt(async () => {
-			await this.#deeds.post(pathOf(visit, move), body);
-			return '';
+			const { told } = await this.#deeds.post<{ told?: string[] }>(pathOf(visit, move), body);
+			return cancelledWords(told);
 		});
 	}
 
@@ -106,6 +106,14 @@ export class VisitDesk {
 			}
 		}
 	}
+}
+
+/** What is said of a cancellation: whether the patient hears of it, because else somebody has to call. */
+function cancelledWords(told: string[] | undefined): string {
+	if (told === undefined) {
+		return '';
+	}
+	return told.length > 0 ? m.visits_done_cancelled() : m.visits_done_cancelled_untold();
 }
 
 function pagePath(episodeId: string): string {

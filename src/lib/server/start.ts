@@ -1,4 +1,5 @@
 import { building } from '$app/environment';
+import { now } from './clock';
 import { migrateDatabase } from './db/migrate';
 import { closeDatabase, db, openDatabase } from './db';
 import { lockData, type Lock } from './db/lock';
@@ -7,6 +8,7 @@ import { startWork, stopWork } from './jobs/work';
 import { endAllStreams } from './live/stream';
 import { log } from './log';
 import { prepareHospital } from './setup';
+import { rederiveVisits } from './visits/rederive';
 import { takeUpClock } from './setup/moved-clock';
 
 // In development this module is evaluated anew after a change, while the process and its database live on.
@@ -40,6 +42,7 @@ async function start(): Promise<void> {
 		await takeUpClock();
 	}
 	await prepareHospital();
+	await rederiveVisits(now());
 	startWork();
 	stopOnSignal(lock);
 	log().info({ demo: env().demo, url: env().publicUrl }, 'ready');

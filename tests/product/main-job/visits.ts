@@ -1,4 +1,4 @@
-import { INSTANT, now, SOME, type Call } from './call';
+import { INSTANT, SOME, type Call } from './call';
 import { MONTH_MS, VISIT, WHY, type Makers } from './makers';
 
 const MOVE = { startsAt: new Date(Date.now() + 2 * MONTH_MS).toISOString() };
@@ -15,12 +15,12 @@ const SERIES_LINE = { id: SOME, startsAt: INSTANT, minutes: 45, place: 'East Gym
 export function visitCalls(make: Makers): Call[] {
 	const on = (deed: string, state: 'planned' | 'cancelled') => async () =>
 		`/api/visits/${await make.visit(state)}/${deed}`;
-	const deed = (name: string, state: string): Call => ({
+	const deed = (name: string, state: string, more: object = {}): Call => ({
 		name: `${name} a visit`,
 		by: 'coordinator',
 		path: on(name, 'planned'),
 		body: {},
-		answer: now(state),
+		answer: { status: 200, body: { id: SOME, state, ...more } },
 		other: WHY,
 		wrong: on(name, 'cancelled')
 	});
@@ -35,7 +35,7 @@ export function visitCalls(make: Makers): Call[] {
 			wrong: null
 		},
 		deed('confirm', 'confirmed'),
-		deed('cancel', 'cancelled'),
+		deed('cancel', 'cancelled', { told: [] }),
 		deed('attend', 'attended'),
 		deed('miss', 'missed'),
 		{

@@ -89,7 +89,15 @@ function leaks(text: string, person: Person): string[] {
 
 /** All fields of all templates and all of the record, under the names a caller would use. */
 function everything(person: Person) {
-	return { ...person, name: `${person.firstName} ${person.surname}`, birthDate: secretsOf(person).at(-1) };
+	const { startsAt, zone, place } = person;
+	const visits = [{ startsAt, zone, place }];
+	return {
+		...person,
+		visits,
+		minutes: 45,
+		name: `${person.firstName} ${person.surname}`,
+		birthDate: secretsOf(person).at(-1)
+	};
 }
 
 const RUNS = { numRuns: 1000 };

@@ -91,6 +91,11 @@ const TEXTS: [SmsTemplate, string, string][] = [
 		'Saltmarsh General: your visit Fri 28 Mar 10:00 is cancelled. Please do not come. Questions: +353 1 555 0100.'
 	],
 	[
+		'visits-cancelled',
+		smsText('visits-cancelled', VISIT),
+		'Saltmarsh General: all your visits from Fri 28 Mar 10:00 on are cancelled. Please do not come. Questions: +353 1 555 0100.'
+	],
+	[
 		'visit-confirmed',
 		smsText('visit-confirmed', VISIT),
 		'Saltmarsh General: thank you, see you Fri 28 Mar 10:00, East Gym. To change it call +353 1 555 0100.'
@@ -145,6 +150,10 @@ const SPANISH: [keyof typeof PATIENT_SMS, string][] = [
 	[
 		'visit-cancelled',
 		'Saltmarsh General: su cita vie 28 mar 10:00 se ha anulado. No venga, por favor. Preguntas: +353 1 555 0100.'
+	],
+	[
+		'visits-cancelled',
+		'Saltmarsh General: todas sus citas desde el vie 28 mar 10:00 se han anulado. No venga, por favor. Preguntas: +353 1 555 0100.'
 	],
 	[
 		'visit-confirmed',

@@ -32,6 +32,7 @@ export const PATIENT_SMS = {
 	'visit-reminder': visits.visitReminder,
 	'visit-moved': visits.visitMoved,
 	'visit-cancelled': visits.visitCancelled,
+	'visits-cancelled': visits.visitsCancelled,
 	'visit-confirmed': replies.visitConfirmed,
 	'visit-declined': replies.visitDeclined,
 	'no-visit-open': replies.noVisitOpen,
@@ -52,7 +53,9 @@ export const PATIENT_MAILS = {
 	'visit-booked': mails.visitBookedMail,
 	'series-booked': mails.seriesBookedMail,
 	'visit-moved': mails.visitMovedMail,
+	'visit-length': mails.visitLengthMail,
 	'visit-cancelled': mails.visitCancelledMail,
+	'visits-cancelled': mails.visitsCancelledMail,
 	'page-link': pages.pageLinkMail
 };
 export const MAILS = { ...STAFF_MAILS, ...PATIENT_MAILS };

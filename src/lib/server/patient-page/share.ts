@@ -16,6 +16,7 @@ import { env } from '../env';
 import { newId } from '../ids';
 import { aroundLink, linkDigest, linkToken } from '../links';
 import type { NewMessage } from '../outbox/enqueue';
+import { takesVisits } from '../visits/end-all';
 import { patientOfEpisode } from '../visits/remind';
 import { write, type Written } from '../write';
 
@@ -37,8 +38,10 @@ export function sendPage(
 ): Promise<Written<{ id: string; way: PageWay; expiresAt: string }>> {
 	return write(context, 'visit.plan', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'visit.plan');
-		if (episode.closedAt !== null) {
-			throw new Problem('wrong-state', 'The episode is closed: its visits are over.', { state: 'closed' });
+		if (!takesVisits(episode)) {
+			throw new Problem('wrong-state', 'The stay is closed and its visits are over: no link can be sent.', {
+				state: 'closed'
+			});
 		}
 		const patient = await patientOfEpisode(tx, episodeId);
 		refuseWithoutConsent(patient, way);

@@ -15,6 +15,7 @@ import type { NewMessage } from '../outbox/enqueue';
 import { write, type Written } from '../write';
 import { moveVisit, type MovedVisit, type VisitRow } from './move';
 import { closedDates, refuseClosedDay } from './closed-days';
+import { takesVisits } from './end-all';
 import { tellReferrer } from './notify';
 import { findPlace, plannedVisits } from './plan';
 import { visitLine } from './items';
@@ -35,10 +36,14 @@ export function bookVisits(
 ): Promise<Written<{ items: VisitLine[] }>> {
 	return write(context, 'visit.plan', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'visit.plan');
-		if (episode.closedAt !== null) {
-			throw new Problem('wrong-state', 'The episode is closed: no visit can be booked in it.', {
-				state: 'closed'
-			});
+		if (!takesVisits(episode)) {
+			throw new Problem(
+				'wrong-state',
+				'The stay is closed and its visits are over: no visit can be booked in it.',
+				{
+					state: 'closed'
+				}
+			);
 		}
 		const { booked, messages } = await book(tx, context, episodeId, input);
 		const [first] = booked;

@@ -9,7 +9,7 @@ import { visits } from '../db/schema';
 import { dropWaiting } from '../outbox/reminders';
 import type { Change } from '../write';
 import { patientOfEpisode } from './remind';
-import { tellCancelled } from './tell-patient';
+import { tellCancelled, waysOf, type Way } from './tell-patient';
 import { reviveReminders, rewordReminders } from './waiting-reminders';
 import { movedText } from './words';
 
@@ -29,11 +29,13 @@ const ACTIONS: Record<VisitMove, AuditAction> = {
 export interface MovedVisit {
 	id: string;
 	state: VisitState;
+	/** The ways by which the patient hears of a cancellation by staff; none where somebody has to call. */
+	told?: Way[];
 }
 
 /**
  * Move a visit on, with what follows from it in the same transaction: reminders of a visit that is not expected
- * any more are dropped, those of one that was marked by mistake wait again, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
+ * any more are dropped and come back with it, those of a confirmed one stop asking, and a visit that the patient cancelled stays open
  * until somebody has followed it up. Whether the caller may do it is decided before.
  * @param way how patients said it, where it was them
  * @throws Problem `wrong-state`, and `invalid` where what is on record would be changed without a reason
@@ -68,7 +70,7 @@ export async function moveVisit(
 	const body = movedText(visit, move, by === 'staff' ? by : way, reason, now);
 	const strand = by === 'patient' ? ({ strand: 'patient' } as const) : {};
 	return {
-		result: { id, state },
+		result: { id, state, ...(state === 'cancelled' && by === 'staff' ? { told: waysOf(messages) } : {}) },
 		audit: {
 			action: ACTIONS[move],
 			objectKind: 'visit',

@@ -2,6 +2,7 @@ import { eq } from 'drizzle-orm';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import type { VisitLine } from '$lib/domain/episodes/views';
+import type { LiveEvent } from '$lib/domain/live/events';
 import { startProblem, type Reschedule } from '$lib/domain/visits/forms';
 import { planVisit } from '$lib/domain/visits/series';
 import { isExpected } from '$lib/domain/visits/states';
@@ -9,8 +10,9 @@ import { accessVisit } from '../access/access';
 import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { visits } from '../db/schema';
+import { visits, type patients } from '../db/schema';
 import { env } from '../env';
+import type { NewMessage } from '../outbox/enqueue';
 import { dropWaiting } from '../outbox/reminders';
 import { write, type Written } from '../write';
 import { refuseClosedDay } from './closed-days';
@@ -19,8 +21,11 @@ import type { VisitRow } from './move';
 import { findPlace, type Place } from './plan';
 import { patientOfEpisode, remindOf } from './remind';
 import { requireRoom } from './room';
-import { tellMoved, waysOf, type Way } from './tell-patient';
+import { tellLength, tellMoved, waysOf, type Way } from './tell-patient';
+import { carryReminders } from './waiting-reminders';
 import { rescheduledText } from './words';
+
+type PatientRow = typeof patients.$inferSelect;
 
 /** A visit at its new time; `told` are the ways by which the patient hears of it, none where somebody has to call. */
 export interface Rescheduled extends VisitLine {
@@ -29,9 +34,9 @@ export interface Rescheduled extends VisitLine {
 }
 
 /**
- * Give a visit another time, length or place. It stays the same visit, so that calendars find it, and waits for the
- * patient's yes anew; reminders of the old time are dropped and those of the new one planned, and the patient is
- * told, all in one transaction.
+ * Give a visit another time, length or place. It stays the same visit, so that calendars find it. At another time or
+ * place it waits for the patient's yes anew; reminders of the old one are dropped and those of the new one planned, and
+ * the patient is told, all in one transaction. Where its length alone changes, calendars are told.
  * @throws Problem `wrong-state` for a visit that is over or has begun, `invalid` naming field and value,
  * `visit-overlaps` and `place-full` when there is no room
  */
@@ -48,9 +53,9 @@ export function rescheduleVisit(
 		const place = { id: visit.unitId, name: visit.place };
 		await requireRoom(tx, patient.id, place, [visit], context.now, id);
 		await tx.update(visits).set(visit).where(eq(visits.id, id));
-		const dropped = await dropWaiting(tx, id, 'visit has moved');
-		const reminders = await remindOf(tx, visit, patient, context.now);
-		const news = tellMoved(visit, before.startsAt, patient, context.now);
+		const { dropped, reminders, news } = isElsewhere(before, visit)
+			? await followMove(tx, before, visit, patient, context.now)
+			: await followLength(tx, before, visit, patient, context.now);
 		const { episodeId } = visit;
 		const threadId = await threadForDeed(tx, episodeId, context.actor);
 		const body = rescheduledText(before, visit, input.reason ?? null, context.now);
@@ -73,6 +78,39 @@ export function rescheduleVisit(
 			messages: [...reminders, ...news]
 		};
 	});
+}
+
+/** Whether what the patient was told of it holds no more; how long it takes was not told. */
+function isElsewhere(before: VisitRow, after: VisitRow): boolean {
+	return before.startsAt !== after.startsAt || before.unitId !== after.unitId;
+}
+
+type Follows = { dropped: LiveEvent[]; reminders: NewMessage[]; news: NewMessage[] };
+
+async function followMove(
+	tx: Tx,
+	before: VisitRow,
+	visit: VisitRow,
+	patient: PatientRow,
+	now: number
+): Promise<Follows> {
+	return {
+		dropped: await dropWaiting(tx, visit.id, 'visit has moved'),
+		reminders: await remindOf(tx, visit, patient, now),
+		news: tellMoved(visit, before.startsAt, patient, now)
+	};
+}
+
+/** Time and place stay, and so do the yes, the reminders and what is on its way: only calendars have to hear of it. */
+async function followLength(
+	tx: Tx,
+	before: VisitRow,
+	visit: VisitRow,
+	patient: PatientRow,
+	now: number
+): Promise<Follows> {
+	await carryReminders(tx, before, visit.sequence);
+	return { dropped: [], reminders: [], news: tellLength(visit, patient, now) };
 }
 
 function refuseOver({ state, startsAt }: VisitRow, now: number): void {
@@ -106,15 +144,10 @@ async function changed(tx: Tx, before: VisitRow, input: Reschedule, now: number)
 			`startsAt is ${toRfc3339(planned.startsAt)}: the visit is at that time already.`
 		);
 	}
+	const after = { ...before, ...planned, unitId: place.id, place: place.name, sequence: before.sequence + 1 };
+	if (!isElsewhere(before, after)) {
+		return after;
+	}
 	await refuseClosedDay(tx, planned.localDate, '/startsAt');
-	return {
-		...before,
-		...planned,
-		unitId: place.id,
-		place: place.name,
-		state: 'planned',
-		decidedAt: null,
-		reason: null,
-		sequence: before.sequence + 1
-	};
+	return { ...after, state: 'planned', decidedAt: null, reason: null };
 }

@@ -71,6 +71,49 @@ export function tellCancelled(
 	return [...text, ...mailOf(visit, patient, 'visit-cancelled', now)];
 }
 
+/** The visit takes longer or shorter, at its time and place: news for a calendar, and no reason for a text. */
+export function tellLength(visit: VisitRow, patient: PatientRow, now: number): NewMessage[] {
+	return mailOf(visit, patient, 'visit-length', now);
+}
+
+/** The visit is as it was agreed, and calendars that hold another instant for it are told this one. */
+export function tellAnew(visit: VisitRow, patient: PatientRow, now: number): NewMessage[] {
+	return mailOf(visit, patient, 'visit-booked', now);
+}
+
+/**
+ * All these visits are cancelled at once: one text, which tells the next of them, and one mail, which lists them. Its
+ * file publishes them as cancelled, because a cancellation by RFC 5546 is about one visit alone.
+ */
+export function tellAllCancelled(
+	cancelled: readonly VisitRow[],
+	patient: PatientRow,
+	now: number
+): NewMessage[] {
+	const [first, ...more] = cancelled;
+	if (!first || more.length === 0) {
+		return first ? tellCancelled(first, 'staff', patient, now) : [];
+	}
+	const about = { ref: { kind: 'episode' as const, id: first.episodeId }, patientId: patient.id };
+	const causeKey = (way: Way) => `visits-cancelled:${first.id}:${first.sequence}:${way}`;
+	const texts = textOf(first, patient, 'visits-cancelled', first.startsAt, now);
+	const mails = mailProblem(patient) === null ? [listMail(cancelled, patient, now)] : [];
+	return [...texts, ...mails].map((news) => ({ ...news, ...about, causeKey: causeKey(news.channel) }));
+}
+
+function listMail(cancelled: readonly VisitRow[], patient: PatientRow, now: number) {
+	const fields = { ...senderFields(), visits: cancelled.map(whenAndWhere) };
+	const { subject, text } = mailText('visits-cancelled', fields, patient.language);
+	return {
+		kind: 'visit' as const,
+		channel: 'mail' as const,
+		subject,
+		body: text,
+		calendar: calendarOf(cancelled, 'PUBLISH', patient, now),
+		expiresAt: now + NEWS_LIFE_MS
+	};
+}
+
 /** By which ways messages go. */
 export function waysOf(messages: readonly NewMessage[]): Way[] {
 	return messages.map(({ channel }) => channel);
@@ -80,7 +123,7 @@ export function waysOf(messages: readonly NewMessage[]): Way[] {
 function textOf(
 	visit: VisitRow,
 	patient: PatientRow,
-	template: 'visit-moved' | 'visit-cancelled',
+	template: 'visit-moved' | 'visit-cancelled' | 'visits-cancelled',
 	useful: number,
 	now: number
 ): NewMessage[] {
@@ -101,7 +144,7 @@ function textOf(
 function mailOf(
 	visit: VisitRow,
 	patient: PatientRow,
-	template: 'visit-booked' | 'visit-moved' | 'visit-cancelled',
+	template: 'visit-booked' | 'visit-moved' | 'visit-length' | 'visit-cancelled',
 	now: number
 ): NewMessage[] {
 	if (mailProblem(patient) !== null || visit.startsAt <= now) {
@@ -109,7 +152,7 @@ function mailOf(
 	}
 	const { subject, text } = mailText(
 		template,
-		{ ...senderFields(), ...whenAndWhere(visit) },
+		{ ...senderFields(), ...whenAndWhere(visit), minutes: visit.minutes },
 		patient.language
 	);
 	const method = template === 'visit-cancelled' ? 'CANCEL' : 'REQUEST';

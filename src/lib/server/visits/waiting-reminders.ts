@@ -5,6 +5,7 @@ import type { Tx } from '../db';
 import { outbox, reminders, visits, type patients } from '../db/schema';
 import { messageEvent } from '../outbox/change';
 import { reminderText } from './remind';
+import { newsKey } from './tell-patient';
 
 type PatientRow = typeof patients.$inferSelect;
 
@@ -95,4 +96,23 @@ export async function replanReminders(tx: Tx, patient: PatientRow, now: number):
 			await tx.update(reminders).set({ dueAt }).where(eq(reminders.messageId, id));
 		}
 	}
+}
+
+/**
+ * What was told of a visit holds under its new sequence too: a yes to it counts, and what waits still goes. Its time
+ * and place are the same.
+ */
+export async function carryReminders(
+	tx: Tx,
+	{ id, sequence }: { id: string; sequence: number },
+	to: number
+): Promise<void> {
+	await tx
+		.update(reminders)
+		.set({ sequence: to })
+		.where(and(eq(reminders.visitId, id), eq(reminders.sequence, sequence)));
+	await tx
+		.update(outbox)
+		.set({ causeKey: newsKey({ id, sequence: to }, 'sms') })
+		.where(eq(outbox.causeKey, newsKey({ id, sequence }, 'sms')));
 }

@@ -30,11 +30,11 @@ export function rescheduledText(
 	reason: string | null,
 	now: number
 ): string {
-	const words = m.visits_entry_rescheduled({
-		from: whenOf(before, now),
-		to: whenOf(visit, now),
-		place: visit.place
-	});
+	const [from, to] = [whenOf(before, now), whenOf(visit, now)];
+	const words =
+		from === to && before.place === visit.place
+			? m.visits_entry_length({ when: to, minutes: visit.minutes })
+			: m.visits_entry_rescheduled({ from, to, place: visit.place });
 	return reason === null ? words : m.visits_entry_with_reason({ words, reason });
 }
 

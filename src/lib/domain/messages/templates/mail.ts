@@ -75,34 +75,85 @@ export const visitMovedMail: Wording<VisitFields, MailText> = {
 		visitLetter(fields, 'es', 'su cita cambia', `Su cita es ahora ${whenAndWhere(fields, 'es')}.`)
 };
 
+/** To a patient: the visit stays at its time and place, and takes longer or shorter. */
+export const visitLengthMail: Wording<VisitFields & { readonly minutes: number }, MailText> = {
+	en: (fields) => {
+		const news = `Your visit ${whenAndWhere(fields, 'en')}, now takes ${fields.minutes} minutes.`;
+		return visitLetter(fields, 'en', 'your visit', news);
+	},
+	es: (fields) => {
+		const news = `Su cita ${whenAndWhere(fields, 'es')}, dura ahora ${fields.minutes} minutos.`;
+		return visitLetter(fields, 'es', 'su cita', news);
+	}
+};
+
 /** To a patient: the visit is cancelled. */
 export const visitCancelledMail: Wording<VisitFields, MailText> = {
-	en: (fields) =>
-		visitLetter(
-			fields,
-			'en',
-			'your visit is cancelled',
-			`Your visit ${whenAndWhere(fields, 'en')} is cancelled.`
-		),
-	es: (fields) =>
-		visitLetter(fields, 'es', 'su cita se ha anulado', `Su cita ${whenAndWhere(fields, 'es')} se ha anulado.`)
+	en: (fields) => {
+		const news = `Your visit ${whenAndWhere(fields, 'en')} is cancelled.`;
+		return visitLetter(fields, 'en', 'your visit is cancelled', news, 'takes it out of');
+	},
+	es: (fields) => {
+		const news = `Su cita ${whenAndWhere(fields, 'es')} se ha anulado.`;
+		return visitLetter(fields, 'es', 'su cita se ha anulado', news, 'takes it out of');
+	}
 };
+
+/** To a patient: all visits ahead are cancelled at once. Each is named, because not every calendar reads the file. */
+export const visitsCancelledMail: Wording<
+	SenderFields & { readonly visits: readonly Omit<VisitFields, keyof SenderFields>[] },
+	MailText
+> = {
+	en: (fields) => {
+		const news = `Your visits are cancelled:\n\n${listed(fields, 'en')}`;
+		return visitLetter(fields, 'en', 'your visits are cancelled', news, 'takes them out of');
+	},
+	es: (fields) => {
+		const news = `Sus citas se han anulado:\n\n${listed(fields, 'es')}`;
+		return visitLetter(fields, 'es', 'sus citas se han anulado', news, 'takes them out of');
+	}
+};
+
+function listed(
+	{ visits, ...sender }: SenderFields & { readonly visits: readonly Omit<VisitFields, keyof SenderFields>[] },
+	language: MessageLanguage
+): string {
+	return visits.map((visit) => whenAndWhere({ ...sender, ...visit }, language)).join('\n');
+}
 
 function whenAndWhere(fields: VisitFields, language: MessageLanguage): string {
 	return `${dayAndTime(fields.startsAt, fields.zone, language)}, ${placeName(fields, language)}`;
 }
 
+/** What the file with the mail does to a calendar. */
+type FileDoes = 'puts it into' | 'takes it out of' | 'takes them out of';
+const FILE_DOES: Record<MessageLanguage, Record<FileDoes, string>> = {
+	en: {
+		'puts it into': 'The file with this mail puts it into your calendar.',
+		'takes it out of': 'The file with this mail takes it out of your calendar.',
+		'takes them out of': 'The file with this mail takes them out of your calendar.'
+	},
+	es: {
+		'puts it into': 'El archivo de este correo lo pone en su calendario.',
+		'takes it out of': 'El archivo de este correo la quita de su calendario.',
+		'takes them out of': 'El archivo de este correo las quita de su calendario.'
+	}
+};
 const LAST_LINES: Record<MessageLanguage, (phone: string) => string> = {
-	en: (phone) =>
-		`The file with this mail puts it into your calendar.\n\nQuestions: ${phone}\n\n-- \nNobody reads answers to this address.\n`,
-	es: (phone) =>
-		`El archivo de este correo lo pone en su calendario.\n\nPreguntas: ${phone}\n\n-- \nNadie lee las respuestas a esta dirección.\n`
+	en: (phone) => `Questions: ${phone}\n\n-- \nNobody reads answers to this address.\n`,
+	es: (phone) => `Preguntas: ${phone}\n\n-- \nNadie lee las respuestas a esta dirección.\n`
 };
 
-function visitLetter(fields: SenderFields, language: MessageLanguage, about: string, news: string): MailText {
+function visitLetter(
+	fields: SenderFields,
+	language: MessageLanguage,
+	about: string,
+	news: string,
+	fileDoes: FileDoes = 'puts it into'
+): MailText {
 	return {
 		subject: `${senderName(fields, language)}: ${about}`,
-		text: `${news}\n\n${LAST_LINES[language](number(fields))}`
+		text: `${news}\n\n${FILE_DOES[language][fileDoes]}\n\n${LAST_LINES[language](number(fields))}`
 	};
 }
 

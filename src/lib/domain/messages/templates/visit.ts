@@ -59,3 +59,19 @@ export const visitCancelled: Wording<VisitFields> = {
 		});
 	}
 };
+
+/** The hospital has cancelled all visits ahead: one text for all of them, which tells the next. */
+export const visitsCancelled: Wording<VisitFields> = {
+	en: (fields) => {
+		const when = dayAndTime(fields.startsAt, fields.zone, 'en');
+		return withNames(fields, 'en', (sender) => {
+			return `${sender}: all your visits from ${when} on are cancelled. Please do not come. Questions: ${number(fields)}.`;
+		});
+	},
+	es: (fields) => {
+		const when = dayAndTime(fields.startsAt, fields.zone, 'es');
+		return withNames(fields, 'es', (sender) => {
+			return `${sender}: todas sus citas desde el ${when} se han anulado. No venga, por favor. Preguntas: ${number(fields)}.`;
+		});
+	}
+};
