@@ -1,9 +1,11 @@
 import { expect } from '@playwright/test';
-import { addDays } from '../../../src/lib/domain/core/time';
+import { nextWithinHours } from '../../../src/lib/domain/core/hours';
+import { addDays, MINUTE } from '../../../src/lib/domain/core/time';
+import { REMINDER_HOURS } from '../../../src/lib/domain/visits/reminders';
 import { itemsOf } from '../../support/fakes';
 import { mailArrives, textArrives } from '../fakes';
 import { DESK, expectConnected, seat } from '../people';
-import { MAIL, PATIENT, PHONE_OF_PATIENT, row, SECRET, shown, typed, type Day } from './day';
+import { MAIL, PATIENT, PHONE_OF_PATIENT, row, SECRET, shown, typed, ZONE, type Day } from './day';
 
 /** A day is closed, and a series that is booked steps over it; a colleague who looks on hears of it. */
 export async function bookSeries(day: Day): Promise<void> {
@@ -96,10 +98,11 @@ export async function move(day: Day): Promise<void> {
 
 	// Up to here no browser complained; what comes now ends their sign-ins, and they say so.
 	expect(Object.values(day.seats).flatMap(({ complaints }) => complaints)).toEqual([]);
-	// Whatever the hour is now, a text waits for the morning.
-	await day.pass(16 * 60 * 60 * 1000);
-	await expect(therapist.getByText('Your sign-in has ended')).toBeVisible({ timeout: 30_000 });
+	// Whatever the hour is now, a text waits for the daytime.
+	await day.until(nextWithinHours(day.now + MINUTE, ZONE, REMINDER_HOURS));
 	const text = await textArrives(day.product.smsUrl, PHONE_OF_PATIENT, /MOVED/);
 	expect(text.body).toContain(`${shown('Thu', thursday)} 14:30`);
 	expect(text.body).not.toMatch(SECRET);
+	await day.pass(13 * 60 * MINUTE);
+	await expect(therapist.getByText('Your sign-in has ended')).toBeVisible({ timeout: 30_000 });
 }
