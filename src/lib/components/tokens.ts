@@ -133,11 +133,11 @@ export const TEXT_PAIRS: readonly (readonly [text: ColourName, ground: ColourNam
 	['canvas', 'low']
 ];
 
-/** Lines and shapes that carry meaning: edges of inputs, focus, alarm shapes, strands. */
+/** Lines and shapes that carry meaning: edges of inputs, focus, the place one is in, alarm shapes, strands. */
 export const MARK_PAIRS: readonly (readonly [mark: ColourName, ground: ColourName])[] = (
 	['canvas', 'raised', 'sunk'] as const
 ).flatMap((ground) =>
-	(['ink', 'soft', 'woad', 'moss', 'heather', 'high', 'medium', 'low'] as const).map(
+	(['ink', 'soft', 'hemp-ink', 'woad', 'moss', 'heather', 'high', 'medium', 'low'] as const).map(
 		(mark) => [mark, ground] as const
 	)
 );
@@ -167,7 +167,12 @@ export const RADIUS = { none: '0', hair: '3px', DEFAULT: '7px', phone: '12px', f
 /** Motion is only for something that has changed. `app.css` stops it for people who ask for none. */
 export const MOTION = {
 	duration: { DEFAULT: '120ms', quick: '120ms', settle: '240ms' },
-	ease: { DEFAULT: 'cubic-bezier(0.2, 0, 0, 1)' }
+	ease: { DEFAULT: 'cubic-bezier(0.2, 0, 0, 1)' },
+	/** To and fro along a line three times as long. */
+	underWay: {
+		animation: 'under-way 1.6s ease-in-out infinite alternate',
+		keyframes: { from: { transform: 'translateX(0)' }, to: { transform: 'translateX(200%)' } }
+	}
 };
 
 /** Relative luminance of an `#rrggbb` colour, 0 to 1, after WCAG 2.2. */

@@ -13,7 +13,7 @@ export const LINK = {
 	row: `${TEXT} ${ROW}`,
 	quiet: QUIET,
 	'quiet-row': `${QUIET} ${ROW}`,
-	place: `${QUIET} ${ROW} gap-3 aria-[current]:font-black aria-[current]:underline aria-[current]:decoration-hemp aria-[current]:decoration-3`
+	place: `${QUIET} ${ROW} gap-3 aria-[current]:font-black aria-[current]:underline aria-[current]:decoration-hemp-ink aria-[current]:decoration-3`
 } as const;
 export type LinkVariant = keyof typeof LINK;
 
