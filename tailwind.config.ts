@@ -51,7 +51,11 @@ export default {
 		boxShadow: {},
 		transitionDuration: MOTION.duration,
 		transitionTimingFunction: MOTION.ease,
-		extend: { spacing: SPACE }
+		extend: {
+			spacing: SPACE,
+			animation: { 'under-way': MOTION.underWay.animation },
+			keyframes: { 'under-way': MOTION.underWay.keyframes }
+		}
 	},
 	plugins: [themes]
 } satisfies Config;

@@ -107,6 +107,42 @@ test('two presses are one form', async ({ page }) => {
 	expect(posted).toHaveLength(1);
 });
 
+test('a form that is slow says so, moves nothing meanwhile, and says no more once it is answered', async ({
+	page
+}) => {
+	const { question, ask, network, release } = await formPage(page);
+	network('hold');
+	await question.fill('May walking go on?');
+	const before = await ask.boundingBox();
+	await ask.click();
+	await expect(page.getByRole('progressbar', { name: 'Sending' })).toBeVisible();
+	await expect(ask).toHaveText(/Please wait/);
+	expect((await ask.boundingBox())?.y).toBe(before?.y);
+	release();
+	await expect(page.getByText('Asked with a-key-from-the-server.')).toBeVisible();
+	await expect(page.getByRole('progressbar')).toHaveCount(0);
+});
+
+test('a page that is slow to come says so, and the page that is left stays until it is there', async ({
+	browser
+}) => {
+	const { page, context, complaints } = await seat(browser, product.url, 'nurse', PHONE);
+	let release = (): void => {};
+	const released = new Promise<void>((resolve) => (release = resolve));
+	await page.route('**/ward/__data.json**', async (route) => {
+		await released;
+		await route.continue();
+	});
+	await page.getByRole('link', { name: 'Ward' }).last().click();
+	await expect(page.getByRole('progressbar', { name: 'Loading' })).toBeVisible();
+	await expect(page).toHaveURL(/\/loose-ends/);
+	release();
+	await expect(page).toHaveURL(/\/ward/);
+	await expect(page.getByRole('progressbar')).toHaveCount(0);
+	expect(complaints).toEqual([]);
+	await context.close();
+});
+
 /** A person on the page that refers this patient. */
 async function refers(browser: Browser) {
 	const { page, context, complaints } = await seat(browser, product.url, 'surgeon', PHONE);

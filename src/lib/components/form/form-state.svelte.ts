@@ -15,6 +15,8 @@ export type FormState<T extends Record<string, unknown>> = {
 	readonly valid: boolean;
 	/** It is on its way. */
 	readonly pending: boolean;
+	/** It has been on its way for longer than one notices. */
+	readonly slow: boolean;
 	/** It got no answer of its own; what was typed is still there. */
 	readonly outcome: Outcome | null;
 	readonly enhance: SuperForm<T, string>['enhance'];
@@ -53,6 +55,7 @@ export function formState<T extends Record<string, unknown>>(
 	const errors = fromStore(form.errors);
 	const message = fromStore(form.message);
 	const pending = fromStore(form.submitting);
+	const slow = fromStore(form.delayed);
 
 	const enhance: FormState<T>['enhance'] = (element, events) =>
 		form.enhance(element, {
@@ -93,6 +96,9 @@ export function formState<T extends Record<string, unknown>>(
 		},
 		get pending() {
 			return pending.current;
+		},
+		get slow() {
+			return slow.current;
 		},
 		get outcome() {
 			return outcome;
