@@ -1,7 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { giveForm } from '$lib/components/clearances/decision-forms';
+import { changePasswordForm, createTokenBody, PASSWORD_MIN } from '$lib/domain/accounts/forms';
+import { LIMIT_KEYS } from '$lib/domain/bedside/codes';
 import { admitForm } from '$lib/domain/episodes/admit-form';
 import { raiseForm } from '$lib/domain/escalations/forms';
+import { decideLevelForm, refuseSignOffForm } from '$lib/domain/levels/forms';
+import { changeUnitLimitForm } from '$lib/domain/limits/forms';
 import { referForm } from '$lib/domain/referrals/forms';
 import { issuesOf } from '$lib/components/form/check';
 
@@ -36,5 +40,26 @@ describe('what is said in the browser before a form is sent', () => {
 		expect(await said(form, admitForm)).toEqual([
 			'birthDate: Birth date: write a day that exists, such as 5 9 1958.'
 		]);
+	});
+
+	it('the forms of accounts, levels and limits say what is missing, too long or no number', async () => {
+		expect(await said({ current: '', next: 'short' }, changePasswordForm)).toEqual([
+			'current: The current password is empty.',
+			`next: The password has at least ${PASSWORD_MIN} characters.`
+		]);
+		expect(await said({ to: '', reason: '' }, decideLevelForm)).toEqual(['to: Choose a level from 1 to 6.']);
+		expect(await said({ to: '7', reason: '' }, decideLevelForm)).toEqual(['to: Choose a level from 1 to 6.']);
+		expect(await said({ to: '6', reason: 'x'.repeat(1000) }, decideLevelForm)).toEqual([]);
+		expect(await said({ name: 'x'.repeat(61) }, createTokenBody)).toHaveLength(1);
+		const limit = { set: 'strict', key: LIMIT_KEYS[0], agreedBy: 'A. Lead', agreedOn: '3 12 2026' };
+		// A number that was taken out again is none: the limit goes back to its default.
+		for (const value of [undefined, null, 120]) {
+			const wrong = await said({ ...limit, value }, changeUnitLimitForm);
+			expect(wrong).toEqual([]);
+		}
+		expect(await said({ ...limit, agreedOn: '31 2 2026' }, changeUnitLimitForm)).toEqual([
+			'agreedOn: Agreed on: “31 2 2026” is no day; write one that exists, such as 14 12 2026.'
+		]);
+		expect(await said({ reason: '', id: 'any' }, refuseSignOffForm)).toHaveLength(1);
 	});
 });

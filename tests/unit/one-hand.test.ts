@@ -64,6 +64,29 @@ describe('forms', () => {
 		}
 	);
 
+	/** Forms without the check before they are sent, each with its reason. */
+	const UNCHECKED: Record<string, string> = {
+		'src/lib/components/escalations/TakeForm.svelte': 'one press, and a time that may be left open',
+		'src/lib/components/thread/Asked.svelte': 'the composer: the server sees the draft anyway',
+		'src/lib/components/thread/ReferralAnswer.svelte': 'accepting is one press; declining is checked',
+		'src/routes/(app)/admin/accounts/[id]/+page.svelte': 'boxes to tick',
+		'src/routes/(app)/loose-ends/[what]/[id]/+page.svelte':
+			'a message is seen to by one press; a text is checked',
+		'src/routes/(public)/invite/[token]/+page.svelte': 'a first page, with a password that the server judges',
+		'src/routes/(public)/sign-in/+page.svelte': 'a first page, with a password that the server judges'
+	};
+
+	it('say what is wrong before they are sent, by the schema of the server', () => {
+		const unchecked = files('.svelte').filter((file) => {
+			const forms = [...sourceOf(file).matchAll(/<(Form|ReasonForm)\s[^]*?>\n/g)].map(([tag]) => tag);
+			return (
+				forms.some((tag) => !/\bschema=|\{schema\}/.test(tag)) &&
+				file !== 'src/lib/components/form/Form.svelte'
+			);
+		});
+		expect(unchecked.toSorted()).toEqual(Object.keys(UNCHECKED).toSorted());
+	});
+
 	/** Where a posted form may be read: in the one wrapper, and by the doors that need no sign-in. */
 	const READERS = [
 		'src/lib/server/http/form-action.ts',
@@ -132,6 +155,24 @@ describe('looks', () => {
 			(sourceOf(file).match(OWN) ?? []).map((each) => `${file}: ${each}`)
 		);
 		expect(own).toEqual([]);
+	});
+
+	/** Hemp is too pale by day to say anything by itself (2.4:1): it decorates beside words, in these places alone. */
+	const DECORATED = [
+		'src/lib/components/accounts/SignInAndSend.svelte',
+		'src/lib/components/escalations/FillIn.svelte',
+		'src/lib/components/loose-ends/SeeTo.svelte',
+		'src/lib/components/patient-page/PatientShell.svelte',
+		'src/lib/components/patient/SessionSummary.svelte',
+		'src/lib/components/ui/Badge.svelte',
+		'src/lib/components/ui/Notice.svelte'
+	];
+
+	it('mark no place, no day and no state with the pale hemp', () => {
+		const pale = looked().filter((file) =>
+			/\b(border|decoration|bg|outline)-hemp(?!-ink)\b/.test(sourceOf(file))
+		);
+		expect(pale.toSorted()).toEqual(DECORATED);
 	});
 
 	const OUTSIDE_UI = (file: string) => !file.startsWith('src/lib/components/ui/');

@@ -19,3 +19,5 @@ export const decideLevelForm = z.strictObject({
 });
 
 export const refuseSignOffBody = z.strictObject({ reason: reason('reason') });
+/** What a form asks for: which sign-off it is travels beside it, and is not typed. */
+export const refuseSignOffForm = z.object(refuseSignOffBody.shape);
