@@ -1,33 +1,21 @@
-import { expect, test, type Page } from '@playwright/test';
-import { admit, signInAs } from '../support/api';
+import { expect, test, type Browser, type Page } from '@playwright/test';
+import { SIGN_INS, signInAs } from '../support/api';
 import { startProduct, type Product } from '../support/server';
+import { everyPage, type VisitedPage } from './every-page';
 import { DESK, PHONE } from './people';
+
+type Who = keyof typeof SIGN_INS;
 
 /** Other languages need more room than English: every word on the page grows by this share. */
 const LONGER = 0.4;
 
 let product: Product;
-let pages: string[];
-let cookie: { name: string; value: string; url: string };
+let visited: VisitedPage[];
 
 test.beforeAll(async () => {
 	test.setTimeout(180_000);
-	product = await startProduct({ env: { RATE_LIMIT_SCALE: '100', PUBLIC_STYLE_PAGE: '1' } });
-	const coordinator = await signInAs(product.url, 'coordinator');
-	const episodeId = await admit(coordinator, {});
-	const nurse = await signInAs(product.url, 'nurse');
-	const [name = '', value = ''] = (nurse.cookie ?? '').split('=');
-	cookie = { name, value, url: product.url };
-	const patient = `/patients/${episodeId}`;
-	pages = [
-		'/loose-ends',
-		'/ward',
-		patient,
-		`${patient}/clearances`,
-		`${patient}/escalate`,
-		'/account',
-		'/style'
-	];
+	product = await startProduct({ env: { RATE_LIMIT_SCALE: '1000', PUBLIC_STYLE_PAGE: '1' } });
+	visited = await everyPage(product);
 });
 test.afterAll(() => product?.stop());
 
@@ -55,35 +43,123 @@ async function stretch(page: Page, share: number): Promise<number> {
 	}, share);
 }
 
-/** What sticks out of the page, or hides its own words. */
+/** What sticks out of the page, hides its own words, or stands upon another's. */
 async function spoilt(page: Page): Promise<string[]> {
 	return page.evaluate(() => {
 		const found: string[] = [];
+		const wordsOf = (each: Element) => each.textContent?.trim().replaceAll(/\s+/g, ' ').slice(0, 40);
+		const seen = (each: Element) =>
+			each.checkVisibility({ visibilityProperty: true, opacityProperty: true }) && !each.closest('.sr-only');
 		if (document.documentElement.scrollWidth > window.innerWidth) {
-			found.push(`the page is ${document.documentElement.scrollWidth} px wide`);
+			const beyond = [...document.querySelectorAll('body *')]
+				.filter((each) => each.getBoundingClientRect().right > window.innerWidth + 1)
+				.map((each) => `${each.localName}.${each.className}: ${wordsOf(each)}`);
+			found.push(`the page is ${document.documentElement.scrollWidth} px wide`, ...beyond.slice(0, 8));
 		}
-		for (const each of document.querySelectorAll<HTMLElement>('button, a, label, h1, h2, h3, p, dd')) {
-			const style = getComputedStyle(each);
-			const cut = style.overflowX === 'hidden' || style.textOverflow === 'ellipsis';
-			if (cut && !each.closest('.sr-only') && each.scrollWidth > each.clientWidth + 1) {
-				found.push(`cut: ${each.textContent?.trim().slice(0, 40)}`);
+		const said = 'button, a, label, legend, summary, h1, h2, h3, p, dt, dd, li, th, td, output';
+		for (const each of document.querySelectorAll<HTMLElement>(said)) {
+			const { overflowX, overflowY, textOverflow, webkitLineClamp } = getComputedStyle(each);
+			const cut = [overflowX, overflowY].some((way) => way === 'hidden' || way === 'clip');
+			const wide = each.scrollWidth > each.clientWidth + 1 || each.scrollHeight > each.clientHeight + 1;
+			// The first lines of an entry, as a preview that leads to the whole, and what is only read aloud.
+			const meant = webkitLineClamp !== 'none' || each.clientWidth <= 1;
+			if ((cut || textOverflow === 'ellipsis') && wide && !meant && seen(each)) {
+				found.push(`cut: ${wordsOf(each)}`);
+			}
+		}
+		// Controls beside each other must not cover each other's words, and no words may leave their control.
+		const controls = [...document.querySelectorAll<HTMLElement>('main :is(button, a, summary)')].filter(seen);
+		const boxes = controls.map((each) => {
+			const range = document.createRange();
+			range.selectNodeContents(each);
+			return { each, words: range.getBoundingClientRect() };
+		});
+		for (const [at, one] of boxes.entries()) {
+			for (const other of boxes.slice(at + 1)) {
+				const apart = one.each.contains(other.each) || other.each.contains(one.each);
+				const [across, down] = [
+					Math.min(one.words.right, other.words.right) - Math.max(one.words.left, other.words.left),
+					Math.min(one.words.bottom, other.words.bottom) - Math.max(one.words.top, other.words.top)
+				];
+				const floats = [one, other].some(({ each }) => each.closest('.sticky, .fixed'));
+				if (!apart && !floats && across > 2 && down > 4 && one.words.width > 0 && other.words.width > 0) {
+					found.push(`over each other: ${wordsOf(one.each)} | ${wordsOf(other.each)}`);
+				}
 			}
 		}
 		return found;
 	});
 }
 
-for (const [size, viewport] of Object.entries({ phone: PHONE, desk: DESK })) {
-	test(`words that are longer by two fifths fit on every page: ${size}`, async ({ browser }) => {
-		test.setTimeout(120_000);
-		const context = await browser.newContext({ viewport, baseURL: product.url });
-		await context.addCookies([cookie]);
-		const page = await context.newPage();
-		for (const path of pages) {
-			await page.goto(path);
-			expect(await stretch(page, LONGER), `${path} has words`).toBeGreaterThan(5);
-			expect(await spoilt(page), path).toEqual([]);
+/** Longer words on every one of these pages, as far as the person is let in. Answers how many that were. */
+async function expectRoom(page: Page, among: readonly VisitedPage[]): Promise<number> {
+	const wrong: [string, string[]][] = [];
+	let seen = 0;
+	for (const { page: name, address } of among) {
+		const answer = await page.goto(address, { waitUntil: 'load' });
+		if (answer?.status() !== 200) {
+			continue;
 		}
-		await context.close();
+		seen += 1;
+		expect(await stretch(page, LONGER), `${name} has words`).toBeGreaterThan(5);
+		wrong.push([name, await spoilt(page)]);
+	}
+	expect(wrong.filter(([, what]) => what.length > 0)).toEqual([]);
+	return seen;
+}
+
+/** The browser of somebody with that role, or of nobody. */
+async function pageOf(browser: Browser, who: Who | null, viewport: typeof PHONE): Promise<Page> {
+	const context = await browser.newContext({ viewport, baseURL: product.url, reducedMotion: 'reduce' });
+	if (who) {
+		const [name = '', value = ''] = ((await signInAs(product.url, who)).cookie ?? '').split('=');
+		await context.addCookies([{ name, value, url: product.url }]);
+	}
+	return context.newPage();
+}
+
+const ROLES = Object.keys(SIGN_INS) as Who[];
+/** Fewest pages that each role is let into; a role that is let into none would test nothing. */
+const LEAST = 8;
+
+for (const role of ROLES) {
+	test(`words that are longer by two fifths fit on a phone, on every page of a ${role}`, async ({
+		browser
+	}) => {
+		test.setTimeout(300_000);
+		const page = await pageOf(browser, role, PHONE);
+		const inside = visited.filter(({ group }) => group === 'app');
+		expect(await expectRoom(page, inside)).toBeGreaterThanOrEqual(LEAST);
+		await page.context().close();
 	});
 }
+
+test('words that are longer by two fifths fit on every page that opens without a sign-in, and on that of the parts', async ({
+	browser
+}) => {
+	test.setTimeout(180_000);
+	const open = visited.filter(({ group }) => group !== 'app');
+	const parts = { page: '/style', address: '/style', group: '' };
+	for (const viewport of [PHONE, DESK]) {
+		const page = await pageOf(browser, null, viewport);
+		expect(await expectRoom(page, [...open, parts])).toBe(open.length + 1);
+		await page.context().close();
+	}
+});
+
+test('every page behind the sign-in is visited, and has room at a desk as well', async ({ browser }) => {
+	test.setTimeout(300_000);
+	let left = visited.filter(({ group }) => group === 'app');
+	for (const role of ['therapist', 'coordinator', 'admin', 'surgeon', 'nurse'] as const) {
+		const page = await pageOf(browser, role, DESK);
+		const before = left;
+		left = [];
+		for (const one of before) {
+			if ((await expectRoom(page, [one])) === 0) {
+				left.push(one);
+			}
+		}
+		await page.context().close();
+	}
+	expect(left.map(({ page }) => page)).toEqual([]);
+});

@@ -1,5 +1,5 @@
 import AxeBuilder from '@axe-core/playwright';
-import { expect, test } from '@playwright/test';
+import { expect, test, type Page } from '@playwright/test';
 import { startProduct, type Product } from '../support/server';
 import { DESK, PHONE } from './people';
 
@@ -12,13 +12,17 @@ test.beforeAll(async () => {
 test.afterAll(() => product?.stop());
 test.beforeEach(({ page }) => page.goto(`${product.url}/style`));
 
+async function expectAccessible(page: Page): Promise<void> {
+	const { violations } = await new AxeBuilder({ page }).analyze();
+	expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
+}
+
 for (const [size, viewport] of Object.entries({ desk: DESK, phone: PHONE })) {
 	for (const colorScheme of ['light', 'dark'] as const) {
 		test(`every part on the page of parts is accessible: ${size}, ${colorScheme}`, async ({ page }) => {
 			await page.setViewportSize(viewport);
 			await page.emulateMedia({ colorScheme });
-			const { violations } = await new AxeBuilder({ page }).analyze();
-			expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
+			await expectAccessible(page);
 		});
 	}
 }

@@ -62,7 +62,10 @@ function withOneHeight({ 'OS/2': metrics = Buffer.alloc(0), hhea = Buffer.alloc(
  */
 function ourNames(style, theirs) {
 	const black = style === 'Black';
+	/** @type {Record<number, string>} */
+	const beyondBold = black ? { 16: FAMILY, 17: style } : {};
 	return {
+		...beyondBold,
 		0: theirs[0] ?? '',
 		1: black ? `${FAMILY} ${style}` : FAMILY,
 		2: black ? 'Regular' : style,
@@ -75,7 +78,6 @@ function ourNames(style, theirs) {
 		9: theirs[9] ?? '',
 		10: 'A part of the letters of another face, renamed as its licence asks. Copyright and trademark name it.',
 		13: theirs[13] ?? '',
-		14: theirs[14] ?? '',
-		...(black ? { 16: FAMILY, 17: style } : {})
+		14: theirs[14] ?? ''
 	};
 }

@@ -1,0 +1,133 @@
+import { expect } from '@playwright/test';
+import { admit, newKey, signInAs, type Client } from '../support/api';
+import { pages } from '../support/route-files';
+import type { Product } from '../support/server';
+import { mailArrives, reply, textArrives } from './fakes';
+
+/** Pages that have no address to go to: shown in answer to a form alone, or a part of another test. */
+const NOT_VISITED = ['/sign-in/send', '/style', '/style/form'];
+const PHONE_NUMBER = '+353865550177';
+
+/** One page at an address that leads to something. */
+export interface VisitedPage {
+	/** As its file is called: `/patients/[id]/visits`. */
+	readonly page: string;
+	readonly address: string;
+	readonly group: string;
+}
+
+/**
+ * Every page of the product, found by its file, at a real address: what it takes to have one is made here. A page that
+ * nobody has given an address fails, so that none is forgotten.
+ */
+export async function everyPage(product: Product): Promise<VisitedPage[]> {
+	// The call first: a link to it is in a text.
+	const known = {
+		...(await behindTheSignIn(product)),
+		...(await linksOfStaff(product)),
+		...(await patientPage(product))
+	};
+	return pages()
+		.filter(({ address }) => !NOT_VISITED.includes(address))
+		.map(({ address, group }) => {
+			const real = address.includes('[') ? known[address] : address;
+			if (!real) {
+				throw new Error(`No address is known for ${address}: give it one in tests/e2e/every-page.ts.`);
+			}
+			return { page: address, address: real, group };
+		});
+}
+
+async function behindTheSignIn(product: Product): Promise<Record<string, string>> {
+	const [surgeon, therapist, admin] = await Promise.all([
+		signInAs(product.url, 'surgeon'),
+		signInAs(product.url, 'therapist'),
+		signInAs(product.url, 'admin')
+	]);
+	const { mine } = (await surgeon.get('/api/loose-ends')).body as unknown as {
+		mine: { kind: string; id: string; episodeId: string; threadId: string }[];
+	};
+	const asked = mine.find(({ kind }) => kind === 'clearance');
+	const { body: call } = await therapist.post(`/api/episodes/${asked?.episodeId}/escalations`, {
+		grade: 'high',
+		situation: 'Systolic pressure fell from 128 to 108 after walking.',
+		background: 'Bypass.',
+		assessment: 'Too much.',
+		request: 'Please come.'
+	});
+	const patient = `/patients/${asked?.episodeId}`;
+	const below = [
+		'refer',
+		'move',
+		'details',
+		'clearances',
+		'sessions',
+		'level',
+		'limits',
+		'visits',
+		'escalate'
+	];
+	return {
+		'/patients/[id]': patient,
+		...Object.fromEntries(below.map((name) => [`/patients/[id]/${name}`, `${patient}/${name}`])),
+		'/patients/[id]/threads/[threadId]': `${patient}/threads/${asked?.threadId}`,
+		'/patients/[id]/clearances/[clearanceId]': `${patient}/clearances/${asked?.id}`,
+		'/bedside/[episodeId]': `/bedside/${asked?.episodeId}`,
+		'/escalations/[id]': `/escalations/${call.id}`,
+		'/admin/accounts/[id]': await found(admin, '/admin/accounts', /\/admin\/accounts\/[\w-]{36}/),
+		'/loose-ends/[what]/[id]': await strayText(product)
+	};
+}
+
+/** The first address of that form on a page. */
+async function found(client: Client, path: string, address: RegExp): Promise<string> {
+	return address.exec((await client.get(path)).text)?.[0] ?? '';
+}
+
+/** A text that fits no visit and no call waits for the coordinator. */
+async function strayText(product: Product): Promise<string> {
+	const coordinator = await signInAs(product.url, 'coordinator');
+	await reply(product.smsUrl, PHONE_NUMBER, 'Is this the hospital?');
+	let address = '';
+	await expect
+		.poll(async () => (address = await found(coordinator, '/loose-ends', /\/loose-ends\/texts\/[\w-]+/)))
+		.not.toBe('');
+	return address;
+}
+
+/** A patient's own page, by the link in the mail that opens it. */
+async function patientPage(product: Product): Promise<Record<string, string>> {
+	const coordinator = await signInAs(product.url, 'coordinator');
+	const patient = {
+		name: 'Ida Őry',
+		birthDate: '1950-01-31',
+		sex: 'female',
+		mrn: 'T-88100',
+		email: 'ida.ory@patients.example',
+		mailConsent: true
+	};
+	const episodeId = await admit(coordinator, { patient });
+	// By mail, because texts to patients wait for the day.
+	await coordinator.post(`/api/episodes/${episodeId}/patient-page`, { way: 'mail' });
+	const { text } = await mailArrives(product.mailUrl, patient.email);
+	return { '/p/[token]': pathIn(text, 'p') };
+}
+
+/** The links that staff get: to a call, and to a new account. */
+async function linksOfStaff(product: Product): Promise<Record<string, string>> {
+	const call = await textArrives(product.smsUrl, /Rona Ferris/, /\/t\//);
+	return { '/t/[token]': pathIn(call.body, 't'), '/invite/[token]': await invitation(product) };
+}
+
+async function invitation(product: Product): Promise<string> {
+	const admin = await signInAs(product.url, 'admin');
+	const email = 'new.admin@saltmarsh.example';
+	// An administrator needs no unit.
+	const fields = new URLSearchParams({ name: 'New Admin', email, role: 'admin', key: newKey() });
+	await admin.send('POST', '/admin/accounts?/account', fields.toString(), {
+		'content-type': 'application/x-www-form-urlencoded'
+	});
+	return pathIn((await mailArrives(product.mailUrl, email)).text, 'invite');
+}
+
+const pathIn = (text: string, place: string) => new RegExp(`/${place}/[\\w-]+`).exec(text)?.[0] ?? '';
