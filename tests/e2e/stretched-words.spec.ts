@@ -69,20 +69,24 @@ async function spoilt(page: Page): Promise<string[]> {
 		}
 		// Controls beside each other must not cover each other's words, and no words may leave their control.
 		const controls = [...document.querySelectorAll<HTMLElement>('main :is(button, a, summary)')].filter(seen);
-		const boxes = controls.map((each) => {
+		// Line by line: of a link that goes on in the next line, no single box says where its words are.
+		const lines = controls.map((each) => {
 			const range = document.createRange();
 			range.selectNodeContents(each);
-			return { each, words: range.getBoundingClientRect() };
+			return { each, words: [...range.getClientRects()].filter(({ width }) => width > 0) };
 		});
-		for (const [at, one] of boxes.entries()) {
-			for (const other of boxes.slice(at + 1)) {
+		// What stays in view lies over what is scrolled below it, as it should.
+		const staysInView = (each: Element | null): boolean =>
+			each !== null &&
+			(/sticky|fixed/.test(getComputedStyle(each).position) || staysInView(each.parentElement));
+		const upon = (one: DOMRect, other: DOMRect) =>
+			Math.min(one.right, other.right) - Math.max(one.left, other.left) > 2 &&
+			Math.min(one.bottom, other.bottom) - Math.max(one.top, other.top) > 4;
+		for (const [at, one] of lines.entries()) {
+			for (const other of lines.slice(at + 1)) {
 				const apart = one.each.contains(other.each) || other.each.contains(one.each);
-				const [across, down] = [
-					Math.min(one.words.right, other.words.right) - Math.max(one.words.left, other.words.left),
-					Math.min(one.words.bottom, other.words.bottom) - Math.max(one.words.top, other.words.top)
-				];
-				const floats = [one, other].some(({ each }) => each.closest('.sticky, .fixed'));
-				if (!apart && !floats && across > 2 && down > 4 && one.words.width > 0 && other.words.width > 0) {
+				const floats = [one, other].some(({ each }) => staysInView(each));
+				if (!apart && !floats && one.words.some((line) => other.words.some((each) => upon(line, each)))) {
 					found.push(`over each other: ${wordsOf(one.each)} | ${wordsOf(other.each)}`);
 				}
 			}
