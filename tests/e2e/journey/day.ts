@@ -11,7 +11,7 @@ export const PHONE_OF_PATIENT = /\+353865551234/;
 export const MAIL = 'orla@post.example';
 export const ZONE = 'Europe/Dublin';
 /** What no message may carry: the name, and what is the matter. */
-export const SECRET = /Penhale|Orla|heart|surgery|bypass|128|108|pressure/i;
+export const SECRET = /Penhale|Orla|heart|surgery|bypass|\b(128|108)\b|pressure/i;
 
 type Who = keyof typeof SIGN_INS;
 
