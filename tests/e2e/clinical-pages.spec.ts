@@ -92,3 +92,25 @@ test('a calculator answers while one types, and the stairs are counted step by s
 	await expect(page.getByRole('button', { name: 'Ankle pumps' })).toHaveCount(0);
 	expect(complaints).toEqual([]);
 });
+
+test('rules and sources say on a phone where each limit comes from, and are printed whole', async ({
+	browser
+}) => {
+	const { page, complaints } = await seat(browser, product.url, 'nurse', PHONE);
+	await page.goto('/rules');
+	const source = page.getByText('AARC exercise oximetry protocol · published').filter({ visible: true });
+	const howTo = page.getByText(/^Shuffle to the edge/).filter({ visible: true });
+	await expect(source.first()).toBeVisible();
+	await expect(howTo).toHaveCount(0);
+	await expectAccessible(page);
+
+	// A sheet of paper is 794 px wide; nothing folds there, nothing is cut off, and nothing is to be pressed.
+	await page.setViewportSize({ width: 794, height: 1123 });
+	await page.emulateMedia({ media: 'print' });
+	await expect(source.first()).toBeVisible();
+	await expect(howTo.first()).toBeVisible();
+	await expect(page.getByRole('navigation')).toHaveCount(0);
+	await expect(page.getByRole('button', { name: 'Print' })).toHaveCount(0);
+	expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(794);
+	expect(complaints).toEqual([]);
+});

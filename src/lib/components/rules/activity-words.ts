@@ -11,6 +11,14 @@ export const STATUS_WORDS: Record<SourceStatus, () => string> = {
 	'common-practice': m.home_rules_status_practice
 };
 
+/** A source with its status beside it; the one that is no source says so by its name. */
+export function withStatus(title: string, status: SourceStatus): string {
+	if (title === SOURCES['common-practice'].title) {
+		return title;
+	}
+	return m.home_rules_source_status({ source: title, status: STATUS_WORDS[status]() });
+}
+
 /** What must be cleared before the activity, or may hold it. */
 export function clearanceWords({ clearance, heldBy }: Pick<UnitActivity, 'clearance' | 'heldBy'>): string {
 	if (clearance !== null) {
@@ -28,5 +36,5 @@ export function doseSourceWords({ source, local }: Pick<UnitActivity, 'source' |
 	}
 	return source === 'common-practice'
 		? m.home_rules_common_practice()
-		: `${SOURCES[source].title}, ${STATUS_WORDS[SOURCES[source].status]()}`;
+		: withStatus(SOURCES[source].title, SOURCES[source].status);
 }

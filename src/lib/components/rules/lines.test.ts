@@ -24,6 +24,19 @@ describe('limitLines', () => {
 		expect(SETS.map((set) => line?.values[set]).join(' | ')).toBe(values);
 	});
 
+	// The four words are those of the list that the document and the page share.
+	it.each([
+		['systolic-floor', 'published'],
+		['heart-rate-rise', 'secondary'],
+		['systolic-rise', 'from memory']
+	])('%s says beside its source that it is %s', (rule, status) => {
+		expect(linesOf(rule)[0]?.sources.join()).toMatch(new RegExp(` · ${status}(,|$)`));
+	});
+
+	it('says of a figure nobody published that it is common practice', () => {
+		expect(linesOf('respiratory-ceiling')[0]?.sources).toEqual(['common practice, no published source']);
+	});
+
 	it('says which set a source is for only where they differ', () => {
 		const [fall] = linesOf('systolic-fall');
 		expect(fall?.sources.map((source) => source.split(':')[0])).toEqual([

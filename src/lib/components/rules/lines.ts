@@ -3,6 +3,7 @@ import { DEFAULT_LIMITS } from '$lib/domain/bedside/limits/table';
 import type { RulebookLimit } from '$lib/domain/bedside/rulebook';
 import { m } from '$lib/i18n/paraglide/messages';
 import { RULE_NAMES } from '$lib/i18n/rules';
+import { withStatus } from './activity-words';
 
 /** One limit of a rule, with its value in each set. */
 export interface LimitLine {
@@ -29,7 +30,7 @@ export function limitLines(limits: readonly RulebookLimit[]): LimitLine[] {
 			key,
 			label: m.home_rules_limit_label({ what: meaningOf(key), unit }),
 			values: Object.fromEntries(SETS.map((set) => [set, valueOf(set)])) as Record<SetName, string>,
-			sources: bySet(own, ({ source }) => source),
+			sources: bySet(own, sourceWords),
 			versions: bySet(own, ({ version }) => version && m.home_rules_limit_version({ version })),
 			own: bySet(own, ownWords)
 		};
@@ -82,6 +83,11 @@ function valueWords(limit: RulebookLimit | undefined): string {
 	}
 	const crossing = { over: m.home_rules_over, at: m.home_rules_at, under: m.home_rules_under }[limit.when];
 	return crossing({ value: limit.value });
+}
+
+/** A source with how well it is known, in one of the four words. */
+function sourceWords({ source, status }: RulebookLimit): string | null {
+	return source && status && withStatus(source, status);
 }
 
 /** That nobody published the figure; null where somebody did, or the limit is off. */

@@ -16,6 +16,7 @@ export interface RulebookLimit {
 	readonly value: number | null;
 	readonly when: Crossing | null;
 	readonly unit: string | null;
+	/** Its title without its standing, which `status` gives. */
 	readonly source: string | null;
 	/** How well that source is known; `common-practice` is a figure of our own, or of the unit. Null where it is off. */
 	readonly status: SourceStatus | null;
@@ -30,8 +31,12 @@ export interface RulebookRow {
 	/** In the order of the sets; empty for a rule without numbers. */
 	readonly limits: readonly RulebookLimit[];
 	/** Every source the rule rests on by default, each once. */
-	readonly sources: readonly (Source & { readonly id: SourceId })[];
+	readonly sources: readonly NamedSource[];
+	/** Of these, what it rests on for all it says without a number. */
+	readonly unnumbered: readonly NamedSource[];
 }
+
+type NamedSource = Source & { readonly id: SourceId };
 
 export interface Rulebook {
 	readonly version: string;
@@ -49,7 +54,8 @@ export function rulebook(sets: Readonly<Partial<Record<SetName, LimitSet>>> = {}
 				rule: id,
 				words,
 				limits: keys.flatMap((key) => resolved.map((set) => limitRow(key, set))),
-				sources: sourcesOf(keys, sources)
+				sources: sourcesOf(keys, sources),
+				unnumbered: sourcesOf([], sources).filter(({ id }) => !citedBy(keys).includes(id))
 			};
 		})
 	};
@@ -75,18 +81,18 @@ function limitRow(key: LimitKey, { set, limits }: LimitSet): RulebookLimit {
 			local: false
 		};
 	}
-	const { value, when, unit, source, version, local } = limit;
-	return { key, set, value, when, unit, source, status: statusOf(key, set, local), version, local };
-}
-
-/** Whatever a default rests on, the figure that a unit puts in its place is the unit's own. */
-function statusOf(key: LimitKey, set: SetName, local: boolean): SourceStatus {
-	const source = local ? undefined : DEFAULT_LIMITS[set][key]?.source;
-	return source === undefined ? 'common-practice' : SOURCES[source].status;
+	const { value, when, unit, version, local } = limit;
+	// Whatever a default rests on, the figure that a unit puts in its place is the unit's own.
+	const id = local ? undefined : DEFAULT_LIMITS[set][key]?.source;
+	const { title: source, status } = id ? SOURCES[id] : { ...SOURCES['common-practice'], title: limit.source };
+	return { key, set, value, when, unit, source, status, version, local };
 }
 
 function sourcesOf(keys: readonly LimitKey[], own: readonly SourceId[]): RulebookRow['sources'] {
-	const ofLimits = keys.flatMap((key) => SETS.map((set) => DEFAULT_LIMITS[set][key]?.source));
-	const ids = new Set([...own, ...ofLimits].filter((id) => id !== undefined));
-	return [...ids].map((id) => ({ id, ...SOURCES[id] }));
+	return [...new Set([...own, ...citedBy(keys)])].map((id) => ({ id, ...SOURCES[id] }));
+}
+
+function citedBy(keys: readonly LimitKey[]): SourceId[] {
+	const all = keys.flatMap((key) => SETS.map((set) => DEFAULT_LIMITS[set][key]?.source));
+	return all.filter((id) => id !== undefined);
 }

@@ -16,7 +16,7 @@ import { CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
 
 /** How well a source is known, in the words of the document. */
 export const STANDING: Record<SourceStatus, string> = {
-	published: 'seen',
+	published: 'published',
 	secondary: 'secondary',
 	memory: 'from memory',
 	'common-practice': 'common practice'
@@ -32,7 +32,7 @@ export function clinicalDocument(): string {
 		`Version ${DEFAULTS_VERSION} of the limits.`,
 		section('Cautions', bullets(CAUTIONS)),
 		section('How to read it', bullets(HOW_TO_READ)),
-		section('The rules', table(['rule', 'what it says', 'rests on'], rows.map(ruleCells))),
+		section('The rules', table(['rule', 'what it says', 'version', 'rests on'], rows.map(ruleCells))),
 		'Rules without a number have no row in the next table.',
 		section(
 			'The limits',
@@ -58,7 +58,10 @@ function table(head: readonly string[], rows: readonly (readonly string[])[]): s
 }
 
 function ruleCells({ rule, words, sources }: RulebookRow): string[] {
-	return [code(rule), words, sources.map(({ id }) => code(id)).join(', ')];
+	const rests = sources.map(({ id, status }) =>
+		id === status ? code(id) : `${code(id)} (${STANDING[status]})`
+	);
+	return [code(rule), words, DEFAULTS_VERSION, rests.join(', ')];
 }
 
 /** One row for each limit of a rule, its three sets beside each other. */
@@ -83,7 +86,7 @@ function limitCells({ limits }: RulebookRow): string[][] {
 /** How well a limit is known, with its sets where they differ; what nobody published is a figure of our own. */
 function standingOf(sets: readonly (RulebookLimit | undefined)[]): string {
 	const words = (limit: RulebookLimit | undefined) =>
-		limit?.status === 'common-practice' ? '**our own figure**' : STANDING[limit?.status ?? 'common-practice'];
+		limit?.status === 'common-practice' ? '**our own figure**, common practice' : STANDING[limit?.status ?? 'common-practice'];
 	const said = [...new Set(sets.map(words))];
 	return said
 		.map((each) => {
@@ -158,7 +161,7 @@ function calculators(): string {
 		STANDING[status]
 	]);
 	return [
-		'They estimate for a clinician who decides. Outside the range that a formula was made for, the number is shown and marked. Results are not rounded. Functions: `src/lib/domain/calculators`.',
+		'They estimate for a clinician who decides. Outside the range that a formula was made for, the number is shown and marked. Pages show results rounded; nothing is rounded before it is judged. Functions: `src/lib/domain/calculators`.',
 		table(['calculator', 'formula', 'made for', 'source', 'standing'], rows)
 	].join('\n\n');
 }
@@ -171,7 +174,7 @@ function sources(): string {
 		STANDING[status]
 	]);
 	return [
-		'*Seen*: read at the address. *Secondary*: seen only in somebody’s notes of the primary source. *From memory*: textbook knowledge that nobody has looked up again. *Common practice*: there is no published source. **Whatever is not *seen* has to be checked against the primary source before clinical use.**',
+		'*Published*: read at the address. *Secondary*: seen only in somebody’s notes of the primary source. *From memory*: textbook knowledge that nobody has looked up again. *Common practice*: there is no published source. **Whatever is not *published* has to be checked against the primary source before clinical use.**',
 		table(['name', 'title', 'address', 'standing'], rows)
 	].join('\n\n');
 }
