@@ -15,17 +15,22 @@ import { tableOf } from './lib/table.mjs';
 const results = [];
 const installed = await time('packages', async () => oneCheck(await ensureInstalled()));
 if (installed.counts.failed === 0) {
-	for (const step of STEPS) {
-		const missing = (step.needs ?? []).filter((name) => hasFailed(name));
-		await (missing.length > 0
-			? time(step.name, async () => oneCheck(false), `not run, because ${missing.join(' and ')} failed`)
-			: time(step.name, step.run));
+	for (const together of STEPS) {
+		await Promise.all([together].flat().map(take));
 	}
 }
 const total = sum(results.map(({ counts }) => counts));
 console.log(`\n${tableOf(results)}\n`);
 console.log(closingLine(total));
 process.exitCode = total.failed > 0 ? 1 : 0;
+
+/** @param {import('./lib/steps.mjs').Step} step */
+function take(step) {
+	const missing = (step.needs ?? []).filter((name) => hasFailed(name));
+	return missing.length > 0
+		? time(step.name, async () => oneCheck(false), `not run, because ${missing.join(' and ')} failed`)
+		: time(step.name, step.run);
+}
 
 /**
  * Runs a step and notes what came of it and how long it took.

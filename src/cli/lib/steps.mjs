@@ -16,12 +16,18 @@ import { run } from './run.mjs';
  * @property {string[]} [needs] names of steps without which this one cannot be run
  */
 
+/** @typedef {import('./run.mjs').Output} Output */
+
 const LIMIT_MS = 20 * 60 * 1000;
 
 /** Variables that would point tests at a person's own server or data. */
 const NOT_FOR_TESTS = ['DATABASE_URL', 'DATA_DIR', 'DEMO', 'NODE_ENV', 'ORIGIN', 'PUBLIC_URL', 'TEST_CLOCK'];
 
-/** All of `npm test` after the packages are installed, in order. @type {Step[]} */
+/**
+ * All of `npm test` after the packages are installed, in order. Steps in a list of their own run at once: each of them
+ * keeps one core busy.
+ * @type {(Step | Step[])[]}
+ */
 export const STEPS = [
 	{ name: 'Chromium', run: async () => oneCheck(await ensureChromium()) },
 	check('generated code', [
@@ -34,12 +40,18 @@ export const STEPS = [
 		],
 		['svelte-kit', 'sync']
 	]),
-	check('format', [['prettier', '--check', '.']]),
-	check('lint', [['eslint', '.']]),
-	check('types', [
-		['svelte-check', '--fail-on-warnings'],
-		['tsc', '--noEmit']
-	]),
+	[
+		check('format', [['prettier', '--check', '.']], 'hold'),
+		check('lint', [['eslint', '.']], 'hold'),
+		check(
+			'types',
+			[
+				['svelte-check', '--fail-on-warnings'],
+				['tsc', '--noEmit']
+			],
+			'hold'
+		)
+	],
 	check('migrations', [['drizzle-kit', 'check']]),
 	{ name: 'unit and integration', run: () => runVitest(['unit', 'integration']) },
 	{ name: 'build', run: async () => oneCheck(await ensureBuilt()) },
@@ -52,14 +64,15 @@ export const STEPS = [
  * A step of programs that pass or fail as a whole; the first that fails ends it.
  * @param {string} name
  * @param {string[][]} commands a program of an installed package and its arguments
+ * @param {Output} [output] what becomes of what they print
  * @returns {Step}
  */
-function check(name, commands) {
+function check(name, commands, output = 'show') {
 	return {
 		name,
 		run: async () => {
 			for (const [program = '', ...args] of commands) {
-				const { code } = await run(bin(program), args, { env: testEnv(), limitMs: LIMIT_MS });
+				const { code } = await run(bin(program), args, { env: testEnv(), limitMs: LIMIT_MS, output });
 				if (code !== 0) {
 					return oneCheck(false);
 				}
