@@ -4,10 +4,11 @@ import { recordSession } from '$lib/server/bedside/actions';
 import { listSessions } from '$lib/server/bedside/queries';
 import { askClearance } from '$lib/server/clearances/actions';
 import { db } from '$lib/server/db';
+import { getNameboard } from '$lib/server/episodes/nameboard';
 import { getThread } from '$lib/server/threads/queries';
 import { addPatient, addPerson, addReferral, contextOf } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
-import { sessionBody } from '../support/session';
+import { sessionAt, sessionBody } from '../support/session';
 
 const hospital = await openHospital();
 const { nurse, surgeon, therapist } = hospital.people;
@@ -50,6 +51,18 @@ describe('a session on record', () => {
 		expect(await session()).toMatchObject({ id: sessionId, amendments: [{ kind: 'entered-in-error' }] });
 		expect(await evidenceOf()).toEqual([]);
 		await expect(amend('amended')).rejects.toMatchObject({ code: 'wrong-state' });
+	});
+
+	it('that was entered in error does not keep what an earlier one told of the rhythm from the record', async () => {
+		const board = async () => getNameboard(db(), nurse, episodeId, hospital.now);
+		const begun = hospital.now - 5 * 60 * 60_000;
+		const { context, ...earlier } = sessionBody(sessionAt(begun));
+		const fibrillating = { ...earlier, context: { ...context, rhythm: 'atrial-fibrillation' as const } };
+		await recordSession(contextOf(therapist), episodeId, fibrillating);
+		expect((await board()).rhythm).toBe('sinus');
+		await amend('entered-in-error', therapist, 'It was the next patient.');
+		await recordSession(contextOf(therapist), episodeId, { ...fibrillating, ...sessionAt(begun + 60_000) });
+		expect((await board()).rhythm).toBe('atrial-fibrillation');
 	});
 
 	it('is called an error only by who recorded it', async () => {

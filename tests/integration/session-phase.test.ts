@@ -3,10 +3,11 @@ import { beforeEach, describe, expect, it } from 'vitest';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { recordSession } from '$lib/server/bedside/actions';
 import { db } from '$lib/server/db';
-import { bedsideSessions, episodes, placements } from '$lib/server/db/schema';
+import { bedsideSessions, episodes, placements, signOffs } from '$lib/server/db/schema';
 import { newId } from '$lib/server/ids';
+import { wordActivity } from '$lib/server/limits/activity-actions';
 import { getThread } from '$lib/server/threads/queries';
-import { addPatient, addReferral, contextOf } from '../support/hospital';
+import { addPatient, addPerson, addReferral, contextOf } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
 import { sessionAt, sessionBody } from '../support/session';
 
@@ -64,6 +65,34 @@ describe('the phase that judges a session', () => {
 
 	it('is not mentioned where both say the same', async () => {
 		expect((await judged(MOVED, 'outpatient')).line).not.toContain('as the record has it');
+	});
+
+	it('goes with the doses of the unit it was in, also where it is entered after the patient has moved', async () => {
+		const dose = { words: '30 to 40 minutes', repetitions: null, timesADay: null };
+		const lines = {
+			name: 'Sitting',
+			needs: [],
+			dose: { ...dose, minutes: [30, 40] as [number, number] },
+			howTo: ['Upright.'],
+			watch: ['The face.'],
+			never: ['Alone.']
+		};
+		const agreed = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-03-01' };
+		const admin = contextOf(hospital.people.admin, hospital.now);
+		const code = 'chair-sitting';
+		// The ward's cautious figure is thirty minutes; the gym goes by the catalogue's fifteen.
+		await wordActivity(admin, hospital.units.ward, { code, lines, ...agreed });
+		const junior = await addPerson({ role: 'therapist', unitIds: Object.values(hospital.units) });
+		const signaturesAfter = async (endedAt: number) => {
+			const input = {
+				...sessionBody(sessionAt(endedAt - 20 * 60_000)),
+				activities: [{ code, minutes: 30 } as const]
+			};
+			await recordSession(contextOf(junior, hospital.now), episodeId, input);
+			return (await db().select().from(signOffs).where(eq(signOffs.episodeId, episodeId))).length;
+		};
+		expect(await signaturesAfter(MOVED - 1)).toBe(0);
+		expect(await signaturesAfter(MOVED + 60 * 60_000)).toBe(1);
 	});
 
 	it('leaves a set that the body names', async () => {

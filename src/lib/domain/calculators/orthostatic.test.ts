@@ -17,6 +17,8 @@ it.each<[OrthostaticCriterion, number, number, number, number, number, number, b
 	['lying-to-standing', 130, 80, 110, 75, 20, 5, true],
 	['lying-to-standing', 130, 80, 125, 70, 5, 10, true],
 	['lying-to-standing', 130, 80, 110.1, 70.1, 19.9, 9.9, false],
+	// 128.2 - 108.2 is 19.999999999999986 in binary: 20 on paper, which counts.
+	['lying-to-standing', 128.2, 78, 108.2, 72, 20, 6, true],
 	['lying-to-standing', 120, 80, 130, 84, -10, -4, false]
 ])(
 	'%s from %d/%d to %d/%d falls by %d and %d: %s',

@@ -1,3 +1,5 @@
+import { exact } from '../bedside/numbers';
+
 /**
  * Is a fall of the pressure on rising orthostatic hypotension? 20 systolic or 10 diastolic within three minutes of
  * standing after lying (30 systolic where the pressure was high lying down): consensus of 2011, as summarised.
@@ -29,7 +31,7 @@ export interface Orthostatic {
 /** Compare the pressure before rising with the lowest within three minutes after. */
 export function orthostatic(criterion: OrthostaticCriterion, before: Pressure, after: Pressure): Orthostatic {
 	const { systolic, diastolic } = ORTHOSTATIC_CRITERIA[criterion];
-	const [systolicFall, diastolicFall] = [before.sbp - after.sbp, before.dbp - after.dbp];
+	const [systolicFall, diastolicFall] = [exact(before.sbp - after.sbp), exact(before.dbp - after.dbp)];
 	const positive = systolicFall >= systolic || (diastolic !== null && diastolicFall >= diastolic);
 	return { systolicFall, diastolicFall, positive };
 }

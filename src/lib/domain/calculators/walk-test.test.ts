@@ -84,6 +84,11 @@ describe('walkChange', () => {
 		expect(walkChange(400, 400, group).thresholdM).toBe(thresholdM);
 	});
 
+	it('is freed of the noise of binary fractions before it is judged', () => {
+		// 512.3 - 487.3 is 24.999999999999943 in binary: 25 m on paper, which matters.
+		expect(walkChange(487.3, 512.3)).toEqual({ changeM: 25, matters: true, thresholdM: 25 });
+	});
+
 	it('may be held against another group', () => {
 		expect(walkChange(300, 330, 'heart-failure')).toEqual({ changeM: 30, matters: false, thresholdM: 36 });
 	});

@@ -7,6 +7,7 @@
  * Equations: European Respiratory Journal, table of reference equations,
  * erj.ersjournals.com/highwire/markup/107615. Lower limits and age range: Enright and Sherrill 1998, from memory.
  */
+import { exact } from '../bedside/numbers';
 import type { WalkTestInput } from './forms';
 
 export interface WalkTest {
@@ -65,6 +66,6 @@ export function walkChange(
 	against: MeaningfulChange = 'coronary'
 ): { changeM: number; matters: boolean; thresholdM: number } {
 	const thresholdM = MEANINGFUL_CHANGES[against].metres;
-	const changeM = afterM - beforeM;
+	const changeM = exact(afterM - beforeM);
 	return { changeM, matters: Math.abs(changeM) >= thresholdM, thresholdM };
 }

@@ -68,7 +68,7 @@ export function recordSession(
 		await insertSession(tx, context, of, kept, verdict, barsOf(judged, limits));
 		await insertDeviations(tx, context, { sessionId: of.id, episodeId, threadId }, lacking, input);
 		await carryOver(tx, context, episode, input, verdict);
-		await askForSignature(tx, context, episode, of.id, input);
+		await askForSignature(tx, context, { id: episodeId, unitId: was.unitId }, of.id, input);
 		const body = summaryText(input, verdict, lacking, was.phase);
 		return recorded(of, threadId, body, verdict, lacking);
 	});

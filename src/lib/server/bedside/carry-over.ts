@@ -5,6 +5,7 @@ import type { Verdict } from '$lib/domain/bedside/finding';
 import type { SessionBody } from '$lib/domain/bedside/forms';
 import { isSenior } from '$lib/domain/bedside/sign-off';
 import { parseRfc3339 } from '$lib/domain/core/instant';
+import { notInError } from './queries';
 import type { EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
@@ -96,7 +97,9 @@ async function laterSession(tx: Tx, episodeId: string, startedAt: number): Promi
 	const [later] = await tx
 		.select({ id: bedsideSessions.id })
 		.from(bedsideSessions)
-		.where(and(eq(bedsideSessions.episodeId, episodeId), gt(bedsideSessions.startedAt, startedAt)))
+		.where(
+			and(eq(bedsideSessions.episodeId, episodeId), gt(bedsideSessions.startedAt, startedAt), notInError())
+		)
 		.limit(1);
 	return later !== undefined;
 }

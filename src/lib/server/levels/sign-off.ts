@@ -23,6 +23,7 @@ import { adviceOf, levelOf } from './advice';
 export async function askForSignature(
 	tx: Tx,
 	context: PersonContext,
+	/** With the unit the patient lay in when it was given: its doses counted. */
 	episode: { id: string; unitId: string },
 	sessionId: string,
 	{ activities }: Pick<SessionBody, 'activities'>

@@ -96,7 +96,7 @@ async function replaceEarlier(
 async function checkValue(
 	tx: Tx,
 	episode: EpisodeRow,
-	{ key, value }: SetPatientLimit,
+	{ key, value, untilOn }: SetPatientLimit,
 	now: number
 ): Promise<number | null> {
 	const fault = limitFault(key, value);
@@ -105,7 +105,10 @@ async function checkValue(
 	}
 	const layers = await layersOf(tx, episode, now);
 	const holds = limitsOfPatient(setOfUnit(layers.unit, episode.phase), layers).limits[key];
-	if (holds && directionOf(holds, value) === null) {
+	// The same number with another last day is what a limit needs that should hold on, or end sooner.
+	const own = layers.patient.filter((limit) => limit.key === key);
+	const newDay = own.length > 0 && own.every((limit) => limit.untilOn !== untilOn);
+	if (holds && directionOf(holds, value) === null && !newDay) {
 		throw invalidField('/value', `value is ${value}: that is what ${key} is already.`);
 	}
 	return holds?.value ?? null;
