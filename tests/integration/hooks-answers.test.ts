@@ -104,6 +104,37 @@ describe('YES', () => {
 		expect(await db().$count(audit, eq(audit.episodeId, episodeId))).toBe(2);
 		expect(await answers(sid)).toHaveLength(1);
 	});
+
+	it('to the newest text is thanked for, and is none to a visit that was told of before', async () => {
+		const { own, patient, visitId } = await reminded({ startsAt: HOSPITAL_NOW + 3 * DAY });
+		const newest = await addVisit(own, { state: 'confirmed' });
+		await remind(newest, patient.id, HOSPITAL_NOW + HOUR + 1);
+		const sid = newSid();
+		await say(patient.phone, 'YES', sid, HOSPITAL_NOW + HOUR + 2);
+		expect(await stateOf(visitId)).toBe('planned');
+		expect(await inbound(sid)).toMatchObject({ visitId: newest });
+		expect((await answers(sid))[0]?.body).toContain('see you');
+	});
+
+	it('said to each of two texts of one hour confirms both', async () => {
+		const { own, patient, visitId } = await reminded({ startsAt: HOSPITAL_NOW + 3 * DAY });
+		const newest = await addVisit(own);
+		await remind(newest, patient.id, HOSPITAL_NOW + HOUR);
+		await say(patient.phone, 'YES', newSid(), HOSPITAL_NOW + HOUR + 1);
+		expect(await Promise.all([newest, visitId].map(stateOf))).toEqual(['confirmed', 'planned']);
+		await say(patient.phone, 'YES', newSid(), HOSPITAL_NOW + HOUR + 2);
+		expect(await stateOf(visitId)).toBe('confirmed');
+	});
+
+	it('to a time that has moved confirms no other visit', async () => {
+		const { own, patient, visitId } = await reminded({ startsAt: HOSPITAL_NOW + 3 * DAY });
+		const moved = await addVisit(own, { sequence: 1 });
+		await remind(moved, patient.id, HOSPITAL_NOW + HOUR + 1);
+		const sid = newSid();
+		await say(patient.phone, 'YES', sid, HOSPITAL_NOW + HOUR + 2);
+		expect(await Promise.all([moved, visitId].map(stateOf))).toEqual(['planned', 'planned']);
+		expect((await answers(sid))[0]?.body).toContain('no visit is waiting');
+	});
 });
 
 describe('a bare Ok', () => {
@@ -118,11 +149,7 @@ describe('a bare Ok', () => {
 		async (body) => {
 			const { own, patient, visitId } = await reminded();
 			const gone = await addVisit(own, { startsAt: HOSPITAL_NOW + 2 * DAY, state: 'cancelled' });
-			const news = await addReminder(gone, patient.id, { kind: 'visit' });
-			await db()
-				.update(outbox)
-				.set({ state: 'delivered', sentAt: HOSPITAL_NOW + 1, attempts: 1 })
-				.where(eq(outbox.id, news));
+			await remind(gone, patient.id, HOSPITAL_NOW + 1, { kind: 'visit' });
 			const sid = newSid();
 			await say(patient.phone, body, sid, HOSPITAL_NOW + 2);
 			expect(await stateOf(visitId)).toBe('planned');
@@ -137,4 +164,32 @@ describe('a bare Ok', () => {
 			expect(await stateOf(visitId)).toBe('confirmed');
 		}
 	);
+
+	it('after a HELP still answers the reminder before it', async () => {
+		const { patient, visitId } = await reminded();
+		const help = newSid();
+		await say(patient.phone, 'HELP', help);
+		await arrived(help);
+		await say(patient.phone, 'Ok', newSid(), HOSPITAL_NOW + 2);
+		expect(await stateOf(visitId)).toBe('confirmed');
+	});
+
+	it('after our thanks is not thanked for', async () => {
+		const { patient } = await reminded();
+		const [yes, ok] = [newSid(), newSid()];
+		await say(patient.phone, 'YES', yes);
+		await arrived(yes);
+		await say(patient.phone, 'Ok', ok, HOSPITAL_NOW + 2);
+		expect(await inbound(ok)).toMatchObject({ understoodAs: 'acknowledged', handledAt: HOSPITAL_NOW + 2 });
+		expect(await answers(ok)).toEqual([]);
+	});
+
+	/** Our answer lies on the telephone. */
+	async function arrived(sid: string): Promise<void> {
+		const [answer] = await answers(sid);
+		await db()
+			.update(outbox)
+			.set({ state: 'delivered', sentAt: HOSPITAL_NOW + 1, attempts: 1 })
+			.where(eq(outbox.id, answer?.id ?? ''));
+	}
 });

@@ -6,7 +6,7 @@ import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel } from '../support/channels';
 import { HOSPITAL_NOW, addPatient, addPerson, newPhone } from '../support/hospital';
-import { addReminder, rowOf } from '../support/messages';
+import { addReminder, rowOf, type addVisit } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
 import {
 	PUBLIC_URL,
@@ -21,7 +21,7 @@ import {
 const HOUR = 60 * 60 * 1000;
 
 const hospital = await openHospital({ PUBLIC_URL });
-const reminded = () => remindedPatient(hospital);
+const reminded = (change: Parameters<typeof addVisit>[1] = {}) => remindedPatient(hospital, change);
 
 describe('STOP, START and HELP', () => {
 	const consentOf = async (id: string) => {
@@ -82,6 +82,29 @@ describe('STOP, START and HELP', () => {
 		expect(sms.sent.filter(({ to }) => to === patient.phone)).toEqual([]);
 		expect(await rowOf(next)).toMatchObject({ state: 'skipped', stateReason: 'opted out' });
 		expect(await answers(sid)).toMatchObject([{ state: 'skipped', stateReason: 'opted out' }]);
+	});
+
+	it.each(['CANCEL', 'cancel, thanks'])(
+		'%s ends the texts, and is left to a person too where a visit was told of',
+		async (body) => {
+			const { patient, visitId } = await reminded();
+			const sid = newSid();
+			await say(patient.phone, body, sid);
+			expect(await consentOf(patient.id)).toEqual([HOSPITAL_NOW, true]);
+			expect(await stateOf(visitId)).toBe('planned');
+			expect(await inbound(sid)).toMatchObject({ understoodAs: 'stop', handledAt: null });
+		}
+	);
+
+	it.each([
+		['CANCEL', 'cancelled'],
+		['STOP', 'planned']
+	] as const)('%s with a visit that is %s is a STOP and nothing else', async (body, state) => {
+		const { patient } = await reminded({ state });
+		const sid = newSid();
+		await say(patient.phone, body, sid);
+		expect(await consentOf(patient.id)).toEqual([HOSPITAL_NOW, true]);
+		expect(await inbound(sid)).toMatchObject({ understoodAs: 'stop', handledAt: HOSPITAL_NOW });
 	});
 
 	it('HELP says whom to call', async () => {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { gatewayStops, readPatientReply } from './reply';
+import { gatewayStops, mayMeanVisit, readPatientReply } from './reply';
 
 describe('readPatientReply', () => {
 	it.each([
@@ -164,5 +164,16 @@ describe('gatewayStops', () => {
 	])('%j is ended by us alone', (text) => {
 		expect(gatewayStops(text)).toBe(false);
 		expect(readPatientReply(text)).toBe('stop');
+	});
+});
+
+describe('mayMeanVisit', () => {
+	it.each(['CANCEL', ' Cancel. ', 'Please cancel, thanks'])('%j may be about a visit', (text) => {
+		expect(readPatientReply(text)).toBe('stop');
+		expect(mayMeanVisit(text)).toBe(true);
+	});
+
+	it.each(['STOP', 'unsubscribe', 'cancel these texts', 'end'])('%j is about the texts', (text) => {
+		expect(mayMeanVisit(text)).toBe(false);
 	});
 });

@@ -103,6 +103,14 @@ export function gatewayStops(text: string): boolean {
 	return GATEWAY_STOPS.includes(text.trim().toLowerCase());
 }
 
+/**
+ * Whether a text that ends the texts may as well have been meant for a visit: gateways take 'cancel' for STOP, and a
+ * patient who was just reminded may mean what it says.
+ */
+export function mayMeanVisit(text: string): boolean {
+	return withoutManners(text) === 'cancel';
+}
+
 /** Said to be polite, or before the answer: it changes nothing. */
 const POLITE =
 	/\b(please|pls|plz|thanks|thank you|thx|ta|cheers|sorry|hello|hi|dear|sir|madam|gracias|muchas|por favor|hola|buenos dias|buenas tardes|perdon|lo siento)\b/g;
@@ -112,12 +120,16 @@ const ABOUT_TEXTS =
 
 /** Understand a patient's text. Case, accents and punctuation do not matter. */
 export function readPatientReply(text: string): PatientReply {
-	const plain = collapsed(words(text).replace(POLITE, ' '));
+	const plain = withoutManners(text);
 	const exact = (['yes', 'no', 'help', 'start', 'acknowledged'] as const).find((kind) => says(kind, plain));
 	if (exact) {
 		return exact;
 	}
 	return says('stop', plain) || endsTexts(plain) ? 'stop' : 'other';
+}
+
+function withoutManners(text: string): string {
+	return collapsed(words(text).replace(POLITE, ' '));
 }
 
 function says(kind: Exclude<PatientReply, 'other'>, plain: string): boolean {
