@@ -7,6 +7,7 @@ export const routes = {
 	invitation: (token: string) => `/invite/${token}`,
 	looseEnds: () => '/loose-ends',
 	failedMessage: (id: string) => `/loose-ends/messages/${id}`,
+	untoldVisit: (id: string) => `/loose-ends/visits/${id}`,
 	inboundText: (id: string) => `/loose-ends/texts/${id}`,
 	ward: (unitId?: string) => (unitId ? `/ward?unit=${unitId}` : '/ward'),
 	admit: (unitId?: string) => (unitId ? `/ward/admit?unit=${unitId}` : '/ward/admit'),

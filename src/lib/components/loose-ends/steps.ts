@@ -59,6 +59,8 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 			return open(m.home_step_call(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
 		case 'visit-cancelled':
 			return open(m.home_step_rebook(), episodeId ? routes.patientVisits(episodeId) : routes.visits());
+		case 'visit-untold':
+			return open(m.home_step_call(), routes.untoldVisit(id));
 		case 'message-failed':
 			return open(m.home_step_call(), routes.failedMessage(id));
 		case 'inbound':
@@ -88,6 +90,7 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			return threadId === null ? routes.patient(episodeId) : routes.thread(episodeId, threadId);
 		case 'visit-cancelled':
 		case 'visit-unconfirmed':
+		case 'visit-untold':
 		case 'message-failed':
 		case 'inbound':
 		case 'sign-off':

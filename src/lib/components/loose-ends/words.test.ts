@@ -67,6 +67,7 @@ describe('askerWords', () => {
 		[end('mention'), 'I. Aldous asks you'],
 		[end('visit-unconfirmed', { due: '2026-03-04T10:00:00Z' }), ''],
 		[end('deviation'), 'recorded by I. Aldous'],
+		[end('visit-untold', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('message-failed', { code: 'reminder' }), 'a reminder of a visit'],
 		[end('message-failed', { code: 'carrier-pigeon' }), ''],

@@ -59,6 +59,7 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'mention':
 			return m.home_asker_mention({ name });
 		case 'visit-cancelled':
+		case 'visit-untold':
 			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';

@@ -50,6 +50,8 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_mention({ role: ROLE_WORDS[code as Role]() });
 		case 'sign-off':
 			return m.home_end_sign_off();
+		case 'visit-untold':
+			return m.home_end_visit_untold();
 		case 'visit-cancelled':
 			return m.home_end_visit_cancelled();
 		case 'visit-unconfirmed':

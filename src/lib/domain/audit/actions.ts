@@ -80,6 +80,7 @@ export const AUDIT_ACTIONS = [
 	'visit.cancelled',
 	'visit.confirmed',
 	'visit.followed-up',
+	'visit.told',
 	'visit.missed',
 	'visit.moved',
 	'visit.reopened',

@@ -18,6 +18,7 @@ export const LOOSE_END_KINDS = [
 	'sign-off',
 	'visit-cancelled',
 	'visit-unconfirmed',
+	'visit-untold',
 	'message-failed',
 	'inbound'
 ] as const;
@@ -125,6 +126,7 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'visit-cancelled':
 		case 'visit-unconfirmed':
+		case 'visit-untold':
 		case 'message-failed':
 			return person.role === 'coordinator' && can(person, 'visit.plan', unit) ? 'mine' : null;
 		case 'inbound':

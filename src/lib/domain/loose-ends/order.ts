@@ -53,6 +53,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 		case 'referral':
 			return FIRST_RANK.asks + BY_PRIORITY[priority ?? 'soon'];
 		case 'message-failed':
+		case 'visit-untold':
 		case 'inbound':
 			return FIRST_RANK.messages;
 		case 'visit-cancelled':

@@ -29,6 +29,7 @@ describe('owedBy', () => {
 		['mention', 'coordinator', null, 'patient'],
 		['visit-cancelled', null, null, 'patient'],
 		['visit-unconfirmed', null, null, 'patient'],
+		['visit-untold', 'cancelled', null, 'patient'],
 		['message-failed', 'reminder', null, 'patient'],
 		['inbound', 'other', null, 'patient']
 	] as const)('%s of %s, held by %s: %s', (kind, code, holder, strand) => {
@@ -47,6 +48,7 @@ describe('rolesAsked', () => {
 		['recheck', null, []],
 		['mention', 'nurse', []],
 		['visit-unconfirmed', null, ['coordinator']],
+		['visit-untold', 'moved', ['coordinator']],
 		['clearance', 'arm-stage', ['surgeon']],
 		['clearance', 'corridor', ['surgeon', 'physician']],
 		['clearance', 'oral-intake', ['surgeon', 'speech-therapist']],

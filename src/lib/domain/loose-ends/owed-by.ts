@@ -43,6 +43,7 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 			return STRAND_OF_ROLE[code as ClinicalRole] ?? 'patient';
 		case 'visit-cancelled':
 		case 'visit-unconfirmed':
+		case 'visit-untold':
 		case 'message-failed':
 		case 'inbound':
 			return 'patient';
@@ -64,6 +65,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 			return ROLES.filter((role) => can(anyone(role), 'referral.answer', { service: code as Service }));
 		case 'visit-cancelled':
 		case 'visit-unconfirmed':
+		case 'visit-untold':
 		case 'message-failed':
 		case 'inbound':
 			return ['coordinator'];

@@ -25,6 +25,18 @@ export interface ClosedDay {
 /** Why no reminder of a visit goes: it was booked or moved after the hour of the last one, or nobody can be written to. */
 export type NoReminder = ReachProblem | 'too-late-for-one';
 
+/** A change of a visit that its patient has not heard of: whom to call, and what to say. */
+export interface UntoldVisitView {
+	id: string;
+	body: string;
+	to: { name: string; phone: string | null };
+	patient: PatientLine;
+	episodeId: string;
+	/** When it was cancelled or moved, RFC 3339. */
+	changedAt: string;
+	settled: boolean;
+}
+
 /** What the patient answered to a reminder, and when (RFC 3339). */
 export interface PatientAnswer {
 	at: string;

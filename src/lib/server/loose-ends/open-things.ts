@@ -1,6 +1,7 @@
 import { sql, type SQL } from 'drizzle-orm';
 import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
 import { strayIn } from '../access/messages';
+import { IS_NEWS_OF_CHANGE, visitsUntold } from '../visits/untold';
 import { precautionsDue } from './precautions-due';
 import { PLACE } from './place';
 
@@ -29,6 +30,7 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		signOffsAsked,
 		visitsCancelled,
 		visitsUnconfirmed(now),
+		visitsUntold(now),
 		messagesFailed,
 		textsUnread(unitIds)
 	];
@@ -188,7 +190,10 @@ const visitsCancelled = sql`
 		join place on place.id = v.episode_id
 		where v.patient_cancelled_at is not null and v.followed_up_at is null`;
 
-/** A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. */
+/**
+ * A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. News of a change
+ * are told apart by whether the patient has heard of it in any way: `visitsUntold()`.
+ */
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
 		null, null, m.created_at, null, null
@@ -199,7 +204,8 @@ const messagesFailed = sql`
 	join place on place.id = coalesce(
 		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end
 	)
-	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null`;
+	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null
+		and not ${IS_NEWS_OF_CHANGE}`;
 
 /** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */
 function textsUnread(unitIds: readonly string[]): SQL {

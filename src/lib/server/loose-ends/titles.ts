@@ -38,6 +38,8 @@ export function titleOf(thing: OpenThing): string {
 			return m.home_title_mention({ text });
 		case 'visit-unconfirmed':
 			return m.home_title_visit_unconfirmed();
+		case 'visit-untold':
+			return thing.code === 'cancelled' ? m.home_title_untold_cancelled() : m.home_title_untold_moved();
 		case 'visit-cancelled':
 			return m.home_title_visit_cancelled();
 		case 'message-failed':

@@ -83,10 +83,14 @@ export async function recheckAnswer(reader: Reader, row: OutboxRow): Promise<Ver
 	return smsOptedOutAt === null || last ? toPatient(patient) : skip('opted out');
 }
 
-/** By text with consent and at daytime, by mail with consent; too late is for a person to see to. */
+/**
+ * By text with consent and at daytime, by mail with consent. What comes too late is for a person to see to, and what
+ * could only wait until it is too late already now.
+ */
 function toPatientIfAllowed(patient: PatientRow, row: OutboxRow, now: number): Verdict {
 	const verdict = row.channel === 'sms' ? byText(patient, now) : byMail(patient);
-	return verdict.kind !== 'skip' && now >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
+	const at = verdict.kind === 'wait' ? verdict.until : now;
+	return verdict.kind !== 'skip' && at >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
 }
 
 function byText(patient: PatientRow, now: number): Verdict {

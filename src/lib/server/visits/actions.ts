@@ -22,6 +22,7 @@ import { visitLine } from './items';
 import { patientOfEpisode, remindOf } from './remind';
 import { requireRoom } from './room';
 import { tellBooked } from './tell-patient';
+import { NOTHING_TO_TELL } from './untold';
 import { bookedText } from './words';
 
 /**
@@ -108,7 +109,8 @@ function newVisit(
 		decidedAt: null,
 		patientCancelledAt: null,
 		followedUpAt: null,
-		followedUpBy: null
+		followedUpBy: null,
+		...NOTHING_TO_TELL
 	};
 }
 

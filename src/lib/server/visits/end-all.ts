@@ -12,6 +12,7 @@ import type { EpisodeRow } from '../access/access';
 import { moveVisit } from './move';
 import { patientOfEpisode } from './remind';
 import { tellAllCancelled } from './tell-patient';
+import { NOTHING_TO_TELL } from './untold';
 
 /** Somebody goes home to come back to their visits; in every other case there is nothing to come to. */
 const VISITS_STAND: readonly CloseReason[] = ['home'];
@@ -53,6 +54,9 @@ export async function endVisits(
 			...(last ? [{ ...last, messages: await tellOnce(tx, episodeId, expected, now) }] : [])
 		);
 	}
+	// Of all of them one thing is to be told, where there is somebody to tell.
+	const told = isNobodyTold(reason) ? expected : expected.slice(1);
+	await tx.update(visits).set(NOTHING_TO_TELL).where(inArray(visits.id, told));
 	await tx
 		.update(patientLinks)
 		.set({ revokedAt: now, revokedBy: actor.id })

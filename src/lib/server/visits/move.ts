@@ -11,6 +11,7 @@ import type { Change } from '../write';
 import { patientOfEpisode } from './remind';
 import { tellCancelled, waysOf, type Way } from './tell-patient';
 import { reviveReminders, rewordReminders } from './waiting-reminders';
+import { NOTHING_TO_TELL, startKnown, toBeTold } from './untold';
 import { movedText } from './words';
 
 export type VisitRow = typeof visits.$inferSelect;
@@ -57,7 +58,8 @@ export async function moveVisit(
 		throw invalidField('/reason', `reason is missing: the visit is ${visit.state} on record.`);
 	}
 	const { id, episodeId } = visit;
-	const after = { ...visit, ...moved(visit, state, by, now, reason) };
+	const known = await startKnown(tx, visit);
+	const after = { ...visit, ...moved(visit, state, by, now, reason), ...whatToTell(move, by, now, known) };
 	await tx.update(visits).set(after).where(eq(visits.id, id));
 	const dropped = isExpected(state) ? [] : await dropWaiting(tx, id, `visit ${state}`);
 	const patient = await patientOfEpisode(tx, episodeId);
@@ -82,6 +84,14 @@ export async function moveVisit(
 		events: [{ topic: 'visit', kind: state, id, episodeId }, ...dropped, ...revived],
 		messages
 	};
+}
+
+/** A patient who confirms or cancels knows; of a cancellation by staff they have to hear, unless it is past. */
+function whatToTell(move: VisitMove, by: 'staff' | 'patient', now: number, known: number) {
+	if (move === 'cancel' && by === 'staff' && known > now) {
+		return toBeTold(now, known);
+	}
+	return move === 'cancel' || move === 'confirm' ? NOTHING_TO_TELL : {};
 }
 
 /** What changes in the row. A cancellation is a change that calendars have to hear of, so it raises the sequence. */

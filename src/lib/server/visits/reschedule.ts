@@ -23,6 +23,7 @@ import { patientOfEpisode, remindOf } from './remind';
 import { requireRoom } from './room';
 import { tellLength, tellMoved, waysOf, type Way } from './tell-patient';
 import { carryReminders } from './waiting-reminders';
+import { startKnown, toBeTold } from './untold';
 import { rescheduledText } from './words';
 
 type PatientRow = typeof patients.$inferSelect;
@@ -149,5 +150,6 @@ async function changed(tx: Tx, before: VisitRow, input: Reschedule, now: number)
 		return after;
 	}
 	await refuseClosedDay(tx, planned.localDate, '/startsAt');
-	return { ...after, state: 'planned', decidedAt: null, reason: null };
+	const toTell = toBeTold(now, await startKnown(tx, before));
+	return { ...after, ...toTell, state: 'planned', decidedAt: null, reason: null };
 }

@@ -35,7 +35,14 @@ export const visits = sqliteTable(
 		/** When the patient cancelled it themselves; open until somebody has followed it up. */
 		patientCancelledAt: instant('patient_cancelled_at'),
 		followedUpAt: instant('followed_up_at'),
-		followedUpBy: text('followed_up_by').references(() => users.id)
+		followedUpBy: text('followed_up_by').references(() => users.id),
+		/** When staff last cancelled it or gave it another time or place: the patient has to hear of that. */
+		changedAt: instant('changed_at'),
+		/** The start that the patient knew of until then. */
+		changedFrom: instant('changed_from'),
+		/** When a person told the patient, where no message did. */
+		toldAt: instant('told_at'),
+		toldBy: text('told_by').references(() => users.id)
 	},
 	(t) => [index('visits_start').on(t.startsAt), index('visits_episode').on(t.episodeId, t.startsAt)]
 );

@@ -1,6 +1,7 @@
 import { redirect } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
+import type { Person } from '$lib/domain/access/actor';
 import { notFound } from '$lib/domain/core/errors';
 import { emptyBody } from '$lib/domain/escalations/forms';
 import { settleTextBody } from '$lib/domain/messages/forms';
@@ -10,17 +11,13 @@ import { idParam } from '$lib/server/http/param';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { settleInbound, settleMessage } from '$lib/server/messages/settle';
 import { getFailedMessage, getInboundText } from '$lib/server/messages/to-see-to';
+import { getUntoldVisit, tellInPerson } from '$lib/server/visits/tell-in-person';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
-	pageLoad(event, async ({ actor }) => {
-		const what = whatOf(event.params);
-		const id = idParam(event);
+	pageLoad(event, async ({ actor, now }) => {
 		return {
-			seeTo:
-				what === 'messages'
-					? { what, item: await getFailedMessage(actor, id) }
-					: { what, item: await getInboundText(actor, id) },
+			seeTo: await seeToOf(actor, whatOf(event.params), idParam(event), now),
 			messageForm: await superValidate(zod4(emptyBody)),
 			textForm: await superValidate(zod4(settleTextBody)),
 			key: newFormKey()
@@ -35,6 +32,13 @@ export const actions: Actions = {
 			redirect(303, routes.looseEnds());
 		}
 	}),
+	visit: formAction({
+		schema: emptyBody,
+		run: async (context, _fields, event) => {
+			await tellInPerson(context, idParam(event));
+			redirect(303, routes.looseEnds());
+		}
+	}),
 	text: formAction({
 		schema: settleTextBody,
 		run: async (context, fields, event) => {
@@ -44,10 +48,24 @@ export const actions: Actions = {
 	})
 };
 
-/** The two things that a text could not do and a person has to; any other address leads nowhere. */
-function whatOf({ what }: { what?: string }): 'messages' | 'texts' {
-	if (what !== 'messages' && what !== 'texts') {
+const WHATS = ['messages', 'texts', 'visits'] as const;
+
+/** What a text could not do and a person has to; any other address leads nowhere. */
+function whatOf({ what }: { what?: string }): (typeof WHATS)[number] {
+	const known = WHATS.find((one) => one === what);
+	if (!known) {
 		throw notFound('page');
 	}
-	return what;
+	return known;
+}
+
+async function seeToOf(actor: Person, what: (typeof WHATS)[number], id: string, now: number) {
+	switch (what) {
+		case 'messages':
+			return { what, item: await getFailedMessage(actor, id) };
+		case 'texts':
+			return { what, item: await getInboundText(actor, id) };
+		case 'visits':
+			return { what, item: await getUntoldVisit(actor, id, now) };
+	}
 }
