@@ -1,11 +1,13 @@
-import { eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
-import { liveEvents, outbox, patients } from '$lib/server/db/schema';
+import { audit, liveEvents, outbox, patientAmendments, patients } from '$lib/server/db/schema';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
+import { amendContact } from '$lib/server/episodes/patient';
+import { consentByText } from '$lib/server/messages/consent';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { ScriptedChannel } from '../support/channels';
-import { HOSPITAL_NOW, addPatient, addPerson, newPhone } from '../support/hospital';
+import { HOSPITAL_NOW, contextOf, addPatient, addPerson, newPhone } from '../support/hospital';
 import { addReminder, rowOf, type addVisit } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
 import {
@@ -52,6 +54,31 @@ describe('STOP, START and HELP', () => {
 			now: () => HOSPITAL_NOW + HOUR
 		}).settle();
 		expect((await rowOf(next)).state).toBe('accepted');
+	});
+
+	it('START where no consent was on record amends it, by the patient and nobody of staff', async () => {
+		const { patient, episodeId } = await reminded();
+		await db().update(patients).set({ smsConsent: false }).where(eq(patients.id, patient.id));
+		expect(await consentByText(episodeId)).toBeNull();
+		await say(patient.phone, 'START');
+		await say(patient.phone, 'START', newSid(), HOSPITAL_NOW + HOUR);
+		const kept = await db()
+			.select()
+			.from(patientAmendments)
+			.where(eq(patientAmendments.patientId, patient.id));
+		expect(kept).toMatchObject([
+			{ at: HOSPITAL_NOW, byId: null, field: 'smsConsent', before: 'false', after: 'true' }
+		]);
+		const rows = await db()
+			.select()
+			.from(audit)
+			.where(and(eq(audit.objectId, patient.id), eq(audit.action, 'patient.amended')));
+		expect(rows).toMatchObject([{ actorKind: 'patient', actorId: patient.id }]);
+		expect(await consentByText(episodeId)).toBe('2026-03-03T09:00:00.000Z');
+		const { coordinator } = hospital.people;
+		await amendContact(contextOf(coordinator, HOSPITAL_NOW + 1), episodeId, { smsConsent: false });
+		await amendContact(contextOf(coordinator, HOSPITAL_NOW + 2), episodeId, { smsConsent: true });
+		expect(await consentByText(episodeId)).toBeNull();
 	});
 
 	it('STOP in words of their own is confirmed once, by us, because the gateway does not know them', async () => {

@@ -1,8 +1,7 @@
-import { eq, inArray, sql } from 'drizzle-orm';
 import { gatewayStops, mayMeanVisit, readPatientReply } from '$lib/domain/messages/reply';
 import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
 import type { Tx } from '../db';
-import { patients } from '../db/schema';
+import { consent, optOut } from './consent';
 import type { PatientRow } from './sender';
 import { toldVisits } from './told-visits';
 import { answerTo, senderFields, stopHeardKey, type ReceivedText, type Understood } from './understood';
@@ -38,12 +37,14 @@ export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedT
 					: { change: answer('texts-stopped', senderFields(), stopHeardKey(patient.id, text.now)) })
 			};
 		case 'start':
-			// Asking for texts is consent in the patient's own words.
-			await tx
-				.update(patients)
-				.set({ smsOptedOutAt: null, smsConsent: true })
-				.where(eq(patients.id, patient.id));
-			return { understoodAs, handled: true, change: answer('texts-started', senderFields()) };
+			return {
+				understoodAs,
+				handled: true,
+				change: {
+					...answer('texts-started', senderFields()),
+					audit: await consent(tx, patient, text.now)
+				}
+			};
 		case 'help':
 			return { understoodAs, handled: true, change: answer('texts-help', senderFields()) };
 		case 'other': {
@@ -51,14 +52,6 @@ export async function onPatientText(tx: Tx, patient: PatientRow, text: ReceivedT
 			return { understoodAs, handled: false, change: answer('person-reads', senderFields(), once) };
 		}
 	}
-}
-
-/** From now on these patients get no texts. A second STOP does not move the date of the first. */
-export async function optOut(tx: Tx, patientIds: string[], now: number): Promise<void> {
-	await tx
-		.update(patients)
-		.set({ smsOptedOutAt: sql`coalesce(${patients.smsOptedOutAt}, ${now})` })
-		.where(inArray(patients.id, patientIds));
 }
 
 async function isVisitTold(tx: Tx, patientId: string, now: number): Promise<boolean> {

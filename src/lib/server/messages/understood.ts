@@ -1,3 +1,4 @@
+import type { AuditEvent } from '$lib/domain/audit/actions';
 import type { SmsFields, SmsTemplate } from '$lib/domain/messages/templates';
 import { smsText } from '$lib/domain/messages/templates';
 import { env } from '../env';
@@ -21,7 +22,7 @@ export interface Understood {
 	handled: boolean;
 	/** The visit that it was an answer to. */
 	visitId?: string;
-	change?: Pick<Change<unknown>, 'entries' | 'events' | 'messages'> & { audit?: Change<unknown>['audit'] };
+	change?: Pick<Change<unknown>, 'entries' | 'events' | 'messages'> & { audit?: AuditEvent | AuditEvent[] };
 }
 
 /** An answer later than this would only confuse. */

@@ -37,9 +37,8 @@ export const patientAmendments = sqliteTable(
 			.notNull()
 			.references(() => patients.id),
 		at: instant('at').notNull(),
-		byId: text('by_id')
-			.notNull()
-			.references(() => users.id),
+		/** Null where the patient changed it themselves, by text. */
+		byId: text('by_id').references(() => users.id),
 		field: text('field', { enum: PATIENT_FIELDS }).notNull(),
 		before: text('before'),
 		after: text('after')

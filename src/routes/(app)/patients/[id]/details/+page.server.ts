@@ -26,6 +26,7 @@ import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { invalidBody } from '$lib/server/http/problem';
+import { consentByText } from '$lib/server/messages/consent';
 import { read } from '$lib/server/read';
 import type { Actions, PageServerLoad } from './$types';
 
@@ -38,6 +39,7 @@ export const load: PageServerLoad = (event) =>
 		const board = await read.nameboard(context, idParam(event));
 		return {
 			corrections: await read.corrections(context, board.id),
+			consentByText: await consentByText(board.id),
 			surgeons: await surgeonsFor(actor),
 			operation: await superValidate<OperationForm, string>(onRecord(board), zod4(operationForm), {
 				id: 'operation',
