@@ -1,4 +1,4 @@
-import { eq } from 'drizzle-orm';
+import { and, eq, inArray } from 'drizzle-orm';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { isExpected } from '$lib/domain/visits/states';
 import type { Reader } from '../db';
@@ -86,7 +86,7 @@ async function recheckAnswerTo(reader: Reader, row: OutboxRow): Promise<Verdict>
 async function recheckMail(reader: Reader, row: OutboxRow, now: number): Promise<Verdict> {
 	if (row.refKind === 'visit') {
 		const [visit] = await reader.select().from(visits).where(eq(visits.id, row.refId));
-		if (!visit || !isExpected(visit.state)) {
+		if (!visit || !(await isAnyExpected(reader, visit))) {
 			return skip('visit is over or cancelled');
 		}
 	}
@@ -95,6 +95,18 @@ async function recheckMail(reader: Reader, row: OutboxRow, now: number): Promise
 	}
 	const verdict = await toStaff(reader, row.userId, 'email');
 	return verdict.kind === 'send' && now >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
+}
+
+/** A mail about a series hangs on its first visit, and is about all of them. */
+async function isAnyExpected(
+	reader: Reader,
+	{ state, seriesId }: typeof visits.$inferSelect
+): Promise<boolean> {
+	if (isExpected(state) || seriesId === null) {
+		return isExpected(state);
+	}
+	const expected = inArray(visits.state, ['planned', 'confirmed']);
+	return (await reader.$count(visits, and(eq(visits.seriesId, seriesId), expected))) > 0;
 }
 
 /** Used, or ended by a newer one or because the account was disabled: a link that opens nothing is only a riddle. */

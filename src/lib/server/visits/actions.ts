@@ -3,8 +3,8 @@ import { Problem } from '$lib/domain/core/errors';
 import type { VisitLine } from '$lib/domain/episodes/views';
 import type { BookVisits } from '$lib/domain/visits/forms';
 import type { PlannedVisit } from '$lib/domain/visits/series';
-import type { VisitMove } from '$lib/domain/visits/states';
-import { accessEpisode, accessVisit } from '../access/access';
+import { visitAfter, type VisitMove } from '$lib/domain/visits/states';
+import { accessEpisode, accessVisit, type EpisodeRow } from '../access/access';
 import { threadForDeed } from '../access/thread';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
@@ -144,9 +144,27 @@ function moveByStaff(
 	reason: string | null
 ): Promise<Written<MovedVisit>> {
 	return write(context, permission, async (tx) => {
-		const { visit } = await accessVisit(tx, context.actor, id, permission);
+		const { visit, episode } = await accessVisit(tx, context.actor, id, permission);
+		if (move === 'reopen') {
+			await requireToBeExpected(tx, visit, episode, context.now);
+		}
 		return moveVisit(tx, visit, move, 'staff', context.now, reason);
 	});
+}
+
+/** What was given up by a mark may have gone to somebody else since, and the stay may be over. */
+async function requireToBeExpected(tx: Tx, visit: VisitRow, episode: EpisodeRow, now: number): Promise<void> {
+	if (visitAfter(visit.state, 'reopen') === null) {
+		return;
+	}
+	if (!takesVisits(episode)) {
+		const detail = 'The stay is closed and its visits are over: no visit in it can be planned again.';
+		throw new Problem('wrong-state', detail, { state: 'closed' });
+	}
+	if (visit.startsAt > now) {
+		const { patientId } = episode;
+		await requireRoom(tx, patientId, { id: visit.unitId, name: visit.place }, [visit], now, visit.id);
+	}
 }
 
 /** Nothing more is to be done about a visit that the patient cancelled: they were called, or want no other time. */

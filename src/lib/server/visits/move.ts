@@ -10,7 +10,7 @@ import { dropWaiting } from '../outbox/reminders';
 import type { Change } from '../write';
 import { patientOfEpisode } from './remind';
 import { tellCancelled, waysOf, type Way } from './tell-patient';
-import { reviveReminders, rewordReminders } from './waiting-reminders';
+import { reviveWaiting, rewordReminders } from './waiting-reminders';
 import { NOTHING_TO_TELL, startKnown, toBeTold } from './untold';
 import { movedText } from './words';
 
@@ -66,7 +66,7 @@ export async function moveVisit(
 	if (state === 'confirmed') {
 		await rewordReminders(tx, patient, id);
 	}
-	const revived = move === 'reopen' ? await reviveReminders(tx, patient, after, now) : [];
+	const revived = move === 'reopen' ? await reviveWaiting(tx, patient, after, now) : [];
 	const messages = state === 'cancelled' ? tellCancelled(after, by, patient, now) : [];
 	const threadId = await threadForDeed(tx, episodeId, null);
 	const body = movedText(visit, move, by === 'staff' ? by : way, reason, now);

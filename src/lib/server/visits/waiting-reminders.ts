@@ -1,4 +1,4 @@
-import { and, eq, inArray } from 'drizzle-orm';
+import { and, eq, gt, inArray } from 'drizzle-orm';
 import { planReminders } from '$lib/domain/visits/reminders';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { Tx } from '../db';
@@ -9,11 +9,38 @@ import { newsKey } from './tell-patient';
 
 type PatientRow = typeof patients.$inferSelect;
 
+/** Let what was dropped with a mark wait again: the reminders, and the news of a move that nobody had sent. */
+export async function reviveWaiting(
+	tx: Tx,
+	patient: PatientRow,
+	visit: typeof visits.$inferSelect,
+	now: number
+): Promise<LiveEvent[]> {
+	return [...(await reviveNews(tx, visit, now)), ...(await reviveReminders(tx, patient, visit, now))];
+}
+
+/** Its key names the sequence, so that news of an earlier time stay dropped. */
+async function reviveNews(tx: Tx, visit: typeof visits.$inferSelect, now: number): Promise<LiveEvent[]> {
+	const revived = await tx
+		.update(outbox)
+		.set({ state: 'ready', stateReason: null })
+		.where(
+			and(
+				inArray(outbox.causeKey, [newsKey(visit, 'sms'), newsKey(visit, 'mail')]),
+				eq(outbox.state, 'cancelled'),
+				eq(outbox.attempts, 0),
+				gt(outbox.expiresAt, now)
+			)
+		)
+		.returning();
+	return Promise.all(revived.map((row) => messageEvent(tx, row, 'ready')));
+}
+
 /**
  * Let the reminders of a visit that was marked by mistake wait again, asking as before: those that were dropped with
  * the mark, that nobody had tried to send, and whose hour is still to come.
  */
-export async function reviveReminders(
+async function reviveReminders(
 	tx: Tx,
 	patient: PatientRow,
 	visit: typeof visits.$inferSelect,
