@@ -1,12 +1,20 @@
-import { and, asc, eq } from 'drizzle-orm';
+import { and, asc, eq, inArray } from 'drizzle-orm';
 import { WEEKDAYS, addDays, instantOf, localDateOf } from '$lib/domain/core/time';
 import type { BookVisits } from '$lib/domain/visits/forms';
 import { Problem } from '$lib/domain/core/errors';
 import { db } from '$lib/server/db';
-import { outbox, patients, visits } from '$lib/server/db/schema';
+import { outbox, patients, reminders, visits } from '$lib/server/db/schema';
+import { amendContact } from '$lib/server/episodes/patient';
 import { receiveText } from '$lib/server/messages/receive-text';
 import { OutboxWorker } from '$lib/server/outbox/worker';
-import { bookVisits, cancelVisit, confirmVisit } from '$lib/server/visits/actions';
+import {
+	attendVisit,
+	bookVisits,
+	cancelVisit,
+	confirmVisit,
+	missVisit,
+	reopenVisit
+} from '$lib/server/visits/actions';
 import { rescheduleVisit } from '$lib/server/visits/reschedule';
 import { contextOf, type Hospital } from './hospital';
 import { DAY_MS, HOUR_MS } from './lengths';
@@ -14,6 +22,8 @@ import { Telephone, type Deed, type Story } from './reminder-year';
 
 /** The hospital's zone, in which visits are agreed. */
 export const HOME = 'Europe/Dublin';
+/** Where the patients live, and move to. */
+export const ZONES = ['Europe/Berlin', 'America/New_York', 'Australia/Lord_Howe', 'Europe/Dublin'];
 const WHERE = { minutes: 45, place: 'East Gym' };
 const FIRST = '2026-01-03';
 
@@ -23,6 +33,10 @@ type VisitRow = typeof visits.$inferSelect;
 export interface Truth {
 	visits: VisitRow[];
 	optedOut: boolean;
+	/** Where the patient lives. */
+	zone: string;
+	/** The reminders, each with the sequence that it then told of. */
+	reminders: (typeof reminders.$inferSelect)[];
 }
 
 let texts = 0;
@@ -63,7 +77,7 @@ export class Course {
 		await this.#pass(this.#now + 60 * DAY_MS);
 	}
 
-	#do({ kind, days, time }: Deed, { id, startsAt }: VisitRow): Promise<unknown> {
+	#do({ kind, days, time }: Deed, { id, startsAt, minutes }: VisitRow): Promise<unknown> {
 		switch (kind) {
 			case 'move': {
 				const to = addDays(localDateOf(startsAt, HOME), days);
@@ -73,6 +87,19 @@ export class Course {
 				return confirmVisit(this.#staff(), id);
 			case 'cancel':
 				return cancelVisit(this.#staff(), id, 'Away.');
+			case 'attend':
+				return attendVisit(this.#staff(), id, 'At the desk.');
+			case 'miss':
+				return missVisit(this.#staff(), id, 'Did not come.');
+			case 'reopen':
+				return reopenVisit(this.#staff(), id, 'The wrong row.');
+			case 'length':
+				return rescheduleVisit(this.#staff(), id, {
+					startsAt,
+					minutes: minutes === 45 ? 60 : 45
+				});
+			case 'zone':
+				return amendContact(this.#staff(), this.episodeId, { zone: ZONES[(days + 2) % ZONES.length] });
 			case 'yes':
 			case 'stop':
 			case 'start':
@@ -108,9 +135,13 @@ export class Course {
 
 	async #truth(): Promise<Truth> {
 		const [patient] = await db().select().from(patients).where(eq(patients.id, this.patient.id));
+		const own = await this.#visits();
+		const ids = own.map(({ id }) => id);
 		return {
-			visits: await this.#visits(),
-			optedOut: patient?.smsOptedOutAt !== null
+			visits: own,
+			optedOut: patient?.smsOptedOutAt !== null,
+			zone: patient?.zone ?? HOME,
+			reminders: await db().select().from(reminders).where(inArray(reminders.visitId, ids))
 		};
 	}
 

@@ -3,11 +3,23 @@ import type { Channel, Outgoing, Sent } from '$lib/server/outbox/channels/channe
 import { accepted, transient, unknown } from './channels';
 
 /** What happens to the visit of a story, and so many hours after the deed before it. */
-export const DEEDS = ['move', 'confirm', 'yes', 'cancel', 'stop', 'start'] as const;
+export const DEEDS = [
+	'move',
+	'length',
+	'confirm',
+	'yes',
+	'cancel',
+	'attend',
+	'miss',
+	'reopen',
+	'zone',
+	'stop',
+	'start'
+] as const;
 export interface Deed {
 	kind: (typeof DEEDS)[number];
 	hoursLater: number;
-	/** Where the visit moves: so many days from where it is, at that time. */
+	/** Where the visit moves: so many days from where it is, at that time. How else it changes follows from them too. */
 	days: number;
 	time: string;
 }
@@ -39,12 +51,12 @@ export const stories: fc.Arbitrary<Story> = fc.record({
 	lateMinutes: fc.constantFrom(0, 0, 1, 30, 300),
 	deeds: fc.array(
 		fc.record({
-			kind: fc.constantFrom<Deed['kind']>('move', 'move', ...DEEDS, 'start'),
+			kind: fc.constantFrom<Deed['kind']>('move', 'move', ...DEEDS, 'reopen', 'start'),
 			hoursLater: fc.integer({ min: 0, max: 60 }),
 			days: fc.integer({ min: -2, max: 6 }),
 			time
 		}),
-		{ maxLength: 5 }
+		{ maxLength: 6 }
 	),
 	fates: fc.array(fc.constantFrom<Fate>('accepted', ...FATES), { maxLength: 12 }),
 	answers: fc.array(fc.boolean(), { maxLength: 6 })
