@@ -79,6 +79,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 	},
 	'/escalations/[id]?/take': { fields: {}, roles: ['nurse', 'physician', 'surgeon'] },
 	'/loose-ends/[what]/[id]?/message': { fields: {}, roles: ['coordinator', 'therapist'] },
+	'/loose-ends/[what]/[id]?/visit': { fields: {}, roles: ['coordinator', 'therapist'] },
 	'/loose-ends/[what]/[id]?/text': {
 		fields: { note: 'Rang her back.' },
 		roles: ['coordinator', 'therapist']
