@@ -7,7 +7,8 @@ import { Day } from './journey/day';
 import { deviate, tellAndPass } from './journey/pass';
 import { followUp, ownPage } from './journey/patient';
 import { clear, clearByOthers, refer } from './journey/refer';
-import { declineByText, missAndConfirm, remindAndAttend, stopAndStart } from './journey/texts';
+import { correctContact, endStay, moveBed } from './journey/stay';
+import { declineByText, missAndConfirm, readByPerson, remindAndAttend, stopAndStart } from './journey/texts';
 import { bookSeries, mailed, move } from './journey/visits';
 
 /**
@@ -47,7 +48,12 @@ test('page: the patient’s own page without script, a yes and a no', () => ownP
 test('follow up: a no on the page is a loose end until it is seen to', () => followUp(day));
 test('remind: the phone is reminded once, and the nurse marks who came', () => remindAndAttend(day));
 test('stop: HELP, STOP and START', () => stopAndStart(day));
+test('read: a text that no rule understands is a loose end until a person has seen to it', () =>
+	readByPerson(day));
+test('correct: the coordinator puts consent right', () => correctContact(day));
+test('bed: a move to another bed shows on the ward at once', () => moveBed(day));
 test('miss: who did not come is marked; YES by text confirms', () => missAndConfirm(day));
 test('decline: NO by text cancels', () => declineByText(day));
 test('follow up: a no by text is a loose end until it is seen to', () => followUp(day));
 test('close: the referral is closed, and the referrer gets a link to how it went', () => closeReferral(day));
+test('end: the stay ends, and the link to the patient’s page with it', () => endStay(day));

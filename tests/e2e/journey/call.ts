@@ -21,6 +21,8 @@ export async function notice(day: Day): Promise<void> {
 	await expect(page.getByText(/fell by 20|fall of 20|by 20 mmHg/i).first()).toBeVisible();
 	await reading(page, 'Diastolic').fill('66');
 	await reading(page, 'Pulse').fill('89');
+	// By how much, and past which limit: that of a patient with a rate-slowing drug.
+	await expect(page.getByText(/rose by 13 .*12/).first()).toBeVisible();
 	await page.getByRole('button', { name: 'Record the session' }).click();
 	await expect(page.getByText('Recorded').first()).toBeVisible();
 	await expect(
@@ -29,6 +31,9 @@ export async function notice(day: Day): Promise<void> {
 			.getByText(/128\/74/)
 			.first()
 	).toBeVisible();
+	await goTo(day.page('nurse'), 'Ward');
+	await expect(day.page('nurse').getByText(PATIENT).first()).toBeVisible();
+	await picture(day.page('nurse'), 'nurse', null);
 }
 
 /** The SMS brings the nurse a link; a look takes nothing; two minutes later they are told again; she takes it. */

@@ -1,6 +1,6 @@
 import { expect, type Browser, type Locator, type Page } from '@playwright/test';
 import { addDays, localDateOf, weekdayOf, type LocalDate } from '../../../src/lib/domain/core/time';
-import { admit, signInAs, SIGN_INS } from '../../support/api';
+import { SIGN_INS } from '../../support/api';
 import { startProduct, type Product } from '../../support/server';
 import { DESK, PHONE, expectConnected, seat, signIn, type Seat } from '../people';
 
@@ -39,18 +39,12 @@ export class Day {
 
 	static async begin(browser: Browser): Promise<Day> {
 		const product = await startProduct({ env: { RATE_LIMIT_SCALE: '100' } });
-		const desk = await signInAs(product.url, 'coordinator');
-		const person = { name: PATIENT, birthDate: '1951-03-12', sex: 'female', mrn: 'SG-77001' };
-		const reach = { phone: NUMBER, smsConsent: true, email: MAIL, mailConsent: true };
-		const patient = { ...person, ...reach };
-		const stay = { bed: 'T21', level: 4, betaBlocked: true, rhythm: 'sinus' };
-		const episodeId = await admit(desk, { patient, ...stay });
 		const seats = {} as Record<Who, Seat>;
 		for (const who of Object.keys(SIGN_INS) as Who[]) {
 			const onPhone = who === 'surgeon' || who === 'nurse';
 			seats[who] = await seat(browser, product.url, who, onPhone ? PHONE : DESK);
 		}
-		return new Day(browser, product, episodeId, seats);
+		return new Day(browser, product, await admitOnPage(seats.coordinator.page), seats);
 	}
 
 	async end(): Promise<void> {
@@ -106,6 +100,40 @@ export class Day {
 		await expect(page).toHaveURL(/threads/);
 	}
 }
+
+/** The coordinator admits the patient on the page, operated on four days ago. */
+async function admitOnPage(page: Page): Promise<string> {
+	await page.goto('/ward/admit');
+	await expectConnected(page);
+	const fields = [
+		[/^Name/, PATIENT],
+		[/^Hospital number/, 'SG-77001'],
+		[/^Birth date/, '1951-03-12'],
+		[/^Telephone/, NUMBER],
+		[/^E-mail address/, MAIL],
+		[/^Bed/, 'T21'],
+		[/^Procedure/, 'Bypass'],
+		[/^Day/, addDays(localDateOf(Date.now(), ZONE), -4)],
+		[/^Time/, '10:00']
+	] as const;
+	await page.getByLabel(/^Unit/).selectOption({ label: 'Tern Ward' });
+	await page.getByLabel(/^Sex/).selectOption('female');
+	await page.getByLabel(/^Rhythm/).selectOption('sinus');
+	await page.getByLabel(/^Approach/).selectOption('sternotomy');
+	for (const [field, words] of fields) {
+		await page.getByRole('textbox', { name: field }).fill(words);
+	}
+	await page.getByRole('checkbox', { name: /Consents to text/ }).check();
+	await page.getByRole('checkbox', { name: /Agrees to mails/ }).check();
+	await choose(page, /^Level/, '4');
+	await choose(page, /^Rate-slowing/, 'Yes');
+	await page.getByRole('button', { name: 'Admit' }).click();
+	await expect(page).toHaveURL(/\/patients\/[\w-]+$/);
+	return new URL(page.url()).pathname.split('/')[2] ?? '';
+}
+
+const choose = (page: Page, group: RegExp, name: string): Promise<void> =>
+	page.getByRole('group', { name: group }).getByRole('radio', { name }).check();
 
 /** The row of this journey's patient in a list of loose ends. */
 export const rowOf = (page: Page): Locator => page.getByRole('listitem').filter({ hasText: PATIENT });

@@ -48,12 +48,12 @@ export async function tellAndPass(day: Day): Promise<void> {
 	await goTo(physician, 'Loose ends');
 	await press(rowOf(physician).getByRole('button', { name: /I have it now/ }));
 	await expect(raising.getByText(/Marta Lisowska has it/).first()).toBeVisible();
-	const api = await signInAs(day.product.url, 'physician');
-	const id = new URL(raising.url()).pathname.split('/').at(-1) ?? '';
-	await api.post(`/api/escalations/${id}/settle`, {
-		outcome: 'Settled with rest',
-		note: 'Sat out, well again.'
-	});
+	await physician.goto(new URL(raising.url()).pathname);
+	await physician.getByRole('button', { name: 'Settle' }).first().click();
+	const settling = physician.getByRole('dialog');
+	await settling.getByRole('radio', { name: 'Settled with rest' }).check();
+	await settling.getByLabel(/^Note/).fill('Sat out, well again.');
+	await settling.getByRole('button', { name: 'Settle' }).click();
 	await expect(raising.getByText('Escalation settled').first()).toBeVisible();
 }
 

@@ -1,4 +1,5 @@
 import { expect } from '@playwright/test';
+import { PHONE } from '../people';
 import { goTo, press, rowOf, type Day } from './day';
 import { picture } from './pictures';
 
@@ -45,6 +46,10 @@ export async function clear(day: Day): Promise<void> {
 	await press(asked.getByRole('link', { name: /Answer/ }));
 	await expect(day.page('surgeon').getByText('May the arm stage start?')).toBeVisible();
 	await expect(day.page('surgeon').getByText('born 12 Mar 1951').first()).toBeVisible();
+	// What it rests on is readable on a phone: within its width, without scrolling sideways.
+	const evidence = day.page('surgeon').getByText('What it rests on').first();
+	await expect(evidence).toBeVisible();
+	expect(await day.page('surgeon').evaluate(() => document.documentElement.scrollWidth)).toBe(PHONE.width);
 	await day.page('surgeon').getByRole('radio', { name: '90°' }).check();
 	await day.page('surgeon').getByRole('button', { name: 'Clear, to 90 degrees' }).click();
 

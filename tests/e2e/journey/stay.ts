@@ -1,0 +1,63 @@
+import { expect, type Page } from '@playwright/test';
+import { signInAs } from '../../support/api';
+import { itemsOf } from '../../support/fakes';
+import { expectConnected } from '../people';
+import { MAIL, SECRET, type Day } from './day';
+
+/** The coordinator, in the same shift as before, goes to a page. */
+async function open(day: Day, path: string): Promise<Page> {
+	const page = day.page('coordinator');
+	await page.goto(path);
+	await expectConnected(page);
+	return page;
+}
+
+/** The coordinator puts the contact right: consent that was withdrawn, and was a slip. */
+export async function correctContact(day: Day): Promise<void> {
+	const page = await open(day, `/patients/${day.episodeId}/details`);
+	const consent = page.getByRole('checkbox', { name: /Agrees to mails/ });
+	for (const agrees of [false, true]) {
+		await consent.setChecked(agrees);
+		await page.getByRole('button', { name: 'Keep the contact' }).click();
+		await expect(page.getByText('On record.')).toBeVisible();
+		await page.reload();
+		await expect(consent).toBeChecked({ checked: agrees });
+	}
+	await expect(page.getByLabel(/^E-mail address/)).toHaveValue(MAIL);
+}
+
+/** To another bed: the ward of whoever looks on shows it at once. */
+export async function moveBed(day: Day): Promise<void> {
+	const nurse = await day.back('nurse', '/ward');
+	const page = await open(day, `/patients/${day.episodeId}/move`);
+	await page.getByLabel(/^Unit/).selectOption({ label: 'Tern Ward' });
+	await page.getByLabel(/^Bed/).fill('T22');
+	await page.getByRole('button', { name: 'Move the patient' }).click();
+	await expect(nurse.getByText('T22').first()).toBeVisible();
+}
+
+/** The stay ends: who referred gets a link alone, and the link to the patient's page opens nothing any more. */
+export async function endStay(day: Day): Promise<void> {
+	const mails = () => itemsOf<{ to: string; subject: string; text: string }>(`${day.product.mailUrl}/mails`);
+	const links = async () =>
+		(await mails()).flatMap(({ text }) => /https?:\S+\/p\/[\w-]{22}/.exec(text) ?? []);
+	const before = await links();
+	const page = await open(day, day.visits);
+	await page.getByRole('button', { name: 'Send a link by mail' }).click();
+	await expect.poll(async () => (await links()).length).toBe(before.length + 1);
+	const link = (await links()).find((one) => !before.includes(one)) ?? '';
+	expect((await fetch(link)).status).toBe(200);
+
+	// A referral that is still open: whoever asked is told that the stay is over.
+	const surgeon = await signInAs(day.product.url, 'surgeon');
+	const asked = { service: 'speech-therapy', priority: 'routine', question: 'Voice still weak?' };
+	expect((await surgeon.post(`/api/episodes/${day.episodeId}/referrals`, asked)).status).toBe(201);
+	const told = async () => (await mails()).filter(({ to }) => to.includes('surgeon@')).length;
+	const toldBefore = await told();
+	await page.goto(`/patients/${day.episodeId}/move`);
+	await page.getByRole('radio', { name: 'To another hospital' }).check();
+	await page.getByRole('button', { name: 'Close the stay' }).click();
+	await expect.poll(told).toBe(toldBefore + 1);
+	expect((await mails()).map(({ subject }) => subject).join(' ')).not.toMatch(SECRET);
+	expect((await fetch(link)).status).toBe(410);
+}
