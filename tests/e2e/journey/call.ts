@@ -63,6 +63,7 @@ export async function callAndTake(day: Day): Promise<void> {
 	await expect(raising.getByText(/nobody has it/i).first()).toBeVisible();
 	// The surgeon has the thread open on a phone, and hears of it as everybody of the unit does.
 	await day.openThread(day.page('surgeon'));
+	await day.openThread(day.page('nurse'));
 	const strip = day.page('surgeon').getByRole('region', { name: 'Untaken escalations' });
 	await expect(strip.getByText(/nobody has it/)).toBeVisible();
 
@@ -79,7 +80,10 @@ export async function callAndTake(day: Day): Promise<void> {
 	await expect(phone.page.getByText('You have it').first()).toBeVisible();
 	await expect(raising.getByText(/Rona Ferris has it/).first()).toBeVisible();
 	await expect(strip.getByText(/nobody has it/)).toHaveCount(0);
-	await expect(day.page('surgeon').getByText('Taken.', { exact: true })).toBeVisible();
+	// By itself, on every page that is open: on her own too, though she took it elsewhere.
+	for (const who of ['surgeon', 'nurse'] as const) {
+		await expect(day.page(who).getByText('Taken.', { exact: true })).toBeVisible();
+	}
 	await phone.context.close();
 }
 
