@@ -90,7 +90,9 @@ it('a NO cancels, and no reminder follows, whatever callbacks come twice', async
 	const { phone } = hospital.patient;
 	await db().update(visits).set({ state: 'attended' });
 	// The days are lived again: what was sent in them before is long past.
-	await db().update(outbox).set({ sentAt: HOSPITAL_NOW - DAY });
+	await db()
+		.update(outbox)
+		.set({ sentAt: HOSPITAL_NOW - DAY });
 	const visitId = await book();
 	const delivered = announced('delivered');
 	await settleAt(Date.parse('2026-03-07T17:00:00Z'));
