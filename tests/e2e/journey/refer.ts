@@ -1,5 +1,5 @@
-import { expect } from '@playwright/test';
-import { PHONE } from '../people';
+import { expect, type Page } from '@playwright/test';
+import { expectConnected, PHONE } from '../people';
 import { goTo, press, rowOf, type Day } from './day';
 import { picture } from './pictures';
 
@@ -77,7 +77,7 @@ export async function clearByOthers(day: Day): Promise<void> {
 		await expect(asked).toHaveCount(1);
 		if (kind === 'stairs') {
 			// The ask hangs loose beside the rope until it is answered.
-			await picture(asking, 'thread');
+			await pictureOfThread(asking);
 		}
 		await picture(page, who);
 		await press(asked.getByRole('link', { name: /Answer/ }));
@@ -93,4 +93,13 @@ export async function clearByOthers(day: Day): Promise<void> {
 		await goTo(page, 'Loose ends');
 		await expect(rowOf(page).filter({ hasText: question })).toHaveCount(0);
 	}
+}
+
+/** The thread as it opens, without the form that the therapist has open. */
+async function pictureOfThread(asking: Page): Promise<void> {
+	const view = await asking.context().newPage();
+	await view.goto(asking.url());
+	await expectConnected(view);
+	await picture(view, 'thread');
+	await view.close();
 }
