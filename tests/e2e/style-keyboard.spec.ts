@@ -66,6 +66,26 @@ test('tabs, a chip and a choice are worked by keyboard alone', async ({ page }) 
 	await expect(degrees.getByRole('radio', { name: '60°' })).toBeChecked();
 });
 
+test('a long list is chosen from by keyboard alone, before it can be typed into and after', async ({
+	page
+}) => {
+	const list = page.locator('select[name=limit]');
+	await list.focus();
+	await page.keyboard.press('R');
+	// What was begun in the browser's own list ends in it; the finder comes once the field is left.
+	await expect(list).toHaveValue('pulse-rise');
+	await page.keyboard.press('Tab');
+	const finder = page.getByRole('combobox', { name: 'Limit', exact: true });
+	await expect(list).toHaveCount(0);
+	await expect(finder).toHaveValue('Rise of the pulse');
+	await finder.fill('too low');
+	await page.keyboard.press('ArrowDown');
+	await page.keyboard.press('Enter');
+	await expect(finder).toHaveValue('Systolic pressure too low');
+	// What a form sends is the option, not its words.
+	await expect(page.locator('input[name=limit]')).toHaveValue('systolic-floor');
+});
+
 test('the number pad and a day are worked by keyboard alone', async ({ page }) => {
 	const pad = page.getByRole('group', { name: 'Systolic, before' });
 	await pad.getByRole('button', { name: 'Erase' }).press('Enter');

@@ -31,6 +31,23 @@ function walk(
 	step(node, []);
 }
 
+describe('parts', () => {
+	const importedBy = (folder: string) =>
+		files('.svelte')
+			.filter((file) => file.startsWith(folder))
+			.flatMap((file) => [...sourceOf(file).matchAll(/components\/ui\/(\w+)\.svelte|'\.\/(\w+)\.svelte/g)])
+			.map((match) => match[1] ?? match[2]);
+
+	it('are all on the page of parts, or are a part of one that is', () => {
+		const shown = new Set([...importedBy('src/routes/style'), ...importedBy('src/lib/components/ui')]);
+		const parts = files('.svelte')
+			.filter((file) => file.startsWith('src/lib/components/ui/'))
+			.map((file) => file.slice('src/lib/components/ui/'.length, -'.svelte'.length));
+		expect(parts.length).toBeGreaterThan(20);
+		expect(parts.filter((part) => !shown.has(part))).toEqual([]);
+	});
+});
+
 describe('forms', () => {
 	/** Forms that are not drawn by `components/form`, each with its reason. */
 	const OTHERS: Record<string, string> = {
