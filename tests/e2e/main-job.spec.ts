@@ -7,6 +7,7 @@ import { Day } from './journey/day';
 import { deviate, tellAndPass } from './journey/pass';
 import { followUp, ownPage } from './journey/patient';
 import { clear, clearByOthers, refer } from './journey/refer';
+import { decideLevel, narrowLimit } from './journey/steps';
 import { correctContact, endStay, moveBed } from './journey/stay';
 import { declineByText, missAndConfirm, readByPerson, remindAndAttend, stopAndStart } from './journey/texts';
 import { bookSeries, mailed, move } from './journey/visits';
@@ -39,6 +40,8 @@ test('escalate: the SMS brings the nurse a link; a look takes nothing; she takes
 test('pass: told in person, taken with one tap, passed on and confirmed', () => tellAndPass(day));
 test('deviate: what was done without a clearance is recorded, and the decider has seen it', () =>
 	deviate(day));
+test('level: the therapist takes it back, and the nurse’s open page says so', () => decideLevel(day));
+test('limit: the physician narrows one for this patient', () => narrowLimit(day));
 test('the stream is cut and resumes without a gap', () => cutAndResume(day));
 test('invite: the administrator invites a nurse, who opens the link from the mailbox', () => invite(day));
 test('book: a series steps over a closed day', () => bookSeries(day));

@@ -1,5 +1,4 @@
 import { expect, type Page } from '@playwright/test';
-import { signInAs } from '../../support/api';
 import { itemsOf } from '../../support/fakes';
 import { expectConnected } from '../people';
 import { MAIL, SECRET, type Day } from './day';
@@ -49,9 +48,12 @@ export async function endStay(day: Day): Promise<void> {
 	expect((await fetch(link)).status).toBe(200);
 
 	// A referral that is still open: whoever asked is told that the stay is over.
-	const surgeon = await signInAs(day.product.url, 'surgeon');
-	const asked = { service: 'speech-therapy', priority: 'routine', question: 'Voice still weak?' };
-	expect((await surgeon.post(`/api/episodes/${day.episodeId}/referrals`, asked)).status).toBe(201);
+	const surgeon = await day.back('surgeon', `/patients/${day.episodeId}/refer`);
+	await surgeon.getByRole('radio', { name: 'Speech therapy' }).check();
+	await surgeon.getByRole('radio', { name: 'Routine' }).check();
+	await surgeon.getByLabel(/What do you ask/).fill('Voice still weak?');
+	await surgeon.getByRole('button', { name: /refer/i }).click();
+	await expect(surgeon).toHaveURL(/threads/);
 	const told = async () => (await mails()).filter(({ to }) => to.includes('surgeon@')).length;
 	const toldBefore = await told();
 	await page.goto(`/patients/${day.episodeId}/move`);
