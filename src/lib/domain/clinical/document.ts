@@ -86,7 +86,9 @@ function limitCells({ limits }: RulebookRow): string[][] {
 /** How well a limit is known, with its sets where they differ; what nobody published is a figure of our own. */
 function standingOf(sets: readonly (RulebookLimit | undefined)[]): string {
 	const words = (limit: RulebookLimit | undefined) =>
-		limit?.status === 'common-practice' ? '**our own figure**, common practice' : STANDING[limit?.status ?? 'common-practice'];
+		limit?.status === 'common-practice'
+			? '**our own figure**, common practice'
+			: STANDING[limit?.status ?? 'common-practice'];
 	const said = [...new Set(sets.map(words))];
 	return said
 		.map((each) => {
