@@ -3,9 +3,9 @@ import { itemsOf } from '../../support/fakes';
 import { expectConnected } from '../people';
 import { MAIL, SECRET, type Day } from './day';
 
-/** The coordinator, in the same shift as before, goes to a page. */
-async function open(day: Day, path: string): Promise<Page> {
-	const page = day.page('coordinator');
+/** Somebody, in the same shift as before, goes to a page. */
+async function open(day: Day, who: 'coordinator' | 'surgeon', path: string): Promise<Page> {
+	const page = day.page(who);
 	await page.goto(path);
 	await expectConnected(page);
 	return page;
@@ -13,7 +13,7 @@ async function open(day: Day, path: string): Promise<Page> {
 
 /** The coordinator puts the contact right: consent that was withdrawn, and was a slip. */
 export async function correctContact(day: Day): Promise<void> {
-	const page = await open(day, `/patients/${day.episodeId}/details`);
+	const page = await open(day, 'coordinator', `/patients/${day.episodeId}/details`);
 	const consent = page.getByRole('checkbox', { name: /Agrees to mails/ });
 	for (const agrees of [false, true]) {
 		await consent.setChecked(agrees);
@@ -28,7 +28,7 @@ export async function correctContact(day: Day): Promise<void> {
 /** To another bed: the ward of whoever looks on shows it at once. */
 export async function moveBed(day: Day): Promise<void> {
 	const nurse = await day.back('nurse', '/ward');
-	const page = await open(day, `/patients/${day.episodeId}/move`);
+	const page = await open(day, 'coordinator', `/patients/${day.episodeId}/move`);
 	await page.getByLabel(/^Unit/).selectOption({ label: 'Tern Ward' });
 	await page.getByLabel(/^Bed/).fill('T22');
 	await page.getByRole('button', { name: 'Move the patient' }).click();
@@ -41,14 +41,14 @@ export async function endStay(day: Day): Promise<void> {
 	const links = async () =>
 		(await mails()).flatMap(({ text }) => /https?:\S+\/p\/[\w-]{22}/.exec(text) ?? []);
 	const before = await links();
-	const page = await open(day, day.visits);
+	const page = await open(day, 'coordinator', day.visits);
 	await page.getByRole('button', { name: 'Send a link by mail' }).click();
 	await expect.poll(async () => (await links()).length).toBe(before.length + 1);
 	const link = (await links()).find((one) => !before.includes(one)) ?? '';
 	expect((await fetch(link)).status).toBe(200);
 
 	// A referral that is still open: whoever asked is told that the stay is over.
-	const surgeon = await day.back('surgeon', `/patients/${day.episodeId}/refer`);
+	const surgeon = await open(day, 'surgeon', `/patients/${day.episodeId}/refer`);
 	await surgeon.getByRole('radio', { name: 'Speech therapy' }).check();
 	await surgeon.getByRole('radio', { name: 'Routine' }).check();
 	await surgeon.getByLabel(/What do you ask/).fill('Voice still weak?');
