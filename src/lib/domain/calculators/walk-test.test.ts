@@ -21,6 +21,9 @@ describe('walkTest', () => {
 
 	it.each([
 		['male', 172, 65, 80, 400, 76.05, false],
+		// Exactly the limit is not below it, though a sum of tenths would put it there: 372.94, and 372.93 under it.
+		['male', 172, 65, 80, 372.94, 70.91, false],
+		['male', 172, 65, 80, 372.93, 70.91, true],
 		['female', 160, 70, 68, 310, 69.78, false],
 		['female', 160, 70, 68, 300, 67.52, true]
 	] as const)(

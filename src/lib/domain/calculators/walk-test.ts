@@ -30,8 +30,8 @@ export function walkTest(input: WalkTestInput): WalkTest {
 	if (sex !== 'male' && sex !== 'female') {
 		return { predictedM: null, lowerLimitM: null, percent: null, belowLowerLimit: null, inRange: false };
 	}
-	const predictedM = predicted(sex, input);
-	const lowerLimitM = predictedM - LOWER_LIMIT_BELOW_M[sex];
+	const predictedM = exact(predicted(sex, input));
+	const lowerLimitM = exact(predictedM - LOWER_LIMIT_BELOW_M[sex]);
 	return {
 		predictedM,
 		lowerLimitM,
