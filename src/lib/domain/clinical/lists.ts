@@ -101,6 +101,7 @@ export const CHECKS: readonly CheckEntry[] = [
 		values: 'each limit just under, at and over it; rows from the two published inpatient lines',
 		tests: [
 			`${BEDSIDE}/assess.test.ts`,
+			`${BEDSIDE}/rules/edges.test.ts`,
 			`${BEDSIDE}/rules/absolute.test.ts`,
 			`${BEDSIDE}/rules/change.test.ts`,
 			`${BEDSIDE}/rules/each-set.test.ts`

@@ -60,11 +60,6 @@ export const SOURCES = {
 		address: 'https://doi.org/10.1007/978-3-030-62493-4_5',
 		status: 'published'
 	},
-	'angina-scale': {
-		title: 'Grading of chest pain during exercise',
-		address: 'https://www.activelivingservices.ca',
-		status: 'published'
-	},
 	'dyspnoea-scale': { title: 'ACSM scale of breathlessness, 1 to 4', address: null, status: 'memory' },
 	'sternal-symptoms': {
 		title: 'Heart Online, exercise following cardiac interventions',

@@ -1,121 +1,12 @@
+/** The absolute rules beside their limits; each limit on its three sides, in every set, stands in `edges`. */
 import { describe, expect, it } from 'vitest';
-import type { RuleId, SetName } from '../codes';
-import type { Reading } from '../forms';
-import { grades, judge, only, REST } from '../testing/sample';
+import type { RuleId } from '../codes';
+import { grades, judge, only, REST, type ReadingField } from '../testing/sample';
 
 type Grade = 'stop' | 'caution' | null;
-type Field = 'hr' | 'sbp' | 'dbp' | 'spo2' | 'rr' | 'rpe' | 'pain';
-type Case = [rule: RuleId, field: Field, value: number, grade: Grade];
-
-/** A reading with one value changed, and the other pressure moved so that the pair stays possible. */
-function reading(field: Field, value: number): Reading {
-	if (field === 'sbp') {
-		return { ...REST, sbp: value, dbp: Math.min(72, value - 1) };
-	}
-	return { ...REST, [field]: value, ...(field === 'dbp' ? { sbp: Math.max(120, value + 10) } : {}) };
-}
-
-const EVERY_SET: SetName[] = ['strict', 'guideline', 'outpatient'];
-
-/** Values just under, at and just over each limit before a start; the same in all three sets. */
-const BEFORE: Case[] = [
-	['systolic-ceiling', 'sbp', 179.9, null],
-	['systolic-ceiling', 'sbp', 180, null],
-	['systolic-ceiling', 'sbp', 180.1, 'stop'],
-	['systolic-floor', 'sbp', 89.9, 'stop'],
-	['systolic-floor', 'sbp', 90, null],
-	['diastolic-ceiling', 'dbp', 99.9, null],
-	['diastolic-ceiling', 'dbp', 100, 'caution'],
-	['diastolic-ceiling', 'dbp', 109.9, 'caution'],
-	['diastolic-ceiling', 'dbp', 110, 'stop'],
-	['heart-rate-ceiling', 'hr', 120, null],
-	['heart-rate-ceiling', 'hr', 120.1, 'stop'],
-	['heart-rate-floor', 'hr', 39.9, 'stop'],
-	['heart-rate-floor', 'hr', 40, 'caution'],
-	['heart-rate-floor', 'hr', 49.9, 'caution'],
-	['heart-rate-floor', 'hr', 50, null],
-	['respiratory-ceiling', 'rr', 24, null],
-	['respiratory-ceiling', 'rr', 24.1, 'caution'],
-	['respiratory-ceiling', 'rr', 30, 'caution'],
-	['respiratory-ceiling', 'rr', 30.1, 'stop'],
-	['saturation-floor', 'spo2', 87.9, 'stop'],
-	['saturation-floor', 'spo2', 88, 'caution'],
-	['saturation-floor', 'spo2', 89.9, 'caution'],
-	['saturation-floor', 'spo2', 90, null],
-	['exertion-ceiling', 'rpe', 20, null],
-	['pain-ceiling', 'pain', 3.9, null],
-	['pain-ceiling', 'pain', 4, 'caution'],
-	['pain-ceiling', 'pain', 6.9, 'caution'],
-	['pain-ceiling', 'pain', 7, 'stop']
-];
-
-/** The limits in effort and after it that all three sets share. */
-const EFFORT: Case[] = [
-	['systolic-floor', 'sbp', 89.9, 'stop'],
-	['systolic-floor', 'sbp', 90, null],
-	['diastolic-ceiling', 'dbp', 99.9, null],
-	['diastolic-ceiling', 'dbp', 100, 'caution'],
-	['diastolic-ceiling', 'dbp', 109.9, 'caution'],
-	['heart-rate-ceiling', 'hr', 120, null],
-	['heart-rate-ceiling', 'hr', 120.1, 'caution'],
-	['heart-rate-ceiling', 'hr', 130, 'caution'],
-	['heart-rate-ceiling', 'hr', 130.1, 'stop'],
-	['heart-rate-floor', 'hr', 39.9, 'stop'],
-	['heart-rate-floor', 'hr', 40, 'caution'],
-	['heart-rate-floor', 'hr', 50, null],
-	['respiratory-ceiling', 'rr', 30, null],
-	['respiratory-ceiling', 'rr', 30.1, 'caution'],
-	['respiratory-ceiling', 'rr', 35, 'caution'],
-	['respiratory-ceiling', 'rr', 35.1, 'stop'],
-	['saturation-floor', 'spo2', 87.9, 'stop'],
-	['saturation-floor', 'spo2', 88, 'caution'],
-	['saturation-floor', 'spo2', 90, null],
-	['exertion-ceiling', 'rpe', 13, null],
-	['exertion-ceiling', 'rpe', 13.1, 'caution'],
-	['exertion-ceiling', 'rpe', 15, 'caution'],
-	['exertion-ceiling', 'rpe', 15.1, 'stop'],
-	['pain-ceiling', 'pain', 4, 'caution'],
-	['pain-ceiling', 'pain', 7, 'stop']
-];
-
-/** The pressures on which the sets differ in effort and after it. */
-const PRESSURES: [SetName[], ...Case][] = [
-	[['strict', 'guideline'], 'systolic-ceiling', 'sbp', 180, null],
-	[['strict', 'guideline'], 'systolic-ceiling', 'sbp', 180.1, 'caution'],
-	[['strict', 'guideline'], 'systolic-ceiling', 'sbp', 200, 'caution'],
-	[['strict', 'guideline'], 'systolic-ceiling', 'sbp', 200.1, 'stop'],
-	[['strict', 'guideline'], 'diastolic-ceiling', 'dbp', 110, 'stop'],
-	[['outpatient'], 'systolic-ceiling', 'sbp', 220, null],
-	[['outpatient'], 'systolic-ceiling', 'sbp', 220.1, 'caution'],
-	[['outpatient'], 'systolic-ceiling', 'sbp', 250, 'caution'],
-	[['outpatient'], 'systolic-ceiling', 'sbp', 250.1, 'stop'],
-	[['outpatient'], 'diastolic-ceiling', 'dbp', 110, 'caution'],
-	[['outpatient'], 'diastolic-ceiling', 'dbp', 115, 'caution'],
-	[['outpatient'], 'diastolic-ceiling', 'dbp', 115.1, 'stop']
-];
+type Case = [rule: RuleId, field: ReadingField, value: number, grade: Grade];
 
 const expected = (grade: Grade, moment: string) => (grade === null ? [] : [`${grade} ${moment}`]);
-
-describe.each(EVERY_SET)('absolute rules of the %s set', (set) => {
-	it.each(BEFORE)('%s: %s %d before a start: %s', (rule, field, value, grade) => {
-		const verdict = judge({ context: { set }, before: reading(field, value) });
-		expect(grades(verdict, rule).filter((found) => found.endsWith('before'))).toEqual(
-			expected(grade, 'before')
-		);
-	});
-
-	const effort = [...EFFORT, ...PRESSURES.filter(([sets]) => sets.includes(set)).map(([, ...row]) => row)];
-
-	it.each(effort)('%s: %s %d in effort: %s', (rule, field, value, grade) => {
-		const verdict = judge({ context: { set }, during: [reading(field, value)] });
-		expect(grades(verdict, rule)).toEqual(expected(grade, 'during'));
-	});
-
-	it.each(effort)('%s: %s %d after effort: %s', (rule, field, value, grade) => {
-		const verdict = judge({ context: { set }, after: reading(field, value) });
-		expect(grades(verdict, rule)).toEqual(expected(grade, 'after'));
-	});
-});
 
 describe('mean-floor', () => {
 	// Mean pressure = diastolic + (systolic - diastolic) / 3; 120/80 is 93.33 (Mean arterial pressure, WikiLectures).

@@ -14,6 +14,17 @@ export const REST: Reading = {
 	pain: 1
 };
 
+/** What a test moves one at a time. */
+export type ReadingField = 'hr' | 'sbp' | 'dbp' | 'spo2' | 'rr' | 'rpe' | 'pain';
+
+/** A reading with one value changed, and the other pressure moved so that the pair stays possible. */
+export function readingWith(field: ReadingField, value: number): Reading {
+	if (field === 'sbp') {
+		return { ...REST, sbp: value, dbp: Math.min(72, value - 1) };
+	}
+	return { ...REST, [field]: value, ...(field === 'dbp' ? { sbp: Math.max(120, value + 10) } : {}) };
+}
+
 export const CONTEXT: Context = {
 	betaBlocked: false,
 	rhythm: 'sinus',
