@@ -4,6 +4,7 @@ import type { RaiseInput } from '$lib/domain/escalations/forms';
 import { movesFor } from '$lib/domain/escalations/moves';
 import { db } from '$lib/server/db';
 import { settleEscalation, withdrawEscalation } from '$lib/server/escalations/end';
+import { passEscalation } from '$lib/server/escalations/pass';
 import { getEscalation } from '$lib/server/escalations/queries';
 import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
@@ -79,6 +80,16 @@ describe('withdrawing a call that others have called into', () => {
 		expect(await offers(first)).toContain('withdraw');
 		await withdrawEscalation(as(first, 30), id, 'The wrong patient.');
 		expect((await escalationRow(id)).state).toBe('withdrawn');
+	});
+
+	it('leaves nobody waiting to confirm it', async () => {
+		const { nurse, physician } = hospital.people;
+		await takeEscalation(as(nurse, 10), id, null);
+		await passEscalation(as(nurse, 20), id, { to: physician.id, reason: 'Needs a physician.' });
+		expect(await escalationRow(id)).toMatchObject({ passTo: physician.id });
+		await withdrawEscalation(as(first, 30), id, 'The wrong patient.');
+		const ended = { state: 'withdrawn', passTo: null, passReason: null, nextStep: null, nextStepAt: null };
+		expect(await escalationRow(id)).toMatchObject(ended);
 	});
 
 	it('is not for who only called into it', async () => {

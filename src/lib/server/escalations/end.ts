@@ -11,7 +11,7 @@ import { escalations } from '../db/schema';
 import { write, type Written } from '../write';
 import { otherCallersOf } from './added';
 import { moved, type Moved } from './follow';
-import { accessHeld, NOBODY_SOUGHT } from './held';
+import { accessHeld, NOTHING_AWAITED } from './held';
 import { recordMove } from './moves';
 import { stopAlerts, type EscalationRow } from './tell';
 
@@ -34,9 +34,7 @@ export function settleEscalation(
 				note,
 				informed: informed ?? null,
 				recheckDueAt: recheckMinutes ? context.now + recheckMinutes * 60_000 : null,
-				passTo: null,
-				nextStep: null,
-				...NOBODY_SOUGHT
+				...NOTHING_AWAITED
 			})
 			.where(eq(escalations.id, id));
 		await recordMove(tx, context, id, 'settled', { recheckMinutes: recheckMinutes ?? null });
@@ -93,8 +91,7 @@ export function withdrawEscalation(
 				endedBy: context.actor.id,
 				endedAt: context.now,
 				note: reason,
-				nextStep: null,
-				...NOBODY_SOUGHT
+				...NOTHING_AWAITED
 			})
 			.where(eq(escalations.id, id));
 		await recordMove(tx, context, id, 'withdrawn');

@@ -39,3 +39,6 @@ export function requireOnTheWay(row: EscalationRow, person: Person, move: Escala
 
 /** Neither is the holder asked, nor does the chain go on. */
 export const NOBODY_SOUGHT = { askHolderAt: null, holderAskedAt: null, nextStepAt: null };
+
+/** What a call that is over still waits for: nobody who might confirm it, and no step of its chain. */
+export const NOTHING_AWAITED = { ...NOBODY_SOUGHT, passTo: null, passReason: null, nextStep: null };
