@@ -60,6 +60,7 @@ describe('a visit that was marked by mistake and is planned again', () => {
 		const other = await addVisit(own, { startsAt: STARTS_AT });
 		await expect(reopenVisit(staff(), id, 'The wrong row.')).rejects.toMatchObject({
 			code: 'visit-overlaps',
+			message: expect.stringContaining('The visit stays as it was.'),
 			extra: { other: { id: other } }
 		});
 		const [row] = await db().select().from(visits).where(eq(visits.id, id));

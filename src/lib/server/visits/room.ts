@@ -38,6 +38,7 @@ export async function requireRoom(
 		return;
 	}
 	const zone = env().hospital.zone;
+	const kept = movedId === null ? 'Nothing was booked.' : 'The visit stays as it was.';
 	const startsAt = toRfc3339(clash.wanted.startsAt);
 	if (clash.kind === 'overlaps') {
 		const other = {
@@ -46,11 +47,11 @@ export async function requireRoom(
 			minutes: clash.held.minutes
 		};
 		const when = whenOf({ startsAt: clash.held.startsAt, zone }, now);
-		const detail = `This patient has a visit of ${other.minutes} minutes already, ${when}. Nothing was booked.`;
+		const detail = `This patient has a visit of ${other.minutes} minutes already, ${when}. ${kept}`;
 		throw new Problem('visit-overlaps', detail, { startsAt, other });
 	}
 	const when = whenOf({ startsAt: clash.wanted.startsAt, zone }, now);
-	const detail = `${place.name} holds ${places} at a time, and ${clash.taken} are booked ${when}. Nothing was booked.`;
+	const detail = `${place.name} holds ${places} at a time, and ${clash.taken} are booked ${when}. ${kept}`;
 	throw new Problem('place-full', detail, { startsAt, places, taken: clash.taken });
 }
 
