@@ -1,7 +1,7 @@
-import AxeBuilder from '@axe-core/playwright';
-import { expect, test, type Page } from '@playwright/test';
+import { expect, test } from '@playwright/test';
 import { signInAs, type Client } from '../support/api';
 import { startProduct, type Product } from '../support/server';
+import { expectAccessible } from './accessible';
 import { expectConnected, PHONE, seat } from './people';
 
 let product: Product;
@@ -22,11 +22,6 @@ interface Line {
 async function patientIn(phase: string): Promise<string> {
 	const { items } = (await nurse.get('/api/episodes?limit=200')).body as unknown as { items: Line[] };
 	return items.find((line) => line.phase === phase && line.precautions.sternal)?.id ?? '';
-}
-
-async function expectAccessible(page: Page): Promise<void> {
-	const { violations } = await new AxeBuilder({ page }).analyze();
-	expect(violations.map(({ id, nodes }) => [id, nodes[0]?.html])).toEqual([]);
 }
 
 test('the precautions stand on the patient’s page, and the wound is noted there', async ({ browser }) => {

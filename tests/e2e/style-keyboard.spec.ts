@@ -1,24 +1,8 @@
-import AxeBuilder from '@axe-core/playwright';
 import { expect, test, type Locator, type Page } from '@playwright/test';
-import { startProduct, type Product } from '../support/server';
+import { expectAccessible } from './accessible';
+import { onStylePage } from './style-page';
 
-let product: Product;
-
-test.beforeAll(async () => {
-	test.setTimeout(180_000);
-	product = await startProduct({ env: { PUBLIC_STYLE_PAGE: '1', RATE_LIMIT_SCALE: '100' } });
-});
-test.afterAll(() => product?.stop());
-test.beforeEach(async ({ page }) => {
-	await page.goto(`${product.url}/style`);
-	// The days on offer are drawn once script is there to hear a press.
-	await expect(page.getByRole('button', { name: 'Mon 29 Dec' })).toBeVisible();
-});
-
-async function expectAccessible(page: Page): Promise<void> {
-	const { violations } = await new AxeBuilder({ page }).analyze();
-	expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
-}
+onStylePage();
 
 const holdsFocus = (part: Locator) => part.evaluate((node) => node.contains(document.activeElement));
 

@@ -1,21 +1,9 @@
-import AxeBuilder from '@axe-core/playwright';
-import { expect, test, type Page } from '@playwright/test';
-import { startProduct, type Product } from '../support/server';
+import { expect, test } from '@playwright/test';
+import { expectAccessible } from './accessible';
+import { onStylePage } from './style-page';
 import { DESK, PHONE } from './people';
 
-let product: Product;
-
-test.beforeAll(async () => {
-	test.setTimeout(180_000);
-	product = await startProduct({ env: { PUBLIC_STYLE_PAGE: '1', RATE_LIMIT_SCALE: '100' } });
-});
-test.afterAll(() => product?.stop());
-test.beforeEach(({ page }) => page.goto(`${product.url}/style`));
-
-async function expectAccessible(page: Page): Promise<void> {
-	const { violations } = await new AxeBuilder({ page }).analyze();
-	expect(violations.map(({ id, nodes }) => [id, nodes.map(({ target }) => target)])).toEqual([]);
-}
+onStylePage();
 
 for (const [size, viewport] of Object.entries({ desk: DESK, phone: PHONE })) {
 	for (const colorScheme of ['light', 'dark'] as const) {

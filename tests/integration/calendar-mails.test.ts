@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, expect, it } from 'vitest';
+import { expect, it } from 'vitest';
 import { calendarId } from '$lib/domain/visits/calendar';
 import { PARSERS } from '$lib/domain/visits/testing/read-calendar';
 import { env } from '$lib/server/env';
@@ -6,33 +6,16 @@ import { openChannels } from '$lib/server/outbox/channels';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { bookVisits, cancelVisit } from '$lib/server/visits/actions';
 import { rescheduleVisit } from '$lib/server/visits/reschedule';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
 import { itemsOf } from '../support/fakes';
-import { startGateway, type Gateway } from '../support/gateway';
-import { HOSPITAL_NOW, addPatient, contextOf, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW, addPatient, contextOf } from '../support/hospital';
+import { openGateway } from '../support/open-gateway';
 
 /** Calendar files as they come out of a mail that went over SMTP, read by two parsers that are not ours. */
 
 const MONDAY = Date.parse('2026-03-09T10:00:00Z');
 const HOUR = 3_600_000;
 
-let gateway: Gateway;
-let hospital: Hospital;
-let cleanUp: () => Promise<void>;
-
-beforeAll(async () => {
-	gateway = await startGateway('http://127.0.0.1:4302');
-	const environment = testEnvironment(gateway.env);
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		database.close();
-		environment.remove();
-		await gateway.stop();
-	};
-});
-afterAll(() => cleanUp());
+const { gateway, hospital } = await openGateway();
 
 interface Mail {
 	to: string;

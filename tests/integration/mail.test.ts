@@ -1,6 +1,6 @@
 import { createServer as createSocketServer, type AddressInfo } from 'node:net';
 import { SMTPServer } from 'smtp-server';
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
@@ -8,28 +8,11 @@ import type { Outgoing } from '$lib/server/outbox/channels/channel';
 import { openChannels } from '$lib/server/outbox/channels';
 import { mailChannel } from '$lib/server/outbox/channels/mail';
 import { OutboxWorker } from '$lib/server/outbox/worker';
-import { freshDatabase } from '../support/database';
-import { testEnvironment } from '../support/environment';
-import { startGateway, type Gateway } from '../support/gateway';
-import { HOSPITAL_NOW, addPerson, makeHospital, type Hospital } from '../support/hospital';
+import { HOSPITAL_NOW, addPerson } from '../support/hospital';
 import { addReminder, addVisit, attemptsOf, rowOf } from '../support/messages';
+import { openGateway } from '../support/open-gateway';
 
-let gateway: Gateway;
-let hospital: Hospital;
-let cleanUp: () => Promise<void>;
-
-beforeAll(async () => {
-	gateway = await startGateway('http://127.0.0.1:4301');
-	const environment = testEnvironment(gateway.env);
-	const database = await freshDatabase();
-	hospital = await makeHospital();
-	cleanUp = async () => {
-		database.close();
-		environment.remove();
-		await gateway.stop();
-	};
-});
-afterAll(() => cleanUp());
+const { gateway, hospital } = await openGateway();
 
 const channel = () => {
 	const { mail } = openChannels(env());
