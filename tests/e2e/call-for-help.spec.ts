@@ -134,6 +134,29 @@ test('wait: nobody takes it, the chain goes on by its times over a kill, and the
 	await watcher.context.close();
 });
 
+test('still: the time that grows in the strip over a page moves nothing on any phone', async ({
+	browser
+}) => {
+	await raise('S1');
+	const watcher = await seat(browser, product.url, 'therapist', PHONE);
+	const strip = watcher.page.getByRole('region', { name: 'Untaken escalations' }).getByRole('link');
+	const line = strip.filter({ hasText: 'bed S1' });
+	await expect(line).toContainText(/\d s, nobody has it yet/);
+	const heights = async () => {
+		const found = [];
+		for (const width of [320, 390, 430, 480, 540, 600]) {
+			await watcher.page.setViewportSize({ ...PHONE, width });
+			found.push((await line.boundingBox())?.height);
+		}
+		return found;
+	};
+	const before = await heights();
+	await product.advance(12 * MINUTE);
+	await expect(line).toContainText(/1\d min/, { timeout: 30_000 });
+	expect(await heights()).toEqual(before);
+	await watcher.context.close();
+});
+
 test('expire: a link left open says that it has expired, not that the network is gone', async ({
 	browser
 }) => {
