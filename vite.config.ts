@@ -43,6 +43,8 @@ export default defineConfig({
 					name: 'integration',
 					environment: 'node',
 					include: ['tests/integration/**/*.test.ts'],
+					isolate: false,
+					setupFiles: ['tests/support/fresh-modules.ts'],
 					testTimeout: 30_000,
 					hookTimeout: 60_000
 				}

@@ -4,7 +4,7 @@ import path from 'node:path';
 
 /**
  * Set the environment of this test file before anything reads it: a demonstration with a data folder of its own.
- * Test files have their own modules, so nothing leaks into another one.
+ * `fresh-modules.ts` gives each test file modules and an environment of its own, so nothing leaks into another one.
  */
 export function testEnvironment(more: Record<string, string> = {}): { dataDir: string; remove(): void } {
 	const dataDir = mkdtempSync(path.join(tmpdir(), 'ropewalk-data-'));
