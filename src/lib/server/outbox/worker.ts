@@ -94,11 +94,15 @@ export class OutboxWorker {
 	async settle(): Promise<number> {
 		let seen = 0;
 		for (;;) {
-			seen += await this.#fill();
-			if (this.#inFlight.size === 0) {
+			// A round that began while places were taken says nothing of what is left: they may be free by its end.
+			const allFree = this.#inFlight.size === 0;
+			const found = await this.#fill();
+			seen += found;
+			if (this.#inFlight.size > 0) {
+				await Promise.race(this.#endings());
+			} else if (allFree && found === 0) {
 				return seen;
 			}
-			await Promise.race(this.#endings());
 		}
 	}
 
