@@ -26,6 +26,8 @@ export default defineConfig({
 	},
 	test: {
 		expect: { requireAssertions: true },
+		// A core is left free otherwise, which on a machine of two is every other one.
+		maxWorkers: '100%',
 		projects: [
 			{
 				extends: true,
@@ -57,8 +59,7 @@ export default defineConfig({
 					environment: 'node',
 					include: ['tests/product/**/*.test.ts'],
 					testTimeout: 60_000,
-					hookTimeout: 180_000,
-					fileParallelism: false
+					hookTimeout: 180_000
 				}
 			}
 		]
