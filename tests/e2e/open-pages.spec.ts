@@ -143,8 +143,10 @@ test('names of patients stand in one face, whatever letters of Europe they need'
 	for (const weight of weights) {
 		const line = { nodeId: root.nodeId, selector: `#names-${weight}` };
 		const { nodeId } = await devtools.send('DOM.querySelector', line);
-		const { fonts } = await devtools.send('CSS.getPlatformFontsForNode', { nodeId });
-		expect(fonts.length).toBeGreaterThan(0);
+		const facesOf = async () => (await devtools.send('CSS.getPlatformFontsForNode', { nodeId })).fonts;
+		// Only what has been drawn has a face.
+		await expect.poll(async () => (await facesOf()).length).toBeGreaterThan(0);
+		const fonts = await facesOf();
 		expect(
 			fonts.filter(({ familyName, isCustomFont }) => !isCustomFont || !familyName.startsWith('Ropewalk Sans'))
 		).toEqual([]);

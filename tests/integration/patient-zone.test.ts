@@ -1,4 +1,4 @@
-import { and, asc, eq, ne } from 'drizzle-orm';
+import { eq, ne } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox, patientAmendments, patients, reminders } from '$lib/server/db/schema';
@@ -12,6 +12,7 @@ import { POST as postEpisode } from '../../src/routes/api/episodes/+server';
 import { callRoute } from '../support/call';
 import { ScriptedChannel, unknown } from '../support/channels';
 import { HOSPITAL_NOW, addPatient, contextOf } from '../support/hospital';
+import { remindersOf } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
 
 /** Whose daytime counts for texts: entered at the admission or later, and obeyed by what is planned already. */
@@ -40,14 +41,8 @@ async function booked() {
 	return { ...made, visitId: result.items[0]?.id ?? '' };
 }
 
-const waiting = (visitId: string) =>
-	db()
-		.select()
-		.from(outbox)
-		.where(and(eq(outbox.refId, visitId), eq(outbox.kind, 'reminder')))
-		.orderBy(asc(outbox.nextAt));
 const hours = async (visitId: string) =>
-	(await waiting(visitId)).map(({ nextAt }) => new Date(nextAt).toISOString());
+	(await remindersOf(visitId)).map(({ nextAt }) => new Date(nextAt).toISOString());
 
 describe('the zone of a patient', () => {
 	it.each([
@@ -116,14 +111,14 @@ describe('reminders that are planned already', () => {
 	it('tell the language that was corrected, and still do not ask who has said yes', async () => {
 		const { episodeId, visitId } = await booked();
 		await amendContact(contextOf(coordinator), episodeId, { language: 'es' });
-		expect((await waiting(visitId)).map(({ body }) => body.includes('Responda SI o NO'))).toEqual([
+		expect((await remindersOf(visitId)).map(({ body }) => body.includes('Responda SI o NO'))).toEqual([
 			true,
 			true
 		]);
 		await confirmVisit(contextOf(coordinator), visitId);
-		const spanish = (await waiting(visitId)).map(({ body }) => body);
+		const spanish = (await remindersOf(visitId)).map(({ body }) => body);
 		await amendContact(contextOf(coordinator), episodeId, { language: 'en' });
-		for (const [index, { body }] of (await waiting(visitId)).entries()) {
+		for (const [index, { body }] of (await remindersOf(visitId)).entries()) {
 			expect(body).not.toBe(spanish[index]);
 			expect(body).toContain('Reply NO if you cannot come');
 		}
@@ -134,17 +129,17 @@ describe('reminders that are planned already', () => {
 		const sms = new ScriptedChannel();
 		sms.script = [unknown()];
 		await db().update(outbox).set({ state: 'cancelled' }).where(ne(outbox.refId, visitId));
-		const [first] = await waiting(visitId);
+		const [first] = await remindersOf(visitId);
 		await new OutboxWorker({
 			channels: { sms, mail: null },
 			now: () => first?.nextAt ?? 0,
 			random: () => 0.5
 		}).settle();
-		const [tried] = await waiting(visitId);
+		const [tried] = await remindersOf(visitId);
 		expect([tried?.attempts, sms.sent.map(({ to }) => to)]).toEqual([1, [patient.phone]]);
 		const later = contextOf(coordinator, tried?.nextAt);
 		await amendContact(later, episodeId, { language: 'es', zone: 'Pacific/Auckland' });
-		const [kept] = await waiting(visitId);
+		const [kept] = await remindersOf(visitId);
 		expect([kept?.body, kept?.nextAt]).toEqual([tried?.body, tried?.nextAt]);
 	});
 });

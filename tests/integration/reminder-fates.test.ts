@@ -1,13 +1,11 @@
-import { and, asc, eq } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
-import { db } from '$lib/server/db';
-import { outbox } from '$lib/server/db/schema';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { sendPage, sharingOf } from '$lib/server/patient-page/share';
 import { attendVisit, bookVisits, cancelVisit, missVisit, reopenVisit } from '$lib/server/visits/actions';
 import { visitItemsOf } from '$lib/server/visits/queries';
 import { ScriptedChannel, permanent } from '../support/channels';
 import { HOSPITAL_NOW, addPatient, contextOf } from '../support/hospital';
+import { remindersOf } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
 
 /** What became of the messages about a visit, as whoever plans visits sees it. */
@@ -29,13 +27,6 @@ async function settle(now: number, sms = new ScriptedChannel()) {
 	await new OutboxWorker({ channels: { sms, mail: null }, now: () => now }).settle();
 	return sms.sent;
 }
-
-const remindersOf = (id: string) =>
-	db()
-		.select()
-		.from(outbox)
-		.where(and(eq(outbox.refId, id), eq(outbox.kind, 'reminder')))
-		.orderBy(asc(outbox.nextAt));
 
 const fates = async (episodeId: string) =>
 	(await visitItemsOf(hospital.people.coordinator, episodeId)).items[0]?.reminders.map(({ state }) => state);

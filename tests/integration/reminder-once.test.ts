@@ -1,7 +1,4 @@
-import { and, asc, eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
-import { db } from '$lib/server/db';
-import { outbox } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
 import { linkToken } from '$lib/server/links';
 import { openChannels } from '$lib/server/outbox/channels';
@@ -11,6 +8,7 @@ import { sendPage } from '$lib/server/patient-page/share';
 import { bookVisits, confirmVisit } from '$lib/server/visits/actions';
 import { openGateway } from '../support/open-gateway';
 import { addPatient, contextOf } from '../support/hospital';
+import { remindersOf } from '../support/messages';
 
 /**
  * A reminder whose first attempt ended unknown lies on the telephone already when its visit is confirmed: whichever
@@ -35,13 +33,6 @@ async function booked() {
 	return { phone: patient.phone, episodeId, id: result.items[0]?.id ?? '' };
 }
 type Booked = Awaited<ReturnType<typeof booked>>;
-
-const remindersOf = (id: string) =>
-	db()
-		.select()
-		.from(outbox)
-		.where(and(eq(outbox.refId, id), eq(outbox.kind, 'reminder')))
-		.orderBy(asc(outbox.nextAt));
 
 const onPhone = async (phone: string) =>
 	(await gateway.messagesOf(phone)).filter(({ body }) => body.includes('your visit is'));

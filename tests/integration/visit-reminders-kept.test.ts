@@ -1,10 +1,11 @@
-import { and, asc, eq } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
 import { outbox } from '$lib/server/db/schema';
 import { attendVisit, bookVisits, cancelVisit, missVisit, reopenVisit } from '$lib/server/visits/actions';
 import { visitItemsOf } from '$lib/server/visits/queries';
 import { addPatient, contextOf, HOSPITAL_NOW } from '../support/hospital';
+import { remindersOf } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
 
 /** What becomes of the reminders of a visit that is marked by mistake, or cancelled. */
@@ -24,12 +25,7 @@ beforeEach(async () => {
 	id = (await bookVisits(coordinator(), episodeId, visit)).result.items[0]?.id ?? '';
 });
 
-const reminders = () =>
-	db()
-		.select()
-		.from(outbox)
-		.where(and(eq(outbox.refId, id), eq(outbox.kind, 'reminder')))
-		.orderBy(asc(outbox.nextAt));
+const reminders = () => remindersOf(id);
 
 describe('marked by mistake and taken back', () => {
 	it.each([

@@ -1,4 +1,4 @@
-import { asc, eq } from 'drizzle-orm';
+import { and, asc, eq } from 'drizzle-orm';
 import { db, transact } from '$lib/server/db';
 import {
 	escalationLinks,
@@ -30,6 +30,15 @@ export async function attemptsOf(id: string) {
 		.from(outboxAttempts)
 		.where(eq(outboxAttempts.messageId, id))
 		.orderBy(asc(outboxAttempts.number));
+}
+
+/** The reminders of a visit, the first that is due first. */
+export function remindersOf(visitId: string) {
+	return db()
+		.select()
+		.from(outbox)
+		.where(and(eq(outbox.refId, visitId), eq(outbox.kind, 'reminder')))
+		.orderBy(asc(outbox.nextAt));
 }
 
 /** An untaken escalation of the hospital's patient. Ends others first, because a patient has one untaken at most. */
