@@ -32,7 +32,7 @@ export function clearanceWords({ clearance, heldBy }: Pick<UnitActivity, 'cleara
 /** Where the figures of the dose come from. A figure without a published source is called common practice. */
 export function doseSourceWords({ source, local }: Pick<UnitActivity, 'source' | 'local'>): string {
 	if (local !== null) {
-		return m.home_rules_dose_unit({ name: local.agreedBy, day: local.agreedOn });
+		return m.home_rules_dose_unit({ version: local.version, name: local.agreedBy, day: local.agreedOn });
 	}
 	return source === 'common-practice'
 		? m.home_rules_common_practice()

@@ -31,7 +31,7 @@ function stops(
 }
 
 /**
- * Check values computed from two published lines: `guideline` from the ACSM and AACVPR inpatient criteria as
+ * Check values computed from two inpatient lines: `guideline` from the ACSM and AACVPR inpatient criteria as
  * given in study notes, `strict` from O'Sullivan, Schmitz and Fulk, Physical Rehabilitation (from memory). Where
  * they differ from the product's own table, the table wins and the row says so.
  */

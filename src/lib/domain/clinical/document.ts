@@ -12,6 +12,7 @@ import { rulebook, type RulebookLimit, type RulebookRow } from '../bedside/ruleb
 import { sternalBans } from '../bedside/sternum';
 import { CALCULATORS } from '../calculators/rulebook';
 import { CAUTIONS } from './cautions';
+import { ADVICE_FIGURES } from './figures';
 import { CHECKS, HOW_TO_READ, OWN_FIGURES, PRECAUTIONS_LEAD } from './lists';
 
 /** How well a source is known, in the words of the document. */
@@ -44,6 +45,7 @@ export function clinicalDocument(): string {
 		section('The calculators', calculators()),
 		section('The sources', sources()),
 		section('Check values', checks()),
+		section('Figures beside the rules', adviceFigures()),
 		section('Figures that are the product’s own', ownFigures())
 	].join('\n\n')}\n`;
 }
@@ -186,6 +188,19 @@ function checks(): string {
 	return [
 		'What the calculators and rules are tested against. *Computed* means: worked out from the published formula, independently of the code.',
 		table(['what', 'check values', 'tests'], rows)
+	].join('\n\n');
+}
+
+function adviceFigures(): string {
+	const rows = ADVICE_FIGURES.map(({ figure, source, status, path }) => [
+		figure,
+		source,
+		STANDING[status],
+		code(path)
+	]);
+	return [
+		'What advice and warnings rest on that are not response rules.',
+		table(['figure', 'source', 'standing', 'where'], rows)
 	].join('\n\n');
 }
 

@@ -19,12 +19,12 @@ export const HOW_TO_READ: readonly string[] = [
 	'*Over* and *under* are strict: exactly the limit is still allowed. *At* includes the limit.',
 	'There are three sets. *Strict* judges inpatients where nothing else is said; *guideline* follows the inpatient line of the American colleges, for units that choose it; *outpatient* judges the outpatient phase. *Off* means that the set has no such limit.',
 	'The bare name of a limit stops. With `.before` it is for the reading before the session; with `.caution` it cautions.',
-	`In the set *strict* a change also cautions from ${(CAUTION_SHARE.strict ?? 1) * 100} % of the limit on: a fall of 8 to 10 mmHg, a rise of 24 to 30 mmHg, of 16 to 20 beats, on a rate-slowing drug of 9.6 to 12. The other sets wait for the limit.`,
+	`In the set *strict* a change also cautions from ${(CAUTION_SHARE.strict ?? 1) * 100} % of the limit on, also where a unit or a physician has set another one. The other sets wait for the limit.`,
 	'A change is measured from the reading before the session, or from a later one marked as settled after a change of posture. Only readings in the same posture are compared, and pressures only from the same source, cuff or arterial line.',
 	'A missing reading is never taken as normal. What could not be judged is listed as not judged.',
 	'Whether a rate-slowing drug is taken may be unknown. Then the narrower limit holds, and a note says so.',
 	'In the set *outpatient* the top of a prescribed range takes the place of the heart-rate ceiling. Exertion over the prescribed range cautions; more than two points over it stops. The range on record of a patient counts, with who prescribed it, when, and how it was found; a lower limit set for the patient stays.',
-	`These symptoms stop: ${stopping}. Breathlessness stops from grade 3. Every other symptom cautions.`,
+	`These symptoms stop: ${stopping}. Breathlessness stops from the grade that is its limit. Every other symptom cautions.`,
 	'A unit may change any limit, entered by an administrator with the name of its clinical lead and the day it was agreed. A physician or surgeon may narrow or widen one for a patient, with a reason and a last day. Changes are numbered and never overwritten, and every stored finding keeps the set, the limit and the version that made it.'
 ];
 
@@ -98,7 +98,8 @@ export const CHECKS: readonly CheckEntry[] = [
 	},
 	{
 		what: 'Response rules',
-		values: 'each limit just under, at and over it; rows from the two published inpatient lines',
+		values:
+			'each limit just under, at and over it; rows from the two inpatient lines, one from study notes (secondary), one from memory',
 		tests: [
 			`${BEDSIDE}/assess.test.ts`,
 			`${BEDSIDE}/rules/edges.test.ts`,
@@ -175,7 +176,10 @@ export const OWN_FIGURES: readonly OwnFigure[] = [
 		path: `${BEDSIDE}/activities/activities.ts`
 	},
 	{ figure: 'The cautious dose, and when a senior signs', path: `${BEDSIDE}/doses.ts` },
-	{ figure: 'What speaks for the next level, and what holds a patient back', path: `${BEDSIDE}/progress.ts` },
+	{
+		figure: 'How what speaks for the next level is weighed against what holds a patient back',
+		path: `${BEDSIDE}/progress.ts`
+	},
 	{ figure: 'How far a unit or a physician may move a limit', path: `${BEDSIDE}/limits/ranges.ts` },
 	{
 		figure: 'The 6 to 8 METs that daily life asks for, the goal after discharge',

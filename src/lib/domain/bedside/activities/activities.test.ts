@@ -65,7 +65,7 @@ describe('the activities catalogue', () => {
 	it('knows what moves the arms, what walks and what is done to the patient', () => {
 		const codes = (test: (activity: (typeof ACTIVITIES)[number]) => boolean) =>
 			ACTIVITIES.filter(test).map(({ code }) => code);
-		expect(codes(({ arms }) => arms)).toEqual(['passive-arms', 'active-arms', 'arm-exercise']);
+		expect(codes(({ arms }) => arms)).toEqual(['passive-arms', 'active-arms', 'shaving', 'arm-exercise']);
 		expect(codes(({ mode }) => mode === 'passive')).toEqual(['passive-legs', 'passive-arms']);
 		expect(codes(({ walking }) => walking)).toEqual([
 			'bedside-walk',

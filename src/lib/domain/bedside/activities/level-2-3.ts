@@ -41,12 +41,13 @@ export const chairActivities = atLevel(
 		{
 			code: 'shaving',
 			name: 'Shaving with an electric razor',
+			arms: true,
 			dose: { timesADay: [1, 1], words: 'once a day, sitting, elbow on the table' },
 			howTo: ['Elbow on the table, mirror low.', 'Rest between the sides.'],
 			watch: ['The height of the arm.'],
 			never: [
 				'Never with a blade while blood thinners are given.',
-				'Never with the elbow above the shoulder.'
+				'Never above 45 degrees before the arms are cleared.'
 			]
 		},
 		{

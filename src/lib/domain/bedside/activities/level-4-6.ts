@@ -17,7 +17,7 @@ export const corridorActivities = atLevel(
 				timesADay: [3, 4],
 				words: '5 to 7 minutes, 3 to 4 times a day, on a corridor of 50 m'
 			},
-			howTo: ['Count the lengths of the corridor.', 'A pace at which one can talk.', 'Chairs along the way.'],
+			howTo: ['Count the laps, there and back.', 'A pace at which one can talk.', 'Chairs along the way.'],
 			watch: ['Pressure before and right after.', 'Pulse at the wrist at each turn.'],
 			never: ['Never go on through chest pain or dizziness.']
 		},
@@ -44,7 +44,7 @@ export const longerActivities = atLevel(
 			walking: true,
 			heldBy: 'corridor',
 			dose: { minutes: [8, 10], timesADay: [3, 4], words: '8 to 10 minutes, 3 to 4 times a day' },
-			howTo: ['The same pace, longer; rest before it is needed.', 'Count the lengths.'],
+			howTo: ['The same pace, longer; rest before it is needed.', 'Count the laps.'],
 			watch: ['Pressure before and right after.', 'The effort the patient feels.'],
 			never: ['Never faster before longer.']
 		},
@@ -54,7 +54,6 @@ export const longerActivities = atLevel(
 			arms: true,
 			clearance: 'arm-stage',
 			needs: ['Level 5'],
-			source: 'arm-height',
 			dose: {
 				repetitions: [5, 10],
 				timesADay: [1, 2],

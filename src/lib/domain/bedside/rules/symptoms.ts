@@ -18,9 +18,9 @@ interface SymptomEntry {
 
 const SYMPTOM_TABLE: Readonly<Record<SymptomCode, SymptomEntry>> = {
 	angina: { word: 'chest pain from the heart', grade: 'stop', source: 'inpatient-stop' },
-	dizziness: { word: 'dizziness', grade: 'stop', source: 'inpatient-stop' },
-	'light-headedness': { word: 'light-headedness', grade: 'stop', source: 'inpatient-stop' },
-	fainting: { word: 'fainting', grade: 'stop', source: 'inpatient-stop' },
+	dizziness: { word: 'dizziness', grade: 'stop', source: 'common-practice' },
+	'light-headedness': { word: 'light-headedness', grade: 'stop', source: 'common-practice' },
+	fainting: { word: 'fainting', grade: 'stop', source: 'common-practice' },
 	confusion: { word: 'confusion', grade: 'stop', source: 'common-practice' },
 	'sternal-click': { word: 'a click of the breastbone', grade: 'stop', source: 'sternal-symptoms' },
 	pallor: { word: 'pallor', grade: 'stop', source: 'common-practice' },
