@@ -35,6 +35,8 @@ export default defineConfig({
 					name: 'unit',
 					environment: 'node',
 					include: ['src/**/*.test.ts', 'tests/unit/**/*.test.ts'],
+					// Some read the whole tree, or cut the faces anew; a busy machine is no reason to fail.
+					testTimeout: 30_000,
 					// They keep nothing: to load the rules anew for each file took most of the time.
 					isolate: false
 				}
