@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { earlyWarning, OBSERVATIONS, type Observation } from './early-warning';
 import type { EarlyWarningInput } from './forms';
 
+// Royal College of Physicians 2017, chart 1 as reproduced, published; totals are computed from the chart.
 type Row = [
 	rr: number,
 	spo2: number,

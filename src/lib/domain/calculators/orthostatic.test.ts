@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest';
 import { orthostatic, type OrthostaticCriterion } from './orthostatic';
 
-/** Computed from the consensus of 2011 as summarised (doi 10.1007/978-3-030-62493-4_5); sitting: Shaw 2017, PMC5542884. */
+/** Computed from the consensus of 2011 as summarised (doi 10.1007/978-3-030-62493-4_5); sitting: Shaw 2017, PMC5542884; both published. */
 it.each<[OrthostaticCriterion, number, number, number, number, number, number, boolean]>([
 	['lying-to-standing', 138, 80, 116, 72, 22, 8, true],
 	['lying-to-standing', 128, 78, 112, 69, 16, 9, false],

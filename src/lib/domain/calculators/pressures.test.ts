@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest';
 import { pressures, productBand } from './pressures';
 
-/** Computed; 120/80 with a mean of 93.3 also stands in WikiLectures, Mean arterial pressure. */
+/** Computed from the published formulas; 120/80 with a mean of 93.3 also stands in WikiLectures, Mean arterial pressure. */
 it.each([
 	[70, 120, 80, 93.33, 40, 8400, 0.583],
 	[72, 118, 62, 80.67, 56, 8496, 0.61],
@@ -16,7 +16,7 @@ it.each([
 	expect(found).toMatchObject({ pulsePressure, ratePressureProduct });
 });
 
-// Bands: Rate pressure product, Wikipedia.
+// Bands: Rate pressure product, Wikipedia, secondary.
 it.each([
 	[8400, null],
 	[9999, null],

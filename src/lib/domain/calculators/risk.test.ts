@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest';
 import { RISK_MARKS, riskClass, type RiskMark } from './risk';
 
-/** Computed from PMC8006124, table 3; 5 to 7 METs are moderate by exclusion. */
+/** Computed from PMC8006124, table 3, published; 5 to 7 METs are moderate by exclusion. */
 it.each<[number | null, number | null, RiskMark[], string]>([
 	[55, 8, [], 'low'],
 	[45, 6, [], 'moderate'],

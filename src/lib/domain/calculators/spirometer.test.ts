@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest';
 import { BALL_FLOWS_ML_PER_S, breathesTooOften, breathEstimateMl, capacityTooSmall } from './spirometer';
 
-/** Flows: published instructions (600 and 1200 mL/s) and a leaflet (900); volume is flow times seconds. */
+/** Flows: published instructions (600 and 1200 mL/s) and a leaflet (900, secondary); volume is flow times seconds. */
 it.each([
 	[1, 3, 1800],
 	[2, 3, 2700],
@@ -13,6 +13,7 @@ it.each([
 	expect(breathEstimateMl(balls, seconds)).toBe(expected);
 });
 
+// From memory, not yet verified.
 it.each([
 	[20, false],
 	[21, true]
@@ -20,6 +21,7 @@ it.each([
 	expect(breathesTooOften(breaths)).toBe(expected);
 });
 
+// 10 mL per kg: from memory, not yet verified.
 it.each([
 	[780, true],
 	[799.9, true],

@@ -105,7 +105,8 @@ export const CHECKS: readonly CheckEntry[] = [
 			`${BEDSIDE}/rules/edges.test.ts`,
 			`${BEDSIDE}/rules/absolute.test.ts`,
 			`${BEDSIDE}/rules/change.test.ts`,
-			`${BEDSIDE}/rules/each-set.test.ts`
+			`${BEDSIDE}/rules/each-set.test.ts`,
+			`${BEDSIDE}/rules/not-judged.test.ts`
 		]
 	},
 	{

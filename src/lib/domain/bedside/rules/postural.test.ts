@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Reading } from '../forms';
 import { grades, judge, only } from '../testing/sample';
 
+// 20 and 10 mmHg: consensus on orthostatic hypotension 2011, as summarised, published. 30 mmHg stops: common practice.
 const lying = (sbp: number, dbp: number, more: Reading = {}): Reading => ({
 	posture: 'lying',
 	sbp,

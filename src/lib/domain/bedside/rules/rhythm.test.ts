@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { RHYTHMS } from '../../core/codes';
 import { grades, judge, only, REST } from '../testing/sample';
 
+// A new rhythm stops: inpatient line of the ACSM and AACVPR, from study notes, secondary.
 describe('new-rhythm', () => {
 	it.each(RHYTHMS)('%s throughout is nothing new', (rhythm) => {
 		expect(grades(judge({ context: { rhythm } }), 'new-rhythm')).toEqual([]);
