@@ -26,7 +26,8 @@ async function patientIn(phase: string): Promise<string> {
 
 test('the precautions stand on the patient’s page, and the wound is noted there', async ({ browser }) => {
 	const { page, complaints } = await seat(browser, product.url, 'nurse', PHONE);
-	await page.goto(`/patients/${await patientIn('inpatient')}`);
+	const episodeId = await patientIn('inpatient');
+	await page.goto(`/patients/${episodeId}`);
 	// A press before script takes over is answered by the next page, which the browser complains of: slow-start's matter.
 	await expectConnected(page);
 	await expect(page.getByText('Pushing up through the arms.')).toBeVisible();
@@ -40,6 +41,9 @@ test('the precautions stand on the patient’s page, and the wound is noted ther
 	await expect(page.getByText('No arm work until the surgeon has seen it.')).toBeVisible();
 	await expectAccessible(page);
 	expect(complaints).toEqual([]);
+	// Whoever treats reads it where the arms would be chosen.
+	const { text } = await (await signInAs(product.url, 'therapist')).get(`/bedside/${episodeId}`);
+	expect(text).toContain('The breastbone moves: no arm work until the surgeon has seen it.');
 });
 
 test('the surgeon comes from the loose end to the decision on the end of precautions', async ({
