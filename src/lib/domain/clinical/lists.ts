@@ -192,6 +192,10 @@ export const OWN_FIGURES: readonly OwnFigure[] = [
 		path: `${CALC}/bounds.ts`
 	},
 	{
+		figure: 'What can be typed of a reading at the bedside: to be confirmed by each hospital',
+		path: `${BEDSIDE}/bounds.ts`
+	},
+	{
 		figure: 'When a patient is reminded of a visit, and between which hours',
 		path: 'src/lib/domain/visits/reminders.ts'
 	}
