@@ -1,4 +1,4 @@
-import { test } from '@playwright/test';
+import { expect, test } from '@playwright/test';
 import { invite } from './journey/accounts';
 import { callAndTake, notice, settle } from './journey/call';
 import { closeReferral } from './journey/close';
@@ -60,3 +60,4 @@ test('decline: NO by text cancels', () => declineByText(day));
 test('follow up: a no by text is a loose end until it is seen to', () => followUp(day));
 test('close: the referral is closed, and the referrer gets a link to how it went', () => closeReferral(day));
 test('end: the stay ends, and the link to the patient’s page with it', () => endStay(day));
+test('nobody’s browser complained', () => expect(day.complaints).toEqual([]));

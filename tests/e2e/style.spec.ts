@@ -3,7 +3,7 @@ import { expectAccessible, expectContrast } from './accessible';
 import { onStylePage } from './style-page';
 import { DESK, PHONE } from './people';
 
-onStylePage();
+const stylePage = onStylePage();
 
 for (const [size, viewport] of Object.entries({ desk: DESK, phone: PHONE })) {
 	test(`every part on the page of parts is accessible: ${size}, by night as well`, async ({ page }) => {
@@ -14,6 +14,21 @@ for (const [size, viewport] of Object.entries({ desk: DESK, phone: PHONE })) {
 		await expectContrast(page);
 	});
 }
+
+test('a form is accessible before and after it has said what is wrong, by night as well', async ({
+	page
+}) => {
+	await page.goto(`${stylePage.url}/form`);
+	await page.waitForLoadState('networkidle');
+	await page.emulateMedia({ colorScheme: 'light' });
+	await expectAccessible(page);
+	await page.getByLabel('Question').fill('ab');
+	await page.getByRole('button', { name: 'Ask' }).click();
+	await expect(page.getByLabel('Question')).toHaveAttribute('aria-invalid', 'true');
+	await expectAccessible(page);
+	await page.emulateMedia({ colorScheme: 'dark' });
+	await expectContrast(page);
+});
 
 test('a plot is read point by point with the arrow keys, and as a table', async ({ page }) => {
 	const points = page.getByRole('listbox', { name: /Blood pressure/ });
@@ -121,18 +136,21 @@ test('the number pad writes what was pressed and takes no fourth digit', async (
 });
 
 test('nothing moves for who asks for stillness', async ({ page }) => {
+	const moving = () =>
+		page.evaluate(
+			() =>
+				[...document.querySelectorAll('*')]
+					.map((each) => getComputedStyle(each))
+					.filter(({ transitionDuration, animationDuration }) =>
+						[...transitionDuration.split(','), ...animationDuration.split(',')].some(
+							(t) => parseFloat(t) > 0.001
+						)
+					).length
+		);
+	await page.emulateMedia({ reducedMotion: 'no-preference' });
+	expect(await moving()).toBeGreaterThan(0);
 	await page.emulateMedia({ reducedMotion: 'reduce' });
-	const moving = await page.evaluate(
-		() =>
-			[...document.querySelectorAll('*')]
-				.map((each) => getComputedStyle(each))
-				.filter(({ transitionDuration, animationDuration }) =>
-					[...transitionDuration.split(','), ...animationDuration.split(',')].some(
-						(t) => parseFloat(t) > 0.001
-					)
-				).length
-	);
-	expect(moving).toBe(0);
+	expect(await moving()).toBe(0);
 });
 
 test('forced colours are the only ones that marks are painted in, by night as well', async ({ page }) => {
@@ -153,5 +171,6 @@ test('forced colours are the only ones that marks are painted in, by night as we
 		return { forced, painted: [...new Set([...document.querySelectorAll(pure)].flatMap(paints))] };
 	});
 	expect(new Set(forced).size).toBe(3);
+	expect(painted.length).toBeGreaterThan(0);
 	expect(painted.filter((colour) => !forced.includes(colour))).toEqual([]);
 });

@@ -52,6 +52,13 @@ export class Day {
 		await this.product.stop();
 	}
 
+	/** What the browsers complained of so far, with whose it was; that sign-ins end as days pass is meant. */
+	get complaints(): string[] {
+		return Object.entries(this.seats).flatMap(([who, { complaints }]) =>
+			complaints.filter((each) => !each.includes('status of 401')).map((each) => `${who}: ${each}`)
+		);
+	}
+
 	page(who: Who): Page {
 		return this.seats[who].page;
 	}

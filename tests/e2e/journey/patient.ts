@@ -1,7 +1,7 @@
-import AxeBuilder from '@axe-core/playwright';
-import { expect, type Page } from '@playwright/test';
+import { expect } from '@playwright/test';
 import { addDays } from '../../../src/lib/domain/core/time';
 import { itemsOf } from '../../support/fakes';
+import { expectAccessible } from '../accessible';
 import { PHONE } from '../people';
 import { goTo, press, row, rowOf, shown, type Day } from './day';
 import { picture } from './pictures';
@@ -79,10 +79,6 @@ async function ended(day: Day, link: string): Promise<void> {
 	await expect(page.getByRole('link', { name: '+353 1 555 0100' })).toBeVisible();
 	await expectAccessible(page);
 	await context.close();
-}
-
-async function expectAccessible(page: Page): Promise<void> {
-	expect((await new AxeBuilder({ page }).analyze()).violations).toEqual([]);
 }
 
 /** A no is a loose end of whoever plans visits, until somebody has followed it up. */
