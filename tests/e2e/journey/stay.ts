@@ -58,7 +58,7 @@ export async function endStay(day: Day): Promise<void> {
 	const toldBefore = await told();
 	await page.goto(`/patients/${day.episodeId}/move`);
 	await page.getByRole('radio', { name: 'To another hospital' }).check();
-	await page.getByRole('button', { name: 'Close the stay' }).click();
+	await page.getByRole('button', { name: 'Close the episode' }).click();
 	await expect.poll(told).toBe(toldBefore + 1);
 	expect((await mails()).map(({ subject }) => subject).join(' ')).not.toMatch(SECRET);
 	expect((await fetch(link)).status).toBe(410);

@@ -17,7 +17,7 @@ export const PROBLEMS = {
 	'already-taken': { status: 409, title: 'Somebody has it already' },
 	'evidence-changed': { status: 409, title: 'Something new is on record' },
 	'clearance-needed': { status: 409, title: 'A clearance is needed first' },
-	'already-admitted': { status: 409, title: 'The patient has an open stay' },
+	'already-admitted': { status: 409, title: 'The patient has an open episode' },
 	'visit-overlaps': { status: 409, title: 'The patient has another visit at that time' },
 	'place-full': { status: 409, title: 'All places of that time are taken' },
 	'bed-in-use': { status: 409, title: 'The bed is in use' },

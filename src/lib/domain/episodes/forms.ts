@@ -74,5 +74,5 @@ export const closeForm = z.object({
 	reason: z
 		.string()
 		.default('')
-		.refine((value) => isOneOf(CLOSE_REASONS, value), 'The reason is empty: choose why the stay is over.')
+		.refine((value) => isOneOf(CLOSE_REASONS, value), 'The reason is empty: choose why the episode is over.')
 });

@@ -27,7 +27,7 @@ export function amendSession(
 			.from(bedsideSessions)
 			.where(and(eq(bedsideSessions.id, sessionId), eq(bedsideSessions.episodeId, episodeId)));
 		if (!session) {
-			throw invalidField('/sessionId', `sessionId ${sessionId} is no session of this stay.`);
+			throw invalidField('/sessionId', `sessionId ${sessionId} is no session of this episode.`);
 		}
 		const amendments = await tx
 			.select({ kind: sessionAmendments.kind })

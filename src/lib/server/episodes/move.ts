@@ -71,6 +71,6 @@ export function movePatient(
 /** @throws Problem `wrong-state` with when it was closed */
 export function refuseClosed(episode: EpisodeRow): void {
 	if (episode.closedAt !== null) {
-		throw new Problem('wrong-state', 'The stay is closed: its patient lies nowhere.', { state: 'closed' });
+		throw new Problem('wrong-state', 'The episode is closed: its patient lies nowhere.', { state: 'closed' });
 	}
 }

@@ -72,7 +72,7 @@ async function operationOf(tx: Tx, episodeId: string, id: string): Promise<Opera
 		.from(operations)
 		.where(and(eq(operations.id, id), eq(operations.episodeId, episodeId)));
 	if (!row) {
-		throw invalidField('/corrects', `corrects ${id} is no operation of this stay.`);
+		throw invalidField('/corrects', `corrects ${id} is no operation of this episode.`);
 	}
 	return row;
 }

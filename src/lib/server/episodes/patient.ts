@@ -34,7 +34,7 @@ export interface Identified {
  * Find the patient with that hospital number, without changing anything.
  * @param confirmName whether a person says that the name which differs is the name now
  * @throws Problem `invalid` naming each field that contradicts the record, with `confirm: 'confirmName'` when it is
- * the name alone, or a telephone number that is none; `already-admitted` when the patient has an open stay
+ * the name alone, or a telephone number that is none; `already-admitted` when the patient has an open episode
  */
 export async function identifyPatient(
 	tx: Tx,
@@ -122,7 +122,7 @@ async function refuseOpenStay(tx: Tx, { actor }: PersonContext, { id, name }: Pa
 	}
 	const { episodeId, unitId, unit, bed } = open;
 	const where = bed === null ? unit : `${unit}, bed ${bed}`;
-	throw new Problem('already-admitted', `${name} is here already: ${where}. Move or close that stay.`, {
+	throw new Problem('already-admitted', `${name} is here already: ${where}. Move or close that episode.`, {
 		unit,
 		bed,
 		// The way into the record is for those whose unit it is.

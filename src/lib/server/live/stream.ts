@@ -155,7 +155,7 @@ class Feed {
 				}
 			}
 		} catch (error) {
-			log().error({ err: error }, 'live feed failed');
+			log().error({ err: error }, 'live stream failed');
 			this.sink.end();
 		} finally {
 			this.#busy = false;

@@ -39,7 +39,7 @@ export function sendPage(
 	return write(context, 'visit.plan', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'visit.plan');
 		if (!takesVisits(episode)) {
-			throw new Problem('wrong-state', 'The stay is closed and its visits are over: no link can be sent.', {
+			throw new Problem('wrong-state', 'The episode is closed and its visits are over: no link can be sent.', {
 				state: 'closed'
 			});
 		}

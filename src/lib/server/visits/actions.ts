@@ -40,7 +40,7 @@ export function bookVisits(
 		if (!takesVisits(episode)) {
 			throw new Problem(
 				'wrong-state',
-				'The stay is closed and its visits are over: no visit can be booked in it.',
+				'The episode is closed and its visits are over: no visit can be booked in it.',
 				{
 					state: 'closed'
 				}
@@ -158,7 +158,7 @@ async function requireToBeExpected(tx: Tx, visit: VisitRow, episode: EpisodeRow,
 		return;
 	}
 	if (!takesVisits(episode)) {
-		const detail = 'The stay is closed and its visits are over: no visit in it can be planned again.';
+		const detail = 'The episode is closed and its visits are over: no visit in it can be planned again.';
 		throw new Problem('wrong-state', detail, { state: 'closed' });
 	}
 	if (visit.startsAt > now) {

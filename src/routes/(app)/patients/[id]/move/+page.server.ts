@@ -47,7 +47,7 @@ export const actions: Actions = {
 		schema: closeForm,
 		async run(context, { reason }, event) {
 			if (!isOneOf(CLOSE_REASONS, reason)) {
-				throw invalidField('/reason', 'The reason is empty: choose why the stay is over.');
+				throw invalidField('/reason', 'The reason is empty: choose why the episode is over.');
 			}
 			await closeEpisode(context, idParam(event), reason);
 			redirect(303, routes.ward());
