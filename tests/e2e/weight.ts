@@ -34,8 +34,8 @@ function weightOf(address: string): Promise<number> {
 }
 
 /** Note from the first paint on how far a page moves; `shiftSoFar` reads it. */
-export function watchShift(page: Page): Promise<void> {
-	return page.addInitScript(() => {
+export async function watchShift(page: Page): Promise<void> {
+	await page.addInitScript(() => {
 		const shifts: number[] = [];
 		Object.assign(window, { shifts });
 		new PerformanceObserver((list) =>
