@@ -1,5 +1,5 @@
 import { expect, test } from '@playwright/test';
-import { signInAs, type Client } from '../support/api';
+import { admit, signInAs, type Client } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 import { expectAccessible } from './accessible';
 import { expectConnected, PHONE, seat } from './people';
@@ -92,6 +92,44 @@ test('a calculator answers while one types, and the stairs are counted step by s
 	await expect(page.getByRole('button', { name: 'Arms moved for the patient' })).toBeVisible();
 	await expect(page.getByRole('button', { name: 'Ankle pumps' })).toHaveCount(0);
 	expect(complaints).toEqual([]);
+});
+
+test('what was done without a clearance is recorded from the page, with why and on whose word', async ({
+	browser
+}) => {
+	const episodeId = await admit(await signInAs(product.url, 'coordinator'), { level: 6 });
+	const { page, complaints } = await seat(browser, product.url, 'therapist', PHONE);
+	await page.goto(`/bedside/${episodeId}`);
+	await page.getByRole('radio', { name: 'awake, follows commands' }).check();
+	await page
+		.getByRole('group', { name: /^Rate-slowing drug/ })
+		.getByRole('radio', { name: 'no', exact: true })
+		.check();
+	await page.getByRole('radio', { name: 'sinus' }).check();
+	const reading = (name: string) => page.getByRole('textbox', { name: new RegExp(`^${name}`) });
+	for (const tab of [/Before/, /After/]) {
+		await page.getByRole('tab', { name: tab }).click();
+		await reading('Systolic').fill('124');
+		await reading('Diastolic').fill('70');
+		await reading('Pulse').fill('78');
+	}
+	await page.getByRole('button', { name: /One flight of stairs/ }).click();
+	await expect(page.getByText('Not cleared: Stairs').first()).toBeVisible();
+	await page.getByRole('button', { name: 'Record the session' }).click();
+	await expect(page.getByText(/^Not recorded yet: a clearance is missing/)).toBeVisible();
+	await page.getByLabel('Why it was done').fill('She was half way up already.');
+	await page.getByLabel('On whose word, if anybody’s').fill('the surgeon');
+	await page.getByLabel('I read the words back to them').check();
+	await page.getByRole('button', { name: 'Record the session' }).click();
+	await expect(page.getByText('Recorded: stop')).toBeVisible();
+	// The refusal itself is an answer that the browser notes.
+	expect(complaints.filter((each) => !each.includes('status of 409'))).toEqual([]);
+
+	const surgeon = await seat(browser, product.url, 'surgeon', PHONE);
+	const end = surgeon.page.getByRole('listitem').filter({ hasText: 'She was half way up already.' });
+	await expect(end).toHaveCount(1);
+	await end.getByRole('button', { name: /^Seen/ }).press('Enter');
+	await expect(end).toHaveCount(0);
 });
 
 test('rules and sources say on a phone where each limit comes from, and are printed whole', async ({
