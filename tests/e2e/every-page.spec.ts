@@ -1,4 +1,5 @@
 import { expect, test, type Browser, type Page } from '@playwright/test';
+import { FIRST_KIB, MORE_KIB } from '../../src/cli/lib/weigh.mjs';
 import { SIGN_INS, signInAs } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 import { everyPage, type VisitedPage } from './every-page';
@@ -8,9 +9,6 @@ import { loadedFrom, scriptWeight, SHIFT, shiftSoFar, watchShift } from './weigh
 
 type Who = keyof typeof SIGN_INS;
 
-/** Script that a first page may load, compressed, and what any other may have beyond it. */
-const FIRST_KIB = 120;
-const MORE_KIB = 40;
 /** Fewest pages that each role is let into; a role that is let into none would test nothing. */
 const LEAST = 8;
 

@@ -49,6 +49,7 @@ export const STEPS = [
 	check('migrations', [['drizzle-kit', 'check']]),
 	{ name: 'unit and integration', run: () => runVitest(['unit', 'integration']) },
 	{ name: 'build', run: async () => oneCheck(await ensureBuilt()) },
+	{ name: 'weight', run: runWeigh, needs: ['build'] },
 	{ name: 'product', run: () => runVitest(['product']), needs: ['build'] },
 	{ name: 'crash', run: runCrash, needs: ['build'] },
 	{ name: 'journeys', run: runPlaywright, needs: ['build', 'Chromium'] }
@@ -91,6 +92,11 @@ function runVitest(names) {
 		const { code } = await run(bin('vitest'), args, { env: testEnv(), limitMs: LIMIT_MS });
 		return countsOf(code, () => countVitest(readJson(file)));
 	});
+}
+
+async function runWeigh() {
+	const { code } = await run(process.execPath, [at('src', 'cli', 'weigh.mjs')], { env: testEnv() });
+	return oneCheck(code === 0);
 }
 
 async function runCrash() {
