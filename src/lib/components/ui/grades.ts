@@ -22,3 +22,10 @@ export const GRADE_GROUND: Record<GradeName, string> = {
 	medium: 'bg-medium-ground',
 	low: 'bg-low-ground'
 };
+
+/** Class of the line along such a ground. */
+export const GRADE_EDGE: Record<GradeName, string> = {
+	high: 'border-high',
+	medium: 'border-medium',
+	low: 'border-low'
+};
