@@ -44,12 +44,6 @@ describe('Button', () => {
 		const { body } = render(Button, { props: { variant: 'alarm', grade, children: words('I take it') } });
 		expect([...body.matchAll(/\bbg-(high|medium|low)\b/g)].map((match) => match[1])).toEqual([grade]);
 	});
-
-	it('puts the class it is given last', () => {
-		expect(render(Button, { props: { class: 'w-full', children: words('Ask') } }).body).toMatch(
-			/class="[^"]* w-full"/
-		);
-	});
 });
 
 describe('Field', () => {
