@@ -5,6 +5,12 @@ describe('outcomeOf', () => {
 	it.each<[string, ActionAnswer, Outcome | null]>([
 		['a success', { type: 'success' }, null],
 		['errors beside fields', { type: 'failure' }, null],
+		[
+			'words that were changed after they had arrived',
+			{ type: 'failure', data: { code: 'idempotency-mismatch' } },
+			{ kind: 'arrived' }
+		],
+		['another failure', { type: 'failure', data: { code: 'wrong-state' } }, null],
 		['a redirect to the next page', { type: 'redirect', location: '/ward?unit=1' }, null],
 		['a page that only begins like it', { type: 'redirect', location: '/sign-in-help' }, null],
 		[

@@ -95,6 +95,18 @@ describe('a form action', () => {
 		expect(await action(posting())).toMatchObject({ data: { form: { message: 'Too late.' } } });
 	});
 
+	it('tells words that were changed after they had arrived from any other refusal', async () => {
+		const action = formAction({
+			schema,
+			run: () => Promise.reject(new Problem('idempotency-mismatch'))
+		});
+		const form = { message: expect.stringContaining('An earlier version has arrived') as string };
+		expect(await action(posting())).toMatchObject({
+			status: 422,
+			data: { code: 'idempotency-mismatch', form: { ...form, data: { note: 'dry and clean' } } }
+		});
+	});
+
 	it('asks for a sign-in instead of losing what was typed', async () => {
 		const given = { actor: null, search: '?/change', fields: { note: 'no', key: 'k1' } };
 		const event = posting(given);

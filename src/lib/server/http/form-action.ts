@@ -3,12 +3,16 @@ import { message, setError, superValidate, type Infer, type SuperValidated } fro
 import { zod4, type ZodValidationSchema } from 'sveltekit-superforms/adapters';
 import { keptForm } from '$lib/domain/accounts/kept';
 import { Problem, PROBLEMS, type ProblemCode } from '$lib/domain/core/errors';
+import { m } from '$lib/i18n/paraglide/messages';
 import { requirePerson, type Context, type PersonContext } from '../context';
 import { withFormKey } from './page';
 
 type Fields<S extends ZodValidationSchema> = Infer<S, 'zod4'>;
 type Posted<S extends ZodValidationSchema> = SuperValidated<Fields<S>, string>;
-type Answer<S extends ZodValidationSchema> = { form: Posted<S> } | ActionFailure<{ form: Posted<S> }>;
+type Answer<S extends ZodValidationSchema> =
+	| { form: Posted<S> }
+	/** `code` for a script, which offers a way on by it. */
+	| ActionFailure<{ form: Posted<S>; code?: ProblemCode }>;
 
 interface Acting<S extends ZodValidationSchema, C extends Context> {
 	/** Checks the posted fields; the same one as in `load`. */
@@ -120,7 +124,17 @@ function refuse<S extends ZodValidationSchema, C extends Context>(
 	if (beside.length > 0) {
 		return fail(status, { form });
 	}
-	return message(form, spec.words?.[problem.code]?.(problem) ?? problem.detail, { status });
+	message(form, wordsOf(spec, problem), { status });
+	return fail(status, { form, code: problem.code });
+}
+
+function wordsOf<S extends ZodValidationSchema, C extends Context>(
+	{ words }: Acting<S, C>,
+	problem: Problem
+): string {
+	// Without script the page comes back with a new key, so the next press is another write.
+	const usual = problem.code === 'idempotency-mismatch' ? m.common_arrived_plain() : problem.detail;
+	return words?.[problem.code]?.(problem) ?? usual;
 }
 
 /** `/units/0` is about the field `units`. */

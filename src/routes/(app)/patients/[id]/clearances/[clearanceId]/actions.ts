@@ -19,7 +19,7 @@ import { read } from '$lib/server/read';
 import { leadOnWithoutScript } from '../../without-script';
 
 /** The form actions of the decider's page. */
-const words = { 'wrong-state': fasterWords, 'idempotency-mismatch': m.clearances_changed };
+const words = { 'wrong-state': fasterWords };
 
 export const give = formAction({
 	schema: giveForm,
