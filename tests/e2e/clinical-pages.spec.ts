@@ -65,7 +65,7 @@ test('a range is prescribed for an outpatient and stands at the bedside', async 
 	await page.getByLabel('Pulse to').fill('110');
 	await page.getByLabel('How it was found').selectOption('walk-test');
 	await page.getByRole('button', { name: 'Prescribe' }).click();
-	await expect(page.getByText(/hrMin is 120 and hrMax is 110/)).toBeVisible();
+	await expect(page.getByText(/Pulse from is 120 and Pulse to is 110/)).toBeVisible();
 	await page.getByLabel('Pulse from').fill('90');
 	await page.getByRole('button', { name: 'Prescribe' }).click();
 	await expect(page.getByText('Pulse 90 to 110; six-minute walk')).toBeVisible();

@@ -134,6 +134,23 @@ describe('forms', () => {
 	);
 });
 
+describe('numbers', () => {
+	const NUMBER = /\btype=\{?["']number["']/;
+
+	it.each([
+		['<Input type="number" />', true],
+		["<Input type={'number'} />", true],
+		['<NumberControl {text} />', false]
+	])('%s: %s', (source, found) => {
+		expect(NUMBER.test(source)).toBe(found);
+	});
+
+	// A browser answers an empty text for what it cannot read, and empty means something else: no limit, no upper end.
+	it('are typed into a text, so that what is none is seen and said', () => {
+		expect(files('.svelte').filter((file) => NUMBER.test(sourceOf(file)))).toEqual([]);
+	});
+});
+
 describe('looks', () => {
 	const RAW =
 		/#[\da-f]{3,8}\b(?!['"]?\s*\))|\b(rgba?|hsla?|oklch|lab)\(|\b(text|bg|border|fill|stroke|decoration)-\[(#|rgb|hsl)/i;

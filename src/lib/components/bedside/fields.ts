@@ -1,4 +1,4 @@
-import { readNumber } from '$lib/components/ui/number-text';
+import { readNumber } from '$lib/domain/core/typed-number';
 import { BOUNDS, needsConfirming, type BoundedField } from '$lib/domain/bedside/bounds';
 import { m } from '$lib/i18n/paraglide/messages';
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { clearanceLimits, type ClearanceLimits } from '$lib/domain/clearances/forms';
 import { CLEARANCE_KINDS, type ClearanceKind } from '$lib/domain/core/codes';
+import { m } from '$lib/i18n/paraglide/messages';
 import { choicesOf, fieldsOf, limitsOf, wrongChoice, type LimitChoice } from './decision';
 import { giveForm, refuseForm, type GiveFields } from './decision-forms';
 
@@ -14,7 +15,8 @@ describe('limitsOf', () => {
 		[{ limit: 'one' }, { helpers: 'one' }],
 		[{ limit: 'two' }, { helpers: 'two' }],
 		[{ limit: 'none', other: 'No load.' }, { text: 'No load.' }],
-		[{ maxMinutes: 20 }, { maxMinutes: 20 }],
+		[{ maxMinutes: '20' }, { maxMinutes: 20 }],
+		[{ maxMinutes: '' }, undefined],
 		[
 			{ limit: '90', other: 'No load.' },
 			{ maxElevationDeg: 90, text: 'No load.' }
@@ -54,7 +56,7 @@ describe('fieldsOf', () => {
 		['arm-stage', { text: 'No load.' }, { limit: 'none', other: 'No load.' }],
 		['stairs', null, { limit: 'one' }],
 		['stairs', { helpers: 'two' }, { limit: 'two' }],
-		['treadmill', { maxMinutes: 20 }, { limit: undefined, maxMinutes: 20 }],
+		['treadmill', { maxMinutes: 20 }, { limit: undefined, maxMinutes: '20' }],
 		['discharge', null, { limit: undefined }]
 	])('%s with %j opens with %j', (kind, limits, fields) => {
 		expect(fieldsOf(kind, limits, null)).toMatchObject({ ...fields, seen: '' });
@@ -69,22 +71,24 @@ describe('giveForm', () => {
 	it.each<[Record<string, unknown>, string | null]>([
 		[{}, null],
 		[{ limit: '90' }, null],
-		[{ limit: '91' }, 'limit is one of 60, 90, 120, one, two, none.'],
-		[{ maxMinutes: 0 }, 'Minutes: at least 1.'],
-		[{ maxMinutes: 1 }, null],
-		[{ maxMinutes: 240 }, null],
-		[{ maxMinutes: 241 }, 'Minutes: at most 240.'],
-		[{ maxMinutes: 1.5 }, 'Minutes: a whole number from 1 to 240.'],
+		[{ limit: '91' }, m.clearances_choose_limit()],
+		[{ maxMinutes: '' }, null],
+		[{ maxMinutes: '1e' }, 'At most, minutes: “1e” is no number; write a whole number from 1 to 240.'],
+		[{ maxMinutes: '0' }, 'At most, minutes: 0 cannot be taken; write a whole number from 1 to 240.'],
+		[{ maxMinutes: '1' }, null],
+		[{ maxMinutes: '240' }, null],
+		[{ maxMinutes: '241' }, 'At most, minutes: 241 cannot be taken; write a whole number from 1 to 240.'],
+		[{ maxMinutes: '1,5' }, 'At most, minutes: 1.5 cannot be taken; write a whole number from 1 to 240.'],
 		[
 			{ reviewOn: '2026-02-30' },
-			'Review date: “2026-02-30” is no day; write one that exists, such as 14 12 2026.'
+			'Review on: “2026-02-30” is no day; write one that exists, such as 14 12 2026.'
 		],
 		[{ reviewOn: '28 2 2026' }, null],
 		[{ reviewOn: '2026-02-28' }, null],
 		[{ note: 'x'.repeat(1000) }, null],
-		[{ note: 'x'.repeat(1001) }, 'Note has at most 1000 characters.'],
+		[{ note: 'x'.repeat(1001) }, 'Note has 1001 characters, and the limit is 1000.'],
 		[{ other: 'x'.repeat(200) }, null],
-		[{ other: 'x'.repeat(201) }, 'Other limit has at most 200 characters.']
+		[{ other: 'x'.repeat(201) }, 'Another limit has 201 characters, and the limit is 200.']
 	])('%j: %s', (fields, message) => {
 		const parsed = giveForm.safeParse(fields);
 		expect(parsed.error?.issues[0]?.message ?? null).toBe(message);
@@ -96,7 +100,7 @@ describe('refuseForm', () => {
 		['', 'Reason is empty.'],
 		['  ', 'Reason is empty.'],
 		['Wound is wet.', null],
-		['x'.repeat(1001), 'Reason has at most 1000 characters.']
+		['x'.repeat(1001), 'Reason has 1001 characters, and the limit is 1000.']
 	])('%j: %s', (reason, message) => {
 		expect(refuseForm.safeParse({ reason }).error?.issues[0]?.message ?? null).toBe(message);
 	});

@@ -1,6 +1,7 @@
 /** The decision: what is chosen on the page, and the limits that come of it. Used by page and server alike. */
 import type { ClearanceLimits } from '$lib/domain/clearances/forms';
 import type { ClearanceKind } from '$lib/domain/core/codes';
+import { numberOf } from '$lib/domain/core/typed-number';
 import { m } from '$lib/i18n/paraglide/messages';
 import type { GiveFields } from './decision-forms';
 
@@ -36,9 +37,10 @@ export function wrongChoice(kind: ClearanceKind, limit: LimitChoice | undefined)
 export function limitsOf(
 	fields: Pick<GiveFields, 'limit' | 'maxMinutes' | 'other'>
 ): ClearanceLimits | undefined {
+	const maxMinutes = numberOf(fields.maxMinutes ?? '');
 	const limits: ClearanceLimits = {
 		...choiceLimits(fields.limit),
-		...(fields.maxMinutes === undefined ? {} : { maxMinutes: fields.maxMinutes }),
+		...(maxMinutes === null ? {} : { maxMinutes }),
 		...(fields.other === undefined ? {} : { text: fields.other })
 	};
 	return Object.keys(limits).length === 0 ? undefined : limits;
@@ -67,7 +69,7 @@ export function fieldsOf(
 ): Partial<GiveFields> {
 	return {
 		limit: choiceOf(kind, limits) ?? undefined,
-		maxMinutes: limits?.maxMinutes,
+		maxMinutes: limits?.maxMinutes?.toString() ?? '',
 		other: limits?.text,
 		seen: decidedAt ?? ''
 	};

@@ -15,11 +15,11 @@ export async function issuesOf(typed: Record<string, unknown>, schema: ZodObject
 	return error?.issues.map(({ path, message }) => ({ path, message })) ?? [];
 }
 
-/** An optional field that is left empty, or a number that was taken out again, is none, as it is when posted. */
+/** An optional field that is left empty is none, as it is when posted. */
 function asPosted(typed: Record<string, unknown>, { shape }: ZodObject): Record<string, unknown> {
 	return Object.fromEntries(
 		Object.entries(typed).map(([name, value]) => {
-			const optional = (value === '' || value === null) && shape[name]?.safeParse(undefined).success;
+			const optional = value === '' && shape[name]?.safeParse(undefined).success;
 			return [name, optional ? undefined : value];
 		})
 	);

@@ -78,16 +78,20 @@ describe('NumberField', () => {
 		[true, 'decimal']
 	])('with decimals %s asks the phone for %s keys and shows the unit', (decimals, keys) => {
 		const { body } = render(NumberField, {
-			props: { label: 'Systolic', unit: 'mmHg', value: 128, decimals }
+			props: { label: 'Systolic', unit: 'mmHg', value: '12,5', decimals }
 		});
 		expect(body).toContain(`inputmode="${keys}"`);
-		expect(body).toContain('value="128"');
+		expect(body).toContain('value="12,5"');
 		expect(body).toContain('mmHg');
 	});
 
-	it('shows a missing reading as nothing, never as 0', () => {
-		const { body } = render(NumberField, { props: { label: 'Pulse', unit: 'beats/min', value: null } });
-		expect(body).toContain('value=""');
+	it('keeps what is no number as it was typed, with what is wrong and the unit for whoever hears it', () => {
+		const error = 'Pulse: “1e” is no number.';
+		const props = { label: 'Pulse', name: 'hr', unit: 'beats/min', value: '1e', error };
+		const { body } = render(NumberField, { props });
+		expect(body).toMatch(/type="text"[^>]*value="1e"/);
+		expect(body).toMatch(/aria-describedby="\S+-unit \S+-error"/);
+		expect(body).toContain(error);
 	});
 });
 

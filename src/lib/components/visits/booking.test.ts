@@ -12,7 +12,7 @@ const SERIES: BookingDraft = {
 	kind: 'series',
 	date: '2026-03-04',
 	weekdays: ['mon', 'wed', 'fri'],
-	count: 4
+	count: '4'
 };
 
 const plan = (change: Partial<BookingDraft>, base = SINGLE) => planOf({ ...base, ...change }, ZONE, NOW);
@@ -39,6 +39,15 @@ describe('a single visit', () => {
 		const { problems } = plan({ date: '32 3 2026', time: '24:00' });
 		expect(problems.date).toContain('“32 3 2026”');
 		expect(problems.time).toContain('“24:00”');
+	});
+
+	it('names a number that was typed wrongly, and asks for one that was not typed', () => {
+		const { problems } = plan({ minutes: '1e', count: '12,5' }, SERIES);
+		expect(problems.minutes).toContain('“1e”');
+		expect(problems.count).toContain('“12,5”');
+		const empty = plan({ minutes: ' ', count: '' }, SERIES).problems;
+		expect(empty.minutes).toBe('Minutes: write a whole number from 10 to 240.');
+		expect(empty.count).toBe('Number of visits: write a whole number from 1 to 60.');
 	});
 
 	it('is an hour earlier in UTC once the clock has changed', () => {
@@ -77,19 +86,22 @@ describe('what is wrong', () => {
 		[{ date: '' }, SINGLE, ['date']],
 		[{ date: '2026-02-29' }, SINGLE, ['date']],
 		[{ time: '24:00' }, SINGLE, ['time']],
-		[{ minutes: null }, SINGLE, ['minutes']],
-		[{ minutes: 9 }, SINGLE, ['minutes']],
-		[{ minutes: 10 }, SINGLE, []],
-		[{ minutes: 240 }, SINGLE, []],
-		[{ minutes: 241 }, SINGLE, ['minutes']],
-		[{ minutes: 45.5 }, SINGLE, ['minutes']],
+		[{ minutes: '' }, SINGLE, ['minutes']],
+		[{ minutes: '1e' }, SINGLE, ['minutes']],
+		[{ minutes: '9' }, SINGLE, ['minutes']],
+		[{ minutes: '10' }, SINGLE, []],
+		[{ minutes: '240' }, SINGLE, []],
+		[{ minutes: '241' }, SINGLE, ['minutes']],
+		[{ minutes: '45,5' }, SINGLE, ['minutes']],
 		[{ place: '' }, SINGLE, ['place']],
-		[{ weekdays: [], count: 0 }, SINGLE, []],
+		[{ weekdays: [], count: '1e' }, SINGLE, []],
 		[{ weekdays: [] }, SERIES, ['weekdays']],
-		[{ count: 0 }, SERIES, ['count']],
-		[{ count: 1 }, SERIES, []],
-		[{ count: 60 }, SERIES, []],
-		[{ count: 61 }, SERIES, ['count']],
+		[{ count: '0' }, SERIES, ['count']],
+		[{ count: '1' }, SERIES, []],
+		[{ count: '60' }, SERIES, []],
+		[{ count: '61' }, SERIES, ['count']],
+		[{ count: '' }, SERIES, ['count']],
+		[{ count: '1e' }, SERIES, ['count']],
 		// Today at 08:59 has passed, at 09:00 has not.
 		[{ date: '2026-03-03', time: '08:59' }, SINGLE, ['date']],
 		[{ date: '2026-03-03', time: '09:00' }, SINGLE, []],
@@ -112,7 +124,7 @@ describe('what is wrong', () => {
 	});
 
 	it('still shows the days of a series whose length in minutes is missing', () => {
-		expect(plan({ minutes: null }, SERIES).planned).toHaveLength(4);
+		expect(plan({ minutes: '' }, SERIES).planned).toHaveLength(4);
 	});
 });
 

@@ -12,22 +12,23 @@ import {
 	type Zone
 } from '$lib/domain/core/time';
 import { readDate, readTime } from '$lib/domain/core/typed-date';
+import { readNumber, type TypedNumber } from '$lib/domain/core/typed-number';
 import { planReminders } from '$lib/domain/visits/reminders';
 import { planSeries, skippedDays, type PlannedVisit } from '$lib/domain/visits/series';
 import type { VisitItem } from '$lib/domain/visits/views';
 import { day, dayToType } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
-/** What the fields hold, day and time as they were typed; `date` is the day of a single visit, or the day from which a series counts. */
+/** What the fields hold, days, times and numbers as they were typed; `date` is the day of a single visit, or the day from which a series counts. */
 export interface BookingDraft {
 	kind: 'single' | 'series';
 	date: string;
 	time: string;
-	minutes: number | null;
+	minutes: string;
 	/** Identifier of the unit. */
 	place: string;
 	weekdays: Weekday[];
-	count: number | null;
+	count: string;
 }
 
 export type BookingProblems = Partial<Record<keyof BookingDraft, string>>;
@@ -45,7 +46,7 @@ export interface BookingPlan {
 }
 
 export function emptyDraft(place: string): BookingDraft {
-	return { kind: 'single', date: '', time: '', minutes: 60, place, weekdays: [], count: 12 };
+	return { kind: 'single', date: '', time: '', minutes: '60', place, weekdays: [], count: '12' };
 }
 
 /** Work a draft out in the hospital's wall time, as the server will. */
@@ -56,7 +57,7 @@ export function planOf(
 	closed: ReadonlySet<LocalDate> = new Set()
 ): BookingPlan {
 	const draft = readDraft(typed);
-	const problems = fieldProblems(draft);
+	const problems = fieldProblems(draft, typed);
 	const datable = !(['date', 'time', 'weekdays', 'count'] as const).some((field) => problems[field]);
 	const planned = datable ? plannedOf(draft, zone, closed) : [];
 	const outside = rangeProblem(planned, zone, now) ?? closedProblem(draft, closed);
@@ -77,24 +78,24 @@ export function draftOf(
 	zone: Zone
 ): BookingDraft {
 	const { date, time } = localParts(Date.parse(startsAt), zone);
-	return { ...emptyDraft(unitId), date: dayToType(date), time, minutes };
+	return { ...emptyDraft(unitId), date: dayToType(date), time, minutes: String(minutes) };
 }
 
-function plannedOf(draft: BookingDraft, zone: Zone, closed: ReadonlySet<LocalDate>): PlannedVisit[] {
+function plannedOf(draft: ReadDraft, zone: Zone, closed: ReadonlySet<LocalDate>): PlannedVisit[] {
 	// A single visit is on the day that was asked for or not at all.
 	return planSeries(seriesOf(draft), zone, draft.kind === 'series' ? closed : undefined);
 }
 
-function skippedOf(draft: BookingDraft, planned: readonly PlannedVisit[], closed: ReadonlySet<LocalDate>) {
+function skippedOf(draft: ReadDraft, planned: readonly PlannedVisit[], closed: ReadonlySet<LocalDate>) {
 	return draft.kind === 'series' ? skippedDays(seriesOf(draft), planned, closed) : [];
 }
 
-function closedProblem({ kind, date }: BookingDraft, closed: ReadonlySet<LocalDate>): BookingProblems | null {
+function closedProblem({ kind, date }: ReadDraft, closed: ReadonlySet<LocalDate>): BookingProblems | null {
 	return kind === 'single' && closed.has(date) ? { date: m.visits_problem_closed({ day: day(date) }) } : null;
 }
 
 function withoutReminder(
-	{ kind }: BookingDraft,
+	{ kind }: ReadDraft,
 	planned: readonly PlannedVisit[],
 	zone: Zone,
 	now: number
@@ -109,11 +110,20 @@ export function nextDays(now: number, zone: Zone): LocalDate[] {
 	return [1, 2, 3].map((days) => addDays(localDateOf(now, zone), days));
 }
 
-/** The draft with its day and time read; what is none stays as it was typed, and is named in what is wrong. */
-function readDraft(draft: BookingDraft): BookingDraft {
-	const { date, time } = draft;
-	return { ...draft, date: readDate(date) ?? date, time: readTime(time) ?? time };
+/** A draft whose fields are read. */
+interface ReadDraft extends Omit<BookingDraft, 'minutes' | 'count'> {
+	minutes: TypedNumber;
+	count: TypedNumber;
 }
+
+/** The draft with its fields read; a day or time that is none stays as it was typed, and is named in what is wrong. */
+function readDraft(draft: BookingDraft): ReadDraft {
+	const { date, time, minutes, count } = draft;
+	const numbers = { minutes: readNumber(minutes), count: readNumber(count) };
+	return { ...draft, ...numbers, date: readDate(date) ?? date, time: readTime(time) ?? time };
+}
+
+const orNought = (read: TypedNumber): number => (read.kind === 'number' ? read.value : 0);
 
 /** The field that an error of the server is about. */
 export function bookingField(pointer: string): keyof BookingDraft {
@@ -122,27 +132,23 @@ export function bookingField(pointer: string): keyof BookingDraft {
 	return known.find((name) => name === field) ?? 'date';
 }
 
-function seriesOf({ kind, date, time, minutes, weekdays, count }: BookingDraft) {
+function seriesOf({ kind, date, time, minutes, weekdays, count }: ReadDraft) {
 	const single = { from: date, weekdays: EVERY_DAY, count: 1 };
-	const series = { from: date, weekdays, count: count ?? 0 };
-	return { ...(kind === 'single' ? single : series), time, minutes: minutes ?? 0 };
+	const series = { from: date, weekdays, count: orNought(count) };
+	return { ...(kind === 'single' ? single : series), time, minutes: orNought(minutes) };
 }
 
 const EVERY_DAY = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'] as const;
 
-function fieldProblems(draft: BookingDraft): BookingProblems {
+function fieldProblems(draft: ReadDraft, typed: BookingDraft): BookingProblems {
 	const series = draft.kind === 'series';
 	const checks: [keyof BookingDraft, boolean, () => string][] = [
 		['date', isLocalDate(draft.date), () => wrongDay(draft.date)],
 		['time', isLocalTime(draft.time), () => wrongTime(draft.time)],
-		[
-			'minutes',
-			isWhole(draft.minutes, MINUTES_MIN, MINUTES_MAX),
-			() => m.visits_problem_minutes({ min: MINUTES_MIN, max: MINUTES_MAX })
-		],
+		['minutes', isWhole(draft.minutes, MINUTES_MIN, MINUTES_MAX), () => wrongMinutes(typed.minutes.trim())],
 		['place', draft.place !== '', m.visits_problem_place],
 		['weekdays', !series || draft.weekdays.length > 0, m.visits_problem_weekdays],
-		['count', !series || isWhole(draft.count, 1, COUNT_MAX), () => m.visits_problem_count({ max: COUNT_MAX })]
+		['count', !series || isWhole(draft.count, 1, COUNT_MAX), () => wrongCount(typed.count.trim())]
 	];
 	return Object.fromEntries(checks.flatMap(([field, right, words]) => (right ? [] : [[field, words()]])));
 }
@@ -155,8 +161,18 @@ function wrongTime(typed: string): string {
 	return typed.trim() ? m.visits_problem_time({ typed }) : m.visits_problem_no_time();
 }
 
-function isWhole(value: number | null, min: number, max: number): boolean {
-	return value !== null && Number.isInteger(value) && value >= min && value <= max;
+function wrongMinutes(typed: string): string {
+	const bounds = { min: MINUTES_MIN, max: MINUTES_MAX };
+	return typed ? m.visits_problem_minutes({ typed, ...bounds }) : m.visits_problem_no_minutes(bounds);
+}
+
+function wrongCount(typed: string): string {
+	const max = COUNT_MAX;
+	return typed ? m.visits_problem_count({ typed, max }) : m.visits_problem_no_count({ max });
+}
+
+function isWhole(read: TypedNumber, min: number, max: number): boolean {
+	return read.kind === 'number' && Number.isInteger(read.value) && read.value >= min && read.value <= max;
 }
 
 function rangeProblem(planned: readonly PlannedVisit[], zone: Zone, now: number): BookingProblems | null {
@@ -172,9 +188,10 @@ function rangeProblem(planned: readonly PlannedVisit[], zone: Zone, now: number)
 	return last.localDate > latest ? { date: m.visits_problem_far({ day: day(latest) }) } : null;
 }
 
-function bodyOf(draft: BookingDraft, planned: readonly PlannedVisit[]): Record<string, unknown> | null {
+function bodyOf(draft: ReadDraft, planned: readonly PlannedVisit[]): Record<string, unknown> | null {
 	const [first] = planned;
-	const { kind, date, weekdays, time, count, minutes, place } = draft;
+	const { kind, date, weekdays, time, place } = draft;
+	const [minutes, count] = [orNought(draft.minutes), orNought(draft.count)];
 	if (!first) {
 		return null;
 	}

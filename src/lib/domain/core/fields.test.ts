@@ -10,7 +10,7 @@ describe('text', () => {
 		['abcde', []],
 		[' abcde ', []],
 		['a\tb\nc', []],
-		['abcdef', ['The question has at most 5 characters.']],
+		['abcdef', ['The question has 6 characters, and the limit is 5.']],
 		['', ['The question is empty.']],
 		[' \n', ['The question is empty.']],
 		[undefined, ['The question is missing or no text.']],

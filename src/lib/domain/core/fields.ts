@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { isLocalDate } from './time';
 import { readDate } from './typed-date';
+import { readNumber } from './typed-number';
 
 /**
  * Text that a person types: trimmed, not empty, with a limit that the message names.
@@ -11,8 +12,16 @@ export function text(field: string, max: number) {
 		.string(`${field} is missing or no text.`)
 		.trim()
 		.min(1, `${field} is empty.`)
-		.max(max, `${field} has at most ${max} characters.`)
+		.max(max, tooLong(field, max))
 		.refine((value) => !hasControlCharacters(value), `${field} contains a control character.`);
+}
+
+/** What is said of a text over its limit: how long it is, so that one knows how much has to go. */
+export function tooLong(field: string, max: number) {
+	return {
+		error: ({ input }: { input?: unknown }) =>
+			`${field} has ${String(input).length} characters, and the limit is ${max}.`
+	};
 }
 
 /** Why somebody declines, withholds, withdraws or passes on. */
@@ -28,9 +37,56 @@ export function reason(field: string) {
 export function typedDay(field: string) {
 	return z
 		.string(`${field} is missing or no text.`)
-		.max(40, `${field} has at most 40 characters.`)
+		.max(40, tooLong(field, 40))
 		.transform((typed) => readDate(typed) ?? typed)
 		.refine(isLocalDate, { error: ({ input }) => noDay(field, String(input)) });
+}
+
+interface NumberWanted {
+	low?: number;
+	high?: number;
+	unit?: string;
+	whole?: boolean;
+	/** Whether leaving it empty is a mistake. */
+	needed?: boolean;
+}
+
+/**
+ * A number as a form posts it: the text as it was typed, which `numberOf` reads once it is checked. What is no number
+ * is a mistake and never an empty field.
+ * @param field the name of the field as a sentence begins with it
+ */
+export function typedNumber(field: string, wanted: NumberWanted = {}) {
+	return z
+		.string(`${field} is missing or no text.`)
+		.max(40, { ...tooLong(field, 40), abort: true })
+		.superRefine((typed, ctx) => {
+			const message = wrongNumber(field, typed, wanted);
+			if (message !== null) {
+				ctx.addIssue({ code: 'custom', message });
+			}
+		});
+}
+
+function wrongNumber(field: string, typed: string, wanted: NumberWanted): string | null {
+	const { low = -Infinity, high = Infinity, whole = false, needed = false } = wanted;
+	const read = readNumber(typed);
+	switch (read.kind) {
+		case 'empty':
+			return needed ? `${field} is empty: ${wish(wanted)}` : null;
+		case 'unreadable':
+			return `${field}: “${typed.trim()}” is no number; ${wish(wanted)}`;
+		case 'number': {
+			const right = read.value >= low && read.value <= high && (!whole || Number.isInteger(read.value));
+			return right ? null : `${field}: ${read.value} cannot be taken; ${wish(wanted)}`;
+		}
+	}
+}
+
+function wish({ low, high, unit = '', whole = false }: NumberWanted): string {
+	return low === undefined || high === undefined
+		? 'write one such as 12 or 12.5.'
+		: `write a ${whole ? 'whole ' : ''}number from ${low} to ${high}${unit && ` ${unit}`}.`;
 }
 
 function noDay(field: string, typed: string): string {

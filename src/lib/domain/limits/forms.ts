@@ -1,8 +1,8 @@
-/** The bodies and forms by which limits are changed. Each message names field, value and what is allowed. */
+/** The bodies by which limits are changed. Each message names field, value and what is allowed; `page-forms.ts` has the forms. */
 import { z } from 'zod';
 import { ACTIVITY_CODES } from '../bedside/activities/codes';
 import { LIMIT_KEYS, SETS } from '../bedside/codes';
-import { reason, text, typedDay } from '../core/fields';
+import { reason, text } from '../core/fields';
 import { BOUNDS } from '../bedside/bounds';
 import { numberWithin } from '../bedside/form-fields';
 import { PRESCRIBING_METHODS } from '../bedside/limits/prescribed';
@@ -36,17 +36,6 @@ export const setPatientLimitBody = z.strictObject({
 });
 export type SetPatientLimit = z.output<typeof setPatientLimitBody>;
 
-/** As forms post it: the day as it was typed. */
-const agreedForm = { ...agreed, agreedOn: typedDay('Agreed on') };
-
-/** The same as forms post them: a number that is not typed is missing, never nought. */
-export const changeUnitLimitForm = changeUnitLimitBody.extend({ value: value.optional(), ...agreedForm });
-export const chooseUnitSetForm = chooseUnitSetBody.extend(agreedForm);
-export const setPatientLimitForm = setPatientLimitBody.extend({
-	value: value.optional(),
-	untilOn: typedDay('The last day')
-});
-
 const rangeShape = {
 	hrMin: numberWithin('hrMin', BOUNDS.hr).nullish(),
 	hrMax: numberWithin('hrMax', BOUNDS.hr).nullish(),
@@ -66,50 +55,54 @@ export const prescribeRangeBody = z
 	});
 export type PrescribeRange = z.output<typeof prescribeRangeBody>;
 
-/** The same as a form posts it. */
-export const prescribeRangeForm = z.strictObject({
-	...rangeShape,
-	note: z.string().trim().max(300, 'note is longer than 300 characters.')
-});
+/** The ends of a range, by themselves. */
+export interface RangeEnds {
+	hrMin?: number | null;
+	hrMax?: number | null;
+	rpeMin?: number | null;
+	rpeMax?: number | null;
+}
 
-/** What the schema of each field cannot say: how the ends lie to each other. */
+/**
+ * What the schema of each field cannot say: how the ends lie to each other.
+ * @param called what whoever typed them calls them
+ */
 export function rangeFaults(
-	range: Pick<z.output<typeof prescribeRangeForm>, 'hrMin' | 'hrMax' | 'rpeMin' | 'rpeMax'>
+	range: RangeEnds,
+	called: Record<keyof RangeEnds, string> = RANGE_KEYS
 ): { path: 'hrMin' | 'hrMax' | 'rpeMin'; message: string }[] {
 	const below = (low: 'hrMin' | 'rpeMin', high: 'hrMax' | 'rpeMax') => {
 		const [from, to] = [range[low], range[high]];
-		return from != null && to != null && from > to
-			? [
-					{
-						path: low,
-						message: `${low} is ${from} and ${high} is ${to}: the range must not end below its start.`
-					}
-				]
-			: [];
+		const message = `${called[low]} is ${from} and ${called[high]} is ${to}: the range must not end below its start.`;
+		return from != null && to != null && from > to ? [{ path: low, message }] : [];
 	};
-	const open =
-		range.hrMax == null && range.rpeMax == null
-			? [
-					{
-						path: 'hrMax' as const,
-						message: 'hrMax and rpeMax are missing: a range has at least one upper end.'
-					}
-				]
-			: [];
+	const message = `${called.hrMax} and ${called.rpeMax} are missing: a range has at least one upper end.`;
+	const open = range.hrMax == null && range.rpeMax == null ? [{ path: 'hrMax' as const, message }] : [];
 	return [...below('hrMin', 'hrMax'), ...below('rpeMin', 'rpeMax'), ...open];
 }
 
+const RANGE_KEYS = { hrMin: 'hrMin', hrMax: 'hrMax', rpeMin: 'rpeMin', rpeMax: 'rpeMax' };
+
+/** The figures of a dose, and how far each may run. */
+export const SPAN_MAX = { minutes: 240, repetitions: 500, timesADay: 24 } as const;
+
 /** A span of a dose: from and to, both included. */
-const span = (name: string, max: number) =>
+const span = (name: keyof typeof SPAN_MAX, max: number = SPAN_MAX[name]) =>
 	z
 		.tuple([z.number(), z.number()], {
 			error: ({ input }) => `${name} is ${JSON.stringify(input)}: it must be two numbers, from and to.`
 		})
-		.refine(([from, to]) => from > 0 && from <= to && to <= max, {
-			error: ({ input }) =>
-				`${name} is ${(input as number[]).join(' to ')}: it must run from more than 0 to at most ${max}, and not end below its start.`
+		.refine((ends) => spanFault(name, ends, max) === null, {
+			error: ({ input }) => spanFault(name, input as [number, number], max) ?? ''
 		})
 		.nullable();
+
+/** What is wrong with the two ends of a span, or null. */
+export function spanFault(called: string, [from, to]: readonly [number, number], max: number): string | null {
+	return from > 0 && from <= to && to <= max
+		? null
+		: `${called} is ${from} to ${to}: it must run from more than 0 to at most ${max}, and not end below its start.`;
+}
 
 /** The most lines of one part of an activity, and the most characters of a line. */
 export const LINES_MAX = 8;
@@ -118,10 +111,12 @@ export const LINE_MAX = 200;
 const lines = (name: string, least = 1) =>
 	z
 		.array(text(`a line of ${name}`, LINE_MAX), `${name} is a list of lines.`)
-		.min(least, `${name} is empty: it must have 1 to ${LINES_MAX} lines.`)
-		.max(LINES_MAX, {
-			error: ({ input }) => `${name} has ${(input as unknown[]).length} lines: at most ${LINES_MAX}.`
-		});
+		.min(least, noLines(name))
+		.max(LINES_MAX, { error: ({ input }) => tooManyLines(name, (input as unknown[]).length) });
+
+export const noLines = (called: string) => `${called} is empty: it must have 1 to ${LINES_MAX} lines.`;
+export const tooManyLines = (called: string, count: number) =>
+	`${called} has ${count} lines, and the limit is ${LINES_MAX}.`;
 
 /** What a unit says about an activity: null goes back to the catalogue. */
 export const wordActivityBody = z.strictObject({
@@ -131,9 +126,9 @@ export const wordActivityBody = z.strictObject({
 			name: text('name', 80).optional(),
 			needs: lines('needs', 0).optional(),
 			dose: z.strictObject({
-				minutes: span('minutes', 240),
-				repetitions: span('repetitions', 500),
-				timesADay: span('timesADay', 24),
+				minutes: span('minutes'),
+				repetitions: span('repetitions'),
+				timesADay: span('timesADay'),
 				words: text('words', 200)
 			}),
 			howTo: lines('howTo'),
@@ -144,24 +139,3 @@ export const wordActivityBody = z.strictObject({
 	...agreed
 });
 export type WordActivity = z.output<typeof wordActivityBody>;
-
-/** The same as a form posts it: lines as rows of a text, a span as two numbers that may both be empty. */
-export const wordActivityForm = z.strictObject({
-	code: wordActivityBody.shape.code,
-	name: text('name', 80),
-	needs: z.string().trim().max(1600, 'needs has at most 1600 characters.'),
-	words: text('words', 200),
-	minutesFrom: z.number().optional(),
-	minutesTo: z.number().optional(),
-	repetitionsFrom: z.number().optional(),
-	repetitionsTo: z.number().optional(),
-	timesADayFrom: z.number().optional(),
-	timesADayTo: z.number().optional(),
-	howTo: text('howTo', 1600),
-	watch: text('watch', 1600),
-	never: text('never', 1600),
-	...agreedForm
-});
-export type WordActivityFields = z.output<typeof wordActivityForm>;
-
-export const resetActivityForm = z.strictObject({ code: wordActivityBody.shape.code, ...agreedForm });

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { ACTIVITIES, activityByCode } from '../bedside/activities/activities';
 import { activitiesOf, worded } from '../bedside/activities/local';
 import { wordActivityBody } from './forms';
+import { wordActivityForm } from './page-forms';
 import { fieldsOfLines, linesOfFields } from './wording';
 
 const AGREED = { agreedBy: 'Maeve Tidewell', agreedOn: '2026-02-02' };
@@ -14,30 +15,48 @@ describe('the form of an activity', () => {
 			const lines = linesOfFields(fieldsOfLines(activity));
 			expect(lines).toEqual({ name, needs: [], dose, howTo, watch, never });
 			expect(wordActivityBody.safeParse({ code, lines, ...AGREED }).success).toBe(true);
+			const form = { code, ...fieldsOfLines(activity), ...AGREED };
+			expect(wordActivityForm.safeParse(form).error?.issues ?? []).toEqual([]);
 		}
 	);
 
 	const fields = fieldsOfLines(activityByCode('hall-walk'));
 
 	it('takes one end alone for one figure, and drops empty rows', () => {
-		const lines = linesOfFields({ ...fields, minutesTo: undefined, watch: ' Pulse. \n\n' });
+		const lines = linesOfFields({ ...fields, minutesTo: '', watch: ' Pulse. \n\n' });
 		expect([lines.dose.minutes, lines.watch]).toEqual([[5, 5], ['Pulse.']]);
 	});
 
 	it.each([
-		[{ minutesFrom: 0 }, 'minutes is 0 to 7: it must run from more than 0 to at most 240'],
-		[{ minutesFrom: 8, minutesTo: 7 }, 'not end below its start'],
-		[{ minutesTo: 241 }, 'at most 240'],
-		[{ timesADayTo: 25 }, 'timesADay is 3 to 25: it must run from more than 0 to at most 24'],
-		[{ never: ' \n ' }, 'never is empty: it must have 1 to 8 lines'],
-		[{ watch: 'a\n'.repeat(9) }, 'watch has 9 lines: at most 8.'],
-		[{ howTo: 'a'.repeat(201) }, 'a line of howTo has at most 200 characters.'],
-		[{ name: 'a'.repeat(81) }, 'name has at most 80 characters.'],
-		[{ name: ' ' }, 'name is empty.'],
-		[{ needs: 'a\n'.repeat(9) }, 'needs has 9 lines: at most 8.']
-	])('refuses %j', (change, message) => {
-		const lines = linesOfFields({ ...fields, ...change });
-		const found = wordActivityBody.safeParse({ code: 'hall-walk', lines, ...AGREED });
+		[{ minutesFrom: '0' }, 'Minutes is 0 to 7: it must run from more than 0 to at most 240'],
+		[{ minutesFrom: '8', minutesTo: '7' }, 'not end below its start'],
+		[{ minutesTo: '241' }, 'at most 240'],
+		[{ minutesFrom: '1e' }, 'Minutes, from: “1e” is no number'],
+		[{ minutesFrom: '', minutesTo: '1e' }, 'Minutes, to: “1e” is no number'],
+		[{ timesADayTo: '25' }, 'Times a day is 3 to 25: it must run from more than 0 to at most 24'],
+		[{ never: ' \n ' }, 'Never is empty: it must have 1 to 8 lines'],
+		[{ watch: 'a\n'.repeat(9) }, 'Watch has 9 lines, and the limit is 8.'],
+		[{ howTo: `a\n${'a'.repeat(201)}` }, 'How, line 2, has 201 characters, and the limit is 200.'],
+		[{ name: 'a'.repeat(81) }, 'Name has 81 characters, and the limit is 80.'],
+		[{ name: ' ' }, 'Name is empty.'],
+		[{ needs: 'a\n'.repeat(9) }, 'First, besides has 9 lines, and the limit is 8.'],
+		[{ agreedBy: '' }, 'Clinical lead is empty.']
+	])('refuses %j once, by the words of its labels', (change, message) => {
+		const found = wordActivityForm.safeParse({ code: 'hall-walk', ...fields, ...AGREED, ...change });
+		expect(found.error?.issues).toHaveLength(1);
+		expect(found.error?.issues[0]?.message).toContain(message);
+	});
+
+	it.each([
+		[{ dose: { minutes: [0, 7] } }, 'minutes is 0 to 7: it must run from more than 0 to at most 240'],
+		[{ dose: { timesADay: [3, 25] } }, 'timesADay is 3 to 25'],
+		[{ never: [] }, 'never is empty: it must have 1 to 8 lines'],
+		[{ watch: Array(9).fill('a') }, 'watch has 9 lines, and the limit is 8.'],
+		[{ howTo: ['a'.repeat(201)] }, 'a line of howTo has 201 characters, and the limit is 200.']
+	])('and its body of the JSON API refuses %j by its own names', ({ dose, ...change }, message) => {
+		const lines = linesOfFields(fields);
+		const changed = { ...lines, ...change, dose: { ...lines.dose, ...dose } };
+		const found = wordActivityBody.safeParse({ code: 'hall-walk', lines: changed, ...AGREED });
 		expect(found.error?.issues.map((issue) => issue.message).join()).toContain(message);
 	});
 });

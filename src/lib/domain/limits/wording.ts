@@ -2,7 +2,8 @@
 import { activityByCode } from '../bedside/activities/activities';
 import type { Activity, Span } from '../bedside/activities/activity';
 import type { LocalLines } from '../bedside/activities/local';
-import type { WordActivityFields } from './forms';
+import { spanOf, type WordActivityFields } from './page-forms';
+import { rowsOf } from './rows';
 
 type Worded = Omit<WordActivityFields, 'code' | 'agreedBy' | 'agreedOn'>;
 
@@ -23,7 +24,7 @@ export function fieldsOfLines(activity: LocalLines & Pick<Activity, 'name' | 'co
 	};
 }
 
-/** The entry from the form. A span of which one end is empty is that one figure; checked by `wordActivityBody`. */
+/** The entry from the form. A span of which one end is empty is that one figure; checked by `wordActivityForm`. */
 export function linesOfFields(fields: Worded) {
 	return {
 		name: fields.name,
@@ -40,18 +41,7 @@ export function linesOfFields(fields: Worded) {
 	};
 }
 
-function spanFields(name: 'minutes' | 'repetitions' | 'timesADay', span: Span | null): Partial<Worded> {
-	return span === null ? {} : { [`${name}From`]: span[0], [`${name}To`]: span[1] };
-}
-
-function spanOf(from: number | undefined, to: number | undefined): [number, number] | null {
-	const [low, high] = [from ?? to, to ?? from];
-	return low === undefined || high === undefined ? null : [low, high];
-}
-
-function rowsOf(text: string): string[] {
-	return text
-		.split('\n')
-		.map((line) => line.trim())
-		.filter((line) => line !== '');
+function spanFields<N extends 'minutes' | 'repetitions' | 'timesADay'>(name: N, span: Span | null) {
+	const [from, to] = span?.map(String) ?? ['', ''];
+	return { [`${name}From`]: from, [`${name}To`]: to } as Record<`${N}From` | `${N}To`, string>;
 }

@@ -35,7 +35,7 @@ describe('settleTextBody', () => {
 	it.each([
 		['', 'note is empty.'],
 		['   ', 'note is empty.'],
-		['x'.repeat(501), 'note has at most 500 characters.'],
+		['x'.repeat(501), 'note has 501 characters, and the limit is 500.'],
 		[undefined, 'note is missing or no text.']
 	])('refuses %j', (note, message) => {
 		const { error } = settleTextBody.safeParse({ note });

@@ -56,7 +56,7 @@ describe('bookVisitsBody', () => {
 		['place', undefined, 'place is missing.'],
 		['place', '  ', 'The place is empty.'],
 		['place', 'x'.repeat(80), ''],
-		['place', 'x'.repeat(81), 'The place has at most 80 characters.']
+		['place', 'x'.repeat(81), 'The place has 81 characters, and the limit is 80.']
 	])('single, %s %j', (field, value, message) => {
 		expect(refusal(bookVisitsBody, { ...SINGLE, [field]: value })).toBe(message && `/${field}: ${message}`);
 	});

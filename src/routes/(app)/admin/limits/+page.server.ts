@@ -3,7 +3,8 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import type { RequestEvent } from '@sveltejs/kit';
 import type { z } from 'zod';
 import { localDateOf } from '$lib/domain/core/time';
-import { changeUnitLimitForm, chooseUnitSetForm } from '$lib/domain/limits/forms';
+import { numberOf } from '$lib/domain/core/typed-number';
+import { changeUnitLimitForm, chooseUnitSetForm } from '$lib/domain/limits/page-forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { listAccounts } from '$lib/server/accounts/list';
 import { env } from '$lib/server/env';
@@ -22,7 +23,12 @@ export const load: PageServerLoad = (event) =>
 		const shown = unitOf(event) || units[0]?.id;
 		const limits = shown ? await read.unitLimits(shown) : null;
 		const agreed = { agreedBy: '', agreedOn: localDateOf(context.now, env().hospital.zone) };
-		const limit = { set: limits?.inpatientSet ?? 'strict', key: '', ...agreed } as unknown as LimitFields;
+		const limit = {
+			set: limits?.inpatientSet ?? 'strict',
+			key: '',
+			value: '',
+			...agreed
+		} as unknown as LimitFields;
 		const set = { set: limits?.inpatientSet ?? 'strict', ...agreed } as SetFields;
 		return {
 			allUnits: units.map(({ id, name }) => ({ id, name })),
@@ -41,7 +47,10 @@ export const actions: Actions = {
 		id: 'limit',
 		schema: changeUnitLimitForm,
 		async run(context, { value, ...fields }, event) {
-			const { result } = await changeUnitLimit(context, unitOf(event), { ...fields, value: value ?? null });
+			const { result } = await changeUnitLimit(context, unitOf(event), {
+				...fields,
+				value: numberOf(value)
+			});
 			return m.limits_changed({ version: result.version });
 		}
 	}),

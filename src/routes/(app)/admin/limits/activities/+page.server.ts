@@ -3,12 +3,8 @@ import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { Problem } from '$lib/domain/core/errors';
 import { localDateOf } from '$lib/domain/core/time';
-import {
-	resetActivityForm,
-	wordActivityBody,
-	wordActivityForm,
-	type WordActivityFields
-} from '$lib/domain/limits/forms';
+import { wordActivityBody } from '$lib/domain/limits/forms';
+import { resetActivityForm, wordActivityForm, type WordActivityFields } from '$lib/domain/limits/page-forms';
 import { fieldsOfLines, linesOfFields } from '$lib/domain/limits/wording';
 import { m } from '$lib/i18n/paraglide/messages';
 import { listAccounts } from '$lib/server/accounts/list';

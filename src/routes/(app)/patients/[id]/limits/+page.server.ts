@@ -2,8 +2,9 @@ import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { z } from 'zod';
 import { idForm } from '$lib/domain/accounts/forms';
-import { Problem, invalidField } from '$lib/domain/core/errors';
-import { prescribeRangeForm, rangeFaults, setPatientLimitForm } from '$lib/domain/limits/forms';
+import { numberOf } from '$lib/domain/core/typed-number';
+import { setPatientLimitBody } from '$lib/domain/limits/forms';
+import { endsOf, prescribeRangeForm, setPatientLimitForm } from '$lib/domain/limits/page-forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
@@ -16,10 +17,17 @@ import type { Actions, PageServerLoad } from './$types';
 type Fields = z.output<typeof setPatientLimitForm>;
 type RangeFields = z.output<typeof prescribeRangeForm>;
 
-const NO_RANGE = { method: '', note: '' } as unknown as RangeFields;
+const NO_RANGE = {
+	hrMin: '',
+	hrMax: '',
+	rpeMin: '',
+	rpeMax: '',
+	method: '',
+	note: ''
+} as unknown as RangeFields;
 
 /** Nothing is chosen beforehand, least of all the last day. */
-const NOTHING = { key: '', reason: '', untilOn: '' } as unknown as Fields;
+const NOTHING = { key: '', value: '', reason: '', untilOn: '' } as unknown as Fields;
 
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => ({
@@ -38,22 +46,16 @@ export const actions: Actions = {
 		id: 'set',
 		schema: setPatientLimitForm,
 		async run(context, { value, ...fields }, event) {
-			if (value === undefined) {
-				throw invalidField('/value', m.limits_value_missing());
-			}
-			await setPatientLimit(context, idParam(event), { ...fields, value });
+			const number = setPatientLimitBody.shape.value.parse(numberOf(value));
+			await setPatientLimit(context, idParam(event), { ...fields, value: number });
 			return m.limits_patient_done();
 		}
 	}),
 	prescribe: formAction({
 		id: 'prescribe',
 		schema: prescribeRangeForm,
-		async run(context, { note, ...range }, event) {
-			const errors = rangeFaults(range).map(({ path, message }) => ({ pointer: `/${path}`, message }));
-			const [first] = errors;
-			if (first) {
-				throw new Problem('invalid', first.message, { errors });
-			}
+		async run(context, { note, method, ...typed }, event) {
+			const range = { ...endsOf(typed), method };
 			await prescribeRange(context, idParam(event), note === '' ? range : { ...range, note });
 			return m.limits_range_done();
 		}

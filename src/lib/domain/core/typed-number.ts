@@ -12,3 +12,15 @@ export function readNumber(text: string): TypedNumber {
 	}
 	return { kind: 'number', value: Number(trimmed.replace(',', '.')) };
 }
+
+/**
+ * The number of a text that was checked before; null for none.
+ * @throws where it is unreadable: taken for none it would quietly undo what somebody meant to set
+ */
+export function numberOf(text: string): number | null {
+	const read = readNumber(text);
+	if (read.kind === 'unreadable') {
+		throw new Error('A text that is no number was not checked.');
+	}
+	return read.kind === 'number' ? read.value : null;
+}
