@@ -47,7 +47,7 @@ describe('the form of an activity', () => {
 		expect(found.error?.issues[0]?.message).toContain(message);
 	});
 
-	it.each([
+	it.each<[Record<string, unknown> & { dose?: object }, string]>([
 		[{ dose: { minutes: [0, 7] } }, 'minutes is 0 to 7: it must run from more than 0 to at most 240'],
 		[{ dose: { timesADay: [3, 25] } }, 'timesADay is 3 to 25'],
 		[{ never: [] }, 'never is empty: it must have 1 to 8 lines'],
