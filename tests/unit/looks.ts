@@ -75,7 +75,11 @@ export const LOOKS: Record<string, Looks> = {
 	Person: { part: Person, props: { name: 'A', strand: 'medical', role: 'B' } },
 	ProblemNotice: { part: ProblemNotice, props: { problem: { title: 'A', text: 'B', signIn: true } } },
 	Progress: { part: Progress, props: { label: 'A' }, looks: { bare: either, value: [null, 1] } },
-	Reveal: { part: Reveal, props: { label: 'A', children }, looks: { printed: either } },
+	Reveal: {
+		part: Reveal,
+		props: { label: 'A', children },
+		looks: { printed: either, tone: ['plain', 'quiet', 'button'] }
+	},
 	Select: { part: Select, props: { options }, looks: { fit: either } },
 	Skeleton: { part: Skeleton },
 	SubNav: {

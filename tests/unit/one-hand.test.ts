@@ -217,6 +217,10 @@ describe('looks', () => {
 		).toEqual([]);
 	});
 
+	it('fold by the one part that shows what opens, and opens it on paper', () => {
+		expect(looked().filter((file) => OUTSIDE_UI(file) && /<details[\s>]/.test(sourceOf(file)))).toEqual([]);
+	});
+
 	/** Controls that one sees and that are not of `components/ui`, each with its reason. */
 	const OWN_CONTROLS: Record<string, string> = {
 		'src/lib/components/escalations/GradeChoice.svelte':
