@@ -16,6 +16,7 @@ import Input from '../../src/lib/components/ui/Input.svelte';
 import Link from '../../src/lib/components/ui/Link.svelte';
 import Notice from '../../src/lib/components/ui/Notice.svelte';
 import NumberControl from '../../src/lib/components/ui/NumberControl.svelte';
+import NumberField from '../../src/lib/components/ui/NumberField.svelte';
 import NumberPad from '../../src/lib/components/ui/NumberPad.svelte';
 import PageHead from '../../src/lib/components/ui/PageHead.svelte';
 import Person from '../../src/lib/components/ui/Person.svelte';
@@ -70,6 +71,7 @@ export const LOOKS: Record<string, Looks> = {
 		props: { id: 'a', text: '1', unit: 'mmHg', ontyped: () => {} },
 		looks: { size: ['dose', 'reading', 'sum'], stop: either }
 	},
+	NumberField: { part: NumberField, props: { label: 'A', value: '1', hint: 'B', unit: 'mmHg' } },
 	NumberPad: { part: NumberPad, props: { label: 'A', ondone: () => {} } },
 	PageHead: { part: PageHead, props: { children } },
 	Person: { part: Person, props: { name: 'A', strand: 'medical', role: 'B' } },
