@@ -58,7 +58,7 @@ test('too short: the field says its limit, nothing is sent, and what was typed s
 	const { posted, question, ask } = await formPage(page);
 	await question.fill('ab');
 	await ask.click();
-	await expect(page.getByText('Question: write at least 3 characters.')).toBeVisible();
+	await expect(page.getByText('Question has 2 characters, and the least is 3.')).toBeVisible();
 	await expect(question).toHaveAttribute('aria-invalid', 'true');
 	await expect(question).toHaveValue('ab');
 	expect(posted).toEqual([]);

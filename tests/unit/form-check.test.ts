@@ -57,15 +57,19 @@ describe('what is said in the browser before a form is sent', () => {
 			'current: The current password is empty.',
 			`next: The password has at least ${PASSWORD_MIN} characters.`
 		]);
-		expect(await said({ to: '', reason: '' }, decideLevelForm)).toEqual(['to: Choose a level from 1 to 6.']);
-		expect(await said({ to: '7', reason: '' }, decideLevelForm)).toEqual(['to: Choose a level from 1 to 6.']);
+		expect(await said({ to: '', reason: '' }, decideLevelForm)).toEqual([
+			'to: Level: choose one from 1 to 6.'
+		]);
+		expect(await said({ to: '7', reason: '' }, decideLevelForm)).toEqual([
+			'to: Level: choose one from 1 to 6.'
+		]);
 		expect(await said({ to: '6', reason: 'x'.repeat(1000) }, decideLevelForm)).toEqual([]);
 		expect(await said({ name: 'x'.repeat(61) }, createTokenBody)).toHaveLength(1);
 		const limit = { set: 'strict', key: LIMIT_KEYS[0], agreedBy: 'A. Lead', agreedOn: '3 12 2026' };
 		expect(await said({ ...limit, value: '120', agreedOn: '31 2 2026' }, changeUnitLimitForm)).toEqual([
 			'agreedOn: Agreed on: “31 2 2026” is no day; write one that exists, such as 14 12 2026.'
 		]);
-		expect(await said({ reason: '', id: 'any' }, refuseSignOffForm)).toHaveLength(1);
+		expect(await said({ reason: '', id: 'any' }, refuseSignOffForm)).toEqual(['reason: Reason is empty.']);
 	});
 });
 

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from '../core/codes';
-import { text } from '../core/fields';
+import { text, tooLong } from '../core/fields';
 
 export const PASSWORD_MIN = 15;
 export const PASSWORD_MAX = 128;
@@ -9,7 +9,7 @@ const email = z
 	.string('The e-mail address is a text.')
 	.trim()
 	.toLowerCase()
-	.max(254, 'The e-mail address has at most 254 characters.')
+	.max(254, tooLong('The e-mail address', 254))
 	.pipe(z.email('The e-mail address is not one like name@hospital.example.'));
 
 export const signInBody = z.strictObject({
@@ -18,12 +18,12 @@ export const signInBody = z.strictObject({
 		.trim()
 		.toLowerCase()
 		.min(1, 'The e-mail address is empty.')
-		.max(254, 'The e-mail address has at most 254 characters.'),
+		.max(254, tooLong('The e-mail address', 254)),
 	password: z
 		.string('The password is a text.')
 		.min(1, 'The password is empty.')
-		.max(1024, 'The password has at most 1024 characters.'),
-	code: z.string().max(20, 'The code has at most 20 characters.').optional()
+		.max(1024, tooLong('The password', 1024)),
+	code: z.string().max(20, tooLong('The code', 20)).optional()
 });
 
 /** A new password. Length is what counts; there are no rules on its composition and no expiry. */
@@ -34,7 +34,7 @@ export const newPassword = z
 		z
 			.string()
 			.min(PASSWORD_MIN, `The password has at least ${PASSWORD_MIN} characters.`)
-			.max(PASSWORD_MAX, `The password has at most ${PASSWORD_MAX} characters.`)
+			.max(PASSWORD_MAX, tooLong('The password', PASSWORD_MAX))
 			.refine((value) => new Set(value).size >= 5, 'The password repeats the same few characters.')
 	);
 
@@ -46,7 +46,7 @@ export const createAccountBody = z.strictObject({
 	name: text('The name', 100),
 	email,
 	role: z.enum(ROLES, 'Choose a role.'),
-	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').optional(),
+	phone: z.string().trim().max(30, tooLong('The telephone number', 30)).optional(),
 	units: z.array(z.string()).max(50, 'An account has at most 50 units.').default([])
 });
 
@@ -60,13 +60,16 @@ export const changePasswordForm = z.strictObject({
 	current: z
 		.string('The current password is a text.')
 		.min(1, 'The current password is empty.')
-		.max(1024, 'The current password has at most 1024 characters.'),
+		.max(1024, tooLong('The current password', 1024)),
 	next: newPassword
 });
 
 /** A deed about one row of a list. */
 export const idForm = z.strictObject({
-	id: z.string('The identifier is a text.').min(1, 'The identifier is empty.').max(64)
+	id: z
+		.string('The identifier is a text.')
+		.min(1, 'The identifier is empty.')
+		.max(64, tooLong('The identifier', 64))
 });
 
 /** The units that somebody belongs to. */

@@ -1,6 +1,7 @@
 /** The kinds of field that the bedside schemas are made of. Each message names field, value and what is allowed. */
 import { z } from 'zod';
 import { LEVELS } from '../core/codes';
+import { tooLong } from '../core/fields';
 import { BOUNDS, type BoundedField } from './bounds';
 
 /** What was sent, as far as it may be repeated in a message: short, and never a whole object. */
@@ -46,7 +47,7 @@ export function text(called: string, max: number) {
 		.string({ error: ({ input }) => `${called} is ${shown(input)}: it must be text.` })
 		.trim()
 		.min(1, { error: `${called} is empty: it must hold 1 to ${max} characters.` })
-		.max(max, { error: `${called} is too long: it may hold at most ${max} characters.` });
+		.max(max, tooLong(called, max));
 }
 
 /**

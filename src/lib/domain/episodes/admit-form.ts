@@ -4,7 +4,7 @@
  */
 import { z } from 'zod';
 import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
-import { text } from '../core/fields';
+import { text, tooLong } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { readDate, readTime } from '../core/typed-date';
 import { MESSAGE_LANGUAGES } from '../messages/templates/wording';
@@ -18,7 +18,7 @@ export type DrugAnswer = (typeof DRUG_ANSWERS)[number];
 
 /** A text that may be left empty. */
 export const line = (field: string, max: number) =>
-	z.string().trim().max(max, `${field} has at most ${max} characters.`).default('');
+	z.string().trim().max(max, tooLong(field, max)).default('');
 /** Stays a text: a browser may post anything, and what was posted is shown again. */
 const isIn = (list: readonly string[], value: string): boolean => list.includes(value);
 /** One of a list, and never none. */
@@ -39,14 +39,16 @@ export const typedDay = z.string().transform((typed) => readDate(typed) ?? typed
 /** What is no time stays as it was typed, too. */
 export const typedTime = z
 	.string()
-	.max(20, 'The time of the operation has at most 20 characters.')
+	.max(20, tooLong('The time of the operation', 20))
 	.transform((typed) => readTime(typed) ?? typed);
 
 /** Where somebody is by the clock, chosen from a list; empty for no choice. */
 const optionalZone = z
 	.string()
 	.default('')
-	.refine((value) => value === '' || isZone(value), { error: ({ input }) => noZone(input) });
+	.refine((value) => value === '' || isZone(value), {
+		error: ({ input }) => noZone(input, 'Time zone of the patient')
+	});
 
 export const admitForm = z
 	.object({
@@ -65,7 +67,7 @@ export const admitForm = z
 		language: known(MESSAGE_LANGUAGES, 'The language').default('en'),
 		/** Empty for what is on record, which for a new patient is the hospital's. */
 		zone: optionalZone,
-		unit: z.string().min(1, 'Unit: choose one.').max(64).default(''),
+		unit: z.string().min(1, 'Unit: choose one.').max(64, tooLong('Unit', 64)).default(''),
 		/** Empty for a gym; whether the unit has beds knows the server. */
 		bed: line('The bed', 12),
 		procedure: line('The procedure', 120),

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { CLOSE_REASONS, isOneOf, RHYTHMS, SEXES } from '../core/codes';
-import { text } from '../core/fields';
+import { text, tooLong } from '../core/fields';
 import { written } from './identifiers';
 import { contactBody, operation } from './operation';
 
@@ -40,7 +40,7 @@ const patient = z.strictObject({
 export const admitBody = z.strictObject({
 	patient,
 	operation: operation.optional(),
-	surgeonId: z.string().min(1, 'The surgeon is empty.').max(120).optional(),
+	surgeonId: z.string().min(1, 'The surgeon is empty.').max(120, tooLong('The surgeon', 120)).optional(),
 	unit,
 	/** Needed in a unit with beds; a gym has none. */
 	bed: bed.nullish(),
@@ -58,8 +58,8 @@ export type MoveInput = z.infer<typeof moveBody>;
 
 /** The move as a page asks for it; whether the unit has beds knows the server. */
 export const moveForm = z.object({
-	unit: z.string().min(1, 'The unit is empty: choose one.').max(64).default(''),
-	bed: z.string().trim().max(BED_MAX, `The bed has at most ${BED_MAX} characters.`).default(''),
+	unit: z.string().min(1, 'Unit: choose one.').max(64, tooLong('Unit', 64)).default(''),
+	bed: z.string().trim().max(BED_MAX, tooLong('The bed', BED_MAX)).default(''),
 	/** Asked where a call for help is open: whoever comes must not go to the old bed. */
 	toldHolder: z.boolean().default(false)
 });

@@ -66,7 +66,7 @@ describe('contactForm', () => {
 		expect(error?.issues).toMatchObject([
 			{
 				path: ['zone'],
-				message: `zone is '${zone}': it must be the name of a time zone such as Europe/Dublin.`
+				message: `Time zone of the patient is '${zone}': it must be the name of a time zone such as Europe/Dublin.`
 			}
 		]);
 	});

@@ -3,9 +3,9 @@ import { z } from 'zod';
 import { APPROACHES } from '../core/codes';
 import { text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
-import { instantOf, isLocalDate, isLocalTime, type Zone } from '../core/time';
+import { instantOf, isLocalDate, isLocalTime, isZone, type Zone } from '../core/time';
 import { chosen, line, typedDay, typedTime } from './admit-form';
-import { language, zone, type Contact, type RecordOperation } from './operation';
+import { language, noZone, type Contact, type RecordOperation } from './operation';
 
 /** Whether the record is put right, or gets a further operation. */
 export const OPERATION_DEEDS = ['corrects', 'further'] as const;
@@ -41,7 +41,10 @@ export const contactForm = z.object({
 	email: line('The e-mail address', 254),
 	mailConsent: z.boolean().default(false),
 	language: language.default('en'),
-	zone: zone.default('')
+	zone: z
+		.string()
+		.refine(isZone, { error: ({ input }) => noZone(input, 'Time zone of the patient') })
+		.default('')
 });
 export type ContactForm = z.output<typeof contactForm>;
 

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { APPROACHES } from '../core/codes';
-import { text } from '../core/fields';
+import { text, tooLong } from '../core/fields';
 import { isZone } from '../core/time';
 
 /** The parts of an operation's record that can be corrected. */
@@ -35,9 +35,9 @@ export const recordOperationBody = operation.extend({
 export type RecordOperation = z.infer<typeof recordOperationBody>;
 
 /** What is said of a zone that nobody knows. */
-export function noZone(value: unknown): string {
+export function noZone(value: unknown, called = 'zone'): string {
 	const shown = typeof value === 'string' ? `'${value.slice(0, 60)}'` : 'no text';
-	return `zone is ${shown}: it must be the name of a time zone such as Europe/Dublin.`;
+	return `${called} is ${shown}: it must be the name of a time zone such as Europe/Dublin.`;
 }
 
 /** Where a patient is by the clock, by the name of the time zone database. */
@@ -50,7 +50,7 @@ export const language = z.string().regex(/^[a-z]{2}(-[A-Z]{2})?$/, 'The language
 
 /** The number, language, zone and consent by which a patient is reached; what is left out stays as it is. */
 export const contactBody = z.strictObject({
-	phone: z.string().trim().max(30, 'The telephone number has at most 30 characters.').nullish(),
+	phone: z.string().trim().max(30, tooLong('The telephone number', 30)).nullish(),
 	language: language.optional(),
 	smsConsent: z.boolean('The consent to text messages is true or false.').optional(),
 	email: z.email('The e-mail address is one address, such as name@post.example.').max(254).nullish(),

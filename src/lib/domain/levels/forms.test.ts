@@ -19,5 +19,5 @@ it('a form that was sent before a level was chosen chooses none', async () => {
 	posted.set('reason', 'Strong.');
 	const form = await superValidate(posted, zod4(decideLevelForm));
 	expect(form.valid).toBe(false);
-	expect(form.errors.to).toEqual(['Choose a level from 1 to 6.']);
+	expect(form.errors.to).toEqual(['Level: choose one from 1 to 6.']);
 });

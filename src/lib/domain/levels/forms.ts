@@ -1,7 +1,7 @@
 /** The bodies and forms by which a level is decided and a sign-off is given. */
 import { z } from 'zod';
 import { LEVELS } from '../core/codes';
-import { reason } from '../core/fields';
+import { reason, tooLong } from '../core/fields';
 
 const level = z.literal([...LEVELS], 'to is a whole number from 1 to 6.');
 
@@ -14,10 +14,10 @@ export type DecideLevel = z.output<typeof decideLevelBody>;
  * was chosen, and nobody means level 1 by pressing too early.
  */
 export const decideLevelForm = z.strictObject({
-	to: z.string().regex(/^[1-6]$/, 'Choose a level from 1 to 6.'),
-	reason: z.string().trim().max(1000, 'reason has at most 1000 characters.').default('')
+	to: z.string().regex(/^[1-6]$/, 'Level: choose one from 1 to 6.'),
+	reason: z.string().trim().max(1000, tooLong('Reason', 1000)).default('')
 });
 
 export const refuseSignOffBody = z.strictObject({ reason: reason('reason') });
 /** What a form asks for: which sign-off it is travels beside it, and is not typed. */
-export const refuseSignOffForm = z.object(refuseSignOffBody.shape);
+export const refuseSignOffForm = z.object({ reason: reason('Reason') });

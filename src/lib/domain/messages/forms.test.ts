@@ -9,7 +9,7 @@ describe('calculateSmsBody', () => {
 	it.each([
 		[{}, 'text is missing or no text.'],
 		[{ text: 5 }, 'text is missing or no text.'],
-		[{ text: 'x'.repeat(10_001) }, 'text has at most 10000 characters.']
+		[{ text: 'x'.repeat(10_001) }, 'text has 10001 characters, and the limit is 10000.']
 	])('refuses %j', (body, message) => {
 		expect(calculateSmsBody.safeParse(body).error?.issues[0]).toMatchObject({ path: ['text'], message });
 	});
@@ -25,7 +25,7 @@ describe('phoneField', () => {
 		['nobody', "phone: 'nobody' is not a telephone number: write digits"],
 		['861234567', "phone: '861234567' is not a telephone number: begin with +"],
 		[undefined, 'phone is missing or no text.'],
-		['0'.repeat(41), 'phone has at most 40 characters.']
+		['0'.repeat(41), 'phone has 41 characters, and the limit is 40.']
 	])('refuses %j', (value, message) => {
 		expect(phoneField().safeParse(value).error?.issues[0]?.message).toContain(message);
 	});

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { z } from 'zod';
 import { HOUR, addDays } from '../core/time';
-import { bookVisitsBody, startProblem, visitForm, visitMoveBody } from './forms';
+import { bookVisitsBody, startProblem, visitMoveBody } from './forms';
 
 const SINGLE = { startsAt: '2025-03-28T10:00:00Z', minutes: 60, place: 'East Gym' };
 const SERIES = {
@@ -101,14 +101,6 @@ describe('bookVisitsBody', () => {
 	it('can be described as JSON Schema', () => {
 		const described = z.toJSONSchema(bookVisitsBody, { io: 'input' });
 		expect(Object.keys(described.properties ?? {})).toEqual(['startsAt', 'minutes', 'place', 'series']);
-	});
-});
-
-describe('visitForm', () => {
-	it('reads local date and time', () => {
-		const form = { date: '2025-03-28', time: '10:00', minutes: 60, place: 'East Gym' };
-		expect(visitForm.parse(form)).toEqual(form);
-		expect(refusal(visitForm, { ...form, date: '28.3.2025' })).toContain('date is "28.3.2025"');
 	});
 });
 

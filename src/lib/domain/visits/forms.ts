@@ -91,10 +91,6 @@ export const bookVisitsBody = z
 		};
 	});
 
-/** One visit as the page asks for it, in the hospital's local time. */
-export const visitForm = z.strictObject({ date: localDate('date'), time: localTime, minutes, place });
-export type VisitForm = z.infer<typeof visitForm>;
-
 /** Body of `POST /api/visits/:id/move`: the new start, and what else changes. */
 export const rescheduleBody = z.strictObject({
 	startsAt: startsAt.transform(parseRfc3339),

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { text } from '../core/fields';
+import { text, tooLong } from '../core/fields';
 import { STERNUM_FINDINGS, WOUND_FINDINGS } from './codes';
 
 const fields = z.strictObject({
@@ -17,9 +17,9 @@ export type WoundNoteInput = z.infer<typeof woundNoteBody>;
 
 /** The same as a page posts it: what was not looked at is empty. */
 export const woundNoteForm = z.strictObject({
-	wound: z.enum(['', ...WOUND_FINDINGS]),
-	sternum: z.enum(['', ...STERNUM_FINDINGS]),
-	note: z.string().trim().max(500, 'The note is longer than 500 characters.')
+	wound: z.enum(['', ...WOUND_FINDINGS], 'Wound: choose one.'),
+	sternum: z.enum(['', ...STERNUM_FINDINGS], 'Breastbone: choose one.'),
+	note: z.string().trim().max(500, tooLong('In words', 500))
 });
 export type WoundNoteFields = z.infer<typeof woundNoteForm>;
 

@@ -4,6 +4,7 @@ import { limitFault } from '$lib/domain/bedside/limits/ranges';
 import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
 import { addDays, localDateOf } from '$lib/domain/core/time';
 import type { SetPatientLimit } from '$lib/domain/limits/forms';
+import { longDay } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { threadForDeed } from '../access/thread';
@@ -109,7 +110,7 @@ async function checkValue(
 	const own = layers.patient.filter((limit) => limit.key === key);
 	const newDay = own.length > 0 && own.every((limit) => limit.untilOn !== untilOn);
 	if (holds && directionOf(holds, value) === null && !newDay) {
-		throw invalidField('/value', `value is ${value}: that is what ${key} is already.`);
+		throw invalidField('/value', m.limits_problem_holds({ value }));
 	}
 	return holds?.value ?? null;
 }
@@ -118,7 +119,8 @@ function checkDay(untilOn: string, now: number): void {
 	const today = localDateOf(now, env().hospital.zone);
 	const last = addDays(today, PATIENT_LIMIT_MAX_DAYS);
 	if (untilOn < today || untilOn > last) {
-		throw invalidField('/untilOn', `untilOn is ${untilOn}: it must lie between ${today} and ${last}.`);
+		const days = { day: longDay(untilOn), first: longDay(today), last: longDay(last) };
+		throw invalidField('/untilOn', m.limits_problem_until(days));
 	}
 }
 

@@ -6,6 +6,8 @@ import { invalidField } from '$lib/domain/core/errors';
 import { localDateOf } from '$lib/domain/core/time';
 import type { ChangeUnitLimit, ChooseUnitSet } from '$lib/domain/limits/forms';
 import type { LiveEvent } from '$lib/domain/live/events';
+import { longDay } from '$lib/format';
+import { m } from '$lib/i18n/paraglide/messages';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, unitLimitChanges } from '../db/schema';
@@ -13,6 +15,12 @@ import { env } from '../env';
 import { newId } from '../ids';
 import { write, type Change, type Written } from '../write';
 import { unitLimitsOf } from './queries';
+
+const SET_WORDS: Record<SetName, () => string> = {
+	strict: m.home_rules_set_strict,
+	guideline: m.home_rules_set_guideline,
+	outpatient: m.home_rules_set_outpatient
+};
 
 export interface Numbered {
 	id: string;
@@ -39,7 +47,8 @@ export function changeUnitLimit(
 		}
 		const holds = limitsOfUnit(set, changes).limits[key];
 		if (value === null ? holds?.local !== true : holds?.value === value) {
-			throw invalidField('/value', `value is ${value ?? 'the default'}: that is what ${key} is already.`);
+			const same = value === null ? m.limits_problem_default() : m.limits_problem_holds({ value });
+			throw invalidField('/value', same);
 		}
 		const detail = { set, key, value, was: holds?.value ?? null };
 		return changed(tx, context, unitId, input, 'unit.limit-changed', detail);
@@ -57,7 +66,7 @@ export function chooseUnitSet(
 		refuseFutureDay(input.agreedOn, context.now);
 		const was = setOfUnit(changes, 'inpatient');
 		if (was === input.set) {
-			throw invalidField('/set', `set is ${input.set}: that is what judges this unit already.`);
+			throw invalidField('/set', m.limits_problem_set({ set: SET_WORDS[was]() }));
 		}
 		return changed(tx, context, unitId, input, 'unit.limit-set-chosen', { set: input.set, was });
 	});
@@ -106,6 +115,9 @@ export async function patientsOf(tx: Tx, unitId: string): Promise<LiveEvent[]> {
 export function refuseFutureDay(agreedOn: string, now: number): void {
 	const today = localDateOf(now, env().hospital.zone);
 	if (agreedOn > today) {
-		throw invalidField('/agreedOn', `agreedOn is ${agreedOn}: it must not lie after today, ${today}.`);
+		throw invalidField(
+			'/agreedOn',
+			m.limits_problem_agreed({ day: longDay(agreedOn), today: longDay(today) })
+		);
 	}
 }

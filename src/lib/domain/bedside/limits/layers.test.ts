@@ -187,7 +187,7 @@ describe('the range of a limit', () => {
 		const { low, high } = rangeOf(key);
 		expect([limitFault(key, low), limitFault(key, high)]).toEqual([null, null]);
 		expect(limitFault(key, low - 0.1)).toContain(
-			`value is ${low - 0.1}: ${key} must be a number from ${low}`
+			`New value: ${low - 0.1} cannot be taken; write a number from ${low}`
 		);
 		expect(limitFault(key, high + 0.1)).toContain(`to ${high}.`);
 	});

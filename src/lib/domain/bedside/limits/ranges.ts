@@ -41,10 +41,10 @@ export function rangeOf(key: LimitKey): Range {
 	return range;
 }
 
-/** What is wrong with a number for this limit, naming field, value and range; null when nothing is. */
+/** What is wrong with a number for this limit, naming the field by its label, value and range; null when nothing is. */
 export function limitFault(key: LimitKey, value: number): string | null {
 	const { low, high } = rangeOf(key);
 	return value >= low && value <= high
 		? null
-		: `value is ${value}: ${key} must be a number from ${low} to ${high}.`;
+		: `New value: ${value} cannot be taken; write a number from ${low} to ${high}.`;
 }

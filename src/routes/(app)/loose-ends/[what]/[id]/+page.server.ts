@@ -4,7 +4,7 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import type { Person } from '$lib/domain/access/actor';
 import { notFound } from '$lib/domain/core/errors';
 import { emptyBody } from '$lib/domain/escalations/forms';
-import { settleTextBody } from '$lib/domain/messages/forms';
+import { settleTextForm } from '$lib/domain/messages/forms';
 import { routes } from '$lib/routes';
 import { formAction } from '$lib/server/http/form-action';
 import { idParam } from '$lib/server/http/param';
@@ -19,7 +19,7 @@ export const load: PageServerLoad = (event) =>
 		return {
 			seeTo: await seeToOf(actor, whatOf(event.params), idParam(event), now),
 			messageForm: await superValidate(zod4(emptyBody)),
-			textForm: await superValidate(zod4(settleTextBody)),
+			textForm: await superValidate(zod4(settleTextForm)),
 			key: newFormKey()
 		};
 	});
@@ -40,7 +40,7 @@ export const actions: Actions = {
 		}
 	}),
 	text: formAction({
-		schema: settleTextBody,
+		schema: settleTextForm,
 		run: async (context, fields, event) => {
 			await settleInbound(context, idParam(event), fields);
 			redirect(303, routes.looseEnds());

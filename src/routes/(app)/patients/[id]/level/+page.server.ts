@@ -4,7 +4,7 @@ import type { z } from 'zod';
 import { idForm } from '$lib/domain/accounts/forms';
 import { LEVELS } from '$lib/domain/core/codes';
 import { invalidField } from '$lib/domain/core/errors';
-import { decideLevelForm, refuseSignOffBody } from '$lib/domain/levels/forms';
+import { decideLevelForm, refuseSignOffForm } from '$lib/domain/levels/forms';
 import { m } from '$lib/i18n/paraglide/messages';
 import { formAction } from '$lib/server/http/form-action';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
@@ -14,7 +14,7 @@ import { refuseToSign, sign } from '$lib/server/levels/sign-off';
 import { read } from '$lib/server/read';
 import type { Actions, PageServerLoad } from './$types';
 
-const refuseForm = refuseSignOffBody.extend({ id: idForm.shape.id });
+const refuseForm = refuseSignOffForm.extend({ id: idForm.shape.id });
 type Fields = z.output<typeof decideLevelForm>;
 
 export const load: PageServerLoad = (event) =>

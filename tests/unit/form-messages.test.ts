@@ -1,0 +1,126 @@
+import { describe, expect, it } from 'vitest';
+import { ZodObject, type ZodType } from 'zod';
+import {
+	createAccountBody,
+	createTokenBody,
+	createUnitBody,
+	firstAdminBody
+} from '$lib/domain/accounts/forms';
+
+/** Every schema that a page checks a form with: by its name, and the bodies that serve as forms, too. */
+function forms(): [string, ZodObject][] {
+	const modules = import.meta.glob<Record<string, unknown>>(
+		[
+			'/src/lib/domain/**/*form*.ts',
+			'/src/lib/components/**/*forms.ts',
+			'/src/routes/style/form/schema.ts',
+			'!**/*.test.ts'
+		],
+		{ eager: true }
+	);
+	const named = Object.values(modules)
+		.flatMap((module) => Object.entries(module))
+		.filter((entry): entry is [string, ZodObject] => /Form$/.test(entry[0]) && entry[1] instanceof ZodObject);
+	return [
+		...named,
+		...Object.entries({ createAccountBody, createTokenBody, createUnitBody, firstAdminBody })
+	];
+}
+
+/** What a page may post into any field: nothing, a word of no list, too much, lines of it, no number, no day. */
+const POSTED = [
+	'',
+	'  ',
+	'none of these',
+	'1e',
+	'31 2 2026',
+	'x'.repeat(30_000),
+	'x\n'.repeat(15_000),
+	'\u0007'
+];
+
+/** Fields that nobody types: a page's own program fills them in, or they are boxes to tick. */
+const NOT_TYPED = [
+	'toldInPerson',
+	'sessionId',
+	'threadId',
+	'neededInMinutes',
+	'etaMinutes',
+	'shown',
+	'language',
+	'kind',
+	'units'
+];
+
+interface Said {
+	where: string;
+	typed: string;
+	tooLong: boolean;
+	message: string;
+}
+
+function said(): Said[] {
+	return forms().flatMap(([name, { shape }]) =>
+		Object.entries(shape)
+			.filter(([field]) => !NOT_TYPED.includes(field))
+			.flatMap(([field, schema]) =>
+				POSTED.flatMap((typed) => {
+					const issues = (schema as ZodType).safeParse(typed).error?.issues ?? [];
+					return issues.map((issue) => ({
+						where: `${name}.${field}`,
+						typed,
+						tooLong: issue.code === 'too_big' && issue.origin === 'string',
+						message: issue.message
+					}));
+				})
+			)
+	);
+}
+
+/** Boxes and lists of boxes get no text from a page. */
+const NO_TEXT = /^Invalid input: expected (boolean|array)/;
+
+/** Whether a sentence begins like one, holds no name of the code, and is none of the library's own. */
+function byWords({ message }: Said): boolean {
+	// What was typed is repeated as it was, between its marks.
+	const own = message.replace(/“[^”]*”|'[^']*'/g, '');
+	return (
+		/^\p{Lu}/u.test(own) &&
+		!/\b[a-z]+[A-Z]\w*\b/.test(own) &&
+		!/^(Invalid|Too (big|small)|Unrecognized)/.test(own)
+	);
+}
+
+const SAID = said();
+
+const lineOf = ({ where, message }: Said) => `${where}: ${message}`;
+
+describe('what forms say', () => {
+	it('is looked at in all of them', () => {
+		expect(forms().length).toBeGreaterThan(20);
+		expect(SAID.length).toBeGreaterThan(100);
+	});
+
+	it.each(['agreedBy is empty.', 'note is empty.', 'Clinical lead: agreedBy is empty.', 'Invalid input'])(
+		'is not by words: %s',
+		(message) => {
+			expect(byWords({ where: '', typed: '', tooLong: false, message })).toBe(false);
+		}
+	);
+
+	it('names a field by words, never by its key', () => {
+		const wrong = SAID.filter((each) => !NO_TEXT.test(each.message) && !byWords(each));
+		expect(wrong.map(lineOf)).toEqual([]);
+	});
+
+	it('tells of a text that is too long how long it is, and the limit', () => {
+		const long = SAID.filter(({ tooLong }) => tooLong);
+		expect(long.length).toBeGreaterThan(20);
+		const wrong = long.filter(({ message, typed }) => {
+			const told = /has (\d+) characters, and the limit is \d+\.$/.exec(message)?.[1];
+			// Most texts are counted without the blanks at their ends.
+			return ![typed.length, typed.trim().length].includes(Number(told));
+		});
+		expect(wrong.map(lineOf)).toEqual([]);
+	});
+});
