@@ -1,6 +1,7 @@
 import ChevronUp from '@lucide/svelte/icons/chevron-up';
 import { createRawSnippet, type Component } from 'svelte';
 import { render } from 'svelte/server';
+import Aside from '../../src/lib/components/ui/Aside.svelte';
 import Badge from '../../src/lib/components/ui/Badge.svelte';
 import Button from '../../src/lib/components/ui/Button.svelte';
 import Check from '../../src/lib/components/ui/Check.svelte';
@@ -40,6 +41,7 @@ const options = [{ value: 'a', label: 'A', hint: 'first' }];
 type Looks = { part: unknown; props?: object; looks?: Record<string, readonly unknown[]> };
 
 export const LOOKS: Record<string, Looks> = {
+	Aside: { part: Aside, props: { children }, looks: { tone: ['ink', 'doubt', 'hemp', 'rule', 'stop'] } },
 	Badge: { part: Badge, props: { children }, looks: { variant: ['plain', 'strong', 'hemp'] } },
 	Button: {
 		part: Button,

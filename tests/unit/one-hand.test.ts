@@ -193,11 +193,8 @@ describe('looks', () => {
 
 	/** Hemp is too pale by day to say anything by itself (2.4:1): it decorates beside words, in these places alone. */
 	const DECORATED = [
-		'src/lib/components/accounts/SignInAndSend.svelte',
-		'src/lib/components/escalations/FillIn.svelte',
-		'src/lib/components/loose-ends/SeeTo.svelte',
 		'src/lib/components/patient-page/PatientShell.svelte',
-		'src/lib/components/patient/SessionSummary.svelte',
+		'src/lib/components/ui/Aside.svelte',
 		'src/lib/components/ui/Badge.svelte',
 		'src/lib/components/ui/Notice.svelte'
 	];
@@ -215,6 +212,10 @@ describe('looks', () => {
 		expect(
 			looked().filter((file) => OUTSIDE_UI(file) && /(?<![\w/])underline\b/.test(sourceOf(file)))
 		).toEqual([]);
+	});
+
+	it('set words apart by the one line beside them', () => {
+		expect(looked().filter((file) => OUTSIDE_UI(file) && /\bborder-l\b/.test(sourceOf(file)))).toEqual([]);
 	});
 
 	it('fold by the one part that shows what opens, and opens it on paper', () => {

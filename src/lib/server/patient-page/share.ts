@@ -39,9 +39,13 @@ export function sendPage(
 	return write(context, 'visit.plan', async (tx) => {
 		const episode = await accessEpisode(tx, context.actor, episodeId, 'visit.plan');
 		if (!takesVisits(episode)) {
-			throw new Problem('wrong-state', 'The episode is closed and its visits are over: no link can be sent.', {
-				state: 'closed'
-			});
+			throw new Problem(
+				'wrong-state',
+				'The episode is closed and its visits are over: no link can be sent.',
+				{
+					state: 'closed'
+				}
+			);
 		}
 		const patient = await patientOfEpisode(tx, episodeId);
 		refuseWithoutConsent(patient, way);
