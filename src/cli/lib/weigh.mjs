@@ -68,7 +68,8 @@ export function pagesOf(source) {
 		[...dictionary.matchAll(/"([^"]+)": \[~?(\d+)(?:,\[([\d,]*)\])?/g)].map(
 			([, page, node, layouts = '']) => [
 				page,
-				[0, ...layouts.split(',').filter(Boolean).map(Number), Number(node)]
+				// The first is around every page, the second is the page of errors, which the start fetches as well.
+				[0, 1, ...layouts.split(',').filter(Boolean).map(Number), Number(node)]
 			]
 		)
 	);

@@ -12,10 +12,10 @@ describe('the weight of a page', () => {
 			"/(patient)/p/[token]": [~36,[4],[5]]
 		};`;
 		expect(pagesOf(source)).toEqual({
-			'/(public)': [0, 38],
-			'/(app)/loose-ends': [0, 2, 16],
-			'/(app)/patients/[id]': [0, 2, 3, 18],
-			'/(patient)/p/[token]': [0, 4, 36]
+			'/(public)': [0, 1, 38],
+			'/(app)/loose-ends': [0, 1, 2, 16],
+			'/(app)/patients/[id]': [0, 1, 2, 3, 18],
+			'/(patient)/p/[token]': [0, 1, 4, 36]
 		});
 	});
 
