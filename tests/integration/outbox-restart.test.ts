@@ -176,10 +176,13 @@ describe('a worker that is killed', () => {
 			const id = await abandoned();
 			for (let kill = 0; kill < 3; kill += 1) {
 				sms.hold();
-				worker().start();
+				const killed = worker();
+				killed.start();
 				while (sms.sent.length === 0) {
 					await new Promise((resolve) => setImmediate(resolve));
 				}
+				// It claims nothing more, as after SIGKILL; what hangs at the gateway is not waited for.
+				void killed.stop();
 				sms = new ScriptedChannel();
 			}
 			await restarted();
