@@ -13,7 +13,7 @@ export const load: PageServerLoad = (event) =>
 		const [me, tokens] = await Promise.all([meOf(context.actor), tokensOf(context)]);
 		return {
 			me: me.user,
-			tokens: tokens.map((token) => ({ ...token, key: newFormKey() })),
+			tokens,
 			password: await superValidate<{ current: string; next: string }, string>(zod4(changePasswordForm), {
 				id: 'password'
 			}),

@@ -1,0 +1,14 @@
+import { render } from 'svelte/server';
+import { expect, it } from 'vitest';
+import RowAction from './RowAction.svelte';
+
+function keyOf(id?: string): string | undefined {
+	const props = { action: '?/revoke', key: 'page-key', label: 'Revoke', ...(id === undefined ? {} : { id }) };
+	return /name="key" value="([^"]*)"/.exec(render(RowAction, { props }).body)?.[1];
+}
+
+it('is one write for each row of a page, and always the same for the same row', () => {
+	expect(keyOf('a')).not.toBe(keyOf('b'));
+	expect(keyOf('a')).toBe(keyOf('a'));
+	expect(keyOf()).toBe('page-key');
+});
