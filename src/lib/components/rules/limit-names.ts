@@ -1,14 +1,8 @@
-/** What sets and limits are called, apart from what is known of their sources. */
-import { RULE_IDS, SETS, type LimitKey, type RuleId, type SetName } from '$lib/domain/bedside/codes';
+/** What limits are called, apart from what is known of their sources. */
+import { RULE_IDS, SETS, type LimitKey, type RuleId } from '$lib/domain/bedside/codes';
 import { DEFAULT_LIMITS } from '$lib/domain/bedside/limits/table';
 import { m } from '$lib/i18n/paraglide/messages';
 import { RULE_NAMES } from '$lib/i18n/rules';
-
-export const SET_WORDS: Record<SetName, () => string> = {
-	strict: m.home_rules_set_strict,
-	guideline: m.home_rules_set_guideline,
-	outpatient: m.home_rules_set_outpatient
-};
 
 const MEANINGS: Record<string, () => string> = {
 	'': m.home_rules_stop,

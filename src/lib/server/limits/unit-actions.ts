@@ -8,6 +8,7 @@ import type { ChangeUnitLimit, ChooseUnitSet } from '$lib/domain/limits/forms';
 import type { LiveEvent } from '$lib/domain/live/events';
 import { longDay } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
+import { SET_WORDS } from '$lib/i18n/sets';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
 import { episodes, unitLimitChanges } from '../db/schema';
@@ -15,12 +16,6 @@ import { env } from '../env';
 import { newId } from '../ids';
 import { write, type Change, type Written } from '../write';
 import { unitLimitsOf } from './queries';
-
-const SET_WORDS: Record<SetName, () => string> = {
-	strict: m.home_rules_set_strict,
-	guideline: m.home_rules_set_guideline,
-	outpatient: m.home_rules_set_outpatient
-};
 
 export interface Numbered {
 	id: string;
