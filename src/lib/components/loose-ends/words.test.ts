@@ -31,7 +31,9 @@ const ago = (ms: number) => new Date(NOW - ms).toISOString();
 
 describe('waitWords', () => {
 	it.each<[LooseEnd, string]>([
-		[end('escalation', { since: ago(106_000) }), '1 min 46 s, nobody has it yet'],
+		[end('escalation', { since: ago(106_000), heldBy: null }), '1 min 46 s, nobody has it yet'],
+		// Who took it did not come, so somebody else is sought: it is not that nobody has it.
+		[end('escalation', { since: ago(8 * MINUTE) }), '8 min, taken by R. Ferris, who is not there'],
 		[end('escalation-taken', { since: ago(5 * MINUTE) }), 'taken 5 min ago'],
 		[end('clearance'), '40 min'],
 		[end('clearance', { since: ago(59_999) }), 'just now'],

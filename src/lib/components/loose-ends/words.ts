@@ -12,7 +12,9 @@ export function waitWords(end: LooseEnd, reader: Reader): string {
 	const open = reader.now - Date.parse(end.since);
 	switch (end.kind) {
 		case 'escalation':
-			return m.home_wait_untaken({ time: duration(open, reader.locale) });
+			return end.heldBy
+				? m.home_wait_absent({ name: end.heldBy, time: duration(open, reader.locale) })
+				: m.home_wait_untaken({ time: duration(open, reader.locale) });
 		case 'arrival':
 		case 'confirm':
 			return m.home_wait_answer({ time: duration(open, reader.locale) });
