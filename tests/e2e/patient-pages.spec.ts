@@ -88,21 +88,41 @@ test('what is typed into a thread survives a reload, and what went out without a
 	await page.reload();
 	await expect(field(page)).toHaveValue('Half a sentence');
 
-	// It arrives, but the answer never comes back.
-	await page.route(`**${thread}?/post`, async (route) => {
-		await route.fetch();
-		await route.abort();
-	});
-	await field(page).press('Control+Enter');
-	await expect(page.getByText('No answer: this may not have arrived')).toBeVisible();
+	await sendAndLoseTheAnswer(page);
 	await expect(field(page)).toHaveValue('Half a sentence');
-	await page.unroute(`**${thread}?/post`);
 	await page.reload();
 	await expect(field(page)).toHaveValue('Half a sentence');
 	await page.getByRole('button', { name: 'Send' }).click();
 	await expect(field(page)).toHaveValue('');
 	await expect(page.getByText('Half a sentence')).toHaveCount(1);
 });
+
+test('what is changed in a thread after it went out without an answer is another entry', async ({
+	browser
+}) => {
+	const page = await pageOf(browser, 'nurse', { viewport: PHONE });
+	await page.goto(await referred());
+	await expectConnected(page);
+	await field(page).fill('Ate half.');
+	await sendAndLoseTheAnswer(page);
+	await field(page).fill('Ate nothing.');
+	await page.getByRole('button', { name: 'Send' }).click();
+	await expect(field(page)).toHaveValue('');
+	await expect(page.getByText('Ate half.')).toHaveCount(1);
+	await expect(page.getByText('Ate nothing.')).toHaveCount(1);
+});
+
+/** What is typed arrives, but the answer never comes back. */
+async function sendAndLoseTheAnswer(page: Page): Promise<void> {
+	const posting = `**${new URL(page.url()).pathname}?/post`;
+	await page.route(posting, async (route) => {
+		await route.fetch();
+		await route.abort();
+	});
+	await field(page).press('Control+Enter');
+	await expect(page.getByText('No answer: this may not have arrived')).toBeVisible();
+	await page.unroute(posting);
+}
 
 test('a thread of several pages opens at its end and marks what arrives', async ({ browser }) => {
 	test.setTimeout(120_000);
