@@ -30,7 +30,7 @@ test.afterAll(() => product?.stop());
 /** What was found at pages, by their names; nothing for a page that is as it should be. */
 type Faults = Record<string, string[]>;
 
-/** What a page says that is new to it: `none` if this person is not let in, or it says the same as one before. */
+/** What the page at that address says to this person; null where they are not let in. */
 async function wordsFor(page: Page, address: string): Promise<string | null> {
 	const answer = await page.context().request.get(product.url + address, { maxRedirects: 0 });
 	return answer.status() === 200 ? wordsOfMain(await answer.text()) : null;

@@ -20,20 +20,20 @@ const CLIENT = '.svelte-kit/output/client';
 const FIRST = '/(app)/loose-ends';
 
 /**
- * What each page loads before it can be used: what is fetched later, once somebody comes to it, is not counted. The
- * patient's page is: it sends no script, though the build has some for it.
+ * What each page loads before it can be used; what is fetched later, once somebody comes to it, is not counted. The
+ * patient's own page is weighed too, although it sends none of the script that the build has for it.
  * @param {Manifest} manifest
  * @param {Pages} pages
  * @param {(file: string) => number} kibOf
  * @returns {Weight[]}
  */
 export function weightsOf(manifest, pages, kibOf) {
+	const start = Object.keys(manifest).find((source) => source.endsWith('/client/entry.js')) ?? 'the start';
 	return Object.entries(pages).map(([page, nodes]) => {
 		const files = new Set();
-		const start = Object.keys(manifest).find((source) => source.endsWith('/client/entry.js'));
 		const sources = [start, `${GENERATED}/app.js`, ...nodes.map((node) => `${GENERATED}/nodes/${node}.js`)];
 		for (const source of sources) {
-			add(manifest, source ?? 'entry', files);
+			add(manifest, source, files);
 		}
 		const kib = [...files].reduce((sum, file) => sum + kibOf(file), 0);
 		const inside = page.startsWith('/(app)/') && page !== FIRST;

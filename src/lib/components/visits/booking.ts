@@ -19,7 +19,10 @@ import type { VisitItem } from '$lib/domain/visits/views';
 import { day, dayToType } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 
-/** What the fields hold, days, times and numbers as they were typed; `date` is the day of a single visit, or the day from which a series counts. */
+/**
+ * What the fields hold, days, times and numbers as they were typed; `date` is the day of a single visit, or the day
+ * from which a series counts.
+ */
 export interface BookingDraft {
 	kind: 'single' | 'series';
 	date: string;
