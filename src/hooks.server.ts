@@ -1,6 +1,7 @@
 import { error, redirect, type Handle, type HandleServerError, type ServerInit } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 import { Problem } from '$lib/domain/core/errors';
+import { m } from '$lib/i18n/paraglide/messages';
 import { baseLocale } from '$lib/i18n/paraglide/runtime';
 import { paraglideMiddleware } from '$lib/i18n/paraglide/server';
 import { routes } from '$lib/routes';
@@ -139,5 +140,5 @@ export const handleError: HandleServerError = ({ error: thrown, event, status, m
 	}
 	const id = event.locals.requestId ?? newId();
 	log().error({ id, route: event.route.id, err: thrown }, 'request failed');
-	return { message: 'Something went wrong on our side. Nothing was changed.', id };
+	return { message: m.common_error_ours(), id };
 };

@@ -185,7 +185,7 @@ async function askedOf(begins: string): Promise<unknown[]> {
 /** A person on the page that refers this patient. */
 async function refers(browser: Browser) {
 	const { page, context, complaints } = await seat(browser, product.url, 'surgeon', PHONE);
-	return { page, context, complaints, question: page.getByLabel('What do you ask?') };
+	return { page, context, complaints, question: page.getByLabel('What you ask') };
 }
 
 test('refer: an empty question is named beside its field before anything is sent', async ({ browser }) => {
@@ -198,7 +198,7 @@ test('refer: an empty question is named beside its field before anything is sent
 	await page.waitForLoadState('networkidle');
 	await expect(question).toHaveValue(' '.repeat(3));
 	await page.getByRole('button', { name: 'Refer', exact: true }).click();
-	await expect(page.getByText('Question is empty.')).toBeVisible();
+	await expect(page.getByText('What you ask is empty.')).toBeVisible();
 	await expect(question).toBeFocused();
 	expect(posted).toEqual([]);
 	expect(complaints).toEqual([]);

@@ -44,9 +44,9 @@ test('without script: refer, accept, talk, ask, decide, and see who was faster',
 	await surgeon.goto(`/patients/${episodeId}/refer`);
 	await surgeon.getByRole('radio', { name: 'Speech therapy' }).check();
 	await surgeon.getByRole('button', { name: 'Refer' }).click();
-	await expect(alerts(surgeon)).toHaveText('Question is empty.');
+	await expect(alerts(surgeon)).toHaveText('What you ask is empty.');
 	await expect(surgeon.getByRole('radio', { name: 'Speech therapy' })).toBeChecked();
-	await surgeon.getByLabel(/What do you ask/).fill('Voice is weak. Please look.');
+	await surgeon.getByLabel(/What you ask/).fill('Voice is weak. Please look.');
 	await surgeon.getByRole('button', { name: 'Refer' }).click();
 	await expect(surgeon).toHaveURL(/threads/);
 
@@ -62,7 +62,7 @@ test('without script: refer, accept, talk, ask, decide, and see who was faster',
 	const therapist = await pageOf(browser, 'therapist', plain);
 	await therapist.goto(`/patients/${episodeId}/clearances`);
 	await therapist.getByLabel(/For what/).selectOption('stairs');
-	await therapist.getByLabel(/What do you ask/).fill('Six steps went well.');
+	await therapist.getByLabel(/What you ask/).fill('Six steps went well.');
 	await therapist.getByRole('button', { name: 'Ask', exact: true }).click();
 	await therapist.getByRole('link', { name: 'Stairs' }).click();
 

@@ -69,7 +69,7 @@ test('a choice made before script takes over can be changed after it', async ({ 
 	await page.goto(`/patients/${episodeId}/refer`, { waitUntil: 'commit' });
 	await page.getByRole('radio', { name: 'Speech therapy' }).check();
 	await page.getByRole('radio', { name: 'Soon' }).check();
-	await page.getByLabel(/What do you ask/).fill('Voice is weak.');
+	await page.getByLabel(/What you ask/).fill('Voice is weak.');
 	release();
 	await expectConnected(page);
 	await expect(page.getByRole('radio', { name: 'Speech therapy' })).toBeChecked();

@@ -26,11 +26,11 @@ describe('what is said in the browser before a form is sent', () => {
 	const asks = { service: 'physiotherapy', priority: 'soon' };
 
 	it.each([
-		['', ['question: Question is empty.']],
-		['   ', ['question: Question is empty.']],
+		['', ['question: What you ask is empty.']],
+		['   ', ['question: What you ask is empty.']],
 		['?', []],
 		['?'.repeat(4000), []],
-		['?'.repeat(4001), ['question: Question has 4001 characters, and the limit is 4000.']]
+		['?'.repeat(4001), ['question: What you ask has 4001 characters, and the limit is 4000.']]
 	])('a question', async (question, expected) => {
 		expect(await said({ ...asks, question }, referForm)).toEqual(expected);
 	});

@@ -49,6 +49,7 @@ const NOT_TYPED = [
 	'shown',
 	'language',
 	'kind',
+	'weekdays',
 	'units'
 ];
 
@@ -93,6 +94,29 @@ function byWords({ message }: Said): boolean {
 
 const SAID = said();
 
+/** Fields that a page fills in by itself, and the page of parts, which has labels of its own. */
+const BY_PROGRAM = [
+	'questionForm.',
+	'giveForm.seen',
+	'refuseForm.seen',
+	'wordActivityForm.code',
+	'resetActivityForm.code',
+	'idForm.id'
+];
+
+/** All words of the screens. */
+function catalogue(): string[] {
+	const files = import.meta.glob<Record<string, unknown>>('/src/lib/i18n/messages/en/*.json', {
+		eager: true,
+		import: 'default'
+	});
+	return Object.values(files)
+		.flatMap((file) => Object.values(file))
+		.filter((words) => typeof words === 'string');
+}
+
+const lowered = (label: string) => label.charAt(0).toLowerCase() + label.slice(1);
+
 const lineOf = ({ where, message }: Said) => `${where}: ${message}`;
 
 describe('what forms say', () => {
@@ -111,6 +135,15 @@ describe('what forms say', () => {
 	it('names a field by words, never by its key', () => {
 		const wrong = SAID.filter((each) => !NO_TEXT.test(each.message) && !byWords(each));
 		expect(wrong.map(lineOf)).toEqual([]);
+	});
+
+	it('names it by the words of its label', () => {
+		const labels = catalogue().filter((words) => words.length < 60 && !/[.?{]/.test(words));
+		const begins = ({ message }: Said) =>
+			labels.some((label) => message.startsWith(label) || message.startsWith(`The ${lowered(label)} `));
+		const own = (each: Said) =>
+			!NO_TEXT.test(each.message) && !BY_PROGRAM.some((start) => each.where.startsWith(start));
+		expect(SAID.filter((each) => own(each) && !begins(each)).map(lineOf)).toEqual([]);
 	});
 
 	it('tells of a text that is too long how long it is, and the limit', () => {

@@ -1,4 +1,5 @@
 import { readdirSync, readFileSync } from 'node:fs';
+import { dirname, join } from 'node:path/posix';
 import { parse, type AST } from 'svelte/compiler';
 import { describe, expect, it } from 'vitest';
 
@@ -58,9 +59,6 @@ describe('forms', () => {
 		'src/lib/components/accounts/SignInAndSend.svelte':
 			'sends another form on as it was; checked by signInBody',
 		'src/lib/components/shell/MorePanel.svelte': 'signing out has nothing to check',
-		'src/lib/components/visits/BookVisits.svelte': 'sent as JSON; checked by bookVisitsBody',
-		'src/lib/components/visits/CloseDay.svelte': 'sent as JSON; checked by closedDayBody',
-		'src/lib/components/visits/RescheduleSheet.svelte': 'sent as JSON; checked by rescheduleBody',
 		'src/lib/components/bedside/Bedside.svelte': 'kept on the device and sent as JSON; checked by sessionBody'
 	};
 	const drawn = () =>
@@ -70,6 +68,48 @@ describe('forms', () => {
 
 	it('are drawn once, and every other one has a reason', () => {
 		expect(drawn().toSorted()).toEqual(Object.keys(OTHERS).toSorted());
+	});
+
+	/** Controls that stand in no form, because nothing is sent by a press, each with its reason. */
+	const LOOSE: Record<string, string> = {
+		'src/lib/components/calculators/Calculator.svelte': 'a sum, which is worked out while it is typed',
+		'src/lib/components/escalations/EscalationActions.svelte': 'one of a few moves, which opens its form'
+	};
+
+	const CONTROLS =
+		/^(Field|TextArea|Choice|DateField|TimeField|NumberField|Input|(Long)?Select|Combobox|Check)$/;
+
+	/** The parts that a file draws, by file, of those that stand in no form of that file. */
+	function outsideForms(file: string): Set<string> {
+		const imports = new Map(
+			[...sourceOf(file).matchAll(/import (\w+) from '([^']+\.svelte)'/g)].map(([, name = '', path = '']) => [
+				name,
+				path.startsWith('$lib/') ? path.replace('$lib', 'src/lib') : join(dirname(file), path)
+			])
+		);
+		const loose = new Set<string>();
+		walk(parse(sourceOf(file), { modern: true }).fragment, ({ name }, around) => {
+			if (!around.some((each) => /^((Json|Reason)?Form|form)$/.test((each as AST.Component).name))) {
+				loose.add(imports.get(name) ?? name);
+			}
+		});
+		return loose;
+	}
+
+	/** The files in which something stands in no form, whichever file draws the form around it. */
+	function withoutForm(): string[] {
+		const all = files('.svelte').filter((file) => !/components\/(ui|form)\/|routes\/style\//.test(file));
+		const loose = new Map(all.map((file) => [file, outsideForms(file)]));
+		const bare = new Set(all.filter((file) => /^src\/routes\/.*\/\+/.test(file)));
+		for (const user of bare) {
+			all.filter((file) => loose.get(user)?.has(file)).forEach((file) => bare.add(file));
+		}
+		const control = (path: string) => CONTROLS.test(path.split('/').at(-1)?.replace('.svelte', '') ?? '');
+		return [...bare].filter((file) => [...(loose.get(file) ?? [])].some(control));
+	}
+
+	it('stand around every control by which something is sent', () => {
+		expect(withoutForm().toSorted()).toEqual(Object.keys(LOOSE).toSorted());
 	});
 
 	it.each(files('.svelte').filter((file) => /<form[^>]*method="POST"/.test(sourceOf(file))))(
@@ -95,7 +135,9 @@ describe('forms', () => {
 
 	it('say what is wrong before they are sent, by the schema of the server', () => {
 		const unchecked = files('.svelte').filter((file) => {
-			const forms = [...sourceOf(file).matchAll(/<(Form|ReasonForm)\s[^]*?>\n/g)].map(([tag]) => tag);
+			const forms = [...sourceOf(file).matchAll(/<(Form|ReasonForm|JsonForm)\s[^]*?>\n/g)].map(
+				([tag]) => tag
+			);
 			return (
 				forms.some((tag) => !/\bschema=|\{schema\}/.test(tag)) &&
 				file !== 'src/lib/components/form/Form.svelte'

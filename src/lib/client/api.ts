@@ -1,4 +1,5 @@
 import { v7 } from 'uuid';
+import { m } from '$lib/i18n/paraglide/messages';
 
 /** An answer of the JSON API that is not a success, with the members of its problem+json. */
 export class ApiProblem extends Error {
@@ -60,7 +61,7 @@ async function answer<T>(response: Response): Promise<T> {
 	throw new ApiProblem(
 		response.status,
 		typeof body.type === 'string' ? body.type : 'unknown',
-		typeof body.detail === 'string' ? body.detail : `The server answered ${response.status}.`,
+		typeof body.detail === 'string' ? body.detail : m.common_error_status({ status: response.status }),
 		body
 	);
 }

@@ -1,7 +1,6 @@
 import type { QueryClient } from '@tanstack/svelte-query';
 import type { ClosedDay } from '$lib/domain/visits/views';
 import { m } from '$lib/i18n/paraglide/messages';
-import { ApiProblem } from './api';
 import { Deeds, problemWords, type ProblemWords } from './deeds.svelte';
 
 const PATH = '/api/closed-days';
@@ -9,9 +8,12 @@ const PATH = '/api/closed-days';
 /** The list of closed days as its page changes it, and what became of the last change. */
 export class ClosedDays {
 	problem = $state<ProblemWords | null>(null);
-	/** What is wrong with a field, by its name. */
-	fields = $state<Record<string, string>>({});
 	done = $state('');
+
+	/** The last refusal, where it is about the fields of the day that is to be closed. */
+	get refused(): ProblemWords | null {
+		return this.problem?.fields ? this.problem : null;
+	}
 
 	#deeds = new Deeds();
 
@@ -41,13 +43,12 @@ export class ClosedDays {
 	}
 
 	async #attempt(work: () => Promise<string>): Promise<boolean> {
-		[this.problem, this.fields, this.done] = [null, {}, ''];
+		[this.problem, this.done] = [null, ''];
 		try {
 			this.done = await work();
 			return true;
 		} catch (error) {
 			this.problem = problemWords(error);
-			this.fields = error instanceof ApiProblem ? error.fields : {};
 			return false;
 		} finally {
 			void this.client.invalidateQueries({ queryKey: ['visits'] });

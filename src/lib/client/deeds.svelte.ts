@@ -52,6 +52,8 @@ export interface ProblemWords {
 	title: string;
 	text: string;
 	signIn: boolean;
+	/** What is wrong with single fields, by pointer without the leading slash; left out where nothing is. */
+	fields?: Record<string, string>;
 }
 
 /**
@@ -72,7 +74,8 @@ export function problemWords(error: unknown, reader?: Reader): ProblemWords {
 		return { title: m.common_unreached_title(), text: m.common_unreached_text(), signIn: false };
 	}
 	const text = (reader && takenWords(error, reader)) ?? error.detail;
-	return { title: m.common_notice_error(), text, signIn: false };
+	const fields = Object.keys(error.fields).length > 0 ? { fields: error.fields } : {};
+	return { title: m.common_notice_error(), text, signIn: false, ...fields };
 }
 
 /** Who was faster, and when. */

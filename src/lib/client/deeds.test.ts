@@ -68,6 +68,12 @@ describe('Deeds', () => {
 });
 
 describe('problemWords', () => {
+	it('names the fields that are wrong', () => {
+		const errors = [{ pointer: '/series/count', message: 'count is 0.' }];
+		const problem = new ApiProblem(422, 'invalid', 'Some values are not valid', { errors });
+		expect(problemWords(problem).fields).toEqual({ 'series/count': 'count is 0.' });
+	});
+
 	it.each([
 		[0, 'network', 'No answer: this may not have arrived', false],
 		[0, 'offline', 'Not sent: this device has no network', false],

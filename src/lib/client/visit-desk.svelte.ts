@@ -4,15 +4,12 @@ import type { PageWay } from '$lib/domain/patient-page/forms';
 import type { VisitMove } from '$lib/domain/visits/states';
 import type { VisitItem } from '$lib/domain/visits/views';
 import { m } from '$lib/i18n/paraglide/messages';
-import { ApiProblem } from './api';
 import { Deeds, problemWords, type ProblemWords } from './deeds.svelte';
 
 /** What is done about visits from a page: moved on, booked, followed up; and what became of it. */
 export class VisitDesk {
 	/** Why the last thing was not done; null when it was. */
 	problem = $state<ProblemWords | null>(null);
-	/** What is wrong with the fields of a booking, by their pointer without the leading slash. */
-	fields = $state<Record<string, string>>({});
 	/** What was done last, in words. */
 	done = $state('');
 
@@ -86,7 +83,6 @@ export class VisitDesk {
 	/** Forget what became of the last thing. */
 	clear(): void {
 		this.problem = null;
-		this.fields = {};
 		this.done = '';
 	}
 
@@ -98,7 +94,6 @@ export class VisitDesk {
 			return true;
 		} catch (error) {
 			this.problem = problemWords(error);
-			this.fields = error instanceof ApiProblem ? error.fields : {};
 			return false;
 		} finally {
 			for (const queryKey of [['visits'], ['episode'], ['loose-ends']]) {

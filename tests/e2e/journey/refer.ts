@@ -10,7 +10,7 @@ export async function refer(day: Day): Promise<void> {
 	await page.getByRole('main').getByRole('link', { name: 'Refer' }).click();
 	await page.getByRole('radio', { name: 'Physiotherapy' }).check();
 	await page.getByRole('radio', { name: 'Soon' }).check();
-	await page.getByLabel(/What do you ask/).fill('Begin to mobilise, four grafts, slow at first.');
+	await page.getByLabel(/What you ask/).fill('Begin to mobilise, four grafts, slow at first.');
 	await page.getByRole('button', { name: /refer/i }).click();
 	await expect(page).toHaveURL(/threads/);
 	day.thread = new URL(page.url()).pathname;
@@ -37,7 +37,7 @@ export async function clear(day: Day): Promise<void> {
 	await goTo(day.page('surgeon'), 'Loose ends');
 	await asking.getByText('Ask for a clearance').click();
 	await asking.getByLabel(/For what/).selectOption('arm-stage');
-	await asking.getByLabel(/What do you ask/).fill('Wound dry, breastbone stable. May it start?');
+	await asking.getByLabel(/What you ask/).fill('Wound dry, breastbone stable. May it start?');
 	await asking.getByRole('button', { name: 'Ask', exact: true }).click();
 
 	const asked = rowOf(day.page('surgeon'));
@@ -71,7 +71,7 @@ export async function clearByOthers(day: Day): Promise<void> {
 	] as const) {
 		const page = day.page(who);
 		await asking.getByLabel(/For what/).selectOption(kind);
-		await asking.getByLabel(/What do you ask/).fill(question);
+		await asking.getByLabel(/What you ask/).fill(question);
 		await asking.getByRole('button', { name: 'Ask', exact: true }).click();
 		const asked = rowOf(page).filter({ hasText: question });
 		await expect(asked).toHaveCount(1);

@@ -51,7 +51,7 @@ export async function endStay(day: Day): Promise<void> {
 	const surgeon = await open(day, 'surgeon', `/patients/${day.episodeId}/refer`);
 	await surgeon.getByRole('radio', { name: 'Speech therapy' }).check();
 	await surgeon.getByRole('radio', { name: 'Routine' }).check();
-	await surgeon.getByLabel(/What do you ask/).fill('Voice still weak?');
+	await surgeon.getByLabel(/What you ask/).fill('Voice still weak?');
 	await surgeon.getByRole('button', { name: /refer/i }).click();
 	await expect(surgeon).toHaveURL(/threads/);
 	const told = async () => (await mails()).filter(({ to }) => to.includes('surgeon@')).length;

@@ -26,6 +26,9 @@ export async function bookSeries(day: Day): Promise<void> {
 	await expectConnected(page);
 	await page.getByRole('button', { name: 'Book a visit' }).click();
 	const sheet = page.getByRole('dialog');
+	await sheet.getByRole('button', { name: 'Book', exact: true }).click();
+	await expect(sheet.getByText('Day: write a day, such as 14 12 2026.')).toBeVisible();
+	await expect(sheet.getByLabel(/^Day/)).toBeFocused();
 	await sheet.getByRole('radio', { name: 'A series' }).check();
 	await sheet.getByLabel(/^From/).fill(typed(monday));
 	await sheet.getByLabel(/^Time/).fill('10:00');

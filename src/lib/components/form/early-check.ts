@@ -1,4 +1,4 @@
-import type { issuesOf } from './check';
+import type { Issue, issuesOf } from './check';
 import type { ClientValidationAdapter } from 'sveltekit-superforms/adapters';
 import type { ZodObject } from 'zod';
 
@@ -13,24 +13,23 @@ type Loaded = [{ issuesOf: typeof issuesOf }, ZodObject];
  * server alone decides, as it does without script.
  */
 export function earlyCheck<T extends Record<string, unknown>>(source: SchemaSource) {
-	let loading: Promise<Loaded | null> | null = null;
-
-	/** Fetch what is needed; what failed is tried again the next time. */
+	/** Fetch what is needed: once, as the browser keeps it; what failed is tried again the next time. */
 	function load(): Promise<Loaded | null> {
-		loading ??= Promise.all([import('./check'), source()]).catch(() => {
-			loading = null;
-			return null;
-		});
-		return loading;
+		return Promise.all([import('./check'), source()]).catch(() => null);
+	}
+
+	/** What is wrong with what is typed; nothing, where it cannot be told here. */
+	async function issues(data: Record<string, unknown>): Promise<Issue[]> {
+		const loaded = await load();
+		return loaded ? loaded[0].issuesOf(data, loaded[1]) : [];
 	}
 
 	const validators: ClientValidationAdapter<T> = {
 		superFormValidationLibrary: 'zod4',
 		// What was typed stays as it was typed: a day in words is not turned into its code on the way.
 		async validate(data) {
-			const loaded = await load();
-			const issues = loaded ? await loaded[0].issuesOf(data as T, loaded[1]) : [];
-			return issues.length > 0 ? { success: false, issues } : { success: true, data: data as T };
+			const wrong = await issues(data as T);
+			return wrong.length > 0 ? { success: false, issues: wrong } : { success: true, data: data as T };
 		}
 	};
 
@@ -43,5 +42,5 @@ export function earlyCheck<T extends Record<string, unknown>>(source: SchemaSour
 		setTimeout(() => (formElement.noValidate = true));
 	}
 
-	return { validators, begin, load };
+	return { validators, begin, load, issues };
 }

@@ -2,7 +2,7 @@ import { SETS, type LimitKey, type SetName } from '$lib/domain/bedside/codes';
 import type { RulebookLimit } from '$lib/domain/bedside/rulebook';
 import { m } from '$lib/i18n/paraglide/messages';
 import { withStatus } from './activity-words';
-import { meaningOf } from './limit-names';
+import { meaningOf } from '$lib/i18n/limit-names';
 import { SET_WORDS } from '$lib/i18n/sets';
 
 /** One limit of a rule, with its value in each set. */

@@ -1,6 +1,15 @@
 import { describe, expect, it } from 'vitest';
 import { bookVisitsBody } from '$lib/domain/visits/forms';
-import { bookingField, emptyDraft, nextDays, planOf, type BookingDraft } from './booking';
+import { bookSeriesForm, bookVisitForm } from '$lib/domain/visits/page-forms';
+import {
+	bookingField,
+	bookingRefusal,
+	emptyDraft,
+	nextDays,
+	planOf,
+	typedOf,
+	type BookingDraft
+} from './booking';
 
 const ZONE = 'Europe/Dublin';
 /** A Tuesday, 09:00 in Dublin. */
@@ -15,15 +24,22 @@ const SERIES: BookingDraft = {
 	count: '4'
 };
 
+/** What the form says of a draft before it is sent, by field. */
+function said(change: Partial<BookingDraft>, base = SINGLE): Record<string, string> {
+	const schema = base.kind === 'series' ? bookSeriesForm : bookVisitForm;
+	const { error } = schema.safeParse({ patient: 'p', ...typedOf({ ...base, ...change }) });
+	return Object.fromEntries(error?.issues.map(({ path, message }) => [String(path[0]), message]) ?? []);
+}
+
 const plan = (change: Partial<BookingDraft>, base = SINGLE) => planOf({ ...base, ...change }, ZONE, NOW);
 
 describe('a single visit', () => {
 	it('is planned on its day and asked for as an instant', () => {
-		const { planned, problems, body } = plan({});
+		const { planned, refused, body } = plan({});
 		expect(planned.map(({ localDate, localTime }) => `${localDate} ${localTime}`)).toEqual([
 			'2026-03-06 10:00'
 		]);
-		expect(problems).toEqual({});
+		expect(refused).toBeNull();
 		expect(body).toEqual({ startsAt: '2026-03-06T10:00:00.000Z', minutes: 60, place: 'east-gym' });
 	});
 
@@ -36,18 +52,29 @@ describe('a single visit', () => {
 	});
 
 	it('names what was typed where it is no day and no time', () => {
-		const { problems } = plan({ date: '32 3 2026', time: '24:00' });
-		expect(problems.date).toContain('“32 3 2026”');
-		expect(problems.time).toContain('“24:00”');
+		expect(said({ date: '32 3 2026', time: '24:00' })).toEqual({
+			date: 'Day: “32 3 2026” is no day; write one that exists, such as 14 12 2026.',
+			time: 'Time: “24:00” is no time; write one from 00:00 to 23:59, such as 9:30.'
+		});
+		expect(said({ date: '', time: ' ' })).toEqual({
+			date: 'Day: write a day, such as 14 12 2026.',
+			time: 'Time: write one from 00:00 to 23:59, such as 9:30.'
+		});
+	});
+
+	it('leaves to the server to name what is no day, where it could not be said before', () => {
+		expect(plan({ date: '32 3 2026' }).body).toMatchObject({ startsAt: '32 3 2026T10:00' });
 	});
 
 	it('names a number that was typed wrongly, and asks for one that was not typed', () => {
-		const { problems } = plan({ minutes: '1e', count: '12,5' }, SERIES);
-		expect(problems.minutes).toContain('“1e”');
-		expect(problems.count).toContain('“12,5”');
-		const empty = plan({ minutes: ' ', count: '' }, SERIES).problems;
-		expect(empty.minutes).toBe('Minutes: write a whole number from 10 to 240.');
-		expect(empty.count).toBe('Number of visits: write a whole number from 1 to 60.');
+		expect(said({ minutes: '1e', count: '12,5' }, SERIES)).toEqual({
+			minutes: 'Minutes: “1e” is no number; write a whole number from 10 to 240.',
+			count: 'Number of visits: 12.5 cannot be taken; write a whole number from 1 to 60.'
+		});
+		expect(said({ minutes: ' ', count: '' }, SERIES)).toEqual({
+			minutes: 'Minutes is empty: write a whole number from 10 to 240.',
+			count: 'Number of visits is empty: write a whole number from 1 to 60.'
+		});
 	});
 
 	it('is an hour earlier in UTC once the clock has changed', () => {
@@ -102,16 +129,22 @@ describe('what is wrong', () => {
 		[{ count: '61' }, SERIES, ['count']],
 		[{ count: '' }, SERIES, ['count']],
 		[{ count: '1e' }, SERIES, ['count']],
-		// Today at 08:59 has passed, at 09:00 has not.
-		[{ date: '2026-03-03', time: '08:59' }, SINGLE, ['date']],
-		[{ date: '2026-03-03', time: '09:00' }, SINGLE, []],
-		// Two years and a day ahead, 731 days, is the last day.
-		[{ date: '2028-03-03' }, SINGLE, []],
-		[{ date: '2028-03-04' }, SINGLE, ['date']]
+		[{ date: '' }, SERIES, ['from']]
 	])('%j', (change, base, fields) => {
-		const { problems, body } = plan(change, base);
-		expect(Object.keys(problems)).toEqual(fields);
-		expect(body === null).toBe(fields.length > 0);
+		expect(Object.keys(said(change, base))).toEqual(fields);
+	});
+
+	it.each<[Partial<BookingDraft>, BookingDraft, boolean]>([
+		// Today at 08:59 has passed, at 09:00 has not.
+		[{ date: '2026-03-03', time: '08:59' }, SINGLE, true],
+		[{ date: '2026-03-03', time: '09:00' }, SINGLE, false],
+		// Two years and a day ahead, 731 days, is the last day.
+		[{ date: '2028-03-03' }, SINGLE, false],
+		[{ date: '2028-03-04' }, SINGLE, true],
+		// What is no day yet is not refused while it is typed.
+		[{ date: '3' }, SINGLE, false]
+	])('%j is refused while it is typed: %j', (change, base, refused) => {
+		expect(plan(change, base).refused !== null).toBe(refused);
 	});
 
 	it.each([
@@ -130,14 +163,16 @@ describe('what is wrong', () => {
 
 describe('bookingField', () => {
 	it.each([
-		['/startsAt', 'date'],
-		['/series/from', 'date'],
-		['/series/time', 'time'],
-		['/minutes', 'minutes'],
-		['/series/place', 'place'],
-		['/series/weekdays/0', 'date']
+		['startsAt', 'date'],
+		['series/from', 'from'],
+		['series/time', 'time'],
+		['minutes', 'minutes'],
+		['series/place', 'place'],
+		['series/weekdays/0', 'weekdays']
 	])('%s is %s', (pointer, field) => {
 		expect(bookingField(pointer)).toBe(field);
+		const refused = { title: 'Not done', text: '', signIn: false, fields: { [pointer]: 'Why.' } };
+		expect(bookingRefusal(refused)).toEqual({ ...refused, fields: { [field]: 'Why.' } });
 	});
 });
 
@@ -146,9 +181,9 @@ describe('closed days', () => {
 	const withClosed = (base: BookingDraft) => planOf(base, ZONE, NOW, closed);
 
 	it('a single visit on one is refused, and nothing is shown as if it could be booked', () => {
-		const { planned, problems, body } = withClosed(SINGLE);
-		expect([planned, body]).toEqual([[], null]);
-		expect(problems.date).toBe('6 Mar 2026 is a closed day: choose another day.');
+		const { planned, refused } = withClosed(SINGLE);
+		expect(planned).toEqual([]);
+		expect(refused).toBe('6 Mar 2026 is a closed day: choose another day.');
 	});
 
 	it('a series steps over one, and says which', () => {

@@ -1,5 +1,5 @@
-/** A booking while it is typed: what it would make, what is wrong with it, and the body that asks for it. */
-import { COUNT_MAX, DAYS_AHEAD_MAX, MINUTES_MAX, MINUTES_MIN } from '$lib/domain/visits/limits';
+/** A booking while it is typed: what it would make, why that cannot be, and the body that asks for it. */
+import { COUNT_MAX, DAYS_AHEAD_MAX } from '$lib/domain/visits/limits';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import {
 	addDays,
@@ -34,8 +34,6 @@ export interface BookingDraft {
 	count: string;
 }
 
-export type BookingProblems = Partial<Record<keyof BookingDraft, string>>;
-
 export interface BookingPlan {
 	/** The visits it would make, in order; empty while they cannot be told. */
 	planned: PlannedVisit[];
@@ -43,13 +41,22 @@ export interface BookingPlan {
 	skipped: LocalDate[];
 	/** How many of them no reminder can be sent of any more, for a patient who lives where the hospital is. */
 	withoutReminder: number;
-	problems: BookingProblems;
-	/** What to post; null while something is wrong. */
-	body: Record<string, unknown> | null;
+	/** Why these days cannot be booked, although each field may be right by itself. */
+	refused: string | null;
+	/** What to post. What is no day or time stands in it as it was typed: the server names it. */
+	body: Record<string, unknown>;
 }
 
 export function emptyDraft(place: string): BookingDraft {
 	return { kind: 'single', date: '', time: '', minutes: '60', place, weekdays: [], count: '12' };
+}
+
+type TypedBooking = Omit<BookingDraft, 'kind' | 'date' | 'weekdays' | 'count'> &
+	Partial<Pick<BookingDraft, 'date' | 'weekdays' | 'count'> & { from: string }>;
+
+/** The fields that such a booking has, by the names of its form, as they were typed. */
+export function typedOf({ kind, date, weekdays, count, ...each }: BookingDraft): TypedBooking {
+	return kind === 'single' ? { date, ...each } : { from: date, weekdays, count, ...each };
 }
 
 /** Work a draft out in the hospital's wall time, as the server will. */
@@ -60,18 +67,16 @@ export function planOf(
 	closed: ReadonlySet<LocalDate> = new Set()
 ): BookingPlan {
 	const draft = readDraft(typed);
-	const problems = fieldProblems(draft, typed);
-	const datable = !(['date', 'time', 'weekdays', 'count'] as const).some((field) => problems[field]);
-	const planned = datable ? plannedOf(draft, zone, closed) : [];
-	const outside = rangeProblem(planned, zone, now) ?? closedProblem(draft, closed);
-	const all = outside ? { ...problems, ...outside } : problems;
+	const planned = isDatable(draft) ? plannedOf(draft, zone, closed) : [];
+	const refused = rangeProblem(planned, zone, now) ?? closedProblem(draft, closed);
 	// What cannot be booked is not shown as if it could.
+	const shown = refused === null ? planned : [];
 	return {
-		planned: outside ? [] : planned,
-		skipped: outside || !datable ? [] : skippedOf(draft, planned, closed),
-		withoutReminder: outside ? 0 : withoutReminder(draft, planned, zone, now),
-		problems: all,
-		body: Object.keys(all).length > 0 ? null : bodyOf(draft, planned)
+		planned: shown,
+		skipped: shown.length > 0 ? skippedOf(draft, planned, closed) : [],
+		withoutReminder: withoutReminder(draft, shown, zone, now),
+		refused,
+		body: bodyOf(draft, planned)
 	};
 }
 
@@ -93,8 +98,8 @@ function skippedOf(draft: ReadDraft, planned: readonly PlannedVisit[], closed: R
 	return draft.kind === 'series' ? skippedDays(seriesOf(draft), planned, closed) : [];
 }
 
-function closedProblem({ kind, date }: ReadDraft, closed: ReadonlySet<LocalDate>): BookingProblems | null {
-	return kind === 'single' && closed.has(date) ? { date: m.visits_problem_closed({ day: day(date) }) } : null;
+function closedProblem({ kind, date }: ReadDraft, closed: ReadonlySet<LocalDate>): string | null {
+	return kind === 'single' && closed.has(date) ? m.visits_problem_closed({ day: day(date) }) : null;
 }
 
 function withoutReminder(
@@ -128,11 +133,16 @@ function readDraft(draft: BookingDraft): ReadDraft {
 
 const orNought = (read: TypedNumber): number => (read.kind === 'number' ? read.value : 0);
 
-/** The field that an error of the server is about. */
-export function bookingField(pointer: string): keyof BookingDraft {
-	const field = pointer.split('/').at(-1) ?? '';
-	const known = ['time', 'minutes', 'place', 'weekdays', 'count'] as const;
-	return known.find((name) => name === field) ?? 'date';
+/** The field of the form that an error of the server is about. */
+export function bookingField(pointer: string): string {
+	const field = pointer.split('/').find((part) => part !== 'series') ?? '';
+	return field === 'startsAt' ? 'date' : field;
+}
+
+/** A refusal of the server by the fields of the form. */
+export function bookingRefusal<T extends { fields?: Record<string, string> }>(problem: T | null): T | null {
+	const fields = Object.entries(problem?.fields ?? {}).map(([at, message]) => [bookingField(at), message]);
+	return problem && { ...problem, fields: Object.fromEntries(fields) as Record<string, string> };
 }
 
 function seriesOf({ kind, date, time, minutes, weekdays, count }: ReadDraft) {
@@ -143,62 +153,34 @@ function seriesOf({ kind, date, time, minutes, weekdays, count }: ReadDraft) {
 
 const EVERY_DAY = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'] as const;
 
-function fieldProblems(draft: ReadDraft, typed: BookingDraft): BookingProblems {
-	const series = draft.kind === 'series';
-	const checks: [keyof BookingDraft, boolean, () => string][] = [
-		['date', isLocalDate(draft.date), () => wrongDay(draft.date)],
-		['time', isLocalTime(draft.time), () => wrongTime(draft.time)],
-		['minutes', isWhole(draft.minutes, MINUTES_MIN, MINUTES_MAX), () => wrongMinutes(typed.minutes.trim())],
-		['place', draft.place !== '', m.visits_problem_place],
-		['weekdays', !series || draft.weekdays.length > 0, m.visits_problem_weekdays],
-		['count', !series || isWhole(draft.count, 1, COUNT_MAX), () => wrongCount(typed.count.trim())]
-	];
-	return Object.fromEntries(checks.flatMap(([field, right, words]) => (right ? [] : [[field, words()]])));
+/** Whether it is known which days it is about. */
+function isDatable({ kind, date, time, weekdays, count }: ReadDraft): boolean {
+	return (
+		isLocalDate(date) && isLocalTime(time) && (kind === 'single' || (weekdays.length > 0 && isCount(count)))
+	);
 }
 
-function wrongDay(typed: string): string {
-	return typed.trim() ? m.visits_problem_date({ typed }) : m.visits_problem_no_date();
+function isCount(read: TypedNumber): boolean {
+	return read.kind === 'number' && Number.isInteger(read.value) && read.value >= 1 && read.value <= COUNT_MAX;
 }
 
-function wrongTime(typed: string): string {
-	return typed.trim() ? m.visits_problem_time({ typed }) : m.visits_problem_no_time();
-}
-
-function wrongMinutes(typed: string): string {
-	const bounds = { min: MINUTES_MIN, max: MINUTES_MAX };
-	return typed ? m.visits_problem_minutes({ typed, ...bounds }) : m.visits_problem_no_minutes(bounds);
-}
-
-function wrongCount(typed: string): string {
-	const max = COUNT_MAX;
-	return typed ? m.visits_problem_count({ typed, max }) : m.visits_problem_no_count({ max });
-}
-
-function isWhole(read: TypedNumber, min: number, max: number): boolean {
-	return read.kind === 'number' && Number.isInteger(read.value) && read.value >= min && read.value <= max;
-}
-
-function rangeProblem(planned: readonly PlannedVisit[], zone: Zone, now: number): BookingProblems | null {
+function rangeProblem(planned: readonly PlannedVisit[], zone: Zone, now: number): string | null {
 	const [first] = planned;
 	const last = planned.at(-1);
 	if (!first || !last) {
 		return null;
 	}
 	if (first.startsAt < now) {
-		return { date: m.visits_problem_past() };
+		return m.visits_problem_past();
 	}
 	const latest = addDays(localDateOf(now, zone), DAYS_AHEAD_MAX);
-	return last.localDate > latest ? { date: m.visits_problem_far({ day: day(latest) }) } : null;
+	return last.localDate > latest ? m.visits_problem_far({ day: day(latest) }) : null;
 }
 
-function bodyOf(draft: ReadDraft, planned: readonly PlannedVisit[]): Record<string, unknown> | null {
-	const [first] = planned;
+function bodyOf(draft: ReadDraft, [first]: readonly PlannedVisit[]): Record<string, unknown> {
 	const { kind, date, weekdays, time, place } = draft;
 	const [minutes, count] = [orNought(draft.minutes), orNought(draft.count)];
-	if (!first) {
-		return null;
-	}
 	return kind === 'single'
-		? { startsAt: toRfc3339(first.startsAt), minutes, place }
+		? { startsAt: first ? toRfc3339(first.startsAt) : `${date}T${time}`, minutes, place }
 		: { series: { from: date, weekdays, time, count, minutes, place } };
 }

@@ -39,7 +39,7 @@ export const newPassword = z
 	);
 
 /** Taking up an invitation: the first administrator also gives name and address. */
-export const firstAdminBody = z.strictObject({ name: text('Your name', 100), email, password: newPassword });
+export const firstAdminBody = z.strictObject({ name: text('Name', 100), email, password: newPassword });
 export const invitedBody = z.strictObject({ password: newPassword });
 
 export const createAccountBody = z.strictObject({

@@ -33,7 +33,7 @@ export const askClearanceBody = z.strictObject({
 });
 
 /** The form that asks; its message names the field as the page does. */
-export const askClearanceForm = askClearanceBody.extend({ question: text('Question', 2000) });
+export const askClearanceForm = askClearanceBody.extend({ question: text('What you ask', 2000) });
 
 /** What the decider was shown, from `shown` of the clearance: when something is new since, it is refused once. */
 export const shownMarks = z

@@ -1,6 +1,6 @@
 import { z } from 'zod';
-import { isLocalDate } from './time';
-import { readDate } from './typed-date';
+import { isLocalDate, isLocalTime } from './time';
+import { readDate, readTime } from './typed-date';
 import { readNumber } from './typed-number';
 
 /**
@@ -40,6 +40,18 @@ export function typedDay(field: string) {
 		.max(40, tooLong(field, 40))
 		.transform((typed) => readDate(typed) ?? typed)
 		.refine(isLocalDate, { error: ({ input }) => noDay(field, String(input)) });
+}
+
+/**
+ * A time of the 24 h clock as a form posts it: it comes out as `09:30`; what is none stays as it was typed.
+ * @param field the name of the field as a sentence begins with it
+ */
+export function typedTime(field: string) {
+	return z
+		.string(`${field} is missing or no text.`)
+		.max(40, tooLong(field, 40))
+		.transform((typed) => readTime(typed) ?? typed)
+		.refine(isLocalTime, { error: ({ input }) => noTime(field, String(input)) });
 }
 
 interface NumberWanted {
@@ -93,6 +105,11 @@ function noDay(field: string, typed: string): string {
 	return typed.trim() === ''
 		? `${field}: write a day, such as 14 12 2026.`
 		: `${field}: “${typed}” is no day; write one that exists, such as 14 12 2026.`;
+}
+
+function noTime(field: string, typed: string): string {
+	const wish = 'write one from 00:00 to 23:59, such as 9:30.';
+	return typed.trim() === '' ? `${field}: ${wish}` : `${field}: “${typed}” is no time; ${wish}`;
 }
 
 /** Tabs and line breaks are fine; NUL, escape, and halves of a surrogate pair have no place in a record. */

@@ -32,9 +32,15 @@ export const takeBody = z.strictObject({
 
 export const etaBody = z.strictObject({ etaMinutes: takeBody.shape.etaMinutes.unwrap() });
 
-export const informBody = z.strictObject({ informed: text('The physician who knows', 200) });
+export const informBody = z.strictObject({ informed: text('Which physician knows of it', 200) });
 
-export const passBody = z.strictObject({ to: z.string().min(1).max(64), reason: reason('The reason') });
+const WHOM = 'To whom is open: choose a person.';
+export const passBody = z.strictObject({
+	to: z.string(WHOM).min(1, WHOM).max(64),
+	reason: reason('The reason')
+});
+
+export const withdrawBody = z.strictObject({ reason: reason('The reason') });
 
 export const settleBody = z.strictObject({
 	outcome: text('The outcome', 200),
@@ -64,6 +70,8 @@ export type LinkDeed = z.output<typeof linkDeed>;
 /** The form of the escalation page; the same fields as the JSON call. */
 export const takeForm = z.object({ etaMinutes: takeBody.shape.etaMinutes });
 
+const HOW_URGENT = 'How urgent is open: choose high, medium or low.';
+
 /**
  * The form that raises one. `grade` comes empty when nobody has chosen, so that a page can ask for it without
  * proposing one; a high one says by when somebody is needed. Every message names its field in plain words.
@@ -71,8 +79,8 @@ export const takeForm = z.object({ etaMinutes: takeBody.shape.etaMinutes });
 export const raiseForm = z
 	.object({
 		grade: z
-			.enum(['', ...GRADES], `The grade is one of ${GRADES.join(', ')}.`)
-			.refine((grade) => grade !== '', 'How urgent is open: choose high, medium or low.')
+			.enum(['', ...GRADES], HOW_URGENT)
+			.refine((grade) => grade !== '', HOW_URGENT)
 			.prefault(''),
 		situation: raiseBody.shape.situation,
 		background: raiseBody.shape.background,

@@ -9,7 +9,10 @@ export const referBody = z.strictObject({
 });
 
 /** The form that refers; its message names the field as the page does. */
-export const referForm = referBody.extend({ question: text('Question', 4000) });
+export const referForm = referBody.extend({
+	question: text('What you ask', 4000),
+	priority: z.enum(PRIORITIES, 'How soon: choose one.')
+});
 
 /** Why a referral ends, as its forms ask for it: to close it no word is needed. */
 export const reasonForm = z.object({ reason: reason('Reason') });

@@ -108,8 +108,8 @@ export type ClosedDayBody = z.infer<typeof closedDayBody>;
 export const visitMoveBody = z.strictObject({ reason: reason('The reason').optional() }).prefault({});
 export type VisitMoveBody = z.infer<typeof visitMoveBody>;
 
-/** Body of `POST /api/visits/:id/reopen`. */
-export const reopenBody = z.strictObject({ reason: reason('reason') });
+/** Body of `POST /api/visits/:id/reopen`, and of every other move that says why. */
+export const reopenBody = z.strictObject({ reason: reason('The reason') });
 
 /** Why a visit cannot be booked for this start, or null: it must lie ahead, by two years at most. */
 export function startProblem(at: Instant, now: Instant, zone: Zone): string | null {

@@ -18,7 +18,7 @@ export type WoundNoteInput = z.infer<typeof woundNoteBody>;
 /** The same as a page posts it: what was not looked at is empty. */
 export const woundNoteForm = z.strictObject({
 	wound: z.enum(['', ...WOUND_FINDINGS], 'Wound: choose one.'),
-	sternum: z.enum(['', ...STERNUM_FINDINGS], 'Breastbone: choose one.'),
+	sternum: z.enum(['', ...STERNUM_FINDINGS], 'Breastbone, on coughing: choose one.'),
 	note: z.string().trim().max(500, tooLong('In words', 500))
 });
 export type WoundNoteFields = z.infer<typeof woundNoteForm>;

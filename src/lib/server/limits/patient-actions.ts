@@ -5,6 +5,7 @@ import { Problem, invalidField, notFound } from '$lib/domain/core/errors';
 import { addDays, localDateOf } from '$lib/domain/core/time';
 import type { SetPatientLimit } from '$lib/domain/limits/forms';
 import { longDay } from '$lib/format';
+import { limitLabel } from '$lib/i18n/limit-names';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { threadForDeed } from '../access/thread';
@@ -42,8 +43,15 @@ export function setPatientLimit(
 			...{ id, episodeId, version, key, value, reason, untilOn },
 			...{ setBy: context.actor.id, setAt: context.now }
 		});
-		const body = m.limits_entry_set({ key, value, was: was ?? m.limits_off(), until: untilOn, reason });
+		const said = {
+			limit: limitLabel(key),
+			value,
+			was: was ?? m.limits_off(),
+			until: longDay(untilOn),
+			reason
+		};
 		const detail = { key, value, was, untilOn, version };
+		const body = m.limits_entry_set(said);
 		return following(tx, context, episodeId, { id, version }, body, 'limit.set-for-patient', detail);
 	});
 }
@@ -65,7 +73,7 @@ export function endPatientLimit(context: PersonContext, id: string): Promise<Wri
 			throw new Problem('wrong-state', 'This limit has ended already.', { state: 'ended' });
 		}
 		const { key, value, version, episodeId } = limit;
-		const body = m.limits_entry_ended({ key, value });
+		const body = m.limits_entry_ended({ limit: limitLabel(key), value });
 		return following(tx, context, episodeId, { id, version }, body, 'limit.ended-for-patient', {
 			key,
 			version

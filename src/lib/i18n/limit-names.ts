@@ -1,8 +1,8 @@
 /** What limits are called, apart from what is known of their sources. */
-import { RULE_IDS, SETS, type LimitKey, type RuleId } from '$lib/domain/bedside/codes';
-import { DEFAULT_LIMITS } from '$lib/domain/bedside/limits/table';
-import { m } from '$lib/i18n/paraglide/messages';
-import { RULE_NAMES } from '$lib/i18n/rules';
+import { RULE_IDS, SETS, type LimitKey, type RuleId } from '../domain/bedside/codes';
+import { DEFAULT_LIMITS } from '../domain/bedside/limits/table';
+import { m } from './paraglide/messages';
+import { RULE_NAMES } from './rules';
 
 const MEANINGS: Record<string, () => string> = {
 	'': m.home_rules_stop,
