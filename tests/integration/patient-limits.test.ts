@@ -128,7 +128,10 @@ describe('a limit of a patient', () => {
 		const page = { limit: 50, after: null };
 		const { items } = await getThread(db(), hospital.people.nurse, threadId, page);
 		expect(items.map(({ kind, body }) => [kind, body])).toEqual([
-			['event', 'Fall of the systolic pressure (Stop, mmHg): for this patient 6 in place of 10, to the end of Thursday 5 March 2026. Tight left main.']
+			[
+				'event',
+				'Fall of the systolic pressure (Stop, mmHg): for this patient 6 in place of 10, to the end of Thursday 5 March 2026. Tight left main.'
+			]
 		]);
 		const rows = await db().select().from(audit).where(eq(audit.episodeId, episodeId));
 		expect(JSON.stringify(rows)).not.toContain('left main');

@@ -106,4 +106,23 @@ describe('a part of the page', () => {
 		);
 		expect(shouted).toEqual([]);
 	});
+
+	/** What `app.css` gives by itself to a heading of this rank, and to a list of ruled rows. */
+	const GIVEN: [RegExp, string[]][] = [
+		[/<h1\b[^>]*?class="([^"]*)"/g, ['text-head', 'font-black']],
+		[/<h2\b[^>]*?class="([^"]*)"/g, ['text-title', 'font-black']],
+		[/<h3\b[^>]*?class="([^"]*)"/g, ['text-row', 'font-black']],
+		[/class="([^"]*divide-y[^"]*border-y|[^"]*border-y[^"]*divide-y)/g, ['divide-y']]
+	];
+
+	it('leaves to the sheet what it gives to headings and to rows', () => {
+		const again = pages.flatMap((file) =>
+			GIVEN.flatMap(([tag, given]) =>
+				[...readFileSync(file, 'utf8').matchAll(tag)].flatMap(([, classes = '']) =>
+					classes.split(' ').flatMap((word) => (given.includes(word) ? [`${file}: ${word}`] : []))
+				)
+			)
+		);
+		expect(again).toEqual([]);
+	});
 });
