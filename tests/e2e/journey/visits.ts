@@ -15,7 +15,7 @@ export async function bookSeries(day: Day): Promise<void> {
 	await page.goto('/visits/closed-days');
 	await expectConnected(page);
 	await page.getByLabel(/^Day/).fill(typed(addDays(monday, 2)));
-	await page.getByLabel(/^What day/).fill('Harbour Day');
+	await page.getByLabel(/^Name of the day/).fill('Harbour Day');
 	await page.getByRole('button', { name: 'Close this day' }).click();
 	await expect(row(page, 'Harbour Day')).toBeVisible();
 
