@@ -33,6 +33,7 @@ describe('nextStep', () => {
 		['recheck', 'surgeon', 'Look', '/escalations/x1', null],
 		['clearance', 'surgeon', 'Answer', '/patients/e1/clearances/x1', null],
 		['clearance-question', 'therapist', 'Answer', '/patients/e1/clearances/x1', null],
+		['refusal', 'therapist', 'Seen', '/patients/e1/clearances/x1', '/api/clearances/x1/acknowledge'],
 		['deviation', 'surgeon', 'Seen', '/patients/e1/clearances', '/api/deviations/x1/acknowledge'],
 		['precautions-due', 'surgeon', 'Decide', '/patients/e1/clearances', null],
 		['referral', 'therapist', 'Accept', '/patients/e1/threads/t1', '/api/referrals/x1/accept'],

@@ -37,6 +37,12 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
 		case 'clearance-question':
 			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
+		case 'refusal':
+			return {
+				label: m.home_step_seen(),
+				href: episodeId ? routes.clearance(episodeId, id) : routes.looseEnds(),
+				deed: `/api/clearances/${id}/acknowledge`
+			};
 		case 'deviation':
 			return {
 				label: m.home_step_seen(),
@@ -80,6 +86,8 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			return routes.escalation(id);
 		case 'deviation':
 			return episodeId === null ? null : routes.clearances(episodeId);
+		case 'refusal':
+			return episodeId === null ? null : routes.clearance(episodeId, id);
 		case 'clearance':
 		case 'clearance-question':
 		case 'referral':

@@ -68,6 +68,7 @@ describe('askerWords', () => {
 		[end('referral', { priority: 'urgent' }), 'urgent, I. Aldous asks'],
 		[end('mention'), 'I. Aldous asks you'],
 		[end('visit-unconfirmed', { due: '2026-03-04T10:00:00Z' }), ''],
+		[end('refusal'), 'I. Aldous decided'],
 		[end('deviation'), 'recorded by I. Aldous'],
 		[end('visit-untold', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],

@@ -48,6 +48,8 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
+		case 'refusal':
+			return m.home_asker_decided({ name });
 		case 'deviation':
 			return m.home_asker_did({ name });
 		case 'clearance':
@@ -101,7 +103,7 @@ export function owerWords(end: LooseEnd): string {
 
 /** What was done with one press, once it was: a referral accepted, the holder at the bedside, a deviation seen. */
 export function doneWords({ kind, code, patientName }: LooseEnd): string {
-	if (kind === 'deviation') {
+	if (kind === 'deviation' || kind === 'refusal') {
 		return m.home_seen({ who: patientName ?? '' });
 	}
 	if (kind === 'arrival' || kind === 'escalation-taken') {

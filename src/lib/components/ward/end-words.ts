@@ -40,6 +40,8 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_clearance(clearance());
 		case 'clearance-question':
 			return m.home_end_clearance_question(clearance());
+		case 'refusal':
+			return m.home_end_refusal(clearance());
 		case 'deviation':
 			return m.home_end_deviation(clearance());
 		case 'precautions-due':

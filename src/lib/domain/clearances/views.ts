@@ -8,6 +8,8 @@ export interface ClearanceView extends ClearanceLine {
 	threadId: string | null;
 	/** Who asked may take the ask back. */
 	askedById: string;
+	/** It is not cleared, and whoever asked has not said that they saw it. */
+	unseen: boolean;
 	/** As it is now while it can be decided; once that is over, as it was at the decision. */
 	evidence: ShownEvidence;
 	/** As it was when the ask was made. */

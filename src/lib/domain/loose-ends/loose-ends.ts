@@ -11,6 +11,7 @@ export const LOOSE_END_KINDS = [
 	'physician-to-tell',
 	'clearance',
 	'clearance-question',
+	'refusal',
 	'deviation',
 	'precautions-due',
 	'referral',
@@ -95,6 +96,9 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'clearance-question':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'refusal':
+			// Whoever said no has said it with its reason; it waits on nobody but the one who asked.
+			return thing.heldById === person.id ? 'mine' : null;
 		case 'precautions-due':
 			return can(person, 'precautions.review', unit) ? 'mine' : null;
 		case 'clearance':

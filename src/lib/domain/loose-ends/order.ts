@@ -48,6 +48,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 			return FIRST_RANK.asks + BY_PRIORITY.routine;
 		case 'clearance':
 		case 'clearance-question':
+		case 'refusal':
 		case 'mention':
 		case 'sign-off':
 		case 'referral':

@@ -35,6 +35,7 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'deviation':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
 		case 'clearance-question':
+		case 'refusal':
 			return holder === null ? 'therapy' : STRAND_OF_ROLE[holder];
 		case 'referral':
 		case 'sign-off':
@@ -78,6 +79,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'recheck':
 		case 'physician-to-tell':
 		case 'clearance-question':
+		case 'refusal':
 			return [];
 	}
 }

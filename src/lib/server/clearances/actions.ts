@@ -143,7 +143,7 @@ function decide(
 		refuseUnseen(context, episode, evidence, seen.evidence);
 		await tx
 			.update(clearances)
-			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now })
+			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now, refusalSeenAt: null })
 			.where(eq(clearances.id, id));
 		await recordClearanceMove(tx, context, {
 			clearanceId: id,

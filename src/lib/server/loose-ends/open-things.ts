@@ -23,6 +23,7 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		physiciansToTell,
 		clearancesAsked,
 		questionsBack,
+		refusalsUnseen,
 		deviationsUnseen,
 		precautionsDue(now),
 		referralsAsked,
@@ -129,6 +130,25 @@ const questionsBack = sql`
 	join users decider on decider.id = q.asked_by
 	join users asker on asker.id = c.asked_by
 	where q.answered_at is null and c.state = 'asked'`;
+
+/**
+ * A no, or a yes that was taken back, is open until whoever asked has said that they saw it: else the ask would vanish
+ * from what they wait for without their knowing how it ended. A new ask of the kind says as much.
+ */
+const refusalsUnseen = sql`
+	select 'refusal', c.id, ${PLACE}, c.thread_id, null, c.kind, c.reason, c.decided_by, decider.name,
+		c.asked_by, asker.name, c.decided_at, null, null
+	from clearances c
+	join place on place.id = c.episode_id
+	join episodes e on e.id = c.episode_id
+	join users decider on decider.id = c.decided_by
+	join users asker on asker.id = c.asked_by
+	where c.state in ('withheld', 'on-hold', 'withdrawn') and c.decided_by <> c.asked_by
+		and c.refusal_seen_at is null and e.closed_at is null
+		and not exists (
+			select 1 from clearances later
+			where later.episode_id = c.episode_id and later.kind = c.kind and later.asked_at > c.asked_at
+		)`;
 
 const deviationsUnseen = sql`
 	select 'deviation', d.id, ${PLACE}, d.thread_id, null, d.kind, d.reason, d.recorded_by, doer.name,

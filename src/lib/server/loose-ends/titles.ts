@@ -26,6 +26,8 @@ export function titleOf(thing: OpenThing): string {
 				kind: CLEARANCE_WORDS[thing.code as ClearanceKind](),
 				text
 			});
+		case 'refusal':
+			return m.home_title_refusal({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'deviation':
 			return m.home_title_deviation({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'precautions-due':

@@ -32,7 +32,9 @@ export const clearances = sqliteTable(
 		limits: json<ClearanceLimits>('limits'),
 		reviewOn: text('review_on'),
 		note: text('note'),
-		reason: text('reason')
+		reason: text('reason'),
+		/** When whoever asked said that they saw the no; each decision empties it. */
+		refusalSeenAt: instant('refusal_seen_at')
 	},
 	(t) => [
 		index('clearances_episode').on(t.episodeId, t.kind),

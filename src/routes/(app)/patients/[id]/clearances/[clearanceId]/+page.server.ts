@@ -9,7 +9,7 @@ import type { PersonContext } from '$lib/server/context';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
-import { answer, askBack, give, hold, withdraw, withhold } from './actions';
+import { acknowledge, answer, askBack, give, hold, withdraw, withhold } from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
@@ -33,11 +33,12 @@ export const load: PageServerLoad = (event) =>
 				withdraw: newFormKey(),
 				askBack: newFormKey(),
 				answer: newFormKey()
-			}
+			},
+			seenKey: newFormKey()
 		};
 	});
 
-export const actions: Actions = { give, withhold, hold, withdraw, askBack, answer };
+export const actions: Actions = { give, withhold, hold, withdraw, askBack, answer, acknowledge };
 
 /** A clearance of another patient is not there: the nameboard above it would be the wrong one. */
 async function ofThisPatient(

@@ -1,4 +1,5 @@
 import type { RequestEvent } from '@sveltejs/kit';
+import { z } from 'zod';
 import { limitsOf, wrongChoice } from '$lib/components/clearances/decision';
 import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
 import { invalidField, type Problem } from '$lib/domain/core/errors';
@@ -12,6 +13,7 @@ import {
 	type Seen
 } from '$lib/server/clearances/actions';
 import { answerQuestion, askBack as askBackAbout } from '$lib/server/clearances/ask-back';
+import { acknowledgeRefusal } from '$lib/server/clearances/refusal';
 import type { PersonContext } from '$lib/server/context';
 import { env } from '$lib/server/env';
 import { formAction } from '$lib/server/http/form-action';
@@ -63,6 +65,17 @@ export const withdraw = refusing('withdraw', withdrawClearance);
 
 export const askBack = refusing('askBack', askBackAbout);
 export const answer = refusing('answer', answerQuestion);
+
+/** Whoever asked has seen the no. */
+export const acknowledge = formAction({
+	schema: z.object({}),
+	id: 'acknowledge',
+	run: async (context, _fields, event) => {
+		await acknowledgeRefusal(context, clearanceOf(event));
+		leadOnWithoutScript(event, event.url.pathname);
+		return m.clearances_done();
+	}
+});
 
 /** What the page showed when it was decided on. */
 function seenOf({ seen, shown }: { seen: string; shown?: string }): Seen {
