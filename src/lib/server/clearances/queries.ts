@@ -73,6 +73,7 @@ export async function getClearance(
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
+		proposed: clearance.proposed,
 		unseen: isUnseenRefusal(clearance),
 		evidence,
 		askedOn: seenBy(clearance.evidence),

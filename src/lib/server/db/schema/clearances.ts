@@ -25,6 +25,8 @@ export const clearances = sqliteTable(
 			.notNull()
 			.references(() => users.id),
 		askedAt: instant('asked_at').notNull(),
+		/** The limits that the ask proposes. */
+		proposed: json<ClearanceLimits>('proposed'),
 		/** What the decider was shown, as it was when the ask was made. */
 		evidence: json<ClearanceEvidence>('evidence').notNull(),
 		decidedBy: text('decided_by').references(() => users.id),

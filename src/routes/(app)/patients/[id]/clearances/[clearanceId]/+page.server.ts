@@ -2,7 +2,7 @@ import type { RequestEvent } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { fieldsOf } from '$lib/components/clearances/decision';
-import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
+import { giveForm, noFields, refuseForm } from '$lib/components/clearances/decision-forms';
 import type { ClearanceView } from '$lib/domain/clearances/views';
 import { notFound } from '$lib/domain/core/errors';
 import type { PersonContext } from '$lib/server/context';
@@ -15,7 +15,7 @@ import type { Actions, PageServerLoad } from './$types';
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => {
 		const clearance = await ofThisPatient(context, event.params.clearanceId, event);
-		const fields = fieldsOf(clearance.kind, clearance.limits, clearance.decidedAt);
+		const fields = fieldsOf(clearance);
 		return {
 			clearance,
 			forms: {
@@ -34,6 +34,7 @@ export const load: PageServerLoad = (event) =>
 				askBack: newFormKey(),
 				answer: newFormKey()
 			},
+			seenForm: await superValidate(zod4(noFields), { id: 'acknowledge' }),
 			seenKey: newFormKey()
 		};
 	});
