@@ -39,6 +39,8 @@ describe('nextStep', () => {
 		['referral', 'therapist', 'Accept', '/patients/e1/threads/t1', '/api/referrals/x1/accept'],
 		['mention', 'nurse', 'Answer', '/patients/e1/threads/t1', null],
 		['visit-unconfirmed', 'coordinator', 'Call', '/patients/e1/visits#visit-x1', null],
+		['visit-closed-day', 'coordinator', 'Find a time', '/patients/e1/visits#visit-x1', null],
+		['visit-unmarked', 'therapist', 'Mark', '/patients/e1/visits#visit-x1', null],
 		['visit-untold', 'coordinator', 'Call', '/loose-ends/visits/x1', null],
 		['visit-cancelled', 'coordinator', 'Find a time', '/patients/e1/visits', null],
 		['message-failed', 'coordinator', 'Call', '/loose-ends/messages/x1', null],

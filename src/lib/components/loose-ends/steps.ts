@@ -63,6 +63,10 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 			return open(m.home_step_answer(), placeOf(end) ?? routes.looseEnds());
 		case 'visit-unconfirmed':
 			return open(m.home_step_call(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
+		case 'visit-unmarked':
+			return open(m.home_step_mark(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
+		case 'visit-closed-day':
+			return open(m.home_step_rebook(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
 		case 'visit-cancelled':
 			return open(m.home_step_rebook(), episodeId ? routes.patientVisits(episodeId) : routes.visits());
 		case 'visit-untold':
@@ -97,6 +101,8 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			}
 			return threadId === null ? routes.patient(episodeId) : routes.thread(episodeId, threadId);
 		case 'visit-cancelled':
+		case 'visit-closed-day':
+		case 'visit-unmarked':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':

@@ -70,6 +70,7 @@ describe('askerWords', () => {
 		[end('visit-unconfirmed', { due: '2026-03-04T10:00:00Z' }), ''],
 		[end('refusal'), 'I. Aldous decided'],
 		[end('deviation'), 'recorded by I. Aldous'],
+		[end('visit-closed-day', { due: '2026-03-04T10:00:00Z' }), 'the visit: tomorrow 10:00'],
 		[end('visit-untold', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('visit-cancelled', { due: '2026-03-04T10:00:00Z' }), 'the visit was for tomorrow 10:00'],
 		[end('message-failed', { code: 'reminder' }), 'a reminder of a visit'],

@@ -65,6 +65,9 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'visit-cancelled':
 		case 'visit-untold':
 			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
+		case 'visit-closed-day':
+		case 'visit-unmarked':
+			return end.due === null ? '' : m.home_asker_visit_at({ time: when(Date.parse(end.due), reader) });
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';
 		case 'precautions-due':

@@ -56,6 +56,10 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_visit_untold();
 		case 'visit-cancelled':
 			return m.home_end_visit_cancelled();
+		case 'visit-closed-day':
+			return m.home_end_visit_closed_day();
+		case 'visit-unmarked':
+			return m.home_end_visit_unmarked();
 		case 'visit-unconfirmed':
 			return m.home_end_visit_unconfirmed();
 		case 'message-failed':

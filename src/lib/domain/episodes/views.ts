@@ -100,6 +100,12 @@ export interface VisitLine {
 	state: VisitState;
 }
 
+/** A visit as the nameboard shows it. */
+export interface BoardVisit extends VisitLine {
+	/** What the closed day is called that it stands on while it is expected; null on an open one. */
+	closedDay: string | null;
+}
+
 /** How a patient is reached, and at whose daytime. */
 export interface PatientContact {
 	phone: string | null;
@@ -158,7 +164,7 @@ export interface Nameboard {
 	clearances: ClearanceLine[];
 	/** Those that no decider has seen yet, the oldest first; empty for who may not read sessions. */
 	deviations: DeviationLine[];
-	visits: VisitLine[];
+	visits: BoardVisit[];
 	escalations: {
 		id: string;
 		grade: 'high' | 'medium' | 'low';

@@ -18,7 +18,9 @@ export const LOOSE_END_KINDS = [
 	'mention',
 	'sign-off',
 	'visit-cancelled',
+	'visit-closed-day',
 	'visit-unconfirmed',
+	'visit-unmarked',
 	'visit-untold',
 	'message-failed',
 	'inbound'
@@ -128,7 +130,13 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return asked ?? (person.senior === true && can(person, 'sign-off.decide', unit) ? 'mine' : null);
 		case 'mention':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'visit-unmarked':
+			return (person.role === 'coordinator' || person.role === 'therapist') &&
+				can(person, 'visit.attend', unit)
+				? 'mine'
+				: null;
 		case 'visit-cancelled':
+		case 'visit-closed-day':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':

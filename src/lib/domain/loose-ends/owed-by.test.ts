@@ -31,6 +31,8 @@ describe('owedBy', () => {
 		['mention', 'coordinator', null, 'patient'],
 		['visit-cancelled', null, null, 'patient'],
 		['visit-unconfirmed', null, null, 'patient'],
+		['visit-closed-day', null, null, 'patient'],
+		['visit-unmarked', null, null, 'patient'],
 		['visit-untold', 'cancelled', null, 'patient'],
 		['message-failed', 'reminder', null, 'patient'],
 		['inbound', 'other', null, 'patient']
@@ -50,6 +52,8 @@ describe('rolesAsked', () => {
 		['recheck', null, []],
 		['mention', 'nurse', []],
 		['visit-unconfirmed', null, ['coordinator']],
+		['visit-closed-day', null, ['coordinator']],
+		['visit-unmarked', null, ['therapist', 'coordinator']],
 		['visit-untold', 'moved', ['coordinator']],
 		['clearance', 'arm-stage', ['surgeon']],
 		['clearance', 'corridor', ['surgeon', 'physician']],

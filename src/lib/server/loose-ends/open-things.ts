@@ -1,6 +1,6 @@
 import { sql, type SQL } from 'drizzle-orm';
-import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
 import { strayIn } from '../access/messages';
+import { visitsOnClosedDays, visitsUnmarked, visitsUnconfirmed } from './visits';
 import { IS_NEWS_OF_CHANGE, visitsUntold } from '../visits/untold';
 import { precautionsDue } from './precautions-due';
 import { PLACE } from './place';
@@ -30,7 +30,9 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		questionsOpen,
 		signOffsAsked,
 		visitsCancelled,
+		visitsOnClosedDays(now),
 		visitsUnconfirmed(now),
+		visitsUnmarked(now),
 		visitsUntold(now),
 		messagesFailed,
 		textsUnread(unitIds)
@@ -191,16 +193,6 @@ const questionsOpen = sql`
 		select 1 from entries later
 		where later.thread_id = n.thread_id and later.seq > n.seq and later.author_id = q.user_id
 	)`;
-
-/** A visit that nobody has confirmed by the evening before wants a telephone call, until it begins. */
-function visitsUnconfirmed(now: number): SQL {
-	return sql`
-		select 'visit-unconfirmed', v.id, ${PLACE}, null, null, null, null, null, null,
-			null, null, v.starts_at - ${UNCONFIRMED_WITHIN_MS}, v.starts_at, null
-		from visits v
-		join place on place.id = v.episode_id
-		where v.state = 'planned' and v.starts_at > ${now} and v.starts_at <= ${now + UNCONFIRMED_WITHIN_MS}`;
-}
 
 /** A visit that the patient cancelled wants another date, until somebody has found one or said that none is wanted. */
 const visitsCancelled = sql`
