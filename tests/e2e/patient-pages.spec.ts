@@ -72,6 +72,7 @@ test('without script: refer, accept, talk, ask, decide, and see who was faster',
 	await surgeon.getByRole('radio', { name: 'two helpers' }).check();
 	await surgeon.getByRole('button', { name: 'Clear, with two helpers' }).click();
 	await expect(surgeon.getByText('Cleared with limits')).toBeVisible();
+	await physician.getByRole('radio', { name: 'one helper' }).check();
 	await physician.getByRole('button', { name: 'Clear, with one helper' }).click();
 	await expect(alerts(physician)).toContainText('Hilde Castellane was faster');
 	await expect(physician.getByText('with two helpers', { exact: true })).toBeVisible();

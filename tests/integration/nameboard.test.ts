@@ -43,7 +43,11 @@ describe('a patient without an operation on record', () => {
 	it('is not said to have no precautions, and keeps the cautious level', async () => {
 		await db().delete(operations).where(eq(operations.episodeId, episodeId));
 		expect(await beware()).toBe('Precautions not known');
-		expect((await board()).mayDoNow).toMatchObject({ chair: 'one', stairs: 'not' });
+		expect(await board()).toMatchObject({
+			mayDoNow: { chair: 'one', stairs: 'not' },
+			notKnown: ['operation']
+		});
+		expect(await onTheWard()).toMatchObject({ notKnown: ['operation'] });
 	});
 });
 
@@ -70,6 +74,7 @@ describe('an outpatient', () => {
 		expect(await board()).toMatchObject({
 			phase: 'outpatient',
 			mayDoNow: null,
+			notKnown: [],
 			precautions: { sternal: true }
 		});
 		expect(await onTheWard()).toMatchObject({ phase: 'outpatient', mayDoNow: null });

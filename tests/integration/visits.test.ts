@@ -124,7 +124,7 @@ describe('booking one visit', () => {
 			bookedBy: hospital.people.coordinator.id,
 			bookedAt: HOSPITAL_NOW
 		});
-		expect(await visitsOfEpisode(db(), episodeId)).toEqual(result.items);
+		expect(await visitsOfEpisode(db(), episodeId)).toMatchObject(result.items);
 	});
 
 	it('plans its reminders for two days and one day before at 17:00', async () => {

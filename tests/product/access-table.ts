@@ -99,6 +99,7 @@ export const API: Record<string, Row> = {
 		answers: [422]
 	},
 	'POST /api/clearances/[id]/withdraw': { roles: SEEING, answers: [422] },
+	'POST /api/clearances/[id]/acknowledge': { roles: SEEING, answers: [404] },
 	'GET /api/alarms': { roles: 'signed-in', answers: [200] },
 	'POST /api/deviations/[id]/acknowledge': { roles: DECIDERS, answers: [404] },
 	'GET /api/escalations/[id]': { roles: CLINICAL, answers: [404] },

@@ -128,6 +128,8 @@ export const ACTIONS: Record<string, ActionRow> = {
 	[`${CLEARANCE}?/withdraw`]: { fields: WHY, roles: REFERRING },
 	[`${CLEARANCE}?/askBack`]: { fields: WHY, roles: REFERRING },
 	[`${CLEARANCE}?/answer`]: { fields: WHY, roles: ASKING },
+	// Whoever asked, and nobody else.
+	[`${CLEARANCE}?/acknowledge`]: { fields: {}, roles: ['therapist'] },
 	'/ward/admit': {
 		fields: {
 			name: 'Remi Tide',

@@ -1,6 +1,6 @@
 /** The schemas of the decision's forms, apart from its words: a page asks for them once a form is touched. */
 import { z } from 'zod';
-import { shownMarks } from '$lib/domain/clearances/forms';
+import { askClearanceBody, shownMarks } from '$lib/domain/clearances/forms';
 import { reason, text, tooLong, typedDay, typedNumber } from '$lib/domain/core/fields';
 import { m } from '$lib/i18n/paraglide/messages';
 import { LIMIT_CHOICES } from './decision';
@@ -21,5 +21,16 @@ export const giveForm = z.object({
 });
 export type GiveFields = z.infer<typeof giveForm>;
 
+/** The form that asks, with the limits that whoever asks proposes. */
+export const askForm = askClearanceBody.omit({ proposed: true }).extend({
+	question: text('What you ask', 2000),
+	limit: giveForm.shape.limit,
+	maxMinutes: giveForm.shape.maxMinutes,
+	other: text(m.clearances_ask_limits(), 200).optional()
+});
+
 /** For everything that is not a yes: withhold, hold, withdraw. */
 export const refuseForm = z.object({ reason: reason(m.clearances_field_reason()), seen, shown });
+
+/** For what is one press: whoever asked has seen the no. */
+export const noFields = z.object({});

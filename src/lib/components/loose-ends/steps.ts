@@ -37,6 +37,12 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
 		case 'clearance-question':
 			return open(m.home_step_answer(), episodeId ? routes.clearance(episodeId, id) : routes.looseEnds());
+		case 'refusal':
+			return {
+				label: m.home_step_seen(),
+				href: episodeId ? routes.clearance(episodeId, id) : routes.looseEnds(),
+				deed: `/api/clearances/${id}/acknowledge`
+			};
 		case 'deviation':
 			return {
 				label: m.home_step_seen(),
@@ -57,6 +63,10 @@ export function nextStep(end: LooseEnd, role: Role): Step {
 			return open(m.home_step_answer(), placeOf(end) ?? routes.looseEnds());
 		case 'visit-unconfirmed':
 			return open(m.home_step_call(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
+		case 'visit-unmarked':
+			return open(m.home_step_mark(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
+		case 'visit-closed-day':
+			return open(m.home_step_rebook(), episodeId ? routes.patientVisit(episodeId, id) : routes.visits());
 		case 'visit-cancelled':
 			return open(m.home_step_rebook(), episodeId ? routes.patientVisits(episodeId) : routes.visits());
 		case 'visit-untold':
@@ -80,6 +90,8 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			return routes.escalation(id);
 		case 'deviation':
 			return episodeId === null ? null : routes.clearances(episodeId);
+		case 'refusal':
+			return episodeId === null ? null : routes.clearance(episodeId, id);
 		case 'clearance':
 		case 'clearance-question':
 		case 'referral':
@@ -89,6 +101,8 @@ export function placeOf({ kind, id, episodeId, threadId }: LooseEnd): string | n
 			}
 			return threadId === null ? routes.patient(episodeId) : routes.thread(episodeId, threadId);
 		case 'visit-cancelled':
+		case 'visit-closed-day':
+		case 'visit-unmarked':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':

@@ -48,6 +48,8 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
 		case 'recheck':
 			return m.home_asker_settled({ time: when(Date.parse(end.since), reader) });
+		case 'refusal':
+			return m.home_asker_decided({ name });
 		case 'deviation':
 			return m.home_asker_did({ name });
 		case 'clearance':
@@ -63,6 +65,9 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'visit-cancelled':
 		case 'visit-untold':
 			return end.due === null ? '' : m.home_asker_visit({ time: when(Date.parse(end.due), reader) });
+		case 'visit-closed-day':
+		case 'visit-unmarked':
+			return end.due === null ? '' : m.home_asker_visit_at({ time: when(Date.parse(end.due), reader) });
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';
 		case 'precautions-due':
@@ -101,7 +106,7 @@ export function owerWords(end: LooseEnd): string {
 
 /** What was done with one press, once it was: a referral accepted, the holder at the bedside, a deviation seen. */
 export function doneWords({ kind, code, patientName }: LooseEnd): string {
-	if (kind === 'deviation') {
+	if (kind === 'deviation' || kind === 'refusal') {
 		return m.home_seen({ who: patientName ?? '' });
 	}
 	if (kind === 'arrival' || kind === 'escalation-taken') {

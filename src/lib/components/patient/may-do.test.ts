@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { LEVELS, type Level } from '$lib/domain/core/codes';
 import { mayDoNow } from '$lib/domain/episodes/may-do-now';
-import { groupWords, mayDoGroups } from './may-do';
+import { groupWords, mayDoGroups, mayDoWords, type MayDoOf } from './may-do';
 
 describe('mayDoGroups', () => {
 	it.each<[Level, string]>([
@@ -34,5 +34,36 @@ describe('mayDoGroups', () => {
 	it.each(LEVELS)('names every place of level %d once', (level) => {
 		const places = mayDoGroups(mayDoNow(level, [])).flatMap((group) => group.places);
 		expect(places).toEqual(['bed', 'chair', 'bathroom', 'corridor', 'stairs']);
+	});
+});
+
+describe('mayDoWords', () => {
+	const LEVEL_2 = mayDoNow(2, []);
+	it.each<[MayDoOf, boolean, string]>([
+		[
+			{ phase: 'inpatient', mayDoNow: LEVEL_2, notKnown: [] },
+			false,
+			'bed alone · chair, bathroom one helper · corridor, stairs not'
+		],
+		[
+			{ phase: 'inpatient', mayDoNow: LEVEL_2, notKnown: [] },
+			true,
+			'chair, bathroom one helper · corridor, stairs not'
+		],
+		[
+			{ phase: 'inpatient', mayDoNow: LEVEL_2, notKnown: ['operation'] },
+			true,
+			'Not known: operation and precautions; find out first · chair, bathroom one helper · corridor, stairs not'
+		],
+		[{ phase: 'inpatient', mayDoNow: null, notKnown: [] }, false, 'Levels count from the operation'],
+		[{ phase: 'outpatient', mayDoNow: null, notKnown: [] }, false, 'Exercise in the programme, supervised'],
+		// No permission stands beside what is missing.
+		[
+			{ phase: 'outpatient', mayDoNow: null, notKnown: ['operation', 'drug', 'rhythm'] },
+			true,
+			'Not known: operation and precautions, rate-slowing drug, rhythm; find out before any exercise'
+		]
+	])('%#: %s', (of, brief, words) => {
+		expect(mayDoWords(of, brief).join(' · ')).toBe(words);
 	});
 });

@@ -1,4 +1,5 @@
-import { PLACES, type Help, type MayDoNow, type Place } from '$lib/domain/episodes/may-do-now';
+import { PLACES, type Deciding, type Help, type MayDoNow, type Place } from '$lib/domain/episodes/may-do-now';
+import type { Nameboard } from '$lib/domain/episodes/views';
 import { m } from '$lib/i18n/paraglide/messages';
 
 export const PLACE_WORDS: Record<Place, () => string> = {
@@ -22,9 +23,29 @@ export interface MayDoGroup {
 	places: Place[];
 }
 
-/** What stands in place of the groups where no level decides. */
-export function noLevelWords(phase: 'inpatient' | 'outpatient'): string {
-	return phase === 'outpatient' ? m.patient_may_do_outpatient() : m.patient_may_do_before();
+const DECIDING_WORDS: Record<Deciding, () => string> = {
+	operation: m.patient_not_known_operation,
+	drug: m.patient_not_known_drug,
+	rhythm: m.patient_not_known_rhythm
+};
+
+export type MayDoOf = Pick<Nameboard, 'mayDoNow' | 'notKnown' | 'phase'>;
+
+/**
+ * What a patient may do now, each part apart. What decides and is not known comes first; in the programme nothing is
+ * permitted while something is missing.
+ * @param brief only what takes help or is not allowed
+ */
+export function mayDoWords({ mayDoNow, notKnown, phase }: MayDoOf, brief = false): string[] {
+	const what = notKnown.map((each) => DECIDING_WORDS[each]()).join(', ');
+	if (mayDoNow !== null) {
+		const groups = mayDoGroups(mayDoNow).filter(({ help }) => !brief || help !== 'alone');
+		return [...(what === '' ? [] : [m.patient_not_known({ what })]), ...groups.map(groupWords)];
+	}
+	if (phase === 'inpatient') {
+		return [m.patient_may_do_before()];
+	}
+	return [what === '' ? m.patient_may_do_outpatient() : m.patient_not_known_no_exercise({ what })];
 }
 
 /** What a patient may do now, from the bed to the stairs; neighbours with the same help stand together. */

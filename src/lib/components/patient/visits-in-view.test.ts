@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import type { VisitLine } from '$lib/domain/episodes/views';
+import type { BoardVisit } from '$lib/domain/episodes/views';
 import { visitsInView } from './visits-in-view';
 
-const at = (startsAt: string): VisitLine => ({
+const at = (startsAt: string): BoardVisit => ({
+	closedDay: null,
 	id: startsAt,
 	startsAt,
 	minutes: 45,
@@ -10,7 +11,7 @@ const at = (startsAt: string): VisitLine => ({
 	state: 'planned'
 });
 const days = (...of: number[]) => of.map((day) => at(`2026-03-0${day}T10:00:00.000Z`));
-const shown = (visits: VisitLine[], now: string) =>
+const shown = (visits: BoardVisit[], now: string) =>
 	visitsInView(visits, Date.parse(now)).map(({ startsAt }) => Number(startsAt.slice(8, 10)));
 
 describe('visitsInView', () => {

@@ -1,9 +1,17 @@
 import type { SuperValidated } from 'sveltekit-superforms';
 import type { ClearanceKind } from '$lib/domain/core/codes';
+import type { LimitChoice } from '../clearances/decision';
 
 export type ReasonForm = SuperValidated<{ reason: string }, string>;
 export type MaybeReasonForm = SuperValidated<{ reason?: string }, string>;
-export type AskFields = { kind: ClearanceKind; question: string; threadId?: string };
+export type AskFields = {
+	kind: ClearanceKind;
+	question: string;
+	threadId?: string;
+	limit?: LimitChoice;
+	maxMinutes?: string;
+	other?: string;
+};
 export type AskForm = SuperValidated<AskFields, string>;
 
 /** `mention` is the person whom the entry asks; empty for nobody. */

@@ -6,6 +6,7 @@ const SINCE = '2026-03-03T09:00:00.000Z';
 const CODES: Record<string, string> = {
 	clearance: 'arm-stage',
 	'clearance-question': 'arm-stage',
+	refusal: 'oral-intake',
 	deviation: 'oral-intake',
 	referral: 'speech-therapy',
 	mention: 'nurse'

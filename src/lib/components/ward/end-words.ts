@@ -40,6 +40,8 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_clearance(clearance());
 		case 'clearance-question':
 			return m.home_end_clearance_question(clearance());
+		case 'refusal':
+			return m.home_end_refusal(clearance());
 		case 'deviation':
 			return m.home_end_deviation(clearance());
 		case 'precautions-due':
@@ -54,6 +56,10 @@ function kindWords({ kind, code }: Pick<HangingEnd, 'kind' | 'code'>): string {
 			return m.home_end_visit_untold();
 		case 'visit-cancelled':
 			return m.home_end_visit_cancelled();
+		case 'visit-closed-day':
+			return m.home_end_visit_closed_day();
+		case 'visit-unmarked':
+			return m.home_end_visit_unmarked();
 		case 'visit-unconfirmed':
 			return m.home_end_visit_unconfirmed();
 		case 'message-failed':

@@ -20,6 +20,7 @@ function row(bed: string | null, name: string, level: 1 | 3 | 5, looseEnds: numb
 		ends: [],
 		phase: 'inpatient',
 		mayDoNow: mayDoNow(level, []),
+		notKnown: ['operation'],
 		precautions: precautionsOf(null, null, false),
 		nothingByMouth: false,
 		escalation: null

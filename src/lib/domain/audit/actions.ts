@@ -19,6 +19,7 @@ export const AUDIT_ACTIONS = [
 	'clearance.given',
 	'clearance.held',
 	'clearance.lapsed',
+	'clearance.refusal-seen',
 	'clearance.withdrawn',
 	'clearance.withheld',
 	'closed-day.added',

@@ -29,11 +29,10 @@ export type ClearanceLimits = z.infer<typeof clearanceLimits>;
 export const askClearanceBody = z.strictObject({
 	kind: z.enum(CLEARANCE_KINDS),
 	question: text('The question', 2000),
+	/** The limits that whoever asks proposes; the decision begins with them. */
+	proposed: clearanceLimits.optional(),
 	threadId: z.string().min(1).optional()
 });
-
-/** The form that asks; its message names the field as the page does. */
-export const askClearanceForm = askClearanceBody.extend({ question: text('What you ask', 2000) });
 
 /** What the decider was shown, from `shown` of the clearance: when something is new since, it is refused once. */
 export const shownMarks = z
@@ -47,7 +46,8 @@ export const shownMarks = z
 const decidedAt = instant('decidedAt').nullable().optional();
 
 export const giveClearanceBody = z.strictObject({
-	limits: clearanceLimits.optional(),
+	/** Null says that there is none: where limits were proposed, leaving them out is refused. */
+	limits: clearanceLimits.nullable().optional(),
 	reviewOn: z.iso.date('The review day is a date like 2026-12-14.').optional(),
 	note: text('The note', 1000).optional(),
 	shown: shownMarks.optional(),

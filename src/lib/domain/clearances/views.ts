@@ -1,5 +1,5 @@
 import type { ClearanceLine } from '../episodes/views';
-import type { ClearanceEvidence } from './forms';
+import type { ClearanceEvidence, ClearanceLimits } from './forms';
 import type { EvidenceNews } from './news';
 
 /** One clearance as the decider sees it and as `GET /api/clearances/:id` answers it. */
@@ -8,6 +8,10 @@ export interface ClearanceView extends ClearanceLine {
 	threadId: string | null;
 	/** Who asked may take the ask back. */
 	askedById: string;
+	/** The limits that whoever asked proposed; null for none. */
+	proposed: ClearanceLimits | null;
+	/** It is not cleared, and whoever asked has not said that they saw it. */
+	unseen: boolean;
 	/** As it is now while it can be decided; once that is over, as it was at the decision. */
 	evidence: ShownEvidence;
 	/** As it was when the ask was made. */

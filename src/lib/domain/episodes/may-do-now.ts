@@ -1,4 +1,5 @@
-import type { ClearanceKind, ClearanceState, Level } from '../core/codes';
+import type { ClearanceKind, ClearanceState, Level, Rhythm } from '../core/codes';
+import { mayHold, type Precautions } from './precautions';
 
 export const PLACES = ['bed', 'chair', 'bathroom', 'corridor', 'stairs'] as const;
 export type Place = (typeof PLACES)[number];
@@ -46,4 +47,29 @@ export function mayDoNow(
 		}
 	}
 	return now;
+}
+
+/** What decides and can be missing from the record, in the order in which it is asked for. */
+export const DECIDING = ['operation', 'drug', 'rhythm'] as const;
+export type Deciding = (typeof DECIDING)[number];
+
+/**
+ * What decides on what a patient may do and is not known: it has to be said before any permission. Without an
+ * operation on record nobody can say that no precautions hold, as the bedside goes by. The pulse decides on exercise
+ * in the programme, and is read with the drug and the rhythm; on the ward the level decides, and they are asked at
+ * each session.
+ */
+export function notKnown(about: {
+	phase: 'inpatient' | 'outpatient';
+	precautions: Pick<Precautions, 'basis' | 'sternal'>;
+	betaBlocked: boolean | null;
+	rhythm: Rhythm | null;
+}): Deciding[] {
+	const { phase, precautions, betaBlocked, rhythm } = about;
+	const missing: Record<Deciding, boolean> = {
+		operation: precautions.basis === 'none' && mayHold(precautions),
+		drug: phase === 'outpatient' && betaBlocked === null,
+		rhythm: phase === 'outpatient' && rhythm === null
+	};
+	return DECIDING.filter((each) => missing[each]);
 }

@@ -15,7 +15,7 @@ import type { LocalLayers } from '../bedside/limits/layers';
 import type { HangingEnd } from '../loose-ends/hanging';
 import type { StandingWound } from '../wounds/stand';
 import type { WoundNote } from '../wounds/views';
-import type { MayDoNow } from './may-do-now';
+import type { Deciding, MayDoNow } from './may-do-now';
 import type { Precautions } from './precautions';
 
 /** Shapes that queries answer and pages show. Instants are RFC 3339, days `YYYY-MM-DD`. */
@@ -47,6 +47,8 @@ export interface EpisodeListItem {
 	phase: 'inpatient' | 'outpatient';
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;
+	/** What decides on it and is not on record: said before any permission. */
+	notKnown: Deciding[];
 	precautions: Precautions;
 	/** Whether nothing may be taken by mouth; false also where nobody has said. */
 	nothingByMouth: boolean;
@@ -100,6 +102,12 @@ export interface VisitLine {
 	state: VisitState;
 }
 
+/** A visit as the nameboard shows it. */
+export interface BoardVisit extends VisitLine {
+	/** What the closed day is called that it stands on while it is expected; null on an open one. */
+	closedDay: string | null;
+}
+
 /** How a patient is reached, and at whose daytime. */
 export interface PatientContact {
 	phone: string | null;
@@ -134,6 +142,8 @@ export interface Nameboard {
 	rhythm: Rhythm | null;
 	/** Null where levels do not decide: before the operation, and for outpatients. */
 	mayDoNow: MayDoNow | null;
+	/** What decides on it and is not on record: said before any permission. */
+	notKnown: Deciding[];
 	precautions: Precautions;
 	/** Whether nothing may be taken by mouth; false also where nobody has said. */
 	nothingByMouth: boolean;
@@ -158,7 +168,7 @@ export interface Nameboard {
 	clearances: ClearanceLine[];
 	/** Those that no decider has seen yet, the oldest first; empty for who may not read sessions. */
 	deviations: DeviationLine[];
-	visits: VisitLine[];
+	visits: BoardVisit[];
 	escalations: {
 		id: string;
 		grade: 'high' | 'medium' | 'low';

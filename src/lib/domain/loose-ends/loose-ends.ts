@@ -11,13 +11,16 @@ export const LOOSE_END_KINDS = [
 	'physician-to-tell',
 	'clearance',
 	'clearance-question',
+	'refusal',
 	'deviation',
 	'precautions-due',
 	'referral',
 	'mention',
 	'sign-off',
 	'visit-cancelled',
+	'visit-closed-day',
 	'visit-unconfirmed',
+	'visit-unmarked',
 	'visit-untold',
 	'message-failed',
 	'inbound'
@@ -95,6 +98,9 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return thing.heldById === person.id ? 'mine' : asked;
 		case 'clearance-question':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'refusal':
+			// Whoever said no has said it with its reason; it waits on nobody but the one who asked.
+			return thing.heldById === person.id ? 'mine' : null;
 		case 'precautions-due':
 			return can(person, 'precautions.review', unit) ? 'mine' : null;
 		case 'clearance':
@@ -124,7 +130,13 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 			return asked ?? (person.senior === true && can(person, 'sign-off.decide', unit) ? 'mine' : null);
 		case 'mention':
 			return thing.heldById === person.id ? 'mine' : asked;
+		case 'visit-unmarked':
+			return (person.role === 'coordinator' || person.role === 'therapist') &&
+				can(person, 'visit.attend', unit)
+				? 'mine'
+				: null;
 		case 'visit-cancelled':
+		case 'visit-closed-day':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':

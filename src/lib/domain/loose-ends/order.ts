@@ -48,6 +48,7 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 			return FIRST_RANK.asks + BY_PRIORITY.routine;
 		case 'clearance':
 		case 'clearance-question':
+		case 'refusal':
 		case 'mention':
 		case 'sign-off':
 		case 'referral':
@@ -57,6 +58,8 @@ export function rank({ kind, grade, priority }: Pick<Ranked, 'kind' | 'grade' | 
 		case 'inbound':
 			return FIRST_RANK.messages;
 		case 'visit-cancelled':
+		case 'visit-closed-day':
+		case 'visit-unmarked':
 		case 'visit-unconfirmed':
 			return FIRST_RANK.visits;
 		default:
@@ -68,8 +71,15 @@ function gradeRank(grade: Ranked['grade']): number {
 	return grade === null ? GRADES.length : GRADES.indexOf(grade);
 }
 
+const OF_A_VISIT: ReadonlySet<Ranked['kind']> = new Set([
+	'visit-cancelled',
+	'visit-closed-day',
+	'visit-unconfirmed',
+	'visit-unmarked'
+]);
+
 /** A re-check and a visit come due at a time of their own; everything else has waited since it was asked. */
 function timeOf({ kind, since, due }: Ranked): number {
-	const hasOwnTime = kind === 'recheck' || kind === 'visit-cancelled' || kind === 'visit-unconfirmed';
+	const hasOwnTime = kind === 'recheck' || OF_A_VISIT.has(kind);
 	return hasOwnTime ? (due ?? since) : since;
 }

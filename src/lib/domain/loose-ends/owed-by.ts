@@ -35,6 +35,7 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'deviation':
 			return code === 'oral-intake' ? 'therapy' : 'medical';
 		case 'clearance-question':
+		case 'refusal':
 			return holder === null ? 'therapy' : STRAND_OF_ROLE[holder];
 		case 'referral':
 		case 'sign-off':
@@ -42,6 +43,8 @@ export function owedBy({ kind, code }: Owed, holder: ClinicalRole | null = null)
 		case 'mention':
 			return STRAND_OF_ROLE[code as ClinicalRole] ?? 'patient';
 		case 'visit-cancelled':
+		case 'visit-closed-day':
+		case 'visit-unmarked':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':
@@ -64,11 +67,14 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'referral':
 			return ROLES.filter((role) => can(anyone(role), 'referral.answer', { service: code as Service }));
 		case 'visit-cancelled':
+		case 'visit-closed-day':
 		case 'visit-unconfirmed':
 		case 'visit-untold':
 		case 'message-failed':
 		case 'inbound':
 			return ['coordinator'];
+		case 'visit-unmarked':
+			return ['therapist', 'coordinator'];
 		case 'sign-off':
 			return ['therapist'];
 		case 'mention':
@@ -78,6 +84,7 @@ export function rolesAsked({ kind, code }: Owed): Role[] {
 		case 'recheck':
 		case 'physician-to-tell':
 		case 'clearance-question':
+		case 'refusal':
 			return [];
 	}
 }

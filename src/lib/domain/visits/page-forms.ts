@@ -31,4 +31,7 @@ export const moveVisitForm = z.strictObject({
 	reason: reason('Why it moves').optional()
 });
 
-export const closeDayForm = z.strictObject({ date: typedDay('Day'), name: text('Name of the day', NAME_MAX) });
+export const closeDayForm = z.strictObject({
+	date: typedDay('Day'),
+	name: text('Name of the day', NAME_MAX)
+});

@@ -55,6 +55,8 @@ export interface VisitItem {
 	unitId: string;
 	state: VisitState;
 	reason: string | null;
+	/** What the closed day is called that it stands on while it is expected; null on an open one. */
+	closedDay: string | null;
 	/** Cancelled by the patient, and nobody has followed it up yet. */
 	wantsFollowUp: boolean;
 	/** Grows with each move; see the calendar file. */

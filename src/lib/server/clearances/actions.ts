@@ -18,6 +18,7 @@ import type { ClearanceState } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import { isRfc3339, parseRfc3339, toRfc3339 } from '$lib/domain/core/instant';
 import { newsWords } from '$lib/i18n/clearance-news';
+import { limitWords } from '$lib/i18n/limits';
 import { m } from '$lib/i18n/paraglide/messages';
 import { accessClearance, accessEpisode, type EpisodeRow } from '../access/access';
 import { threadForDeed } from '../access/thread';
@@ -75,7 +76,10 @@ export interface Seen {
 	evidence?: string;
 }
 
-/** Give a clearance, with limits or without. */
+/**
+ * Give a clearance, with limits or without. Where the ask proposed limits, a yes without any has to say so.
+ * @throws Problem `invalid` at `/limits` where they are left out and some were proposed
+ */
 export function giveClearance(
 	context: PersonContext,
 	id: string,
@@ -88,7 +92,7 @@ export function giveClearance(
 		note: input.note ?? null,
 		reason: null
 	};
-	return decide(context, id, 'give', decision, seen);
+	return decide(context, id, 'give', decision, { ...seen, limitsSaid: input.limits !== undefined });
 }
 
 export function withholdClearance(context: PersonContext, id: string, reason: string, seen: Seen = {}) {
@@ -125,7 +129,7 @@ function decide(
 	id: string,
 	move: DecidingMove,
 	decision: Decision,
-	seen: Seen
+	seen: Seen & { limitsSaid?: boolean }
 ): Promise<Written<{ id: string; state: ClearanceState }>> {
 	return write(context, move === 'withdraw' ? 'thread.read' : 'clearance.decide', async (tx) => {
 		const { clearance, episode } = await accessForMove(tx, context, id, move);
@@ -133,6 +137,7 @@ function decide(
 		await refuseSlower(tx, clearance, seen.decidedAt, mustSayWhatStood(stood, move));
 		const state = nextClearanceState(stood, move, decision.limits);
 		refusePastReview(decision.reviewOn, context.now);
+		refusePassedOver(clearance, seen.limitsSaid);
 		const limits = move === 'give' ? (decision.limits ?? null) : clearance.limits;
 		const reviewOn = decision.reviewOn === undefined ? clearance.reviewOn : decision.reviewOn;
 		// An ask taken back was never decided; only a decision can hold what the level allows.
@@ -143,7 +148,7 @@ function decide(
 		refuseUnseen(context, episode, evidence, seen.evidence);
 		await tx
 			.update(clearances)
-			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now })
+			.set({ ...decision, limits, state, decidedBy, decidedAt: context.now, refusalSeenAt: null })
 			.where(eq(clearances.id, id));
 		await recordClearanceMove(tx, context, {
 			clearanceId: id,
@@ -231,6 +236,14 @@ async function accessForMove(tx: Tx, context: PersonContext, id: string, move: D
 	const seen = await accessClearance(tx, context.actor, id, 'thread.read');
 	const own = seen.clearance.askedBy === context.actor.id && seen.clearance.state === 'asked';
 	return own ? seen : accessClearance(tx, context.actor, id, 'clearance.withdraw');
+}
+
+/** A figure that was proposed is not passed over by leaving it out. */
+function refusePassedOver({ state, proposed }: ClearanceRow, limitsSaid: boolean | undefined): void {
+	if (state === 'asked' && proposed !== null && limitsSaid === false) {
+		const limits = limitWords(proposed).join(', ');
+		throw invalidField('/limits', `limits is left out and ${limits} was proposed; say it, or null for none.`);
+	}
 }
 
 function refusePastReview(reviewOn: string | null | undefined, now: number): void {

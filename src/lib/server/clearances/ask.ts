@@ -1,8 +1,7 @@
 import { and, eq, inArray } from 'drizzle-orm';
-import type { ClearanceEvidence } from '$lib/domain/clearances/forms';
+import type { ClearanceEvidence, ClearanceLimits } from '$lib/domain/clearances/forms';
 import { stateOn } from '$lib/domain/clearances/states';
 import type { ClearanceKind } from '$lib/domain/core/codes';
-import { CLEARANCE_WORDS } from '$lib/i18n/labels';
 import type { EpisodeRow } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
@@ -13,6 +12,7 @@ import type { Change } from '../write';
 import { gatherEvidence } from './evidence';
 import { hospitalToday, lapse } from './lapse';
 import { recordClearanceMove } from './moves';
+import { askText } from './texts';
 
 type ClearanceRow = typeof clearances.$inferSelect;
 
@@ -23,11 +23,12 @@ export async function insertAsk(
 	tx: Tx,
 	context: PersonContext,
 	about: { episode: EpisodeRow; facts: EpisodeFacts; threadId: string | null },
-	ask: { kind: ClearanceKind; question: string }
+	ask: { kind: ClearanceKind; question: string; proposed?: ClearanceLimits }
 ): Promise<Change<{ id: string; state: 'asked'; evidence: ClearanceEvidence }>> {
 	const { episode, facts, threadId } = about;
 	const evidence = await gatherEvidence(tx, episode, facts, { now: context.now, since: context.now });
 	const id = newId();
+	const proposed = ask.proposed && Object.keys(ask.proposed).length > 0 ? ask.proposed : null;
 	await tx.insert(clearances).values({
 		id,
 		episodeId: episode.id,
@@ -36,12 +37,13 @@ export async function insertAsk(
 		kind: ask.kind,
 		state: 'asked',
 		question: ask.question,
+		proposed,
 		askedBy: context.actor.id,
 		askedAt: context.now,
 		evidence
 	});
 	await recordClearanceMove(tx, context, { clearanceId: id, fromState: null, toState: 'asked', evidence });
-	const body = `${CLEARANCE_WORDS[ask.kind]()}: ${ask.question}`;
+	const body = askText(ask.kind, ask.question, proposed);
 	return {
 		result: { id, state: 'asked', evidence },
 		audit: {

@@ -14,6 +14,7 @@ import { factsOfOne } from '../episodes/facts';
 import { questionsOf } from './ask-back';
 import { gatherEvidence, shownTo } from './evidence';
 import { hospitalToday } from './lapse';
+import { isUnseenRefusal } from './refusal';
 
 const decider = alias(users, 'decider');
 
@@ -72,6 +73,8 @@ export async function getClearance(
 		episodeId: clearance.episodeId,
 		threadId: clearance.threadId,
 		askedById: clearance.askedBy,
+		proposed: clearance.proposed,
+		unseen: isUnseenRefusal(clearance),
 		evidence,
 		askedOn: seenBy(clearance.evidence),
 		decidedOn: decidedOn && seenBy(decidedOn),

@@ -5,6 +5,13 @@ import { CLEARANCE_WORDS, HEADLINE_WORDS } from '$lib/i18n/labels';
 import { limitWords } from '$lib/i18n/limits';
 import { m } from '$lib/i18n/paraglide/messages';
 
+/** What the ask says in the thread: kind, question, and the limits it proposes. */
+export function askText(kind: ClearanceKind, question: string, proposed: ClearanceLimits | null): string {
+	const ask = `${CLEARANCE_WORDS[kind]()}: ${question}`;
+	const limits = limitWords(proposed).join(' · ');
+	return limits === '' ? ask : `${ask} ${m.clearances_proposed({ limits })}`;
+}
+
 /** What the answer says in the thread: kind, headline, limits, review, reason. */
 export function answerText(
 	kind: ClearanceKind,

@@ -3,6 +3,7 @@ import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
+import { notKnown } from '$lib/domain/episodes/may-do-now';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import { hangingEnds } from '$lib/domain/loose-ends/hanging';
 import type { Reader } from '../db';
@@ -78,6 +79,7 @@ export async function listEpisodes(
 			ends: ends.get(episode.id) ?? [],
 			phase: episode.phase,
 			mayDoNow: derived && levelsDecide(episode, derived) ? derived.mayDoNow : null,
+			notKnown: derived ? notKnown({ ...episode, precautions: derived.precautions }) : [],
 			precautions: derived?.precautions,
 			nothingByMouth: episode.phase === 'inpatient' && derived?.nothingByMouth === true,
 			// Who may not read calls for help sees none here either.

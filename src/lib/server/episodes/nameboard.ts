@@ -4,6 +4,7 @@ import { can } from '$lib/domain/access/can';
 import { NO_LAYERS } from '$lib/domain/bedside/limits/layers';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
+import { notKnown } from '$lib/domain/episodes/may-do-now';
 import type { Nameboard, PatientContact } from '$lib/domain/episodes/views';
 import { standingWound } from '$lib/domain/wounds/stand';
 import { accessEpisode, type EpisodeRow } from '../access/access';
@@ -63,6 +64,7 @@ export async function getNameboard(
 		betaBlocked: episode.betaBlocked,
 		rhythm: episode.rhythm,
 		mayDoNow: levelsDecide(episode, derived) ? derived.mayDoNow : null,
+		notKnown: notKnown({ ...episode, precautions: derived.precautions }),
 		precautions: derived.precautions,
 		nothingByMouth: episode.phase === 'inpatient' && derived.nothingByMouth,
 		levelReached: Math.max(episode.level, episode.levelReached),

@@ -1,6 +1,6 @@
 import { sql, type SQL } from 'drizzle-orm';
-import { UNCONFIRMED_WITHIN_MS } from '$lib/domain/visits/limits';
 import { strayIn } from '../access/messages';
+import { visitsOnClosedDays, visitsUnmarked, visitsUnconfirmed } from './visits';
 import { IS_NEWS_OF_CHANGE, visitsUntold } from '../visits/untold';
 import { precautionsDue } from './precautions-due';
 import { PLACE } from './place';
@@ -23,13 +23,16 @@ export function openThingsSql(unitIds: readonly string[], now: number): SQL {
 		physiciansToTell,
 		clearancesAsked,
 		questionsBack,
+		refusalsUnseen,
 		deviationsUnseen,
 		precautionsDue(now),
 		referralsAsked,
 		questionsOpen,
 		signOffsAsked,
 		visitsCancelled,
+		visitsOnClosedDays(now),
 		visitsUnconfirmed(now),
+		visitsUnmarked(now),
 		visitsUntold(now),
 		messagesFailed,
 		textsUnread(unitIds)
@@ -130,6 +133,25 @@ const questionsBack = sql`
 	join users asker on asker.id = c.asked_by
 	where q.answered_at is null and c.state = 'asked'`;
 
+/**
+ * A no, or a yes that was taken back, is open until whoever asked has said that they saw it: else the ask would vanish
+ * from what they wait for without their knowing how it ended. A new ask of the kind says as much.
+ */
+const refusalsUnseen = sql`
+	select 'refusal', c.id, ${PLACE}, c.thread_id, null, c.kind, c.reason, c.decided_by, decider.name,
+		c.asked_by, asker.name, c.decided_at, null, null
+	from clearances c
+	join place on place.id = c.episode_id
+	join episodes e on e.id = c.episode_id
+	join users decider on decider.id = c.decided_by
+	join users asker on asker.id = c.asked_by
+	where c.state in ('withheld', 'on-hold', 'withdrawn') and c.decided_by <> c.asked_by
+		and c.refusal_seen_at is null and e.closed_at is null
+		and not exists (
+			select 1 from clearances later
+			where later.episode_id = c.episode_id and later.kind = c.kind and later.asked_at > c.asked_at
+		)`;
+
 const deviationsUnseen = sql`
 	select 'deviation', d.id, ${PLACE}, d.thread_id, null, d.kind, d.reason, d.recorded_by, doer.name,
 		null, null, d.recorded_at, null, null
@@ -171,16 +193,6 @@ const questionsOpen = sql`
 		select 1 from entries later
 		where later.thread_id = n.thread_id and later.seq > n.seq and later.author_id = q.user_id
 	)`;
-
-/** A visit that nobody has confirmed by the evening before wants a telephone call, until it begins. */
-function visitsUnconfirmed(now: number): SQL {
-	return sql`
-		select 'visit-unconfirmed', v.id, ${PLACE}, null, null, null, null, null, null,
-			null, null, v.starts_at - ${UNCONFIRMED_WITHIN_MS}, v.starts_at, null
-		from visits v
-		join place on place.id = v.episode_id
-		where v.state = 'planned' and v.starts_at > ${now} and v.starts_at <= ${now + UNCONFIRMED_WITHIN_MS}`;
-}
 
 /** A visit that the patient cancelled wants another date, until somebody has found one or said that none is wanted. */
 const visitsCancelled = sql`

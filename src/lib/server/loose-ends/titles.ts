@@ -26,6 +26,8 @@ export function titleOf(thing: OpenThing): string {
 				kind: CLEARANCE_WORDS[thing.code as ClearanceKind](),
 				text
 			});
+		case 'refusal':
+			return m.home_title_refusal({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'deviation':
 			return m.home_title_deviation({ kind: CLEARANCE_WORDS[thing.code as ClearanceKind](), text });
 		case 'precautions-due':
@@ -38,6 +40,10 @@ export function titleOf(thing: OpenThing): string {
 			return m.home_title_mention({ text });
 		case 'visit-unconfirmed':
 			return m.home_title_visit_unconfirmed();
+		case 'visit-closed-day':
+			return m.home_title_visit_closed_day({ name: text });
+		case 'visit-unmarked':
+			return m.home_title_visit_unmarked();
 		case 'visit-untold':
 			return thing.code === 'cancelled' ? m.home_title_untold_cancelled() : m.home_title_untold_moved();
 		case 'visit-cancelled':

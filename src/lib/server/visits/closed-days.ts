@@ -5,6 +5,7 @@ import { addDays, localDateOf, type LocalDate } from '$lib/domain/core/time';
 import { closedDayProblem } from '$lib/domain/visits/closed-days';
 import type { ClosedDayBody } from '$lib/domain/visits/forms';
 import type { ClosedDay } from '$lib/domain/visits/views';
+import { isExpected } from '$lib/domain/visits/states';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { PersonContext } from '../context';
 import { db, type Reader, type Tx } from '../db';
@@ -32,6 +33,30 @@ export async function listClosedDays(from: LocalDate): Promise<ClosedDay[]> {
 /** Today and later: what a booking steps over. */
 export function closedDaysAhead(now: number): Promise<ClosedDay[]> {
 	return listClosedDays(localDateOf(now, env().hospital.zone));
+}
+
+/** What the closed days are called on which visits stand that are expected, by visit; those on open days are left out. */
+export async function closedNames(
+	reader: Reader,
+	rows: readonly Pick<typeof visits.$inferSelect, 'id' | 'state' | 'localDate'>[]
+): Promise<Map<string, string>> {
+	const expected = rows.filter(({ state }) => isExpected(state));
+	const days = await reader
+		.select({ date: closedDays.date, name: closedDays.name })
+		.from(closedDays)
+		.where(
+			and(
+				isNull(closedDays.removedAt),
+				inArray(closedDays.date, [...new Set(expected.map(({ localDate }) => localDate))])
+			)
+		);
+	const names = new Map(days.map(({ date, name }) => [date, name]));
+	return new Map(
+		expected.flatMap(({ id, localDate }): [string, string][] => {
+			const name = names.get(localDate);
+			return name === undefined ? [] : [[id, name]];
+		})
+	);
 }
 
 /** The closed days as a set, for planning. */
@@ -83,7 +108,7 @@ export function closeDay(context: PersonContext, { date, name }: ClosedDayBody):
 		return {
 			result: { id, date, name, visits: standing },
 			audit: { action: 'closed-day.added', objectKind: 'closed-day', objectId: id, detail: { date } },
-			events: await forEveryUnit(tx, 'day-closed', id)
+			events: [...(await forEveryUnit(tx, 'day-closed', id)), ...(await forVisitsOn(tx, date, 'day-closed'))]
 		};
 	});
 }
@@ -119,7 +144,10 @@ export function openDay(
 				objectId: id,
 				detail: { date: day.date }
 			},
-			events: await forEveryUnit(tx, 'day-opened', id)
+			events: [
+				...(await forEveryUnit(tx, 'day-opened', id)),
+				...(await forVisitsOn(tx, day.date, 'day-opened'))
+			]
 		};
 	});
 }
@@ -128,4 +156,13 @@ export function openDay(
 async function forEveryUnit(tx: Tx, kind: string, id: string): Promise<LiveEvent[]> {
 	const rows = await tx.select({ unitId: units.id }).from(units);
 	return rows.map(({ unitId }) => ({ topic: 'visit', kind, id, episodeId: null, unitId }));
+}
+
+/** The pages of the patients whose visits stand on the day say so. */
+async function forVisitsOn(tx: Tx, date: LocalDate, kind: string): Promise<LiveEvent[]> {
+	const rows = await tx
+		.select({ id: visits.id, episodeId: visits.episodeId })
+		.from(visits)
+		.where(and(eq(visits.localDate, date), inArray(visits.state, ['planned', 'confirmed'])));
+	return rows.map(({ id, episodeId }) => ({ topic: 'visit', kind, id, episodeId }));
 }

@@ -7,6 +7,7 @@ import type { NoReminder, PatientAnswer, ReminderFate, VisitItem } from '$lib/do
 import { db, type Reader } from '../db';
 import { inboundMessages, outbox, reminders, visits, type patients } from '../db/schema';
 import { patientLine } from '../episodes/list';
+import { closedNames } from './closed-days';
 
 type VisitRow = typeof visits.$inferSelect;
 type PatientRow = typeof patients.$inferSelect;
@@ -21,9 +22,17 @@ export async function visitItems(
 	rows: readonly { visit: VisitRow; patient: PatientRow }[]
 ): Promise<VisitItem[]> {
 	const ids = rows.map(({ visit }) => visit.id);
-	const [fates, answers] = await Promise.all([fatesOf(db(), ids), answersOf(db(), ids)]);
+	const [fates, answers, closed] = await Promise.all([
+		fatesOf(db(), ids),
+		answersOf(db(), ids),
+		closedNames(
+			db(),
+			rows.map(({ visit }) => visit)
+		)
+	]);
 	return rows.map(({ visit, patient }) => ({
 		...visitLine(visit),
+		closedDay: closed.get(visit.id) ?? null,
 		episodeId: visit.episodeId,
 		patient: patientLine(patient),
 		unitId: visit.unitId,

@@ -2,7 +2,7 @@ import { and, asc, eq, gte, inArray, lt, sql } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { invalidField } from '$lib/domain/core/errors';
-import type { VisitLine } from '$lib/domain/episodes/views';
+import type { BoardVisit } from '$lib/domain/episodes/views';
 import { RangeProblem, visitRange, type VisitRange } from '$lib/domain/visits/range';
 import type { VisitItem } from '$lib/domain/visits/views';
 import { accessEpisode } from '../access/access';
@@ -10,16 +10,18 @@ import { db, type Reader } from '../db';
 import { episodes, patients, visits } from '../db/schema';
 import { env } from '../env';
 import { MAX_LIMIT, page, type Page, type PageRequest } from '../http/paging';
+import { closedNames } from './closed-days';
 import { visitItems, visitLine } from './items';
 
 /** The visits of one episode, oldest first, for the nameboard. The caller has checked the access. */
-export async function visitsOfEpisode(reader: Reader, episodeId: string): Promise<VisitLine[]> {
+export async function visitsOfEpisode(reader: Reader, episodeId: string): Promise<BoardVisit[]> {
 	const rows = await reader
 		.select()
 		.from(visits)
 		.where(eq(visits.episodeId, episodeId))
 		.orderBy(asc(visits.startsAt), asc(visits.id));
-	return rows.map(visitLine);
+	const closed = await closedNames(reader, rows);
+	return rows.map((row) => ({ ...visitLine(row), closedDay: closed.get(row.id) ?? null }));
 }
 
 /**

@@ -25,6 +25,8 @@ export const clearances = sqliteTable(
 			.notNull()
 			.references(() => users.id),
 		askedAt: instant('asked_at').notNull(),
+		/** The limits that the ask proposes. */
+		proposed: json<ClearanceLimits>('proposed'),
 		/** What the decider was shown, as it was when the ask was made. */
 		evidence: json<ClearanceEvidence>('evidence').notNull(),
 		decidedBy: text('decided_by').references(() => users.id),
@@ -32,7 +34,9 @@ export const clearances = sqliteTable(
 		limits: json<ClearanceLimits>('limits'),
 		reviewOn: text('review_on'),
 		note: text('note'),
-		reason: text('reason')
+		reason: text('reason'),
+		/** When whoever asked said that they saw the no; each decision empties it. */
+		refusalSeenAt: instant('refusal_seen_at')
 	},
 	(t) => [
 		index('clearances_episode').on(t.episodeId, t.kind),

@@ -1,7 +1,9 @@
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
+import { limitsOf, wrongProposal } from '$lib/components/clearances/decision';
+import { askForm as askSchema } from '$lib/components/clearances/decision-forms';
 import { askable } from '$lib/components/clearances/standing';
-import { askClearanceForm } from '$lib/domain/clearances/forms';
+import { invalidField } from '$lib/domain/core/errors';
 import { localDateOf } from '$lib/domain/core/time';
 import type { ClearanceLine } from '$lib/domain/episodes/views';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -19,15 +21,21 @@ export function askForm(
 	threadId?: string
 ) {
 	const [kind] = askable(lines, localDateOf(at.now, at.zone));
-	return superValidate({ kind, threadId }, zod4(askClearanceForm), { id: ID, errors: false });
+	return superValidate({ kind, threadId }, zod4(askSchema), { id: ID, errors: false });
 }
 
 /** The action behind it, on every page that has the form. */
 export const askClearanceAction = formAction({
-	schema: askClearanceForm,
+	schema: askSchema,
 	id: ID,
 	run: async (context, fields, event) => {
-		await askClearance(context, idParam(event), fields);
+		const { kind, question, threadId } = fields;
+		const wrong = wrongProposal(kind, fields.limit);
+		if (wrong !== null) {
+			throw invalidField('/limit', wrong);
+		}
+		const proposed = limitsOf(fields);
+		await askClearance(context, idParam(event), { kind, question, threadId, proposed });
 		leadOnWithoutScript(event, event.url.pathname);
 		return m.clearances_asked();
 	}

@@ -1,3 +1,4 @@
+import { askClearance } from '../../../clearances/actions';
 import { MINUTE } from '$lib/domain/core/time';
 import { prescribeRange } from '../../../limits/range-actions';
 import { done, reading } from '../readings';
@@ -40,11 +41,12 @@ export function thorne(t: Telling): void {
 			activities: done({ code: 'leg-cycle', minutes: 15 }, { code: 'standing-warm-up', minutes: 8 })
 		});
 	}
-	t.ask(
-		when.today(150),
-		'therapist',
-		'treadmill',
-		'Four weeks, steady on the bicycle at exertion 12. May she walk on the treadmill, level, 2.5 km/h to begin with?'
+	t.deed(when.today(150), 'therapist', (as, id) =>
+		askClearance(as, id, {
+			kind: 'treadmill',
+			question: 'Four weeks, steady on the bicycle at exertion 12. May she walk on the treadmill?',
+			proposed: { text: 'Level, up to 2.5 km/h' }
+		})
 	);
 }
 

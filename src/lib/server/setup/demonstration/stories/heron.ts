@@ -1,3 +1,4 @@
+import { acknowledgeRefusal } from '../../../clearances/refusal';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
 
@@ -87,6 +88,7 @@ export function vantry(t: Telling): void {
 		drink,
 		'Wet voice and a late, weak cough after 3 ml of water. Nothing by mouth tonight, mouth care every two hours. I look again tomorrow at ten.'
 	);
+	t.deed(when.on(1, '18:40'), 'nurse', (as) => acknowledgeRefusal(as, drink.id));
 	t.session(when.today(270), 'therapist2', {
 		level: 1,
 		minutes: 18,

@@ -1,3 +1,4 @@
+import { askClearance } from '../../../clearances/actions';
 import { noteWound } from '../../../wounds/actions';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
@@ -70,11 +71,13 @@ export function reeve(t: Telling): void {
 		asked,
 		'Wound dry, no click on coughing. Sugar 8.1 before lunch. Asks when he may shave properly.'
 	);
-	t.ask(
-		when.today(40),
-		'therapist',
-		'arm-stage',
-		'Level 5 reached, wound dry, breastbone stable on coughing, pressure steady today. May the arm stage start?'
+	t.deed(when.today(40), 'therapist', (as, id) =>
+		askClearance(as, id, {
+			kind: 'arm-stage',
+			question:
+				'Level 5 reached, wound dry, breastbone stable on coughing, pressure steady today. May the arm stage start?',
+			proposed: { maxElevationDeg: 90 }
+		})
 	);
 }
 

@@ -2,20 +2,20 @@ import type { RequestEvent } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
 import { fieldsOf } from '$lib/components/clearances/decision';
-import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
+import { giveForm, noFields, refuseForm } from '$lib/components/clearances/decision-forms';
 import type { ClearanceView } from '$lib/domain/clearances/views';
 import { notFound } from '$lib/domain/core/errors';
 import type { PersonContext } from '$lib/server/context';
 import { newFormKey, pageLoad } from '$lib/server/http/page';
 import { idParam } from '$lib/server/http/param';
 import { read } from '$lib/server/read';
-import { answer, askBack, give, hold, withdraw, withhold } from './actions';
+import { acknowledge, answer, askBack, give, hold, withdraw, withhold } from './actions';
 import type { Actions, PageServerLoad } from './$types';
 
 export const load: PageServerLoad = (event) =>
 	pageLoad(event, async (context) => {
 		const clearance = await ofThisPatient(context, event.params.clearanceId, event);
-		const fields = fieldsOf(clearance.kind, clearance.limits, clearance.decidedAt);
+		const fields = fieldsOf(clearance);
 		return {
 			clearance,
 			forms: {
@@ -33,11 +33,13 @@ export const load: PageServerLoad = (event) =>
 				withdraw: newFormKey(),
 				askBack: newFormKey(),
 				answer: newFormKey()
-			}
+			},
+			seenForm: await superValidate(zod4(noFields), { id: 'acknowledge' }),
+			seenKey: newFormKey()
 		};
 	});
 
-export const actions: Actions = { give, withhold, hold, withdraw, askBack, answer };
+export const actions: Actions = { give, withhold, hold, withdraw, askBack, answer, acknowledge };
 
 /** A clearance of another patient is not there: the nameboard above it would be the wrong one. */
 async function ofThisPatient(

@@ -1,6 +1,6 @@
 import type { RequestEvent } from '@sveltejs/kit';
-import { limitsOf, wrongChoice } from '$lib/components/clearances/decision';
-import { giveForm, refuseForm } from '$lib/components/clearances/decision-forms';
+import { choicesOf, limitsOf, wrongChoice } from '$lib/components/clearances/decision';
+import { giveForm, noFields, refuseForm } from '$lib/components/clearances/decision-forms';
 import { invalidField, type Problem } from '$lib/domain/core/errors';
 import { localDateOf } from '$lib/domain/core/time';
 import { m } from '$lib/i18n/paraglide/messages';
@@ -12,6 +12,7 @@ import {
 	type Seen
 } from '$lib/server/clearances/actions';
 import { answerQuestion, askBack as askBackAbout } from '$lib/server/clearances/ask-back';
+import { acknowledgeRefusal } from '$lib/server/clearances/refusal';
 import type { PersonContext } from '$lib/server/context';
 import { env } from '$lib/server/env';
 import { formAction } from '$lib/server/http/form-action';
@@ -27,16 +28,18 @@ export const give = formAction({
 	words,
 	run: async (context, fields, event) => {
 		const id = clearanceOf(event);
-		const { kind } = await read.clearance(context, id);
+		const about = await read.clearance(context, id);
 		const { reviewOn, note } = fields;
-		const wrong = wrongChoice(kind, fields.limit);
+		const wrong = wrongChoice(about, fields);
 		if (wrong !== null) {
 			throw invalidField('/limit', wrong);
 		}
 		if (reviewOn !== undefined && reviewOn < localDateOf(context.now, env().hospital.zone)) {
 			throw invalidField('/reviewOn', m.clearances_review_is_past());
 		}
-		await giveClearance(context, id, { limits: limitsOf(fields), reviewOn, note }, seenOf(fields));
+		// Where a limit was in question, none is one of the choices and was chosen.
+		const limits = limitsOf(fields, choicesOf(about)) ?? null;
+		await giveClearance(context, id, { limits, reviewOn, note }, seenOf(fields));
 		leadOnWithoutScript(event, event.url.pathname);
 		return m.clearances_given();
 	}
@@ -63,6 +66,17 @@ export const withdraw = refusing('withdraw', withdrawClearance);
 
 export const askBack = refusing('askBack', askBackAbout);
 export const answer = refusing('answer', answerQuestion);
+
+/** Whoever asked has seen the no. */
+export const acknowledge = formAction({
+	schema: noFields,
+	id: 'acknowledge',
+	run: async (context, _fields, event) => {
+		await acknowledgeRefusal(context, clearanceOf(event));
+		leadOnWithoutScript(event, event.url.pathname);
+		return m.clearances_done();
+	}
+});
 
 /** What the page showed when it was decided on. */
 function seenOf({ seen, shown }: { seen: string; shown?: string }): Seen {

@@ -1,0 +1,1 @@
+ALTER TABLE `clearances` ADD `refusal_seen_at` integer;

@@ -1,0 +1,1 @@
+ALTER TABLE `clearances` ADD `proposed` text;
