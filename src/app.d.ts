@@ -12,7 +12,7 @@ declare global {
 			/** Is the sign-in or token of this request good at the moment of asking? For what outlives a request. */
 			credentialStillGood: () => Promise<boolean>;
 			requestId: string;
-			/** A form of this request that found nobody signed in; the error page shows it. */
+			/** A form of this request that found nobody signed in, and that no script has sent: it is answered by a sign-in. */
 			kept?: KeptForm;
 			/** The language of a page that is not read in the one that its reader chose, such as a patient's own. */
 			language?: string;
@@ -29,8 +29,6 @@ declare global {
 			code?: string;
 			/** To quote when something went wrong on our side. */
 			id?: string;
-			/** A form that came without script and without a sign-in; the page keeps it. */
-			kept?: KeptForm;
 		}
 	}
 }

@@ -1,5 +1,6 @@
 import { error, redirect, type Handle, type HandleServerError, type ServerInit } from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
+import { SIGN_IN_FIELDS } from '$lib/domain/accounts/kept';
 import { Problem } from '$lib/domain/core/errors';
 import { m } from '$lib/i18n/paraglide/messages';
 import { baseLocale } from '$lib/i18n/paraglide/runtime';
@@ -82,6 +83,25 @@ const guard: Handle = async ({ event, resolve }) => {
 	return resolve(event);
 };
 
+/**
+ * A form that came without script and found nobody signed in is answered by the page that keeps it and signs in. It
+ * is a page of its own, because what the page of errors shows every other page would load as well.
+ */
+const keep: Handle = async ({ event, resolve }) => {
+	const response = await resolve(event);
+	const { kept } = event.locals;
+	return kept
+		? event.fetch(routes.signInAndSend(), {
+				method: 'POST',
+				headers: { accept: 'text/html' },
+				body: new URLSearchParams([
+					...kept.fields.map(([name, value]) => [name, value]),
+					[SIGN_IN_FIELDS.to, kept.to]
+				])
+			})
+		: response;
+};
+
 /** What the API does not know is a problem too, not a page. */
 const problems: Handle = async ({ event, resolve }) => {
 	const api = event.url.pathname.startsWith('/api/');
@@ -128,7 +148,7 @@ const language: Handle = ({ event, resolve }) => {
 };
 
 /** The language comes last: it waits, and who calls from where must be read before anything waits. */
-export const handle = sequence(harden, problems, identify, guard, language);
+export const handle = sequence(harden, problems, identify, guard, keep, language);
 
 /** Expected errors keep their text; anything else is logged under an id and answered without detail. */
 export const handleError: HandleServerError = ({ error: thrown, event, status, message }) => {

@@ -5,10 +5,10 @@ import { frameOf } from '$lib/server/frame';
 import type { LayoutServerLoad } from './$types';
 
 export const load: LayoutServerLoad = ({ locals }) => {
-	// The guard has led away whoever looks; only a form comes so far with nobody signed in, and is kept.
+	// The guard has led away whoever looks; only a form comes so far with nobody signed in, and the answer to it is made by the hooks.
 	if (locals.context.actor?.kind !== 'person') {
 		const { status, detail, code } = new Problem('not-signed-in');
-		error(status, { message: detail, code, ...(locals.kept && { kept: locals.kept }) });
+		error(status, { message: detail, code });
 	}
 	return frameOf(requirePerson(locals.context), locals.liveCursor);
 };

@@ -92,7 +92,7 @@ function orSignIn<C>(
 		const { request, url } = event;
 		const scripted = request.headers.get('x-sveltekit-action') === 'true';
 		if (!scripted) {
-			// The layout behind the sign-in fails before this error is shown, so it has to find the form.
+			// The hooks answer with a sign-in that sends it on.
 			event.locals.kept = keptForm(url.pathname + url.search, posted, secrets);
 		}
 		error(thrown.status, { message: thrown.detail, code: thrown.code });

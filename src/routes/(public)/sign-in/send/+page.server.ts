@@ -7,6 +7,9 @@ import { routes, safeNext } from '$lib/routes';
 import { signIn } from '$lib/server/accounts/sign-in';
 import type { Actions, PageServerLoad } from './$types';
 
+/** Only who has no script comes here: a script keeps what was typed where it was typed. */
+export const csr = false;
+
 /** There is only something to send with a POST; who comes back here later signs in as usual. */
 export const load: PageServerLoad = ({ request }) => {
 	if (request.method !== 'POST') {
@@ -24,6 +27,14 @@ export const actions: Actions = {
 		const to = textOf(posted, SIGN_IN_FIELDS.to);
 		if (to === '' || safeNext(to, '') !== to) {
 			error(400, { message: 'The form was going to no page of ours.', code: 'malformed' });
+		}
+		if (!posted.has(SIGN_IN_FIELDS.email)) {
+			// The form itself, as the hooks hand it over: nobody has tried to sign in yet.
+			return fail(401, {
+				kept: keptForm(to, posted, Object.values(SIGN_IN_FIELDS)),
+				email: '',
+				refused: null
+			});
 		}
 		const refused = await refusalOf(event, posted);
 		if (refused !== null) {
