@@ -1,7 +1,26 @@
 import { defineConfig } from '@playwright/test';
+import { CHROMIUM, shellOrChromium } from '../src/cli/lib/chromium.mjs';
 
 /** Where `npm test` reads the counts from; without it only the list is printed. */
 const report = process.env.JOURNEYS_REPORT;
+
+/** People's whole ways through the product; they run in the browser that people have, the rest in its shell. */
+const JOURNEYS = /main-job|call-for-help/;
+
+const ARGS = [
+	'--no-sandbox',
+	'--disable-gpu',
+	'--disable-quic',
+	'--no-first-run',
+	'--disable-background-networking',
+	'--disable-component-update',
+	'--disable-sync'
+];
+
+/** @param executablePath which build of Debian's Chromium */
+function browser(executablePath: string) {
+	return { launchOptions: { executablePath, args: ARGS } };
+}
 
 /**
  * Journeys in Debian's Chromium. No server is started here: each journey starts its own product on free ports with
@@ -22,18 +41,10 @@ export default defineConfig({
 		screenshot: 'off',
 		video: 'off',
 		locale: 'en-IE',
-		timezoneId: 'Europe/Dublin',
-		launchOptions: {
-			executablePath: process.env.CHROMIUM_PATH || '/usr/bin/chromium',
-			args: [
-				'--no-sandbox',
-				'--disable-gpu',
-				'--disable-quic',
-				'--no-first-run',
-				'--disable-background-networking',
-				'--disable-component-update',
-				'--disable-sync'
-			]
-		}
-	}
+		timezoneId: 'Europe/Dublin'
+	},
+	projects: [
+		{ name: 'journeys', testMatch: JOURNEYS, use: browser(CHROMIUM) },
+		{ name: 'pages', testIgnore: JOURNEYS, use: browser(shellOrChromium()) }
+	]
 });

@@ -3,10 +3,17 @@ import { run } from './run.mjs';
 
 /** Where Debian installs the browser; `CHROMIUM_PATH` names another one. */
 export const CHROMIUM = process.env.CHROMIUM_PATH || '/usr/bin/chromium';
+/** The same browser without the windows that nobody sees, which starts and draws a fifth faster. */
+const SHELL = process.env.CHROMIUM_PATH || '/usr/bin/chromium-headless-shell';
+
+/** The browser for looking at pages one by one; where Debian has no shell, the whole one. */
+export function shellOrChromium() {
+	return existsSync(SHELL) ? SHELL : CHROMIUM;
+}
 
 const COMMANDS = [
 	['apt-get', 'update'],
-	['apt-get', 'install', '-y', '--no-install-recommends', 'chromium']
+	['apt-get', 'install', '-y', '--no-install-recommends', 'chromium', 'chromium-headless-shell']
 ];
 
 /**
@@ -14,7 +21,7 @@ const COMMANDS = [
  * @returns {Promise<boolean>} whether it is there
  */
 export async function ensureChromium() {
-	if (existsSync(CHROMIUM)) {
+	if (existsSync(CHROMIUM) && existsSync(SHELL)) {
 		return true;
 	}
 	if (process.getuid?.() === 0 && existsSync('/usr/bin/apt-get')) {
