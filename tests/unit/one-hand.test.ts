@@ -89,6 +89,7 @@ describe('forms', () => {
 		'src/routes/(app)/admin/accounts/[id]/+page.svelte': 'boxes to tick',
 		'src/routes/(app)/loose-ends/[what]/[id]/+page.svelte':
 			'a message is seen to by one press; a text is checked',
+		'src/routes/(app)/patients/[id]/clearances/[clearanceId]/+page.svelte': 'a no is seen by one press',
 		'src/routes/(public)/invite/[token]/+page.svelte': 'a first page, with a password that the server judges',
 		'src/routes/(public)/sign-in/+page.svelte': 'a first page, with a password that the server judges'
 	};
