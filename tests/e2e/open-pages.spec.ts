@@ -29,6 +29,11 @@ async function referred(bed: string): Promise<{ episodeId: string; thread: strin
 async function typeStop(page: Page): Promise<void> {
 	const reading = (name: string) => page.getByRole('textbox', { name: new RegExp(`^${name}`) });
 	await page.getByRole('radio', { name: 'awake, follows commands' }).check();
+	await page
+		.getByRole('group', { name: /^Rate-slowing drug/ })
+		.getByRole('radio', { name: 'no', exact: true })
+		.check();
+	await page.getByRole('radio', { name: 'sinus' }).check();
 	await reading('Systolic').fill('128');
 	await reading('Diastolic').fill('74');
 	await reading('Pulse').fill('76');

@@ -41,7 +41,8 @@ describe('asking back', () => {
 			questions: [{ question: QUESTION, askedBy: hospital.people.surgeon.name, answer: null }]
 		});
 		expect(await ends('therapist')).toEqual(['clearance-question']);
-		expect(await ends('surgeon')).toEqual(['clearance']);
+		// Whoever asked back waits; the others who may decide still can.
+		expect(await ends('surgeon')).toEqual([]);
 		expect(await ends('surgeon', 'theirs')).toEqual(['clearance-question']);
 		const thread = await getThread(db(), hospital.people.nurse, threadId, { limit: 200, after: null });
 		expect(thread.items.at(-1)).toMatchObject({ kind: 'note', ref: { kind: 'clearance', id } });
@@ -52,6 +53,7 @@ describe('asking back', () => {
 		await askBack(as('surgeon', 60), id, QUESTION);
 		await answerQuestion(as('therapist', 120), id, 'No click.');
 		expect(await ends('therapist')).toEqual([]);
+		expect(await ends('surgeon')).toEqual(['clearance']);
 		expect(await shown()).toMatchObject({
 			state: 'asked',
 			questions: [{ answer: 'No click.', answeredBy: hospital.people.therapist.name }]

@@ -122,7 +122,8 @@ export const ACTIONS: Record<string, ActionRow> = {
 	[`${THREAD}?/close`]: { fields: {}, roles: [...REFERRING, ...ANSWERING] },
 	[`${THREAD}?/withdraw`]: { fields: WHY, roles: ['surgeon'] },
 	[`${THREAD}?/ask`]: { fields: ASK, roles: ASKING },
-	[`${CLEARANCE}?/give`]: { fields: {}, roles: REFERRING },
+	// It proposes a limit, so that none has to be said.
+	[`${CLEARANCE}?/give`]: { fields: { limit: 'none' }, roles: REFERRING },
 	[`${CLEARANCE}?/withhold`]: { fields: WHY, roles: REFERRING },
 	[`${CLEARANCE}?/hold`]: { fields: WHY, roles: REFERRING },
 	[`${CLEARANCE}?/withdraw`]: { fields: WHY, roles: REFERRING },

@@ -12,6 +12,11 @@ export async function notice(day: Day): Promise<void> {
 	const page = day.page('therapist');
 	await page.getByRole('link', { name: 'Record a session' }).click();
 	await page.getByRole('radio', { name: 'awake, follows commands' }).check();
+	await page
+		.getByRole('group', { name: /^Rate-slowing drug/ })
+		.getByRole('radio', { name: 'yes', exact: true })
+		.check();
+	await page.getByRole('radio', { name: 'sinus' }).check();
 	await reading(page, 'Systolic').fill('128');
 	await reading(page, 'Diastolic').fill('74');
 	await reading(page, 'Pulse').fill('76');

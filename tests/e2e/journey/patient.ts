@@ -42,7 +42,7 @@ export async function ownPage(day: Day): Promise<void> {
 	await thursday.locator('summary', { hasText: 'I cannot come' }).click();
 	await thursday.getByLabel(/Why not/).fill('No bus that day.');
 	await thursday.getByRole('button', { name: /^Cancel the visit on Thursday/ }).click();
-	await expect(thursday.getByText('Cancelled. Please do not come.')).toBeVisible();
+	await expect(thursday.getByText('You have cancelled it. Thank you for saying so.')).toBeVisible();
 	await expect(row(coordinator, shown('Thu', addDays(day.monday, 3)))).toContainText(
 		'They write: No bus that day.'
 	);

@@ -3,23 +3,20 @@ import { measureAgain, newDraft, readDraft } from './draft';
 import { draft, RECORD, typed } from './testing';
 
 describe('newDraft', () => {
-	it.each([
-		[true, 'yes'],
-		[false, 'no'],
-		[null, null]
-	])('proposes the drug on record (%s) as %j', (betaBlocked, drug) => {
-		expect(newDraft({ ...RECORD, betaBlocked }, 'k').drug).toBe(drug);
-	});
-
-	it('assumes nothing that the record cannot know', () => {
-		expect(newDraft({ ...RECORD, rhythm: null }, 'k')).toMatchObject({
-			responds: null,
-			rhythm: null,
-			startChecks: [],
-			noStartChecks: false,
-			startedAt: null
-		});
-	});
+	it.each([true, false, null])(
+		'answers nothing that is asked each time, with the drug on record as %s',
+		(betaBlocked) => {
+			expect(newDraft({ ...RECORD, betaBlocked, rhythm: 'sinus' }, 'k')).toMatchObject({
+				level: RECORD.level,
+				drug: null,
+				responds: null,
+				rhythm: null,
+				startChecks: [],
+				noStartChecks: false,
+				startedAt: null
+			});
+		}
+	);
 });
 
 describe('readDraft', () => {

@@ -83,16 +83,18 @@ export function newReading(posture: Posture | null = null): DraftReading {
 	return { texts: {}, confirmed: [], posture, bpSource: null, rhythm: null, settled: false, at: null };
 }
 
-/** An empty session. What the record knows is proposed; what it does not know is open, never assumed. */
+/**
+ * An empty session. The level of the record is proposed; what is asked each time is open, though the record knows it:
+ * a drug is begun and left off between two sessions, and an answer that nobody gave today is none.
+ */
 export function newDraft(record: BedsideRecord, key: string): SessionDraft {
-	const drug = { true: 'yes', false: 'no', null: null } as const;
 	return {
 		version: VERSION,
 		key,
 		startedAt: null,
 		level: record.level,
-		drug: drug[`${record.betaBlocked}`],
-		rhythm: record.rhythm,
+		drug: null,
+		rhythm: null,
 		rhythmKnown: null,
 		responds: null,
 		airway: null,

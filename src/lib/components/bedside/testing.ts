@@ -28,6 +28,8 @@ export function typed(
 export function draft(changes: Partial<SessionDraft> = {}): SessionDraft {
 	return {
 		...newDraft(RECORD, 'key-1'),
+		drug: 'yes',
+		rhythm: 'sinus',
 		startedAt: Date.parse('2026-03-03T09:00:00Z'),
 		responds: 'follows',
 		before: typed({ sbp: '128', dbp: '74', hr: '76' }),

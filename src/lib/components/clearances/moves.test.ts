@@ -75,10 +75,15 @@ describe('movesOf', () => {
 			answeredAt: null
 		};
 		const waiting = { ...stairs('asked'), questions: [question] };
-		expect(movesOf(person('surgeon'), 'ward', waiting)).toMatchObject({ askBack: false, answer: false });
+		expect(movesOf(person('surgeon'), 'ward', waiting)).toMatchObject({
+			give: 'unanswered',
+			withhold: true,
+			askBack: false,
+			answer: false
+		});
 		expect(movesOf(person('therapist'), 'ward', waiting)).toMatchObject({ askBack: false, answer: true });
 		const answered = { ...waiting, questions: [{ ...question, answer: 'No.' }] };
-		expect(movesOf(person('surgeon'), 'ward', answered).askBack).toBe(true);
+		expect(movesOf(person('surgeon'), 'ward', answered)).toMatchObject({ give: 'first', askBack: true });
 		expect(movesOf(person('therapist'), 'ward', answered).answer).toBe(false);
 	});
 

@@ -4,8 +4,11 @@ import type { ClearanceView } from '$lib/domain/clearances/views';
 
 /** Which moves a page offers. */
 export interface Moves {
-	/** The first decision stands open in view; another one, on what was given already, is behind a word. */
-	give: 'first' | 'again' | null;
+	/**
+	 * The first decision stands open in view; another one, on what was given already, is behind a word, and so is one
+	 * on what was asked back and not answered yet.
+	 */
+	give: 'first' | 'unanswered' | 'again' | null;
 	withhold: boolean;
 	hold: boolean;
 	/** Taking back one's own ask, or what was decided. */
@@ -29,7 +32,7 @@ export function movesOf(viewer: Person, unitId: string, about: About): Moves {
 	const undecided = state === 'asked' || state === 'on-hold';
 	const given = state === 'given' || state === 'given-with-limits';
 	return {
-		give: !decides || !current ? null : undecided ? 'first' : given ? 'again' : null,
+		give: !decides || !current ? null : undecided ? (waits ? 'unanswered' : 'first') : given ? 'again' : null,
 		withhold: decides && undecided,
 		hold: decides && given,
 		withdraw: withdrawal(decides, state === 'asked', given || state === 'on-hold', askedById === viewer.id),

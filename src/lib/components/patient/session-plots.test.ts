@@ -128,6 +128,7 @@ describe('what is drawn', () => {
 				grade: 'high' as const,
 				state: 'settled' as const,
 				situation: 'Pale.',
+				raisedById: 'p1',
 				takenBy: null
 			},
 			notThere: false,

@@ -34,7 +34,7 @@ export function waitingWords(
 }
 
 /** Whole minutes, because a second that ticks is unrest; `just now` before the first. */
-function elapsed(since: number, now: number): string {
+export function elapsed(since: number, now: number): string {
 	const minutes = Math.floor((now - since) / MINUTE);
 	return minutes < 1 ? ago(since, { now }) : duration(minutes * MINUTE);
 }

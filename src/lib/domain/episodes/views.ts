@@ -175,6 +175,7 @@ export interface Nameboard {
 		state: EscalationState;
 		situation: string;
 		raisedAt: string;
+		raisedById: string;
 		takenBy: string | null;
 		/** Somebody has it and did not come, so that others are sought. */
 		notThere: boolean;

@@ -49,6 +49,11 @@ export const settleBody = z.strictObject({
 	recheckMinutes: minutes('The time until the re-check', 24 * 60).optional()
 });
 
+/** The settling as a page asks for it: after a high one nothing is chosen beforehand about measuring again. */
+export const settleForm = settleBody.extend({
+	recheckMinutes: z.string('Measure again in: choose a time, or that it is not needed.')
+});
+
 export const emptyBody = z.strictObject({});
 
 const PLAIN_LINK_DEEDS = ['take', 'untake', 'arrive', 'confirm'] as const;

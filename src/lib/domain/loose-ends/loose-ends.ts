@@ -104,6 +104,10 @@ export function whose(thing: OpenThing, person: Person): 'mine' | 'theirs' | nul
 		case 'precautions-due':
 			return can(person, 'precautions.review', unit) ? 'mine' : null;
 		case 'clearance':
+			// Whoever asked back waits for the answer, which is a row of its own.
+			if (thing.heldById === person.id) {
+				return null;
+			}
 			// A surgeon who looks at the precautions of a patient puts the question to the surgeons, themselves included.
 			if (thing.code === 'precautions-end' && can(person, 'precautions.review', unit)) {
 				return 'mine';

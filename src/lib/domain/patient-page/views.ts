@@ -11,6 +11,8 @@ export interface OwnVisit {
 	minutes: number;
 	place: string;
 	state: VisitState;
+	/** The patient has cancelled it, and nobody else. */
+	byPatient: boolean;
 	/** Counts the changes of its time. */
 	sequence: number;
 }

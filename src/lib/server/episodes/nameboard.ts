@@ -128,6 +128,7 @@ async function escalationsOf(db: Reader, episodeId: string): Promise<Nameboard['
 			state: escalations.state,
 			situation: escalations.situation,
 			raisedAt: escalations.raisedAt,
+			raisedById: escalations.raisedBy,
 			takenBy: users.name,
 			nextStepAt: escalations.nextStepAt
 		})

@@ -114,12 +114,15 @@ const physiciansToTell = sql`
 	join users holder on holder.id = x.ended_by
 	where x.state = 'settled' and x.grade = 'high' and x.informed is null and holder.role = 'nurse'`;
 
+/** Held by whoever asked back: they wait for the answer, and the ask for them after that. */
 const clearancesAsked = sql`
 	select 'clearance', c.id, ${PLACE}, c.thread_id, null, c.kind, c.question, c.asked_by, asker.name,
-		null, null, c.asked_at, null, null
+		q.asked_by, decider.name, c.asked_at, null, null
 	from clearances c
 	join place on place.id = c.episode_id
 	join users asker on asker.id = c.asked_by
+	left join clearance_questions q on q.clearance_id = c.id and q.answered_at is null
+	left join users decider on decider.id = q.asked_by
 	where c.state = 'asked'`;
 
 /** A decider's question back waits on whoever asked, as long as the ask itself is open. */

@@ -49,12 +49,13 @@ export async function readPage({ now }: Context, token: string): Promise<Patient
 	const rows = await visitsOf(db(), link.episodeId, now);
 	return {
 		language: messageLanguage(patient.language),
-		visits: rows.map(({ id, startsAt, minutes, place, state, sequence }) => ({
+		visits: rows.map(({ id, startsAt, minutes, place, state, sequence, patientCancelledAt }) => ({
 			id,
 			startsAt: toRfc3339(startsAt),
 			minutes,
 			place,
 			state,
+			byPatient: state === 'cancelled' && patientCancelledAt !== null,
 			sequence
 		})),
 		expiresAt: toRfc3339(link.expiresAt),

@@ -3,6 +3,7 @@ import { zod4 } from 'sveltekit-superforms/adapters';
 import type { Problem } from '$lib/domain/core/errors';
 import { takeForm } from '$lib/domain/escalations/forms';
 import { m } from '$lib/i18n/paraglide/messages';
+import { env } from '$lib/server/env';
 import { receiversOf } from '$lib/server/escalations/receivers';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { formAction } from '$lib/server/http/form-action';
@@ -20,7 +21,8 @@ export const load: PageServerLoad = (event) =>
 			receiversOf(context, id),
 			superValidate(zod4(takeForm))
 		]);
-		return { escalation, receivers, take, takeKey: newFormKey(), unitId: escalation.unitId };
+		const { phone } = env().hospital;
+		return { escalation, receivers, take, takeKey: newFormKey(), unitId: escalation.unitId, phone };
 	});
 
 /** Who was faster stands in the problem; the page that comes back shows since when. */

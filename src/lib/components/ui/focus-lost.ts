@@ -1,0 +1,10 @@
+/**
+ * Where a press has taken its own button away, the focus falls to the page itself and a keyboard begins anew at its
+ * top. Then what became of the press takes the focus; where somebody has gone on meanwhile, theirs is left alone.
+ */
+export function catchFocus(outcome: HTMLElement | null): void {
+	const { activeElement, body } = document;
+	if (activeElement === null || activeElement === body) {
+		outcome?.focus({ preventScroll: true });
+	}
+}
