@@ -30,12 +30,24 @@ test('what opens over the page is accessible while it is open, by night as well'
 	await page.getByRole('combobox', { name: 'Pass on to', exact: true }).press('ArrowDown');
 	await expect(page.getByRole('option', { name: /Rowan Ferris/ })).toBeVisible();
 	await looks('[data-combobox-content]');
+	await page.keyboard.type('nobody');
+	await expect(page.getByRole('option', { name: 'Nothing fits “nobody”.' })).toBeVisible();
+	await expect(page.getByRole('status').filter({ hasText: 'Nothing fits “nobody”.' })).toBeAttached();
+	await looks('[data-combobox-content]');
 	await page.keyboard.press('Escape');
 
 	await page.getByRole('button', { name: 'One with a way back' }).press('Enter');
 	// With the focus on it, it stays.
 	await page.getByRole('button', { name: 'Undo' }).focus();
 	await looks('[aria-live=polite]:has(button)');
+	const ring = await page.getByRole('button', { name: 'Undo' }).evaluate((undo) => {
+		const { outlineColor, outlineOffset } = getComputedStyle(undo);
+		const ground = undo.parentElement ? getComputedStyle(undo.parentElement).backgroundColor : '';
+		return { outlineColor, outlineOffset, ground };
+	});
+	// Within the toast, and of another colour than its ground.
+	expect(ring).toMatchObject({ outlineOffset: '-4px' });
+	expect(ring.outlineColor).not.toBe(ring.ground);
 
 	for (const opener of ['Open a dialog', 'Open a sheet']) {
 		await page.getByRole('button', { name: opener }).press('Enter');
@@ -71,6 +83,12 @@ test('under forced colours a pressed chip, a chosen answer and a chosen tab diff
 	expect(on.backgroundColor).not.toBe(off.backgroundColor);
 	expect(on.color).not.toBe(on.backgroundColor);
 	expect(on.color).not.toBe(off.color);
+	const answer = (checked: boolean) =>
+		page
+			.locator('label', { has: page.getByRole('radio', { checked, disabled: false }) })
+			.first()
+			.evaluate((label) => getComputedStyle(label).backgroundColor);
+	expect(await answer(true)).not.toBe(await answer(false));
 	const edge = (selected: boolean) =>
 		page
 			.getByRole('tab', { selected })

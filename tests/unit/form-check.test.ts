@@ -48,7 +48,7 @@ describe('what is said in the browser before a form is sent', () => {
 		expect(await said(call, raiseForm)).toEqual(['situation: The situation is empty.']);
 		const form = { name: 'Ada', mrn: '1', birthDate: '31 2 1958', sex: 'female', unit: 'tern' };
 		expect(await said(form, admitForm)).toEqual([
-			'birthDate: Birth date: write a day that exists, such as 5 9 1958.'
+			'birthDate: Birth date: “31 2 1958” is no day; write one that exists, such as 14 12 2026.'
 		]);
 	});
 

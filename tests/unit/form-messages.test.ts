@@ -6,6 +6,9 @@ import {
 	createUnitBody,
 	firstAdminBody
 } from '$lib/domain/accounts/forms';
+import { amendSessionBody } from '$lib/domain/bedside/amendments';
+import { informBody, passBody, withdrawBody } from '$lib/domain/escalations/forms';
+import { reopenBody } from '$lib/domain/visits/forms';
 
 /** Every schema that a page checks a form with: by its name, and the bodies that serve as forms, too. */
 function forms(): [string, ZodObject][] {
@@ -23,7 +26,8 @@ function forms(): [string, ZodObject][] {
 		.filter((entry): entry is [string, ZodObject] => /Form$/.test(entry[0]) && entry[1] instanceof ZodObject);
 	return [
 		...named,
-		...Object.entries({ createAccountBody, createTokenBody, createUnitBody, firstAdminBody })
+		...Object.entries({ createAccountBody, createTokenBody, createUnitBody, firstAdminBody }),
+		...Object.entries({ passBody, informBody, withdrawBody, reopenBody, amendSessionBody })
 	];
 }
 
@@ -115,6 +119,10 @@ function catalogue(): string[] {
 		.filter((words) => typeof words === 'string');
 }
 
+/** What follows these words at the start of a sentence; nothing where it begins otherwise. */
+const after = (sentence: string, start: string) =>
+	sentence.startsWith(start) ? sentence.slice(start.length) : '';
+
 const lowered = (label: string) => label.charAt(0).toLowerCase() + label.slice(1);
 
 const lineOf = ({ where, message }: Said) => `${where}: ${message}`;
@@ -140,10 +148,20 @@ describe('what forms say', () => {
 	it('names it by the words of its label', () => {
 		const labels = catalogue().filter((words) => words.length < 60 && !/[.?{]/.test(words));
 		const begins = ({ message }: Said) =>
-			labels.some((label) => message.startsWith(label) || message.startsWith(`The ${lowered(label)} `));
+			labels.some(
+				(label) => message.startsWith(label) || /^[ :]/.test(after(message, `The ${lowered(label)}`))
+			);
 		const own = (each: Said) =>
 			!NO_TEXT.test(each.message) && !BY_PROGRAM.some((start) => each.where.startsWith(start));
 		expect(SAID.filter((each) => own(each) && !begins(each)).map(lineOf)).toEqual([]);
+	});
+
+	it('repeats what is no day, no time, no number and no address', () => {
+		const read = SAID.filter(
+			({ where, typed }) => ['31 2 2026', '1e'].includes(typed) && /(Date|On|Time|\.time|email)$/.test(where)
+		);
+		expect(read.length).toBeGreaterThan(10);
+		expect(read.filter(({ message, typed }) => !message.includes(`“${typed}”`)).map(lineOf)).toEqual([]);
 	});
 
 	it('tells of a text that is too long how long it is, and the limit', () => {

@@ -112,7 +112,7 @@ describe('a part of the page', () => {
 		[/<h1\b[^>]*?class="([^"]*)"/g, ['text-head', 'font-black']],
 		[/<h2\b[^>]*?class="([^"]*)"/g, ['text-title', 'font-black']],
 		[/<h3\b[^>]*?class="([^"]*)"/g, ['text-row', 'font-black']],
-		[/class="([^"]*divide-y[^"]*border-y|[^"]*border-y[^"]*divide-y)/g, ['divide-y']]
+		[/["']([^"']*divide-y[^"']*border-y|[^"']*border-y[^"']*divide-y)/g, ['divide-y']]
 	];
 
 	it('leaves to the sheet what it gives to headings and to rows', () => {

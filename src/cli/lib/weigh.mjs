@@ -10,7 +10,10 @@ import { at } from './paths.mjs';
  * @typedef {{ page: string, kib: number, most: number }} Weight
  */
 
-/** Script that a first page may load, KiB after gzip, and what any other may have beyond it. */
+/**
+ * Script that a first page may load, KiB after gzip, and how much more any other may load in all: who comes straight
+ * to a patient from a message loads that page whole, and not what it has beyond another.
+ */
 export const FIRST_KIB = 120;
 export const MORE_KIB = 40;
 

@@ -2,6 +2,8 @@
 export interface Toast {
 	readonly id: number;
 	readonly text: string;
+	/** How long it is shown, milliseconds. */
+	readonly ms: number;
 	/** A way back, for as long as it is shown. */
 	readonly undo: { label: string; run: () => void } | null;
 }
@@ -16,13 +18,15 @@ export const TOAST_MS = 6_000;
 export class Toasts {
 	items = $state<Toast[]>([]);
 	#next = 1;
+	#held = false;
 	#timers: Record<number, ReturnType<typeof setTimeout>> = {};
 
 	/** Show a sentence for `ms` milliseconds. */
 	show(text: string, { undo = null, ms = TOAST_MS }: { undo?: Toast['undo']; ms?: number } = {}): void {
 		const id = this.#next++;
-		this.items.push({ id, text, undo });
-		this.#wait(id, ms);
+		const toast = { id, text, undo, ms };
+		this.items.push(toast);
+		this.#wait(toast);
 	}
 
 	/** Put one away. One that has gone already is left in peace. */
@@ -40,16 +44,21 @@ export class Toasts {
 
 	/** Stop every timer while somebody reads or reaches for a way back. */
 	hold(): void {
+		this.#held = true;
 		Object.values(this.#timers).forEach((timer) => clearTimeout(timer));
 	}
 
-	/** Give what is still there its time again. */
-	release(ms = TOAST_MS): void {
-		this.items.forEach(({ id }) => this.#wait(id, ms));
+	/** Give what is still there its own time again. */
+	release(): void {
+		this.#held = false;
+		this.items.forEach((toast) => this.#wait(toast));
 	}
 
-	#wait(id: number, ms: number): void {
+	#wait({ id, ms }: Toast): void {
 		clearTimeout(this.#timers[id]);
+		if (this.#held) {
+			return;
+		}
 		this.#timers[id] = setTimeout(() => this.close(id), ms);
 	}
 }

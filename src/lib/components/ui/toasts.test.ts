@@ -51,4 +51,18 @@ describe('Toasts', () => {
 		vi.advanceTimersByTime(TOAST_MS);
 		expect(texts(toasts)).toEqual([]);
 	});
+
+	it('keeps what comes while somebody reads, and gives each its own time afterwards', () => {
+		const toasts = new Toasts();
+		toasts.hold();
+		toasts.show('Kept.');
+		toasts.show('Taken.', { ms: TOAST_MS * 2 });
+		vi.advanceTimersByTime(TOAST_MS * 10);
+		expect(texts(toasts)).toEqual(['Kept.', 'Taken.']);
+		toasts.release();
+		vi.advanceTimersByTime(TOAST_MS * 2 - 1);
+		expect(texts(toasts)).toEqual(['Taken.']);
+		vi.advanceTimersByTime(1);
+		expect(texts(toasts)).toEqual([]);
+	});
 });

@@ -5,12 +5,18 @@ import { text, tooLong } from '../core/fields';
 export const PASSWORD_MIN = 15;
 export const PASSWORD_MAX = 128;
 
+function noAddress(typed: string): string {
+	return typed === ''
+		? 'The e-mail address is empty.'
+		: `The e-mail address: “${typed}” is none; write one like name@hospital.example.`;
+}
+
 const email = z
 	.string('The e-mail address is a text.')
 	.trim()
 	.toLowerCase()
 	.max(254, tooLong('The e-mail address', 254))
-	.pipe(z.email('The e-mail address is not one like name@hospital.example.'));
+	.pipe(z.email({ error: ({ input }) => noAddress(String(input)) }));
 
 export const signInBody = z.strictObject({
 	email: z

@@ -101,13 +101,15 @@ function wish({ low, high, unit = '', whole = false }: NumberWanted): string {
 		: `write a ${whole ? 'whole ' : ''}number from ${low} to ${high}${unit && ` ${unit}`}.`;
 }
 
-function noDay(field: string, typed: string): string {
+/** What is said of what is no day: what was read, and what is wanted. */
+export function noDay(field: string, typed: string): string {
 	return typed.trim() === ''
 		? `${field}: write a day, such as 14 12 2026.`
 		: `${field}: “${typed}” is no day; write one that exists, such as 14 12 2026.`;
 }
 
-function noTime(field: string, typed: string): string {
+/** What is said of what is no time. */
+export function noTime(field: string, typed: string): string {
 	const wish = 'write one from 00:00 to 23:59, such as 9:30.';
 	return typed.trim() === '' ? `${field}: ${wish}` : `${field}: “${typed}” is no time; ${wish}`;
 }

@@ -4,7 +4,7 @@
  */
 import { z } from 'zod';
 import { APPROACHES, LEVELS, RHYTHMS, SEXES } from '../core/codes';
-import { text, tooLong } from '../core/fields';
+import { noDay, noTime, text, tooLong } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { readDate, readTime } from '../core/typed-date';
 import { MESSAGE_LANGUAGES } from '../messages/templates/wording';
@@ -55,7 +55,7 @@ export const admitForm = z
 		name: text("The patient's name", 120).default(''),
 		birthDate: typedDay
 			.default('')
-			.refine(isLocalDate, 'Birth date: write a day that exists, such as 5 9 1958.'),
+			.refine(isLocalDate, { error: ({ input }) => noDay('Birth date', String(input)) }),
 		sex: chosen(SEXES, 'Sex: choose one.'),
 		mrn: text('The hospital number', 40).default(''),
 		/** Ticked when the record has another name and this is the name now. */
@@ -97,12 +97,8 @@ function operationProblems(form: OperationFields): [keyof OperationFields, strin
 	const problems: [keyof OperationFields, boolean, string][] = [
 		['procedure', procedure !== '', 'Procedure: say which operation, or leave all four fields empty.'],
 		['approach', approach !== '', 'Approach: choose one, or leave all four fields empty.'],
-		[
-			'operatedOn',
-			isLocalDate(operatedOn),
-			'Day of the operation: write a day that exists, such as 1 3 2026.'
-		],
-		['operatedTime', isLocalTime(operatedTime), 'Time of the operation: write it from 00:00 to 23:59.']
+		['operatedOn', isLocalDate(operatedOn), noDay('Day of the operation', operatedOn)],
+		['operatedTime', isLocalTime(operatedTime), noTime('Time of the operation', operatedTime)]
 	];
 	return problems.flatMap(([field, right, message]) => (right ? [] : [[field, message]]));
 }

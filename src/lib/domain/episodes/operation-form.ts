@@ -1,7 +1,7 @@
 /** An operation and a contact as pages ask for them: flat, in wall time, everything a text. */
 import { z } from 'zod';
 import { APPROACHES } from '../core/codes';
-import { text } from '../core/fields';
+import { noDay, noTime, text } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { instantOf, isLocalDate, isLocalTime, isZone, type Zone } from '../core/time';
 import { chosen, line, typedDay, typedTime } from './admit-form';
@@ -16,10 +16,10 @@ export const operationForm = z.object({
 	approach: chosen(APPROACHES, 'Approach: choose one.'),
 	operatedOn: typedDay
 		.default('')
-		.refine(isLocalDate, 'Day of the operation: write a day that exists, such as 1 3 2026.'),
+		.refine(isLocalDate, { error: ({ input }) => noDay('Day of the operation', String(input)) }),
 	operatedTime: typedTime
 		.default('')
-		.refine(isLocalTime, 'Time of the operation: write it from 00:00 to 23:59.'),
+		.refine(isLocalTime, { error: ({ input }) => noTime('Time of the operation', String(input)) }),
 	surgeonId: line('The surgeon', 120)
 });
 export type OperationForm = z.output<typeof operationForm>;

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { GRADES } from '../core/codes';
-import { reason, text } from '../core/fields';
+import { reason, text, tooLong } from '../core/fields';
 import { toRfc3339 } from '../core/instant';
 import { MINUTE } from '../core/time';
 
@@ -8,8 +8,8 @@ const minutes = (field: string, max: number) =>
 	z
 		.number(`${field} is a number of minutes.`)
 		.int(`${field} is a whole number of minutes.`)
-		.min(1, `${field} is at least 1 minute.`)
-		.max(max, `${field} is at most ${max} minutes.`);
+		.min(1, { error: ({ input }) => `${field} is ${String(input)}: it is at least 1 minute.` })
+		.max(max, { error: ({ input }) => `${field} is ${String(input)}: it is at most ${max} minutes.` });
 
 export const raiseBody = z.strictObject({
 	grade: z.enum(GRADES, `The grade is one of ${GRADES.join(', ')}.`),
@@ -36,7 +36,7 @@ export const informBody = z.strictObject({ informed: text('Which physician knows
 
 const WHOM = 'To whom is open: choose a person.';
 export const passBody = z.strictObject({
-	to: z.string(WHOM).min(1, WHOM).max(64),
+	to: z.string(WHOM).min(1, WHOM).max(64, tooLong('To whom', 64)),
 	reason: reason('The reason')
 });
 
