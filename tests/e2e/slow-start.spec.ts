@@ -129,3 +129,35 @@ test('a fold opened before script takes over stays open, and what its form answe
 	await expect(page.getByText(/^Nothing is noted: say/)).toBeVisible();
 	await context.close();
 });
+
+test('a press before script takes over sends nothing of a form that only script can send, and keeps what was typed', async ({
+	browser
+}) => {
+	const { page, context } = await seat(browser, product.url, 'coordinator');
+	const release = await holdScripts(page);
+	await page.goto('/visits/closed-days', { waitUntil: 'commit' });
+	const [day, name] = [page.getByLabel(/^Day/), page.getByLabel(/^Name of the day/)];
+	const close = page.getByRole('button', { name: 'Close this day' });
+	await day.fill('6 1 2028');
+	await name.fill('Harbour Day');
+	await close.click();
+	release();
+	await expectConnected(page);
+	await expect(page).toHaveURL(/closed-days$/);
+	await expect(day).toHaveValue('6 1 2028');
+	await expect(name).toHaveValue('Harbour Day');
+	await close.click();
+	await expect(page.getByText('The day is closed.')).toBeVisible();
+	await context.close();
+});
+
+test('without script such a form says that it needs it', async ({ browser }) => {
+	const context = await browser.newContext({ baseURL: product.url, javaScriptEnabled: false });
+	const [cookie = '', value = ''] = ((await signInAs(product.url, 'coordinator')).cookie ?? '').split('=');
+	await context.addCookies([{ name: cookie, value, url: product.url }]);
+	const page = await context.newPage();
+	await page.goto('/visits/closed-days');
+	await expect(page.getByText('This form needs script in this browser.')).toBeVisible();
+	await expect(page.getByLabel(/^Name of the day/)).toBeHidden();
+	await context.close();
+});

@@ -6,9 +6,9 @@ import {
 	giveClearance,
 	holdClearance,
 	withdrawClearance,
-	withholdClearance,
-	type Seen
+	withholdClearance
 } from '$lib/server/clearances/actions';
+import type { Seen } from '$lib/server/clearances/refuse';
 import { getClearance } from '$lib/server/clearances/queries';
 import { db } from '$lib/server/db';
 import { clearanceMoves } from '$lib/server/db/schema';

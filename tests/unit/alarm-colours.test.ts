@@ -26,6 +26,7 @@ const ALLOWED: Record<string, string> = {
 	'src/lib/components/ui/GradeShape.svelte': 'the grade of a call: shape',
 	'src/lib/components/ui/Aside.svelte': 'the line beside a finding that says stop',
 	'src/lib/components/ui/Notice.svelte': 'the notice of a stop',
+	'src/lib/components/ui/StopMark.svelte': 'the shape of a stop',
 	'src/lib/components/form/Form.svelte': 'its button raises or takes a call where it is given a grade',
 	'src/lib/components/loose-ends/EndMark.svelte': 'a call among the loose ends',
 	'src/lib/components/loose-ends/LooseEndRow.svelte':

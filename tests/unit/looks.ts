@@ -57,7 +57,11 @@ export const LOOKS: Record<string, Looks> = {
 	Choice: { part: Choice, props: { label: 'A', name: 'a', options } },
 	Fact: { part: Fact, props: { term: 'A', aside: 'B', children } },
 	Facts: { part: Facts, props: { children } },
-	Field: { part: Field, props: { label: 'A', hint: 'B', error: 'C', required: true, children } },
+	Field: {
+		part: Field,
+		props: { label: 'A', hint: 'B', error: 'C', required: true, children },
+		looks: { place: ['above', 'beside', 'aloud'] }
+	},
 	GradeMark: { part: GradeMark, looks: { grade, over: either } },
 	GradeShape: { part: GradeShape, looks: { grade, over: either, plain: either, size: ['text', 'mark'] } },
 	Icon: { part: Icon, props: { icon: ChevronUp } },

@@ -68,6 +68,18 @@ function usesIn(file: string): Use[] {
 
 const uses = pages.flatMap(usesIn);
 
+/** What the page of parts shows of a look; what is not said there is as the part has it by itself. */
+function shownLooks(part: string, name: string, all: readonly unknown[]): Set<unknown> {
+	const source = readFileSync(`src/lib/components/ui/${part}.svelte`, 'utf8');
+	const byItself = new RegExp(`\\b${name} = '([^']+)'`).exec(source)?.[1] ?? all[0];
+	const drawn = pages
+		.filter((file) => file.startsWith('src/routes/style/'))
+		.flatMap((file) => componentsIn(parse(readFileSync(file, 'utf8'), { modern: true }).fragment))
+		.filter((component) => component.name === part);
+	const shown = drawn.flatMap((component) => choicesOf(component, name, all));
+	return new Set(shown.map((look) => look ?? byItself));
+}
+
 describe('what is said twice', () => {
 	it.each([
 		['min-h-touch px-3 text-ink', 'min-h-thumb px-2 text-high', ['min-h-touch', 'px-3', 'text-ink']],
@@ -96,6 +108,17 @@ describe('a part of the page', () => {
 			)
 		);
 		expect([...new Set(fought)]).toEqual([]);
+	});
+
+	it('stands on the page of parts in every look that a page gives it', () => {
+		const given = Object.entries(LOOKS).flatMap(([part, { looks = {} }]) =>
+			Object.entries(looks).map(([name, all]) => ({ part, name, all, shown: shownLooks(part, name, all) }))
+		);
+		expect(given.length).toBeGreaterThan(15);
+		const missing = given.flatMap(({ part, name, all, shown }) =>
+			all.filter((look) => !shown.has(look)).map((look) => `${part}: ${name} ${String(look)}`)
+		);
+		expect(missing).toEqual([]);
 	});
 
 	it('never has to shout', () => {

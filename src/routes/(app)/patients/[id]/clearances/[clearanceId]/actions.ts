@@ -8,9 +8,9 @@ import {
 	giveClearance,
 	holdClearance,
 	withdrawClearance,
-	withholdClearance,
-	type Seen
+	withholdClearance
 } from '$lib/server/clearances/actions';
+import type { Seen } from '$lib/server/clearances/refuse';
 import { answerQuestion, askBack as askBackAbout } from '$lib/server/clearances/ask-back';
 import { acknowledgeRefusal } from '$lib/server/clearances/refusal';
 import type { PersonContext } from '$lib/server/context';
