@@ -2,6 +2,7 @@ import type { Config } from 'tailwindcss';
 import plugin from 'tailwindcss/plugin';
 import {
 	COLOUR_NAMES,
+	DIM,
 	FORCED,
 	MOTION,
 	RADIUS,
@@ -18,8 +19,9 @@ function variables(palette: Palette): Record<string, string> {
 	return Object.fromEntries(Object.entries(palette).map(([name, value]) => [`--${name}`, value]));
 }
 
-const day = { 'color-scheme': 'light', ...variables(THEMES.day) };
-const night = { 'color-scheme': 'dark', ...variables(THEMES.night) };
+const day = { 'color-scheme': 'light', '--dim': DIM.day, ...variables(THEMES.day) };
+const night = { 'color-scheme': 'dark', '--dim': DIM.night, ...variables(THEMES.night) };
+const forced = { '--dim': DIM.day, ...variables(FORCED) };
 
 /**
  * The device decides between day and night until a person chooses; the choice is `data-theme` on `<html>`, or
@@ -31,7 +33,7 @@ const themes = plugin(({ addBase }) => {
 		'@media (prefers-color-scheme: dark)': { ':root:not([data-theme])': night },
 		"[data-theme='night']": night,
 		'@media print': { ":root, :root:not([data-theme]), [data-theme='night']": day },
-		'@media (forced-colors: active)': { ':root, :root:not([data-theme]), [data-theme]': variables(FORCED) }
+		'@media (forced-colors: active)': { ':root, :root:not([data-theme]), [data-theme]': forced }
 	});
 });
 

@@ -27,7 +27,7 @@ function browser(executablePath: string) {
  * `startProduct` of tests/support/server.ts, so that journeys share nothing and may kill what they started.
  */
 export default defineConfig({
-	testDir: 'e2e',
+	testDir: process.env.SCREENSHOTS ? 'screenshots' : 'e2e',
 	outputDir: '../test-results',
 	workers: 2,
 	retries: 0,

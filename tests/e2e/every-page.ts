@@ -19,13 +19,14 @@ export interface VisitedPage {
 /**
  * Every page of the product, found by its file, at a real address: what it takes to have one is made here. A page that
  * nobody has given an address fails, so that none is forgotten.
+ * @param now the product's instant, milliseconds UTC, where its clock stands still
  */
-export async function everyPage(product: Product): Promise<VisitedPage[]> {
+export async function everyPage(product: Product, now = Date.now()): Promise<VisitedPage[]> {
 	// The call first: a link to it is in a text.
 	const known = {
-		...(await behindTheSignIn(product)),
+		...(await behindTheSignIn(product, now)),
 		...(await linksOfStaff(product)),
-		...(await patientPage(product))
+		...(await patientPage(product, now))
 	};
 	return pages()
 		.filter(({ address }) => !NOT_VISITED.includes(address))
@@ -41,7 +42,7 @@ export async function everyPage(product: Product): Promise<VisitedPage[]> {
 /** Where the pages with blanks in their address are found; several where one page shows different things. */
 type Known = Record<string, string | string[]>;
 
-async function behindTheSignIn(product: Product): Promise<Known> {
+async function behindTheSignIn(product: Product, now: number): Promise<Known> {
 	const [surgeon, therapist, admin] = await Promise.all([
 		signInAs(product.url, 'surgeon'),
 		signInAs(product.url, 'therapist'),
@@ -78,7 +79,7 @@ async function behindTheSignIn(product: Product): Promise<Known> {
 		'/bedside/[episodeId]': `/bedside/${asked?.episodeId}`,
 		'/escalations/[id]': `/escalations/${call.id}`,
 		'/admin/accounts/[id]': await found(admin, '/admin/accounts', /\/admin\/accounts\/[\w-]{36}/),
-		'/loose-ends/[what]/[id]': [await strayText(product), await untoldVisit(product)]
+		'/loose-ends/[what]/[id]': [await strayText(product), await untoldVisit(product, now)]
 	};
 }
 
@@ -99,10 +100,10 @@ async function strayText(product: Product): Promise<string> {
 }
 
 /** A visit was cancelled of a patient whom nothing can be written to: a person has to telephone. */
-async function untoldVisit(product: Product): Promise<string> {
+async function untoldVisit(product: Product, now: number): Promise<string> {
 	const coordinator = await signInAs(product.url, 'coordinator');
-	const episodeId = await admit(coordinator, {});
-	const startsAt = new Date(Date.now() + 9 * 86_400_000).toISOString();
+	const episodeId = await admit(coordinator, { ...operation(now) });
+	const startsAt = new Date(now + 9 * 86_400_000).toISOString();
 	const visit = { startsAt, minutes: 45, place: 'East Gym' };
 	const { body } = await coordinator.post(`/api/episodes/${episodeId}/visits`, visit);
 	const [booked] = body.items as unknown as { id: string }[];
@@ -110,8 +111,14 @@ async function untoldVisit(product: Product): Promise<string> {
 	return `/loose-ends/visits/${booked?.id}`;
 }
 
+/** Four days ago, as the product's clock has it. */
+function operation(now: number) {
+	const operatedAt = new Date(now - 4 * 86_400_000).toISOString();
+	return { operation: { procedure: 'Bypass', approach: 'sternotomy', operatedAt } };
+}
+
 /** A patient's own page, by the link in the mail that opens it. */
-async function patientPage(product: Product): Promise<Record<string, string>> {
+async function patientPage(product: Product, now: number): Promise<Record<string, string>> {
 	const coordinator = await signInAs(product.url, 'coordinator');
 	const patient = {
 		name: 'Ida Őry',
@@ -121,7 +128,7 @@ async function patientPage(product: Product): Promise<Record<string, string>> {
 		email: 'ida.ory@patients.example',
 		mailConsent: true
 	};
-	const episodeId = await admit(coordinator, { patient });
+	const episodeId = await admit(coordinator, { patient, ...operation(now) });
 	// By mail, because texts to patients wait for the day.
 	await coordinator.post(`/api/episodes/${episodeId}/patient-page`, { way: 'mail' });
 	const { text } = await mailArrives(product.mailUrl, patient.email);

@@ -365,10 +365,10 @@ describe('icons', () => {
 	/** Drawings that no library has, each with what it shows; plots and ropes are rooms of their own. */
 	const DRAWN: Record<string, string> = {
 		'src/lib/components/clearances/ArmFigure.svelte': 'an arm raised by so many degrees',
-		'src/lib/components/escalations/ChainRope.svelte': 'the rope that a call goes along',
+		'src/lib/components/clock/ChainRope.svelte': 'the rope that a call goes along',
 		'src/lib/components/shell/Connection.svelte': 'a strand, whole or parted',
 		'src/lib/components/ui/GradeShape.svelte': 'the shapes of urgency',
-		'src/lib/components/ward/LevelLane.svelte': 'the way up the levels'
+		'src/lib/components/lane/Lane.svelte': 'the corridor, its marks and stairs'
 	};
 
 	it('are not drawn by hand', () => {

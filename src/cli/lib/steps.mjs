@@ -21,7 +21,16 @@ import { run } from './run.mjs';
 const LIMIT_MS = 20 * 60 * 1000;
 
 /** Variables that would point tests at a person's own server or data. */
-const NOT_FOR_TESTS = ['DATABASE_URL', 'DATA_DIR', 'DEMO', 'NODE_ENV', 'ORIGIN', 'PUBLIC_URL', 'TEST_CLOCK'];
+const NOT_FOR_TESTS = [
+	'DATABASE_URL',
+	'DATA_DIR',
+	'DEMO',
+	'NODE_ENV',
+	'ORIGIN',
+	'PUBLIC_URL',
+	'TEST_CLOCK',
+	'TEST_CLOCK_AT'
+];
 
 /**
  * All of `npm test` after the packages are installed, in order. Steps in a list of their own run at once: each of them

@@ -81,6 +81,9 @@ export const NIGHT: Palette = {
 	yarn: '#121816'
 };
 
+/** How far the strands of the rope are dyed towards the ground: by night nothing is brighter than it need be. */
+export const DIM = { day: '0%', night: '22%' } as const;
+
 export const THEMES = { day: DAY, night: NIGHT } as const;
 export type ThemeName = keyof typeof THEMES;
 

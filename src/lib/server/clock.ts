@@ -3,10 +3,16 @@
  * request or round of work and passes it down, so that rules stay pure and the demonstration can move time.
  */
 let offsetMs = 0;
+let stoppedAt: number | null = null;
 
 /** The current instant in milliseconds UTC, moved by whatever {@link advanceClock} added. */
 export function now(): number {
-	return Date.now() + offsetMs;
+	return (stoppedAt ?? Date.now()) + offsetMs;
+}
+
+/** Let the clock stand at an instant (`TEST_CLOCK_AT`), so that pictures are the same whenever they are taken. */
+export function stopClockAt(instant: number): void {
+	stoppedAt = instant;
 }
 
 /**

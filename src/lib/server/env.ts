@@ -17,6 +17,9 @@ const schema = z.object({
 	DATABASE_URL: z.string().startsWith('file:', 'must be a file: address').optional(),
 	DEMO: flag,
 	TEST_CLOCK: flag,
+	TEST_CLOCK_AT: z.iso
+		.datetime({ offset: true, message: 'must be an instant like 2030-05-16T12:41:00Z' })
+		.optional(),
 	RATE_LIMIT_SCALE: z.coerce.number().positive().default(1),
 	HOSPITAL_NAME: z.string().default('Saltmarsh General'),
 	HOSPITAL_ZONE: z.string().default('Europe/Dublin'),
@@ -57,6 +60,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		databaseUrl: e.DATABASE_URL ?? `file:${path.join(dataDir, 'ropewalk.db')}`,
 		demo: e.DEMO,
 		testClock: e.DEMO && e.TEST_CLOCK,
+		/** Where the demonstration's clock stands still, milliseconds UTC; null where it goes. */
+		testClockAt: e.DEMO && e.TEST_CLOCK && e.TEST_CLOCK_AT ? Date.parse(e.TEST_CLOCK_AT) : null,
 		// Only the demonstration may loosen its request limits; production keeps them.
 		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
 		hospital: {

@@ -39,7 +39,7 @@ async function start(): Promise<void> {
 	await openDatabase(env().databaseUrl);
 	await migrateDatabase(db());
 	if (env().testClock) {
-		await takeUpClock();
+		await takeUpClock(env().testClockAt);
 	}
 	await prepareHospital();
 	await rederiveVisits(now());

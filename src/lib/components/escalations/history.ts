@@ -1,7 +1,7 @@
 import type { EscalationMoveKind } from '$lib/domain/core/codes';
 import type { EscalationView } from '$lib/domain/escalations/views';
 import { m } from '$lib/i18n/paraglide/messages';
-import { POST_WORDS } from './chain-rope';
+import { POST_WORDS } from '$lib/components/clock/chain-rope';
 
 /** One line of the history. */
 export interface HistoryLine {

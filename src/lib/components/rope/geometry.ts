@@ -8,9 +8,10 @@ import { round } from './strands';
 /** How a rope is laid: half width of the path, length of one turn, thickness of a strand, all in px. */
 export type Lay = { amplitude: number; period: number; stroke: number };
 
-/** The three ropes of the product: down a thread, along a lane, and beside the name. */
+/** The ropes of the product: down a thread, along a patient's corridor, along a lane of the ward, beside the name. */
 export const LAYS = {
 	thread: { amplitude: 9.5, period: 58, stroke: 10.5 },
+	corridor: { amplitude: 6.6, period: 41, stroke: 7.2 },
 	lane: { amplitude: 4.2, period: 26, stroke: 4.6 },
 	mark: { amplitude: 3.6, period: 22, stroke: 4 }
 } as const satisfies Record<string, Lay>;

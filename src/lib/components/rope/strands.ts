@@ -23,7 +23,7 @@ const YARNS: Record<StrandName, readonly number[]> = {
 
 /** CSS colour of a strand. */
 export function dyeOf(strand: StrandName): string {
-	return `var(--${STRAND_DYES[strand]})`;
+	return `color-mix(in oklab, var(--${STRAND_DYES[strand]}), var(--shade) var(--dim))`;
 }
 
 /** `stroke-dasharray` of a strand's yarn drawn `width` px wide, or `null` for a solid line. */
@@ -39,5 +39,5 @@ export function round(value: number): number {
 
 /** The far side of a strand: its dye, darkened by `share` percent towards what the theme calls shade. */
 export function shadedDye(strand: StrandName, share: number): string {
-	return `color-mix(in oklab, ${dyeOf(strand)}, var(--shade) ${share}%)`;
+	return `color-mix(in oklab, var(--${STRAND_DYES[strand]}), var(--shade) ${share}%)`;
 }

@@ -9,9 +9,9 @@ const NOTHING = precautionsOf({ ...STERNOTOMY, approach: 'other' }, null, false)
 describe('procedureWords', () => {
 	it.each([
 		[null, null, 'No operation recorded'],
-		['Bypass', '2026-03-04T08:00:00Z', 'Bypass, before the operation'],
-		['Bypass', '2026-03-03T08:00:00Z', 'Bypass, day 0'],
-		['Valve', '2026-02-19T08:00:00Z', 'Valve, day 12']
+		['Bypass', '2026-03-04T08:00:00Z', 'before the operation · Bypass'],
+		['Bypass', '2026-03-03T08:00:00Z', 'day 0 · Bypass'],
+		['Valve', '2026-02-19T08:00:00Z', 'day 12 · Valve']
 	])('%s of %s: %s', (procedure, operatedAt, words) => {
 		expect(procedureWords({ procedure, operatedAt }, READER)).toBe(words);
 	});

@@ -3,14 +3,14 @@ import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import type { Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
 import { byMouthWords } from '../patient/by-mouth';
-import { bewareWords, dayWords } from '../patient/words';
+import { bewareWords, dayWords, DOT } from '../patient/words';
 
-/** What was operated and how long ago: `Bypass, day 4`. */
+/** How long ago and what was operated: `day 4 · Bypass`. The day first, because a round goes by it. */
 export function procedureWords(
 	item: Pick<EpisodeListItem, 'procedure' | 'operatedAt'>,
 	reader: Reader
 ): string {
-	return [item.procedure, dayWords(item, reader)].filter(Boolean).join(', ');
+	return [dayWords(item, reader), item.procedure].filter(Boolean).join(DOT);
 }
 
 /** That nothing goes by mouth, precautions and the drug that slows the heart, where there are any; a drug nobody knows of is judged as given. */

@@ -155,6 +155,8 @@ export interface Nameboard {
 	wounds: WoundNote[];
 	/** How wound and breastbone stand after all notes; null where there are none, and for who may not see them. */
 	wound: StandingWound | null;
+	/** What is open about the patient, the most urgent first. */
+	ends: HangingEnd[];
 	referrals: {
 		id: string;
 		service: Service;

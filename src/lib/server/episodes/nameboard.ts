@@ -6,12 +6,14 @@ import { toRfc3339 } from '$lib/domain/core/instant';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { notKnown } from '$lib/domain/episodes/may-do-now';
 import type { Nameboard, PatientContact } from '$lib/domain/episodes/views';
+import { hangingEnds } from '$lib/domain/loose-ends/hanging';
 import { standingWound } from '$lib/domain/wounds/stand';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { unseenDeviations } from '../bedside/deviations';
 import { listClearances } from '../clearances/queries';
 import type { Reader } from '../db';
 import { escalations, patients, referrals, threads, units, users } from '../db/schema';
+import { openThings } from '../loose-ends/queries';
 import { wordingsOf } from '../limits/activities';
 import { layersOf } from '../limits/queries';
 import { listWoundNotes } from '../wounds/queries';
@@ -32,7 +34,7 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, unseen, visits, calls, layers, wordings, wounds] = await Promise.all([
+	const [who, asks, cleared, unseen, visits, calls, layers, wordings, wounds, things] = await Promise.all([
 		whoAndWhere(db, episode),
 		referralsOf(db, episodeId),
 		listClearances(db, episodeId, derived.operation?.id ?? null, now),
@@ -41,7 +43,8 @@ export async function getNameboard(
 		clinical ? escalationsOf(db, episodeId) : [],
 		clinical ? layersOf(db, episode, now) : NO_LAYERS,
 		clinical ? wordingsOf(db, episode.unitId) : [],
-		clinical ? listWoundNotes(db, episodeId) : []
+		clinical ? listWoundNotes(db, episodeId) : [],
+		openThings(db, [episode.unitId], now)
 	]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
@@ -72,6 +75,7 @@ export async function getNameboard(
 		wounds: wounds.slice(0, WOUND_NOTES),
 		wound: standingWound(wounds),
 		limits: layers,
+		ends: hangingEnds(things, clinical).get(episodeId) ?? [],
 		referrals: asks,
 		threads: asks.map(({ threadId, service, state }) => ({ id: threadId, service, state })),
 		clearances: cleared,

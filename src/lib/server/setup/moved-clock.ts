@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { advanceClock, movedBy, now } from '../clock';
+import { advanceClock, movedBy, now, stopClockAt } from '../clock';
 import { db } from '../db';
 import { settings } from '../db/schema';
 
@@ -15,8 +15,14 @@ export async function moveClock(byMs: number): Promise<void> {
 		.onConflictDoUpdate({ target: settings.key, set: row });
 }
 
-/** Take up the clock where the process before left it; called once, before anything asks for the time. */
-export async function takeUpClock(): Promise<void> {
+/**
+ * Take up the clock where the process before left it; called once, before anything asks for the time.
+ * @param at where it stands still, milliseconds UTC; null where it goes
+ */
+export async function takeUpClock(at: number | null): Promise<void> {
+	if (at !== null) {
+		stopClockAt(at);
+	}
 	const [row] = await db().select().from(settings).where(eq(settings.key, KEY));
 	if (typeof row?.value === 'number') {
 		advanceClock(row.value);

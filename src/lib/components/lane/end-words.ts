@@ -5,7 +5,19 @@ import type { HangingEnd } from '$lib/domain/loose-ends/hanging';
 import { duration } from '$lib/format';
 import { CLEARANCE_WORDS, SERVICE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
+import type { StrandName } from '../rope/strands';
 import { ROLE_WORDS } from '../shell/role-words';
+
+/** A loose end as a lane shows it: the strand that owes the answer, and what is open. */
+export interface LaneEnd {
+	strand: StrandName;
+	words: string;
+}
+
+/** What is open about one patient, the most urgent first. */
+export function laneEnds(ends: readonly HangingEnd[], now: number): LaneEnd[] {
+	return ends.map((end) => ({ strand: end.strand, words: endWords(end, now) }));
+}
 
 /** What hangs from a lane and for how long: `arm stage asked, 2 h`. Nothing of what anybody wrote. */
 export function endWords(end: HangingEnd, now: number): string {
