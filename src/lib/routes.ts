@@ -2,6 +2,8 @@
 export const routes = {
 	front: () => '/',
 	signIn: (next?: string) => (next ? `/sign-in?next=${encodeURIComponent(next)}` : '/sign-in'),
+	/** The sign-in of a demonstration, with one of its people filled in. */
+	signInAs: (email: string) => `/sign-in?as=${encodeURIComponent(email)}`,
 	signInAndSend: () => '/sign-in/send',
 	signOut: () => '/sign-out',
 	invitation: (token: string) => `/invite/${token}`,

@@ -14,7 +14,7 @@ import { bookSeries, mailed, move } from './journey/visits';
 
 /**
  * Every role's whole day in one journey, on the built product: one patient, seven people at browsers of their own, and
- * the patient with a telephone and a mailbox. With `PICTURES=1` it makes the pictures of README and guides on its way.
+ * the patient with a telephone and a mailbox.
  */
 let day: Day;
 

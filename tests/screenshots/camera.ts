@@ -46,13 +46,18 @@ export async function lookAs(browser: Browser, url: string, who: Who | null, the
 	return context.newPage();
 }
 
+/** The page stands: its letters are there, and it hears what happens. */
+export async function settled(page: Page, who: string | null): Promise<void> {
+	await page.evaluate(() => document.fonts.ready);
+	if (who !== null) {
+		await page.getByText('Connected', { exact: true }).first().waitFor();
+	}
+}
+
 /** One picture of the whole page as it stands, named so that sizes and themes of a page lie beside each other. */
 export async function shoot(page: Page, name: string, who: string, size: Size, theme: Theme): Promise<void> {
 	const viewport = SIZES[size];
-	await page.evaluate(() => document.fonts.ready);
-	if (who !== 'nobody') {
-		await page.getByText('Connected', { exact: true }).first().waitFor();
-	}
+	await settled(page, who === 'nobody' ? null : who);
 	await unroll(page);
 	const file = `${wordsOf(name)}--${who}--${size}-${theme}.png`;
 	await page.screenshot({ path: path.join(EVERY, file), animations: 'disabled' });

@@ -2,7 +2,6 @@ import { expect } from '@playwright/test';
 import { mailArrives } from '../fakes';
 import { DESK, expectConnected, seat } from '../people';
 import type { Day } from './day';
-import { picture } from './pictures';
 
 const NEW = { name: 'Tamsin Orrel', email: 'tamsin@saltmarsh.example' };
 const SENTENCE = 'harbour lights over nine boats';
@@ -12,7 +11,6 @@ export async function invite(day: Day): Promise<void> {
 	const page = day.page('admin');
 	await page.goto('/admin/accounts');
 	await expectConnected(page);
-	await picture(page, 'admin');
 	const form = page.getByRole('region', { name: 'Invite somebody' });
 	await form.getByLabel(/^Name/).fill(NEW.name);
 	await form.getByLabel(/^E-mail/).fill(NEW.email);

@@ -2,7 +2,6 @@ import { expect, type Page } from '@playwright/test';
 import { textArrives } from '../fakes';
 import { PHONE, seat } from '../people';
 import { goTo, PATIENT, press, rowOf, SECRET, type Day } from './day';
-import { picture } from './pictures';
 
 /** A field of the reading that is open; the other moments' fields are there but hidden. */
 const reading = (page: Page, name: string) => page.getByRole('textbox', { name: new RegExp(`^${name}`) });
@@ -38,7 +37,6 @@ export async function notice(day: Day): Promise<void> {
 	).toBeVisible();
 	await goTo(day.page('nurse'), 'Ward');
 	await expect(day.page('nurse').getByText(PATIENT).first()).toBeVisible();
-	await picture(day.page('nurse'), 'nurse', null);
 }
 
 /** The SMS brings the nurse a link; a look takes nothing; two minutes later they are told again; she takes it. */
@@ -80,7 +78,6 @@ export async function callAndTake(day: Day): Promise<void> {
 	await phone.page.goto(link);
 	await expect(phone.page.getByText('Tern Ward')).toBeVisible();
 	await expect(phone.page.getByText(PATIENT)).toHaveCount(0);
-	await picture(phone.page, 'call', null);
 	await phone.page.getByRole('button', { name: 'I take it' }).click();
 	await expect(phone.page.getByText('You have it').first()).toBeVisible();
 	await expect(raising.getByText(/Rona Ferris has it/).first()).toBeVisible();

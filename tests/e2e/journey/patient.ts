@@ -4,7 +4,6 @@ import { itemsOf } from '../../support/fakes';
 import { expectAccessible } from '../accessible';
 import { PHONE } from '../people';
 import { goTo, press, row, rowOf, shown, type Day } from './day';
-import { picture } from './pictures';
 
 /** The coordinator sends the private link; it lies in the patient's mailbox. */
 async function sentLink(day: Day): Promise<string> {
@@ -32,7 +31,6 @@ export async function ownPage(day: Day): Promise<void> {
 	await page.goto(link);
 	await expect(page.getByRole('heading', { name: 'Your visits' })).toBeVisible();
 	expect(await page.content()).not.toMatch(/Penhale|Orla|T21|bypass|surgery/i);
-	await picture(page, 'patient', null);
 	const monday = page.getByRole('listitem').first();
 	await monday.getByRole('button', { name: /^I will come on Monday/ }).click();
 	await expect(monday.getByText('You have said that you will come.')).toBeVisible();

@@ -1,7 +1,6 @@
-import { expect, type Page } from '@playwright/test';
-import { expectConnected, PHONE } from '../people';
+import { expect } from '@playwright/test';
+import { PHONE } from '../people';
 import { goTo, press, rowOf, type Day } from './day';
-import { picture } from './pictures';
 
 /** The surgeon asks, the therapist sees it arrive and accepts, both talk, the nurse reads along. */
 export async function refer(day: Day): Promise<void> {
@@ -42,7 +41,6 @@ export async function clear(day: Day): Promise<void> {
 
 	const asked = rowOf(day.page('surgeon'));
 	await expect(asked).toContainText('Arm stage');
-	await picture(day.page('surgeon'), 'surgeon');
 	await press(asked.getByRole('link', { name: /Answer/ }));
 	await expect(day.page('surgeon').getByText('May the arm stage start?')).toBeVisible();
 	await expect(day.page('surgeon').getByText('born 12 Mar 1951').first()).toBeVisible();
@@ -75,11 +73,6 @@ export async function clearByOthers(day: Day): Promise<void> {
 		await asking.getByRole('button', { name: 'Ask', exact: true }).click();
 		const asked = rowOf(page).filter({ hasText: question });
 		await expect(asked).toHaveCount(1);
-		if (kind === 'stairs') {
-			// The ask hangs loose beside the rope until it is answered.
-			await pictureOfThread(asking);
-		}
-		await picture(page, who);
 		await press(asked.getByRole('link', { name: /Answer/ }));
 		await expect(page.getByText(question).first()).toBeVisible();
 		if (kind === 'stairs') {
@@ -93,13 +86,4 @@ export async function clearByOthers(day: Day): Promise<void> {
 		await goTo(page, 'Loose ends');
 		await expect(rowOf(page).filter({ hasText: question })).toHaveCount(0);
 	}
-}
-
-/** The thread as it opens, without the form that the therapist has open. */
-async function pictureOfThread(asking: Page): Promise<void> {
-	const view = await asking.context().newPage();
-	await view.goto(asking.url());
-	await expectConnected(view);
-	await picture(view, 'thread');
-	await view.close();
 }

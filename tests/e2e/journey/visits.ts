@@ -5,7 +5,6 @@ import { REMINDER_HOURS } from '../../../src/lib/domain/visits/reminders';
 import { itemsOf } from '../../support/fakes';
 import { mailArrives, textArrives } from '../fakes';
 import { DESK, expectConnected, seat } from '../people';
-import { picture } from './pictures';
 import { MAIL, PATIENT, PHONE_OF_PATIENT, row, SECRET, shown, typed, ZONE, type Day } from './day';
 
 /** A day is closed, and a series that is booked steps over it; a colleague who looks on hears of it. */
@@ -52,7 +51,6 @@ export async function bookSeries(day: Day): Promise<void> {
 	await expect(row(therapist, shown('Wed', addDays(monday, 2)))).toHaveCount(0);
 	await page.goto(`/visits?from=${monday}`);
 	await expect(page.getByText(PATIENT).first()).toBeVisible();
-	await picture(page, 'coordinator');
 	await page.goto(day.visits);
 	await expectConnected(page);
 }

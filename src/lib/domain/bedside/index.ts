@@ -39,11 +39,11 @@ export {
 	adviseLevel,
 	afterDecision,
 	PROGRESS_SYSTOLIC_RISE,
-	seniorSignsLevel,
 	type Advice,
 	type Levels,
 	type ProgressReason,
 	type Suggestion
 } from './progress';
+export { seniorSignsLevel } from './sign-off';
 export { CALM_HOURS_BEFORE_WALKING, readyToWalk, type Readiness, type WalkingChecks } from './readiness';
 export { rulebook, type Rulebook, type RulebookLimit, type RulebookRow } from './rulebook';

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { assess } from './assess';
-import { adviseLevel, afterDecision, seniorSignsLevel, type Suggestion } from './progress';
+import { adviseLevel, afterDecision, type Suggestion } from './progress';
+import { seniorSignsLevel } from './sign-off';
 import { REST, session, type Changes } from './testing/sample';
 import { LEVELS, type Level } from '../core/codes';
 

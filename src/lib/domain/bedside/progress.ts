@@ -82,11 +82,6 @@ export function afterDecision({ reached }: Levels, to: Level): Levels {
 	return { reached: reached >= to ? reached : to, today: to };
 }
 
-/** True when the decision needs a senior: more than one level at once, or up against the advice. */
-export function seniorSignsLevel(from: Level, to: Level, advice: Advice): boolean {
-	return to > from + 1 || (to > from && advice.suggestion !== 'progress');
-}
-
 function suggest({ outcome, findings }: Verdict, reasons: readonly ProgressReason[]): Suggestion {
 	if (findings.some(({ grade, reading }) => grade === 'stop' && reading !== 'before')) {
 		return 'step-back';

@@ -4,7 +4,8 @@
  * Physicians and surgeons answer for themselves. Common practice, no published source.
  */
 import type { Person } from '../access/actor';
-import type { Role } from '../core/codes';
+import type { Level, Role } from '../core/codes';
+import type { Advice } from './progress';
 
 export const SIGN_OFF_KINDS = ['level', 'dose'] as const;
 export type SignOffKind = (typeof SIGN_OFF_KINDS)[number];
@@ -20,3 +21,8 @@ export function isSenior({ role, senior }: Pick<Person, 'role' | 'senior'>): boo
 
 /** The roles whose accounts are marked: physicians and surgeons need no mark, others treat nobody. */
 export const MAY_BE_SENIOR = ['therapist', 'speech-therapist', 'nurse'] as const satisfies readonly Role[];
+
+/** True when the decision needs a senior: more than one level at once, or up against the advice. */
+export function seniorSignsLevel(from: Level, to: Level, advice: Pick<Advice, 'suggestion'>): boolean {
+	return to > from + 1 || (to > from && advice.suggestion !== 'progress');
+}

@@ -1,6 +1,6 @@
 import { and, eq } from 'drizzle-orm';
-import { afterDecision, seniorSignsLevel } from '$lib/domain/bedside/progress';
-import { isSenior } from '$lib/domain/bedside/sign-off';
+import { afterDecision } from '$lib/domain/bedside/progress';
+import { isSenior, seniorSignsLevel } from '$lib/domain/bedside/sign-off';
 import type { Level } from '$lib/domain/core/codes';
 import { Problem, invalidField } from '$lib/domain/core/errors';
 import type { DecideLevel } from '$lib/domain/levels/forms';

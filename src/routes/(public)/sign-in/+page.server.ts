@@ -8,6 +8,7 @@ import { signIn } from '$lib/server/accounts/sign-in';
 import { env } from '$lib/server/env';
 import { openFormAction } from '$lib/server/http/form-action';
 import { newFormKey } from '$lib/server/http/page';
+import { DEMO_PASSWORD, emailOf, SHOWN } from '$lib/server/setup/demonstration/people';
 import type { Actions, PageServerLoad } from './$types';
 
 const schema = signInBody.pick({ email: true, password: true });
@@ -18,13 +19,19 @@ export const load: PageServerLoad = async ({ locals, url }) => {
 		redirect(303, safeNext(next));
 	}
 	return {
-		form: await superValidate<{ email: string; password: string }, string>(zod4(schema)),
+		form: await superValidate<{ email: string; password: string }, string>(shown(url), zod4(schema)),
 		key: newFormKey(),
 		/** Whether somebody was on the way to a page of ours. */
 		onward: next !== null && safeNext(next) === next,
 		demo: env().demo
 	};
 };
+
+/** One of the people whom a demonstration shows, chosen on the front page; nobody's password is filled in elsewhere. */
+function shown(url: URL) {
+	const email = SHOWN.map(emailOf).find((one) => one === url.searchParams.get('as'));
+	return env().demo && email ? { email, password: DEMO_PASSWORD } : undefined;
+}
 
 /**
  * Signing in. The form's key is not used: a sign-in is nothing to be done once, and no trace of a password is
