@@ -2,6 +2,8 @@ import { and, eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import { recordSession } from '$lib/server/bedside/actions';
 import { amendSession } from '$lib/server/bedside/amend';
+import { askClearance, giveClearance } from '$lib/server/clearances/actions';
+import { getClearance } from '$lib/server/clearances/queries';
 import { db } from '$lib/server/db';
 import { audit, lines, liveEvents } from '$lib/server/db/schema';
 import { listEpisodes } from '$lib/server/episodes/list';
@@ -225,5 +227,24 @@ describe('who reads them', () => {
 		expect(await onTheWard('coordinator')).toMatchObject({ lines: [], oxygen: null });
 		expect(await board('coordinator')).toMatchObject({ lines: [], lineNotes: [], oxygen: null });
 		await expect(board('admin')).rejects.toMatchObject({ code: 'not-allowed' });
+	});
+
+	it('decides a clearance on them, and hears what has changed since the page was shown', async () => {
+		const ask = { kind: 'corridor', question: 'May it start?' } as const;
+		const { result } = await askClearance(as('therapist', 1), episodeId, ask);
+		const seen = (role: Role) => getClearance(db(), hospital.people[role], result.id, hospital.now);
+		const { evidence, shown } = await seen('surgeon');
+		expect(evidence).toMatchObject({
+			lines: ['endotracheal-tube', 'chest-drain', 'urinary-catheter'],
+			oxygen: { lpm: 2, at: at(0), by: hospital.people.nurse.name }
+		});
+		expect((await seen('coordinator')).evidence).toMatchObject({ lines: [], oxygen: null, sessions: null });
+		const tube = (await board()).lineNotes.find(({ kind }) => kind === 'endotracheal-tube');
+		await noteLineOut(as('nurse', 2), tube?.id ?? '');
+		await noteOxygen(as('nurse', 3), episodeId, { lpm: 6 });
+		await expect(giveClearance(as('surgeon', 4), result.id, {}, { evidence: shown })).rejects.toMatchObject({
+			code: 'evidence-changed',
+			extra: { news: { changed: ['lines', 'oxygen'] } }
+		});
 	});
 });
