@@ -4,6 +4,7 @@ import type { AddressInfo } from 'node:net';
 import { eq, sql } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { POSTS } from '$lib/domain/core/codes';
+import { LINE_KINDS } from '$lib/domain/lines/codes';
 import { admitBody } from '$lib/domain/episodes/forms';
 import { verifyAudit } from '$lib/server/audit/verify';
 import { passwordFits } from '$lib/server/auth/passwords';
@@ -148,6 +149,22 @@ describe('the demonstration hospital', () => {
 			'patient',
 			'therapy'
 		]);
+	});
+
+	it('has fewer lines in its patients each day, and none from day 4', async () => {
+		const all = { limit: 50, after: null };
+		const { items } = await listEpisodes(db(), await personAt('nurse'), START, null, all);
+		const byDay = items.map(
+			({ postOpDay, lines, oxygen }) => [postOpDay, lines, oxygen?.lpm ?? null] as const
+		);
+		expect(byDay.filter(([day]) => Number(day) < 5).sort(([a], [b]) => Number(a) - Number(b))).toEqual([
+			[0, [...LINE_KINDS], null],
+			[1, ['central-line', 'peripheral-line', 'chest-drain', 'pacing-wires', 'urinary-catheter'], 2],
+			[3, ['central-line', 'peripheral-line', 'pacing-wires', 'urinary-catheter'], 4],
+			[3, ['peripheral-line', 'chest-drain'], 0],
+			[4, [], 0]
+		]);
+		expect(byDay.filter(([day, there]) => Number(day) > 4 && there.length > 0)).toEqual([]);
 	});
 
 	it('is quiet: one call is taken, one settled, and nothing old is left to be sent', async () => {

@@ -11,6 +11,7 @@ export interface Row {
 const CLINICAL: Role[] = ['surgeon', 'physician', 'nurse', 'therapist', 'speech-therapist'];
 const SEEING: Role[] = [...CLINICAL, 'coordinator'];
 const DECIDERS: Role[] = ['surgeon', 'physician', 'speech-therapist'];
+const NOTING: Role[] = ['surgeon', 'physician', 'nurse', 'therapist'];
 const TAKERS: Role[] = ['nurse', 'physician', 'surgeon'];
 
 export const API: Record<string, Row> = {
@@ -71,6 +72,9 @@ export const API: Record<string, Row> = {
 	},
 	'POST /api/limits/[id]/end': { roles: ['physician', 'surgeon'], answers: [404] },
 	'POST /api/episodes/[id]/wound-notes': { roles: CLINICAL, answers: [422] },
+	'POST /api/episodes/[id]/lines': { roles: NOTING, answers: [422] },
+	'POST /api/lines/[id]/out': { roles: NOTING, answers: [404] },
+	'POST /api/episodes/[id]/oxygen-notes': { roles: NOTING, answers: [422] },
 	'GET /api/episodes/[id]/sessions': { roles: CLINICAL, answers: [404] },
 	'POST /api/episodes/[id]/sessions': {
 		roles: ['therapist', 'speech-therapist', 'nurse', 'physician'],

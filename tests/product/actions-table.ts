@@ -9,6 +9,7 @@ export interface ActionRow {
 
 const CLINICAL: Role[] = ['surgeon', 'physician', 'nurse', 'therapist', 'speech-therapist'];
 const SEEING: Role[] = [...CLINICAL, 'coordinator'];
+const NOTING: Role[] = ['surgeon', 'physician', 'nurse', 'therapist'];
 const ANSWERING: Role[] = ['therapist', 'speech-therapist'];
 const REFERRING: Role[] = ['surgeon', 'physician'];
 const ASKING: Role[] = ['therapist', 'speech-therapist', 'nurse', 'physician'];
@@ -85,6 +86,9 @@ export const ACTIONS: Record<string, ActionRow> = {
 		roles: ['coordinator', 'therapist']
 	},
 	'/patients/[id]?/wound': { fields: { wound: 'dry', sternum: '', note: '' }, roles: CLINICAL },
+	'/patients/[id]?/lineIn': { fields: { kind: 'urinary-catheter' }, roles: NOTING },
+	'/patients/[id]?/lineOut': { fields: { id: UNKNOWN }, roles: NOTING },
+	'/patients/[id]?/oxygen': { fields: { lpm: '2' }, roles: NOTING },
 	'/patients/[id]/refer': {
 		fields: { service: 'physiotherapy', priority: 'soon', question: 'Begin to mobilise.' },
 		roles: REFERRING

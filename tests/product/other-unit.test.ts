@@ -38,6 +38,8 @@ const BODIES: Record<string, object> = {
 	'POST /api/episodes/[id]/limits': { key: 'systolic-ceiling', value: 170, untilOn: '2099-12-01', ...WHY },
 	'POST /api/episodes/[id]/prescribed-ranges': { hrMax: 118, method: 'walk-test' },
 	'POST /api/episodes/[id]/wound-notes': { wound: 'dry' },
+	'POST /api/episodes/[id]/lines': { kind: 'urinary-catheter' },
+	'POST /api/episodes/[id]/oxygen-notes': { lpm: 2 },
 	'POST /api/episodes/[id]/sessions': SESSION,
 	'POST /api/episodes/[id]/escalations': CALL,
 	'POST /api/episodes/[id]/visits': { startsAt: '2099-12-01T10:00:00Z', minutes: 45, place: 'East Gym' },
@@ -81,7 +83,8 @@ const FOUND: Record<string, string> = {
 	'patient-pages': `select id from patient_links ${OF_TERN}`,
 	'sign-offs': `select id from sign_offs ${OF_TERN}`,
 	deviations: `select id from deviations ${OF_TERN}`,
-	limits: `select id from patient_limits ${OF_TERN}`
+	limits: `select id from patient_limits ${OF_TERN}`,
+	lines: `select id from lines ${OF_TERN}`
 };
 
 /** What the demonstration has none of, as its first patient of the ward could have it. */

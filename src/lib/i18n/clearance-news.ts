@@ -4,6 +4,8 @@ import { m } from './paraglide/messages';
 const CHANGE_WORDS: Record<Changeable, () => string> = {
 	operation: m.clearances_news_operation,
 	wound: m.clearances_news_wound,
+	lines: m.clearances_news_lines,
+	oxygen: m.clearances_news_oxygen,
 	level: m.clearances_news_level,
 	heart: m.clearances_news_heart,
 	precautions: m.clearances_news_precautions

@@ -48,6 +48,8 @@ function askOf({ kind, ref }: EntryLine): OpenAsk | null {
 		case 'session':
 		case 'visit':
 		case 'wound-note':
+		case 'line':
+		case 'oxygen-note':
 			return null;
 	}
 }

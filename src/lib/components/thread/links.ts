@@ -18,6 +18,9 @@ export function placeOfRef(
 			return { href: routes.patientVisits(episodeId), label: m.referrals_see_visits() };
 		case 'wound-note':
 			return { href: routes.patient(episodeId), label: m.referrals_see_wound() };
+		case 'line':
+		case 'oxygen-note':
+			return { href: routes.patient(episodeId), label: m.referrals_see_lines() };
 		case 'referral':
 		case undefined:
 			return null;

@@ -23,6 +23,8 @@ function row(bed: string | null, name: string, level: 1 | 3 | 5, looseEnds: numb
 		notKnown: ['operation'],
 		precautions: precautionsOf(null, null, false),
 		nothingByMouth: false,
+		lines: [],
+		oxygen: null,
 		escalation: null
 	} satisfies EpisodeListItem;
 }

@@ -26,6 +26,7 @@ export const PERMISSIONS = [
 	'session.read',
 	'session.record',
 	'wound.note',
+	'line.note',
 	'limit.set-for-patient',
 	'range.prescribe',
 	'limit.change',
@@ -109,6 +110,9 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 			return role === 'surgeon';
 		case 'wound.note':
 			return clinical;
+		// Lines, drains and oxygen: those who put them in, take them out and walk with them.
+		case 'line.note':
+			return among(role, 'nurse', 'therapist', 'physician', 'surgeon');
 		case 'session.record':
 			return among(role, 'therapist', 'speech-therapist', 'nurse', 'physician');
 		case 'limit.set-for-patient':

@@ -9,7 +9,9 @@ const NEEDS: Record<RefKind, Permission> = {
 	visit: 'visit.read',
 	session: 'session.read',
 	escalation: 'escalation.read',
-	'wound-note': 'session.read'
+	'wound-note': 'session.read',
+	line: 'session.read',
+	'oxygen-note': 'session.read'
 };
 
 /**

@@ -5,6 +5,8 @@ import type { ReadAs } from '../bedside/read-as';
 import { CLEARANCE_KINDS, type EscalationState, type Grade } from '../core/codes';
 import { reason, text } from '../core/fields';
 import type { Precautions } from '../episodes/precautions';
+import type { LineKind } from '../lines/codes';
+import type { SaidOxygen } from '../lines/views';
 import type { StandingWound } from '../wounds/stand';
 
 /** How far a permission goes. Degrees are arm elevation from the side of the body, 0 down and 180 overhead. */
@@ -78,6 +80,9 @@ export interface ClearanceEvidence {
 	rhythm: string | null;
 	/** How wound and breastbone stand; null where nobody has noted anything. */
 	wound?: StandingWound | null;
+	/** What is in, and the oxygen; missing in what was stored before they were noted. */
+	lines?: LineKind[];
+	oxygen?: SaidOxygen | null;
 	precautions?: Precautions;
 	/** The last ones, and all that were recorded since the ask or the decision before. */
 	sessions: EvidenceSession[];

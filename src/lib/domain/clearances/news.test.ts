@@ -17,6 +17,7 @@ const WOUND = {
 	sternum: null,
 	note: null
 } as const;
+const OXYGEN = { lpm: 2, at: '2026-03-02T08:00:00.000Z', by: 'Nurse' };
 const PRECAUTIONS = {
 	basis: 'performed',
 	sternal: true,
@@ -36,6 +37,8 @@ const SHOWN: ShownEvidence = {
 	betaBlocked: true,
 	rhythm: 'sinus',
 	wound: WOUND,
+	lines: ['arterial-line', 'chest-drain'],
+	oxygen: OXYGEN,
 	precautions: PRECAUTIONS,
 	sessions: [SESSION],
 	escalations: [CALL]
@@ -57,6 +60,9 @@ describe('newsSince', () => {
 		['a call that somebody took', { escalations: [{ ...CALL, state: 'taken' }] }, null],
 		['a call that was settled', { escalations: [{ ...CALL, state: 'settled' }] }, news({ escalations: 1 })],
 		['a wound', { wound: { ...WOUND, at: '2026-03-02T12:01:00.000Z' } }, news({ changed: ['wound'] })],
+		['a drain that is out', { lines: ['arterial-line'] }, news({ changed: ['lines'] })],
+		['more oxygen', { oxygen: { ...OXYGEN, lpm: 4 } }, news({ changed: ['oxygen'] })],
+		['the same oxygen, said again', { oxygen: { ...OXYGEN, at: '2026-03-02T12:01:00.000Z' } }, null],
 		['a level', { level: 1 }, news({ changed: ['level'] })],
 		['a rhythm', { rhythm: 'atrial-fibrillation' }, news({ changed: ['heart'] })],
 		['a drug that is no longer known', { betaBlocked: null }, news({ changed: ['heart'] })],

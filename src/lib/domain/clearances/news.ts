@@ -1,7 +1,7 @@
 import type { ShownEvidence } from './views';
 
 /** What of the evidence can change under a decider, besides sessions and calls for help. */
-export const CHANGEABLE = ['operation', 'wound', 'level', 'heart', 'precautions'] as const;
+export const CHANGEABLE = ['operation', 'wound', 'lines', 'oxygen', 'level', 'heart', 'precautions'] as const;
 export type Changeable = (typeof CHANGEABLE)[number];
 
 /** What stands in newer evidence and not in older. */
@@ -42,10 +42,13 @@ export function newsSince(shown: string, evidence: ShownEvidence): EvidenceNews 
 
 /** The day after the operation is left out: it turns at midnight without anything having happened. */
 function facts({ procedure, approach, operatedOn, wound, level, ...rest }: ShownEvidence): string[] {
-	const { betaBlocked, rhythm, precautions } = rest;
+	const { betaBlocked, rhythm, precautions, lines = [], oxygen } = rest;
 	return [
 		mark('operation', procedure, approach, operatedOn),
 		mark('wound', wound?.at, wound?.wound, wound?.sternum),
+		mark('lines', ...lines),
+		// The same flow said again is nothing new.
+		mark('oxygen', oxygen?.lpm),
 		mark('level', level),
 		mark('heart', betaBlocked, rhythm),
 		mark(

@@ -12,6 +12,8 @@ import type {
 import type { ClearanceLimits } from '../clearances/forms';
 import type { LocalActivity } from '../bedside/activities/local';
 import type { LocalLayers } from '../bedside/limits/layers';
+import type { LineKind } from '../lines/codes';
+import type { LineNote, SaidOxygen, StandingOxygen } from '../lines/views';
 import type { HangingEnd } from '../loose-ends/hanging';
 import type { StandingWound } from '../wounds/stand';
 import type { WoundNote } from '../wounds/views';
@@ -52,6 +54,10 @@ export interface EpisodeListItem {
 	precautions: Precautions;
 	/** Whether nothing may be taken by mouth; false also where nobody has said. */
 	nothingByMouth: boolean;
+	/** What is in, in the order of the list; empty for who may not see sessions. */
+	lines: LineKind[];
+	/** Null where nobody has said any, and for who may not see sessions. */
+	oxygen: StandingOxygen | null;
 	/** The most urgent escalation that is not settled; null also for who may not read any. */
 	escalation: {
 		id: string;
@@ -157,6 +163,12 @@ export interface Nameboard {
 	wound: StandingWound | null;
 	/** What is open about the patient, the most urgent first. */
 	ends: HangingEnd[];
+	/** What is in, in the order of the list; empty for who may not see sessions. */
+	lines: LineKind[];
+	/** All lines of the episode, those noted in last first; empty for who may not see sessions. */
+	lineNotes: LineNote[];
+	/** Null where nobody has said any, and for who may not see sessions. */
+	oxygen: SaidOxygen | null;
 	referrals: {
 		id: string;
 		service: Service;

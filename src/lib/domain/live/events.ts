@@ -57,7 +57,7 @@ export function staleKeys(event: StreamEvent): QueryKey[] {
 		case 'visit':
 			return [...around, ['visits'], ['visit', event.id]];
 		case 'episode':
-			// Wound, level and move: what a decision rests on.
+			// Wound, lines, oxygen, level and move: what a decision rests on.
 			return [...around, ['clearance']];
 		case 'message':
 			return [['loose-ends'], ['messages'], ['visits'], ['escalation']];

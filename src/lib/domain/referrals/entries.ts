@@ -3,5 +3,14 @@ export const ENTRY_KINDS = ['ask', 'answer', 'note', 'session', 'event'] as cons
 export type EntryKind = (typeof ENTRY_KINDS)[number];
 
 /** What an entry can point at. */
-export const REF_KINDS = ['referral', 'clearance', 'session', 'escalation', 'visit', 'wound-note'] as const;
+export const REF_KINDS = [
+	'referral',
+	'clearance',
+	'session',
+	'escalation',
+	'visit',
+	'wound-note',
+	'line',
+	'oxygen-note'
+] as const;
 export type RefKind = (typeof REF_KINDS)[number];

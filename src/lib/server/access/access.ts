@@ -3,7 +3,17 @@ import type { Person } from '$lib/domain/access/actor';
 import { can, type Permission, type Subject } from '$lib/domain/access/can';
 import { Problem, notFound } from '$lib/domain/core/errors';
 import type { Reader } from '../db';
-import { clearances, deviations, episodes, escalations, referrals, threads, visits } from '../db/schema';
+import {
+	clearances,
+	deviations,
+	episodes,
+	escalations,
+	lines,
+	referrals,
+	threads,
+	users,
+	visits
+} from '../db/schema';
 
 /**
  * Fetch with permission or not at all. These functions are the only way from an identifier in a request to a row.
@@ -74,6 +84,17 @@ export async function accessEscalation(db: Reader, person: Person, id: string, p
 		.innerJoin(episodes, eq(episodes.id, escalations.episodeId))
 		.where(eq(escalations.id, id));
 	return allowed(person, row, row?.episode.unitId, permission, 'escalation');
+}
+
+/** A line with the name of whoever noted it out; null while it is in. */
+export async function accessLine(db: Reader, person: Person, id: string, permission: Permission) {
+	const [row] = await db
+		.select({ kind: lines.kind, episodeId: lines.episodeId, outBy: users.name, unitId: episodes.unitId })
+		.from(lines)
+		.innerJoin(episodes, eq(episodes.id, lines.episodeId))
+		.leftJoin(users, eq(users.id, lines.outBy))
+		.where(eq(lines.id, id));
+	return allowed(person, row, row?.unitId, permission, 'line');
 }
 
 export async function accessVisit(db: Reader, person: Person, id: string, permission: Permission) {

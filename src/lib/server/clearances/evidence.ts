@@ -13,6 +13,7 @@ import type { Reader } from '../db';
 import { bedsideSessions, escalations, findings } from '../db/schema';
 import { env } from '../env';
 import type { EpisodeFacts } from '../episodes/facts';
+import { linesInOf, oxygenOf } from '../lines/queries';
 import { listWoundNotes } from '../wounds/queries';
 
 const SESSIONS_SHOWN = 3;
@@ -28,10 +29,12 @@ export async function gatherEvidence(
 	facts: EpisodeFacts,
 	{ now, since }: { now: number; since: number }
 ): Promise<ClearanceEvidence> {
-	const [wounds, sessions, calls] = await Promise.all([
+	const [wounds, sessions, calls, lines, oxygen] = await Promise.all([
 		listWoundNotes(db, episode.id),
 		sessionsOf(db, episode.id, since),
-		escalationsOf(db, episode.id, since)
+		escalationsOf(db, episode.id, since),
+		linesInOf(db, [episode.id]),
+		oxygenOf(db, [episode.id])
 	]);
 	const { operation } = facts;
 	return {
@@ -44,18 +47,20 @@ export async function gatherEvidence(
 		betaBlocked: episode.betaBlocked,
 		rhythm: episode.rhythm,
 		wound: standingWound(wounds),
+		lines: lines.get(episode.id) ?? [],
+		oxygen: oxygen.get(episode.id) ?? null,
 		precautions: facts.precautions,
 		sessions,
 		escalations: calls
 	};
 }
 
-/** Wound, sessions and calls for help in the evidence are as much a clinical record as on their own pages. */
+/** Wound, lines, oxygen, sessions and calls for help in the evidence are as much a clinical record as on their own pages. */
 export function shownTo(person: Person, unitId: string, evidence: ClearanceEvidence): ShownEvidence {
+	const withheld = { wound: null, lines: [], oxygen: null, sessions: null };
 	return {
 		...evidence,
-		wound: can(person, 'session.read', { unitId }) ? evidence.wound : null,
-		sessions: can(person, 'session.read', { unitId }) ? evidence.sessions : null,
+		...(can(person, 'session.read', { unitId }) ? {} : withheld),
 		escalations: can(person, 'escalation.read', { unitId }) ? evidence.escalations : null
 	};
 }

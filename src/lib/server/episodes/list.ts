@@ -9,6 +9,7 @@ import { hangingEnds } from '$lib/domain/loose-ends/hanging';
 import type { Reader } from '../db';
 import { episodes, escalations, patients, units, users } from '../db/schema';
 import { page, type Page, type PageRequest } from '../http/paging';
+import { linesInOf, oxygenOf } from '../lines/queries';
 import { openThings } from '../loose-ends/queries';
 import { factsOf, levelsDecide } from './facts';
 
@@ -48,22 +49,25 @@ export async function listEpisodes(
 		)
 		.limit(request.limit + 1);
 	const { items, next } = page(rows, request, (row) => row.episode.id);
-	const [facts, things, calls] = await Promise.all([
+	const ids = items.map((row) => row.episode.id);
+	const [facts, things, calls, linesIn, oxygen] = await Promise.all([
 		factsOf(
 			db,
 			items.map((row) => row.episode),
 			now
 		),
 		openThings(db, person.unitIds, now),
-		openEscalations(
-			db,
-			items.map((row) => row.episode.id)
-		)
+		openEscalations(db, ids),
+		linesInOf(db, ids),
+		oxygenOf(db, ids)
 	]);
 	const ends = hangingEnds(things, can(person, 'escalation.read'));
 	const lines = items.map(({ episode, patient, unit: at }) => {
 		const derived = facts.get(episode.id);
 		const operation = derived?.operation ?? null;
+		const said = oxygen.get(episode.id);
+		// What is in the patient and what they breathe is as much a clinical record here as on their own page.
+		const maySee = can(person, 'session.read', { unitId: at.id });
 		return {
 			id: episode.id,
 			patient: patientLine(patient),
@@ -82,6 +86,8 @@ export async function listEpisodes(
 			notKnown: derived ? notKnown({ ...episode, precautions: derived.precautions }) : [],
 			precautions: derived?.precautions,
 			nothingByMouth: episode.phase === 'inpatient' && derived?.nothingByMouth === true,
+			lines: maySee ? (linesIn.get(episode.id) ?? []) : [],
+			oxygen: maySee && said ? { lpm: said.lpm, at: said.at } : null,
 			// Who may not read calls for help sees none here either.
 			escalation: can(person, 'escalation.read', { unitId: at.id }) ? (calls.get(episode.id) ?? null) : null
 		} as EpisodeListItem;

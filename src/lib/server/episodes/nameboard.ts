@@ -7,6 +7,7 @@ import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { notKnown } from '$lib/domain/episodes/may-do-now';
 import type { Nameboard, PatientContact } from '$lib/domain/episodes/views';
 import { hangingEnds } from '$lib/domain/loose-ends/hanging';
+import { inListOrder } from '$lib/domain/lines/stand';
 import { standingWound } from '$lib/domain/wounds/stand';
 import { accessEpisode, type EpisodeRow } from '../access/access';
 import { unseenDeviations } from '../bedside/deviations';
@@ -16,6 +17,7 @@ import { escalations, patients, referrals, threads, units, users } from '../db/s
 import { openThings } from '../loose-ends/queries';
 import { wordingsOf } from '../limits/activities';
 import { layersOf } from '../limits/queries';
+import { listLines, oxygenOf } from '../lines/queries';
 import { listWoundNotes } from '../wounds/queries';
 import { visitsOfEpisode } from '../visits/queries';
 import { factsOfOne, levelsDecide } from './facts';
@@ -34,18 +36,21 @@ export async function getNameboard(
 	const episode = await accessEpisode(db, person, episodeId, 'episode.read');
 	const clinical = can(person, 'escalation.read', { unitId: episode.unitId });
 	const derived = await factsOfOne(db, episode, now);
-	const [who, asks, cleared, unseen, visits, calls, layers, wordings, wounds, things] = await Promise.all([
-		whoAndWhere(db, episode),
-		referralsOf(db, episodeId),
-		listClearances(db, episodeId, derived.operation?.id ?? null, now),
-		clinical ? unseenDeviations(db, episodeId) : [],
-		visitsOfEpisode(db, episodeId),
-		clinical ? escalationsOf(db, episodeId) : [],
-		clinical ? layersOf(db, episode, now) : NO_LAYERS,
-		clinical ? wordingsOf(db, episode.unitId) : [],
-		clinical ? listWoundNotes(db, episodeId) : [],
-		openThings(db, [episode.unitId], now)
-	]);
+	const [who, asks, cleared, unseen, visits, calls, layers, wordings, wounds, lines, oxygen, things] =
+		await Promise.all([
+			whoAndWhere(db, episode),
+			referralsOf(db, episodeId),
+			listClearances(db, episodeId, derived.operation?.id ?? null, now),
+			clinical ? unseenDeviations(db, episodeId) : [],
+			visitsOfEpisode(db, episodeId),
+			clinical ? escalationsOf(db, episodeId) : [],
+			clinical ? layersOf(db, episode, now) : NO_LAYERS,
+			clinical ? wordingsOf(db, episode.unitId) : [],
+			clinical ? listWoundNotes(db, episodeId) : [],
+			clinical ? listLines(db, episodeId) : [],
+			clinical ? oxygenOf(db, [episodeId]) : null,
+			openThings(db, [episode.unitId], now)
+		]);
 	if (!who) {
 		throw new Error(`Episode ${episodeId} lost its patient or unit.`);
 	}
@@ -74,6 +79,9 @@ export async function getNameboard(
 		wordings,
 		wounds: wounds.slice(0, WOUND_NOTES),
 		wound: standingWound(wounds),
+		lines: inListOrder(lines.filter(({ outAt }) => outAt === null).map(({ kind }) => kind)),
+		lineNotes: lines,
+		oxygen: oxygen?.get(episodeId) ?? null,
 		limits: layers,
 		ends: hangingEnds(things, clinical).get(episodeId) ?? [],
 		referrals: asks,

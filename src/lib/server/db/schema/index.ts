@@ -5,6 +5,7 @@ export * from './episodes';
 export * from './escalations';
 export * from './levels';
 export * from './limits';
+export * from './lines';
 export * from './messages';
 export * from './referrals';
 export * from './system';

@@ -1,4 +1,5 @@
 import { acknowledgeRefusal } from '../../../clearances/refusal';
+import { FROM_THEATRE, ToldLines } from '../lines';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
 
@@ -8,6 +9,7 @@ const UNIT = 'Heron Unit';
 export function harrow(t: Telling): void {
 	const { when } = t;
 	t.admit(when.today(170), 'coordinator', { unit: UNIT, bed: 'H1' }, when.today(410));
+	new ToldLines(t).in(when.today(165), 'nurse3', ...FROM_THEATRE, 'pacing-wires');
 	t.refer(when.today(50), 'surgeon', {
 		service: 'physiotherapy',
 		priority: 'soon',
@@ -20,6 +22,11 @@ export function harrow(t: Telling): void {
 export function pell(t: Telling): void {
 	const { when } = t;
 	t.admit(when.on(1, '13:40'), 'coordinator', { unit: UNIT, bed: 'H2' }, when.on(1, '09:10'));
+	new ToldLines(t)
+		.in(when.on(1, '13:50'), 'nurse3', ...FROM_THEATRE, 'pacing-wires')
+		.out(when.on(1, '15:50'), 'nurse3', 'endotracheal-tube')
+		.oxygen(when.on(1, '15:55'), 'nurse3', 4)
+		.out(when.today(310), 'nurse3', 'arterial-line');
 	const asked = t.refer(when.on(1, '16:20'), 'surgeon', {
 		service: 'physiotherapy',
 		priority: 'routine',
@@ -58,6 +65,12 @@ export function pell(t: Telling): void {
 export function vantry(t: Telling): void {
 	const { when } = t;
 	t.admit(when.on(3, '17:20'), 'coordinator', { unit: UNIT, bed: 'H3' }, when.on(3, '08:30'));
+	new ToldLines(t)
+		.in(when.on(3, '17:30'), 'nurse', ...FROM_THEATRE, 'pacing-wires')
+		.out(when.on(1, '10:20'), 'nurse', 'chest-drain')
+		.out(when.on(1, '16:45'), 'physician', 'endotracheal-tube')
+		.oxygen(when.on(1, '16:50'), 'nurse', 6)
+		.out(when.today(240), 'nurse3', 'arterial-line');
 	const physio = t.refer(when.on(2, '09:05'), 'physician', {
 		service: 'physiotherapy',
 		priority: 'routine',

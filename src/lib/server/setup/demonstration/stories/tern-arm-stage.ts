@@ -1,5 +1,6 @@
 import { askClearance } from '../../../clearances/actions';
 import { noteWound } from '../../../wounds/actions';
+import { ToldLines } from '../lines';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
 
@@ -209,6 +210,7 @@ export function brackwater(t: Telling): void {
 		after: reading(86, 142, 80, 93, { rr: 20, rpe: 13, pain: 3 }),
 		activities: done({ code: 'hall-walk-long', minutes: 7, distanceM: 150, assistance: 'one' })
 	});
+	new ToldLines(t).oxygen(when.on(2, '08:20'), 'nurse2', 0);
 	const arms = t.ask(
 		when.on(1, '10:20'),
 		'therapist2',

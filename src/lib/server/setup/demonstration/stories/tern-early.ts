@@ -1,3 +1,4 @@
+import { FROM_THEATRE, ToldLines } from '../lines';
 import { done, reading } from '../readings';
 import type { Telling } from '../telling';
 
@@ -5,6 +6,13 @@ import type { Telling } from '../telling';
 export function aske(t: Telling): void {
 	const { when } = t;
 	t.admit(when.on(3, '14:15'), 'nurse', { unit: 'Heron Unit', bed: 'H4' }, when.on(3, '09:45'));
+	new ToldLines(t)
+		.in(when.on(3, '14:25'), 'nurse', ...FROM_THEATRE)
+		.out(when.on(3, '14:55'), 'nurse', 'endotracheal-tube')
+		.oxygen(when.on(3, '15:00'), 'nurse', 3)
+		.out(when.on(2, '08:40'), 'nurse2', 'arterial-line', 'urinary-catheter')
+		.out(when.on(1, '09:05'), 'nurse', 'central-line')
+		.oxygen(when.on(1, '09:10'), 'nurse', 0);
 	const asked = t.refer(when.on(3, '15:10'), 'surgeon2', {
 		service: 'physiotherapy',
 		priority: 'routine',
@@ -45,6 +53,14 @@ export function aske(t: Telling): void {
 export function dunmore(t: Telling): void {
 	const { when } = t;
 	t.admit(when.on(4, '15:00'), 'coordinator', { unit: 'Heron Unit', bed: 'H5' }, when.on(4, '10:20'));
+	new ToldLines(t)
+		.in(when.on(4, '15:10'), 'nurse3', ...FROM_THEATRE, 'pacing-wires')
+		.out(when.on(4, '15:40'), 'nurse3', 'endotracheal-tube')
+		.oxygen(when.on(4, '15:45'), 'nurse3', 2)
+		.out(when.on(3, '08:50'), 'nurse3', 'arterial-line', 'urinary-catheter')
+		.out(when.on(2, '09:15'), 'nurse', 'chest-drain', 'central-line')
+		.oxygen(when.on(2, '09:20'), 'nurse', 0)
+		.out(when.on(1, '09:30'), 'nurse', 'pacing-wires', 'peripheral-line');
 	const asked = t.refer(when.on(4, '16:10'), 'surgeon', {
 		service: 'physiotherapy',
 		priority: 'routine',
