@@ -15,6 +15,7 @@ import { liveCursor } from '$lib/server/live/log';
 import { log } from '$lib/server/log';
 import { pageExists } from '$lib/server/patient-page/link';
 import { clientAddress } from '$lib/server/http/address';
+import { compressed } from '$lib/server/http/compress';
 import { secureHeaders } from '$lib/server/http/headers';
 import { countedFor, countRequest, linkTokenIn, pageTokenIn } from '$lib/server/http/limits';
 import { refuseForeignOrigin } from '$lib/server/http/origin';
@@ -132,7 +133,8 @@ function noSuchMethod(method: string, { headers }: Response): Response {
 	return response;
 }
 
-const harden: Handle = async ({ event, resolve }) => secureHeaders(await resolve(event), event.url.pathname);
+const harden: Handle = async ({ event, resolve }) =>
+	compressed(event.request, secureHeaders(await resolve(event), event.url.pathname));
 
 /**
  * A page is read in the language that its reader chose. What a write puts on record is not: a thread has one

@@ -379,4 +379,16 @@ describe('every answer', () => {
 			expect(headers.get('access-control-allow-origin')).toBeNull();
 		}
 	);
+
+	it.each(['/', '/api/episodes'])(
+		'of %s is packed for whoever takes it, and reads the same',
+		async (path) => {
+			const plain = await nurse.get(path, { 'accept-encoding': 'identity' });
+			const packed = await nurse.get(path, { 'accept-encoding': 'gzip' });
+			expect(plain.headers.get('content-encoding')).toBeNull();
+			expect(packed.headers.get('content-encoding')).toBe('gzip');
+			// Whole to its end; what stands before may have passed a minute meanwhile.
+			expect(packed.text.slice(-12)).toBe(plain.text.slice(-12));
+		}
+	);
 });
