@@ -34,9 +34,14 @@ export async function spoilt(page: Page): Promise<string[]> {
 		const wordsOf = (each: Element) => each.textContent?.trim().replaceAll(/\s+/g, ' ').slice(0, 40);
 		const seen = (each: Element) =>
 			each.checkVisibility({ visibilityProperty: true, opacityProperty: true }) && !each.closest('.sr-only');
+		/** Within something that scrolls by itself, which makes nothing else wider. */
+		const scrolls = (each: Element | null): boolean =>
+			each !== null && (getComputedStyle(each).overflowX !== 'visible' || scrolls(each.parentElement));
 		if (document.documentElement.scrollWidth > window.innerWidth) {
 			const beyond = [...document.querySelectorAll('body *')]
-				.filter((each) => each.getBoundingClientRect().right > window.innerWidth + 1)
+				.filter(
+					(each) => each.getBoundingClientRect().right > window.innerWidth + 1 && !scrolls(each.parentElement)
+				)
 				.map((each) => `${each.localName}.${each.className}: ${wordsOf(each)}`);
 			found.push(`the page is ${document.documentElement.scrollWidth} px wide`, ...beyond.slice(0, 8));
 		}
@@ -77,4 +82,9 @@ export async function spoilt(page: Page): Promise<string[]> {
 		}
 		return found;
 	});
+}
+
+/** All letters twice as large, as a reader may ask the browser for (WCAG 1.4.4); or as they were. */
+export async function enlarge(page: Page, twice: boolean): Promise<void> {
+	await page.evaluate((size) => (document.documentElement.style.fontSize = size), twice ? '200%' : '');
 }

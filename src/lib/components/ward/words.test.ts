@@ -23,16 +23,34 @@ describe('wardBeware', () => {
 		[false, []],
 		[null, ['rate-slowing drug: not known']]
 	])('without precautions, drug %s: %j', (betaBlocked, words) => {
-		expect(wardBeware({ precautions: NOTHING, betaBlocked, nothingByMouth: false }, READER)).toEqual(words);
+		expect(
+			wardBeware(
+				{ precautions: NOTHING, betaBlocked, nothingByMouth: false, lines: [], oxygen: null },
+				READER
+			)
+		).toEqual(words);
 	});
 
 	it('names what may not be taken by mouth before precautions, and those before the drug', () => {
 		const precautions = precautionsOf(STERNOTOMY, null, false);
-		expect(wardBeware({ precautions, betaBlocked: true, nothingByMouth: true }, READER)).toEqual([
+		expect(
+			wardBeware(
+				{
+					precautions,
+					betaBlocked: true,
+					nothingByMouth: true,
+					lines: ['chest-drain'],
+					oxygen: { lpm: 2, at: '2026-03-03T08:00:00Z' }
+				},
+				READER
+			)
+		).toEqual([
 			'Nothing by mouth',
 			'Sternal precautions, end due Sun 26 Apr',
 			'arms to 45°',
-			'rate-slowing drug'
+			'rate-slowing drug',
+			'oxygen 2 L/min',
+			'chest drain'
 		]);
 	});
 });
@@ -43,6 +61,8 @@ describe('precautions that nobody knows', () => {
 		['planned', 'Precautions begin with the operation']
 	] as const)('of %s: %s', (basis, words) => {
 		const precautions = { ...NOTHING, basis };
-		expect(wardBeware({ precautions, betaBlocked: false, nothingByMouth: false }, READER)).toEqual([words]);
+		expect(
+			wardBeware({ precautions, betaBlocked: false, nothingByMouth: false, lines: [], oxygen: null }, READER)
+		).toEqual([words]);
 	});
 });

@@ -1,6 +1,7 @@
 import { mayHold } from '$lib/domain/episodes/precautions';
 import type { EpisodeListItem } from '$lib/domain/episodes/views';
 import type { Reader } from '$lib/format';
+import { linesWords, oxygenWords } from '$lib/i18n/lines';
 import { m } from '$lib/i18n/paraglide/messages';
 import { byMouthWords } from '../patient/by-mouth';
 import { bewareWords, dayWords, DOT } from '../patient/words';
@@ -13,9 +14,9 @@ export function procedureWords(
 	return [dayWords(item, reader), item.procedure].filter(Boolean).join(DOT);
 }
 
-/** That nothing goes by mouth, precautions and the drug that slows the heart, where there are any; a drug nobody knows of is judged as given. */
+/** That nothing goes by mouth, precautions, the drug that slows the heart, oxygen and lines, where there are any; a drug nobody knows of is judged as given. */
 export function wardBeware(
-	item: Pick<EpisodeListItem, 'precautions' | 'betaBlocked' | 'nothingByMouth'>,
+	item: Pick<EpisodeListItem, 'precautions' | 'betaBlocked' | 'nothingByMouth' | 'lines' | 'oxygen'>,
 	reader: Reader
 ): string[] {
 	const { precautions, betaBlocked } = item;
@@ -23,6 +24,7 @@ export function wardBeware(
 	return [
 		...byMouthWords(item),
 		...(mayHold(precautions) ? bewareWords(precautions, reader) : []),
-		...(drug === null ? [] : [drug()])
+		...(drug === null ? [] : [drug()]),
+		...[oxygenWords(item.oxygen), linesWords(item.lines)].filter(Boolean)
 	];
 }
