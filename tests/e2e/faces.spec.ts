@@ -18,16 +18,6 @@ test.beforeAll(async () => {
 		mine: { kind: string; episodeId: string; threadId: string }[];
 	};
 	const asked = mine.find(({ kind }) => kind === 'clearance');
-	// With a call that nobody has, its words stand above every page; they would fill a second line in a wider face.
-	const therapist = await signInAs(product.url, 'therapist');
-	await therapist.post(`/api/episodes/${asked?.episodeId}/escalations`, {
-		grade: 'high',
-		situation: 'Systolic pressure fell from 128 to 108 after walking.',
-		background: 'Bypass.',
-		assessment: 'Too much.',
-		request: 'Please come.'
-	});
-	await product.advance(20 * 60_000);
 	const patient = `/patients/${asked?.episodeId}`;
 	looked = ['/loose-ends', '/ward', patient, `${patient}/threads/${asked?.threadId}`, '/visits'];
 });
