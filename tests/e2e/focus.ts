@@ -65,7 +65,11 @@ function watchFocus(): number {
 		});
 		return over ? `is under ${over.localName} ${nameOf(over)}` : null;
 	};
-	const watch: FocusWatch = { faults: [], reached: new Set(), end: () => removeEventListener('keydown', look, true) };
+	const watch: FocusWatch = {
+		faults: [],
+		reached: new Set(),
+		end: () => removeEventListener('keydown', look, true)
+	};
 	function look() {
 		const each = document.activeElement;
 		if (!each || each === document.body || watch.reached.has(each)) {

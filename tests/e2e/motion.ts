@@ -20,7 +20,9 @@ export function moving(page: Page): Promise<string[]> {
 			.getAnimations()
 			.filter(({ effect }) => Number(effect?.getComputedTiming().activeDuration) > still * 1000);
 		return [
-			...[...document.querySelectorAll('*')].filter(moves).map((each) => `${each.localName}.${each.className}`),
+			...[...document.querySelectorAll('*')]
+				.filter(moves)
+				.map((each) => `${each.localName}.${each.className}`),
 			...drawn.map(({ id }) => `an animation ${id}`),
 			...[...document.querySelectorAll('animate, animateTransform, animateMotion, marquee')].map(
 				(each) => each.localName

@@ -1,0 +1,39 @@
+import type { Page } from '@playwright/test';
+import { faultsOf } from './accessible';
+import type { VisitedPage } from './every-page';
+import { lostFocus } from './focus';
+import { moving } from './motion';
+import { PHONE } from './people';
+import { enlarge, spoilt } from './room';
+import { FINGER, POINTER, smallTargets } from './targets';
+
+const NARROW = { width: 320, height: 568 };
+const WIDE = { width: 1280, height: 800 };
+
+/** Pages of hands that are full, wet or in a hurry: every control on them is as large as a finger. */
+const FOR_FINGERS = ['/bedside/[episodeId]', '/t/[token]', '/p/[token]', '/loose-ends', '/ward'];
+
+/** What keeps somebody from reading or working the page that is open on a phone; it stands as before afterwards. */
+export async function barriers(page: Page, { page: name }: VisitedPage): Promise<string[]> {
+	const found: string[] = [];
+	const note = (where: string, faults: readonly unknown[]) =>
+		found.push(...faults.map((fault) => `${where}: ${String(fault)}`));
+	await page.emulateMedia({ colorScheme: 'light' });
+	note('by day', await faultsOf(page));
+	await page.emulateMedia({ colorScheme: 'dark' });
+	note('by night', await faultsOf(page, 'html', ['color-contrast']));
+	await page.emulateMedia({ colorScheme: null });
+	note('too small', await smallTargets(page, FOR_FINGERS.includes(name) ? FINGER : POINTER));
+	note('moves', await moving(page));
+	note('on a phone', await lostFocus(page));
+	await page.setViewportSize(NARROW);
+	note('at 320 px', await spoilt(page));
+	await page.setViewportSize(WIDE);
+	note('at a desk', await lostFocus(page));
+	await enlarge(page, true);
+	note('at a desk, twice as large', await spoilt(page));
+	await page.setViewportSize(PHONE);
+	note('on a phone, twice as large', await spoilt(page));
+	await enlarge(page, false);
+	return found;
+}
