@@ -46,7 +46,15 @@ export default {
 	content: ['./src/**/*.{html,svelte,ts}'],
 	theme: {
 		colors: { ...colours, current: 'currentColor', inherit: 'inherit', transparent: 'transparent' },
-		fontFamily: { sans: ['Ropewalk Sans', 'Ropewalk Sans fallback', 'system-ui', 'sans-serif'] },
+		fontFamily: {
+			sans: [
+				'Ropewalk Sans',
+				'Ropewalk Sans fallback',
+				'Ropewalk Sans wide fallback',
+				'system-ui',
+				'sans-serif'
+			]
+		},
 		fontSize: TYPE,
 		fontWeight: WEIGHT,
 		borderRadius: RADIUS,

@@ -11,9 +11,18 @@ export function shellOrChromium() {
 	return existsSync(SHELL) ? SHELL : CHROMIUM;
 }
 
+/** With the face that stands in until ours has come, so that every machine measures by the same letters. */
 const COMMANDS = [
 	['apt-get', 'update'],
-	['apt-get', 'install', '-y', '--no-install-recommends', 'chromium', 'chromium-headless-shell']
+	[
+		'apt-get',
+		'install',
+		'-y',
+		'--no-install-recommends',
+		'chromium',
+		'chromium-headless-shell',
+		'fonts-liberation'
+	]
 ];
 
 /**
