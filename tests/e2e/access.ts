@@ -2,6 +2,7 @@ import type { Page } from '@playwright/test';
 import { faultsOf } from './accessible';
 import type { VisitedPage } from './every-page';
 import { lostFocus } from './focus';
+import { lostInForcedColours } from './forced-colours';
 import { moving } from './motion';
 import { PHONE } from './people';
 import { enlarge, spoilt } from './room';
@@ -15,14 +16,8 @@ const FOR_FINGERS = ['/bedside/[episodeId]', '/t/[token]', '/p/[token]', '/loose
 
 /** What keeps somebody from reading or working the page that is open on a phone; it stands as before afterwards. */
 export async function barriers(page: Page, { page: name }: VisitedPage): Promise<string[]> {
-	const found: string[] = [];
-	const note = (where: string, faults: readonly unknown[]) =>
-		found.push(...faults.map((fault) => `${where}: ${String(fault)}`));
-	await page.emulateMedia({ colorScheme: 'light' });
-	note('by day', await faultsOf(page));
-	await page.emulateMedia({ colorScheme: 'dark' });
-	note('by night', await faultsOf(page, 'html', ['color-contrast']));
-	await page.emulateMedia({ colorScheme: null });
+	const found = await byDayAndNight(page);
+	const note = noteIn(found);
 	note('too small', await smallTargets(page, FOR_FINGERS.includes(name) ? FINGER : POINTER));
 	note('moves', await moving(page));
 	note('on a phone', await lostFocus(page));
@@ -36,4 +31,29 @@ export async function barriers(page: Page, { page: name }: VisitedPage): Promise
 	note('on a phone, twice as large', await spoilt(page));
 	await enlarge(page, false);
 	return found;
+}
+
+/** The same of the page as it is drawn at a desk, where tables and both bars are. */
+export async function barriersAtDesk(page: Page): Promise<string[]> {
+	const found = await byDayAndNight(page);
+	noteIn(found)('too small', await smallTargets(page, POINTER));
+	return found;
+}
+
+async function byDayAndNight(page: Page): Promise<string[]> {
+	const found: string[] = [];
+	const note = noteIn(found);
+	await page.emulateMedia({ colorScheme: 'light' });
+	note('by day', await faultsOf(page));
+	await page.emulateMedia({ colorScheme: 'dark' });
+	note('by night', await faultsOf(page, 'html', ['color-contrast']));
+	await page.emulateMedia({ colorScheme: null, forcedColors: 'active' });
+	note('in forced colours', await lostInForcedColours(page));
+	await page.emulateMedia({ forcedColors: null });
+	return found;
+}
+
+function noteIn(found: string[]) {
+	return (where: string, faults: readonly unknown[]) =>
+		found.push(...faults.map((fault) => `${where}: ${String(fault)}`));
 }

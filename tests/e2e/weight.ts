@@ -3,9 +3,10 @@ import type { Page } from '@playwright/test';
 
 /**
  * How far a page may move while it loads, as Web Vitals measures it; they call 0.1 good. The device's own face stands in
- * at the same measure, so that words keep their places; a line that only just fits may still break otherwise.
+ * at the same measure, so that words keep their places; a line that only just fits may still break otherwise, and moves
+ * all that is below it by its height, 20 of the 844 px of a phone.
  */
-export const SHIFT = 0.02;
+export const SHIFT = 0.03;
 
 /** What each script of the build weighs after gzip, KiB, by its address: many pages load the same. */
 const known = new Map<string, Promise<number>>();

@@ -63,9 +63,13 @@ export class Client {
 }
 
 /** Sign in as a role of the demonstration or by address. */
-export async function signInAs(url: string, who: keyof typeof SIGN_INS | string): Promise<Client> {
+export async function signInAs(
+	url: string,
+	who: keyof typeof SIGN_INS | string,
+	password = PASSWORD
+): Promise<Client> {
 	const email = who in SIGN_INS ? SIGN_INS[who as keyof typeof SIGN_INS] : who;
-	const answer = await new Client(url, null).post('/api/session', { email, password: PASSWORD });
+	const answer = await new Client(url, null).post('/api/session', { email, password });
 	if (answer.status !== 200) {
 		throw new Error(`${email} could not sign in: ${answer.status} ${answer.text}`);
 	}
