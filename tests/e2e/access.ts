@@ -20,6 +20,7 @@ export async function barriers(page: Page, { page: name }: VisitedPage): Promise
 	const note = noteIn(found);
 	note('too small', await smallTargets(page, FOR_FINGERS.includes(name) ? FINGER : POINTER));
 	note('moves', await moving(page));
+	note('out of sight', await placeOutOfSight(page));
 	note('on a phone', await lostFocus(page));
 	await page.setViewportSize(NARROW);
 	note('at 320 px', await spoilt(page));
@@ -38,6 +39,18 @@ export async function barriersAtDesk(page: Page): Promise<string[]> {
 	const found = await byDayAndNight(page);
 	noteIn(found)('too small', await smallTargets(page, POINTER));
 	return found;
+}
+
+/** The place that one is in, where a list of places that is wider than the phone does not show it. */
+function placeOutOfSight(page: Page): Promise<string[]> {
+	return page.locator('[aria-current=page]').evaluateAll((places) =>
+		places
+			.filter((each) => {
+				const { left, right } = each.getBoundingClientRect();
+				return each.checkVisibility() && (left < 0 || right > innerWidth);
+			})
+			.map((each) => each.textContent.trim())
+	);
 }
 
 async function byDayAndNight(page: Page): Promise<string[]> {

@@ -77,8 +77,9 @@ async function fall(page: Page): Promise<void> {
 	await type('Pulse', '76');
 	await page.getByRole('tab', { name: /After/ }).click();
 	await type('Systolic', '108');
+	await page.getByText('Stop. Sit the patient down.').first().waitFor();
+	// Below the bars, which keep their room: the figure, what it fell from, and the rule.
 	await page
-		.getByText('Stop. Sit the patient down.')
-		.first()
-		.evaluate((stop) => stop.scrollIntoView({ block: 'center' }));
+		.getByRole('textbox', { name: /^Systolic/ })
+		.evaluate((field) => field.scrollIntoView({ block: 'start' }));
 }
