@@ -30,3 +30,7 @@ export type LaneSizeName = keyof typeof LANE_SIZES;
 
 /** What the stairs need beyond the last mark, in px. */
 export const beyond = ({ stair }: LaneSize): number => 6 + stair[0] * 4 + 2;
+
+/** What a part of a lane is called on a page where it is drawn once for all lanes. */
+export const modelOf = (part: 'corridor' | 'rope', size: LaneSizeName, level: number): string =>
+	`lane-${part}-${size}-${level}`;
