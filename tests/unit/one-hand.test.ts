@@ -368,7 +368,9 @@ describe('icons', () => {
 		'src/lib/components/clock/ChainRope.svelte': 'the rope that a call goes along',
 		'src/lib/components/shell/Connection.svelte': 'a strand, whole or parted',
 		'src/lib/components/ui/GradeShape.svelte': 'the shapes of urgency',
-		'src/lib/components/lane/Lane.svelte': 'the corridor, its marks and stairs'
+		'src/lib/components/lane/Lane.svelte': 'the corridor and what hangs in it',
+		'src/lib/components/lane/LaneModels.svelte': 'the same for all who are at one level',
+		'src/lib/components/lane/LaneRope.svelte': 'the rope, laid to a level'
 	};
 
 	it('are not drawn by hand', () => {
