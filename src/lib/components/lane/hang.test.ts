@@ -14,19 +14,40 @@ describe('hang', () => {
 		expect(Math.min(...hung.map(({ x }) => x))).toBeGreaterThan(10);
 	});
 
-	it('lets no strand cross the words of another: later ends hang further back and lower', () => {
+	it('hangs the first one where the rope ends', () => {
+		expect(hang(words(1), room(240))[0]?.d).toMatch(/^M225 /);
+		expect(hang(words(1, 0), room(34))[0]?.d).toMatch(/^M19 /);
+	});
+
+	it('with room on the right lets later ends hang further back and lower, across no words', () => {
 		const [first, second, third] = hang(words(3), room(240));
+		expect(first?.anchor).toBe('start');
 		expect(first?.x).toBeGreaterThan(second?.x ?? 0);
 		expect(second?.x).toBeGreaterThan(third?.x ?? 0);
 		expect(second?.y).toBeGreaterThan(first?.y ?? 0);
 		expect(third?.y).toBeGreaterThan(second?.y ?? 0);
 	});
 
-	it.each([20, 40, 50])('words of %i letters end before the lane does', (letters) => {
-		for (const { x } of hang(words(3, letters), room(312, 362))) {
-			expect(x + letters * 6.1).toBeLessThan(362);
-		}
+	it('without it puts words on the left, and later ends further along', () => {
+		const [first, second, third] = hang(words(3), room(312, 362));
+		expect(first?.anchor).toBe('end');
+		expect(first?.x).toBeLessThan(second?.x ?? 0);
+		expect(second?.x).toBeLessThan(third?.x ?? 0);
+		expect(second?.y).toBeGreaterThan(first?.y ?? 0);
+		expect(third?.d).toMatch(/^M297 /);
 	});
+
+	it.each([20, 40, 50])(
+		'words of %i letters stand within the lane, as long as it has the room',
+		(letters) => {
+			for (const laid of [52, 104, 156, 208, 260, 312]) {
+				for (const { x, anchor } of hang(words(3, letters), room(laid, 362))) {
+					const [from, to] = anchor === 'start' ? [x, x + letters * 6.1] : [x - letters * 6.1, x];
+					expect([from >= 0, to < 362]).toEqual([true, true]);
+				}
+			}
+		}
+	);
 
 	it('whose words stand elsewhere all end at one height', () => {
 		expect(new Set(hang(words(3, 0), room(240)).map(({ y }) => y)).size).toBe(1);

@@ -1,8 +1,8 @@
 import type { LooseEnd } from '$lib/domain/loose-ends/loose-ends';
 import { rolesAsked } from '$lib/domain/loose-ends/owed-by';
 import type { Service } from '$lib/domain/core/codes';
-import { MINUTE } from '$lib/domain/core/time';
-import { ago, DEFAULT_LOCALE, due, duration, when, type Reader } from '$lib/format';
+import { localDateOf, MINUTE } from '$lib/domain/core/time';
+import { ago, DEFAULT_LOCALE, due, duration, shortDay, when, type Reader } from '$lib/format';
 import { PRIORITY_WORDS, SERVICE_WORDS } from '$lib/i18n/labels';
 import { m } from '$lib/i18n/paraglide/messages';
 import { ROLE_WORDS } from '../shell/role-words';
@@ -71,7 +71,9 @@ export function askerWords(end: LooseEnd, reader: Reader): string {
 		case 'message-failed':
 			return MESSAGES[end.code ?? '']?.() ?? '';
 		case 'precautions-due':
-			return m.home_asker_precautions_due({ day: when(Date.parse(end.since), reader) });
+			return m.home_asker_precautions_due({
+				day: shortDay(localDateOf(Date.parse(end.since), reader.zone), reader)
+			});
 		case 'visit-unconfirmed':
 		case 'inbound':
 			return '';

@@ -108,7 +108,7 @@ export const wordActivityForm = z
 	.strictObject({
 		code: z.enum(ACTIVITY_CODES, 'Activity: choose one.'),
 		name: text('Name', 80),
-		needs: lines('First, besides', 0),
+		needs: lines('Also needed first', 0),
 		words: text('Usual dose in words', 200),
 		minutesFrom: end('minutes', 'from'),
 		minutesTo: end('minutes', 'to'),

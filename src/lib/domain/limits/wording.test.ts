@@ -39,7 +39,7 @@ describe('the form of an activity', () => {
 		[{ howTo: `a\n${'a'.repeat(201)}` }, 'How, line 2, has 201 characters, and the limit is 200.'],
 		[{ name: 'a'.repeat(81) }, 'Name has 81 characters, and the limit is 80.'],
 		[{ name: ' ' }, 'Name is empty.'],
-		[{ needs: 'a\n'.repeat(9) }, 'First, besides has 9 lines, and the limit is 8.'],
+		[{ needs: 'a\n'.repeat(9) }, 'Also needed first has 9 lines, and the limit is 8.'],
 		[{ agreedBy: '' }, 'Clinical lead is empty.']
 	])('refuses %j once, by the words of its labels', (change, message) => {
 		const found = wordActivityForm.safeParse({ code: 'hall-walk', ...fields, ...AGREED, ...change });

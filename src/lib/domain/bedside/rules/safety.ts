@@ -91,7 +91,7 @@ export const betaBlockerUnknown: Rule = {
 		if (context.betaBlocked !== null) {
 			return [];
 		}
-		const reason = 'It is not known whether the patient takes a rate-slowing drug: judged as if so.';
+		const reason = 'Whether the patient takes a rate-slowing drug is not said today: judged as if so.';
 		return [withoutLimit('beta-blocker-unknown', 'note', stage, null, reason, cite('rate-slowing'))];
 	},
 	lacks: () => false

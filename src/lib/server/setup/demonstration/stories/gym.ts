@@ -45,7 +45,7 @@ export function thorne(t: Telling): void {
 		askClearance(as, id, {
 			kind: 'treadmill',
 			question: 'Four weeks, steady on the bicycle at exertion 12. May she walk on the treadmill?',
-			proposed: { text: 'Level, up to 2.5 km/h' }
+			proposed: { text: 'Flat, up to 2.5 km/h' }
 		})
 	);
 }
