@@ -3,9 +3,11 @@ import type { Page } from '@playwright/test';
 /**
  * Goes once through the page with the tabulator key and says where the focus cannot be seen: something that stays in
  * view lies over it, it is out of the screen, or nothing marks it. Looked at in the page itself before each further
- * press, so that a hundred presses cost no more than their drawing.
+ * press, so that a hundred presses cost no more than their drawing. It begins with nothing focused: what was focused
+ * before a window became wider may lie anywhere since, and no key has led there.
  */
 export async function lostFocus(page: Page): Promise<string[]> {
+	await page.evaluate(() => document.activeElement instanceof HTMLElement && document.activeElement.blur());
 	const stops = await page.evaluate(watchFocus);
 	await Promise.all(Array.from({ length: stops + 3 }, () => page.keyboard.press('Tab')));
 	return page.evaluate(() => {
@@ -15,9 +17,21 @@ export async function lostFocus(page: Page): Promise<string[]> {
 	});
 }
 
+/** The same about what has the focus now; it is on nothing where a deed has taken its own button away. */
+export async function lostNow(page: Page): Promise<string[]> {
+	await page.evaluate(watchFocus);
+	return page.evaluate(() => {
+		const { faults, reached, look, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
+		end();
+		look();
+		return reached.size === 0 ? ['nothing takes the focus'] : faults;
+	});
+}
+
 interface FocusWatch {
 	faults: string[];
 	reached: Set<Element>;
+	look: () => void;
 	end: () => void;
 }
 
@@ -41,8 +55,12 @@ function watchFocus(): number {
 		const { outlineStyle, outlineWidth } = getComputedStyle(each);
 		return outlineStyle !== 'none' && parseFloat(outlineWidth) >= 2;
 	};
-	/** The ring may be around the label that the control covers, or be a part of the drawing that is focused. */
+	/**
+	 * The ring may be around the label that the control covers, or be a part of the drawing that is focused. Words that
+	 * were led to, to be read on from, are no control and need none.
+	 */
 	const hasMark = (each: Element) =>
+		each.matches('[tabindex="-1"]') ||
 		[each, each.closest('label') ?? each].some(marked) ||
 		[...each.querySelectorAll('.halo')].some((halo) => getComputedStyle(halo).stroke !== 'none');
 	/** What lies over that box: its part on the screen, and what stays in view in front of it. */
@@ -68,6 +86,7 @@ function watchFocus(): number {
 	const watch: FocusWatch = {
 		faults: [],
 		reached: new Set(),
+		look,
 		end: () => removeEventListener('keydown', look, true)
 	};
 	function look() {
