@@ -8,7 +8,7 @@ import type { Page } from '@playwright/test';
  */
 export async function lostFocus(page: Page): Promise<string[]> {
 	await page.evaluate(() => document.activeElement instanceof HTMLElement && document.activeElement.blur());
-	const stops = await page.evaluate(watchFocus);
+	const { stops } = await page.evaluate(watchFocus, 'later' as const);
 	await Promise.all(Array.from({ length: stops + 3 }, () => page.keyboard.press('Tab')));
 	return page.evaluate(() => {
 		const { faults, reached, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
@@ -19,24 +19,22 @@ export async function lostFocus(page: Page): Promise<string[]> {
 
 /** The same about what has the focus now; it is on nothing where a deed has taken its own button away. */
 export async function lostNow(page: Page): Promise<string[]> {
-	await page.evaluate(watchFocus);
-	return page.evaluate(() => {
-		const { faults, reached, look, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
-		end();
-		look();
-		return reached.size === 0 ? ['nothing takes the focus'] : faults;
-	});
+	const { faults, reached } = await page.evaluate(watchFocus, 'now' as const);
+	return reached === 0 ? ['nothing takes the focus'] : faults;
 }
 
 interface FocusWatch {
 	faults: string[];
 	reached: Set<Element>;
-	look: () => void;
 	end: () => void;
 }
 
-/** Runs in the page. Answers how often the key has to be pressed at most. */
-function watchFocus(): number {
+/**
+ * Runs in the page.
+ * @param when looks at what has the focus now, or `later` at each further press of a key
+ * @returns how often the key has to be pressed at most, and what was found now
+ */
+function watchFocus(when: 'now' | 'later') {
 	const all = 'a[href], button, input:not([type=hidden]), select, textarea, summary, [tabindex="0"]';
 	const stops = [...document.querySelectorAll<HTMLElement>(all)].filter(
 		(each) => each.tabIndex >= 0 && !each.matches(':disabled') && each.checkVisibility()
@@ -86,7 +84,6 @@ function watchFocus(): number {
 	const watch: FocusWatch = {
 		faults: [],
 		reached: new Set(),
-		look,
 		end: () => removeEventListener('keydown', look, true)
 	};
 	function look() {
@@ -99,7 +96,11 @@ function watchFocus(): number {
 		const faults = [cover, hasMark(each) ? null : 'has no mark of the focus'];
 		watch.faults.push(...faults.flatMap((fault) => (fault ? [`${nameOf(each)} ${fault}`] : [])));
 	}
-	Object.assign(window, { focusWatch: watch });
-	addEventListener('keydown', look, true);
-	return stops.length;
+	if (when === 'now') {
+		look();
+	} else {
+		Object.assign(window, { focusWatch: watch });
+		addEventListener('keydown', look, true);
+	}
+	return { stops: stops.length, faults: watch.faults, reached: watch.reached.size };
 }
