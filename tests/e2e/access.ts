@@ -9,7 +9,8 @@ import { enlarge, spoilt } from './room';
 import { FINGER, POINTER, smallTargets } from './targets';
 
 const NARROW = { width: 320, height: 568 };
-const WIDE = { width: 1280, height: 800 };
+/** A small desk, or a tablet that lies on its side. */
+export const WIDE = { width: 1280, height: 800 };
 
 /** Pages of hands that are full, wet or in a hurry: every control on them is as large as a finger. */
 const FOR_FINGERS = ['/bedside/[episodeId]', '/t/[token]', '/p/[token]', '/loose-ends', '/ward'];

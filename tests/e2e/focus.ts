@@ -3,10 +3,12 @@ import type { Page } from '@playwright/test';
 /**
  * Goes once through the page with the tabulator key and says where the focus cannot be seen: something that stays in
  * view lies over it, it is out of the screen, or nothing marks it. Looked at in the page itself before each further
- * press, so that a hundred presses cost no more than their drawing.
+ * press, so that a hundred presses cost no more than their drawing. It begins with nothing focused: what was focused
+ * before a window became wider may lie anywhere since, and no key has led there.
  */
 export async function lostFocus(page: Page): Promise<string[]> {
-	const stops = await page.evaluate(watchFocus);
+	await page.evaluate(() => document.activeElement instanceof HTMLElement && document.activeElement.blur());
+	const { stops } = await page.evaluate(watchFocus, 'later' as const);
 	await Promise.all(Array.from({ length: stops + 3 }, () => page.keyboard.press('Tab')));
 	return page.evaluate(() => {
 		const { faults, reached, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
@@ -15,14 +17,24 @@ export async function lostFocus(page: Page): Promise<string[]> {
 	});
 }
 
+/** The same about what has the focus now; it is on nothing where a deed has taken its own button away. */
+export async function lostNow(page: Page): Promise<string[]> {
+	const { faults, reached } = await page.evaluate(watchFocus, 'now' as const);
+	return reached === 0 ? ['nothing takes the focus'] : faults;
+}
+
 interface FocusWatch {
 	faults: string[];
 	reached: Set<Element>;
 	end: () => void;
 }
 
-/** Runs in the page. Answers how often the key has to be pressed at most. */
-function watchFocus(): number {
+/**
+ * Runs in the page.
+ * @param when looks at what has the focus now, or `later` at each further press of a key
+ * @returns how often the key has to be pressed at most, and what was found now
+ */
+function watchFocus(when: 'now' | 'later') {
 	const all = 'a[href], button, input:not([type=hidden]), select, textarea, summary, [tabindex="0"]';
 	const stops = [...document.querySelectorAll<HTMLElement>(all)].filter(
 		(each) => each.tabIndex >= 0 && !each.matches(':disabled') && each.checkVisibility()
@@ -41,8 +53,12 @@ function watchFocus(): number {
 		const { outlineStyle, outlineWidth } = getComputedStyle(each);
 		return outlineStyle !== 'none' && parseFloat(outlineWidth) >= 2;
 	};
-	/** The ring may be around the label that the control covers, or be a part of the drawing that is focused. */
+	/**
+	 * The ring may be around the label that the control covers, or be a part of the drawing that is focused. Words that
+	 * were led to, to be read on from, are no control and need none.
+	 */
 	const hasMark = (each: Element) =>
+		each.matches('[tabindex="-1"]') ||
 		[each, each.closest('label') ?? each].some(marked) ||
 		[...each.querySelectorAll('.halo')].some((halo) => getComputedStyle(halo).stroke !== 'none');
 	/** What lies over that box: its part on the screen, and what stays in view in front of it. */
@@ -80,7 +96,11 @@ function watchFocus(): number {
 		const faults = [cover, hasMark(each) ? null : 'has no mark of the focus'];
 		watch.faults.push(...faults.flatMap((fault) => (fault ? [`${nameOf(each)} ${fault}`] : [])));
 	}
-	Object.assign(window, { focusWatch: watch });
-	addEventListener('keydown', look, true);
-	return stops.length;
+	if (when === 'now') {
+		look();
+	} else {
+		Object.assign(window, { focusWatch: watch });
+		addEventListener('keydown', look, true);
+	}
+	return { stops: stops.length, faults: watch.faults, reached: watch.reached.size };
 }

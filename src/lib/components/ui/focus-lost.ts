@@ -8,3 +8,8 @@ export function catchFocus(outcome: HTMLElement | null): void {
 		outcome?.focus({ preventScroll: true });
 	}
 }
+
+/** As `catchFocus`, for what closes over the page: once it is gone, and what it was opened from may be gone with it. */
+export function catchFocusAfter(landing: string): void {
+	setTimeout(() => catchFocus(document.getElementById(landing)));
+}
