@@ -99,6 +99,22 @@ test('without script: a line is noted in and out', async ({ browser }) => {
 	await expect(drain).toBeVisible();
 });
 
+test('without script: what is wrong behind a fold is seen when the page comes back, and stays as typed', async ({
+	browser
+}) => {
+	const page = await pageOf(browser, 'nurse', { javaScriptEnabled: false, viewport: PHONE });
+	await page.goto(`/patients/${episodeId}`);
+	await page.getByText('Note a line in, or the oxygen').click();
+	const oxygen = page.getByRole('textbox', { name: /^Oxygen/ });
+	await oxygen.fill('a little');
+	await page.getByRole('button', { name: 'Note the oxygen' }).click();
+	await expect(oxygen).toBeVisible();
+	await expect(oxygen).toHaveAttribute('aria-invalid', 'true');
+	await expect(oxygen).toHaveValue('a little');
+	await expect(page.getByRole('button', { name: 'Note it' })).toBeHidden();
+	expect((await board()).oxygen).toBeNull();
+});
+
 test('noting a line leaves what is half typed beside it', async ({ browser }) => {
 	const page = await pageOf(browser, 'nurse');
 	await page.goto(`/patients/${episodeId}`);
