@@ -78,6 +78,69 @@ test('without script: refer, accept, talk, ask, decide, and see who was faster',
 	await expect(physician.getByText('with two helpers', { exact: true })).toBeVisible();
 });
 
+/** What the server has of this patient's board. */
+const board = async () => (await (await as('nurse')).get(`/api/episodes/${episodeId}`)).body;
+
+test('without script: a line is noted in and out', async ({ browser }) => {
+	const page = await pageOf(browser, 'nurse', { javaScriptEnabled: false, viewport: PHONE });
+	await page.goto(`/patients/${episodeId}`);
+	await page.getByText('Note a line in, or the oxygen').click();
+	await page.getByRole('button', { name: 'chest drain' }).click();
+	const drain = page.getByRole('listitem').filter({ hasText: 'chest drain' });
+	const out = drain.getByRole('button', { name: 'Out: chest drain' });
+	await expect(out).toBeVisible();
+	await expect(page).toHaveURL(new RegExp(`/patients/${episodeId}$`));
+	expect((await board()).lines).toEqual(['chest-drain']);
+
+	await out.click();
+	await expect(out).toHaveCount(0);
+	expect((await board()).lines).toEqual([]);
+	await page.getByText('Out earlier').click();
+	await expect(drain).toBeVisible();
+});
+
+test('without script: what is wrong behind a fold is seen when the page comes back, and stays as typed', async ({
+	browser
+}) => {
+	const page = await pageOf(browser, 'nurse', { javaScriptEnabled: false, viewport: PHONE });
+	await page.goto(`/patients/${episodeId}`);
+	await page.getByText('Note a line in, or the oxygen').click();
+	const oxygen = page.getByRole('textbox', { name: /^Oxygen/ });
+	await oxygen.fill('a little');
+	await page.getByRole('button', { name: 'Note the oxygen' }).click();
+	await expect(oxygen).toBeVisible();
+	await expect(oxygen).toHaveAttribute('aria-invalid', 'true');
+	await expect(oxygen).toHaveValue('a little');
+	await expect(page.getByRole('button', { name: 'Note it' })).toBeHidden();
+	expect((await board()).oxygen).toBeNull();
+});
+
+test('noting a line leaves what is half typed beside it', async ({ browser }) => {
+	const page = await pageOf(browser, 'nurse');
+	await page.goto(`/patients/${episodeId}`);
+	await expectConnected(page);
+	await page.getByText('Note wound and breastbone').click();
+	await page.getByText('Note a line in, or the oxygen').click();
+	const [wound, oxygen] = [page.getByLabel('In words'), page.getByRole('textbox', { name: /^Oxygen/ })];
+	await wound.fill('Half a senten');
+	await oxygen.fill('2.5');
+	await page.getByRole('button', { name: 'pacing wires' }).click();
+	const out = page.getByRole('button', { name: 'Out: pacing wires' });
+	await expect(out).toBeVisible();
+	await out.click();
+	await expect(page.getByText('Out earlier')).toBeVisible();
+	await expect(wound).toHaveValue('Half a senten');
+	await expect(oxygen).toHaveValue('2.5');
+
+	await page.getByRole('button', { name: 'Note the oxygen' }).click();
+	await expect(page.getByRole('listitem').filter({ hasText: 'oxygen 2.5 L/min' })).toBeVisible();
+	await expect(wound).toHaveValue('Half a senten');
+	await oxygen.fill('3');
+	await page.getByRole('button', { name: 'Note it' }).click();
+	await expect(page.getByRole('listitem').filter({ hasText: 'Half a senten' })).toBeVisible();
+	await expect(oxygen).toHaveValue('3');
+});
+
 test('what is typed into a thread survives a reload, and what went out without an answer is not posted twice', async ({
 	browser
 }) => {

@@ -1,6 +1,7 @@
 import { fromStore } from 'svelte/store';
 import { superForm, type FormOptions, type SuperForm, type SuperValidated } from 'sveltekit-superforms';
 import { routes } from '$lib/routes';
+import { refusedForm } from './came-back';
 import { earlyCheck, type SchemaSource } from './early-check';
 import { outcomeOf, type Outcome } from './outcome';
 
@@ -43,7 +44,7 @@ export function formState<T extends Record<string, unknown>>(
 	const check = schema && earlyCheck<T>(schema);
 	let outcome = $state<Outcome | null>(null);
 	// A page that comes back without script already says how the form ended.
-	let valid = $state('enhance' in source || !source.posted || source.valid);
+	let valid = $state('enhance' in source || refusedForm(source.id) === null);
 	// Checked when it is sent and not at every step: an error that appeared on leaving a field would push the button
 	// away from under the finger.
 	const checked = check && ({ validators: check.validators, validationMethod: 'submit-only' } as const);
