@@ -32,6 +32,8 @@ export const API: Record<string, Row> = {
 	'PUT /api/demo/clock': { roles: 'everyone', answers: [422] },
 	'POST /api/hooks/sms': { roles: 'everyone', answers: [403] },
 	'POST /api/hooks/sms-status': { roles: 'everyone', answers: [403] },
+	'POST /api/hooks/voice': { roles: 'everyone', answers: [403] },
+	'POST /api/hooks/voice-status': { roles: 'everyone', answers: [403] },
 	'GET /api/delivery': { roles: 'signed-in', answers: [200] },
 	'GET /api/loose-ends': { roles: SEEING, answers: [200] },
 	'GET /api/episodes': { roles: SEEING, answers: [200] },

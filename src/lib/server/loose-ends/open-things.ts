@@ -207,7 +207,8 @@ const visitsCancelled = sql`
 
 /**
  * A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. News of a change
- * are told apart by whether the patient has heard of it in any way: `visitsUntold()`.
+ * are told apart by whether the patient has heard of it in any way: `visitsUntold()`. A telephone rings only where a
+ * text failed or may have: that text stands here, the ringing not beside it.
  */
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
@@ -219,7 +220,8 @@ const messagesFailed = sql`
 	join place on place.id = coalesce(
 		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end
 	)
-	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null
+	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.channel <> 'voice'
+		and m.handled_at is null
 		and not ${IS_NEWS_OF_CHANGE}`;
 
 /** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */

@@ -1,4 +1,5 @@
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import { MESSAGE_CHANNELS } from '../../../domain/messages/channels';
 import { users } from './accounts';
 import { id, instant } from './columns';
 import { patients } from './episodes';
@@ -23,7 +24,7 @@ export const outbox = sqliteTable(
 	{
 		id: id(),
 		kind: text('kind', { enum: MESSAGE_KINDS }).notNull(),
-		channel: text('channel', { enum: ['sms', 'mail'] }).notNull(),
+		channel: text('channel', { enum: MESSAGE_CHANNELS }).notNull(),
 		causeKey: text('cause_key').notNull().unique(),
 		/** Staff or patient; the address is looked up again at the moment of sending. */
 		userId: text('user_id').references(() => users.id),
