@@ -1,5 +1,5 @@
 import type { PatientLine } from '../episodes/views';
-import type { MessageChannel } from './channels';
+import type { MessageChannel } from './codes';
 
 /** Somebody who is to be called, because a text did not do it. */
 export interface Reachable {

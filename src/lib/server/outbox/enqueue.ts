@@ -1,4 +1,4 @@
-import type { MessageChannel } from '$lib/domain/messages/channels';
+import type { MessageChannel } from '$lib/domain/messages/codes';
 import type { Tx } from '../db';
 import { outbox } from '../db/schema';
 import { newId } from '../ids';

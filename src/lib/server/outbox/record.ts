@@ -1,9 +1,9 @@
-import { and, asc, eq, inArray, isNull, ne } from 'drizzle-orm';
+import { and, asc, count, eq, gte, inArray, isNull, max, min, ne } from 'drizzle-orm';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { Outcome } from '$lib/domain/messages/outcome';
 import { appendAudit } from '../audit/append';
 import { db, type Tx } from '../db';
-import { outbox, outboxAttempts, patients } from '../db/schema';
+import { outbox, outboxAttempts, outboxResends, patients } from '../db/schema';
 import { seekOtherWay } from '../escalations/next-channel';
 import { newId } from '../ids';
 import { stateByStatus } from '../messages/delivery';
@@ -41,15 +41,10 @@ export async function recordAttempt(
 ): Promise<void> {
 	await changing(attempt.endedAt, async (tx, events) => {
 		const number = await addAttempt(tx, row, attempt);
-		const [first] = await tx
-			.select({ at: outboxAttempts.startedAt })
-			.from(outboxAttempts)
-			.where(eq(outboxAttempts.messageId, row.id))
-			.orderBy(asc(outboxAttempts.number))
-			.limit(1);
+		const since = await startOfSchedule(tx, row.id);
 		const next = nextState(row, attempt.outcome, {
-			attempts: number,
-			firstAt: first?.at ?? attempt.startedAt,
+			attempts: since.attempts,
+			firstAt: since.firstAt ?? attempt.startedAt,
 			now: attempt.endedAt,
 			random
 		});
@@ -69,6 +64,22 @@ export async function recordAttempt(
 			await seekOtherWay(tx, row, 'unknown', attempt.endedAt);
 		}
 	});
+}
+
+/** How many attempts count, and when the first of them began: those since a person last had it sent again. */
+async function startOfSchedule(
+	tx: Tx,
+	messageId: string
+): Promise<{ attempts: number; firstAt: number | null }> {
+	const [resent] = await tx
+		.select({ at: max(outboxResends.at) })
+		.from(outboxResends)
+		.where(eq(outboxResends.messageId, messageId));
+	const [counted] = await tx
+		.select({ attempts: count(), firstAt: min(outboxAttempts.startedAt) })
+		.from(outboxAttempts)
+		.where(and(eq(outboxAttempts.messageId, messageId), gte(outboxAttempts.startedAt, resent?.at ?? 0)));
+	return counted ?? { attempts: 0, firstAt: null };
 }
 
 /** The attempt of a worker that never told how it ended: nobody knows whether it went through. */

@@ -1,4 +1,4 @@
-import { MESSAGE_CHANNELS, type MessageChannel } from '$lib/domain/messages/channels';
+import { MESSAGE_CHANNELS, type MessageChannel } from '$lib/domain/messages/codes';
 import type { Outcome } from '$lib/domain/messages/outcome';
 
 /** A message as it goes out: the address as it is now, the link filled in. */
