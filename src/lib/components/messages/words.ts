@@ -1,5 +1,6 @@
 import type { MessageCause, MessageChannel, MessageKind, MessageState } from '$lib/domain/messages/codes';
 import type { LogEvent, LogReceiver } from '$lib/domain/messages/log';
+import type { MailFact } from '$lib/domain/messages/mail-contents';
 import type { MessageLanguage } from '$lib/domain/messages/templates/wording';
 import { m } from '$lib/i18n/paraglide/messages';
 import { ROLE_WORDS } from '../shell/role-words';
@@ -46,6 +47,16 @@ export const CAUSE_WORDS: Record<MessageCause, () => string> = {
 export const LANGUAGE_WORDS: Record<MessageLanguage, () => string> = {
 	en: m.log_language_en,
 	es: m.log_language_es
+};
+
+export const FACT_WORDS: Record<MailFact, () => string> = {
+	sender: m.log_tells_sender,
+	phone: m.log_tells_phone,
+	time: m.log_tells_time,
+	place: m.log_tells_place,
+	minutes: m.log_tells_minutes,
+	count: m.log_tells_count,
+	link: m.log_tells_link
 };
 
 const OUTCOME_WORDS: Record<string, () => string> = {

@@ -26,9 +26,10 @@ describe('the previews', () => {
 
 	it.each(previews.map((preview) => [preview.channel, preview.name, preview.language, preview] as const))(
 		'%s %s in %s is filled in, and fits',
-		(_channel, _name, _language, { text, subject, length, channel, denied }) => {
+		(_channel, _name, _language, { text, subject, length, channel, denied, tells }) => {
 			expect(`${subject} ${text}`).not.toMatch(/undefined|NaN|\[object/);
 			expect(subject !== null).toBe(channel === 'mail');
+			expect(tells !== null && tells !== undefined).toBe(channel === 'mail');
 			expect(length?.segments ?? null).toBe(channel === 'sms' ? 1 : null);
 			expect(denied).toEqual([]);
 		}

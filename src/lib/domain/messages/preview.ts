@@ -1,7 +1,15 @@
 /** Every template filled with an invented visit and an invented call: what people get, word for word. */
 import { deniedWords } from './deny-list';
+import { MAIL_TELLS, type MailFact } from './mail-contents';
 import { measureSms, type SmsLength } from './sms-length';
-import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_SMS } from './templates';
+import {
+	PATIENT_MAILS,
+	PATIENT_SMS,
+	STAFF_CALLS,
+	STAFF_MAILS,
+	STAFF_SMS,
+	type MailTemplate
+} from './templates';
 import type { MailText } from './templates/mail';
 import type { MessageChannel } from './codes';
 import type { MessageLanguage } from './templates/wording';
@@ -15,6 +23,8 @@ export interface TemplatePreview {
 	readonly text: string;
 	/** Of a text message alone. */
 	readonly length: SmsLength | null;
+	/** Of a mail alone: what it may tell beside words that are the same for everybody. */
+	readonly tells: readonly MailFact[] | null;
 	/** Words that may not leave, should any be in it after all. */
 	readonly denied: readonly string[];
 }
@@ -69,26 +79,27 @@ function textsOf(wordings: object, about: About, fields: object): TemplatePrevie
 	return each(wordings as Wordings<string>, (write) => {
 		const text = write(fields);
 		const length = about.channel === 'sms' ? measureSms(text) : null;
-		return { ...about, subject: null, text, length, denied: deniedWords(text) };
+		return { ...about, subject: null, text, length, tells: null, denied: deniedWords(text) };
 	});
 }
 
 function mailsOf(wordings: object, about: About, fields: object): TemplatePreview[] {
-	return each(wordings as Wordings<MailText>, (write) => {
+	return each(wordings as Wordings<MailText>, (write, name) => {
 		const { subject, text } = write(fields);
-		return { ...about, subject, text, length: null, denied: deniedWords(`${subject} ${text}`) };
+		const tells = MAIL_TELLS[name as MailTemplate];
+		return { ...about, subject, text, length: null, tells, denied: deniedWords(`${subject} ${text}`) };
 	});
 }
 
 function each<T>(
 	wordings: Wordings<T>,
-	preview: (write: Write<T>) => Omit<TemplatePreview, 'name' | 'language'>
+	preview: (write: Write<T>, name: string) => Omit<TemplatePreview, 'name' | 'language'>
 ): TemplatePreview[] {
 	return Object.entries(wordings).flatMap(([name, byLanguage]) =>
 		Object.entries(byLanguage).map(([language, write]) => ({
 			name,
 			language: language as MessageLanguage,
-			...preview(write)
+			...preview(write, name)
 		}))
 	);
 }
