@@ -40,6 +40,10 @@ export const routes = {
 	adminActivities: (unitId: string, code: string) =>
 		`/admin/limits/activities?unit=${unitId}&activity=${code}`,
 	adminLimits: (unitId?: string) => (unitId ? `/admin/limits?unit=${unitId}` : '/admin/limits'),
+	adminMessages: (query = '') => `/admin/messages${query}`,
+	adminMessage: (id: string) => `/admin/messages/${id}`,
+	adminTemplates: () => '/admin/messages/templates',
+	messagesExport: (query = '') => `/api/messages/export${query}`,
 	adminAccounts: () => '/admin/accounts',
 	adminAccount: (id: string) => `/admin/accounts/${id}`,
 	phones: () => '/phones',

@@ -2,8 +2,10 @@
  * Kill the server with SIGKILL at random moments while four writers post, start it again, and look: nothing that
  * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds,
  * of twenty starts all but one. Then the same in the middle of calls for help: none lost, none with two holders, and
- * every untaken one goes on.
- * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run.
+ * every untaken one goes on. Before both it is killed again and again while it sends messages: each arrives, and twice
+ * only where nobody could know.
+ * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run, and
+ * `--only messages` does the messages alone.
  */
 import { setTimeout as pause } from 'node:timers/promises';
 import { admit, signInAs, type Client } from '../support/api';
@@ -11,6 +13,7 @@ import { startProduct, type Product } from '../support/server';
 import { checkEntries, checkFile } from './checks';
 import { checkCalls } from './escalation-checks';
 import { callThroughKill, type Call, type Crew, type Taker } from './escalations';
+import { sendThroughKills } from './messages';
 import { postUntil, send, type Write } from './writers';
 
 const READY_MS = 3_000;
@@ -20,6 +23,8 @@ const SHORT_ROUNDS = 5;
 const LONG_ROUNDS = 60;
 const SHORT_CALLS = 4;
 const LONG_CALLS = 100;
+const SHORT_MESSAGES = 100;
+const LONG_MESSAGES = 2_000;
 const WRITERS = ['surgeon', 'nurse', 'therapist', 'physician'] as const;
 
 const argument = (name: string) => {
@@ -28,6 +33,8 @@ const argument = (name: string) => {
 };
 const rounds = process.argv.includes('--short') ? SHORT_ROUNDS : LONG_ROUNDS;
 const callCount = process.argv.includes('--short') ? SHORT_CALLS : LONG_CALLS;
+const messageCount = process.argv.includes('--short') ? SHORT_MESSAGES : LONG_MESSAGES;
+const only = argument('--only');
 const seed = Number(argument('--seed') ?? Date.now() % 1_000_000);
 const random = mulberry32(seed);
 
@@ -133,10 +140,22 @@ async function killCalls(
 	);
 }
 
+/** Kill the server again and again until many messages have left. */
+async function killSendings(product: Product): Promise<void> {
+	const admin = await signInAs(product.url, 'admin');
+	const { wrong, kills, twice } = await sendThroughKills(product, admin, messageCount, random);
+	check(`${messageCount} messages in ${kills} kills: none lost, ${twice} twice, of unknown end alone`, wrong);
+	await product.restart();
+}
+
 async function main(): Promise<void> {
-	console.log(`crash test: ${rounds} rounds and ${callCount} calls, seed ${seed}`);
+	console.log(`crash test: ${rounds} rounds, ${callCount} calls and ${messageCount} messages, seed ${seed}`);
 	const product = await startProduct({ env: { RATE_LIMIT_SCALE: '1000' } });
 	try {
+		await killSendings(product);
+		if (only === 'messages') {
+			return;
+		}
 		const clients = await Promise.all(WRITERS.map((role) => signInAs(product.url, role)));
 		const threads = [await makeThread(clients[0] as Client), await makeThread(clients[0] as Client)];
 		const writes: Write[] = [];

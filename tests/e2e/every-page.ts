@@ -78,6 +78,7 @@ async function behindTheSignIn(product: Product, now: number): Promise<Known> {
 		'/patients/[id]/clearances/[clearanceId]': `${patient}/clearances/${asked?.id}`,
 		'/bedside/[episodeId]': `/bedside/${asked?.episodeId}`,
 		'/escalations/[id]': `/escalations/${call.id}`,
+		'/admin/messages/[id]': await found(admin, '/admin/messages', /\/admin\/messages\/[\w-]{36}/),
 		'/admin/accounts/[id]': await found(admin, '/admin/accounts', /\/admin\/accounts\/[\w-]{36}/),
 		'/loose-ends/[what]/[id]': [await strayText(product), await untoldVisit(product, now)]
 	};

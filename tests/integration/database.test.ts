@@ -101,6 +101,7 @@ describe('append-only tables', () => {
 		'level_decisions',
 		'operation_amendments',
 		'outbox_attempts',
+		'outbox_resends',
 		'oxygen_notes',
 		'patient_amendments',
 		'prescribed_ranges',

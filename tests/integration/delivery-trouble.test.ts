@@ -40,7 +40,11 @@ beforeEach(async () => {
 });
 
 const worker = (channels: Partial<Channels> = {}) =>
-	new OutboxWorker({ channels: { sms, mail, ...channels }, now: () => now, random: () => 0.999 });
+	new OutboxWorker({
+		channels: { sms, mail, voice: new ScriptedChannel(), ...channels },
+		now: () => now,
+		random: () => 0.999
+	});
 const life = () => ({ notBefore: now, expiresAt: now + 24 * HOUR });
 const visit = () => addVisit(hospital, { startsAt: now + 48 * HOUR });
 const reminder = async () => addReminder(await visit(), hospital.patient.id, life());
@@ -137,6 +141,19 @@ describe('text messages', () => {
 		await reminder();
 		await worker({ sms: null }).settle();
 		expect(await seenBy('nurse')).toEqual([{ channel: 'sms', since: at(start), waiting: 1 }]);
+	});
+});
+
+describe('telephone calls', () => {
+	it('that cannot be made while texts go out are a trouble of their own', async () => {
+		const started = now;
+		sms.script = [unknown()];
+		await call();
+		await worker({ voice: null }).settle();
+		now += SECOND;
+		await reminder();
+		await worker({ voice: null }).settle();
+		expect(await seenBy('nurse')).toEqual([{ channel: 'voice', since: at(started), waiting: 1 }]);
 	});
 });
 

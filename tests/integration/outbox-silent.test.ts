@@ -54,10 +54,10 @@ describe('asked through the real client', () => {
 		await gateway.fault('sms', 'undelivered', 1);
 		const channel = real();
 		const id = await sent(channel, 'undelivered');
-		const silent = new SilentMessages(channel);
+		const silent = new SilentMessages({ sms: channel, mail: null });
 		expect(await silent.ask(now + SILENT_AFTER_MS - 1)).toBe(0);
 		expect((await rowOf(id)).state).toBe('accepted');
-		expect(await new SilentMessages(channel).ask(now + SILENT_AFTER_MS)).toBe(1);
+		expect(await new SilentMessages({ sms: channel, mail: null }).ask(now + SILENT_AFTER_MS)).toBe(1);
 		expect(await rowOf(id)).toMatchObject({
 			state: 'undelivered',
 			stateReason: 'undelivered, gateway code 30003'
@@ -69,7 +69,7 @@ describe('asked through the real client', () => {
 	it('one that was delivered is delivered', async () => {
 		const channel = real();
 		const id = await sent(channel, 'delivered');
-		await new SilentMessages(channel).ask(now + SILENT_AFTER_MS);
+		await new SilentMessages({ sms: channel, mail: null }).ask(now + SILENT_AFTER_MS);
 		expect((await rowOf(id)).state).toBe('delivered');
 	});
 
@@ -77,7 +77,7 @@ describe('asked through the real client', () => {
 		const channel = real();
 		const id = await sent(channel, 'delivered');
 		await gateway.fault('sms', 'refuse');
-		await new SilentMessages(channel).ask(now + SILENT_AFTER_MS);
+		await new SilentMessages({ sms: channel, mail: null }).ask(now + SILENT_AFTER_MS);
 		expect((await rowOf(id)).state).toBe('accepted');
 	});
 });
@@ -95,7 +95,7 @@ describe('how often', () => {
 		});
 		await reminder();
 		await new OutboxWorker({ channels: { sms: channel, mail: null }, now: () => now }).settle();
-		const silent = new SilentMessages(channel);
+		const silent = new SilentMessages({ sms: channel, mail: null });
 		for (; now < HOSPITAL_NOW + 150 * MINUTE; now += MINUTE / 2) {
 			await silent.ask(now);
 		}
@@ -110,7 +110,7 @@ describe('how often', () => {
 		const id = await reminder();
 		await new OutboxWorker({ channels: { sms: channel, mail: null }, now: () => now }).settle();
 		const before = await db().$count(smsStatuses);
-		await new SilentMessages(channel).ask(now + SILENT_AFTER_MS);
+		await new SilentMessages({ sms: channel, mail: null }).ask(now + SILENT_AFTER_MS);
 		expect(await db().$count(smsStatuses)).toBe(before);
 		expect((await rowOf(id)).state).toBe('accepted');
 	});

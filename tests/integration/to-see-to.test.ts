@@ -75,6 +75,12 @@ describe('a message that did not arrive', () => {
 		expect(await open(hospital.people.coordinator)).toContain(`message-failed ${id}`);
 	});
 
+	it('waits on the coordinator: an answer to a patient’s text, where the text is filed', async () => {
+		const id = await message({ kind: 'answer', refKind: 'inbound', refId: await text(hospital.patient.id) });
+		expect(await open(hospital.people.coordinator)).toContain(`message-failed ${id}`);
+		expect((await getFailedMessage(hospital.people.coordinator, id)).to?.phone).toBe(hospital.patient.phone);
+	});
+
 	it('shows whom to call and what it was to say, without its link', async () => {
 		const id = await message();
 		expect(await getFailedMessage(hospital.people.coordinator, id)).toMatchObject({

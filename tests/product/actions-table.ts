@@ -57,6 +57,7 @@ export const ACTIONS: Record<string, ActionRow> = {
 	'/admin/accounts/[id]?/senior': { fields: { id: 'yes' }, roles: ADMIN },
 	'/admin/accounts/[id]?/disable': { fields: { id: 'none' }, roles: ADMIN },
 	'/admin/accounts/[id]?/enable': { fields: { id: 'none' }, roles: ADMIN },
+	'/admin/messages/[id]?/resend': { fields: WHY, roles: ADMIN },
 	'/admin/limits?/limit': {
 		fields: { set: 'strict', key: 'systolic-ceiling', value: '190', ...AGREED },
 		roles: ADMIN

@@ -66,7 +66,8 @@ const BODIES: Record<string, object> = {
 const ROWS = Object.entries(API)
 	.filter(
 		([handler]) =>
-			handler.includes('[id]') && !handler.includes('/api/units/') && !handler.includes('/api/closed-days/')
+			handler.includes('[id]') &&
+			!['/api/units/', '/api/closed-days/', '/api/messages/'].some((part) => handler.includes(part))
 	)
 	.toSorted(([a], [b]) => Number(a.endsWith('/close')) - Number(b.endsWith('/close')));
 

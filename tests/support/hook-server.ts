@@ -4,6 +4,8 @@ import type { RequestEvent } from '@sveltejs/kit';
 import { sign } from '../../src/fakes/gateway/webhook';
 import { POST as sms } from '../../src/routes/api/hooks/sms/+server';
 import { POST as status } from '../../src/routes/api/hooks/sms-status/+server';
+import { POST as voice } from '../../src/routes/api/hooks/voice/+server';
+import { POST as voiceStatus } from '../../src/routes/api/hooks/voice-status/+server';
 import { HOSPITAL_NOW } from './hospital';
 
 type Handler = (event: RequestEvent) => Response | Promise<Response>;
@@ -18,7 +20,9 @@ export interface HookServer {
 
 const HANDLERS: Record<string, Handler> = {
 	'/api/hooks/sms': sms as Handler,
-	'/api/hooks/sms-status': status as Handler
+	'/api/hooks/sms-status': status as Handler,
+	'/api/hooks/voice': voice as Handler,
+	'/api/hooks/voice-status': voiceStatus as Handler
 };
 
 export async function serveHooks(): Promise<HookServer> {

@@ -34,6 +34,8 @@ const schema = z.object({
 	SMS_FROM: text,
 	SMTP_URL: text,
 	MAIL_FROM: z.string().default('Ropewalk <ropewalk@saltmarsh.example>'),
+	MESSAGE_DAYS: z.coerce.number().int().min(1).default(30),
+	RECEIVED_DAYS: z.coerce.number().int().min(1).default(365),
 	LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info')
 });
 
@@ -77,6 +79,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		mail: mailGateway(e),
 		/** Who mails and calendar files come from, also where no mail server is set up. */
 		mailFrom: e.MAIL_FROM,
+		/** How many days what messages said is kept: ours after their end, those that came in after they came. */
+		retention: { sentDays: e.MESSAGE_DAYS, receivedDays: e.RECEIVED_DAYS },
 		logLevel: e.LOG_LEVEL
 	};
 }

@@ -1,8 +1,8 @@
 import { count, eq } from 'drizzle-orm';
 import { collectDefaultMetrics, Counter, Gauge, Registry } from 'prom-client';
+import { MESSAGE_STATES } from '$lib/domain/messages/codes';
 import { db } from './db';
 import { escalations, outbox } from './db/schema';
-import { MESSAGE_STATES } from './db/schema/messages';
 import { droppedListeners } from './live/hub';
 import { cutReaders } from './live/pipe';
 import { openStreams } from './live/stream';

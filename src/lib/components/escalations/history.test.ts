@@ -56,6 +56,14 @@ describe('historyOf', () => {
 		expect(line?.failed).toBe(failed);
 	});
 
+	it('tells a telephone that rang from a text', () => {
+		const steps = [STEP, { ...STEP, channel: 'voice' as const, at: at(5) }];
+		expect(historyOf({ moves: [], steps }).map(({ fate }) => fate)).toEqual([
+			'Text message delivered.',
+			'The telephone was answered.'
+		]);
+	});
+
 	it.each<[Partial<Move>, string]>([
 		[{ kind: 'passed', by: 'Rose Ferris', other: 'Odran Keel' }, 'Rose Ferris passes it on to Odran Keel.'],
 		[

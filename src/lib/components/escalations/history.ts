@@ -53,30 +53,37 @@ function moveLine(move: EscalationView['moves'][number], index: number): History
 	return { key: `move ${index}`, at: Date.parse(at), words, told: false, fate: null, failed: false };
 }
 
-function stepLine({ at, name, post, message }: EscalationView['steps'][number], index: number): HistoryLine {
+function stepLine(
+	{ at, name, post, channel, message }: EscalationView['steps'][number],
+	index: number
+): HistoryLine {
 	const line = { key: `step ${index}`, at: Date.parse(at), told: true };
 	if (name === null) {
 		const words = m.escalations_step_nobody({ post: POST_WORDS[post]() });
 		return { ...line, words, fate: null, failed: true };
 	}
 	const words = m.escalations_step_told_person({ name, post: POST_WORDS[post]() });
-	return { ...line, words, ...fateOf(message) };
+	return { ...line, words, ...fateOf(message, channel === 'voice') };
 }
 
-/** What the states of a message mean to somebody who waits for it to be read. */
-const FATES: Record<string, { words: () => string; failed: boolean }> = {
-	ready: { words: m.escalations_fate_waiting, failed: false },
-	sending: { words: m.escalations_fate_sending, failed: false },
-	accepted: { words: m.escalations_fate_accepted, failed: false },
-	delivered: { words: m.escalations_fate_delivered, failed: false },
-	undelivered: { words: m.escalations_fate_undelivered, failed: true },
-	failed: { words: m.escalations_fate_failed, failed: true },
-	skipped: { words: m.escalations_fate_skipped, failed: true },
-	held: { words: m.escalations_fate_held, failed: true },
-	cancelled: { words: m.escalations_fate_cancelled, failed: false }
+type Fate = { text: () => string; call: () => string; failed: boolean };
+
+/** What the states of a text message, or of a telephone call, mean to somebody who waits for it to be heard. */
+const FATES: Record<string, Fate> = {
+	ready: { text: m.escalations_fate_waiting, call: m.escalations_call_waiting, failed: false },
+	sending: { text: m.escalations_fate_sending, call: m.escalations_call_sending, failed: false },
+	accepted: { text: m.escalations_fate_accepted, call: m.escalations_call_accepted, failed: false },
+	delivered: { text: m.escalations_fate_delivered, call: m.escalations_call_delivered, failed: false },
+	undelivered: { text: m.escalations_fate_undelivered, call: m.escalations_call_undelivered, failed: true },
+	failed: { text: m.escalations_fate_failed, call: m.escalations_call_failed, failed: true },
+	skipped: { text: m.escalations_fate_skipped, call: m.escalations_call_skipped, failed: true },
+	held: { text: m.escalations_fate_held, call: m.escalations_call_held, failed: true },
+	cancelled: { text: m.escalations_fate_cancelled, call: m.escalations_call_cancelled, failed: false }
 };
 
-function fateOf(message: string | null): { fate: string | null; failed: boolean } {
+function fateOf(message: string | null, byTelephone: boolean): { fate: string | null; failed: boolean } {
 	const known = message === null ? undefined : FATES[message];
-	return known ? { fate: known.words(), failed: known.failed } : { fate: message, failed: false };
+	return known
+		? { fate: byTelephone ? known.call() : known.text(), failed: known.failed }
+		: { fate: message, failed: false };
 }

@@ -4,6 +4,7 @@ import BookOpen from '@lucide/svelte/icons/book-open';
 import CalendarDays from '@lucide/svelte/icons/calendar-days';
 import CalendarOff from '@lucide/svelte/icons/calendar-off';
 import ListChecks from '@lucide/svelte/icons/list-checks';
+import Mail from '@lucide/svelte/icons/mail';
 import PhoneCall from '@lucide/svelte/icons/phone-call';
 import Ruler from '@lucide/svelte/icons/ruler';
 import Smartphone from '@lucide/svelte/icons/smartphone';
@@ -31,6 +32,7 @@ export type PlaceKey =
 	| 'accounts'
 	| 'limits'
 	| 'closed-days'
+	| 'messages'
 	| 'phones';
 
 /**
@@ -59,7 +61,8 @@ export function morePlaces(role: Role, demo: boolean): Place[] {
 		...(role === 'admin'
 			? [
 					place('limits', routes.adminLimits(), m.common_place_limits()),
-					place('closed-days', routes.closedDays(), m.common_place_closed_days())
+					place('closed-days', routes.closedDays(), m.common_place_closed_days()),
+					place('messages', routes.adminMessages(), m.common_place_messages())
 				]
 			: []),
 		...(role === 'admin' ? [] : [place('account', routes.account(), m.common_place_account())]),
@@ -88,6 +91,7 @@ const ICONS: Record<PlaceKey, IconDrawing> = {
 	accounts: UsersRound,
 	'closed-days': CalendarOff,
 	limits: Ruler,
+	messages: Mail,
 	phones: Smartphone
 };
 

@@ -42,6 +42,8 @@ export const PERMISSIONS = [
 	'visit.attend',
 	'closed-day.keep',
 	'stray-text.settle',
+	'message-log.read',
+	'message.resend',
 	'account.manage',
 	'audit.read',
 	'own-account.change'
@@ -137,6 +139,8 @@ function roleMay(role: Role, permission: Permission, subject: Subject): boolean 
 		// A text that is filed under no patient: whoever keeps the contacts finds out whose it is.
 		case 'stray-text.settle':
 			return role === 'coordinator';
+		case 'message-log.read':
+		case 'message.resend':
 		case 'account.manage':
 		case 'audit.read':
 			return role === 'admin';

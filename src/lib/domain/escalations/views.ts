@@ -53,7 +53,7 @@ export interface EscalationView {
 		step: number;
 		post: Post;
 		name: string | null;
-		channel: 'sms' | null;
+		channel: 'sms' | 'voice' | null;
 		at: string;
 		message: string | null;
 	}[];

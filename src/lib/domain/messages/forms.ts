@@ -1,6 +1,6 @@
 /** The bodies and fields of the message calls. A refusal names field, value and limit. */
 import { z } from 'zod';
-import { text, tooLong } from '../core/fields';
+import { reason, text, tooLong } from '../core/fields';
 import { DEFAULT_COUNTRY, PhoneError, normalisePhone } from './phone';
 
 export const SMS_TEXT_MAX = 10_000;
@@ -33,3 +33,7 @@ export const SETTLE_NOTE_MAX = 500;
 /** Fields of closing a text that came in: what was done about it, such as who was called and what was said. */
 export const settleTextBody = z.strictObject({ note: text('note', SETTLE_NOTE_MAX) });
 export const settleTextForm = z.strictObject({ note: text('What was done about it', SETTLE_NOTE_MAX) });
+
+/** Fields of having a message sent again: why. */
+export const resendBody = z.strictObject({ reason: reason('reason') });
+export const resendForm = z.strictObject({ reason: reason('Why it is sent again') });

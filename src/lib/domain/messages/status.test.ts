@@ -36,6 +36,13 @@ describe('readStatus', () => {
 		['accepted', 'queued'],
 		['scheduled', 'queued'],
 		['read', 'delivered'],
+		['initiated', 'queued'],
+		['ringing', 'sending'],
+		['in-progress', 'sent'],
+		['completed', 'delivered'],
+		['busy', 'undelivered'],
+		['no-answer', 'undelivered'],
+		['canceled', 'undelivered'],
 		['toString', null],
 		['', null]
 	])('%j is %s', (word, expected) => {

@@ -1,5 +1,5 @@
 /**
- * The status of a message at the SMS gateway. Its callbacks come twice, late and in any order; a status never
+ * The status of a message or a call at the SMS gateway. Its callbacks come twice, late and in any order; a status never
  * moves backwards, and the two that end a message stay.
  */
 export const SMS_STATUSES = ['queued', 'sending', 'sent', 'delivered', 'undelivered', 'failed'] as const;
@@ -22,10 +22,23 @@ export function laterStatus(known: SmsStatus | null, told: SmsStatus): SmsStatus
 	return told === 'delivered' ? told : known;
 }
 
+/** Other words for the same, and what a call says where a text says ours. A call that was picked up is delivered. */
+const OTHER_WORDS: ReadonlyMap<string, SmsStatus> = new Map([
+	['accepted', 'queued'],
+	['scheduled', 'queued'],
+	['read', 'delivered'],
+	['initiated', 'queued'],
+	['ringing', 'sending'],
+	['in-progress', 'sent'],
+	['completed', 'delivered'],
+	['busy', 'undelivered'],
+	['no-answer', 'undelivered'],
+	['canceled', 'undelivered']
+]);
+
 /** The words of the gateway in ours; null for one we do not know, which then changes nothing. */
 export function readStatus(word: string): SmsStatus | null {
-	const status =
-		word === 'accepted' || word === 'scheduled' ? 'queued' : word === 'read' ? 'delivered' : word;
+	const status = OTHER_WORDS.get(word) ?? word;
 	return SMS_STATUSES.find((known) => known === status) ?? null;
 }
 

@@ -7,7 +7,7 @@ import { describe, expect, it } from 'vitest';
 import { GRADES, ROLES } from '../core/codes';
 import { deniedWords } from './deny-list';
 import { measureSms } from './sms-length';
-import { PATIENT_MAILS, PATIENT_SMS, STAFF_MAILS, STAFF_SMS } from './templates';
+import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_SMS } from './templates';
 import { MESSAGE_LANGUAGES } from './templates/wording';
 
 const pick = fc.constantFrom;
@@ -142,6 +142,16 @@ describe.each(MESSAGE_LANGUAGES)('property: nothing leaks to patients in %s', (l
 describe('property: nothing leaks to staff', () => {
 	it.each(Object.keys(STAFF_SMS) as (keyof typeof STAFF_SMS)[])('text %s', (template) => {
 		const write = STAFF_SMS[template].en as Write<string>;
+		fc.assert(
+			fc.property(people, (person) => {
+				expect(leaks(write(everything(person)), person)).toEqual([]);
+			}),
+			RUNS
+		);
+	});
+
+	it.each(Object.keys(STAFF_CALLS) as (keyof typeof STAFF_CALLS)[])('call %s', (template) => {
+		const write = STAFF_CALLS[template].en as Write<string>;
 		fc.assert(
 			fc.property(people, (person) => {
 				expect(leaks(write(everything(person)), person)).toEqual([]);

@@ -7,6 +7,7 @@ import * as mails from './templates/mail';
 import * as pages from './templates/page';
 import * as replies from './templates/reply';
 import * as visits from './templates/visit';
+import * as voice from './templates/voice';
 import { messageLanguage } from './templates/wording';
 import type { MailText } from './templates/mail';
 import type { MessageLanguage, StaffWording } from './templates/wording';
@@ -41,6 +42,15 @@ export const PATIENT_SMS = {
 	'texts-started': replies.textsStarted,
 	'texts-help': replies.textsHelp,
 	'page-link': pages.pageLink
+};
+
+/** What a telephone says. */
+export const STAFF_CALLS = {
+	call: voice.call,
+	yours: voice.yours,
+	'taken-before': voice.takenBefore,
+	'over-before': voice.overBefore,
+	'not-taken': voice.notTaken
 };
 
 export const STAFF_MAILS = {

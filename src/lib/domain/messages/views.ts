@@ -1,4 +1,5 @@
 import type { PatientLine } from '../episodes/views';
+import type { MessageChannel } from './codes';
 
 /** Somebody who is to be called, because a text did not do it. */
 export interface Reachable {
@@ -12,7 +13,7 @@ export interface FailedMessageView {
 	id: string;
 	/** What it was to say. A secret link in it is left out. */
 	body: string;
-	channel: 'sms' | 'mail';
+	channel: MessageChannel;
 	/** Whom it was for; null where the number belongs to nobody we know. */
 	to: Reachable | null;
 	/** Whom it was about. */
@@ -42,7 +43,7 @@ export interface InboundTextView {
 
 /** A way out of the product that does not work now. */
 export interface Trouble {
-	channel: 'sms' | 'mail';
+	channel: MessageChannel;
 	/** When it began, RFC 3339. */
 	since: string;
 	/** How many messages are due and wait for it. */

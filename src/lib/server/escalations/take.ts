@@ -24,7 +24,7 @@ export interface Taken {
 }
 
 /** By which way somebody took it; it stands in the history and in the audit. */
-export type TakenVia = 'page' | 'link' | 'text';
+export type TakenVia = 'page' | 'link' | 'text' | 'call';
 
 /**
  * Take an escalation: from now on this person holds it and the chain stops. Of two who take at once one has it,

@@ -4,7 +4,7 @@ import { hurried } from '$lib/domain/escalations/needed-by';
 import type { Post } from '$lib/domain/core/codes';
 import { smsText } from '$lib/domain/messages/templates';
 import { onCover } from '../cover/queries';
-import type { Tx } from '../db';
+import type { Reader, Tx } from '../db';
 import { episodes, escalationLinks, escalations, escalationSteps, outbox, units } from '../db/schema';
 import { newId } from '../ids';
 import { aroundLink, linkDigest, linkToken } from '../links';
@@ -148,8 +148,8 @@ export async function withLink(
 }
 
 /** Where the patient lies now: a bed move after the raising sends the next people to the right bed. */
-export async function placeOf(tx: Tx, episodeId: string) {
-	const [row] = await tx
+export async function placeOf(reader: Reader, episodeId: string) {
+	const [row] = await reader
 		.select({ unitId: units.id, unit: units.name, bed: episodes.bed })
 		.from(episodes)
 		.innerJoin(units, eq(units.id, episodes.unitId))

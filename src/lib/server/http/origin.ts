@@ -7,7 +7,12 @@ import { pageTokenIn } from './limits';
 const READS = new Set(['GET', 'HEAD', 'OPTIONS']);
 
 /** Signed by the gateway, which sends no Origin; their handlers check the signature. */
-const SIGNED = new Set(['/api/hooks/sms', '/api/hooks/sms-status']);
+const SIGNED = new Set([
+	'/api/hooks/sms',
+	'/api/hooks/sms-status',
+	'/api/hooks/voice',
+	'/api/hooks/voice-status'
+]);
 
 /** Moves the demonstration's clock, for test tools without a browser; see its handler. */
 const OPEN = new Set(['/api/demo/clock']);

@@ -3,13 +3,14 @@ import { db } from '../db';
 import { forgetOldKeys } from '../idempotency';
 import { forgetOldEvents } from '../live/log';
 import { endUnentitledStreams } from '../live/stream';
+import { forgetOldWords } from '../messages/forget';
 import type { Job } from './clockwork';
 
 const EVERY_MS = 10 * 60 * 1000;
 
 let lastAt = -Infinity;
 
-/** Remove what has outlived its use: old keys, old live events. Counts as no work done. */
+/** Remove what has outlived its use: old keys, old live events, what old messages said. Counts as no work done. */
 export const cleaning: Job = {
 	name: 'cleaning',
 	async run(now) {
@@ -19,6 +20,7 @@ export const cleaning: Job = {
 		lastAt = now;
 		await forgetOldKeys(db(), now);
 		await forgetOldEvents(db(), now);
+		await forgetOldWords(now);
 		return 0;
 	}
 };

@@ -205,9 +205,15 @@ const visitsCancelled = sql`
 		join place on place.id = v.episode_id
 		where v.patient_cancelled_at is not null and v.followed_up_at is null`;
 
+/** The stay that an answer to a patient's text is filed under, as the text itself. */
+const NEWEST_EPISODE = sql`(
+	select e.id from episodes e where e.patient_id = m.patient_id order by e.created_at desc, e.id desc limit 1
+)`;
+
 /**
  * A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. News of a change
- * are told apart by whether the patient has heard of it in any way: `visitsUntold()`.
+ * are told apart by whether the patient has heard of it in any way: `visitsUntold()`. A telephone rings only where a
+ * text failed or may have: that text stands here, the ringing not beside it.
  */
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
@@ -217,9 +223,11 @@ const messagesFailed = sql`
 	left join escalations x on m.ref_kind = 'escalation' and x.id = m.ref_id
 	left join referrals r on m.ref_kind = 'referral' and r.id = m.ref_id
 	join place on place.id = coalesce(
-		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end
+		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end,
+		case when m.ref_kind = 'inbound' then ${NEWEST_EPISODE} end
 	)
-	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.handled_at is null
+	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.channel <> 'voice'
+		and m.handled_at is null
 		and not ${IS_NEWS_OF_CHANGE}`;
 
 /** Texts that no rule understood. What is filed under no patient has no place; who sees it decides `strayIn()`. */

@@ -3,19 +3,24 @@ import type { LiveEvent } from '$lib/domain/live/events';
 import { readStatus, type SmsStatus } from '$lib/domain/messages/status';
 import type { Tx } from '../db';
 import { outbox, smsStatuses } from '../db/schema';
+import { seekOtherWay } from '../escalations/next-channel';
 import { newId } from '../ids';
 import { changing, messageEvent } from '../outbox/change';
 import { auditFailure } from '../outbox/record';
 import { stateByStatus } from './delivery';
 import { requiredField, type GatewayForm } from './signature';
 
+/** How the gateway calls its fields. */
+const OF_TEXT = { id: 'MessageSid', status: 'MessageStatus' };
+export const OF_CALL = { id: 'CallSid', status: 'CallStatus' };
+
 /**
  * Take in what the gateway tells about a message. The same status told again has no effect, a late one never moves
  * the message backwards, and one that comes before our own record of the sending is kept for it.
  */
-export async function receiveStatus(form: GatewayForm, now: number): Promise<void> {
-	const providerId = requiredField(form, 'MessageSid');
-	const status = readStatus(requiredField(form, 'MessageStatus'));
+export async function receiveStatus(form: GatewayForm, now: number, fields = OF_TEXT): Promise<void> {
+	const providerId = requiredField(form, fields.id);
+	const status = readStatus(requiredField(form, fields.status));
 	if (status === null) {
 		return;
 	}
@@ -60,5 +65,6 @@ async function moveOn(tx: Tx, events: LiveEvent[], providerId: string, now: numb
 	events.push(await messageEvent(tx, row, told.state));
 	if (told.state === 'undelivered') {
 		await auditFailure(tx, row, now, told.reason);
+		await seekOtherWay(tx, row, 'failed', now);
 	}
 }

@@ -40,10 +40,3 @@ export function requiredField(form: GatewayForm, name: string): string {
 	}
 	return value;
 }
-
-/** The answer to every call that was understood: an empty document in the gateway's markup. */
-export function emptyMarkup(): Response {
-	return new Response('<?xml version="1.0" encoding="UTF-8"?><Response/>', {
-		headers: { 'content-type': 'text/xml; charset=utf-8', 'cache-control': 'no-store' }
-	});
-}

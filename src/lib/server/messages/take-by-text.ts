@@ -1,22 +1,17 @@
 import { and, desc, eq, gt } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
-import { Problem } from '$lib/domain/core/errors';
-import { isOpenTo } from '$lib/domain/escalations/holding';
-import type { PlaceFields } from '$lib/domain/messages/templates/escalation';
 import { smsText } from '$lib/domain/messages/templates';
 import { routes } from '$lib/routes';
-import { accessEscalation } from '../access/access';
 import type { PersonContext } from '../context';
 import type { Tx } from '../db';
-import { escalationLinks, escalations, units, users } from '../db/schema';
+import { escalationLinks, escalations } from '../db/schema';
 import { env } from '../env';
-import { confirm } from '../escalations/pass';
-import { take } from '../escalations/take';
-import { placeOf, type EscalationRow } from '../escalations/tell';
+import type { EscalationRow } from '../escalations/tell';
 import { aroundLink } from '../links';
 import type { NewMessage } from '../outbox/enqueue';
 import type { Change } from '../write';
 import { meantCall } from './texted-calls';
+import { placeFields, tryTake } from './try-take';
 import { answerBase, answerTo, type ReceivedText, type Understood } from './understood';
 
 /**
@@ -59,25 +54,25 @@ async function takeCall(
 	unseen: NewMessage
 ): Promise<Understood> {
 	const { actor } = context;
-	let escalation: EscalationRow;
-	try {
-		({ escalation } = await accessEscalation(tx, actor, id, 'escalation.take'));
-	} catch (error) {
-		if (!(error instanceof Problem)) {
-			throw error;
+	const to = { userId: actor.id };
+	const tried = await tryTake(tx, context, id, 'text');
+	switch (tried.kind) {
+		case 'not-allowed':
+			return answered(answerTo(text, to, 'may-not-take', {}));
+		case 'unseen':
+			return answered(unseen);
+		case 'yours':
+			return answered(await yours(tx, actor, tried.escalation, text), tried.change ?? undefined);
+		case 'held':
+		case 'over': {
+			const fields = { ...(await placeFields(tx, tried.escalation)), since: tried.since };
+			return answered(
+				tried.kind === 'over'
+					? answerTo(text, to, 'over-before', fields)
+					: answerTo(text, to, 'taken-before', { ...fields, holder: tried.holder })
+			);
 		}
-		const refused = error.code === 'not-allowed';
-		return answered(refused ? answerTo(text, { userId: actor.id }, 'may-not-take', {}) : unseen);
 	}
-	if (isOpenTo(escalation, actor.id)) {
-		const change = await take(tx, context, actor, escalation, null, 'text');
-		return answered(await yours(tx, actor, escalation, text), change);
-	}
-	if (escalation.state === 'taken' && escalation.passTo === actor.id) {
-		const change = await confirm(tx, context, actor, escalation);
-		return answered(await yours(tx, actor, escalation, text), change);
-	}
-	return answered(await tooLate(tx, actor, escalation, text));
 }
 
 function answered(message: NewMessage, change?: Change<unknown>): Understood {
@@ -107,29 +102,4 @@ async function yours(tx: Tx, person: Person, escalation: EscalationRow, text: Re
 				...base,
 				body: smsText('took-it', { ...place, link: env().publicUrl + routes.escalation(escalation.id) })
 			};
-}
-
-/** Somebody has it, perhaps this person by an earlier press; or it has ended. */
-async function tooLate(tx: Tx, person: Person, escalation: EscalationRow, text: ReceivedText) {
-	if (escalation.state === 'taken' && escalation.takenBy === person.id) {
-		return yours(tx, person, escalation, text);
-	}
-	const place = await placeFields(tx, escalation);
-	const to = { userId: person.id };
-	if (escalation.state !== 'taken') {
-		const since = escalation.endedAt ?? escalation.raisedAt;
-		return answerTo(text, to, 'over-before', { ...place, since });
-	}
-	const [holder] = await tx
-		.select({ role: users.role })
-		.from(users)
-		.where(eq(users.id, escalation.takenBy ?? ''));
-	const since = escalation.takenAt ?? escalation.raisedAt;
-	return answerTo(text, to, 'taken-before', { ...place, since, holder: holder?.role ?? 'nurse' });
-}
-
-async function placeFields(tx: Tx, escalation: EscalationRow): Promise<PlaceFields & { zone: string }> {
-	const { unitId, unit, bed } = await placeOf(tx, escalation.episodeId);
-	const [row] = await tx.select({ zone: units.zone }).from(units).where(eq(units.id, unitId));
-	return { unit, bed, grade: escalation.grade, zone: row?.zone ?? 'UTC' };
 }

@@ -18,9 +18,12 @@ const FORGOTTEN_AFTER_MS = HOUR;
  * with mail is told to those who can do something about it.
  */
 export async function troublesFor(reader: Reader, person: Person, now: number): Promise<Trouble[]> {
-	const channels = CHANNELS.filter((channel) => channel === 'sms' || seesToMail(person));
+	const channels = CHANNELS.filter((channel) => channel !== 'mail' || seesToMail(person));
 	const troubles = await Promise.all(channels.map((channel) => troubleOf(reader, channel, now)));
-	return troubles.filter((trouble) => trouble !== null);
+	const known = troubles.filter((trouble) => trouble !== null);
+	// One gateway carries texts and calls: that it is down is said once.
+	const texts = known.some(({ channel }) => channel === 'sms');
+	return known.filter(({ channel }) => channel !== 'voice' || !texts);
 }
 
 function seesToMail(person: Person): boolean {

@@ -1,12 +1,13 @@
-import { newId } from '../ids';
+import type { MessageChannel } from '$lib/domain/messages/codes';
 import type { Tx } from '../db';
 import { outbox } from '../db/schema';
+import { newId } from '../ids';
 
 /** A message to be sent, described by what caused it. Exactly one of user, patient and address is given. */
 export interface NewMessage {
 	id?: string;
 	kind: (typeof outbox.$inferInsert)['kind'];
-	channel: 'sms' | 'mail';
+	channel: MessageChannel;
 	/** Names the cause; a second message with the same key is not written. */
 	causeKey: string;
 	userId?: string;

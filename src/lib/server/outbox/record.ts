@@ -1,14 +1,16 @@
-import { and, asc, eq, inArray, isNull, ne } from 'drizzle-orm';
+import { and, asc, count, eq, gte, inArray, isNull, max, min, ne } from 'drizzle-orm';
 import type { LiveEvent } from '$lib/domain/live/events';
 import type { Outcome } from '$lib/domain/messages/outcome';
 import { appendAudit } from '../audit/append';
 import { db, type Tx } from '../db';
-import { outbox, outboxAttempts, patients } from '../db/schema';
+import { outbox, outboxAttempts, outboxResends, patients } from '../db/schema';
+import { seekOtherWay } from '../escalations/next-channel';
 import { newId } from '../ids';
 import { stateByStatus } from '../messages/delivery';
 import { claimedAt } from './claim';
 import { changing, episodeOfMessage, messageEvent, type OutboxRow } from './change';
 import { nextState } from './next-state';
+import type { SkipReason } from './verdict';
 
 export interface Attempt {
 	startedAt: number;
@@ -39,20 +41,15 @@ export async function recordAttempt(
 ): Promise<void> {
 	await changing(attempt.endedAt, async (tx, events) => {
 		const number = await addAttempt(tx, row, attempt);
-		const [first] = await tx
-			.select({ at: outboxAttempts.startedAt })
-			.from(outboxAttempts)
-			.where(eq(outboxAttempts.messageId, row.id))
-			.orderBy(asc(outboxAttempts.number))
-			.limit(1);
+		const since = await startOfSchedule(tx, row.id);
 		const next = nextState(row, attempt.outcome, {
-			attempts: number,
-			firstAt: first?.at ?? attempt.startedAt,
+			attempts: since.attempts,
+			firstAt: since.firstAt ?? attempt.startedAt,
 			now: attempt.endedAt,
 			random
 		});
 		const told = next.providerId === undefined ? null : await stateByStatus(tx, next.providerId);
-		await settleRow(tx, events, row, owner, attempt.endedAt, {
+		const mine = await settleRow(tx, events, row, owner, attempt.endedAt, {
 			attempts: number,
 			state: told?.state ?? next.state,
 			stateReason: told?.reason ?? next.reason,
@@ -61,7 +58,28 @@ export async function recordAttempt(
 			providerId: next.providerId ?? null
 		});
 		await noteOptOut(tx, row, attempt);
+		if (mine && (next.state === 'failed' || told?.state === 'undelivered')) {
+			await seekOtherWay(tx, row, 'failed', attempt.endedAt);
+		} else if (mine && attempt.outcome.kind === 'unknown') {
+			await seekOtherWay(tx, row, 'unknown', attempt.endedAt);
+		}
 	});
+}
+
+/** How many attempts count, and when the first of them began: those since a person last had it sent again. */
+async function startOfSchedule(
+	tx: Tx,
+	messageId: string
+): Promise<{ attempts: number; firstAt: number | null }> {
+	const [resent] = await tx
+		.select({ at: max(outboxResends.at) })
+		.from(outboxResends)
+		.where(eq(outboxResends.messageId, messageId));
+	const [counted] = await tx
+		.select({ attempts: count(), firstAt: min(outboxAttempts.startedAt) })
+		.from(outboxAttempts)
+		.where(and(eq(outboxAttempts.messageId, messageId), gte(outboxAttempts.startedAt, resent?.at ?? 0)));
+	return counted ?? { attempts: 0, firstAt: null };
 }
 
 /** The attempt of a worker that never told how it ended: nobody knows whether it went through. */
@@ -102,6 +120,13 @@ function interrupted(startedAt: number, endedAt: number): Attempt {
 	return { startedAt, endedAt, outcome: { kind: 'unknown', reason: 'no-answer' }, code: 'interrupted' };
 }
 
+/** Why a person cannot be reached at all, on any channel. */
+const OUT_OF_REACH: ReadonlySet<string> = new Set<SkipReason>([
+	'account disabled',
+	'no telephone number',
+	'nobody to send to'
+]);
+
 /** Give a claimed message back or end it, without an attempt: it waits, is not wanted any more, or came too late. */
 export async function releaseRow(
 	row: OutboxRow,
@@ -111,7 +136,10 @@ export async function releaseRow(
 ): Promise<void> {
 	await changing(now, async (tx, events) => {
 		const { state, reason, nextAt = row.nextAt } = change;
-		await settleRow(tx, events, row, owner, now, { state, stateReason: reason, nextAt });
+		const mine = await settleRow(tx, events, row, owner, now, { state, stateReason: reason, nextAt });
+		if (mine && reason !== null && OUT_OF_REACH.has(reason)) {
+			await seekOtherWay(tx, row, 'failed', now);
+		}
 	});
 }
 
@@ -133,7 +161,10 @@ async function addAttempt(tx: Tx, row: OutboxRow, attempt: Attempt): Promise<num
 
 type Change = Partial<OutboxRow> & Pick<OutboxRow, 'state'>;
 
-/** The one place where a claimed message leaves its worker. What did not arrive is on record in the audit too. */
+/**
+ * The one place where a claimed message leaves its worker. What did not arrive is on record in the audit too.
+ * @returns false where another worker has it by now
+ */
 async function settleRow(
 	tx: Tx,
 	events: LiveEvent[],
@@ -141,7 +172,7 @@ async function settleRow(
 	owner: string,
 	now: number,
 	change: Change
-): Promise<void> {
+): Promise<boolean> {
 	const mine = and(eq(outbox.id, row.id), eq(outbox.leaseOwner, owner), eq(outbox.state, 'sending'));
 	const [settled] = await tx
 		.update(outbox)
@@ -149,12 +180,13 @@ async function settleRow(
 		.where(mine)
 		.returning({ id: outbox.id });
 	if (!settled) {
-		return;
+		return false;
 	}
 	events.push(await messageEvent(tx, row, change.state));
 	if (change.state === 'failed' || change.state === 'undelivered') {
 		await auditFailure(tx, row, now, change.stateReason ?? null);
 	}
+	return true;
 }
 
 /** That a message did not arrive, by whom it was sent and why; its text and its address are not on record here. */

@@ -1,11 +1,11 @@
-import { and, asc, eq, gt, isNotNull, lte } from 'drizzle-orm';
+import { and, asc, eq, gt, inArray, isNotNull, lte } from 'drizzle-orm';
 import { MINUTE, HOUR } from '$lib/domain/core/time';
 import { readStatus } from '$lib/domain/messages/status';
 import { db } from '../db';
 import { outbox } from '../db/schema';
 import { log } from '../log';
 import { noteStatus } from '../messages/receive-status';
-import type { Channel } from './channels/channel';
+import { CHANNELS, type ChannelName, type Channels } from './channels/channel';
 
 /** A message of which the gateway has not told the end by then is asked about. */
 export const SILENT_AFTER_MS = 10 * MINUTE;
@@ -18,7 +18,7 @@ const ROUND = 20;
 const LOOK_EVERY_MS = MINUTE;
 
 /**
- * Asks the gateway about texts that it has accepted and never told the end of: a callback may have been lost, and
+ * Asks the gateway about texts and calls that it has accepted and never told the end of: a callback may have been lost, and
  * with it that somebody was not reached. What it answers counts like a callback. When it was asked is kept in memory
  * alone; to ask once more after a restart does no harm.
  */
@@ -27,7 +27,7 @@ export class SilentMessages {
 	#lookAt = 0;
 	#round: Promise<number> | null = null;
 
-	constructor(private readonly channel: Channel | null) {}
+	constructor(private readonly channels: Channels) {}
 
 	/** One round at a time. @returns how many messages were asked about */
 	ask(now: number): Promise<number> {
@@ -36,16 +36,17 @@ export class SilentMessages {
 	}
 
 	async #ask(now: number): Promise<number> {
-		const statusOf = this.channel?.statusOf;
-		if (!statusOf || now < this.#lookAt) {
+		const askable = CHANNELS.filter((name) => this.channels[name]?.statusOf);
+		if (askable.length === 0 || now < this.#lookAt) {
 			return 0;
 		}
 		this.#lookAt = now + LOOK_EVERY_MS;
 		try {
-			const due = (await silent(now)).filter(({ id }) => now - (this.#asked.get(id) ?? 0) >= EVERY_MS);
-			for (const { id, providerId } of due.slice(0, ROUND)) {
+			const all = await silent(askable, now);
+			const due = all.filter(({ id }) => now - (this.#asked.get(id) ?? 0) >= EVERY_MS);
+			for (const { id, channel, providerId } of due.slice(0, ROUND)) {
 				this.#asked.set(id, now);
-				const told = await statusOf(providerId);
+				const told = (await this.channels[channel]?.statusOf?.(providerId)) ?? null;
 				const status = told && readStatus(told.status);
 				if (told && status) {
 					await noteStatus(providerId, status, told.errorCode, now);
@@ -68,20 +69,26 @@ export class SilentMessages {
 	}
 }
 
+interface Silent {
+	id: string;
+	channel: ChannelName;
+	providerId: string;
+}
+
 /** Accepted, and long enough ago; those that became due too long ago are not asked about any more. */
-async function silent(now: number): Promise<{ id: string; providerId: string }[]> {
+async function silent(channels: ChannelName[], now: number): Promise<Silent[]> {
 	const rows = await db()
-		.select({ id: outbox.id, providerId: outbox.providerId })
+		.select({ id: outbox.id, channel: outbox.channel, providerId: outbox.providerId })
 		.from(outbox)
 		.where(
 			and(
 				eq(outbox.state, 'accepted'),
-				eq(outbox.channel, 'sms'),
+				inArray(outbox.channel, channels),
 				gt(outbox.nextAt, now - GIVE_UP_AFTER_MS),
 				lte(outbox.sentAt, now - SILENT_AFTER_MS),
 				isNotNull(outbox.providerId)
 			)
 		)
 		.orderBy(asc(outbox.sentAt));
-	return rows.flatMap(({ id, providerId }) => (providerId === null ? [] : [{ id, providerId }]));
+	return rows.flatMap(({ providerId, ...row }) => (providerId === null ? [] : [{ ...row, providerId }]));
 }

@@ -16,7 +16,9 @@ import { SilentMessages } from './silent';
  */
 export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }> = {
 	sms: { all: 5, routine: 3 },
-	mail: { all: 3, routine: 3 }
+	mail: { all: 3, routine: 3 },
+	// A telephone rings for calls for help alone.
+	voice: { all: 5, routine: 0 }
 };
 const BEAT_MS = 1_000;
 /** A server that stops waits no longer for a gateway; the lease then tells the next start that the end is unknown. */
@@ -58,7 +60,7 @@ export class OutboxWorker {
 
 	constructor(options: OutboxOptions) {
 		this.#channels = options.channels;
-		this.#silent = new SilentMessages(options.channels.sms);
+		this.#silent = new SilentMessages(options.channels);
 		this.#owner = options.owner ?? newId();
 		this.#now = options.now ?? now;
 		this.#random = options.random ?? Math.random;
@@ -148,7 +150,7 @@ export class OutboxWorker {
 
 	async #claim(): Promise<number> {
 		const at = this.#now();
-		const configured = CHANNELS.filter((name) => this.#channels[name] !== null);
+		const configured = CHANNELS.filter((name) => this.#channels[name]);
 		let seen = await holdDue(at, configured);
 		for (const channel of configured) {
 			seen += await this.#claimOn(channel, true, at);

@@ -124,7 +124,7 @@ export const unknownNumber: StaffWording<Record<never, never>> = {
 };
 
 /** 'Surgeon' would tell what kind of ward it is. */
-const HOLDER_WORDS: Record<Role, string> = {
+export const HOLDER_WORDS: Record<Role, string> = {
 	surgeon: 'A doctor',
 	physician: 'A doctor',
 	nurse: 'A nurse',

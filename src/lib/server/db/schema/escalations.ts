@@ -126,7 +126,7 @@ export const escalationSteps = sqliteTable(
 		at: instant('at').notNull(),
 		/** Null when nobody was on cover for the post: the gap is on record. */
 		userId: text('user_id').references(() => users.id),
-		channel: text('channel', { enum: ['sms'] }),
+		channel: text('channel', { enum: ['sms', 'voice'] }),
 		messageId: text('message_id')
 	},
 	(t) => [index('escalation_steps_escalation').on(t.escalationId, t.step)]

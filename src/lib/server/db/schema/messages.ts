@@ -1,21 +1,15 @@
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
+import {
+	ATTEMPT_OUTCOMES,
+	MESSAGE_CAUSES,
+	MESSAGE_CHANNELS,
+	MESSAGE_KINDS,
+	MESSAGE_STATES
+} from '../../../domain/messages/codes';
 import { users } from './accounts';
 import { id, instant } from './columns';
 import { patients } from './episodes';
 import { visits } from './visits';
-
-export const MESSAGE_KINDS = ['escalation', 'notice', 'reminder', 'answer', 'mail', 'visit', 'page'] as const;
-export const MESSAGE_STATES = [
-	'ready',
-	'sending',
-	'accepted',
-	'delivered',
-	'undelivered',
-	'failed',
-	'skipped',
-	'cancelled',
-	'held'
-] as const;
 
 /** Everything that leaves the product. A row is written in the transaction of its cause, once for each cause. */
 export const outbox = sqliteTable(
@@ -23,7 +17,7 @@ export const outbox = sqliteTable(
 	{
 		id: id(),
 		kind: text('kind', { enum: MESSAGE_KINDS }).notNull(),
-		channel: text('channel', { enum: ['sms', 'mail'] }).notNull(),
+		channel: text('channel', { enum: MESSAGE_CHANNELS }).notNull(),
 		causeKey: text('cause_key').notNull().unique(),
 		/** Staff or patient; the address is looked up again at the moment of sending. */
 		userId: text('user_id').references(() => users.id),
@@ -31,14 +25,15 @@ export const outbox = sqliteTable(
 		/** Only for an answer to a number that belongs to nobody we know. */
 		address: text('address'),
 		subject: text('subject'),
-		/** `{link}` stands for the secret link, which is made at the moment of sending and never stored. */
+		/**
+		 * `{link}` stands for the secret link, which is made at the moment of sending and never stored. Empty once it was
+		 * removed, a while after the end of the message.
+		 */
 		body: text('body').notNull(),
 		/** A calendar file that goes with a mail about a visit. */
 		calendar: text('calendar'),
 		linkId: text('link_id'),
-		refKind: text('ref_kind', {
-			enum: ['escalation', 'visit', 'referral', 'inbound', 'account', 'episode', 'page']
-		}).notNull(),
+		refKind: text('ref_kind', { enum: MESSAGE_CAUSES }).notNull(),
 		refId: text('ref_id').notNull(),
 		state: text('state', { enum: MESSAGE_STATES }).notNull(),
 		stateReason: text('state_reason'),
@@ -72,12 +67,29 @@ export const outboxAttempts = sqliteTable(
 		number: integer('number').notNull(),
 		startedAt: instant('started_at').notNull(),
 		endedAt: instant('ended_at').notNull(),
-		outcome: text('outcome', { enum: ['accepted', 'permanent', 'transient', 'unknown'] }).notNull(),
+		outcome: text('outcome', { enum: ATTEMPT_OUTCOMES }).notNull(),
 		/** A status or error code of the gateway, never its prose. */
 		code: text('code'),
 		providerId: text('provider_id')
 	},
 	(t) => [index('outbox_attempts_message').on(t.messageId, t.number)]
+);
+
+/** That a person had a message sent again, and why; append-only. Its schedule begins anew with it. */
+export const outboxResends = sqliteTable(
+	'outbox_resends',
+	{
+		id: id(),
+		messageId: text('message_id')
+			.notNull()
+			.references(() => outbox.id),
+		at: instant('at').notNull(),
+		byId: text('by_id')
+			.notNull()
+			.references(() => users.id),
+		reason: text('reason').notNull()
+	},
+	(t) => [index('outbox_resends_message').on(t.messageId, t.at)]
 );
 
 /** What the gateway told us about a message. The unique index makes a replay harmless. */

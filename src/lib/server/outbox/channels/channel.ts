@@ -1,3 +1,4 @@
+import { MESSAGE_CHANNELS, type MessageChannel } from '$lib/domain/messages/codes';
 import type { Outcome } from '$lib/domain/messages/outcome';
 
 /** A message as it goes out: the address as it is now, the link filled in. */
@@ -43,8 +44,8 @@ export interface Told {
 	errorCode: string | null;
 }
 
-export const CHANNELS = ['sms', 'mail'] as const;
-export type ChannelName = (typeof CHANNELS)[number];
+export const CHANNELS = MESSAGE_CHANNELS;
+export type ChannelName = MessageChannel;
 
-/** The channels of this process; null for one without a gateway, whose messages are held. */
-export type Channels = Record<ChannelName, Channel | null>;
+/** The channels of this process; null or left out for one without a gateway, whose messages are held. */
+export type Channels = Record<'sms' | 'mail', Channel | null> & Partial<Record<ChannelName, Channel | null>>;

@@ -1,10 +1,8 @@
 import twilio from 'twilio';
-import { smsOutcome } from '$lib/domain/messages/outcome';
-import { readRetryAfter } from '$lib/domain/messages/retry';
-import { now } from '../../clock';
 import type { Env } from '../../env';
-import type { Channel, Outgoing, Sent, Told } from './channel';
-import { GATEWAY_LIMIT_MS, GatewayClient, GatewayRefusal } from './gateway-client';
+import type { Channel, Outgoing, Told } from './channel';
+import { GATEWAY_LIMIT_MS, GatewayClient } from './gateway-client';
+import { judged } from './gateway-sent';
 
 /** How many of the newest messages to one number are looked through for one of unknown outcome. */
 const LOOK_UP_LIMIT = 50;
@@ -28,29 +26,6 @@ export function smsChannel(
 		lookUp: (message) => lookUp(messages, message),
 		statusOf: (providerId) => statusOf(messages, providerId)
 	};
-}
-
-async function judged(create: () => Promise<{ sid: string }>): Promise<Sent> {
-	try {
-		const { sid } = await create();
-		const id = typeof sid === 'string' ? sid : null;
-		const outcome = smsOutcome({ kind: 'answered', status: 201, id, code: null, retryAfter: null });
-		return { outcome, code: null };
-	} catch (error) {
-		return judgedError(error);
-	}
-}
-
-function judgedError(error: unknown): Sent {
-	if (error instanceof GatewayRefusal) {
-		const { status, code } = error;
-		const retryAfter = readRetryAfter(error.retryAfter, now());
-		const outcome = smsOutcome({ kind: 'answered', status, id: null, code, retryAfter });
-		return { outcome, code: String(code ?? status) };
-	}
-	const code = (error as { code?: unknown } | null)?.code;
-	const known = typeof code === 'string' ? code : null;
-	return { outcome: smsOutcome({ kind: 'failed', code: known }), code: known };
 }
 
 type Messages = ReturnType<typeof twilio>['messages'];
