@@ -13,7 +13,16 @@ const NARROW = { width: 320, height: 568 };
 export const WIDE = { width: 1280, height: 800 };
 
 /** Pages of hands that are full, wet or in a hurry: every control on them is as large as a finger. */
-const FOR_FINGERS = ['/bedside/[episodeId]', '/t/[token]', '/p/[token]', '/loose-ends', '/ward'];
+const FOR_FINGERS = [
+	'/bedside/[episodeId]',
+	'/t/[token]',
+	'/p/[token]',
+	'/loose-ends',
+	'/ward',
+	'/escalations/[id]',
+	'/patients/[id]/escalate',
+	'/patients/[id]/clearances/[clearanceId]'
+];
 
 /** What keeps somebody from reading or working the page that is open on a phone; it stands as before afterwards. */
 export async function barriers(page: Page, { page: name }: VisitedPage): Promise<string[]> {

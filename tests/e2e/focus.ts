@@ -11,9 +11,9 @@ export async function lostFocus(page: Page): Promise<string[]> {
 	const { stops } = await page.evaluate(watchFocus, 'later' as const);
 	await Promise.all(Array.from({ length: stops + 3 }, () => page.keyboard.press('Tab')));
 	return page.evaluate(() => {
-		const { faults, reached, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
+		const { faults, reached, missed, end } = (window as unknown as { focusWatch: FocusWatch }).focusWatch;
 		end();
-		return reached.size === 0 ? ['nothing takes the focus'] : [...new Set(faults)];
+		return reached.size === 0 ? ['nothing takes the focus'] : [...new Set([...faults, ...missed()])];
 	});
 }
 
@@ -26,6 +26,8 @@ export async function lostNow(page: Page): Promise<string[]> {
 interface FocusWatch {
 	faults: string[];
 	reached: Set<Element>;
+	/** What the key should have come to and has not. */
+	missed: () => string[];
 	end: () => void;
 }
 
@@ -81,9 +83,19 @@ function watchFocus(when: 'now' | 'later') {
 		});
 		return over ? `is under ${over.localName} ${nameOf(over)}` : null;
 	};
+	const isReached = (each: HTMLElement) =>
+		watch.reached.has(each) ||
+		(each instanceof HTMLInputElement &&
+			each.type === 'radio' &&
+			[...watch.reached].some((one) => one instanceof HTMLInputElement && one.name === each.name));
 	const watch: FocusWatch = {
 		faults: [],
 		reached: new Set(),
+		// Of a group of radio buttons the key comes to one.
+		missed: () =>
+			stops
+				.filter((each) => each.checkVisibility() && !isReached(each))
+				.map((each) => `${nameOf(each)} is not reached`),
 		end: () => removeEventListener('keydown', look, true)
 	};
 	function look() {

@@ -174,3 +174,22 @@ test('forced colours are the only ones that marks are painted in, by night as we
 	expect(painted.length).toBeGreaterThan(0);
 	expect(painted.filter((colour) => !forced.includes(colour))).toEqual([]);
 });
+
+test('a night that was chosen on a device of the day darkens the browser’s own bar too, and at the next page', async ({
+	page
+}) => {
+	await page.emulateMedia({ colorScheme: 'light' });
+	const bar = () =>
+		page.evaluate(() =>
+			[...document.querySelectorAll<HTMLMetaElement>('meta[name="theme-color"]')]
+				.filter(({ media }) => matchMedia(media).matches)
+				.map(({ content }) => content)
+		);
+	expect(await bar()).toEqual(['#f4f0e6']);
+	await page.getByRole('button', { name: 'Night', exact: true }).click();
+	expect(await bar()).toEqual(['#121816']);
+	await page.reload();
+	expect(await bar()).toEqual(['#121816']);
+	await page.getByRole('button', { name: 'As the device' }).click();
+	expect(await bar()).toEqual(['#f4f0e6']);
+});

@@ -26,9 +26,18 @@ export function chooseTheme(choice: ThemeChoice): void {
 	} else {
 		root.dataset.theme = choice;
 	}
+	colourTheBar(choice);
 	try {
 		localStorage.setItem(KEY, choice);
 	} catch {
 		// The page still shows the choice; only the next one will not know it.
+	}
+}
+
+/** The browser's own bar follows the device; a theme that was chosen rules it too, so that none stays bright by night. */
+function colourTheBar(choice: ThemeChoice): void {
+	for (const bar of document.querySelectorAll<HTMLMetaElement>('meta[name="theme-color"]')) {
+		bar.dataset.device ??= bar.media;
+		bar.media = choice === 'device' ? bar.dataset.device : bar.dataset.of === choice ? 'all' : 'not all';
 	}
 }
