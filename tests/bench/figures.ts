@@ -1,19 +1,45 @@
-/** The value below which that share of the values lies, the nearest rank. */
-export function percentile(values: readonly number[], share: number): number {
-	const sorted = [...values].sort((a, b) => a - b);
-	return sorted[Math.max(0, Math.ceil(share * sorted.length) - 1)] ?? Number.NaN;
+/** Times of answers, in milliseconds. */
+export interface Figures {
+	count: number;
+	p50: number;
+	p95: number;
+	max: number;
 }
 
-/** One line of the table: what was measured, its figures in milliseconds, and whether it holds its limit. */
-export function line(
-	name: string,
-	values: readonly number[],
-	limit?: { share: number; ms: number }
-): boolean {
-	const [half, most] = [percentile(values, 0.5), percentile(values, 0.95)];
-	const holds = limit === undefined || percentile(values, limit.share) <= limit.ms;
-	const words = limit ? `limit ${limit.ms.toFixed(0)} ms ${holds ? 'held' : 'NOT HELD'}` : '';
-	const figures = [half, most].map((each) => each.toFixed(1).padStart(8)).join(' ');
-	console.log(`${name.padEnd(52)} ${String(values.length).padStart(5)} ${figures}  ${words}`);
-	return holds;
+/** @param times in any order, at least one */
+export function figuresOf(times: readonly number[]): Figures {
+	const sorted = times.toSorted((a, b) => a - b);
+	const at = (share: number) => sorted[Math.min(sorted.length - 1, Math.floor(sorted.length * share))] ?? 0;
+	return { count: sorted.length, p50: at(0.5), p95: at(0.95), max: sorted.at(-1) ?? 0 };
+}
+
+export function shown(name: string, { count, p50, p95, max }: Figures): string {
+	const ms = (value: number) => `${value.toFixed(1)} ms`;
+	return `${name.padEnd(34)} ${count} answers, ${ms(p50)} in the middle, ${ms(p95)} at 95 %, ${ms(max)} at most`;
+}
+
+/** The middle of several runs: one run on a busy machine says little. */
+export function middleOf(values: readonly number[]): number {
+	return values.toSorted((a, b) => a - b)[values.length >> 1] ?? 0;
+}
+
+/** Do something many times, so many at once, and say how long each took. @throws what the work throws */
+export async function timed(
+	count: number,
+	atOnce: number,
+	work: (n: number) => Promise<void>
+): Promise<number[]> {
+	const times: number[] = [];
+	let next = 0;
+	const one = async () => {
+		while (next < count) {
+			const n = next;
+			next += 1;
+			const started = performance.now();
+			await work(n);
+			times.push(performance.now() - started);
+		}
+	};
+	await Promise.all(Array.from({ length: atOnce }, one));
+	return times;
 }
