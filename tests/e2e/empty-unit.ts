@@ -3,7 +3,7 @@ import { Client, newKey, signInAs } from '../support/api';
 import type { Product } from '../support/server';
 import { mailArrives } from './fakes';
 
-const EMPTY = 'Plover Ward';
+export const EMPTY = 'Plover Ward';
 const SENTENCE = 'harbour lights over nine boats';
 
 /** A new unit where nobody lies yet, and one person of each of those roles who belongs to it alone. */

