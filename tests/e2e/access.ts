@@ -19,9 +19,7 @@ const FOR_FINGERS = [
 	'/p/[token]',
 	'/loose-ends',
 	'/ward',
-	'/escalations/[id]',
-	'/patients/[id]/escalate',
-	'/patients/[id]/clearances/[clearanceId]'
+	'/escalations/[id]'
 ];
 
 /** What keeps somebody from reading or working the page that is open on a phone; it stands as before afterwards. */

@@ -9,7 +9,15 @@ export function catchFocus(outcome: HTMLElement | null): void {
 	}
 }
 
+/** How many pictures of the screen what closes has to give the focus back, or to lose it: about half a second. */
+const MOMENTS = 30;
+
 /** As `catchFocus`, for what closes over the page: once it is gone, and what it was opened from may be gone with it. */
-export function catchFocusAfter(landing: string): void {
-	setTimeout(() => catchFocus(document.getElementById(landing)));
+export function catchFocusAfter(landing: string, moments = MOMENTS): void {
+	requestAnimationFrame(() => {
+		catchFocus(document.getElementById(landing));
+		if (moments > 1) {
+			catchFocusAfter(landing, moments - 1);
+		}
+	});
 }
