@@ -1,6 +1,6 @@
 import { page } from '$app/state';
 
-/** What a form action answered, as far as any of them has it. */
+/** What a page knows of the form that it came back with; each action answers with some of it. */
 type Answered = {
 	form?: { id?: string; valid?: boolean; message?: string; data?: Record<string, unknown> };
 };

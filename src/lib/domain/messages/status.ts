@@ -1,6 +1,6 @@
 /**
  * The status of a message or a call at the SMS gateway. Its callbacks come twice, late and in any order; a status never
- * moves backwards, and the two that end a message stay.
+ * moves backwards, and one that ends a message stays, except that a delivery outweighs the word that it failed.
  */
 export const SMS_STATUSES = ['queued', 'sending', 'sent', 'delivered', 'undelivered', 'failed'] as const;
 export type SmsStatus = (typeof SMS_STATUSES)[number];
