@@ -2,11 +2,12 @@ import { gzipSync } from 'node:zlib';
 import type { Page } from '@playwright/test';
 
 /**
- * How far a page may move while it loads, as Web Vitals measures it; they call 0.1 good. The device's own face stands in
- * at the same measure, so that words keep their places; a line that only just fits may still break otherwise, and moves
- * all that is below it by its height, 20 of the 844 px of a phone.
+ * How far a page may move while it loads, as Web Vitals measures it; they call 0.1 good, and half of it is asked for.
+ * The device's own face stands in at the same measure, so that words keep their places; a line that only just fits may
+ * still break otherwise where the face comes late, and moves all that is below it by its height, 20 of the 844 px of a
+ * phone: two such lines are forgiven, something that comes in between is not.
  */
-export const SHIFT = 0.03;
+export const SHIFT = 0.05;
 
 /** What each script of the build weighs after gzip, KiB, by its address: many pages load the same. */
 const known = new Map<string, Promise<number>>();
