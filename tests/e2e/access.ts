@@ -19,7 +19,10 @@ const FOR_FINGERS = [
 	'/p/[token]',
 	'/loose-ends',
 	'/ward',
-	'/escalations/[id]'
+	'/escalations/[id]',
+	'/patients/[id]/escalate',
+	'/patients/[id]/clearances',
+	'/patients/[id]/clearances/[clearanceId]'
 ];
 
 /** What keeps somebody from reading or working the page that is open on a phone; it stands as before afterwards. */
