@@ -62,7 +62,7 @@ export async function look(page: Page, one: VisitedPage): Promise<string[]> {
 	}
 	found.push(...(await overweight(page, one)));
 	const onPhone = page.viewportSize()?.width === PHONE.width;
-	found.push(...(await (onPhone ? barriers(page, one) : barriersAtDesk(page))));
+	found.push(...(await (onPhone ? barriers(page, one) : barriersAtDesk(page, one))));
 	expect(await stretch(page), `${one.page} has words`).toBeGreaterThan(5);
 	return [...found, ...(await spoilt(page))];
 }
