@@ -58,7 +58,7 @@ for (const [size, viewport] of Object.entries({ phone: PHONE, desk: DESK })) {
 		const page = await pageOf(browser, product.url, null, viewport);
 		const faults: Faults = {};
 		for (const one of open) {
-			expect(await wordsFor(page, one.address), one.page).not.toBeNull();
+			expect(one.posted ?? (await wordsFor(page, one.address)), one.page).not.toBeNull();
 			faults[one.page] = await look(page, one);
 		}
 		expect(faultsIn(faults)).toEqual([]);
