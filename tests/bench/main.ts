@@ -100,7 +100,7 @@ async function main(): Promise<void> {
 		await callbacks(product);
 		const drawn = await drawLanes(product);
 		check(
-			`a ward of sixty is drawn within ${LANES_LIMIT_MS} ms: ${drawn.toFixed(1)} ms`,
+			`a ward of sixty is drawn within ${LANES_LIMIT_MS} ms of its data: ${drawn.toFixed(1)} ms`,
 			drawn <= LANES_LIMIT_MS
 		);
 	} finally {

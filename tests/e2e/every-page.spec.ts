@@ -1,6 +1,7 @@
 import { expect, test } from '@playwright/test';
 import { SIGN_INS } from '../support/api';
 import { startProduct, type Product } from '../support/server';
+import { HOME } from './access';
 import { everyPage, type VisitedPage } from './every-page';
 import { DESK, PHONE } from './people';
 import { spoilt, stretch } from './room';
@@ -24,7 +25,7 @@ test.beforeAll(async () => {
 });
 test.afterAll(() => product?.stop());
 
-/** What the roles before were shown: a page that says the same to a second role is not looked at again. */
+/** What the roles before were shown: a page but home that says the same to a second role is not looked at again. */
 const shown = new Set<string>();
 
 for (const role of Object.keys(SIGN_INS) as (keyof typeof SIGN_INS)[]) {
@@ -38,7 +39,7 @@ for (const role of Object.keys(SIGN_INS) as (keyof typeof SIGN_INS)[]) {
 		for (const one of inside) {
 			const said = await wordsFor(page, one.address);
 			letIn += said === null ? 0 : 1;
-			if (said !== null && !shown.has(said)) {
+			if (said !== null && (one.page === HOME || !shown.has(said))) {
 				shown.add(said);
 				faults[one.page] = await look(page, one);
 			}
@@ -57,7 +58,7 @@ for (const [size, viewport] of Object.entries({ phone: PHONE, desk: DESK })) {
 		const page = await pageOf(browser, product.url, null, viewport);
 		const faults: Faults = {};
 		for (const one of open) {
-			expect(await wordsFor(page, one.address), one.page).not.toBeNull();
+			expect(one.posted ?? (await wordsFor(page, one.address)), one.page).not.toBeNull();
 			faults[one.page] = await look(page, one);
 		}
 		expect(faultsIn(faults)).toEqual([]);

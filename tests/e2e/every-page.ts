@@ -1,11 +1,16 @@
-import { expect } from '@playwright/test';
+import { expect, type Page, type Response } from '@playwright/test';
+import { SIGN_IN_FIELDS } from '../../src/lib/domain/accounts/kept';
 import { admit, newKey, signInAs, type Client } from '../support/api';
 import { pages } from '../support/route-files';
 import type { Product } from '../support/server';
 import { mailArrives, reply, textArrives } from './fakes';
 
-/** Pages that have no address to go to: shown in answer to a form alone, or a part of another test. */
-const NOT_VISITED = ['/sign-in/send', '/style', '/style/form'];
+/** A part of another test. */
+const NOT_VISITED = ['/style', '/style/form'];
+/** Pages that no link leads to, and what is sent to them by the form that does. */
+const POSTED: Record<string, Readonly<Record<string, string>>> = {
+	'/sign-in/send': { [SIGN_IN_FIELDS.to]: '/loose-ends', body: 'Drain out at two, the wound is dry.' }
+};
 const PHONE_NUMBER = '+353865550177';
 
 /** One page at an address that leads to something. */
@@ -14,6 +19,26 @@ export interface VisitedPage {
 	readonly page: string;
 	readonly address: string;
 	readonly group: string;
+	/** The fields of the form that leads to it, where no link does. */
+	readonly posted?: Readonly<Record<string, string>> | undefined;
+}
+
+/** Goes to a page as a person comes to it: by its address, or in answer to a form. */
+export async function open(page: Page, { address, posted }: VisitedPage): Promise<Response | null> {
+	if (posted) {
+		const postData = new URLSearchParams(posted).toString();
+		await page.route(
+			(url) => url.pathname === address,
+			(route) => {
+				const { origin } = new URL(route.request().url());
+				const type = 'application/x-www-form-urlencoded';
+				const headers = { ...route.request().headers(), origin, 'content-type': type };
+				return route.continue({ method: 'POST', postData, headers });
+			},
+			{ times: 1 }
+		);
+	}
+	return page.goto(address, { waitUntil: 'load' });
 }
 
 /**
@@ -35,7 +60,8 @@ export async function everyPage(product: Product, now = Date.now()): Promise<Vis
 			if (!real.every(Boolean)) {
 				throw new Error(`No address is known for ${address}: give it one in tests/e2e/every-page.ts.`);
 			}
-			return real.map((one = '', at) => ({ page: at === 0 ? address : one, address: one, group }));
+			const posted = POSTED[address];
+			return real.map((one = '', at) => ({ page: at === 0 ? address : one, address: one, group, posted }));
 		});
 }
 

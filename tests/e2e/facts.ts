@@ -5,6 +5,7 @@
 export const FACTS: Record<string, readonly string[]> = {
 	'/': ['After open-heart surgery', 'Try it as one of them', 'Surgeon H. Castellane'],
 	'/sign-in': ['E-mail address', 'Password'],
+	'/sign-in/send': ['Drain out at two, the wound is dry.', 'E-mail address', 'Password'],
 	'/invite/[token]': ['new.admin@saltmarsh.example', 'At least 15 characters'],
 	'/p/[token]': ['No visit is planned for you now.'],
 	'/t/[token]': ['Raised by a therapist.', 'nobody has it yet', 'I take it'],

@@ -2,10 +2,13 @@ import { expect, type Browser, type Page } from '@playwright/test';
 import { FIRST_KIB, MORE_KIB } from '../../src/cli/lib/weigh.mjs';
 import { signInAs, type SIGN_INS } from '../support/api';
 import { barriers, barriersAtDesk } from './access';
-import type { VisitedPage } from './every-page';
+import { open, type VisitedPage } from './every-page';
 import { expectConnected, PHONE } from './people';
 import { spoilt, stretch } from './room';
 import { loadedFrom, scriptWeight, SHIFT, shiftSoFar, watchShift } from './weight';
+
+/** The patient's own page, and the one that keeps a form that came without script. */
+const WITHOUT_SCRIPT = ['/p/[token]', '/sign-in/send'];
 
 /** What was found at pages, by their names; nothing for a page that is as it should be. */
 export type Faults = Record<string, string[]>;
@@ -51,7 +54,7 @@ function wordsOfMain(html: string): string {
  * somebody cannot read or work it, longer words do not fit.
  */
 export async function look(page: Page, one: VisitedPage): Promise<string[]> {
-	await page.goto(one.address, { waitUntil: 'load' });
+	await open(page, one);
 	await (one.group === 'app' ? expectConnected(page) : page.waitForLoadState('networkidle'));
 	const own = new URL(page.url()).origin;
 	const foreign = (await loadedFrom(page)).filter(({ origin }) => origin !== own);
@@ -62,16 +65,16 @@ export async function look(page: Page, one: VisitedPage): Promise<string[]> {
 	}
 	found.push(...(await overweight(page, one)));
 	const onPhone = page.viewportSize()?.width === PHONE.width;
-	found.push(...(await (onPhone ? barriers(page, one) : barriersAtDesk(page))));
+	found.push(...(await (onPhone ? barriers(page, one) : barriersAtDesk(page, one))));
 	expect(await stretch(page), `${one.page} has words`).toBeGreaterThan(5);
 	return [...found, ...(await spoilt(page))];
 }
 
-/** The patient's own page has no script at all; a page that should have some and loads none is broken. */
+/** A page that should have script and loads none is broken. */
 async function overweight(page: Page, one: VisitedPage): Promise<string[]> {
 	const kib = await scriptWeight(page);
 	const most = one.group !== 'app' || one.page === '/loose-ends' ? FIRST_KIB : FIRST_KIB + MORE_KIB;
-	return kib > most || kib <= 1 !== (one.page === '/p/[token]')
+	return kib > most || kib <= 1 !== WITHOUT_SCRIPT.includes(one.page)
 		? [`loads ${kib.toFixed(1)} KiB of script`]
 		: [];
 }

@@ -1,5 +1,5 @@
 import { test, type Browser, type Page } from '@playwright/test';
-import { everyPage, type VisitedPage } from '../e2e/every-page';
+import { everyPage, open, type VisitedPage } from '../e2e/every-page';
 import { SIGN_INS } from '../support/api';
 import { startProduct, type Product } from '../support/server';
 import { AT, freshFolder, lookAs, shoot, SIZES, THEMES, type Size, type Theme, type Who } from './camera';
@@ -24,11 +24,11 @@ test.beforeAll(async () => {
 test.afterAll(() => product?.stop());
 
 /** Every picture of one page, in all sizes; the page is loaded anew for each, because some draw otherwise on a phone. */
-async function inAllSizes(page: Page, { page: name, address }: VisitedPage, who: string, theme: Theme) {
+async function inAllSizes(page: Page, one: VisitedPage, who: string, theme: Theme) {
 	for (const size of Object.keys(SIZES) as Size[]) {
 		await page.setViewportSize(SIZES[size]);
-		await page.goto(address, { waitUntil: 'load' });
-		await shoot(page, name, who, size, theme);
+		await open(page, one);
+		await shoot(page, one.page, who, size, theme);
 	}
 }
 

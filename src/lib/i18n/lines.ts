@@ -17,10 +17,18 @@ export function linesWords(lines: readonly LineKind[]): string {
 	return lines.map((kind) => LINE_WORDS[kind]()).join(', ');
 }
 
-/** `oxygen 2 L/min` or `no oxygen`; empty where nobody has said either. */
+/** `oxygen 2 L/min` or `no oxygen`; where nobody has said either, that it is not known, as it is said of the drug. */
 export function oxygenWords(oxygen: Pick<StandingOxygen, 'lpm'> | null): string {
 	if (oxygen === null) {
-		return '';
+		return m.lines_oxygen_unknown();
 	}
 	return oxygen.lpm === 0 ? m.lines_oxygen_none() : m.lines_oxygen_flow({ lpm: oxygen.lpm });
+}
+
+/** The same beside the term: `2 L/min`, `none` or `not known`. */
+export function oxygenFact(oxygen: Pick<StandingOxygen, 'lpm'> | null): string {
+	if (oxygen === null) {
+		return m.lines_fact_unknown();
+	}
+	return oxygen.lpm === 0 ? m.lines_fact_none() : m.lines_fact_flow({ lpm: oxygen.lpm });
 }

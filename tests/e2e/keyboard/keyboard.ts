@@ -12,7 +12,8 @@ export class Keyboard {
 
 	private async stop(key: string): Promise<void> {
 		await this.page.keyboard.press(key);
-		expect(await lostNow(this.page)).toEqual([]);
+		// Polled: the page scrolls to what has the focus with its next picture.
+		await this.isSomewhere();
 	}
 
 	/** What was done has left the focus on something, and in view. */
@@ -33,8 +34,12 @@ export class Keyboard {
 	}
 
 	/** To that control, and press it. */
-	async press(wanted: Locator, key: 'Enter' | 'Space' = 'Enter'): Promise<void> {
-		await this.reach(wanted);
+	async press(
+		wanted: Locator,
+		key: 'Enter' | 'Space' = 'Enter',
+		way: 'Tab' | 'Shift+Tab' = 'Tab'
+	): Promise<void> {
+		await this.reach(wanted, way);
 		await this.page.keyboard.press(key);
 	}
 
@@ -45,7 +50,7 @@ export class Keyboard {
 	}
 
 	/** To a question with its answers in view, and with the arrow keys to that answer. */
-	async choose(question: Locator, name: string): Promise<void> {
+	async choose(question: Locator, name: string | RegExp): Promise<void> {
 		const answer = question.getByRole('radio', { name, exact: true });
 		await this.reach(question);
 		const answers = await question.getByRole('radio').count();
@@ -54,6 +59,20 @@ export class Keyboard {
 		}
 		await this.page.keyboard.press('Space');
 		await expect(answer).toBeChecked();
+	}
+
+	/** To a list of the browser's own, and by the first letters of an entry to it. */
+	async pick(list: Locator, letters: string): Promise<void> {
+		await this.reach(list);
+		await this.page.keyboard.type(letters);
+		await expect(list.locator('option:checked')).toHaveText(new RegExp(`^${letters}`));
+	}
+
+	/** By the bar of places, which is before what was read so far. */
+	async goTo(place: string, address: RegExp): Promise<void> {
+		const places = this.page.getByRole('navigation', { name: 'Places' });
+		await this.press(places.getByRole('link', { name: new RegExp(`^${place}`) }), 'Enter', 'Shift+Tab');
+		await this.arrive(address);
 	}
 
 	/** From a row of a list to that control of another by arrow keys. */

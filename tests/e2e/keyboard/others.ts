@@ -1,14 +1,14 @@
 import { expect } from '@playwright/test';
 import { addDays, localDateOf } from '../../../src/lib/domain/core/time';
-import { signInAs } from '../../support/api';
 import { typed, ZONE } from '../journey/day';
 import type { Keyboard } from './keyboard';
 import { BED, PATIENT, rowsOf, type Shift } from './shift';
 
 /** The surgeon clears it to 90 degrees, and the thread of the therapist says so. */
 export async function clearIt(shift: Shift): Promise<void> {
-	const surgeon = await shift.at('surgeon');
+	const { surgeon } = shift;
 	const { page } = surgeon;
+	await surgeon.goTo('Loose ends', /\/loose-ends/);
 	const row = rowsOf(page).filter({ hasText: BED }).filter({ hasText: 'Arm stage' });
 	await surgeon.reach(rowsOf(page).locator('[data-row-step]').first());
 	await surgeon.goDown(row.getByRole('link', { name: /^Answer/ }));
@@ -21,16 +21,8 @@ export async function clearIt(shift: Shift): Promise<void> {
 	await expect(shift.therapist.page.getByText(/Cleared with limits.*90 degrees/).first()).toBeVisible();
 }
 
-/** The nurse takes a call from home, is there, and settles it. */
+/** The nurse takes the call from home, is there, and settles it. */
 export async function takeAndSettle(shift: Shift): Promise<void> {
-	const therapist = await signInAs(shift.product.url, 'therapist');
-	await therapist.post(`/api/episodes/${shift.episodeId}/escalations`, {
-		grade: 'high',
-		situation: 'Systolic pressure fell from 128 to 108.',
-		background: 'Bypass.',
-		assessment: 'Too much.',
-		request: 'Please come.'
-	});
 	const nurse = await shift.at('nurse');
 	const { page } = nurse;
 	await nurse.press(
@@ -69,14 +61,9 @@ async function settle(nurse: Keyboard): Promise<void> {
 
 /** The coordinator books a visit, and signs out. */
 export async function bookAndSignOut(shift: Shift): Promise<void> {
-	const coordinator = await shift.at('coordinator');
+	const { coordinator } = shift;
 	const { page } = coordinator;
-	await coordinator.reach(
-		page.getByRole('navigation', { name: 'Places' }).getByRole('link', { name: /^Visits/ }),
-		'Shift+Tab'
-	);
-	await page.keyboard.press('Enter');
-	await coordinator.arrive(/\/visits/);
+	await coordinator.goTo('Visits', /\/visits/);
 	const book = page.getByRole('button', { name: 'Book a visit' });
 	await coordinator.press(book);
 	const sheet = page.getByRole('dialog');
@@ -85,8 +72,7 @@ export async function bookAndSignOut(shift: Shift): Promise<void> {
 	await expect(sheet).toBeHidden();
 	await expect(book).toBeFocused();
 	await page.keyboard.press('Enter');
-	await coordinator.reach(sheet.getByLabel(/^Patient/));
-	await page.keyboard.type(PATIENT.slice(0, 6));
+	await coordinator.pick(sheet.getByLabel(/^Patient/), PATIENT.slice(0, 6));
 	await coordinator.type(sheet.getByLabel(/^Day/), typed(addDays(localDateOf(Date.now(), ZONE), 10)));
 	await coordinator.type(sheet.getByLabel(/^Time/), '10:00');
 	await coordinator.press(sheet.getByRole('button', { name: 'Book', exact: true }));

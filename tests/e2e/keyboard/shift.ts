@@ -1,5 +1,5 @@
 import type { Browser, Locator, Page } from '@playwright/test';
-import { admit, signInAs, type Client } from '../../support/api';
+import { admit, signInAs } from '../../support/api';
 import { startProduct, type Product } from '../../support/server';
 import { DESK, seat, type Seat } from '../people';
 import { Keyboard } from './keyboard';
@@ -14,27 +14,22 @@ type Who = 'therapist' | 'surgeon' | 'nurse' | 'coordinator';
 /** The hospital, and its people at browsers of their own, none of whom has a pointer. */
 export class Shift {
 	readonly #seats: Seat[] = [];
-	#therapist: Keyboard | null = null;
+	readonly #people = new Map<Who, Keyboard>();
+	/** The patient's, once they were admitted. */
+	episodeId = '';
 
 	private constructor(
 		readonly browser: Browser,
-		readonly product: Product,
-		readonly episodeId: string
+		readonly product: Product
 	) {}
 
-	/** The therapist has begun: two patients of theirs, about one of whom the surgeon has put a question. */
+	/** A patient whom somebody else has referred already waits; the therapist and the coordinator have come. */
 	static async begin(browser: Browser): Promise<Shift> {
 		const product = await startProduct({ env: { RATE_LIMIT_SCALE: '100' } });
-		const therapist = await signInAs(product.url, 'therapist');
-		const surgeon = await signInAs(product.url, 'surgeon');
-		const mine = await referred(surgeon, BED, PATIENT);
-		await referred(surgeon, OTHER_BED, 'Enda Roche');
-		await therapist.post(`/api/referrals/${mine.id}/accept`);
-		const { user } = (await therapist.get('/api/me')).body as unknown as { user: { id: string } };
-		const question = { body: 'Who goes to her today?', mentions: [user.id] };
-		await surgeon.post(`/api/threads/${mine.threadId}/entries`, question);
-		const shift = new Shift(browser, product, mine.episodeId);
-		shift.#therapist = await shift.at('therapist');
+		await referOther(product.url);
+		const shift = new Shift(browser, product);
+		await shift.at('therapist');
+		await shift.at('coordinator');
 		return shift;
 	}
 
@@ -45,10 +40,23 @@ export class Shift {
 
 	/** Whose page stays open while the others answer. */
 	get therapist(): Keyboard {
-		if (!this.#therapist) {
-			throw new Error('The therapist has not begun.');
+		return this.#seated('therapist');
+	}
+
+	get surgeon(): Keyboard {
+		return this.#seated('surgeon');
+	}
+
+	get coordinator(): Keyboard {
+		return this.#seated('coordinator');
+	}
+
+	#seated(who: Who): Keyboard {
+		const person = this.#people.get(who);
+		if (!person) {
+			throw new Error(`The ${who} has not come.`);
 		}
-		return this.#therapist;
+		return person;
 	}
 
 	/** What the browsers complained of. */
@@ -62,20 +70,21 @@ export class Shift {
 		this.#seats.push(one);
 		const keyboard = new Keyboard(one.page);
 		await keyboard.signIn(who);
+		this.#people.set(who, keyboard);
 		return keyboard;
 	}
 }
 
-/** A patient in that bed, for whom the surgeon asks for physiotherapy. */
-async function referred(surgeon: Client, bed: string, name: string) {
-	const patient = { name, birthDate: '1951-03-12', sex: 'female', mrn: `SG-${bed}` };
-	const episodeId = await admit(await signInAs(surgeon.url, 'coordinator'), { patient, bed });
-	const { body } = await surgeon.post(`/api/episodes/${episodeId}/referrals`, {
+/** The other patient, for whom the surgeon asked for physiotherapy before anybody came. */
+async function referOther(url: string): Promise<void> {
+	const patient = { name: 'Enda Roche', birthDate: '1951-03-12', sex: 'female', mrn: 'SG-K2' };
+	const episodeId = await admit(await signInAs(url, 'coordinator'), { patient, bed: OTHER_BED });
+	const surgeon = await signInAs(url, 'surgeon');
+	await surgeon.post(`/api/episodes/${episodeId}/referrals`, {
 		service: 'physiotherapy',
 		priority: 'soon',
 		question: 'Begin to mobilise, slow at first.'
 	});
-	return { episodeId, id: String(body.id), threadId: String(body.threadId) };
 }
 
 /** What waits on the person whose home page is open. */

@@ -1,5 +1,6 @@
 import { expect } from '@playwright/test';
 import { WIDE } from '../access';
+import type { Keyboard } from './keyboard';
 import { BED, OTHER_BED, PATIENT, rowsOf, type Shift } from './shift';
 
 /** The focus goes from row to row by arrow keys, and to the first and the last. */
@@ -42,6 +43,11 @@ export async function doneInPlace(shift: Shift): Promise<void> {
 	await expect(row).toHaveCount(1);
 	await page.keyboard.press('ArrowDown');
 	await expect(page.getByLabel(step, { exact: true })).toBeFocused();
+	const mine = rowsOf(page).filter({ hasText: BED });
+	await therapist.goDown(mine.getByRole('button', { name: /^Accept/ }));
+	await page.keyboard.press('Enter');
+	await expect(mine).toHaveCount(0);
+	await therapist.isSomewhere();
 }
 
 /** From the row to the thread, an answer there, and on to the patient and to the bedside. */
@@ -61,16 +67,44 @@ export async function replyAndGoOn(shift: Shift): Promise<void> {
 	await expect(page.getByRole('main').getByText('I do, at eleven.')).toBeVisible();
 	await expect(composer).toHaveValue('');
 	await expect(composer).toBeFocused();
-	await therapist.reach(page.getByRole('link', { name: new RegExp(PATIENT) }), 'Shift+Tab');
-	await page.keyboard.press('Enter');
-	await therapist.arrive(new RegExp(`/patients/${shift.episodeId}$`));
+	await toBedside(shift);
+}
+
+/** From a page of the patient over the nameboard to them, and on to the bedside. */
+async function toBedside({ therapist, episodeId }: Shift): Promise<void> {
+	const { page } = therapist;
+	await therapist.press(page.getByRole('link', { name: new RegExp(PATIENT) }), 'Enter', 'Shift+Tab');
+	await therapist.arrive(new RegExp(`/patients/${episodeId}$`));
 	await therapist.press(page.getByRole('link', { name: 'Record a session' }));
 	await therapist.arrive(/\/bedside\//);
 }
 
-/** Readings are typed, and a rule stops the patient while they are. */
-export async function typeReadings(shift: Shift): Promise<void> {
+/** Readings are typed, a rule stops the patient while they are, and the session is recorded. */
+export async function recordSession({ therapist }: Shift): Promise<void> {
+	const { page } = therapist;
+	await typeReadings(therapist);
+	await therapist.press(page.getByRole('button', { name: 'Record the session' }));
+	await expect(page.getByRole('heading', { name: /^Recorded/ })).toBeFocused();
+}
+
+/** A second time the readings stop the patient, and the stop itself leads to the call, filled in. */
+export async function raiseFromStop(shift: Shift): Promise<void> {
 	const { therapist } = shift;
+	const { page } = therapist;
+	await toBedside(shift);
+	await typeReadings(therapist);
+	// From the last value that brought the stop, past all that could still be typed.
+	await therapist.press(page.getByRole('link', { name: 'Go on to the stop' }).last());
+	await therapist.press(page.getByRole('alert').getByRole('button', { name: 'Escalate' }));
+	await therapist.arrive(/\/escalate/);
+	await expect(page.getByLabel(/^Situation/)).toHaveValue(/128.*108/);
+	await therapist.choose(page.getByRole('group', { name: /^How urgent/ }), /^High/);
+	await therapist.press(page.getByRole('button', { name: 'Raise it' }));
+	await therapist.arrive(/\/escalations\//);
+	await expect(page.getByText('nobody has it yet').first()).toBeVisible();
+}
+
+async function typeReadings(therapist: Keyboard): Promise<void> {
 	const { page } = therapist;
 	// Two columns, and a stop that lies over the lower part of both.
 	await page.setViewportSize(WIDE);
@@ -92,8 +126,6 @@ export async function typeReadings(shift: Shift): Promise<void> {
 	await expect(reading('Systolic')).toBeFocused();
 	await therapist.type(reading('Diastolic'), '66');
 	await therapist.type(reading('Pulse'), '89');
-	await therapist.press(page.getByRole('button', { name: 'Record the session' }));
-	await expect(page.getByRole('heading', { name: /^Recorded/ })).toBeFocused();
 }
 
 /** From the session to the thread, and there for a clearance. */
@@ -103,10 +135,7 @@ export async function askForClearance(shift: Shift): Promise<void> {
 	await therapist.press(page.getByRole('link', { name: 'The thread', exact: true }));
 	await therapist.arrive(/\/threads\//);
 	await therapist.press(page.locator('summary', { hasText: 'Ask for a clearance' }));
-	const kind = page.getByLabel(/For what/);
-	await therapist.reach(kind);
-	await page.keyboard.type('Arm st');
-	await expect(kind).toHaveValue('arm-stage');
+	await therapist.pick(page.getByLabel(/For what/), 'Arm st');
 	await therapist.type(page.getByLabel(/What you ask/), 'Wound dry. May it start?');
 	const ask = page.getByRole('button', { name: 'Ask', exact: true });
 	await therapist.press(ask);

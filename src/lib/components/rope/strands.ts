@@ -10,6 +10,9 @@ export const STRAND_DYES = {
 } as const;
 export type StrandName = keyof typeof STRAND_DYES;
 
+/** All of them, as they are named to a reader. */
+export const STRANDS = ['medical', 'nursing', 'therapy', 'patient'] as const satisfies readonly StrandName[];
+
 /** Laid in this order; the patient's hemp is no strand of the laid rope, but has loose ends like everybody. */
 export const LAID_STRANDS = ['medical', 'nursing', 'therapy'] as const satisfies readonly StrandName[];
 

@@ -19,9 +19,9 @@ describe('procedureWords', () => {
 
 describe('wardBeware', () => {
 	it.each([
-		[true, ['rate-slowing drug']],
-		[false, []],
-		[null, ['rate-slowing drug: not known']]
+		[true, ['rate-slowing drug', 'oxygen: not known']],
+		[false, ['oxygen: not known']],
+		[null, ['rate-slowing drug: not known', 'oxygen: not known']]
 	])('without precautions, drug %s: %j', (betaBlocked, words) => {
 		expect(
 			wardBeware(
@@ -63,6 +63,6 @@ describe('precautions that nobody knows', () => {
 		const precautions = { ...NOTHING, basis };
 		expect(
 			wardBeware({ precautions, betaBlocked: false, nothingByMouth: false, lines: [], oxygen: null }, READER)
-		).toEqual([words]);
+		).toEqual([words, 'oxygen: not known']);
 	});
 });

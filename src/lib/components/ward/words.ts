@@ -14,7 +14,7 @@ export function procedureWords(
 	return [dayWords(item, reader), item.procedure].filter(Boolean).join(DOT);
 }
 
-/** That nothing goes by mouth, precautions, the drug that slows the heart, oxygen and lines, where there are any; a drug nobody knows of is judged as given. */
+/** That nothing goes by mouth, precautions, the drug that slows the heart, oxygen, and lines where there are any. What nobody knows of drug and oxygen is said: a drug is then judged as given. */
 export function wardBeware(
 	item: Pick<EpisodeListItem, 'precautions' | 'betaBlocked' | 'nothingByMouth' | 'lines' | 'oxygen'>,
 	reader: Reader

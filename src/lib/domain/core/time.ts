@@ -101,9 +101,23 @@ export function localParts(at: Instant, zone: Zone): LocalParts {
 	};
 }
 
-/** The local day that holds the instant. */
+/** So many days are remembered at once; a page of sixty patients asks for some two hundred. */
+const DAYS_KEPT = 500;
+const knownDays = new Map<string, LocalDate>();
+
+/** The local day that holds the instant. Of now it is asked for each fact of each patient, and finding it is slow. */
 export function localDateOf(at: Instant, zone: Zone): LocalDate {
-	return localParts(at, zone).date;
+	const asked = `${at} ${zone}`;
+	const known = knownDays.get(asked);
+	if (known !== undefined) {
+		return known;
+	}
+	const { date } = localParts(at, zone);
+	if (knownDays.size >= DAYS_KEPT) {
+		knownDays.clear();
+	}
+	knownDays.set(asked, date);
+	return date;
 }
 
 /** The wall time of the instant, seconds cut off. */
