@@ -34,6 +34,11 @@ export function rowsOf(
 	}));
 }
 
+/** What merely happened, such as a visit that was attended: read in passing, in little room. */
+export function isPassing({ entry, ask, isNew }: ThreadRow): boolean {
+	return entry.kind === 'event' && entry.asked.length === 0 && ask === null && !isNew;
+}
+
 /** A way beside the rope, from row to row; `to` is null while it hangs loose. */
 export interface AskWay {
 	from: string;
