@@ -2,12 +2,14 @@ import { db } from '../db';
 import { env } from '../env';
 import { linkToken } from '../links';
 import { routes } from '$lib/routes';
+import { attemptsOf, knownProviderIds } from './attempts';
 import type { Channel, Outgoing, Sent } from './channels/channel';
 import type { OutboxRow } from './change';
 import type { Claimed } from './claim';
+import { recordInterrupted } from './interrupted';
 import { recheck } from './recheck';
 import type { Receiver } from './verdict';
-import { attemptsOf, knownProviderIds, recordAttempt, recordInterrupted, releaseRow } from './record';
+import { recordAttempt, releaseRow } from './record';
 
 /** An attempt that is not over by then counts as unknown; well within the lease. */
 const ATTEMPT_LIMIT_MS = 20_000;

@@ -6,7 +6,7 @@ import { attempt } from './attempt';
 import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels/channel';
 import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
-import { takeBackForeign } from './record';
+import { takeBackForeign } from './interrupted';
 import { SilentMessages } from './silent';
 
 /**
