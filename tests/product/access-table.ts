@@ -125,6 +125,7 @@ export const API: Record<string, Row> = {
 	'GET /api/episodes/[id]/patient-page': { roles: SEEING, answers: [404] },
 	'POST /api/episodes/[id]/patient-page': { roles: ['coordinator', 'therapist'], answers: [422] },
 	'POST /api/patient-pages/[id]/end': { roles: ['coordinator', 'therapist'], answers: [404] },
+	'POST /api/devices': { roles: 'signed-in', answers: [422] },
 	'GET /api/closed-days': { roles: 'signed-in', answers: [200] },
 	'POST /api/closed-days': { roles: ['coordinator', 'admin'], answers: [422] },
 	'POST /api/closed-days/[id]/open': { roles: ['coordinator', 'admin'], answers: [404] },

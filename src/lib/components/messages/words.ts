@@ -9,7 +9,8 @@ import { ROLE_WORDS } from '../shell/role-words';
 export const CHANNEL_WORDS: Record<MessageChannel, () => string> = {
 	sms: m.log_channel_sms,
 	mail: m.log_channel_mail,
-	voice: m.log_channel_voice
+	voice: m.log_channel_voice,
+	push: m.log_channel_push
 };
 
 export const KIND_WORDS: Record<MessageKind, () => string> = {
@@ -19,7 +20,8 @@ export const KIND_WORDS: Record<MessageKind, () => string> = {
 	answer: m.log_kind_answer,
 	mail: m.log_kind_mail,
 	visit: m.log_kind_visit,
-	page: m.log_kind_page
+	page: m.log_kind_page,
+	trial: m.log_kind_trial
 };
 
 export const STATE_WORDS: Record<MessageState, () => string> = {

@@ -15,10 +15,10 @@ const ended = or(
 		inArray(outbox.state, ['failed', 'undelivered']),
 		or(
 			isNotNull(outbox.handledAt),
-			// These are no loose ends of anybody: an invitation is sent anew, a call has its text.
+			// These are no loose ends of anybody: an invitation is sent anew, a call or a notice on a device has its text.
 			eq(outbox.kind, 'notice'),
 			eq(outbox.refKind, 'account'),
-			eq(outbox.channel, 'voice')
+			inArray(outbox.channel, ['voice', 'push'])
 		)
 	)
 );

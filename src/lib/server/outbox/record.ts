@@ -3,6 +3,7 @@ import type { Tx } from '../db';
 import { patients } from '../db/schema';
 import { seekOtherWay } from '../escalations/next-channel';
 import { stateByStatus } from '../messages/delivery';
+import { noteDevice } from '../push/fate';
 import { addAttempt, startOfSchedule, type Attempt } from './attempts';
 import { changing, type OutboxRow } from './change';
 import { nextState } from './next-state';
@@ -38,6 +39,7 @@ export async function recordAttempt(
 			providerId: next.providerId ?? null
 		});
 		await noteOptOut(tx, row, attempt);
+		await noteDevice(tx, row, attempt);
 		if (mine && (next.state === 'failed' || told?.state === 'undelivered')) {
 			await seekOtherWay(tx, row, 'failed', attempt.endedAt);
 		} else if (mine && attempt.outcome.kind === 'unknown') {

@@ -18,7 +18,8 @@ export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }
 	sms: { all: 5, routine: 3 },
 	mail: { all: 3, routine: 3 },
 	// A telephone rings for calls for help alone.
-	voice: { all: 5, routine: 0 }
+	voice: { all: 5, routine: 0 },
+	push: { all: 5, routine: 3 }
 };
 const BEAT_MS = 1_000;
 /** A server that stops waits no longer for a gateway; the lease then tells the next start that the end is unknown. */
