@@ -58,7 +58,10 @@ export const FACT_WORDS: Record<MailFact, () => string> = {
 	place: m.log_tells_place,
 	minutes: m.log_tells_minutes,
 	count: m.log_tells_count,
-	link: m.log_tells_link
+	link: m.log_tells_link,
+	unit: m.log_tells_unit,
+	bed: m.log_tells_bed,
+	grade: m.log_tells_grade
 };
 
 const OUTCOME_WORDS: Record<string, () => string> = {

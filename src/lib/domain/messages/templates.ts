@@ -65,7 +65,8 @@ export const STAFF_NOTICES = {
 export const STAFF_MAILS = {
 	referrer: mails.referrerMail,
 	summary: mails.summaryMail,
-	invitation: mails.invitationMail
+	invitation: mails.invitationMail,
+	call: mails.callMail
 };
 
 export const PATIENT_MAILS = {

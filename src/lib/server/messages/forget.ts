@@ -15,10 +15,11 @@ const ended = or(
 		inArray(outbox.state, ['failed', 'undelivered']),
 		or(
 			isNotNull(outbox.handledAt),
-			// These are no loose ends of anybody: an invitation is sent anew, a call or a notice on a device has its text.
+			// These are no loose ends of anybody: an invitation is sent anew, what went beside or after a text has that text.
 			eq(outbox.kind, 'notice'),
 			eq(outbox.refKind, 'account'),
-			inArray(outbox.channel, ['voice', 'push'])
+			inArray(outbox.channel, ['voice', 'push']),
+			and(eq(outbox.kind, 'escalation'), eq(outbox.channel, 'mail'))
 		)
 	)
 );

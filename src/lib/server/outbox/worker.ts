@@ -16,7 +16,7 @@ import { SilentMessages } from './silent';
  */
 export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }> = {
 	sms: { all: 5, routine: 3 },
-	mail: { all: 3, routine: 3 },
+	mail: { all: 4, routine: 3 },
 	// A telephone rings for calls for help alone.
 	voice: { all: 5, routine: 0 },
 	push: { all: 5, routine: 3 }

@@ -4,6 +4,18 @@ import { escalationSteps, pushDevices } from '../db/schema';
 import { newId } from '../ids';
 import type { NewMessage } from '../outbox/enqueue';
 
+const BESIDE = ':push:';
+
+/** The key of the notice that goes to a device beside a text of that key; `%` stands for any device. */
+export function noticeKey(textKey: string, deviceId: string): string {
+	return textKey + BESIDE + deviceId;
+}
+
+/** The key of the text that a notice goes beside. */
+export function textKeyOf(key: string): string {
+	return key.split(BESIDE)[0] ?? key;
+}
+
 /**
  * The notices that go beside a text, at once and not after it: one to each device of its reader. Where the text stands
  * in the history of a call for help, they stand beside it.
@@ -31,7 +43,7 @@ function copyFor(
 	deviceId: string
 ): NewMessage & { id: string } {
 	return {
-		...{ id: newId(), channel: 'push', causeKey: `${causeKey}:push:${deviceId}`, deviceId },
+		...{ id: newId(), channel: 'push', causeKey: noticeKey(causeKey, deviceId), deviceId },
 		...{ kind, userId, linkId, ref, notBefore, expiresAt, subject, body: text }
 	};
 }
