@@ -7,6 +7,7 @@ import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels
 import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
 import { takeBackForeign } from './interrupted';
+import { RingingTelephones } from './ringing';
 import { SilentMessages } from './silent';
 
 /**
@@ -52,6 +53,7 @@ export class OutboxWorker {
 	/** Whether the last attempt on a channel got through; not there before the first. */
 	readonly #working = new Map<ChannelName, boolean>();
 	readonly #silent: SilentMessages;
+	readonly #ringing: RingingTelephones;
 	#asking: Promise<unknown> = Promise.resolve();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
@@ -62,6 +64,7 @@ export class OutboxWorker {
 	constructor(options: OutboxOptions) {
 		this.#channels = options.channels;
 		this.#silent = new SilentMessages(options.channels);
+		this.#ringing = new RingingTelephones(options.channels);
 		this.#owner = options.owner ?? newId();
 		this.#now = options.now ?? now;
 		this.#random = options.random ?? Math.random;
@@ -78,7 +81,7 @@ export class OutboxWorker {
 
 	#beat(): void {
 		this.wake();
-		this.#asking = this.#silent.ask(this.#now());
+		this.#asking = Promise.all([this.#silent.ask(this.#now()), this.#ringing.hangUp(this.#now())]);
 	}
 
 	/** Ask for a round soon. */

@@ -51,6 +51,11 @@ export interface Channel {
 	 * no usable answer. Left out where the gateway cannot be asked.
 	 */
 	statusOf?: (providerId: string) => Promise<Told | null>;
+	/**
+	 * End what is under way, such as a telephone that rings; false where it could not be, and may be tried again. Left
+	 * out where nothing is ever under way.
+	 */
+	end?: (providerId: string) => Promise<boolean>;
 }
 
 /** A status as the gateway words it, with its number of the error where there was one. */
