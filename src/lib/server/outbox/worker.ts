@@ -7,6 +7,7 @@ import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels
 import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
 import { takeBackForeign } from './interrupted';
+import { forgetProbes, Probes } from './probes';
 import { RingingTelephones } from './ringing';
 import { SilentMessages } from './silent';
 
@@ -54,6 +55,7 @@ export class OutboxWorker {
 	readonly #working = new Map<ChannelName, boolean>();
 	readonly #silent: SilentMessages;
 	readonly #ringing: RingingTelephones;
+	readonly #probes: Probes;
 	#asking: Promise<unknown> = Promise.resolve();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
@@ -65,6 +67,7 @@ export class OutboxWorker {
 		this.#channels = options.channels;
 		this.#silent = new SilentMessages(options.channels);
 		this.#ringing = new RingingTelephones(options.channels);
+		this.#probes = new Probes(options.channels);
 		this.#owner = options.owner ?? newId();
 		this.#now = options.now ?? now;
 		this.#random = options.random ?? Math.random;
@@ -81,7 +84,8 @@ export class OutboxWorker {
 
 	#beat(): void {
 		this.wake();
-		this.#asking = Promise.all([this.#silent.ask(this.#now()), this.#ringing.hangUp(this.#now())]);
+		const at = this.#now();
+		this.#asking = Promise.all([this.#silent.ask(at), this.#ringing.hangUp(at), this.#probes.run(at)]);
 	}
 
 	/** Ask for a round soon. */
@@ -122,6 +126,7 @@ export class OutboxWorker {
 		await this.#round;
 		const patience = new Promise((resolve) => setTimeout(resolve, STOP_PATIENCE_MS).unref());
 		await Promise.race([Promise.all([...this.#endings(), this.#asking]), patience]);
+		forgetProbes();
 	}
 
 	/** Claim as many as there is room for and set them going. Rounds never overlap. */

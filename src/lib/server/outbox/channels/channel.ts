@@ -51,6 +51,8 @@ export interface Channel {
 	 * no usable answer. Left out where the gateway cannot be asked.
 	 */
 	statusOf?: (providerId: string) => Promise<Told | null>;
+	/** Is the gateway there, and does it know us? Nothing is sent for it. Left out where it cannot be asked. */
+	probe?: () => Promise<boolean>;
 	/**
 	 * End what is under way, such as a telephone that rings; false where it could not be, and may be tried again. Left
 	 * out where nothing is ever under way.
