@@ -36,6 +36,7 @@ export const API: Record<string, Row> = {
 	'POST /api/hooks/voice-status': { roles: 'everyone', answers: [403] },
 	'GET /api/messages': { roles: ['admin'], answers: [200] },
 	'GET /api/messages/export': { roles: ['admin'], answers: [200] },
+	'GET /api/messages/received': { roles: ['admin'], answers: [200] },
 	'GET /api/messages/[id]': { roles: ['admin'], answers: [404] },
 	'POST /api/messages/[id]/resend': { roles: ['admin'], answers: [422] },
 	'GET /api/delivery': { roles: 'signed-in', answers: [200] },

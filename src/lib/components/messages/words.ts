@@ -71,6 +71,29 @@ const OUTCOME_WORDS: Record<string, () => string> = {
 	unknown: m.log_outcome_unknown
 };
 
+const RECEIVED_WORDS: Record<string, () => string> = {
+	yes: m.log_received_yes,
+	no: m.log_received_no,
+	acknowledged: m.log_received_acknowledged,
+	stop: m.log_received_stop,
+	start: m.log_received_start,
+	help: m.log_received_help,
+	take: m.log_received_take,
+	staff: m.log_received_staff,
+	'staff-stop': m.log_received_staff_stop,
+	'shared-staff': m.log_received_shared_staff,
+	'shared-number': m.log_received_shared_number,
+	'unknown-number': m.log_received_unknown_number
+};
+
+/** What something that came in was taken for. */
+export function receivedWords(understoodAs: string): string {
+	return (RECEIVED_WORDS[understoodAs] ?? m.log_received_other)();
+}
+
+/** Why the words of something that came in are not shown. */
+export const UNREAD_WORDS = { removed: m.log_body_gone, private: m.log_received_private };
+
 /** Of these a person may have to do something. */
 export function isStuck(state: MessageState): boolean {
 	return state === 'failed' || state === 'undelivered' || state === 'held';
