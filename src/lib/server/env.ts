@@ -20,6 +20,7 @@ const schema = z.object({
 	TEST_CLOCK_AT: z.iso
 		.datetime({ offset: true, message: 'must be an instant like 2030-05-16T12:41:00Z' })
 		.optional(),
+	TEST_CRASH: flag,
 	RATE_LIMIT_SCALE: z.coerce.number().positive().default(1),
 	HOSPITAL_NAME: z.string().default('Saltmarsh General'),
 	HOSPITAL_ZONE: z.string().default('Europe/Dublin'),
@@ -77,6 +78,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		testClock: e.DEMO && e.TEST_CLOCK,
 		/** Where the demonstration's clock stands still, milliseconds UTC; null where it goes. */
 		testClockAt: e.DEMO && e.TEST_CLOCK && e.TEST_CLOCK_AT ? Date.parse(e.TEST_CLOCK_AT) : null,
+		/** Whether a test wants the process killed once; see `src/lib/server/outbox/crash-point.ts`. */
+		testCrash: e.DEMO && e.TEST_CLOCK && e.TEST_CRASH,
 		// Only the demonstration may loosen its request limits; production keeps them.
 		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
 		hospital: {

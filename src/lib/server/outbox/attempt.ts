@@ -6,6 +6,7 @@ import { attemptsOf, knownProviderIds } from './attempts';
 import type { Channel, Outgoing, Sent } from './channels/channel';
 import type { OutboxRow } from './change';
 import type { Claimed } from './claim';
+import { crashWhereAsked } from './crash-point';
 import { recordInterrupted } from './interrupted';
 import { recheck } from './recheck';
 import type { Receiver } from './verdict';
@@ -56,6 +57,7 @@ async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sendin
 	const sent =
 		(await lookedUp(row, message, sending.channel)) ??
 		(await within(ATTEMPT_LIMIT_MS, sending.channel.send(message), NEVER_ENDED));
+	crashWhereAsked(sent);
 	await recordAttempt(
 		row,
 		sending.owner,
