@@ -6,6 +6,8 @@ export default {
 	preprocess: vitePreprocess(),
 	kit: {
 		adapter: adapter(),
+		// Only who turns notices on gets it: `src/lib/client/notices.ts`.
+		serviceWorker: { register: false },
 		// Kit's own check covers form content types only and refuses the SMS gateway's posts, which
 		// carry no Origin. `src/lib/server/http/origin.ts` checks every write of every content type.
 		csrf: { trustedOrigins: ['*'] },

@@ -5,7 +5,7 @@ import { CHROMIUM, shellOrChromium } from '../src/cli/lib/chromium.mjs';
 const report = process.env.JOURNEYS_REPORT;
 
 /** People's whole ways through the product; they run in the browser that people have, the rest in its shell. */
-const JOURNEYS = /(main-job|call-for-help|keyboard)\.spec/;
+const JOURNEYS = /(main-job|call-for-help|keyboard|notices)\.spec/;
 
 const ARGS = [
 	'--no-sandbox',

@@ -1,5 +1,6 @@
 import { faultRoutes } from './common/faults';
-import { createFake, listen, sendJson } from './common/http';
+import { createBoth } from './common/both';
+import { listen, sendJson, type Route } from './common/http';
 import { endWithLauncher } from './common/launcher';
 import { readSettings } from './common/settings';
 import { callRoutes } from './gateway/calls';
@@ -8,19 +9,32 @@ import { messageRoutes } from './gateway/messages';
 import { pageRoutes } from './gateway/page';
 import { phoneRoutes } from './gateway/phones';
 import { createGateway, SMS_MODES } from './gateway/state';
+import { makeCertificate } from './push/certificate';
+import { deviceRoutes } from './push/devices';
+import { pushRoutes } from './push/messages';
+import { createPushService, PUSH_MODES } from './push/state';
 
-/** The stand-in for the hosted SMS gateway, and the page of phones and mailbox. Run as a process of its own. */
+/**
+ * The stand-ins for the hosted SMS gateway and for the browsers' push service, and the page of phones and mailbox. Run
+ * as a process of its own. Push services speak TLS alone: that stands on the same port.
+ */
 endWithLauncher();
 const settings = readSettings(process.env);
 const gateway = createGateway(settings);
-const server = createFake([
+const push = createPushService();
+const certificate = await makeCertificate();
+const routes: Route[] = [
 	['GET', /^\/healthz$/, ({ response }) => sendJson(response, 200, { status: 'ok', fake: 'sms' })],
 	...faultRoutes(gateway.fault, SMS_MODES),
 	...messageRoutes(gateway),
 	...callRoutes(gateway),
 	...phoneRoutes(gateway),
 	...mailboxRoutes(settings.mailPort),
+	...faultRoutes(push.fault, PUSH_MODES, /^\/push\/faults$/),
+	...pushRoutes(push),
+	...deviceRoutes(push, certificate.cert),
 	...pageRoutes()
-]);
+];
+const server = createBoth(routes, certificate);
 await listen(server, settings.smsPort, 'FAKE_SMS_PORT');
 console.log(`Phones and mailbox: http://127.0.0.1:${settings.smsPort}`);

@@ -42,6 +42,7 @@ export const routes = {
 	adminLimits: (unitId?: string) => (unitId ? `/admin/limits?unit=${unitId}` : '/admin/limits'),
 	adminMessages: (query = '') => `/admin/messages${query}`,
 	adminMessage: (id: string) => `/admin/messages/${id}`,
+	adminReceived: (query = '') => `/admin/messages/received${query}`,
 	adminTemplates: () => '/admin/messages/templates',
 	messagesExport: (query = '') => `/api/messages/export${query}`,
 	adminAccounts: () => '/admin/accounts',

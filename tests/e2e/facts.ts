@@ -16,6 +16,7 @@ export const FACTS: Record<string, readonly string[]> = {
 	'/admin/limits/activities': ['Ankle pumps'],
 	'/admin/messages': ['Everything that has left', 'What the templates say', 'Rona Ferris'],
 	'/admin/messages/[id]': ['Of use until', 'Cause', 'Identifier at the gateway'],
+	'/admin/messages/received': ['What came in'],
 	'/admin/messages/templates': ['Tern Ward'],
 	'/bedside/[episodeId]': ['This page needs script. Write the readings down', 'Beatrix Thornhaven'],
 	'/cover': ['Nurse in charge', 'Rona Ferris', 'Hilde Castellane'],

@@ -88,7 +88,7 @@ describe('mail', () => {
 });
 
 describe('the page', () => {
-	it.each(['/', '/page.css', '/page.js', '/phones.js', '/mailbox.js', '/elements.js', '/rope.js'])(
+	it.each(['/', '/page.css', '/page.js', '/phones.js', '/notices.js', '/mailbox.js', '/elements.js', '/rope.js'])(
 		'serves %s under a policy of its own',
 		async (path) => {
 			const response = await fetch(fakes.smsUrl + path);

@@ -49,15 +49,15 @@ const sentIds = (channel: ScriptedChannel) => channel.sent.map(({ id }) => id);
 describe('a limit for each channel', () => {
 	it('mail that hangs leaves reminders and calls for help their places', async () => {
 		mail.hold();
-		const mails = await times(MAX_IN_FLIGHT.mail.all + 4, mailTo);
+		const mails = await times(MAX_IN_FLIGHT.mail.routine + 4, mailTo);
 		const sending = worker();
 		const settled = sending.settle();
-		await until(() => mail.sent.length === MAX_IN_FLIGHT.mail.all);
+		await until(() => mail.sent.length === MAX_IN_FLIGHT.mail.routine);
 		const later = [await reminder(), await alert()];
 		sending.start();
 		await until(async () => (await Promise.all(later.map(rowOf))).every(({ state }) => state === 'accepted'));
 		expect(sentIds(sms).toSorted()).toEqual(later.toSorted());
-		expect(mail.inFlight).toBe(MAX_IN_FLIGHT.mail.all);
+		expect(mail.inFlight).toBe(MAX_IN_FLIGHT.mail.routine);
 		mail.release();
 		await settled;
 		await sending.stop();

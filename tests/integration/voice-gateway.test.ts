@@ -1,14 +1,17 @@
 import { eq } from 'drizzle-orm';
-import { afterEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { db } from '$lib/server/db';
-import { escalations, outbox, users } from '$lib/server/db/schema';
+import { escalations, outbox, smsStatuses, users } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
+import { takeEscalation } from '$lib/server/escalations/take';
+import { untakeEscalation } from '$lib/server/escalations/undo';
 import { openChannels } from '$lib/server/outbox/channels';
 import type { Channel, Outgoing } from '$lib/server/outbox/channels/channel';
 import { voiceChannel } from '$lib/server/outbox/channels/voice';
+import { RingingTelephones } from '$lib/server/outbox/ringing';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { phoneOf, sendJson } from '../support/fakes';
-import { HOSPITAL_NOW, newPhone } from '../support/hospital';
+import { contextOf, HOSPITAL_NOW, newPhone } from '../support/hospital';
 import { addAlert, addEscalation, rowOf } from '../support/messages';
 import { openGateway } from '../support/open-gateway';
 
@@ -71,6 +74,68 @@ describe('the SDK against the stand-in', () => {
 		};
 		const impatient = sms && voiceChannel(sms, addresses, 100);
 		expect((await open(impatient).send(outgoing(newPhone()))).outcome).toMatchObject({ kind: 'unknown' });
+	});
+});
+
+describe('a telephone that rings', () => {
+	const { sms } = env();
+	/** The stand-in picks up at once: of a telephone that nobody has picked up yet nothing further is told. */
+	const silent = sms && voiceChannel(sms, { digitUrl: `${hooks.url}/none`, statusUrl: `${hooks.url}/none` });
+	beforeEach(() => db().update(outbox).set({ state: 'skipped' }));
+
+	/** A high call whose text was refused, so that the telephone of a nurse rings and is not picked up yet. */
+	async function ringing(channel: Channel | null = silent) {
+		const { nurse } = hospital.people;
+		const phone = newPhone();
+		await db().update(users).set({ phone }).where(eq(users.id, nurse.id));
+		const id = await addEscalation(hospital);
+		const { id: textId } = await addAlert(id, nurse.id);
+		const text = { send: () => Promise.resolve(REFUSED), lookUp: null };
+		const channels = { sms: text, mail: null, voice: channel };
+		await new OutboxWorker({ channels, now: () => HOSPITAL_NOW }).settle();
+		const [call] = await db()
+			.select()
+			.from(outbox)
+			.where(eq(outbox.causeKey, `call:${textId}`));
+		return { id, phone, message: call?.id ?? '', telephones: new RingingTelephones(channels) };
+	}
+	const REFUSED = { outcome: { kind: 'permanent', reason: 'bad-address' }, code: '21211' } as const;
+	const statusAt = async (phone: string) => (await phoneOf(gateway, phone))?.calls.at(-1)?.status;
+
+	it('is hung up when somebody else takes the call, and rings again when that is taken back', async () => {
+		const { id, phone, message, telephones } = await ringing();
+		expect(await telephones.hangUp(HOSPITAL_NOW)).toBe(0);
+		await takeEscalation(contextOf(hospital.people.physician), id, null);
+		expect(await telephones.hangUp(HOSPITAL_NOW + 1_000)).toBe(1);
+		expect(await statusAt(phone)).toBe('completed');
+		expect(await rowOf(message)).toMatchObject({ state: 'cancelled', stateReason: 'taken' });
+		await untakeEscalation(contextOf(hospital.people.physician), id);
+		expect((await rowOf(message)).state).toBe('ready');
+	});
+
+	it('is let be when who takes it is the one it rings for', async () => {
+		const { id, telephones } = await ringing();
+		await takeEscalation(contextOf(hospital.people.nurse), id, null);
+		expect(await telephones.hangUp(HOSPITAL_NOW)).toBe(0);
+	});
+
+	it('and was picked up is let be', async () => {
+		const { id, phone, telephones } = await ringing(open(voice));
+		await callTo(phone, (_, said) => said.length > 0);
+		const told = async () => (await db().select().from(smsStatuses)).map(({ status }) => status);
+		await expect.poll(told).toContain('sent');
+		await takeEscalation(contextOf(hospital.people.physician), id, null);
+		expect(await telephones.hangUp(HOSPITAL_NOW)).toBe(0);
+		expect(await statusAt(phone)).toBe('in-progress');
+	});
+
+	it('is tried again while the gateway is down', async () => {
+		const { id, telephones } = await ringing();
+		await takeEscalation(contextOf(hospital.people.physician), id, null);
+		await gateway.fault('sms', '500');
+		expect(await telephones.hangUp(HOSPITAL_NOW)).toBe(0);
+		await gateway.fault('sms', 'ok');
+		expect(await telephones.hangUp(HOSPITAL_NOW)).toBe(1);
 	});
 });
 

@@ -47,6 +47,9 @@ export const ACTIONS: Record<string, ActionRow> = {
 	'/account?/password': { fields: { current: 'not it', next: 'eight white egrets fly' }, roles: 'signed-in' },
 	'/account?/token': { fields: { name: 'ward clock' }, roles: 'signed-in' },
 	'/account?/revoke': { fields: { id: 'none' }, roles: 'signed-in' },
+	'/account?/standIn': { fields: {}, roles: 'signed-in' },
+	'/account?/try': { fields: { id: 'none' }, roles: 'signed-in' },
+	'/account?/forget': { fields: { id: 'none' }, roles: 'signed-in' },
 	'/admin/accounts?/account': {
 		fields: { name: 'Una Fairlead', email: 'surgeon@saltmarsh.example', role: 'nurse' },
 		roles: ADMIN

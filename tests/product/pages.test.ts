@@ -25,6 +25,7 @@ const INSIDE: Record<string, readonly Role[]> = {
 	'/admin/limits/activities': ['admin'],
 	'/admin/messages': ['admin'],
 	'/admin/messages/[id]': ['admin'],
+	'/admin/messages/received': ['admin'],
 	'/admin/messages/templates': ['admin'],
 	'/admin/accounts': ['admin'],
 	'/admin/accounts/[id]': ['admin'],

@@ -19,18 +19,19 @@ export function takeFault<Mode extends string>(fault: Fault<Mode | 'ok'>): Mode 
 	return mode;
 }
 
-/** `GET /faults` and `PUT /faults {mode, count?}` over one fault; `changed` runs after each change. */
+/** `GET /faults` and `PUT /faults {mode, count?}` over one fault, or at the path that is given. */
 export function faultRoutes<Mode extends string>(
 	fault: Fault<Mode | 'ok'>,
-	modes: readonly (Mode | 'ok')[]
+	modes: readonly (Mode | 'ok')[],
+	path = /^\/faults$/
 ): Route[] {
 	const tell = ({ response }: Exchange) =>
 		sendJson(response, 200, { mode: fault.mode, count: fault.left, modes });
 	return [
-		['GET', /^\/faults$/, tell],
+		['GET', path, tell],
 		[
 			'PUT',
-			/^\/faults$/,
+			path,
 			async (exchange) => {
 				const body = await readJson(exchange.request);
 				const mode = modes.find((known) => known === body.mode);

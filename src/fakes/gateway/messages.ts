@@ -9,15 +9,27 @@ const PAGE_SIZE = 50;
 const PAGE_SIZE_LIMIT = 1000;
 const ACCOUNT = `/${API_VERSION}/Accounts/([^/]+)`;
 
-/** The Messages resource: send, look up one, list. */
+/** The Messages resource: send, look up one, list; and the account itself, which tells whether one is known here. */
 export function messageRoutes(gateway: Gateway): Route[] {
 	const list = new RegExp(`^${ACCOUNT}/Messages\\.json$`);
 	const one = new RegExp(`^${ACCOUNT}/Messages/([^/]+)\\.json$`);
+	const account = new RegExp(`^${ACCOUNT}\\.json$`);
 	return [
+		['GET', account, reading(gateway, (exchange) => fetchAccount(gateway, exchange))],
 		['POST', list, sending(gateway, (exchange, mode) => acceptMessage(gateway, exchange, mode))],
 		['GET', list, reading(gateway, (exchange) => listMessages(gateway, exchange))],
 		['GET', one, reading(gateway, (exchange) => fetchMessage(gateway, exchange))]
 	];
+}
+
+function fetchAccount({ settings }: Gateway, { response, url }: Exchange): void {
+	const { accountSid } = settings;
+	sendJson(response, 200, {
+		sid: accountSid,
+		friendly_name: 'Ropewalk',
+		status: 'active',
+		uri: url.pathname
+	});
 }
 
 async function acceptMessage(gateway: Gateway, exchange: Exchange, mode: SmsMode): Promise<Accepted> {

@@ -19,7 +19,7 @@ export function pageRoutes(): Route[] {
 	return [
 		file(/^\/$/, 'text/html; charset=utf-8', ownFile('index.html')),
 		file(/^\/page\.css$/, 'text/css; charset=utf-8', ownFile('page.css')),
-		...['page.js', 'phones.js', 'mailbox.js', 'elements.js', 'rope.js'].map((name) =>
+		...['page.js', 'phones.js', 'notices.js', 'mailbox.js', 'elements.js', 'rope.js'].map((name) =>
 			file(new RegExp(`^/${name.replace('.', '\\.')}$`), 'text/javascript; charset=utf-8', ownFile(name))
 		),
 		file(/^\/favicon\.svg$/, 'image/svg+xml', ownFile('favicon.svg')),

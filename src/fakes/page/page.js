@@ -1,5 +1,6 @@
 import { byId, el, timeOf } from './elements.js';
 import { showMails } from './mailbox.js';
+import { showNotices } from './notices.js';
 import { openFromAddress, showPhones } from './phones.js';
 import { drawMark } from './rope.js';
 
@@ -23,12 +24,24 @@ const MAIL_WORDS = {
 	drop: 'cuts off in the middle'
 };
 
+const PUSH_WORDS = {
+	ok: 'works',
+	410: 'has lost every device (410)',
+	404: 'knows no device (404)',
+	429: 'answers 429, too many',
+	500: 'answers 500',
+	hang: 'never answers',
+	refuse: 'closes every connection',
+	'accept-then-drop': 'shows it, then is cut off'
+};
+
 /** @type {Map<string, string>} */
 const tags = new Map();
 
 drawMark(byId('mark'));
 const faults = [
 	faultChoice('sms-fault', '/faults', SMS_WORDS),
+	faultChoice('push-fault', '/push/faults', PUSH_WORDS),
 	faultChoice('mail-fault', '/mailbox/faults', MAIL_WORDS)
 ];
 await poll();
@@ -40,6 +53,7 @@ async function poll() {
 	try {
 		await Promise.all([
 			read('/phones', showPhones),
+			read('/push/devices', showNotices),
 			read('/mailbox/mails', showMails),
 			...faults.map((refresh) => refresh())
 		]);

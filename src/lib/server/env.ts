@@ -20,6 +20,7 @@ const schema = z.object({
 	TEST_CLOCK_AT: z.iso
 		.datetime({ offset: true, message: 'must be an instant like 2030-05-16T12:41:00Z' })
 		.optional(),
+	TEST_CRASH: flag,
 	RATE_LIMIT_SCALE: z.coerce.number().positive().default(1),
 	HOSPITAL_NAME: z.string().default('Saltmarsh General'),
 	HOSPITAL_ZONE: z.string().default('Europe/Dublin'),
@@ -34,6 +35,19 @@ const schema = z.object({
 	SMS_FROM: text,
 	SMTP_URL: text,
 	MAIL_FROM: z.string().default('Ropewalk <ropewalk@saltmarsh.example>'),
+	PUSH_PUBLIC_KEY: z
+		.string()
+		.regex(/^[\w-]{87}$/, 'must have 87 characters of base64url')
+		.optional(),
+	PUSH_PRIVATE_KEY: z
+		.string()
+		.regex(/^[\w-]{43}$/, 'must have 43 characters of base64url')
+		.optional(),
+	PUSH_CONTACT: z
+		.string()
+		.regex(/^(mailto:|https:)/, 'must begin with mailto: or https:')
+		.default('mailto:ropewalk@saltmarsh.example'),
+	PUSH_HOSTS: z.string().default('fcm.googleapis.com,updates.push.services.mozilla.com,web.push.apple.com'),
 	MESSAGE_DAYS: z.coerce.number().int().min(1).default(30),
 	RECEIVED_DAYS: z.coerce.number().int().min(1).default(365),
 	LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'silent']).default('info')
@@ -64,6 +78,8 @@ export function readEnv(source: Record<string, string | undefined>) {
 		testClock: e.DEMO && e.TEST_CLOCK,
 		/** Where the demonstration's clock stands still, milliseconds UTC; null where it goes. */
 		testClockAt: e.DEMO && e.TEST_CLOCK && e.TEST_CLOCK_AT ? Date.parse(e.TEST_CLOCK_AT) : null,
+		/** Whether a test wants the process killed once; see `src/lib/server/outbox/crash-point.ts`. */
+		testCrash: e.DEMO && e.TEST_CLOCK && e.TEST_CRASH,
 		// Only the demonstration may loosen its request limits; production keeps them.
 		rateLimitScale: e.DEMO ? e.RATE_LIMIT_SCALE : 1,
 		hospital: {
@@ -77,6 +93,7 @@ export function readEnv(source: Record<string, string | undefined>) {
 		linkSecret: e.LINK_SECRET ?? null,
 		sms: smsGateway(e),
 		mail: mailGateway(e),
+		push: pushGateway(e),
 		/** Who mails and calendar files come from, also where no mail server is set up. */
 		mailFrom: e.MAIL_FROM,
 		/** How many days what messages said is kept: ours after their end, those that came in after they came. */
@@ -112,6 +129,30 @@ function mailGateway(e: Raw) {
 		};
 	}
 	return e.SMTP_URL ? { url: e.SMTP_URL, from: e.MAIL_FROM, requireTls: true } : null;
+}
+
+/** Known to everybody, and good for nothing: in a demonstration only the stand-in is written to. */
+const DEMO_PUSH_KEYS = {
+	publicKey: 'BCUqBUPzc8sZBbo-sVUma2KndlyELjcDmgY6M0tHfGdBlwWYk7NZJTT4gHJ3CxTlRbpWlv5YSsqjo0Zq5OQni_I',
+	privateKey: 'cD1WGVM6uNtYF_LCdXJamAZWeWP4HS2eulqWF5AZLN4'
+};
+
+/**
+ * The key that push services know us by, whom they may write to about it, and the services that may be written to.
+ * Null without keys: then no device can be turned on, and what waits for one is held.
+ */
+function pushGateway(e: Raw) {
+	const contact = e.PUSH_CONTACT;
+	if (e.DEMO) {
+		const standIn = `http://127.0.0.1:${e.FAKE_SMS_PORT}`;
+		return { ...DEMO_PUSH_KEYS, contact, hosts: [new URL(standIn).host], standIn };
+	}
+	if (!e.PUSH_PUBLIC_KEY || !e.PUSH_PRIVATE_KEY) {
+		return null;
+	}
+	const hosts = e.PUSH_HOSTS.split(',').map((host) => host.trim().toLowerCase());
+	const keys = { publicKey: e.PUSH_PUBLIC_KEY, privateKey: e.PUSH_PRIVATE_KEY };
+	return { ...keys, contact, hosts: hosts.filter((host) => host !== ''), standIn: null };
 }
 
 let current: Env | null = null;

@@ -63,27 +63,85 @@ function stepLine(
 		return { ...line, words, fate: null, failed: true };
 	}
 	const words = m.escalations_step_told_person({ name, post: POST_WORDS[post]() });
-	return { ...line, words, ...fateOf(message, channel === 'voice') };
+	return { ...line, words, ...fateOf(message, channel) };
 }
 
-type Fate = { text: () => string; call: () => string; failed: boolean };
+type Fate = Record<'text' | 'call' | 'other', () => string> & { failed: boolean };
 
-/** What the states of a text message, or of a telephone call, mean to somebody who waits for it to be heard. */
+/** What the states of a text message, of a telephone call, and of what goes out in another way mean to somebody who waits for it to be heard. */
 const FATES: Record<string, Fate> = {
-	ready: { text: m.escalations_fate_waiting, call: m.escalations_call_waiting, failed: false },
-	sending: { text: m.escalations_fate_sending, call: m.escalations_call_sending, failed: false },
-	accepted: { text: m.escalations_fate_accepted, call: m.escalations_call_accepted, failed: false },
-	delivered: { text: m.escalations_fate_delivered, call: m.escalations_call_delivered, failed: false },
-	undelivered: { text: m.escalations_fate_undelivered, call: m.escalations_call_undelivered, failed: true },
-	failed: { text: m.escalations_fate_failed, call: m.escalations_call_failed, failed: true },
-	skipped: { text: m.escalations_fate_skipped, call: m.escalations_call_skipped, failed: true },
-	held: { text: m.escalations_fate_held, call: m.escalations_call_held, failed: true },
-	cancelled: { text: m.escalations_fate_cancelled, call: m.escalations_call_cancelled, failed: false }
+	ready: {
+		text: m.escalations_fate_waiting,
+		call: m.escalations_call_waiting,
+		other: m.escalations_other_waiting,
+		failed: false
+	},
+	sending: {
+		text: m.escalations_fate_sending,
+		call: m.escalations_call_sending,
+		other: m.escalations_other_sending,
+		failed: false
+	},
+	accepted: {
+		text: m.escalations_fate_accepted,
+		call: m.escalations_call_accepted,
+		other: m.escalations_other_accepted,
+		failed: false
+	},
+	delivered: {
+		text: m.escalations_fate_delivered,
+		call: m.escalations_call_delivered,
+		other: m.escalations_other_accepted,
+		failed: false
+	},
+	undelivered: {
+		text: m.escalations_fate_undelivered,
+		call: m.escalations_call_undelivered,
+		other: m.escalations_other_failed,
+		failed: true
+	},
+	failed: {
+		text: m.escalations_fate_failed,
+		call: m.escalations_call_failed,
+		other: m.escalations_other_failed,
+		failed: true
+	},
+	skipped: {
+		text: m.escalations_fate_skipped,
+		call: m.escalations_call_skipped,
+		other: m.escalations_other_skipped,
+		failed: true
+	},
+	held: {
+		text: m.escalations_fate_held,
+		call: m.escalations_call_held,
+		other: m.escalations_other_held,
+		failed: true
+	},
+	cancelled: {
+		text: m.escalations_fate_cancelled,
+		call: m.escalations_call_cancelled,
+		other: m.escalations_other_cancelled,
+		failed: false
+	}
 };
 
-function fateOf(message: string | null, byTelephone: boolean): { fate: string | null; failed: boolean } {
+type Channel = EscalationView['steps'][number]['channel'];
+
+function fateOf(message: string | null, channel: Channel): { fate: string | null; failed: boolean } {
 	const known = message === null ? undefined : FATES[message];
-	return known
-		? { fate: byTelephone ? known.call() : known.text(), failed: known.failed }
-		: { fate: message, failed: false };
+	return known ? { fate: wordsOf(known, channel), failed: known.failed } : { fate: message, failed: false };
+}
+
+function wordsOf({ text, call, other }: Fate, channel: Channel): string {
+	switch (channel) {
+		case 'voice':
+			return call();
+		case 'push':
+			return m.escalations_other_way({ way: m.escalations_way_push(), fate: other() });
+		case 'mail':
+			return m.escalations_other_way({ way: m.escalations_way_mail(), fate: other() });
+		default:
+			return text();
+	}
 }

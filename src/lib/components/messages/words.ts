@@ -9,7 +9,8 @@ import { ROLE_WORDS } from '../shell/role-words';
 export const CHANNEL_WORDS: Record<MessageChannel, () => string> = {
 	sms: m.log_channel_sms,
 	mail: m.log_channel_mail,
-	voice: m.log_channel_voice
+	voice: m.log_channel_voice,
+	push: m.log_channel_push
 };
 
 export const KIND_WORDS: Record<MessageKind, () => string> = {
@@ -19,7 +20,8 @@ export const KIND_WORDS: Record<MessageKind, () => string> = {
 	answer: m.log_kind_answer,
 	mail: m.log_kind_mail,
 	visit: m.log_kind_visit,
-	page: m.log_kind_page
+	page: m.log_kind_page,
+	trial: m.log_kind_trial
 };
 
 export const STATE_WORDS: Record<MessageState, () => string> = {
@@ -56,7 +58,10 @@ export const FACT_WORDS: Record<MailFact, () => string> = {
 	place: m.log_tells_place,
 	minutes: m.log_tells_minutes,
 	count: m.log_tells_count,
-	link: m.log_tells_link
+	link: m.log_tells_link,
+	unit: m.log_tells_unit,
+	bed: m.log_tells_bed,
+	grade: m.log_tells_grade
 };
 
 const OUTCOME_WORDS: Record<string, () => string> = {
@@ -65,6 +70,29 @@ const OUTCOME_WORDS: Record<string, () => string> = {
 	transient: m.log_outcome_transient,
 	unknown: m.log_outcome_unknown
 };
+
+const RECEIVED_WORDS: Record<string, () => string> = {
+	yes: m.log_received_yes,
+	no: m.log_received_no,
+	acknowledged: m.log_received_acknowledged,
+	stop: m.log_received_stop,
+	start: m.log_received_start,
+	help: m.log_received_help,
+	take: m.log_received_take,
+	staff: m.log_received_staff,
+	'staff-stop': m.log_received_staff_stop,
+	'shared-staff': m.log_received_shared_staff,
+	'shared-number': m.log_received_shared_number,
+	'unknown-number': m.log_received_unknown_number
+};
+
+/** What something that came in was taken for. */
+export function receivedWords(understoodAs: string): string {
+	return (RECEIVED_WORDS[understoodAs] ?? m.log_received_other)();
+}
+
+/** Why the words of something that came in are not shown. */
+export const UNREAD_WORDS = { removed: m.log_body_gone, private: m.log_received_private };
 
 /** Of these a person may have to do something. */
 export function isStuck(state: MessageState): boolean {

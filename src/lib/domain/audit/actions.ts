@@ -1,6 +1,9 @@
 /** Everything that is on record, as a closed list: a write names one of these or does not compile. */
 export const AUDIT_ACTIONS = [
 	'account.created',
+	'account.device-added',
+	'account.device-removed',
+	'account.device-tried',
 	'account.disabled',
 	'account.enabled',
 	'account.invited',

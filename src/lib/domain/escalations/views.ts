@@ -1,3 +1,4 @@
+import type { MessageChannel } from '../messages/codes';
 import type { EscalationMoveKind, EscalationState, Grade, Post, Role } from '../core/codes';
 
 export interface EscalationView {
@@ -53,7 +54,7 @@ export interface EscalationView {
 		step: number;
 		post: Post;
 		name: string | null;
-		channel: 'sms' | 'voice' | null;
+		channel: MessageChannel | null;
 		at: string;
 		message: string | null;
 	}[];

@@ -8,7 +8,14 @@ const RECORD = {
 	...{ sender: 'Saltmarsh General', phone: '+353 1 555 0100', zone: 'Europe/Dublin', place: 'East Gym' },
 	...{ startsAt: Date.parse('2025-03-28T10:00:00Z'), minutes: 45, count: 12, link: 'https://a.example/p/1' },
 	...{ name: 'Ide Quillfeather', birthDate: '1958-09-05', mrn: 'SG482911', procedure: 'Bypass', bed: '4' },
-	...{ unit: 'Tern Ward', role: 'surgeon', email: 'a@b.example', body: 'She slept well.', reason: 'Shut.' }
+	...{
+		unit: 'Tern Ward',
+		role: 'surgeon',
+		grade: 'high',
+		email: 'a@b.example',
+		body: 'She slept well.',
+		reason: 'Shut.'
+	}
 };
 type Field = keyof typeof RECORD;
 
@@ -17,12 +24,20 @@ const OTHER: Record<Field, string | number> = {
 	...{ sender: 'Old Harbour', phone: '+353 1 555 0199', zone: 'America/New_York', place: 'West Gym' },
 	...{ startsAt: Date.parse('2025-04-29T11:30:00Z'), minutes: 60, count: 13, link: 'https://a.example/p/2' },
 	...{ name: 'Cathal Okonkwo', birthDate: '1961-01-02', mrn: 'SG111111', procedure: 'Valve', bed: '5' },
-	...{ unit: 'Heron Unit', role: 'nurse', email: 'c@d.example', body: 'He did not.', reason: 'Ill.' }
+	...{
+		unit: 'Heron Unit',
+		role: 'nurse',
+		grade: 'low',
+		email: 'c@d.example',
+		body: 'He did not.',
+		reason: 'Ill.'
+	}
 };
 
 const FIELDS_OF: Record<MailFact, readonly Field[]> = {
 	...{ sender: ['sender'], phone: ['phone'], time: ['startsAt', 'zone'], place: ['place'] },
-	...{ minutes: ['minutes'], count: ['count'], link: ['link'] }
+	...{ minutes: ['minutes'], count: ['count'], link: ['link'] },
+	...{ unit: ['unit'], bed: ['bed'], grade: ['grade'] }
 };
 
 function written(template: MailTemplate, record: object, language: string): string {

@@ -4,7 +4,18 @@
  */
 import type { MailTemplate } from './templates';
 
-export const MAIL_FACTS = ['sender', 'phone', 'time', 'place', 'minutes', 'count', 'link'] as const;
+export const MAIL_FACTS = [
+	'sender',
+	'phone',
+	'time',
+	'place',
+	'minutes',
+	'count',
+	'link',
+	'unit',
+	'bed',
+	'grade'
+] as const;
 export type MailFact = (typeof MAIL_FACTS)[number];
 
 const VISIT = ['sender', 'phone', 'time', 'place'] as const;
@@ -13,6 +24,7 @@ export const MAIL_TELLS: Record<MailTemplate, readonly MailFact[]> = {
 	referrer: ['link'],
 	summary: ['link'],
 	invitation: ['link'],
+	call: ['unit', 'bed', 'grade', 'link'],
 	'visit-booked': VISIT,
 	'series-booked': ['sender', 'phone', 'count'],
 	'visit-moved': VISIT,

@@ -5,7 +5,7 @@
  * anything is sent twice). Whatever is not recognised is unknown. Codes decide, never the gateway's prose.
  */
 
-export type PermanentReason = 'opted-out' | 'bad-address' | 'refused';
+export type PermanentReason = 'opted-out' | 'bad-address' | 'refused' | 'gone';
 export type TransientReason =
 	'busy' | 'gateway-down' | 'credentials' | 'no-encryption' | 'not-reached' | 'try-later';
 export type UnknownReason = 'no-answer' | 'answer-without-id';
@@ -69,6 +69,16 @@ export function smsOutcome(result: SmsResult): Outcome {
 	return reason === null
 		? { kind: 'permanent', reason: permanentReason(code) }
 		: { kind: 'transient', reason, retryAfter };
+}
+
+/** The device has taken its permission away, or its service has never heard of it: RFC 8030 section 7.3. */
+const GONE_STATUSES = [404, 410];
+
+/** Judge the end of a call to a push service. Its codes are those of HTTP, so the rest is as with texts. */
+export function pushOutcome(result: SmsResult): Outcome {
+	return result.kind === 'answered' && GONE_STATUSES.includes(result.status)
+		? { kind: 'permanent', reason: 'gone' }
+		: smsOutcome(result);
 }
 
 /** Wrong credentials are the hospital's fault and not the message's: it waits until they are put right. */

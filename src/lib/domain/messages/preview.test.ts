@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { previewsOf } from './preview';
-import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_SMS } from './templates';
+import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_NOTICES, STAFF_SMS } from './templates';
 import { MESSAGE_LANGUAGES } from './templates/wording';
 
 const HOSPITAL = {
@@ -13,13 +13,14 @@ const HOSPITAL = {
 const at = Date.parse('2025-03-28T10:00:00Z');
 const previews = previewsOf(HOSPITAL, at);
 const languages = MESSAGE_LANGUAGES.length;
+const sum = (sizes: number[]) => sizes.reduce((all, size) => all + size, 0);
 const sizeOf = (wordings: object) => Object.keys(wordings).length;
 
 describe('the previews', () => {
 	it('are of every template, in every language that it has, once', () => {
 		const toPatients = sizeOf(PATIENT_SMS) + sizeOf(PATIENT_MAILS);
-		const toStaff = sizeOf(STAFF_SMS) + sizeOf(STAFF_MAILS) + sizeOf(STAFF_CALLS);
-		expect(previews).toHaveLength(toPatients * languages + toStaff);
+		const toStaff = [STAFF_SMS, STAFF_MAILS, STAFF_CALLS, STAFF_NOTICES].map(sizeOf);
+		expect(previews).toHaveLength(toPatients * languages + sum(toStaff));
 		const names = previews.map(({ name, channel, to, language }) => [name, channel, to, language].join());
 		expect(new Set(names).size).toBe(names.length);
 	});
@@ -28,7 +29,7 @@ describe('the previews', () => {
 		'%s %s in %s is filled in, and fits',
 		(_channel, _name, _language, { text, subject, length, channel, denied, tells }) => {
 			expect(`${subject} ${text}`).not.toMatch(/undefined|NaN|\[object/);
-			expect(subject !== null).toBe(channel === 'mail');
+			expect(subject !== null).toBe(channel === 'mail' || channel === 'push');
 			expect(tells !== null && tells !== undefined).toBe(channel === 'mail');
 			expect(length?.segments ?? null).toBe(channel === 'sms' ? 1 : null);
 			expect(denied).toEqual([]);

@@ -7,6 +7,7 @@ import {
 	PATIENT_SMS,
 	STAFF_CALLS,
 	STAFF_MAILS,
+	STAFF_NOTICES,
 	STAFF_SMS,
 	type MailTemplate
 } from './templates';
@@ -51,6 +52,7 @@ export function previewsOf(hospital: PreviewSender, startsAt: number): TemplateP
 		...mailsOf(PATIENT_MAILS, { channel: 'mail', to: 'patient' }, fields),
 		...textsOf(STAFF_SMS, { channel: 'sms', to: 'staff' }, fields),
 		...textsOf(STAFF_CALLS, { channel: 'voice', to: 'staff' }, fields),
+		...noticesOf(STAFF_NOTICES, { channel: 'push', to: 'staff' }, fields),
 		...mailsOf(STAFF_MAILS, { channel: 'mail', to: 'staff' }, fields)
 	];
 }
@@ -80,6 +82,13 @@ function textsOf(wordings: object, about: About, fields: object): TemplatePrevie
 		const text = write(fields);
 		const length = about.channel === 'sms' ? measureSms(text) : null;
 		return { ...about, subject: null, text, length, tells: null, denied: deniedWords(text) };
+	});
+}
+
+function noticesOf(wordings: object, about: About, fields: object): TemplatePreview[] {
+	return each(wordings as Wordings<MailText>, (write) => {
+		const { subject, text } = write(fields);
+		return { ...about, subject, text, length: null, tells: null, denied: deniedWords(`${subject} ${text}`) };
 	});
 }
 

@@ -7,7 +7,7 @@ import { describe, expect, it } from 'vitest';
 import { GRADES, ROLES } from '../core/codes';
 import { deniedWords } from './deny-list';
 import { measureSms } from './sms-length';
-import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_SMS } from './templates';
+import { PATIENT_MAILS, PATIENT_SMS, STAFF_CALLS, STAFF_MAILS, STAFF_NOTICES, STAFF_SMS } from './templates';
 import { MESSAGE_LANGUAGES } from './templates/wording';
 
 const pick = fc.constantFrom;
@@ -155,6 +155,16 @@ describe('property: nothing leaks to staff', () => {
 		fc.assert(
 			fc.property(people, (person) => {
 				expect(leaks(write(everything(person)), person)).toEqual([]);
+			}),
+			RUNS
+		);
+	});
+
+	it.each(Object.keys(STAFF_NOTICES) as (keyof typeof STAFF_NOTICES)[])('notice %s', (template) => {
+		const write = STAFF_NOTICES[template].en as Write<{ subject: string; text: string }>;
+		fc.assert(
+			fc.property(people, (person) => {
+				expect(mailLeaks(write(everything(person)), person)).toEqual([]);
 			}),
 			RUNS
 		);

@@ -5,6 +5,7 @@
 import * as escalations from './templates/escalation';
 import * as mails from './templates/mail';
 import * as pages from './templates/page';
+import * as notices from './templates/push';
 import * as replies from './templates/reply';
 import * as visits from './templates/visit';
 import * as voice from './templates/voice';
@@ -53,10 +54,19 @@ export const STAFF_CALLS = {
 	'not-taken': voice.notTaken
 };
 
+/** What a notice on a device says. */
+export const STAFF_NOTICES = {
+	call: notices.call,
+	'holder-asked': notices.holderAsked,
+	'call-taken': notices.callTaken,
+	trial: notices.trial
+};
+
 export const STAFF_MAILS = {
 	referrer: mails.referrerMail,
 	summary: mails.summaryMail,
-	invitation: mails.invitationMail
+	invitation: mails.invitationMail,
+	call: mails.callMail
 };
 
 export const PATIENT_MAILS = {

@@ -1,14 +1,18 @@
 import type { Cookies } from '@sveltejs/kit';
 import { eq } from 'drizzle-orm';
+import type { AuditEvent } from '$lib/domain/audit/actions';
 import type { Role } from '$lib/domain/core/codes';
 import { Problem } from '$lib/domain/core/errors';
 import { countAttempt, forgetAttempt } from '../auth/failures';
+import { digestSecret } from '../auth/lucia';
 import { passwordFits } from '../auth/passwords';
 import { unitsOf, type UnitOfPerson } from '../auth/people';
 import { endSignIn, forgetInBrowser, keepInBrowser, startSignIn } from '../auth/sign-ins';
 import type { Context } from '../context';
 import { db, type Tx } from '../db';
 import { users } from '../db/schema';
+import { deviceIn, unmarkDevice } from '../push/cookie';
+import { endDevice, isDevice, takeOverDevice } from '../push/devices';
 import { write } from '../write';
 import { accountEvent } from './event';
 
@@ -58,9 +62,10 @@ async function enter(
 		// A new token at each sign-in: one that was planted in the browser before is worth nothing.
 		const before = await endSignIn(tx, cookies);
 		token = await startSignIn(tx, userId, context.now);
+		const ended = await takeOverDevice(tx, deviceIn(cookies), userId, digestSecret(token));
 		return {
 			result: null,
-			audit: { action: 'account.signed-in', objectKind: 'account', objectId: userId },
+			audit: [{ action: 'account.signed-in', objectKind: 'account', objectId: userId }, ...ended],
 			// Whoever sat here before has left: what this browser still listens to for them ends.
 			events: before === null ? [] : [accountEvent('signed-out', before)]
 		};
@@ -68,20 +73,40 @@ async function enter(
 	keepInBrowser(cookies, token);
 }
 
-/** End this browser's sign-in. Its other tabs hear of it and look whether they may go on listening. */
+/**
+ * End this browser's sign-in, and the notices that it shows. Its other tabs hear of it and look whether they may go on
+ * listening.
+ */
 export async function signOut(context: Context, cookies: Cookies): Promise<void> {
 	const { actor } = context;
 	if (actor?.kind === 'person') {
 		await write({ ...context, key: null }, 'anyone', async (tx) => {
 			await endSignIn(tx, cookies);
+			const ended = await endDevice(tx, deviceIn(cookies));
 			return {
 				result: null,
-				audit: { action: 'account.signed-out', objectKind: 'account', objectId: actor.id },
+				audit: [{ action: 'account.signed-out', objectKind: 'account', objectId: actor.id }, ...ended],
 				events: [accountEvent('signed-out', actor.id)]
 			};
 		});
+	} else {
+		await endLeftDevice(context, cookies);
 	}
 	forgetInBrowser(cookies);
+	unmarkDevice(cookies);
+}
+
+/** The sign-in had ended by itself before, and its notices go on until somebody signs out. */
+async function endLeftDevice(context: Context, cookies: Cookies): Promise<void> {
+	const here = deviceIn(cookies);
+	if (here === null || !(await isDevice(here))) {
+		return;
+	}
+	await write({ ...context, key: null }, 'anyone', async (tx) => {
+		const [first, ...rest] = await endDevice(tx, here);
+		const left: AuditEvent = { action: 'account.device-removed', objectKind: 'device', objectId: '-' };
+		return { result: null, audit: [first ?? left, ...rest] };
+	});
 }
 
 async function recordRefusal(context: Context, userId: string | null): Promise<void> {

@@ -2,7 +2,7 @@ import { and, asc, eq, isNotNull, isNull, lte, or } from 'drizzle-orm';
 import { GRADES } from '$lib/domain/core/codes';
 import { Problem } from '$lib/domain/core/errors';
 import { goOnAfterMs } from '$lib/domain/escalations/holding';
-import { smsText } from '$lib/domain/messages/templates';
+import { smsText, STAFF_NOTICES } from '$lib/domain/messages/templates';
 import { m } from '$lib/i18n/paraglide/messages';
 import { loadPerson } from '../auth/people';
 import { systemContext, type Context } from '../context';
@@ -79,11 +79,13 @@ async function ask(tx: Tx, context: Context, row: EscalationRow): Promise<Change
 	await recordMove(tx, context, row.id, 'asked', { to: row.takenBy });
 	const { unit, bed } = await placeOf(tx, row.episodeId);
 	const body = aroundLink((link) => smsText('holder-asked', { unit, bed, grade: row.grade, link }));
+	const notice = STAFF_NOTICES['holder-asked'].en({ unit, bed, grade: row.grade });
 	return {
 		result: null,
 		audit: audited('escalation.holder-asked', row.id, row.episodeId),
 		events: await escalationEvents(tx, row, 'asked'),
-		messages: row.takenBy === null ? [] : [await withLink(tx, row, row.takenBy, body, `ask:${now}`, now)]
+		messages:
+			row.takenBy === null ? [] : [await withLink(tx, row, row.takenBy, { body, notice }, `ask:${now}`, now)]
 	};
 }
 

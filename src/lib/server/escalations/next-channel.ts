@@ -2,25 +2,26 @@
 import { and, eq, gte, inArray, isNotNull } from 'drizzle-orm';
 import { isChainSpent } from '$lib/domain/escalations/chain';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
-import { STAFF_CALLS } from '$lib/domain/messages/templates';
 import type { Tx } from '../db';
 import { escalations, escalationSteps, outbox } from '../db/schema';
-import { newId } from '../ids';
 import type { OutboxRow } from '../outbox/change';
-import { enqueue, type NewMessage } from '../outbox/enqueue';
-import { placeOf, type EscalationRow } from './tell';
+import { mailInstead, telephone } from './other-way';
+import type { EscalationRow } from './tell';
 
 /** A text whose fate is unknown may have arrived; one that failed has not. */
 export type Trouble = 'unknown' | 'failed';
 
-/** A message in one of these states has reached somebody or still may. */
-const MAY_REACH = ['ready', 'sending', 'held', 'accepted', 'delivered'] as const;
+/** A message in one of these states has reached somebody or still may. What is held has no way out. */
+const MAY_REACH = ['ready', 'sending', 'accepted', 'delivered'] as const;
+/** A mailbox is not looked into at night: a mail goes too, and nobody waits for what comes of it. */
+const HEARD = ['sms', 'voice', 'push'] as const;
 
 /**
- * The next channel, or the next person, in the transaction that puts the trouble on record: for a high call whose text
- * failed or may have, the person's telephone rings. Where nobody of those who were told can be reached any more, the
- * next step of the chain is due at once. At its end the chain keeps to its timer, or a gateway that is down would be
- * asked without a pause.
+ * The next channel, or the next person, in the transaction that puts the trouble on record. For a high call whose text
+ * failed or may have, the person's telephone rings; for any other the notices on their devices, which went out with the
+ * text, do, and where they have none or none got through a mail goes. Where nobody of those who were told can be reached
+ * any more, the next step of the chain is due at once. At its end the chain keeps to its timer, or a gateway that is
+ * down would be asked without a pause.
  */
 export async function seekOtherWay(tx: Tx, row: OutboxRow, trouble: Trouble, now: number): Promise<void> {
 	if (row.kind !== 'escalation' || row.refKind !== 'escalation' || row.userId === null) {
@@ -30,11 +31,19 @@ export async function seekOtherWay(tx: Tx, row: OutboxRow, trouble: Trouble, now
 	if (!escalation || !mayBeTakenBy(escalation, row.userId)) {
 		return;
 	}
-	if (row.channel === 'sms' && escalation.grade === 'high' && now < row.expiresAt) {
-		await enqueueCall(tx, escalation, row, now);
+	if (now < row.expiresAt) {
+		await nextWay(tx, escalation, row, now);
 	}
 	if (trouble === 'failed') {
 		await hurryChain(tx, escalation, now);
+	}
+}
+
+async function nextWay(tx: Tx, escalation: EscalationRow, row: OutboxRow, now: number): Promise<void> {
+	if (escalation.grade !== 'high') {
+		await mailInstead(tx, escalation, row, now);
+	} else if (row.channel === 'sms') {
+		await telephone(tx, escalation, row, now);
 	}
 }
 
@@ -46,32 +55,6 @@ function mayBeTakenBy(escalation: EscalationRow, userId: string): boolean {
 		(state === 'taken' && passTo === userId) ||
 		(takenBy !== userId && isSoughtAnew(escalation))
 	);
-}
-
-/** Once for each text: the key of its cause names the text. */
-async function enqueueCall(tx: Tx, escalation: EscalationRow, text: OutboxRow, now: number): Promise<void> {
-	const causeKey = `call:${text.id}`;
-	if ((await tx.$count(outbox, eq(outbox.causeKey, causeKey))) > 0) {
-		return;
-	}
-	const { unit, bed } = await placeOf(tx, escalation.episodeId);
-	const message: NewMessage & { id: string } = {
-		id: newId(),
-		kind: 'escalation',
-		channel: 'voice',
-		causeKey,
-		userId: text.userId ?? undefined,
-		body: STAFF_CALLS.call.en({ unit, bed, grade: escalation.grade }),
-		ref: { kind: 'escalation', id: escalation.id },
-		expiresAt: text.expiresAt
-	};
-	await enqueue(tx, now, [message]);
-	const [told] = await tx.select().from(escalationSteps).where(eq(escalationSteps.messageId, text.id));
-	if (told) {
-		await tx
-			.insert(escalationSteps)
-			.values({ ...told, id: newId(), at: now, channel: 'voice', messageId: message.id });
-	}
 }
 
 async function hurryChain(tx: Tx, escalation: EscalationRow, now: number): Promise<void> {
@@ -95,7 +78,8 @@ async function mayReachAny(tx: Tx, escalationId: string, since: number): Promise
 			and(
 				eq(escalationSteps.escalationId, escalationId),
 				gte(escalationSteps.at, since),
-				inArray(outbox.state, [...MAY_REACH])
+				inArray(outbox.state, [...MAY_REACH]),
+				inArray(outbox.channel, [...HEARD])
 			)
 		)
 		.limit(1);

@@ -1,7 +1,7 @@
 import { and, eq, gte, inArray, like, ne } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { NOTICE_AFTER_MS } from '$lib/domain/escalations/holding';
-import { smsText } from '$lib/domain/messages/templates';
+import { smsText, STAFF_NOTICES } from '$lib/domain/messages/templates';
 import type { Tx } from '../db';
 import { outbox } from '../db/schema';
 import type { NewMessage } from '../outbox/enqueue';
@@ -38,7 +38,9 @@ export async function noticesOfTaking(
 			)
 		);
 	const { unit, bed } = await placeOf(tx, before.episodeId);
-	const body = smsText('escalation-taken', { unit, bed, grade: before.grade, holder: taker.role });
+	const fields = { unit, bed, grade: before.grade, holder: taker.role };
+	const body = smsText('escalation-taken', fields);
+	const notice = STAFF_NOTICES['call-taken'].en(fields);
 	return told.flatMap(({ userId }) =>
 		userId === null
 			? []
@@ -49,6 +51,7 @@ export async function noticesOfTaking(
 						causeKey: causeOf(before.id, `${now}:${userId}`),
 						userId,
 						body,
+						notice,
 						ref: { kind: 'escalation' as const, id: before.id },
 						notBefore: now + NOTICE_AFTER_MS,
 						expiresAt: now + NOTICE_LIFE_MS

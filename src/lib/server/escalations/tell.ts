@@ -2,7 +2,7 @@ import { and, eq, inArray } from 'drizzle-orm';
 import { chainStep, isChainSpent, startFor } from '$lib/domain/escalations/chain';
 import { hurried } from '$lib/domain/escalations/needed-by';
 import type { Post } from '$lib/domain/core/codes';
-import { smsText } from '$lib/domain/messages/templates';
+import { smsText, STAFF_NOTICES } from '$lib/domain/messages/templates';
 import { onCover } from '../cover/queries';
 import type { Reader, Tx } from '../db';
 import { episodes, escalationLinks, escalations, escalationSteps, outbox, units } from '../db/schema';
@@ -113,15 +113,19 @@ export async function alert(
 	const { unit, bed } = where;
 	const { grade, replyCode: code } = escalation;
 	const body = aroundLink((link) => smsText('escalation', { unit, bed, grade, link, code }));
-	return withLink(tx, escalation, userId, body, occasion, now);
+	const notice = STAFF_NOTICES.call.en({ unit, bed, grade });
+	return withLink(tx, escalation, userId, { body, notice }, occasion, now);
 }
+
+/** What a text and the notices beside it say. */
+type Words = Required<Pick<NewMessage, 'body' | 'notice'>>;
 
 /** A message to one person with a link that only they can use; `{link}` in the text stands for it. */
 export async function withLink(
 	tx: Tx,
 	escalation: EscalationRow,
 	userId: string,
-	body: string,
+	{ body, notice }: Words,
 	occasion: string,
 	now: number
 ): Promise<NewMessage & { id: string }> {
@@ -141,6 +145,7 @@ export async function withLink(
 		causeKey: `escalation:${escalation.id}:${escalation.chainStartedAt}:${occasion}:${userId}`,
 		userId,
 		body,
+		notice,
 		linkId,
 		ref: { kind: 'escalation', id: escalation.id },
 		expiresAt: now + MESSAGE_LIFE_MS

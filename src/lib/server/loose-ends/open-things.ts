@@ -213,7 +213,7 @@ const NEWEST_EPISODE = sql`(
 /**
  * A notice that somebody has it asks nothing of its reader: whether it arrived is nobody's to see to. News of a change
  * are told apart by whether the patient has heard of it in any way: `visitsUntold()`. A telephone rings only where a
- * text failed or may have: that text stands here, the ringing not beside it.
+ * text failed or may have: that text stands here, and nothing that went beside or after it.
  */
 const messagesFailed = sql`
 	select 'message-failed', m.id, ${PLACE}, null, null, m.kind, m.state_reason, null, null,
@@ -226,7 +226,8 @@ const messagesFailed = sql`
 		v.episode_id, x.episode_id, r.episode_id, case when m.ref_kind in ('page', 'episode') then m.ref_id end,
 		case when m.ref_kind = 'inbound' then ${NEWEST_EPISODE} end
 	)
-	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.channel <> 'voice'
+	where m.state in ('failed', 'undelivered') and m.kind <> 'notice' and m.channel not in ('voice', 'push')
+		and not (m.kind = 'escalation' and m.channel = 'mail')
 		and m.handled_at is null
 		and not ${IS_NEWS_OF_CHANGE}`;
 

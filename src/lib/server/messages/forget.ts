@@ -15,10 +15,11 @@ const ended = or(
 		inArray(outbox.state, ['failed', 'undelivered']),
 		or(
 			isNotNull(outbox.handledAt),
-			// These are no loose ends of anybody: an invitation is sent anew, a call has its text.
+			// These are no loose ends of anybody: an invitation is sent anew, what went beside or after a text has that text.
 			eq(outbox.kind, 'notice'),
 			eq(outbox.refKind, 'account'),
-			eq(outbox.channel, 'voice')
+			inArray(outbox.channel, ['voice', 'push']),
+			and(eq(outbox.kind, 'escalation'), eq(outbox.channel, 'mail'))
 		)
 	)
 );

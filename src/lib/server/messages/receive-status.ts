@@ -6,7 +6,7 @@ import { outbox, smsStatuses } from '../db/schema';
 import { seekOtherWay } from '../escalations/next-channel';
 import { newId } from '../ids';
 import { changing, messageEvent } from '../outbox/change';
-import { auditFailure } from '../outbox/record';
+import { auditFailure } from '../outbox/settle-row';
 import { stateByStatus } from './delivery';
 import { requiredField, type GatewayForm } from './signature';
 

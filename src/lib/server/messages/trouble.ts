@@ -8,13 +8,15 @@ import type { Trouble } from '$lib/domain/messages/views';
 import type { Reader } from '../db';
 import { outbox, outboxAttempts } from '../db/schema';
 import { CHANNELS, type ChannelName } from '../outbox/channels/channel';
+import { probedOf } from '../outbox/probes';
 
 /** Nothing has been tried for so long: whether it would work now, nobody can say. */
 const FORGOTTEN_AFTER_MS = HOUR;
 
 /**
  * Which ways out do not work, for the frame of every page: whoever relies on a call for help has to know. It is
- * derived from the attempts: in trouble since the first one that failed after the last that went through. Trouble
+ * derived from the attempts: in trouble since the first one that failed after the last that went through; and from the
+ * probes, which see it while nothing is sent, and see it come back. Trouble
  * with mail is told to those who can do something about it.
  */
 export async function troublesFor(reader: Reader, person: Person, now: number): Promise<Trouble[]> {
@@ -31,7 +33,10 @@ function seesToMail(person: Person): boolean {
 }
 
 async function troubleOf(reader: Reader, channel: ChannelName, now: number): Promise<Trouble | null> {
-	const since = (await heldSince(reader, channel, now)) ?? (await failingSince(reader, channel, now));
+	const since =
+		(await heldSince(reader, channel, now)) ??
+		(await failingSince(reader, channel, now)) ??
+		probedOf(channel).downSince;
 	return since === null
 		? null
 		: { channel, since: toRfc3339(since), waiting: await countWaiting(reader, channel, now) };
@@ -76,7 +81,7 @@ async function failingSince(reader: Reader, channel: ChannelName, now: number): 
 			and(
 				troubled,
 				inArray(outboxAttempts.outcome, ['transient', 'unknown']),
-				gte(outboxAttempts.endedAt, worked?.at ?? 0)
+				gte(outboxAttempts.endedAt, Math.max(worked?.at ?? 0, probedOf(channel).backAt ?? 0))
 			)
 		);
 	return failed?.at ?? null;

@@ -2,12 +2,15 @@ import { db } from '../db';
 import { env } from '../env';
 import { linkToken } from '../links';
 import { routes } from '$lib/routes';
+import { attemptsOf, knownProviderIds } from './attempts';
 import type { Channel, Outgoing, Sent } from './channels/channel';
 import type { OutboxRow } from './change';
 import type { Claimed } from './claim';
+import { crashWhereAsked } from './crash-point';
+import { recordInterrupted } from './interrupted';
 import { recheck } from './recheck';
 import type { Receiver } from './verdict';
-import { attemptsOf, knownProviderIds, recordAttempt, recordInterrupted, releaseRow } from './record';
+import { recordAttempt, releaseRow } from './record';
 
 /** An attempt that is not over by then counts as unknown; well within the lease. */
 const ATTEMPT_LIMIT_MS = 20_000;
@@ -50,10 +53,11 @@ export async function attempt({ row, interruptedAt }: Claimed, sending: Sending)
 
 async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sending): Promise<Sent> {
 	const startedAt = sending.now();
-	const message = outgoing(row, receiver);
+	const message = outgoing(row, receiver, startedAt);
 	const sent =
 		(await lookedUp(row, message, sending.channel)) ??
 		(await within(ATTEMPT_LIMIT_MS, sending.channel.send(message), NEVER_ENDED));
+	crashWhereAsked(sent);
 	await recordAttempt(
 		row,
 		sending.owner,
@@ -64,11 +68,27 @@ async function sendAndRecord(row: OutboxRow, receiver: Receiver, sending: Sendin
 }
 
 /** Fill in what is not stored: the secret link, of a call for help, an invitation or a patient's page. */
-function outgoing(row: OutboxRow, { to, name, language }: Receiver): Outgoing {
+function outgoing(row: OutboxRow, { to, name, language, keys }: Receiver, now: number): Outgoing {
 	const { id, subject, linkId, calendar } = row;
 	const link = linkId === null ? null : env().publicUrl + pathOf(row)(linkToken(linkId));
 	const body = link === null ? row.body : row.body.replaceAll('{link}', () => link);
-	return { id, to, name, language, subject, body, calendar };
+	const notice = keys && { keys, link: link ?? pageOf(row), ...fateOf(row, now) };
+	return { id, to, name, language, subject, body, calendar, notice };
+}
+
+/** The page that a notice without a secret link opens; it asks for a sign-in where there is none. */
+function pageOf({ refKind, refId }: OutboxRow): string {
+	return env().publicUrl + (refKind === 'escalation' ? routes.escalation(refId) : routes.account());
+}
+
+/** How urgent a notice is, for how long it is of use, and what it takes the place of. */
+function fateOf({ kind, refId, expiresAt }: OutboxRow, now: number) {
+	return {
+		urgent: kind === 'escalation',
+		ttlSeconds: Math.max(0, Math.floor((expiresAt - now) / 1000)),
+		// What it is about, in the 32 letters that a topic may have; it tells the service nothing.
+		topic: refId.replaceAll('-', '').slice(0, 32)
+	};
 }
 
 /** Which page a secret link opens. */

@@ -26,7 +26,8 @@ const RETRY: Record<OutboxRow['kind'], RetryKind> = {
 	answer: 'reminder',
 	mail: 'mail',
 	visit: 'reminder',
-	page: 'reminder'
+	page: 'reminder',
+	trial: 'urgent'
 };
 
 /** Accepted, tried again on the schedule of its kind, or failed with the reason. */

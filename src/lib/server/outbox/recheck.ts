@@ -2,7 +2,7 @@ import { and, eq, inArray } from 'drizzle-orm';
 import { isSoughtAnew } from '$lib/domain/escalations/holding';
 import { isExpected } from '$lib/domain/visits/states';
 import type { Reader } from '../db';
-import { escalationLinks, escalations, invitations, users, visits } from '../db/schema';
+import { escalationLinks, escalations, invitations, pushDevices, users, visits } from '../db/schema';
 import type { OutboxRow } from './change';
 import { recheckAnswer, recheckNews, recheckPageLink, recheckReminder } from './recheck-patient';
 import { NOT_WAITING, skip, type Verdict } from './verdict';
@@ -27,6 +27,8 @@ export async function recheck(reader: Reader, row: OutboxRow, now: number): Prom
 			return recheckPageLink(reader, row, now);
 		case 'mail':
 			return recheckMail(reader, row, now);
+		case 'trial':
+			return now >= row.expiresAt ? skip('too late') : toStaff(reader, row);
 	}
 }
 
@@ -35,7 +37,7 @@ async function recheckEscalation(reader: Reader, row: OutboxRow, now: number): P
 	if (!escalation || !isWaitingFor(escalation, row.userId)) {
 		return skip(NOT_WAITING);
 	}
-	const verdict = await toStaff(reader, row.userId, 'phone');
+	const verdict = await toStaff(reader, row);
 	if (verdict.kind === 'send' && !(await linkStillGood(reader, row, now))) {
 		return skip('link used, expired or not theirs');
 	}
@@ -57,7 +59,7 @@ async function recheckNotice(reader: Reader, row: OutboxRow, now: number): Promi
 	if (!escalation || escalation.state === 'raised' || escalation.takenBy === row.userId) {
 		return skip('nobody else has the escalation');
 	}
-	return now >= row.expiresAt ? skip('too late') : toStaff(reader, row.userId, 'phone');
+	return now >= row.expiresAt ? skip('too late') : toStaff(reader, row);
 }
 
 /** A link opens the call for one person: it must never travel to somebody else's telephone. */
@@ -72,7 +74,7 @@ async function linkStillGood(reader: Reader, row: OutboxRow, now: number): Promi
 /** An answer to staff, to a patient, or to a number that is nobody's alone. */
 async function recheckAnswerTo(reader: Reader, row: OutboxRow): Promise<Verdict> {
 	if (row.userId !== null) {
-		return toStaff(reader, row.userId, 'phone');
+		return toStaff(reader, row);
 	}
 	const verdict = await recheckAnswer(reader, row);
 	if (verdict !== null) {
@@ -93,7 +95,7 @@ async function recheckMail(reader: Reader, row: OutboxRow, now: number): Promise
 	if (row.refKind === 'account' && (await invitationUsed(reader, row))) {
 		return skip('invitation used');
 	}
-	const verdict = await toStaff(reader, row.userId, 'email');
+	const verdict = await toStaff(reader, row);
 	return verdict.kind === 'send' && now >= row.expiresAt ? { kind: 'fail', reason: 'expired' } : verdict;
 }
 
@@ -116,7 +118,8 @@ async function invitationUsed(reader: Reader, { linkId }: OutboxRow): Promise<bo
 	return invitation?.usedAt !== null;
 }
 
-async function toStaff(reader: Reader, userId: string | null, way: 'phone' | 'email'): Promise<Verdict> {
+/** By the channel's own way to them: their telephone, their mailbox, or the device that the notice is for. */
+async function toStaff(reader: Reader, { userId, channel, deviceId }: OutboxRow): Promise<Verdict> {
 	const [user] = userId === null ? [] : await reader.select().from(users).where(eq(users.id, userId));
 	if (!user) {
 		return skip('nobody to send to');
@@ -124,8 +127,28 @@ async function toStaff(reader: Reader, userId: string | null, way: 'phone' | 'em
 	if (user.disabledAt !== null) {
 		return skip('account disabled');
 	}
-	const to = user[way];
-	return to === null
-		? skip('no telephone number')
-		: { kind: 'send', receiver: { to, name: way === 'email' ? user.name : null } };
+	switch (channel) {
+		case 'push':
+			return toDevice(reader, user.id, deviceId);
+		case 'mail':
+			return { kind: 'send', receiver: { to: user.email, name: user.name } };
+		case 'sms':
+		case 'voice':
+			return user.phone === null
+				? skip('no telephone number')
+				: { kind: 'send', receiver: { to: user.phone, name: null } };
+	}
+}
+
+/** Only as long as the device is theirs: somebody else may sign in on it. */
+async function toDevice(reader: Reader, userId: string, deviceId: string | null): Promise<Verdict> {
+	const [device] = await reader
+		.select()
+		.from(pushDevices)
+		.where(and(eq(pushDevices.id, deviceId ?? ''), eq(pushDevices.userId, userId)));
+	if (!device) {
+		return skip('notices are turned off');
+	}
+	const { endpoint, p256dh, auth } = device;
+	return { kind: 'send', receiver: { to: endpoint, name: null, keys: { p256dh, auth } } };
 }

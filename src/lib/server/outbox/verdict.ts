@@ -12,12 +12,15 @@ export type SkipReason =
 	| 'link used, expired or not theirs'
 	| 'invitation used'
 	| 'no e-mail address'
-	| 'nobody to send to';
+	| 'nobody to send to'
+	| 'notices are turned off';
 
 export interface Receiver {
-	/** A telephone number or an e-mail address, read at the moment of sending. */
+	/** A telephone number, an e-mail address or a device's endpoint, read at the moment of sending. */
 	to: string;
 	name: string | null;
+	/** The keys of a device, where it is one. */
+	keys?: { p256dh: string; auth: string };
 	/** The language that they are written to in; left out for staff, who are written to in English. */
 	language?: string;
 }

@@ -6,7 +6,9 @@ import { attempt } from './attempt';
 import { CHANNELS, type ChannelName, type Channels, type Sent } from './channels/channel';
 import { changing } from './change';
 import { claimDue, holdDue, type Claimed } from './claim';
-import { takeBackForeign } from './record';
+import { takeBackForeign } from './interrupted';
+import { forgetProbes, Probes } from './probes';
+import { RingingTelephones } from './ringing';
 import { SilentMessages } from './silent';
 
 /**
@@ -16,9 +18,10 @@ import { SilentMessages } from './silent';
  */
 export const MAX_IN_FLIGHT: Record<ChannelName, { all: number; routine: number }> = {
 	sms: { all: 5, routine: 3 },
-	mail: { all: 3, routine: 3 },
+	mail: { all: 4, routine: 3 },
 	// A telephone rings for calls for help alone.
-	voice: { all: 5, routine: 0 }
+	voice: { all: 5, routine: 0 },
+	push: { all: 5, routine: 3 }
 };
 const BEAT_MS = 1_000;
 /** A server that stops waits no longer for a gateway; the lease then tells the next start that the end is unknown. */
@@ -51,6 +54,8 @@ export class OutboxWorker {
 	/** Whether the last attempt on a channel got through; not there before the first. */
 	readonly #working = new Map<ChannelName, boolean>();
 	readonly #silent: SilentMessages;
+	readonly #ringing: RingingTelephones;
+	readonly #probes: Probes;
 	#asking: Promise<unknown> = Promise.resolve();
 	#round: Promise<unknown> = Promise.resolve();
 	#waking = false;
@@ -61,6 +66,8 @@ export class OutboxWorker {
 	constructor(options: OutboxOptions) {
 		this.#channels = options.channels;
 		this.#silent = new SilentMessages(options.channels);
+		this.#ringing = new RingingTelephones(options.channels);
+		this.#probes = new Probes(options.channels);
 		this.#owner = options.owner ?? newId();
 		this.#now = options.now ?? now;
 		this.#random = options.random ?? Math.random;
@@ -77,7 +84,8 @@ export class OutboxWorker {
 
 	#beat(): void {
 		this.wake();
-		this.#asking = this.#silent.ask(this.#now());
+		const at = this.#now();
+		this.#asking = Promise.all([this.#silent.ask(at), this.#ringing.hangUp(at), this.#probes.run(at)]);
 	}
 
 	/** Ask for a round soon. */
@@ -118,6 +126,7 @@ export class OutboxWorker {
 		await this.#round;
 		const patience = new Promise((resolve) => setTimeout(resolve, STOP_PATIENCE_MS).unref());
 		await Promise.race([Promise.all([...this.#endings(), this.#asking]), patience]);
+		forgetProbes();
 	}
 
 	/** Claim as many as there is room for and set them going. Rounds never overlap. */

@@ -134,6 +134,11 @@ export const HOLDER_WORDS: Record<Role, string> = {
 	admin: 'A colleague'
 };
 
+/** Where to go, in letters that need not fit a text. */
+export function placeWords({ unit, bed }: PlaceFields): string {
+	return bed === null ? unit : `${unit}, bed ${bed}`;
+}
+
 function clock({ since, zone }: EarlierFields): string {
 	return localParts(since, zone).time;
 }

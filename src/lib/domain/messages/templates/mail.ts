@@ -2,8 +2,9 @@
  * Mails: a subject that tells nothing, and a link that opens only after signing in. Subjects and first lines show
  * on locked screens and in previews, so they are the same for every patient.
  */
+import { placeWords, type BedsideFields } from './escalation';
 import { number, placeName, senderName, type SenderFields, type VisitFields } from './frame';
-import { dayAndTime, PRODUCT } from './wording';
+import { dayAndTime, GRADE_WORDS, PRODUCT } from './wording';
 import type { MessageLanguage, StaffWording, Wording } from './wording';
 
 export interface MailText {
@@ -32,6 +33,14 @@ export const summaryMail: StaffWording<LinkFields, MailText> = {
 	en: ({ link }) => ({
 		subject: `${PRODUCT}: a summary to read`,
 		text: letter('A referral of yours has come to its end. Sign in to read how it went:', link)
+	})
+};
+
+/** To somebody who is needed, where neither text nor notice got through to them. */
+export const callMail: StaffWording<BedsideFields, MailText> = {
+	en: (fields) => ({
+		subject: `${PRODUCT} ${GRADE_WORDS[fields.grade]}`,
+		text: letter(`${placeWords(fields)}. Somebody is needed. To take it open:`, fields.link)
 	})
 };
 

@@ -4,7 +4,13 @@
  */
 import type { Grade } from '../../core/codes';
 import { localParts } from '../../core/time';
-import { HOLDER_WORDS, type EarlierFields, type HeldFields, type PlaceFields } from './escalation';
+import {
+	HOLDER_WORDS,
+	placeWords,
+	type EarlierFields,
+	type HeldFields,
+	type PlaceFields
+} from './escalation';
 import { PRODUCT, type StaffWording } from './wording';
 
 const SPOKEN_GRADES: Record<Grade, string> = { high: 'High', medium: 'Medium', low: 'Low' };
@@ -12,12 +18,12 @@ const SPOKEN_GRADES: Record<Grade, string> = { high: 'High', medium: 'Medium', l
 /** Somebody is needed. */
 export const call: StaffWording<PlaceFields> = {
 	en: (fields) =>
-		`This is ${PRODUCT}. ${SPOKEN_GRADES[fields.grade]} call for help. ${placeOf(fields)}. To take it, press 1.`
+		`This is ${PRODUCT}. ${SPOKEN_GRADES[fields.grade]} call for help. ${placeWords(fields)}. To take it, press 1.`
 };
 
 /** After the digit: it is yours. */
 export const yours: StaffWording<PlaceFields> = {
-	en: (fields) => `It is yours. ${placeOf(fields)}. Please go now.`
+	en: (fields) => `It is yours. ${placeWords(fields)}. Please go now.`
 };
 
 /** After the digit: somebody was first. */
@@ -35,10 +41,6 @@ export const overBefore: StaffWording<EarlierFields> = {
 export const notTaken: StaffWording<Record<never, never>> = {
 	en: () => 'Not taken. The call goes on to others.'
 };
-
-function placeOf({ unit, bed }: PlaceFields): string {
-	return bed === null ? unit : `${unit}, bed ${bed}`;
-}
 
 function clock({ since, zone }: EarlierFields): string {
 	return localParts(since, zone).time;

@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { index, integer, sqliteTable, text, uniqueIndex } from 'drizzle-orm/sqlite-core';
 import { ESCALATION_MOVES, ESCALATION_STATES, GRADES, POSTS } from '../../../domain/core/codes';
+import { MESSAGE_CHANNELS } from '../../../domain/messages/codes';
 import { units, users } from './accounts';
 import { bedsideSessions } from './bedside';
 import { id, instant, json, yesNo } from './columns';
@@ -126,7 +127,7 @@ export const escalationSteps = sqliteTable(
 		at: instant('at').notNull(),
 		/** Null when nobody was on cover for the post: the gap is on record. */
 		userId: text('user_id').references(() => users.id),
-		channel: text('channel', { enum: ['sms', 'voice'] }),
+		channel: text('channel', { enum: MESSAGE_CHANNELS }),
 		messageId: text('message_id')
 	},
 	(t) => [index('escalation_steps_escalation').on(t.escalationId, t.step)]

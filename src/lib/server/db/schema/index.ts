@@ -1,6 +1,7 @@
 export * from './accounts';
 export * from './bedside';
 export * from './clearances';
+export * from './devices';
 export * from './episodes';
 export * from './escalations';
 export * from './levels';

@@ -24,6 +24,8 @@ export const outbox = sqliteTable(
 		patientId: text('patient_id').references(() => patients.id),
 		/** Only for an answer to a number that belongs to nobody we know. */
 		address: text('address'),
+		/** The device that a notice is for; with no reference, because devices are removed. */
+		deviceId: text('device_id'),
 		subject: text('subject'),
 		/**
 		 * `{link}` stands for the secret link, which is made at the moment of sending and never stored. Empty once it was

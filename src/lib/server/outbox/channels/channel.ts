@@ -5,7 +5,7 @@ import type { Outcome } from '$lib/domain/messages/outcome';
 export interface Outgoing {
 	/** The outbox row's; the same for every attempt. */
 	id: string;
-	/** A telephone number in E.164 form, or an e-mail address. */
+	/** A telephone number in E.164 form, an e-mail address, or where the push service takes messages for a device. */
 	to: string;
 	name: string | null;
 	/** The tag of the language that the text is written in; English where left out. */
@@ -14,6 +14,21 @@ export interface Outgoing {
 	body: string;
 	/** The calendar file that goes with a mail; null or left out for none. */
 	calendar?: string | null;
+	/** Of a notice on a device alone. */
+	notice?: Notice;
+}
+
+/** What a notice has beside its words. */
+export interface Notice {
+	/** The device's keys, in base64url. */
+	keys: { p256dh: string; auth: string };
+	/** The page that it opens, a path of ours or a whole address. */
+	link: string;
+	/** Names what it is about: a later notice of the same takes the place of an earlier one. */
+	topic: string;
+	urgent: boolean;
+	/** For so long it is of use. */
+	ttlSeconds: number;
 }
 
 /** How one attempt ended. `code` is the gateway's status or error code, or that of the connection; never prose. */
@@ -36,6 +51,13 @@ export interface Channel {
 	 * no usable answer. Left out where the gateway cannot be asked.
 	 */
 	statusOf?: (providerId: string) => Promise<Told | null>;
+	/** Is the gateway there, and does it know us? Nothing is sent for it. Left out where it cannot be asked. */
+	probe?: () => Promise<boolean>;
+	/**
+	 * End what is under way, such as a telephone that rings; false where it could not be, and may be tried again. Left
+	 * out where nothing is ever under way.
+	 */
+	end?: (providerId: string) => Promise<boolean>;
 }
 
 /** A status as the gateway words it, with its number of the error where there was one. */

@@ -38,7 +38,15 @@ export function mailChannel(
 		disableUrlAccess: true
 	});
 	// A mail server cannot be asked what became of a mail; the receiving side knows a second copy by its identifier.
-	return { send: (message) => send(transport, from, host, message), lookUp: null };
+	return {
+		send: (message) => send(transport, from, host, message),
+		lookUp: null,
+		probe: () =>
+			transport.verify().then(
+				() => true,
+				() => false
+			)
+	};
 }
 
 async function send(

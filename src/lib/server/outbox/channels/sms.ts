@@ -1,7 +1,7 @@
 import twilio from 'twilio';
 import type { Env } from '../../env';
 import type { Channel, Outgoing, Told } from './channel';
-import { GATEWAY_LIMIT_MS, GatewayClient } from './gateway-client';
+import { GATEWAY_LIMIT_MS, GatewayClient, GatewayRefusal } from './gateway-client';
 import { judged } from './gateway-sent';
 
 /** How many of the newest messages to one number are looked through for one of unknown outcome. */
@@ -19,12 +19,14 @@ export function smsChannel(
 	limitMs = GATEWAY_LIMIT_MS
 ): Channel {
 	const httpClient = new GatewayClient(gateway.baseUrl, limitMs);
-	const { messages } = twilio(gateway.accountSid, gateway.authToken, { httpClient, autoRetry: false });
+	const client = twilio(gateway.accountSid, gateway.authToken, { httpClient, autoRetry: false });
+	const { messages } = client;
 	return {
 		send: ({ to, body }) =>
 			judged(() => messages.create({ to, from: gateway.from, body, statusCallback: statusUrl })),
 		lookUp: (message) => lookUp(messages, message),
-		statusOf: (providerId) => statusOf(messages, providerId)
+		statusOf: (providerId) => statusOf(messages, providerId),
+		probe: () => isThere(() => client.api.v2010.accounts(gateway.accountSid).fetch())
 	};
 }
 
@@ -46,5 +48,15 @@ async function statusOf(messages: Messages, providerId: string): Promise<Told | 
 		return typeof status === 'string' ? { status, errorCode: errorCode ? String(errorCode) : null } : null;
 	} catch {
 		return null;
+	}
+}
+
+/** One that is busy is there. */
+async function isThere(ask: () => Promise<unknown>): Promise<boolean> {
+	try {
+		await ask();
+		return true;
+	} catch (error) {
+		return error instanceof GatewayRefusal && error.status === 429;
 	}
 }

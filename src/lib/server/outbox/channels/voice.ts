@@ -2,7 +2,7 @@ import twilio from 'twilio';
 import type { Env } from '../../env';
 import { askedForDigit } from '../../messages/markup';
 import type { Channel, Told } from './channel';
-import { GATEWAY_LIMIT_MS, GatewayClient } from './gateway-client';
+import { GATEWAY_LIMIT_MS, GatewayClient, GatewayRefusal } from './gateway-client';
 import { judged } from './gateway-sent';
 
 /** So long a telephone rings, in seconds: longer would only reach an answering machine. */
@@ -40,6 +40,7 @@ export function voiceChannel(
 				})
 			),
 		lookUp: null,
+		end: (providerId) => ended(() => calls(providerId).update({ status: 'completed' })),
 		statusOf: async (providerId): Promise<Told | null> => {
 			try {
 				const { status } = await calls(providerId).fetch();
@@ -49,4 +50,14 @@ export function voiceChannel(
 			}
 		}
 	};
+}
+
+/** A call that the gateway will not end is over already; one that it cannot end now is tried again. */
+async function ended(update: () => Promise<unknown>): Promise<boolean> {
+	try {
+		await update();
+		return true;
+	} catch (error) {
+		return error instanceof GatewayRefusal && error.status < 500 && error.status !== 429;
+	}
 }
