@@ -88,14 +88,20 @@ describe('mail', () => {
 });
 
 describe('the page', () => {
-	it.each(['/', '/page.css', '/page.js', '/phones.js', '/notices.js', '/mailbox.js', '/elements.js', '/rope.js'])(
-		'serves %s under a policy of its own',
-		async (path) => {
-			const response = await fetch(fakes.smsUrl + path);
-			expect(response.status).toBe(200);
-			expect(response.headers.get('content-security-policy')).toContain("default-src 'none'");
-		}
-	);
+	it.each([
+		'/',
+		'/page.css',
+		'/page.js',
+		'/phones.js',
+		'/notices.js',
+		'/mailbox.js',
+		'/elements.js',
+		'/rope.js'
+	])('serves %s under a policy of its own', async (path) => {
+		const response = await fetch(fakes.smsUrl + path);
+		expect(response.status).toBe(200);
+		expect(response.headers.get('content-security-policy')).toContain("default-src 'none'");
+	});
 
 	it('does not serve what is not its own', async () => {
 		expect((await fetch(`${fakes.smsUrl}/../sms.ts`)).status).toBe(404);
