@@ -3,29 +3,20 @@ import { beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
 import type { Grade } from '$lib/domain/core/codes';
 import { db } from '$lib/server/db';
-import {
-	coverShifts,
-	escalations,
-	escalationSteps,
-	outbox,
-	pushDevices,
-	units,
-	users
-} from '$lib/server/db/schema';
+import { escalations, escalationSteps, outbox, pushDevices, users } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
-import { raiseEscalation } from '$lib/server/escalations/raise';
 import { newId } from '$lib/server/ids';
 import { looseEndsOf } from '$lib/server/loose-ends/queries';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { permanent, ScriptedChannel, transient, unknown } from '../support/channels';
-import { addPatient, addPerson, contextOf, HOSPITAL_NOW, newPhone } from '../support/hospital';
+import { HOSPITAL_NOW } from '../support/hospital';
 import { openHospital } from '../support/open-hospital';
+import { openWard, raiseOn } from '../support/own-ward';
 
 /** A medium or low call whose text does not get through: the notice that went beside it, and then a mail. */
 
 const hospital = await openHospital({ PUBLIC_URL: 'https://ropewalk.saltmarsh.example' });
 const SECOND = 1_000;
-const DAY = 24 * 60 * 60 * SECOND;
 let sms: ScriptedChannel;
 let push: ScriptedChannel;
 let mail: ScriptedChannel;
@@ -38,14 +29,7 @@ beforeEach(async () => {
 	[sms, push, mail] = [new ScriptedChannel(), new ScriptedChannel(), new ScriptedChannel()];
 	push.lookUp = mail.lookUp = null;
 	now = HOSPITAL_NOW;
-	ward = newId();
-	await db()
-		.insert(units)
-		.values({ id: ward, name: `Plover ${ward.slice(-6)}`, kind: 'ward', zone: 'Europe/Dublin' });
-	nurse = await addPerson({ role: 'nurse', unitIds: [ward], phone: newPhone() });
-	const [startsAt, endsAt] = [HOSPITAL_NOW - DAY, HOSPITAL_NOW + DAY];
-	const cover = { id: newId(), unitId: ward, post: 'nurse' as const, userId: nurse.id, startsAt, endsAt };
-	await db().insert(coverShifts).values(cover);
+	({ ward, nurse } = await openWard());
 });
 
 const settle = () =>
@@ -64,18 +48,7 @@ async function withDevice(): Promise<void> {
 		.values({ ...device, ...keys });
 }
 
-async function raised(grade: Grade): Promise<string> {
-	const { episodeId } = await addPatient({ unitId: ward, bed: '4' });
-	const raiser = { ...hospital.people.therapist, unitIds: [ward] };
-	const { result } = await raiseEscalation(contextOf(raiser), episodeId, {
-		grade,
-		situation: 'Systolic pressure fell from 128 to 108.',
-		background: 'Bypass, day 5.',
-		assessment: 'Fall of 20, limit 10.',
-		request: 'Please come.'
-	});
-	return result.id;
-}
+const raised = (grade: Grade) => raiseOn(hospital, ward, { grade });
 
 describe.each(['medium', 'low'] as const)('of a %s call', (grade) => {
 	it('a text that was refused is followed by a mail, with nothing clinical, at once', async () => {

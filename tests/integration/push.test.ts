@@ -1,20 +1,12 @@
 import { and, asc, eq } from 'drizzle-orm';
 import { beforeEach, describe, expect, it } from 'vitest';
 import type { Person } from '$lib/domain/access/actor';
+import type { Grade } from '$lib/domain/core/codes';
 import { signOut } from '$lib/server/accounts/sign-in';
 import { endCredentials } from '$lib/server/auth/credentials';
 import { db, transact } from '$lib/server/db';
-import {
-	audit,
-	coverShifts,
-	escalationSteps,
-	outbox,
-	pushDevices,
-	units,
-	users
-} from '$lib/server/db/schema';
+import { audit, escalationSteps, outbox, pushDevices, users } from '$lib/server/db/schema';
 import { env } from '$lib/server/env';
-import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { linkToken } from '$lib/server/links';
@@ -24,16 +16,16 @@ import { OutboxWorker } from '$lib/server/outbox/worker';
 import { addDevice, devicesOf, removeDevice, takeOverDevice, tryDevice } from '$lib/server/push/devices';
 import { ScriptedChannel } from '../support/channels';
 import { Jar } from '../support/cookies';
-import { addPatient, addPerson, contextOf, HOSPITAL_NOW, newPhone } from '../support/hospital';
+import { addPerson, contextOf, HOSPITAL_NOW, newPhone } from '../support/hospital';
 import { attemptsOf, rowOf } from '../support/messages';
 import { openGateway } from '../support/open-gateway';
 import { pushedDevice, pushFault, subscribe, takePermissionAway, type Subscription } from '../support/push';
+import { openWard, raiseOn } from '../support/own-ward';
 
 /** Notices on devices, sent by the real library to the stand-in for the push service. */
 
 const { gateway, hospital } = await openGateway();
 const SECOND = 1_000;
-const DAY = 24 * 60 * 60 * SECOND;
 let now: number;
 let ward: string;
 let nurse: Person;
@@ -45,15 +37,7 @@ beforeEach(async () => {
 	await db().update(outbox).set({ state: 'cancelled' });
 	await db().delete(pushDevices);
 	now = HOSPITAL_NOW;
-	ward = newId();
-	await db()
-		.insert(units)
-		.values({ id: ward, name: `Plover ${ward.slice(-6)}`, kind: 'ward', zone: 'Europe/Dublin' });
-	nurse = await addPerson({ role: 'nurse', unitIds: [ward], phone: newPhone() });
-	const [startsAt, endsAt] = [HOSPITAL_NOW - DAY, HOSPITAL_NOW + DAY];
-	await db()
-		.insert(coverShifts)
-		.values({ id: newId(), unitId: ward, post: 'nurse', userId: nurse.id, startsAt, endsAt });
+	({ ward, nurse } = await openWard());
 	({ phone, deviceId } = await turnedOn(nurse));
 });
 
@@ -72,18 +56,7 @@ const worker = (change: object = {}) =>
 		random: () => 0.5
 	});
 
-async function raised(grade: 'high' | 'medium' | 'low' = 'high', bed = '4'): Promise<string> {
-	const { episodeId } = await addPatient({ unitId: ward, bed });
-	const raiser = { ...hospital.people.therapist, unitIds: [ward] };
-	const { result } = await raiseEscalation(contextOf(raiser), episodeId, {
-		grade,
-		situation: 'Systolic pressure fell from 128 to 108.',
-		background: 'Bypass, day 5.',
-		assessment: 'Fall of 20, limit 10.',
-		request: 'Please come.'
-	});
-	return result.id;
-}
+const raised = (grade: Grade = 'high', bed = '4') => raiseOn(hospital, ward, { grade }, bed);
 
 async function noticeOf(refId: string) {
 	const [row] = await db()

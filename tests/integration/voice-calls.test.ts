@@ -4,33 +4,23 @@ import type { Person } from '$lib/domain/access/actor';
 import type { Grade } from '$lib/domain/core/codes';
 import { STAFF_CALLS } from '$lib/domain/messages/templates';
 import { db } from '$lib/server/db';
-import {
-	coverShifts,
-	escalations,
-	escalationSteps,
-	inboundMessages,
-	outbox,
-	units,
-	users
-} from '$lib/server/db/schema';
+import { escalations, escalationSteps, inboundMessages, outbox, units, users } from '$lib/server/db/schema';
 import { chainJob } from '$lib/server/escalations/chain-job';
-import { raiseEscalation } from '$lib/server/escalations/raise';
 import { takeEscalation } from '$lib/server/escalations/take';
 import { newId } from '$lib/server/ids';
 import { receiveStatus } from '$lib/server/messages/receive-status';
 import { OutboxWorker } from '$lib/server/outbox/worker';
 import { accepted, permanent, ScriptedChannel, transient, unknown } from '../support/channels';
 import { callHook, signedPost } from '../support/hook-server';
-import { HOSPITAL_NOW, addPatient, addPerson, contextOf, newPhone } from '../support/hospital';
+import { HOSPITAL_NOW, addPerson, contextOf, newPhone } from '../support/hospital';
 import { rowOf } from '../support/messages';
 import { openHospital } from '../support/open-hospital';
+import { coverPost, openWard, raiseOn } from '../support/own-ward';
 
 /** A telephone that rings where a text did not get through, and the digit that takes the call for help. */
 
 const PUBLIC_URL = 'https://ropewalk.saltmarsh.example';
 const SECOND = 1_000;
-const MINUTE = 60 * SECOND;
-const DAY = 24 * 60 * MINUTE;
 
 const hospital = await openHospital({ PUBLIC_URL });
 let sms: ScriptedChannel;
@@ -49,33 +39,13 @@ beforeEach(async () => {
 	sms = new ScriptedChannel();
 	voice = new ScriptedChannel();
 	now = HOSPITAL_NOW;
-	ward = newId();
-	await db().insert(units).values({ id: ward, name: 'Plover House', kind: 'ward', zone: 'Europe/Dublin' });
-	phone = newPhone();
-	nurse = await addPerson({ role: 'nurse', unitIds: [ward], phone });
-	await cover(nurse, 'nurse');
+	({ ward, nurse, phone } = await openWard('Plover House'));
 });
-
-async function cover({ id: userId }: Person, post: 'nurse' | 'physician'): Promise<void> {
-	const [startsAt, endsAt] = [HOSPITAL_NOW - DAY, HOSPITAL_NOW + DAY];
-	await db().insert(coverShifts).values({ id: newId(), unitId: ward, post, userId, startsAt, endsAt });
-}
 
 const settle = () =>
 	new OutboxWorker({ channels: { sms, mail: null, voice }, now: () => now, random: () => 0.5 }).settle();
 
-async function raised(grade: Grade = 'high'): Promise<string> {
-	const { episodeId } = await addPatient({ unitId: ward, bed: '4' });
-	const raiser = { ...hospital.people.therapist, unitIds: [ward] };
-	const { result } = await raiseEscalation(contextOf(raiser), episodeId, {
-		grade,
-		situation: 'Systolic pressure fell from 128 to 108.',
-		background: 'Bypass, day 5.',
-		assessment: 'Fall of 20, limit 10.',
-		request: 'Please come.'
-	});
-	return result.id;
-}
+const raised = (grade: Grade = 'high') => raiseOn(hospital, ward, { grade });
 
 const messagesOf = (id: string) =>
 	db().select().from(outbox).where(eq(outbox.refId, id)).orderBy(asc(outbox.createdAt), asc(outbox.id));
@@ -185,7 +155,7 @@ describe('the telephone rings', () => {
 describe('a step whose people cannot be reached', () => {
 	it('does not wait for its timer: the next is told at once', async () => {
 		const doctor = await addPerson({ role: 'physician', unitIds: [ward], phone: newPhone() });
-		await cover(doctor, 'physician');
+		await coverPost(ward, doctor, 'physician');
 		sms.script = [permanent('bad-address')];
 		const id = await raised('medium');
 		await settle();
