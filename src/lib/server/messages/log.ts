@@ -1,4 +1,4 @@
-import { and, desc, eq, lt, or, sql, type AnyColumn, type SQL } from 'drizzle-orm';
+import { and, desc, eq, or, sql, type AnyColumn, type SQL } from 'drizzle-orm';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { MESSAGE_CHANNELS, MESSAGE_STATES } from '$lib/domain/messages/codes';
 import { endOfNumber, type LogFilter, type LogLine, type LogReceiver } from '$lib/domain/messages/log';
@@ -7,6 +7,7 @@ import type { PersonContext } from '../context';
 import { db } from '../db';
 import { outbox, patients, users } from '../db/schema';
 import { page, type Page, type PageRequest } from '../http/paging';
+import { before, cursorOf } from './newest-first';
 
 /** What is not known is no filter: an address that somebody typed shows more, never an error. */
 export function logFilterOf({ searchParams }: URL): LogFilter {
@@ -24,8 +25,11 @@ export async function listMessages(
 	request: PageRequest
 ): Promise<Page<LogLine>> {
 	requirePermission(actor, 'message-log.read');
-	const rows = await logRows(and(matching(filter), before(request.after)), request.limit + 1);
-	return page(rows.map(lineOf), request, ({ id, createdAt }) => `${Date.parse(createdAt)}.${id}`);
+	const rows = await logRows(
+		and(matching(filter), before(outbox.createdAt, outbox.id, request.after)),
+		request.limit + 1
+	);
+	return page(rows.map(lineOf), request, ({ id, createdAt }) => cursorOf(createdAt, id));
 }
 
 export type LogRow = Awaited<ReturnType<typeof logRows>>[number];
@@ -93,12 +97,4 @@ function matching({ search, state, channel }: LogFilter): SQL | undefined {
 		state === null ? undefined : eq(outbox.state, state),
 		channel === null ? undefined : eq(outbox.channel, channel)
 	);
-}
-
-/** Older than the last one of the page before; a cursor that is none begins at the newest. */
-function before(cursor: string | null): SQL | undefined {
-	const [, at = '', id = ''] = /^(\d{1,16})\.([\w-]{1,64})$/.exec(cursor ?? '') ?? [];
-	return at === ''
-		? undefined
-		: or(lt(outbox.createdAt, Number(at)), and(eq(outbox.createdAt, Number(at)), lt(outbox.id, id)));
 }

@@ -1,5 +1,5 @@
 import { alias } from 'drizzle-orm/sqlite-core';
-import { and, desc, eq, lt, or, type SQL } from 'drizzle-orm';
+import { desc, eq, type SQL } from 'drizzle-orm';
 import { toRfc3339 } from '$lib/domain/core/instant';
 import { endOfNumber, type LogReceiver } from '$lib/domain/messages/log';
 import { readableWords, type ReceivedLine } from '$lib/domain/messages/received';
@@ -8,6 +8,7 @@ import type { PersonContext } from '../context';
 import { db } from '../db';
 import { inboundMessages, users } from '../db/schema';
 import { page, type Page, type PageRequest } from '../http/paging';
+import { before, cursorOf } from './newest-first';
 
 /** What came in, the newest first. */
 export async function listReceived(
@@ -15,8 +16,11 @@ export async function listReceived(
 	request: PageRequest
 ): Promise<Page<ReceivedLine>> {
 	requirePermission(actor, 'message-log.read');
-	const rows = await receivedRows(before(request.after), request.limit + 1);
-	return page(rows.map(lineOf), request, ({ id, at }) => `${Date.parse(at)}.${id}`);
+	const rows = await receivedRows(
+		before(inboundMessages.at, inboundMessages.id, request.after),
+		request.limit + 1
+	);
+	return page(rows.map(lineOf), request, ({ id, at }) => cursorOf(at, id));
 }
 
 type Row = Awaited<ReturnType<typeof receivedRows>>[number];
@@ -55,13 +59,4 @@ function senderOf({ patientId, fromNumber }: Row['text'], staff: Row['staff']): 
 		return { kind: 'staff', ...staff };
 	}
 	return { kind: patientId === null ? 'nobody' : 'patient', number: endOfNumber(fromNumber) };
-}
-
-/** Older than the last one of the page before; a cursor that is none begins at the newest. */
-function before(cursor: string | null): SQL | undefined {
-	const [, at = '', id = ''] = /^(\d{1,16})\.([\w-]{1,64})$/.exec(cursor ?? '') ?? [];
-	const instant = Number(at);
-	return at === ''
-		? undefined
-		: or(lt(inboundMessages.at, instant), and(eq(inboundMessages.at, instant), lt(inboundMessages.id, id)));
 }
