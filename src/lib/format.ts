@@ -18,6 +18,9 @@ import type { Instant, LocalDate, LocalParts, Zone } from './domain/core/time';
 import { m } from './i18n/paraglide/messages';
 import { baseLocale, locales, type Locale } from './i18n/paraglide/runtime';
 
+/** Between two facts on one line; it stays with the first when the line breaks. */
+export const DOT = '\u00a0· ';
+
 export const DEFAULT_LOCALE = 'en-IE';
 
 /** How days and numbers are written in a language of the pages. */

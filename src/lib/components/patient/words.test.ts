@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Precautions } from '$lib/domain/episodes/precautions';
-import { bewareWords, dayWords, DOT, findingWords, heartWords, outcomeWords } from './words';
+import { bewareWords, dayWords, findingWords, heartWords, outcomeWords } from './words';
+import { DOT } from '$lib/format';
 
 const reader = (now: string) => ({ zone: 'Europe/Dublin', now: Date.parse(now) });
 

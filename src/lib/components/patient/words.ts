@@ -6,11 +6,8 @@ import { localDateOf } from '$lib/domain/core/time';
 import { postOperativeDay } from '$lib/domain/episodes/post-operative-day';
 import type { Precautions, PrecautionsBasis } from '$lib/domain/episodes/precautions';
 import type { Nameboard } from '$lib/domain/episodes/views';
-import { shortDay, type Reader } from '$lib/format';
+import { DOT, shortDay, type Reader } from '$lib/format';
 import { m } from '$lib/i18n/paraglide/messages';
-
-/** Between two facts on one line; it stays with the first when the line breaks. */
-export const DOT = '\u00a0· ';
 
 const RHYTHM_WORDS: Record<Rhythm, () => string> = {
 	sinus: m.patient_rhythm_sinus,

@@ -4,7 +4,8 @@ import type { Reader } from '$lib/format';
 import { linesWords, oxygenWords } from '$lib/i18n/lines';
 import { m } from '$lib/i18n/paraglide/messages';
 import { byMouthWords } from '../patient/by-mouth';
-import { bewareWords, dayWords, DOT } from '../patient/words';
+import { bewareWords, dayWords } from '../patient/words';
+import { DOT } from '$lib/format';
 
 /** How long ago and what was operated: `day 4 · Bypass`. The day first, because a round goes by it. */
 export function procedureWords(
