@@ -9,7 +9,7 @@ describe('whom it is for', () => {
 		[{ kind: 'staff', name: 'Rose Ferris', role: 'nurse' }, 'Rose Ferris, nurse'],
 		[{ kind: 'patient', number: '0123' }, 'a patient, number ends 0123'],
 		[{ kind: 'patient', number: null }, 'a patient'],
-		[{ kind: 'nobody', number: '9' }, 'a number of nobody, ends 9'],
+		[{ kind: 'nobody', number: '9' }, 'an unknown number, ends 9'],
 		[{ kind: 'nobody', number: null }, 'nobody']
 	] as const)('%j', (to, words) => {
 		expect(receiverWords(to)).toBe(words);
