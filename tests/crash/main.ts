@@ -3,7 +3,7 @@
  * was answered is lost or doubled, a retry with the same key converges, and it is ready again within three seconds,
  * of twenty starts all but one. Then the same in the middle of calls for help: none lost, none with two holders, and
  * every untaken one goes on. Before both it is killed again and again while it sends messages: each arrives, and twice
- * only where nobody could know.
+ * only where nobody could know. Faults F1 and F3.
  * `npm run test:crash` runs many rounds, `--short` a few. The seed is printed; `--seed N` repeats a run, and
  * `--only messages` does the messages alone.
  */

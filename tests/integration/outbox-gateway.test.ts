@@ -105,6 +105,7 @@ describe('answers that are none', () => {
 		return smsChannel(account, 'http://127.0.0.1/status', LIMIT_MS);
 	}
 
+	/** Fault F13: no body is trusted, and what may have been taken is not called refused. */
 	it.each([
 		['a page instead of an answer', 200, 'text/html', '<h1>Welcome</h1>', 'unknown'],
 		['broken JSON', 201, 'application/json', '{"sid": "SM', 'unknown'],
