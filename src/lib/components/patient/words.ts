@@ -51,11 +51,16 @@ export function findingWords(finding: Read): string {
 	return FINDING_WORDS[gradeReadAs(finding)]();
 }
 
-/** The drug that slows the heart and the rhythm: what a pulse must be read with. Not known is said, never left out. */
-export function heartWords(betaBlocked: boolean | null, rhythm: string | null): string {
+/** The drug that slows the heart. Not known is said, never left out. */
+export function drugWords(betaBlocked: boolean | null): string {
 	const drug = { true: m.patient_drug_yes, false: m.patient_drug_no, null: m.patient_drug_unknown };
+	return drug[`${betaBlocked}`]();
+}
+
+/** That drug and the rhythm: what a pulse must be read with. */
+export function heartWords(betaBlocked: boolean | null, rhythm: string | null): string {
 	const known = rhythm !== null && rhythm in RHYTHM_WORDS ? RHYTHM_WORDS[rhythm as Rhythm]() : null;
-	return `${drug[`${betaBlocked}`]()}${DOT}${known ?? m.patient_rhythm_unknown()}`;
+	return `${drugWords(betaBlocked)}${DOT}${known ?? m.patient_rhythm_unknown()}`;
 }
 
 /** `day 5`, counted to the present instant, so that a page left open over midnight is right. */
