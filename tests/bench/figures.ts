@@ -18,11 +18,6 @@ export function shown(name: string, { count, p50, p95, max }: Figures): string {
 	return `${name.padEnd(34)} ${count} answers, ${ms(p50)} in the middle, ${ms(p95)} at 95 %, ${ms(max)} at most`;
 }
 
-/** The middle of several runs: one run on a busy machine says little. */
-export function middleOf(values: readonly number[]): number {
-	return values.toSorted((a, b) => a - b)[values.length >> 1] ?? 0;
-}
-
 /** Do something many times, so many at once, and say how long each took. @throws what the work throws */
 export async function timed(
 	count: number,

@@ -1,4 +1,4 @@
-import { and, eq, gt, gte, inArray, lte, max, min, or } from 'drizzle-orm';
+import { and, eq, gt, gte, inArray, lte, max, min, or, sql, type SQL } from 'drizzle-orm';
 import type { Person } from '$lib/domain/access/actor';
 import { can } from '$lib/domain/access/can';
 import { toRfc3339 } from '$lib/domain/core/instant';
@@ -12,6 +12,7 @@ import { probedOf } from '../outbox/probes';
 
 /** Nothing has been tried for so long: whether it would work now, nobody can say. */
 const FORGOTTEN_AFTER_MS = HOUR;
+const WAITING = ['ready', 'sending', 'held'] as const;
 
 /**
  * Which ways out do not work, for the frame of every page: whoever relies on a call for help has to know. It is
@@ -20,8 +21,11 @@ const FORGOTTEN_AFTER_MS = HOUR;
  * with mail is told to those who can do something about it.
  */
 export async function troublesFor(reader: Reader, person: Person, now: number): Promise<Trouble[]> {
+	const states = await statesOf(reader, now);
 	const channels = CHANNELS.filter((channel) => channel !== 'mail' || seesToMail(person));
-	const troubles = await Promise.all(channels.map((channel) => troubleOf(reader, channel, now)));
+	const troubles = await Promise.all(
+		channels.map((channel) => troubleOf(reader, channel, states.get(channel) ?? NOTHING, now))
+	);
 	const known = troubles.filter((trouble) => trouble !== null);
 	// One gateway carries texts and calls: that it is down is said once.
 	const texts = known.some(({ channel }) => channel === 'sms');
@@ -32,36 +36,62 @@ function seesToMail(person: Person): boolean {
 	return can(person, 'stray-text.settle') || can(person, 'account.manage');
 }
 
-async function troubleOf(reader: Reader, channel: ChannelName, now: number): Promise<Trouble | null> {
-	const since =
-		(await heldSince(reader, channel, now)) ??
-		(await failingSince(reader, channel, now)) ??
-		probedOf(channel).downSince;
-	return since === null
-		? null
-		: { channel, since: toRfc3339(since), waiting: await countWaiting(reader, channel, now) };
+/** What the messages of a channel say of it. */
+interface ChannelState {
+	/** Since when messages are due and there is no gateway at all. */
+	heldSince: number | null;
+	/** How many met trouble in their last attempt. */
+	troubled: number;
+	waiting: number;
 }
 
-/** Due, and there is no gateway at all. */
-async function heldSince(reader: Reader, channel: ChannelName, now: number): Promise<number | null> {
-	const [row] = await reader
-		.select({ at: min(outbox.nextAt) })
+const NOTHING: ChannelState = { heldSince: null, troubled: 0, waiting: 0 };
+
+/** Of all channels in one reading: every page asks. */
+async function statesOf(reader: Reader, now: number): Promise<Map<string, ChannelState>> {
+	const due = lte(outbox.nextAt, now);
+	const waits = and(inArray(outbox.state, [...WAITING]), or(due, gt(outbox.attempts, 0)));
+	const rows = await reader
+		.select({
+			channel: outbox.channel,
+			heldSince: sql<
+				number | null
+			>`min(case when ${and(eq(outbox.state, 'held'), due)} then ${outbox.nextAt} end)`,
+			troubled: sql<number>`sum(coalesce(${troubledAt(now)}, 0))`,
+			waiting: sql<number>`sum(${waits})`
+		})
 		.from(outbox)
-		.where(and(eq(outbox.state, 'held'), eq(outbox.channel, channel), lte(outbox.nextAt, now)));
-	return row?.at ?? null;
+		.where(
+			or(
+				inArray(outbox.state, [...WAITING]),
+				and(eq(outbox.state, 'failed'), gt(outbox.nextAt, now - FORGOTTEN_AFTER_MS))
+			)
+		)
+		.groupBy(outbox.channel);
+	return new Map(rows.map(({ channel, ...state }) => [channel, state]));
 }
 
-async function failingSince(reader: Reader, channel: ChannelName, now: number): Promise<number | null> {
-	const troubled = and(
-		eq(outbox.channel, channel),
+function troubledAt(now: number): SQL | undefined {
+	return and(
 		inArray(outbox.state, ['ready', 'sending', 'failed']),
 		inArray(outbox.stateReason, [...TROUBLE_REASONS]),
 		gt(outbox.nextAt, now - FORGOTTEN_AFTER_MS)
 	);
+}
+
+async function troubleOf(
+	reader: Reader,
+	channel: ChannelName,
+	{ heldSince, troubled, waiting }: ChannelState,
+	now: number
+): Promise<Trouble | null> {
 	// Nearly always there is none, and nothing more is asked.
-	if ((await reader.$count(outbox, troubled)) === 0) {
-		return null;
-	}
+	const failing = troubled === 0 ? null : await failingSince(reader, channel, now);
+	const since = heldSince ?? failing ?? probedOf(channel).downSince;
+	return since === null ? null : { channel, since: toRfc3339(since), waiting };
+}
+
+async function failingSince(reader: Reader, channel: ChannelName, now: number): Promise<number | null> {
 	const [worked] = await reader
 		.select({ at: max(outboxAttempts.endedAt) })
 		.from(outboxAttempts)
@@ -79,21 +109,11 @@ async function failingSince(reader: Reader, channel: ChannelName, now: number): 
 		.innerJoin(outbox, eq(outbox.id, outboxAttempts.messageId))
 		.where(
 			and(
-				troubled,
+				eq(outbox.channel, channel),
+				troubledAt(now),
 				inArray(outboxAttempts.outcome, ['transient', 'unknown']),
 				gte(outboxAttempts.endedAt, Math.max(worked?.at ?? 0, probedOf(channel).backAt ?? 0))
 			)
 		);
 	return failed?.at ?? null;
-}
-
-async function countWaiting(reader: Reader, channel: ChannelName, now: number): Promise<number> {
-	return reader.$count(
-		outbox,
-		and(
-			eq(outbox.channel, channel),
-			inArray(outbox.state, ['ready', 'sending', 'held']),
-			or(lte(outbox.nextAt, now), gt(outbox.attempts, 0))
-		)
-	);
 }
