@@ -70,6 +70,7 @@ function placeOutOfSight(page: Page): Promise<string[]> {
 async function byDayAndNight(page: Page, name: string): Promise<string[]> {
 	const found: string[] = [];
 	const note = noteIn(found);
+	const folded = await unrolled(page);
 	await page.emulateMedia({ colorScheme: 'light' });
 	note('by day', await faultsOf(page));
 	await page.emulateMedia({ colorScheme: 'dark' });
@@ -77,7 +78,19 @@ async function byDayAndNight(page: Page, name: string): Promise<string[]> {
 	await page.emulateMedia({ colorScheme: null, forcedColors: 'active' });
 	note('in forced colours', await lostInForcedColours(page));
 	await page.emulateMedia({ forcedColors: null });
+	await folded();
 	return found;
+}
+
+/**
+ * A window as high as the page: what stays in view at an edge then lies over nothing, where it would else be held
+ * against whichever control happens to have half scrolled under it. Answers what takes it back.
+ */
+async function unrolled(page: Page): Promise<() => Promise<void>> {
+	const before = page.viewportSize() ?? PHONE;
+	const height = await page.evaluate(() => document.documentElement.scrollHeight);
+	await page.setViewportSize({ ...before, height: Math.max(before.height, height) });
+	return () => page.setViewportSize(before);
 }
 
 function noteIn(found: string[]) {

@@ -46,10 +46,12 @@ export async function reply(smsUrl: string, number: string, body: string): Promi
 	expect(status).toBeLessThan(300);
 }
 
-/** Wait for a mail to an address. */
-export async function mailArrives(mailUrl: string, to: string): Promise<Mail> {
+/** Wait for a mail to an address whose text fits, and answer the newest such. */
+export async function mailArrives(mailUrl: string, to: string, wanted = /(?:)/): Promise<Mail> {
 	const fitting = async () =>
-		(await itemsOf<Mail>(`${mailUrl}/mails`)).filter((mail) => mail.to.includes(to));
+		(await itemsOf<Mail>(`${mailUrl}/mails`)).filter(
+			(mail) => mail.to.includes(to) && wanted.test(mail.text)
+		);
 	await expect.poll(async () => (await fitting()).length).toBeGreaterThanOrEqual(1);
 	const newest = (await fitting()).at(-1);
 	if (!newest) {
